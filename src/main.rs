@@ -1,0 +1,2 @@
+//! Starts the app in the browser.
+fn main() {}
