@@ -1,6 +1,34 @@
 //! Lowside: the fault-finding calculator for closed-loop hydrostatic drives.
+//!
+//! The house has two storeys. Below: a pure core that knows no browser and runs natively and in wasm alike. Above: the app.
+//! Imports point down only.
+//!
+//! | room | what it holds |
+//! | --- | --- |
+//! | [`math`] | elementary functions that give the same bits on every target |
+//! | [`quantity`] | units of measure: parsing what a person types, printing what they want to read |
+//! | [`fluid`] | oil: viscosity and density at temperature, grades, cleanliness |
+//! | [`unit`] | the unit profile: what is known of one machine, and where each figure comes from |
+//! | [`readings`] | conditions, ports, instruments, readings |
+//! | [`circuit`] | parameters, elements, solver: a condition in, pressures and flows out |
+//! | [`faults`] | the catalogue of causes |
+//! | [`observations`] | what can be seen, heard and felt without a gauge |
+//! | [`checks`] | the checks a mechanic can make, with minutes, hazards and precautions |
+//! | [`windows`] | what a healthy unit should show |
+//! | [`ranking`] | from readings to causes |
+//! | [`assessment`] | what an assessment hands out |
+//! | [`record`] | visits and units as they are kept; import, export, migration |
+//! | [`store`] | where the record is kept |
 #![forbid(unsafe_code)]
 #![warn(missing_docs)]
 
+pub mod assessment;
+#[cfg(target_arch = "wasm32")]
+pub mod app;
+pub mod circuit;
+pub mod faults;
 pub mod fluid;
 pub mod quantity;
+pub mod readings;
+pub mod record;
+pub mod unit;

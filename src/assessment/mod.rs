@@ -1,0 +1,136 @@
+//! What an assessment hands to a screen, to the report and to the office command: windows, causes, reasons, doubts.
+//! Plain data, so that it can cross from a worker to the page.
+
+use crate::faults::FaultId;
+use serde::{Deserialize, Serialize};
+
+/// Where an expected window comes from.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Serialize, Deserialize)]
+#[serde(rename_all = "snake_case")]
+pub enum WindowSource {
+    /// The unit's own manual, as entered.
+    Manual,
+    /// Computed from the unit's figures.
+    Computed,
+    /// Computed, but resting mostly on common practice for the class.
+    Practice,
+}
+
+/// Where a reading stands against its window.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Serialize, Deserialize)]
+#[serde(rename_all = "snake_case")]
+pub enum Standing {
+    /// Inside.
+    Within,
+    /// Inside the outer tenth, or outside by less than the instrument's own uncertainty.
+    Edge,
+    /// Below.
+    Low,
+    /// Above.
+    High,
+    /// The instrument cannot answer, or the reading says nothing in this condition.
+    CannotTell,
+    /// No value.
+    Open,
+}
+
+/// Expected window of one reading. Values in the base unit of the port's kind (bar, L/min, rpm, °C, s, mA, km/h).
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+pub struct Window {
+    /// Reading id.
+    pub reading: String,
+    /// Lower end of the central 95 %.
+    pub low: f64,
+    /// Median.
+    pub middle: f64,
+    /// Upper end of the central 95 %.
+    pub high: f64,
+    /// Value read, where there is one.
+    pub read: Option<f64>,
+    /// Standard uncertainty of the reading from the instrument alone.
+    pub instrument: f64,
+    /// Source.
+    pub source: WindowSource,
+    /// The input that widens this window most, in words.
+    pub widest: String,
+    /// What the window was computed for: speed, temperature, lever, in words.
+    pub basis: String,
+    /// Where the reading stands.
+    pub standing: Standing,
+    /// A remark: gauge cannot answer, cold oil, side empties.
+    pub remark: Option<String>,
+    /// True where the healthy machine's needle would swing or there is no steady state.
+    pub swings: bool,
+}
+
+/// A reading or observation that speaks for or against a cause.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+pub struct Evidence {
+    /// Reading id or observation id.
+    pub of: String,
+    /// What it is, in words.
+    pub words: String,
+    /// Weight of evidence: natural log of how much this item, added to all others, favours the cause over the rest.
+    /// Positive speaks for.
+    pub weight: f64,
+}
+
+/// What a cause would make a port read.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+pub struct WouldRead {
+    /// Reading id.
+    pub reading: String,
+    /// Expected value under the cause, base unit.
+    pub value: f64,
+    /// Standard spread, base unit.
+    pub spread: f64,
+}
+
+/// One row of the ranking: a cause, or a set that the readings cannot split.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+pub struct Cause {
+    /// Members; one, or several that no reading taken can tell apart.
+    pub ids: Vec<FaultId>,
+    /// Title.
+    pub title: String,
+    /// Joint probability, 0 to 1.
+    pub probability: f64,
+    /// Probabilities of the members before any doubt about twins, same order as `ids`.
+    pub shares: Vec<f64>,
+    /// Readings and observations for and against, heaviest first.
+    pub evidence: Vec<Evidence>,
+    /// What the readings taken would be under it.
+    pub would_read: Vec<WouldRead>,
+}
+
+/// How far the ranking can be trusted.
+#[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
+pub struct Trust {
+    /// Share of weight on the heaviest integration node of the leading cause (near 1: the integral hangs on one node).
+    pub heaviest: f64,
+    /// Largest change of any probability in the last refinement.
+    pub change: f64,
+    /// Circuit solves used.
+    pub solves: u64,
+    /// Probability that at least one rigging (gauge or port) is wrong.
+    pub wrong_reading: f64,
+    /// Reading ids that do not fit and should be taken again, with the words why.
+    pub retake: Vec<(String, String)>,
+}
+
+/// Outcome of an assessment.
+#[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
+pub struct Assessment {
+    /// Windows, one per reading, in the order of the readings.
+    pub windows: Vec<Window>,
+    /// Causes, most probable first; probabilities sum to 1.
+    pub causes: Vec<Cause>,
+    /// What is withheld, and why.
+    pub withheld: Vec<String>,
+    /// Remarks: tank level first, assumption made, low side empties.
+    pub notes: Vec<String>,
+    /// How far to trust it.
+    pub trust: Trust,
+    /// Longest time (s) a full-stroke held check may last on this unit, and the temperature rise per second (K/s).
+    pub hold: Option<(f64, f64)>,
+}

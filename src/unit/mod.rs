@@ -1,0 +1,13 @@
+//! The unit profile: what is known of one machine, and where each figure comes from.
+
+mod class;
+mod figure;
+mod profile;
+mod ticks;
+
+pub use class::{ClassPractice, MachineClass, Spread};
+pub use figure::{FIGURES, Figure, FigureAsk, FigureId, Source};
+pub use profile::{ManualWindow, PortNote, Unit};
+pub use ticks::{
+    CaseLines, ChargeSource, Control, Filter, LoopReliefTo, ReliefDrain, Shuttle, Tick, Ticks,
+};
