@@ -225,7 +225,7 @@ fn refusals_say_what_is_wrong_and_what_is_accepted() {
     );
     assert_eq!(
         charge("900 psi"),
-        Err("900 psi is outside what is accepted here: 0 to 870.226426 psi.")
+        Err("900 psi is outside what is accepted here: 0 to 870.226426 psi.".into())
     );
     assert_eq!(charge("20 rpm"), Err("rpm measures rotational speed; this field asks for pressure. Type it in bar, psi, kPa or MPa.".into()));
     assert_eq!(
