@@ -1,0 +1,173 @@
+//! Writes the service worker of a finished build: `precache DIR`, or the directory that Trunk names to its hooks.
+//!
+//! Every emitted file is listed with its SHA-256, because the service worker compares what it downloads with this list:
+//! a log-in page of a guest network, or a half-updated server, must not pass for a file of the app. One hash over all
+//! of them names the version. That needs a hash against which WebCrypto in the browser can check: SHA-2.
+
+use std::error::Error;
+
+#[cfg(not(target_arch = "wasm32"))]
+fn main() -> Result<(), Box<dyn Error>> {
+    let dir = std::env::args_os()
+        .nth(1)
+        .or_else(|| std::env::var_os("TRUNK_STAGING_DIR"))
+        .ok_or("no directory: give one, or set TRUNK_STAGING_DIR")?;
+    let report = precache::run(std::path::Path::new(&dir))?;
+    println!("{report}");
+    Ok(())
+}
+
+#[cfg(target_arch = "wasm32")]
+fn main() -> Result<(), Box<dyn Error>> {
+    Err("this tool works on the build machine".into())
+}
+
+#[cfg(not(target_arch = "wasm32"))]
+mod precache {
+    use std::collections::BTreeMap;
+    use std::error::Error;
+    use std::fs;
+    use std::path::Path;
+
+    use sha2::{Digest, Sha256};
+
+    const TEMPLATE: &str = include_str!("../../static/sw.template.js");
+    const SERVICE_WORKER: &str = "sw.js";
+    const PAGE: &str = "index.html";
+    /// Stands in the page where the version belongs.
+    const PAGE_VERSION: &str = "@LOWSIDE_VERSION@";
+
+    /// File contents by address relative to the app's folder, sorted, so that equal builds give equal service workers.
+    type Files = BTreeMap<String, Vec<u8>>;
+
+    /// Puts the version into the page, writes the service worker, and says in one line what was done.
+    pub fn run(dir: &Path) -> Result<String, Box<dyn Error>> {
+        let mut files = Files::new();
+        collect(dir, "", &mut files)?;
+        files.remove(SERVICE_WORKER);
+
+        let version = version_of(&files);
+        let page = files
+            .get_mut(PAGE)
+            .ok_or_else(|| format!("{PAGE} is missing in {}", dir.display()))?;
+        *page = String::from_utf8(std::mem::take(page))?
+            .replace(PAGE_VERSION, &version)
+            .into_bytes();
+        fs::write(dir.join(PAGE), page)?;
+
+        fs::write(dir.join(SERVICE_WORKER), service_worker(&version, &files)?)?;
+        Ok(format!("{SERVICE_WORKER}: version {version}, {} files", files.len()))
+    }
+
+    fn collect(dir: &Path, prefix: &str, files: &mut Files) -> Result<(), Box<dyn Error>> {
+        for entry in fs::read_dir(dir)? {
+            let entry = entry?;
+            let name = entry.file_name();
+            let address = format!("{prefix}{}", plain(&name.to_string_lossy())?);
+            if entry.file_type()?.is_dir() {
+                collect(&entry.path(), &format!("{address}/"), files)?;
+            } else {
+                files.insert(address, fs::read(entry.path())?);
+            }
+        }
+        Ok(())
+    }
+
+    /// File names double as addresses: only characters that need no escaping there.
+    fn plain(name: &str) -> Result<&str, String> {
+        let fits = |c: char| c.is_ascii_alphanumeric() || "._-".contains(c);
+        if name.chars().all(fits) {
+            Ok(name)
+        } else {
+            Err(format!("{name:?}: use letters, digits, '.', '_' and '-' in file names"))
+        }
+    }
+
+    /// The package's version with a short hash over names and contents.
+    fn version_of(files: &Files) -> String {
+        let mut all = Sha256::new();
+        all.update(TEMPLATE);
+        for (address, content) in files {
+            all.update(address);
+            all.update(Sha256::digest(content));
+        }
+        let hash = hex(&all.finalize());
+        format!("{} ({})", env!("CARGO_PKG_VERSION"), hash.get(..12).unwrap_or(&hash))
+    }
+
+    fn service_worker(version: &str, files: &Files) -> Result<String, serde_json::Error> {
+        let list: Vec<(&str, String)> = files
+            .iter()
+            .map(|(address, content)| (address.as_str(), hex(&Sha256::digest(content))))
+            .collect();
+        Ok(TEMPLATE
+            .replace("@VERSION@", version)
+            .replace("/*@FILES@*/[]", &serde_json::to_string_pretty(&list)?))
+    }
+
+    fn hex(bytes: &[u8]) -> String {
+        bytes.iter().map(|byte| format!("{byte:02x}")).collect()
+    }
+
+    #[cfg(test)]
+    mod tests {
+        use super::*;
+
+        fn build(name: &str, files: &[(&str, &str)]) -> std::path::PathBuf {
+            let dir = std::env::temp_dir().join(format!("lowside-precache-{}-{name}", std::process::id()));
+            let _ = fs::remove_dir_all(&dir);
+            for (path, content) in files {
+                let path = dir.join(path);
+                fs::create_dir_all(path.parent().expect("has a parent")).expect("writable");
+                fs::write(path, content).expect("writable");
+            }
+            dir
+        }
+
+        fn written(dir: &Path) -> String {
+            run(dir).expect("builds");
+            fs::read_to_string(dir.join(SERVICE_WORKER)).expect("was written")
+        }
+
+        const PAGE_TEXT: &str = "<html data-version=\"@LOWSIDE_VERSION@\">";
+
+        #[test]
+        fn lists_every_file_with_its_hash_but_not_itself() {
+            let dir = build("list", &[(PAGE, PAGE_TEXT), ("icons/a.svg", "abc"), (SERVICE_WORKER, "old")]);
+            let worker = written(&dir);
+            // FIPS 180-2 appendix B.1: the SHA-256 of "abc".
+            assert!(worker.contains("ba7816bf8f01cfea414140de5dae2223b00361a396177a9cb410ff61f20015ad"));
+            assert!(worker.contains("\"icons/a.svg\""));
+            assert!(!worker.contains("\"sw.js\""));
+            assert!(!worker.contains('@'), "a placeholder is left");
+        }
+
+        #[test]
+        fn page_carries_the_version_and_is_listed_as_served() {
+            let dir = build("page", &[(PAGE, PAGE_TEXT)]);
+            let worker = written(&dir);
+            let page = fs::read(dir.join(PAGE)).expect("is there");
+            assert!(String::from_utf8_lossy(&page).contains(env!("CARGO_PKG_VERSION")));
+            assert!(worker.contains(&hex(&Sha256::digest(&page))));
+        }
+
+        #[test]
+        fn version_follows_contents_and_names_only() {
+            let one = written(&build("v1", &[(PAGE, PAGE_TEXT), ("a.js", "1")]));
+            let same = written(&build("v2", &[("a.js", "1"), (PAGE, PAGE_TEXT)]));
+            let content = written(&build("v3", &[(PAGE, PAGE_TEXT), ("a.js", "2")]));
+            let name = written(&build("v4", &[(PAGE, PAGE_TEXT), ("b.js", "1")]));
+            assert_eq!(one, same);
+            assert_ne!(one, content);
+            assert_ne!(one, name);
+        }
+
+        #[test]
+        fn refuses_a_folder_without_page_and_names_that_need_escaping() {
+            let none = run(&build("none", &[("a.js", "1")])).expect_err("no page");
+            assert!(none.to_string().contains(PAGE));
+            let odd = run(&build("odd", &[(PAGE, PAGE_TEXT), ("a b.js", "1")])).expect_err("a space");
+            assert!(odd.to_string().contains("a b.js"));
+        }
+    }
+}
