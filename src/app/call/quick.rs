@@ -1,0 +1,137 @@
+//! Quick sets: the readings of an ordinary road call, in the order in which they are taken. Order and conditions are common
+//! practice: charge first and on one gauge, loop pressure last and never beyond the stroke that tells.
+
+use super::group::same;
+use crate::readings::{Condition, Direction, Doing, EngineSpeed, Lever, Port, Reading};
+
+/// A set of readings that belong together.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct QuickSet {
+    /// Stable id, for test ids.
+    pub id: &'static str,
+    /// Words on the button.
+    pub words: &'static str,
+    /// What it tells, in a few words.
+    pub tells: &'static str,
+    /// The readings, in order.
+    pub readings: fn() -> Vec<(Port, Condition)>,
+}
+
+/// Every set, in the order of a road call.
+pub const SETS: [QuickSet; 7] = [
+    QuickSet {
+        id: "charge-neutral",
+        words: "Charge, neutral",
+        tells: "low and high idle on one gauge",
+        readings: charge_neutral,
+    },
+    QuickSet {
+        id: "charge-drive",
+        words: "Charge, light drive",
+        tells: "both ways, half lever, wheels clear",
+        readings: charge_drive,
+    },
+    QuickSet {
+        id: "knee",
+        words: "Knee",
+        tells: "engine speed at which charge stops rising",
+        readings: knee,
+    },
+    QuickSet {
+        id: "case",
+        words: "Case pressures",
+        tells: "pump and motor case, high idle",
+        readings: case,
+    },
+    QuickSet {
+        id: "motor-drain",
+        words: "Motor drain, neutral",
+        tells: "jug and stopwatch, high idle",
+        readings: motor_drain,
+    },
+    QuickSet {
+        id: "held-forward",
+        words: "Held build-up, forward",
+        tells: "side A at 5, 10, 20, 40 % lever",
+        readings: held_forward,
+    },
+    QuickSet {
+        id: "held-reverse",
+        words: "Held build-up, reverse",
+        tells: "side B at 5, 10, 20, 40 % lever",
+        readings: held_reverse,
+    },
+];
+
+impl QuickSet {
+    /// The readings of the set that are not there yet. Engine speed and temperature typed since do not make another
+    /// reading of it: what the machine does, direction, lever and the idle it was set to do.
+    pub fn missing(&self, there: &[Reading]) -> Vec<(Port, Condition)> {
+        (self.readings)()
+            .into_iter()
+            .filter(|(port, condition)| {
+                !there.iter().any(|reading| {
+                    reading.port == *port && alike(&reading.condition, condition)
+                })
+            })
+            .collect()
+    }
+}
+
+/// True where a reading's condition is that of the set, whatever has been measured since.
+fn alike(taken: &Condition, planned: &Condition) -> bool {
+    let mut plain = *taken;
+    plain.oil = None;
+    if matches!(plain.engine, EngineSpeed::Measured(_)) {
+        plain.engine = planned.engine;
+    }
+    same(&plain, planned)
+}
+
+fn neutral(engine: EngineSpeed) -> Condition {
+    Condition { engine, ..Condition::start() }
+}
+
+fn driven(doing: Doing, direction: Direction, lever: Lever, engine: EngineSpeed) -> Condition {
+    Condition { doing, direction, lever, engine, ..Condition::start() }
+}
+
+fn charge_neutral() -> Vec<(Port, Condition)> {
+    [EngineSpeed::LowIdle, EngineSpeed::HighIdle]
+        .map(|engine| (Port::Charge, neutral(engine)))
+        .to_vec()
+}
+
+fn charge_drive() -> Vec<(Port, Condition)> {
+    [Direction::Forward, Direction::Reverse]
+        .map(|way| (Port::Charge, driven(Doing::Free, way, Lever::Half, EngineSpeed::HighIdle)))
+        .to_vec()
+}
+
+fn knee() -> Vec<(Port, Condition)> {
+    vec![(Port::Knee, neutral(EngineSpeed::HighIdle))]
+}
+
+fn case() -> Vec<(Port, Condition)> {
+    [Port::PumpCase, Port::MotorCase].map(|port| (port, neutral(EngineSpeed::HighIdle))).to_vec()
+}
+
+fn motor_drain() -> Vec<(Port, Condition)> {
+    vec![(Port::MotorDrain, neutral(EngineSpeed::HighIdle))]
+}
+
+fn held(port: Port, way: Direction) -> Vec<(Port, Condition)> {
+    [0.05, 0.1, 0.2, 0.4]
+        .map(|share| {
+            (port, driven(Doing::Held, way, Lever::Share(share), EngineSpeed::LowIdle))
+        })
+        .to_vec()
+}
+
+fn held_forward() -> Vec<(Port, Condition)> {
+    held(Port::LoopA, Direction::Forward)
+}
+
+fn held_reverse() -> Vec<(Port, Condition)> {
+    held(Port::LoopB, Direction::Reverse)
+}

@@ -1,0 +1,239 @@
+//! Words of the call screen: states, sources, conditions and probabilities in the trade's own terms.
+
+use crate::assessment::{Assessment, Standing, WindowSource};
+use crate::faults::FaultId;
+use crate::quantity::{Kind, Measure, Unit, UnitPrefs};
+use crate::readings::{Condition, Direction, EngineSpeed, Lever, Port};
+
+/// Narrow no-break space: before a per cent sign and between a figure and its unit.
+const NARROW: char = '\u{202F}';
+
+/// The word for a standing. It stands beside the shape and the colour, never in place of them.
+pub fn standing(standing: Standing) -> &'static str {
+    match standing {
+        Standing::Within => "within",
+        Standing::Edge => "at the edge",
+        Standing::Low => "low",
+        Standing::High => "high",
+        Standing::CannotTell => "cannot tell",
+        Standing::Open => "no reading",
+    }
+}
+
+/// The end of a class name for a standing.
+pub fn standing_class(standing: Standing) -> &'static str {
+    match standing {
+        Standing::Within => "within",
+        Standing::Edge => "edge",
+        Standing::Low => "low",
+        Standing::High => "high",
+        Standing::CannotTell => "unsure",
+        Standing::Open => "open",
+    }
+}
+
+/// Where a window comes from.
+pub fn source(source: WindowSource) -> &'static str {
+    match source {
+        WindowSource::Manual => "from the unit's manual",
+        WindowSource::Computed => "computed from these inputs",
+        WindowSource::Practice => "common practice for the class",
+    }
+}
+
+/// A share as an honest per cent: whole per cent only, and never a nought or a hundred that nobody can vouch for.
+pub fn percent(share: f64) -> String {
+    let per_cent = (share * 100.0).clamp(0.0, 100.0);
+    if !per_cent.is_finite() {
+        return String::from("?");
+    }
+    if per_cent < 1.0 {
+        format!("<1{NARROW}%")
+    } else if per_cent > 99.0 {
+        format!(">99{NARROW}%")
+    } else {
+        format!("{per_cent:.0}{NARROW}%")
+    }
+}
+
+/// How far the order of causes can be relied on at this moment.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Verdict {
+    /// Nothing taken yet, or the integral cannot be trusted: no percentages.
+    TooLittle,
+    /// An order, but readings doubt it or the lead is thin.
+    Uncertain,
+    /// The best order so far.
+    SoFar,
+}
+
+impl Verdict {
+    /// The word that goes with it.
+    pub fn words(self) -> &'static str {
+        match self {
+            Verdict::TooLittle => "too little to tell",
+            Verdict::Uncertain => "uncertain",
+            Verdict::SoFar => "so far",
+        }
+    }
+}
+
+/// Judges an assessment. The limits are a choice of presentation, not of physics: above a tenth of change in the last
+/// refinement a percentage would be made up; under a half, or with a fair chance of a wrong reading, the lead is uncertain.
+pub fn verdict(assessment: &Assessment) -> Verdict {
+    let informed = assessment.causes.iter().any(|cause| !cause.evidence.is_empty());
+    let Some(lead) = assessment.causes.first() else {
+        return Verdict::TooLittle;
+    };
+    let trust = &assessment.trust;
+    if !informed || trust.change > 0.1 || lead.probability < 0.05 {
+        return Verdict::TooLittle;
+    }
+    let not_listed = lead.ids.contains(&FaultId::NotListed);
+    if lead.probability < 0.5 || trust.change > 0.03 || trust.wrong_reading > 0.3 || not_listed {
+        Verdict::Uncertain
+    } else {
+        Verdict::SoFar
+    }
+}
+
+/// The unit in which a port is shown: a pull at the inlet has its own.
+pub fn unit_of(port: Port, prefs: &UnitPrefs) -> Unit {
+    match port {
+        Port::InletPull => prefs.pull_unit(),
+        _ => prefs.unit(port.kind()),
+    }
+}
+
+/// A value of a port as a measure: a pull is held as positive below the air and printed as vacuum where that is the unit.
+fn as_measure(port: Port, base: f64, prefs: &UnitPrefs) -> Option<Measure> {
+    let vacuum = port == Port::InletPull && prefs.pull_unit().reads_vacuum();
+    Measure::from_base(if vacuum { -base } else { base }, port.kind()).ok()
+}
+
+/// A value read at a port (base unit of its kind), with its unit.
+pub fn value(port: Port, base: f64, prefs: &UnitPrefs) -> String {
+    as_measure(port, base, prefs).map_or_else(
+        || String::from("?"),
+        |measure| {
+            crate::quantity::format_with_unit(
+                measure,
+                unit_of(port, prefs),
+                crate::quantity::Decimals::Reading,
+                prefs.mark(),
+            )
+        },
+    )
+}
+
+/// A spread at a port (base unit of its kind), with its unit: `±0.8 bar`. A spread has no zero point, so a temperature's
+/// is in kelvin or degrees of difference.
+pub fn spread(port: Port, base: f64, prefs: &UnitPrefs) -> String {
+    let kind = match port.kind() {
+        Kind::Temperature => Kind::TemperatureDifference,
+        kind => kind,
+    };
+    let mut unit = match port {
+        Port::InletPull => prefs.pull_unit(),
+        _ => prefs.unit(kind),
+    };
+    if unit.reads_vacuum() {
+        unit = Unit::Millibar;
+    }
+    let Ok(measure) = Measure::from_base(base.abs(), kind) else {
+        return String::from("±?");
+    };
+    // One digit and a half is all that a spread carries.
+    let size = measure.in_unit(unit);
+    let places = if size >= 10.0 {
+        0
+    } else if size >= 1.0 {
+        1
+    } else {
+        2
+    };
+    let decimals = crate::quantity::Decimals::Fixed(places);
+    format!("±{}", crate::quantity::format_with_unit(measure, unit, decimals, prefs.mark()))
+}
+
+/// Both ends of a window as printed: the figure of the low end, and that of the high end with the unit.
+pub fn ends(port: Port, low: f64, high: f64, prefs: &UnitPrefs) -> (String, String) {
+    let (Some(low), Some(high)) = (as_measure(port, low, prefs), as_measure(port, high, prefs)) else {
+        return (String::from("?"), String::from("?"));
+    };
+    let unit = unit_of(port, prefs);
+    let span = crate::quantity::format_span(low, high, unit, prefs.mark());
+    match span.split_once(" to ") {
+        Some((from, to)) => (from.to_owned(), to.to_owned()),
+        None => (span.clone(), span),
+    }
+}
+
+/// Lever travel in words.
+pub fn lever(lever: Lever) -> String {
+    match lever {
+        Lever::Full => String::from("full lever"),
+        Lever::Half => String::from("half lever"),
+        Lever::Feathered => String::from("feathered"),
+        Lever::Share(share) => format!("lever at {}", percent(share)),
+    }
+}
+
+/// Direction in words.
+pub fn direction(direction: Direction) -> &'static str {
+    match direction {
+        Direction::Forward => "forward",
+        Direction::Reverse => "reverse",
+    }
+}
+
+/// Engine speed in words.
+pub fn engine(engine: EngineSpeed, prefs: &UnitPrefs) -> String {
+    match engine {
+        EngineSpeed::LowIdle => String::from("low idle"),
+        EngineSpeed::HighIdle => String::from("high idle"),
+        EngineSpeed::Measured(speed) => prefs.print(speed),
+    }
+}
+
+/// What the machine does, without the oil: the heading of a group of readings.
+pub fn condition(condition: &Condition, prefs: &UnitPrefs) -> String {
+    let mut parts = vec![String::from(condition.doing.words())];
+    if !condition.doing.is_neutral() {
+        parts.push(String::from(direction(condition.direction)));
+        parts.push(lever(condition.lever));
+    }
+    parts.push(engine(condition.engine, prefs));
+    if condition.flushing_blocked {
+        parts.push(String::from("flushing blocked"));
+    }
+    if condition.consumers_capped {
+        parts.push(String::from("consumers capped"));
+    }
+    parts.join(", ")
+}
+
+/// Oil temperature in words; says so where nobody looked.
+pub fn oil(condition: &Condition, prefs: &UnitPrefs) -> String {
+    match condition.oil {
+        Some(oil) => format!("oil {} at {}", prefs.print(oil.value), oil.place.words()),
+        None => String::from("oil temperature not taken"),
+    }
+}
+
+/// Marks for the weight of a piece of evidence, 0 to 4, and its word. A natural log of 0.7 doubles the odds, 1.6 makes them
+/// five times, 3 twenty times.
+pub fn weight(weight: f64) -> (usize, &'static str) {
+    let size = weight.abs();
+    if size < 0.1 || !size.is_finite() {
+        (0, "hardly anything")
+    } else if size < 0.7 {
+        (1, "a little")
+    } else if size < 1.6 {
+        (2, "clearly")
+    } else if size < 3.0 {
+        (3, "strongly")
+    } else {
+        (4, "very strongly")
+    }
+}

@@ -1,0 +1,47 @@
+//! Where in the app one is, as the part of the address behind `#`.
+
+/// A screen.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub enum Route {
+    /// The units of the yard.
+    #[default]
+    Units,
+    /// The profile of one unit, by its id.
+    Unit(String),
+    /// One call, by the id of its visit.
+    Call(String),
+    /// Units of measure, instruments, data.
+    Settings,
+}
+
+impl Route {
+    /// Reads the part of an address behind `#`, with or without it. What is not known is the list of units.
+    pub fn read(hash: &str) -> Route {
+        let path = hash.trim_start_matches('#').trim_matches('/');
+        match path.split_once('/') {
+            None if path == "settings" => Route::Settings,
+            Some(("unit", id)) if is_id(id) => Route::Unit(id.to_owned()),
+            Some(("call", id)) if is_id(id) => Route::Call(id.to_owned()),
+            _ => Route::Units,
+        }
+    }
+
+    /// The address, `#` included.
+    pub fn href(&self) -> String {
+        match self {
+            Route::Units => "#/units".to_owned(),
+            Route::Unit(id) => format!("#/unit/{id}"),
+            Route::Call(id) => format!("#/call/{id}"),
+            Route::Settings => "#/settings".to_owned(),
+        }
+    }
+}
+
+/// Ids are made by the app; anything else in the address is a slip of the hand.
+fn is_id(text: &str) -> bool {
+    !text.is_empty()
+        && text.len() <= 80
+        && text
+            .bytes()
+            .all(|byte| byte.is_ascii_alphanumeric() || byte == b'-' || byte == b'_')
+}
