@@ -28,6 +28,7 @@ pub mod app;
 pub mod circuit;
 pub mod faults;
 pub mod fluid;
+pub mod math;
 pub mod quantity;
 pub mod readings;
 pub mod record;
