@@ -98,9 +98,9 @@ params! {
     ShuttleStuckB, Linear, 0.0, "shuttle stuck to side B";
 
     /// Make-up check of side A, L/min per √bar.
-    CheckA, Log, 45.0, "make-up check A";
+    CheckA, Log, 80.0, "make-up check A";
     /// Make-up check of side B, L/min per √bar.
-    CheckB, Log, 45.0, "make-up check B";
+    CheckB, Log, 80.0, "make-up check B";
     /// Leak of side A's cartridge (check or relief seat) into the gallery, L/min per √bar.
     CheckLeakA, Linear, 0.0, "seat of cartridge A";
     /// As `CheckLeakA`, side B.
