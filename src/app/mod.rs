@@ -1,6 +1,7 @@
 //! The app above the pure core: state, screens, the engine in its worker, and what the browser gives.
 
 pub mod parts;
+pub mod platform;
 pub mod route;
 
 use yew::{Html, component, html};

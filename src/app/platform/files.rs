@@ -1,0 +1,74 @@
+//! Files to and from the person: handing one over as a download, reading one that was picked.
+
+use js_sys::Array;
+use wasm_bindgen::closure::Closure;
+use wasm_bindgen::{JsCast, JsValue};
+use web_sys::{Blob, BlobPropertyBag, File, FileReader, HtmlAnchorElement, ProgressEvent, Url};
+
+use super::timer::Timer;
+
+/// The browser reads a blob after the click that starts the download returns.
+const KEEP_URL_MS: i32 = 60_000;
+
+/// Hands `text` to the browser as a download of this name.
+///
+/// # Errors
+/// The browser's own words.
+pub fn hand_over(name: &str, kind: &str, text: &str) -> Result<(), String> {
+    let words = |error: JsValue| format!("{error:?}");
+    let document = web_sys::window()
+        .and_then(|window| window.document())
+        .ok_or("there is no page")?;
+    let options = BlobPropertyBag::new();
+    options.set_type(kind);
+    let blob = Blob::new_with_str_sequence_and_options(&Array::of1(&text.into()), &options)
+        .map_err(words)?;
+    let url = Url::create_object_url_with_blob(&blob).map_err(words)?;
+    let link: HtmlAnchorElement = document
+        .create_element("a")
+        .map_err(words)?
+        .dyn_into()
+        .map_err(|_| "no link could be made")?;
+    link.set_href(&url);
+    link.set_download(name);
+    let body = document.body().ok_or("the page is empty")?;
+    body.append_child(&link).map_err(words)?;
+    link.click();
+    link.remove();
+    let timer = Timer::once(KEEP_URL_MS, move || {
+        // Freeing memory; there is nothing to do where it fails.
+        let _ = Url::revoke_object_url(&url);
+    });
+    // It outlives this call on purpose, and frees the text when it has run.
+    std::mem::forget(timer);
+    Ok(())
+}
+
+/// Reads a picked file as text and hands it on, with the reason where it could not be read.
+pub fn read(file: &File, largest_bytes: f64, done: impl FnOnce(Result<String, String>) + 'static) {
+    if file.size() > largest_bytes {
+        done(Err(format!(
+            "{} has {:.1} MB. A file of this app has {:.0} MB at most.",
+            file.name(),
+            file.size() / 1e6,
+            largest_bytes / 1e6
+        )));
+        return;
+    }
+    let reader = match FileReader::new() {
+        Ok(reader) => reader,
+        Err(error) => return done(Err(format!("{error:?}"))),
+    };
+    let name = file.name();
+    let outcome = reader.clone();
+    let on_end = Closure::once_into_js(move |_: ProgressEvent| {
+        let text = outcome.result().ok().and_then(|value| value.as_string());
+        done(text.ok_or_else(|| format!("{name} could not be read by the browser.")));
+    });
+    reader.set_onloadend(Some(on_end.unchecked_ref()));
+    // A failure to start is an end without a result, but no event tells of it.
+    if let Err(error) = reader.read_as_text(file) {
+        reader.set_onloadend(None);
+        web_sys::console::warn_1(&error);
+    }
+}
