@@ -77,6 +77,23 @@ impl Measure {
         })
     }
 
+    /// A figure written in the program itself: tables, defaults, limits. For what comes from outside use [`Measure::new`].
+    ///
+    /// # Panics
+    /// On a figure that is not finite or beyond [`LARGEST`]; in a `const` that stops the build.
+    #[must_use]
+    pub const fn literal(value: f64, unit: Unit) -> Self {
+        let base = unit.base_of_value(value);
+        assert!(
+            base.is_finite() && base.abs() <= LARGEST,
+            "a literal must be a finite figure of the trade"
+        );
+        Self {
+            value_base: if base == 0.0 { 0.0 } else { base },
+            kind: unit.kind(),
+        }
+    }
+
     /// What is measured.
     #[must_use]
     pub const fn kind(self) -> Kind {
