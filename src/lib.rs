@@ -32,4 +32,5 @@ pub mod math;
 pub mod quantity;
 pub mod readings;
 pub mod record;
+pub mod store;
 pub mod unit;

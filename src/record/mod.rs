@@ -1,5 +1,26 @@
 //! Visits and units as they are kept: versions, migration, import, export.
+//!
+//! * [`Book`] holds everything in memory: units, visits, [`Settings`].
+//! * [`Envelope`] stands round each stored record; [`migrate`] brings old formats up to [`SCHEMA`].
+//! * [`Export`] is the file: `Export::of(&book, …).text()` writes one, [`Export::read`] takes any bytes and gives records or a
+//!   [`RecordError`] that says where it is wrong. [`ImportPlan`] shows what taking it in would do before anything is changed.
+//! * [`limits`] says how much a record may hold; fields on a screen keep to them.
 
+mod book;
+mod envelope;
+mod error;
+mod id;
+pub mod limits;
+pub mod migrate;
+mod settings;
+mod sum;
 mod visit;
 
+pub use book::Book;
+pub use envelope::{APP, Envelope, Stamp};
+pub use error::{Problem, RecordError};
+pub use id::{IdOf, is_id, new_id};
+pub use migrate::{Ladder, RecordKind, SCHEMA, Step, Subject};
+pub use settings::{FirstRun, Settings, Theme};
+pub use sum::checksum;
 pub use visit::{Answer, Closing, Visit};
