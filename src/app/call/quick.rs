@@ -5,7 +5,7 @@ use super::group::same;
 use crate::readings::{Condition, Direction, Doing, EngineSpeed, Lever, Port, Reading};
 
 /// A set of readings that belong together.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug)]
 pub struct QuickSet {
     /// Stable id, for test ids.
     pub id: &'static str,

@@ -97,6 +97,30 @@ pub fn verdict(assessment: &Assessment) -> Verdict {
     }
 }
 
+/// The name of a port for a chip.
+pub fn port_short(port: Port) -> &'static str {
+    match port {
+        Port::LoopDifference => "A − B",
+        Port::PumpShaft => "Pump shaft",
+        Port::MotorShaft => "Motor shaft",
+        Port::Knee => "Knee speed",
+        Port::ResponseOut => "Time out",
+        Port::ResponseBack => "Time back",
+        Port::SettledTemperature => "Settled tank",
+        Port::EngineSpeed => "Engine speed",
+        Port::PumpCase => "Pump case",
+        Port::MotorCase => "Motor case",
+        Port::Servo => "Servo",
+        Port::Pilot => "Pilot",
+        Port::Release => "Brake release",
+        Port::Shift => "Shift",
+        Port::Charge => "Charge",
+        Port::MotorDrain => "Motor drain",
+        Port::ReturnFlow => "Return flow",
+        _ => port.words(),
+    }
+}
+
 /// The unit in which a port is shown: a pull at the inlet has its own.
 pub fn unit_of(port: Port, prefs: &UnitPrefs) -> Unit {
     match port {

@@ -1,0 +1,195 @@
+//! The loop on one drawing: where each gauge goes, and how what it reads stands. Touching a port opens its readings.
+
+mod circuit;
+mod plan;
+mod symbols;
+
+use super::mark;
+use super::words;
+use crate::assessment::{Assessment, Standing};
+use crate::readings::{Port, Reading};
+use crate::unit::Ticks;
+use plan::{Fitted, Label, Spot};
+use std::rc::Rc;
+use yew::{Callback, Html, KeyboardEvent, MouseEvent, Properties, component, html};
+
+/// Half the width of the touch area round a port, units of the drawing: 44 px or more on a phone 360 px wide.
+const HALF_TOUCH: f64 = 29.0;
+
+/// Properties of [`LoopMap`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct LoopMapProps {
+    /// What the unit has.
+    pub ticks: Ticks,
+    /// Readings taken.
+    pub readings: Vec<Reading>,
+    /// Last answer of the engine.
+    pub assessment: Option<Rc<Assessment>>,
+    /// Port whose readings are open.
+    pub chosen: Option<Port>,
+    /// A port was touched.
+    pub on_port: Callback<Port>,
+}
+
+/// How a port stands: no reading asked for, or the gravest standing among its readings, and how many there are.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct PortState {
+    /// Gravest standing; none where there is no reading.
+    pub standing: Option<Standing>,
+    /// Readings.
+    pub count: usize,
+}
+
+/// The state of a port.
+pub fn state(port: Port, readings: &[Reading], assessment: Option<&Assessment>) -> PortState {
+    let gravity = |standing: &Standing| match standing {
+        Standing::Open => 0,
+        Standing::Within => 1,
+        Standing::CannotTell => 2,
+        Standing::Edge => 3,
+        Standing::Low => 4,
+        Standing::High => 5,
+    };
+    let here = readings.iter().filter(|reading| reading.port == port);
+    let standings = here.map(|reading| {
+        let windows = assessment.map(|assessment| assessment.windows.as_slice()).unwrap_or_default();
+        windows
+            .iter()
+            .find(|window| window.reading == reading.id)
+            .map_or(Standing::Open, |window| window.standing)
+    });
+    let standings: Vec<Standing> = standings.collect();
+    PortState { standing: standings.iter().copied().max_by_key(gravity), count: standings.len() }
+}
+
+/// What a screen reader says of a port.
+fn spoken(port: Port, state: PortState) -> String {
+    let name = port.words();
+    match (state.standing, state.count) {
+        (None, _) => format!("{name}: no reading. Add one."),
+        (Some(standing), 1) => format!("{name}: {}. Open its reading.", words::standing(standing)),
+        (Some(standing), count) => {
+            format!("{name}: {count} readings, gravest {}. Open them.", words::standing(standing))
+        }
+    }
+}
+
+/// The drawing, with the ports that have no place on it under it.
+#[component]
+pub fn LoopMap(props: &LoopMapProps) -> Html {
+    let view = format!("0 0 {} {}", plan::WIDTH, plan::HEIGHT);
+    let assessment = props.assessment.as_deref();
+    let spots = plan::spots(&props.ticks);
+    let elsewhere = plan::elsewhere(&props.ticks);
+    html! {
+        <div class="loop-map">
+            <svg class="loop-map-drawing" viewBox={view} role="group" aria-label="Closed loop with its gauge ports">
+                { circuit::draw(&props.ticks) }
+                { for spots.iter().map(|spot| {
+                    let state = state(spot.port, &props.readings, assessment);
+                    port(spot, state, props.chosen == Some(spot.port), &props.on_port)
+                }) }
+            </svg>
+            <ul class="loop-map-others" aria-label="Read elsewhere">
+                { for elsewhere.into_iter().map(|port| {
+                    let state = state(port, &props.readings, assessment);
+                    let on_port = props.on_port.clone();
+                    html! {
+                        <li key={format!("{port:?}")}>
+                            <button
+                                type="button"
+                                class="chip"
+                                aria-label={spoken(port, state)}
+                                data-testid={format!("map-{port:?}")}
+                                onclick={Callback::from(move |_: MouseEvent| on_port.emit(port))}
+                            >
+                                { small_mark(state) }
+                                { words::port_short(port) }
+                            </button>
+                        </li>
+                    }
+                }) }
+            </ul>
+        </div>
+    }
+}
+
+fn small_mark(state: PortState) -> Html {
+    html! {
+        <svg class="badge-mark" viewBox="-13 -13 26 26" width="20" height="20" aria-hidden="true" focusable="false">
+            { port_mark(state) }
+        </svg>
+    }
+}
+
+/// A plus where nothing is read yet, else the mark of the standing.
+fn port_mark(state: PortState) -> Html {
+    match state.standing {
+        Some(standing) => mark::shape(standing),
+        None => html! {
+            <g class="mark is-none"><circle r="9.5" class="mark-body" /><path d="M-5 0H5M0 -5V5" class="mark-sign" /></g>
+        },
+    }
+}
+
+fn port(spot: &Spot, state: PortState, is_chosen: bool, on_port: &Callback<Port>) -> Html {
+    let port = spot.port;
+    let on_click = {
+        let on_port = on_port.clone();
+        Callback::from(move |_: MouseEvent| on_port.emit(port))
+    };
+    let on_key = {
+        let on_port = on_port.clone();
+        Callback::from(move |event: KeyboardEvent| {
+            if event.key() == "Enter" || event.key() == " " {
+                event.prevent_default();
+                on_port.emit(port);
+            }
+        })
+    };
+    let (x, y, anchor) = match spot.label {
+        Label::Below if spot.port == Port::Wheel => (0.0, 38.0, "is-middle"),
+        Label::Below if spot.port == Port::Servo => (-10.0, 28.0, "is-middle"),
+        Label::Below => (0.0, 28.0, "is-middle"),
+        Label::Above if spot.port == Port::EngineSpeed => (6.0, if state.standing.is_some() { -38.0 } else { -25.0 }, "is-middle"),
+        Label::Above => (0.0, if state.standing.is_some() { -33.0 } else { -18.0 }, "is-middle"),
+        Label::Left => (-18.0, if state.standing.is_some() { -2.0 } else { 5.0 }, "is-end"),
+        Label::Right => (18.0, if state.standing.is_some() { -2.0 } else { 5.0 }, "is-start"),
+    };
+    let word = state.standing.map(|standing| {
+        html! {
+            <text
+                x={x.to_string()}
+                y={(y + 15.0).to_string()}
+                class={format!("port-word {anchor} is-{}", words::standing_class(standing))}
+            >
+                { words::standing(standing) }
+            </text>
+        }
+    });
+    let name = if spot.fitted == Fitted::Maybe { format!("{} ?", spot.name) } else { spot.name.to_owned() };
+    let half = HALF_TOUCH.to_string();
+    html! {
+        <g
+            key={format!("{port:?}")}
+            class={format!("port {}{}", spot.fitted.class(), if is_chosen { " is-chosen" } else { "" })}
+            transform={format!("translate({} {})", spot.x, spot.y)}
+            role="button"
+            tabindex="0"
+            aria-label={spoken(port, state)}
+            data-testid={format!("map-{port:?}")}
+            onclick={on_click}
+            onkeydown={on_key}
+        >
+            <rect
+                x={format!("-{half}")} y={format!("-{half}")}
+                width={(2.0 * HALF_TOUCH).to_string()} height={(2.0 * HALF_TOUCH).to_string()}
+                rx="8" class="port-touch"
+            />
+            <circle r="15" class="port-ground" />
+            { port_mark(state) }
+            <text x={x.to_string()} y={y.to_string()} class={format!("port-name {anchor}")}>{ name }</text>
+            { word }
+        </g>
+    }
+}
