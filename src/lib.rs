@@ -25,9 +25,12 @@
 pub mod assessment;
 #[cfg(target_arch = "wasm32")]
 pub mod app;
+pub mod bench;
 pub mod circuit;
 pub mod faults;
 pub mod fluid;
+pub mod heat;
+pub mod kinematics;
 pub mod math;
 pub mod quantity;
 pub mod readings;

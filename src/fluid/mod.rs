@@ -5,6 +5,7 @@
 //! * [`viscosity_index`](mod@viscosity_index) is ASTM D2270 both ways; [`IsoGrade`] is ISO 3448.
 //! * [`remarks`] says what must stand beside a viscosity: its band, whether it is extrapolated, whether leakage can be
 //!   judged at all.
+//! * [`orifice`] and [`line`] are the passages it goes through.
 //! * [`CleanlinessCode`] is ISO 4406; [`saybolt`] converts the seconds of old manuals; [`atmosphere`] gives the air's pressure
 //!   at a height.
 
@@ -13,7 +14,9 @@ mod band;
 pub mod cleanliness;
 mod error;
 mod grade;
+pub mod line;
 mod oil;
+pub mod orifice;
 pub mod saybolt;
 mod viscosity;
 pub mod viscosity_index;

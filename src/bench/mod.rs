@@ -1,0 +1,3 @@
+//! The bench: efficiencies of pumps, motors and transmissions, and the losses behind them.
+
+pub mod efficiency;
