@@ -95,8 +95,14 @@ pub struct Cause {
     pub title: String,
     /// Joint probability, 0 to 1.
     pub probability: f64,
-    /// Probabilities of the members before any doubt about twins, same order as `ids`.
+    /// Probabilities of the members, same order as `ids`; where the row joins twins they are no more than base rates.
     pub shares: Vec<f64>,
+    /// For a set: the one action that serves all members; empty for a single cause.
+    #[serde(default)]
+    pub action: String,
+    /// For a set: what splits the members; empty for a single cause.
+    #[serde(default)]
+    pub split: String,
     /// Readings and observations for and against, heaviest first.
     pub evidence: Vec<Evidence>,
     /// What the readings taken would be under it.

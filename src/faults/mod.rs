@@ -4,7 +4,9 @@
 mod catalogue;
 mod fault;
 mod id;
+mod sets;
 
 pub use catalogue::{all, find};
 pub use fault::{Bend, Column, Effect, Fault, SeverityShape};
 pub use id::FaultId;
+pub use sets::{AlikeSet, SETS};

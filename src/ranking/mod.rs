@@ -1,0 +1,26 @@
+//! Ranking: from readings and observations to causes with probabilities and reasons.
+//!
+//! p(cause | readings) = base rate × ∫∫ likelihood d(severity) d(scatter), normalised. Severity is summed over nodes; the scatter
+//! that all causes share (settings, leakages, oil, instrument biases) is integrated in closed form at each node through the
+//! circuit's own derivatives; nodes that carry weight are linearised again at their own posterior mean.
+
+mod accuracy;
+mod assess;
+mod datum;
+mod evidence;
+mod gauss;
+mod hold;
+mod likelihood;
+mod node;
+mod posterior;
+mod predict;
+mod rows;
+mod seen;
+
+pub use accuracy::{Accuracy, accuracy};
+pub use assess::assess;
+pub use datum::{Data, Datum, Says, gather, instrument_of};
+pub use hold::hold_time;
+pub use node::Node;
+pub use posterior::{Weighed, weigh};
+pub use predict::Bench;

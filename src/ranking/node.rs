@@ -1,0 +1,105 @@
+//! Integration nodes of a cause: builds, ways of showing and severities, each with its weight.
+
+use crate::circuit::{Param, Params};
+use crate::faults::{Bend, Fault, SeverityShape};
+use crate::machine::Build;
+use crate::math;
+
+/// One node: a cause at one severity, shown in one way, on one build.
+#[derive(Clone, Copy, Debug)]
+pub struct Node {
+    /// Index into the builds.
+    pub build: usize,
+    /// Index into the fault's effects; none: no effect on the circuit.
+    pub effect: Option<usize>,
+    /// Sign of those bends that can go either way.
+    pub sign: f64,
+    /// Place of the cell's middle in the severity distribution, 0 to 1.
+    pub quantile: f64,
+    /// Half the width of the cell.
+    pub half: f64,
+    /// Log of the node's share of its cause.
+    pub log_weight: f64,
+}
+
+/// Severity (0 to 1) at a quantile of its distribution.
+pub fn severity(shape: SeverityShape, quantile: f64) -> f64 {
+    let q = quantile.clamp(0.0, 1.0);
+    match shape {
+        SeverityShape::Even => q,
+        SeverityShape::MostlyMild => q * q,
+        SeverityShape::MostlyBad => q.sqrt(),
+        SeverityShape::Total => 1.0,
+    }
+}
+
+/// Bends the parameters of a condition; returns by how much each bent parameter's scatter is scaled.
+pub fn bend(theta: &mut Params, bends: &[(Param, Bend)], s: f64, sign: f64) -> Vec<(Param, f64)> {
+    let geometric = |from: f64, to: f64| from * math::pow(to / from, s);
+    let straight = |from: f64, to: f64| from + (to - from) * s;
+    let mut factors = Vec::with_capacity(bends.len());
+    for (p, b) in bends {
+        let v = &mut theta[*p as usize];
+        let factor = match *b {
+            Bend::Times(from, to) => geometric(from, to),
+            Bend::TimesLinear(from, to) => straight(from, to),
+            Bend::Plus(from, to) => {
+                *v += straight(from, to);
+                1.0
+            }
+            Bend::PlusGeometric(from, to) => {
+                *v += geometric(from, to);
+                1.0
+            }
+            Bend::PlusEitherSign(from, to) => {
+                *v += sign * straight(from, to);
+                1.0
+            }
+        };
+        *v *= factor;
+        factors.push((*p, factor));
+    }
+    factors
+}
+
+/// The nodes of a cause, and the log of its prior mass over the builds (base rate × share of builds that can have it).
+pub fn nodes(fault: &Fault, builds: &[Build], fineness: usize) -> (Vec<Node>, f64) {
+    let masses: Vec<f64> = builds.iter().map(|b| b.share * (fault.possible)(&b.unit).max(0.0)).collect();
+    let total: f64 = masses.iter().sum();
+    if total <= 0.0 || fault.per_hundred <= 0.0 {
+        return (Vec::new(), f64::NEG_INFINITY);
+    }
+    let mut variants: Vec<(Option<usize>, f64)> = Vec::new();
+    for (i, effect) in fault.effects.iter().enumerate() {
+        let either = effect.bends.iter().any(|(_, b)| matches!(b, Bend::PlusEitherSign(..)));
+        variants.push((Some(i), 1.0));
+        if either {
+            variants.push((Some(i), -1.0));
+        }
+    }
+    if variants.is_empty() {
+        variants.push((None, 1.0));
+    }
+    // Each effect is equally likely; its signs share it.
+    let effects = fault.effects.len().max(1) as f64;
+    let mut out = Vec::new();
+    for (effect, sign) in &variants {
+        let signs = variants.iter().filter(|(e, _)| e == effect).count() as f64;
+        for (build, mass) in masses.iter().enumerate().filter(|(_, m)| **m > 0.0) {
+            let share = mass / total / effects / signs;
+            let plain = effect.is_none() || fault.severity == SeverityShape::Total;
+            let n = if plain { 1 } else { ((fineness as f64 * share).round() as usize).clamp(3, fineness) };
+            for i in 0..n {
+                out.push(Node {
+                    build,
+                    effect: *effect,
+                    sign: *sign,
+                    quantile: (i as f64 + 0.5) / n as f64,
+                    half: if plain { 0.0 } else { 0.5 / n as f64 },
+                    log_weight: math::ln(share / n as f64),
+                });
+            }
+        }
+    }
+    (out, math::ln(fault.per_hundred * total))
+}

@@ -1,0 +1,162 @@
+//! From data to the posterior over the catalogue: nodes over severity and builds, scatter integrated in closed form at each
+//! node, and the nodes that carry weight linearised again at their own posterior mean.
+
+use super::datum::Data;
+use super::likelihood::{Fit, SWAPPED, fit, not_listed};
+use super::node::{Node, nodes};
+use super::predict::Bench;
+use crate::faults::{self, Fault, FaultId};
+use crate::math;
+use crate::readings::SideNaming;
+
+/// Nodes a way of showing where one build is possible. More builds share them out.
+const FINENESS: usize = 14;
+/// Share of all weight from which a node is linearised again.
+const HEAVY: f64 = 5e-4;
+/// Most nodes that are linearised again.
+const MOST_AGAIN: usize = 400;
+/// Rounds of linearising again.
+const ROUNDS: usize = 2;
+/// Largest step (standard deviations) to which a node is linearised again.
+const FARTHEST: f64 = 3.5;
+
+/// A cause with what the data make of it.
+#[derive(Clone, Debug)]
+pub struct Weighed {
+    /// Which.
+    pub id: FaultId,
+    /// Log of its base rate over the builds (per hundred calls).
+    pub log_prior: f64,
+    /// Log likelihood of all data.
+    pub log_likelihood: f64,
+    /// Log likelihood without each datum.
+    pub without: Vec<f64>,
+    /// Chance of each group being wrong, given the cause.
+    pub wrong: Vec<f64>,
+    /// Chance of swapped sides, given the cause.
+    pub swapped: f64,
+    /// Expected value of each datum on its transformed scale, and its standard deviation.
+    pub would: Vec<(f64, f64)>,
+    /// Share of the heaviest node.
+    pub heaviest: f64,
+}
+
+struct Held {
+    cause: usize,
+    node: Node,
+    log_weight: f64,
+    fit: Fit,
+    mean: Vec<f64>,
+}
+
+/// Weighs every cause of the catalogue. Returns the causes and the largest change of any probability in the last round.
+pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> (Vec<Weighed>, f64) {
+    let swap = if sides == SideNaming::AsMarked { 0.5 } else { SWAPPED };
+    let catalogue: Vec<&Fault> = faults::all().iter().filter(|f| f.id != FaultId::NotListed).collect();
+    let mut held: Vec<Held> = Vec::new();
+    let mut priors = vec![f64::NEG_INFINITY; catalogue.len()];
+    let mut healthy_prediction = None;
+    for (cause, fault) in catalogue.iter().enumerate() {
+        let (list, prior) = nodes(fault, &bench.builds, FINENESS);
+        priors[cause] = prior;
+        for node in list {
+            let p = bench.predict(fault, &node, data, &[]);
+            if let Some(f) = fit(data, &p, &[], swap) {
+                held.push(Held { cause, node, log_weight: node.log_weight, fit: f, mean: p.mean.clone() });
+            }
+            if fault.id == FaultId::Healthy && healthy_prediction.is_none() {
+                healthy_prediction = Some(p);
+            }
+        }
+    }
+    let before = shares(&held, &priors);
+    for _ in 0..ROUNDS {
+        again(bench, data, &catalogue, &priors, &mut held, swap);
+    }
+    let after = shares(&held, &priors);
+    let change = before.iter().zip(&after).map(|(a, b)| (a - b).abs()).fold(0.0, f64::max);
+    let mut out: Vec<Weighed> = catalogue
+        .iter()
+        .enumerate()
+        .filter(|(i, _)| priors[*i].is_finite())
+        .map(|(i, fault)| collect(fault.id, priors[i], held.iter().filter(|h| h.cause == i), data))
+        .collect();
+    if let (Some(p), Some(entry)) = (&healthy_prediction, faults::find(FaultId::NotListed)) {
+        let log = not_listed(data, p);
+        let n = data.data.len();
+        out.push(Weighed {
+            id: FaultId::NotListed,
+            log_prior: math::ln(entry.per_hundred.max(1e-9)),
+            log_likelihood: log,
+            without: vec![log; n],
+            wrong: vec![0.0; data.groups],
+            swapped: 0.0,
+            would: p.mean.iter().map(|m| (*m, 0.8)).collect(),
+            heaviest: 0.0,
+        });
+    }
+    (out, change)
+}
+
+/// Share of all weight a cause, by its nodes.
+fn shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
+    let logs: Vec<f64> = held.iter().map(|h| priors[h.cause] + h.log_weight + h.fit.log).collect();
+    let total = math::ln_sum_exp(&logs);
+    let mut out = vec![0.0; priors.len()];
+    for (h, l) in held.iter().zip(&logs) {
+        out[h.cause] += math::exp(l - total);
+    }
+    out
+}
+
+/// Linearises the nodes that carry weight again, each at its own posterior mean.
+fn again(bench: &Bench, data: &Data, catalogue: &[&Fault], priors: &[f64], held: &mut [Held], swap: f64) {
+    let logs: Vec<f64> = held.iter().map(|h| priors[h.cause] + h.log_weight + h.fit.log).collect();
+    let total = math::ln_sum_exp(&logs);
+    let mut heavy: Vec<(usize, f64)> = logs.iter().enumerate().map(|(i, l)| (i, l - total)).filter(|(_, l)| *l > math::ln(HEAVY)).collect();
+    heavy.sort_by(|a, b| b.1.total_cmp(&a.1).then(a.0.cmp(&b.0)));
+    for (i, _) in heavy.into_iter().take(MOST_AGAIN) {
+        let h = &held[i];
+        let mut centre: Vec<f64> = h.fit.at.iter().map(|v| v.clamp(-FARTHEST, FARTHEST)).collect();
+        if let Some(last) = centre.last_mut() {
+            // The place in the severity cell ends at the cell's wall.
+            *last = last.clamp(-(3f64.sqrt()), 3f64.sqrt());
+        }
+        let fault = catalogue[h.cause];
+        let p = bench.predict(fault, &h.node, data, &centre);
+        if let Some(f) = fit(data, &p, &centre, swap) {
+            held[i].mean = (0..data.data.len())
+                .map(|k| {
+                    let row = &p.rows[k * p.columns..(k + 1) * p.columns];
+                    p.mean[k] - row.iter().zip(&centre).map(|(r, u)| r * u).sum::<f64>()
+                })
+                .collect();
+            held[i].fit = f;
+        }
+    }
+}
+
+fn collect<'a>(id: FaultId, log_prior: f64, nodes: impl Iterator<Item = &'a Held>, data: &Data) -> Weighed {
+    let nodes: Vec<&Held> = nodes.collect();
+    let n = data.data.len();
+    let logs: Vec<f64> = nodes.iter().map(|h| h.log_weight + h.fit.log).collect();
+    let log_likelihood = if logs.is_empty() { f64::NEG_INFINITY } else { math::ln_sum_exp(&logs) };
+    let weights: Vec<f64> = logs.iter().map(|l| math::exp(l - log_likelihood)).collect();
+    let without = (0..n)
+        .map(|k| {
+            let terms: Vec<f64> = nodes.iter().map(|h| h.log_weight + h.fit.without[k]).collect();
+            if terms.is_empty() { f64::NEG_INFINITY } else { math::ln_sum_exp(&terms) }
+        })
+        .collect();
+    let wrong = (0..data.groups).map(|g| nodes.iter().zip(&weights).map(|(h, w)| w * h.fit.wrong[g]).sum()).collect();
+    let swapped = nodes.iter().zip(&weights).map(|(h, w)| w * h.fit.swapped).sum();
+    let would = (0..n)
+        .map(|k| {
+            let mean: f64 = nodes.iter().zip(&weights).map(|(h, w)| w * h.mean[k]).sum();
+            let square: f64 = nodes.iter().zip(&weights).map(|(h, w)| w * ((h.mean[k] - mean).powi(2) + h.fit.spread[k].powi(2))).sum();
+            (mean, square.sqrt())
+        })
+        .collect();
+    let heaviest = weights.iter().copied().fold(0.0, f64::max);
+    Weighed { id, log_prior, log_likelihood, without, wrong, swapped, would, heaviest }
+}

@@ -1,0 +1,333 @@
+//! What a node predicts for every datum, and how that scatters: one solve a condition, one adjoint a port.
+
+use super::datum::{Data, Datum, Says, slope, transform};
+use super::node::{Node, bend, severity};
+use crate::circuit::{Network, Param, Params, Scale, Shown, State};
+use crate::faults::Fault;
+use crate::machine::{Build, Latents, apply, base, layout_for, scattered};
+use crate::math;
+use crate::quantity::Kind;
+use crate::readings::Port;
+
+/// Everything that predictions need, made once for an assessment.
+pub struct Bench {
+    /// Builds.
+    pub builds: Vec<Build>,
+    /// One network a build and condition.
+    networks: Vec<Vec<Network>>,
+    /// Parameters a build and condition, before scatter.
+    bases: Vec<Vec<Params>>,
+    /// Scatter.
+    pub latents: Latents,
+    /// For each condition: latent, parameter, size.
+    acts: Vec<Vec<(usize, Param, f64)>>,
+    /// Ports wanted in each condition.
+    wanted: Vec<Vec<Port>>,
+    /// Circuit solves so far.
+    pub solves: core::cell::Cell<u64>,
+    /// Last state a build and condition: where the next solve starts.
+    warm: core::cell::RefCell<Vec<Vec<Option<State>>>>,
+}
+
+/// What one condition shows.
+#[derive(Clone)]
+struct Shows {
+    ports: Vec<(Port, Shown)>,
+    filled: f64,
+    air: f64,
+}
+
+/// Prediction of a node.
+pub struct Prediction {
+    /// Mean of every datum on its transformed scale.
+    pub mean: Vec<f64>,
+    /// Datum × latent (the last column is severity): change a standard deviation, row-major.
+    pub rows: Vec<f64>,
+    /// Columns of `rows`.
+    pub columns: usize,
+    /// Added variance of every datum: where there is no steady state.
+    pub loose: Vec<f64>,
+    /// Log factor from needles that swing or stand still.
+    pub swing: f64,
+}
+
+/// Scatter is taken a little wider than believed: it costs nothing where the model is right.
+const WIDER: f64 = 1.15;
+/// Variance (on the transformed scale) of a reading where the circuit has no steady state.
+const LOOSE: f64 = 1.0;
+
+impl Bench {
+    /// Sets the bench up for a unit's builds and the conditions of its readings.
+    pub fn new(builds: Vec<Build>, latents: Latents, data: &Data) -> Bench {
+        let conditions = &data.conditions;
+        let mut networks = Vec::new();
+        let mut bases = Vec::new();
+        for b in &builds {
+            let base = base(b);
+            networks.push(conditions.iter().map(|c| Network::new(layout_for(b, c))).collect::<Vec<_>>());
+            bases.push(conditions.iter().map(|c| apply(b, &base, c)).collect::<Vec<_>>());
+        }
+        let acts = (0..conditions.len())
+            .map(|c| {
+                let mut list = Vec::new();
+                for (i, latent) in latents.0.iter().enumerate() {
+                    for a in &latent.acts {
+                        if a.condition.is_none_or(|x| x == c) {
+                            list.push((i, a.param, a.size * WIDER));
+                        }
+                    }
+                }
+                list
+            })
+            .collect();
+        let mut wanted: Vec<Vec<Port>> = vec![Vec::new(); conditions.len()];
+        let mut want = |c: usize, p: Port| {
+            if !wanted[c].contains(&p) {
+                wanted[c].push(p);
+            }
+        };
+        for d in &data.data {
+            want(d.condition, d.port);
+            // Swapped sides are always a possibility.
+            match d.port {
+                Port::LoopA => want(d.condition, Port::LoopB),
+                Port::LoopB => want(d.condition, Port::LoopA),
+                _ => {}
+            }
+            if let Says::Share(other) = d.says {
+                want(other, d.port);
+            }
+        }
+        let warm = vec![vec![None; conditions.len()]; builds.len()];
+        Bench {
+            builds,
+            networks,
+            bases,
+            latents,
+            acts,
+            wanted,
+            solves: core::cell::Cell::new(0),
+            warm: core::cell::RefCell::new(warm),
+        }
+    }
+
+    /// Adds a port to what a condition must show.
+    pub fn want(&mut self, condition: usize, port: Port) {
+        if let Some(list) = self.wanted.get_mut(condition)
+            && !list.contains(&port)
+        {
+            list.push(port);
+        }
+    }
+
+    /// Parameters of a node in a condition at scatter `u` (the last entry is the place in the severity cell).
+    fn theta(&self, fault: &Fault, node: &Node, condition: usize, u: &[f64], shift: f64) -> (Params, Vec<(Param, f64)>) {
+        let mut theta = if u.is_empty() {
+            self.bases[node.build][condition]
+        } else {
+            let wide: Vec<f64> = u.iter().map(|v| v * WIDER).collect();
+            scattered(&self.bases[node.build][condition], &self.latents, condition, &wide)
+        };
+        let mut factors = Vec::new();
+        if let Some(effect) = node.effect.and_then(|e| fault.effects.get(e)) {
+            let place = node.quantile + node.half * shift;
+            factors = bend(&mut theta, effect.bends, severity(fault.severity, place), node.sign);
+        }
+        keep_order(&mut theta);
+        (theta, factors)
+    }
+
+    /// Solves a node in a condition; none where there is no steady state.
+    fn shows(&self, node: &Node, condition: usize, theta: &Params) -> Option<Shows> {
+        let net = &self.networks[node.build][condition];
+        let wants = &self.wanted[condition];
+        let start = self.warm.borrow()[node.build][condition];
+        self.solves.set(self.solves.get() + 1);
+        let solution = net.solve(theta, start.as_ref()).ok()?;
+        if start.is_none() {
+            self.warm.borrow_mut()[node.build][condition] = Some(solution.state);
+        }
+        let mut ports = Vec::with_capacity(wants.len());
+        for p in wants {
+            let shown = if *p == Port::Knee {
+                self.solves.set(self.solves.get() + 8);
+                net.knee(theta, self.bases[node.build][condition][Param::Speed as usize].max(1500.0)).ok()?
+            } else {
+                net.reading_and_gradient(*p, &solution, theta)
+            };
+            ports.push((*p, shown));
+        }
+        Some(Shows { ports, filled: net.filled(&solution, theta), air: theta[Param::Air as usize] })
+    }
+
+    /// Values only, of every wanted port in a condition at scatter `u`: for ensembles.
+    pub fn values(&self, fault: &Fault, node: &Node, condition: usize, u: &[f64]) -> Option<Vec<(Port, f64)>> {
+        let (theta, _) = self.theta(fault, node, condition, u, 0.0);
+        let net = &self.networks[node.build][condition];
+        let start = self.warm.borrow()[node.build][condition];
+        self.solves.set(self.solves.get() + 1);
+        let solution = net.solve(&theta, start.as_ref()).ok()?;
+        let mut out = Vec::with_capacity(self.wanted[condition].len());
+        for p in &self.wanted[condition] {
+            let v = if *p == Port::Knee {
+                net.knee(&theta, self.bases[node.build][condition][Param::Speed as usize].max(1500.0)).ok()?.value
+            } else {
+                net.reading(*p, &solution, &theta)
+            };
+            out.push((*p, v));
+        }
+        Some(out)
+    }
+
+    /// Engine speed (rpm) that a condition is taken at.
+    pub fn speed(&self, build: usize, condition: usize) -> f64 {
+        self.bases.get(build).and_then(|b| b.get(condition)).map_or(0.0, |t| t[Param::Speed as usize])
+    }
+
+    /// For each latent its words and its share of the variance of what a port shows on a healthy machine (the first build).
+    pub fn shares_of_spread(&self, healthy: &Fault, port: Port, condition: usize) -> Vec<(String, f64)> {
+        let node = Node { build: 0, effect: None, sign: 1.0, quantile: 0.5, half: 0.0, log_weight: 0.0 };
+        let (theta, factors) = self.theta(healthy, &node, condition, &[], 0.0);
+        let Some(s) = self.shows(&node, condition, &theta) else { return Vec::new() };
+        let Some(at) = s.ports.iter().position(|(p, _)| *p == port) else { return Vec::new() };
+        let columns = self.latents.0.len() + 1;
+        let rows = self.latent_rows(&s, condition, &theta, &factors, healthy, &node, &[], 0.0);
+        let row = &rows[at * columns..at * columns + columns - 1];
+        self.latents.0.iter().zip(row).map(|(l, r)| (l.words.clone(), r * r)).collect()
+    }
+
+    /// Predicts every datum at a node, linearised round scatter `u` (empty: the middle).
+    pub fn predict(&self, fault: &Fault, node: &Node, data: &Data, u: &[f64]) -> Prediction {
+        let columns = self.latents.0.len() + 1;
+        let (scatter, shift) = match u.split_last() {
+            Some((last, rest)) => (rest, (last / 3f64.sqrt()).clamp(-1.0, 1.0)),
+            None => (u, 0.0),
+        };
+        let mut shows: Vec<Option<(Shows, Vec<f64>)>> = Vec::with_capacity(data.conditions.len());
+        for c in 0..data.conditions.len() {
+            if self.wanted[c].is_empty() {
+                shows.push(None);
+                continue;
+            }
+            let (theta, factors) = self.theta(fault, node, c, scatter, shift);
+            shows.push(self.shows(node, c, &theta).map(|s| {
+                let rows = self.latent_rows(&s, c, &theta, &factors, fault, node, scatter, shift);
+                (s, rows)
+            }));
+        }
+        let n = data.data.len();
+        let mut out = Prediction { mean: vec![0.0; n], rows: vec![0.0; n * columns], columns, loose: vec![0.0; n], swing: 0.0 };
+        for (k, d) in data.data.iter().enumerate() {
+            let row = &mut out.rows[k * columns..(k + 1) * columns];
+            match self.one(d, &shows, row, columns) {
+                Some((mean, starved)) => {
+                    out.mean[k] = mean;
+                    out.swing += swing_factor(d, starved);
+                }
+                None => {
+                    // No steady state: the needle could stand anywhere, and would hardly stand still.
+                    out.mean[k] = d.t;
+                    out.loose[k] = LOOSE;
+                    out.swing += swing_factor(d, true);
+                }
+            }
+        }
+        out
+    }
+
+    fn one(&self, d: &Datum, shows: &[Option<(Shows, Vec<f64>)>], row: &mut [f64], columns: usize) -> Option<(f64, bool)> {
+        let (s, rows) = shows[d.condition].as_ref()?;
+        let at = s.ports.iter().position(|(p, _)| *p == d.port)?;
+        let value = s.ports[at].1.value;
+        let starved = s.filled < 0.97 || s.air > 0.08;
+        match d.says {
+            Says::Share(other) => {
+                let (o, o_rows) = shows[other].as_ref()?;
+                let o_at = o.ports.iter().position(|(p, _)| *p == d.port)?;
+                let o_value = o.ports[o_at].1.value;
+                let (k, ko) = (slope(d.port, value), slope(d.port, o_value));
+                for (i, r) in row.iter_mut().enumerate() {
+                    *r = rows[at * columns + i] * k - o_rows[o_at * columns + i] * ko;
+                }
+                Some((transform(d.port, value) - transform(d.port, o_value), starved))
+            }
+            _ => {
+                let k = slope(d.port, value);
+                for (i, r) in row.iter_mut().enumerate() {
+                    *r = rows[at * columns + i] * k;
+                }
+                Some((transform(d.port, value), starved))
+            }
+        }
+    }
+
+    /// Change of every shown port a standard deviation of every latent, and across the severity cell.
+    #[allow(clippy::too_many_arguments)] // private; the parts of one linearisation
+    fn latent_rows(
+        &self,
+        s: &Shows,
+        condition: usize,
+        theta: &Params,
+        factors: &[(Param, f64)],
+        fault: &Fault,
+        node: &Node,
+        scatter: &[f64],
+        shift: f64,
+    ) -> Vec<f64> {
+        let columns = self.latents.0.len() + 1;
+        let mut rows = vec![0.0; s.ports.len() * columns];
+        for (latent, p, size) in &self.acts[condition] {
+            let factor = factors.iter().filter(|(q, _)| q == p).map(|(_, f)| *f).product::<f64>();
+            let change = match p.scale() {
+                Scale::Log => theta[*p as usize] * size,
+                Scale::Linear => size * factor,
+            };
+            for (i, (_, shown)) in s.ports.iter().enumerate() {
+                rows[i * columns + latent] += shown.gradient[*p as usize] * change;
+            }
+        }
+        if node.half > 0.0 {
+            // Across the cell: a rectangle of its width has a standard deviation of half of it over √3.
+            let (high, _) = self.theta(fault, node, condition, scatter, shift + 0.5);
+            let (low, _) = self.theta(fault, node, condition, scatter, shift - 0.5);
+            for p in Param::ALL {
+                let change = (high[*p as usize] - low[*p as usize]) / 3f64.sqrt();
+                if change != 0.0 {
+                    for (i, (_, shown)) in s.ports.iter().enumerate() {
+                        rows[i * columns + columns - 1] += shown.gradient[*p as usize] * change;
+                    }
+                }
+            }
+        }
+        rows
+    }
+}
+
+/// Keeps settings that a machine has in order in order, whatever scatter says.
+fn keep_order(theta: &mut Params) {
+    let start = theta[Param::ServoStart as usize];
+    let full = &mut theta[Param::ServoFull as usize];
+    *full = full.max(1.2 * start);
+    let start = theta[Param::SenseStart as usize];
+    let full = &mut theta[Param::SenseFull as usize];
+    *full = full.max(1.1 * start);
+    let air = &mut theta[Param::Air as usize];
+    *air = air.clamp(0.0, 0.98);
+    for p in [Param::SignalForward, Param::SignalReverse, Param::PilotSupply, Param::DriveGrip, Param::ChargeDrive, Param::ChargeFeed] {
+        let v = &mut theta[p as usize];
+        *v = v.max(0.0);
+    }
+}
+
+/// Log odds-like factor of a needle that swung or stood still, where the low side fills or starves. Common practice.
+fn swing_factor(d: &Datum, starved: bool) -> f64 {
+    if d.port.kind() != Kind::Pressure {
+        return 0.0;
+    }
+    math::ln(match (d.swung, starved) {
+        (true, true) => 0.7,
+        (true, false) => 0.1,
+        (false, true) => 0.3,
+        (false, false) => 0.9,
+    })
+}
