@@ -17,7 +17,7 @@ pub const FAULTS: &[Fault] = &[
         column: Column::Heat,
         severity: MostlyMild,
         effects: ways!(
-            [PumpCaseLine: Times(2.5, 25.0), PumpCaseTurbulent: Times(2.5, 25.0), HeatRise: Times(1.02, 1.4)],
+            [PumpCaseLine: Times(2.5, 15.0), PumpCaseTurbulent: Times(2.5, 15.0), HeatRise: Times(1.02, 1.4)],
             [MotorCaseLine: Times(4.0, 60.0), HeatRise: Times(1.02, 1.3)],
         ),
         explains: "Case pressure stands high, so the charge gauge reads high while charge above case is unchanged. Shaft \
@@ -35,7 +35,7 @@ pub const FAULTS: &[Fault] = &[
         column: Column::Heat,
         severity: MostlyBad,
         effects: ways!(
-            [PumpCaseLine: Times(15.0, 150.0), PumpCaseTurbulent: Times(3.0, 30.0)],
+            [PumpCaseLine: Times(10.0, 60.0), PumpCaseTurbulent: Times(3.0, 20.0)],
             [MotorCaseLine: Times(60.0, 3000.0)],
         ),
         explains: "The case cannot drain: its pressure climbs until the shaft seal goes. Mostly just after a repair or an \

@@ -63,7 +63,7 @@ pub const FAULTS: &[Fault] = &[
         id: FaultId::CheckALeaking,
         title: "Check or relief seat of side A leaks (weak forward)",
         per_hundred: 0.9,
-        effects: ways!([CheckLeakA: PlusGeometric(0.3, 12.0)]),
+        effects: ways!([CheckLeakA: PlusGeometric(0.2, 12.0)]),
         explains: "Forward, oil of the high side slips through its own cartridge into the charge gallery: little push at \
                    small stroke, while charge stays or even rises.",
         proof: "The weak direction changes over when the two cartridges are swapped side to side.",
@@ -73,7 +73,7 @@ pub const FAULTS: &[Fault] = &[
         id: FaultId::CheckBLeaking,
         title: "Check or relief seat of side B leaks (weak in reverse)",
         per_hundred: 0.9,
-        effects: ways!([CheckLeakB: PlusGeometric(0.3, 12.0)]),
+        effects: ways!([CheckLeakB: PlusGeometric(0.2, 12.0)]),
         explains: "In reverse, oil of the high side slips through its own cartridge into the charge gallery: little push at \
                    small stroke, while charge stays or even rises.",
         proof: "The weak direction changes over when the two cartridges are swapped side to side.",
@@ -148,8 +148,8 @@ pub const FAULTS: &[Fault] = &[
         column: Column::TwoSides,
         severity: Even,
         effects: ways!(
-            [Bypass: PlusGeometric(0.4, 30.0)],
-            [CheckLeakA: PlusGeometric(0.4, 20.0), CheckLeakB: PlusGeometric(0.4, 20.0)],
+            [Bypass: PlusGeometric(0.2, 30.0)],
+            [CheckLeakA: PlusGeometric(0.2, 20.0), CheckLeakB: PlusGeometric(0.2, 20.0)],
         ),
         explains: "Oil short-circuits from side to side: weak both ways, worst at small stroke, and the machine may roll \
                    on a slope. Charge stays good.",

@@ -13,6 +13,8 @@ mod loop_side;
 mod people;
 mod possible;
 #[cfg(test)]
+mod signs;
+#[cfg(test)]
 mod tests;
 
 use super::{Column, Fault, FaultId, SeverityShape};
