@@ -47,7 +47,11 @@ impl Book {
     /// Takes a unit out, with its visits: all of them are handed back, oldest first, for the trash or for "undo".
     pub fn remove_unit(&mut self, id: &str) -> Option<(Unit, Vec<Visit>)> {
         let unit = self.units.remove(id)?;
-        let ids: Vec<String> = self.visits_of(id).rev().map(|visit| visit.id.clone()).collect();
+        let ids: Vec<String> = self
+            .visits_of(id)
+            .rev()
+            .map(|visit| visit.id.clone())
+            .collect();
         let visits = ids.iter().filter_map(|id| self.visits.remove(id)).collect();
         Some((unit, visits))
     }
@@ -62,7 +66,9 @@ impl Book {
 
     /// Visits to a unit, newest first.
     pub fn visits_of<'a>(&'a self, unit: &'a str) -> impl DoubleEndedIterator<Item = &'a Visit> {
-        self.newest_first().into_iter().filter(move |visit| visit.unit == unit)
+        self.newest_first()
+            .into_iter()
+            .filter(move |visit| visit.unit == unit)
     }
 
     /// Every visit, newest first.
@@ -75,7 +81,9 @@ impl Book {
 
     /// Visits whose unit is not in the book.
     pub fn without_unit(&self) -> impl Iterator<Item = &Visit> {
-        self.visits.values().filter(|visit| !self.units.contains_key(&visit.unit))
+        self.visits
+            .values()
+            .filter(|visit| !self.units.contains_key(&visit.unit))
     }
 
     /// True where nothing was entered yet.
@@ -110,20 +118,39 @@ mod tests {
     use super::*;
 
     fn unit(id: &str, name: &str) -> Unit {
-        Unit { id: id.into(), name: name.into(), ..Unit::default() }
+        Unit {
+            id: id.into(),
+            name: name.into(),
+            ..Unit::default()
+        }
     }
 
     fn visit(id: &str, unit: &str, opened: &str) -> Visit {
-        Visit { id: id.into(), unit: unit.into(), opened: opened.into(), ..Visit::default() }
+        Visit {
+            id: id.into(),
+            unit: unit.into(),
+            opened: opened.into(),
+            ..Visit::default()
+        }
     }
 
     #[test]
     fn yard_numbers_sort_by_their_value() {
         let mut book = Book::default();
-        for (id, name) in [("a", "T-14"), ("b", "t-9"), ("c", "T-014"), ("d", "Roller"), ("e", "27")] {
+        for (id, name) in [
+            ("a", "T-14"),
+            ("b", "t-9"),
+            ("c", "T-014"),
+            ("d", "Roller"),
+            ("e", "27"),
+        ] {
             book.put_unit(unit(id, name));
         }
-        let names: Vec<&str> = book.units_by_name().iter().map(|u| u.name.as_str()).collect();
+        let names: Vec<&str> = book
+            .units_by_name()
+            .iter()
+            .map(|u| u.name.as_str())
+            .collect();
         assert_eq!(names, ["27", "Roller", "t-9", "T-14", "T-014"]);
     }
 
@@ -136,7 +163,10 @@ mod tests {
         book.put_visit(visit("v3", "b", "2025-01-01T08:00:00Z"));
         let (gone, visits) = book.remove_unit("a").expect("it is there");
         assert_eq!(gone.name, "T-14");
-        assert_eq!(visits.iter().map(|v| v.id.as_str()).collect::<Vec<_>>(), ["v2", "v1"]);
+        assert_eq!(
+            visits.iter().map(|v| v.id.as_str()).collect::<Vec<_>>(),
+            ["v2", "v1"]
+        );
         assert_eq!(book.visits.keys().collect::<Vec<_>>(), ["v3"]);
         assert_eq!(book.without_unit().count(), 1);
         assert!(book.remove_unit("a").is_none());

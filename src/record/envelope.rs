@@ -81,17 +81,26 @@ impl Envelope {
             serde_json::error::Category::Data => RecordError::NotOurs { why: e.to_string() },
             _ => not_json(&e),
         })?;
-        let kind = RecordKind::from_code(&stored.kind).filter(|_| stored.app == APP).ok_or_else(|| {
-            RecordError::NotOurs { why: format!("app {:?}, kind {:?}", stored.app, stored.kind) }
-        })?;
+        let kind = RecordKind::from_code(&stored.kind)
+            .filter(|_| stored.app == APP)
+            .ok_or_else(|| RecordError::NotOurs {
+                why: format!("app {:?}, kind {:?}", stored.app, stored.kind),
+            })?;
         let found = checksum(stored.body.get());
         if found != stored.sum {
-            return Err(RecordError::Damaged { found, expected: stored.sum });
+            return Err(RecordError::Damaged {
+                found,
+                expected: stored.sum,
+            });
         }
         Ok(Envelope {
             kind,
             schema: stored.schema,
-            stamp: Stamp { rev: stored.rev, tab: stored.tab, sum: found },
+            stamp: Stamp {
+                rev: stored.rev,
+                tab: stored.tab,
+                sum: found,
+            },
             saved_at: stored.saved_at,
             body: stored.body.get().to_owned(),
         })
@@ -116,7 +125,9 @@ impl Envelope {
 
 /// A JSON error in our words, with line and column.
 pub(super) fn not_json(error: &serde_json::Error) -> RecordError {
-    RecordError::NotJson { why: error.to_string() }
+    RecordError::NotJson {
+        why: error.to_string(),
+    }
 }
 
 /// Turns a JSON value into a record, with the path where it cannot be done.
@@ -124,7 +135,11 @@ pub(super) fn from_value<T: DeserializeOwned>(value: serde_json::Value) -> Resul
     serde_path_to_error::deserialize(value).map_err(|error| {
         let path = error.path().to_string();
         RecordError::Shape {
-            path: if path == "." { String::from("the file") } else { path },
+            path: if path == "." {
+                String::from("the file")
+            } else {
+                path
+            },
             why: error.into_inner().to_string(),
         }
     })

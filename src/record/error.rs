@@ -8,7 +8,9 @@ use thiserror::Error;
 #[derive(Debug, Clone, PartialEq, Error)]
 pub enum RecordError {
     /// Larger than any file the app writes.
-    #[error("the file has {bytes} bytes; up to {limit} are taken. The app writes more than that as several files: take them one by one")]
+    #[error(
+        "the file has {bytes} bytes; up to {limit} are taken. The app writes more than that as several files: take them one by one"
+    )]
     TooLarge {
         /// Size met (at least).
         bytes: usize,
@@ -16,13 +18,17 @@ pub enum RecordError {
         limit: usize,
     },
     /// Not text.
-    #[error("the file is no text: byte {at} is not UTF-8. Choose the .json file that Lowside saved")]
+    #[error(
+        "the file is no text: byte {at} is not UTF-8. Choose the .json file that Lowside saved"
+    )]
     NotText {
         /// Offset of the first bad byte.
         at: usize,
     },
     /// Not JSON.
-    #[error("the text cannot be read as JSON: {why}. It is damaged or was cut short: fetch the file again")]
+    #[error(
+        "the text cannot be read as JSON: {why}. It is damaged or was cut short: fetch the file again"
+    )]
     NotJson {
         /// Reason with line and column.
         why: String,
@@ -34,7 +40,9 @@ pub enum RecordError {
         why: String,
     },
     /// Written by a newer version.
-    #[error("written by a newer version of Lowside (format {found}; this version reads up to {known}). Update this app, then open it again")]
+    #[error(
+        "written by a newer version of Lowside (format {found}; this version reads up to {known}). Update this app, then open it again"
+    )]
     Newer {
         /// Format number met.
         found: u64,
@@ -66,7 +74,9 @@ pub enum RecordError {
         why: String,
     },
     /// The checksum does not fit the text.
-    #[error("the stored text was changed or damaged since it was written (checksum {found}, expected {expected})")]
+    #[error(
+        "the stored text was changed or damaged since it was written (checksum {found}, expected {expected})"
+    )]
     Damaged {
         /// Checksum of the text met.
         found: String,
@@ -154,5 +164,8 @@ impl RecordError {
 
 /// Shorthand for a [`RecordError::Content`].
 pub(super) fn content(path: impl Into<String>, problem: Problem) -> RecordError {
-    RecordError::Content { path: path.into(), problem }
+    RecordError::Content {
+        path: path.into(),
+        problem,
+    }
 }

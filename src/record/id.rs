@@ -50,7 +50,9 @@ pub fn is_id(text: &str) -> bool {
     !text.is_empty()
         && text.len() <= ID_CHARACTERS
         && !text.starts_with('.')
-        && text.bytes().all(|b| b.is_ascii_alphanumeric() || matches!(b, b'-' | b'_' | b'.'))
+        && text
+            .bytes()
+            .all(|b| b.is_ascii_alphanumeric() || matches!(b, b'-' | b'_' | b'.'))
 }
 
 /// `id` with an ending, cut so that the whole is still an id.

@@ -77,13 +77,19 @@ pub struct Ladder {
 
 impl Default for Ladder {
     fn default() -> Self {
-        Ladder { top: SCHEMA, steps: STEPS }
+        Ladder {
+            top: SCHEMA,
+            steps: STEPS,
+        }
     }
 }
 
 impl core::fmt::Debug for Ladder {
     fn fmt(&self, f: &mut core::fmt::Formatter<'_>) -> core::fmt::Result {
-        f.debug_struct("Ladder").field("top", &self.top).field("steps", &self.steps.len()).finish()
+        f.debug_struct("Ladder")
+            .field("top", &self.top)
+            .field("steps", &self.steps.len())
+            .finish()
     }
 }
 
@@ -93,7 +99,11 @@ impl Ladder {
     pub fn is_sound(&self) -> bool {
         let first = self.steps.first().map_or(self.top, |step| step.from);
         first >= 1
-            && self.steps.iter().zip(first..).all(|(step, from)| step.from == from)
+            && self
+                .steps
+                .iter()
+                .zip(first..)
+                .all(|(step, from)| step.from == from)
             && u32::try_from(self.steps.len()).is_ok_and(|count| first + count == self.top)
     }
 
@@ -108,7 +118,9 @@ impl Ladder {
     /// # Errors
     /// [`RecordError::Newer`] above the top, [`RecordError::NotOurs`] below the bottom, [`RecordError::Migration`].
     pub fn climb(&self, subject: Subject, from: u64, value: Value) -> Result<Value, RecordError> {
-        self.steps_from(from)?.iter().try_fold(value, |value, step| step.take(subject, value))
+        self.steps_from(from)?
+            .iter()
+            .try_fold(value, |value, step| step.take(subject, value))
     }
 
     /// Brings an export file (head and lists) from format `from` to the top.
@@ -116,39 +128,63 @@ impl Ladder {
     /// # Errors
     /// As [`Ladder::climb`].
     pub fn climb_export(&self, from: u64, value: Value) -> Result<Value, RecordError> {
-        self.steps_from(from)?.iter().try_fold(value, |value, step| {
-            let mut value = step.take(Subject::Export, value)?;
-            let Some(head) = value.as_object_mut() else { return Ok(value) };
-            for (list, subject) in [
-                ("units", Subject::Record(RecordKind::Unit)),
-                ("visits", Subject::Record(RecordKind::Visit)),
-                ("instruments", Subject::Instrument),
-            ] {
-                for item in head.get_mut(list).and_then(Value::as_array_mut).into_iter().flatten() {
-                    *item = step.take(subject, item.take())?;
+        self.steps_from(from)?
+            .iter()
+            .try_fold(value, |value, step| {
+                let mut value = step.take(Subject::Export, value)?;
+                let Some(head) = value.as_object_mut() else {
+                    return Ok(value);
+                };
+                for (list, subject) in [
+                    ("units", Subject::Record(RecordKind::Unit)),
+                    ("visits", Subject::Record(RecordKind::Visit)),
+                    ("instruments", Subject::Instrument),
+                ] {
+                    for item in head
+                        .get_mut(list)
+                        .and_then(Value::as_array_mut)
+                        .into_iter()
+                        .flatten()
+                    {
+                        *item = step.take(subject, item.take())?;
+                    }
                 }
-            }
-            if let Some(settings) = head.get_mut("settings").filter(|value| !value.is_null()) {
-                *settings = step.take(Subject::Record(RecordKind::Settings), settings.take())?;
-            }
-            Ok(value)
-        })
+                if let Some(settings) = head.get_mut("settings").filter(|value| !value.is_null()) {
+                    *settings =
+                        step.take(Subject::Record(RecordKind::Settings), settings.take())?;
+                }
+                Ok(value)
+            })
     }
 
     fn steps_from(&self, from: u64) -> Result<&'static [Step], RecordError> {
         if from > u64::from(self.top) {
-            return Err(RecordError::Newer { found: from, known: self.top });
+            return Err(RecordError::Newer {
+                found: from,
+                known: self.top,
+            });
         }
         let too_old = || RecordError::NotOurs {
-            why: format!("format {from}; the oldest that is read is {}", self.bottom()),
+            why: format!(
+                "format {from}; the oldest that is read is {}",
+                self.bottom()
+            ),
         };
-        let skip = from.checked_sub(u64::from(self.bottom())).ok_or_else(too_old)?;
-        usize::try_from(skip).ok().and_then(|skip| self.steps.get(skip..)).ok_or_else(too_old)
+        let skip = from
+            .checked_sub(u64::from(self.bottom()))
+            .ok_or_else(too_old)?;
+        usize::try_from(skip)
+            .ok()
+            .and_then(|skip| self.steps.get(skip..))
+            .ok_or_else(too_old)
     }
 }
 
 impl Step {
     fn take(&self, subject: Subject, value: Value) -> Result<Value, RecordError> {
-        (self.apply)(subject, value).map_err(|why| RecordError::Migration { from: self.from, why })
+        (self.apply)(subject, value).map_err(|why| RecordError::Migration {
+            from: self.from,
+            why,
+        })
     }
 }

@@ -7,11 +7,17 @@
 //! * [`limits`] says how much a record may hold; fields on a screen keep to them.
 
 mod book;
+mod check;
 mod envelope;
 mod error;
+mod export;
 mod id;
+mod import;
 pub mod limits;
+mod mend;
 pub mod migrate;
+mod plan;
+mod rescue;
 mod settings;
 mod sum;
 mod visit;
@@ -19,8 +25,10 @@ mod visit;
 pub use book::Book;
 pub use envelope::{APP, Envelope, Stamp};
 pub use error::{Problem, RecordError};
+pub use export::Export;
 pub use id::{IdOf, is_id, new_id};
 pub use migrate::{Ladder, RecordKind, SCHEMA, Step, Subject};
+pub use plan::{Fate, ImportPlan, Planned, Taken};
 pub use settings::{FirstRun, Settings, Theme};
 pub use sum::checksum;
 pub use visit::{Answer, Closing, Visit};

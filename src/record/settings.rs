@@ -78,12 +78,17 @@ impl Settings {
     /// Settings of a device that has none yet: metric units and the instruments that are found in most service vans.
     #[must_use]
     pub fn start() -> Self {
-        Settings { instruments: usual_instruments(), ..Settings::default() }
+        Settings {
+            instruments: usual_instruments(),
+            ..Settings::default()
+        }
     }
 
     /// The instrument of this id.
     #[must_use]
     pub fn instrument(&self, id: &str) -> Option<&Instrument> {
-        self.instruments.iter().find(|instrument| instrument.id == id)
+        self.instruments
+            .iter()
+            .find(|instrument| instrument.id == id)
     }
 }

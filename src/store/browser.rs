@@ -24,8 +24,13 @@ impl BrowserStore {
         let window = web_sys::window().ok_or(StoreError::Missing)?;
         // The property itself throws where the browser blocks storage. Only after this is the wrapper's own access safe,
         // which would stop the app.
-        window.local_storage().map_err(|error| why(&error))?.ok_or(StoreError::Missing)?;
-        let store = BrowserStore { storage: LocalStorage::raw() };
+        window
+            .local_storage()
+            .map_err(|error| why(&error))?
+            .ok_or(StoreError::Missing)?;
+        let store = BrowserStore {
+            storage: LocalStorage::raw(),
+        };
         match store.put(PROBE, PROBE) {
             Err(StoreError::Full) => return Ok(store),
             other => other?,
@@ -35,7 +40,9 @@ impl BrowserStore {
         if back.as_deref() == Some(PROBE) {
             Ok(store)
         } else {
-            Err(StoreError::Failed(String::from("it does not give back what was stored")))
+            Err(StoreError::Failed(String::from(
+                "it does not give back what was stored",
+            )))
         }
     }
 }
@@ -56,7 +63,9 @@ impl Store for BrowserStore {
     }
 
     fn put(&self, key: &str, text: &str) -> Result<(), StoreError> {
-        self.storage.set_item(key, text).map_err(|error| why(&error))
+        self.storage
+            .set_item(key, text)
+            .map_err(|error| why(&error))
     }
 
     fn remove(&self, key: &str) -> Result<(), StoreError> {
@@ -77,7 +86,11 @@ impl Store for BrowserStore {
 /// Browsers tell their reasons apart only by the name of the exception.
 fn why(error: &JsValue) -> StoreError {
     let Some(exception) = error.dyn_ref::<DomException>() else {
-        return StoreError::Failed(error.as_string().unwrap_or_else(|| String::from("unknown error")));
+        return StoreError::Failed(
+            error
+                .as_string()
+                .unwrap_or_else(|| String::from("unknown error")),
+        );
     };
     match exception.name().as_str() {
         "QuotaExceededError" | "NS_ERROR_DOM_QUOTA_REACHED" => StoreError::Full,

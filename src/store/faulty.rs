@@ -48,7 +48,10 @@ enum Turn {
 impl<S: Store> FaultyStore<S> {
     /// A store that behaves until told otherwise.
     pub fn new(inner: S) -> Self {
-        FaultyStore { inner, state: RefCell::default() }
+        FaultyStore {
+            inner,
+            state: RefCell::default(),
+        }
     }
 
     /// The store behind.
@@ -103,14 +106,28 @@ impl<S: Store> FaultyStore<S> {
     }
 
     fn check_room(&self, key: &str, text: &str) -> Result<(), StoreError> {
-        let Some(quota) = self.state.borrow().quota else { return Ok(()) };
+        let Some(quota) = self.state.borrow().quota else {
+            return Ok(());
+        };
         let mut used = key.len() + text.len();
-        for other in self.inner.keys("")?.into_iter().filter(|other| other != key) {
+        for other in self
+            .inner
+            .keys("")?
+            .into_iter()
+            .filter(|other| other != key)
+        {
             used += other.len() + self.inner.get(&other)?.map_or(0, |text| text.len());
         }
-        let before = self.inner.get(key)?.map_or(0, |text| key.len() + text.len());
+        let before = self
+            .inner
+            .get(key)?
+            .map_or(0, |text| key.len() + text.len());
         // As in browsers: a write that makes the store smaller is let through even over the limit.
-        if used > quota && key.len() + text.len() > before { Err(StoreError::Full) } else { Ok(()) }
+        if used > quota && key.len() + text.len() > before {
+            Err(StoreError::Full)
+        } else {
+            Ok(())
+        }
     }
 }
 
@@ -123,10 +140,17 @@ impl<S: Store> Store for FaultyStore<S> {
     fn put(&self, key: &str, text: &str) -> Result<(), StoreError> {
         let turn = self.turn()?;
         self.check_room(key, text)?;
-        let Turn::Tear(share, fails) = turn else { return self.inner.put(key, text) };
+        let Turn::Tear(share, fails) = turn else {
+            return self.inner.put(key, text);
+        };
         let kept = text.chars().count() * usize::from(share.min(99)) / 100;
-        self.inner.put(key, &text.chars().take(kept).collect::<String>())?;
-        if fails { Err(StoreError::Failed(String::from("torn write"))) } else { Ok(()) }
+        self.inner
+            .put(key, &text.chars().take(kept).collect::<String>())?;
+        if fails {
+            Err(StoreError::Failed(String::from("torn write")))
+        } else {
+            Ok(())
+        }
     }
 
     fn remove(&self, key: &str) -> Result<(), StoreError> {

@@ -71,8 +71,14 @@ impl RecordKey {
         if path == SETTINGS {
             return Some(RecordKey::Settings);
         }
-        let id = |prefix| path.strip_prefix(prefix).filter(|id| is_id(id)).map(str::to_owned);
-        id(UNIT).map(RecordKey::Unit).or_else(|| id(VISIT).map(RecordKey::Visit))
+        let id = |prefix| {
+            path.strip_prefix(prefix)
+                .filter(|id| is_id(id))
+                .map(str::to_owned)
+        };
+        id(UNIT)
+            .map(RecordKey::Unit)
+            .or_else(|| id(VISIT).map(RecordKey::Visit))
     }
 
     /// Name for a message: "unit u12ab".
@@ -122,7 +128,11 @@ pub(super) fn from_trash(path: &str) -> Option<(String, RecordKey)> {
 
 /// Key in the quarantine.
 pub(super) fn quarantine(now: &str, path: &str) -> String {
-    format!("{QUARANTINE}{}/{}", moment(now), path.strip_prefix(PREFIX).unwrap_or(path))
+    format!(
+        "{QUARANTINE}{}/{}",
+        moment(now),
+        path.strip_prefix(PREFIX).unwrap_or(path)
+    )
 }
 
 /// Time and former key of a key in the quarantine.
@@ -133,7 +143,11 @@ pub(super) fn from_quarantine(path: &str) -> Option<(String, String)> {
 
 /// A moment as part of a key: without the separator.
 fn moment(now: &str) -> String {
-    if now.is_empty() { String::from("unknown") } else { now.replace('/', "-") }
+    if now.is_empty() {
+        String::from("unknown")
+    } else {
+        now.replace('/', "-")
+    }
 }
 
 #[cfg(test)]
@@ -142,12 +156,28 @@ mod tests {
 
     #[test]
     fn keys_lead_back_to_their_records() {
-        for key in [RecordKey::Settings, RecordKey::Unit("u1".into()), RecordKey::Visit("demo-v.2".into())] {
+        for key in [
+            RecordKey::Settings,
+            RecordKey::Unit("u1".into()),
+            RecordKey::Visit("demo-v.2".into()),
+        ] {
             assert_eq!(RecordKey::from_path(&key.path()), Some(key.clone()));
-            assert_eq!(from_trash(&trash("2025/x", &key)), Some((String::from("2025-x"), key.clone())));
-            assert_eq!(from_quarantine(&quarantine("", &key.path())), Some((String::from("unknown"), key.path())));
+            assert_eq!(
+                from_trash(&trash("2025/x", &key)),
+                Some((String::from("2025-x"), key.clone()))
+            );
+            assert_eq!(
+                from_quarantine(&quarantine("", &key.path())),
+                Some((String::from("unknown"), key.path()))
+            );
         }
-        for path in ["lowside/v1/unit/", "lowside/v1/unit/a/b", "lowside/v2/settings", "lowside/v1/index", "x"] {
+        for path in [
+            "lowside/v1/unit/",
+            "lowside/v1/unit/a/b",
+            "lowside/v2/settings",
+            "lowside/v1/index",
+            "x",
+        ] {
             assert_eq!(RecordKey::from_path(path), None, "{path}");
         }
     }

@@ -31,7 +31,9 @@ impl Store for MemoryStore {
     }
 
     fn put(&self, key: &str, text: &str) -> Result<(), StoreError> {
-        self.texts.borrow_mut().insert(key.to_owned(), text.to_owned());
+        self.texts
+            .borrow_mut()
+            .insert(key.to_owned(), text.to_owned());
         Ok(())
     }
 
@@ -41,6 +43,12 @@ impl Store for MemoryStore {
     }
 
     fn keys(&self, prefix: &str) -> Result<Vec<String>, StoreError> {
-        Ok(self.texts.borrow().keys().filter(|key| key.starts_with(prefix)).cloned().collect())
+        Ok(self
+            .texts
+            .borrow()
+            .keys()
+            .filter(|key| key.starts_with(prefix))
+            .cloned()
+            .collect())
     }
 }

@@ -17,7 +17,8 @@ pub use faulty::{Fault, FaultyStore};
 pub use keys::{PREFIX, RecordKey};
 pub use memory::MemoryStore;
 pub use shelf::{
-    Foreign, LoadProblem, Loaded, NotSaved, Quarantined, SaveOutcome, SaveState, Shelf, Trashed, Usage,
+    Foreign, LoadProblem, Loaded, NotSaved, Quarantined, SaveOutcome, SaveState, Shelf, Trashed,
+    Usage,
 };
 
 use thiserror::Error;

@@ -6,16 +6,15 @@ use super::{Foreign, NotSaved, Quarantined, Shelf, Standing, Trashed};
 use crate::record::Envelope;
 use serde_json::Value;
 
-/// Why a record was not put in the trash.
-type Refused = Result<(), NotSaved>;
-
 impl<S: Store> Shelf<S> {
     /// Puts a record in the trash, as it stands in the store. What another tab changed since is not touched.
     ///
     /// # Errors
     /// [`NotSaved::Gone`] where it is not there (in this state); otherwise as a save.
     pub fn trash(&mut self, key: &RecordKey, now: &str) -> Result<(), NotSaved> {
-        self.take_out(key, |shelf, text| shelf.put_aside(|moment| keys::trash(moment, key), now, text))
+        self.take_out(key, |shelf, text| {
+            shelf.put_aside(|moment| keys::trash(moment, key), now, text)
+        })
     }
 
     /// Deletes a record for good, without the trash: for demo data, and where the store is too full for the trash.
@@ -26,14 +25,20 @@ impl<S: Store> Shelf<S> {
         self.take_out(key, |_, _| Ok(()))
     }
 
-    fn take_out(&mut self, key: &RecordKey, keep: impl Fn(&Self, &str) -> Refused) -> Result<(), NotSaved> {
+    fn take_out(
+        &mut self,
+        key: &RecordKey,
+        keep: impl Fn(&Self, &str) -> Result<(), NotSaved>,
+    ) -> Result<(), NotSaved> {
         if !self.loaded {
             return Err(NotSaved::NotLoaded);
         }
         if let Some(schema) = self.read_only.get(key) {
             return Err(NotSaved::Newer(*schema));
         }
-        let Ok(Standing::Ours { text, .. }) = self.compare(key)? else { return Err(NotSaved::Gone) };
+        let Ok(Standing::Ours { text, .. }) = self.compare(key)? else {
+            return Err(NotSaved::Gone);
+        };
         keep(self, &text)?;
         // The slot goes first: left behind, it would bring the record back.
         self.clear_slot(key)?;
@@ -49,8 +54,15 @@ impl<S: Store> Shelf<S> {
     /// Empties this tab's slot where it holds this record.
     fn clear_slot(&self, key: &RecordKey) -> Result<(), StoreError> {
         let slot = keys::slot(&self.tab);
-        let holds = self.store.get(&slot)?.is_some_and(|text| text.split('\n').next() == Some(&key.tail()));
-        if holds { self.store.remove(&slot) } else { Ok(()) }
+        let holds = self
+            .store
+            .get(&slot)?
+            .is_some_and(|text| text.split('\n').next() == Some(&key.tail()));
+        if holds {
+            self.store.remove(&slot)
+        } else {
+            Ok(())
+        }
     }
 
     /// What is in the trash, newest first.
@@ -60,9 +72,20 @@ impl<S: Store> Shelf<S> {
     pub fn trashed(&self) -> Result<Vec<Trashed>, StoreError> {
         let mut all = Vec::new();
         for path in self.store.keys(keys::TRASH)? {
-            let Some((when, key)) = keys::from_trash(&path) else { continue };
-            let name = self.store.get(&path)?.map(|text| name_in(&text)).unwrap_or_default();
-            all.push(Trashed { path, key, when, name });
+            let Some((when, key)) = keys::from_trash(&path) else {
+                continue;
+            };
+            let name = self
+                .store
+                .get(&path)?
+                .map(|text| name_in(&text))
+                .unwrap_or_default();
+            all.push(Trashed {
+                path,
+                key,
+                when,
+                name,
+            });
         }
         all.reverse();
         Ok(all)
@@ -106,9 +129,19 @@ impl<S: Store> Shelf<S> {
     pub fn quarantined(&self) -> Result<Vec<Quarantined>, StoreError> {
         let mut all = Vec::new();
         for path in self.store.keys(keys::QUARANTINE)? {
-            let Some((when, was)) = keys::from_quarantine(&path) else { continue };
-            let characters = self.store.get(&path)?.map_or(0, |text| text.chars().count());
-            all.push(Quarantined { path, was, when, characters });
+            let Some((when, was)) = keys::from_quarantine(&path) else {
+                continue;
+            };
+            let characters = self
+                .store
+                .get(&path)?
+                .map_or(0, |text| text.chars().count());
+            all.push(Quarantined {
+                path,
+                was,
+                when,
+                characters,
+            });
         }
         all.reverse();
         Ok(all)
@@ -142,6 +175,14 @@ impl<S: Store> Shelf<S> {
 /// Name of the unit or complaint of the visit in a stored text; empty where it cannot be read.
 fn name_in(text: &str) -> String {
     let record: Option<Value> = Envelope::open(text).ok().and_then(|there| there.glimpse());
-    let field = |name| record.as_ref().and_then(|record| record.get(name)).and_then(Value::as_str);
-    field("name").or_else(|| field("complaint")).unwrap_or_default().to_owned()
+    let field = |name| {
+        record
+            .as_ref()
+            .and_then(|record| record.get(name))
+            .and_then(Value::as_str)
+    };
+    field("name")
+        .or_else(|| field("complaint"))
+        .unwrap_or_default()
+        .to_owned()
 }

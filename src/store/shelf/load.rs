@@ -35,7 +35,10 @@ impl<S: Store> Shelf<S> {
         };
         // A device without settings starts with the usual ones.
         loaded.book.settings = Settings::start();
-        let found: BTreeSet<RecordKey> = paths.iter().filter_map(|path| RecordKey::from_path(path)).collect();
+        let found: BTreeSet<RecordKey> = paths
+            .iter()
+            .filter_map(|path| RecordKey::from_path(path))
+            .collect();
         for key in &found {
             match key {
                 RecordKey::Settings => {
@@ -88,7 +91,10 @@ impl<S: Store> Shelf<S> {
         let text = self
             .store
             .get(&key.path())
-            .map_err(|why| LoadProblem::Unread { key: key.clone(), why })?;
+            .map_err(|why| LoadProblem::Unread {
+                key: key.clone(),
+                why,
+            })?;
         let Some(text) = text else {
             self.held.remove(key);
             return Ok(None);
@@ -100,7 +106,11 @@ impl<S: Store> Shelf<S> {
         })?;
         // Slots that hold this very state have done their work; one that is left over is looked at again at the next load.
         for slot in self.store.keys(keys::SLOT).unwrap_or_default() {
-            if self.store.get(&slot).is_ok_and(|there| there.as_deref() == Some(&format!("{}\n{text}", key.tail()))) {
+            if self
+                .store
+                .get(&slot)
+                .is_ok_and(|there| there.as_deref() == Some(&format!("{}\n{text}", key.tail())))
+            {
                 let _ = self.store.remove(&slot);
             }
         }
@@ -112,7 +122,10 @@ impl<S: Store> Shelf<S> {
         let text = match self.store.get(&key.path()) {
             Ok(text) => text?,
             Err(why) => {
-                loaded.problems.push(LoadProblem::Unread { key: key.clone(), why });
+                loaded.problems.push(LoadProblem::Unread {
+                    key: key.clone(),
+                    why,
+                });
                 return None;
             }
         };
@@ -120,13 +133,19 @@ impl<S: Store> Shelf<S> {
             Ok(record) => {
                 if let Some(schema) = self.read_only.get(key) {
                     loaded.read_only.push(key.clone());
-                    loaded.problems.push(LoadProblem::Newer { key: key.clone(), schema: *schema });
+                    loaded.problems.push(LoadProblem::Newer {
+                        key: key.clone(),
+                        schema: *schema,
+                    });
                 }
                 Some(record)
             }
             Err(RecordError::Newer { found, .. }) => {
                 loaded.read_only.push(key.clone());
-                loaded.problems.push(LoadProblem::Newer { key: key.clone(), schema: found });
+                loaded.problems.push(LoadProblem::Newer {
+                    key: key.clone(),
+                    schema: found,
+                });
                 None
             }
             Err(why) => {
@@ -140,7 +159,13 @@ impl<S: Store> Shelf<S> {
     fn read<T: Kept>(&mut self, key: &RecordKey, text: &str) -> Result<T, RecordError> {
         let there = Envelope::open(text)?;
         if there.kind != key.kind() {
-            return Err(RecordError::NotOurs { why: format!("a {} stands under the key of a {}", there.kind.code(), key.kind().code()) });
+            return Err(RecordError::NotOurs {
+                why: format!(
+                    "a {} stands under the key of a {}",
+                    there.kind.code(),
+                    key.kind().code()
+                ),
+            });
         }
         let mut record: T = match there.record(&self.ladder) {
             Ok(record) => record,
@@ -151,8 +176,16 @@ impl<S: Store> Shelf<S> {
             Err(other) => return Err(other),
         };
         record.take_id(key);
-        let content = serde_json::to_string(&record).map(|body| checksum(&body)).unwrap_or_default();
-        self.held.insert(key.clone(), Held { stamp: there.stamp, content });
+        let content = serde_json::to_string(&record)
+            .map(|body| checksum(&body))
+            .unwrap_or_default();
+        self.held.insert(
+            key.clone(),
+            Held {
+                stamp: there.stamp,
+                content,
+            },
+        );
         Ok(record)
     }
 
@@ -164,24 +197,40 @@ impl<S: Store> Shelf<S> {
         loaded.problems.push(match moved {
             Ok(()) => LoadProblem::Quarantined { was, why },
             Err(NotSaved::Store(store)) => LoadProblem::Stuck { was, why, store },
-            Err(other) => LoadProblem::Stuck { was, why, store: StoreError::Failed(other.to_string()) },
+            Err(other) => LoadProblem::Stuck {
+                was,
+                why,
+                store: StoreError::Failed(other.to_string()),
+            },
         });
     }
 
     /// Looks at a slot that some tab left: its last save was cut off, or met another's, or (most often) was complete.
     fn settle_slot(&self, slot: &str, now: &str, loaded: &mut Loaded) {
-        let Ok(Some(content)) = self.store.get(slot) else { return };
+        let Ok(Some(content)) = self.store.get(slot) else {
+            return;
+        };
         let Some((key, text)) = content
             .split_once('\n')
             .and_then(|(tail, text)| Some((RecordKey::from_tail(tail)?, text)))
         else {
-            return self.quarantine(slot, &content, RecordError::NotOurs { why: String::from("a slot without a record") }, now, loaded);
+            return self.quarantine(
+                slot,
+                &content,
+                RecordError::NotOurs {
+                    why: String::from("a slot without a record"),
+                },
+                now,
+                loaded,
+            );
         };
         let mine = match Envelope::open(text) {
             Ok(mine) => mine,
             Err(why) => return self.quarantine(slot, &content, why, now, loaded),
         };
-        let Ok(there) = self.store.get(&key.path()) else { return };
+        let Ok(there) = self.store.get(&key.path()) else {
+            return;
+        };
         let opened = there.as_deref().map(Envelope::open);
         match opened {
             Some(Ok(there)) if there.stamp == mine.stamp || there.body == mine.body => {
@@ -189,7 +238,13 @@ impl<S: Store> Shelf<S> {
             }
             Some(Ok(there)) if mine.stamp.rev <= there.stamp.rev => {
                 let mut aside = Loaded::default();
-                self.quarantine(slot, text, RecordError::NotOurs { why: String::new() }, now, &mut aside);
+                self.quarantine(
+                    slot,
+                    text,
+                    RecordError::NotOurs { why: String::new() },
+                    now,
+                    &mut aside,
+                );
                 loaded.problems.push(LoadProblem::Parallel { key });
             }
             // Cut off before the record was written (nothing, or the state before) or in the middle of it (unreadable).
@@ -214,8 +269,11 @@ impl<S: Store> Shelf<S> {
             .flatten()
             .and_then(|text| serde_json::from_str(&text).ok())
             .unwrap_or_default();
-        let gone: Vec<RecordKey> =
-            named.iter().filter_map(|tail| RecordKey::from_tail(tail)).filter(|key| !found.contains(key)).collect();
+        let gone: Vec<RecordKey> = named
+            .iter()
+            .filter_map(|tail| RecordKey::from_tail(tail))
+            .filter(|key| !found.contains(key))
+            .collect();
         let is_stale = !gone.is_empty() || found.len() != named.len();
         let told: BTreeSet<String> = loaded
             .problems

@@ -21,7 +21,7 @@ pub use report::{
 
 use super::keys::{PREFIX, RecordKey};
 use super::{Store, StoreError};
-use crate::record::{APP, Envelope, Ladder, RecordError, Settings, Stamp, Visit};
+use crate::record::{APP, Envelope, Ladder, Settings, Stamp, Visit};
 use crate::unit::Unit;
 use serde::Serialize;
 use serde::de::DeserializeOwned;
@@ -165,16 +165,29 @@ impl<S: Store> Shelf<S> {
     fn compare(&self, key: &RecordKey) -> Result<Result<Standing, Foreign>, StoreError> {
         let held = self.held.get(key);
         let Some(text) = self.store.get(&key.path())? else {
-            let gone = Foreign { key: key.clone(), saved_at: None };
-            return Ok(if held.is_some() { Err(gone) } else { Ok(Standing::Nothing) });
+            let gone = Foreign {
+                key: key.clone(),
+                saved_at: None,
+            };
+            return Ok(if held.is_some() {
+                Err(gone)
+            } else {
+                Ok(Standing::Nothing)
+            });
         };
         Ok(match Envelope::open(&text) {
-            Err(why) => Ok(Standing::Unreadable { text, why }),
+            Err(_) => Ok(Standing::Unreadable { text }),
             // Only this tab writes its own name, so its own state is never foreign, whatever this tab believes.
-            Ok(there) if held.is_some_and(|held| held.stamp == there.stamp) || there.stamp.tab == self.tab => {
+            Ok(there)
+                if held.is_some_and(|held| held.stamp == there.stamp)
+                    || there.stamp.tab == self.tab =>
+            {
                 Ok(Standing::Ours { text, there })
             }
-            Ok(there) => Err(Foreign { key: key.clone(), saved_at: Some(there.saved_at) }),
+            Ok(there) => Err(Foreign {
+                key: key.clone(),
+                saved_at: Some(there.saved_at),
+            }),
         })
     }
 }
@@ -183,5 +196,5 @@ impl<S: Store> Shelf<S> {
 enum Standing {
     Nothing,
     Ours { text: String, there: Envelope },
-    Unreadable { text: String, why: RecordError },
+    Unreadable { text: String },
 }

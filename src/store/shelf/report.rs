@@ -42,13 +42,19 @@ pub enum NotSaved {
     #[error("{0}. {next}", next = what_next(.0))]
     Store(StoreError),
     /// A newer version wrote it.
-    #[error("a newer version of Lowside wrote it (format {0}): here it can only be read. Update this app")]
+    #[error(
+        "a newer version of Lowside wrote it (format {0}): here it can only be read. Update this app"
+    )]
     Newer(u64),
     /// The store was not read yet, or could not be read.
-    #[error("what is stored could not be read yet, so nothing is written over it. Load the page again; export first if you typed anything")]
+    #[error(
+        "what is stored could not be read yet, so nothing is written over it. Load the page again; export first if you typed anything"
+    )]
     NotLoaded,
     /// What was read back differs from what was written.
-    #[error("the storage gave back another text than was written. Export now; then load the page again")]
+    #[error(
+        "the storage gave back another text than was written. Export now; then load the page again"
+    )]
     Garbled,
     /// The record cannot be written.
     #[error("the record cannot be written: {0}")]
@@ -91,8 +97,12 @@ impl Foreign {
     #[must_use]
     pub fn words(&self) -> &'static str {
         match self.saved_at {
-            Some(_) => "Another tab or window changed this record. Load theirs, or keep yours as a copy.",
-            None => "Another tab or window removed this record. Yours is still here: keep it as a copy, or let it go.",
+            Some(_) => {
+                "Another tab or window changed this record. Load theirs, or keep yours as a copy."
+            }
+            None => {
+                "Another tab or window removed this record. Yours is still here: keep it as a copy, or let it go."
+            }
         }
     }
 }
@@ -130,14 +140,19 @@ impl SaveState {
                 _ => SaveState::Clean,
             },
             SaveOutcome::Conflict(foreign) => SaveState::Conflict(foreign.clone()),
-            SaveOutcome::NotSaved { why, .. } => SaveState::NotSaved { why: why.to_string() },
+            SaveOutcome::NotSaved { why, .. } => SaveState::NotSaved {
+                why: why.to_string(),
+            },
         }
     }
 
     /// True while something that was typed stands nowhere but in this tab.
     #[must_use]
     pub fn is_at_risk(&self) -> bool {
-        matches!(self, SaveState::Waiting | SaveState::NotSaved { .. } | SaveState::Conflict(_))
+        matches!(
+            self,
+            SaveState::Waiting | SaveState::NotSaved { .. } | SaveState::Conflict(_)
+        )
     }
 
     /// In words: "saved", "not saved: …". The moment is not part of it.
@@ -170,7 +185,9 @@ pub struct Loaded {
 #[derive(Clone, Debug, PartialEq, Error)]
 pub enum LoadProblem {
     /// The store could not be read at all.
-    #[error("what is stored cannot be read: {0}. Nothing will be written over it; load the page again")]
+    #[error(
+        "what is stored cannot be read: {0}. Nothing will be written over it; load the page again"
+    )]
     Listing(StoreError),
     /// One record could not be read from the store.
     #[error("{}: {why}. It is left as it is; load the page again", key.words())]

@@ -37,7 +37,12 @@ impl<S: Store> Shelf<S> {
     ///
     /// # Errors
     /// The first record that could not be written, and why. Nothing is left behind.
-    pub fn add(&mut self, units: &[Unit], visits: &[Visit], now: &str) -> Result<(), (RecordKey, NotSaved)> {
+    pub fn add(
+        &mut self,
+        units: &[Unit],
+        visits: &[Visit],
+        now: &str,
+    ) -> Result<(), (RecordKey, NotSaved)> {
         let mut written = Vec::new();
         let mut keep = |outcome: SaveOutcome, key: RecordKey| match outcome {
             SaveOutcome::Saved { .. } => {
@@ -49,7 +54,11 @@ impl<S: Store> Shelf<S> {
             SaveOutcome::NotSaved { key, why } => Err((key, why)),
         };
         let taken = |shelf: &Self, key: RecordKey| {
-            if shelf.held.contains_key(&key) { Err((key, NotSaved::Taken)) } else { Ok(key) }
+            if shelf.held.contains_key(&key) {
+                Err((key, NotSaved::Taken))
+            } else {
+                Ok(key)
+            }
         };
         let result = units
             .iter()
@@ -91,7 +100,12 @@ impl<S: Store> Shelf<S> {
         let key = record.key();
         let theirs = match self.store.get(&key.path()) {
             Ok(theirs) => theirs,
-            Err(why) => return SaveOutcome::NotSaved { key, why: why.into() },
+            Err(why) => {
+                return SaveOutcome::NotSaved {
+                    key,
+                    why: why.into(),
+                };
+            }
         };
         // What cannot be read goes to the quarantine with the save itself.
         let readable = theirs.map(|text| Envelope::open(&text).map(|there| (text, there)));
@@ -103,7 +117,13 @@ impl<S: Store> Shelf<S> {
                 if let Err(why) = self.put_aside(|moment| keys::trash(moment, &key), now, &text) {
                     return SaveOutcome::NotSaved { key, why };
                 }
-                self.held.insert(key, Held { content: there.stamp.sum.clone(), stamp: there.stamp });
+                self.held.insert(
+                    key,
+                    Held {
+                        content: there.stamp.sum.clone(),
+                        stamp: there.stamp,
+                    },
+                );
             }
             Some(_) => {}
         }
@@ -118,7 +138,12 @@ impl<S: Store> Shelf<S> {
         }
     }
 
-    fn try_save<T: Kept>(&mut self, key: &RecordKey, record: &T, now: &str) -> Result<SaveOutcome, NotSaved> {
+    fn try_save<T: Kept>(
+        &mut self,
+        key: &RecordKey,
+        record: &T,
+        now: &str,
+    ) -> Result<SaveOutcome, NotSaved> {
         if !self.loaded {
             return Err(NotSaved::NotLoaded);
         }
@@ -137,13 +162,17 @@ impl<S: Store> Shelf<S> {
                 self.guard_older(key, &text, there.schema)?;
                 there.stamp.rev
             }
-            Ok(Standing::Unreadable { text, .. }) => {
+            Ok(Standing::Unreadable { text }) => {
                 self.put_aside(|moment| keys::quarantine(moment, &key.path()), now, &text)?;
                 self.held.get(key).map_or(0, |held| held.stamp.rev)
             }
         };
         let is_new = !self.held.contains_key(key);
-        let stamp = Stamp { rev: rev.saturating_add(1), tab: self.tab.clone(), sum };
+        let stamp = Stamp {
+            rev: rev.saturating_add(1),
+            tab: self.tab.clone(),
+            sum,
+        };
         let envelope = Envelope {
             kind: key.kind(),
             schema: u64::from(self.ladder.top),
@@ -151,31 +180,58 @@ impl<S: Store> Shelf<S> {
             saved_at: now.to_owned(),
             body,
         };
-        let text = envelope.write().map_err(|error| NotSaved::Unwritable(error.to_string()))?;
+        let text = envelope
+            .write()
+            .map_err(|error| NotSaved::Unwritable(error.to_string()))?;
         self.fill_slot(key, &text)?;
         self.store.put(&key.path(), &text)?;
         if self.store.get(&key.path())?.as_deref() != Some(text.as_str()) {
             // Another tab's state, where it is one, stays; the slot holds ours until the next load sorts it out.
-            return Ok(SaveOutcome::Conflict(self.compare(key)?.err().ok_or(NotSaved::Garbled)?));
+            return Ok(SaveOutcome::Conflict(
+                self.compare(key)?.err().ok_or(NotSaved::Garbled)?,
+            ));
         }
         let rev = stamp.rev;
-        self.held.insert(key.clone(), Held { content: stamp.sum.clone(), stamp });
+        self.held.insert(
+            key.clone(),
+            Held {
+                content: stamp.sum.clone(),
+                stamp,
+            },
+        );
         if is_new {
             self.write_index();
         }
-        Ok(SaveOutcome::Saved { rev, at: now.to_owned() })
+        Ok(SaveOutcome::Saved {
+            rev,
+            at: now.to_owned(),
+        })
     }
 
     /// A foreign state with the very same content is no conflict.
-    fn same_as_theirs(&mut self, key: &RecordKey, sum: &str, foreign: Foreign) -> Result<SaveOutcome, NotSaved> {
-        let there = self.store.get(&key.path())?.and_then(|text| Envelope::open(&text).ok());
+    fn same_as_theirs(
+        &mut self,
+        key: &RecordKey,
+        sum: &str,
+        foreign: Foreign,
+    ) -> Result<SaveOutcome, NotSaved> {
+        let there = self
+            .store
+            .get(&key.path())?
+            .and_then(|text| Envelope::open(&text).ok());
         Ok(match there {
             Some(there) if there.schema > u64::from(self.ladder.top) => {
                 self.read_only.insert(key.clone(), there.schema);
                 return Err(NotSaved::Newer(there.schema));
             }
             Some(there) if there.stamp.sum == sum => {
-                self.held.insert(key.clone(), Held { content: sum.to_owned(), stamp: there.stamp });
+                self.held.insert(
+                    key.clone(),
+                    Held {
+                        content: sum.to_owned(),
+                        stamp: there.stamp,
+                    },
+                );
                 SaveOutcome::Unchanged
             }
             _ => SaveOutcome::Conflict(foreign),
@@ -210,11 +266,20 @@ impl<S: Store> Shelf<S> {
     /// Writes and reads back.
     pub(super) fn put_checked(&self, path: &str, text: &str) -> Result<(), NotSaved> {
         self.store.put(path, text)?;
-        if self.store.get(path)?.as_deref() == Some(text) { Ok(()) } else { Err(NotSaved::Garbled) }
+        if self.store.get(path)?.as_deref() == Some(text) {
+            Ok(())
+        } else {
+            Err(NotSaved::Garbled)
+        }
     }
 
     /// Writes a text under the first free key of its moment, so that nothing put aside earlier is replaced.
-    pub(super) fn put_aside(&self, key: impl Fn(&str) -> String, now: &str, text: &str) -> Result<(), NotSaved> {
+    pub(super) fn put_aside(
+        &self,
+        key: impl Fn(&str) -> String,
+        now: &str,
+        text: &str,
+    ) -> Result<(), NotSaved> {
         let mut path = key(now);
         let mut count = 1;
         while let Some(there) = self.store.get(&path)? {
@@ -229,8 +294,14 @@ impl<S: Store> Shelf<S> {
 
     /// Rebuilds the index from the keys. It only tells a later load what ought to be there: failing here loses nothing.
     pub(super) fn write_index(&self) {
-        let Ok(paths) = self.store.keys(keys::PREFIX) else { return };
-        let tails: Vec<String> = paths.iter().filter_map(|p| RecordKey::from_path(p)).map(|key| key.tail()).collect();
+        let Ok(paths) = self.store.keys(keys::PREFIX) else {
+            return;
+        };
+        let tails: Vec<String> = paths
+            .iter()
+            .filter_map(|p| RecordKey::from_path(p))
+            .map(|key| key.tail())
+            .collect();
         if let Ok(text) = serde_json::to_string(&tails) {
             let _ = self.store.put(keys::INDEX, &text);
         }
@@ -242,7 +313,8 @@ fn body_of<T: Kept>(key: &RecordKey, record: &T) -> Result<String, NotSaved> {
     if *key != RecordKey::Settings && !is_id(key.id()) {
         return Err(NotSaved::Unwritable(format!("{:?} is no id", key.id())));
     }
-    let body = serde_json::to_string(record).map_err(|error| NotSaved::Unwritable(error.to_string()))?;
+    let body =
+        serde_json::to_string(record).map_err(|error| NotSaved::Unwritable(error.to_string()))?;
     // A figure that is not finite is written as null and would not be read again.
     serde_json::from_str::<T>(&body).map_err(|error| NotSaved::Unwritable(error.to_string()))?;
     Ok(body)
