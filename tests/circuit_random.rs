@@ -52,7 +52,8 @@ fn machine(r: &mut Seeded) -> Params {
     t[Param::Atmosphere as usize] = r.between(0.6, 1.02);
     t[Param::Viscosity as usize] = r.between(-1.6, 3.5).exp();
     t[Param::Lever as usize] = if r.chance(0.25) { 0.0 } else { r.between(-1.0, 1.0) };
-    t[Param::Load as usize] = if r.chance(0.5) { 0.0 } else { r.between(-150.0, 350.0) };
+    t[Param::Load as usize] = if r.chance(0.5) { 0.0 } else { r.between(0.0, 350.0) };
+    t[Param::Push as usize] = if r.chance(0.7) { 0.0 } else { r.between(-150.0, 150.0) };
     t[Param::NullControl as usize] = if r.chance(0.5) { 0.0 } else { r.between(-0.08, 0.08) };
     t[Param::OperatingSet as usize] = t[Param::ReliefSet as usize] * r.between(0.7, 1.05);
     t[Param::ServoFull as usize] = t[Param::ServoStart as usize] + r.between(2.0, 15.0);

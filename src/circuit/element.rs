@@ -116,7 +116,7 @@ pub fn elements(layout: &Layout) -> Vec<Element> {
         wide(Law::Flushing(P::ShuttleStuckB), BMotor, MotorCase, [BMotor, MotorCase, AMotor, Tank], 3, FLUSHING_B),
         two(Law::Drain, MotorCase, motor_drain_to, &[P::MotorCaseLine, P::Viscosity]),
         two(Law::Line(P::PumpCaseLine, P::PumpCaseTurbulent), PumpCase, Tank, &[P::PumpCaseLine, P::PumpCaseTurbulent, P::Viscosity]),
-        wide(Law::Torque, Tank, Shaft, [AMotor, BMotor, Shaft, Tank], 3, &[P::MotorShift, P::Load, P::Friction, P::BrakeDrag, P::Drag, P::Viscosity, P::DriveGrip]),
+        wide(Law::Torque, Tank, Shaft, [AMotor, BMotor, Shaft, Tank], 3, &[P::MotorShift, P::Load, P::Push, P::Friction, P::BrakeDrag, P::Drag, P::Viscosity, P::DriveGrip]),
     ]
 }
 
@@ -178,9 +178,9 @@ pub fn flow<S: Real>(law: Law, layout: &Layout, v: &[S; 4], g: &impl Fn(Param) -
             let drive = dp * g(P::MotorShift);
             // A driveline that slips passes on only its share of what the wheels ask.
             let load = g(P::Load) * g(P::DriveGrip);
-            let dry = law::friction(v[2], g(P::Friction) + g(P::BrakeDrag));
+            let dry = law::friction(v[2], g(P::Friction) + g(P::BrakeDrag) + load);
             let wet = g(P::Drag) * g(P::Viscosity) * v[2];
-            drive - load - dry - wet
+            drive - g(P::Push) * g(P::DriveGrip) - dry - wet
         }
     }
 }

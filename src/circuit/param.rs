@@ -46,15 +46,17 @@ params! {
     Viscosity, Log, 1.0, "oil viscosity";
     /// Command: signed share of full stroke asked, −1 to 1 (forward positive).
     Lever, Linear, 0.0, "lever travel";
-    /// Load on the motor as loop difference at large displacement, bar; negative when the wheels drive.
+    /// Resistance at the wheels as loop difference at large displacement, bar: it opposes whatever motion there is.
     Load, Linear, 0.0, "load on the wheels";
+    /// Push of the wheels on the motor (grade, overrun), bar: positive holds back going forward, whatever the motion.
+    Push, Linear, 0.0, "push of the wheels";
     /// Atmospheric pressure, bar absolute.
     Atmosphere, Log, 1.0, "altitude";
 
     /// Charge pump displacement, cm³/rev.
     ChargeDisp, Log, 15.0, "charge pump displacement";
     /// Charge pump slip at viscosity 1, L/min per bar.
-    ChargeSlip, Log, 0.06, "charge pump wear within limits";
+    ChargeSlip, Log, 0.04, "charge pump wear within limits";
     /// Share of the charge pump's drive that is whole (1; 0: sheared).
     ChargeDrive, Linear, 1.0, "charge pump drive";
     /// Share of the feeding circuit's flow that reaches the charge gallery (1; less while another function takes it).
@@ -78,7 +80,7 @@ params! {
     /// Leaking consumer, orifice L/min per √bar.
     ConsumerLeak, Linear, 0.0, "leak of a consumer";
     /// Control and servo leakage at viscosity 1, L/min per bar.
-    ControlLeak, Log, 0.04, "control leakage";
+    ControlLeak, Log, 0.025, "control leakage";
     /// Extra servo piston leakage when stroked, L/min per bar.
     ServoLeak, Linear, 0.0, "servo leakage";
 
@@ -87,7 +89,7 @@ params! {
     /// Operating relief: L/min per bar above cracking.
     OperatingGain, Log, 14.0, "operating relief override";
     /// Flushing orifice, L/min per √bar.
-    FlushOrifice, Log, 9.0, "flushing orifice";
+    FlushOrifice, Log, 20.0, "flushing orifice";
     /// Flushing fitted (1) or blocked or not fitted (0); free travel of the shuttle.
     ShuttleTravel, Linear, 1.0, "flushing shuttle";
     /// Difference that shifts the shuttle, bar.
@@ -129,17 +131,17 @@ params! {
     /// Main pump displacement, cm³/rev.
     PumpDisp, Log, 75.0, "pump displacement";
     /// Pump leakage of each side to its case at viscosity 1, L/min per bar.
-    PumpLeak, Log, 0.010, "pump leakage";
+    PumpLeak, Log, 0.0065, "pump leakage";
     /// Pump leakage from side to side at viscosity 1, L/min per bar.
-    PumpAcross, Log, 0.006, "pump leakage across";
+    PumpAcross, Log, 0.004, "pump leakage across";
     /// Motor displacement at large position, all motors of the path together, cm³/rev.
     MotorDisp, Log, 75.0, "motor displacement";
     /// Motor displacement in use over large displacement (1; about 0.5 in the small position).
     MotorShift, Log, 1.0, "motor position";
     /// Motor leakage of each side to its case at viscosity 1, L/min per bar.
-    MotorLeak, Log, 0.010, "motor leakage";
+    MotorLeak, Log, 0.0065, "motor leakage";
     /// Motor leakage from side to side at viscosity 1, L/min per bar.
-    MotorAcross, Log, 0.006, "motor leakage across";
+    MotorAcross, Log, 0.004, "motor leakage across";
     /// Dry friction and breakaway of motor and driveline, bar of loop difference.
     Friction, Log, 12.0, "driveline friction";
     /// Viscous drag of motor and driveline at viscosity 1, bar per 1000 motor rpm.

@@ -107,8 +107,8 @@ impl Network {
             if lever > 0.0 { a = low + high } else { b = low + high }
         } else {
             let speed = delivery * lever / (g(Param::MotorDisp) * g(Param::MotorShift));
-            let needed = g(Param::Load)
-                + if speed == 0.0 { 0.0 } else { (g(Param::Friction) + g(Param::BrakeDrag)) * speed.signum() }
+            let resisting = g(Param::Friction) + g(Param::BrakeDrag) + g(Param::Load);
+            let needed = g(Param::Push) + if speed == 0.0 { 0.0 } else { resisting * speed.signum() }
                 + g(Param::Drag) * g(Param::Viscosity) * speed;
             let difference = (needed / g(Param::MotorShift)).clamp(-g(Param::LoopReliefB), g(Param::LoopReliefA));
             x[Node::Shaft.at()] = speed;

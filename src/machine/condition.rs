@@ -103,7 +103,12 @@ pub fn apply(build: &Build, base: &Params, condition: &Condition) -> Params {
         let (share, _) = condition.lever.share();
         t[P::Lever as usize] = sign(condition) * share;
         let (load, _, _) = load_share(condition.doing);
-        t[P::Load as usize] = sign(condition) * load * t[P::LoopReliefA as usize];
+        let bar = load * t[P::LoopReliefA as usize];
+        if bar >= 0.0 {
+            t[P::Load as usize] = bar;
+        } else {
+            t[P::Push as usize] = sign(condition) * bar;
+        }
     }
     if condition.flushing_blocked {
         t[P::ShuttleTravel as usize] = 0.0;
@@ -112,6 +117,15 @@ pub fn apply(build: &Build, base: &Params, condition: &Condition) -> Params {
         t[P::Consumers as usize] *= 1e-3;
     }
     t
+}
+
+/// Scatter of the load: of the resistance, or of the push where the wheels drive.
+fn load_act(i: usize, c: &Condition, size: f64) -> Act {
+    if c.doing == Doing::Overrun {
+        Act { condition: Some(i), param: P::Push, size: sign(c) * size }
+    } else {
+        Act { condition: Some(i), param: P::Load, size }
+    }
 }
 
 /// Scatter that belongs to conditions: speed, temperature, lever, load.
@@ -146,7 +160,7 @@ pub fn condition_latents(unit: &Unit, conditions: &[Condition], latents: &mut La
     let relief = unit.known(FigureId::LoopRelief).unwrap_or_else(|| unit.class.spread(FigureId::LoopRelief).value);
     for doing in [Doing::Travel, Doing::Loaded, Doing::Overrun] {
         let (_, common, _) = load_share(doing);
-        let acts = every(&|c| c.doing == doing, &|i, c| act(i, P::Load, sign(c) * common * relief));
+        let acts = every(&|c| c.doing == doing, &|i, c| load_act(i, c, common * relief));
         latents.in_conditions("load on the wheels", acts);
     }
     for (i, c) in conditions.iter().enumerate() {
@@ -155,7 +169,7 @@ pub fn condition_latents(unit: &Unit, conditions: &[Condition], latents: &mut La
         }
         let (_, _, own) = load_share(c.doing);
         if own > 0.0 {
-            latents.in_conditions("load on the wheels", vec![act(i, P::Load, own * relief)]);
+            latents.in_conditions("load on the wheels", vec![load_act(i, c, own * relief)]);
         }
         let (_, spread) = c.lever.share();
         latents.in_conditions("lever travel", vec![act(i, P::Lever, spread)]);

@@ -161,7 +161,7 @@ pub fn unit_latents(unit: &Unit) -> Latents {
     l.many("charge relief setting", &moves);
     l.one(P::ReliefGain, 0.25);
     l.one(P::OperatingGain, 0.25);
-    l.one(P::FlushOrifice, 0.3);
+    l.one(P::FlushOrifice, 0.4);
     l.one(P::ShuttleSpring, 0.3);
 
     l.many("loop relief setting", &[(P::LoopReliefA, loop_relief.width), (P::LoopReliefB, loop_relief.width)]);

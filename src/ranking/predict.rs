@@ -313,7 +313,7 @@ fn keep_order(theta: &mut Params) {
     *full = full.max(1.1 * start);
     let air = &mut theta[Param::Air as usize];
     *air = air.clamp(0.0, 0.98);
-    for p in [Param::SignalForward, Param::SignalReverse, Param::PilotSupply, Param::DriveGrip, Param::ChargeDrive, Param::ChargeFeed] {
+    for p in [Param::Load, Param::SignalForward, Param::SignalReverse, Param::PilotSupply, Param::DriveGrip, Param::ChargeDrive, Param::ChargeFeed] {
         let v = &mut theta[p as usize];
         *v = v.max(0.0);
     }

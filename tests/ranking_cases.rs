@@ -1,0 +1,89 @@
+//! Whole assessments of worked cases.
+
+mod support;
+
+use lowside::assessment::Assessment;
+use lowside::faults::FaultId;
+use lowside::ranking::assess;
+use lowside::readings::{Direction::*, Doing, EngineSpeed::*, Lever, Port};
+use support::*;
+
+fn print(a: &Assessment) {
+    for w in &a.windows {
+        println!("  {:12} {:.2} {:.2} {:.2} read {:?} {:?} {:?} widest {} | {} {:?}", w.reading, w.low, w.middle, w.high, w.read, w.standing, w.source, w.widest, w.basis, w.remark);
+    }
+    for c in a.causes.iter().take(6) {
+        println!("  {:5.1} % {:?} {}", 100.0 * c.probability, c.ids, c.title);
+        for e in c.evidence.iter().take(3) {
+            println!("         {:+.2} {}", e.weight, e.words);
+        }
+    }
+    println!("  {:?} hold {:?}", a.trust, a.hold);
+}
+
+fn leader(a: &Assessment) -> &[FaultId] {
+    &a.causes[0].ids
+}
+
+#[test]
+fn a_worn_charge_pump_shows_in_its_curve_and_its_return() {
+    let t = std::time::Instant::now();
+    let v = visit(vec![
+        reading("c-low", Port::Charge, neutral(LowIdle), 18.1),
+        reading("c-high", Port::Charge, neutral(HighIdle), 24.1),
+        reading("r-low", Port::ReturnFlow, neutral(LowIdle), 3.3),
+        reading("r-high", Port::ReturnFlow, neutral(HighIdle), 22.0),
+    ]);
+    let a = assess(&roller(), &v, &[]);
+    println!("{:?}", t.elapsed());
+    print(&a);
+    assert_eq!(leader(&a), [FaultId::ChargePumpWorn]);
+}
+
+#[test]
+fn a_relief_held_open_keeps_the_return_normal() {
+    let v = visit(vec![
+        reading("c-low", Port::Charge, neutral(LowIdle), 11.8),
+        reading("c-high", Port::Charge, neutral(HighIdle), 23.9),
+        reading("r-low", Port::ReturnFlow, neutral(LowIdle), 12.4),
+        reading("r-high", Port::ReturnFlow, neutral(HighIdle), 33.6),
+    ]);
+    let a = assess(&roller(), &v, &[]);
+    print(&a);
+    assert_eq!(leader(&a), [FaultId::NeutralReliefStuckOpen]);
+}
+
+#[test]
+fn a_weak_forward_direction_points_at_one_cartridge() {
+    let held = |d, s| condition(Doing::Held, d, Lever::Share(s), Measured(base(1500.0, lowside::quantity::Kind::RotationalSpeed)));
+    let v = visit(vec![
+        reading("c", Port::Charge, neutral(HighIdle), 24.6),
+        reading("f5", Port::LoopA, held(Forward, 0.05), 42.0),
+        reading("f10", Port::LoopA, held(Forward, 0.1), 92.0),
+        reading("f20", Port::LoopA, held(Forward, 0.2), 232.0),
+        reading("r5", Port::LoopB, held(Reverse, 0.05), 166.0),
+        reading("r10", Port::LoopB, held(Reverse, 0.1), 322.0),
+    ]);
+    let a = assess(&roller(), &v, &[]);
+    print(&a);
+    assert!(leader(&a).contains(&FaultId::CheckALeaking), "{:?}", leader(&a));
+}
+
+#[test]
+fn a_healthy_machine_is_called_healthy_when_it_is() {
+    let held = |d, s| condition(Doing::Held, d, Lever::Share(s), Measured(base(1500.0, lowside::quantity::Kind::RotationalSpeed)));
+    let free = |d| condition(Doing::Free, d, Lever::Half, HighIdle);
+    let v = visit(vec![
+        reading("c-low", Port::Charge, neutral(LowIdle), 23.4),
+        reading("c-high", Port::Charge, neutral(HighIdle), 24.9),
+        reading("cf", Port::Charge, free(Forward), 24.2),
+        reading("cr", Port::Charge, free(Reverse), 24.2),
+        reading("f10", Port::LoopA, held(Forward, 0.1), 330.0),
+        reading("r10", Port::LoopB, held(Reverse, 0.1), 335.0),
+        reading("drain", Port::MotorDrain, neutral(HighIdle), 0.8),
+        reading("ret", Port::ReturnFlow, neutral(HighIdle), 33.0),
+    ]);
+    let a = assess(&roller(), &v, &[]);
+    print(&a);
+    assert!(a.windows.iter().all(|w| w.standing == lowside::assessment::Standing::Within || w.standing == lowside::assessment::Standing::Edge));
+}
