@@ -33,6 +33,7 @@ pub mod heat;
 pub mod kinematics;
 pub mod machine;
 pub mod math;
+pub mod observations;
 pub mod quantity;
 pub mod readings;
 pub mod ranking;
