@@ -56,7 +56,10 @@ mod precache {
         fs::write(dir.join(PAGE), page)?;
 
         fs::write(dir.join(SERVICE_WORKER), service_worker(&version, &files)?)?;
-        Ok(format!("{SERVICE_WORKER}: version {version}, {} files", files.len()))
+        Ok(format!(
+            "{SERVICE_WORKER}: version {version}, {} files",
+            files.len()
+        ))
     }
 
     fn collect(dir: &Path, prefix: &str, files: &mut Files) -> Result<(), Box<dyn Error>> {
@@ -79,7 +82,9 @@ mod precache {
         if name.chars().all(fits) {
             Ok(name)
         } else {
-            Err(format!("{name:?}: use letters, digits, '.', '_' and '-' in file names"))
+            Err(format!(
+                "{name:?}: use letters, digits, '.', '_' and '-' in file names"
+            ))
         }
     }
 
@@ -92,7 +97,11 @@ mod precache {
             all.update(Sha256::digest(content));
         }
         let hash = hex(&all.finalize());
-        format!("{} ({})", env!("CARGO_PKG_VERSION"), hash.get(..12).unwrap_or(&hash))
+        format!(
+            "{} ({})",
+            env!("CARGO_PKG_VERSION"),
+            hash.get(..12).unwrap_or(&hash)
+        )
     }
 
     fn service_worker(version: &str, files: &Files) -> Result<String, serde_json::Error> {
@@ -114,7 +123,8 @@ mod precache {
         use super::*;
 
         fn build(name: &str, files: &[(&str, &str)]) -> std::path::PathBuf {
-            let dir = std::env::temp_dir().join(format!("lowside-precache-{}-{name}", std::process::id()));
+            let dir = std::env::temp_dir()
+                .join(format!("lowside-precache-{}-{name}", std::process::id()));
             let _ = fs::remove_dir_all(&dir);
             for (path, content) in files {
                 let path = dir.join(path);
@@ -133,10 +143,19 @@ mod precache {
 
         #[test]
         fn lists_every_file_with_its_hash_but_not_itself() {
-            let dir = build("list", &[(PAGE, PAGE_TEXT), ("icons/a.svg", "abc"), (SERVICE_WORKER, "old")]);
+            let dir = build(
+                "list",
+                &[
+                    (PAGE, PAGE_TEXT),
+                    ("icons/a.svg", "abc"),
+                    (SERVICE_WORKER, "old"),
+                ],
+            );
             let worker = written(&dir);
             // FIPS 180-2 appendix B.1: the SHA-256 of "abc".
-            assert!(worker.contains("ba7816bf8f01cfea414140de5dae2223b00361a396177a9cb410ff61f20015ad"));
+            assert!(
+                worker.contains("ba7816bf8f01cfea414140de5dae2223b00361a396177a9cb410ff61f20015ad")
+            );
             assert!(worker.contains("\"icons/a.svg\""));
             assert!(!worker.contains("\"sw.js\""));
             assert!(!worker.contains('@'), "a placeholder is left");
@@ -166,7 +185,8 @@ mod precache {
         fn refuses_a_folder_without_page_and_names_that_need_escaping() {
             let none = run(&build("none", &[("a.js", "1")])).expect_err("no page");
             assert!(none.to_string().contains(PAGE));
-            let odd = run(&build("odd", &[(PAGE, PAGE_TEXT), ("a b.js", "1")])).expect_err("a space");
+            let odd =
+                run(&build("odd", &[(PAGE, PAGE_TEXT), ("a b.js", "1")])).expect_err("a space");
             assert!(odd.to_string().contains("a b.js"));
         }
     }
