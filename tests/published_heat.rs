@@ -18,7 +18,7 @@ use uom::si::f64::{Area, HeatTransfer, SpecificHeatCapacity};
 /// Btu/lb°F in J/kgK (International Table).
 const BTU_LB_F: f64 = 4186.8;
 /// Btu/h in W (International Table).
-const BTU_H: f64 = 1055.055_852_62 / 3600.0;
+const BTU_H: f64 = 1_055.055_852_62 / 3600.0;
 
 fn heat(btu_per_pound_fahrenheit: f64) -> SpecificHeatCapacity {
     SpecificHeatCapacity::new::<si::specific_heat_capacity::joule_per_kilogram_kelvin>(

@@ -119,7 +119,7 @@ fn products_of_units() {
     use lowside::bench::efficiency::{hydraulic_power, theoretical_torque};
     use published_common::book;
     // C13: 1714.2857 psi·gpm are one horsepower (12 × 33 000 / 231).
-    let power = hydraulic_power(book::psi(1714.285_714_285_714), book::gpm(1.0));
+    let power = hydraulic_power(book::psi(12_000.0 / 7.0), book::gpm(1.0));
     close("C13", book::in_hp(power), 1.0, 1e-9);
     // C14: 12 psi·in³ of work are one lbf·ft: the torque of 2π times that displacement.
     let torque = theoretical_torque(book::in3(std::f64::consts::TAU), book::psi(12.0));
