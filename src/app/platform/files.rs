@@ -1,6 +1,6 @@
 //! Files to and from the person: handing one over as a download, reading one that was picked.
 
-use js_sys::Array;
+use js_sys::{Array, ArrayBuffer, Uint8Array};
 use wasm_bindgen::closure::Closure;
 use wasm_bindgen::{JsCast, JsValue};
 use web_sys::{Blob, BlobPropertyBag, File, FileReader, HtmlAnchorElement, ProgressEvent, Url};
@@ -44,14 +44,19 @@ pub fn hand_over(name: &str, kind: &str, text: &str) -> Result<(), String> {
     Ok(())
 }
 
-/// Reads a picked file as text and hands it on, with the reason where it could not be read.
-pub fn read(file: &File, largest_bytes: f64, done: impl FnOnce(Result<String, String>) + 'static) {
-    if file.size() > largest_bytes {
+/// Reads a picked file and hands its bytes on, with the reason where it could not be read.
+pub fn read(
+    file: &File,
+    largest_bytes: usize,
+    done: impl FnOnce(Result<Vec<u8>, String>) + 'static,
+) {
+    // Sizes of files are whole numbers far below 2^53.
+    if file.size() > largest_bytes as f64 {
         done(Err(format!(
             "{} has {:.1} MB. A file of this app has {:.0} MB at most.",
             file.name(),
             file.size() / 1e6,
-            largest_bytes / 1e6
+            largest_bytes as f64 / 1e6
         )));
         return;
     }
@@ -62,12 +67,18 @@ pub fn read(file: &File, largest_bytes: f64, done: impl FnOnce(Result<String, St
     let name = file.name();
     let outcome = reader.clone();
     let on_end = Closure::once_into_js(move |_: ProgressEvent| {
-        let text = outcome.result().ok().and_then(|value| value.as_string());
-        done(text.ok_or_else(|| format!("{name} could not be read by the browser.")));
+        let buffer = outcome
+            .result()
+            .ok()
+            .filter(|value| value.is_instance_of::<ArrayBuffer>());
+        done(match buffer {
+            Some(buffer) => Ok(Uint8Array::new(&buffer).to_vec()),
+            None => Err(format!("{name} could not be read by the browser.")),
+        });
     });
     reader.set_onloadend(Some(on_end.unchecked_ref()));
     // A failure to start is an end without a result, but no event tells of it.
-    if let Err(error) = reader.read_as_text(file) {
+    if let Err(error) = reader.read_as_array_buffer(file) {
         reader.set_onloadend(None);
         web_sys::console::warn_1(&error);
     }

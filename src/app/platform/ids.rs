@@ -1,20 +1,16 @@
-//! Ids of units, visits and instruments.
+//! Random bytes for the ids of units, visits and instruments.
 
-use js_sys::{Date, Math};
+use crate::record::{IdOf, new_id};
+use js_sys::Math;
 
-/// A new id: the letter of its kind, then 80 random bits. Without the browser's generator, the clock stands in.
-pub fn new_id(letter: char) -> String {
+/// A new id. Without the browser's generator of random bytes, its simple one stands in: good enough for names in one yard.
+pub fn fresh(of: IdOf) -> String {
     let mut bytes = [0u8; 10];
     let filled = web_sys::window()
         .and_then(|window| window.crypto().ok())
         .is_some_and(|crypto| crypto.get_random_values_with_u8_array(&mut bytes).is_ok());
     if !filled {
-        return format!(
-            "{letter}{:x}{:x}",
-            Date::now() as u64,
-            (Math::random() * 1e9) as u64
-        );
+        bytes = bytes.map(|_| (Math::random() * 256.0) as u8);
     }
-    let hex: String = bytes.iter().map(|byte| format!("{byte:02x}")).collect();
-    format!("{letter}{hex}")
+    new_id(of, bytes)
 }

@@ -1,51 +1,6 @@
 //! Light, dark, or for the sun: one attribute of the root element; the style sheet does the rest.
 
-/// The person's choice.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord)]
-pub enum Theme {
-    /// As the device is set.
-    #[default]
-    System,
-    /// Dark on light.
-    Light,
-    /// Light on dark.
-    Dark,
-    /// Black on white with heavy lines, for a screen in the sun.
-    Sun,
-}
-
-impl Theme {
-    /// Every theme, in the order in which the screen offers them.
-    pub const ALL: [Theme; 4] = [Theme::System, Theme::Light, Theme::Dark, Theme::Sun];
-
-    /// The code under which it is kept.
-    pub fn code(self) -> &'static str {
-        match self {
-            Theme::System => "system",
-            Theme::Light => "light",
-            Theme::Dark => "dark",
-            Theme::Sun => "sun",
-        }
-    }
-
-    /// The theme of this code; the device's own for any other text.
-    pub fn from_code(code: &str) -> Theme {
-        Theme::ALL
-            .into_iter()
-            .find(|theme| theme.code() == code)
-            .unwrap_or_default()
-    }
-
-    /// Words for the screen.
-    pub fn words(self) -> &'static str {
-        match self {
-            Theme::System => "As the device",
-            Theme::Light => "Light",
-            Theme::Dark => "Dark",
-            Theme::Sun => "Sun",
-        }
-    }
-}
+use crate::record::Theme;
 
 /// Shows the page in this theme.
 pub fn show(theme: Theme) {

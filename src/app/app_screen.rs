@@ -1,0 +1,199 @@
+//! The whole: one state, the shell round the screen that the address names.
+
+use std::cell::RefCell;
+use std::rc::Rc;
+
+use wasm_bindgen::JsCast;
+use web_sys::StorageEvent;
+use yew::{Callback, Html, component, html, use_effect_with, use_memo, use_mut_ref, use_reducer};
+
+use super::call::CallScreen;
+use super::deed::{Deed, Snapshot};
+use super::hands::Hands;
+use super::persist::Keeper;
+use super::platform::listen::Listener;
+use super::platform::{focus, offline, persistence, theme};
+use super::route::Route;
+use super::screens::settings::SettingsScreen;
+use super::screens::unit::Profile;
+use super::screens::units::Units;
+use super::shell::{Bar, Notices};
+use super::state::{Action, State};
+
+/// The state at the start: what is on the shelf, and where the address points.
+fn first_state(keeper: &RefCell<Keeper>) -> State {
+    let mut state = State::default();
+    for action in keeper.borrow_mut().load() {
+        state = state.after(action);
+    }
+    state
+        .after(Action::Offline(offline::state()))
+        .after(Action::Go(address()))
+}
+
+fn address() -> Route {
+    let hash = web_sys::window().and_then(|window| window.location().hash().ok());
+    Route::read(&hash.unwrap_or_default())
+}
+
+/// Everything that the browser tells from outside, until the app is gone.
+fn listen(hands: &Rc<Hands>) -> Vec<Option<Listener>> {
+    let mut listeners = Vec::new();
+    let on = |call: fn(&Rc<Hands>)| {
+        let hands = hands.clone();
+        move |_| call(&hands)
+    };
+    listeners.push(Listener::at_window(
+        "hashchange",
+        on(|hands| hands.put(Action::Go(address()))),
+    ));
+    // A phone may never tell more than these before it drops the page.
+    listeners.push(Listener::at_document("visibilitychange", on(Hands::flush)));
+    listeners.push(Listener::at_window("pagehide", on(Hands::flush)));
+    listeners.push(Listener::at_window("blur", on(Hands::flush)));
+    for event in offline::EVENTS {
+        let hands = hands.clone();
+        listeners.push(Listener::at_window(event, move |event| {
+            hands.put(Action::Offline(offline::state()));
+            if offline::update_waits() {
+                hands.put(Action::UpdateWaits);
+            }
+            if offline::is_first_ready(&event) {
+                hands.put(Action::Say(offline::Offline::Ready.words().to_owned()));
+            }
+        }));
+    }
+    let foreign = hands.clone();
+    listeners.push(Listener::at_window("storage", move |event| {
+        let event: &StorageEvent = event.unchecked_ref();
+        let key = event.key().unwrap_or_default();
+        let actions = foreign.keeper().borrow_mut().foreign(&key, &foreign.now());
+        for action in actions {
+            foreign.put(action);
+        }
+    }));
+    listeners
+}
+
+fn title(state: &State) -> String {
+    let name = |id: &str| state.units.get(id).map(|unit| unit.name.clone());
+    let what = match &state.route {
+        Route::Units => None,
+        Route::Settings => Some("Settings".to_owned()),
+        Route::Unit(id) => name(id),
+        Route::Call(id) => state
+            .visits
+            .get(id)
+            .and_then(|visit| name(&visit.unit))
+            .map(|name| format!("Call, {name}")),
+    };
+    what.map_or_else(|| "Lowside".to_owned(), |what| format!("{what}: Lowside"))
+}
+
+/// The app.
+#[component]
+pub fn App() -> Html {
+    let keeper = use_memo((), |()| RefCell::new(Keeper::open()));
+    let state = {
+        let keeper = keeper.clone();
+        use_reducer(move || Snapshot(Rc::new(first_state(&keeper))))
+    };
+    let hands = {
+        let (dispatcher, now) = (state.dispatcher(), state.0.clone());
+        use_memo((), move |()| Hands::new(keeper.clone(), dispatcher, now))
+    };
+    let hands: Rc<Hands> = (*hands).clone();
+    {
+        let hands = hands.clone();
+        use_effect_with((), move |()| {
+            let listeners = listen(&hands);
+            let telling = hands.clone();
+            persistence::look(move |keeping| telling.put(Action::Keeping(keeping)));
+            if offline::update_waits() {
+                hands.put(Action::UpdateWaits);
+            }
+            move || drop(listeners)
+        });
+    }
+    {
+        let hands = hands.clone();
+        use_effect_with((*state).clone(), move |state| hands.look(state.0.clone()));
+    }
+    use_effect_with(state.settings.theme, |chosen| theme::show(*chosen));
+    let is_first = use_mut_ref(|| true);
+    use_effect_with(state.route.clone(), move |_| {
+        // The first screen keeps the focus where the browser put it.
+        if !std::mem::take(&mut *is_first.borrow_mut()) {
+            focus::heading("title");
+        }
+    });
+    use_effect_with(title(&state), |title| {
+        if let Some(document) = web_sys::window().and_then(|window| window.document()) {
+            document.set_title(title);
+        }
+    });
+    let deed = use_memo((), move |()| {
+        Callback::from(move |deed: Deed| hands.act(deed))
+    });
+    let snapshot = (*state).clone();
+    html! {
+        <>
+            <a class="skip" href="#main" onclick={Callback::from(|event: yew::MouseEvent| {
+                // The address is taken by the route.
+                event.prevent_default();
+                focus::to("title");
+            })}>{ "To the content" }</a>
+            <Bar state={snapshot.clone()} />
+            <Notices state={snapshot.clone()} deed={(*deed).clone()} />
+            <p class="hidden-text" role="status" aria-live="polite" data-testid="said">
+                <span key={state.said.0}>{ &state.said.1 }</span>
+            </p>
+            { screen(&snapshot, &deed) }
+        </>
+    }
+}
+
+fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
+    let missing = |what: &str| {
+        html! {
+            <main class="page" id="main" data-testid="missing-screen">
+                <h1 id="title" tabindex="-1">{ format!("This {what} is not here") }</h1>
+                <p>{ "It was removed, or it was made on another device." }</p>
+                <div class="actions"><a class="button is-main" href={Route::Units.href()}>{ "To the units" }</a></div>
+            </main>
+        }
+    };
+    match &state.route {
+        Route::Units => html! { <Units state={state.clone()} deed={deed.clone()} /> },
+        Route::Settings => html! { <SettingsScreen state={state.clone()} deed={deed.clone()} /> },
+        Route::Unit(id) => match state.units.get(id) {
+            Some(unit) => html! {
+                <Profile key={id.clone()} unit={unit.clone()} state={state.clone()} deed={deed.clone()} />
+            },
+            None => missing("unit"),
+        },
+        Route::Call(id) => {
+            let visit = state.visits.get(id);
+            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
+                Some((visit, unit)) => {
+                    let (assessment, updating) = state.answer(id);
+                    html! {
+                        <CallScreen
+                            key={id.clone()}
+                            unit={unit.clone()}
+                            visit={visit.clone()}
+                            instruments={state.instruments.clone()}
+                            prefs={state.settings.units.clone()}
+                            {assessment}
+                            {updating}
+                            on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(visit)))}
+                            on_unit={deed.reform(|unit| Deed::Put(Action::PutUnit(unit)))}
+                            on_instruments={deed.reform(|list| Deed::Put(Action::PutInstruments(list)))}
+                        />
+                    }
+                }
+                None => missing("call"),
+            }
+        }
+    }
+}

@@ -1,0 +1,36 @@
+//! The engine in its worker, so that no calculation ever blocks a screen.
+//!
+//! The page sends JSON `{seq, unit, visit, instruments}` and gets `{seq, assessment}` or `{seq, error}` back. A worker that
+//! is ready says so with `{seq: 0}`.
+
+pub mod client;
+pub mod worker;
+
+use crate::assessment::Assessment;
+use serde::{Deserialize, Serialize};
+
+/// What the worker answers.
+#[derive(Debug, Serialize, Deserialize)]
+struct Reply {
+    /// Number of the request.
+    seq: u32,
+    /// The assessment.
+    #[serde(default)]
+    assessment: Option<Assessment>,
+    /// Why there is none.
+    #[serde(default)]
+    error: Option<String>,
+}
+
+impl Reply {
+    /// Says that the worker is there.
+    const READY: Reply = Reply {
+        seq: 0,
+        assessment: None,
+        error: None,
+    };
+
+    fn is_ready(&self) -> bool {
+        self.assessment.is_none() && self.error.is_none()
+    }
+}

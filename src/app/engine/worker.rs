@@ -1,0 +1,68 @@
+//! The worker's side: takes a question, answers it.
+
+use serde::Deserialize;
+use wasm_bindgen::closure::Closure;
+use wasm_bindgen::{JsCast, JsValue};
+use web_sys::{DedicatedWorkerGlobalScope, MessageEvent};
+
+use super::Reply;
+use crate::readings::instrument::Instrument;
+use crate::record::Visit;
+use crate::unit::Unit;
+
+/// What the page asks.
+#[derive(Deserialize)]
+struct Request {
+    seq: u32,
+    unit: Unit,
+    visit: Visit,
+    instruments: Vec<Instrument>,
+}
+
+/// Answers every message from now on, if this is a worker.
+pub fn install() {
+    let Ok(scope) = js_sys::global().dyn_into::<DedicatedWorkerGlobalScope>() else {
+        return;
+    };
+    let answering = scope.clone();
+    let on_message = Closure::wrap(Box::new(move |event: MessageEvent| {
+        let text = event.data().as_string().unwrap_or_default();
+        post(&answering, &answer(&text));
+    }) as Box<dyn FnMut(MessageEvent)>);
+    // As a listener, because the start-up script hands over messages that came early as events.
+    if let Err(error) =
+        scope.add_event_listener_with_callback("message", on_message.as_ref().unchecked_ref())
+    {
+        web_sys::console::warn_1(&error);
+    }
+    // It listens as long as the worker lives.
+    on_message.forget();
+    post(&scope, &Reply::READY);
+}
+
+fn post(scope: &DedicatedWorkerGlobalScope, reply: &Reply) {
+    if let Ok(json) = serde_json::to_string(reply)
+        && let Err(error) = scope.post_message(&JsValue::from_str(&json))
+    {
+        web_sys::console::warn_1(&error);
+    }
+}
+
+fn answer(text: &str) -> Reply {
+    match serde_json::from_str::<Request>(text) {
+        Ok(request) => Reply {
+            seq: request.seq,
+            assessment: Some(crate::ranking::assess(
+                &request.unit,
+                &request.visit,
+                &request.instruments,
+            )),
+            error: None,
+        },
+        Err(error) => Reply {
+            seq: 0,
+            assessment: None,
+            error: Some(error.to_string()),
+        },
+    }
+}

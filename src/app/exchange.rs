@@ -1,0 +1,125 @@
+//! Files out and in, and the demo yard.
+
+use std::rc::Rc;
+
+use super::hands::Hands;
+use super::persist::book_of;
+use super::platform::{clock, files};
+use super::state::{Action, Records};
+use crate::record::{Export, ImportPlan, Settings};
+use crate::store::Quarantined;
+
+const JSON: &str = "application/json";
+
+/// Hands everything over as a file, or as several where it is much.
+pub fn export(hands: &Rc<Hands>) {
+    hands.flush();
+    let state = hands.now();
+    let now = clock::now();
+    let texts = match Export::of(&book_of(&state), &now).texts() {
+        Ok(texts) => texts,
+        Err(why) => return hands.trouble(format!("The file could not be written: {why}.")),
+    };
+    let count = texts.len();
+    for (at, text) in texts.iter().enumerate() {
+        let part = if count == 1 {
+            String::new()
+        } else {
+            format!("-{}-of-{count}", at + 1)
+        };
+        let name = format!("lowside-{}{part}.json", clock::file_day());
+        if let Err(why) = files::hand_over(&name, JSON, text) {
+            return hands.trouble(format!(
+                "The file could not be handed to the browser: {why}."
+            ));
+        }
+    }
+    let settings = Settings {
+        last_export: now,
+        ..(*state.settings).clone()
+    };
+    hands.put(Action::PutSettings(settings));
+    hands.put(Action::Say(match count {
+        1 => "The file was handed to the browser as a download.".to_owned(),
+        count => {
+            format!("{count} files were handed to the browser as downloads. Keep all of them.")
+        }
+    }));
+}
+
+/// Takes in what a file brings, all or none.
+pub fn import(hands: &Rc<Hands>, plan: &ImportPlan, with_settings: bool) {
+    hands.flush();
+    let mut book = book_of(&hands.now());
+    let taken = plan.apply(&mut book, with_settings);
+    let added = hands.keeper().borrow_mut().add(&taken.units, &taken.visits);
+    if let Err(why) = added {
+        return hands.trouble(format!("Nothing was taken in. {why}."));
+    }
+    let words = format!(
+        "Taken in: {}, {}.",
+        count(taken.units.len(), "unit"),
+        count(taken.visits.len(), "call")
+    );
+    hands.put(Action::Loaded(Box::new(Records {
+        units: taken.units,
+        visits: taken.visits,
+        settings: None,
+    })));
+    if taken.settings_changed {
+        hands.put(Action::PutSettings(book.settings));
+    }
+    hands.put(Action::Say(words));
+}
+
+/// "1 unit", "3 units".
+pub fn count(number: usize, what: &str) -> String {
+    if number == 1 {
+        format!("1 {what}")
+    } else {
+        format!("{number} {what}s")
+    }
+}
+
+/// Hands over a text that could not be read, as it was found.
+pub fn hand_over_unread(hands: &Rc<Hands>, entry: &Quarantined, text: Option<String>) {
+    let Some(text) = text else {
+        return hands.trouble("That text is not there any more.".to_owned());
+    };
+    let tail: String = entry
+        .was
+        .chars()
+        .map(|c| if c.is_ascii_alphanumeric() { c } else { '-' })
+        .collect();
+    if let Err(why) = files::hand_over(&format!("{tail}.txt"), "text/plain", &text) {
+        hands.trouble(format!(
+            "The file could not be handed to the browser: {why}."
+        ));
+    }
+}
+
+/// Brings the demo yard in; what is there of it already stays as it is.
+pub fn load_demo(hands: &Rc<Hands>) {
+    let state = hands.now();
+    let demo = crate::demo::book();
+    let units: Vec<_> = demo
+        .units
+        .into_values()
+        .filter(|unit| !state.units.contains_key(&unit.id))
+        .collect();
+    let visits: Vec<_> = demo
+        .visits
+        .into_values()
+        .filter(|visit| !state.visits.contains_key(&visit.id))
+        .collect();
+    let added = hands.keeper().borrow_mut().add(&units, &visits);
+    if let Err(why) = added {
+        return hands.trouble(format!("The demo could not be stored. {why}."));
+    }
+    hands.put(Action::Loaded(Box::new(Records {
+        units,
+        visits,
+        settings: None,
+    })));
+    hands.put(Action::Say("The demo yard is loaded.".to_owned()));
+}

@@ -1,0 +1,84 @@
+//! Settings: units of measure, theme, the instruments of the shop, the data, and what this app is.
+
+mod about;
+pub mod data;
+mod draft;
+mod import;
+mod instruments;
+mod measures;
+
+use yew::{Callback, Html, Properties, component, html};
+
+use self::about::About;
+use self::data::Data;
+use self::instruments::Instruments;
+use self::measures::Measures;
+use crate::app::deed::{Deed, Snapshot};
+use crate::app::parts::{Choice, Opt};
+use crate::app::state::Action;
+use crate::record::{Settings, Theme};
+
+/// Properties of [`SettingsScreen`] and of its parts.
+#[derive(Clone, PartialEq, Properties)]
+pub struct SettingsProps {
+    /// The state.
+    pub state: Snapshot,
+    /// Wishes.
+    pub deed: Callback<Deed>,
+}
+
+impl SettingsProps {
+    /// A callback that changes a copy of the settings and hands it on.
+    pub fn change<T: 'static>(&self, change: impl Fn(&mut Settings, T) + 'static) -> Callback<T> {
+        let (settings, deed) = (self.state.settings.clone(), self.deed.clone());
+        Callback::from(move |value: T| {
+            let mut next = (*settings).clone();
+            change(&mut next, value);
+            deed.emit(Deed::Put(Action::PutSettings(next)));
+        })
+    }
+}
+
+fn theme_words(theme: Theme) -> &'static str {
+    match theme {
+        Theme::System => "As the device",
+        Theme::Light => "Light",
+        Theme::Dark => "Dark",
+        Theme::Sun => "Sun",
+    }
+}
+
+/// The screen.
+#[component]
+pub fn SettingsScreen(props: &SettingsProps) -> Html {
+    let themes = Theme::ALL
+        .into_iter()
+        .map(|theme| Opt::new(theme, theme_words(theme), theme.code()))
+        .collect::<Vec<_>>();
+    html! {
+        <main class="page" id="main" data-testid="settings-screen">
+            <h1 id="title" tabindex="-1">{ "Settings" }</h1>
+            <div class="columns">
+                <div class="stack">
+                    <Measures ..props.clone() />
+                    <section class="panel" aria-labelledby="theme-title">
+                        <h2 id="theme-title">{ "Screen" }</h2>
+                        <Choice<Theme>
+                            name="theme"
+                            label="Theme"
+                            hint="Sun: black on white with heavy lines."
+                            options={themes}
+                            value={props.state.settings.theme}
+                            on_change={props.change(|settings, theme| settings.theme = theme)}
+                        />
+                    </section>
+                    <Data state={props.state.clone()} deed={props.deed.clone()} />
+                </div>
+                <div class="stack">
+                    <Instruments ..props.clone() />
+                    <About ..props.clone() />
+                </div>
+            </div>
+        </main>
+    }
+}

@@ -1,0 +1,89 @@
+//! The app bar: the name, the unit at hand, whether everything is saved.
+
+use yew::{Html, Properties, component, html};
+
+use crate::app::deed::Snapshot;
+use crate::app::parts::{Icon, Shape};
+use crate::app::route::Route;
+use crate::app::state::{Save, State};
+
+/// Properties of [`Bar`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct BarProps {
+    /// The state.
+    pub state: Snapshot,
+}
+
+/// The unit that the screen is about.
+pub fn unit_name(state: &State) -> Option<String> {
+    let id = match &state.route {
+        Route::Unit(id) => id,
+        Route::Call(id) => &state.visits.get(id)?.unit,
+        Route::Units | Route::Settings => return None,
+    };
+    Some(state.units.get(id)?.name.clone())
+}
+
+/// The bar.
+#[component]
+pub fn Bar(props: &BarProps) -> Html {
+    let state = &props.state;
+    let unit = unit_name(state);
+    let is_settings = state.route == Route::Settings;
+    html! {
+        <header class="bar">
+            <a class="bar-home" href={Route::Units.href()} data-testid="home" aria-label={match &unit {
+                Some(unit) => format!("Lowside, unit {unit}. To the list of units"),
+                None => "Lowside. To the list of units".to_owned(),
+            }}>
+                <svg class="bar-mark" viewBox="0 0 36 36" aria-hidden="true" focusable="false">
+                    <rect class="mark-ground" x="0" y="0" width="36" height="36" rx="6" />
+                    <path class="mark-line" d="M9 9v16a3 3 0 0 0 3 3h15" />
+                    <path class="mark-needle" d="M12 22l13-11" />
+                    <circle class="mark-dot" cx="12" cy="22" r="2.5" />
+                </svg>
+                <span class={if unit.is_some() { "bar-words" } else { "bar-words is-alone" }}>
+                    <span class="bar-name">{ "Lowside" }</span>
+                    if let Some(unit) = unit {
+                        <span class="bar-unit" data-testid="current-unit">{ unit }</span>
+                    }
+                </span>
+            </a>
+            <SaveState state={state.clone()} />
+            <a
+                class="bar-link"
+                href={Route::Settings.href()}
+                aria-current={is_settings.then_some("page")}
+                aria-label="Settings"
+                data-testid="settings-link"
+            >
+                <Icon shape={Shape::Settings} />
+                <span class="bar-link-words" aria-hidden="true">{ "Settings" }</span>
+            </a>
+        </header>
+    }
+}
+
+/// Whether everything typed is kept.
+#[component]
+fn SaveState(props: &BarProps) -> Html {
+    let state = &props.state;
+    let (shape, words, class) = if state.memory_only {
+        (Shape::Warning, "Not kept", "save-state is-failed")
+    } else if !state.contested.is_empty() {
+        (Shape::Warning, "Not saved", "save-state is-failed")
+    } else {
+        match &state.save {
+            Save::Failed(_) => (Shape::Warning, "Not saved", "save-state is-failed"),
+            Save::Pending => (Shape::Working, "Saving", "save-state"),
+            Save::Saved if state.units.is_empty() => return Html::default(),
+            Save::Saved => (Shape::Done, "Saved", "save-state"),
+        }
+    };
+    html! {
+        <span {class} data-testid="save-state">
+            <Icon {shape} />
+            { words }
+        </span>
+    }
+}
