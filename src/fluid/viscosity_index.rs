@@ -63,7 +63,7 @@ pub fn viscosity_index(kv40: f64, kv100: f64) -> Result<f64, FluidError> {
 }
 
 /// Kinematic viscosity at 100 °C, mm²/s, of an oil of this viscosity at 40 °C and this index: the inverse of
-/// [`viscosity_index`], to 1e-12 of the value.
+/// [`viscosity_index`], to 1e-9 of the value.
 ///
 /// # Errors
 /// [`FluidError::Viscosity`] for a viscosity at 40 °C outside [`KV40_RANGE`]; [`FluidError::Index`] with the span that is
@@ -90,12 +90,23 @@ pub fn kv100_from_index(kv40: f64, index: f64) -> Result<f64, FluidError> {
             high: highest,
         });
     }
-    for _ in 0..60 {
-        let middle = 0.5 * (thin + thick);
-        if viscosity_index(kv40, middle)? < index {
-            thin = middle;
+    // Illinois: false position that halves the weight of an end that stays. About ten steps.
+    let (mut at_thin, mut at_thick) = (lowest - index, highest - index);
+    let mut stayed = 0_i8;
+    for _ in 0..100 {
+        let middle = (thin * at_thick - thick * at_thin) / (at_thick - at_thin);
+        let at_middle = viscosity_index(kv40, middle)? - index;
+        if at_middle.abs() < 1e-11 * (1.0 + index.abs()) || thick - thin < 1e-13 * thick {
+            return Ok(middle);
+        }
+        if at_middle < 0.0 {
+            (thin, at_thin) = (middle, at_middle);
+            at_thick *= if stayed < 0 { 0.5 } else { 1.0 };
+            stayed = -1;
         } else {
-            thick = middle;
+            (thick, at_thick) = (middle, at_middle);
+            at_thin *= if stayed > 0 { 0.5 } else { 1.0 };
+            stayed = 1;
         }
     }
     Ok(0.5 * (thin + thick))
