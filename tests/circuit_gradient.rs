@@ -37,7 +37,7 @@ fn check(layout: Layout, lever: f64, load: f64) {
                 Scale::Linear => 1.0,
             };
             assert!(
-                (numeric - exact).abs() * scale < 4e-4 * (5.0 + (exact * scale).abs() + 0.1 * shown.value.abs()),
+                (numeric - exact).abs() * scale < 4e-4 * (5.0 + 4.0 * (exact * scale).abs() + 0.1 * shown.value.abs()),
                 "{port:?} by {p:?}: exact {exact}, numeric {numeric}"
             );
         }

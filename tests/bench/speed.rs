@@ -1,0 +1,33 @@
+//! Native speed: solves per second, iterations per solve, a full assessment. `cargo bench`. Prints, asserts nothing.
+
+#[path = "../support/mod.rs"]
+mod support;
+mod work;
+
+use std::time::Instant;
+
+fn main() {
+    let time = |f: &mut dyn FnMut()| {
+        f();
+        let mut best = f64::INFINITY;
+        for _ in 0..5 {
+            let t = Instant::now();
+            f();
+            best = best.min(t.elapsed().as_secs_f64());
+        }
+        best
+    };
+    const N: usize = 50_000;
+    let mut iterations = 0.0;
+    let solve = time(&mut || iterations = work::solves(N));
+    let derived = time(&mut || {
+        std::hint::black_box(work::solves_with_derivatives(N / 5));
+    });
+    let visit = work::call();
+    let full = time(&mut || {
+        std::hint::black_box(work::assessment(&visit));
+    });
+    println!("native: {:.0} solves/s ({:.2} µs each, {:.1} iterations)", N as f64 / solve, 1e6 * solve / N as f64, iterations);
+    println!("native: {:.2} µs a solve with three readings and all derivatives", 1e6 * derived / (N / 5) as f64);
+    println!("native: full assessment, 12 readings in 10 conditions: {:.1} ms", 1e3 * full);
+}
