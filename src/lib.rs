@@ -27,6 +27,7 @@ pub mod assessment;
 pub mod app;
 pub mod bench;
 pub mod circuit;
+pub mod demo;
 pub mod faults;
 pub mod fluid;
 pub mod heat;
