@@ -186,7 +186,7 @@ fn d341_for_nominal_oils() {
             close("B15-17", oil.kinematic_at(*celsius), *kinematic, 0.001);
         }
     }
-    // The same oil warmed from 60 to 75 °C leaks 61 % more (field notes of the trade; derived).
+    // The same oil warmed from 60 to 75 °C leaks 61 % more (derived).
     let growth = lowside::fluid::leakage_growth(&curve(46.0, 6.8), 60.0, 75.0);
     within("growth", growth, 1.61, 0.005);
 }
