@@ -33,7 +33,7 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
     for w in &mut weighed {
         w.log_prior += math::ln(seen::prior_factor(visit, w.id).max(1e-6));
     }
-    let observed = seen::observations(visit);
+    let observed = seen::observed(visit);
     let words: Vec<String> = visit.readings.iter().map(words).collect();
     let causes = rows(&weighed, &data, &visit.readings, &observed, &words);
     let share = |w: &Weighed| causes.iter().find(|c| c.ids.contains(&w.id)).map_or(0.0, |c| member_share(c, w.id));
@@ -111,6 +111,9 @@ fn withheld(unit: &Unit, visit: &Visit, data: &Data) -> Vec<String> {
 
 fn notes(unit: &Unit, visit: &Visit, swapped: f64) -> Vec<String> {
     let mut out = Vec::new();
+    if crate::observations::stop_work(&visit.observations) {
+        out.push("It keeps going with the lever in neutral: do not test. Stop the engine, chock it, do not drive it onto a trailer.".to_string());
+    }
     if swapped > 0.5 {
         out.push("The loop readings fit better with sides A and B changed over. Check which port is which: the side that rises when stroked forward is A.".to_string());
     }

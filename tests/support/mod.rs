@@ -1,6 +1,8 @@
 //! Builders shared by the tests.
 #![allow(dead_code)] // each test file uses its own part
 
+pub mod reference;
+
 use lowside::quantity::{Kind, Measure};
 use lowside::readings::{Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading, Seen};
 use lowside::record::Visit;
