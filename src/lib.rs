@@ -26,6 +26,7 @@ pub mod assessment;
 #[cfg(target_arch = "wasm32")]
 pub mod app;
 pub mod bench;
+pub mod caution;
 pub mod checks;
 pub mod circuit;
 pub mod demo;

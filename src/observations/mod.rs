@@ -9,6 +9,7 @@ mod signs;
 mod tests;
 mod walk_round;
 mod weigh;
+mod when;
 
 use crate::faults::{self, Column, FaultId};
 
@@ -118,7 +119,12 @@ const BASE: Observation = Observation {
     exceptions: &[],
 };
 
-const TABLES: [&[Observation]; 3] = [complaints::TABLE, signs::TABLE, walk_round::TABLE];
+const TABLES: [&[Observation]; 4] = [
+    complaints::TABLE,
+    when::TABLE,
+    signs::TABLE,
+    walk_round::TABLE,
+];
 
 /// Every observation, in the order in which screens offer them within a group.
 pub fn all() -> impl Iterator<Item = &'static Observation> {
