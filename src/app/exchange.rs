@@ -6,8 +6,9 @@ use super::hands::Hands;
 use super::persist::book_of;
 use super::platform::{clock, files};
 use super::state::{Action, Records};
-use crate::record::{Export, ImportPlan, Settings};
-use crate::store::Quarantined;
+use crate::demo;
+use crate::record::{Export, ImportPlan, Settings, Taken};
+use crate::store::{Quarantined, RecordKey};
 
 const JSON: &str = "application/json";
 
@@ -49,25 +50,70 @@ pub fn export(hands: &Rc<Hands>) {
 
 /// Takes in what a file brings, all or none.
 pub fn import(hands: &Rc<Hands>, plan: &ImportPlan, with_settings: bool) {
-    hands.flush();
     let mut book = book_of(&hands.now());
     let taken = plan.apply(&mut book, with_settings);
-    let added = hands.keeper().borrow_mut().add(&taken.units, &taken.visits);
-    if let Err(why) = added {
-        return hands.trouble(format!("Nothing was taken in. {why}."));
-    }
     let words = format!(
         "Taken in: {}, {}.",
         count(taken.units.len(), "unit"),
         count(taken.visits.len(), "call")
     );
+    take(hands, taken, book.settings, words);
+}
+
+/// Brings the demo yard in.
+pub fn load_demo(hands: &Rc<Hands>) {
+    let mut book = book_of(&hands.now());
+    match demo::load(&mut book) {
+        Ok(taken) => take(
+            hands,
+            taken,
+            book.settings,
+            "The demo yard is loaded.".to_owned(),
+        ),
+        Err(why) => hands.trouble(format!("The demo could not be read: {why}.")),
+    }
+}
+
+/// Takes the demo yard away for good. A unit on which the person made a call of their own stays.
+pub fn remove_demo(hands: &Rc<Hands>) {
+    hands.flush();
+    let removed = demo::remove(&mut book_of(&hands.now()));
+    let visits = removed
+        .visits
+        .into_iter()
+        .map(|visit| RecordKey::Visit(visit.id));
+    let units = removed
+        .units
+        .into_iter()
+        .map(|unit| RecordKey::Unit(unit.id));
+    let keys: Vec<RecordKey> = visits.chain(units).collect();
+    let actions = hands.keeper().borrow_mut().delete(&keys);
+    for action in actions {
+        hands.put(action);
+    }
+    hands.put(Action::Say(match removed.kept.len() {
+        0 => "The demo was removed.".to_owned(),
+        kept => format!(
+            "The demo was removed. {} stayed, for the calls you made on them.",
+            count(kept, "unit")
+        ),
+    }));
+}
+
+/// Stores new records and shows them.
+fn take(hands: &Rc<Hands>, taken: Taken, settings: Settings, words: String) {
+    hands.flush();
+    let added = hands.keeper().borrow_mut().add(&taken.units, &taken.visits);
+    if let Err(why) = added {
+        return hands.trouble(format!("Nothing was taken in. {why}."));
+    }
     hands.put(Action::Loaded(Box::new(Records {
         units: taken.units,
         visits: taken.visits,
         settings: None,
     })));
     if taken.settings_changed {
-        hands.put(Action::PutSettings(book.settings));
+        hands.put(Action::PutSettings(settings));
     }
     hands.put(Action::Say(words));
 }
@@ -96,30 +142,4 @@ pub fn hand_over_unread(hands: &Rc<Hands>, entry: &Quarantined, text: Option<Str
             "The file could not be handed to the browser: {why}."
         ));
     }
-}
-
-/// Brings the demo yard in; what is there of it already stays as it is.
-pub fn load_demo(hands: &Rc<Hands>) {
-    let state = hands.now();
-    let demo = crate::demo::book();
-    let units: Vec<_> = demo
-        .units
-        .into_values()
-        .filter(|unit| !state.units.contains_key(&unit.id))
-        .collect();
-    let visits: Vec<_> = demo
-        .visits
-        .into_values()
-        .filter(|visit| !state.visits.contains_key(&visit.id))
-        .collect();
-    let added = hands.keeper().borrow_mut().add(&units, &visits);
-    if let Err(why) = added {
-        return hands.trouble(format!("The demo could not be stored. {why}."));
-    }
-    hands.put(Action::Loaded(Box::new(Records {
-        units,
-        visits,
-        settings: None,
-    })));
-    hands.put(Action::Say("The demo yard is loaded.".to_owned()));
 }

@@ -203,13 +203,7 @@ impl Hands {
                 super::exchange::hand_over_unread(self, &entry, text);
             }
             Deed::LoadDemo => super::exchange::load_demo(self),
-            Deed::RemoveDemo => {
-                self.flush();
-                let keys = self.state().demo_keys();
-                let actions = self.keeper.borrow_mut().delete(&keys);
-                self.put_all(actions);
-                self.put(Action::Say("The demo was removed.".to_owned()));
-            }
+            Deed::RemoveDemo => super::exchange::remove_demo(self),
             Deed::AskToKeep => self.ask_to_keep(),
             Deed::Update => {
                 self.flush();

@@ -7,13 +7,11 @@ use super::platform::offline::Offline;
 use super::platform::persistence::Keeping;
 use super::route::Route;
 use crate::assessment::Assessment;
+use crate::demo;
 use crate::readings::instrument::Instrument;
 use crate::record::{Settings, Visit};
 use crate::store::{Quarantined, RecordKey as Key, Trashed};
 use crate::unit::Unit;
-
-/// Ids of the demo yard begin with this.
-const DEMO_IDS: &str = "demo-";
 
 /// Whether everything typed is on the shelf.
 #[derive(Clone, Debug, Default, PartialEq, Eq)]
@@ -396,24 +394,17 @@ impl State {
         self.dirty.iter().any(|key| !self.contested.contains(key))
     }
 
-    /// True while units of the demo yard are there.
+    /// True while there is something of the demo yard that "remove the demo" would take away.
     pub fn has_demo(&self) -> bool {
-        self.units.keys().any(|id| id.starts_with(DEMO_IDS))
-    }
-
-    /// Every record of the demo yard, calls on its units included.
-    pub fn demo_keys(&self) -> Vec<Key> {
-        let visits = self
-            .visits
-            .values()
-            .filter(|visit| visit.id.starts_with(DEMO_IDS) || visit.unit.starts_with(DEMO_IDS))
-            .map(|visit| Key::Visit(visit.id.clone()));
-        let units = self
-            .units
-            .keys()
-            .filter(|id| id.starts_with(DEMO_IDS))
-            .map(|id| Key::Unit(id.clone()));
-        visits.chain(units).collect()
+        let is_own_call_on = |unit: &str| {
+            let mut calls = self.visits.values().filter(|visit| visit.unit == unit);
+            calls.any(|visit| !demo::is_demo(&visit.id))
+        };
+        self.visits.keys().any(|id| demo::is_demo(id))
+            || self
+                .units
+                .keys()
+                .any(|id| demo::is_demo(id) && !is_own_call_on(id))
     }
 
     /// Visits of a unit, latest first.
