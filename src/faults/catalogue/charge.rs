@@ -13,7 +13,7 @@ pub const FAULTS: &[Fault] = &[
         per_hundred: 3.5,
         column: Column::Air,
         severity: Even,
-        effects: ways!([Air: Plus(0.05, 0.9)]),
+        effects: ways!([Air: Plus(0.05, 0.95)]),
         explains: "The charge pump takes air with the oil: charge falls and swings, worst on a slope or in a turn, and \
                    the drive goes weak and noisy both ways.",
         proof: "Level below the mark, machine level and cylinders as the manual says; topped up, foam gone and charge steady.",
@@ -61,7 +61,7 @@ pub const FAULTS: &[Fault] = &[
         per_hundred: 1.6,
         column: Column::Charge,
         severity: Even,
-        effects: ways!([ChargeSlip: Times(2.5, 30.0)]),
+        effects: ways!([ChargeSlip: Times(3.0, 45.0)]),
         explains: "The same litres are missing at every speed: charge is poor at hot low idle long before it shows at \
                    high idle, and it climbs late as revs rise.",
         proof: "Total return flow low at two speeds with a good inlet pull and the consumers capped.",

@@ -2,7 +2,7 @@
 
 use super::{BASE, possible, ways};
 use crate::circuit::Param;
-use crate::faults::Bend::{Plus, Times, TimesLinear};
+use crate::faults::Bend::{PlusGeometric, Times, TimesLinear};
 use crate::faults::SeverityShape::{Even, MostlyBad};
 use crate::faults::{Column, Fault, FaultId};
 
@@ -55,7 +55,7 @@ pub const FAULTS: &[Fault] = &[
         title: "Flushing orifice blocked",
         per_hundred: 0.3,
         severity: MostlyBad,
-        effects: ways!([FlushOrifice: Times(0.5, 0.02)]),
+        effects: ways!([FlushOrifice: Times(0.3, 0.01)]),
         explains: "Shuttle and relief work but nothing passes: loop and motor run hot though charge looks good.",
         proof: "The plug out and the orifice found blocked.",
         repair: "Clear the orifice; find what blocked it.",
@@ -79,7 +79,7 @@ pub const FAULTS: &[Fault] = &[
         id: FaultId::ShuttleStuckA,
         title: "Flushing shuttle stuck open to side A",
         per_hundred: 0.3,
-        effects: ways!([ShuttleStuckA: Plus(0.3, 1.0), ShuttleTravel: TimesLinear(0.3, 0.0)]),
+        effects: ways!([ShuttleStuckA: PlusGeometric(0.04, 1.0), ShuttleTravel: TimesLinear(0.3, 0.0)]),
         explains: "Forward, high-pressure oil leaves through the flushing relief: weak forward, normal in reverse, and the \
                    motor drain runs full.",
         proof: "Weak forward only with a great deal of motor drain oil; the spool found stuck towards side A.",
@@ -89,7 +89,7 @@ pub const FAULTS: &[Fault] = &[
         id: FaultId::ShuttleStuckB,
         title: "Flushing shuttle stuck open to side B",
         per_hundred: 0.25,
-        effects: ways!([ShuttleStuckB: Plus(0.3, 1.0), ShuttleTravel: TimesLinear(0.3, 0.0)]),
+        effects: ways!([ShuttleStuckB: PlusGeometric(0.04, 1.0), ShuttleTravel: TimesLinear(0.3, 0.0)]),
         explains: "In reverse, high-pressure oil leaves through the flushing relief: weak in reverse, normal forward, and \
                    the motor drain runs full.",
         proof: "Weak in reverse only with a great deal of motor drain oil; the spool found stuck towards side B.",

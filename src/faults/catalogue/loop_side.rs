@@ -166,7 +166,7 @@ pub const FAULTS: &[Fault] = &[
         per_hundred: 4.3,
         column: Column::Worn,
         severity: Even,
-        effects: ways!([PumpLeak: Times(1.8, 14.0), PumpAcross: Times(1.0, 2.5)]),
+        effects: ways!([PumpLeak: Times(2.0, 22.0), PumpAcross: Times(1.0, 2.5)]),
         explains: "More oil is lost inside as pressure and heat rise: slow when loaded and hot, both ways. Charge holds \
                    until the spare flow is used up, then it drops quickly.",
         proof: "Pump alone, its ports capped, does not build pressure at small stroke with warm oil; or metal that comes \
@@ -185,7 +185,7 @@ pub const FAULTS: &[Fault] = &[
         per_hundred: 2.0,
         column: Column::Worn,
         severity: Even,
-        effects: ways!([PumpAcross: Times(3.0, 40.0), PumpLeak: Times(1.0, 1.5)]),
+        effects: ways!([PumpAcross: Times(3.5, 60.0), PumpLeak: Times(1.0, 1.5)]),
         explains: "Oil slips from the high side to the low side inside the pump: speed and push are lost but charge and \
                    drains stay normal.",
         proof: "Pump alone, its ports capped, does not build pressure at small stroke while its case flow is normal.",
@@ -203,7 +203,7 @@ pub const FAULTS: &[Fault] = &[
         per_hundred: 4.9,
         column: Column::Worn,
         severity: Even,
-        effects: ways!([MotorLeak: Times(1.8, 14.0), MotorAcross: Times(1.0, 2.5)]),
+        effects: ways!([MotorLeak: Times(2.0, 22.0), MotorAcross: Times(1.0, 2.5)]),
         explains: "More oil is lost inside as pressure and heat rise: slow when loaded and hot, both ways. Its drain shows \
                    it cleanly only in neutral or with flushing blocked.",
         proof: "Motor drain in true neutral far above the other side or this unit's own past, or the pump proved good alone.",
@@ -220,7 +220,7 @@ pub const FAULTS: &[Fault] = &[
         per_hundred: 2.3,
         column: Column::Worn,
         severity: Even,
-        effects: ways!([MotorAcross: Times(3.0, 40.0), MotorLeak: Times(1.0, 1.5)]),
+        effects: ways!([MotorAcross: Times(3.5, 60.0), MotorLeak: Times(1.0, 1.5)]),
         explains: "Oil slips from the high side to the low side inside the motor: speed and push are lost but charge and \
                    drains stay normal.",
         proof: "Pump alone builds pressure at small stroke; with the motor connected and held it does not.",

@@ -32,7 +32,7 @@ const FORWARD: Ask = Ask {
 };
 const REVERSE: Ask = Ask {
     lever: -0.5,
-    load: -20.0,
+    load: 20.0,
     ..NEUTRAL
 };
 const LOADED: Ask = Ask {

@@ -117,7 +117,9 @@ fn shares_stay_shares() {
     use Param as P;
     for f in all() {
         for (param, bend) in f.effects.iter().flat_map(|e| e.bends) {
-            if let Bend::Plus(_, total) | Bend::PlusEitherSign(_, total) = bend
+            if let Bend::Plus(_, total)
+            | Bend::PlusGeometric(_, total)
+            | Bend::PlusEitherSign(_, total) = bend
                 && matches!(
                     param,
                     P::Air | P::ShuttleStuckA | P::ShuttleStuckB | P::NullControl | P::NullServo
