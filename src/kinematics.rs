@@ -164,7 +164,7 @@ fn velocity(metres_per_second: f64) -> Velocity {
     Velocity::new::<si::velocity::meter_per_second>(metres_per_second)
 }
 
-#[cfg(test)]
+#[cfg(all(test, not(target_arch = "wasm32")))]
 mod tests {
     use super::*;
     use proptest::prelude::*;

@@ -236,7 +236,7 @@ pub fn filtration_efficiency(ratio: f64) -> f64 {
     1.0 - 1.0 / ratio
 }
 
-#[cfg(test)]
+#[cfg(all(test, not(target_arch = "wasm32")))]
 mod tests {
     use super::*;
     use proptest::prelude::*;

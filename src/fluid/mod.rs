@@ -35,5 +35,5 @@ pub use oil::{
 };
 pub use viscosity::{KV40_RANGE, KV100_RANGE, TEMPERATURE_RANGE, ViscosityCurve, leakage_growth};
 
-#[cfg(test)]
+#[cfg(all(test, not(target_arch = "wasm32")))]
 mod tests;

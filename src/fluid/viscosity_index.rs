@@ -124,7 +124,7 @@ pub fn viscosity_by_definition(l: f64, h: f64, index: f64) -> f64 {
     l - index / 100.0 * (l - h)
 }
 
-#[cfg(test)]
+#[cfg(all(test, not(target_arch = "wasm32")))]
 mod tests {
     use super::*;
     use crate::math::pow;

@@ -31,5 +31,5 @@ use print::{edited, figure_text};
 pub use typed::{DisplacementPerRevolution, GaugePressure};
 pub use unit::Unit;
 
-#[cfg(test)]
+#[cfg(all(test, not(target_arch = "wasm32")))]
 mod tests;

@@ -152,7 +152,7 @@ fn flow(cubic_metres_per_second: f64) -> VolumeRate {
     VolumeRate::new::<si::volume_rate::cubic_meter_per_second>(cubic_metres_per_second)
 }
 
-#[cfg(test)]
+#[cfg(all(test, not(target_arch = "wasm32")))]
 mod tests {
     use super::*;
     use crate::bench::efficiency::{theoretical_flow, theoretical_torque};
