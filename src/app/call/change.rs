@@ -1,5 +1,6 @@
 //! Changes to a visit: every edit of the call screen is one of these, and [`apply`] is the only place that makes them.
 
+use super::gate;
 use super::group::settled;
 use crate::readings::{Condition, Port, Reading, Rigging, Seen};
 use crate::record::{Answer, Visit};
@@ -68,7 +69,14 @@ impl Change {
     pub fn goes_on(&self, next: &Change) -> bool {
         match (self, next) {
             (Change::Complaint(_), Change::Complaint(_)) => true,
-            (Change::Entry { id, seen, .. }, Change::Entry { id: then, seen: and_then, .. }) => {
+            (
+                Change::Entry { id, seen, .. },
+                Change::Entry {
+                    id: then,
+                    seen: and_then,
+                    ..
+                },
+            ) => {
                 // A one-touch answer is a step of its own; letters and digits are not.
                 let typing = |seen: &Option<Seen>| {
                     matches!(seen, None | Some(Seen::Value { .. } | Seen::Swing { .. }))
@@ -113,11 +121,22 @@ pub fn apply(visit: &Visit, change: &Change) -> Visit {
             }
         }
         Change::Condition(ids, condition) => {
-            for reading in next.readings.iter_mut().filter(|reading| ids.contains(&reading.id)) {
+            for check in gate::lapsing(visit, ids, condition) {
+                next.precautions.remove(check);
+            }
+            for reading in next
+                .readings
+                .iter_mut()
+                .filter(|reading| ids.contains(&reading.id))
+            {
                 reading.condition = settled(*condition);
             }
         }
-        Change::Rig { port, instrument, from } => rig(&mut next, *port, instrument, from.as_deref()),
+        Change::Rig {
+            port,
+            instrument,
+            from,
+        } => rig(&mut next, *port, instrument, from.as_deref()),
         Change::Precautions(key, facts) if facts.is_empty() => {
             next.precautions.remove(key);
         }
@@ -135,7 +154,10 @@ fn find<'a>(visit: &'a mut Visit, id: &str) -> Option<&'a mut Reading> {
 /// The next free id with this letter: one above the highest taken, so that an undone id is not met again in a file.
 fn next_id<'a>(letter: char, taken: impl Iterator<Item = &'a str>) -> String {
     let highest = taken
-        .filter_map(|id| id.strip_prefix(letter).and_then(|number| number.parse::<u32>().ok()))
+        .filter_map(|id| {
+            id.strip_prefix(letter)
+                .and_then(|number| number.parse::<u32>().ok())
+        })
         .max()
         .unwrap_or(0);
     format!("{letter}{}", highest.saturating_add(1))
@@ -143,8 +165,13 @@ fn next_id<'a>(letter: char, taken: impl Iterator<Item = &'a str>) -> String {
 
 /// Adds an empty reading, on the instrument that stands on its port already.
 fn add(visit: &mut Visit, port: Port, condition: Condition) {
-    let id = next_id('r', visit.readings.iter().map(|reading| reading.id.as_str()));
-    let rigging = rigging_on(visit, port).map(|rigging| rigging.id.clone()).unwrap_or_default();
+    let id = next_id(
+        'r',
+        visit.readings.iter().map(|reading| reading.id.as_str()),
+    );
+    let rigging = rigging_on(visit, port)
+        .map(|rigging| rigging.id.clone())
+        .unwrap_or_default();
     visit.readings.push(Reading {
         id,
         port,
@@ -158,36 +185,69 @@ fn add(visit: &mut Visit, port: Port, condition: Condition) {
 
 /// The rigging that stands on a port now: the last one put there.
 pub fn rigging_on(visit: &Visit, port: Port) -> Option<&Rigging> {
-    visit.riggings.iter().rev().find(|rigging| rigging.port == port)
+    visit
+        .riggings
+        .iter()
+        .rev()
+        .find(|rigging| rigging.port == port)
 }
 
 /// Puts an instrument on a port: for all its readings, or from one reading on where the gauge was swapped.
 fn rig(visit: &mut Visit, port: Port, instrument: &str, from: Option<&str>) {
     if let Some(first) = from {
-        let id = next_id('g', visit.riggings.iter().map(|rigging| rigging.id.as_str()));
-        visit.riggings.push(Rigging { id: id.clone(), instrument: instrument.to_owned(), port });
-        let later = visit.readings.iter_mut().skip_while(|reading| reading.id != first);
+        let id = next_id(
+            'g',
+            visit.riggings.iter().map(|rigging| rigging.id.as_str()),
+        );
+        visit.riggings.push(Rigging {
+            id: id.clone(),
+            instrument: instrument.to_owned(),
+            port,
+        });
+        let later = visit
+            .readings
+            .iter_mut()
+            .skip_while(|reading| reading.id != first);
         for reading in later.filter(|reading| reading.port == port) {
             reading.rigging.clone_from(&id);
         }
     } else {
-        let id = match visit.riggings.iter_mut().rev().find(|rigging| rigging.port == port) {
+        let id = match visit
+            .riggings
+            .iter_mut()
+            .rev()
+            .find(|rigging| rigging.port == port)
+        {
             Some(standing) => {
                 instrument.clone_into(&mut standing.instrument);
                 standing.id.clone()
             }
             None => {
-                let id = next_id('g', visit.riggings.iter().map(|rigging| rigging.id.as_str()));
-                visit.riggings.push(Rigging { id: id.clone(), instrument: instrument.to_owned(), port });
+                let id = next_id(
+                    'g',
+                    visit.riggings.iter().map(|rigging| rigging.id.as_str()),
+                );
+                visit.riggings.push(Rigging {
+                    id: id.clone(),
+                    instrument: instrument.to_owned(),
+                    port,
+                });
                 id
             }
         };
-        let unsaid = visit.readings.iter_mut().filter(|r| r.port == port && r.rigging.is_empty());
+        let unsaid = visit
+            .readings
+            .iter_mut()
+            .filter(|r| r.port == port && r.rigging.is_empty());
         for reading in unsaid {
             reading.rigging.clone_from(&id);
         }
     }
-    let used: Vec<String> = visit.readings.iter().map(|reading| reading.rigging.clone()).collect();
+    let used: Vec<String> = visit
+        .readings
+        .iter()
+        .map(|reading| reading.rigging.clone())
+        .collect();
     let newest = rigging_on(visit, port).map(|rigging| rigging.id.clone());
     visit.riggings.retain(|rigging| {
         used.contains(&rigging.id) || rigging.port != port || Some(&rigging.id) == newest.as_ref()

@@ -66,7 +66,10 @@ pub type Said = (String, Option<Seen>);
 
 /// A steady value. At the inlet the pull counts, whichever way its sign was typed.
 pub fn value(port: Port, entry: Entry) -> Said {
-    let seen = entry.value.and_then(|value| at_port(port, value)).map(|value| Seen::Value { value });
+    let seen = entry
+        .value
+        .and_then(|value| at_port(port, value))
+        .map(|value| Seen::Value { value });
     (entry.typed, seen)
 }
 
@@ -77,7 +80,10 @@ pub fn nothing() -> Said {
 
 /// Off the scale, with its top.
 pub fn off_scale(entry: Entry) -> Said {
-    (format!("{OVER}{}", entry.typed), entry.value.map(|top| Seen::OffScale { top }))
+    (
+        format!("{OVER}{}", entry.typed),
+        entry.value.map(|top| Seen::OffScale { top }),
+    )
 }
 
 /// The top of the scale as typed.
@@ -87,11 +93,18 @@ pub fn off_scale_typed(reading: &Reading) -> &str {
 
 /// A swing between two values.
 pub fn swing(port: Port, low: &Entry, high: &Entry) -> Said {
-    let seen = match (low.value.and_then(|v| at_port(port, v)), high.value.and_then(|v| at_port(port, v))) {
-        (Some(one), Some(other)) if one.base() <= other.base() => {
-            Some(Seen::Swing { low: one, high: other })
-        }
-        (Some(one), Some(other)) => Some(Seen::Swing { low: other, high: one }),
+    let seen = match (
+        low.value.and_then(|v| at_port(port, v)),
+        high.value.and_then(|v| at_port(port, v)),
+    ) {
+        (Some(one), Some(other)) if one.base() <= other.base() => Some(Seen::Swing {
+            low: one,
+            high: other,
+        }),
+        (Some(one), Some(other)) => Some(Seen::Swing {
+            low: other,
+            high: one,
+        }),
         _ => None,
     };
     (format!("{}{BETWEEN}{}", low.typed, high.typed), seen)
@@ -99,12 +112,18 @@ pub fn swing(port: Port, low: &Entry, high: &Entry) -> Said {
 
 /// The ends of a swing as typed.
 pub fn swing_typed(reading: &Reading) -> (&str, &str) {
-    reading.typed.split_once(BETWEEN).unwrap_or((&reading.typed, ""))
+    reading
+        .typed
+        .split_once(BETWEEN)
+        .unwrap_or((&reading.typed, ""))
 }
 
 /// A share of the reading in another condition.
 pub fn share(entry: Entry, other: Condition) -> Said {
-    let seen = entry.value.map(|share| Seen::ShareOf { share: share.base(), other: Box::new(other) });
+    let seen = entry.value.map(|share| Seen::ShareOf {
+        share: share.base(),
+        other: Box::new(other),
+    });
     (format!("{TIMES}{}", entry.typed), seen)
 }
 
@@ -115,7 +134,12 @@ pub fn share_typed(reading: &Reading) -> &str {
 
 /// Not possible, and why. An empty reason is still an answer: the reading is closed.
 pub fn not_possible(why: &str) -> Said {
-    (format!("{NOT_POSSIBLE}{why}"), Some(Seen::NotPossible { why: why.to_owned() }))
+    (
+        format!("{NOT_POSSIBLE}{why}"),
+        Some(Seen::NotPossible {
+            why: why.to_owned(),
+        }),
+    )
 }
 
 /// The text that opens a kind of answer which needs more typing.
@@ -140,9 +164,22 @@ fn at_port(port: Port, value: Measure) -> Option<Measure> {
 
 /// A recorded value as its field shows it: a pull in a vacuum unit stands below the air. `typed_base` is the base value of
 /// the text as it stands, whose sign is kept.
-pub fn for_field(port: Port, value: Measure, is_vacuum: bool, typed_base: Option<f64>) -> Option<Measure> {
+pub fn for_field(
+    port: Port,
+    value: Measure,
+    is_vacuum: bool,
+    typed_base: Option<f64>,
+) -> Option<Measure> {
     let is_below = port == Port::InletPull && typed_base.map_or(is_vacuum, |base| base < 0.0);
-    Measure::from_base(if is_below { -value.base() } else { value.base() }, value.kind()).ok()
+    Measure::from_base(
+        if is_below {
+            -value.base()
+        } else {
+            value.base()
+        },
+        value.kind(),
+    )
+    .ok()
 }
 
 /// What a field for this port takes, ends included. Wide on purpose: a loop pressure typed as charge pressure is a reading
@@ -170,14 +207,30 @@ pub fn comparisons(condition: &Condition) -> Vec<(&'static str, Condition)> {
     let mut others = Vec::new();
     match condition.engine {
         EngineSpeed::LowIdle => {
-            others.push(("high idle", Condition { engine: EngineSpeed::HighIdle, ..*condition }));
+            others.push((
+                "high idle",
+                Condition {
+                    engine: EngineSpeed::HighIdle,
+                    ..*condition
+                },
+            ));
         }
         EngineSpeed::HighIdle | EngineSpeed::Measured(_) => {
-            others.push(("low idle", Condition { engine: EngineSpeed::LowIdle, ..*condition }));
+            others.push((
+                "low idle",
+                Condition {
+                    engine: EngineSpeed::LowIdle,
+                    ..*condition
+                },
+            ));
         }
     }
     if condition.doing.is_neutral() {
-        let driven = Condition { doing: Doing::Free, lever: Lever::Half, ..*condition };
+        let driven = Condition {
+            doing: Doing::Free,
+            lever: Lever::Half,
+            ..*condition
+        };
         others.push(("light drive, half lever", driven));
         return others;
     }
@@ -185,11 +238,38 @@ pub fn comparisons(condition: &Condition) -> Vec<(&'static str, Condition)> {
         Direction::Forward => ("reverse", Direction::Reverse),
         Direction::Reverse => ("forward", Direction::Forward),
     };
-    others.insert(0, (words, Condition { direction, ..*condition }));
-    others.push(("neutral", Condition { doing: Doing::Neutral, ..*condition }));
+    others.insert(
+        0,
+        (
+            words,
+            Condition {
+                direction,
+                ..*condition
+            },
+        ),
+    );
+    others.push((
+        "neutral",
+        Condition {
+            doing: Doing::Neutral,
+            ..*condition
+        },
+    ));
     match condition.doing {
-        Doing::Loaded => others.push(("driving, light", Condition { doing: Doing::Travel, ..*condition })),
-        Doing::Travel => others.push(("driving, loaded", Condition { doing: Doing::Loaded, ..*condition })),
+        Doing::Loaded => others.push((
+            "driving, light",
+            Condition {
+                doing: Doing::Travel,
+                ..*condition
+            },
+        )),
+        Doing::Travel => others.push((
+            "driving, loaded",
+            Condition {
+                doing: Doing::Loaded,
+                ..*condition
+            },
+        )),
         _ => {}
     }
     others

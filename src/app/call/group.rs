@@ -36,7 +36,13 @@ pub fn groups(readings: &[Reading], pinned: &[String]) -> Vec<Group> {
         };
         match groups.iter_mut().find(fits) {
             Some((group, _)) => group.at.push(place),
-            None => groups.push((Group { condition: reading.condition, at: vec![place] }, pin)),
+            None => groups.push((
+                Group {
+                    condition: reading.condition,
+                    at: vec![place],
+                },
+                pin,
+            )),
         }
     }
     groups.into_iter().map(|(group, _)| group).collect()

@@ -25,18 +25,27 @@ pub struct History {
 impl History {
     /// Remembers the visit as it was before `change`. Typing on in the same field is one step.
     pub fn remember(&mut self, before: Rc<Visit>, change: &Change) {
-        if self.steps.last().is_some_and(|last| last.change.goes_on(change)) {
+        if self
+            .steps
+            .last()
+            .is_some_and(|last| last.change.goes_on(change))
+        {
             return;
         }
         if self.steps.len() == KEPT {
             self.steps.remove(0);
         }
-        self.steps.push(Step { before, change: change.clone() });
+        self.steps.push(Step {
+            before,
+            change: change.clone(),
+        });
     }
 
     /// Takes the last step back: the visit as it was, and what is undone in words.
     pub fn back(&mut self) -> Option<(Rc<Visit>, String)> {
-        self.steps.pop().map(|step| (step.before, step.change.words()))
+        self.steps
+            .pop()
+            .map(|step| (step.before, step.change.words()))
     }
 
     /// What the next step back would undo, in words.

@@ -51,14 +51,14 @@ pub const SETS: [QuickSet; 7] = [
     },
     QuickSet {
         id: "held-forward",
-        words: "Held build-up, forward",
-        tells: "side A at 5, 10, 20, 40 % lever",
+        words: "Held, forward",
+        tells: "build-up on side A: 5, 10, 20, 40 % lever",
         readings: held_forward,
     },
     QuickSet {
         id: "held-reverse",
-        words: "Held build-up, reverse",
-        tells: "side B at 5, 10, 20, 40 % lever",
+        words: "Held, reverse",
+        tells: "build-up on side B: 5, 10, 20, 40 % lever",
         readings: held_reverse,
     },
 ];
@@ -70,9 +70,9 @@ impl QuickSet {
         (self.readings)()
             .into_iter()
             .filter(|(port, condition)| {
-                !there.iter().any(|reading| {
-                    reading.port == *port && alike(&reading.condition, condition)
-                })
+                !there
+                    .iter()
+                    .any(|reading| reading.port == *port && alike(&reading.condition, condition))
             })
             .collect()
     }
@@ -89,11 +89,20 @@ fn alike(taken: &Condition, planned: &Condition) -> bool {
 }
 
 fn neutral(engine: EngineSpeed) -> Condition {
-    Condition { engine, ..Condition::start() }
+    Condition {
+        engine,
+        ..Condition::start()
+    }
 }
 
 fn driven(doing: Doing, direction: Direction, lever: Lever, engine: EngineSpeed) -> Condition {
-    Condition { doing, direction, lever, engine, ..Condition::start() }
+    Condition {
+        doing,
+        direction,
+        lever,
+        engine,
+        ..Condition::start()
+    }
 }
 
 fn charge_neutral() -> Vec<(Port, Condition)> {
@@ -104,7 +113,12 @@ fn charge_neutral() -> Vec<(Port, Condition)> {
 
 fn charge_drive() -> Vec<(Port, Condition)> {
     [Direction::Forward, Direction::Reverse]
-        .map(|way| (Port::Charge, driven(Doing::Free, way, Lever::Half, EngineSpeed::HighIdle)))
+        .map(|way| {
+            (
+                Port::Charge,
+                driven(Doing::Free, way, Lever::Half, EngineSpeed::HighIdle),
+            )
+        })
         .to_vec()
 }
 
@@ -113,7 +127,9 @@ fn knee() -> Vec<(Port, Condition)> {
 }
 
 fn case() -> Vec<(Port, Condition)> {
-    [Port::PumpCase, Port::MotorCase].map(|port| (port, neutral(EngineSpeed::HighIdle))).to_vec()
+    [Port::PumpCase, Port::MotorCase]
+        .map(|port| (port, neutral(EngineSpeed::HighIdle)))
+        .to_vec()
 }
 
 fn motor_drain() -> Vec<(Port, Condition)> {
@@ -123,7 +139,10 @@ fn motor_drain() -> Vec<(Port, Condition)> {
 fn held(port: Port, way: Direction) -> Vec<(Port, Condition)> {
     [0.05, 0.1, 0.2, 0.4]
         .map(|share| {
-            (port, driven(Doing::Held, way, Lever::Share(share), EngineSpeed::LowIdle))
+            (
+                port,
+                driven(Doing::Held, way, Lever::Share(share), EngineSpeed::LowIdle),
+            )
         })
         .to_vec()
 }

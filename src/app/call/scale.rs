@@ -13,7 +13,7 @@ pub struct Scale {
     pub read: Option<f64>,
     /// What the instrument alone leaves open about the reading (95 %).
     pub whisker: Option<(f64, f64)>,
-    /// The zero of the quantity, where it lies on the scale.
+    /// The zero of the quantity, where it lies on the scale and clear of the window.
     pub zero: Option<f64>,
 }
 
@@ -27,9 +27,22 @@ const COVERAGE: f64 = 1.96;
 
 /// Lays out a scale. `instrument` is the standard uncertainty of the instrument, in the unit of the rest. None where a figure
 /// is not finite: nothing is drawn rather than something false.
-pub fn lay_out(low: f64, middle: f64, high: f64, read: Option<f64>, instrument: f64) -> Option<Scale> {
-    let half = if instrument.is_finite() { (COVERAGE * instrument).max(0.0) } else { 0.0 };
-    let known = [low, middle, high].iter().chain(read.iter()).all(|figure| figure.is_finite());
+pub fn lay_out(
+    low: f64,
+    middle: f64,
+    high: f64,
+    read: Option<f64>,
+    instrument: f64,
+) -> Option<Scale> {
+    let half = if instrument.is_finite() {
+        (COVERAGE * instrument).max(0.0)
+    } else {
+        0.0
+    };
+    let known = [low, middle, high]
+        .iter()
+        .chain(read.iter())
+        .all(|figure| figure.is_finite());
     if !known || low > high {
         return None;
     }
@@ -53,7 +66,9 @@ pub fn lay_out(low: f64, middle: f64, high: f64, read: Option<f64>, instrument: 
         middle: place(middle).clamp(left, right),
         high: right,
         read: read.map(place),
-        whisker: read.filter(|_| half > 0.0).map(|read| (place(read - half), place(read + half))),
-        zero: (0.0..=100.0).contains(&zero).then_some(zero),
+        whisker: read
+            .filter(|_| half > 0.0)
+            .map(|read| (place(read - half), place(read + half))),
+        zero: (0.0..=left.max(0.0)).contains(&zero).then_some(zero),
     })
 }

@@ -16,7 +16,7 @@ pub fn standing(standing: Standing) -> &'static str {
         Standing::Low => "low",
         Standing::High => "high",
         Standing::CannotTell => "cannot tell",
-        Standing::Open => "no reading",
+        Standing::Open => "not read yet",
     }
 }
 
@@ -81,7 +81,10 @@ impl Verdict {
 /// Judges an assessment. The limits are a choice of presentation, not of physics: above a tenth of change in the last
 /// refinement a percentage would be made up; under a half, or with a fair chance of a wrong reading, the lead is uncertain.
 pub fn verdict(assessment: &Assessment) -> Verdict {
-    let informed = assessment.causes.iter().any(|cause| !cause.evidence.is_empty());
+    let informed = assessment
+        .causes
+        .iter()
+        .any(|cause| !cause.evidence.is_empty());
     let Some(lead) = assessment.causes.first() else {
         return Verdict::TooLittle;
     };
@@ -177,12 +180,16 @@ pub fn spread(port: Port, base: f64, prefs: &UnitPrefs) -> String {
         2
     };
     let decimals = crate::quantity::Decimals::Fixed(places);
-    format!("±{}", crate::quantity::format_with_unit(measure, unit, decimals, prefs.mark()))
+    format!(
+        "±{}",
+        crate::quantity::format_with_unit(measure, unit, decimals, prefs.mark())
+    )
 }
 
 /// Both ends of a window as printed: the figure of the low end, and that of the high end with the unit.
 pub fn ends(port: Port, low: f64, high: f64, prefs: &UnitPrefs) -> (String, String) {
-    let (Some(low), Some(high)) = (as_measure(port, low, prefs), as_measure(port, high, prefs)) else {
+    let (Some(low), Some(high)) = (as_measure(port, low, prefs), as_measure(port, high, prefs))
+    else {
         return (String::from("?"), String::from("?"));
     };
     let unit = unit_of(port, prefs);

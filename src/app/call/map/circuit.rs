@@ -49,7 +49,7 @@ fn loop_lines() -> Html {
         <circle cx="170" cy="96" r="3" class="solid" /><circle cx="204" cy="96" r="3" class="solid" />
         <circle cx="170" cy="296" r="3" class="solid" /><circle cx="204" cy="296" r="3" class="solid" />
         <circle cx="187" cy="196" r="3" class="solid" />
-        <text x="180" y="84" class="note">{ "high going forward" }</text>
+        <text x="212" y="84" class="note">{ "high going forward" }</text>
     </> }
 }
 
@@ -60,7 +60,10 @@ fn pump(ticks: &Ticks) -> Html {
         { at(30.0, 196.0, symbols::engine()) }
         { at(118.0, 196.0, symbols::pump()) }
         { part(servo, html! { <>
-            <path d="M60 34H92V84M92 106V119M60 106H66V128H70" class="pilot" />
+            if plan::has_command(ticks) {
+                <path d="M60 34H92V84" class="pilot" />
+            }
+            <path d="M92 106V119M60 106H66V128H70" class="pilot" />
             <path d="M78 84H106V106H78ZM78 106L106 84" class="body" />
             { at(92.0, 128.0, symbols::servo()) }
             <path d="M92 137V166" class="line" />
@@ -91,7 +94,11 @@ fn motor(ticks: &Ticks) -> Html {
 fn charge(ticks: &Ticks) -> Html {
     let filter = |y, fitted| part(fitted, at(187.0, y, symbols::filter()));
     let to_tank = ticks.relief_drain == ReliefDrain::Tank;
-    let drain_known = if ticks.relief_drain == ReliefDrain::Unknown { Fitted::Maybe } else { Fitted::Yes };
+    let drain_known = if ticks.relief_drain == ReliefDrain::Unknown {
+        Fitted::Maybe
+    } else {
+        Fitted::Yes
+    };
     html! { <>
         <path d="M187 196V470M187 510V590" class="line" />
         { match ticks.filter {
@@ -133,19 +140,26 @@ fn charge(ticks: &Ticks) -> Html {
 
 fn flushing(ticks: &Ticks) -> Html {
     let fitted = Fitted::from(ticks.flushing);
-    part(fitted, html! { <>
-        <path d="M230 96V322M262 296V322M246 348V372M246 394V400H356" class="line" />
-        <circle cx="230" cy="96" r="3" class="solid" /><circle cx="262" cy="296" r="3" class="solid" />
-        <circle cx="356" cy="400" r="3" class="solid" />
-        { at(246.0, 335.0, symbols::shuttle(ticks.shuttle != Shuttle::TwoPosition)) }
-        { at(242.0, 383.0, symbols::relief()) }
-        { query(fitted, 292.0, 341.0) }
-    </> })
+    part(
+        fitted,
+        html! { <>
+            <path d="M230 96V322M262 296V322M246 348V372M246 394V400H356" class="line" />
+            <circle cx="230" cy="96" r="3" class="solid" /><circle cx="262" cy="296" r="3" class="solid" />
+            <circle cx="356" cy="400" r="3" class="solid" />
+            { at(246.0, 335.0, symbols::shuttle(ticks.shuttle != Shuttle::TwoPosition)) }
+            { at(242.0, 383.0, symbols::relief()) }
+            { query(fitted, 292.0, 341.0) }
+        </> },
+    )
 }
 
 /// Case drains to the cooler and the tank: short dashes, as the standard has them.
 fn drains(ticks: &Ticks) -> Html {
-    let known = if ticks.case_lines == CaseLines::Unknown { Fitted::Maybe } else { Fitted::Yes };
+    let known = if ticks.case_lines == CaseLines::Unknown {
+        Fitted::Maybe
+    } else {
+        Fitted::Yes
+    };
     html! { <>
         <path d="M87 214H46V548H78M110 548H132V590" class="drain" />
         { at(94.0, 548.0, symbols::cooler()) }

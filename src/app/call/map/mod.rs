@@ -9,9 +9,10 @@ use super::words;
 use crate::assessment::{Assessment, Standing};
 use crate::readings::{Port, Reading};
 use crate::unit::Ticks;
+pub use plan::ports;
 use plan::{Fitted, Label, Spot};
 use std::rc::Rc;
-use yew::{Callback, Html, KeyboardEvent, MouseEvent, Properties, component, html};
+use yew::{Callback, Html, KeyboardEvent, MouseEvent, Properties, component, html, use_state};
 
 /// Half the width of the touch area round a port, units of the drawing: 44 px or more on a phone 360 px wide.
 const HALF_TOUCH: f64 = 29.0;
@@ -52,14 +53,19 @@ pub fn state(port: Port, readings: &[Reading], assessment: Option<&Assessment>) 
     };
     let here = readings.iter().filter(|reading| reading.port == port);
     let standings = here.map(|reading| {
-        let windows = assessment.map(|assessment| assessment.windows.as_slice()).unwrap_or_default();
+        let windows = assessment
+            .map(|assessment| assessment.windows.as_slice())
+            .unwrap_or_default();
         windows
             .iter()
             .find(|window| window.reading == reading.id)
             .map_or(Standing::Open, |window| window.standing)
     });
     let standings: Vec<Standing> = standings.collect();
-    PortState { standing: standings.iter().copied().max_by_key(gravity), count: standings.len() }
+    PortState {
+        standing: standings.iter().copied().max_by_key(gravity),
+        count: standings.len(),
+    }
 }
 
 /// What a screen reader says of a port.
@@ -69,7 +75,10 @@ fn spoken(port: Port, state: PortState) -> String {
         (None, _) => format!("{name}: no reading. Add one."),
         (Some(standing), 1) => format!("{name}: {}. Open its reading.", words::standing(standing)),
         (Some(standing), count) => {
-            format!("{name}: {count} readings, gravest {}. Open them.", words::standing(standing))
+            format!(
+                "{name}: {count} readings, gravest {}. Open them.",
+                words::standing(standing)
+            )
         }
     }
 }
@@ -81,36 +90,59 @@ pub fn LoopMap(props: &LoopMapProps) -> Html {
     let assessment = props.assessment.as_deref();
     let spots = plan::spots(&props.ticks);
     let elsewhere = plan::elsewhere(&props.ticks);
+    let is_open = use_state(|| false);
+    let on_fold = {
+        let is_open = is_open.clone();
+        Callback::from(move |_: MouseEvent| is_open.set(!*is_open))
+    };
     html! {
-        <div class="loop-map">
-            <svg class="loop-map-drawing" viewBox={view} role="group" aria-label="Closed loop with its gauge ports">
-                { circuit::draw(&props.ticks) }
-                { for spots.iter().map(|spot| {
-                    let state = state(spot.port, &props.readings, assessment);
-                    port(spot, state, props.chosen == Some(spot.port), &props.on_port)
-                }) }
-            </svg>
-            <ul class="loop-map-others" aria-label="Read elsewhere">
-                { for elsewhere.into_iter().map(|port| {
-                    let state = state(port, &props.readings, assessment);
-                    let on_port = props.on_port.clone();
-                    html! {
-                        <li key={format!("{port:?}")}>
-                            <button
-                                type="button"
-                                class="chip"
-                                aria-label={spoken(port, state)}
-                                data-testid={format!("map-{port:?}")}
-                                onclick={Callback::from(move |_: MouseEvent| on_port.emit(port))}
-                            >
-                                { small_mark(state) }
-                                { words::port_short(port) }
-                            </button>
-                        </li>
-                    }
-                }) }
-            </ul>
-        </div>
+        <section class={if *is_open { "panel loop-map is-open" } else { "panel loop-map" }} aria-labelledby="map-title" id="map" tabindex="-1">
+            <div class="loop-map-head">
+                <h2 id="map-title">{ "Loop and gauge ports" }</h2>
+                // Only where there is no room to have it open always.
+                <button
+                    type="button"
+                    class="button is-quiet loop-map-fold"
+                    aria-expanded={if *is_open { "true" } else { "false" }}
+                    aria-controls="map-body"
+                    data-testid="map-fold"
+                    onclick={on_fold}
+                >
+                    { if *is_open { "Fold" } else { "Show" } }
+                </button>
+            </div>
+            <div class="loop-map-body" id="map-body">
+                <svg class="loop-map-drawing" viewBox={view} role="group" aria-label="Closed loop with its gauge ports">
+                    { circuit::draw(&props.ticks) }
+                    { for spots.iter().map(|spot| {
+                        let state = state(spot.port, &props.readings, assessment);
+                        port(spot, state, props.chosen == Some(spot.port), &props.on_port)
+                    }) }
+                </svg>
+                <ul class="loop-map-others" aria-label="Read elsewhere">
+                    { for elsewhere.into_iter().map(|port| other(port, state(port, &props.readings, assessment), &props.on_port)) }
+                </ul>
+            </div>
+        </section>
+    }
+}
+
+/// A port without a place on the drawing.
+fn other(port: Port, state: PortState, on_port: &Callback<Port>) -> Html {
+    let on_port = on_port.clone();
+    html! {
+        <li key={format!("{port:?}")}>
+            <button
+                type="button"
+                class="chip"
+                aria-label={spoken(port, state)}
+                data-testid={format!("map-{port:?}")}
+                onclick={Callback::from(move |_: MouseEvent| on_port.emit(port))}
+            >
+                { small_mark(state) }
+                { words::port_short(port) }
+            </button>
+        </li>
     }
 }
 
@@ -151,10 +183,34 @@ fn port(spot: &Spot, state: PortState, is_chosen: bool, on_port: &Callback<Port>
         Label::Below if spot.port == Port::Wheel => (0.0, 38.0, "is-middle"),
         Label::Below if spot.port == Port::Servo => (-10.0, 28.0, "is-middle"),
         Label::Below => (0.0, 28.0, "is-middle"),
-        Label::Above if spot.port == Port::EngineSpeed => (6.0, if state.standing.is_some() { -38.0 } else { -25.0 }, "is-middle"),
-        Label::Above => (0.0, if state.standing.is_some() { -33.0 } else { -18.0 }, "is-middle"),
-        Label::Left => (-18.0, if state.standing.is_some() { -2.0 } else { 5.0 }, "is-end"),
-        Label::Right => (18.0, if state.standing.is_some() { -2.0 } else { 5.0 }, "is-start"),
+        Label::Above if spot.port == Port::EngineSpeed => (
+            6.0,
+            if state.standing.is_some() {
+                -38.0
+            } else {
+                -25.0
+            },
+            "is-middle",
+        ),
+        Label::Above => (
+            0.0,
+            if state.standing.is_some() {
+                -33.0
+            } else {
+                -18.0
+            },
+            "is-middle",
+        ),
+        Label::Left => (
+            -18.0,
+            if state.standing.is_some() { -2.0 } else { 5.0 },
+            "is-end",
+        ),
+        Label::Right => (
+            18.0,
+            if state.standing.is_some() { -2.0 } else { 5.0 },
+            "is-start",
+        ),
     };
     let word = state.standing.map(|standing| {
         html! {
@@ -167,7 +223,11 @@ fn port(spot: &Spot, state: PortState, is_chosen: bool, on_port: &Callback<Port>
             </text>
         }
     });
-    let name = if spot.fitted == Fitted::Maybe { format!("{} ?", spot.name) } else { spot.name.to_owned() };
+    let name = if spot.fitted == Fitted::Maybe {
+        format!("{} ?", spot.name)
+    } else {
+        spot.name.to_owned()
+    };
     let half = HALF_TOUCH.to_string();
     html! {
         <g

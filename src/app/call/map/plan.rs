@@ -99,7 +99,14 @@ fn pilot(control: Control) -> Fitted {
 
 /// Ports on the drawing, those the unit has not left out. Order: as one walks from the engine to the wheel and back to tank.
 pub fn spots(ticks: &Ticks) -> Vec<Spot> {
-    let spot = |port, name, x, y, label, fitted| Spot { port, name, x, y, label, fitted };
+    let spot = |port, name, x, y, label, fitted| Spot {
+        port,
+        name,
+        x,
+        y,
+        label,
+        fitted,
+    };
     let (coil, pilot) = (coil(ticks.control), pilot(ticks.control));
     let command = if coil == Fitted::No || pilot == Fitted::Yes {
         spot(Port::Pilot, "Pilot", 46.0, 34.0, Label::Below, pilot)
@@ -112,27 +119,133 @@ pub fn spots(ticks: &Ticks) -> Vec<Spot> {
         ChargeSource::Steering | ChargeSource::Implement => Fitted::No,
     };
     let all = [
-        spot(Port::EngineSpeed, "Engine", 30.0, 196.0, Label::Above, Fitted::Yes),
+        spot(
+            Port::EngineSpeed,
+            "Engine",
+            30.0,
+            196.0,
+            Label::Above,
+            Fitted::Yes,
+        ),
         command,
-        spot(Port::Servo, "Servo", 46.0, 106.0, Label::Below, servo(ticks.control)),
-        spot(Port::LoopA, "Side A", 142.0, 96.0, Label::Above, Fitted::Yes),
-        spot(Port::LoopB, "Side B", 142.0, 296.0, Label::Below, Fitted::Yes),
-        spot(Port::Release, "Brake", 356.0, 30.0, Label::Below, ticks.brake_from_charge.into()),
-        spot(Port::Shift, "Shift", 356.0, 108.0, Label::Below, ticks.two_speed.into()),
-        spot(Port::Wheel, "Wheel", 356.0, 196.0, Label::Below, Fitted::Yes),
-        spot(Port::MotorCase, "Motor case", 356.0, 290.0, Label::Below, Fitted::Yes),
-        spot(Port::MotorDrain, "Motor drain", 300.0, 424.0, Label::Below, Fitted::Yes),
-        spot(Port::Charge, "Charge", 187.0, 362.0, Label::Left, Fitted::Yes),
-        spot(Port::PumpCase, "Pump case", 46.0, 300.0, Label::Below, Fitted::Yes),
-        spot(Port::InletPull, "Inlet pull", 236.0, 528.0, Label::Right, own_inlet),
-        spot(Port::ReturnFlow, "Return", 46.0, 548.0, Label::Below, Fitted::Yes),
+        spot(
+            Port::Servo,
+            "Servo",
+            46.0,
+            106.0,
+            Label::Below,
+            servo(ticks.control),
+        ),
+        spot(
+            Port::LoopA,
+            "Side A",
+            142.0,
+            96.0,
+            Label::Above,
+            Fitted::Yes,
+        ),
+        spot(
+            Port::LoopB,
+            "Side B",
+            142.0,
+            296.0,
+            Label::Below,
+            Fitted::Yes,
+        ),
+        spot(
+            Port::Release,
+            "Brake",
+            356.0,
+            30.0,
+            Label::Below,
+            ticks.brake_from_charge.into(),
+        ),
+        spot(
+            Port::Shift,
+            "Shift",
+            356.0,
+            108.0,
+            Label::Below,
+            ticks.two_speed.into(),
+        ),
+        spot(
+            Port::Wheel,
+            "Wheel",
+            356.0,
+            196.0,
+            Label::Below,
+            Fitted::Yes,
+        ),
+        spot(
+            Port::MotorCase,
+            "Motor case",
+            356.0,
+            290.0,
+            Label::Below,
+            Fitted::Yes,
+        ),
+        spot(
+            Port::MotorDrain,
+            "Motor drain",
+            300.0,
+            424.0,
+            Label::Below,
+            Fitted::Yes,
+        ),
+        spot(
+            Port::Charge,
+            "Charge",
+            187.0,
+            362.0,
+            Label::Left,
+            Fitted::Yes,
+        ),
+        spot(
+            Port::PumpCase,
+            "Pump case",
+            46.0,
+            300.0,
+            Label::Below,
+            Fitted::Yes,
+        ),
+        spot(
+            Port::InletPull,
+            "Inlet pull",
+            236.0,
+            528.0,
+            Label::Right,
+            own_inlet,
+        ),
+        spot(
+            Port::ReturnFlow,
+            "Return",
+            46.0,
+            548.0,
+            Label::Below,
+            Fitted::Yes,
+        ),
     ];
-    all.into_iter().filter(|spot| spot.fitted != Fitted::No).collect()
+    all.into_iter()
+        .filter(|spot| spot.fitted != Fitted::No)
+        .collect()
+}
+
+/// Whether a port for the command to the control is drawn.
+pub fn has_command(ticks: &Ticks) -> bool {
+    coil(ticks.control) != Fitted::No || pilot(ticks.control) != Fitted::No
 }
 
 /// Ports that have no place on the drawing, or none on this unit's: offered under it.
 pub fn elsewhere(ticks: &Ticks) -> Vec<Port> {
     let drawn: Vec<Port> = spots(ticks).iter().map(|spot| spot.port).collect();
+    ports(ticks)
+        .into_iter()
+        .filter(|port| !drawn.contains(port))
+        .collect()
+}
+
+/// Every port that this unit can have, in the order in which screens offer them.
+pub fn ports(ticks: &Ticks) -> Vec<Port> {
     let has = |port: Port| match port {
         Port::PumpShaft => ticks.slipping_drive != Tick::No,
         Port::Servo => servo(ticks.control) != Fitted::No,
@@ -140,7 +253,11 @@ pub fn elsewhere(ticks: &Ticks) -> Vec<Port> {
         Port::CoilCurrent => coil(ticks.control) != Fitted::No,
         Port::Release => ticks.brake_from_charge != Tick::No,
         Port::Shift => ticks.two_speed != Tick::No,
+        Port::InletPull => !matches!(
+            ticks.charge_source,
+            ChargeSource::Steering | ChargeSource::Implement
+        ),
         _ => true,
     };
-    Port::ALL.into_iter().filter(|port| !drawn.contains(port) && has(*port)).collect()
+    Port::ALL.into_iter().filter(|port| has(*port)).collect()
 }

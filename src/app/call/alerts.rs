@@ -1,0 +1,98 @@
+//! What must not be overlooked: stop work, and for a screen reader the change of the leading cause.
+
+use super::words::{self, Verdict};
+use crate::app::parts::{Caution, Grade};
+use crate::assessment::Assessment;
+use crate::faults;
+use crate::record::{Answer, Visit};
+use std::rc::Rc;
+use yew::{Html, Properties, component, html};
+
+/// The observation of a machine that keeps moving with its lever in neutral.
+const RUNS_ON: &str = "runs-on";
+/// Probability from which a cause that forbids moving the machine is told at the head of the screen.
+const STOP_FROM: f64 = 0.2;
+
+/// True where someone says or saw that the machine keeps going in neutral: nothing is tested by driving then.
+pub fn runs_on(visit: &Visit) -> bool {
+    matches!(
+        visit.observations.get(RUNS_ON),
+        Some(Answer::Seen | Answer::OperatorSays)
+    )
+}
+
+/// Properties of [`StopWork`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct StopWorkProps {
+    /// Visit.
+    pub visit: Rc<Visit>,
+    /// Last answer of the engine.
+    pub assessment: Option<Rc<Assessment>>,
+}
+
+/// The red panel.
+#[component]
+pub fn StopWork(props: &StopWorkProps) -> Html {
+    if runs_on(&props.visit) {
+        return html! {
+            <Caution grade={Grade::Danger} title="stop work" role="alert" testid="stop-work">
+                <p>{ "It keeps going with the lever in neutral. Do not test it. Stop the engine, chock both ways, take the key out." }</p>
+                <p>{ "Do not drive it onto a trailer. Nobody in front of it or behind it. Readings that need it to drive stay closed." }</p>
+            </Caution>
+        };
+    }
+    let causes = props
+        .assessment
+        .as_deref()
+        .filter(|a| words::verdict(a) != Verdict::TooLittle);
+    let graves = causes
+        .map(|assessment| assessment.causes.as_slice())
+        .unwrap_or_default();
+    let grave = graves.iter().find(|cause| {
+        cause.probability >= STOP_FROM
+            && cause
+                .ids
+                .iter()
+                .filter_map(|id| faults::find(*id))
+                .any(|fault| fault.stop_work)
+    });
+    match grave {
+        Some(cause) => html! {
+            <Caution grade={Grade::Danger} title="stop work until it is ruled out" role="alert" testid="stop-work">
+                <p>{ format!("{} ({}). Engine off, chock both ways; do not drive or test it before this is ruled out.",
+                    cause.title, words::percent(cause.probability)) }</p>
+            </Caution>
+        },
+        None => Html::default(),
+    }
+}
+
+/// Properties of [`LeadStatus`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct LeadStatusProps {
+    /// Last answer of the engine.
+    pub assessment: Option<Rc<Assessment>>,
+    /// A word of the screen itself.
+    pub said: String,
+}
+
+/// Speaks when the leading cause changes, and what was undone. Seen by nobody, heard by those who need it.
+#[component]
+pub fn LeadStatus(props: &LeadStatusProps) -> Html {
+    let lead = props
+        .assessment
+        .as_deref()
+        .map_or_else(String::new, |assessment| {
+            match (words::verdict(assessment), assessment.causes.first()) {
+                // The percentage is left out: the same cause with another figure is no news.
+                (verdict @ (Verdict::SoFar | Verdict::Uncertain), Some(cause)) => {
+                    format!("Leading cause, {}: {}.", verdict.words(), cause.title)
+                }
+                _ => String::from("Too little to tell."),
+            }
+        });
+    html! { <>
+        <p class="hidden-text" role="status" aria-live="polite" data-testid="lead-status">{ lead }</p>
+        <p class="hidden-text" role="status" aria-live="polite">{ props.said.clone() }</p>
+    </> }
+}

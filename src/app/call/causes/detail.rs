@@ -1,0 +1,190 @@
+//! Behind a cause: what speaks for and against it, what the gauges would read under it, its proof and its repair.
+
+use crate::app::call::words;
+use crate::app::parts::{Caution, Grade};
+use crate::assessment::{Cause, Evidence};
+use crate::faults::{self, FaultId};
+use crate::quantity::UnitPrefs;
+use crate::readings::{Reading, Seen};
+use yew::{Callback, Html, MouseEvent, html};
+
+/// Marks in a row of weight.
+const MARKS: usize = 4;
+
+/// What serves every member of a set, and what splits them.
+pub fn set(cause: &Cause) -> Html {
+    if cause.ids.len() < 2 || (cause.action.is_empty() && cause.split.is_empty()) {
+        return Html::default();
+    }
+    html! {
+        <dl class="member-facts">
+            if !cause.action.is_empty() {
+                <dt>{ "Serves them all" }</dt><dd>{ cause.action.clone() }</dd>
+            }
+            if !cause.split.is_empty() {
+                <dt>{ "Splits them" }</dt><dd>{ cause.split.clone() }</dd>
+            }
+        </dl>
+    }
+}
+
+/// For and against, heaviest first.
+pub fn evidence(cause: &Cause, on_reading: &Callback<String>, readings: &[Reading]) -> Html {
+    let told = cause
+        .evidence
+        .iter()
+        .filter(|item| words::weight(item.weight).0 > 0);
+    let (favour, against): (Vec<&Evidence>, Vec<&Evidence>) =
+        told.partition(|item| item.weight > 0.0);
+    if favour.is_empty() && against.is_empty() {
+        return html! { <p class="soft">{ "Nothing taken so far speaks clearly for or against it." }</p> };
+    }
+    let list = |title: &'static str, items: Vec<&Evidence>, way: &'static str| {
+        if items.is_empty() {
+            return Html::default();
+        }
+        html! {
+            <div class="evidence">
+                <h4>{ title }</h4>
+                <ul class="evidence-list">
+                    { for items.into_iter().map(|item| piece(item, way, on_reading, readings)) }
+                </ul>
+            </div>
+        }
+    };
+    html! { <>
+        { list("Speaks for it", favour, "for") }
+        { list("Speaks against it", against, "against") }
+    </> }
+}
+
+fn piece(item: &Evidence, way: &str, on_reading: &Callback<String>, readings: &[Reading]) -> Html {
+    let (filled, how) = words::weight(item.weight);
+    let text = if readings.iter().any(|reading| reading.id == item.of) {
+        let (on_reading, id) = (on_reading.clone(), item.of.clone());
+        let on_click = Callback::from(move |_: MouseEvent| on_reading.emit(id.clone()));
+        html! { <button type="button" class="link" onclick={on_click}>{ item.words.clone() }</button> }
+    } else {
+        html! { { item.words.clone() } }
+    };
+    html! {
+        <li class={format!("evidence-piece is-{way}")} key={item.of.clone()}>
+            <svg class="weight" viewBox="0 0 60 14" width="60" height="14" role="img" aria-label={format!("{how} {way}")}>
+                { for (0..MARKS).map(|place| html! {
+                    <circle
+                        cx={(7 + 15 * place).to_string()} cy="7" r="5.2"
+                        class={if place < filled { "weight-filled" } else { "weight-empty" }}
+                    />
+                }) }
+            </svg>
+            <span>{ text }</span>
+        </li>
+    }
+}
+
+/// What the readings would be under the cause, beside what they are.
+pub fn would_read(cause: &Cause, readings: &[Reading], prefs: &UnitPrefs) -> Html {
+    let rows = cause.would_read.iter().filter_map(|would| {
+        let reading = readings
+            .iter()
+            .find(|reading| reading.id == would.reading)?;
+        Some((would, reading))
+    });
+    let rows: Vec<_> = rows.collect();
+    if rows.is_empty() {
+        return Html::default();
+    }
+    html! {
+        <div class="would">
+            <h4>{ "Under it the gauges would read" }</h4>
+            <ul class="would-list">
+                { for rows.into_iter().map(|(would, reading)| html! {
+                    <li class="would-row" key={would.reading.clone()}>
+                        <span class="would-what">
+                            { words::port_short(reading.port) }
+                            <span class="soft">{ " · " }{ words::condition(&reading.condition, prefs) }</span>
+                        </span>
+                        <span class="would-value">
+                            <span class="figure">{ words::value(reading.port, would.value, prefs) }</span>
+                            { " " }
+                            <span class="soft figure">{ words::spread(reading.port, would.spread, prefs) }</span>
+                        </span>
+                        <span class="would-read soft">{ read(reading, prefs) }</span>
+                    </li>
+                }) }
+            </ul>
+        </div>
+    }
+}
+
+fn read(reading: &Reading, prefs: &UnitPrefs) -> String {
+    let value =
+        |measure: crate::quantity::Measure| words::value(reading.port, measure.base(), prefs);
+    match &reading.seen {
+        Some(Seen::Value { value: read }) => format!("read: {}", value(*read)),
+        Some(Seen::Swing { low, high }) => format!("swings: {} to {}", value(*low), value(*high)),
+        Some(Seen::OffScale { top }) => format!("over {}", value(*top)),
+        Some(Seen::Nothing) => String::from("read: nothing"),
+        Some(Seen::ShareOf { share, .. }) => {
+            format!("read: {} of the other", words::percent(*share))
+        }
+        Some(Seen::NotPossible { .. }) | None => String::from("not taken"),
+    }
+}
+
+/// The catalogue's word on one member of the row.
+pub fn member(id: FaultId, cause: &Cause) -> Html {
+    let Some(fault) = faults::find(id) else {
+        return Html::default();
+    };
+    let share = cause
+        .ids
+        .iter()
+        .position(|member| *member == id)
+        .and_then(|place| cause.shares.get(place));
+    html! {
+        <div class="member" key={format!("{id:?}")}>
+            if cause.ids.len() > 1 {
+                <h4>
+                    { fault.title }
+                    { share.map(|share| html! { <span class="soft">{ format!(" ({} by itself)", words::percent(*share)) }</span> }) }
+                </h4>
+            }
+            if !fault.explains.is_empty() {
+                <p>{ fault.explains }</p>
+            }
+            if fault.stop_work {
+                <Caution grade={Grade::Danger} title="stop work">
+                    <p>{ "Do not drive or test this machine. Engine off, chock both ways." }</p>
+                </Caution>
+            }
+            if !fault.caution.is_empty() {
+                <Caution grade={Grade::Caution}><p>{ fault.caution }</p></Caution>
+            }
+            <dl class="member-facts">
+                if !fault.proof.is_empty() {
+                    <dt>{ "Proved by" }</dt><dd>{ fault.proof }</dd>
+                }
+                if !fault.repair.is_empty() {
+                    <dt>{ "Repair" }</dt>
+                    <dd>
+                        { fault.repair }
+                        if fault.minutes > 0.0 {
+                            <span class="soft">{ format!(" About {:.0} min (common practice).", fault.minutes) }</span>
+                        }
+                    </dd>
+                }
+            </dl>
+            if fault.destroys_evidence || fault.needs_manual {
+                <ul class="flags">
+                    if fault.destroys_evidence {
+                        <li>{ "Destroys evidence: look at oil, filter and drain magnet first, and keep what you find." }</li>
+                    }
+                    if fault.needs_manual {
+                        <li>{ "Only after the unit’s manual." }</li>
+                    }
+                </ul>
+            }
+        </div>
+    }
+}

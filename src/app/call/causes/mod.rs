@@ -1,0 +1,235 @@
+//! The causes, most probable first: a strip that stays in sight on a phone and opens into the full list; the list itself
+//! where there is room for it.
+
+mod detail;
+mod row;
+
+use super::words::{self, Verdict};
+use crate::app::parts::{Caution, Grade};
+use crate::assessment::{Assessment, Cause};
+use crate::faults::FaultId;
+use crate::quantity::UnitPrefs;
+use crate::readings::Reading;
+use row::CauseRow;
+use std::rc::Rc;
+use yew::{Callback, Html, MouseEvent, Properties, component, html, use_state};
+
+/// Causes named in the strip.
+const IN_STRIP: usize = 3;
+/// Causes listed before "show all".
+const LISTED: usize = 6;
+
+/// Properties of [`Causes`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct CausesProps {
+    /// Last answer of the engine.
+    pub assessment: Option<Rc<Assessment>>,
+    /// True while a newer one is being worked out.
+    pub updating: bool,
+    /// Readings of the visit.
+    pub readings: Vec<Reading>,
+    /// Units.
+    pub prefs: UnitPrefs,
+    /// Opens a reading, by id.
+    pub on_reading: Callback<String>,
+}
+
+/// Strip and list.
+#[component]
+pub fn Causes(props: &CausesProps) -> Html {
+    let open = use_state(|| false);
+    let on_toggle = {
+        let open = open.clone();
+        Callback::from(move |_: MouseEvent| open.set(!*open))
+    };
+    let on_reading = {
+        let (open, on_reading) = (open.clone(), props.on_reading.clone());
+        Callback::from(move |id: String| {
+            open.set(false);
+            on_reading.emit(id);
+        })
+    };
+    let verdict = props.assessment.as_deref().map(words::verdict);
+    html! {
+        <section class={if *open { "causes is-open" } else { "causes" }} aria-labelledby="causes-title">
+            <div class="causes-strip">
+                <h2 class="causes-title" id="causes-title">
+                    { "Causes" }
+                    { verdict.map(|verdict| html! { <span class="causes-verdict" data-testid="verdict">{ verdict.words() }</span> }) }
+                    if props.updating {
+                        <span class="causes-updating">{ "updating…" }</span>
+                    }
+                </h2>
+                <ol class="causes-lead">
+                    { for lead(props.assessment.as_deref(), verdict) }
+                </ol>
+                <button
+                    type="button"
+                    class="causes-toggle"
+                    aria-expanded={if *open { "true" } else { "false" }}
+                    aria-controls="causes-list"
+                    data-testid="causes-toggle"
+                    onclick={on_toggle}
+                >
+                    { if *open { "Close" } else { "Why" } }
+                    <span class="hidden-text">{ ": full list of causes" }</span>
+                </button>
+            </div>
+            <div class={if props.updating { "causes-list is-updating" } else { "causes-list" }} id="causes-list">
+                { match props.assessment.as_deref() {
+                    Some(assessment) => html! {
+                        <List
+                            assessment={Rc::new(assessment.clone())}
+                            readings={props.readings.clone()}
+                            prefs={props.prefs.clone()}
+                            {on_reading}
+                        />
+                    },
+                    None => html! { <p class="soft">{ "The first answer is being worked out." }</p> },
+                } }
+            </div>
+        </section>
+    }
+}
+
+/// The leading causes in one line each.
+fn lead(assessment: Option<&Assessment>, verdict: Option<Verdict>) -> Vec<Html> {
+    let Some(assessment) = assessment else {
+        return vec![
+            html! { <li class="causes-line"><span class="causes-name">{ "Working out the first answer…" }</span></li> },
+        ];
+    };
+    if verdict == Some(Verdict::TooLittle) {
+        return vec![html! {
+            <li class="causes-line"><span class="causes-name">{ "Tick what was seen, or take a reading." }</span></li>
+        }];
+    }
+    let line = |cause: &Cause| {
+        html! {
+            <li class="causes-line" key={cause.title.clone()}>
+                <span class="causes-name">{ cause.title.clone() }</span>
+                <span class="causes-share">{ words::percent(cause.probability) }</span>
+            </li>
+        }
+    };
+    assessment.causes.iter().take(IN_STRIP).map(line).collect()
+}
+
+/// Properties of [`List`].
+#[derive(Clone, PartialEq, Properties)]
+struct ListProps {
+    assessment: Rc<Assessment>,
+    readings: Vec<Reading>,
+    prefs: UnitPrefs,
+    on_reading: Callback<String>,
+}
+
+/// What stands before the ranking, and the ranking.
+#[component]
+fn List(props: &ListProps) -> Html {
+    let all = use_state(|| false);
+    let assessment = &props.assessment;
+    let verdict = words::verdict(assessment);
+    let shown = if *all {
+        assessment.causes.len()
+    } else {
+        LISTED
+    };
+    let rest = assessment.causes.len().saturating_sub(LISTED);
+    let on_all = {
+        let all = all.clone();
+        Callback::from(move |_: MouseEvent| all.set(!*all))
+    };
+    html! { <>
+        { not_listed(assessment, verdict) }
+        if !assessment.withheld.is_empty() {
+            <Caution grade={Grade::Caution} title="Held back" testid="withheld">
+                <ul class="plain-list">{ for assessment.withheld.iter().map(|text| html! { <li>{ text.clone() }</li> }) }</ul>
+            </Caution>
+        }
+        if !assessment.trust.retake.is_empty() {
+            <Caution grade={Grade::Caution} title="Take again: does not fit the rest" testid="retake">
+                <ul class="plain-list">
+                    { for assessment.trust.retake.iter().map(|(id, why)| retake(props, id, why)) }
+                </ul>
+            </Caution>
+        }
+        if verdict == Verdict::TooLittle {
+            <p class="causes-start">
+                { "Too little to tell. In the order in which they are met on such machines (common practice), before any \
+                   reading counts:" }
+            </p>
+        }
+        <ol class="cause-list">
+            { for assessment.causes.iter().take(shown).enumerate().map(|(place, cause)| html! {
+                <CauseRow
+                    key={cause.title.clone()}
+                    {place}
+                    cause={cause.clone()}
+                    {verdict}
+                    readings={props.readings.clone()}
+                    prefs={props.prefs.clone()}
+                    on_reading={props.on_reading.clone()}
+                />
+            }) }
+        </ol>
+        if rest > 0 {
+            <button type="button" class="button is-quiet is-wide" data-testid="causes-all" onclick={on_all}>
+                { if *all { String::from("Show fewer") } else { format!("Show {rest} more, less likely") } }
+            </button>
+        }
+        if !assessment.notes.is_empty() {
+            <Caution grade={Grade::Note} title="To know" testid="notes">
+                <ul class="plain-list">{ for assessment.notes.iter().map(|text| html! { <li>{ text.clone() }</li> }) }</ul>
+            </Caution>
+        }
+        <p class="soft small">
+            { "A percentage is not a proof. Prove the cause on the machine before a part is ordered. The unit’s manual, local \
+               rules and licensed practice come first." }
+        </p>
+    </> }
+}
+
+/// Nothing on the list explains the readings: says so, and what to look at before anything else.
+fn not_listed(assessment: &Assessment, verdict: Verdict) -> Html {
+    let leads = assessment
+        .causes
+        .first()
+        .is_some_and(|cause| cause.ids.contains(&FaultId::NotListed));
+    if !leads || verdict == Verdict::TooLittle {
+        return Html::default();
+    }
+    let wrong = assessment.trust.wrong_reading;
+    html! {
+        <Caution grade={Grade::Caution} title="No listed cause explains these readings" testid="not-listed">
+            <p>{ "Before looking further, check each reading again:" }</p>
+            <ul class="plain-list">
+                <li>{ "the gauge: zero with the engine off and the line bled, or a second gauge beside it;" }</li>
+                <li>{ "the port: the drawing says charge, loop or case, not the hand;" }</li>
+                <li>{ "the condition: direction, lever, engine speed as they were." }</li>
+            </ul>
+            if wrong >= 0.05 {
+                <p>{ format!("Chance that a gauge, port or direction is wrong: {}.", words::percent(wrong)) }</p>
+            }
+        </Caution>
+    }
+}
+
+fn retake(props: &ListProps, id: &str, why: &str) -> Html {
+    let Some(reading) = props.readings.iter().find(|reading| reading.id == id) else {
+        return html! { <li>{ why.to_owned() }</li> };
+    };
+    let (on_reading, target) = (props.on_reading.clone(), id.to_owned());
+    html! {
+        <li>
+            <button
+                type="button"
+                class="link"
+                onclick={Callback::from(move |_: MouseEvent| on_reading.emit(target.clone()))}
+            >
+                { reading.port.words() }
+            </button>
+            { ", " }{ words::condition(&reading.condition, &props.prefs) }{ ": " }{ why.to_owned() }
+        </li>
+    }
+}

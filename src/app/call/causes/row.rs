@@ -1,0 +1,99 @@
+//! One row of the ranking.
+
+use super::detail;
+use crate::app::call::words::{self, Verdict};
+use crate::assessment::Cause;
+use crate::faults::{self, FaultId};
+use crate::quantity::UnitPrefs;
+use crate::readings::Reading;
+use yew::{Callback, Html, Properties, component, html};
+
+/// Properties of [`CauseRow`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct CauseRowProps {
+    /// Place in the ranking, from 0.
+    pub place: usize,
+    /// The cause, or the set.
+    pub cause: Cause,
+    /// How far the order can be relied on.
+    pub verdict: Verdict,
+    /// Readings of the visit.
+    pub readings: Vec<Reading>,
+    /// Units.
+    pub prefs: UnitPrefs,
+    /// Opens a reading, by id.
+    pub on_reading: Callback<String>,
+}
+
+/// The row: title, probability, and behind it the reasons, the proof and the repair.
+#[component]
+pub fn CauseRow(props: &CauseRowProps) -> Html {
+    let cause = &props.cause;
+    let told = props.verdict != Verdict::TooLittle;
+    let stop = cause
+        .ids
+        .iter()
+        .filter_map(|id| faults::find(*id))
+        .any(|fault| fault.stop_work);
+    html! {
+        <li class="cause" data-testid={format!("cause-{}", props.place)}>
+            <details class="cause-fold">
+                <summary class="cause-head">
+                    <span class="cause-title">{ cause.title.clone() }</span>
+                    if told {
+                        <span class="cause-share figure">{ words::percent(cause.probability) }</span>
+                        { bar(cause.probability) }
+                    }
+                    if stop {
+                        <span class="cause-stop">{ "Stop work" }</span>
+                    }
+                    if cause.ids.len() > 1 {
+                        <span class="cause-members soft">{ members(&cause.ids) }</span>
+                    }
+                    if props.place == 0 && told {
+                        { lead_proof(&cause.ids) }
+                    }
+                </summary>
+                <div class="cause-body">
+                    { detail::set(cause) }
+                    { detail::evidence(cause, &props.on_reading, &props.readings) }
+                    { detail::would_read(cause, &props.readings, &props.prefs) }
+                    { for cause.ids.iter().map(|id| detail::member(*id, cause)) }
+                </div>
+            </details>
+        </li>
+    }
+}
+
+/// The probability as a bar.
+fn bar(probability: f64) -> Html {
+    let width = format!("{:.1}%", (probability * 100.0).clamp(0.5, 100.0));
+    html! {
+        <svg class="cause-bar" width="100%" height="10" aria-hidden="true" focusable="false">
+            <rect width="100%" height="10" rx="2" class="cause-bar-track" />
+            <rect {width} height="10" rx="2" class="cause-bar-fill" />
+        </svg>
+    }
+}
+
+/// Names the members of a set that no reading taken so far can split.
+fn members(ids: &[FaultId]) -> String {
+    let titles: Vec<&str> = ids
+        .iter()
+        .filter_map(|id| faults::find(*id))
+        .map(|fault| fault.title)
+        .collect();
+    format!("Alike in every reading taken: {}", titles.join("; "))
+}
+
+/// The lead says at once what would prove it.
+fn lead_proof(ids: &[FaultId]) -> Html {
+    let Some(fault) = ids
+        .first()
+        .and_then(|id| faults::find(*id))
+        .filter(|fault| !fault.proof.is_empty())
+    else {
+        return Html::default();
+    };
+    html! { <span class="cause-proof"><b>{ "Proved by: " }</b>{ fault.proof }</span> }
+}

@@ -1,0 +1,172 @@
+//! Readings under one heading: what the machine was doing, its precautions, and the rows.
+
+use super::change::Change;
+use super::condition_editor::ConditionEditor;
+use super::gate::{self, Gate};
+use super::gate_panel::{GatePanel, advice};
+use super::reading_row::ReadingRow;
+use super::words;
+use crate::app::platform::clock;
+use crate::assessment::Assessment;
+use crate::quantity::UnitPrefs;
+use crate::readings::instrument::Instrument;
+use crate::readings::{Condition, Port, Reading};
+use crate::record::Visit;
+use crate::unit::Unit;
+use std::rc::Rc;
+use yew::{Callback, Html, MouseEvent, Properties, component, html};
+
+/// Properties of [`ReadingGroup`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct ReadingGroupProps {
+    /// Condition they share.
+    pub condition: Condition,
+    /// Places in the visit's list.
+    pub at: Vec<usize>,
+    /// True while the heading is being edited.
+    pub editing: bool,
+    /// Opens or closes the heading: the ids that it holds, none to close.
+    pub on_edit: Callback<Vec<String>>,
+    /// Last answer of the engine.
+    pub assessment: Option<Rc<Assessment>>,
+    /// True while a newer one is being worked out.
+    pub updating: bool,
+    /// Minutes since the screen was opened: ticks grow old.
+    pub minute: u32,
+    /// Checks whose precautions stand in full further up.
+    pub told: Vec<&'static str>,
+    /// Port touched on the drawing.
+    pub chosen: Option<Port>,
+    /// Unit.
+    pub unit: Rc<Unit>,
+    /// Visit.
+    pub visit: Rc<Visit>,
+    /// Instruments of the shop.
+    pub instruments: Rc<Vec<Instrument>>,
+    /// Units.
+    pub prefs: UnitPrefs,
+    /// An edit.
+    pub on_change: Callback<Change>,
+    /// The shop's list was added to.
+    pub on_instruments: Callback<Vec<Instrument>>,
+}
+
+/// The group.
+#[component]
+pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
+    let readings: Vec<_> = props
+        .at
+        .iter()
+        .filter_map(|place| props.visit.readings.get(*place).map(|r| (*place, r)))
+        .collect();
+    let ids: Vec<String> = readings
+        .iter()
+        .map(|(_, reading)| reading.id.clone())
+        .collect();
+    let Some(first) = ids.first().cloned() else {
+        return Html::default();
+    };
+    let ports: Vec<Port> = readings.iter().map(|(_, reading)| reading.port).collect();
+    let gates = Gate::of(&props.condition, &ports, &props.visit, clock::now_ms());
+    let on_toggle = {
+        let (on_edit, ids, editing) = (props.on_edit.clone(), ids.clone(), props.editing);
+        Callback::from(move |_: MouseEvent| {
+            on_edit.emit(if editing { Vec::new() } else { ids.clone() })
+        })
+    };
+    let on_condition = {
+        let ids = ids.clone();
+        props
+            .on_change
+            .reform(move |condition| Change::Condition(ids.clone(), condition))
+    };
+    let windows = props
+        .assessment
+        .as_deref()
+        .map(|assessment| assessment.windows.as_slice())
+        .unwrap_or_default();
+    let retakes = props
+        .assessment
+        .as_deref()
+        .map(|assessment| assessment.trust.retake.as_slice())
+        .unwrap_or_default();
+    let title_id = format!("group-{first}");
+    let is_first = |gate: &Gate, reading: &Reading| {
+        let first = readings
+            .iter()
+            .find(|(_, other)| gate.ports.contains(&other.port));
+        (gate.is_gated() || gate.barred.is_some())
+            && first.is_some_and(|(_, first)| first.id == reading.id)
+    };
+    let hold = props
+        .assessment
+        .as_deref()
+        .and_then(|assessment| assessment.hold);
+    html! {
+        <section class="panel group" aria-labelledby={title_id.clone()}>
+            <div class="group-head">
+                <div class="group-words">
+                    <h3 id={title_id}>{ words::condition(&props.condition, &props.prefs) }</h3>
+                    <p class={if props.condition.oil.is_some() { "soft" } else { "group-missing" }}>
+                        { words::oil(&props.condition, &props.prefs) }
+                    </p>
+                </div>
+                <button
+                    type="button"
+                    class="button is-quiet"
+                    aria-expanded={if props.editing { "true" } else { "false" }}
+                    data-testid={format!("condition-{}", props.at.first().copied().unwrap_or_default())}
+                    onclick={on_toggle}
+                >
+                    { if props.editing { "Done" } else { "Change" } }
+                </button>
+            </div>
+            if props.editing {
+                <ConditionEditor
+                    name={format!("cond-{first}")}
+                    condition={props.condition}
+                    prefs={props.prefs.clone()}
+                    on_change={on_condition}
+                />
+            }
+            { advice(&gates) }
+            <ol class="readings">
+                { for readings.iter().map(|(place, reading)| html! { <>
+                    { for gates.iter().filter(|gate| is_first(gate, reading)).map(|gate| panel(props, gate, hold)) }
+                    <ReadingRow
+                        key={reading.id.clone()}
+                        reading={(*reading).clone()}
+                        number={*place}
+                        window={windows.iter().find(|window| window.reading == reading.id).cloned()}
+                        retake={retakes.iter().find(|(id, _)| *id == reading.id).map(|(_, why)| why.clone())}
+                        closed={gate::closes(&gates, reading)}
+                        updating={props.updating}
+                        chosen={props.chosen == Some(reading.port)}
+                        unit={props.unit.clone()}
+                        visit={props.visit.clone()}
+                        instruments={props.instruments.clone()}
+                        prefs={props.prefs.clone()}
+                        on_change={props.on_change.clone()}
+                        on_instruments={props.on_instruments.clone()}
+                    />
+                </> }) }
+            </ol>
+        </section>
+    }
+}
+
+/// The precautions of a check stand before the first reading that it guards.
+fn panel(props: &ReadingGroupProps, gate: &Gate, hold: Option<(f64, f64)>) -> Html {
+    html! {
+        <li class="gate-item" key={gate.check.id}>
+            <GatePanel
+                gate={gate.clone()}
+                told={props.told.contains(&gate.check.id)}
+                unit={props.unit.clone()}
+                prefs={props.prefs.clone()}
+                {hold}
+                on_change={props.on_change.clone()}
+            />
+        </li>
+    }
+}

@@ -1,0 +1,225 @@
+//! One reading: where, what, with which instrument, and how it stands against a healthy unit.
+
+use super::change::Change;
+use super::entry::{self, Mode};
+use super::entry_field::EntryField;
+use super::mark;
+use super::rig::{self, Rig};
+use super::window_scale::WindowScale;
+use crate::app::parts::{Caution, Confirm, Grade, TextField};
+use crate::assessment::{Standing, Window};
+use crate::quantity::UnitPrefs;
+use crate::readings::instrument::Instrument;
+use crate::readings::{Direction, Reading};
+use crate::record::Visit;
+use crate::unit::{PortNote, Unit};
+use std::rc::Rc;
+use yew::{AttrValue, Callback, Html, MouseEvent, Properties, component, html, use_state};
+
+/// Properties of [`ReadingRow`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct ReadingRowProps {
+    /// The reading.
+    pub reading: Reading,
+    /// Place in the visit's list.
+    pub number: usize,
+    /// Its window, where there is an answer.
+    pub window: Option<Window>,
+    /// Why it should be taken again.
+    pub retake: Option<String>,
+    /// Why its field stays closed; none where it is open.
+    pub closed: Option<AttrValue>,
+    /// True while a newer answer is being worked out.
+    pub updating: bool,
+    /// True where its port was touched on the drawing.
+    pub chosen: bool,
+    /// Unit.
+    pub unit: Rc<Unit>,
+    /// Visit.
+    pub visit: Rc<Visit>,
+    /// Instruments of the shop.
+    pub instruments: Rc<Vec<Instrument>>,
+    /// Units.
+    pub prefs: UnitPrefs,
+    /// An edit.
+    pub on_change: Callback<Change>,
+    /// The shop's list was added to.
+    pub on_instruments: Callback<Vec<Instrument>>,
+}
+
+/// DOM id of a row.
+pub fn row_id(reading: &str) -> String {
+    format!("row-{reading}")
+}
+
+/// The row.
+#[component]
+pub fn ReadingRow(props: &ReadingRowProps) -> Html {
+    let more = use_state(|| false);
+    let reading = &props.reading;
+    let standing = props
+        .window
+        .as_ref()
+        .map_or(Standing::Open, |window| window.standing);
+    let is_open = entry::is_open(reading);
+    let plain = entry::mode(reading) == Mode::Value;
+    let instrument = rig::instrument_of(reading, &props.visit, &props.instruments).cloned();
+    let toggle = {
+        let more = more.clone();
+        Callback::from(move |_: MouseEvent| more.set(!*more))
+    };
+    let class = format!(
+        "reading{}{}{}",
+        if props.chosen { " is-chosen" } else { "" },
+        if plain { " is-plain" } else { "" },
+        // The keys give way once a value stands; "More" brings them back.
+        if plain && reading.seen.is_some() && !*more {
+            " is-settled"
+        } else {
+            ""
+        },
+    );
+    html! {
+        <li {class} id={row_id(&reading.id)} tabindex="-1" data-testid={format!("reading-row-{}", props.number)}>
+            <div class="reading-head">
+                <h4 class="reading-name">{ reading.port.words() }</h4>
+                if !is_open {
+                    <span class={if props.updating { "reading-standing is-updating" } else { "reading-standing" }}>
+                        { mark::badge(standing) }
+                    </span>
+                }
+                <button
+                    type="button"
+                    class="reading-more"
+                    aria-expanded={if *more { "true" } else { "false" }}
+                    aria-label={format!("More about {}", reading.port.words())}
+                    data-testid={format!("more-{}", props.number)}
+                    onclick={toggle}
+                >
+                    { if *more { "Less" } else { "More" } }
+                </button>
+            </div>
+            if is_open || *more {
+                { props.unit.ports.get(&reading.port).map(port_note) }
+            }
+            if let Some(why) = &props.closed {
+                { closed(reading, why) }
+            } else {
+                <EntryField
+                    reading={reading.clone()}
+                    number={props.number}
+                    {instrument}
+                    prefs={props.prefs.clone()}
+                    on_change={props.on_change.clone()}
+                />
+            }
+            <Rig
+                reading={reading.clone()}
+                number={props.number}
+                short={!is_open && !*more}
+                unit={props.unit.clone()}
+                visit={props.visit.clone()}
+                instruments={props.instruments.clone()}
+                prefs={props.prefs.clone()}
+                on_change={props.on_change.clone()}
+                on_instruments={props.on_instruments.clone()}
+            />
+            if let Some(why) = &props.retake {
+                <Caution grade={Grade::Caution} title="take this again" testid={format!("retake-{}", props.number)}>
+                    <p>{ why.clone() }</p>
+                </Caution>
+            }
+            if let Some(window) = &props.window {
+                <WindowScale
+                    port={reading.port}
+                    window={window.clone()}
+                    prefs={props.prefs.clone()}
+                    updating={props.updating}
+                    full={*more}
+                    number={props.number}
+                />
+            }
+            if *more {
+                { extras(props) }
+            }
+        </li>
+    }
+}
+
+/// Where the port is on this machine and what it takes to get at it.
+fn port_note(note: &PortNote) -> Html {
+    let access = note
+        .access_minutes
+        .filter(|minutes| *minutes > 0.0)
+        .map(|minutes| format!("{minutes:.0} min to get at it"));
+    let parts: Vec<String> = [note.place.clone(), note.adapter.clone()]
+        .into_iter()
+        .filter(|text| !text.trim().is_empty())
+        .chain(access)
+        .collect();
+    if parts.is_empty() {
+        return Html::default();
+    }
+    html! { <p class="reading-port">{ parts.join(" · ") }</p> }
+}
+
+/// A closed field still shows what stands in it.
+fn closed(reading: &Reading, why: &AttrValue) -> Html {
+    html! {
+        <div class="reading-closed" data-testid="closed">
+            if !reading.typed.is_empty() {
+                <strong class="figure">{ reading.typed.clone() }</strong>
+            }
+            <span>{ why.clone() }</span>
+        </div>
+    }
+}
+
+/// Note, the same port the other way, and the way out.
+fn extras(props: &ReadingRowProps) -> Html {
+    let reading = &props.reading;
+    let on_note = {
+        let id = reading.id.clone();
+        props
+            .on_change
+            .reform(move |text| Change::Note(id.clone(), text))
+    };
+    let on_remove = {
+        let id = reading.id.clone();
+        props.on_change.reform(move |()| Change::Remove(id.clone()))
+    };
+    let again = (!reading.condition.doing.is_neutral()).then(|| {
+        let mut condition = reading.condition;
+        condition.direction = match condition.direction {
+            Direction::Forward => Direction::Reverse,
+            Direction::Reverse => Direction::Forward,
+        };
+        let port = reading.port;
+        props
+            .on_change
+            .reform(move |_: MouseEvent| Change::Add(vec![(port, condition)]))
+    });
+    html! {
+        <div class="reading-extras stack">
+            <TextField
+                id={format!("note-{}", reading.id)}
+                label="Note"
+                value={reading.note.clone()}
+                on_input={on_note}
+                testid={format!("note-{}", props.number)}
+            />
+            <div class="actions">
+                if let Some(again) = again {
+                    <button type="button" class="button is-quiet" onclick={again}>{ "The same, other direction" }</button>
+                }
+                <Confirm
+                    words="Remove"
+                    question={format!("Remove {} from this call?", reading.port.words())}
+                    yes="Remove it"
+                    on_yes={on_remove}
+                    testid={format!("remove-{}", props.number)}
+                />
+            </div>
+        </div>
+    }
+}

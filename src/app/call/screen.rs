@@ -1,0 +1,267 @@
+//! The call screen as a whole: every edit goes through one place, so that it can be undone, and the newest answer of the
+//! engine stands beside what it was computed from.
+
+use super::add_panel::AddPanel;
+use super::alerts::{LeadStatus, StopWork};
+use super::causes::Causes;
+use super::change::{Change, apply};
+use super::entry;
+use super::entry_field::field_id;
+use super::group::{Group, groups};
+use super::history::History;
+use super::map::LoopMap;
+use super::quick_panel::QuickPanel;
+use super::reading_group::ReadingGroup;
+use super::reading_row::row_id;
+use super::seen_panel::SeenPanel;
+use crate::app::parts::{Icon, Shape};
+use crate::app::platform::focus;
+use crate::app::platform::timer::Timer;
+use crate::assessment::Assessment;
+use crate::checks;
+use crate::quantity::UnitPrefs;
+use crate::readings::instrument::Instrument;
+use crate::readings::{Condition, Port, Reading};
+use crate::record::Visit;
+use crate::unit::Unit;
+use std::rc::Rc;
+use yew::{Callback, Html, MouseEvent, Properties, component, html, use_effect};
+use yew::{use_effect_with, use_mut_ref, use_state};
+
+/// A minute, ms.
+const MINUTE_MS: i32 = 60_000;
+
+/// Properties of [`CallScreen`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct CallScreenProps {
+    /// The unit.
+    pub unit: Rc<Unit>,
+    /// The visit.
+    pub visit: Rc<Visit>,
+    /// Instruments of the shop.
+    pub instruments: Rc<Vec<Instrument>>,
+    /// Units of measure.
+    pub prefs: UnitPrefs,
+    /// Last answer of the engine.
+    pub assessment: Option<Rc<Assessment>>,
+    /// True while a newer one is being worked out.
+    pub updating: bool,
+    /// The visit was edited: the whole of it.
+    pub on_visit: Callback<Visit>,
+    /// The unit was edited: the whole of it.
+    pub on_unit: Callback<Unit>,
+    /// The shop's instruments were edited: the whole list.
+    pub on_instruments: Callback<Vec<Instrument>>,
+}
+
+/// The screen.
+#[component]
+pub fn CallScreen(props: &CallScreenProps) -> Html {
+    let history = use_mut_ref(History::default);
+    // The newest visit, so that two edits between two drawings build on one another.
+    let newest = use_mut_ref(|| props.visit.clone());
+    let to_focus = use_mut_ref(|| None::<String>);
+    let editing = use_state(Vec::<String>::new);
+    let chosen = use_state(|| None::<Port>);
+    let said = use_state(String::new);
+    let minute = use_state(|| 0_u32);
+    newest.replace(props.visit.clone());
+    {
+        let minute = minute.clone();
+        use_effect_with(*minute, move |now| {
+            let next = now.wrapping_add(1);
+            let timer = Timer::once(MINUTE_MS, move || minute.set(next));
+            move || drop(timer)
+        });
+    }
+    {
+        let to_focus = to_focus.clone();
+        use_effect(move || {
+            if let Some(id) = to_focus.take() {
+                focus::to(&id);
+            }
+        });
+    }
+    let on_change = {
+        let (newest, history, to_focus) = (newest.clone(), history.clone(), to_focus.clone());
+        let (on_visit, editing) = (props.on_visit.clone(), editing.clone());
+        Callback::from(move |change: Change| {
+            let before = newest.borrow().clone();
+            let after = apply(&before, &change);
+            if after == *before {
+                return;
+            }
+            history.borrow_mut().remember(before.clone(), &change);
+            if let Change::Add(_) = change {
+                editing.set(Vec::new());
+                let added = after.readings.get(before.readings.len());
+                to_focus.replace(added.map(|reading| field_id(&reading.id)));
+            }
+            newest.replace(Rc::new(after.clone()));
+            on_visit.emit(after);
+        })
+    };
+    let on_undo = {
+        let (newest, history, on_visit, said) = (
+            newest.clone(),
+            history.clone(),
+            props.on_visit.clone(),
+            said.clone(),
+        );
+        Callback::from(move |_: MouseEvent| {
+            if let Some((before, words)) = history.borrow_mut().back() {
+                newest.replace(before.clone());
+                said.set(format!("Undone: {words}."));
+                on_visit.emit((*before).clone());
+            }
+        })
+    };
+    let on_port = {
+        let (chosen, on_change, newest) = (chosen.clone(), on_change.clone(), newest.clone());
+        let to_focus = to_focus.clone();
+        Callback::from(move |port: Port| {
+            chosen.set(Some(port));
+            let visit = newest.borrow().clone();
+            match next_at(port, &visit.readings) {
+                Some(reading) => {
+                    to_focus.replace(Some(row_focus(reading)));
+                }
+                None => on_change.emit(Change::Add(vec![(port, last_condition(&visit))])),
+            }
+        })
+    };
+    let on_reading = {
+        let (to_focus, newest, chosen) = (to_focus, newest.clone(), chosen.clone());
+        Callback::from(move |id: String| {
+            let visit = newest.borrow().clone();
+            if let Some(reading) = visit.readings.iter().find(|reading| reading.id == id) {
+                to_focus.replace(Some(row_focus(reading)));
+                chosen.set(Some(reading.port));
+            }
+        })
+    };
+    let on_edit = {
+        let editing = editing.clone();
+        Callback::from(move |ids: Vec<String>| editing.set(ids))
+    };
+    let undo = history.borrow().next();
+    let visit = &props.visit;
+    let grouped = groups(&visit.readings, &editing);
+    let told = told_before(&grouped, visit);
+    html! {
+        <div class="call" data-testid="call">
+            <LeadStatus assessment={props.assessment.clone()} said={(*said).clone()} />
+            <div class="call-side">
+            <div class="call-causes">
+                <Causes
+                    assessment={props.assessment.clone()}
+                    updating={props.updating}
+                    readings={visit.readings.clone()}
+                    prefs={props.prefs.clone()}
+                    on_reading={on_reading}
+                />
+            </div>
+            <div class="call-map">
+                <LoopMap
+                    ticks={props.unit.ticks.clone()}
+                    readings={visit.readings.clone()}
+                    assessment={props.assessment.clone()}
+                    chosen={*chosen}
+                    {on_port}
+                />
+            </div>
+            </div>
+            <div class="call-main">
+                <nav class="jump" aria-label="On this screen">
+                    { for [("seen", "Seen"), ("quick", "Usual"), ("readings", "Readings"), ("add", "Add")].map(|(id, words)| html! {
+                        <button key={id} type="button" class="jump-to" onclick={jump(id)}>{ words }</button>
+                    }) }
+                </nav>
+                <StopWork visit={visit.clone()} assessment={props.assessment.clone()} />
+                <SeenPanel visit={visit.clone()} class={props.unit.class} on_change={on_change.clone()} />
+                <QuickPanel readings={visit.readings.clone()} on_change={on_change.clone()} />
+                <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
+                { for grouped.into_iter().zip(told).map(|(group, told)| {
+                    let first = group.at.first().and_then(|place| visit.readings.get(*place));
+                    let first = first.map(|reading| reading.id.clone()).unwrap_or_default();
+                    html! {
+                        <ReadingGroup
+                            key={first.clone()}
+                            condition={group.condition}
+                            at={group.at}
+                            editing={editing.contains(&first)}
+                            on_edit={on_edit.clone()}
+                            assessment={props.assessment.clone()}
+                            updating={props.updating}
+                            minute={*minute}
+                            {told}
+                            chosen={*chosen}
+                            unit={props.unit.clone()}
+                            visit={visit.clone()}
+                            instruments={props.instruments.clone()}
+                            prefs={props.prefs.clone()}
+                            on_change={on_change.clone()}
+                            on_instruments={props.on_instruments.clone()}
+                        />
+                    }
+                }) }
+                <AddPanel
+                    ticks={props.unit.ticks.clone()}
+                    last={last_condition(visit)}
+                    prefs={props.prefs.clone()}
+                    on_change={on_change.clone()}
+                />
+                if let Some(words) = undo {
+                    <button type="button" class="button is-quiet call-undo" data-testid="undo" onclick={on_undo}>
+                        <Icon shape={Shape::Back} />{ "Undo: " }{ words }
+                    </button>
+                }
+            </div>
+        </div>
+    }
+}
+
+/// For each group, the checks whose precautions stand in full in a group before it.
+fn told_before(groups: &[Group], visit: &Visit) -> Vec<Vec<&'static str>> {
+    let mut told: Vec<&'static str> = Vec::new();
+    let before = groups.iter().map(|group| {
+        let before = told.clone();
+        let ports = group
+            .at
+            .iter()
+            .filter_map(|place| visit.readings.get(*place))
+            .map(|reading| reading.port);
+        told.extend(
+            ports
+                .filter_map(|port| checks::for_reading(&group.condition, port))
+                .map(|check| check.id),
+        );
+        before
+    });
+    before.collect()
+}
+
+/// Brings a part of the screen into view.
+fn jump(id: &'static str) -> Callback<MouseEvent> {
+    Callback::from(move |_: MouseEvent| focus::to(id))
+}
+
+/// The reading to go to at a port: the first without an answer; none where all have one, so that another is added.
+fn next_at(port: Port, readings: &[Reading]) -> Option<&Reading> {
+    readings
+        .iter()
+        .find(|reading| reading.port == port && entry::is_open(reading))
+}
+
+/// What takes the focus for a reading: its row, whose field may be closed.
+fn row_focus(reading: &Reading) -> String {
+    row_id(&reading.id)
+}
+
+/// The condition of the last reading, to go on from.
+fn last_condition(visit: &Visit) -> Condition {
+    visit
+        .readings
+        .last()
+        .map_or_else(Condition::start, |reading| reading.condition)
+}

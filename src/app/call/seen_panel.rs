@@ -1,0 +1,190 @@
+//! What was seen, heard and felt before any gauge: the complaint and the ticks. "Not looked" is no answer, and never a no.
+
+use super::change::Change;
+use crate::app::parts::{Choice, Opt, TextField};
+use crate::observations::{self, Group, Observation};
+use crate::record::limits::TEXT_CHARACTERS;
+use crate::record::{Answer, Visit};
+use crate::unit::MachineClass;
+use std::rc::Rc;
+use yew::{Callback, Html, MouseEvent, Properties, component, html, use_state};
+
+/// Properties of [`SeenPanel`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct SeenPanelProps {
+    /// Visit.
+    pub visit: Rc<Visit>,
+    /// Class of machine: two paths or one.
+    pub class: MachineClass,
+    /// An edit.
+    pub on_change: Callback<Change>,
+}
+
+/// True where left and right have a pump each, so that a pull to one side can come from the drive.
+fn has_two_paths(class: MachineClass) -> bool {
+    matches!(class, MachineClass::CompactTracked | MachineClass::Crawler)
+}
+
+/// The panel.
+#[component]
+pub fn SeenPanel(props: &SeenPanelProps) -> Html {
+    let visit = &props.visit;
+    let yes_no = || vec![Opt::new(true, "Yes", "yes"), Opt::new(false, "No", "no")];
+    let answered = visit.observations.len();
+    html! {
+            <section class="panel seen" aria-labelledby="seen-title" id="seen" tabindex="-1">
+                <h2 id="seen-title">{ "What was seen" }{ count_of(answered) }</h2>
+                <TextField
+                    id="complaint"
+                    label="Complaint, in the operator’s words"
+                    value={visit.complaint.clone()}
+                    on_input={props.on_change.reform(Change::Complaint)}
+                    lines={true}
+                    maxlength={u32::try_from(TEXT_CHARACTERS).unwrap_or(2000)}
+                    testid="complaint"
+                />
+                <div class="seen-asks">
+                    <Choice<bool>
+                        name="alone"
+                        label="Alone on site?"
+                        options={yes_no()}
+                        class="is-inline"
+                        value={visit.alone}
+                        on_change={props.on_change.reform(|answer| Change::Alone(Some(answer)))}
+                    />
+                    <Choice<bool>
+                        name="after-repair"
+                        label="Began straight after a repair?"
+                        options={yes_no()}
+                        class="is-inline"
+                        value={visit.after_repair}
+                        on_change={props.on_change.reform(|answer| Change::AfterRepair(Some(answer)))}
+                    />
+                </div>
+    <div class="seen-groups">
+                { for Group::ALL.into_iter().map(|group| html! {
+                    <SeenGroup key={format!("{group:?}")} {group} visit={visit.clone()} class={props.class} on_change={props.on_change.clone()} />
+                }) }
+                </div>
+            </section>
+        }
+}
+
+fn count_of(answered: usize) -> Html {
+    if answered == 0 {
+        return Html::default();
+    }
+    html! { <span class="count">{ format!("{answered} answered") }</span> }
+}
+
+/// Properties of [`SeenGroup`].
+#[derive(Clone, PartialEq, Properties)]
+struct SeenGroupProps {
+    group: Group,
+    visit: Rc<Visit>,
+    class: MachineClass,
+    on_change: Callback<Change>,
+}
+
+/// One group, folded once it was answered.
+#[component]
+fn SeenGroup(props: &SeenGroupProps) -> Html {
+    let offered: Vec<&'static Observation> = observations::all()
+        .filter(|observation| observation.group == props.group)
+        .filter(|observation| {
+            // An answer that is kept is shown, even where the class was changed since.
+            !observation.two_path
+                || has_two_paths(props.class)
+                || props.visit.observations.contains_key(observation.id)
+        })
+        .collect();
+    let answers = || {
+        offered
+            .iter()
+            .filter_map(|observation| props.visit.observations.get(observation.id))
+    };
+    let yes = answers().filter(|answer| is_yes(**answer)).count();
+    let no = answers().count() - yes;
+    let starts_open =
+        use_state(|| props.group == Group::Complaint && props.visit.observations.is_empty());
+    html! {
+        <details class="seen-group" open={*starts_open}>
+            <summary data-testid={format!("seen-{:?}", props.group)}>
+                <span class="seen-group-name">{ props.group.words() }</span>
+                <span class="count">{ tally(yes, no, offered.len()) }</span>
+            </summary>
+            <ul class="seen-list">
+                { for offered.iter().map(|observation| tick(observation, props)) }
+            </ul>
+        </details>
+    }
+}
+
+fn tally(yes: usize, no: usize, of: usize) -> String {
+    match (yes, no) {
+        (0, 0) => format!("{of}, none answered"),
+        (yes, 0) => format!("{yes} yes of {of}"),
+        (0, no) => format!("{no} no of {of}"),
+        (yes, no) => format!("{yes} yes, {no} no of {of}"),
+    }
+}
+
+fn is_yes(answer: Answer) -> bool {
+    matches!(answer, Answer::Seen | Answer::OperatorSays)
+}
+
+/// The four answers and their words for a group.
+fn keys(group: Group) -> [(Answer, &'static str, &'static str); 4] {
+    let (yes, no) = match group {
+        Group::Complaint | Group::WhenItFails => ("I saw it", "Not so"),
+        Group::Look => ("Seen", "Not there"),
+        Group::Listen => ("Heard", "Not heard"),
+        Group::Feel => ("Is so", "Not so"),
+    };
+    [
+        (Answer::Seen, "seen", yes),
+        (Answer::NotSeen, "not-seen", no),
+        (Answer::OperatorSays, "says", "Says so"),
+        (Answer::OperatorSaysNot, "says-not", "Says not"),
+    ]
+}
+
+fn tick(observation: &'static Observation, props: &SeenGroupProps) -> Html {
+    let given = props.visit.observations.get(observation.id).copied();
+    let state = match given {
+        Some(answer) if is_yes(answer) => "is-yes",
+        Some(_) => "is-no",
+        None => "is-open",
+    };
+    html! {
+        <li class={format!("seen-tick {state}")} key={observation.id}>
+            <span class="seen-words" id={format!("seen-{}", observation.id)}>{ observation.words }</span>
+            if !observation.how.is_empty() {
+                <span class="seen-how">{ observation.how }</span>
+            }
+            <div class="keys" role="group" aria-labelledby={format!("seen-{}", observation.id)}>
+                { for keys(props.group).into_iter().map(|(answer, code, words)| {
+                    let is_on = given == Some(answer);
+                    let on_change = props.on_change.clone();
+                    let on_click = Callback::from(move |_: MouseEvent| {
+                        // A second touch takes the answer back: not looked.
+                        let next = (!is_on).then_some(answer);
+                        on_change.emit(Change::Observe(observation.id.to_owned(), next));
+                    });
+                    html! {
+                        <button
+                            key={code}
+                            type="button"
+                            class={if is_on { "key is-on" } else { "key" }}
+                            aria-pressed={if is_on { "true" } else { "false" }}
+                            data-testid={format!("seen-{}-{code}", observation.id)}
+                            onclick={on_click}
+                        >
+                            { words }
+                        </button>
+                    }
+                }) }
+            </div>
+        </li>
+    }
+}
