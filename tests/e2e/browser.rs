@@ -19,8 +19,6 @@ const PATIENCE: Duration = Duration::from_secs(30);
 pub struct Deadline(Instant);
 
 impl Deadline {
-    // Runs natively, where there is a clock.
-    #[allow(clippy::disallowed_methods)]
     pub fn new() -> Self {
         Self(Instant::now())
     }
