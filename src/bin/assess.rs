@@ -1,2 +1,207 @@
-//! Reads an export on standard input and writes one assessment per visit.
-fn main() {}
+//! Reads an export on standard input and writes one line of JSON for each visit: what a healthy unit would show, and the
+//! causes with their probabilities and reasons. For an office that keeps the exports of many phones.
+//!
+//! Exit codes: 0 all visits assessed; 2 the input or the command line cannot be taken (the reason, with its place, on standard
+//! error); 3 some visits could not be assessed (each has its line, with the reason).
+
+use lowside::assessment::Assessment;
+use lowside::readings::instrument::Instrument;
+use lowside::record::{Export, Visit, limits};
+use lowside::unit::Unit;
+use serde::Serialize;
+use std::collections::BTreeMap;
+use std::io::{self, ErrorKind, Read, Write};
+use std::process::ExitCode;
+
+const HELP: &str = "\
+assess: from readings to causes, for every visit of a Lowside export
+
+Usage: assess < export.json > assessments.jsonl
+
+Reads one export file on standard input and writes one line of JSON for each visit to standard output:
+  visit, unit, unit_name   ids and the yard number
+  windows                  what a healthy unit would show at each reading, and where the reading stands
+  causes                   ids, title, probability (0 to 1), evidence for and against
+  notes, withheld, trust   what to know before acting on it
+  error                    instead of the above, where the visit cannot be assessed
+Values are in bar, L/min, rpm, °C, s, mA and km/h.
+
+Options: --help, --version
+
+Exit codes: 0 all visits assessed; 2 bad input or command line; 3 some visits could not be assessed.
+
+A ranking is no proof. Prove a cause on the machine before parts are ordered; the unit's manual and the cautions of the
+app come first.
+";
+
+/// Why the program ends early.
+enum End {
+    /// Input or command line: exit code 2.
+    Bad(String),
+    /// Whoever reads our output went away: nothing more to do.
+    Unread,
+}
+
+/// One line of the output.
+#[derive(Serialize)]
+struct Line<'a> {
+    visit: &'a str,
+    unit: &'a str,
+    unit_name: &'a str,
+    #[serde(flatten)]
+    outcome: Outcome,
+}
+
+/// What was found, or why nothing can be said.
+#[derive(Serialize)]
+#[serde(untagged)]
+enum Outcome {
+    Assessed(Box<Assessment>),
+    Failed { error: String },
+}
+
+fn main() -> ExitCode {
+    match run() {
+        Ok(code) => ExitCode::from(code),
+        Err(End::Unread) => ExitCode::SUCCESS,
+        Err(End::Bad(why)) => {
+            // Nobody may be there to read this either.
+            let _ = writeln!(io::stderr(), "assess: {why}");
+            ExitCode::from(2)
+        }
+    }
+}
+
+fn run() -> Result<u8, End> {
+    let mut arguments = std::env::args_os().skip(1);
+    if let Some(first) = arguments.next() {
+        let text = match (first.to_str(), arguments.next()) {
+            (Some("--help"), None) => HELP.to_owned(),
+            (Some("--version"), None) => format!("assess {}\n", env!("CARGO_PKG_VERSION")),
+            _ => {
+                let first = first.to_string_lossy();
+                return Err(End::Bad(format!(
+                    "unknown argument {first:?}; the export comes on standard input. Try --help"
+                )));
+            }
+        };
+        return io::stdout()
+            .write_all(text.as_bytes())
+            .map(|()| 0)
+            .map_err(|error| unwritten(&error));
+    }
+    let export = Export::read(&input()?).map_err(|error| End::Bad(error.to_string()))?;
+    for remark in &export.remarks {
+        let _ = writeln!(io::stderr(), "assess: {remark}");
+    }
+    assess_all(&export)
+}
+
+/// Standard input, up to just over the largest file that is read: the reader then says that it is too large.
+fn input() -> Result<Vec<u8>, End> {
+    let mut bytes = Vec::new();
+    let most = u64::try_from(limits::FILE_BYTES)
+        .unwrap_or(u64::MAX)
+        .saturating_add(1);
+    io::stdin()
+        .lock()
+        .take(most)
+        .read_to_end(&mut bytes)
+        .map_err(|error| End::Bad(format!("standard input cannot be read: {error}")))?;
+    if bytes.is_empty() {
+        return Err(End::Bad(String::from(
+            "standard input is empty; it must be an export: assess < export.json",
+        )));
+    }
+    Ok(bytes)
+}
+
+fn assess_all(export: &Export) -> Result<u8, End> {
+    let units: BTreeMap<&str, &Unit> = export
+        .units
+        .iter()
+        .map(|unit| (unit.id.as_str(), unit))
+        .collect();
+    let mut out = io::stdout().lock();
+    let mut code = 0;
+    for visit in &export.visits {
+        let unit = units.get(visit.unit.as_str()).copied();
+        let outcome = outcome(unit, visit, &export.instruments);
+        if let Outcome::Failed { error } = &outcome {
+            code = 3;
+            let _ = writeln!(io::stderr(), "assess: visit {}: {error}", visit.id);
+        }
+        let line = Line {
+            visit: &visit.id,
+            unit: &visit.unit,
+            unit_name: unit.map_or("", |unit| &unit.name),
+            outcome,
+        };
+        let mut text = serde_json::to_string(&line).map_err(|error| End::Bad(error.to_string()))?;
+        text.push('\n');
+        out.write_all(text.as_bytes())
+            .and_then(|()| out.flush())
+            .map_err(|error| unwritten(&error))?;
+    }
+    Ok(code)
+}
+
+fn outcome(unit: Option<&Unit>, visit: &Visit, instruments: &[Instrument]) -> Outcome {
+    let Some(unit) = unit else {
+        return Outcome::Failed {
+            error: format!(
+                "its unit {:?} is not in this file: export the unit with it",
+                visit.unit
+            ),
+        };
+    };
+    let assessment = lowside::ranking::assess(unit, visit, instruments);
+    if is_finite(&assessment) {
+        Outcome::Assessed(Box::new(assessment))
+    } else {
+        Outcome::Failed {
+            error: String::from(
+                "the calculation gave no figure; nothing can be said of this visit",
+            ),
+        }
+    }
+}
+
+/// JSON has no word for a figure that is none, and a reader would take the gap for zero.
+fn is_finite(assessment: &Assessment) -> bool {
+    let windows = assessment
+        .windows
+        .iter()
+        .flat_map(|w| [w.low, w.middle, w.high, w.instrument, w.read.unwrap_or(0.0)]);
+    let causes = assessment.causes.iter().flat_map(|c| {
+        let evidence = c.evidence.iter().map(|e| e.weight);
+        let would_read = c.would_read.iter().flat_map(|w| [w.value, w.spread]);
+        [c.probability]
+            .into_iter()
+            .chain(c.shares.iter().copied())
+            .chain(evidence)
+            .chain(would_read)
+    });
+    let trust = [
+        assessment.trust.heaviest,
+        assessment.trust.change,
+        assessment.trust.wrong_reading,
+    ];
+    let hold = assessment
+        .hold
+        .into_iter()
+        .flat_map(|(time, rise)| [time, rise]);
+    windows
+        .chain(causes)
+        .chain(trust)
+        .chain(hold)
+        .all(f64::is_finite)
+}
+
+fn unwritten(error: &io::Error) -> End {
+    if error.kind() == ErrorKind::BrokenPipe {
+        End::Unread
+    } else {
+        End::Bad(format!("the output cannot be written: {error}"))
+    }
+}

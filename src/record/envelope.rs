@@ -4,6 +4,7 @@ use super::migrate::{Ladder, RecordKind, Subject};
 use super::{RecordError, checksum};
 use serde::de::DeserializeOwned;
 use serde::{Deserialize, Serialize};
+use serde_json::Value;
 use serde_json::value::RawValue;
 
 /// Name that stands in every envelope.
@@ -113,7 +114,7 @@ impl Envelope {
     pub fn record<T: DeserializeOwned>(&self, ladder: &Ladder) -> Result<T, RecordError> {
         let value = serde_json::from_str(&self.body).map_err(|e| not_json(&e))?;
         let value = ladder.climb(Subject::Record(self.kind), self.schema, value)?;
-        from_value(value)
+        from_value(&value)
     }
 
     /// The record in it as far as this version understands a newer one; none where it cannot be read at all.
@@ -131,16 +132,38 @@ pub(super) fn not_json(error: &serde_json::Error) -> RecordError {
 }
 
 /// Turns a JSON value into a record, with the path where it cannot be done.
-pub(super) fn from_value<T: DeserializeOwned>(value: serde_json::Value) -> Result<T, RecordError> {
+pub(super) fn from_value<T: DeserializeOwned>(value: &Value) -> Result<T, RecordError> {
     serde_path_to_error::deserialize(value).map_err(|error| {
         let path = error.path().to_string();
         RecordError::Shape {
-            path: if path == "." {
-                String::from("the file")
-            } else {
-                path
+            path: match path.find(UNNAMED) {
+                _ if path == "." => String::from("the file"),
+                Some(at) => name_key::<T>(value, &path, at).unwrap_or(path),
+                None => path,
             },
             why: error.into_inner().to_string(),
         }
     })
+}
+
+/// How a key that is not a plain text (a port, a figure) stands in a path.
+const UNNAMED: &str = ".?";
+
+/// Puts the name of the faulty key in its place in the path, found by halving the table that it stands in.
+fn name_key<T: DeserializeOwned>(value: &Value, path: &str, at: usize) -> Option<String> {
+    let (table_path, rest) = path.split_at_checked(at)?;
+    let pointer = format!("/{}", table_path.replace('.', "/").replace('[', "/").replace(']', ""));
+    let table = value.pointer(&pointer)?.as_object()?;
+    let mut keys: Vec<&String> = table.keys().collect();
+    let mut trial = value.clone();
+    while keys.len() > 1 {
+        let other = keys.split_off(keys.len() / 2);
+        let some = keys.iter().filter_map(|key| Some(((*key).clone(), table.get(*key)?.clone()))).collect();
+        *trial.pointer_mut(&pointer)? = Value::Object(some);
+        let error = serde_path_to_error::deserialize::<_, T>(&trial).err();
+        if error.is_none_or(|error| error.path().to_string() != path) {
+            keys = other;
+        }
+    }
+    Some(format!("{table_path}.{}{}", keys.first()?, rest.get(UNNAMED.len()..)?))
 }

@@ -71,7 +71,7 @@ fn typed(value: Value, ladder: &Ladder) -> Result<Export, RecordError> {
     if let Some(mark) = value.get_mut(MARK) {
         *mark = Value::from(ladder.top);
     }
-    let mut export: Export = envelope::from_value(value.clone())?;
+    let mut export: Export = envelope::from_value(&value)?;
     export.remarks = dropped(&value, &export);
     // Instruments have a list of their own; a file that keeps them with the settings is taken as well.
     if let Some(settings) = &mut export.settings {

@@ -27,7 +27,7 @@ pub use envelope::{APP, Envelope, Stamp};
 pub use error::{Problem, RecordError};
 pub use export::Export;
 pub use id::{IdOf, is_id, new_id};
-pub use migrate::{Ladder, RecordKind, SCHEMA, Step, Subject};
+pub use migrate::{Ladder, RecordKind, SCHEMA, STEPS, Step, Subject};
 pub use plan::{Fate, ImportPlan, Planned, Taken};
 pub use settings::{FirstRun, Settings, Theme};
 pub use sum::checksum;

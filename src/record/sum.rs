@@ -4,7 +4,7 @@
 ///
 /// It guards against accident (a text cut short, edited by hand or overwritten), not against intent, so no cryptographic hash
 /// is needed. FNV-1a is taken over a CRC because 64 bits make a chance match negligible, it needs no table, and it is short
-/// enough to be read at a glance. Source of the constants and the order of operations: Fowler, Noll and Vo
+/// enough to be read at a glance. Source of the constants and the order of operations: Fowler, Noll and Vo (from memory).
 #[must_use]
 pub fn checksum(text: &str) -> String {
     const OFFSET: u64 = 0xcbf2_9ce4_8422_2325;
@@ -19,7 +19,7 @@ pub fn checksum(text: &str) -> String {
 mod tests {
     use super::checksum;
 
-    /// Published test vectors of FNV-1a 64 (draft-eastlake-fnv, appendix; from memory).
+    /// Published test vectors of FNV-1a, 64 bits (from memory).
     #[test]
     fn known_vectors() {
         for (text, sum) in [
