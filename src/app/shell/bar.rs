@@ -36,12 +36,7 @@ pub fn Bar(props: &BarProps) -> Html {
                 Some(unit) => format!("Lowside, unit {unit}. To the list of units"),
                 None => "Lowside. To the list of units".to_owned(),
             }}>
-                <svg class="bar-mark" viewBox="0 0 36 36" aria-hidden="true" focusable="false">
-                    <rect class="mark-ground" x="0" y="0" width="36" height="36" rx="6" />
-                    <path class="mark-line" d="M9 9v16a3 3 0 0 0 3 3h15" />
-                    <path class="mark-needle" d="M12 22l13-11" />
-                    <circle class="mark-dot" cx="12" cy="22" r="2.5" />
-                </svg>
+                <img class="bar-mark" src="icons/mark.svg" width="36" height="36" alt="" />
                 <span class={if unit.is_some() { "bar-words" } else { "bar-words is-alone" }}>
                     <span class="bar-name">{ "Lowside" }</span>
                     if let Some(unit) = unit {

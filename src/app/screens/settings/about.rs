@@ -4,7 +4,7 @@ use yew::{Callback, Html, MouseEvent, component, html};
 
 use super::SettingsProps;
 use crate::app::deed::Deed;
-use crate::app::parts::{Caution, Grade};
+use crate::app::parts::{Caution, Grade, Section};
 use crate::app::platform::offline;
 
 /// The panel.
@@ -15,8 +15,7 @@ pub fn About(props: &SettingsProps) -> Html {
         Callback::from(move |_: MouseEvent| deed.emit(Deed::Update))
     };
     html! {
-        <section class="panel" aria-labelledby="about-title" data-testid="about">
-            <h2 id="about-title">{ "About Lowside" }</h2>
+        <Section id="about" title="About Lowside" state={offline::version()}>
             <p data-testid="offline-state">{ props.state.offline.words() }</p>
             <p>
                 { "Version " }
@@ -50,6 +49,6 @@ pub fn About(props: &SettingsProps) -> Html {
                    Figures that you have not given are common practice for the class of machine, with a wide margin; each \
                    window says what it rests on. Everything is calculated on this device; nothing is sent anywhere." }
             </p>
-        </section>
+        </Section>
     }
 }

@@ -7,7 +7,7 @@ use yew::{Callback, Html, MouseEvent, Properties, TargetCast, component, html, u
 
 use super::import::{Picked, Preview};
 use crate::app::deed::{Deed, Snapshot};
-use crate::app::parts::{Caution, Confirm, Grade};
+use crate::app::parts::{Caution, Confirm, Grade, Section};
 use crate::app::persist::book_of;
 use crate::app::platform::persistence::Keeping;
 use crate::app::platform::{clock, files};
@@ -39,15 +39,14 @@ pub fn Data(props: &DataProps) -> Html {
     if props.is_folded {
         return html! {
             <details class="fold panel" data-testid="data-fold">
-                <summary>{ "Your data: to a file, from a file" }</summary>
+                <summary>{ "Your data, as a file" }</summary>
                 <div class="stack"><Exchange ..props.clone() /></div>
             </details>
         };
     }
     let state = &props.state;
     html! {
-        <section class="panel" aria-labelledby="data-title" data-testid="data">
-            <h2 id="data-title">{ "Your data" }</h2>
+        <Section id="data" title="Your data" is_open={true}>
             <p>
                 { if state.memory_only {
                     "Nothing is being saved here. Save your data to a file now."
@@ -67,7 +66,7 @@ pub fn Data(props: &DataProps) -> Html {
             }
             <Exchange ..props.clone() />
             <PutAside ..props.clone() />
-        </section>
+        </Section>
     }
 }
 
@@ -153,7 +152,7 @@ fn PutAside(props: &DataProps) -> Html {
                 <details class="fold" data-testid="trash">
                     <summary>{ format!("Trash ({})", state.bins.trashed.len()) }</summary>
                     <div class="stack is-tight">
-                        <ul class="plain-list">
+                        <ul class="rows">
                             { for state.bins.trashed.iter().map(|trashed| {
                                 let what = match trashed.key {
                                     RecordKey::Unit(_) => "Unit",
@@ -161,7 +160,7 @@ fn PutAside(props: &DataProps) -> Html {
                                     RecordKey::Settings => "Settings",
                                 };
                                 html! {
-                                    <li key={trashed.path.clone()} class="manual-line">
+                                    <li key={trashed.path.clone()} class="line-item">
                                         <span>
                                             { format!("{what} {}", trashed.name) }
                                             <span class="soft small">{ format!(", removed {}", clock::tell(&trashed.when)) }</span>
@@ -192,9 +191,9 @@ fn PutAside(props: &DataProps) -> Html {
             if !state.bins.quarantined.is_empty() {
                 <Caution grade={Grade::Caution} title="some stored text could not be read" testid="quarantine">
                     <p class="small">{ "It is kept as it was. Save it to a file; someone may be able to mend it." }</p>
-                    <ul class="plain-list">
+                    <ul class="rows">
                         { for state.bins.quarantined.iter().map(|entry| html! {
-                            <li key={entry.path.clone()} class="manual-line">
+                            <li key={entry.path.clone()} class="line-item">
                                 <span>{ format!("{}, {} characters, {}", entry.was, entry.characters, clock::tell(&entry.when)) }</span>
                                 <button type="button" class="button" onclick={props.wish(Deed::HandOverUnread(entry.clone()))}>
                                     { "Save to a file" }

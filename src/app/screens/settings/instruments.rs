@@ -4,7 +4,7 @@ use yew::{AttrValue, Callback, Html, MouseEvent, component, html, use_state};
 
 use super::SettingsProps;
 use super::draft::{AccuracyAsk, Draft, accuracy_options};
-use crate::app::parts::{Choice, Confirm, Entry, MeasureField, Opt, Select, TextField};
+use crate::app::parts::{Choice, Confirm, Entry, MeasureField, Opt, Section, Select, TextField};
 use crate::app::platform::ids;
 use crate::quantity::{Kind, Measure, UnitPrefs};
 use crate::readings::instrument::{
@@ -49,13 +49,23 @@ fn line(instrument: &Instrument, prefs: &UnitPrefs) -> String {
             Indication::Needle => "division",
             Indication::Digital => "step",
         };
-        format!(", {what} {}", prefs.print(step))
+        format!(", {what} {}", plain(step, prefs))
     });
     format!(
-        "{}, {}, {}{step}",
+        "{}, {} to {}, {}{step}",
         sort_words(instrument.what),
-        prefs.print_span(instrument.span_low, instrument.span_high),
+        prefs.edit_text(instrument.span_low),
+        plain(instrument.span_high, prefs),
         instrument.accuracy
+    )
+}
+
+/// The figure as the dial has it, with its unit.
+fn plain(measure: Measure, prefs: &UnitPrefs) -> String {
+    format!(
+        "{} {}",
+        prefs.edit_text(measure),
+        prefs.unit(measure.kind())
     )
 }
 
@@ -86,6 +96,13 @@ pub fn Instruments(props: &SettingsProps) -> Html {
         })
     };
     let on_drop = props.change(|settings: &mut Settings, _: MouseEvent| Draft::drop_from(settings));
+    let on_remove = {
+        let id = draft.id.clone();
+        props.change(move |settings: &mut Settings, ()| {
+            settings.instruments.retain(|other| other.id != id);
+            Draft::drop_from(settings);
+        })
+    };
     let usual_missing = usual_instruments()
         .iter()
         .any(|usual| settings.instrument(&usual.id).is_none());
@@ -97,20 +114,18 @@ pub fn Instruments(props: &SettingsProps) -> Html {
         }
     });
     html! {
-        <section class="panel" aria-labelledby="instruments-title" data-testid="instruments">
-            <div class="stack is-tight">
-                <h2 id="instruments-title">{ "Instruments of the shop" }</h2>
-                <p class="soft small">
-                    { "Span and accuracy decide what a reading can tell. The list starts with what most vans carry, common \
-                       practice; put yours in its place." }
-                </p>
-            </div>
-            <ul class="plain-list">
+        <Section
+            id="instruments"
+            title="Instruments of the shop"
+            state={settings.instruments.len().to_string()}
+            is_open={draft.is_begun()}
+        >
+            <p class="soft small">
+                { "Span and accuracy decide what a reading can tell. The list starts with what most vans carry, common \
+                   practice; put yours in its place." }
+            </p>
+            <ul class="rows">
                 { for settings.instruments.iter().map(|instrument| {
-                    let id = instrument.id.clone();
-                    let on_remove = props.change(move |settings: &mut Settings, ()| {
-                        settings.instruments.retain(|other| other.id != id);
-                    });
                     let (change_id, change_prefs) = (instrument.id.clone(), prefs.clone());
                     let on_change = props.change(move |settings: &mut Settings, _: MouseEvent| {
                         if let Some(instrument) = settings.instrument(&change_id) {
@@ -118,21 +133,20 @@ pub fn Instruments(props: &SettingsProps) -> Html {
                         }
                     });
                     html! {
-                        <li key={instrument.id.clone()} class="manual-line" data-testid="instrument">
+                        <li key={instrument.id.clone()} class="line-item" data-testid="instrument">
                             <div>
                                 <strong>{ &instrument.name }</strong>
                                 <div class="soft small">{ line(instrument, prefs) }</div>
                             </div>
-                            <div class="actions">
-                                <button type="button" class="button is-quiet" onclick={on_change}>{ "Change" }</button>
-                                <Confirm
-                                    words="Remove"
-                                    question={format!("Remove {}? Readings taken with it keep their figures.", instrument.name)}
-                                    yes="Remove"
-                                    on_yes={on_remove}
-                                    testid="remove-instrument"
-                                />
-                            </div>
+                            <button
+                                type="button"
+                                class="button is-quiet"
+                                onclick={on_change}
+                                aria-label={format!("Change {}", instrument.name)}
+                                data-testid="change-instrument"
+                            >
+                                { "Change" }
+                            </button>
                         </li>
                     }
                 }) }
@@ -159,9 +173,18 @@ pub fn Instruments(props: &SettingsProps) -> Html {
                             <button type="button" class="button is-quiet" onclick={on_drop}>{ "Drop what was typed" }</button>
                         }
                     </div>
+                    if draft.is_change() {
+                        <Confirm
+                            words="Remove this instrument"
+                            question={format!("Remove {}? Readings taken with it keep their figures.", draft.name)}
+                            yes="Remove"
+                            on_yes={on_remove}
+                            testid="remove-instrument"
+                        />
+                    }
                 </div>
             </details>
-        </section>
+        </Section>
     }
 }
 

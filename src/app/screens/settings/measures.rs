@@ -3,7 +3,7 @@
 use yew::{Html, component, html};
 
 use super::SettingsProps;
-use crate::app::parts::{Choice, Opt, Select};
+use crate::app::parts::{Choice, Opt, Section, Select};
 use crate::quantity::{DecimalMark, Kind, Unit, UnitPrefs};
 
 /// Kinds that a screen shows.
@@ -65,8 +65,11 @@ fn capital(text: &str) -> String {
 pub fn Measures(props: &SettingsProps) -> Html {
     let prefs = &props.state.settings.units;
     html! {
-        <section class="panel" aria-labelledby="measures-title" data-testid="measures">
-            <h2 id="measures-title">{ "Units of measure" }</h2>
+        <Section id="measures" title="Units of measure" state={match Preset::of(prefs) {
+            Some(Preset::Metric) => "metric",
+            Some(Preset::Us) => "US",
+            None => "mixed",
+        }}>
             <Choice<Preset>
                 name="preset"
                 label="Show figures in"
@@ -117,7 +120,7 @@ pub fn Measures(props: &SettingsProps) -> Html {
                     </div>
                 </div>
             </details>
-        </section>
+        </Section>
     }
 }
 

@@ -14,7 +14,7 @@ use self::data::Data;
 use self::instruments::Instruments;
 use self::measures::Measures;
 use crate::app::deed::{Deed, Snapshot};
-use crate::app::parts::{Choice, Opt};
+use crate::app::parts::{Choice, Opt, Section};
 use crate::app::state::Action;
 use crate::record::{Settings, Theme};
 
@@ -61,8 +61,7 @@ pub fn SettingsScreen(props: &SettingsProps) -> Html {
             <div class="columns">
                 <div class="stack">
                     <Measures ..props.clone() />
-                    <section class="panel" aria-labelledby="theme-title">
-                        <h2 id="theme-title">{ "Screen" }</h2>
+                    <Section id="screen" title="Screen" state={theme_words(props.state.settings.theme)}>
                         <Choice<Theme>
                             name="theme"
                             label="Theme"
@@ -71,7 +70,7 @@ pub fn SettingsScreen(props: &SettingsProps) -> Html {
                             value={props.state.settings.theme}
                             on_change={props.change(|settings, theme| settings.theme = theme)}
                         />
-                    </section>
+                    </Section>
                     <Data state={props.state.clone()} deed={props.deed.clone()} />
                 </div>
                 <div class="stack">

@@ -4,7 +4,7 @@ use yew::{Callback, Html, MouseEvent, component, html};
 
 use super::ProfileProps;
 use crate::app::deed::Deed;
-use crate::app::parts::Confirm;
+use crate::app::parts::{Confirm, Section};
 use crate::app::platform::clock;
 use crate::app::route::Route;
 use crate::app::screens::units::{closing_words, standing_words};
@@ -21,12 +21,11 @@ pub fn Calls(props: &ProfileProps) -> Html {
         Callback::from(move |_: MouseEvent| deed.emit(Deed::StartCall(id.clone())))
     };
     html! {
-        <section class="panel" aria-labelledby="calls-title" data-testid="calls">
-            <div class="page-head">
-                <h2 id="calls-title">{ "Calls" }</h2>
+        <Section id="calls" title="Calls" state={visits.len().to_string()} is_open={true}>
+            <div class="actions">
                 <button type="button" class="button" onclick={on_new} data-testid="new-call">{ "New call" }</button>
             </div>
-            <ul class="plain-list">
+            <ul class="rows">
                 { for visits.iter().map(|visit| {
                     let words = match &visit.closed {
                         Some(closing) => closing_words(closing),
@@ -42,7 +41,7 @@ pub fn Calls(props: &ProfileProps) -> Html {
                         Callback::from(move |()| deed.emit(Deed::RemoveVisit(id.clone())))
                     };
                     html! {
-                        <li key={visit.id.clone()} class="call-line">
+                        <li key={visit.id.clone()} class="line-item">
                             <a class="call-link" href={Route::Call(visit.id.clone()).href()}>
                                 <span class="call-when">{ format!("{when}, {what}") }</span>
                                 <span>{ words }</span>
@@ -58,6 +57,6 @@ pub fn Calls(props: &ProfileProps) -> Html {
                     }
                 }) }
             </ul>
-        </section>
+        </Section>
     }
 }

@@ -4,7 +4,7 @@
 use yew::{AttrValue, Callback, Html, Properties, component, html, use_state};
 
 use super::PartProps;
-use crate::app::parts::{Choice, Entry, MeasureField, Opt};
+use crate::app::parts::{Choice, Entry, MeasureField, Opt, Section};
 use crate::quantity::{Measure, Unit as MeasureUnit, UnitPrefs};
 use crate::unit::{FIGURES, Figure, FigureAsk, FigureId, MachineClass, Source, Unit};
 
@@ -35,15 +35,15 @@ fn stands_in(ask: &FigureAsk, class: MachineClass, prefs: &UnitPrefs) -> String 
     ) {
         (Some(middle), Some(low), Some(high)) => format!(
             "Until then common practice for this class: about {}, {} to {}.",
-            printed(middle),
+            with_symbol(printed(middle), unit),
             printed(low),
-            printed(high)
+            with_symbol(printed(high), unit)
         ),
         _ => "Until then common practice for this class.".to_owned(),
     }
 }
 
-/// A practice figure with as many digits as it deserves: two, and its unit.
+/// A practice figure with as many digits as it deserves: two.
 fn rough(measure: Measure, unit: MeasureUnit, prefs: &UnitPrefs) -> String {
     let value = measure.try_in_unit(unit).unwrap_or(measure.base());
     let mut step = 1.0;
@@ -54,10 +54,13 @@ fn rough(measure: Measure, unit: MeasureUnit, prefs: &UnitPrefs) -> String {
         step /= 10.0;
     }
     let rounded = Measure::new((value / step).round() * step, unit).unwrap_or(measure);
-    let text = crate::quantity::edit_text(rounded, unit, prefs.mark());
+    crate::quantity::edit_text(rounded, unit, prefs.mark())
+}
+
+fn with_symbol(figure: String, unit: MeasureUnit) -> String {
     match unit.symbol() {
-        "" => text,
-        symbol => format!("{text} {symbol}"),
+        "" => figure,
+        symbol => format!("{figure} {symbol}"),
     }
 }
 
@@ -159,7 +162,10 @@ fn OneFigure(props: &OneFigureProps) -> Html {
                 {range}
                 typed={AttrValue::from(typed.to_owned())}
                 value={props.figure.as_ref().and_then(|figure| figure.value)}
-                stands_in={stands_in(ask, props.class, &props.prefs)}
+                stands_in={match &props.figure {
+                    Some(figure) if figure.value.is_some() => String::new(),
+                    _ => stands_in(ask, props.class, &props.prefs),
+                }}
                 {on_entry}
                 testid={format!("figure-{code}")}
             />
@@ -219,13 +225,10 @@ pub fn Figures(props: &PartProps) -> Html {
         .filter(|ask| props.unit.figures.contains_key(&ask.id))
         .count();
     html! {
-        <section class="panel" aria-labelledby="figures-title" data-testid="figures">
-            <div class="stack is-tight">
-                <h2 id="figures-title">{ "Figures" }</h2>
-                <p class="soft small">
-                    { "These five narrow the windows most. Any unit of measure can be typed: 2.7 cu in, 250 psi." }
-                </p>
-            </div>
+        <Section id="figures" title="Figures" state={format!("{} given", props.unit.figures.len())}>
+            <p class="soft small">
+                { "The first five narrow the windows most. Any unit of measure can be typed: 2.7 cu in, 250 psi." }
+            </p>
             { for (0..FIRST).filter_map(one) }
             <details class="fold" data-testid="more-figures">
                 <summary>
@@ -233,6 +236,6 @@ pub fn Figures(props: &PartProps) -> Html {
                 </summary>
                 <div class="stack">{ for (FIRST..FIGURES.len()).filter_map(one) }</div>
             </details>
-        </section>
+        </Section>
     }
 }

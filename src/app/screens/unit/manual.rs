@@ -5,7 +5,7 @@ use yew::{AttrValue, Callback, Html, MouseEvent, component, html, use_state};
 
 use super::PartProps;
 use super::ports::port_options;
-use crate::app::parts::{Choice, Entry, Lay, MeasureField, Opt, Select, TextField};
+use crate::app::parts::{Choice, Entry, Lay, MeasureField, Opt, Section, Select, TextField};
 use crate::quantity::{Kind, Measure, Unit as MeasureUnit, UnitPrefs};
 use crate::readings::{Condition, Direction, Doing, EngineSpeed, Port};
 use crate::record::limits;
@@ -156,15 +156,12 @@ pub fn Manual(props: &PartProps) -> Html {
         })
     };
     html! {
-        <section class="panel" aria-labelledby="manual-title" data-testid="manual">
-            <div class="stack is-tight">
-                <h2 id="manual-title">{ "Windows from the manual" }</h2>
-                <p class="soft small">{ "Where the unit’s manual gives one, it goes before anything computed." }</p>
-            </div>
+        <Section id="manual" title="Windows from the manual" state={format!("{} given", unit.manual.len())}>
+            <p class="soft small">{ "Where the unit’s manual gives one, it goes before anything computed." }</p>
             if !unit.manual.is_empty() {
-                <ul class="plain-list">
+                <ul class="rows">
                     { for unit.manual.iter().enumerate().map(|(at, window)| html! {
-                        <li key={at} class="manual-line" data-testid="manual-window">
+                        <li key={at} class="line-item" data-testid="manual-window">
                             <div>
                                 <strong>{ window.port.words() }</strong>
                                 { ", " }
@@ -196,7 +193,7 @@ pub fn Manual(props: &PartProps) -> Html {
                     </div>
                 </div>
             </details>
-        </section>
+        </Section>
     }
 }
 

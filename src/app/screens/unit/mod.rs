@@ -15,7 +15,7 @@ use self::manual::Manual;
 use self::ports::Ports;
 use self::ticks::TicksForm;
 use crate::app::deed::{Deed, Snapshot};
-use crate::app::parts::{Confirm, Icon, Select, Shape, TextField};
+use crate::app::parts::{Confirm, Icon, Section, Select, Shape, TextField};
 use crate::app::route::Route;
 use crate::app::screens::units::class_options;
 use crate::app::state::Action;
@@ -108,8 +108,7 @@ pub fn Profile(props: &ProfileProps) -> Html {
             </p>
             <div class="columns">
                 <div class="stack">
-                    <section class="panel" aria-labelledby="name-title">
-                        <h2 id="name-title">{ "Machine" }</h2>
+                    <Section id="machine" title="Machine" state={unit.class.words()}>
                         <TextField
                             id="unit-name"
                             label="Yard number or name"
@@ -127,15 +126,14 @@ pub fn Profile(props: &ProfileProps) -> Html {
                             on_change={part.change(|unit, class| unit.class = class)}
                             testid="unit-class"
                         />
-                    </section>
+                    </Section>
                     <TicksForm ..part.clone() />
                 </div>
                 <div class="stack">
                     <Figures ..part.clone() />
                     <Ports ..part.clone() />
                     <Manual ..part.clone() />
-                    <section class="panel" aria-labelledby="note-title">
-                        <h2 id="note-title">{ "Note" }</h2>
+                    <Section id="note" title="Note" state={if unit.note.trim().is_empty() { "" } else { "written" }}>
                         <TextField
                             id="unit-note"
                             label="What the next one should know"
@@ -145,7 +143,7 @@ pub fn Profile(props: &ProfileProps) -> Html {
                             maxlength={u32::try_from(limits::TEXT_CHARACTERS).unwrap_or(u32::MAX)}
                             testid="unit-note"
                         />
-                    </section>
+                    </Section>
                     <Calls unit={unit.clone()} state={state.clone()} deed={props.deed.clone()} />
                     <Confirm
                         words="Remove this unit"

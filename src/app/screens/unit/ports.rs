@@ -4,7 +4,7 @@ use std::collections::BTreeSet;
 use yew::{AttrValue, Callback, Html, MouseEvent, component, html, use_state};
 
 use super::PartProps;
-use crate::app::parts::{Choice, Lay, Opt, Select, TextField};
+use crate::app::parts::{Choice, Lay, Opt, Section, Select, TextField};
 use crate::quantity::parse;
 use crate::quantity::{Kind, Measure, Unit as MeasureUnit};
 use crate::readings::{Port, SideNaming};
@@ -63,11 +63,8 @@ pub fn Ports(props: &PartProps) -> Html {
         })
     };
     html! {
-        <section class="panel" aria-labelledby="ports-title" data-testid="ports">
-            <div class="stack is-tight">
-                <h2 id="ports-title">{ "Ports on this machine" }</h2>
-                <p class="soft small">{ "Shown at the check, so that nobody searches twice." }</p>
-            </div>
+        <Section id="ports" title="Ports on this machine" state={format!("{} noted", unit.ports.len())}>
+            <p class="soft small">{ "Shown at the check, so that nobody searches twice." }</p>
             <Choice<SideNaming>
                 name="sides"
                 label="Loop ports A and B"
@@ -109,7 +106,7 @@ pub fn Ports(props: &PartProps) -> Html {
                 on_change={on_open}
                 testid="port-add"
             />
-        </section>
+        </Section>
     }
 }
 

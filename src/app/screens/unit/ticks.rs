@@ -3,7 +3,7 @@
 use yew::{Callback, Html, component, html};
 
 use super::PartProps;
-use crate::app::parts::{Choice, Lay, Opt, Select, tick_options};
+use crate::app::parts::{Choice, Lay, Opt, Section, Select, tick_options};
 use crate::unit::{
     CaseLines, ChargeSource, Control, Filter, LoopReliefTo, ReliefDrain, Shuttle, Tick, Ticks,
 };
@@ -73,16 +73,8 @@ pub fn TicksForm(props: &PartProps) -> Html {
     };
     let motors = options(&[(1u8, "1", "1"), (2, "2", "2"), (3, "3", "3"), (4, "4", "4")]);
     html! {
-        <section class="panel" aria-labelledby="ticks-title" data-testid="ticks">
-            <div class="stack is-tight">
-                <h2 id="ticks-title">{ "What it has" }</h2>
-                <p class="soft small">
-                    { format!(
-                        "{} of {QUESTIONS} answered. “Don’t know” is an answer too: both builds stay possible.",
-                        answered(ticks)
-                    ) }
-                </p>
-            </div>
+        <Section id="ticks" title="What it has" state={format!("{} of {QUESTIONS} answered", answered(ticks))}>
+            <p class="soft small">{ "“Don’t know” is an answer too: both builds stay possible." }</p>
             { yes_no(
                 "flushing",
                 "Loop flushing",
@@ -173,7 +165,7 @@ pub fn TicksForm(props: &PartProps) -> Html {
                 <summary>{ "Drains, dumps, shuttle and drive" }</summary>
                 <div class="stack"><MoreTicks ..props.clone() /></div>
             </details>
-        </section>
+        </Section>
     }
 }
 

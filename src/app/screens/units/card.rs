@@ -102,7 +102,10 @@ pub fn UnitCard(props: &UnitCardProps) -> Html {
         <article class="panel unit-card" aria-labelledby={format!("unit-{}", unit.id)} data-testid="unit-card">
             <div class="unit-card-head">
                 <h2 id={format!("unit-{}", unit.id)}>{ &unit.name }</h2>
-                <p class="soft small">{ unit.class.words() }</p>
+                <p class="soft small">
+                    { unit.class.words() }
+                    if crate::demo::is_demo(&unit.id) { <span class="tag">{ "demo" }</span> }
+                </p>
             </div>
             <div class="unit-card-call">
                 if let Some((words, what, when)) = line {
@@ -115,7 +118,8 @@ pub fn UnitCard(props: &UnitCardProps) -> Html {
             <div class="actions unit-card-actions">
                 if let Some(visit) = open {
                     <a class="button is-main" href={Route::Call(visit.id.clone()).href()} data-testid="continue-call">
-                        { "Continue the call" }
+                        { "Continue" }
+                        <span class="hidden-text">{ format!(" the call on {}", unit.name) }</span>
                         <Icon shape={Shape::Forward} />
                     </a>
                 } else {

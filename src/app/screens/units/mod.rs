@@ -75,14 +75,20 @@ pub fn Units(props: &UnitsProps) -> Html {
                 }
             </div>
             <Welcome state={state.clone()} deed={props.deed.clone()} />
-            if is_empty || *adding {
-                <NewUnit
-                    is_first={is_empty}
-                    deed={props.deed.clone()}
-                    on_close={(!is_empty).then_some(on_close)}
-                />
+            if is_empty {
+                <div class="columns is-side">
+                    <NewUnit is_first={true} deed={props.deed.clone()} on_close={None::<Callback<()>>} />
+                    <div class="stack">
+                        <Demo state={state.clone()} deed={props.deed.clone()} />
+                        <Data state={state.clone()} deed={props.deed.clone()} is_folded={true} />
+                    </div>
+                </div>
+            } else {
+                if *adding {
+                    <NewUnit is_first={false} deed={props.deed.clone()} on_close={Some(on_close)} />
+                }
+                <Demo state={state.clone()} deed={props.deed.clone()} />
             }
-            <Demo state={state.clone()} deed={props.deed.clone()} />
             if units.len() >= SEARCH_FROM {
                 <TextField
                     id="unit-search"
@@ -109,7 +115,9 @@ pub fn Units(props: &UnitsProps) -> Html {
                     <p data-testid="no-unit-found">{ format!("No unit is called “{}”.", search.trim()) }</p>
                 }
             }
-            <Data state={state.clone()} deed={props.deed.clone()} is_folded={true} />
+            if !is_empty {
+                <Data state={state.clone()} deed={props.deed.clone()} is_folded={true} />
+            }
         </main>
     }
 }

@@ -24,12 +24,8 @@ pub fn Welcome(props: &UnitsProps) -> Html {
     html! {
         <Caution grade={Grade::Danger} title="this work can kill" testid="general-caution">
             <p>
-                { "Wheels that start to turn, hot oil, oil injected through the skin, a machine that rolls. The unit’s manual, \
-                   local rules and licensed practice come before anything this app says." }
-            </p>
-            <p class="small">
-                { "It calculates what a healthy drive should show and which causes fit. Each step says its own cautions where \
-                   the hand goes." }
+                { "Moving wheels, hot oil, oil through the skin, a machine that rolls. The unit’s manual, local rules and \
+                   licensed practice come first." }
             </p>
             <div class="actions">
                 <button type="button" class="button" onclick={on_read} data-testid="cautions-read">{ "Understood" }</button>
@@ -48,7 +44,7 @@ pub fn Demo(props: &UnitsProps) -> Html {
     if props.state.has_demo() {
         html! {
             <Caution title="Demo data" testid="demo-notice">
-                <p>{ "Units named Tamarisk belong to an invented plant-hire yard. Try anything on them." }</p>
+                <p>{ "The units marked demo belong to Tamarisk, an invented plant-hire yard. Try anything on them." }</p>
                 <div class="actions">
                     <button type="button" class="button" onclick={wish(|| Deed::RemoveDemo)} data-testid="remove-demo">
                         { "Remove the demo" }
