@@ -79,6 +79,14 @@ function drawn() {
   });
 }
 
+/** Why a start failed, in words, with what to do where that is known. */
+function inWords(error) {
+  const what = error?.message ?? String(error);
+  if (!navigator.onLine) return `There is no network, and the app is not stored on this device yet. (${what})`;
+  if (error instanceof TypeError) return `A file of the app could not be fetched: check the connection. (${what})`;
+  return what;
+}
+
 async function start() {
   let lastSign = Date.now();
   const stalled = setInterval(() => {
@@ -176,6 +184,6 @@ function checkForUpdates(registration) {
 }
 
 start()
-  .catch((error) => window.lowsideFailed(`${error?.message ?? error}`))
+  .catch((error) => window.lowsideFailed(inWords(error)))
   // After a failed start too: a newer version may be the cure.
   .finally(keepOfflineCopy);

@@ -7,7 +7,7 @@
   "use strict";
   var PREFIX = "lowside/";
   var messages = [];
-  var screen = null;
+  var panel = null;
 
   function version() {
     return document.documentElement.getAttribute("data-version") || "unknown";
@@ -122,15 +122,15 @@
   }
 
   function show() {
-    if (!screen) {
-      screen = build();
-      document.body.insertBefore(screen, document.body.firstChild);
+    if (!panel) {
+      panel = build();
+      document.body.insertBefore(panel, document.body.firstChild);
       var shell = document.getElementById("shell");
       if (shell) shell.hidden = true;
       document.documentElement.setAttribute("data-failed", "yes");
       window.scrollTo(0, 0);
     }
-    var list = screen.querySelector(".failure-reasons");
+    var list = panel.querySelector(".failure-reasons");
     list.textContent = "";
     messages.forEach(function (message) { list.appendChild(element("li", "", message)); });
   }

@@ -122,21 +122,29 @@ mod precache {
     mod tests {
         use super::*;
 
-        fn build(name: &str, files: &[(&str, &str)]) -> std::path::PathBuf {
+        /// A folder that goes when the test ends.
+        struct Folder(std::path::PathBuf);
+
+        impl Drop for Folder {
+            fn drop(&mut self) {
+                let _ = fs::remove_dir_all(&self.0);
+            }
+        }
+
+        fn build(name: &str, files: &[(&str, &str)]) -> Folder {
             let dir = std::env::temp_dir()
                 .join(format!("lowside-precache-{}-{name}", std::process::id()));
-            let _ = fs::remove_dir_all(&dir);
             for (path, content) in files {
                 let path = dir.join(path);
                 fs::create_dir_all(path.parent().expect("has a parent")).expect("writable");
                 fs::write(path, content).expect("writable");
             }
-            dir
+            Folder(dir)
         }
 
-        fn written(dir: &Path) -> String {
-            run(dir).expect("builds");
-            fs::read_to_string(dir.join(SERVICE_WORKER)).expect("was written")
+        fn written(folder: &Folder) -> String {
+            run(&folder.0).expect("builds");
+            fs::read_to_string(folder.0.join(SERVICE_WORKER)).expect("was written")
         }
 
         const PAGE_TEXT: &str = "<html data-version=\"@LOWSIDE_VERSION@\">";
@@ -165,7 +173,7 @@ mod precache {
         fn page_carries_the_version_and_is_listed_as_served() {
             let dir = build("page", &[(PAGE, PAGE_TEXT)]);
             let worker = written(&dir);
-            let page = fs::read(dir.join(PAGE)).expect("is there");
+            let page = fs::read(dir.0.join(PAGE)).expect("is there");
             assert!(String::from_utf8_lossy(&page).contains(env!("CARGO_PKG_VERSION")));
             assert!(worker.contains(&hex(&Sha256::digest(&page))));
         }
@@ -183,10 +191,10 @@ mod precache {
 
         #[test]
         fn refuses_a_folder_without_page_and_names_that_need_escaping() {
-            let none = run(&build("none", &[("a.js", "1")])).expect_err("no page");
+            let none = run(&build("none", &[("a.js", "1")]).0).expect_err("no page");
             assert!(none.to_string().contains(PAGE));
             let odd =
-                run(&build("odd", &[(PAGE, PAGE_TEXT), ("a b.js", "1")])).expect_err("a space");
+                run(&build("odd", &[(PAGE, PAGE_TEXT), ("a b.js", "1")]).0).expect_err("a space");
             assert!(odd.to_string().contains("a b.js"));
         }
     }

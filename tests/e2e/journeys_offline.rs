@@ -46,6 +46,25 @@ async fn after_one_visit_the_app_works_without_its_server() {
     );
 }
 
+/// The connection breaks during the first visit: the app says that it is not stored yet, and the next visit stores it.
+#[tokio::test]
+async fn a_first_copy_that_breaks_off_is_made_at_the_next_start() {
+    let rig = Rig::new(PHONE).await;
+    rig.site.break_off("worker.js");
+    rig.load().await;
+    rig.wait_for_app().await;
+    rig.wait_until(
+        "the app says so",
+        "document.documentElement.dataset.offline === 'failed'",
+    )
+    .await;
+    let caches = rig.js_async(CACHES, vec![]).await;
+    assert_eq!(caches, json!([]), "half a copy was kept");
+    rig.site.mend();
+    rig.reload().await;
+    rig.wait_for_offline_copy().await;
+}
+
 #[tokio::test]
 async fn an_update_waits_until_it_is_asked_for() {
     let rig = Rig::open(PHONE).await;
