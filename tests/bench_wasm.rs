@@ -26,7 +26,15 @@ fn speed_in_wasm() {
     let visit = work::call();
     let mut lead = 0.0;
     let full = time(&mut || lead = work::assessment(&visit));
-    console_log!("wasm: {:.0} solves/s ({:.2} µs each, {:.1} iterations)", N as f64 / solve, 1e6 * solve / N as f64, iterations);
-    console_log!("wasm: full assessment, 12 readings in 10 conditions: {:.1} ms", 1e3 * full);
+    console_log!(
+        "wasm: {:.0} solves/s ({:.2} µs each, {:.1} iterations)",
+        N as f64 / solve,
+        1e6 * solve / N as f64,
+        iterations
+    );
+    console_log!(
+        "wasm: full assessment, 12 readings in 10 conditions: {:.1} ms",
+        1e3 * full
+    );
     assert!(lead > 0.0 && lead <= 1.0);
 }

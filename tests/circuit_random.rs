@@ -1,7 +1,10 @@
 //! Random machines, conditions and severities: the solver ends with a state that balances, or with a stated reason.
 //! Prints iteration counts and the share of each outcome (`cargo test --test circuit_random -- --nocapture`).
 
-use lowside::circuit::{ControlBuild, DumpBuild, FilterBuild, Layout, Network, NoState, Param, Params, Route, Scale, healthy};
+use lowside::circuit::{
+    ControlBuild, DumpBuild, FilterBuild, Layout, Network, NoState, Param, Params, Route, Scale,
+    healthy,
+};
 
 /// A small seeded generator (splitmix64), so that every run sees the same machines.
 struct Seeded(u64);
@@ -31,8 +34,20 @@ impl Seeded {
 fn layout(r: &mut Seeded) -> Layout {
     use ControlBuild::*;
     Layout {
-        control: r.of(&[Direct, Feedback, Pilot, Electric, SpeedSensing, NoFeedback, ThreePosition]),
-        filter: r.of(&[FilterBuild::Suction, FilterBuild::GaugeBefore, FilterBuild::GaugeAfter]),
+        control: r.of(&[
+            Direct,
+            Feedback,
+            Pilot,
+            Electric,
+            SpeedSensing,
+            NoFeedback,
+            ThreePosition,
+        ]),
+        filter: r.of(&[
+            FilterBuild::Suction,
+            FilterBuild::GaugeBefore,
+            FilterBuild::GaugeAfter,
+        ]),
         dump: r.of(&[DumpBuild::Gallery, DumpBuild::Across, DumpBuild::Case]),
         relief_to_tank: r.chance(0.3),
         separate_cases: r.chance(0.3),
@@ -51,10 +66,26 @@ fn machine(r: &mut Seeded) -> Params {
     }
     t[Param::Atmosphere as usize] = r.between(0.6, 1.02);
     t[Param::Viscosity as usize] = r.between(-1.6, 3.5).exp();
-    t[Param::Lever as usize] = if r.chance(0.25) { 0.0 } else { r.between(-1.0, 1.0) };
-    t[Param::Load as usize] = if r.chance(0.5) { 0.0 } else { r.between(0.0, 350.0) };
-    t[Param::Push as usize] = if r.chance(0.7) { 0.0 } else { r.between(-150.0, 150.0) };
-    t[Param::NullControl as usize] = if r.chance(0.5) { 0.0 } else { r.between(-0.08, 0.08) };
+    t[Param::Lever as usize] = if r.chance(0.25) {
+        0.0
+    } else {
+        r.between(-1.0, 1.0)
+    };
+    t[Param::Load as usize] = if r.chance(0.5) {
+        0.0
+    } else {
+        r.between(0.0, 350.0)
+    };
+    t[Param::Push as usize] = if r.chance(0.7) {
+        0.0
+    } else {
+        r.between(-150.0, 150.0)
+    };
+    t[Param::NullControl as usize] = if r.chance(0.5) {
+        0.0
+    } else {
+        r.between(-0.08, 0.08)
+    };
     t[Param::OperatingSet as usize] = t[Param::ReliefSet as usize] * r.between(0.7, 1.05);
     t[Param::ServoFull as usize] = t[Param::ServoStart as usize] + r.between(2.0, 15.0);
     t[Param::SenseFull as usize] = t[Param::SenseStart as usize] + r.between(200.0, 1500.0);
@@ -106,9 +137,16 @@ fn every_machine_ends_with_a_state_or_a_reason() {
         let theta = machine(&mut r);
         match net.solve(&theta, None) {
             Ok(s) => {
-                assert!(s.state.iter().all(|v| v.is_finite()), "machine {i}: not a number in the state");
+                assert!(
+                    s.state.iter().all(|v| v.is_finite()),
+                    "machine {i}: not a number in the state"
+                );
                 let flow = theta[Param::PumpDisp as usize] * theta[Param::Speed as usize] * 1e-3;
-                assert!(s.imbalance < 1e-5 * (1.0 + flow), "machine {i}: {} L/min left over", s.imbalance);
+                assert!(
+                    s.imbalance < 1e-5 * (1.0 + flow),
+                    "machine {i}: {} L/min left over",
+                    s.imbalance
+                );
                 iterations.push(s.iterations);
                 match s.route {
                     Route::Direct => direct += 1,
@@ -117,12 +155,17 @@ fn every_machine_ends_with_a_state_or_a_reason() {
                 }
             }
             Err(NoState::Hunts) => hunts += 1,
-            Err(NoState::BadFigure) => panic!("machine {i}: a valid machine was refused: {:?} {theta:?}", net.layout()),
+            Err(NoState::BadFigure) => panic!(
+                "machine {i}: a valid machine was refused: {:?} {theta:?}",
+                net.layout()
+            ),
         }
     }
     iterations.sort_unstable();
     let at = |q: f64| iterations[((iterations.len() - 1) as f64 * q) as usize];
-    println!("{MACHINES} machines: direct {direct}, from rest {from_rest}, run up {run_up}, would hunt {hunts}");
+    println!(
+        "{MACHINES} machines: direct {direct}, from rest {from_rest}, run up {run_up}, would hunt {hunts}"
+    );
     println!(
         "iterations: mean {:.1}, median {}, p99 {}, most {}",
         iterations.iter().map(|i| f64::from(*i)).sum::<f64>() / iterations.len() as f64,
@@ -130,7 +173,10 @@ fn every_machine_ends_with_a_state_or_a_reason() {
         at(0.99),
         at(1.0)
     );
-    assert!((hunts as usize) < MACHINES / 500, "{hunts} of {MACHINES} without a state");
+    assert!(
+        (hunts as usize) < MACHINES / 500,
+        "{hunts} of {MACHINES} without a state"
+    );
 }
 
 #[test]
@@ -147,8 +193,12 @@ fn a_warm_start_gives_the_same_state() {
     for _ in 0..2_000 {
         let net = Network::new(layout(&mut r));
         let theta = machine(&mut r);
-        let Ok(cold) = net.solve(&theta, None) else { continue };
-        let warm = net.solve(&theta, Some(&cold.state)).expect("a state was there");
+        let Ok(cold) = net.solve(&theta, None) else {
+            continue;
+        };
+        let warm = net
+            .solve(&theta, Some(&cold.state))
+            .expect("a state was there");
         for (a, b) in cold.state.iter().zip(warm.state) {
             assert!((a - b).abs() < 1e-5 * (1.0 + a.abs()), "{a} {b}");
         }

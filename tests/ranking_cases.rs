@@ -10,7 +10,19 @@ use support::*;
 
 fn print(a: &Assessment) {
     for w in &a.windows {
-        println!("  {:12} {:.2} {:.2} {:.2} read {:?} {:?} {:?} widest {} | {} {:?}", w.reading, w.low, w.middle, w.high, w.read, w.standing, w.source, w.widest, w.basis, w.remark);
+        println!(
+            "  {:12} {:.2} {:.2} {:.2} read {:?} {:?} {:?} widest {} | {} {:?}",
+            w.reading,
+            w.low,
+            w.middle,
+            w.high,
+            w.read,
+            w.standing,
+            w.source,
+            w.widest,
+            w.basis,
+            w.remark
+        );
     }
     for c in a.causes.iter().take(6) {
         println!("  {:5.1} % {:?} {}", 100.0 * c.probability, c.ids, c.title);
@@ -55,7 +67,14 @@ fn a_relief_held_open_keeps_the_return_normal() {
 
 #[test]
 fn a_weak_forward_direction_points_at_one_cartridge() {
-    let held = |d, s| condition(Doing::Held, d, Lever::Share(s), Measured(base(1500.0, lowside::quantity::Kind::RotationalSpeed)));
+    let held = |d, s| {
+        condition(
+            Doing::Held,
+            d,
+            Lever::Share(s),
+            Measured(base(1500.0, lowside::quantity::Kind::RotationalSpeed)),
+        )
+    };
     let v = visit(vec![
         reading("c", Port::Charge, neutral(HighIdle), 24.6),
         reading("f5", Port::LoopA, held(Forward, 0.05), 42.0),
@@ -66,12 +85,23 @@ fn a_weak_forward_direction_points_at_one_cartridge() {
     ]);
     let a = assess(&roller(), &v, &[]);
     print(&a);
-    assert!(leader(&a).contains(&FaultId::CheckALeaking), "{:?}", leader(&a));
+    assert!(
+        leader(&a).contains(&FaultId::CheckALeaking),
+        "{:?}",
+        leader(&a)
+    );
 }
 
 #[test]
 fn a_healthy_machine_is_called_healthy_when_it_is() {
-    let held = |d, s| condition(Doing::Held, d, Lever::Share(s), Measured(base(1500.0, lowside::quantity::Kind::RotationalSpeed)));
+    let held = |d, s| {
+        condition(
+            Doing::Held,
+            d,
+            Lever::Share(s),
+            Measured(base(1500.0, lowside::quantity::Kind::RotationalSpeed)),
+        )
+    };
     let free = |d| condition(Doing::Free, d, Lever::Half, HighIdle);
     let v = visit(vec![
         reading("c-low", Port::Charge, neutral(LowIdle), 23.4),
@@ -85,5 +115,10 @@ fn a_healthy_machine_is_called_healthy_when_it_is() {
     ]);
     let a = assess(&roller(), &v, &[]);
     print(&a);
-    assert!(a.windows.iter().all(|w| w.standing == lowside::assessment::Standing::Within || w.standing == lowside::assessment::Standing::Edge));
+    assert!(
+        a.windows
+            .iter()
+            .all(|w| w.standing == lowside::assessment::Standing::Within
+                || w.standing == lowside::assessment::Standing::Edge)
+    );
 }

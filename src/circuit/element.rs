@@ -1,11 +1,11 @@
 //! The circuit as data: one row per element, saying which law acts between which nodes, what else it looks at, and which
 //! parameters it uses. To add an element: one row here (and its law in `law.rs`, if no present law fits).
 
-use super::layout::{ControlBuild, DumpBuild, FilterBuild, Layout};
 use super::law::{self, Servo};
+use super::layout::{ControlBuild, DumpBuild, FilterBuild, Layout};
 use super::node::Node;
 use super::param::Param;
-use super::real::{Real, positive};
+use super::real::{Real, limited, positive};
 
 /// What kind of element a row is.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -67,61 +67,266 @@ use Node::*;
 use Param as P;
 
 fn two(law: Law, from: Node, to: Node, params: &'static [Param]) -> Element {
-    Element { law, from, to, inputs: [from, to, Tank, Tank], arity: 2, params }
+    Element {
+        law,
+        from,
+        to,
+        inputs: [from, to, Tank, Tank],
+        arity: 2,
+        params,
+    }
 }
 
 /// Parameters of the stroke, shared by the pump and the readings of servo and signal.
 pub const STROKE: &[Param] = &[
-    P::PumpDisp, P::Speed, P::InputGrip, P::Atmosphere, P::Lever, P::SignalForward, P::SignalReverse, P::GainForward,
-    P::GainReverse, P::NullControl, P::NullServo, P::PilotSupply, P::ServoStart, P::ServoFull, P::ServoLoad,
-    P::SenseStart, P::SenseFull, P::Inching, P::LimiterA, P::LimiterB,
+    P::PumpDisp,
+    P::Speed,
+    P::InputGrip,
+    P::Atmosphere,
+    P::Lever,
+    P::SignalForward,
+    P::SignalReverse,
+    P::GainForward,
+    P::GainReverse,
+    P::NullControl,
+    P::NullServo,
+    P::PilotSupply,
+    P::ServoStart,
+    P::ServoFull,
+    P::ServoLoad,
+    P::SenseStart,
+    P::SenseFull,
+    P::Inching,
+    P::LimiterA,
+    P::LimiterB,
 ];
 
 /// The rows of a layout.
 pub fn elements(layout: &Layout) -> Vec<Element> {
-    let relief_to = if layout.relief_to_tank { Tank } else { PumpCase };
+    let relief_to = if layout.relief_to_tank {
+        Tank
+    } else {
+        PumpCase
+    };
     let (dump_a, dump_b) = match layout.dump {
         DumpBuild::Gallery => (Gallery, Gallery),
         DumpBuild::Across => (BPump, APump),
         DumpBuild::Case => (PumpCase, PumpCase),
     };
-    let motor_drain_to = if layout.separate_cases { Tank } else { PumpCase };
-    let wide = |law, from, to, inputs, arity, params| Element { law, from, to, inputs, arity, params };
+    let motor_drain_to = if layout.separate_cases {
+        Tank
+    } else {
+        PumpCase
+    };
+    let wide = |law, from, to, inputs, arity, params| Element {
+        law,
+        from,
+        to,
+        inputs,
+        arity,
+        params,
+    };
     vec![
-        two(Law::Suction, Tank, Inlet, &[P::SuctionLaminar, P::SuctionTurbulent, P::FilterLaminar, P::Viscosity]),
-        two(Law::ChargePump, Inlet, ChargeOut, &[P::ChargeDisp, P::Speed, P::InputGrip, P::ChargeDrive, P::ChargeFeed, P::Air, P::Atmosphere]),
-        two(Law::ChargeSlip, ChargeOut, Inlet, &[P::ChargeSlip, P::Viscosity]),
-        two(Law::ChargeFilter, ChargeOut, Gallery, &[P::FilterLaminar, P::Viscosity]),
-        two(Law::NeutralRelief, Gallery, relief_to, &[P::ReliefSet, P::ReliefGain, P::ReliefHeld]),
-        two(Law::Consumers, Gallery, Tank, &[P::Consumers, P::ConsumerLeak]),
-        two(Law::Control, Gallery, PumpCase, &[P::ControlLeak, P::ServoLeak, P::Lever, P::Viscosity]),
+        two(
+            Law::Suction,
+            Tank,
+            Inlet,
+            &[
+                P::SuctionLaminar,
+                P::SuctionTurbulent,
+                P::FilterLaminar,
+                P::Viscosity,
+            ],
+        ),
+        two(
+            Law::ChargePump,
+            Inlet,
+            ChargeOut,
+            &[
+                P::ChargeDisp,
+                P::Speed,
+                P::InputGrip,
+                P::ChargeDrive,
+                P::ChargeFeed,
+                P::Air,
+                P::Atmosphere,
+            ],
+        ),
+        two(
+            Law::ChargeSlip,
+            ChargeOut,
+            Inlet,
+            &[P::ChargeSlip, P::Viscosity],
+        ),
+        two(
+            Law::ChargeFilter,
+            ChargeOut,
+            Gallery,
+            &[P::FilterLaminar, P::Viscosity],
+        ),
+        two(
+            Law::NeutralRelief,
+            Gallery,
+            relief_to,
+            &[P::ReliefSet, P::ReliefGain, P::ReliefHeld],
+        ),
+        two(
+            Law::Consumers,
+            Gallery,
+            Tank,
+            &[P::Consumers, P::ConsumerLeak],
+        ),
+        two(
+            Law::Control,
+            Gallery,
+            PumpCase,
+            &[P::ControlLeak, P::ServoLeak, P::Lever, P::Viscosity],
+        ),
         two(Law::Check(P::CheckA), Gallery, APump, &[P::CheckA]),
         two(Law::Check(P::CheckB), Gallery, BPump, &[P::CheckB]),
         two(Law::Seat(P::CheckLeakA), APump, Gallery, &[P::CheckLeakA]),
         two(Law::Seat(P::CheckLeakB), BPump, Gallery, &[P::CheckLeakB]),
-        two(Law::LoopRelief(P::LoopReliefA), APump, dump_a, &[P::LoopReliefA, P::LoopOverride, P::PumpDisp]),
-        two(Law::LoopRelief(P::LoopReliefB), BPump, dump_b, &[P::LoopReliefB, P::LoopOverride, P::PumpDisp]),
+        two(
+            Law::LoopRelief(P::LoopReliefA),
+            APump,
+            dump_a,
+            &[P::LoopReliefA, P::LoopOverride, P::PumpDisp],
+        ),
+        two(
+            Law::LoopRelief(P::LoopReliefB),
+            BPump,
+            dump_b,
+            &[P::LoopReliefB, P::LoopOverride, P::PumpDisp],
+        ),
         two(Law::Seat(P::Bypass), APump, BPump, &[P::Bypass]),
-        wide(Law::Pump, BPump, APump, [BPump, APump, Gallery, PumpCase], 4, STROKE),
-        two(Law::Leak(P::PumpLeak), APump, PumpCase, &[P::PumpLeak, P::Viscosity]),
-        two(Law::Leak(P::PumpLeak), BPump, PumpCase, &[P::PumpLeak, P::Viscosity]),
-        two(Law::Leak(P::PumpAcross), APump, BPump, &[P::PumpAcross, P::Viscosity]),
-        two(Law::Line(P::LineALaminar, P::LineATurbulent), APump, AMotor, &[P::LineALaminar, P::LineATurbulent, P::Viscosity]),
-        two(Law::Line(P::LineBLaminar, P::LineBTurbulent), BMotor, BPump, &[P::LineBLaminar, P::LineBTurbulent, P::Viscosity]),
-        wide(Law::Motor, AMotor, BMotor, [AMotor, BMotor, Shaft, Tank], 3, &[P::MotorDisp, P::MotorShift, P::Atmosphere]),
-        two(Law::Leak(P::MotorLeak), AMotor, MotorCase, &[P::MotorLeak, P::Viscosity]),
-        two(Law::Leak(P::MotorLeak), BMotor, MotorCase, &[P::MotorLeak, P::Viscosity]),
-        two(Law::Leak(P::MotorAcross), AMotor, BMotor, &[P::MotorAcross, P::Viscosity]),
-        wide(Law::Flushing(P::ShuttleStuckA), AMotor, MotorCase, [AMotor, MotorCase, BMotor, Tank], 3, FLUSHING_A),
-        wide(Law::Flushing(P::ShuttleStuckB), BMotor, MotorCase, [BMotor, MotorCase, AMotor, Tank], 3, FLUSHING_B),
-        two(Law::Drain, MotorCase, motor_drain_to, &[P::MotorCaseLine, P::Viscosity]),
-        two(Law::Line(P::PumpCaseLine, P::PumpCaseTurbulent), PumpCase, Tank, &[P::PumpCaseLine, P::PumpCaseTurbulent, P::Viscosity]),
-        wide(Law::Torque, Tank, Shaft, [AMotor, BMotor, Shaft, Tank], 3, &[P::MotorShift, P::Load, P::Push, P::Friction, P::BrakeDrag, P::Drag, P::Viscosity, P::DriveGrip]),
+        wide(
+            Law::Pump,
+            BPump,
+            APump,
+            [BPump, APump, Gallery, PumpCase],
+            4,
+            STROKE,
+        ),
+        two(
+            Law::Leak(P::PumpLeak),
+            APump,
+            PumpCase,
+            &[P::PumpLeak, P::Viscosity],
+        ),
+        two(
+            Law::Leak(P::PumpLeak),
+            BPump,
+            PumpCase,
+            &[P::PumpLeak, P::Viscosity],
+        ),
+        two(
+            Law::Leak(P::PumpAcross),
+            APump,
+            BPump,
+            &[P::PumpAcross, P::Viscosity],
+        ),
+        two(
+            Law::Line(P::LineALaminar, P::LineATurbulent),
+            APump,
+            AMotor,
+            &[P::LineALaminar, P::LineATurbulent, P::Viscosity],
+        ),
+        two(
+            Law::Line(P::LineBLaminar, P::LineBTurbulent),
+            BMotor,
+            BPump,
+            &[P::LineBLaminar, P::LineBTurbulent, P::Viscosity],
+        ),
+        wide(
+            Law::Motor,
+            AMotor,
+            BMotor,
+            [AMotor, BMotor, Shaft, Tank],
+            3,
+            &[P::MotorDisp, P::MotorShift, P::Atmosphere],
+        ),
+        two(
+            Law::Leak(P::MotorLeak),
+            AMotor,
+            MotorCase,
+            &[P::MotorLeak, P::Viscosity],
+        ),
+        two(
+            Law::Leak(P::MotorLeak),
+            BMotor,
+            MotorCase,
+            &[P::MotorLeak, P::Viscosity],
+        ),
+        two(
+            Law::Leak(P::MotorAcross),
+            AMotor,
+            BMotor,
+            &[P::MotorAcross, P::Viscosity],
+        ),
+        wide(
+            Law::Flushing(P::ShuttleStuckA),
+            AMotor,
+            MotorCase,
+            [AMotor, MotorCase, BMotor, Tank],
+            3,
+            FLUSHING_A,
+        ),
+        wide(
+            Law::Flushing(P::ShuttleStuckB),
+            BMotor,
+            MotorCase,
+            [BMotor, MotorCase, AMotor, Tank],
+            3,
+            FLUSHING_B,
+        ),
+        two(
+            Law::Drain,
+            MotorCase,
+            motor_drain_to,
+            &[P::MotorCaseLine, P::Viscosity],
+        ),
+        two(
+            Law::Line(P::PumpCaseLine, P::PumpCaseTurbulent),
+            PumpCase,
+            Tank,
+            &[P::PumpCaseLine, P::PumpCaseTurbulent, P::Viscosity],
+        ),
+        wide(
+            Law::Torque,
+            Tank,
+            Shaft,
+            [AMotor, BMotor, Shaft, Tank],
+            3,
+            &[
+                P::MotorShift,
+                P::Load,
+                P::Push,
+                P::Friction,
+                P::BrakeDrag,
+                P::Drag,
+                P::Viscosity,
+                P::DriveGrip,
+            ],
+        ),
     ]
 }
 
-const FLUSHING_A: &[Param] = &[P::OperatingSet, P::OperatingGain, P::FlushOrifice, P::ShuttleTravel, P::ShuttleSpring, P::ShuttleStuckA];
-const FLUSHING_B: &[Param] = &[P::OperatingSet, P::OperatingGain, P::FlushOrifice, P::ShuttleTravel, P::ShuttleSpring, P::ShuttleStuckB];
+const FLUSHING_A: &[Param] = &[
+    P::OperatingSet,
+    P::OperatingGain,
+    P::FlushOrifice,
+    P::ShuttleTravel,
+    P::ShuttleSpring,
+    P::ShuttleStuckA,
+];
+const FLUSHING_B: &[Param] = &[
+    P::OperatingSet,
+    P::OperatingGain,
+    P::FlushOrifice,
+    P::ShuttleTravel,
+    P::ShuttleSpring,
+    P::ShuttleStuckB,
+];
 
 /// Share of the pressure filter's resistance that a filter in the suction line has: it is made much larger.
 const SUCTION_FILTER_SHARE: f64 = 0.2;
@@ -132,7 +337,11 @@ pub fn flow<S: Real>(law: Law, layout: &Layout, v: &[S; 4], g: &impl Fn(Param) -
     let dp = v[0] - v[1];
     match law {
         Law::Suction => {
-            let filter = if layout.filter == FilterBuild::Suction { SUCTION_FILTER_SHARE } else { 0.0 };
+            let filter = if layout.filter == FilterBuild::Suction {
+                SUCTION_FILTER_SHARE
+            } else {
+                0.0
+            };
             let r1 = (g(P::SuctionLaminar) + g(P::FilterLaminar) * filter) * g(P::Viscosity);
             law::line(dp, r1, g(P::SuctionTurbulent))
         }
@@ -147,12 +356,18 @@ pub fn flow<S: Real>(law: Law, layout: &Layout, v: &[S; 4], g: &impl Fn(Param) -
             FilterBuild::Suction => dp * 2000.0,
             _ => law::filter(dp, g(P::FilterLaminar), g(P::Viscosity)),
         },
-        Law::NeutralRelief => law::relief(dp, g(P::ReliefSet), g(P::ReliefGain)) + law::orifice(dp, g(P::ReliefHeld)),
+        Law::NeutralRelief => {
+            law::relief(dp, g(P::ReliefSet), g(P::ReliefGain)) + law::orifice(dp, g(P::ReliefHeld))
+        }
         Law::Consumers => law::orifice(dp, g(P::Consumers) + g(P::ConsumerLeak)),
         Law::Control => {
             let lever = g(P::Lever);
             let stroked = (lever * lever + 1e-6).sqrt();
-            law::laminar(dp, g(P::ControlLeak) + g(P::ServoLeak) * stroked, g(P::Viscosity))
+            law::laminar(
+                dp,
+                g(P::ControlLeak) + g(P::ServoLeak) * stroked,
+                g(P::Viscosity),
+            )
         }
         Law::Check(size) => law::check(dp, g(size)),
         Law::Seat(size) => law::orifice(dp, g(size)),
@@ -166,12 +381,23 @@ pub fn flow<S: Real>(law: Law, layout: &Layout, v: &[S; 4], g: &impl Fn(Param) -
         Law::Line(r1, r2) => law::line(dp, g(r1) * g(P::Viscosity), g(r2)),
         Law::Motor => {
             let (forward, back) = (positive(v[2], 1e-3), positive(-v[2], 1e-3));
-            let filled = forward * law::fill(v[0], g(P::Atmosphere)) - back * law::fill(v[1], g(P::Atmosphere));
+            let filled = forward * law::fill(v[0], g(P::Atmosphere))
+                - back * law::fill(v[1], g(P::Atmosphere));
             g(P::MotorDisp) * g(P::MotorShift) * filled
         }
         Law::Flushing(stuck) => {
-            let open = law::shuttle(v[2] - v[0], g(P::ShuttleSpring), g(P::ShuttleTravel), g(stuck));
-            open * law::relief_behind_orifice(dp, g(P::OperatingSet), g(P::OperatingGain), g(P::FlushOrifice))
+            let open = law::shuttle(
+                v[2] - v[0],
+                g(P::ShuttleSpring),
+                g(P::ShuttleTravel),
+                g(stuck),
+            );
+            open * law::relief_behind_orifice(
+                dp,
+                g(P::OperatingSet),
+                g(P::OperatingGain),
+                g(P::FlushOrifice),
+            )
         }
         Law::Drain => law::laminar(dp, S::constant(1.0) / g(P::MotorCaseLine), g(P::Viscosity)),
         Law::Torque => {
@@ -184,6 +410,9 @@ pub fn flow<S: Real>(law: Law, layout: &Layout, v: &[S; 4], g: &impl Fn(Param) -
         }
     }
 }
+
+/// Stroke at the mechanical stops, share of full stroke: a little over 1, since stops are set with a tolerance.
+const STOPS: f64 = 1.03;
 
 /// Stroke asked by lever, signal and linkage, before the servo (signed share of full stroke).
 #[inline(always)]
@@ -199,16 +428,21 @@ pub fn asked<S: Real>(layout: &Layout, g: &impl Fn(Param) -> S) -> S {
     };
     let plain = lever * gain;
     let commanded = match layout.control {
-        ControlBuild::Direct | ControlBuild::Feedback | ControlBuild::NoFeedback => plain,
+        ControlBuild::Direct | ControlBuild::Feedback => plain,
         ControlBuild::Pilot => plain * signal * g(P::PilotSupply),
-        ControlBuild::Electric => plain * signal,
+        ControlBuild::Electric | ControlBuild::NoFeedback => plain * signal,
         ControlBuild::SpeedSensing => {
-            let share = law::ramp(g(P::Speed) * g(P::InputGrip), g(P::SenseStart), g(P::SenseFull));
+            let share = law::ramp(
+                g(P::Speed) * g(P::InputGrip),
+                g(P::SenseStart),
+                g(P::SenseFull),
+            );
             sense_direction(lever) * gain * signal * share * g(P::Inching)
         }
         ControlBuild::ThreePosition => sense_direction(lever) * gain * signal,
     };
-    commanded + g(P::NullControl)
+    // The swash ends at its stops, whatever is asked.
+    limited(commanded + g(P::NullControl), S::constant(STOPS), 0.005)
 }
 
 /// Direction only: a lever past a twentieth of its travel counts as fully asked.
@@ -223,14 +457,26 @@ pub fn stroke<S: Real>(layout: &Layout, v: &[S; 4], g: &impl Fn(Param) -> S) -> 
     let asked = asked(layout, g);
     let offset = match layout.control {
         // Feedback takes most of a servo offset back, unless the ports are bridged.
-        ControlBuild::Feedback | ControlBuild::Pilot | ControlBuild::Electric if !layout.bridged => g(P::NullServo) * 0.2,
+        ControlBuild::Feedback | ControlBuild::Pilot | ControlBuild::Electric
+            if !layout.bridged =>
+        {
+            g(P::NullServo) * 0.2
+        }
         _ => g(P::NullServo),
     };
     let at_servo = match layout.control {
         ControlBuild::Direct => asked + offset,
         _ => {
-            let supply = if layout.control == ControlBuild::Pilot { S::constant(1.0) } else { g(P::PilotSupply) };
-            let towards = if asked.value() >= 0.0 { v[1] - v[0] } else { v[0] - v[1] };
+            let supply = if layout.control == ControlBuild::Pilot {
+                S::constant(1.0)
+            } else {
+                g(P::PilotSupply)
+            };
+            let towards = if asked.value() >= 0.0 {
+                v[1] - v[0]
+            } else {
+                v[0] - v[1]
+            };
             let load = positive(towards, 1.0) * g(P::ServoLoad) * 0.01;
             law::servo_stroke(&Servo {
                 asked,

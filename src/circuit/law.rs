@@ -62,7 +62,8 @@ pub fn relief_behind_orifice<S: Real>(dp: S, set: S, gain: S, k: S) -> S {
 /// Share of its displacement that a pump or motor fills from an inlet at this gauge pressure.
 #[inline(always)]
 pub fn fill<S: Real>(inlet: S, atmosphere: S) -> S {
-    S::constant(1.0) - positive(S::constant(FILL_LIMIT) - inlet - atmosphere, 0.01) * (1.0 / FILL_LIMIT)
+    S::constant(1.0)
+        - positive(S::constant(FILL_LIMIT) - inlet - atmosphere, 0.01) * (1.0 / FILL_LIMIT)
 }
 
 /// Charge filter with its bypass.

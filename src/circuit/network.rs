@@ -29,7 +29,10 @@ fn gather<S: Real>(element: &Element, x: &State, lane: impl Fn(f64, usize) -> S)
 impl Network {
     /// The circuit of a layout.
     pub fn new(layout: Layout) -> Network {
-        Network { layout, elements: elements(&layout) }
+        Network {
+            layout,
+            elements: elements(&layout),
+        }
     }
 
     /// Its layout.
@@ -87,9 +90,15 @@ impl Network {
         j: &mut Matrix,
     ) {
         let v = gather(e, x, |value, lane| {
-            if lane < N { Dual::<N>::input(value, lane) } else { Dual::constant(value) }
+            if lane < N {
+                Dual::<N>::input(value, lane)
+            } else {
+                Dual::constant(value)
+            }
         });
-        let q = flow(e.law, &self.layout, &v, &|p: Param| Dual::<N>::constant(theta[p as usize]));
+        let q = flow(e.law, &self.layout, &v, &|p: Param| {
+            Dual::<N>::constant(theta[p as usize])
+        });
         let (from, to) = (e.from.at(), e.to.at());
         f[from] -= q.v;
         f[to] += q.v;
@@ -132,7 +141,11 @@ impl Network {
 
     #[inline(always)]
     fn end(&self, lambda: &Vector, node: Node) -> f64 {
-        if node.at() < UNKNOWNS { lambda[node.at()] } else { 0.0 }
+        if node.at() < UNKNOWNS {
+            lambda[node.at()]
+        } else {
+            0.0
+        }
     }
 
     /// Partial derivatives of one element's flow with respect to its own parameters.
@@ -145,9 +158,16 @@ impl Network {
     }
 
     #[inline(always)]
-    fn partials_in<const N: usize>(&self, e: &Element, x: &State, theta: &Params) -> [f64; PARAM_LANES] {
+    fn partials_in<const N: usize>(
+        &self,
+        e: &Element,
+        x: &State,
+        theta: &Params,
+    ) -> [f64; PARAM_LANES] {
         let v = gather(e, x, |value, _| Dual::<N>::constant(value));
-        let q = flow(e.law, &self.layout, &v, &|p: Param| seeded::<N>(e.params, theta, p));
+        let q = flow(e.law, &self.layout, &v, &|p: Param| {
+            seeded::<N>(e.params, theta, p)
+        });
         let mut out = [0.0; PARAM_LANES];
         out[..N].copy_from_slice(&q.d);
         out

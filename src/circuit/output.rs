@@ -20,19 +20,45 @@ use Param as P;
 fn direct(port: Port) -> &'static [Param] {
     match port {
         Port::Servo => STROKE,
-        Port::Pilot => &[P::PilotFull, P::PilotSupply, P::SignalForward, P::SignalReverse, P::Lever],
+        Port::Pilot => &[
+            P::PilotFull,
+            P::PilotSupply,
+            P::SignalForward,
+            P::SignalReverse,
+            P::Lever,
+        ],
         Port::CoilCurrent => &[P::CurrentFull, P::SignalForward, P::SignalReverse, P::Lever],
         Port::Release => &[P::ReleaseShare],
         Port::Shift => &[P::ShiftShare],
         Port::MotorDrain => &[P::MotorCaseLine, P::Viscosity],
-        Port::ReturnFlow => &[P::PumpCaseLine, P::PumpCaseTurbulent, P::Viscosity, P::MotorCaseLine, P::ReliefSet, P::ReliefGain, P::ReliefHeld],
+        Port::ReturnFlow => &[
+            P::PumpCaseLine,
+            P::PumpCaseTurbulent,
+            P::Viscosity,
+            P::MotorCaseLine,
+            P::ReliefSet,
+            P::ReliefGain,
+            P::ReliefHeld,
+        ],
         // The stroke enters the engine's load only through the pump flow; its own parameters act through STROKE.
         Port::EngineSpeed => ENGINE,
         Port::PumpShaft => &[P::Speed, P::InputGrip],
         Port::Wheel => &[P::GearRatio, P::DriveGrip],
         Port::Ground => &[P::GearRatio, P::DriveGrip, P::Rolling],
-        Port::ResponseOut => &[P::ResponseOut, P::ReliefSet, P::ServoStart, P::Viscosity, P::Air],
-        Port::ResponseBack => &[P::ResponseBack, P::ReliefSet, P::ServoStart, P::Viscosity, P::Air],
+        Port::ResponseOut => &[
+            P::ResponseOut,
+            P::ReliefSet,
+            P::ServoStart,
+            P::Viscosity,
+            P::Air,
+        ],
+        Port::ResponseBack => &[
+            P::ResponseBack,
+            P::ReliefSet,
+            P::ServoStart,
+            P::Viscosity,
+            P::Air,
+        ],
         Port::SettledTemperature => &[P::AirTemperature, P::HeatRise],
         Port::Knee => &[P::ReliefSet],
         _ => &[],
@@ -46,9 +72,17 @@ const ENGINE: &[Param] = &[P::EnginePower, P::Speed, P::Lever, P::PumpDisp];
 fn read<S: Real>(net: &Network, port: Port, x: &[S; UNKNOWNS + 1], g: &impl Fn(Param) -> S) -> S {
     let at = |n: Node| x[n.at()];
     let layout = net.layout();
-    let case = if layout.relief_to_tank { S::constant(0.0) } else { at(Node::PumpCase) };
+    let case = if layout.relief_to_tank {
+        S::constant(0.0)
+    } else {
+        at(Node::PumpCase)
+    };
     match port {
-        Port::Charge => at(if layout.filter == FilterBuild::GaugeBefore { Node::ChargeOut } else { Node::Gallery }),
+        Port::Charge => at(if layout.filter == FilterBuild::GaugeBefore {
+            Node::ChargeOut
+        } else {
+            Node::Gallery
+        }),
         Port::LoopA => at(Node::APump),
         Port::LoopB => at(Node::BPump),
         Port::LoopDifference => at(Node::APump) - at(Node::BPump),
@@ -56,7 +90,12 @@ fn read<S: Real>(net: &Network, port: Port, x: &[S; UNKNOWNS + 1], g: &impl Fn(P
         Port::MotorCase => at(Node::MotorCase),
         Port::InletPull => -at(Node::Inlet),
         Port::Servo => {
-            let v = [at(Node::BPump), at(Node::APump), at(Node::Gallery), at(Node::PumpCase)];
+            let v = [
+                at(Node::BPump),
+                at(Node::APump),
+                at(Node::Gallery),
+                at(Node::PumpCase),
+            ];
             let s = element::stroke(layout, &v, g);
             let size = (s * s + 1e-6).sqrt();
             let wanted = g(P::ServoStart) + (g(P::ServoFull) - g(P::ServoStart)) * size;
@@ -66,7 +105,11 @@ fn read<S: Real>(net: &Network, port: Port, x: &[S; UNKNOWNS + 1], g: &impl Fn(P
         }
         Port::Pilot => command(g) * g(P::PilotFull) * g(P::PilotSupply),
         Port::CoilCurrent => {
-            let signal = if g(P::Lever).value() >= 0.0 { g(P::SignalForward) } else { g(P::SignalReverse) };
+            let signal = if g(P::Lever).value() >= 0.0 {
+                g(P::SignalForward)
+            } else {
+                g(P::SignalReverse)
+            };
             let lever = (g(P::Lever) * g(P::Lever) + 1e-9).sqrt();
             // Nothing flows at neutral; past it the threshold is stepped over.
             let on = lever / (lever + 0.02);
@@ -75,19 +118,38 @@ fn read<S: Real>(net: &Network, port: Port, x: &[S; UNKNOWNS + 1], g: &impl Fn(P
         Port::Release => at(Node::Gallery) * g(P::ReleaseShare),
         Port::Shift => at(Node::Gallery) * g(P::ShiftShare),
         Port::MotorDrain => {
-            let to = if layout.separate_cases { S::constant(0.0) } else { at(Node::PumpCase) };
+            let to = if layout.separate_cases {
+                S::constant(0.0)
+            } else {
+                at(Node::PumpCase)
+            };
             element::flow(Law::Drain, layout, &[at(Node::MotorCase), to, to, to], g)
         }
         Port::ReturnFlow => {
             let zero = S::constant(0.0);
-            let pump = element::flow(Law::Line(P::PumpCaseLine, P::PumpCaseTurbulent), layout, &[at(Node::PumpCase), zero, zero, zero], g);
+            let pump = element::flow(
+                Law::Line(P::PumpCaseLine, P::PumpCaseTurbulent),
+                layout,
+                &[at(Node::PumpCase), zero, zero, zero],
+                g,
+            );
             let motor = if layout.separate_cases {
-                element::flow(Law::Drain, layout, &[at(Node::MotorCase), zero, zero, zero], g)
+                element::flow(
+                    Law::Drain,
+                    layout,
+                    &[at(Node::MotorCase), zero, zero, zero],
+                    g,
+                )
             } else {
                 zero
             };
             let relief = if layout.relief_to_tank {
-                element::flow(Law::NeutralRelief, layout, &[at(Node::Gallery), zero, zero, zero], g)
+                element::flow(
+                    Law::NeutralRelief,
+                    layout,
+                    &[at(Node::Gallery), zero, zero, zero],
+                    g,
+                )
             } else {
                 zero
             };
@@ -107,7 +169,11 @@ fn read<S: Real>(net: &Network, port: Port, x: &[S; UNKNOWNS + 1], g: &impl Fn(P
         Port::Wheel => wheel(at(Node::Shaft), g),
         Port::Ground => wheel(at(Node::Shaft), g) * g(P::Rolling) * 0.06,
         Port::ResponseOut => response(g(P::ResponseOut), at(Node::Gallery) - at(Node::PumpCase), g),
-        Port::ResponseBack => response(g(P::ResponseBack), at(Node::Gallery) - at(Node::PumpCase), g),
+        Port::ResponseBack => response(
+            g(P::ResponseBack),
+            at(Node::Gallery) - at(Node::PumpCase),
+            g,
+        ),
         Port::SettledTemperature => g(P::AirTemperature) + g(P::HeatRise),
         Port::Knee => at(Node::Gallery) - case - g(P::ReliefSet) - KNEE_OPEN,
     }
@@ -124,7 +190,11 @@ fn wheel<S: Real>(shaft: S, g: &impl Fn(Param) -> S) -> S {
 
 fn command<S: Real>(g: &impl Fn(Param) -> S) -> S {
     let lever = g(P::Lever);
-    let signal = if lever.value() >= 0.0 { g(P::SignalForward) } else { g(P::SignalReverse) };
+    let signal = if lever.value() >= 0.0 {
+        g(P::SignalForward)
+    } else {
+        g(P::SignalReverse)
+    };
     (lever * lever + 1e-9).sqrt() * signal
 }
 
@@ -156,12 +226,16 @@ impl Network {
     pub fn reading_and_gradient(&self, port: Port, solution: &Solution, theta: &Params) -> Shown {
         let x = &solution.state;
         let lanes = seeded_state(x);
-        let by_state = read(self, port, &lanes, &|p: Param| Dual::<UNKNOWNS>::constant(theta[p as usize]));
+        let by_state = read(self, port, &lanes, &|p: Param| {
+            Dual::<UNKNOWNS>::constant(theta[p as usize])
+        });
         let mut gradient = [0.0; Param::COUNT];
         let params = direct(port);
         if !params.is_empty() {
             let fixed: [Dual<20>; UNKNOWNS + 1] = core::array::from_fn(|i| Dual::constant(x[i]));
-            let by_param = read(self, port, &fixed, &|p: Param| seeded::<20>(params, theta, p));
+            let by_param = read(self, port, &fixed, &|p: Param| {
+                seeded::<20>(params, theta, p)
+            });
             for (p, d) in params.iter().zip(by_param.d) {
                 gradient[*p as usize] += d;
             }
@@ -170,7 +244,10 @@ impl Network {
             let lambda = solution.slope.solve_transposed(&by_state.d);
             self.add_adjoint(x, theta, &lambda, &mut gradient);
         }
-        Shown { value: by_state.v, gradient }
+        Shown {
+            value: by_state.v,
+            gradient,
+        }
     }
 
     /// The knee: engine speed (rpm) at which the neutral relief opens and charge stops rising, with its derivatives.
@@ -187,15 +264,30 @@ impl Network {
         let (mut low, mut high) = (50.0, 2.0 * top);
         at[P::Speed as usize] = 0.45 * top;
         let mut start = None;
-        let mut last = Shown { value: high, gradient: [0.0; Param::COUNT] };
+        let mut last = Shown {
+            value: high,
+            gradient: [0.0; Param::COUNT],
+        };
         for _ in 0..40 {
             let (solution, shown) = open(&at, start.as_ref())?;
             start = Some(solution.state);
             let speed = at[P::Speed as usize];
-            if shown.value > 0.0 { high = speed } else { low = speed }
+            if shown.value > 0.0 {
+                high = speed
+            } else {
+                low = speed
+            }
             let slope = shown.gradient[P::Speed as usize];
-            let next = if slope > 1e-9 { speed - shown.value / slope } else { f64::NAN };
-            let next = if next > low && next < high { next } else { 0.5 * (low + high) };
+            let next = if slope > 1e-9 {
+                speed - shown.value / slope
+            } else {
+                f64::NAN
+            };
+            let next = if next > low && next < high {
+                next
+            } else {
+                0.5 * (low + high)
+            };
             last = shown;
             if (next - speed).abs() < 1e-7 * top || high - low < 1e-6 * top {
                 break;
@@ -211,7 +303,10 @@ impl Network {
             }
             gradient[P::Speed as usize] = 0.0;
         }
-        Ok(Shown { value: speed, gradient })
+        Ok(Shown {
+            value: speed,
+            gradient,
+        })
     }
 
     /// Share of their displacement that the pumps fill at a state: below about 0.97 a low side empties and needles swing.
@@ -229,5 +324,11 @@ impl Network {
 }
 
 fn seeded_state(x: &State) -> [Dual<UNKNOWNS>; UNKNOWNS + 1] {
-    core::array::from_fn(|i| if i < UNKNOWNS { Dual::input(x[i], i) } else { Dual::constant(0.0) })
+    core::array::from_fn(|i| {
+        if i < UNKNOWNS {
+            Dual::input(x[i], i)
+        } else {
+            Dual::constant(0.0)
+        }
+    })
 }

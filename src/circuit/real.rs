@@ -78,7 +78,10 @@ impl<const N: usize> Dual<N> {
 impl<const N: usize> Real for Dual<N> {
     #[inline(always)]
     fn constant(value: f64) -> Self {
-        Dual { v: value, d: [0.0; N] }
+        Dual {
+            v: value,
+            d: [0.0; N],
+        }
     }
     #[inline(always)]
     fn value(self) -> f64 {
@@ -132,14 +135,20 @@ impl<const N: usize> Add<f64> for Dual<N> {
     type Output = Self;
     #[inline(always)]
     fn add(self, c: f64) -> Self {
-        Dual { v: self.v + c, d: self.d }
+        Dual {
+            v: self.v + c,
+            d: self.d,
+        }
     }
 }
 impl<const N: usize> Sub<f64> for Dual<N> {
     type Output = Self;
     #[inline(always)]
     fn sub(self, c: f64) -> Self {
-        Dual { v: self.v - c, d: self.d }
+        Dual {
+            v: self.v - c,
+            d: self.d,
+        }
     }
 }
 impl<const N: usize> Mul<f64> for Dual<N> {

@@ -60,7 +60,11 @@ const RUN_UP_STEPS: u32 = 600;
 fn weighted(dx: &Vector, x: &State) -> f64 {
     let mut worst: f64 = 0.0;
     for i in 0..UNKNOWNS {
-        let scale = if i == Node::Shaft.at() { 0.05 + 0.1 * x[i].abs() } else { 1.0 + 0.02 * x[i].abs() };
+        let scale = if i == Node::Shaft.at() {
+            0.05 + 0.1 * x[i].abs()
+        } else {
+            1.0 + 0.02 * x[i].abs()
+        };
         worst = worst.max((dx[i] / scale).abs());
     }
     worst
@@ -102,17 +106,36 @@ impl Network {
         x[Node::MotorCase.at()] = 0.8;
         let (mut a, mut b) = (low, low);
         if self.layout().held {
-            let high = (delivery * lever.abs() / (g(Param::PumpLeak) + g(Param::MotorLeak) + g(Param::PumpAcross) + g(Param::MotorAcross)) * g(Param::Viscosity))
-                .min(g(Param::LoopReliefA).min(g(Param::LoopReliefB)));
-            if lever > 0.0 { a = low + high } else { b = low + high }
+            let high = (delivery * lever.abs()
+                / (g(Param::PumpLeak)
+                    + g(Param::MotorLeak)
+                    + g(Param::PumpAcross)
+                    + g(Param::MotorAcross))
+                * g(Param::Viscosity))
+            .min(g(Param::LoopReliefA).min(g(Param::LoopReliefB)));
+            if lever > 0.0 {
+                a = low + high
+            } else {
+                b = low + high
+            }
         } else {
             let speed = delivery * lever / (g(Param::MotorDisp) * g(Param::MotorShift));
             let resisting = g(Param::Friction) + g(Param::BrakeDrag) + g(Param::Load);
-            let needed = g(Param::Push) + if speed == 0.0 { 0.0 } else { resisting * speed.signum() }
+            let needed = g(Param::Push)
+                + if speed == 0.0 {
+                    0.0
+                } else {
+                    resisting * speed.signum()
+                }
                 + g(Param::Drag) * g(Param::Viscosity) * speed;
-            let difference = (needed / g(Param::MotorShift)).clamp(-g(Param::LoopReliefB), g(Param::LoopReliefA));
+            let difference = (needed / g(Param::MotorShift))
+                .clamp(-g(Param::LoopReliefB), g(Param::LoopReliefA));
             x[Node::Shaft.at()] = speed;
-            if difference > 0.0 { a = low + difference } else { b = low - difference }
+            if difference > 0.0 {
+                a = low + difference
+            } else {
+                b = low - difference
+            }
         }
         x[Node::APump.at()] = a;
         x[Node::AMotor.at()] = a;
@@ -158,7 +181,13 @@ impl Network {
                 return None;
             }
             if size < SETTLED {
-                return Some(Solution { state: x, iterations: iteration, imbalance: largest(&f), route, slope: lu });
+                return Some(Solution {
+                    state: x,
+                    iterations: iteration,
+                    imbalance: largest(&f),
+                    route,
+                    slope: lu,
+                });
             }
             // Natural monotonicity: the next simplified correction must be smaller.
             let mut accepted = false;
@@ -206,13 +235,26 @@ impl Network {
             lowest = lowest.min(after);
             // Step length follows the fall of the imbalance (switched evolution relaxation).
             let factor = (after / before.max(1e-300)).clamp(0.3, 3.0);
-            rate = if share < 1.0 { rate } else { (rate * factor).clamp(1e-12, 1e4) };
-            if share >= 1.0 && rate <= 1e-2 && let Some(s) = self.newton(theta, x, Route::RunUp) {
-                return Ok(Solution { iterations: iteration + s.iterations, ..s });
+            rate = if share < 1.0 {
+                rate
+            } else {
+                (rate * factor).clamp(1e-12, 1e4)
+            };
+            if share >= 1.0
+                && rate <= 1e-2
+                && let Some(s) = self.newton(theta, x, Route::RunUp)
+            {
+                return Ok(Solution {
+                    iterations: iteration + s.iterations,
+                    ..s
+                });
             }
         }
         if let Some(s) = self.newton(theta, x, Route::RunUp) {
-            return Ok(Solution { iterations: RUN_UP_STEPS + s.iterations, ..s });
+            return Ok(Solution {
+                iterations: RUN_UP_STEPS + s.iterations,
+                ..s
+            });
         }
         Err(NoState::Hunts)
     }

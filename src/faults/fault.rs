@@ -99,6 +99,8 @@ pub struct Fault {
 
 impl core::fmt::Debug for Fault {
     fn fmt(&self, f: &mut core::fmt::Formatter<'_>) -> core::fmt::Result {
-        f.debug_struct("Fault").field("id", &self.id).finish_non_exhaustive()
+        f.debug_struct("Fault")
+            .field("id", &self.id)
+            .finish_non_exhaustive()
     }
 }

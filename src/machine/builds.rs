@@ -41,17 +41,33 @@ fn controls(control: Control, class: MachineClass) -> Vec<(Control, f64)> {
     }
     match class {
         MachineClass::SmallIntegrated => vec![(DirectManual, 0.9), (ManualFeedback, 0.1)],
-        MachineClass::CompactWheeled => vec![(HydraulicRemote, 0.35), (ManualFeedback, 0.35), (ElectricProportional, 0.3)],
+        MachineClass::CompactWheeled => vec![
+            (HydraulicRemote, 0.35),
+            (ManualFeedback, 0.35),
+            (ElectricProportional, 0.3),
+        ],
         MachineClass::CompactTracked => vec![(HydraulicRemote, 0.55), (ElectricProportional, 0.45)],
         MachineClass::Roller => vec![(ManualFeedback, 0.5), (ElectricProportional, 0.5)],
-        MachineClass::Loader => vec![(SpeedSensing, 0.6), (ElectricProportional, 0.25), (PressureNoFeedback, 0.15)],
-        MachineClass::WheelMotorCarrier | MachineClass::Crawler => vec![(ElectricProportional, 0.6), (ManualFeedback, 0.25), (HydraulicRemote, 0.15)],
+        MachineClass::Loader => vec![
+            (SpeedSensing, 0.6),
+            (ElectricProportional, 0.25),
+            (PressureNoFeedback, 0.15),
+        ],
+        MachineClass::WheelMotorCarrier | MachineClass::Crawler => vec![
+            (ElectricProportional, 0.6),
+            (ManualFeedback, 0.25),
+            (HydraulicRemote, 0.15),
+        ],
     }
 }
 
 fn filters(filter: Filter) -> Vec<(Filter, f64)> {
     match filter {
-        Filter::Unknown => vec![(Filter::Suction, 0.5), (Filter::PressureGaugeAfter, 0.3), (Filter::PressureGaugeBefore, 0.2)],
+        Filter::Unknown => vec![
+            (Filter::Suction, 0.5),
+            (Filter::PressureGaugeAfter, 0.3),
+            (Filter::PressureGaugeBefore, 0.2),
+        ],
         known => vec![(known, 1.0)],
     }
 }
@@ -88,7 +104,14 @@ pub fn builds(unit: &Unit) -> Vec<Build> {
     thin(all)
 }
 
-fn build(unit: &Unit, flushing: bool, filter: Filter, control: Control, limiter: bool, share: f64) -> Build {
+fn build(
+    unit: &Unit,
+    flushing: bool,
+    filter: Filter,
+    control: Control,
+    limiter: bool,
+    share: f64,
+) -> Build {
     let mut unit = unit.clone();
     let tick = |yes| if yes { Tick::Yes } else { Tick::No };
     unit.ticks.flushing = tick(flushing);
@@ -114,7 +137,14 @@ fn build(unit: &Unit, flushing: bool, filter: Filter, control: Control, limiter:
         bridged: false,
     };
     let two_position = t.shuttle == Shuttle::TwoPosition;
-    Build { unit, layout, share, flushing, two_position, limiter }
+    Build {
+        unit,
+        layout,
+        share,
+        flushing,
+        two_position,
+        limiter,
+    }
 }
 
 /// Keeps at most [`MOST`] builds by systematic draws along the list, so that every open tick is met in its proportion.
@@ -133,7 +163,10 @@ fn thin(all: Vec<Build>) -> Vec<Build> {
             count += 1;
         }
         if count > 0 {
-            kept.push(Build { share: count as f64 / MOST as f64, ..b });
+            kept.push(Build {
+                share: count as f64 / MOST as f64,
+                ..b
+            });
         }
     }
     let total: f64 = kept.iter().map(|b| b.share).sum();

@@ -39,8 +39,12 @@ impl Warmth {
             None => (60.0, 12.0, false),
         };
         let celsius = celsius.clamp(-30.0, 130.0);
-        let kv40 = unit.known(FigureId::OilGrade).unwrap_or(46.0).clamp(7.0, 320.0);
-        let curve = kv100_from_index(kv40, INDEX).and_then(|kv100| ViscosityCurve::new(kv40, kv100));
+        let kv40 = unit
+            .known(FigureId::OilGrade)
+            .unwrap_or(46.0)
+            .clamp(7.0, 320.0);
+        let curve =
+            kv100_from_index(kv40, INDEX).and_then(|kv100| ViscosityCurve::new(kv40, kv100));
         let (kinematic, per_kelvin) = match curve {
             Ok(curve) => {
                 let (k, slope) = curve.kinematic_and_slope_at(celsius);
@@ -49,12 +53,19 @@ impl Warmth {
             // Outside the standard's range: a slope of 3 % per K round the value at 40 °C.
             Err(_) => (kv40 * crate::math::exp(-0.03 * (celsius - 40.0)), -0.03),
         };
-        Warmth { celsius, spread, kinematic, per_kelvin, taken }
+        Warmth {
+            celsius,
+            spread,
+            kinematic,
+            per_kelvin,
+            taken,
+        }
     }
 
     /// Viscosity relative to the circuit's reference.
     pub fn relative(&self) -> f64 {
-        let density = crate::fluid::USUAL_DENSITY * (1.0 - crate::fluid::EXPANSION * (self.celsius - 15.0));
+        let density =
+            crate::fluid::USUAL_DENSITY * (1.0 - crate::fluid::EXPANSION * (self.celsius - 15.0));
         dynamic_viscosity(self.kinematic, density) / REFERENCE
     }
 }
@@ -86,7 +97,10 @@ fn load_share(doing: Doing) -> (f64, f64, f64) {
 }
 
 fn engine_speed(unit: &Unit, engine: EngineSpeed) -> f64 {
-    let figure = |id| unit.known(id).unwrap_or_else(|| unit.class.spread(id).value);
+    let figure = |id| {
+        unit.known(id)
+            .unwrap_or_else(|| unit.class.spread(id).value)
+    };
     match engine {
         EngineSpeed::LowIdle => figure(FigureId::LowIdle),
         EngineSpeed::HighIdle => figure(FigureId::HighIdle),
@@ -122,27 +136,62 @@ pub fn apply(build: &Build, base: &Params, condition: &Condition) -> Params {
 /// Scatter of the load: of the resistance, or of the push where the wheels drive.
 fn load_act(i: usize, c: &Condition, size: f64) -> Act {
     if c.doing == Doing::Overrun {
-        Act { condition: Some(i), param: P::Push, size: sign(c) * size }
+        Act {
+            condition: Some(i),
+            param: P::Push,
+            size: sign(c) * size,
+        }
     } else {
-        Act { condition: Some(i), param: P::Load, size }
+        Act {
+            condition: Some(i),
+            param: P::Load,
+            size,
+        }
     }
 }
 
 /// Scatter that belongs to conditions: speed, temperature, lever, load.
 pub fn condition_latents(unit: &Unit, conditions: &[Condition], latents: &mut Latents) {
-    let act = |i: usize, param: P, size: f64| Act { condition: Some(i), param, size };
-    let every = |keep: &dyn Fn(&Condition) -> bool, make: &dyn Fn(usize, &Condition) -> Act| -> Vec<Act> {
-        conditions.iter().enumerate().filter(|(_, c)| keep(c)).map(|(i, c)| make(i, c)).collect()
+    let act = |i: usize, param: P, size: f64| Act {
+        condition: Some(i),
+        param,
+        size,
     };
+    let every =
+        |keep: &dyn Fn(&Condition) -> bool, make: &dyn Fn(usize, &Condition) -> Act| -> Vec<Act> {
+            conditions
+                .iter()
+                .enumerate()
+                .filter(|(_, c)| keep(c))
+                .map(|(i, c)| make(i, c))
+                .collect()
+        };
     // Idle speeds that were not measured share what the profile does not know.
-    for (engine, id) in [(EngineSpeed::LowIdle, FigureId::LowIdle), (EngineSpeed::HighIdle, FigureId::HighIdle)] {
-        let width = if unit.known(id).is_some() { 0.03 } else { unit.class.spread(id).relative };
-        let words = if engine == EngineSpeed::LowIdle { "low idle" } else { "high idle" };
-        latents.in_conditions(words, every(&|c| c.engine == engine, &|i, _| act(i, P::Speed, width)));
+    for (engine, id) in [
+        (EngineSpeed::LowIdle, FigureId::LowIdle),
+        (EngineSpeed::HighIdle, FigureId::HighIdle),
+    ] {
+        let width = if unit.known(id).is_some() {
+            0.03
+        } else {
+            unit.class.spread(id).relative
+        };
+        let words = if engine == EngineSpeed::LowIdle {
+            "low idle"
+        } else {
+            "high idle"
+        };
+        latents.in_conditions(
+            words,
+            every(&|c| c.engine == engine, &|i, _| act(i, P::Speed, width)),
+        );
     }
     // One tachometer: its scale error is shared by all speeds that were measured.
     let measured = |c: &Condition| matches!(c.engine, EngineSpeed::Measured(_));
-    latents.in_conditions("tachometer", every(&measured, &|i, _| act(i, P::Speed, 0.01)));
+    latents.in_conditions(
+        "tachometer",
+        every(&measured, &|i, _| act(i, P::Speed, 0.01)),
+    );
     // One offset for each place that a temperature was taken at, and a little at each reading.
     for place in Place::ALL {
         let here = |c: &Condition| c.oil.is_some_and(|t| t.place == place);
@@ -155,12 +204,19 @@ pub fn condition_latents(unit: &Unit, conditions: &[Condition], latents: &mut La
     for (i, c) in conditions.iter().enumerate() {
         let w = Warmth::of(unit, c);
         let own = if w.taken { 1.5 } else { w.spread };
-        latents.in_conditions("oil temperature", vec![act(i, P::Viscosity, w.per_kelvin * own)]);
+        latents.in_conditions(
+            "oil temperature",
+            vec![act(i, P::Viscosity, w.per_kelvin * own)],
+        );
     }
-    let relief = unit.known(FigureId::LoopRelief).unwrap_or_else(|| unit.class.spread(FigureId::LoopRelief).value);
+    let relief = unit
+        .known(FigureId::LoopRelief)
+        .unwrap_or_else(|| unit.class.spread(FigureId::LoopRelief).value);
     for doing in [Doing::Travel, Doing::Loaded, Doing::Overrun] {
         let (_, common, _) = load_share(doing);
-        let acts = every(&|c| c.doing == doing, &|i, c| load_act(i, c, common * relief));
+        let acts = every(&|c| c.doing == doing, &|i, c| {
+            load_act(i, c, common * relief)
+        });
         latents.in_conditions("load on the wheels", acts);
     }
     for (i, c) in conditions.iter().enumerate() {

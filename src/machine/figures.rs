@@ -26,12 +26,22 @@ struct Believed {
 
 fn believed(unit: &Unit, id: FigureId) -> Believed {
     match unit.figures.get(&id) {
-        Some(Figure { value: Some(m), source, .. }) if m.base() > 0.0 => {
-            Believed { value: m.base(), width: width_of(*source), known: true }
-        }
+        Some(Figure {
+            value: Some(m),
+            source,
+            ..
+        }) if m.base() > 0.0 => Believed {
+            value: m.base(),
+            width: width_of(*source),
+            known: true,
+        },
         _ => {
             let s = unit.class.spread(id);
-            Believed { value: s.value, width: s.relative, known: false }
+            Believed {
+                value: s.value,
+                width: s.relative,
+                known: false,
+            }
         }
     }
 }
@@ -47,11 +57,28 @@ const GAP: f64 = 1.3;
 
 /// Parameters that grow with the size of a machine, and the power of size that they follow.
 const WITH_SIZE: &[(P, f64)] = &[
-    (P::ReliefGain, 1.0), (P::OperatingGain, 1.0), (P::FlushOrifice, 1.0), (P::ChargeSlip, 1.0), (P::Consumers, 0.5),
-    (P::ControlLeak, 0.5), (P::CheckA, 1.0), (P::CheckB, 1.0), (P::PumpLeak, 1.0), (P::PumpAcross, 1.0),
-    (P::MotorLeak, 1.0), (P::MotorAcross, 1.0), (P::LineALaminar, -1.0), (P::LineBLaminar, -1.0),
-    (P::LineATurbulent, -2.0), (P::LineBTurbulent, -2.0), (P::SuctionLaminar, -1.0), (P::SuctionTurbulent, -2.0),
-    (P::FilterLaminar, -1.0), (P::MotorCaseLine, -1.0), (P::PumpCaseLine, -1.0), (P::PumpCaseTurbulent, -2.0),
+    (P::ReliefGain, 1.0),
+    (P::OperatingGain, 1.0),
+    (P::FlushOrifice, 1.0),
+    (P::ChargeSlip, 1.0),
+    (P::Consumers, 0.5),
+    (P::ControlLeak, 0.5),
+    (P::CheckA, 1.0),
+    (P::CheckB, 1.0),
+    (P::PumpLeak, 1.0),
+    (P::PumpAcross, 1.0),
+    (P::MotorLeak, 1.0),
+    (P::MotorAcross, 1.0),
+    (P::LineALaminar, -1.0),
+    (P::LineBLaminar, -1.0),
+    (P::LineATurbulent, -2.0),
+    (P::LineBTurbulent, -2.0),
+    (P::SuctionLaminar, -1.0),
+    (P::SuctionTurbulent, -2.0),
+    (P::FilterLaminar, -1.0),
+    (P::MotorCaseLine, -1.0),
+    (P::PumpCaseLine, -1.0),
+    (P::PumpCaseTurbulent, -2.0),
     (P::EnginePower, 1.0),
 ];
 
@@ -69,7 +96,10 @@ pub fn base(build: &Build) -> Params {
     set(P::OperatingSet, operating_setting(unit));
     set(P::LoopReliefA, b(FigureId::LoopRelief));
     set(P::LoopReliefB, b(FigureId::LoopRelief));
-    set(P::MotorDisp, b(FigureId::MotorDisplacement) * f64::from(unit.ticks.motors.clamp(1, 4)));
+    set(
+        P::MotorDisp,
+        b(FigureId::MotorDisplacement) * f64::from(unit.ticks.motors.clamp(1, 4)),
+    );
     set(P::GearRatio, b(FigureId::GearRatio));
     set(P::Rolling, b(FigureId::RollingCircumference));
     set(P::CurrentFull, b(FigureId::FullCurrent));
@@ -103,18 +133,30 @@ pub fn base(build: &Build) -> Params {
 
 fn charge_displacement(unit: &Unit) -> f64 {
     let own = believed(unit, FigureId::ChargeDisplacement);
-    if own.known { own.value } else { 0.18 * believed(unit, FigureId::PumpDisplacement).value }
+    if own.known {
+        own.value
+    } else {
+        0.18 * believed(unit, FigureId::PumpDisplacement).value
+    }
 }
 
 fn operating_setting(unit: &Unit) -> f64 {
     let own = believed(unit, FigureId::OperatingSetting);
-    if own.known { own.value } else { (believed(unit, FigureId::ChargeSetting).value - GAP).max(1.0) }
+    if own.known {
+        own.value
+    } else {
+        (believed(unit, FigureId::ChargeSetting).value - GAP).max(1.0)
+    }
 }
 
 fn limiter_setting(unit: &Unit) -> f64 {
     let own = believed(unit, FigureId::Limiter);
     // Common practice: 10 to 40 bar under the reliefs.
-    if own.known { own.value } else { (believed(unit, FigureId::LoopRelief).value - 25.0).max(30.0) }
+    if own.known {
+        own.value
+    } else {
+        (believed(unit, FigureId::LoopRelief).value - 25.0).max(30.0)
+    }
 }
 
 /// Scatter of the unit itself, the same in every condition.
@@ -140,13 +182,19 @@ pub fn unit_latents(unit: &Unit) -> Latents {
         }
     }
     l.many("pump displacement", &moves);
-    l.one(P::ChargeDisp, if charge.known { charge.width } else { 0.25 });
+    l.one(
+        P::ChargeDisp,
+        if charge.known { charge.width } else { 0.25 },
+    );
     l.one(P::ChargeSlip, 0.35);
 
     // Neutral and operating relief are set one under the other.
     let set = relief.value;
     let ratio = set / operating_setting(unit);
-    let servo = [(P::ServoStart, 0.6 * relief.width), (P::ServoFull, 0.6 * relief.width)];
+    let servo = [
+        (P::ServoStart, 0.6 * relief.width),
+        (P::ServoFull, 0.6 * relief.width),
+    ];
     let mut moves = vec![(P::ReliefSet, relief.width)];
     if !relief.known {
         moves.extend(servo);
@@ -156,7 +204,10 @@ pub fn unit_latents(unit: &Unit) -> Latents {
     } else {
         moves.push((P::OperatingSet, relief.width * ratio));
         // 0.5 to 4 bar (common practice): half to double the usual gap.
-        l.many("gap between charge and operating relief", &[(P::OperatingSet, 0.55 * GAP / operating_setting(unit))]);
+        l.many(
+            "gap between charge and operating relief",
+            &[(P::OperatingSet, 0.55 * GAP / operating_setting(unit))],
+        );
     }
     l.many("charge relief setting", &moves);
     l.one(P::ReliefGain, 0.25);
@@ -164,12 +215,25 @@ pub fn unit_latents(unit: &Unit) -> Latents {
     l.one(P::FlushOrifice, 0.4);
     l.one(P::ShuttleSpring, 0.3);
 
-    l.many("loop relief setting", &[(P::LoopReliefA, loop_relief.width), (P::LoopReliefB, loop_relief.width)]);
+    l.many(
+        "loop relief setting",
+        &[
+            (P::LoopReliefA, loop_relief.width),
+            (P::LoopReliefB, loop_relief.width),
+        ],
+    );
     l.one(P::LoopReliefA, 0.015);
     l.one(P::LoopReliefB, 0.015);
     l.one(P::LoopOverride, 0.35);
-    let follow = if limiter.known { limiter.width } else { loop_relief.width.max(0.05) };
-    l.many("pressure limiter setting", &[(P::LimiterA, follow), (P::LimiterB, follow)]);
+    let follow = if limiter.known {
+        limiter.width
+    } else {
+        loop_relief.width.max(0.05)
+    };
+    l.many(
+        "pressure limiter setting",
+        &[(P::LimiterA, follow), (P::LimiterB, follow)],
+    );
     l.one(P::LimiterA, 0.012);
     l.one(P::LimiterB, 0.012);
 
@@ -179,7 +243,15 @@ pub fn unit_latents(unit: &Unit) -> Latents {
     l.one(P::MotorAcross, 0.4);
     let motor = b(FigureId::MotorDisplacement);
     l.one(P::MotorDisp, if motor.known { motor.width } else { 0.3 });
-    l.many("loop hoses", &[(P::LineALaminar, 0.35), (P::LineBLaminar, 0.35), (P::LineATurbulent, 0.35), (P::LineBTurbulent, 0.35)]);
+    l.many(
+        "loop hoses",
+        &[
+            (P::LineALaminar, 0.35),
+            (P::LineBLaminar, 0.35),
+            (P::LineATurbulent, 0.35),
+            (P::LineBTurbulent, 0.35),
+        ],
+    );
     l.many("make-up checks", &[(P::CheckA, 0.3), (P::CheckB, 0.3)]);
     l.one(P::Friction, 0.35);
     l.one(P::Drag, 0.4);
@@ -192,18 +264,27 @@ pub fn unit_latents(unit: &Unit) -> Latents {
     l.one(P::Consumers, 0.5);
     l.one(P::ControlLeak, 0.4);
     l.one(P::MotorCaseLine, 0.4);
-    l.many("return line and cooler", &[(P::PumpCaseLine, 0.4), (P::PumpCaseTurbulent, 0.4)]);
+    l.many(
+        "return line and cooler",
+        &[(P::PumpCaseLine, 0.4), (P::PumpCaseTurbulent, 0.4)],
+    );
 
     l.one(P::NullControl, 0.0012);
     l.one(P::NullServo, 0.0012);
-    l.many("full stroke", &[(P::GainForward, 0.015), (P::GainReverse, 0.015)]);
+    l.many(
+        "full stroke",
+        &[(P::GainForward, 0.015), (P::GainReverse, 0.015)],
+    );
     l.one(P::GainForward, 0.012);
     l.one(P::GainReverse, 0.012);
     l.one(P::ServoStart, 0.12);
     l.one(P::ServoFull, 0.12);
     l.one(P::SenseStart, 0.08);
     l.one(P::SenseFull, 0.06);
-    l.many("control orifice", &[(P::ResponseOut, 0.3), (P::ResponseBack, 0.3)]);
+    l.many(
+        "control orifice",
+        &[(P::ResponseOut, 0.3), (P::ResponseBack, 0.3)],
+    );
     l.one(P::CurrentFull, b(FigureId::FullCurrent).width);
     l.one(P::PilotFull, b(FigureId::FullPilot).width);
     l.one(P::ReleaseShare, 0.02);
@@ -220,5 +301,8 @@ pub fn unit_latents(unit: &Unit) -> Latents {
 /// How a unit is described where a window rests on it: which of the figures that matter are known.
 pub fn describe_basis(unit: &Unit) -> (usize, usize) {
     let first = &crate::unit::FIGURES[..5];
-    (first.iter().filter(|f| unit.known(f.id).is_some()).count(), first.len())
+    (
+        first.iter().filter(|f| unit.known(f.id).is_some()).count(),
+        first.len(),
+    )
 }

@@ -35,14 +35,27 @@ impl Latents {
 
     /// Adds a latent that moves several parameters in all conditions.
     pub fn many(&mut self, words: &str, moves: &[(Param, f64)]) {
-        let acts = moves.iter().map(|(param, size)| Act { condition: None, param: *param, size: *size }).collect();
-        self.0.push(Latent { words: words.to_string(), acts });
+        let acts = moves
+            .iter()
+            .map(|(param, size)| Act {
+                condition: None,
+                param: *param,
+                size: *size,
+            })
+            .collect();
+        self.0.push(Latent {
+            words: words.to_string(),
+            acts,
+        });
     }
 
     /// Adds a latent that acts in named conditions only.
     pub fn in_conditions(&mut self, words: &str, acts: Vec<Act>) {
         if !acts.is_empty() {
-            self.0.push(Latent { words: words.to_string(), acts });
+            self.0.push(Latent {
+                words: words.to_string(),
+                acts,
+            });
         }
     }
 }

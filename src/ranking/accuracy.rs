@@ -23,18 +23,36 @@ pub fn accuracy(instrument: Option<&Instrument>, port: Port, value: f64) -> Accu
 
 fn of_instrument(instrument: &Instrument, port: Port, value: f64) -> Accuracy {
     let usual = usual(port, value);
-    let bias = Measure::from_base(value, port.kind()).map_or(usual.bias, |m| instrument.bias_standard_uncertainty(m));
+    let bias = Measure::from_base(value, port.kind())
+        .map_or(usual.bias, |m| instrument.bias_standard_uncertainty(m));
     let own = instrument.reading_standard_uncertainty();
-    let sound = |v: f64, fallback: f64| if v.is_finite() && v >= 0.0 { v } else { fallback };
-    Accuracy { bias: sound(bias, usual.bias), own: sound(own, usual.own).max(1e-6) }
+    let sound = |v: f64, fallback: f64| {
+        if v.is_finite() && v >= 0.0 {
+            v
+        } else {
+            fallback
+        }
+    };
+    Accuracy {
+        bias: sound(bias, usual.bias),
+        own: sound(own, usual.own).max(1e-6),
+    }
 }
 
 /// A class 1.6 gauge of the usual span, a jug and a stopwatch, counted turns. Common practice.
 fn usual(port: Port, value: f64) -> Accuracy {
-    let gauge = |span: f64| Accuracy { bias: 0.016 * span / 3f64.sqrt(), own: span / 400.0 };
-    let relative = |bias: f64, own: f64, least: f64| Accuracy { bias: bias * value.abs(), own: (own * value.abs()).max(least) };
+    let gauge = |span: f64| Accuracy {
+        bias: 0.016 * span / 3f64.sqrt(),
+        own: span / 400.0,
+    };
+    let relative = |bias: f64, own: f64, least: f64| Accuracy {
+        bias: bias * value.abs(),
+        own: (own * value.abs()).max(least),
+    };
     match port {
-        Port::Charge | Port::Servo | Port::Pilot | Port::Release | Port::Shift => gauge(if value > 40.0 { 60.0 } else { 40.0 }),
+        Port::Charge | Port::Servo | Port::Pilot | Port::Release | Port::Shift => {
+            gauge(if value > 40.0 { 60.0 } else { 40.0 })
+        }
         Port::LoopA | Port::LoopB | Port::LoopDifference => gauge(600.0),
         Port::PumpCase | Port::MotorCase => gauge(10.0),
         Port::InletPull => gauge(1.0),
@@ -45,7 +63,13 @@ fn usual(port: Port, value: f64) -> Accuracy {
         Port::MotorShaft | Port::Wheel => relative(0.004, 0.012, 0.05),
         Port::Ground => relative(0.01, 0.015, 0.05),
         Port::Knee => relative(0.01, 0.03, 30.0),
-        Port::ResponseOut | Port::ResponseBack => Accuracy { bias: 0.0, own: 0.2 },
-        Port::SettledTemperature => Accuracy { bias: 2.0, own: 2.0 },
+        Port::ResponseOut | Port::ResponseBack => Accuracy {
+            bias: 0.0,
+            own: 0.2,
+        },
+        Port::SettledTemperature => Accuracy {
+            bias: 2.0,
+            own: 2.0,
+        },
     }
 }

@@ -28,7 +28,14 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
     for (reading, condition) in visit.readings.iter().zip(&data.condition_of) {
         bench.want(*condition, reading.port);
     }
-    let windows = windows(unit, &visit.readings, &visit.riggings, instruments, &data, &bench);
+    let windows = windows(
+        unit,
+        &visit.readings,
+        &visit.riggings,
+        instruments,
+        &data,
+        &bench,
+    );
     let (mut weighed, change) = weigh(&bench, &data, unit.sides);
     for w in &mut weighed {
         w.log_prior += math::ln(seen::prior_factor(visit, w.id).max(1e-6));
@@ -36,8 +43,17 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
     let observed = seen::observed(visit);
     let words: Vec<String> = visit.readings.iter().map(words).collect();
     let causes = rows(&weighed, &data, &visit.readings, &observed, &words);
-    let share = |w: &Weighed| causes.iter().find(|c| c.ids.contains(&w.id)).map_or(0.0, |c| member_share(c, w.id));
-    let mut trust = Trust { change, solves: bench.solves.get(), ..Trust::default() };
+    let share = |w: &Weighed| {
+        causes
+            .iter()
+            .find(|c| c.ids.contains(&w.id))
+            .map_or(0.0, |c| member_share(c, w.id))
+    };
+    let mut trust = Trust {
+        change,
+        solves: bench.solves.get(),
+        ..Trust::default()
+    };
     let mut swapped = 0.0;
     let mut wrong = vec![0.0; data.groups];
     for w in &weighed {
@@ -47,7 +63,10 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
             *total += p * own;
         }
     }
-    if let Some(lead) = causes.first().and_then(|c| weighed.iter().find(|w| c.ids.contains(&w.id))) {
+    if let Some(lead) = causes
+        .first()
+        .and_then(|c| weighed.iter().find(|w| c.ids.contains(&w.id)))
+    {
         trust.heaviest = lead.heaviest;
     }
     trust.wrong_reading = 1.0 - wrong.iter().map(|w| 1.0 - w).product::<f64>();
@@ -60,17 +79,37 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
             }
         }
     }
-    let hold = visit.readings.iter().position(|r| r.condition.doing == Doing::Held).map(|i| hold_time(unit, bench.speed(0, data.condition_of[i])));
-    Assessment { windows, causes, withheld: withheld(unit, visit, &data), notes: notes(unit, visit, swapped), trust, hold }
+    let hold = visit
+        .readings
+        .iter()
+        .position(|r| r.condition.doing == Doing::Held)
+        .map(|i| hold_time(unit, bench.speed(0, data.condition_of[i])));
+    Assessment {
+        windows,
+        causes,
+        withheld: withheld(unit, visit, &data),
+        notes: notes(unit, visit, swapped),
+        trust,
+        hold,
+    }
 }
 
 fn member_share(cause: &crate::assessment::Cause, id: crate::faults::FaultId) -> f64 {
-    cause.ids.iter().position(|i| *i == id).and_then(|i| cause.shares.get(i).copied()).unwrap_or(0.0)
+    cause
+        .ids
+        .iter()
+        .position(|i| *i == id)
+        .and_then(|i| cause.shares.get(i).copied())
+        .unwrap_or(0.0)
 }
 
 /// A reading in words: port and condition.
 fn words(reading: &Reading) -> String {
-    format!("{}, {}", reading.port.words(), condition_words(&reading.condition))
+    format!(
+        "{}, {}",
+        reading.port.words(),
+        condition_words(&reading.condition)
+    )
 }
 
 fn condition_words(c: &Condition) -> String {
@@ -91,19 +130,33 @@ fn condition_words(c: &Condition) -> String {
 
 fn retake_words(reading: &Reading) -> String {
     let proof = match (&reading.seen, reading.port) {
-        (Some(Seen::Nothing), _) => "Push the coupling home, open the snubber, crack the hose end at the gauge: does oil come?",
-        (_, Port::LoopA | Port::LoopB) => "Which side is it on? Stroke a little the other way: the high side must change over.",
-        _ => "Gauge on the right port? Put a second gauge on it, or read this one at zero with the pressure bled off.",
+        (Some(Seen::Nothing), _) => {
+            "Push the coupling home, open the snubber, crack the hose end at the gauge: does oil come?"
+        }
+        (_, Port::LoopA | Port::LoopB) => {
+            "Which side is it on? Stroke a little the other way: the high side must change over."
+        }
+        _ => {
+            "Gauge on the right port? Put a second gauge on it, or read this one at zero with the pressure bled off."
+        }
     };
-    format!("{} does not fit what the others say. Take it again. {proof}", words(reading))
+    format!(
+        "{} does not fit what the others say. Take it again. {proof}",
+        words(reading)
+    )
 }
 
 fn withheld(unit: &Unit, visit: &Visit, data: &Data) -> Vec<String> {
     let mut out: Vec<String> = data.silent.iter().map(|(_, why)| why.clone()).collect();
     out.sort();
     out.dedup();
-    let loop_or_drain = |r: &Reading| r.condition.doing == Doing::Held || r.port == Port::MotorDrain;
-    if visit.readings.iter().any(|r| r.seen.is_some() && loop_or_drain(r) && !Warmth::of(unit, &r.condition).taken) {
+    let loop_or_drain =
+        |r: &Reading| r.condition.doing == Doing::Held || r.port == Port::MotorDrain;
+    if visit
+        .readings
+        .iter()
+        .any(|r| r.seen.is_some() && loop_or_drain(r) && !Warmth::of(unit, &r.condition).taken)
+    {
         out.push("Leakage is judged at oil temperature, and none was taken with these readings: the windows are wide until it is.".to_string());
     }
     out
@@ -117,14 +170,25 @@ fn notes(unit: &Unit, visit: &Visit, swapped: f64) -> Vec<String> {
     if swapped > 0.5 {
         out.push("The loop readings fit better with sides A and B changed over. Check which port is which: the side that rises when stroked forward is A.".to_string());
     }
-    if unit.ticks.flushing == Tick::Unknown && visit.readings.iter().any(|r| r.port == Port::Charge) {
+    if unit.ticks.flushing == Tick::Unknown && visit.readings.iter().any(|r| r.port == Port::Charge)
+    {
         out.push("Whether this unit has loop flushing is not known, so a charge pressure that does not fall in drive proves nothing yet. Both builds are weighed.".to_string());
     }
-    if visit.readings.iter().any(|r| r.port == Port::ReturnFlow && r.seen.is_some()) {
+    if visit
+        .readings
+        .iter()
+        .any(|r| r.port == Port::ReturnFlow && r.seen.is_some())
+    {
         out.push("Total return is what the charge pump delivers: it says nothing about wear of pump or motor.".to_string());
     }
-    let held_full = |r: &Reading| r.condition.doing == Doing::Held && r.condition.lever == crate::readings::Lever::Full;
-    if visit.readings.iter().any(|r| r.port == Port::Charge && held_full(r)) {
+    let held_full = |r: &Reading| {
+        r.condition.doing == Doing::Held && r.condition.lever == crate::readings::Lever::Full
+    };
+    if visit
+        .readings
+        .iter()
+        .any(|r| r.port == Port::Charge && held_full(r))
+    {
         out.push("Charge at a full held stroke is not a leak reading: the whole flow passes the low side's check. Take it at the least stroke that reaches the plateau.".to_string());
     }
     out

@@ -121,15 +121,23 @@ fn condition_index(conditions: &mut Vec<Condition>, condition: &Condition) -> us
 }
 
 /// Which instrument stands on the port of a reading: the reading's own rigging, else the last rigging of its port.
-pub fn instrument_of<'a>(reading: &Reading, riggings: &[Rigging], instruments: &'a [Instrument]) -> Option<&'a Instrument> {
-    let own = riggings.iter().find(|r| r.id == reading.rigging && !r.id.is_empty());
+pub fn instrument_of<'a>(
+    reading: &Reading,
+    riggings: &[Rigging],
+    instruments: &'a [Instrument],
+) -> Option<&'a Instrument> {
+    let own = riggings
+        .iter()
+        .find(|r| r.id == reading.rigging && !r.id.is_empty());
     let rigging = own.or_else(|| riggings.iter().rev().find(|r| r.port == reading.port))?;
     instruments.iter().find(|i| i.id == rigging.instrument)
 }
 
 /// Name of the bias group of a reading: its rigging, else its port.
 fn group_key(reading: &Reading, riggings: &[Rigging]) -> String {
-    let own = riggings.iter().find(|r| r.id == reading.rigging && !r.id.is_empty());
+    let own = riggings
+        .iter()
+        .find(|r| r.id == reading.rigging && !r.id.is_empty());
     match own.or_else(|| riggings.iter().rev().find(|r| r.port == reading.port)) {
         // One gauge moved between two ports keeps its bias, but a wrong port is wrong for one place only.
         Some(r) => format!("{}/{:?}", r.instrument, reading.port),
@@ -138,7 +146,12 @@ fn group_key(reading: &Reading, riggings: &[Rigging]) -> String {
 }
 
 /// Sorts out what the readings of a visit say.
-pub fn gather(unit: &Unit, readings: &[Reading], riggings: &[Rigging], instruments: &[Instrument]) -> Data {
+pub fn gather(
+    unit: &Unit,
+    readings: &[Reading],
+    riggings: &[Rigging],
+    instruments: &[Instrument],
+) -> Data {
     let mut out = Data::default();
     let mut keys: Vec<String> = Vec::new();
     for (index, reading) in readings.iter().enumerate() {
@@ -146,7 +159,10 @@ pub fn gather(unit: &Unit, readings: &[Reading], riggings: &[Rigging], instrumen
         out.condition_of.push(condition);
         let Some(seen) = &reading.seen else { continue };
         let warmth = Warmth::of(unit, &reading.condition);
-        if leakage_decides(reading.port, reading.condition.doing) && warmth.taken && (warmth.kinematic > TOO_THICK || warmth.celsius < 38.0) {
+        if leakage_decides(reading.port, reading.condition.doing)
+            && warmth.taken
+            && (warmth.kinematic > TOO_THICK || warmth.celsius < 38.0)
+        {
             let why = format!(
                 "Oil at {:.0} °C is too thick ({:.0} mm²/s) to judge leakage: warm it up and take this again.",
                 warmth.celsius, warmth.kinematic
@@ -155,7 +171,9 @@ pub fn gather(unit: &Unit, readings: &[Reading], riggings: &[Rigging], instrumen
             continue;
         }
         let instrument = instrument_of(reading, riggings, instruments);
-        let Some((says, value, swing)) = statement(seen, &mut out.conditions) else { continue };
+        let Some((says, value, swing)) = statement(seen, &mut out.conditions) else {
+            continue;
+        };
         let a = accuracy(instrument, reading.port, value);
         let key = group_key(reading, riggings);
         let group = keys.iter().position(|k| *k == key).unwrap_or_else(|| {
@@ -163,7 +181,16 @@ pub fn gather(unit: &Unit, readings: &[Reading], riggings: &[Rigging], instrumen
             out.group_ports.push(reading.port);
             keys.len() - 1
         });
-        out.data.push(datum(index, reading.port, condition, says, value, swing, a, group));
+        out.data.push(datum(
+            index,
+            reading.port,
+            condition,
+            says,
+            value,
+            swing,
+            a,
+            group,
+        ));
     }
     out.groups = keys.len();
     out
@@ -176,31 +203,66 @@ fn statement(seen: &Seen, conditions: &mut Vec<Condition>) -> Option<(Says, f64,
         Seen::Swing { low, high } => {
             let (a, b) = (low.base(), high.base());
             // Rectangular between the ends (JCGM 100, 4.3.7).
-            Some((Says::Value, 0.5 * (a + b), Some(0.5 * (b - a).abs() / 3f64.sqrt())))
+            Some((
+                Says::Value,
+                0.5 * (a + b),
+                Some(0.5 * (b - a).abs() / 3f64.sqrt()),
+            ))
         }
         Seen::OffScale { top } => Some((Says::AtLeast, top.base(), None)),
         Seen::Nothing => Some((Says::Nothing, 0.0, None)),
-        Seen::ShareOf { share, other } if *share > 0.0 && share.is_finite() => {
-            Some((Says::Share(condition_index(conditions, other)), *share, None))
-        }
+        Seen::ShareOf { share, other } if *share > 0.0 && share.is_finite() => Some((
+            Says::Share(condition_index(conditions, other)),
+            *share,
+            None,
+        )),
         Seen::ShareOf { .. } | Seen::NotPossible { .. } => None,
     }
 }
 
 #[allow(clippy::too_many_arguments)] // one place, private: the parts of one reading
-fn datum(reading: usize, port: Port, condition: usize, says: Says, value: f64, swing: Option<f64>, a: Accuracy, group: usize) -> Datum {
+fn datum(
+    reading: usize,
+    port: Port,
+    condition: usize,
+    says: Says,
+    value: f64,
+    swing: Option<f64>,
+    a: Accuracy,
+    group: usize,
+) -> Datum {
     let (t, own, bias) = match says {
         Says::Share(_) => {
             // The scale error of one instrument drops out of a ratio; an offset does not quite.
-            (math::ln(value), (0.02f64.powi(2) + DISCREPANCY * DISCREPANCY).sqrt(), 0.0)
+            (
+                math::ln(value),
+                (0.02f64.powi(2) + DISCREPANCY * DISCREPANCY).sqrt(),
+                0.0,
+            )
         }
         _ => {
             let k = slope(port, value);
             let needle = (a.own * a.own + swing.unwrap_or(0.0).powi(2)).sqrt() * k;
             let model = DISCREPANCY * value.abs() * k;
-            (transform(port, value), (needle * needle + model * model + 0.25 * a.own * a.own * k * k).sqrt(), a.bias * k)
+            (
+                transform(port, value),
+                (needle * needle + model * model + 0.25 * a.own * a.own * k * k).sqrt(),
+                a.bias * k,
+            )
         }
     };
     let instrument = (a.own * a.own + a.bias * a.bias).sqrt();
-    Datum { reading, port, condition, says, t, value, own: own.max(1e-4), bias, group, swung: swing.is_some(), instrument }
+    Datum {
+        reading,
+        port,
+        condition,
+        says,
+        t,
+        value,
+        own: own.max(1e-4),
+        bias,
+        group,
+        swung: swing.is_some(),
+        instrument,
+    }
 }

@@ -28,27 +28,65 @@ impl Probable {
         let place = |id: FaultId| FaultId::ALL.iter().position(|i| *i == id);
         let by_cause: Vec<Vec<f64>> = seen
             .iter()
-            .map(|s| weighed.iter().map(|w| place(w.id).and_then(|i| s.logs.get(i).copied()).unwrap_or(0.0)).collect())
+            .map(|s| {
+                weighed
+                    .iter()
+                    .map(|w| {
+                        place(w.id)
+                            .and_then(|i| s.logs.get(i).copied())
+                            .unwrap_or(0.0)
+                    })
+                    .collect()
+            })
             .collect();
         let log_likelihood: Vec<f64> = (0..weighed.len())
             .map(|i| weighed[i].log_likelihood + by_cause.iter().map(|o| o[i]).sum::<f64>())
             .collect();
         let log_prior: Vec<f64> = weighed.iter().map(|w| w.log_prior).collect();
         let share = normalised(&log_prior, &log_likelihood);
-        Probable { log_likelihood, share, seen: by_cause, log_prior }
+        Probable {
+            log_likelihood,
+            share,
+            seen: by_cause,
+            log_prior,
+        }
     }
 }
 
 fn normalised(prior: &[f64], likelihood: &[f64]) -> Vec<f64> {
-    let joint: Vec<f64> = prior.iter().zip(likelihood).map(|(a, b)| if (a + b).is_finite() { a + b } else { f64::NEG_INFINITY }).collect();
+    let joint: Vec<f64> = prior
+        .iter()
+        .zip(likelihood)
+        .map(|(a, b)| {
+            if (a + b).is_finite() {
+                a + b
+            } else {
+                f64::NEG_INFINITY
+            }
+        })
+        .collect();
     let total = math::ln_sum_exp(&joint);
-    joint.iter().map(|l| if l.is_finite() && total.is_finite() { math::exp(l - total) } else { 0.0 }).collect()
+    joint
+        .iter()
+        .map(|l| {
+            if l.is_finite() && total.is_finite() {
+                math::exp(l - total)
+            } else {
+                0.0
+            }
+        })
+        .collect()
 }
 
 /// Log odds of a set of causes against the rest.
 fn log_odds(members: &[usize], share: &[f64]) -> f64 {
     let own: f64 = members.iter().map(|i| share[*i]).sum();
-    let rest: f64 = share.iter().enumerate().filter(|(i, _)| !members.contains(i)).map(|(_, s)| s).sum();
+    let rest: f64 = share
+        .iter()
+        .enumerate()
+        .filter(|(i, _)| !members.contains(i))
+        .map(|(_, s)| s)
+        .sum();
     math::ln(own.max(1e-15)) - math::ln(rest.max(1e-15))
 }
 
@@ -75,16 +113,34 @@ pub fn evidence(
         if weight.abs() > SAYS_NOTHING
             && let Some(r) = readings.get(d.reading)
         {
-            out.push(Evidence { of: r.id.clone(), words: words.get(d.reading).cloned().unwrap_or_default(), weight });
+            out.push(Evidence {
+                of: r.id.clone(),
+                words: words.get(d.reading).cloned().unwrap_or_default(),
+                weight,
+            });
         }
     }
     for (s, logs) in seen.iter().zip(&probable.seen) {
-        let without: Vec<f64> = probable.log_likelihood.iter().zip(logs).map(|(l, o)| l - o).collect();
+        let without: Vec<f64> = probable
+            .log_likelihood
+            .iter()
+            .zip(logs)
+            .map(|(l, o)| l - o)
+            .collect();
         let weight = with - log_odds(members, &normalised(&probable.log_prior, &without));
         if weight.abs() > SAYS_NOTHING {
-            out.push(Evidence { of: s.id.clone(), words: s.words.clone(), weight });
+            out.push(Evidence {
+                of: s.id.clone(),
+                words: s.words.clone(),
+                weight,
+            });
         }
     }
-    out.sort_by(|a, b| b.weight.abs().total_cmp(&a.weight.abs()).then_with(|| a.of.cmp(&b.of)));
+    out.sort_by(|a, b| {
+        b.weight
+            .abs()
+            .total_cmp(&a.weight.abs())
+            .then_with(|| a.of.cmp(&b.of))
+    });
     out
 }

@@ -79,9 +79,16 @@ impl Gauss {
             }
             square += w * w;
         }
-        let z = (0..n).map(|i| (0..n).map(|k| precision[i * n + k] * residual[k]).sum()).collect();
+        let z = (0..n)
+            .map(|i| (0..n).map(|k| precision[i * n + k] * residual[k]).sum())
+            .collect();
         let log_density = -0.5 * square - half_log_det - 0.5 * n as f64 * LN_TWO_PI;
-        Some(Gauss { n, precision, z, log_density })
+        Some(Gauss {
+            n,
+            precision,
+            z,
+            log_density,
+        })
     }
 
     /// Log density of the residuals in `block` given all the others: what is lost when the block is left out.
@@ -125,7 +132,8 @@ mod tests {
         let expected = -0.5 * square - 0.5 * 5f64.ln() - LN_TWO_PI;
         assert!((g.log_density - expected).abs() < 1e-12);
         // Second given first: mean −1/2·… = 0.25, variance 2.5.
-        let conditional = -0.5 * (-1.0f64 - 0.25).powi(2) / 2.5 - 0.5 * 2.5f64.ln() - 0.5 * LN_TWO_PI;
+        let conditional =
+            -0.5 * (-1.0f64 - 0.25).powi(2) / 2.5 - 0.5 * 2.5f64.ln() - 0.5 * LN_TWO_PI;
         assert!((g.conditional(&[1]) - conditional).abs() < 1e-12);
         let first = -0.5 * 0.25 / 2.0 - 0.5 * 2f64.ln() - 0.5 * LN_TWO_PI;
         assert!((g.log_density - g.conditional(&[1]) - first).abs() < 1e-12);

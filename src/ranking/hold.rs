@@ -10,7 +10,10 @@ const HEAT_CAPACITY: f64 = 1.72;
 /// Longest time (s) of a full-stroke held check at an engine speed, and the rise per second (K/s):
 /// P = Δp·Q/600 (kW from bar and L/min); t = ΔT·m·c/P.
 pub fn hold_time(unit: &Unit, rpm: f64) -> (f64, f64) {
-    let figure = |id| unit.known(id).unwrap_or_else(|| unit.class.spread(id).value);
+    let figure = |id| {
+        unit.known(id)
+            .unwrap_or_else(|| unit.class.spread(id).value)
+    };
     let flow = figure(FigureId::PumpDisplacement) * rpm * 1e-3;
     let power = figure(FigureId::LoopRelief) * flow / 600.0;
     let rise = power / (HEAT_CAPACITY * figure(FigureId::LoopVolume));
@@ -33,7 +36,14 @@ mod tests {
             (FigureId::LoopVolume, 4.0, Kind::Volume),
         ] {
             let value = Measure::from_base(v, kind).ok();
-            unit.figures.insert(id, Figure { value, typed: String::new(), source: Source::Manual });
+            unit.figures.insert(
+                id,
+                Figure {
+                    value,
+                    typed: String::new(),
+                    source: Source::Manual,
+                },
+            );
         }
         let (seconds, rise) = hold_time(&unit, 2000.0);
         assert!((rise - 10.17).abs() < 0.02, "{rise}");

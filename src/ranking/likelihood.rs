@@ -48,21 +48,51 @@ fn split(data: &Data) -> Split {
 pub fn fit(data: &Data, p: &Prediction, centre: &[f64], swap_prior: f64) -> Option<Fit> {
     let plain = branch(data, p, centre, None)?;
     let swap = swap_order(data);
-    let Some(order) = swap else { return Some(plain) };
-    let Some(swapped) = branch(data, p, centre, Some(&order)) else { return Some(plain) };
-    let (a, b) = (math::ln(1.0 - swap_prior) + plain.log, math::ln(swap_prior) + swapped.log);
+    let Some(order) = swap else {
+        return Some(plain);
+    };
+    let Some(swapped) = branch(data, p, centre, Some(&order)) else {
+        return Some(plain);
+    };
+    let (a, b) = (
+        math::ln(1.0 - swap_prior) + plain.log,
+        math::ln(swap_prior) + swapped.log,
+    );
     let log = math::ln_sum_exp(&[a, b]);
     let share = math::exp(b - log);
-    let mix = |x: f64, y: f64| math::ln_sum_exp(&[math::ln(1.0 - swap_prior) + x, math::ln(swap_prior) + y]);
-    let without = plain.without.iter().zip(&swapped.without).map(|(x, y)| mix(*x, *y)).collect();
-    let wrong = plain.wrong.iter().zip(&swapped.wrong).map(|(x, y)| (1.0 - share) * x + share * y).collect();
+    let mix = |x: f64, y: f64| {
+        math::ln_sum_exp(&[math::ln(1.0 - swap_prior) + x, math::ln(swap_prior) + y])
+    };
+    let without = plain
+        .without
+        .iter()
+        .zip(&swapped.without)
+        .map(|(x, y)| mix(*x, *y))
+        .collect();
+    let wrong = plain
+        .wrong
+        .iter()
+        .zip(&swapped.wrong)
+        .map(|(x, y)| (1.0 - share) * x + share * y)
+        .collect();
     let at = if share > 0.5 { swapped.at } else { plain.at };
-    Some(Fit { log, without, wrong, swapped: share, at, spread: plain.spread })
+    Some(Fit {
+        log,
+        without,
+        wrong,
+        swapped: share,
+        at,
+        spread: plain.spread,
+    })
 }
 
 /// For each datum the datum whose prediction it takes when sides are swapped; none where no loop side was read.
 fn swap_order(data: &Data) -> Option<Vec<Option<usize>>> {
-    if !data.data.iter().any(|d| matches!(d.port, Port::LoopA | Port::LoopB)) {
+    if !data
+        .data
+        .iter()
+        .any(|d| matches!(d.port, Port::LoopA | Port::LoopB))
+    {
         return None;
     }
     Some(
@@ -74,25 +104,34 @@ fn swap_order(data: &Data) -> Option<Vec<Option<usize>>> {
                     Port::LoopB => Port::LoopA,
                     _ => return None,
                 };
-                data.data.iter().position(|o| o.port == other && o.condition == d.condition && o.says == d.says)
+                data.data
+                    .iter()
+                    .position(|o| o.port == other && o.condition == d.condition && o.says == d.says)
             })
             .collect(),
     )
 }
 
-fn branch(data: &Data, p: &Prediction, centre: &[f64], order: Option<&[Option<usize>]>) -> Option<Fit> {
+fn branch(
+    data: &Data,
+    p: &Prediction,
+    centre: &[f64],
+    order: Option<&[Option<usize>]>,
+) -> Option<Fit> {
     let Split { joint, tails } = split(data);
     let n = joint.len();
     let c = p.columns;
     // Which prediction each datum is held against; a loop side whose partner was not read is left loose when swapped.
-    let from = |k: usize| order.map_or((k, false), |o| {
-        let d = &data.data[k];
-        match (d.port, o[k]) {
-            (Port::LoopA | Port::LoopB, Some(other)) => (other, false),
-            (Port::LoopA | Port::LoopB, None) => (k, true),
-            _ => (k, false),
-        }
-    });
+    let from = |k: usize| {
+        order.map_or((k, false), |o| {
+            let d = &data.data[k];
+            match (d.port, o[k]) {
+                (Port::LoopA | Port::LoopB, Some(other)) => (other, false),
+                (Port::LoopA | Port::LoopB, None) => (k, true),
+                _ => (k, false),
+            }
+        })
+    };
     let row = |k: usize| &p.rows[from(k).0 * c..(from(k).0 + 1) * c];
     let expected = |k: usize| {
         let shift: f64 = row(k).iter().zip(centre).map(|(r, u)| r * u).sum();
@@ -122,7 +161,10 @@ fn branch(data: &Data, p: &Prediction, centre: &[f64], order: Option<&[Option<us
     let mut tail_logs = vec![0.0; data.data.len()];
     for k in &tails {
         let d = &data.data[*k];
-        let variance: f64 = row(*k).iter().map(|r| r * r).sum::<f64>() + d.bias * d.bias + d.own * d.own + p.loose[*k];
+        let variance: f64 = row(*k).iter().map(|r| r * r).sum::<f64>()
+            + d.bias * d.bias
+            + d.own * d.own
+            + p.loose[*k];
         spread[*k] = variance.sqrt();
         let inside = math::ln_normal_cdf((expected(*k) - d.t) / variance.sqrt());
         tail_logs[*k] = math::ln_sum_exp(&[math::ln(1.0 - WRONG) + inside, math::ln(WRONG) - 0.7]);
@@ -148,11 +190,22 @@ fn branch(data: &Data, p: &Prediction, centre: &[f64], order: Option<&[Option<us
             *a += r * g.z[i];
         }
     }
-    Some(Fit { log, without, wrong: branches.wrong, swapped: 0.0, at, spread })
+    Some(Fit {
+        log,
+        without,
+        wrong: branches.wrong,
+        swapped: 0.0,
+        at,
+        spread,
+    })
 }
 
 fn doubt_of(says: &Says) -> f64 {
-    if *says == Says::Nothing { FALSE_NOTHING } else { WRONG }
+    if *says == Says::Nothing {
+        FALSE_NOTHING
+    } else {
+        WRONG
+    }
 }
 
 /// Positions (in the joint vector) of each group's data.
@@ -174,9 +227,20 @@ impl Branches {
     fn new(g: &Gauss, groups: &[Vec<usize>], data: &Data, joint: &[usize]) -> Branches {
         let doubt: Vec<f64> = groups
             .iter()
-            .map(|m| if m.iter().any(|i| data.data[joint[*i]].says == Says::Nothing) { FALSE_NOTHING } else { WRONG })
+            .map(|m| {
+                if m.iter().any(|i| data.data[joint[*i]].says == Says::Nothing) {
+                    FALSE_NOTHING
+                } else {
+                    WRONG
+                }
+            })
             .collect();
-        let all_right: f64 = groups.iter().zip(&doubt).filter(|(m, _)| !m.is_empty()).map(|(_, d)| math::ln(1.0 - d)).sum();
+        let all_right: f64 = groups
+            .iter()
+            .zip(&doubt)
+            .filter(|(m, _)| !m.is_empty())
+            .map(|(_, d)| math::ln(1.0 - d))
+            .sum();
         let odds = |i: usize| math::ln(doubt[i] / (1.0 - doubt[i]));
         let base = g.log_density + all_right;
         let mut terms: Vec<(f64, Vec<usize>)> = vec![(base, Vec::new())];
@@ -189,12 +253,17 @@ impl Branches {
                 }
                 let mut set = chosen.clone();
                 set.push(i);
-                let block: Vec<usize> = set.iter().flat_map(|s| groups[*s].iter().copied()).collect();
+                let block: Vec<usize> = set
+                    .iter()
+                    .flat_map(|s| groups[*s].iter().copied())
+                    .collect();
                 if block.len() >= joint.len() && joint.len() > 1 && set.len() > 1 {
                     continue;
                 }
                 let lost = g.conditional(&block);
-                let value = base - lost + set.iter().map(|s| odds(*s)).sum::<f64>() + ANYTHING * block.len() as f64;
+                let value = base - lost
+                    + set.iter().map(|s| odds(*s)).sum::<f64>()
+                    + ANYTHING * block.len() as f64;
                 terms.push((value, set));
                 if best.is_none_or(|(b, _)| value > b) {
                     best = Some((value, i));
@@ -224,7 +293,8 @@ pub fn not_listed(data: &Data, healthy: &Prediction) -> f64 {
     let mut log = 0.0;
     for (k, d) in data.data.iter().enumerate() {
         let row = &healthy.rows[k * healthy.columns..(k + 1) * healthy.columns];
-        let variance = row.iter().map(|r| r * r).sum::<f64>() + d.own * d.own + d.bias * d.bias + 0.49;
+        let variance =
+            row.iter().map(|r| r * r).sum::<f64>() + d.own * d.own + d.bias * d.bias + 0.49;
         let e = d.t - healthy.mean[k];
         log += if d.says == Says::AtLeast {
             math::ln_normal_cdf(-e / variance.sqrt())

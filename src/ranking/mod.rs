@@ -12,6 +12,8 @@ mod gauss;
 mod hold;
 mod likelihood;
 mod node;
+#[cfg(all(test, not(target_arch = "wasm32")))]
+mod oracle;
 mod posterior;
 mod predict;
 mod rows;

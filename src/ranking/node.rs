@@ -33,22 +33,36 @@ pub fn severity(shape: SeverityShape, quantile: f64) -> f64 {
     }
 }
 
+/// Size of a machine's seats over the reference of 75 and 15 cm³/rev that added leaks are written for.
+fn size_of(theta: &Params, p: Param) -> f64 {
+    match p {
+        Param::CheckLeakA | Param::CheckLeakB | Param::Bypass => {
+            theta[Param::PumpDisp as usize] / 75.0
+        }
+        Param::ReliefHeld | Param::ConsumerLeak | Param::ServoLeak => {
+            theta[Param::ChargeDisp as usize] / 15.0
+        }
+        _ => 1.0,
+    }
+}
+
 /// Bends the parameters of a condition; returns by how much each bent parameter's scatter is scaled.
 pub fn bend(theta: &mut Params, bends: &[(Param, Bend)], s: f64, sign: f64) -> Vec<(Param, f64)> {
     let geometric = |from: f64, to: f64| from * math::pow(to / from, s);
     let straight = |from: f64, to: f64| from + (to - from) * s;
     let mut factors = Vec::with_capacity(bends.len());
     for (p, b) in bends {
+        let size = size_of(theta, *p);
         let v = &mut theta[*p as usize];
         let factor = match *b {
             Bend::Times(from, to) => geometric(from, to),
             Bend::TimesLinear(from, to) => straight(from, to),
             Bend::Plus(from, to) => {
-                *v += straight(from, to);
+                *v += size * straight(from, to);
                 1.0
             }
             Bend::PlusGeometric(from, to) => {
-                *v += geometric(from, to);
+                *v += size * geometric(from, to);
                 1.0
             }
             Bend::PlusEitherSign(from, to) => {
@@ -64,14 +78,20 @@ pub fn bend(theta: &mut Params, bends: &[(Param, Bend)], s: f64, sign: f64) -> V
 
 /// The nodes of a cause, and the log of its prior mass over the builds (base rate × share of builds that can have it).
 pub fn nodes(fault: &Fault, builds: &[Build], fineness: usize) -> (Vec<Node>, f64) {
-    let masses: Vec<f64> = builds.iter().map(|b| b.share * (fault.possible)(&b.unit).max(0.0)).collect();
+    let masses: Vec<f64> = builds
+        .iter()
+        .map(|b| b.share * (fault.possible)(&b.unit).max(0.0))
+        .collect();
     let total: f64 = masses.iter().sum();
     if total <= 0.0 || fault.per_hundred <= 0.0 {
         return (Vec::new(), f64::NEG_INFINITY);
     }
     let mut variants: Vec<(Option<usize>, f64)> = Vec::new();
     for (i, effect) in fault.effects.iter().enumerate() {
-        let either = effect.bends.iter().any(|(_, b)| matches!(b, Bend::PlusEitherSign(..)));
+        let either = effect
+            .bends
+            .iter()
+            .any(|(_, b)| matches!(b, Bend::PlusEitherSign(..)));
         variants.push((Some(i), 1.0));
         if either {
             variants.push((Some(i), -1.0));
@@ -88,7 +108,11 @@ pub fn nodes(fault: &Fault, builds: &[Build], fineness: usize) -> (Vec<Node>, f6
         for (build, mass) in masses.iter().enumerate().filter(|(_, m)| **m > 0.0) {
             let share = mass / total / effects / signs;
             let plain = effect.is_none() || fault.severity == SeverityShape::Total;
-            let n = if plain { 1 } else { ((fineness as f64 * share).round() as usize).clamp(3, fineness) };
+            let n = if plain {
+                1
+            } else {
+                ((fineness as f64 * share).round() as usize).clamp(3, fineness)
+            };
             for i in 0..n {
                 out.push(Node {
                     build,

@@ -51,8 +51,15 @@ struct Held {
 
 /// Weighs every cause of the catalogue. Returns the causes and the largest change of any probability in the last round.
 pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> (Vec<Weighed>, f64) {
-    let swap = if sides == SideNaming::AsMarked { 0.5 } else { SWAPPED };
-    let catalogue: Vec<&Fault> = faults::all().iter().filter(|f| f.id != FaultId::NotListed).collect();
+    let swap = if sides == SideNaming::AsMarked {
+        0.5
+    } else {
+        SWAPPED
+    };
+    let catalogue: Vec<&Fault> = faults::all()
+        .iter()
+        .filter(|f| f.id != FaultId::NotListed)
+        .collect();
     let mut held: Vec<Held> = Vec::new();
     let mut priors = vec![f64::NEG_INFINITY; catalogue.len()];
     let mut healthy_prediction = None;
@@ -62,7 +69,13 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> (Vec<Weighed>, f6
         for node in list {
             let p = bench.predict(fault, &node, data, &[]);
             if let Some(f) = fit(data, &p, &[], swap) {
-                held.push(Held { cause, node, log_weight: node.log_weight, fit: f, mean: p.mean.clone() });
+                held.push(Held {
+                    cause,
+                    node,
+                    log_weight: node.log_weight,
+                    fit: f,
+                    mean: p.mean.clone(),
+                });
             }
             if fault.id == FaultId::Healthy && healthy_prediction.is_none() {
                 healthy_prediction = Some(p);
@@ -74,12 +87,23 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> (Vec<Weighed>, f6
         again(bench, data, &catalogue, &priors, &mut held, swap);
     }
     let after = shares(&held, &priors);
-    let change = before.iter().zip(&after).map(|(a, b)| (a - b).abs()).fold(0.0, f64::max);
+    let change = before
+        .iter()
+        .zip(&after)
+        .map(|(a, b)| (a - b).abs())
+        .fold(0.0, f64::max);
     let mut out: Vec<Weighed> = catalogue
         .iter()
         .enumerate()
         .filter(|(i, _)| priors[*i].is_finite())
-        .map(|(i, fault)| collect(fault.id, priors[i], held.iter().filter(|h| h.cause == i), data))
+        .map(|(i, fault)| {
+            collect(
+                fault.id,
+                priors[i],
+                held.iter().filter(|h| h.cause == i),
+                data,
+            )
+        })
         .collect();
     if let (Some(p), Some(entry)) = (&healthy_prediction, faults::find(FaultId::NotListed)) {
         let log = not_listed(data, p);
@@ -100,7 +124,10 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> (Vec<Weighed>, f6
 
 /// Share of all weight a cause, by its nodes.
 fn shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
-    let logs: Vec<f64> = held.iter().map(|h| priors[h.cause] + h.log_weight + h.fit.log).collect();
+    let logs: Vec<f64> = held
+        .iter()
+        .map(|h| priors[h.cause] + h.log_weight + h.fit.log)
+        .collect();
     let total = math::ln_sum_exp(&logs);
     let mut out = vec![0.0; priors.len()];
     for (h, l) in held.iter().zip(&logs) {
@@ -110,14 +137,34 @@ fn shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
 }
 
 /// Linearises the nodes that carry weight again, each at its own posterior mean.
-fn again(bench: &Bench, data: &Data, catalogue: &[&Fault], priors: &[f64], held: &mut [Held], swap: f64) {
-    let logs: Vec<f64> = held.iter().map(|h| priors[h.cause] + h.log_weight + h.fit.log).collect();
+fn again(
+    bench: &Bench,
+    data: &Data,
+    catalogue: &[&Fault],
+    priors: &[f64],
+    held: &mut [Held],
+    swap: f64,
+) {
+    let logs: Vec<f64> = held
+        .iter()
+        .map(|h| priors[h.cause] + h.log_weight + h.fit.log)
+        .collect();
     let total = math::ln_sum_exp(&logs);
-    let mut heavy: Vec<(usize, f64)> = logs.iter().enumerate().map(|(i, l)| (i, l - total)).filter(|(_, l)| *l > math::ln(HEAVY)).collect();
+    let mut heavy: Vec<(usize, f64)> = logs
+        .iter()
+        .enumerate()
+        .map(|(i, l)| (i, l - total))
+        .filter(|(_, l)| *l > math::ln(HEAVY))
+        .collect();
     heavy.sort_by(|a, b| b.1.total_cmp(&a.1).then(a.0.cmp(&b.0)));
     for (i, _) in heavy.into_iter().take(MOST_AGAIN) {
         let h = &held[i];
-        let mut centre: Vec<f64> = h.fit.at.iter().map(|v| v.clamp(-FARTHEST, FARTHEST)).collect();
+        let mut centre: Vec<f64> = h
+            .fit
+            .at
+            .iter()
+            .map(|v| v.clamp(-FARTHEST, FARTHEST))
+            .collect();
         if let Some(last) = centre.last_mut() {
             // The place in the severity cell ends at the cell's wall.
             *last = last.clamp(-(3f64.sqrt()), 3f64.sqrt());
@@ -136,27 +183,68 @@ fn again(bench: &Bench, data: &Data, catalogue: &[&Fault], priors: &[f64], held:
     }
 }
 
-fn collect<'a>(id: FaultId, log_prior: f64, nodes: impl Iterator<Item = &'a Held>, data: &Data) -> Weighed {
+fn collect<'a>(
+    id: FaultId,
+    log_prior: f64,
+    nodes: impl Iterator<Item = &'a Held>,
+    data: &Data,
+) -> Weighed {
     let nodes: Vec<&Held> = nodes.collect();
     let n = data.data.len();
     let logs: Vec<f64> = nodes.iter().map(|h| h.log_weight + h.fit.log).collect();
-    let log_likelihood = if logs.is_empty() { f64::NEG_INFINITY } else { math::ln_sum_exp(&logs) };
+    let log_likelihood = if logs.is_empty() {
+        f64::NEG_INFINITY
+    } else {
+        math::ln_sum_exp(&logs)
+    };
     let weights: Vec<f64> = logs.iter().map(|l| math::exp(l - log_likelihood)).collect();
     let without = (0..n)
         .map(|k| {
-            let terms: Vec<f64> = nodes.iter().map(|h| h.log_weight + h.fit.without[k]).collect();
-            if terms.is_empty() { f64::NEG_INFINITY } else { math::ln_sum_exp(&terms) }
+            let terms: Vec<f64> = nodes
+                .iter()
+                .map(|h| h.log_weight + h.fit.without[k])
+                .collect();
+            if terms.is_empty() {
+                f64::NEG_INFINITY
+            } else {
+                math::ln_sum_exp(&terms)
+            }
         })
         .collect();
-    let wrong = (0..data.groups).map(|g| nodes.iter().zip(&weights).map(|(h, w)| w * h.fit.wrong[g]).sum()).collect();
-    let swapped = nodes.iter().zip(&weights).map(|(h, w)| w * h.fit.swapped).sum();
+    let wrong = (0..data.groups)
+        .map(|g| {
+            nodes
+                .iter()
+                .zip(&weights)
+                .map(|(h, w)| w * h.fit.wrong[g])
+                .sum()
+        })
+        .collect();
+    let swapped = nodes
+        .iter()
+        .zip(&weights)
+        .map(|(h, w)| w * h.fit.swapped)
+        .sum();
     let would = (0..n)
         .map(|k| {
             let mean: f64 = nodes.iter().zip(&weights).map(|(h, w)| w * h.mean[k]).sum();
-            let square: f64 = nodes.iter().zip(&weights).map(|(h, w)| w * ((h.mean[k] - mean).powi(2) + h.fit.spread[k].powi(2))).sum();
+            let square: f64 = nodes
+                .iter()
+                .zip(&weights)
+                .map(|(h, w)| w * ((h.mean[k] - mean).powi(2) + h.fit.spread[k].powi(2)))
+                .sum();
             (mean, square.sqrt())
         })
         .collect();
     let heaviest = weights.iter().copied().fold(0.0, f64::max);
-    Weighed { id, log_prior, log_likelihood, without, wrong, swapped, would, heaviest }
+    Weighed {
+        id,
+        log_prior,
+        log_likelihood,
+        without,
+        wrong,
+        swapped,
+        would,
+        heaviest,
+    }
 }

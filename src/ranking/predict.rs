@@ -64,8 +64,18 @@ impl Bench {
         let mut bases = Vec::new();
         for b in &builds {
             let base = base(b);
-            networks.push(conditions.iter().map(|c| Network::new(layout_for(b, c))).collect::<Vec<_>>());
-            bases.push(conditions.iter().map(|c| apply(b, &base, c)).collect::<Vec<_>>());
+            networks.push(
+                conditions
+                    .iter()
+                    .map(|c| Network::new(layout_for(b, c)))
+                    .collect::<Vec<_>>(),
+            );
+            bases.push(
+                conditions
+                    .iter()
+                    .map(|c| apply(b, &base, c))
+                    .collect::<Vec<_>>(),
+            );
         }
         let acts = (0..conditions.len())
             .map(|c| {
@@ -121,17 +131,34 @@ impl Bench {
     }
 
     /// Parameters of a node in a condition at scatter `u` (the last entry is the place in the severity cell).
-    fn theta(&self, fault: &Fault, node: &Node, condition: usize, u: &[f64], shift: f64) -> (Params, Vec<(Param, f64)>) {
+    fn theta(
+        &self,
+        fault: &Fault,
+        node: &Node,
+        condition: usize,
+        u: &[f64],
+        shift: f64,
+    ) -> (Params, Vec<(Param, f64)>) {
         let mut theta = if u.is_empty() {
             self.bases[node.build][condition]
         } else {
             let wide: Vec<f64> = u.iter().map(|v| v * WIDER).collect();
-            scattered(&self.bases[node.build][condition], &self.latents, condition, &wide)
+            scattered(
+                &self.bases[node.build][condition],
+                &self.latents,
+                condition,
+                &wide,
+            )
         };
         let mut factors = Vec::new();
         if let Some(effect) = node.effect.and_then(|e| fault.effects.get(e)) {
             let place = node.quantile + node.half * shift;
-            factors = bend(&mut theta, effect.bends, severity(fault.severity, place), node.sign);
+            factors = bend(
+                &mut theta,
+                effect.bends,
+                severity(fault.severity, place),
+                node.sign,
+            );
         }
         keep_order(&mut theta);
         (theta, factors)
@@ -151,17 +178,31 @@ impl Bench {
         for p in wants {
             let shown = if *p == Port::Knee {
                 self.solves.set(self.solves.get() + 8);
-                net.knee(theta, self.bases[node.build][condition][Param::Speed as usize].max(1500.0)).ok()?
+                net.knee(
+                    theta,
+                    self.bases[node.build][condition][Param::Speed as usize].max(1500.0),
+                )
+                .ok()?
             } else {
                 net.reading_and_gradient(*p, &solution, theta)
             };
             ports.push((*p, shown));
         }
-        Some(Shows { ports, filled: net.filled(&solution, theta), air: theta[Param::Air as usize] })
+        Some(Shows {
+            ports,
+            filled: net.filled(&solution, theta),
+            air: theta[Param::Air as usize],
+        })
     }
 
     /// Values only, of every wanted port in a condition at scatter `u`: for ensembles.
-    pub fn values(&self, fault: &Fault, node: &Node, condition: usize, u: &[f64]) -> Option<Vec<(Port, f64)>> {
+    pub fn values(
+        &self,
+        fault: &Fault,
+        node: &Node,
+        condition: usize,
+        u: &[f64],
+    ) -> Option<Vec<(Port, f64)>> {
         let (theta, _) = self.theta(fault, node, condition, u, 0.0);
         let net = &self.networks[node.build][condition];
         let start = self.warm.borrow()[node.build][condition];
@@ -170,7 +211,12 @@ impl Bench {
         let mut out = Vec::with_capacity(self.wanted[condition].len());
         for p in &self.wanted[condition] {
             let v = if *p == Port::Knee {
-                net.knee(&theta, self.bases[node.build][condition][Param::Speed as usize].max(1500.0)).ok()?.value
+                net.knee(
+                    &theta,
+                    self.bases[node.build][condition][Param::Speed as usize].max(1500.0),
+                )
+                .ok()?
+                .value
             } else {
                 net.reading(*p, &solution, &theta)
             };
@@ -181,19 +227,43 @@ impl Bench {
 
     /// Engine speed (rpm) that a condition is taken at.
     pub fn speed(&self, build: usize, condition: usize) -> f64 {
-        self.bases.get(build).and_then(|b| b.get(condition)).map_or(0.0, |t| t[Param::Speed as usize])
+        self.bases
+            .get(build)
+            .and_then(|b| b.get(condition))
+            .map_or(0.0, |t| t[Param::Speed as usize])
     }
 
     /// For each latent its words and its share of the variance of what a port shows on a healthy machine (the first build).
-    pub fn shares_of_spread(&self, healthy: &Fault, port: Port, condition: usize) -> Vec<(String, f64)> {
-        let node = Node { build: 0, effect: None, sign: 1.0, quantile: 0.5, half: 0.0, log_weight: 0.0 };
+    pub fn shares_of_spread(
+        &self,
+        healthy: &Fault,
+        port: Port,
+        condition: usize,
+    ) -> Vec<(String, f64)> {
+        let node = Node {
+            build: 0,
+            effect: None,
+            sign: 1.0,
+            quantile: 0.5,
+            half: 0.0,
+            log_weight: 0.0,
+        };
         let (theta, factors) = self.theta(healthy, &node, condition, &[], 0.0);
-        let Some(s) = self.shows(&node, condition, &theta) else { return Vec::new() };
-        let Some(at) = s.ports.iter().position(|(p, _)| *p == port) else { return Vec::new() };
+        let Some(s) = self.shows(&node, condition, &theta) else {
+            return Vec::new();
+        };
+        let Some(at) = s.ports.iter().position(|(p, _)| *p == port) else {
+            return Vec::new();
+        };
         let columns = self.latents.0.len() + 1;
         let rows = self.latent_rows(&s, condition, &theta, &factors, healthy, &node, &[], 0.0);
         let row = &rows[at * columns..at * columns + columns - 1];
-        self.latents.0.iter().zip(row).map(|(l, r)| (l.words.clone(), r * r)).collect()
+        self.latents
+            .0
+            .iter()
+            .zip(row)
+            .map(|(l, r)| (l.words.clone(), r * r))
+            .collect()
     }
 
     /// Predicts every datum at a node, linearised round scatter `u` (empty: the middle).
@@ -216,7 +286,13 @@ impl Bench {
             }));
         }
         let n = data.data.len();
-        let mut out = Prediction { mean: vec![0.0; n], rows: vec![0.0; n * columns], columns, loose: vec![0.0; n], swing: 0.0 };
+        let mut out = Prediction {
+            mean: vec![0.0; n],
+            rows: vec![0.0; n * columns],
+            columns,
+            loose: vec![0.0; n],
+            swing: 0.0,
+        };
         for (k, d) in data.data.iter().enumerate() {
             let row = &mut out.rows[k * columns..(k + 1) * columns];
             match self.one(d, &shows, row, columns) {
@@ -235,7 +311,57 @@ impl Bench {
         out
     }
 
-    fn one(&self, d: &Datum, shows: &[Option<(Shows, Vec<f64>)>], row: &mut [f64], columns: usize) -> Option<(f64, bool)> {
+    /// Predicts every datum at drawn scatter, without derivatives: one member of an ensemble.
+    #[cfg(test)]
+    pub fn drawn(&self, fault: &Fault, node: &Node, data: &Data, u: &[f64]) -> Prediction {
+        let n = data.data.len();
+        let mut out = Prediction {
+            mean: vec![0.0; n],
+            rows: vec![0.0; n],
+            columns: 1,
+            loose: vec![0.0; n],
+            swing: 0.0,
+        };
+        let mut shown = Vec::with_capacity(data.conditions.len());
+        for c in 0..data.conditions.len() {
+            let (theta, _) = self.theta(fault, node, c, u, 0.0);
+            let start = self.warm.borrow()[node.build][c];
+            let net = &self.networks[node.build][c];
+            shown.push(net.solve(&theta, start.as_ref()).ok().map(|s| (theta, s)));
+        }
+        for (k, d) in data.data.iter().enumerate() {
+            let value = |c: usize| {
+                shown[c]
+                    .as_ref()
+                    .map(|(theta, s)| self.networks[node.build][c].reading(d.port, s, theta))
+            };
+            match (value(d.condition), &d.says) {
+                (Some(v), Says::Share(other)) => {
+                    out.mean[k] =
+                        transform(d.port, v) - value(*other).map_or(0.0, |o| transform(d.port, o));
+                }
+                (Some(v), _) => out.mean[k] = transform(d.port, v),
+                (None, _) => {
+                    out.mean[k] = d.t;
+                    out.loose[k] = LOOSE;
+                }
+            }
+            let starved = shown[d.condition].as_ref().is_none_or(|(theta, s)| {
+                self.networks[node.build][d.condition].filled(s, theta) < 0.97
+                    || theta[Param::Air as usize] > 0.08
+            });
+            out.swing += swing_factor(d, starved);
+        }
+        out
+    }
+
+    fn one(
+        &self,
+        d: &Datum,
+        shows: &[Option<(Shows, Vec<f64>)>],
+        row: &mut [f64],
+        columns: usize,
+    ) -> Option<(f64, bool)> {
         let (s, rows) = shows[d.condition].as_ref()?;
         let at = s.ports.iter().position(|(p, _)| *p == d.port)?;
         let value = s.ports[at].1.value;
@@ -249,7 +375,10 @@ impl Bench {
                 for (i, r) in row.iter_mut().enumerate() {
                     *r = rows[at * columns + i] * k - o_rows[o_at * columns + i] * ko;
                 }
-                Some((transform(d.port, value) - transform(d.port, o_value), starved))
+                Some((
+                    transform(d.port, value) - transform(d.port, o_value),
+                    starved,
+                ))
             }
             _ => {
                 let k = slope(d.port, value);
@@ -277,7 +406,11 @@ impl Bench {
         let columns = self.latents.0.len() + 1;
         let mut rows = vec![0.0; s.ports.len() * columns];
         for (latent, p, size) in &self.acts[condition] {
-            let factor = factors.iter().filter(|(q, _)| q == p).map(|(_, f)| *f).product::<f64>();
+            let factor = factors
+                .iter()
+                .filter(|(q, _)| q == p)
+                .map(|(_, f)| *f)
+                .product::<f64>();
             let change = match p.scale() {
                 Scale::Log => theta[*p as usize] * size,
                 Scale::Linear => size * factor,
@@ -313,7 +446,15 @@ fn keep_order(theta: &mut Params) {
     *full = full.max(1.1 * start);
     let air = &mut theta[Param::Air as usize];
     *air = air.clamp(0.0, 0.98);
-    for p in [Param::Load, Param::SignalForward, Param::SignalReverse, Param::PilotSupply, Param::DriveGrip, Param::ChargeDrive, Param::ChargeFeed] {
+    for p in [
+        Param::Load,
+        Param::SignalForward,
+        Param::SignalReverse,
+        Param::PilotSupply,
+        Param::DriveGrip,
+        Param::ChargeDrive,
+        Param::ChargeFeed,
+    ] {
         let v = &mut theta[p as usize];
         *v = v.max(0.0);
     }

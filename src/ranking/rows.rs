@@ -13,7 +13,13 @@ use crate::readings::Reading;
 const ALIKE: f64 = 0.6;
 
 /// Rows in order of probability.
-pub fn rows(weighed: &[Weighed], data: &Data, readings: &[Reading], seen: &[Seen], words: &[String]) -> Vec<Cause> {
+pub fn rows(
+    weighed: &[Weighed],
+    data: &Data,
+    readings: &[Reading],
+    seen: &[Seen],
+    words: &[String],
+) -> Vec<Cause> {
     let probable = Probable::new(weighed, seen);
     let mut taken = vec![false; weighed.len()];
     let mut out = Vec::new();
@@ -23,15 +29,37 @@ pub fn rows(weighed: &[Weighed], data: &Data, readings: &[Reading], seen: &[Seen
             for i in &members {
                 taken[*i] = true;
             }
-            out.push(row(&members, Some(set), weighed, &probable, data, readings, seen, words));
+            out.push(row(
+                &members,
+                Some(set),
+                weighed,
+                &probable,
+                data,
+                readings,
+                seen,
+                words,
+            ));
         }
     }
     for i in 0..weighed.len() {
         if !taken[i] {
-            out.push(row(&[i], None, weighed, &probable, data, readings, seen, words));
+            out.push(row(
+                &[i],
+                None,
+                weighed,
+                &probable,
+                data,
+                readings,
+                seen,
+                words,
+            ));
         }
     }
-    out.sort_by(|a, b| b.probability.total_cmp(&a.probability).then_with(|| a.ids.cmp(&b.ids)));
+    out.sort_by(|a, b| {
+        b.probability
+            .total_cmp(&a.probability)
+            .then_with(|| a.ids.cmp(&b.ids))
+    });
     out
 }
 
@@ -40,10 +68,18 @@ fn alike(set: &AlikeSet, weighed: &[Weighed], probable: &Probable) -> Vec<usize>
     let mut found: Vec<usize> = set
         .ids
         .iter()
-        .filter_map(|id| weighed.iter().position(|w| w.id == *id && w.log_prior.is_finite()))
+        .filter_map(|id| {
+            weighed
+                .iter()
+                .position(|w| w.id == *id && w.log_prior.is_finite())
+        })
         .collect();
     found.retain(|i| probable.log_likelihood[*i].is_finite());
-    let Some(best) = found.iter().copied().max_by(|a, b| probable.log_likelihood[*a].total_cmp(&probable.log_likelihood[*b])) else {
+    let Some(best) = found
+        .iter()
+        .copied()
+        .max_by(|a, b| probable.log_likelihood[*a].total_cmp(&probable.log_likelihood[*b]))
+    else {
         return found;
     };
     found.retain(|i| probable.log_likelihood[best] - probable.log_likelihood[*i] < ALIKE);
@@ -64,7 +100,11 @@ fn row(
     let ids: Vec<FaultId> = members.iter().map(|i| weighed[*i].id).collect();
     let shares: Vec<f64> = members.iter().map(|i| probable.share[*i]).collect();
     let probability = shares.iter().sum();
-    let lead = members.iter().copied().max_by(|a, b| probable.share[*a].total_cmp(&probable.share[*b])).unwrap_or(members[0]);
+    let lead = members
+        .iter()
+        .copied()
+        .max_by(|a, b| probable.share[*a].total_cmp(&probable.share[*b]))
+        .unwrap_or(members[0]);
     let title = match set {
         Some(s) => s.title.to_string(),
         None => faults::find(weighed[lead].id).map_or(String::new(), |f| f.title.to_string()),
@@ -99,7 +139,11 @@ fn would_read(w: &Weighed, data: &Data, readings: &[Reading]) -> Vec<WouldRead> 
                     (value, spread * (value * value + s * s).sqrt())
                 }
             };
-            (value.is_finite() && spread.is_finite()).then_some(WouldRead { reading, value, spread })
+            (value.is_finite() && spread.is_finite()).then_some(WouldRead {
+                reading,
+                value,
+                spread,
+            })
         })
         .collect()
 }

@@ -23,13 +23,24 @@ const QUIET_IN_NEUTRAL: f64 = 0.15;
 pub fn observed(visit: &Visit) -> Vec<Seen> {
     observations::detail(&visit.observations)
         .into_iter()
-        .map(|d| Seen { id: d.id.to_string(), words: d.words, logs: d.logs })
+        .map(|d| Seen {
+            id: d.id.to_string(),
+            words: d.words,
+            logs: d.logs,
+        })
         .collect()
 }
 
 /// Factor on a cause's base rate from the story: trouble that began straight after a repair, a machine that stood quietly.
 pub fn prior_factor(visit: &Visit, id: FaultId) -> f64 {
     let story = observations::prior_factor(visit.after_repair, id);
-    let quiet = visit.readings.iter().any(|r| r.seen.is_some() && r.condition.doing.is_neutral());
-    if id == FaultId::StrokeStuck && quiet && !observations::stop_work(&visit.observations) { story * QUIET_IN_NEUTRAL } else { story }
+    let quiet = visit
+        .readings
+        .iter()
+        .any(|r| r.seen.is_some() && r.condition.doing.is_neutral());
+    if id == FaultId::StrokeStuck && quiet && !observations::stop_work(&visit.observations) {
+        story * QUIET_IN_NEUTRAL
+    } else {
+        story
+    }
 }

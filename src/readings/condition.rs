@@ -40,7 +40,10 @@ impl Doing {
 
     /// True where the lever stands in neutral, so that direction and lever say nothing.
     pub fn is_neutral(self) -> bool {
-        matches!(self, Doing::Neutral | Doing::NeutralFree | Doing::NeutralBridged)
+        matches!(
+            self,
+            Doing::Neutral | Doing::NeutralFree | Doing::NeutralBridged
+        )
     }
 
     /// Short name for a screen.
@@ -59,7 +62,9 @@ impl Doing {
 }
 
 /// Which way the machine is asked to go. Side A is the side that is high when it goes forward.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
 #[serde(rename_all = "snake_case")]
 pub enum Direction {
     /// Forward.
@@ -113,7 +118,9 @@ pub enum EngineSpeed {
 }
 
 /// Where a temperature was taken. The loop and the cases run hotter than the tank (common practice).
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
 #[serde(rename_all = "snake_case")]
 pub enum Place {
     /// Tank or sight glass.

@@ -5,7 +5,9 @@ use super::FigureId;
 use serde::{Deserialize, Serialize};
 
 /// Class of machine.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
 #[serde(rename_all = "snake_case")]
 pub enum MachineClass {
     /// Small ride-on or walk-behind with an integrated pump and motor.
@@ -90,18 +92,101 @@ impl MachineClass {
 
     /// Practice figures of the class. Common practice, from memory.
     pub fn practice(self) -> ClassPractice {
-        let p = |pump, motor, ratio, rolling, charge, relief, low_idle, high_idle, shares: [f64; 4]| ClassPractice {
-            pump, motor, ratio, rolling, charge, relief, low_idle, high_idle,
-            flushing: shares[0], limiter: shares[1], two_speed: shares[2], brake: shares[3],
-        };
+        let p =
+            |pump, motor, ratio, rolling, charge, relief, low_idle, high_idle, shares: [f64; 4]| {
+                ClassPractice {
+                    pump,
+                    motor,
+                    ratio,
+                    rolling,
+                    charge,
+                    relief,
+                    low_idle,
+                    high_idle,
+                    flushing: shares[0],
+                    limiter: shares[1],
+                    two_speed: shares[2],
+                    brake: shares[3],
+                }
+            };
         match self {
-            MachineClass::SmallIntegrated => p(16.0, 16.0, 22.0, 1.6, 7.0, 210.0, 1400.0, 3200.0, [0.05, 0.02, 0.02, 0.1]),
-            MachineClass::CompactWheeled => p(45.0, 480.0, 1.0, 2.4, 17.0, 300.0, 1050.0, 2600.0, [0.3, 0.15, 0.4, 0.6]),
-            MachineClass::CompactTracked => p(45.0, 60.0, 25.0, 1.6, 20.0, 350.0, 1050.0, 2500.0, [0.45, 0.3, 0.7, 0.8]),
-            MachineClass::Roller => p(75.0, 75.0, 60.0, 4.2, 22.0, 380.0, 900.0, 2400.0, [0.6, 0.4, 0.5, 0.8]),
-            MachineClass::Loader => p(90.0, 110.0, 20.0, 3.8, 24.0, 400.0, 850.0, 2350.0, [0.5, 0.6, 0.5, 0.6]),
-            MachineClass::WheelMotorCarrier => p(75.0, 500.0, 1.0, 3.6, 22.0, 380.0, 900.0, 2300.0, [0.5, 0.4, 0.5, 0.7]),
-            MachineClass::Crawler => p(110.0, 130.0, 60.0, 2.6, 26.0, 420.0, 850.0, 2200.0, [0.7, 0.7, 0.7, 0.9]),
+            MachineClass::SmallIntegrated => p(
+                16.0,
+                16.0,
+                22.0,
+                1.6,
+                7.0,
+                210.0,
+                1400.0,
+                3200.0,
+                [0.05, 0.02, 0.02, 0.1],
+            ),
+            MachineClass::CompactWheeled => p(
+                45.0,
+                480.0,
+                1.0,
+                2.4,
+                17.0,
+                300.0,
+                1050.0,
+                2600.0,
+                [0.3, 0.15, 0.4, 0.6],
+            ),
+            MachineClass::CompactTracked => p(
+                45.0,
+                60.0,
+                25.0,
+                1.6,
+                20.0,
+                350.0,
+                1050.0,
+                2500.0,
+                [0.45, 0.3, 0.7, 0.8],
+            ),
+            MachineClass::Roller => p(
+                75.0,
+                75.0,
+                60.0,
+                4.2,
+                22.0,
+                380.0,
+                900.0,
+                2400.0,
+                [0.6, 0.4, 0.5, 0.8],
+            ),
+            MachineClass::Loader => p(
+                90.0,
+                110.0,
+                20.0,
+                3.8,
+                24.0,
+                400.0,
+                850.0,
+                2350.0,
+                [0.5, 0.6, 0.5, 0.6],
+            ),
+            MachineClass::WheelMotorCarrier => p(
+                75.0,
+                500.0,
+                1.0,
+                3.6,
+                22.0,
+                380.0,
+                900.0,
+                2300.0,
+                [0.5, 0.4, 0.5, 0.7],
+            ),
+            MachineClass::Crawler => p(
+                110.0,
+                130.0,
+                60.0,
+                2.6,
+                26.0,
+                420.0,
+                850.0,
+                2200.0,
+                [0.7, 0.7, 0.7, 0.9],
+            ),
         }
     }
 

@@ -4,7 +4,9 @@ use crate::quantity::{Kind, Measure};
 use serde::{Deserialize, Serialize};
 
 /// Where a figure comes from. It decides how wide the figure is taken.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
 #[serde(rename_all = "snake_case")]
 pub enum Source {
     /// The unit's own manual.
@@ -20,7 +22,12 @@ pub enum Source {
 
 impl Source {
     /// Every source, in the order in which screens offer them.
-    pub const ALL: [Source; 4] = [Source::Manual, Source::Plate, Source::Measured, Source::Practice];
+    pub const ALL: [Source; 4] = [
+        Source::Manual,
+        Source::Plate,
+        Source::Measured,
+        Source::Practice,
+    ];
 
     /// Words for a screen.
     pub fn words(self) -> &'static str {
@@ -106,21 +113,140 @@ pub struct FigureAsk {
 
 /// Every figure that can be given, the five that matter most first.
 pub const FIGURES: &[FigureAsk] = &[
-    FigureAsk { id: FigureId::PumpDisplacement, words: "Main pump displacement", hint: "plate or code on the pump", kind: Kind::Displacement, low: 5.0, high: 1000.0 },
-    FigureAsk { id: FigureId::ChargeDisplacement, words: "Charge pump displacement", hint: "manual; often 10 to 20 % of the main pump", kind: Kind::Displacement, low: 1.0, high: 250.0 },
-    FigureAsk { id: FigureId::HighIdle, words: "High idle", hint: "full throttle, nothing loaded", kind: Kind::RotationalSpeed, low: 800.0, high: 5000.0 },
-    FigureAsk { id: FigureId::ChargeSetting, words: "Charge relief setting", hint: "above case, as the manual gives it", kind: Kind::Pressure, low: 2.0, high: 60.0 },
-    FigureAsk { id: FigureId::OilGrade, words: "Oil grade (mm²/s at 40 °C)", hint: "ISO VG number on the drum: 32, 46, 68", kind: Kind::KinematicViscosity, low: 7.0, high: 320.0 },
-    FigureAsk { id: FigureId::LowIdle, words: "Low idle", hint: "throttle right back", kind: Kind::RotationalSpeed, low: 400.0, high: 2000.0 },
-    FigureAsk { id: FigureId::MotorDisplacement, words: "Motor displacement (one motor, large)", hint: "plate or code on the motor", kind: Kind::Displacement, low: 5.0, high: 10000.0 },
-    FigureAsk { id: FigureId::OperatingSetting, words: "Operating (flushing) relief setting", hint: "above motor case; a little below the charge relief", kind: Kind::Pressure, low: 2.0, high: 60.0 },
-    FigureAsk { id: FigureId::LoopRelief, words: "Loop relief setting", hint: "stamp on the cartridge or manual", kind: Kind::Pressure, low: 60.0, high: 600.0 },
-    FigureAsk { id: FigureId::Limiter, words: "Pressure limiter setting", hint: "manual", kind: Kind::Pressure, low: 50.0, high: 600.0 },
-    FigureAsk { id: FigureId::GearRatio, words: "Motor turns per wheel turn", hint: "1 where the motor sits in the hub", kind: Kind::Ratio, low: 0.2, high: 400.0 },
-    FigureAsk { id: FigureId::RollingCircumference, words: "Rolling circumference", hint: "one wheel turn, mark to mark on the ground", kind: Kind::Length, low: 0.3, high: 10.0 },
-    FigureAsk { id: FigureId::BrakeRelease, words: "Brake release pressure", hint: "fully released, manual", kind: Kind::Pressure, low: 3.0, high: 60.0 },
-    FigureAsk { id: FigureId::FullCurrent, words: "Coil current at full stroke", hint: "manual", kind: Kind::Current, low: 50.0, high: 4000.0 },
-    FigureAsk { id: FigureId::FullPilot, words: "Pilot pressure at full stroke", hint: "manual", kind: Kind::Pressure, low: 5.0, high: 60.0 },
-    FigureAsk { id: FigureId::LoopVolume, words: "Oil in the loop", hint: "lines, pump and motor; 3 to 6 L on most", kind: Kind::Volume, low: 0.3, high: 60.0 },
-    FigureAsk { id: FigureId::Altitude, words: "Altitude of the site", hint: "0 by the sea", kind: Kind::Length, low: -400.0, high: 5500.0 },
+    FigureAsk {
+        id: FigureId::PumpDisplacement,
+        words: "Main pump displacement",
+        hint: "plate or code on the pump",
+        kind: Kind::Displacement,
+        low: 5.0,
+        high: 1000.0,
+    },
+    FigureAsk {
+        id: FigureId::ChargeDisplacement,
+        words: "Charge pump displacement",
+        hint: "manual; often 10 to 20 % of the main pump",
+        kind: Kind::Displacement,
+        low: 1.0,
+        high: 250.0,
+    },
+    FigureAsk {
+        id: FigureId::HighIdle,
+        words: "High idle",
+        hint: "full throttle, nothing loaded",
+        kind: Kind::RotationalSpeed,
+        low: 800.0,
+        high: 5000.0,
+    },
+    FigureAsk {
+        id: FigureId::ChargeSetting,
+        words: "Charge relief setting",
+        hint: "above case, as the manual gives it",
+        kind: Kind::Pressure,
+        low: 2.0,
+        high: 60.0,
+    },
+    FigureAsk {
+        id: FigureId::OilGrade,
+        words: "Oil grade (mm²/s at 40 °C)",
+        hint: "ISO VG number on the drum: 32, 46, 68",
+        kind: Kind::KinematicViscosity,
+        low: 7.0,
+        high: 320.0,
+    },
+    FigureAsk {
+        id: FigureId::LowIdle,
+        words: "Low idle",
+        hint: "throttle right back",
+        kind: Kind::RotationalSpeed,
+        low: 400.0,
+        high: 2000.0,
+    },
+    FigureAsk {
+        id: FigureId::MotorDisplacement,
+        words: "Motor displacement (one motor, large)",
+        hint: "plate or code on the motor",
+        kind: Kind::Displacement,
+        low: 5.0,
+        high: 10000.0,
+    },
+    FigureAsk {
+        id: FigureId::OperatingSetting,
+        words: "Operating (flushing) relief setting",
+        hint: "above motor case; a little below the charge relief",
+        kind: Kind::Pressure,
+        low: 2.0,
+        high: 60.0,
+    },
+    FigureAsk {
+        id: FigureId::LoopRelief,
+        words: "Loop relief setting",
+        hint: "stamp on the cartridge or manual",
+        kind: Kind::Pressure,
+        low: 60.0,
+        high: 600.0,
+    },
+    FigureAsk {
+        id: FigureId::Limiter,
+        words: "Pressure limiter setting",
+        hint: "manual",
+        kind: Kind::Pressure,
+        low: 50.0,
+        high: 600.0,
+    },
+    FigureAsk {
+        id: FigureId::GearRatio,
+        words: "Motor turns per wheel turn",
+        hint: "1 where the motor sits in the hub",
+        kind: Kind::Ratio,
+        low: 0.2,
+        high: 400.0,
+    },
+    FigureAsk {
+        id: FigureId::RollingCircumference,
+        words: "Rolling circumference",
+        hint: "one wheel turn, mark to mark on the ground",
+        kind: Kind::Length,
+        low: 0.3,
+        high: 10.0,
+    },
+    FigureAsk {
+        id: FigureId::BrakeRelease,
+        words: "Brake release pressure",
+        hint: "fully released, manual",
+        kind: Kind::Pressure,
+        low: 3.0,
+        high: 60.0,
+    },
+    FigureAsk {
+        id: FigureId::FullCurrent,
+        words: "Coil current at full stroke",
+        hint: "manual",
+        kind: Kind::Current,
+        low: 50.0,
+        high: 4000.0,
+    },
+    FigureAsk {
+        id: FigureId::FullPilot,
+        words: "Pilot pressure at full stroke",
+        hint: "manual",
+        kind: Kind::Pressure,
+        low: 5.0,
+        high: 60.0,
+    },
+    FigureAsk {
+        id: FigureId::LoopVolume,
+        words: "Oil in the loop",
+        hint: "lines, pump and motor; 3 to 6 L on most",
+        kind: Kind::Volume,
+        low: 0.3,
+        high: 60.0,
+    },
+    FigureAsk {
+        id: FigureId::Altitude,
+        words: "Altitude of the site",
+        hint: "0 by the sea",
+        kind: Kind::Length,
+        low: -400.0,
+        high: 5500.0,
+    },
 ];

@@ -64,6 +64,9 @@ pub struct Unit {
 impl Unit {
     /// The value of a figure where it is known and can be read, base unit of its kind.
     pub fn known(&self, id: FigureId) -> Option<f64> {
-        self.figures.get(&id).and_then(|f| f.value).map(|m| m.base())
+        self.figures
+            .get(&id)
+            .and_then(|f| f.value)
+            .map(|m| m.base())
     }
 }

@@ -3,7 +3,9 @@
 use serde::{Deserialize, Serialize};
 
 /// Yes, no, or don't know.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
 #[serde(rename_all = "snake_case")]
 pub enum Tick {
     /// Fitted.
@@ -16,7 +18,9 @@ pub enum Tick {
 }
 
 /// How the swash plate is commanded.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
 #[serde(rename_all = "snake_case")]
 pub enum Control {
     /// Lever straight on the swash shaft, no servo.
@@ -67,7 +71,9 @@ impl Control {
 }
 
 /// Where the charge oil is filtered, and where the charge gauge sits to it.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
 #[serde(rename_all = "snake_case")]
 pub enum Filter {
     /// In the suction line of the charge pump.
@@ -82,7 +88,9 @@ pub enum Filter {
 }
 
 /// Where the charge oil comes from.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
 #[serde(rename_all = "snake_case")]
 pub enum ChargeSource {
     /// Its own charge pump.
@@ -97,7 +105,9 @@ pub enum ChargeSource {
 }
 
 /// Where the neutral charge relief drains.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
 #[serde(rename_all = "snake_case")]
 pub enum ReliefDrain {
     /// Into the pump case: the gauge shows setting plus case pressure.
@@ -110,7 +120,9 @@ pub enum ReliefDrain {
 }
 
 /// Where the loop reliefs dump.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
 #[serde(rename_all = "snake_case")]
 pub enum LoopReliefTo {
     /// Into the charge gallery (combined check and relief cartridges).
@@ -125,7 +137,9 @@ pub enum LoopReliefTo {
 }
 
 /// How the motor case drains.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
 #[serde(rename_all = "snake_case")]
 pub enum CaseLines {
     /// Motor case through the pump case to the cooler.
@@ -138,7 +152,9 @@ pub enum CaseLines {
 }
 
 /// Kind of flushing shuttle.
-#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
 #[serde(rename_all = "snake_case")]
 pub enum Shuttle {
     /// Three positions, closed in the middle: nothing flushes in neutral.

@@ -37,15 +37,36 @@ pub fn windows(
         .iter()
         .enumerate()
         .map(|(i, r)| {
-            let silent = data.silent.iter().find(|(k, _)| *k == i).map(|(_, why)| why.clone());
-            window(unit, r, data.condition_of[i], &spreads[i], riggings, instruments, bench, silent)
+            let silent = data
+                .silent
+                .iter()
+                .find(|(k, _)| *k == i)
+                .map(|(_, why)| why.clone());
+            window(
+                unit,
+                r,
+                data.condition_of[i],
+                &spreads[i],
+                riggings,
+                instruments,
+                bench,
+                silent,
+            )
         })
         .collect()
 }
 
 fn ensemble(bench: &Bench, data: &Data, readings: &[Reading]) -> Vec<Spread> {
-    let mut spreads: Vec<Spread> = readings.iter().map(|_| Spread { values: Vec::with_capacity(DRAWS), without_state: 0 }).collect();
-    let Some(healthy) = faults::find(FaultId::Healthy) else { return spreads };
+    let mut spreads: Vec<Spread> = readings
+        .iter()
+        .map(|_| Spread {
+            values: Vec::with_capacity(DRAWS),
+            without_state: 0,
+        })
+        .collect();
+    let Some(healthy) = faults::find(FaultId::Healthy) else {
+        return spreads;
+    };
     let mut normals = Normals::new(SEED);
     let mut sum = 0.0;
     let mut build = 0;
@@ -56,12 +77,26 @@ fn ensemble(bench: &Bench, data: &Data, readings: &[Reading]) -> Vec<Spread> {
             sum += bench.builds[build].share;
             build += 1;
         }
-        let node = Node { build, effect: None, sign: 1.0, quantile: 0.5, half: 0.0, log_weight: 0.0 };
+        let node = Node {
+            build,
+            effect: None,
+            sign: 1.0,
+            quantile: 0.5,
+            half: 0.0,
+            log_weight: 0.0,
+        };
         let u = normals.many(bench.latents.0.len());
         for c in 0..data.conditions.len() {
             let shown = bench.values(healthy, &node, c, &u);
-            for (i, r) in readings.iter().enumerate().filter(|(i, _)| data.condition_of[*i] == c) {
-                match shown.as_ref().and_then(|list| list.iter().find(|(p, _)| *p == r.port)) {
+            for (i, r) in readings
+                .iter()
+                .enumerate()
+                .filter(|(i, _)| data.condition_of[*i] == c)
+            {
+                match shown
+                    .as_ref()
+                    .and_then(|list| list.iter().find(|(p, _)| *p == r.port))
+                {
                     Some((_, v)) if v.is_finite() => spreads[i].values.push(*v),
                     _ => spreads[i].without_state += 1,
                 }
@@ -115,7 +150,11 @@ fn window(
         Some(Seen::Nothing) => Some(0.0),
         _ => None,
     };
-    let (low, middle, high) = (quantile(&spread.values, 0.025), quantile(&spread.values, 0.5), quantile(&spread.values, 0.975));
+    let (low, middle, high) = (
+        quantile(&spread.values, 0.025),
+        quantile(&spread.values, 0.5),
+        quantile(&spread.values, 0.975),
+    );
     let a = accuracy(instrument, reading.port, read.unwrap_or(middle));
     let u = (a.bias * a.bias + a.own * a.own).sqrt();
     // Central 95 % of the machines, widened by the instrument in quadrature.
@@ -148,7 +187,11 @@ fn window(
         w.high = m.high.base();
         w.middle = 0.5 * (w.low + w.high);
         w.source = WindowSource::Manual;
-        w.basis = if m.reference.trim().is_empty() { "the unit's manual, as entered".to_string() } else { format!("the unit's manual: {}", m.reference.trim()) };
+        w.basis = if m.reference.trim().is_empty() {
+            "the unit's manual, as entered".to_string()
+        } else {
+            format!("the unit's manual: {}", m.reference.trim())
+        };
         w.widest = String::new();
     }
     stand(&mut w, reading, instrument, silent.is_some());
@@ -156,7 +199,10 @@ fn window(
 }
 
 fn cannot_be_negative(port: Port) -> bool {
-    !matches!(port, Port::InletPull | Port::LoopDifference | Port::SettledTemperature)
+    !matches!(
+        port,
+        Port::InletPull | Port::LoopDifference | Port::SettledTemperature
+    )
 }
 
 fn stand(w: &mut Window, reading: &Reading, instrument: Option<&Instrument>, silent: bool) {
@@ -178,7 +224,11 @@ fn stand(w: &mut Window, reading: &Reading, instrument: Option<&Instrument>, sil
     let margin = w.instrument.min(0.25 * half);
     let at_least = matches!(reading.seen, Some(Seen::OffScale { .. }));
     w.standing = if at_least {
-        if read > w.high { Standing::High } else { Standing::CannotTell }
+        if read > w.high {
+            Standing::High
+        } else {
+            Standing::CannotTell
+        }
     } else if read < w.low - margin {
         Standing::Low
     } else if read > w.high + margin {
@@ -188,14 +238,19 @@ fn stand(w: &mut Window, reading: &Reading, instrument: Option<&Instrument>, sil
     } else {
         Standing::Within
     };
-    if reading.port == Port::Charge && matches!(reading.seen, Some(Seen::Nothing)) && reading.condition.doing != Doing::Neutral {
+    if reading.port == Port::Charge
+        && matches!(reading.seen, Some(Seen::Nothing))
+        && reading.condition.doing != Doing::Neutral
+    {
         w.remark = Some("A machine that drives has charge pressure: check coupling, hose and port before anything else.".to_string());
     }
 }
 
 /// The input that widens a window most, and whether it is one that the profile leaves to common practice.
 fn widest(bench: &Bench, unit: &Unit, port: Port, condition: usize) -> (String, bool) {
-    let Some(healthy) = faults::find(FaultId::Healthy) else { return (String::new(), true) };
+    let Some(healthy) = faults::find(FaultId::Healthy) else {
+        return (String::new(), true);
+    };
     let shares = bench.shares_of_spread(healthy, port, condition);
     let mut by_words: Vec<(String, f64)> = Vec::new();
     for (words, square) in shares {
@@ -217,7 +272,9 @@ fn open_to_practice(unit: &Unit, words: &str) -> bool {
         "charge relief setting" => FigureId::ChargeSetting,
         "loop relief setting" => FigureId::LoopRelief,
         "pressure limiter setting" => FigureId::Limiter,
-        "gap between charge and operating relief" | "operating relief setting" => FigureId::OperatingSetting,
+        "gap between charge and operating relief" | "operating relief setting" => {
+            FigureId::OperatingSetting
+        }
         w if w == Param::MotorDisp.words() => FigureId::MotorDisplacement,
         w if w == Param::GearRatio.words() => FigureId::GearRatio,
         w if w == Param::ChargeDisp.words() => FigureId::ChargeDisplacement,

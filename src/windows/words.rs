@@ -13,9 +13,15 @@ pub fn basis(unit: &Unit, condition: &Condition, rpm: f64) -> String {
         EngineSpeed::Measured(_) => format!("{rpm:.0} rpm"),
     };
     let oil = if warmth.taken {
-        format!("leaking oil at about {:.0} °C ({:.0} mm²/s)", warmth.celsius, warmth.kinematic)
+        format!(
+            "leaking oil at about {:.0} °C ({:.0} mm²/s)",
+            warmth.celsius, warmth.kinematic
+        )
     } else {
-        format!("oil not measured, taken as {:.0} ± {:.0} °C", warmth.celsius, warmth.spread)
+        format!(
+            "oil not measured, taken as {:.0} ± {:.0} °C",
+            warmth.celsius, warmth.spread
+        )
     };
     let mut out = format!("{speed}; {oil}");
     if !condition.doing.is_neutral() {

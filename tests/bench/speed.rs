@@ -27,7 +27,18 @@ fn main() {
     let full = time(&mut || {
         std::hint::black_box(work::assessment(&visit));
     });
-    println!("native: {:.0} solves/s ({:.2} µs each, {:.1} iterations)", N as f64 / solve, 1e6 * solve / N as f64, iterations);
-    println!("native: {:.2} µs a solve with three readings and all derivatives", 1e6 * derived / (N / 5) as f64);
-    println!("native: full assessment, 12 readings in 10 conditions: {:.1} ms", 1e3 * full);
+    println!(
+        "native: {:.0} solves/s ({:.2} µs each, {:.1} iterations)",
+        N as f64 / solve,
+        1e6 * solve / N as f64,
+        iterations
+    );
+    println!(
+        "native: {:.2} µs a solve with three readings and all derivatives",
+        1e6 * derived / (N / 5) as f64
+    );
+    println!(
+        "native: full assessment, 12 readings in 10 conditions: {:.1} ms",
+        1e3 * full
+    );
 }

@@ -16,7 +16,14 @@ pub fn solves(n: usize) -> f64 {
         let mut t = healthy();
         t[Param::Lever as usize] = 2.0 * draw.unit() - 1.0;
         t[Param::Load as usize] = 200.0 * draw.unit();
-        for p in [Param::PumpLeak, Param::MotorLeak, Param::Viscosity, Param::ChargeDisp, Param::ReliefSet, Param::LoopReliefA] {
+        for p in [
+            Param::PumpLeak,
+            Param::MotorLeak,
+            Param::Viscosity,
+            Param::ChargeDisp,
+            Param::ReliefSet,
+            Param::LoopReliefA,
+        ] {
             t[p as usize] *= (0.3 * draw.normal()).exp();
         }
         if let Ok(s) = net.solve(&t, None) {
@@ -65,5 +72,8 @@ pub fn call() -> Visit {
 
 /// One full assessment; returns the probability of its leading cause.
 pub fn assessment(visit: &Visit) -> f64 {
-    assess(&roller(), visit, &[]).causes.first().map_or(0.0, |c| c.probability)
+    assess(&roller(), visit, &[])
+        .causes
+        .first()
+        .map_or(0.0, |c| c.probability)
 }

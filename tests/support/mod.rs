@@ -4,7 +4,9 @@
 pub mod reference;
 
 use lowside::quantity::{Kind, Measure};
-use lowside::readings::{Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading, Seen};
+use lowside::readings::{
+    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading, Seen,
+};
 use lowside::record::Visit;
 use lowside::unit::{Control, Figure, FigureId, Filter, MachineClass, Source, Tick, Ticks, Unit};
 
@@ -15,13 +17,29 @@ pub fn base(value: f64, kind: Kind) -> Measure {
 
 /// A figure from the manual.
 pub fn figure(unit: &mut Unit, id: FigureId, value: f64) {
-    let kind = lowside::unit::FIGURES.iter().find(|f| f.id == id).expect("listed").kind;
-    unit.figures.insert(id, Figure { value: Some(base(value, kind)), typed: String::new(), source: Source::Manual });
+    let kind = lowside::unit::FIGURES
+        .iter()
+        .find(|f| f.id == id)
+        .expect("listed")
+        .kind;
+    unit.figures.insert(
+        id,
+        Figure {
+            value: Some(base(value, kind)),
+            typed: String::new(),
+            source: Source::Manual,
+        },
+    );
 }
 
 /// A roller of 75 cm³/rev with everything known: the reference of the physics tests.
 pub fn roller() -> Unit {
-    let mut u = Unit { id: "u".into(), name: "Roller".into(), class: MachineClass::Roller, ..Unit::default() };
+    let mut u = Unit {
+        id: "u".into(),
+        name: "Roller".into(),
+        class: MachineClass::Roller,
+        ..Unit::default()
+    };
     u.ticks = Ticks {
         flushing: Tick::Yes,
         limiter: Tick::No,
@@ -35,9 +53,16 @@ pub fn roller() -> Unit {
         ..Ticks::default()
     };
     for (id, v) in [
-        (FigureId::PumpDisplacement, 75.0), (FigureId::ChargeDisplacement, 15.0), (FigureId::HighIdle, 2400.0),
-        (FigureId::LowIdle, 900.0), (FigureId::ChargeSetting, 22.0), (FigureId::OperatingSetting, 20.3),
-        (FigureId::LoopRelief, 380.0), (FigureId::MotorDisplacement, 75.0), (FigureId::OilGrade, 46.0), (FigureId::GearRatio, 60.0),
+        (FigureId::PumpDisplacement, 75.0),
+        (FigureId::ChargeDisplacement, 15.0),
+        (FigureId::HighIdle, 2400.0),
+        (FigureId::LowIdle, 900.0),
+        (FigureId::ChargeSetting, 22.0),
+        (FigureId::OperatingSetting, 20.3),
+        (FigureId::LoopRelief, 380.0),
+        (FigureId::MotorDisplacement, 75.0),
+        (FigureId::OilGrade, 46.0),
+        (FigureId::GearRatio, 60.0),
     ] {
         figure(&mut u, id, v);
     }
@@ -45,10 +70,21 @@ pub fn roller() -> Unit {
 }
 
 /// A condition with oil at 60 °C in the drain hose.
-pub fn condition(doing: Doing, direction: Direction, lever: Lever, engine: EngineSpeed) -> Condition {
+pub fn condition(
+    doing: Doing,
+    direction: Direction,
+    lever: Lever,
+    engine: EngineSpeed,
+) -> Condition {
     Condition {
-        doing, direction, lever, engine,
-        oil: Some(OilTemperature { value: base(60.0, Kind::Temperature), place: Place::DrainHose }),
+        doing,
+        direction,
+        lever,
+        engine,
+        oil: Some(OilTemperature {
+            value: base(60.0, Kind::Temperature),
+            place: Place::DrainHose,
+        }),
         flushing_blocked: false,
         consumers_capped: false,
     }
@@ -62,13 +98,24 @@ pub fn neutral(engine: EngineSpeed) -> Condition {
 /// A steady reading.
 pub fn reading(id: &str, port: Port, condition: Condition, value: f64) -> Reading {
     Reading {
-        id: id.into(), port, condition, rigging: String::new(),
-        seen: Some(Seen::Value { value: base(value, port.kind()) }),
-        typed: String::new(), note: String::new(),
+        id: id.into(),
+        port,
+        condition,
+        rigging: String::new(),
+        seen: Some(Seen::Value {
+            value: base(value, port.kind()),
+        }),
+        typed: String::new(),
+        note: String::new(),
     }
 }
 
 /// A visit with these readings.
 pub fn visit(readings: Vec<Reading>) -> Visit {
-    Visit { id: "v".into(), unit: "u".into(), readings, ..Visit::default() }
+    Visit {
+        id: "v".into(),
+        unit: "u".into(),
+        readings,
+        ..Visit::default()
+    }
 }

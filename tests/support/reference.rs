@@ -3,8 +3,8 @@
 use super::*;
 use lowside::quantity::Kind;
 use lowside::ranking::assess;
-use lowside::record::Answer;
 use lowside::readings::{Direction::*, EngineSpeed::*};
+use lowside::record::Answer;
 use serde::{Deserialize, Serialize};
 
 /// What the ranking of one case was.
@@ -18,7 +18,14 @@ pub struct Ranked {
 
 /// Sharp, vague, contradictory and nearly empty calls.
 pub fn cases() -> Vec<(&'static str, lowside::unit::Unit, Visit)> {
-    let held = |d, s| condition(Doing::Held, d, Lever::Share(s), Measured(base(1500.0, Kind::RotationalSpeed)));
+    let held = |d, s| {
+        condition(
+            Doing::Held,
+            d,
+            Lever::Share(s),
+            Measured(base(1500.0, Kind::RotationalSpeed)),
+        )
+    };
     let free = |d| condition(Doing::Free, d, Lever::Half, HighIdle);
     let worn = visit(vec![
         reading("a", Port::Charge, neutral(LowIdle), 18.1),
@@ -44,7 +51,11 @@ pub fn cases() -> Vec<(&'static str, lowside::unit::Unit, Visit)> {
         reading("d", Port::InletPull, neutral(HighIdle), 0.5),
     ]);
     wild.readings[0].seen = Some(Seen::Nothing);
-    let quick = lowside::unit::Unit { id: "q".into(), class: MachineClass::CompactWheeled, ..Default::default() };
+    let quick = lowside::unit::Unit {
+        id: "q".into(),
+        class: MachineClass::CompactWheeled,
+        ..Default::default()
+    };
     vec![
         ("worn charge pump, known unit", roller(), worn.clone()),
         ("one side, known unit", roller(), one_side),
@@ -59,7 +70,11 @@ pub fn ranked() -> Vec<Ranked> {
         .into_iter()
         .map(|(case, unit, visit)| Ranked {
             case: case.into(),
-            rows: assess(&unit, &visit, &[]).causes.into_iter().map(|c| (c.ids, c.probability)).collect(),
+            rows: assess(&unit, &visit, &[])
+                .causes
+                .into_iter()
+                .map(|c| (c.ids, c.probability))
+                .collect(),
         })
         .collect()
 }
@@ -71,12 +86,21 @@ pub fn compare(kept: &str) {
     assert_eq!(kept.len(), now.len());
     for (k, n) in kept.iter().zip(&now) {
         assert_eq!(k.case, n.case);
-        let order = |r: &Ranked| r.rows.iter().map(|(ids, _)| ids.clone()).collect::<Vec<_>>();
+        let order = |r: &Ranked| {
+            r.rows
+                .iter()
+                .map(|(ids, _)| ids.clone())
+                .collect::<Vec<_>>()
+        };
         assert_eq!(order(k), order(n), "order of {}", k.case);
         for ((ids, a), (_, b)) in k.rows.iter().zip(&n.rows) {
             assert!((a - b).abs() < 1e-6, "{}: {ids:?} {a} {b}", k.case);
         }
         let sum: f64 = n.rows.iter().map(|r| r.1).sum();
-        assert!((sum - 1.0).abs() < 1e-9, "{}: probabilities sum to {sum}", n.case);
+        assert!(
+            (sum - 1.0).abs() < 1e-9,
+            "{}: probabilities sum to {sum}",
+            n.case
+        );
     }
 }
