@@ -1,6 +1,7 @@
 //! Random machines, conditions and severities: the solver ends with a state that balances, or with a stated reason.
 //! Prints iteration counts and the share of each outcome (`cargo test --test circuit_random -- --nocapture`).
 
+use lowside::math;
 use lowside::circuit::{
     ControlBuild, DumpBuild, FilterBuild, Layout, Network, NoState, Param, Params, Route, Scale,
     healthy,
@@ -61,11 +62,11 @@ fn machine(r: &mut Seeded) -> Params {
     let mut t = healthy();
     for p in Param::ALL {
         if p.scale() == Scale::Log {
-            t[*p as usize] *= r.between(-1.0, 1.0).exp();
+            t[*p as usize] *= math::exp(r.between(-1.0, 1.0));
         }
     }
     t[Param::Atmosphere as usize] = r.between(0.6, 1.02);
-    t[Param::Viscosity as usize] = r.between(-1.6, 3.5).exp();
+    t[Param::Viscosity as usize] = math::exp(r.between(-1.6, 3.5));
     t[Param::Lever as usize] = if r.chance(0.25) {
         0.0
     } else {
@@ -105,7 +106,7 @@ fn machine(r: &mut Seeded) -> Params {
 
 fn break_something(r: &mut Seeded, t: &mut Params) {
     use Param::*;
-    let leak = (r.between(0.05f64.ln(), 60f64.ln())).exp();
+    let leak = math::exp(r.between(math::ln(0.05), math::ln(60.0)));
     match r.next() % 16 {
         0 => t[CheckLeakA as usize] += leak,
         1 => t[CheckLeakB as usize] += leak,

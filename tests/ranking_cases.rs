@@ -39,7 +39,6 @@ fn leader(a: &Assessment) -> &[FaultId] {
 
 #[test]
 fn a_worn_charge_pump_shows_in_its_curve_and_its_return() {
-    let t = std::time::Instant::now();
     let v = visit(vec![
         reading("c-low", Port::Charge, neutral(LowIdle), 18.1),
         reading("c-high", Port::Charge, neutral(HighIdle), 24.1),
@@ -47,7 +46,6 @@ fn a_worn_charge_pump_shows_in_its_curve_and_its_return() {
         reading("r-high", Port::ReturnFlow, neutral(HighIdle), 22.0),
     ]);
     let a = assess(&roller(), &v, &[]);
-    println!("{:?}", t.elapsed());
     print(&a);
     assert_eq!(leader(&a), [FaultId::ChargePumpWorn]);
 }

@@ -58,9 +58,9 @@ impl<const N: usize> Dual<N> {
 
     #[inline(always)]
     fn map2(self, o: Self, v: f64, ds: f64, d_o: f64) -> Self {
-        let mut d = [0.0; N];
-        for i in 0..N {
-            d[i] = ds * self.d[i] + d_o * o.d[i];
+        let mut d = self.d;
+        for (own, other) in d.iter_mut().zip(o.d) {
+            *own = ds * *own + d_o * other;
         }
         Dual { v, d }
     }

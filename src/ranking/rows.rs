@@ -41,9 +41,8 @@ pub fn rows(
             ));
         }
     }
-    for i in 0..weighed.len() {
-        if !taken[i] {
-            out.push(row(
+    for (i, _) in taken.iter().enumerate().filter(|(_, t)| !**t) {
+        out.push(row(
                 &[i],
                 None,
                 weighed,
@@ -53,7 +52,6 @@ pub fn rows(
                 seen,
                 words,
             ));
-        }
     }
     out.sort_by(|a, b| {
         b.probability

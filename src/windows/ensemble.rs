@@ -212,14 +212,13 @@ fn stand(w: &mut Window, reading: &Reading, instrument: Option<&Instrument>, sil
         return;
     }
     let half = 0.5 * (w.high - w.low);
-    if let Some(i) = instrument {
-        if let Ok(m) = Measure::from_base(read, reading.port.kind())
-            && let Err(why) = i.can_judge(m, half)
-        {
-            w.standing = Standing::CannotTell;
-            w.remark = Some(why);
-            return;
-        }
+    if let Some(i) = instrument
+        && let Ok(m) = Measure::from_base(read, reading.port.kind())
+        && let Err(why) = i.can_judge(m, half)
+    {
+        w.standing = Standing::CannotTell;
+        w.remark = Some(why);
+        return;
     }
     let margin = w.instrument.min(0.25 * half);
     let at_least = matches!(reading.seen, Some(Seen::OffScale { .. }));

@@ -1,4 +1,5 @@
 //! Native speed: solves per second, iterations per solve, a full assessment. `cargo bench`. Prints, asserts nothing.
+#![allow(clippy::disallowed_methods)] // a native benchmark has a clock
 
 #[path = "../support/mod.rs"]
 mod support;

@@ -1,6 +1,7 @@
 //! The work that both speed benchmarks do, native and wasm: random solves, solves with derivatives, one full assessment.
 
 use crate::support::*;
+use lowside::math;
 use lowside::circuit::{Layout, Network, Param, healthy};
 use lowside::ranking::assess;
 use lowside::readings::{Direction::*, Doing, EngineSpeed::*, Lever, Port};
@@ -24,7 +25,7 @@ pub fn solves(n: usize) -> f64 {
             Param::ReliefSet,
             Param::LoopReliefA,
         ] {
-            t[p as usize] *= (0.3 * draw.normal()).exp();
+            t[p as usize] *= math::exp(0.3 * draw.normal());
         }
         if let Ok(s) = net.solve(&t, None) {
             iterations += u64::from(s.iterations);
