@@ -59,7 +59,7 @@ fn listen(hands: &Rc<Hands>) -> Vec<Option<Listener>> {
                 hands.put(Action::UpdateWaits);
             }
             if offline::is_first_ready(&event) {
-                hands.put(Action::Say(offline::Offline::Ready.words().to_owned()));
+                hands.put(Action::JustReady);
             }
         }));
     }

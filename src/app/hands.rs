@@ -323,7 +323,7 @@ impl Hands {
     }
 }
 
-/// The name typed, or the next free "Unit 3" where none was.
+/// The name typed, or the next free "No. 3" where none was.
 fn free_name(typed: &str, state: &State) -> String {
     let typed = typed.trim();
     if !typed.is_empty() {
@@ -331,9 +331,9 @@ fn free_name(typed: &str, state: &State) -> String {
     }
     let is_taken = |name: &str| state.units.values().any(|unit| unit.name == name);
     let free = (1..)
-        .map(|number| format!("Unit {number}"))
+        .map(|number| format!("No. {number}"))
         .find(|name| !is_taken(name));
-    free.unwrap_or_else(|| "Unit".to_owned())
+    free.unwrap_or_else(|| "No name".to_owned())
 }
 
 /// Goes to a screen by the address, so that the back key comes back.

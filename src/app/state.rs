@@ -113,6 +113,8 @@ pub struct State {
     pub engine_trouble: Option<String>,
     /// The offline copy.
     pub offline: Offline,
+    /// The offline copy has just become complete; said until the next screen.
+    pub is_just_ready: bool,
     /// A newer version waits.
     pub update_waits: bool,
     /// The browser's word on keeping the data.
@@ -162,6 +164,8 @@ pub enum Action {
     EngineFailed(String),
     /// The offline copy changed.
     Offline(Offline),
+    /// The first offline copy is complete.
+    JustReady,
     /// A newer version waits.
     UpdateWaits,
     /// The browser's word on keeping the data.
@@ -229,7 +233,14 @@ impl State {
     pub fn after(&self, action: Action) -> State {
         let mut next = self.clone();
         match action {
-            Action::Go(route) => next.route = route,
+            Action::Go(route) => {
+                next.route = route;
+                next.is_just_ready = false;
+            }
+            Action::JustReady => {
+                next.is_just_ready = true;
+                next.say(Offline::Ready.words().to_owned());
+            }
             Action::PutUnit(unit) => next.put_unit(unit),
             Action::PutVisit(visit) => next.put_visit(visit),
             Action::PutInstruments(instruments) => {
@@ -267,7 +278,7 @@ impl State {
             Action::NearlyFull(is_nearly_full) => next.is_nearly_full = is_nearly_full,
             Action::Tell(about, text) => next.tell(about, text),
             Action::PutAway(number) => next.notices.retain(|notice| notice.number != number),
-            Action::Say(text) => next.said = (self.said.0.wrapping_add(1), text),
+            Action::Say(text) => next.say(text),
             Action::Answered(answer) => {
                 next.engine_trouble = None;
                 next.answers.insert(answer.asked.visit.id.clone(), *answer);
@@ -357,6 +368,10 @@ impl State {
         self.contested.remove(key);
         self.notices
             .retain(|notice| notice.about != About::Conflict(key.clone()));
+    }
+
+    fn say(&mut self, text: String) {
+        self.said = (self.said.0.wrapping_add(1), text);
     }
 
     fn tell(&mut self, about: About, text: String) {

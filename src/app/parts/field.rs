@@ -96,6 +96,19 @@ fn same(a: Measure, b: Measure) -> bool {
     a.kind() == b.kind() && (a.base() - b.base()).abs() <= 1e-7 * a.base().abs().max(1e-6)
 }
 
+/// Significant digits of a value that is shown in another unit than it was typed in.
+const CONVERTED_DIGITS: usize = 5;
+
+/// A value that was typed in another unit, with as many digits as it can mean.
+fn converted_text(value: Measure, unit: Unit, mark: DecimalMark) -> String {
+    let rounded = value
+        .try_in_unit(unit)
+        .ok()
+        .and_then(|value| format!("{value:.*e}", CONVERTED_DIGITS - 1).parse().ok())
+        .and_then(|value| Measure::new(value, unit).ok());
+    edit_text(rounded.unwrap_or(value), unit, mark)
+}
+
 /// A line under the field: how the text was understood, or why it was not.
 enum Remark {
     None,
@@ -152,14 +165,25 @@ pub fn MeasureField(props: &MeasureFieldProps) -> Html {
 
     let kept = without_unit(&props.typed, picked);
     let kept_read = read(kept, unit);
-    let text = match (props.value, &kept_read) {
-        (Some(value), Ok(parsed)) if same(parsed.measure, value) => kept.to_owned(),
-        (Some(value), _) => edit_text(value, unit, props.mark),
-        (None, _) => kept.to_owned(),
+    let is_as_typed = match (props.value, &kept_read) {
+        (Some(value), Ok(parsed)) => same(parsed.measure, value),
+        (Some(_), Err(_)) => false,
+        (None, _) => true,
     };
-    let shown_read = read(&text, unit);
-    let shown_unit = shown_read.as_ref().map_or(unit, |parsed| parsed.unit);
-    let remark = remark(props, &text, &shown_read, *complained || !*focused);
+    let text = match props.value {
+        Some(value) if !is_as_typed => converted_text(value, unit, props.mark),
+        _ => kept.to_owned(),
+    };
+    let shown_unit = match &kept_read {
+        Ok(parsed) if is_as_typed => parsed.unit,
+        _ => unit,
+    };
+    let remark = if is_as_typed {
+        remark(props, &text, &kept_read, *complained || !*focused)
+    } else {
+        // The kept value, only in another unit: it was taken long ago.
+        Remark::None
+    };
 
     let emit = {
         let (own, on_entry, range) = (own.clone(), props.on_entry.clone(), props.range);

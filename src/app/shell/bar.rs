@@ -14,36 +14,40 @@ pub struct BarProps {
     pub state: Snapshot,
 }
 
-/// The unit that the screen is about.
-pub fn unit_name(state: &State) -> Option<String> {
+/// Id and name of the unit that the screen is about.
+fn unit_at_hand(state: &State) -> Option<(String, String)> {
     let id = match &state.route {
         Route::Unit(id) => id,
         Route::Call(id) => &state.visits.get(id)?.unit,
         Route::Units | Route::Settings => return None,
     };
-    Some(state.units.get(id)?.name.clone())
+    Some((id.clone(), state.units.get(id)?.name.clone()))
 }
 
 /// The bar.
 #[component]
 pub fn Bar(props: &BarProps) -> Html {
     let state = &props.state;
-    let unit = unit_name(state);
+    let unit = unit_at_hand(state);
     let is_settings = state.route == Route::Settings;
     html! {
         <header class="bar">
-            <a class="bar-home" href={Route::Units.href()} data-testid="home" aria-label={match &unit {
-                Some(unit) => format!("Lowside, unit {unit}. To the list of units"),
-                None => "Lowside. To the list of units".to_owned(),
-            }}>
+            <a class="bar-home" href={Route::Units.href()} data-testid="home" aria-label="Lowside: to the list of units">
                 <img class="bar-mark" src="icons/mark.svg" width="36" height="36" alt="" />
-                <span class={if unit.is_some() { "bar-words" } else { "bar-words is-alone" }}>
-                    <span class="bar-name">{ "Lowside" }</span>
-                    if let Some(unit) = unit {
-                        <span class="bar-unit" data-testid="current-unit">{ unit }</span>
-                    }
-                </span>
+                <span class="bar-name">{ "Lowside" }</span>
             </a>
+            <span class="bar-at">
+                if let Some((id, name)) = unit {
+                    <a
+                        class="bar-unit"
+                        href={Route::Unit(id).href()}
+                        aria-label={format!("Unit {name}: profile")}
+                        data-testid="current-unit"
+                    >
+                        <span class="bar-unit-name">{ name }</span>
+                    </a>
+                }
+            </span>
             <SaveState state={state.clone()} />
             <a
                 class="bar-link"
@@ -71,6 +75,7 @@ fn SaveState(props: &BarProps) -> Html {
         match &state.save {
             Save::Failed(_) => (Shape::Warning, "Not saved", "save-state is-failed"),
             Save::Pending => (Shape::Working, "Saving", "save-state"),
+            Save::Saved if state.is_just_ready => (Shape::Done, "Ready offline", "save-state"),
             Save::Saved if state.units.is_empty() => return Html::default(),
             Save::Saved => (Shape::Done, "Saved", "save-state"),
         }

@@ -31,6 +31,11 @@ pub fn About(props: &SettingsProps) -> Html {
                     </div>
                 </div>
             }
+            <p class="small">
+                { "On a phone, put it on the home screen from the browser’s menu. Some phones keep the data of the app on the \
+                   home screen apart from the browser’s: put it there before the first call, or carry the data over with a \
+                   file." }
+            </p>
             <Caution grade={Grade::Danger} title="this work can kill">
                 <p>{ "The unit’s manual, local rules and licensed practice come first, always." }</p>
                 <ul>

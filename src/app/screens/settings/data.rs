@@ -162,7 +162,7 @@ fn PutAside(props: &DataProps) -> Html {
                                 html! {
                                     <li key={trashed.path.clone()} class="line-item">
                                         <span>
-                                            { format!("{what} {}", trashed.name) }
+                                            { format!("{what} {}", trashed.name).trim_end() }
                                             <span class="soft small">{ format!(", removed {}", clock::tell(&trashed.when)) }</span>
                                         </span>
                                         <button

@@ -60,6 +60,27 @@ fn capital(text: &str) -> String {
     })
 }
 
+/// The ready-made choices.
+#[component]
+pub fn Presets(props: &SettingsProps) -> Html {
+    html! {
+        <Choice<Preset>
+            name="preset"
+            label="Show figures in"
+            hint="Whatever is chosen, any unit can be typed: 350 psi, 24,5 bar."
+            options={vec![
+                Opt::new(Preset::Metric, "Metric", "metric"),
+                Opt::new(Preset::Us, "US", "us"),
+            ]}
+            value={Preset::of(&props.state.settings.units)}
+            on_change={props.change(|settings, preset: Preset| {
+                settings.units = preset.prefs(settings.units.mark());
+                settings.first_run.units_chosen = true;
+            })}
+        />
+    }
+}
+
 /// The units of measure.
 #[component]
 pub fn Measures(props: &SettingsProps) -> Html {
@@ -70,20 +91,7 @@ pub fn Measures(props: &SettingsProps) -> Html {
             Some(Preset::Us) => "US",
             None => "mixed",
         }}>
-            <Choice<Preset>
-                name="preset"
-                label="Show figures in"
-                hint="Whatever is chosen, any unit can be typed: 350 psi, 24,5 bar."
-                options={vec![
-                    Opt::new(Preset::Metric, "Metric", "metric"),
-                    Opt::new(Preset::Us, "US", "us"),
-                ]}
-                value={Preset::of(prefs)}
-                on_change={props.change(|settings, preset: Preset| {
-                    settings.units = preset.prefs(settings.units.mark());
-                    settings.first_run.units_chosen = true;
-                })}
-            />
+            <Presets ..props.clone() />
             <Choice<DecimalMark>
                 name="mark"
                 label="Decimal mark"

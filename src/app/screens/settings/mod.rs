@@ -5,7 +5,7 @@ pub mod data;
 mod draft;
 mod import;
 mod instruments;
-mod measures;
+pub mod measures;
 
 use yew::{Callback, Html, Properties, component, html};
 

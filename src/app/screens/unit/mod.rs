@@ -103,8 +103,8 @@ pub fn Profile(props: &ProfileProps) -> Html {
                 </div>
             </div>
             <p class="soft">
-                { "Everything below can wait. Each answer and figure narrows the expected windows; what is left open stays \
-                   open in the calculation." }
+                { "All of this can wait. Each answer and figure narrows the windows; what is left open stays open in the \
+                   calculation." }
             </p>
             <div class="columns">
                 <div class="stack">

@@ -13,6 +13,7 @@ use self::card::UnitCard;
 use self::new_unit::NewUnit;
 use self::welcome::{Demo, Welcome};
 use super::settings::data::Data;
+use super::settings::measures::Presets;
 use crate::app::deed::{Deed, Snapshot};
 use crate::app::parts::{Icon, Shape, TextField};
 
@@ -80,6 +81,9 @@ pub fn Units(props: &UnitsProps) -> Html {
                     <NewUnit is_first={true} deed={props.deed.clone()} on_close={None::<Callback<()>>} />
                     <div class="stack">
                         <Demo state={state.clone()} deed={props.deed.clone()} />
+                        <section class="panel" aria-label="Units of measure">
+                            <Presets state={state.clone()} deed={props.deed.clone()} />
+                        </section>
                         <Data state={state.clone()} deed={props.deed.clone()} is_folded={true} />
                     </div>
                 </div>

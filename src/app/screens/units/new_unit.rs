@@ -79,8 +79,7 @@ pub fn NewUnit(props: &NewUnitProps) -> Html {
                     { if props.is_first { "Which machine is in front of you?" } else { "New unit" } }
                 </h2>
                 <p class="soft">
-                    { "A class is enough to start. Figures you do not have can wait: common practice for the class stands in, \
-                       and says so." }
+                    { "A class is enough to start. What you do not know can wait." }
                 </p>
             </div>
             <TextField
