@@ -3,6 +3,7 @@
 use super::words::{self, Verdict};
 use crate::app::parts::{Caution, Grade};
 use crate::assessment::Assessment;
+use crate::caution::{self, Stands};
 use crate::faults;
 use crate::record::{Answer, Visit};
 use std::rc::Rc;
@@ -36,8 +37,8 @@ pub fn StopWork(props: &StopWorkProps) -> Html {
     if runs_on(&props.visit) {
         return html! {
             <Caution grade={Grade::Danger} title="stop work" role="alert" testid="stop-work">
-                <p>{ "It keeps going with the lever in neutral. Do not test it. Stop the engine, chock both ways, take the key out." }</p>
-                <p>{ "Do not drive it onto a trailer. Nobody in front of it or behind it. Readings that need it to drive stay closed." }</p>
+                { for caution::at(Stands::KeepsGoing).map(|caution| html! { <p>{ caution.text }</p> }) }
+                <p>{ "Nobody in front of it or behind it. Readings on its wheels or tracks stay closed." }</p>
             </Caution>
         };
     }

@@ -1,11 +1,13 @@
 //! The precautions of a check, where the hand goes: what stands in the way, the facts to tick, and for a held machine the
 //! seconds and the pressure to stop at.
 
+use super::cautions;
 use super::change::Change;
 use super::gate::{Barred, Gate, NEVER_ALONE};
 use super::words;
 use crate::app::parts::{Caution, Choice, Grade, Opt};
 use crate::app::platform::clock;
+use crate::caution::Stands;
 use crate::quantity::{Kind, Measure, UnitPrefs};
 use crate::readings::{Doing, Port};
 use crate::unit::{FigureId, Unit};
@@ -221,8 +223,7 @@ fn held(props: &GatePanelProps) -> Html {
                 <p class="gate-hold">{ "Seconds to hold are not computed yet. Do not hold full stroke." }</p>
             }
             <p data-testid="stop-at">{ stop_at(&props.unit, &props.prefs) }</p>
-            <p><strong>{ "The parking brake is not a stop." }</strong>{ " It may slip or let go, and the control releases it when travel \
-                is asked. Block the motor by capped ports, or push against something that cannot move." }</p>
+            { cautions::at(Stands::Held) }
         </div>
     }
 }

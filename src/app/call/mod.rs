@@ -14,10 +14,13 @@
 mod add_panel;
 mod alerts;
 mod causes;
+mod cautions;
 mod change;
 mod condition_editor;
+mod condition_parts;
 mod entry;
 mod entry_field;
+mod entry_modes;
 mod gate;
 mod gate_panel;
 mod group;
@@ -33,6 +36,7 @@ mod rig;
 mod scale;
 mod screen;
 mod seen_panel;
+mod told;
 mod window_scale;
 mod words;
 

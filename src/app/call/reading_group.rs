@@ -1,13 +1,16 @@
 //! Readings under one heading: what the machine was doing, its precautions, and the rows.
 
+use super::cautions;
 use super::change::Change;
 use super::condition_editor::ConditionEditor;
+use super::entry;
 use super::gate::{self, Gate};
 use super::gate_panel::{GatePanel, advice};
 use super::reading_row::ReadingRow;
 use super::words;
 use crate::app::platform::clock;
 use crate::assessment::Assessment;
+use crate::caution::Stands;
 use crate::quantity::UnitPrefs;
 use crate::readings::instrument::Instrument;
 use crate::readings::{Condition, Port, Reading};
@@ -35,6 +38,8 @@ pub struct ReadingGroupProps {
     pub minute: u32,
     /// Checks whose precautions stand in full further up.
     pub told: Vec<&'static str>,
+    /// Places whose cautions stand further up.
+    pub told_places: Vec<Stands>,
     /// Port touched on the drawing.
     pub chosen: Option<Port>,
     /// Unit.
@@ -129,6 +134,7 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                     on_change={on_condition}
                 />
             }
+            { cautions::all(&new_places(props)) }
             { advice(&gates) }
             <ol class="readings">
                 { for readings.iter().map(|(place, reading)| html! { <>
@@ -153,6 +159,21 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
             </ol>
         </section>
     }
+}
+
+/// Where cautions belong for what is still to be read here, without the places told further up.
+fn new_places(props: &ReadingGroupProps) -> Vec<Stands> {
+    let readings = props
+        .at
+        .iter()
+        .filter_map(|place| props.visit.readings.get(*place));
+    let ports: Vec<Port> = readings
+        .filter(|reading| entry::is_open(reading))
+        .map(|reading| reading.port)
+        .collect();
+    let mut places = cautions::places(&props.condition, ports.iter());
+    places.retain(|place| !props.told_places.contains(place));
+    places
 }
 
 /// The precautions of a check stand before the first reading that it guards.

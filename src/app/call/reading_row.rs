@@ -1,5 +1,6 @@
 //! One reading: where, what, with which instrument, and how it stands against a healthy unit.
 
+use super::cautions;
 use super::change::Change;
 use super::entry::{self, Mode};
 use super::entry_field::EntryField;
@@ -124,6 +125,7 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
                 on_change={props.on_change.clone()}
                 on_instruments={props.on_instruments.clone()}
             />
+            { cautions::of_reading(reading) }
             if let Some(why) = &props.retake {
                 <Caution grade={Grade::Caution} title="take this again" testid={format!("retake-{}", props.number)}>
                     <p>{ why.clone() }</p>

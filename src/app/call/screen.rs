@@ -4,24 +4,26 @@
 use super::add_panel::AddPanel;
 use super::alerts::{LeadStatus, StopWork};
 use super::causes::Causes;
+use super::cautions;
 use super::change::{Change, apply};
 use super::entry;
 use super::entry_field::field_id;
-use super::group::{Group, groups};
+use super::group::groups;
 use super::history::History;
 use super::map::LoopMap;
 use super::quick_panel::QuickPanel;
 use super::reading_group::ReadingGroup;
 use super::reading_row::row_id;
 use super::seen_panel::SeenPanel;
+use super::told::told_before;
 use crate::app::parts::{Icon, Shape};
 use crate::app::platform::focus;
 use crate::app::platform::timer::Timer;
 use crate::assessment::Assessment;
-use crate::checks;
+use crate::caution::Stands;
 use crate::quantity::UnitPrefs;
 use crate::readings::instrument::Instrument;
-use crate::readings::{Condition, Port, Reading};
+use crate::readings::{Condition, Doing, Port, Reading};
 use crate::record::Visit;
 use crate::unit::Unit;
 use std::rc::Rc;
@@ -77,8 +79,10 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
     {
         let to_focus = to_focus.clone();
         use_effect(move || {
-            if let Some(id) = to_focus.take() {
-                focus::to(&id);
+            if let Some(reading) = to_focus.take() {
+                // The row first: the field of a closed reading is not there.
+                focus::to(&row_id(&reading));
+                focus::to(&field_id(&reading));
             }
         });
     }
@@ -95,7 +99,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             if let Change::Add(_) = change {
                 editing.set(Vec::new());
                 let added = after.readings.get(before.readings.len());
-                to_focus.replace(added.map(|reading| field_id(&reading.id)));
+                to_focus.replace(added.map(|reading| reading.id.clone()));
             }
             newest.replace(Rc::new(after.clone()));
             on_visit.emit(after);
@@ -124,9 +128,9 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             let visit = newest.borrow().clone();
             match next_at(port, &visit.readings) {
                 Some(reading) => {
-                    to_focus.replace(Some(row_focus(reading)));
+                    to_focus.replace(Some(reading.id.clone()));
                 }
-                None => on_change.emit(Change::Add(vec![(port, last_condition(&visit))])),
+                None => on_change.emit(Change::Add(vec![(port, harmless(last_condition(&visit)))])),
             }
         })
     };
@@ -135,7 +139,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
         Callback::from(move |id: String| {
             let visit = newest.borrow().clone();
             if let Some(reading) = visit.readings.iter().find(|reading| reading.id == id) {
-                to_focus.replace(Some(row_focus(reading)));
+                to_focus.replace(Some(reading.id.clone()));
                 chosen.set(Some(reading.port));
             }
         })
@@ -149,6 +153,8 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
     let grouped = groups(&visit.readings, &editing);
     let told = told_before(&grouped, visit);
     html! {
+        <main class="page" id="main" data-testid="call-screen">
+        <h1 class="hidden-text" id="title" tabindex="-1">{ format!("Call on {}", props.unit.name) }</h1>
         <div class="call" data-testid="call">
             <LeadStatus assessment={props.assessment.clone()} said={(*said).clone()} />
             <div class="call-side">
@@ -172,12 +178,13 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             </div>
             </div>
             <div class="call-main">
+                <StopWork visit={visit.clone()} assessment={props.assessment.clone()} />
                 <nav class="jump" aria-label="On this screen">
                     { for [("seen", "Seen"), ("quick", "Usual"), ("readings", "Readings"), ("add", "Add")].map(|(id, words)| html! {
                         <button key={id} type="button" class="jump-to" onclick={jump(id)}>{ words }</button>
                     }) }
                 </nav>
-                <StopWork visit={visit.clone()} assessment={props.assessment.clone()} />
+                { before_all(visit) }
                 <SeenPanel visit={visit.clone()} class={props.unit.class} on_change={on_change.clone()} />
                 <QuickPanel readings={visit.readings.clone()} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
@@ -194,7 +201,8 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                             assessment={props.assessment.clone()}
                             updating={props.updating}
                             minute={*minute}
-                            {told}
+                            told={told.checks}
+                            told_places={told.places}
                             chosen={*chosen}
                             unit={props.unit.clone()}
                             visit={visit.clone()}
@@ -218,27 +226,21 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 }
             </div>
         </div>
+        </main>
     }
 }
 
-/// For each group, the checks whose precautions stand in full in a group before it.
-fn told_before(groups: &[Group], visit: &Visit) -> Vec<Vec<&'static str>> {
-    let mut told: Vec<&'static str> = Vec::new();
-    let before = groups.iter().map(|group| {
-        let before = told.clone();
-        let ports = group
-            .at
-            .iter()
-            .filter_map(|place| visit.readings.get(*place))
-            .map(|reading| reading.port);
-        told.extend(
-            ports
-                .filter_map(|port| checks::for_reading(&group.condition, port))
-                .map(|check| check.id),
-        );
-        before
-    });
-    before.collect()
+/// What holds for the whole call: in full until the first reading, folded after it.
+fn before_all(visit: &Visit) -> Html {
+    if visit.readings.is_empty() {
+        return cautions::at(Stands::Call);
+    }
+    html! {
+        <details class="advice call-advice">
+            <summary>{ "Manual first; engine off is not pressure off" }</summary>
+            { cautions::at(Stands::Call) }
+        </details>
+    }
 }
 
 /// Brings a part of the screen into view.
@@ -253,15 +255,22 @@ fn next_at(port: Port, readings: &[Reading]) -> Option<&Reading> {
         .find(|reading| reading.port == port && entry::is_open(reading))
 }
 
-/// What takes the focus for a reading: its row, whose field may be closed.
-fn row_focus(reading: &Reading) -> String {
-    row_id(&reading.id)
-}
-
 /// The condition of the last reading, to go on from.
 fn last_condition(visit: &Visit) -> Condition {
     visit
         .readings
         .last()
         .map_or_else(Condition::start, |reading| reading.condition)
+}
+
+/// The condition to read a port in that was only touched: nobody asked for a held or bridged machine by that.
+fn harmless(last: Condition) -> Condition {
+    match last.doing {
+        Doing::Held | Doing::NeutralBridged | Doing::Overrun => Condition {
+            oil: last.oil,
+            engine: last.engine,
+            ..Condition::start()
+        },
+        _ => last,
+    }
 }

@@ -1,7 +1,9 @@
 //! What was seen, heard and felt before any gauge: the complaint and the ticks. "Not looked" is no answer, and never a no.
 
+use super::cautions;
 use super::change::Change;
 use crate::app::parts::{Choice, Opt, TextField};
+use crate::caution::Stands;
 use crate::observations::{self, Group, Observation};
 use crate::record::limits::TEXT_CHARACTERS;
 use crate::record::{Answer, Visit};

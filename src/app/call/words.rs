@@ -2,7 +2,7 @@
 
 use crate::assessment::{Assessment, Standing, WindowSource};
 use crate::faults::FaultId;
-use crate::quantity::{Kind, Measure, Unit, UnitPrefs};
+use crate::quantity::{self, Decimals, Kind, Measure, Unit, UnitPrefs};
 use crate::readings::{Condition, Direction, EngineSpeed, Lever, Port};
 
 /// Narrow no-break space: before a per cent sign and between a figure and its unit.
@@ -143,47 +143,69 @@ pub fn value(port: Port, base: f64, prefs: &UnitPrefs) -> String {
     as_measure(port, base, prefs).map_or_else(
         || String::from("?"),
         |measure| {
-            crate::quantity::format_with_unit(
+            quantity::format_with_unit(
                 measure,
                 unit_of(port, prefs),
-                crate::quantity::Decimals::Reading,
+                Decimals::Reading,
                 prefs.mark(),
             )
         },
     )
 }
 
-/// A spread at a port (base unit of its kind), with its unit: `±0.8 bar`. A spread has no zero point, so a temperature's
-/// is in kelvin or degrees of difference.
+/// A value with the spread around it, printed no finer than the spread allows: `about 9 ±4 bar`.
+pub fn rough(port: Port, value: f64, spread: f64, prefs: &UnitPrefs) -> String {
+    let Some(around) = as_spread(port, spread, prefs) else {
+        return self::value(port, value, prefs);
+    };
+    let (measure, unit, places) = around;
+    let decimals = Decimals::Fixed(places);
+    let value_unit = unit_of(port, prefs);
+    let figure = as_measure(port, value, prefs).map_or_else(
+        || String::from("?"),
+        |value| quantity::format(value, value_unit, decimals, prefs.mark()),
+    );
+    let around = quantity::format_with_unit(measure, unit, decimals, prefs.mark());
+    format!("about {figure} ±{around}")
+}
+
+/// A spread at a port (base unit of its kind), with its unit: `±0.8 bar`.
 pub fn spread(port: Port, base: f64, prefs: &UnitPrefs) -> String {
+    as_spread(port, base, prefs).map_or_else(
+        || String::from("±?"),
+        |(measure, unit, places)| {
+            let decimals = Decimals::Fixed(places);
+            format!(
+                "±{}",
+                quantity::format_with_unit(measure, unit, decimals, prefs.mark())
+            )
+        },
+    )
+}
+
+/// A spread as a measure, its unit, and the decimals it carries. A spread has no zero point, so a temperature's is in kelvin
+/// or degrees of difference, and a vacuum's runs the same way as the pressure's.
+fn as_spread(port: Port, base: f64, prefs: &UnitPrefs) -> Option<(Measure, Unit, u8)> {
     let kind = match port.kind() {
         Kind::Temperature => Kind::TemperatureDifference,
         kind => kind,
     };
-    let mut unit = match port {
+    let unit = match port {
         Port::InletPull => prefs.pull_unit(),
         _ => prefs.unit(kind),
     };
-    if unit.reads_vacuum() {
-        unit = Unit::Millibar;
-    }
-    let Ok(measure) = Measure::from_base(base.abs(), kind) else {
-        return String::from("±?");
-    };
+    let sign = if unit.reads_vacuum() { -1.0 } else { 1.0 };
+    let measure = Measure::from_base(sign * base.abs(), kind).ok()?;
     // One digit and a half is all that a spread carries.
-    let size = measure.in_unit(unit);
-    let places = if size >= 10.0 {
+    let size = measure.in_unit(unit).abs();
+    let places = if size >= 5.0 {
         0
-    } else if size >= 1.0 {
+    } else if size >= 0.5 {
         1
     } else {
         2
     };
-    let decimals = crate::quantity::Decimals::Fixed(places);
-    format!(
-        "±{}",
-        crate::quantity::format_with_unit(measure, unit, decimals, prefs.mark())
-    )
+    Some((measure, unit, places))
 }
 
 /// Both ends of a window as printed: the figure of the low end, and that of the high end with the unit.
@@ -193,7 +215,7 @@ pub fn ends(port: Port, low: f64, high: f64, prefs: &UnitPrefs) -> (String, Stri
         return (String::from("?"), String::from("?"));
     };
     let unit = unit_of(port, prefs);
-    let span = crate::quantity::format_span(low, high, unit, prefs.mark());
+    let span = quantity::format_span(low, high, unit, prefs.mark());
     match span.split_once(" to ") {
         Some((from, to)) => (from.to_owned(), to.to_owned()),
         None => (span.clone(), span),

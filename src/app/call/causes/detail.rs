@@ -1,8 +1,9 @@
 //! Behind a cause: what speaks for and against it, what the gauges would read under it, its proof and its repair.
 
-use crate::app::call::words;
+use crate::app::call::{cautions, words};
 use crate::app::parts::{Caution, Grade};
 use crate::assessment::{Cause, Evidence};
+use crate::caution;
 use crate::faults::{self, FaultId};
 use crate::quantity::UnitPrefs;
 use crate::readings::{Reading, Seen};
@@ -104,10 +105,8 @@ pub fn would_read(cause: &Cause, readings: &[Reading], prefs: &UnitPrefs) -> Htm
                             { words::port_short(reading.port) }
                             <span class="soft">{ " · " }{ words::condition(&reading.condition, prefs) }</span>
                         </span>
-                        <span class="would-value">
-                            <span class="figure">{ words::value(reading.port, would.value, prefs) }</span>
-                            { " " }
-                            <span class="soft figure">{ words::spread(reading.port, would.spread, prefs) }</span>
+                        <span class="would-value figure">
+                            { words::rough(reading.port, would.value, would.spread, prefs) }
                         </span>
                         <span class="would-read soft">{ read(reading, prefs) }</span>
                     </li>
@@ -158,6 +157,7 @@ pub fn member(id: FaultId, cause: &Cause) -> Html {
                     <p>{ "Do not drive or test this machine. Engine off, chock both ways." }</p>
                 </Caution>
             }
+            { caution::of_cause(id).map(cautions::at) }
             if !fault.caution.is_empty() {
                 <Caution grade={Grade::Caution}><p>{ fault.caution }</p></Caution>
             }

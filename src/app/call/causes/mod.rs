@@ -96,12 +96,12 @@ pub fn Causes(props: &CausesProps) -> Html {
 fn lead(assessment: Option<&Assessment>, verdict: Option<Verdict>) -> Vec<Html> {
     let Some(assessment) = assessment else {
         return vec![
-            html! { <li class="causes-line"><span class="causes-name">{ "Working out the first answer…" }</span></li> },
+            html! { <li class="causes-line"><span class="causes-name is-ask">{ "Working out the first answer…" }</span></li> },
         ];
     };
     if verdict == Some(Verdict::TooLittle) {
         return vec![html! {
-            <li class="causes-line"><span class="causes-name">{ "Tick what was seen, or take a reading." }</span></li>
+            <li class="causes-line"><span class="causes-name is-ask">{ "Tick what was seen, or take a reading." }</span></li>
         }];
     }
     let line = |cause: &Cause| {
@@ -143,12 +143,12 @@ fn List(props: &ListProps) -> Html {
     html! { <>
         { not_listed(assessment, verdict) }
         if !assessment.withheld.is_empty() {
-            <Caution grade={Grade::Caution} title="Held back" testid="withheld">
-                <ul class="plain-list">{ for assessment.withheld.iter().map(|text| html! { <li>{ text.clone() }</li> }) }</ul>
+            <Caution grade={Grade::Caution} title="Held back" class="small-caution" testid="withheld">
+                { lines(&assessment.withheld) }
             </Caution>
         }
         if !assessment.trust.retake.is_empty() {
-            <Caution grade={Grade::Caution} title="Take again: does not fit the rest" testid="retake">
+            <Caution grade={Grade::Caution} title="Take again: does not fit the rest" class="small-caution" testid="retake">
                 <ul class="plain-list">
                     { for assessment.trust.retake.iter().map(|(id, why)| retake(props, id, why)) }
                 </ul>
@@ -179,8 +179,8 @@ fn List(props: &ListProps) -> Html {
             </button>
         }
         if !assessment.notes.is_empty() {
-            <Caution grade={Grade::Note} title="To know" testid="notes">
-                <ul class="plain-list">{ for assessment.notes.iter().map(|text| html! { <li>{ text.clone() }</li> }) }</ul>
+            <Caution grade={Grade::Note} title="To know" class="small-caution" testid="notes">
+                { lines(&assessment.notes) }
             </Caution>
         }
         <p class="soft small">
@@ -188,6 +188,16 @@ fn List(props: &ListProps) -> Html {
                rules and licensed practice come first." }
         </p>
     </> }
+}
+
+/// One sentence as it is, several as a list.
+fn lines(texts: &[String]) -> Html {
+    match texts {
+        [only] => html! { <p>{ only.clone() }</p> },
+        texts => html! {
+            <ul class="plain-list">{ for texts.iter().map(|text| html! { <li>{ text.clone() }</li> }) }</ul>
+        },
+    }
 }
 
 /// Nothing on the list explains the readings: says so, and what to look at before anything else.
@@ -201,13 +211,9 @@ fn not_listed(assessment: &Assessment, verdict: Verdict) -> Html {
     }
     let wrong = assessment.trust.wrong_reading;
     html! {
-        <Caution grade={Grade::Caution} title="No listed cause explains these readings" testid="not-listed">
-            <p>{ "Before looking further, check each reading again:" }</p>
-            <ul class="plain-list">
-                <li>{ "the gauge: zero with the engine off and the line bled, or a second gauge beside it;" }</li>
-                <li>{ "the port: the drawing says charge, loop or case, not the hand;" }</li>
-                <li>{ "the condition: direction, lever, engine speed as they were." }</li>
-            </ul>
+        <Caution grade={Grade::Caution} title="No listed cause explains these readings" class="small-caution" testid="not-listed">
+            <p>{ "Check each reading again first. The gauge: zero with the engine off and the line bled, or a second gauge beside \
+                  it. The port: by the drawing. The condition: direction, lever, engine speed." }</p>
             if wrong >= 0.05 {
                 <p>{ format!("Chance that a gauge, port or direction is wrong: {}.", words::percent(wrong)) }</p>
             }

@@ -51,7 +51,7 @@ pub fn CauseRow(props: &CauseRowProps) -> Html {
                         <span class="cause-members soft">{ members(&cause.ids) }</span>
                     }
                     if props.place == 0 && told {
-                        { lead_proof(&cause.ids) }
+                        { lead_proof(cause) }
                     }
                 </summary>
                 <div class="cause-body">
@@ -86,14 +86,21 @@ fn members(ids: &[FaultId]) -> String {
     format!("Alike in every reading taken: {}", titles.join("; "))
 }
 
-/// The lead says at once what would prove it.
-fn lead_proof(ids: &[FaultId]) -> Html {
-    let Some(fault) = ids
+/// The lead says at once what would prove it, or for a set what splits it.
+fn lead_proof(cause: &Cause) -> Html {
+    let proof = cause
+        .ids
         .first()
         .and_then(|id| faults::find(*id))
-        .filter(|fault| !fault.proof.is_empty())
-    else {
-        return Html::default();
+        .map(|fault| fault.proof)
+        .unwrap_or_default();
+    let (lead, text) = if cause.ids.len() > 1 && !cause.split.is_empty() {
+        ("Split by: ", cause.split.as_str())
+    } else {
+        ("Proved by: ", proof)
     };
-    html! { <span class="cause-proof"><b>{ "Proved by: " }</b>{ fault.proof }</span> }
+    if text.is_empty() {
+        return Html::default();
+    }
+    html! { <span class="cause-proof"><b>{ lead }</b>{ text.to_owned() }</span> }
 }
