@@ -16,6 +16,7 @@
 //! | [`checks`] | the checks a mechanic can make, with minutes, hazards and precautions |
 //! | [`windows`] | what a healthy unit should show |
 //! | [`ranking`] | from readings to causes |
+//! | [`next`] | the next check, the next repair, when to stop |
 //! | [`assessment`] | what an assessment hands out |
 //! | [`record`] | visits and units as they are kept; import, export, migration |
 //! | [`store`] | where the record is kept |
@@ -36,6 +37,7 @@ pub mod heat;
 pub mod kinematics;
 pub mod machine;
 pub mod math;
+pub mod next;
 pub mod observations;
 pub mod quantity;
 pub mod readings;

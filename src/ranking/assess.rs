@@ -36,7 +36,8 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
         &data,
         &bench,
     );
-    let (mut weighed, change) = weigh(&bench, &data, unit.sides);
+    let posterior = weigh(&bench, &data, unit.sides);
+    let (mut weighed, change) = (posterior.causes, posterior.change);
     for w in &mut weighed {
         w.log_prior += math::ln(seen::prior_factor(visit, w.id).max(1e-6));
     }

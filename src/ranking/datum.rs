@@ -76,6 +76,11 @@ pub fn transform(port: Port, value: f64) -> f64 {
     if value < 0.0 { -t } else { t }
 }
 
+/// Back from the transformed scale to the base unit.
+pub fn untransform(port: Port, t: f64) -> f64 {
+    floor(port) * 0.5 * (math::exp(t) - math::exp(-t))
+}
+
 /// Slope of [`transform`].
 pub fn slope(port: Port, value: f64) -> f64 {
     let s = floor(port);

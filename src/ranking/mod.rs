@@ -21,8 +21,10 @@ mod seen;
 
 pub use accuracy::{Accuracy, accuracy};
 pub use assess::assess;
-pub use datum::{Data, Datum, Says, gather, instrument_of};
+pub use datum::{Data, Datum, Says, gather, instrument_of, slope, untransform};
+pub use gauss::{Gauss, LN_TWO_PI};
 pub use hold::hold_time;
+pub use likelihood::fit;
 pub use node::Node;
-pub use posterior::{Weighed, weigh};
-pub use predict::Bench;
+pub use posterior::{Heavy, Posterior, Weighed, swap_chance, weigh};
+pub use predict::{Bench, Prediction};

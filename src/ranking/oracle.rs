@@ -218,7 +218,7 @@ fn the_integral_agrees_with_a_large_ensemble() {
         let list = readings(&unit, fault, *take, &mut draw);
         let data = gather(&unit, &list, &[], &[]);
         let bench = bench(&unit, &data);
-        let (weighed, _) = weigh(&bench, &data, SideNaming::Known);
+        let weighed = weigh(&bench, &data, SideNaming::Known).causes;
         let mut listed: Vec<_> = weighed
             .iter()
             .filter(|w| w.id != FaultId::NotListed)

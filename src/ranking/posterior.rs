@@ -41,6 +41,7 @@ pub struct Weighed {
     pub heaviest: f64,
 }
 
+/// A node with what it makes of the data.
 struct Held {
     cause: usize,
     node: Node,
@@ -49,14 +50,40 @@ struct Held {
     mean: Vec<f64>,
 }
 
-/// Weighs every cause of the catalogue. Returns the causes and the largest change of any probability in the last round.
-pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> (Vec<Weighed>, f64) {
-    let swap = if sides == SideNaming::AsMarked {
+/// A node that carries weight: what the next check is chosen over.
+#[derive(Clone, Debug)]
+pub struct Heavy {
+    /// Its cause.
+    pub fault: &'static Fault,
+    /// The node.
+    pub node: Node,
+    /// Log of base rate × share × likelihood of the readings, not normalised.
+    pub log: f64,
+}
+
+/// The causes weighed, and the nodes behind them.
+pub struct Posterior {
+    /// Causes.
+    pub causes: Vec<Weighed>,
+    /// Largest change of any probability in the last round.
+    pub change: f64,
+    /// Nodes that carry weight, heaviest first.
+    pub heavy: Vec<Heavy>,
+}
+
+/// Chance that sides are swapped in the notes.
+pub fn swap_chance(sides: SideNaming) -> f64 {
+    if sides == SideNaming::AsMarked {
         0.5
     } else {
         SWAPPED
-    };
-    let catalogue: Vec<&Fault> = faults::all()
+    }
+}
+
+/// Weighs every cause of the catalogue.
+pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
+    let swap = swap_chance(sides);
+    let catalogue: Vec<&'static Fault> = faults::all()
         .iter()
         .filter(|f| f.id != FaultId::NotListed)
         .collect();
@@ -119,7 +146,35 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> (Vec<Weighed>, f6
             heaviest: 0.0,
         });
     }
-    (out, change)
+    Posterior {
+        causes: out,
+        change,
+        heavy: heaviest(&catalogue, &priors, &held),
+    }
+}
+
+/// Share of the heaviest node of its cause from which a node counts.
+const COUNTS: f64 = 0.02;
+/// Most nodes that are handed on.
+const MOST_HANDED_ON: usize = 90;
+
+fn heaviest(catalogue: &[&'static Fault], priors: &[f64], held: &[Held]) -> Vec<Heavy> {
+    let mut best = vec![f64::NEG_INFINITY; catalogue.len()];
+    for h in held {
+        best[h.cause] = best[h.cause].max(h.log_weight + h.fit.log);
+    }
+    let mut list: Vec<Heavy> = held
+        .iter()
+        .filter(|h| h.log_weight + h.fit.log > best[h.cause] + math::ln(COUNTS))
+        .map(|h| Heavy {
+            fault: catalogue[h.cause],
+            node: h.node,
+            log: priors[h.cause] + h.log_weight + h.fit.log,
+        })
+        .collect();
+    list.sort_by(|a, b| b.log.total_cmp(&a.log).then(a.fault.id.cmp(&b.fault.id)));
+    list.truncate(4 * MOST_HANDED_ON);
+    list
 }
 
 /// Share of all weight a cause, by its nodes.

@@ -1,6 +1,6 @@
 //! From weighed causes to the rows that a screen shows: probabilities, twins joined, reasons, what each gauge would read.
 
-use super::datum::{Data, Says, floor};
+use super::datum::{Data, Says, slope, untransform};
 use super::evidence::{Probable, evidence};
 use super::posterior::Weighed;
 use super::seen::Seen;
@@ -43,15 +43,15 @@ pub fn rows(
     }
     for (i, _) in taken.iter().enumerate().filter(|(_, t)| !**t) {
         out.push(row(
-                &[i],
-                None,
-                weighed,
-                &probable,
-                data,
-                readings,
-                seen,
-                words,
-            ));
+            &[i],
+            None,
+            weighed,
+            &probable,
+            data,
+            readings,
+            seen,
+            words,
+        ));
     }
     out.sort_by(|a, b| {
         b.probability
@@ -132,9 +132,8 @@ fn would_read(w: &Weighed, data: &Data, readings: &[Reading]) -> Vec<WouldRead> 
                     (v, v * spread)
                 }
                 _ => {
-                    let s = floor(d.port);
-                    let value = s * 0.5 * (math::exp(*mean) - math::exp(-mean));
-                    (value, spread * (value * value + s * s).sqrt())
+                    let value = untransform(d.port, *mean);
+                    (value, spread / slope(d.port, value))
                 }
             };
             (value.is_finite() && spread.is_finite()).then_some(WouldRead {

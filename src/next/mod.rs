@@ -1,0 +1,100 @@
+//! What to do next: the check that tells most for its minutes, the repair that is quicker than any check, and when to stop.
+//!
+//! Checks rank by expected information (mutual information between cause and outcome, over the same nodes and scatter as the
+//! ranking) per minute. Hazard is a gate and never a price. Repairs are weighed against checks by expected minutes to the
+//! end of the trouble (decision-theoretic troubleshooting: Heckerman, Breese and Rommelse, 1995).
+
+mod advise;
+mod gate;
+mod mixture;
+mod outcomes;
+mod probe;
+mod repair;
+mod words;
+
+pub use advise::advise;
+
+use crate::faults::FaultId;
+use crate::readings::{Condition, Port};
+use serde::{Deserialize, Serialize};
+
+/// What a reading would be under a cause. Base unit of the port's kind.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+pub struct Would {
+    /// Cause.
+    pub id: FaultId,
+    /// Its title.
+    pub title: String,
+    /// Most likely value.
+    pub value: f64,
+    /// Lower end of the central 80 %, instrument included.
+    pub low: f64,
+    /// Upper end of the central 80 %.
+    pub high: f64,
+}
+
+/// One reading of an offered check, with what it would say.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+pub struct Foretold {
+    /// Port.
+    pub port: Port,
+    /// Condition.
+    pub condition: Condition,
+    /// Under each leading cause.
+    pub would: Vec<Would>,
+}
+
+/// A check that is offered.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+pub struct Offer {
+    /// Check id.
+    pub id: String,
+    /// Title.
+    pub title: String,
+    /// Expected information, bits.
+    pub bits: f64,
+    /// Minutes, rigging and access on this unit included.
+    pub minutes: f64,
+    /// Hazard, 0 to 3.
+    pub hazard: u8,
+    /// One sentence: what it tells from what.
+    pub why: String,
+    /// What its readings would say.
+    pub foretold: Vec<Foretold>,
+}
+
+/// A repair that is offered.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+pub struct RepairOffer {
+    /// Cause that it ends.
+    pub id: FaultId,
+    /// The repair, in words.
+    pub repair: String,
+    /// Minutes.
+    pub minutes: f64,
+    /// Probability that it ends the trouble.
+    pub probability: f64,
+    /// What proves the cause before parts are ordered.
+    pub proof: String,
+    /// True where the expected minutes to the end are fewer by repairing now than by the best check first.
+    pub now: bool,
+    /// The unit's manual is needed.
+    pub needs_manual: bool,
+    /// Caution where the hand goes.
+    pub caution: String,
+    /// Reading ids that are off now and must come back after the repair.
+    pub proved_by: Vec<String>,
+}
+
+/// What to do next.
+#[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
+pub struct Advice {
+    /// Checks, best first.
+    pub checks: Vec<Offer>,
+    /// Best repair, where one may be offered.
+    pub repair: Option<RepairOffer>,
+    /// Set where no check that is left can change the order.
+    pub stop: Option<String>,
+    /// Held back by the gates, with the reason.
+    pub held_back: Vec<(String, String)>,
+}
