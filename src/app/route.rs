@@ -1,5 +1,7 @@
 //! Where in the app one is, as the part of the address behind `#`.
 
+use crate::record::is_id;
+
 /// A screen.
 #[derive(Clone, Debug, Default, PartialEq, Eq)]
 pub enum Route {
@@ -35,13 +37,4 @@ impl Route {
             Route::Settings => "#/settings".to_owned(),
         }
     }
-}
-
-/// Ids are made by the app; anything else in the address is a slip of the hand.
-fn is_id(text: &str) -> bool {
-    !text.is_empty()
-        && text.len() <= 80
-        && text
-            .bytes()
-            .all(|byte| byte.is_ascii_alphanumeric() || byte == b'-' || byte == b'_')
 }
