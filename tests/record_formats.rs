@@ -110,14 +110,14 @@ const MADE_UP: &[Step] = &[
     Step {
         from: 2,
         apply: |subject, mut value| {
-            if subject == Subject::Record(RecordKind::Unit) {
-                if let Some(motors) = value.pointer_mut("/ticks/motors") {
-                    let text = motors.as_str().ok_or("motors is no text")?;
-                    *motors = text
-                        .parse::<u8>()
-                        .map(Value::from)
-                        .map_err(|_| format!("motors is {text:?}"))?;
-                }
+            if subject == Subject::Record(RecordKind::Unit)
+                && let Some(motors) = value.pointer_mut("/ticks/motors")
+            {
+                let text = motors.as_str().ok_or("motors is no text")?;
+                *motors = text
+                    .parse::<u8>()
+                    .map(Value::from)
+                    .map_err(|_| format!("motors is {text:?}"))?;
             }
             Ok(value)
         },
@@ -125,11 +125,11 @@ const MADE_UP: &[Step] = &[
     Step {
         from: 3,
         apply: |subject, mut value| {
-            if subject == Subject::Record(RecordKind::Visit) {
-                if let Some(words) = value.get("complaint").and_then(Value::as_array) {
-                    let words: Vec<&str> = words.iter().filter_map(Value::as_str).collect();
-                    value["complaint"] = Value::from(words.join(" "));
-                }
+            if subject == Subject::Record(RecordKind::Visit)
+                && let Some(words) = value.get("complaint").and_then(Value::as_array)
+            {
+                let words: Vec<&str> = words.iter().filter_map(Value::as_str).collect();
+                value["complaint"] = Value::from(words.join(" "));
             }
             Ok(value)
         },

@@ -565,7 +565,10 @@ fn figures_that_would_be_refused_go_out_as_text() {
         .iter()
         .map(|r| r.typed.as_str())
         .collect();
-    assert_eq!(typed, ["700000000\u{202f}bar", "30\u{202f}bar to 20\u{202f}bar", ""]);
+    assert_eq!(
+        typed,
+        ["700000000\u{202f}bar", "30\u{202f}bar to 20\u{202f}bar", ""]
+    );
     assert!(
         export.visits[0]
             .readings

@@ -152,18 +152,25 @@ const UNNAMED: &str = ".?";
 /// Puts the name of the faulty key in its place in the path, found by halving the table that it stands in.
 fn name_key<T: DeserializeOwned>(value: &Value, path: &str, at: usize) -> Option<String> {
     let (table_path, rest) = path.split_at_checked(at)?;
-    let pointer = format!("/{}", table_path.replace('.', "/").replace('[', "/").replace(']', ""));
+    let pointer = format!("/{}", table_path.replace(['.', '['], "/").replace(']', ""));
     let table = value.pointer(&pointer)?.as_object()?;
     let mut keys: Vec<&String> = table.keys().collect();
     let mut trial = value.clone();
     while keys.len() > 1 {
         let other = keys.split_off(keys.len() / 2);
-        let some = keys.iter().filter_map(|key| Some(((*key).clone(), table.get(*key)?.clone()))).collect();
+        let some = keys
+            .iter()
+            .filter_map(|key| Some(((*key).clone(), table.get(*key)?.clone())))
+            .collect();
         *trial.pointer_mut(&pointer)? = Value::Object(some);
         let error = serde_path_to_error::deserialize::<_, T>(&trial).err();
         if error.is_none_or(|error| error.path().to_string() != path) {
             keys = other;
         }
     }
-    Some(format!("{table_path}.{}{}", keys.first()?, rest.get(UNNAMED.len()..)?))
+    Some(format!(
+        "{table_path}.{}{}",
+        keys.first()?,
+        rest.get(UNNAMED.len()..)?
+    ))
 }

@@ -13,13 +13,8 @@ pub enum Fault {
     Torn(u8),
     /// As [`Fault::Torn`], and says that it failed.
     TornAndFails(u8),
-    /// Somebody else writes this text under this key just before the call.
-    Foreign {
-        /// Key written.
-        key: String,
-        /// Text written; none: taken out.
-        text: Option<String>,
-    },
+    /// Somebody else writes these texts under their keys just before the call; no text: the key is taken out.
+    Foreign(Vec<(String, Option<String>)>),
     /// From this call on every write that makes the store larger than this many bytes of keys and texts fails.
     Quota(usize),
 }
@@ -95,10 +90,12 @@ impl<S: Store> FaultyStore<S> {
                 self.state.borrow_mut().quota = Some(bytes);
                 Ok(Turn::Go)
             }
-            Some(Fault::Foreign { key, text }) => {
-                match text {
-                    Some(text) => self.inner.put(&key, &text)?,
-                    None => self.inner.remove(&key)?,
+            Some(Fault::Foreign(writes)) => {
+                for (key, text) in writes {
+                    match text {
+                        Some(text) => self.inner.put(&key, &text)?,
+                        None => self.inner.remove(&key)?,
+                    }
                 }
                 Ok(Turn::Go)
             }

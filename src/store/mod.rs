@@ -84,3 +84,21 @@ impl<S: Store + ?Sized> Store for Box<S> {
         (**self).keys(prefix)
     }
 }
+
+impl<S: Store + ?Sized> Store for std::rc::Rc<S> {
+    fn get(&self, key: &str) -> Result<Option<String>, StoreError> {
+        (**self).get(key)
+    }
+
+    fn put(&self, key: &str, text: &str) -> Result<(), StoreError> {
+        (**self).put(key, text)
+    }
+
+    fn remove(&self, key: &str) -> Result<(), StoreError> {
+        (**self).remove(key)
+    }
+
+    fn keys(&self, prefix: &str) -> Result<Vec<String>, StoreError> {
+        (**self).keys(prefix)
+    }
+}

@@ -2,7 +2,7 @@
 
 use super::super::keys::{self, RecordKey};
 use super::super::{Store, StoreError};
-use super::{Foreign, NotSaved, Quarantined, Shelf, Standing, Trashed};
+use super::{NotSaved, Quarantined, Shelf, Standing, Trashed};
 use crate::record::Envelope;
 use serde_json::Value;
 
@@ -40,29 +40,18 @@ impl<S: Store> Shelf<S> {
             return Err(NotSaved::Gone);
         };
         keep(self, &text)?;
-        // The slot goes first: left behind, it would bring the record back.
-        self.clear_slot(key)?;
+        self.close_slot(key, &text)?;
+        if self.recovered.remove(key) {
+            self.clear_slots_of(key, &text);
+        }
         if self.store.get(&key.path())?.as_deref() != Some(text.as_str()) {
             return Err(NotSaved::Gone);
         }
         self.store.remove(&key.path())?;
         self.held.remove(key);
+        self.tried.remove(key);
         self.write_index();
         Ok(())
-    }
-
-    /// Empties this tab's slot where it holds this record.
-    fn clear_slot(&self, key: &RecordKey) -> Result<(), StoreError> {
-        let slot = keys::slot(&self.tab);
-        let holds = self
-            .store
-            .get(&slot)?
-            .is_some_and(|text| text.split('\n').next() == Some(&key.tail()));
-        if holds {
-            self.store.remove(&slot)
-        } else {
-            Ok(())
-        }
     }
 
     /// What is in the trash, newest first.
@@ -105,6 +94,7 @@ impl<S: Store> Shelf<S> {
         }
         self.put_checked(&trashed.key.path(), &text)?;
         self.held.remove(&trashed.key);
+        self.tried.remove(&trashed.key);
         self.write_index();
         self.store.remove(&trashed.path)?;
         Ok(())
@@ -161,14 +151,6 @@ impl<S: Store> Shelf<S> {
     /// [`StoreError`].
     pub fn discard_quarantined(&mut self, entry: &Quarantined) -> Result<(), StoreError> {
         self.store.remove(&entry.path)
-    }
-
-    /// A change by another tab that stands in the way of putting this record in the trash; none where nothing does.
-    ///
-    /// # Errors
-    /// [`StoreError`].
-    pub fn in_the_way(&self, key: &RecordKey) -> Result<Option<Foreign>, StoreError> {
-        Ok(self.compare(key)?.err())
     }
 }
 

@@ -14,6 +14,8 @@ impl<S: Store> Shelf<S> {
     pub fn load(&mut self, now: &str) -> Loaded {
         let mut loaded = Loaded::default();
         self.held.clear();
+        self.tried.clear();
+        self.recovered.clear();
         self.read_only.clear();
         self.loaded = false;
         let slots = match self.store.keys(keys::SLOT) {
@@ -26,6 +28,7 @@ impl<S: Store> Shelf<S> {
         for slot in slots {
             self.settle_slot(&slot, now, &mut loaded);
         }
+        self.recovered = loaded.recovered.iter().cloned().collect();
         let paths = match self.store.keys(keys::PREFIX) {
             Ok(paths) => paths,
             Err(why) => {
@@ -97,6 +100,7 @@ impl<S: Store> Shelf<S> {
             })?;
         let Some(text) = text else {
             self.held.remove(key);
+            self.tried.remove(key);
             return Ok(None);
         };
         let record = self.read(key, &text).map_err(|why| LoadProblem::Stuck {
@@ -104,16 +108,7 @@ impl<S: Store> Shelf<S> {
             why,
             store: StoreError::Failed(String::from("not moved while the page is in use")),
         })?;
-        // Slots that hold this very state have done their work; one that is left over is looked at again at the next load.
-        for slot in self.store.keys(keys::SLOT).unwrap_or_default() {
-            if self
-                .store
-                .get(&slot)
-                .is_ok_and(|there| there.as_deref() == Some(&format!("{}\n{text}", key.tail())))
-            {
-                let _ = self.store.remove(&slot);
-            }
-        }
+        self.clear_slots_of(key, &text);
         Ok(Some(record))
     }
 
@@ -179,6 +174,7 @@ impl<S: Store> Shelf<S> {
         let content = serde_json::to_string(&record)
             .map(|body| checksum(&body))
             .unwrap_or_default();
+        self.tried.remove(key);
         self.held.insert(
             key.clone(),
             Held {
@@ -189,11 +185,20 @@ impl<S: Store> Shelf<S> {
         Ok(record)
     }
 
-    fn quarantine(&self, path: &str, text: &str, why: RecordError, now: &str, loaded: &mut Loaded) {
+    /// Moves a text that cannot be read to the quarantine. False where it could not be moved, and stays where it is.
+    pub(super) fn quarantine(
+        &self,
+        path: &str,
+        text: &str,
+        why: RecordError,
+        now: &str,
+        loaded: &mut Loaded,
+    ) -> bool {
         let moved = self
             .put_aside(|moment| keys::quarantine(moment, path), now, text)
             .and_then(|()| self.store.remove(path).map_err(NotSaved::from));
         let was = path.to_owned();
+        let is_moved = moved.is_ok();
         loaded.problems.push(match moved {
             Ok(()) => LoadProblem::Quarantined { was, why },
             Err(NotSaved::Store(store)) => LoadProblem::Stuck { was, why, store },
@@ -203,61 +208,7 @@ impl<S: Store> Shelf<S> {
                 store: StoreError::Failed(other.to_string()),
             },
         });
-    }
-
-    /// Looks at a slot that some tab left: its last save was cut off, or met another's, or (most often) was complete.
-    fn settle_slot(&self, slot: &str, now: &str, loaded: &mut Loaded) {
-        let Ok(Some(content)) = self.store.get(slot) else {
-            return;
-        };
-        let Some((key, text)) = content
-            .split_once('\n')
-            .and_then(|(tail, text)| Some((RecordKey::from_tail(tail)?, text)))
-        else {
-            return self.quarantine(
-                slot,
-                &content,
-                RecordError::NotOurs {
-                    why: String::from("a slot without a record"),
-                },
-                now,
-                loaded,
-            );
-        };
-        let mine = match Envelope::open(text) {
-            Ok(mine) => mine,
-            Err(why) => return self.quarantine(slot, &content, why, now, loaded),
-        };
-        let Ok(there) = self.store.get(&key.path()) else {
-            return;
-        };
-        let opened = there.as_deref().map(Envelope::open);
-        match opened {
-            Some(Ok(there)) if there.stamp == mine.stamp || there.body == mine.body => {
-                let _ = self.store.remove(slot);
-            }
-            Some(Ok(there)) if mine.stamp.rev <= there.stamp.rev => {
-                let mut aside = Loaded::default();
-                self.quarantine(
-                    slot,
-                    text,
-                    RecordError::NotOurs { why: String::new() },
-                    now,
-                    &mut aside,
-                );
-                loaded.problems.push(LoadProblem::Parallel { key });
-            }
-            // Cut off before the record was written (nothing, or the state before) or in the middle of it (unreadable).
-            _ => {
-                if let (Some(Err(why)), Some(torn)) = (opened, &there) {
-                    self.quarantine(&key.path(), torn, why, now, loaded);
-                }
-                if self.put_checked(&key.path(), text).is_ok() {
-                    let _ = self.store.remove(slot);
-                    loaded.recovered.push(key);
-                }
-            }
-        }
+        is_moved
     }
 
     /// What the index names and the store has not was taken out from outside.
@@ -274,7 +225,7 @@ impl<S: Store> Shelf<S> {
             .filter_map(|tail| RecordKey::from_tail(tail))
             .filter(|key| !found.contains(key))
             .collect();
-        let is_stale = !gone.is_empty() || found.len() != named.len();
+
         let told: BTreeSet<String> = loaded
             .problems
             .iter()
@@ -283,6 +234,7 @@ impl<S: Store> Shelf<S> {
                 _ => None,
             })
             .collect();
+        let is_stale = !gone.is_empty() || !told.is_empty() || found.len() != named.len();
         for key in gone.into_iter().filter(|key| !told.contains(&key.path())) {
             loaded.problems.push(LoadProblem::Missing { key });
         }

@@ -10,10 +10,13 @@
 //! The browser gives no lock across tabs that can be taken without waiting, so two tabs can pass step 1 together; the slot is
 //! what makes that harmless.
 
+mod add;
 mod bins;
 mod load;
+mod overwrite;
 mod report;
 mod save;
+mod slot;
 
 pub use report::{
     Foreign, LoadProblem, Loaded, NotSaved, Quarantined, SaveOutcome, SaveState, Trashed, Usage,
@@ -35,6 +38,10 @@ pub struct Shelf<S: Store> {
     ladder: Ladder,
     /// The state of each record that this tab last read or wrote.
     held: BTreeMap<RecordKey, Held>,
+    /// The last state of each record that this tab tried to write without being told that it went well.
+    tried: BTreeMap<RecordKey, Stamp>,
+    /// Records that the load completed from a slot which still holds them.
+    recovered: BTreeSet<RecordKey>,
     read_only: BTreeMap<RecordKey, u64>,
     loaded: bool,
 }
@@ -97,6 +104,8 @@ impl<S: Store> Shelf<S> {
             tab: tab.replace(['/', '\n'], "-"),
             ladder,
             held: BTreeMap::new(),
+            tried: BTreeMap::new(),
+            recovered: BTreeSet::new(),
             read_only: BTreeMap::new(),
             loaded: false,
         }
@@ -177,10 +186,10 @@ impl<S: Store> Shelf<S> {
         };
         Ok(match Envelope::open(&text) {
             Err(_) => Ok(Standing::Unreadable { text }),
-            // Only this tab writes its own name, so its own state is never foreign, whatever this tab believes.
+            // What this tab tried to write and could not is its own too: another tab may have completed it from the slot.
             Ok(there)
                 if held.is_some_and(|held| held.stamp == there.stamp)
-                    || there.stamp.tab == self.tab =>
+                    || self.tried.get(key) == Some(&there.stamp) =>
             {
                 Ok(Standing::Ours { text, there })
             }

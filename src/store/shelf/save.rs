@@ -1,7 +1,7 @@
 //! Writing records.
 
+use super::super::Store;
 use super::super::keys::{self, RecordKey};
-use super::super::{Store, StoreError};
 use super::{Foreign, Held, Kept, NotSaved, SaveOutcome, Shelf, Standing};
 use crate::record::{Book, Envelope, Settings, Stamp, Visit, checksum, is_id};
 use crate::unit::Unit;
@@ -33,116 +33,18 @@ impl<S: Store> Shelf<S> {
         outcomes
     }
 
-    /// Adds new records, all or none: where one cannot be written, those written before it are taken out again.
-    ///
-    /// # Errors
-    /// The first record that could not be written, and why. Nothing is left behind.
-    pub fn add(
-        &mut self,
-        units: &[Unit],
-        visits: &[Visit],
-        now: &str,
-    ) -> Result<(), (RecordKey, NotSaved)> {
-        let mut written = Vec::new();
-        let mut keep = |outcome: SaveOutcome, key: RecordKey| match outcome {
-            SaveOutcome::Saved { .. } => {
-                written.push(key);
-                Ok(())
-            }
-            SaveOutcome::Unchanged => Ok(()),
-            SaveOutcome::Conflict(_) => Err((key, NotSaved::Taken)),
-            SaveOutcome::NotSaved { key, why } => Err((key, why)),
-        };
-        let taken = |shelf: &Self, key: RecordKey| {
-            if shelf.held.contains_key(&key) {
-                Err((key, NotSaved::Taken))
-            } else {
-                Ok(key)
-            }
-        };
-        let result = units
-            .iter()
-            .try_for_each(|unit| {
-                let key = taken(self, unit.key())?;
-                keep(self.save(unit, now), key)
-            })
-            .and_then(|()| {
-                visits.iter().try_for_each(|visit| {
-                    let key = taken(self, visit.key())?;
-                    keep(self.save(visit, now), key)
-                })
-            });
-        if result.is_err() {
-            for key in written {
-                // They are new and still in the caller's hands. One that cannot be taken out again is a spare copy, no loss.
-                let _ = self.delete(&key);
-            }
-        }
-        result
-    }
-
-    /// Writes this tab's record over another tab's. Theirs goes to the trash first.
-    pub fn overwrite_unit(&mut self, unit: &Unit, now: &str) -> SaveOutcome {
-        self.overwrite(unit, now)
-    }
-
-    /// As [`Shelf::overwrite_unit`], for a visit.
-    pub fn overwrite_visit(&mut self, visit: &Visit, now: &str) -> SaveOutcome {
-        self.overwrite(visit, now)
-    }
-
-    /// As [`Shelf::overwrite_unit`], for the settings.
-    pub fn overwrite_settings(&mut self, settings: &Settings, now: &str) -> SaveOutcome {
-        self.overwrite(settings, now)
-    }
-
-    fn overwrite<T: Kept>(&mut self, record: &T, now: &str) -> SaveOutcome {
+    pub(super) fn save<T: Kept>(&mut self, record: &T, now: &str) -> SaveOutcome {
         let key = record.key();
-        let theirs = match self.store.get(&key.path()) {
-            Ok(theirs) => theirs,
-            Err(why) => {
-                return SaveOutcome::NotSaved {
-                    key,
-                    why: why.into(),
-                };
-            }
-        };
-        // What cannot be read goes to the quarantine with the save itself.
-        let readable = theirs.map(|text| Envelope::open(&text).map(|there| (text, there)));
-        match readable {
-            None => {
-                self.held.remove(&key);
-            }
-            Some(Ok((text, there))) if there.schema <= u64::from(self.ladder.top) => {
-                if let Err(why) = self.put_aside(|moment| keys::trash(moment, &key), now, &text) {
-                    return SaveOutcome::NotSaved { key, why };
-                }
-                self.held.insert(
-                    key,
-                    Held {
-                        content: there.stamp.sum.clone(),
-                        stamp: there.stamp,
-                    },
-                );
-            }
-            Some(_) => {}
-        }
-        self.save(record, now)
+        self.try_save(&key, record, now, Follows::WhatStands)
+            .unwrap_or_else(|why| SaveOutcome::NotSaved { key, why })
     }
 
-    fn save<T: Kept>(&mut self, record: &T, now: &str) -> SaveOutcome {
-        let key = record.key();
-        match self.try_save(&key, record, now) {
-            Ok(outcome) => outcome,
-            Err(why) => SaveOutcome::NotSaved { key, why },
-        }
-    }
-
-    fn try_save<T: Kept>(
+    pub(super) fn try_save<T: Kept>(
         &mut self,
         key: &RecordKey,
         record: &T,
         now: &str,
+        follows: Follows,
     ) -> Result<SaveOutcome, NotSaved> {
         if !self.loaded {
             return Err(NotSaved::NotLoaded);
@@ -155,21 +57,23 @@ impl<S: Store> Shelf<S> {
         if self.held.get(key).is_some_and(|held| held.content == sum) {
             return Ok(SaveOutcome::Unchanged);
         }
-        let rev = match self.compare(key)? {
+        let mut completed = None;
+        let base = match self.compare(key)? {
             Err(foreign) => return self.same_as_theirs(key, &sum, foreign),
-            Ok(Standing::Nothing) => 0,
+            Ok(Standing::Nothing) => None,
             Ok(Standing::Ours { text, there }) => {
                 self.guard_older(key, &text, there.schema)?;
-                there.stamp.rev
+                completed = self.recovered.contains(key).then_some(text);
+                Some(there.stamp)
             }
             Ok(Standing::Unreadable { text }) => {
                 self.put_aside(|moment| keys::quarantine(moment, &key.path()), now, &text)?;
-                self.held.get(key).map_or(0, |held| held.stamp.rev)
+                self.held.get(key).map(|held| held.stamp.clone())
             }
         };
         let is_new = !self.held.contains_key(key);
         let stamp = Stamp {
-            rev: rev.saturating_add(1),
+            rev: base.as_ref().map_or(0, |base| base.rev).saturating_add(1),
             tab: self.tab.clone(),
             sum,
         };
@@ -183,7 +87,23 @@ impl<S: Store> Shelf<S> {
         let text = envelope
             .write()
             .map_err(|error| NotSaved::Unwritable(error.to_string()))?;
-        self.fill_slot(key, &text)?;
+        let base_sum = base
+            .as_ref()
+            .filter(|_| follows == Follows::WhatStands)
+            .map(|base| base.sum.as_str());
+        self.fill_slot(key, base_sum, &text, now)?;
+        if let Some(base) = base {
+            // An earlier try may be what stands there.
+            let content = base.sum.clone();
+            self.held.insert(
+                key.clone(),
+                Held {
+                    stamp: base,
+                    content,
+                },
+            );
+        }
+        self.tried.insert(key.clone(), stamp.clone());
         self.store.put(&key.path(), &text)?;
         if self.store.get(&key.path())?.as_deref() != Some(text.as_str()) {
             // Another tab's state, where it is one, stays; the slot holds ours until the next load sorts it out.
@@ -191,7 +111,13 @@ impl<S: Store> Shelf<S> {
                 self.compare(key)?.err().ok_or(NotSaved::Garbled)?,
             ));
         }
+        if let Some(before) = completed {
+            // What the load completed from a slot is now followed by this state: the slot has done its work.
+            self.clear_slots_of(key, &before);
+            self.recovered.remove(key);
+        }
         let rev = stamp.rev;
+        self.tried.remove(key);
         self.held.insert(
             key.clone(),
             Held {
@@ -250,19 +176,6 @@ impl<S: Store> Shelf<S> {
         Ok(())
     }
 
-    /// Puts the text into this tab's slot. A full store goes on without: its own writes are all or nothing.
-    fn fill_slot(&self, key: &RecordKey, text: &str) -> Result<(), NotSaved> {
-        let slot = keys::slot(&self.tab);
-        match self.put_checked(&slot, &format!("{}\n{text}", key.tail())) {
-            Err(NotSaved::Store(StoreError::Full)) => {
-                // The room of the older slot may be what the record needs.
-                self.store.remove(&slot)?;
-                Ok(())
-            }
-            other => other,
-        }
-    }
-
     /// Writes and reads back.
     pub(super) fn put_checked(&self, path: &str, text: &str) -> Result<(), NotSaved> {
         self.store.put(path, text)?;
@@ -306,6 +219,15 @@ impl<S: Store> Shelf<S> {
             let _ = self.store.put(keys::INDEX, &text);
         }
     }
+}
+
+/// What a new state was made from.
+#[derive(Clone, Copy, PartialEq, Eq)]
+pub(super) enum Follows {
+    /// From what stands there: completing it after a crash loses nothing.
+    WhatStands,
+    /// From something else, and it is to stand instead: after a crash both are kept.
+    Nothing,
 }
 
 /// The record as JSON text that surely reads back.
