@@ -4,9 +4,7 @@ use super::condition_parts::{Typed, engine, lever, oil};
 use crate::app::parts::{Choice, Opt, Select};
 use crate::quantity::UnitPrefs;
 use crate::readings::{Condition, Direction, Doing};
-use yew::{
-    Callback, Event, Html, Properties, TargetCast, UseStateHandle, component, html, use_state,
-};
+use yew::{Callback, Event, Html, Properties, TargetCast, component, html, use_state};
 
 /// Properties of [`ConditionEditor`].
 #[derive(Clone, PartialEq, Properties)]

@@ -8,7 +8,7 @@ use super::words;
 use crate::app::parts::{Caution, Choice, Grade, Opt};
 use crate::app::platform::clock;
 use crate::caution::Stands;
-use crate::quantity::{Kind, Measure, UnitPrefs};
+use crate::quantity::{self, Decimals, Kind, Measure, UnitPrefs};
 use crate::readings::{Doing, Port};
 use crate::unit::{FigureId, Unit};
 use std::rc::Rc;
@@ -230,13 +230,22 @@ fn held(props: &GatePanelProps) -> Html {
 
 fn seconds_words(seconds: f64, prefs: &UnitPrefs) -> String {
     // Down, never up: this protects.
-    let seconds = if seconds >= 10.0 {
-        seconds.floor()
+    let (seconds, places) = if seconds >= 10.0 {
+        (seconds.floor(), 0)
     } else {
-        (seconds * 10.0).floor() / 10.0
+        ((seconds * 10.0).floor() / 10.0, 1)
     };
-    Measure::from_base(seconds.max(0.0), Kind::Time)
-        .map_or_else(|_| String::from("0 s"), |time| prefs.print(time))
+    Measure::from_base(seconds.max(0.0), Kind::Time).map_or_else(
+        |_| String::from("0 s"),
+        |time| {
+            quantity::format_with_unit(
+                time,
+                quantity::Unit::Second,
+                Decimals::Fixed(places),
+                prefs.mark(),
+            )
+        },
+    )
 }
 
 fn rise_words(rise: f64, prefs: &UnitPrefs) -> String {
@@ -255,13 +264,13 @@ fn stop_at(unit: &Unit, prefs: &UnitPrefs) -> String {
     .min_by(|one, other| one.0.total_cmp(&other.0));
     match known {
         Some((bar, name)) => format!(
-            "Stop first at {} (60 % of the {name} setting), then look before going on. Never over {}.",
+            "Stop first at {} (60 % of the {name} setting), then look before going on. Never over {}.",
             words::value(Port::LoopA, FIRST_STOP * bar, prefs),
             words::value(Port::LoopA, bar, prefs),
         ),
         None => String::from(
             "No loop relief setting in the profile: take it from the unit’s manual or the stamp on the cartridge first, and stop \
-             at 60 % of it.",
+             at 60 % of it.",
         ),
     }
 }

@@ -18,6 +18,7 @@ mod cautions;
 mod change;
 mod condition_editor;
 mod condition_parts;
+mod edits;
 mod entry;
 mod entry_field;
 mod entry_modes;

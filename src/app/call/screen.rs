@@ -5,11 +5,11 @@ use super::add_panel::AddPanel;
 use super::alerts::{LeadStatus, StopWork};
 use super::causes::Causes;
 use super::cautions;
-use super::change::{Change, apply};
+use super::change::Change;
+use super::edits::use_edits;
 use super::entry;
 use super::entry_field::field_id;
 use super::group::groups;
-use super::history::History;
 use super::map::LoopMap;
 use super::quick_panel::QuickPanel;
 use super::reading_group::ReadingGroup;
@@ -27,7 +27,10 @@ use crate::readings::{Condition, Doing, Port, Reading};
 use crate::record::Visit;
 use crate::unit::Unit;
 use std::rc::Rc;
-use yew::{Callback, Html, MouseEvent, Properties, component, html, use_effect};
+use web_sys::HtmlInputElement;
+use yew::{
+    Callback, Html, KeyboardEvent, MouseEvent, Properties, TargetCast, component, html, use_effect,
+};
 use yew::{use_effect_with, use_mut_ref, use_state};
 
 /// A minute, ms.
@@ -59,15 +62,11 @@ pub struct CallScreenProps {
 /// The screen.
 #[component]
 pub fn CallScreen(props: &CallScreenProps) -> Html {
-    let history = use_mut_ref(History::default);
-    // The newest visit, so that two edits between two drawings build on one another.
-    let newest = use_mut_ref(|| props.visit.clone());
+    let edits = use_edits(&props.visit, &props.on_visit);
     let to_focus = use_mut_ref(|| None::<String>);
     let editing = use_state(Vec::<String>::new);
     let chosen = use_state(|| None::<Port>);
-    let said = use_state(String::new);
     let minute = use_state(|| 0_u32);
-    newest.replace(props.visit.clone());
     {
         let minute = minute.clone();
         use_effect_with(*minute, move |now| {
@@ -87,45 +86,26 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
         });
     }
     let on_change = {
-        let (newest, history, to_focus) = (newest.clone(), history.clone(), to_focus.clone());
-        let (on_visit, editing) = (props.on_visit.clone(), editing.clone());
+        let (edits, to_focus, editing) = (edits.clone(), to_focus.clone(), editing.clone());
         Callback::from(move |change: Change| {
-            let before = newest.borrow().clone();
-            let after = apply(&before, &change);
-            if after == *before {
-                return;
-            }
-            history.borrow_mut().remember(before.clone(), &change);
-            if let Change::Add(_) = change {
+            let made = edits.make(&change);
+            if let (Change::Add(_), Some((before, after))) = (&change, made) {
                 editing.set(Vec::new());
                 let added = after.readings.get(before.readings.len());
                 to_focus.replace(added.map(|reading| reading.id.clone()));
             }
-            newest.replace(Rc::new(after.clone()));
-            on_visit.emit(after);
         })
     };
     let on_undo = {
-        let (newest, history, on_visit, said) = (
-            newest.clone(),
-            history.clone(),
-            props.on_visit.clone(),
-            said.clone(),
-        );
-        Callback::from(move |_: MouseEvent| {
-            if let Some((before, words)) = history.borrow_mut().back() {
-                newest.replace(before.clone());
-                said.set(format!("Undone: {words}."));
-                on_visit.emit((*before).clone());
-            }
-        })
+        let edits = edits.clone();
+        Callback::from(move |_: MouseEvent| edits.undo())
     };
     let on_port = {
-        let (chosen, on_change, newest) = (chosen.clone(), on_change.clone(), newest.clone());
+        let (chosen, on_change, edits) = (chosen.clone(), on_change.clone(), edits.clone());
         let to_focus = to_focus.clone();
         Callback::from(move |port: Port| {
             chosen.set(Some(port));
-            let visit = newest.borrow().clone();
+            let visit = edits.visit();
             match next_at(port, &visit.readings) {
                 Some(reading) => {
                     to_focus.replace(Some(reading.id.clone()));
@@ -135,9 +115,9 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
         })
     };
     let on_reading = {
-        let (to_focus, newest, chosen) = (to_focus, newest.clone(), chosen.clone());
+        let (edits, chosen) = (edits.clone(), chosen.clone());
         Callback::from(move |id: String| {
-            let visit = newest.borrow().clone();
+            let visit = edits.visit();
             if let Some(reading) = visit.readings.iter().find(|reading| reading.id == id) {
                 to_focus.replace(Some(reading.id.clone()));
                 chosen.set(Some(reading.port));
@@ -148,15 +128,24 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
         let editing = editing.clone();
         Callback::from(move |ids: Vec<String>| editing.set(ids))
     };
-    let undo = history.borrow().next();
+    let undo = edits.undoable();
     let visit = &props.visit;
     let grouped = groups(&visit.readings, &editing);
     let told = told_before(&grouped, visit);
+    let on_key = {
+        let order: Vec<String> = grouped
+            .iter()
+            .flat_map(|group| &group.at)
+            .filter_map(|place| visit.readings.get(*place))
+            .map(|reading| reading.id.clone())
+            .collect();
+        Callback::from(move |event: KeyboardEvent| on_enter(&event, &order))
+    };
     html! {
         <main class="page" id="main" data-testid="call-screen">
         <h1 class="hidden-text" id="title" tabindex="-1">{ format!("Call on {}", props.unit.name) }</h1>
-        <div class="call" data-testid="call">
-            <LeadStatus assessment={props.assessment.clone()} said={(*said).clone()} />
+        <div class="call" data-testid="call" onkeydown={on_key}>
+            <LeadStatus assessment={props.assessment.clone()} said={edits.said()} />
             <div class="call-side">
             <div class="call-causes">
                 <Causes
@@ -227,6 +216,23 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             </div>
         </div>
         </main>
+    }
+}
+
+/// "Next" on the keyboard goes from one reading's field to the next, whatever condition that stands in.
+fn on_enter(event: &KeyboardEvent, order: &[String]) {
+    let field = event
+        .target_dyn_into::<HtmlInputElement>()
+        .map(|field| field.id())
+        .unwrap_or_default();
+    let at = order.iter().position(|id| field_id(id) == field);
+    if let Some(next) = at
+        .filter(|_| event.key() == "Enter")
+        .and_then(|at| order.get(at + 1))
+    {
+        event.prevent_default();
+        focus::to(&row_id(next));
+        focus::to(&field_id(next));
     }
 }
 

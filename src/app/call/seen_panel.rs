@@ -34,42 +34,45 @@ pub fn SeenPanel(props: &SeenPanelProps) -> Html {
     let yes_no = || vec![Opt::new(true, "Yes", "yes"), Opt::new(false, "No", "no")];
     let answered = visit.observations.len();
     html! {
-            <section class="panel seen" aria-labelledby="seen-title" id="seen" tabindex="-1">
-                <h2 id="seen-title">{ "What was seen" }{ count_of(answered) }</h2>
-                <TextField
-                    id="complaint"
-                    label="Complaint, in the operator’s words"
-                    value={visit.complaint.clone()}
-                    on_input={props.on_change.reform(Change::Complaint)}
-                    lines={true}
-                    maxlength={u32::try_from(TEXT_CHARACTERS).unwrap_or(2000)}
-                    testid="complaint"
-                />
-                <div class="seen-asks">
-                    <Choice<bool>
-                        name="alone"
-                        label="Alone on site?"
-                        options={yes_no()}
-                        class="is-inline"
-                        value={visit.alone}
-                        on_change={props.on_change.reform(|answer| Change::Alone(Some(answer)))}
+                <section class="panel seen" aria-labelledby="seen-title" id="seen" tabindex="-1">
+                    <h2 id="seen-title">{ "What was seen" }{ count_of(answered) }</h2>
+                    <TextField
+                        id="complaint"
+                        label="Complaint, in the operator’s words"
+                        value={visit.complaint.clone()}
+                        on_input={props.on_change.reform(Change::Complaint)}
+                        lines={true}
+                        maxlength={u32::try_from(TEXT_CHARACTERS).unwrap_or(2000)}
+                        testid="complaint"
                     />
-                    <Choice<bool>
-                        name="after-repair"
-                        label="Began straight after a repair?"
-                        options={yes_no()}
-                        class="is-inline"
-                        value={visit.after_repair}
-                        on_change={props.on_change.reform(|answer| Change::AfterRepair(Some(answer)))}
-                    />
-                </div>
+                    <div class="seen-asks">
+                        <Choice<bool>
+                            name="alone"
+                            label="Alone on site?"
+                            options={yes_no()}
+                            class="is-inline"
+                            value={visit.alone}
+                            on_change={props.on_change.reform(|answer| Change::Alone(Some(answer)))}
+                        />
+                        <Choice<bool>
+                            name="after-repair"
+                            label="Began straight after a repair?"
+                            options={yes_no()}
+                            class="is-inline"
+                            value={visit.after_repair}
+                            on_change={props.on_change.reform(|answer| Change::AfterRepair(Some(answer)))}
+                        />
+                    </div>
+                    if visit.alone == Some(true) {
+                    { cautions::at(Stands::Alone) }
+                }
     <div class="seen-groups">
-                { for Group::ALL.into_iter().map(|group| html! {
-                    <SeenGroup key={format!("{group:?}")} {group} visit={visit.clone()} class={props.class} on_change={props.on_change.clone()} />
-                }) }
-                </div>
-            </section>
-        }
+                    { for Group::ALL.into_iter().map(|group| html! {
+                        <SeenGroup key={format!("{group:?}")} {group} visit={visit.clone()} class={props.class} on_change={props.on_change.clone()} />
+                    }) }
+                    </div>
+                </section>
+            }
 }
 
 fn count_of(answered: usize) -> Html {

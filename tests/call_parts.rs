@@ -1,0 +1,276 @@
+//! The pure parts of the call screen: scale, groups, quick sets, words. They know no browser, so they are tried here natively,
+//! though the screen itself is built for the browser alone.
+#![allow(dead_code)] // what only the screen uses
+
+pub use lowside::{assessment, faults, quantity, readings};
+
+#[path = "../src/app/call"]
+mod call {
+    pub mod group;
+    pub mod quick;
+    pub mod scale;
+    pub mod words;
+}
+
+use assessment::{Assessment, Cause, Evidence, Trust};
+use call::{group, quick, scale, words};
+use faults::FaultId;
+use proptest::prelude::*;
+use quantity::{Measure, Unit, UnitPrefs};
+use readings::{
+    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading,
+};
+
+fn reading(id: &str, port: Port, condition: Condition) -> Reading {
+    Reading {
+        id: id.to_owned(),
+        port,
+        condition,
+        rigging: String::new(),
+        seen: None,
+        typed: String::new(),
+        note: String::new(),
+    }
+}
+
+fn driven(direction: Direction) -> Condition {
+    Condition {
+        doing: Doing::Free,
+        direction,
+        lever: Lever::Half,
+        ..Condition::start()
+    }
+}
+
+proptest! {
+    #[test]
+    fn a_scale_keeps_everything_in_order_and_on_the_paper(
+        low in -50.0..500.0_f64,
+        width in 0.0..400.0_f64,
+        share in 0.0..1.0_f64,
+        read in proptest::option::of(-100.0..1000.0_f64),
+        instrument in 0.0..20.0_f64,
+    ) {
+        let high = low + width;
+        let drawn = scale::lay_out(low, low + share * width, high, read, instrument).expect("finite");
+        prop_assert!(drawn.low < drawn.high);
+        prop_assert!(drawn.low <= drawn.middle && drawn.middle <= drawn.high);
+        // Room for the figures outside the band on both sides.
+        prop_assert!(drawn.low > 15.0 && drawn.high < 85.0);
+        if let (Some(read), Some(at)) = (read, drawn.read) {
+            prop_assert!((0.0..=100.0).contains(&at));
+            // Inside stays inside, outside stays outside, but for the band's least width.
+            if read < low - 0.05 * (high - low).max(1.0) - 0.05 * low.abs() {
+                prop_assert!(at < drawn.low);
+            }
+            if read > low && read < high {
+                prop_assert!(drawn.low <= at && at <= drawn.high);
+            }
+        }
+        if let Some((from, to)) = drawn.whisker {
+            prop_assert!(from < to && from >= 0.0 && to <= 100.0);
+        }
+    }
+
+    #[test]
+    fn a_per_cent_is_never_a_certainty(share in 0.0..=1.0_f64) {
+        let text = words::percent(share);
+        prop_assert!(text != "0\u{202f}%" && text != "100\u{202f}%", "{}", text);
+        prop_assert!(!text.contains("NaN"));
+    }
+}
+
+#[test]
+fn a_scale_is_not_drawn_from_what_is_no_figure() {
+    for (low, middle, high, read) in [
+        (f64::NAN, 1.0, 2.0, None),
+        (1.0, f64::INFINITY, 2.0, None),
+        (1.0, 1.5, 2.0, Some(f64::NAN)),
+        (2.0, 1.5, 1.0, None),
+    ] {
+        assert_eq!(scale::lay_out(low, middle, high, read, 0.1), None);
+    }
+    assert!(scale::lay_out(1.0, 1.5, 2.0, Some(1.2), f64::NAN).is_some());
+}
+
+#[test]
+fn readings_of_one_condition_stand_under_one_heading() {
+    let warm = Condition {
+        oil: Measure::new(55.0, Unit::DegreeCelsius)
+            .ok()
+            .map(|value| OilTemperature {
+                value,
+                place: Place::DrainHose,
+            }),
+        ..Condition::start()
+    };
+    let readings = [
+        reading("r1", Port::Charge, Condition::start()),
+        reading("r2", Port::Charge, driven(Direction::Forward)),
+        // In neutral the direction says nothing.
+        reading(
+            "r3",
+            Port::PumpCase,
+            Condition {
+                direction: Direction::Reverse,
+                ..Condition::start()
+            },
+        ),
+        reading("r4", Port::Charge, driven(Direction::Reverse)),
+        reading("r5", Port::MotorCase, warm),
+    ];
+    let groups: Vec<Vec<usize>> = group::groups(&readings, &[])
+        .into_iter()
+        .map(|group| group.at)
+        .collect();
+    assert_eq!(groups, [vec![0, 2], vec![1], vec![3], vec![4]]);
+
+    // While a heading is edited its readings stay apart, whatever it reads at the moment.
+    let pinned = vec!["r3".to_owned()];
+    let groups: Vec<Vec<usize>> = group::groups(&readings, &pinned)
+        .into_iter()
+        .map(|group| group.at)
+        .collect();
+    assert_eq!(groups, [vec![0], vec![1], vec![2], vec![3], vec![4]]);
+}
+
+#[test]
+fn a_quick_set_adds_what_is_missing_and_nothing_twice() {
+    for set in quick::SETS {
+        let all = set.missing(&[]);
+        assert!(!all.is_empty(), "{}", set.id);
+        let taken: Vec<Reading> = all
+            .iter()
+            .enumerate()
+            .map(|(place, (port, condition))| reading(&format!("r{place}"), *port, *condition))
+            .collect();
+        assert!(set.missing(&taken).is_empty(), "{}", set.id);
+        let (_, rest) = taken.split_first().expect("one at least");
+        assert_eq!(set.missing(rest).len(), 1, "{}", set.id);
+        // A temperature and a speed read off since do not make another reading of it.
+        let measured: Vec<Reading> = taken
+            .iter()
+            .cloned()
+            .map(|mut reading| {
+                reading.condition.engine = EngineSpeed::Measured(
+                    Measure::new(1400.0, Unit::RevolutionPerMinute).expect("finite"),
+                );
+                reading
+            })
+            .collect();
+        assert!(set.missing(&measured).is_empty(), "{}", set.id);
+    }
+}
+
+#[test]
+fn held_readings_come_last_and_by_small_steps() {
+    let first_held = quick::SETS
+        .iter()
+        .position(|set| {
+            (set.readings)()
+                .iter()
+                .any(|(_, condition)| condition.doing == Doing::Held)
+        })
+        .expect("a held set");
+    for set in quick::SETS.iter().skip(first_held) {
+        let steps: Vec<f64> = (set.readings)()
+            .iter()
+            .map(|(_, condition)| {
+                assert_eq!(condition.doing, Doing::Held);
+                condition.lever.share().0
+            })
+            .collect();
+        assert_eq!(steps, [0.05, 0.1, 0.2, 0.4], "{}", set.id);
+    }
+}
+
+fn judged(probability: f64, informed: bool, trust: Trust, id: FaultId) -> words::Verdict {
+    let evidence = Evidence {
+        of: "r1".to_owned(),
+        words: "charge low".to_owned(),
+        weight: 1.0,
+    };
+    words::verdict(&Assessment {
+        causes: vec![Cause {
+            ids: vec![id],
+            title: "cause".to_owned(),
+            probability,
+            shares: vec![probability],
+            action: String::new(),
+            split: String::new(),
+            evidence: if informed { vec![evidence] } else { Vec::new() },
+            would_read: Vec::new(),
+        }],
+        trust,
+        ..Assessment::default()
+    })
+}
+
+#[test]
+fn no_percentage_without_evidence_or_trust() {
+    use words::Verdict::{SoFar, TooLittle, Uncertain};
+    let sure = Trust::default();
+    let shaky = Trust {
+        change: 0.2,
+        ..Trust::default()
+    };
+    let doubted = Trust {
+        wrong_reading: 0.5,
+        ..Trust::default()
+    };
+    let worn = FaultId::ChargePumpWorn;
+    assert_eq!(words::verdict(&Assessment::default()), TooLittle);
+    assert_eq!(judged(0.8, false, sure.clone(), worn), TooLittle);
+    assert_eq!(judged(0.8, true, shaky, worn), TooLittle);
+    assert_eq!(judged(0.8, true, doubted, worn), Uncertain);
+    assert_eq!(judged(0.4, true, sure.clone(), worn), Uncertain);
+    assert_eq!(
+        judged(0.8, true, sure.clone(), FaultId::NotListed),
+        Uncertain
+    );
+    assert_eq!(judged(0.8, true, sure, worn), SoFar);
+}
+
+#[test]
+fn values_are_told_in_the_unit_of_the_shop() {
+    let (metric, us) = (UnitPrefs::metric(), UnitPrefs::us());
+    let plain = |text: String| text.replace('\u{202f}', " ");
+    assert_eq!(
+        plain(words::value(Port::Charge, 24.13, &metric)),
+        "24.1 bar"
+    );
+    assert_eq!(plain(words::value(Port::Charge, 24.13, &us)), "350 psi");
+    // A pull is held as positive below the air; its own unit is one of vacuum.
+    assert_eq!(
+        plain(words::value(Port::InletPull, 0.2, &metric)),
+        "0.20 bar"
+    );
+    assert_eq!(
+        plain(words::value(Port::InletPull, 0.2, &us)),
+        "5.9 inHg vacuum"
+    );
+    assert_eq!(
+        plain(words::spread(Port::InletPull, 0.1, &us)),
+        "±3.0 inHg vacuum"
+    );
+    // A spread of temperature has no zero point: 5 K are 9 °F, not 41.
+    assert_eq!(
+        plain(words::spread(Port::SettledTemperature, 5.0, &us)),
+        "±9 °F"
+    );
+    let (low, high) = words::ends(Port::Charge, 17.5, 23.0, &metric);
+    assert_eq!((low.as_str(), plain(high).as_str()), ("17.5", "23.0 bar"));
+    assert_eq!(
+        plain(words::rough(Port::Charge, 8.56, 10.0, &metric)),
+        "about 9 ±10 bar"
+    );
+}
+
+#[test]
+fn heavier_evidence_has_more_marks() {
+    let marks: Vec<usize> = [0.05, -0.5, 1.0, -2.0, 4.0]
+        .map(|weight| words::weight(weight).0)
+        .to_vec();
+    assert_eq!(marks, [0, 1, 2, 3, 4]);
+    assert_eq!(words::weight(f64::NAN).0, 0);
+}
