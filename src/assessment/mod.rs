@@ -2,6 +2,7 @@
 //! Plain data, so that it can cross from a worker to the page.
 
 use crate::faults::FaultId;
+use crate::next::Advice;
 use serde::{Deserialize, Serialize};
 
 /// Where an expected window comes from.
@@ -139,4 +140,7 @@ pub struct Assessment {
     pub trust: Trust,
     /// Longest time (s) a full-stroke held check may last on this unit, and the temperature rise per second (K/s).
     pub hold: Option<(f64, f64)>,
+    /// What to do next; none while it is not worked out yet.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub advice: Option<Advice>,
 }

@@ -61,10 +61,10 @@ pub const SETS: &[AlikeSet] = &[
         split: "Inlet pull at high idle before and after the new element.",
     },
     AlikeSet {
-        ids: &[OilLow, InletAir],
-        title: "Air in the oil",
-        action: "Look at the level, then at every joint of the suction line.",
-        split: "Dipstick.",
+        ids: &[OilLow, InletAir, ChargeStarvedByFunction],
+        title: "Too little oil, or air with it, reaches the charge pump",
+        action: "Look at the level, then at every joint of the suction line; work steering and implement and watch the charge gauge.",
+        split: "Dipstick; foam after two minutes running; a gauge that falls only while the other function works.",
     },
     AlikeSet {
         ids: &[CoolerDirty, CoolerBypassing],

@@ -92,6 +92,7 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
         notes: notes(unit, visit, swapped),
         trust,
         hold,
+        advice: None,
     }
 }
 

@@ -92,7 +92,11 @@ pub fn slope(port: Port, value: f64) -> f64 {
 fn discrepancy(port: Port) -> f64 {
     match port {
         Port::LoopA | Port::LoopB | Port::LoopDifference => 0.03,
-        Port::MotorDrain | Port::ReturnFlow | Port::PumpCase | Port::MotorCase | Port::InletPull => 0.03,
+        Port::MotorDrain
+        | Port::ReturnFlow
+        | Port::PumpCase
+        | Port::MotorCase
+        | Port::InletPull => 0.03,
         Port::ResponseOut | Port::ResponseBack => 0.08,
         Port::Knee => 0.02,
         Port::MotorShaft | Port::Wheel | Port::Ground => 0.01,
@@ -161,14 +165,18 @@ fn group_key(reading: &Reading, riggings: &[Rigging]) -> String {
 }
 
 /// Null that a sound machine may have, share of full stroke, 1 sigma. Common practice.
-const SOUND_NULL: f64 = 0.004;
+const SOUND_NULL: f64 = 0.006;
 
 /// A sound machine's creep: breakaway friction holds a small null or lets it go, so that no slope at standstill can tell how
 /// far it scatters. Its spread is stated as a share of full speed instead.
 fn creep_own(unit: &Unit, d: &Datum) -> f64 {
-    let figure = |id| unit.known(id).unwrap_or_else(|| unit.class.spread(id).value);
+    let figure = |id| {
+        unit.known(id)
+            .unwrap_or_else(|| unit.class.spread(id).value)
+    };
     let motors = f64::from(unit.ticks.motors.clamp(1, 4));
-    let shaft = figure(FigureId::PumpDisplacement) * figure(FigureId::HighIdle) / (figure(FigureId::MotorDisplacement) * motors);
+    let shaft = figure(FigureId::PumpDisplacement) * figure(FigureId::HighIdle)
+        / (figure(FigureId::MotorDisplacement) * motors);
     let wheel = shaft / figure(FigureId::GearRatio).max(1e-3);
     let full = match d.port {
         Port::MotorShaft => shaft,
@@ -216,16 +224,7 @@ pub fn gather(
             out.group_ports.push(reading.port);
             keys.len() - 1
         });
-        let mut made = datum(
-            index,
-            reading.port,
-            condition,
-            says,
-            value,
-            swing,
-            a,
-            group,
-        );
+        let mut made = datum(index, reading.port, condition, says, value, swing, a, group);
         if reading.condition.doing == Doing::NeutralFree {
             made.own = creep_own(unit, &made);
         }

@@ -155,12 +155,19 @@ impl Engine {
     fn on_page(&self, seq: u32, question: Question) {
         let engine = self.clone();
         let timer = Timer::once(SETTLE_MS, move || {
-            let assessment =
+            let mut assessment =
                 crate::ranking::assess(&question.unit, &question.visit, &question.instruments);
+            assessment.advice = Some(crate::next::advise(
+                &question.unit,
+                &question.visit,
+                &question.instruments,
+                &assessment,
+            ));
             engine.take(Reply {
                 seq,
                 assessment: Some(assessment),
                 error: None,
+                more: false,
             });
         });
         self.0.borrow_mut().settle = timer;
@@ -207,7 +214,13 @@ impl Engine {
     fn take(&self, reply: Reply) {
         let (asked, tell) = {
             let mut inner = self.0.borrow_mut();
-            (inner.asked.take(), inner.tell.clone())
+            // Until the advice has come too, the question stays open.
+            let asked = if reply.more {
+                inner.asked.clone()
+            } else {
+                inner.asked.take()
+            };
+            (asked, inner.tell.clone())
         };
         match (asked, reply.assessment, reply.error) {
             (Some((seq, question)), Some(assessment), _) if seq == reply.seq => {

@@ -1,7 +1,7 @@
 //! The engine in its worker, so that no calculation ever blocks a screen.
 //!
-//! The page sends JSON `{seq, unit, visit, instruments}` and gets `{seq, assessment}` or `{seq, error}` back. A worker that
-//! is ready says so with `{seq: 0}`.
+//! The page sends JSON `{seq, unit, visit, instruments}` and gets `{seq, assessment}` or `{seq, error}` back: the assessment twice,
+//! first at once with `more` set, then with the advice on what to do next. A worker that is ready says so with `{seq: 0}`.
 
 pub mod client;
 pub mod worker;
@@ -20,6 +20,9 @@ struct Reply {
     /// Why there is none.
     #[serde(default)]
     error: Option<String>,
+    /// The same assessment follows once more, with the advice.
+    #[serde(default)]
+    more: bool,
 }
 
 impl Reply {
@@ -28,6 +31,7 @@ impl Reply {
         seq: 0,
         assessment: None,
         error: None,
+        more: false,
     };
 
     fn is_ready(&self) -> bool {

@@ -27,7 +27,7 @@ pub fn install() {
     let answering = scope.clone();
     let on_message = Closure::wrap(Box::new(move |event: MessageEvent| {
         let text = event.data().as_string().unwrap_or_default();
-        post(&answering, &answer(&text));
+        answer(&answering, &text);
     }) as Box<dyn FnMut(MessageEvent)>);
     // As a listener, because the start-up script hands over messages that came early as events.
     if let Err(error) =
@@ -48,21 +48,38 @@ fn post(scope: &DedicatedWorkerGlobalScope, reply: &Reply) {
     }
 }
 
-fn answer(text: &str) -> Reply {
-    match serde_json::from_str::<Request>(text) {
-        Ok(request) => Reply {
-            seq: request.seq,
-            assessment: Some(crate::ranking::assess(
-                &request.unit,
-                &request.visit,
-                &request.instruments,
-            )),
-            error: None,
-        },
-        Err(error) => Reply {
-            seq: 0,
-            assessment: None,
-            error: Some(error.to_string()),
-        },
+/// Answers a question: the assessment at once, then with the advice.
+fn answer(scope: &DedicatedWorkerGlobalScope, text: &str) {
+    let request = match serde_json::from_str::<Request>(text) {
+        Ok(request) => request,
+        Err(error) => {
+            let error = Some(error.to_string());
+            return post(
+                scope,
+                &Reply {
+                    error,
+                    ..Reply::READY
+                },
+            );
+        }
+    };
+    let Request {
+        seq,
+        unit,
+        visit,
+        instruments,
+    } = request;
+    let assessment = crate::ranking::assess(&unit, &visit, &instruments);
+    let mut reply = Reply {
+        seq,
+        assessment: Some(assessment),
+        error: None,
+        more: true,
+    };
+    post(scope, &reply);
+    if let Some(assessment) = &mut reply.assessment {
+        assessment.advice = Some(crate::next::advise(&unit, &visit, &instruments, assessment));
     }
+    reply.more = false;
+    post(scope, &reply);
 }
