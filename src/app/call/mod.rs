@@ -29,6 +29,7 @@ mod history;
 mod map;
 mod mark;
 mod new_gauge;
+mod next_panel;
 mod quick;
 mod quick_panel;
 mod reading_group;

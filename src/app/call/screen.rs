@@ -11,6 +11,7 @@ use super::entry;
 use super::entry_field::field_id;
 use super::group::groups;
 use super::map::LoopMap;
+use super::next_panel::NextPanel;
 use super::quick_panel::QuickPanel;
 use super::reading_group::ReadingGroup;
 use super::reading_row::row_id;
@@ -169,12 +170,19 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             <div class="call-main">
                 <StopWork visit={visit.clone()} assessment={props.assessment.clone()} />
                 <nav class="jump" aria-label="On this screen">
-                    { for [("seen", "Seen"), ("quick", "Usual"), ("readings", "Readings"), ("add", "Add")].map(|(id, words)| html! {
+                    { for [("seen", "Seen"), ("next", "Next"), ("quick", "Usual"), ("readings", "Readings"), ("add", "Add")].map(|(id, words)| html! {
                         <button key={id} type="button" class="jump-to" onclick={jump(id)}>{ words }</button>
                     }) }
                 </nav>
                 { before_all(visit) }
                 <SeenPanel visit={visit.clone()} class={props.unit.class} on_change={on_change.clone()} />
+                <NextPanel
+                    assessment={props.assessment.clone()}
+                    updating={props.updating}
+                    readings={visit.readings.clone()}
+                    prefs={props.prefs.clone()}
+                    on_change={on_change.clone()}
+                />
                 <QuickPanel readings={visit.readings.clone()} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
                 { for grouped.into_iter().zip(told).map(|(group, told)| {
