@@ -51,6 +51,15 @@ fn listen(hands: &Rc<Hands>) -> Vec<Option<Listener>> {
     listeners.push(Listener::at_document("visibilitychange", on(Hands::flush)));
     listeners.push(Listener::at_window("pagehide", on(Hands::flush)));
     listeners.push(Listener::at_window("blur", on(Hands::flush)));
+    let leaving = hands.clone();
+    listeners.push(Listener::at_window("beforeunload", move |event| {
+        leaving.flush();
+        if leaving.would_lose() {
+            event.prevent_default();
+            // Older browsers ask only when this is set; where it cannot be, the newer way has been used.
+            let _ = js_sys::Reflect::set(&event, &"returnValue".into(), &true.into());
+        }
+    }));
     for event in offline::EVENTS {
         let hands = hands.clone();
         listeners.push(Listener::at_window(event, move |event| {

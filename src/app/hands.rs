@@ -122,6 +122,13 @@ impl Hands {
         }
     }
 
+    /// True where closing the page now would lose something that was typed.
+    pub fn would_lose(&self) -> bool {
+        let state = self.state();
+        let is_unwritten = !state.contested.is_empty() || matches!(state.save, Save::Failed(_));
+        is_unwritten || state.memory_only && !state.units.is_empty()
+    }
+
     fn ask_engine(&self, state: &State) {
         match &state.route {
             Route::Call(id) => {

@@ -4,6 +4,7 @@ mod about;
 pub mod data;
 mod draft;
 mod import;
+mod instrument_form;
 mod instruments;
 pub mod measures;
 

@@ -72,7 +72,7 @@ fn source_options() -> Vec<Opt<Source>> {
                 Source::Manual => ("Manual", "manual"),
                 Source::Plate => ("Plate", "plate"),
                 Source::Measured => ("Measured", "measured"),
-                Source::Practice => ("A guess", "practice"),
+                Source::Practice => ("Guess", "practice"),
             };
             Opt::new(*source, words, code)
         })

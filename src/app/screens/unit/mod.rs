@@ -5,6 +5,8 @@ mod figures;
 mod manual;
 mod ports;
 mod ticks;
+mod window_draft;
+mod window_form;
 
 use std::rc::Rc;
 use yew::{AttrValue, Callback, Html, MouseEvent, Properties, component, html};
