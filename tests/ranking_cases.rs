@@ -120,3 +120,57 @@ fn a_healthy_machine_is_called_healthy_when_it_is() {
                 || w.standing == lowside::assessment::Standing::Edge)
     );
 }
+
+/// The call that the journey in the browser makes: a quick profile, six readings.
+#[test]
+fn a_quick_profile_is_enough_for_a_charge_side_fault() {
+    let unit = lowside::unit::Unit {
+        id: "q".into(),
+        class: lowside::unit::MachineClass::Roller,
+        ..Default::default()
+    };
+    let call = |low| {
+        visit(vec![
+            reading("c-low", Port::Charge, neutral(LowIdle), low),
+            reading("c-high", Port::Charge, neutral(HighIdle), 21.0),
+            reading("pump case", Port::PumpCase, neutral(HighIdle), 0.5),
+            reading("motor case", Port::MotorCase, neutral(HighIdle), 0.7),
+            reading("drain", Port::MotorDrain, neutral(HighIdle), 0.6),
+            reading(
+                "f",
+                Port::Charge,
+                condition(Doing::Free, Forward, Lever::Half, HighIdle),
+                20.5,
+            ),
+            reading(
+                "r",
+                Port::Charge,
+                condition(Doing::Free, Reverse, Lever::Half, HighIdle),
+                20.5,
+            ),
+        ])
+    };
+    let a = assess(&unit, &call(9.0), &[]);
+    print(&a);
+    let astray = [
+        FaultId::ChargePumpWorn,
+        FaultId::NeutralReliefStuckOpen,
+        FaultId::ConsumerLeak,
+    ];
+    assert!(
+        leader(&a).iter().all(|id| astray.contains(id)),
+        "{:?}",
+        leader(&a)
+    );
+    let share = |a: &Assessment| {
+        a.causes
+            .iter()
+            .filter(|c| c.ids.iter().any(|i| astray.contains(i)))
+            .map(|c| c.probability)
+            .sum::<f64>()
+    };
+    assert!(share(&a) > 0.6, "{}", share(&a));
+    let b = assess(&unit, &call(20.0), &[]);
+    print(&b);
+    assert!(share(&b) < 0.2, "{}", share(&b));
+}

@@ -7,6 +7,7 @@
 //! build, which it may change, break off or stop.
 
 mod browser;
+mod journeys_call;
 mod journeys_offline;
 mod journeys_start;
 mod rig;
