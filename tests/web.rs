@@ -1,17 +1,25 @@
 //! What can only be tried in a browser. Runs under `wasm-bindgen-test-runner`; elsewhere this file is empty.
 #![cfg(target_arch = "wasm32")]
 
+use std::cell::RefCell;
+use std::rc::Rc;
+
+use wasm_bindgen::JsValue;
+use wasm_bindgen::closure::Closure;
 use wasm_bindgen_test::{wasm_bindgen_test, wasm_bindgen_test_configure};
 
 wasm_bindgen_test_configure!(run_in_browser);
 
-/// Without the element that the page provides there is nothing to mount on; starting must not throw.
+/// Without the place that the page provides for it, the app says so on the failure screen instead of ending in silence.
 #[wasm_bindgen_test]
-fn start_without_a_root_leaves_the_page_alone() {
-    let document = web_sys::window()
-        .and_then(|window| window.document())
-        .expect("a page");
-    let before = document.body().expect("a body").inner_html();
+fn start_without_a_root_is_told_to_the_failure_screen() {
+    let told = Rc::new(RefCell::new(Vec::new()));
+    let failed = Closure::<dyn FnMut(String)>::new({
+        let told = told.clone();
+        move |message| told.borrow_mut().push(message)
+    });
+    let window = JsValue::from(js_sys::global());
+    js_sys::Reflect::set(&window, &"lowsideFailed".into(), failed.as_ref()).expect("settable");
     lowside::app::start();
-    assert_eq!(document.body().expect("a body").inner_html(), before);
+    assert_eq!(told.borrow().len(), 1, "{:?}", told.borrow());
 }
