@@ -262,11 +262,12 @@ fn jump(id: &'static str) -> Callback<MouseEvent> {
     Callback::from(move |_: MouseEvent| focus::to(id))
 }
 
-/// The reading to go to at a port: the first without an answer; none where all have one, so that another is added.
+/// The reading to go to at a port: the first without an answer, else the last; none where there is none yet.
 fn next_at(port: Port, readings: &[Reading]) -> Option<&Reading> {
-    readings
-        .iter()
-        .find(|reading| reading.port == port && entry::is_open(reading))
+    let mut here = readings.iter().filter(|reading| reading.port == port);
+    here.clone()
+        .find(|reading| entry::is_open(reading))
+        .or_else(|| here.next_back())
 }
 
 /// The condition of the last reading, to go on from.

@@ -46,7 +46,7 @@ pub fn evidence(cause: &Cause, on_reading: &Callback<String>, readings: &[Readin
         }
         html! {
             <div class="evidence">
-                <h4>{ title }</h4>
+                <h3>{ title }</h3>
                 <ul class="evidence-list">
                     { for items.into_iter().map(|item| piece(item, way, on_reading, readings)) }
                 </ul>
@@ -97,7 +97,7 @@ pub fn would_read(cause: &Cause, readings: &[Reading], prefs: &UnitPrefs) -> Htm
     }
     html! {
         <div class="would">
-            <h4>{ "Under it the gauges would read" }</h4>
+            <h3>{ "Under it the gauges would read" }</h3>
             <ul class="would-list">
                 { for rows.into_iter().map(|(would, reading)| html! {
                     <li class="would-row" key={would.reading.clone()}>
@@ -144,10 +144,10 @@ pub fn member(id: FaultId, cause: &Cause) -> Html {
     html! {
         <div class="member" key={format!("{id:?}")}>
             if cause.ids.len() > 1 {
-                <h4>
+                <h3>
                     { fault.title }
                     { share.map(|share| html! { <span class="soft">{ format!(" ({} by itself)", words::percent(*share)) }</span> }) }
-                </h4>
+                </h3>
             }
             if !fault.explains.is_empty() {
                 <p>{ fault.explains }</p>

@@ -68,15 +68,20 @@ pub fn state(port: Port, readings: &[Reading], assessment: Option<&Assessment>) 
     }
 }
 
-/// What a screen reader says of a port.
-fn spoken(port: Port, state: PortState) -> String {
+/// What a screen reader says of a port. It starts with the words that stand on the screen, so that they can be spoken to it.
+fn spoken(port: Port, shown: &str, state: PortState) -> String {
     let name = port.words();
     match (state.standing, state.count) {
-        (None, _) => format!("{name}: no reading. Add one."),
-        (Some(standing), 1) => format!("{name}: {}. Open its reading.", words::standing(standing)),
+        (None, _) => format!("{shown}: {name}, no reading. Add one."),
+        (Some(standing), 1) => {
+            format!(
+                "{shown} {}: {name}, one reading. Open it.",
+                words::standing(standing)
+            )
+        }
         (Some(standing), count) => {
             format!(
-                "{name}: {count} readings, gravest {}. Open them.",
+                "{shown} {}: {name}, {count} readings. Open them.",
                 words::standing(standing)
             )
         }
@@ -135,7 +140,7 @@ fn other(port: Port, state: PortState, on_port: &Callback<Port>) -> Html {
             <button
                 type="button"
                 class="chip"
-                aria-label={spoken(port, state)}
+                aria-label={spoken(port, words::port_short(port), state)}
                 data-testid={format!("map-{port:?}")}
                 onclick={Callback::from(move |_: MouseEvent| on_port.emit(port))}
             >
@@ -236,7 +241,7 @@ fn port(spot: &Spot, state: PortState, is_chosen: bool, on_port: &Callback<Port>
             transform={format!("translate({} {})", spot.x, spot.y)}
             role="button"
             tabindex="0"
-            aria-label={spoken(port, state)}
+            aria-label={spoken(port, &name, state)}
             data-testid={format!("map-{port:?}")}
             onclick={on_click}
             onkeydown={on_key}
@@ -249,6 +254,8 @@ fn port(spot: &Spot, state: PortState, is_chosen: bool, on_port: &Callback<Port>
             <circle r="15" class="port-ground" />
             { port_mark(state) }
             <text x={x.to_string()} y={y.to_string()} class={format!("port-name {anchor}")}>{ name }</text>
+            // Not drawn: parts the two for whoever reads the text of it.
+            { " " }
             { word }
         </g>
     }
