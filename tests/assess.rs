@@ -1,4 +1,5 @@
 //! The office command: exports in, one line of JSON for each visit out.
+#![cfg(not(target_arch = "wasm32"))]
 
 mod record_support;
 
