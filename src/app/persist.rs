@@ -205,7 +205,9 @@ impl Keeper {
 
     /// Puts records in the trash. Those that were never written are simply gone.
     pub fn trash(&mut self, keys: &[RecordKey]) -> Vec<Action> {
-        self.take_out(keys, |shelf, key| shelf.trash(key, &clock::now()))
+        // One moment for all: what was removed together is brought back together.
+        let now = clock::now();
+        self.take_out(keys, |shelf, key| shelf.trash(key, &now))
     }
 
     /// Takes records away for good.
@@ -243,17 +245,28 @@ impl Keeper {
         })
     }
 
-    /// Brings a removed record back.
+    /// Brings a removed record back; a unit with the calls that were removed with it.
     pub fn restore(&mut self, trashed: &Trashed) -> Vec<Action> {
-        let action = match self.shelf.restore(trashed) {
-            Ok(()) => self.theirs(&trashed.key),
-            Err(why) => trouble(format!(
-                "{}: not brought back. {}",
-                trashed.name,
-                capital(&why.to_string())
-            )),
-        };
-        vec![action, self.bins()]
+        let mut all = vec![trashed.clone()];
+        if matches!(trashed.key, RecordKey::Unit(_)) {
+            let others = self.shelf.trashed().unwrap_or_default().into_iter();
+            all.extend(others.filter(|other| {
+                other.when == trashed.when && matches!(other.key, RecordKey::Visit(_))
+            }));
+        }
+        let mut actions = Vec::new();
+        for one in all {
+            actions.push(match self.shelf.restore(&one) {
+                Ok(()) => self.theirs(&one.key),
+                Err(why) => trouble(format!(
+                    "{}: not brought back. {}",
+                    one.name,
+                    capital(&why.to_string())
+                )),
+            });
+        }
+        actions.push(self.bins());
+        actions
     }
 
     /// Empties the trash for good.

@@ -73,10 +73,10 @@ pub fn SettingsScreen(props: &SettingsProps) -> Html {
                         />
                     </Section>
                     <Data state={props.state.clone()} deed={props.deed.clone()} />
+                    <About ..props.clone() />
                 </div>
                 <div class="stack">
                     <Instruments ..props.clone() />
-                    <About ..props.clone() />
                 </div>
             </div>
         </main>

@@ -104,6 +104,7 @@ pub fn UnitCard(props: &UnitCardProps) -> Html {
                 <h2 id={format!("unit-{}", unit.id)}>{ &unit.name }</h2>
                 <p class="soft small">
                     { unit.class.words() }
+                    { " " }
                     if crate::demo::is_demo(&unit.id) { <span class="tag">{ "demo" }</span> }
                 </p>
             </div>
