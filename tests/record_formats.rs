@@ -349,3 +349,55 @@ fn a_rescue_file_is_taken_as_far_as_it_can_be_read() {
     lowside::record::ImportPlan::of(&export, &book).apply(&mut book, false);
     assert_eq!(book.units.len(), 2);
 }
+
+#[test]
+fn a_rescue_file_may_be_large_and_one_bad_record_does_not_hold_up_the_others() {
+    let body = |id: &str, note: usize| json!({ "id": id, "note": "n".repeat(note) });
+    let text = |id: &str, note| {
+        envelope(RecordKind::Unit, 1, &body(id, note))
+            .write()
+            .expect("written")
+    };
+    let mut stored = serde_json::Map::new();
+    for n in 0..150 {
+        let id = format!("u{n}");
+        stored.insert(
+            format!("lowside/v1/unit/{id}"),
+            Value::from(text(&id, 19_000)),
+        );
+    }
+    stored.insert(
+        "lowside/v1/unit/long".into(),
+        Value::from(text("long", 30_000)),
+    );
+    let far = json!({ "id": "far", "ticks": { "motors": 77 }, "figures":
+        { "loop_relief": { "value": { "value": 9e9, "unit": "bar" }, "typed": "9e9" } } });
+    stored.insert(
+        "lowside/v1/unit/far".into(),
+        Value::from(
+            envelope(RecordKind::Unit, 1, &far)
+                .write()
+                .expect("written"),
+        ),
+    );
+    let file = json!({ "app": "lowside", "kind": "rescue", "stored": stored });
+    let file = serde_json::to_string_pretty(&file).expect("written");
+    assert!(file.len() > lowside::record::limits::FILE_BYTES);
+    let export = Export::read(file.as_bytes()).expect("taken");
+    assert_eq!(export.units.len(), 151);
+    assert_eq!(export.remarks.len(), 1);
+    assert!(
+        export.remarks[0].contains("unit/long: record.note: 30000 characters"),
+        "{:?}",
+        export.remarks
+    );
+    let far = export
+        .units
+        .iter()
+        .find(|unit| unit.id == "far")
+        .expect("taken");
+    assert_eq!(
+        far.figures[&lowside::unit::FigureId::LoopRelief].typed,
+        "9e9"
+    );
+}

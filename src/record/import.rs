@@ -29,7 +29,7 @@ impl Export {
     pub fn read_with(bytes: &[u8], ladder: &Ladder) -> Result<Export, RecordError> {
         let value = json(bytes)?;
         let is_rescue = value.get("app").and_then(Value::as_str) == Some(APP)
-            && value.get("kind").and_then(Value::as_str) == Some("rescue");
+            && value.get("kind").and_then(Value::as_str) == Some(rescue::KIND);
         let mut export = if is_rescue {
             rescue::collect(&value, ladder)
         } else {
@@ -41,10 +41,15 @@ impl Export {
 }
 
 fn json(bytes: &[u8]) -> Result<Value, RecordError> {
-    if bytes.len() > limits::FILE_BYTES {
+    let limit = if rescue::begins(bytes) {
+        limits::RESCUE_BYTES
+    } else {
+        limits::FILE_BYTES
+    };
+    if bytes.len() > limit {
         return Err(RecordError::TooLarge {
             bytes: bytes.len(),
-            limit: limits::FILE_BYTES,
+            limit,
         });
     }
     let text = core::str::from_utf8(bytes).map_err(|error| RecordError::NotText {

@@ -6,6 +6,8 @@ use crate::readings::Port;
 
 /// Largest file that is read, in bytes. An export of more is written as several files.
 pub const FILE_BYTES: usize = 2_000_000;
+/// Largest rescue file that is read, in bytes: everything that a browser can hold for one site, with room for its quoting.
+pub const RESCUE_BYTES: usize = 24_000_000;
 /// Longest id, in characters.
 pub const ID_CHARACTERS: usize = 64;
 /// Longest text of one line (a name, what was typed in a figure's field), in characters.

@@ -3,9 +3,23 @@
 
 use super::error::RecordError;
 use super::migrate::{Ladder, RecordKind};
-use super::{Envelope, Export, SCHEMA, checksum, id};
+use super::{APP, Envelope, Export, SCHEMA, check, checksum, id, mend};
 use serde_json::Value;
 use std::collections::BTreeMap;
+
+/// Kind that a rescue file names.
+pub(super) const KIND: &str = "rescue";
+
+/// True where the file begins as a rescue file does: these may be larger than an export.
+pub(super) fn begins(bytes: &[u8]) -> bool {
+    let head: Vec<u8> = bytes
+        .iter()
+        .take(200)
+        .copied()
+        .filter(|byte| !byte.is_ascii_whitespace())
+        .collect();
+    head.starts_with(format!("{{\"app\":\"{APP}\",\"kind\":\"{KIND}\"").as_bytes())
+}
 
 /// Collects the records of a rescue file. What cannot be read is named in the remarks. Trash and backups stay behind.
 pub(super) fn collect(value: &Value, ladder: &Ladder) -> Export {
@@ -67,14 +81,18 @@ fn take(
     };
     match envelope.kind {
         RecordKind::Unit => {
-            let mut unit: crate::unit::Unit = envelope.record(ladder)?;
+            let unit: crate::unit::Unit = envelope.record(ladder)?;
+            let mut unit = mend::unit(&unit);
+            check::unit("record", &mut unit)?;
             if let Some(id) = fresh_id(&unit.id) {
                 unit.id = id;
                 export.units.push(unit);
             }
         }
         RecordKind::Visit => {
-            let mut visit: super::Visit = envelope.record(ladder)?;
+            let visit: super::Visit = envelope.record(ladder)?;
+            let mut visit = mend::visit(&visit);
+            check::visit("record", &mut visit)?;
             if let Some(id) = fresh_id(&visit.id) {
                 visit.id = id;
                 export.visits.push(visit);
