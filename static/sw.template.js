@@ -46,12 +46,21 @@ async function activate() {
   await self.clients.claim();
 }
 
-/** The key under which a request is kept: without its query (worker.js gets one), and any page address is the app. */
-function keyOf(request) {
-  const url = new URL(request.url);
-  const file = (url.origin + url.pathname).slice(self.registration.scope.length);
-  if (FILES.has(file)) return address(file);
-  return request.mode === "navigate" ? address(PAGE) : null;
+/** The file that a request asks for: without its query (worker.js gets one); the folder itself is the page. */
+function fileOf(request) {
+  const { origin, pathname } = new URL(request.url);
+  const file = (origin + pathname).slice(self.registration.scope.length);
+  return file === "" ? PAGE : file;
+}
+
+async function fromCopy(file, request) {
+  const kept = await caches.open(CACHE).then((cache) => cache.match(address(file))).catch(() => null);
+  return kept ?? fetch(request);
+}
+
+/** An address below the app that is none of its files: the server knows best; without it, the app's own page. */
+function elsewhere(request) {
+  return fetch(request).catch(() => Response.redirect(self.registration.scope));
 }
 
 self.addEventListener("install", (event) => event.waitUntil(install()));
@@ -62,12 +71,7 @@ self.addEventListener("message", (event) => {
 self.addEventListener("fetch", (event) => {
   const { request } = event;
   if (request.method !== "GET" || !request.url.startsWith(self.registration.scope)) return;
-  const key = keyOf(request);
-  if (!key) return;
-  event.respondWith(
-    caches
-      .open(CACHE)
-      .then((cache) => cache.match(key))
-      .then((kept) => kept ?? fetch(request), () => fetch(request)),
-  );
+  const file = fileOf(request);
+  if (FILES.has(file)) event.respondWith(fromCopy(file, request));
+  else if (request.mode === "navigate") event.respondWith(elsewhere(request));
 });

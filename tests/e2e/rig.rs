@@ -216,10 +216,11 @@ impl Rig {
         self.click_on(&self.by_id(testid).await).await;
     }
 
-    /// Clicks the button or link with this text.
+    /// Clicks the button, link or label with this text.
     pub async fn click_text(&self, text: &str) {
-        let path =
-            format!("//*[self::button or self::a or self::summary][normalize-space(.)=\"{text}\"]");
+        let path = format!(
+            "//*[self::button or self::a or self::summary or self::label][normalize-space(.)=\"{text}\"]"
+        );
         self.click_on(&self.wait_for_element(By::XPath(path)).await)
             .await;
     }

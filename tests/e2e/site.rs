@@ -108,7 +108,7 @@ impl Site {
         names.filter(|name| name.ends_with(end)).collect()
     }
 
-    /// Puts the next version on the server: other text in the page's title, everything else as it was.
+    /// Puts the next version on the server: another description of the page, everything else as it was.
     pub fn publish_new_version(&self) {
         let page = self.dir.join("index.html");
         let text = fs::read_to_string(&page).expect("a page");
@@ -117,8 +117,8 @@ impl Site {
             .expect("the page carries its version");
         let (_, after) = rest.split_once('"').expect("closed");
         let next = format!("{before}data-version=\"@LOWSIDE_VERSION@\"{after}").replace(
-            "<title>Lowside</title>",
-            "<title>Lowside, next version</title>",
+            "name=\"description\" content=\"",
+            "name=\"description\" content=\"Next version. ",
         );
         fs::write(&page, next).expect("writable");
         self.list_files();
