@@ -211,7 +211,7 @@ fn no_percentage_without_evidence_or_trust() {
     use words::Verdict::{SoFar, TooLittle, Uncertain};
     let sure = Trust::default();
     let shaky = Trust {
-        change: 0.2,
+        change: 0.4,
         ..Trust::default()
     };
     let doubted = Trust {
@@ -229,6 +229,23 @@ fn no_percentage_without_evidence_or_trust() {
         Uncertain
     );
     assert_eq!(judged(0.8, true, sure, worn), SoFar);
+}
+
+#[test]
+fn a_chance_is_told_no_finer_than_it_is_known() {
+    let told = |probability, change| {
+        let trust = Trust {
+            change,
+            ..Trust::default()
+        };
+        words::chance(probability, &trust).replace('\u{202f}', " ")
+    };
+    assert_eq!(told(0.57, 0.01), "57 %");
+    assert_eq!(told(0.57, 0.08), "55 %");
+    assert_eq!(told(0.02, 0.08), "<5 %");
+    assert_eq!(told(0.99, 0.08), ">95 %");
+    assert_eq!(told(0.003, 0.0), "<1 %");
+    assert_eq!(told(0.998, 0.0), ">99 %");
 }
 
 #[test]

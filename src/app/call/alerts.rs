@@ -42,14 +42,14 @@ pub fn StopWork(props: &StopWorkProps) -> Html {
             </Caution>
         };
     }
-    let causes = props
+    let told = props
         .assessment
         .as_deref()
         .filter(|a| words::verdict(a) != Verdict::TooLittle);
-    let graves = causes
-        .map(|assessment| assessment.causes.as_slice())
-        .unwrap_or_default();
-    let grave = graves.iter().find(|cause| {
+    let Some(assessment) = told else {
+        return Html::default();
+    };
+    let grave = assessment.causes.iter().find(|cause| {
         cause.probability >= STOP_FROM
             && cause
                 .ids
@@ -61,7 +61,7 @@ pub fn StopWork(props: &StopWorkProps) -> Html {
         Some(cause) => html! {
             <Caution grade={Grade::Danger} title="stop work until it is ruled out" role="alert" testid="stop-work">
                 <p>{ format!("{} ({}). Engine off, chock both ways; do not drive or test it before this is ruled out.",
-                    cause.title, words::percent(cause.probability)) }</p>
+                    cause.title, words::chance(cause.probability, &assessment.trust)) }</p>
             </Caution>
         },
         None => Html::default(),

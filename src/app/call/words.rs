@@ -1,6 +1,6 @@
 //! Words of the call screen: states, sources, conditions and probabilities in the trade's own terms.
 
-use crate::assessment::{Assessment, Standing, WindowSource};
+use crate::assessment::{Assessment, Standing, Trust, WindowSource};
 use crate::faults::FaultId;
 use crate::quantity::{self, Decimals, Kind, Measure, Unit, UnitPrefs};
 use crate::readings::{Condition, Direction, EngineSpeed, Lever, Port};
@@ -78,25 +78,51 @@ impl Verdict {
     }
 }
 
-/// Judges an assessment. The limits are a choice of presentation, not of physics: above a tenth of change in the last
-/// refinement a percentage would be made up; under a half, or with a fair chance of a wrong reading, the lead is uncertain.
-pub fn verdict(assessment: &Assessment) -> Verdict {
-    let informed = assessment
+/// Change of a probability in the last refinement above which no percentage is shown at all.
+const UNSETTLED: f64 = 0.3;
+/// The same, above which the order is called uncertain.
+const SHAKY: f64 = 0.1;
+/// The same, above which percentages are told in steps of five.
+const COARSE: f64 = 0.02;
+
+/// True where anything taken so far speaks for or against any cause.
+pub fn is_informed(assessment: &Assessment) -> bool {
+    assessment
         .causes
         .iter()
-        .any(|cause| !cause.evidence.is_empty());
+        .any(|cause| !cause.evidence.is_empty())
+}
+
+/// Judges an assessment. The limits are a choice of presentation, not of physics: a percentage that moved by a third in the
+/// last refinement would be made up; a lead under a half, or with a fair chance of a wrong reading, is uncertain.
+pub fn verdict(assessment: &Assessment) -> Verdict {
     let Some(lead) = assessment.causes.first() else {
         return Verdict::TooLittle;
     };
     let trust = &assessment.trust;
-    if !informed || trust.change > 0.1 || lead.probability < 0.05 {
+    if !is_informed(assessment) || trust.change > UNSETTLED || lead.probability < 0.05 {
         return Verdict::TooLittle;
     }
     let not_listed = lead.ids.contains(&FaultId::NotListed);
-    if lead.probability < 0.5 || trust.change > 0.03 || trust.wrong_reading > 0.3 || not_listed {
+    if lead.probability < 0.5 || trust.change > SHAKY || trust.wrong_reading > 0.3 || not_listed {
         Verdict::Uncertain
     } else {
         Verdict::SoFar
+    }
+}
+
+/// The chance of a cause as a per cent, told no finer than the last refinement left it.
+pub fn chance(probability: f64, trust: &Trust) -> String {
+    if trust.change <= COARSE {
+        return percent(probability);
+    }
+    let steps = (probability * 20.0).round() * 5.0;
+    if steps < 5.0 {
+        format!("<5{NARROW}%")
+    } else if steps > 95.0 {
+        format!(">95{NARROW}%")
+    } else {
+        format!("{steps:.0}{NARROW}%")
     }
 }
 

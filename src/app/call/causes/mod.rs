@@ -100,15 +100,20 @@ fn lead(assessment: Option<&Assessment>, verdict: Option<Verdict>) -> Vec<Html> 
         ];
     };
     if verdict == Some(Verdict::TooLittle) {
+        let ask = if words::is_informed(assessment) {
+            "Not settled yet: another reading will tell."
+        } else {
+            "Tick what was seen, or take a reading."
+        };
         return vec![html! {
-            <li class="causes-line"><span class="causes-name is-ask">{ "Tick what was seen, or take a reading." }</span></li>
+            <li class="causes-line"><span class="causes-name is-ask">{ ask }</span></li>
         }];
     }
     let line = |cause: &Cause| {
         html! {
             <li class="causes-line" key={cause.title.clone()}>
                 <span class="causes-name">{ cause.title.clone() }</span>
-                <span class="causes-share">{ words::percent(cause.probability) }</span>
+                <span class="causes-share">{ words::chance(cause.probability, &assessment.trust) }</span>
             </li>
         }
     };
@@ -155,10 +160,7 @@ fn List(props: &ListProps) -> Html {
             </Caution>
         }
         if verdict == Verdict::TooLittle {
-            <p class="causes-start">
-                { "Too little to tell. In the order in which they are met on such machines (common practice), before any \
-                   reading counts:" }
-            </p>
+            <p class="causes-start">{ start(assessment) }</p>
         }
         <ol class="cause-list">
             { for assessment.causes.iter().take(shown).enumerate().map(|(place, cause)| html! {
@@ -166,6 +168,7 @@ fn List(props: &ListProps) -> Html {
                     key={cause.title.clone()}
                     {place}
                     cause={cause.clone()}
+                    trust={assessment.trust.clone()}
                     {verdict}
                     readings={props.readings.clone()}
                     prefs={props.prefs.clone()}
@@ -190,6 +193,15 @@ fn List(props: &ListProps) -> Html {
     </> }
 }
 
+/// What the order is worth while it bears no percentages.
+fn start(assessment: &Assessment) -> &'static str {
+    if words::is_informed(assessment) {
+        "Too little to tell: the percentages have not settled. This is the best order so far."
+    } else {
+        "Too little to tell. In the order in which they are met on such machines (common practice), before any reading counts:"
+    }
+}
+
 /// One sentence as it is, several as a list.
 fn lines(texts: &[String]) -> Html {
     match texts {
@@ -205,13 +217,18 @@ fn not_listed(assessment: &Assessment, verdict: Verdict) -> Html {
     let leads = assessment
         .causes
         .first()
-        .is_some_and(|cause| cause.ids.contains(&FaultId::NotListed));
-    if !leads || verdict == Verdict::TooLittle {
+        .filter(|cause| cause.ids.contains(&FaultId::NotListed));
+    let Some(lead) = leads.filter(|_| verdict != Verdict::TooLittle) else {
         return Html::default();
-    }
+    };
+    let title = if lead.probability >= 0.5 {
+        "No listed cause explains these readings"
+    } else {
+        "No listed cause stands out"
+    };
     let wrong = assessment.trust.wrong_reading;
     html! {
-        <Caution grade={Grade::Caution} title="No listed cause explains these readings" class="small-caution" testid="not-listed">
+        <Caution grade={Grade::Caution} {title} class="small-caution" testid="not-listed">
             <p>{ "Check each reading again first. The gauge: zero with the engine off and the line bled, or a second gauge beside \
                   it. The port: by the drawing. The condition: direction, lever, engine speed." }</p>
             if wrong >= 0.05 {

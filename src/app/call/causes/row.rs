@@ -2,7 +2,7 @@
 
 use super::detail;
 use crate::app::call::words::{self, Verdict};
-use crate::assessment::Cause;
+use crate::assessment::{Cause, Trust};
 use crate::faults::{self, FaultId};
 use crate::quantity::UnitPrefs;
 use crate::readings::Reading;
@@ -15,6 +15,8 @@ pub struct CauseRowProps {
     pub place: usize,
     /// The cause, or the set.
     pub cause: Cause,
+    /// How far the integral behind it can be trusted.
+    pub trust: Trust,
     /// How far the order can be relied on.
     pub verdict: Verdict,
     /// Readings of the visit.
@@ -41,7 +43,7 @@ pub fn CauseRow(props: &CauseRowProps) -> Html {
                 <summary class="cause-head">
                     <span class="cause-title">{ cause.title.clone() }</span>
                     if told {
-                        <span class="cause-share figure">{ words::percent(cause.probability) }</span>
+                        <span class="cause-share figure">{ words::chance(cause.probability, &props.trust) }</span>
                         { bar(cause.probability) }
                     }
                     if stop {
