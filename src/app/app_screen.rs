@@ -45,7 +45,10 @@ fn listen(hands: &Rc<Hands>) -> Vec<Option<Listener>> {
     };
     listeners.push(Listener::at_window(
         "hashchange",
-        on(|hands| hands.put(Action::Go(address()))),
+        on(|hands| {
+            hands.put(Action::Offline(offline::state()));
+            hands.put(Action::Go(address()));
+        }),
     ));
     // A phone may never tell more than these before it drops the page.
     listeners.push(Listener::at_document("visibilitychange", on(Hands::flush)));

@@ -1,6 +1,8 @@
 //! Whether the app works without a network here, and whether a newer version waits. The start-up script knows; it tells
 //! by attributes of the root element and by events.
 
+use js_sys::Reflect;
+use wasm_bindgen::JsValue;
 use web_sys::{CustomEvent, Event};
 
 /// State of the offline copy.
@@ -46,8 +48,22 @@ pub fn state() -> Offline {
         Some("ready") => Offline::Ready,
         Some("failed") => Offline::Failed,
         Some("unsupported") => Offline::Unsupported,
+        // At a later start the page comes out of the copy before the start-up script has looked.
+        _ if is_from_copy() => Offline::Ready,
         _ => Offline::Making,
     }
+}
+
+/// True where this very page was served from the offline copy.
+fn is_from_copy() -> bool {
+    let get = |of: &JsValue, name: &str| {
+        Reflect::get(of, &JsValue::from_str(name)).unwrap_or(JsValue::UNDEFINED)
+    };
+    let is_there = |value: &JsValue| !value.is_undefined() && !value.is_null();
+    web_sys::window().is_some_and(|window| {
+        let container = get(window.navigator().as_ref(), "serviceWorker");
+        is_there(&container) && is_there(&get(&container, "controller"))
+    })
 }
 
 /// True where a newer version waits to take over.
