@@ -3,6 +3,7 @@
 
 use std::cell::RefCell;
 use std::rc::Rc;
+use std::time::Duration;
 
 use lowside::app::call::CallScreen;
 use lowside::assessment::{Assessment, Cause, Evidence};
@@ -98,8 +99,11 @@ impl Screen {
         screen
     }
 
+    /// Lets the app draw what is due: its scheduler works in tasks of the browser, so some of them are let pass.
     async fn drawn(&self) {
-        yew::scheduler::flush().await;
+        for _ in 0..10 {
+            yew::platform::time::sleep(Duration::ZERO).await;
+        }
     }
 
     fn there(&self, testid: &str) -> bool {
