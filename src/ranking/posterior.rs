@@ -15,8 +15,10 @@ const FINENESS: usize = 14;
 const HEAVY: f64 = 5e-4;
 /// Most nodes that are linearised again.
 const MOST_AGAIN: usize = 400;
-/// Rounds of linearising again.
+/// Most rounds of linearising again.
 const ROUNDS: usize = 2;
+/// Largest change of any probability in a round that counts as settled.
+const SETTLED: f64 = 0.01;
 /// Largest step (standard deviations) to which a node is linearised again.
 const FARTHEST: f64 = 3.5;
 
@@ -109,16 +111,21 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
             }
         }
     }
-    let before = shares(&held, &priors);
+    let mut before = shares(&held, &priors);
+    let mut change = f64::INFINITY;
     for _ in 0..ROUNDS {
         again(bench, data, &catalogue, &priors, &mut held, swap);
+        let after = shares(&held, &priors);
+        change = before
+            .iter()
+            .zip(&after)
+            .map(|(a, b)| (a - b).abs())
+            .fold(0.0, f64::max);
+        before = after;
+        if change < SETTLED {
+            break;
+        }
     }
-    let after = shares(&held, &priors);
-    let change = before
-        .iter()
-        .zip(&after)
-        .map(|(a, b)| (a - b).abs())
-        .fold(0.0, f64::max);
     let mut out: Vec<Weighed> = catalogue
         .iter()
         .enumerate()
