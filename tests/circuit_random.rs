@@ -1,11 +1,11 @@
 //! Random machines, conditions and severities: the solver ends with a state that balances, or with a stated reason.
 //! Prints iteration counts and the share of each outcome (`cargo test --test circuit_random -- --nocapture`).
 
-use lowside::math;
 use lowside::circuit::{
     ControlBuild, DumpBuild, FilterBuild, Layout, Network, NoState, Param, Params, Route, Scale,
     healthy,
 };
+use lowside::math;
 
 /// A small seeded generator (splitmix64), so that every run sees the same machines.
 struct Seeded(u64);

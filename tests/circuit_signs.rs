@@ -6,7 +6,7 @@
 use lowside::circuit::{Layout, Network, Node, Param, Params, Solution, healthy};
 use lowside::readings::Port;
 
-const PSI: f64 = 0.068_947_572_931_683_61;
+const PSI: f64 = 0.068_947_572_931_683_6;
 
 struct Run {
     net: Network,

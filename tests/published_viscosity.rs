@@ -1,4 +1,5 @@
 //! Viscosity, viscosity index and grades against standards and tables.
+#![allow(clippy::disallowed_methods)] // the platform's functions as an outside check
 #![cfg(not(target_arch = "wasm32"))]
 
 mod published_common;

@@ -282,5 +282,9 @@ fn the_integral_agrees_with_a_large_ensemble() {
         "mean distance beyond the ensemble's own error: {mean}"
     );
     // Where a total and a nearly total failure look alike, ensemble and integral may each lean to one of them.
-    assert!(same_leader + 1 >= hidden.len(), "{same_leader} of {}", hidden.len());
+    assert!(
+        same_leader + 1 >= hidden.len(),
+        "{same_leader} of {}",
+        hidden.len()
+    );
 }

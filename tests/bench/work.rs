@@ -1,8 +1,8 @@
 //! The work that both speed benchmarks do, native and wasm: random solves, solves with derivatives, one full assessment.
 
 use crate::support::*;
-use lowside::math;
 use lowside::circuit::{Layout, Network, Param, healthy};
+use lowside::math;
 use lowside::ranking::assess;
 use lowside::readings::{Direction::*, Doing, EngineSpeed::*, Lever, Port};
 use lowside::record::Visit;

@@ -5,12 +5,18 @@
 
 use lowside::circuit::{Network, Param, Params};
 use lowside::faults::{self, Bend, Fault, FaultId};
-use lowside::machine::{Latents, apply, base, builds, condition_latents, layout_for, scattered, unit_latents};
+use lowside::machine::{
+    Latents, apply, base, builds, condition_latents, layout_for, scattered, unit_latents,
+};
 use lowside::math;
 use lowside::quantity::{Kind, Measure};
-use lowside::readings::{Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading, Seen};
+use lowside::readings::{
+    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading, Seen,
+};
 use lowside::record::Visit;
-use lowside::unit::{Control, FIGURES, Figure, FigureId, Filter, MachineClass, Source, Tick, Ticks, Unit};
+use lowside::unit::{
+    Control, FIGURES, Figure, FigureId, Filter, MachineClass, Source, Tick, Ticks, Unit,
+};
 use lowside::windows::Normals;
 
 /// Which readings are taken.
@@ -28,7 +34,12 @@ pub enum ReadingSet {
 
 impl ReadingSet {
     /// Every set, smallest first.
-    pub const EACH: [ReadingSet; 4] = [ReadingSet::Charge, ReadingSet::Held, ReadingSet::Speeds, ReadingSet::All];
+    pub const EACH: [ReadingSet; 4] = [
+        ReadingSet::Charge,
+        ReadingSet::Held,
+        ReadingSet::Speeds,
+        ReadingSet::All,
+    ];
 }
 
 /// How often something is wrong with the notes.
@@ -57,26 +68,63 @@ fn one_of<T: Copy>(draw: &mut Normals, items: &[T]) -> T {
 /// A declared unit: five figures known more or less, some ticks open.
 fn unit(draw: &mut Normals) -> Unit {
     let class = one_of(draw, &MachineClass::ALL);
-    let mut u = Unit { id: "u".into(), class, ..Unit::default() };
+    let mut u = Unit {
+        id: "u".into(),
+        class,
+        ..Unit::default()
+    };
     let yes = |draw: &mut Normals, p: f64| if draw.unit() < p { Tick::Yes } else { Tick::No };
     let practice = class.practice();
     u.ticks = Ticks {
         flushing: yes(draw, practice.flushing),
         limiter: yes(draw, practice.limiter),
-        control: one_of(draw, &[Control::ManualFeedback, Control::ElectricProportional, Control::HydraulicRemote]),
-        filter: one_of(draw, &[Filter::Suction, Filter::PressureGaugeAfter, Filter::PressureGaugeBefore]),
+        control: one_of(
+            draw,
+            &[
+                Control::ManualFeedback,
+                Control::ElectricProportional,
+                Control::HydraulicRemote,
+            ],
+        ),
+        filter: one_of(
+            draw,
+            &[
+                Filter::Suction,
+                Filter::PressureGaugeAfter,
+                Filter::PressureGaugeBefore,
+            ],
+        ),
         brake_from_charge: yes(draw, practice.brake),
         two_speed: yes(draw, practice.two_speed),
         bypass: Tick::Yes,
         slipping_drive: Tick::No,
         ..Ticks::default()
     };
-    for id in [FigureId::PumpDisplacement, FigureId::ChargeDisplacement, FigureId::HighIdle, FigureId::LowIdle, FigureId::ChargeSetting, FigureId::LoopRelief, FigureId::MotorDisplacement, FigureId::OilGrade, FigureId::GearRatio] {
+    for id in [
+        FigureId::PumpDisplacement,
+        FigureId::ChargeDisplacement,
+        FigureId::HighIdle,
+        FigureId::LowIdle,
+        FigureId::ChargeSetting,
+        FigureId::LoopRelief,
+        FigureId::MotorDisplacement,
+        FigureId::OilGrade,
+        FigureId::GearRatio,
+    ] {
         let s = class.spread(id);
-        let Some(ask) = FIGURES.iter().find(|f| f.id == id) else { continue };
+        let Some(ask) = FIGURES.iter().find(|f| f.id == id) else {
+            continue;
+        };
         let value = (s.value * math::exp(0.25 * draw.normal())).clamp(ask.low, ask.high);
         let value = Measure::from_base(value, ask.kind).ok();
-        u.figures.insert(id, Figure { value, typed: String::new(), source: Source::Manual });
+        u.figures.insert(
+            id,
+            Figure {
+                value,
+                typed: String::new(),
+                source: Source::Manual,
+            },
+        );
     }
     u
 }
@@ -87,12 +135,18 @@ fn asked(set: ReadingSet) -> Vec<(Port, Condition)> {
         direction,
         lever,
         engine,
-        oil: Measure::from_base(62.0, Kind::Temperature).ok().map(|value| OilTemperature { value, place: Place::DrainHose }),
+        oil: Measure::from_base(62.0, Kind::Temperature)
+            .ok()
+            .map(|value| OilTemperature {
+                value,
+                place: Place::DrainHose,
+            }),
         flushing_blocked: false,
         consumers_capped: false,
     };
     use Direction::{Forward, Reverse};
-    let rpm = Measure::from_base(1500.0, Kind::RotationalSpeed).map_or(EngineSpeed::LowIdle, EngineSpeed::Measured);
+    let rpm = Measure::from_base(1500.0, Kind::RotationalSpeed)
+        .map_or(EngineSpeed::LowIdle, EngineSpeed::Measured);
     let neutral = |e| c(Doing::Neutral, Forward, Lever::Full, e);
     let free = |d, l| c(Doing::Free, d, l, EngineSpeed::HighIdle);
     let held = |d, s| c(Doing::Held, d, Lever::Share(s), rpm);
@@ -117,8 +171,19 @@ fn asked(set: ReadingSet) -> Vec<(Port, Condition)> {
     out.extend([
         (Port::Wheel, free(Forward, Lever::Full)),
         (Port::Wheel, free(Reverse, Lever::Full)),
-        (Port::Wheel, c(Doing::Loaded, Forward, Lever::Full, EngineSpeed::HighIdle)),
-        (Port::Wheel, c(Doing::NeutralFree, Forward, Lever::Full, EngineSpeed::HighIdle)),
+        (
+            Port::Wheel,
+            c(Doing::Loaded, Forward, Lever::Full, EngineSpeed::HighIdle),
+        ),
+        (
+            Port::Wheel,
+            c(
+                Doing::NeutralFree,
+                Forward,
+                Lever::Full,
+                EngineSpeed::HighIdle,
+            ),
+        ),
         (Port::ResponseOut, free(Forward, Lever::Full)),
     ]);
     if set == ReadingSet::Speeds {
@@ -141,7 +206,8 @@ fn world_bend(theta: &mut Params, fault: &Fault, draw: &mut Normals) {
     if fault.effects.is_empty() {
         return;
     }
-    let effect = fault.effects[((draw.unit() * fault.effects.len() as f64) as usize).min(fault.effects.len() - 1)];
+    let effect = fault.effects
+        [((draw.unit() * fault.effects.len() as f64) as usize).min(fault.effects.len() - 1)];
     let u = draw.unit();
     let s = match fault.severity {
         faults::SeverityShape::Even => u,
@@ -182,14 +248,25 @@ fn span(port: Port, value: f64) -> Option<f64> {
             Port::LoopA | Port::LoopB => 600.0,
             Port::PumpCase | Port::MotorCase => 10.0,
             Port::InletPull => 1.0,
-            _ => if value > 38.0 { 60.0 } else { 40.0 },
+            _ => {
+                if value > 38.0 {
+                    60.0
+                } else {
+                    40.0
+                }
+            }
         }),
         _ => None,
     }
 }
 
 /// Draws a case with one hidden fault that the unit can have. None where the machine has no steady state in a reading.
-pub fn case(draw: &mut Normals, fault: &Fault, set: ReadingSet, sloppy: Sloppiness) -> Option<Case> {
+pub fn case(
+    draw: &mut Normals,
+    fault: &Fault,
+    set: ReadingSet,
+    sloppy: Sloppiness,
+) -> Option<Case> {
     let unit = unit(draw);
     if (fault.possible)(&unit) <= 0.0 {
         return None;
@@ -208,10 +285,17 @@ pub fn case(draw: &mut Normals, fault: &Fault, set: ReadingSet, sloppy: Sloppine
     let u: Vec<f64> = latents.0.iter().map(|_| heavy(draw)).collect();
     // What the model does not know.
     let turbulent = (0.01 + 0.03 * draw.unit(), 0.02 * draw.unit());
-    let tilt: Vec<(Param, f64)> = [Param::LoopOverride, Param::ReliefGain, Param::OperatingGain, Param::LineATurbulent, Param::LineBTurbulent, Param::Friction]
-        .iter()
-        .map(|p| (*p, math::exp(0.35 * draw.normal())))
-        .collect();
+    let tilt: Vec<(Param, f64)> = [
+        Param::LoopOverride,
+        Param::ReliefGain,
+        Param::OperatingGain,
+        Param::LineATurbulent,
+        Param::LineBTurbulent,
+        Param::Friction,
+    ]
+    .iter()
+    .map(|p| (*p, math::exp(0.35 * draw.normal())))
+    .collect();
     let fault_draw = draw.clone();
     let mut readings = Vec::new();
     let mut biases: Vec<(Port, f64)> = Vec::new();
@@ -228,7 +312,8 @@ pub fn case(draw: &mut Normals, fault: &Fault, set: ReadingSet, sloppy: Sloppine
         theta[Param::CheckLeakA as usize] += turbulent.1 * size;
         theta[Param::CheckLeakB as usize] += turbulent.1 * size;
         world_bend(&mut theta, fault, &mut fault_draw.clone());
-        theta[Param::ServoFull as usize] = theta[Param::ServoFull as usize].max(1.2 * theta[Param::ServoStart as usize]);
+        theta[Param::ServoFull as usize] =
+            theta[Param::ServoFull as usize].max(1.2 * theta[Param::ServoStart as usize]);
         for p in [Param::Load, Param::SignalForward, Param::SignalReverse] {
             theta[p as usize] = theta[p as usize].max(0.0);
         }
@@ -251,8 +336,22 @@ pub fn case(draw: &mut Normals, fault: &Fault, set: ReadingSet, sloppy: Sloppine
             Some((_, b)) => *b,
             None => {
                 let b = match span(*port, value) {
-                    Some(s) => 0.016 * s * (2.0 * draw.unit() - 1.0) + if draw.unit() < sloppy.wrong { 0.3 * s * draw.normal() } else { 0.0 },
-                    None => 0.008 * value * draw.normal() + if draw.unit() < sloppy.wrong { 0.5 * value * draw.normal() } else { 0.0 },
+                    Some(s) => {
+                        0.016 * s * (2.0 * draw.unit() - 1.0)
+                            + if draw.unit() < sloppy.wrong {
+                                0.3 * s * draw.normal()
+                            } else {
+                                0.0
+                            }
+                    }
+                    None => {
+                        0.008 * value * draw.normal()
+                            + if draw.unit() < sloppy.wrong {
+                                0.5 * value * draw.normal()
+                            } else {
+                                0.0
+                            }
+                    }
                 };
                 biases.push((*port, b));
                 b
@@ -274,10 +373,21 @@ pub fn case(draw: &mut Normals, fault: &Fault, set: ReadingSet, sloppy: Sloppine
             port: *port,
             condition: *condition,
             rigging: String::new(),
-            seen: Measure::from_base(v, port.kind()).ok().map(|value| Seen::Value { value }),
+            seen: Measure::from_base(v, port.kind())
+                .ok()
+                .map(|value| Seen::Value { value }),
             typed: String::new(),
             note: String::new(),
         });
     }
-    Some(Case { unit, visit: Visit { id: "v".into(), unit: "u".into(), readings, ..Visit::default() }, fault: fault.id })
+    Some(Case {
+        unit,
+        visit: Visit {
+            id: "v".into(),
+            unit: "u".into(),
+            readings,
+            ..Visit::default()
+        },
+        fault: fault.id,
+    })
 }
