@@ -177,16 +177,12 @@ impl Rig {
 
     /// The element with this `data-testid`, once it is there and visible.
     pub async fn by_id(&self, testid: &str) -> WebElement {
-        self.wait_for_element(By::Css(format!("[data-testid=\"{testid}\"]")))
-            .await
+        self.wait_for_element(by_testid(testid)).await
     }
 
     /// Whether an element with this `data-testid` is there now.
     pub async fn has(&self, testid: &str) -> bool {
-        let found = self
-            .driver
-            .find_all(By::Css(format!("[data-testid=\"{testid}\"]")))
-            .await;
+        let found = self.driver.find_all(by_testid(testid)).await;
         !found.expect("the page answers").is_empty()
     }
 
@@ -213,7 +209,7 @@ impl Rig {
     }
 
     pub async fn click(&self, testid: &str) {
-        self.click_on(&self.by_id(testid).await).await;
+        self.click_on(by_testid(testid)).await;
     }
 
     /// Clicks the button, link or label with this text.
@@ -221,21 +217,28 @@ impl Rig {
         let path = format!(
             "//*[self::button or self::a or self::summary or self::label][normalize-space(.)=\"{text}\"]"
         );
-        self.click_on(&self.wait_for_element(By::XPath(path)).await)
-            .await;
+        self.click_on(By::XPath(path)).await;
     }
 
-    /// Brings the element to the middle first: a sticky bar may lie over it at the edge.
-    async fn click_on(&self, element: &WebElement) {
-        self.js(
-            "arguments[0].scrollIntoView({ block: 'center' });",
-            vec![element.to_json().expect("an element")],
-        )
-        .await;
-        element
-            .click()
-            .await
-            .unwrap_or_else(|error| panic!("not clickable: {error}"));
+    /// Brings the element to the middle first: a sticky bar may lie over it at the edge. Where the screen is being redrawn
+    /// and the element moves away or is replaced, looks for it again, as a finger would.
+    async fn click_on(&self, by: By) {
+        let deadline = Deadline::new();
+        loop {
+            let element = self.wait_for_element(by.clone()).await;
+            let Err(error) = self.try_click(&element).await else {
+                return;
+            };
+            assert!(!deadline.passed(), "not clickable: {error}");
+            tokio::time::sleep(LOOK_AGAIN_AFTER).await;
+        }
+    }
+
+    async fn try_click(&self, element: &WebElement) -> WebDriverResult<()> {
+        self.driver
+            .execute(TO_THE_MIDDLE, vec![element.to_json()?])
+            .await?;
+        element.click().await
     }
 
     /// Types into the field with this `data-testid`, in place of what was there.
@@ -250,11 +253,8 @@ impl Rig {
 
     /// As a person does: mark all that is there, type over it, leave the field.
     async fn type_into(&self, field: &WebElement, text: &str) {
-        self.js(
-            "arguments[0].scrollIntoView({ block: 'center' });",
-            vec![field.to_json().expect("an element")],
-        )
-        .await;
+        self.js(TO_THE_MIDDLE, vec![field.to_json().expect("an element")])
+            .await;
         field.click().await.expect("the field takes the focus");
         field
             .send_keys(Key::Control + "a")
@@ -419,6 +419,12 @@ impl Rig {
     }
 }
 
+fn by_testid(testid: &str) -> By {
+    By::Css(format!("[data-testid=\"{testid}\"]"))
+}
+
+const TO_THE_MIDDLE: &str =
+    "arguments[0].scrollIntoView({ block: 'center', behavior: 'instant' });";
 const POLICY: &str = "policy breach:";
 /// Puts breaches of the content security policy into the console, where they outlive a reload.
 const LISTENER: &str = "addEventListener('securitypolicyviolation', (event) =>
