@@ -23,9 +23,9 @@
 #![forbid(unsafe_code)]
 #![warn(missing_docs)]
 
-pub mod assessment;
 #[cfg(target_arch = "wasm32")]
 pub mod app;
+pub mod assessment;
 pub mod bench;
 pub mod caution;
 pub mod checks;
@@ -40,8 +40,8 @@ pub mod math;
 pub mod next;
 pub mod observations;
 pub mod quantity;
-pub mod readings;
 pub mod ranking;
+pub mod readings;
 pub mod record;
 pub mod store;
 pub mod unit;

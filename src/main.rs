@@ -7,5 +7,7 @@ fn main() {
 
 #[cfg(not(target_arch = "wasm32"))]
 fn main() {
-    println!("Lowside runs in a browser: `bash .ci/serve` builds it and serves it on this machine.");
+    println!(
+        "Lowside runs in a browser: `bash .ci/serve` builds it and serves it on this machine."
+    );
 }
