@@ -23,6 +23,9 @@ fn speed_in_wasm() {
     const N: usize = 50_000;
     let mut iterations = 0.0;
     let solve = time(&mut || iterations = work::solves(N));
+    let derived = time(&mut || {
+        std::hint::black_box(work::solves_with_derivatives(N / 5));
+    });
     let visit = work::call();
     let mut lead = 0.0;
     let full = time(&mut || lead = work::assessment(&visit));
@@ -31,6 +34,10 @@ fn speed_in_wasm() {
         N as f64 / solve,
         1e6 * solve / N as f64,
         iterations
+    );
+    console_log!(
+        "wasm: {:.2} µs a solve with three readings and all derivatives",
+        1e6 * derived / (N / 5) as f64
     );
     console_log!(
         "wasm: full assessment, 12 readings in 10 conditions: {:.1} ms",

@@ -21,6 +21,8 @@ pub struct Bench {
     pub latents: Latents,
     /// For each condition: latent, parameter, size.
     acts: Vec<Vec<(usize, Param, f64)>>,
+    /// Conditions with their consumers capped.
+    capped: Vec<bool>,
     /// Ports wanted in each condition.
     wanted: Vec<Vec<Port>>,
     /// Circuit solves so far.
@@ -53,6 +55,8 @@ pub struct Prediction {
 
 /// Scatter is taken a little wider than believed: it costs nothing where the model is right.
 const WIDER: f64 = 1.25;
+/// Share of a consumer's leak that passes a cap.
+const CAPPED: f64 = 1e-3;
 /// Variance (on the transformed scale) of a reading where the circuit has no steady state.
 const LOOSE: f64 = 1.0;
 
@@ -115,6 +119,7 @@ impl Bench {
             bases,
             latents,
             acts,
+            capped: conditions.iter().map(|c| c.consumers_capped).collect(),
             wanted,
             solves: core::cell::Cell::new(0),
             warm: core::cell::RefCell::new(warm),
@@ -159,6 +164,10 @@ impl Bench {
                 severity(fault.severity, place),
                 node.sign,
             );
+        }
+        if self.capped[condition] {
+            // A capped consumer neither drinks nor leaks.
+            theta[Param::ConsumerLeak as usize] *= CAPPED;
         }
         keep_order(&mut theta);
         (theta, factors)

@@ -174,6 +174,8 @@ fn window(
     };
     if cannot_be_negative(reading.port) {
         w.low = w.low.max(0.0);
+        w.middle = w.middle.max(w.low);
+        w.high = w.high.max(w.middle);
     }
     let rpm = bench.speed(0, condition);
     w.basis = basis(unit, &reading.condition, rpm);
