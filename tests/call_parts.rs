@@ -1,5 +1,6 @@
 //! The pure parts of the call screen: scale, groups, quick sets, words. They know no browser, so they are tried here natively,
 //! though the screen itself is built for the browser alone.
+#![cfg(not(target_arch = "wasm32"))]
 #![allow(dead_code)] // what only the screen uses
 
 pub use lowside::{assessment, faults, quantity, readings};
