@@ -193,6 +193,7 @@ fn judged(probability: f64, informed: bool, trust: Trust, id: FaultId) -> words:
     };
     words::verdict(&Assessment {
         causes: vec![Cause {
+            pair: None,
             ids: vec![id],
             title: "cause".to_owned(),
             probability,

@@ -410,6 +410,7 @@ fn cause(id: FaultId, title: &str, probability: f64, weight: Option<f64>) -> Cau
         weight,
     });
     Cause {
+        pair: None,
         ids: vec![id],
         title: title.to_owned(),
         probability,

@@ -97,7 +97,11 @@ pub struct Cause {
     /// Joint probability, 0 to 1.
     pub probability: f64,
     /// Probabilities of the members, same order as `ids`; where the row joins twins they are no more than base rates.
+    /// Empty for a pair: its two causes are at work together.
     pub shares: Vec<f64>,
+    /// Set where the row is two causes at work at the same time (`ids` holds both).
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub pair: Option<Pair>,
     /// For a set: the one action that serves all members; empty for a single cause.
     #[serde(default)]
     pub action: String,
@@ -108,6 +112,15 @@ pub struct Cause {
     pub evidence: Vec<Evidence>,
     /// What the readings taken would be under it.
     pub would_read: Vec<WouldRead>,
+}
+
+/// Two causes at work at the same time: what each of them explains that the other does not.
+#[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
+pub struct Pair {
+    /// Titles, in the order of the row's ids.
+    pub titles: [String; 2],
+    /// Reading and observation ids that each explains, in the order of the row's ids.
+    pub explains: [Vec<String>; 2],
 }
 
 /// How far the ranking can be trusted.

@@ -111,6 +111,7 @@ fn row(
         title,
         probability,
         shares,
+        pair: None,
         action: set.map_or(String::new(), |s| s.action.to_string()),
         split: set.map_or(String::new(), |s| s.split.to_string()),
         evidence: evidence(members, weighed, probable, data, readings, seen, words),
