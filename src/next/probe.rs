@@ -116,7 +116,7 @@ pub fn forecast(
     let mut latents = unit_latents(unit);
     condition_latents(unit, &data.conditions, &mut latents);
     let bench = Bench::new(builds(unit), latents, &merged);
-    let swap = swap_chance(unit.sides);
+    let swap = swap_chance(unit.sides, &data.belief);
     let mut means = Vec::with_capacity(heavy.len());
     let mut covariances = Vec::with_capacity(heavy.len());
     for node in heavy {

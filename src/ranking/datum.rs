@@ -2,6 +2,7 @@
 //! with what the instrument alone makes uncertain.
 
 use super::accuracy::{Accuracy, accuracy};
+use super::belief::Belief;
 use crate::machine::Warmth;
 use crate::math;
 use crate::readings::instrument::Instrument;
@@ -127,6 +128,8 @@ pub struct Data {
     pub groups: usize,
     /// Port and readings of each group.
     pub group_ports: Vec<Port>,
+    /// What the ranking takes for granted.
+    pub belief: Belief,
 }
 
 fn condition_index(conditions: &mut Vec<Condition>, condition: &Condition) -> usize {
@@ -195,7 +198,21 @@ pub fn gather(
     riggings: &[Rigging],
     instruments: &[Instrument],
 ) -> Data {
-    let mut out = Data::default();
+    gather_with(unit, readings, riggings, instruments, Belief::default())
+}
+
+/// As [`gather`], with other assumptions than the usual ones.
+pub fn gather_with(
+    unit: &Unit,
+    readings: &[Reading],
+    riggings: &[Rigging],
+    instruments: &[Instrument],
+    belief: Belief,
+) -> Data {
+    let mut out = Data {
+        belief,
+        ..Data::default()
+    };
     let mut keys: Vec<String> = Vec::new();
     for (index, reading) in readings.iter().enumerate() {
         let condition = condition_index(&mut out.conditions, &reading.condition);
@@ -224,7 +241,17 @@ pub fn gather(
             out.group_ports.push(reading.port);
             keys.len() - 1
         });
-        let mut made = datum(index, reading.port, condition, says, value, swing, a, group);
+        let mut made = datum(
+            index,
+            reading.port,
+            condition,
+            says,
+            value,
+            swing,
+            a,
+            group,
+            out.belief.discrepancy * discrepancy(reading.port),
+        );
         if reading.condition.doing == Doing::NeutralFree {
             made.own = creep_own(unit, &made);
         }
@@ -268,20 +295,21 @@ fn datum(
     swing: Option<f64>,
     a: Accuracy,
     group: usize,
+    discrepancy: f64,
 ) -> Datum {
     let (t, own, bias) = match says {
         Says::Share(_) => {
             // The scale error of one instrument drops out of a ratio; an offset does not quite.
             (
                 math::ln(value),
-                (0.02f64.powi(2) + discrepancy(port).powi(2)).sqrt(),
+                (0.02f64.powi(2) + discrepancy.powi(2)).sqrt(),
                 0.0,
             )
         }
         _ => {
             let k = slope(port, value);
             let needle = (a.own * a.own + swing.unwrap_or(0.0).powi(2)).sqrt() * k;
-            let model = discrepancy(port) * value.abs() * k;
+            let model = discrepancy * value.abs() * k;
             (
                 transform(port, value),
                 (needle * needle + model * model + 0.25 * a.own * a.own * k * k).sqrt(),

@@ -1,21 +1,16 @@
 //! Likelihood of all data at a node: scatter and instrument biases integrated in closed form, wrong gauges, wrong ports and
 //! swapped sides as explicit branches.
 
-use super::datum::{Data, Says};
+use super::datum::{Data, Datum, Says};
 use super::gauss::{Gauss, LN_TWO_PI};
 use super::predict::Prediction;
 use crate::math;
 use crate::readings::Port;
 
-/// Chance that a rigging is wrong: gauge lies or stands on another port. Common practice.
-const WRONG: f64 = 0.03;
 /// Chance that a "nothing" is false: coupling not home, snubber shut, wrong port. Common practice: 0.1 to 0.15.
 const FALSE_NOTHING: f64 = 0.12;
 /// Log density of a reading that tells nothing, on the transformed scale: even over four e-folds.
 const ANYTHING: f64 = -1.386;
-/// Chance that sides A and B are swapped in the notes: about once in fifteen. Common practice.
-pub const SWAPPED: f64 = 1.0 / 15.0;
-
 /// What a node makes of the data.
 #[derive(Clone, Debug)]
 pub struct Fit {
@@ -44,93 +39,142 @@ fn split(data: &Data) -> Split {
     Split { joint, tails }
 }
 
-/// Fits a node. `centre`: the latent values that the prediction was linearised at (empty: zero).
+/// Fits a node. `centre`: the latent values that the prediction was linearised at (empty: zero). `swap_prior`: chance that sides
+/// or directions are swapped in the notes.
 pub fn fit(data: &Data, p: &Prediction, centre: &[f64], swap_prior: f64) -> Option<Fit> {
     let plain = branch(data, p, centre, None)?;
-    let swap = swap_order(data);
-    let Some(order) = swap else {
+    if swap_prior <= 0.0 {
         return Some(plain);
-    };
-    let Some(swapped) = branch(data, p, centre, Some(&order)) else {
+    }
+    let swaps: Vec<Fit> = swap_orders(data)
+        .iter()
+        .filter_map(|order| branch(data, p, centre, Some(order)))
+        .collect();
+    if swaps.is_empty() {
         return Some(plain);
-    };
-    let (a, b) = (
-        math::ln(1.0 - swap_prior) + plain.log,
-        math::ln(swap_prior) + swapped.log,
-    );
-    let log = math::ln_sum_exp(&[a, b]);
-    let share = math::exp(b - log);
-    let mix = |x: f64, y: f64| {
-        math::ln_sum_exp(&[math::ln(1.0 - swap_prior) + x, math::ln(swap_prior) + y])
-    };
-    let without = plain
-        .without
-        .iter()
-        .zip(&swapped.without)
-        .map(|(x, y)| mix(*x, *y))
+    }
+    let each = math::ln(swap_prior / swaps.len() as f64);
+    let mut all = vec![(math::ln(1.0 - swap_prior), plain)];
+    all.extend(swaps.into_iter().map(|s| (each, s)));
+    let joint: Vec<f64> = all.iter().map(|(prior, f)| prior + f.log).collect();
+    let log = math::ln_sum_exp(&joint);
+    let shares: Vec<f64> = joint.iter().map(|j| math::exp(j - log)).collect();
+    let without = (0..data.data.len())
+        .map(|k| {
+            let terms: Vec<f64> = all
+                .iter()
+                .map(|(prior, f)| prior + f.without[k])
+                .collect();
+            math::ln_sum_exp(&terms)
+        })
         .collect();
-    let wrong = plain
-        .wrong
-        .iter()
-        .zip(&swapped.wrong)
-        .map(|(x, y)| (1.0 - share) * x + share * y)
+    let wrong = (0..data.groups)
+        .map(|g| {
+            all.iter()
+                .zip(&shares)
+                .map(|((_, f), share)| share * f.wrong[g])
+                .sum()
+        })
         .collect();
-    let at = if share > 0.5 { swapped.at } else { plain.at };
+    let swapped = 1.0 - shares[0];
+    let lead = (0..all.len())
+        .max_by(|a, b| shares[*a].total_cmp(&shares[*b]))
+        .unwrap_or(0);
+    let spread = all[0].1.spread.clone();
+    let at = all.swap_remove(lead).1.at;
     Some(Fit {
         log,
         without,
         wrong,
-        swapped: share,
+        swapped,
         at,
-        spread: plain.spread,
+        spread,
     })
 }
 
-/// For each datum the datum whose prediction it takes when sides are swapped; none where no loop side was read.
-fn swap_order(data: &Data) -> Option<Vec<Option<usize>>> {
-    if !data
+/// Which prediction a datum is held against where something is swapped in the notes.
+#[derive(Clone, Copy, Debug, PartialEq)]
+enum Against {
+    /// Its own.
+    Own,
+    /// That of another datum.
+    Other(usize),
+    /// None was taken: the datum is left loose.
+    Loose,
+}
+
+/// The swaps that the notes may hold: sides A and B changed over; directions taken for each other, and the sides with them
+/// (a side is known by the direction in which it rises). None where no loop side was read.
+fn swap_orders(data: &Data) -> Vec<Vec<Against>> {
+    let side = |d: &Datum| matches!(d.port, Port::LoopA | Port::LoopB);
+    if !data.data.iter().any(side) {
+        return Vec::new();
+    }
+    let other_side = |port: Port| match port {
+        Port::LoopA => Port::LoopB,
+        Port::LoopB => Port::LoopA,
+        p => p,
+    };
+    let find = |d: &Datum, condition: Option<usize>| {
+        condition.and_then(|c| {
+            data.data
+                .iter()
+                .position(|o| o.port == other_side(d.port) && o.condition == c && o.says == d.says)
+        })
+    };
+    let take = |found: Option<usize>| found.map_or(Against::Loose, Against::Other);
+    let sides: Vec<Against> = data
         .data
         .iter()
-        .any(|d| matches!(d.port, Port::LoopA | Port::LoopB))
-    {
-        return None;
-    }
-    Some(
-        data.data
-            .iter()
-            .map(|d| {
-                let other = match d.port {
-                    Port::LoopA => Port::LoopB,
-                    Port::LoopB => Port::LoopA,
-                    _ => return None,
+        .map(|d| {
+            if side(d) {
+                take(find(d, Some(d.condition)))
+            } else {
+                Against::Own
+            }
+        })
+        .collect();
+    let directions: Vec<Against> = data
+        .data
+        .iter()
+        .map(|d| {
+            let c = &data.conditions[d.condition];
+            if c.doing.is_neutral() {
+                return if side(d) {
+                    take(find(d, Some(d.condition)))
+                } else {
+                    Against::Own
                 };
-                data.data
-                    .iter()
-                    .position(|o| o.port == other && o.condition == d.condition && o.says == d.says)
-            })
-            .collect(),
-    )
+            }
+            let back = c.reversed();
+            take(find(d, data.conditions.iter().position(|o| *o == back)))
+        })
+        .collect();
+    // Directions can only be told where both were taken.
+    let both = directions
+        .iter()
+        .zip(&data.data)
+        .any(|(a, d)| matches!(a, Against::Other(_)) && !data.conditions[d.condition].doing.is_neutral());
+    if both {
+        vec![sides, directions]
+    } else {
+        vec![sides]
+    }
 }
 
 fn branch(
     data: &Data,
     p: &Prediction,
     centre: &[f64],
-    order: Option<&[Option<usize>]>,
+    order: Option<&[Against]>,
 ) -> Option<Fit> {
     let Split { joint, tails } = split(data);
     let n = joint.len();
     let c = p.columns;
-    // Which prediction each datum is held against; a loop side whose partner was not read is left loose when swapped.
-    let from = |k: usize| {
-        order.map_or((k, false), |o| {
-            let d = &data.data[k];
-            match (d.port, o[k]) {
-                (Port::LoopA | Port::LoopB, Some(other)) => (other, false),
-                (Port::LoopA | Port::LoopB, None) => (k, true),
-                _ => (k, false),
-            }
-        })
+    let from = |k: usize| match order.map_or(Against::Own, |o| o[k]) {
+        Against::Own => (k, false),
+        Against::Other(other) => (other, false),
+        Against::Loose => (k, true),
     };
     let row = |k: usize| &p.rows[from(k).0 * c..(from(k).0 + 1) * c];
     let expected = |k: usize| {
@@ -158,6 +202,7 @@ fn branch(
     }
     let g = Gauss::new(cov.clone(), &residual)?;
     let mut log = p.swing;
+    let doubted = data.belief.wrong;
     let mut tail_logs = vec![0.0; data.data.len()];
     for k in &tails {
         let d = &data.data[*k];
@@ -167,7 +212,7 @@ fn branch(
             + p.loose[*k];
         spread[*k] = variance.sqrt();
         let inside = math::ln_normal_cdf((expected(*k) - d.t) / variance.sqrt());
-        tail_logs[*k] = math::ln_sum_exp(&[math::ln(1.0 - WRONG) + inside, math::ln(WRONG) - 0.7]);
+        tail_logs[*k] = math::ln_sum_exp(&[math::ln(1.0 - doubted) + inside, math::ln(doubted) - 0.7]);
         log += tail_logs[*k];
     }
     let groups = group_members(data, &joint);
@@ -177,7 +222,7 @@ fn branch(
     for (i, k) in joint.iter().enumerate() {
         // A reading left out: its conditional density, with a little doubt so that one bad reading cannot weigh without end.
         let clean = g.conditional(&[i]);
-        let doubt = doubt_of(&data.data[*k].says);
+        let doubt = doubt_of(&data.data[*k].says, doubted);
         let held = math::ln_sum_exp(&[math::ln(1.0 - doubt) + clean, math::ln(doubt) + ANYTHING]);
         without[*k] = log - held;
     }
@@ -200,11 +245,11 @@ fn branch(
     })
 }
 
-fn doubt_of(says: &Says) -> f64 {
+fn doubt_of(says: &Says, wrong: f64) -> f64 {
     if *says == Says::Nothing {
         FALSE_NOTHING
     } else {
-        WRONG
+        wrong
     }
 }
 
@@ -228,10 +273,13 @@ impl Branches {
         let doubt: Vec<f64> = groups
             .iter()
             .map(|m| {
-                if m.iter().any(|i| data.data[joint[*i]].says == Says::Nothing) {
+                let nothing = m
+                    .iter()
+                    .any(|i| data.data[joint[*i]].says == Says::Nothing);
+                if nothing {
                     FALSE_NOTHING
                 } else {
-                    WRONG
+                    data.belief.wrong
                 }
             })
             .collect();

@@ -6,6 +6,7 @@
 
 mod accuracy;
 mod assess;
+mod belief;
 mod datum;
 mod evidence;
 mod gauss;
@@ -21,7 +22,8 @@ mod seen;
 
 pub use accuracy::{Accuracy, accuracy};
 pub use assess::assess;
-pub use datum::{Data, Datum, Says, gather, instrument_of, slope, untransform};
+pub use belief::Belief;
+pub use datum::{Data, Datum, Says, gather, gather_with, instrument_of, slope, untransform};
 pub use gauss::{Gauss, LN_TWO_PI};
 pub use hold::hold_time;
 pub use likelihood::fit;

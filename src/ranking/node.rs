@@ -1,5 +1,6 @@
 //! Integration nodes of a cause: builds, ways of showing and severities, each with its weight.
 
+use super::belief::Belief;
 use crate::circuit::{Param, Params};
 use crate::faults::{Bend, Fault, SeverityShape};
 use crate::machine::Build;
@@ -77,13 +78,14 @@ pub fn bend(theta: &mut Params, bends: &[(Param, Bend)], s: f64, sign: f64) -> V
 }
 
 /// The nodes of a cause, and the log of its prior mass over the builds (base rate × share of builds that can have it).
-pub fn nodes(fault: &Fault, builds: &[Build], fineness: usize) -> (Vec<Node>, f64) {
+pub fn nodes(fault: &Fault, builds: &[Build], belief: &Belief) -> (Vec<Node>, f64) {
     let masses: Vec<f64> = builds
         .iter()
         .map(|b| b.share * (fault.possible)(&b.unit).max(0.0))
         .collect();
     let total: f64 = masses.iter().sum();
-    if total <= 0.0 || fault.per_hundred <= 0.0 {
+    let rate = belief.rate(fault);
+    if total <= 0.0 || rate <= 0.0 {
         return (Vec::new(), f64::NEG_INFINITY);
     }
     let mut variants: Vec<(Option<usize>, f64)> = Vec::new();
@@ -111,7 +113,7 @@ pub fn nodes(fault: &Fault, builds: &[Build], fineness: usize) -> (Vec<Node>, f6
             let n = if plain {
                 1
             } else {
-                ((fineness as f64 * share).round() as usize).clamp(3, fineness)
+                ((belief.fineness as f64 * share).round() as usize).clamp(3, belief.fineness.max(3))
             };
             for i in 0..n {
                 out.push(Node {
@@ -125,5 +127,5 @@ pub fn nodes(fault: &Fault, builds: &[Build], fineness: usize) -> (Vec<Node>, f6
             }
         }
     }
-    (out, math::ln(fault.per_hundred * total))
+    (out, math::ln(rate * total))
 }

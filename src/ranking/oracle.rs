@@ -1,8 +1,9 @@
 //! The integral held against brute force: a large fixed-seed ensemble over severity, builds and scatter, with the same
 //! likelihood of instruments. It converges to the exact posterior slowly, so it serves as a judge and not as the method.
 
+use super::belief::Belief;
 use super::datum::{Data, gather};
-use super::likelihood::{SWAPPED, fit};
+use super::likelihood::fit;
 use super::node::{Node, nodes};
 use super::posterior::weigh;
 use super::predict::{Bench, Prediction};
@@ -122,6 +123,14 @@ fn bench(unit: &Unit, data: &Data) -> Bench {
     Bench::new(builds(unit), latents, data)
 }
 
+/// Coarse cells: the draws are spread over them.
+fn coarse() -> Belief {
+    Belief {
+        fineness: 9,
+        ..Belief::default()
+    }
+}
+
 /// Readings of a machine with a fault, drawn from the model itself.
 fn readings(unit: &Unit, fault: &Fault, take: usize, draw: &mut Normals) -> Vec<Reading> {
     let ports = conditions();
@@ -143,7 +152,7 @@ fn readings(unit: &Unit, fault: &Fault, take: usize, draw: &mut Normals) -> Vec<
         .collect();
     let data = gather(unit, &list, &[], &[]);
     let bench = bench(unit, &data);
-    let (all, _) = nodes(fault, &bench.builds, 9);
+    let (all, _) = nodes(fault, &bench.builds, &coarse());
     let node = Node {
         quantile: draw.unit(),
         ..all[(draw.unit() * all.len() as f64) as usize]
@@ -163,7 +172,7 @@ fn readings(unit: &Unit, fault: &Fault, take: usize, draw: &mut Normals) -> Vec<
 
 /// Log likelihood of each cause by plain means over draws, with the standard error of each mean (relative).
 fn brute_force(bench: &Bench, data: &Data, fault: &Fault, draw: &mut Normals) -> (f64, f64, f64) {
-    let (all, prior) = nodes(fault, &bench.builds, 9);
+    let (all, prior) = nodes(fault, &bench.builds, &coarse());
     if all.is_empty() {
         return (f64::NEG_INFINITY, f64::NEG_INFINITY, 0.0);
     }
@@ -186,7 +195,7 @@ fn brute_force(bench: &Bench, data: &Data, fault: &Fault, draw: &mut Normals) ->
         };
         let u = draw.many(bench.latents.0.len());
         let p: Prediction = bench.drawn(fault, &node, data, &u);
-        if let Some(f) = fit(data, &p, &[], SWAPPED) {
+        if let Some(f) = fit(data, &p, &[], data.belief.swapped) {
             logs.push(f.log);
         }
     }

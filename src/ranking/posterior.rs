@@ -1,22 +1,19 @@
 //! From data to the posterior over the catalogue: nodes over severity and builds, scatter integrated in closed form at each
 //! node, and the nodes that carry weight linearised again at their own posterior mean.
 
+use super::belief::Belief;
 use super::datum::Data;
-use super::likelihood::{Fit, SWAPPED, fit, not_listed};
+use super::likelihood::{Fit, fit, not_listed};
 use super::node::{Node, nodes};
 use super::predict::Bench;
 use crate::faults::{self, Fault, FaultId};
 use crate::math;
 use crate::readings::SideNaming;
 
-/// Nodes a way of showing where one build is possible. More builds share them out.
-const FINENESS: usize = 14;
 /// Share of all weight from which a node is linearised again.
 const HEAVY: f64 = 5e-4;
 /// Most nodes that are linearised again.
 const MOST_AGAIN: usize = 400;
-/// Most rounds of linearising again.
-const ROUNDS: usize = 2;
 /// Largest change of any probability in a round that counts as settled.
 const SETTLED: f64 = 0.01;
 /// Largest step (standard deviations) to which a node is linearised again.
@@ -73,18 +70,18 @@ pub struct Posterior {
     pub heavy: Vec<Heavy>,
 }
 
-/// Chance that sides are swapped in the notes.
-pub fn swap_chance(sides: SideNaming) -> f64 {
+/// Chance that sides or directions are swapped in the notes.
+pub fn swap_chance(sides: SideNaming, belief: &Belief) -> f64 {
     if sides == SideNaming::AsMarked {
         0.5
     } else {
-        SWAPPED
+        belief.swapped
     }
 }
 
 /// Weighs every cause of the catalogue.
 pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
-    let swap = swap_chance(sides);
+    let swap = swap_chance(sides, &data.belief);
     let catalogue: Vec<&'static Fault> = faults::all()
         .iter()
         .filter(|f| f.id != FaultId::NotListed)
@@ -93,7 +90,7 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
     let mut priors = vec![f64::NEG_INFINITY; catalogue.len()];
     let mut healthy_prediction = None;
     for (cause, fault) in catalogue.iter().enumerate() {
-        let (list, prior) = nodes(fault, &bench.builds, FINENESS);
+        let (list, prior) = nodes(fault, &bench.builds, &data.belief);
         priors[cause] = prior;
         for node in list {
             let p = bench.predict(fault, &node, data, &[]);
@@ -113,7 +110,7 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
     }
     let mut before = shares(&held, &priors);
     let mut change = f64::INFINITY;
-    for _ in 0..ROUNDS {
+    for _ in 0..data.belief.rounds {
         again(bench, data, &catalogue, &priors, &mut held, swap);
         let after = shares(&held, &priors);
         change = before
@@ -144,7 +141,7 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
         let n = data.data.len();
         out.push(Weighed {
             id: FaultId::NotListed,
-            log_prior: math::ln(entry.per_hundred.max(1e-9)),
+            log_prior: math::ln(data.belief.rate(entry).max(1e-9)),
             log_likelihood: log,
             without: vec![log; n],
             wrong: vec![0.0; data.groups],

@@ -19,6 +19,8 @@ pub struct Bench {
     bases: Vec<Vec<Params>>,
     /// Scatter.
     pub latents: Latents,
+    /// Factor on the scatter.
+    wider: f64,
     /// For each condition: latent, parameter, size.
     acts: Vec<Vec<(usize, Param, f64)>>,
     /// Conditions with their consumers capped.
@@ -53,8 +55,6 @@ pub struct Prediction {
     pub swing: f64,
 }
 
-/// Scatter is taken a little wider than believed: it costs nothing where the model is right.
-const WIDER: f64 = 1.25;
 /// Share of a consumer's leak that passes a cap.
 const CAPPED: f64 = 1e-3;
 /// Variance (on the transformed scale) of a reading where the circuit has no steady state.
@@ -81,13 +81,14 @@ impl Bench {
                     .collect::<Vec<_>>(),
             );
         }
+        let wider = data.belief.wider;
         let acts = (0..conditions.len())
             .map(|c| {
                 let mut list = Vec::new();
                 for (i, latent) in latents.0.iter().enumerate() {
                     for a in &latent.acts {
                         if a.condition.is_none_or(|x| x == c) {
-                            list.push((i, a.param, a.size * WIDER));
+                            list.push((i, a.param, a.size * wider));
                         }
                     }
                 }
@@ -118,6 +119,7 @@ impl Bench {
             networks,
             bases,
             latents,
+            wider,
             acts,
             capped: conditions.iter().map(|c| c.consumers_capped).collect(),
             wanted,
@@ -135,6 +137,13 @@ impl Bench {
         }
     }
 
+    /// Moves the parameters of every build and condition: for a judge that knows of effects that the circuit does not.
+    pub fn adjust(&mut self, change: impl Fn(&mut Params)) {
+        for theta in self.bases.iter_mut().flatten() {
+            change(theta);
+        }
+    }
+
     /// Parameters of a node in a condition at scatter `u` (the last entry is the place in the severity cell).
     fn theta(
         &self,
@@ -147,7 +156,7 @@ impl Bench {
         let mut theta = if u.is_empty() {
             self.bases[node.build][condition]
         } else {
-            let wide: Vec<f64> = u.iter().map(|v| v * WIDER).collect();
+            let wide: Vec<f64> = u.iter().map(|v| v * self.wider).collect();
             scattered(
                 &self.bases[node.build][condition],
                 &self.latents,

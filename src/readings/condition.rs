@@ -214,6 +214,17 @@ pub struct Condition {
 }
 
 impl Condition {
+    /// The same the other way round.
+    pub fn reversed(self) -> Self {
+        Condition {
+            direction: match self.direction {
+                Direction::Forward => Direction::Reverse,
+                Direction::Reverse => Direction::Forward,
+            },
+            ..self
+        }
+    }
+
     /// Neutral at high idle with no temperature taken: the start of a new reading.
     pub fn start() -> Self {
         Condition {

@@ -6,7 +6,7 @@
 use lowside::circuit::{Network, Param, Params};
 use lowside::faults::{self, Bend, Fault, FaultId};
 use lowside::machine::{
-    Latents, apply, base, builds, condition_latents, layout_for, scattered, unit_latents,
+    Build, Latents, apply, base, builds, condition_latents, layout_for, scattered, unit_latents,
 };
 use lowside::math;
 use lowside::quantity::{Kind, Measure};
@@ -47,25 +47,31 @@ impl ReadingSet {
 pub struct Sloppiness {
     /// Chance of a wrong rigging.
     pub wrong: f64,
-    /// Chance of swapped sides.
+    /// Chance of swapped sides, or of directions taken for each other and the sides with them.
     pub swapped: f64,
 }
 
-/// A hidden machine and what was written down.
-pub struct Case {
-    /// As declared to the program.
-    pub unit: Unit,
-    /// What was taken.
-    pub visit: Visit,
-    /// What is really wrong.
-    pub fault: FaultId,
+impl Sloppiness {
+    /// Nothing wrong.
+    pub const CLEAN: Sloppiness = Sloppiness {
+        wrong: 0.0,
+        swapped: 0.0,
+    };
+    /// As notes are on a road call (common practice).
+    pub const USUAL: Sloppiness = Sloppiness {
+        wrong: 0.03,
+        swapped: 1.0 / 15.0,
+    };
 }
 
 fn one_of<T: Copy>(draw: &mut Normals, items: &[T]) -> T {
     items[((draw.unit() * items.len() as f64) as usize).min(items.len() - 1)]
 }
 
-/// A declared unit: five figures known more or less, some ticks open.
+/// Chance that a profile leaves a tick open that it could have told.
+const OPEN: f64 = 0.3;
+
+/// A real unit, its figures as its plate and manual say.
 fn unit(draw: &mut Normals) -> Unit {
     let class = one_of(draw, &MachineClass::ALL);
     let mut u = Unit {
@@ -129,7 +135,20 @@ fn unit(draw: &mut Normals) -> Unit {
     u
 }
 
-fn asked(set: ReadingSet) -> Vec<(Port, Condition)> {
+/// The unit as its profile declares it: the builder did not always look whether it flushes or has a limiter.
+fn declared(real: &Unit, draw: &mut Normals) -> Unit {
+    let mut out = real.clone();
+    if draw.unit() < OPEN {
+        out.ticks.flushing = Tick::Unknown;
+    }
+    if draw.unit() < OPEN {
+        out.ticks.limiter = Tick::Unknown;
+    }
+    out
+}
+
+/// The readings of a set.
+pub fn asked(set: ReadingSet) -> Vec<(Port, Condition)> {
     let c = |doing, direction, lever, engine| Condition {
         doing,
         direction,
@@ -201,47 +220,211 @@ fn asked(set: ReadingSet) -> Vec<(Port, Condition)> {
     out
 }
 
-/// Bends as the world has them: ten per cent to either side of the catalogue's ends.
-fn world_bend(theta: &mut Params, fault: &Fault, draw: &mut Normals) {
-    if fault.effects.is_empty() {
-        return;
+/// A fault at work in a hidden machine: how it shows, how badly, which way.
+#[derive(Clone)]
+struct Hidden {
+    fault: &'static Fault,
+    effect: usize,
+    severity: f64,
+    sign: f64,
+}
+
+impl Hidden {
+    fn draw(fault: &'static Fault, draw: &mut Normals) -> Hidden {
+        let u = draw.unit();
+        let n = fault.effects.len();
+        Hidden {
+            fault,
+            effect: ((draw.unit() * n as f64) as usize).min(n.saturating_sub(1)),
+            severity: match fault.severity {
+                faults::SeverityShape::Even => u,
+                faults::SeverityShape::MostlyMild => u * u,
+                faults::SeverityShape::MostlyBad => u.sqrt(),
+                faults::SeverityShape::Total => 1.0,
+            },
+            sign: if draw.unit() < 0.5 { -1.0 } else { 1.0 },
+        }
     }
-    let effect = fault.effects
-        [((draw.unit() * fault.effects.len() as f64) as usize).min(fault.effects.len() - 1)];
-    let u = draw.unit();
-    let s = match fault.severity {
-        faults::SeverityShape::Even => u,
-        faults::SeverityShape::MostlyMild => u * u,
-        faults::SeverityShape::MostlyBad => u.sqrt(),
-        faults::SeverityShape::Total => 1.0,
-    };
-    let sign = if draw.unit() < 0.5 { -1.0 } else { 1.0 };
-    let pump = theta[Param::PumpDisp as usize] / 75.0;
-    let charge = theta[Param::ChargeDisp as usize] / 15.0;
-    for (p, b) in effect.bends {
-        let size = match p {
-            Param::CheckLeakA | Param::CheckLeakB | Param::Bypass => pump,
-            Param::ReliefHeld | Param::ConsumerLeak | Param::ServoLeak => charge,
-            _ => 1.0,
+
+    fn bend(&self, theta: &mut Params) {
+        let Some(effect) = self.fault.effects.get(self.effect) else {
+            return;
         };
-        let v = &mut theta[*p as usize];
-        match *b {
-            Bend::Times(a, z) => *v *= a * math::pow(z / a, s),
-            Bend::TimesLinear(a, z) => *v *= a + (z - a) * s,
-            Bend::Plus(a, z) => *v += size * (a + (z - a) * s),
-            Bend::PlusGeometric(a, z) => *v += size * a * math::pow(z / a, s),
-            Bend::PlusEitherSign(a, z) => *v += sign * size * (a + (z - a) * s),
+        let (s, sign) = (self.severity, self.sign);
+        let pump = theta[Param::PumpDisp as usize] / 75.0;
+        let charge = theta[Param::ChargeDisp as usize] / 15.0;
+        for (p, b) in effect.bends {
+            let size = match p {
+                Param::CheckLeakA | Param::CheckLeakB | Param::Bypass => pump,
+                Param::ReliefHeld | Param::ConsumerLeak | Param::ServoLeak => charge,
+                _ => 1.0,
+            };
+            let v = &mut theta[*p as usize];
+            match *b {
+                Bend::Times(a, z) => *v *= a * math::pow(z / a, s),
+                Bend::TimesLinear(a, z) => *v *= a + (z - a) * s,
+                Bend::Plus(a, z) => *v += size * (a + (z - a) * s),
+                Bend::PlusGeometric(a, z) => *v += size * a * math::pow(z / a, s),
+                Bend::PlusEitherSign(a, z) => *v += sign * size * (a + (z - a) * s),
+            }
         }
     }
 }
 
 /// Student-like scatter: a normal with now and then a wider one.
 fn heavy(draw: &mut Normals) -> f64 {
-    let k = if draw.unit() < 0.1 { 1.8 } else { 1.0 };
+    let k = if draw.unit() < TAIL_SHARE {
+        TAIL_WIDTH
+    } else {
+        1.0
+    };
     k * draw.normal()
 }
 
-/// Span of the gauge on a port and whether it is a gauge.
+/// Share of the wide draws, and how wide they are.
+const TAIL_SHARE: f64 = 0.1;
+const TAIL_WIDTH: f64 = 1.8;
+/// Standard deviation of the world's scatter over the model's.
+pub fn wider() -> f64 {
+    (1.0 - TAIL_SHARE + TAIL_SHARE * TAIL_WIDTH * TAIL_WIDTH).sqrt()
+}
+
+/// Laws whose curves differ from the model's, and the standard deviation of the log of the factor.
+pub const TILTED: [(Param, f64); 6] = [
+    (Param::LoopOverride, 0.35),
+    (Param::ReliefGain, 0.35),
+    (Param::OperatingGain, 0.35),
+    (Param::LineATurbulent, 0.35),
+    (Param::LineBTurbulent, 0.35),
+    (Param::Friction, 0.35),
+];
+
+/// Turbulent share of the leakage, L/min per √bar at 75 cm³/rev: side to side, and of each cartridge; least and most.
+pub const TURBULENT: [(Param, f64, f64); 3] = [
+    (Param::Bypass, 0.01, 0.04),
+    (Param::CheckLeakA, 0.0, 0.02),
+    (Param::CheckLeakB, 0.0, 0.02),
+];
+
+/// A hidden machine that answers any reading.
+#[derive(Clone)]
+pub struct Machine {
+    /// As declared to the program.
+    pub unit: Unit,
+    real: Unit,
+    build: Build,
+    faults: Vec<Hidden>,
+    scatter: Vec<f64>,
+    own: u64,
+    tilt: Vec<(Param, f64)>,
+    turbulent: Vec<(Param, f64)>,
+}
+
+impl Machine {
+    /// Draws a machine with these faults; none where the drawn unit cannot have one of them.
+    pub fn draw(draw: &mut Normals, faults: &[&'static Fault]) -> Option<Machine> {
+        let real = unit(draw);
+        if faults.iter().any(|f| (f.possible)(&real) <= 0.0) {
+            return None;
+        }
+        let build = builds(&real).into_iter().next()?;
+        let scatter = unit_latents(&real).0.iter().map(|_| heavy(draw)).collect();
+        let tilt = TILTED
+            .iter()
+            .map(|(p, sd)| (*p, math::exp(sd * draw.normal())))
+            .collect();
+        let seats = draw.unit();
+        let turbulent = TURBULENT
+            .iter()
+            .map(|(p, least, most)| {
+                let u = if *p == Param::Bypass {
+                    draw.unit()
+                } else {
+                    seats
+                };
+                (*p, least + (most - least) * u)
+            })
+            .collect();
+        let unit = declared(&real, draw);
+        Some(Machine {
+            unit,
+            build,
+            faults: faults.iter().map(|f| Hidden::draw(f, draw)).collect(),
+            scatter,
+            own: (draw.unit() * 1e15) as u64,
+            tilt,
+            turbulent,
+            real,
+        })
+    }
+
+    /// True where the real unit can have a fault.
+    pub fn can_have(&self, fault: &Fault) -> bool {
+        (fault.possible)(&self.real) > 0.0
+    }
+
+    /// What the port really shows in a condition; none where the machine has no steady state.
+    pub fn shows(&self, port: Port, condition: &Condition) -> Option<f64> {
+        let before = apply(&self.build, &base(&self.build), condition);
+        let mut latents: Latents = unit_latents(&self.real);
+        let known = latents.0.len();
+        condition_latents(&self.real, core::slice::from_ref(condition), &mut latents);
+        let mut u = self.scatter.clone();
+        for (i, latent) in latents.0.iter().enumerate().skip(known) {
+            let again = latents.0[known..i].iter().any(|l| l.words == latent.words);
+            u.push(self.of_condition(&latent.words, again, condition));
+        }
+        let mut theta = scattered(&before, &latents, 0, &u);
+        for (p, k) in &self.tilt {
+            theta[*p as usize] *= k;
+        }
+        let size = theta[Param::PumpDisp as usize] / 75.0;
+        for (p, leak) in &self.turbulent {
+            theta[*p as usize] += leak * size;
+        }
+        for f in &self.faults {
+            f.bend(&mut theta);
+        }
+        theta[Param::ServoFull as usize] =
+            theta[Param::ServoFull as usize].max(1.2 * theta[Param::ServoStart as usize]);
+        for p in [Param::Load, Param::SignalForward, Param::SignalReverse] {
+            theta[p as usize] = theta[p as usize].max(0.0);
+        }
+        let net = Network::new(layout_for(&self.build, condition));
+        if port == Port::Knee {
+            return net
+                .knee(&theta, theta[Param::Speed as usize].max(1500.0))
+                .ok()
+                .map(|k| k.value);
+        }
+        let solution = net.solve(&theta, None).ok()?;
+        Some(net.reading(port, &solution, &theta))
+    }
+
+    /// Scatter that belongs to a condition: what is shared (idle speeds, tachometer, place of the thermometer, load of the day)
+    /// is drawn once a machine, the rest once a condition.
+    fn of_condition(&self, words: &str, again: bool, condition: &Condition) -> f64 {
+        let own = again
+            || words == "lever travel"
+            || (words == "oil temperature" && condition.oil.is_none());
+        let key = if own {
+            format!("{words} {condition:?}")
+        } else {
+            format!("{words} {:?} {:?}", condition.doing, condition.oil.map(|o| o.place))
+        };
+        let key = match words {
+            "low idle" | "high idle" | "tachometer" => words.to_string(),
+            _ => key,
+        };
+        // FNV-1a: a stream of its own for each name.
+        let hash = key.bytes().fold(0xcbf2_9ce4_8422_2325 ^ self.own, |h, b| {
+            (h ^ u64::from(b)).wrapping_mul(0x0100_0000_01b3)
+        });
+        heavy(&mut Normals::new(hash))
+    }
+}
+
+/// Full scale of the gauge on a port; none where it is no gauge.
 fn span(port: Port, value: f64) -> Option<f64> {
     match port.kind() {
         Kind::Pressure => Some(match port {
@@ -260,117 +443,124 @@ fn span(port: Port, value: f64) -> Option<f64> {
     }
 }
 
-/// Draws a case with one hidden fault that the unit can have. None where the machine has no steady state in a reading.
-pub fn case(
-    draw: &mut Normals,
-    fault: &Fault,
-    set: ReadingSet,
+/// What is wrong with a rigging.
+#[derive(Clone, Copy)]
+enum Rigged {
+    Right,
+    Lies(f64),
+    On(Port),
+}
+
+/// The port that is taken for another by mistake.
+fn mistaken(port: Port) -> Option<Port> {
+    match port {
+        Port::Charge => Some(Port::PumpCase),
+        Port::LoopA | Port::LoopB => Some(Port::Charge),
+        Port::PumpCase => Some(Port::MotorCase),
+        Port::MotorCase => Some(Port::PumpCase),
+        _ => None,
+    }
+}
+
+/// The mechanic's notes: one bias an instrument, needles read to a quarter division, and what is mixed up.
+pub struct Notes {
     sloppy: Sloppiness,
-) -> Option<Case> {
-    let unit = unit(draw);
-    if (fault.possible)(&unit) <= 0.0 {
-        return None;
-    }
-    let build = builds(&unit).into_iter().next()?;
-    let list = asked(set);
-    let conditions: Vec<Condition> = list.iter().map(|(_, c)| *c).collect();
-    let mut distinct: Vec<Condition> = Vec::new();
-    for c in &conditions {
-        if !distinct.contains(c) {
-            distinct.push(*c);
+    sides: bool,
+    directions: bool,
+    instruments: Vec<(Port, f64, Rigged)>,
+    draw: Normals,
+}
+
+impl Notes {
+    /// Notes of one visit.
+    pub fn new(draw: &mut Normals, sloppy: Sloppiness) -> Notes {
+        let swapped = draw.unit() < sloppy.swapped;
+        let which = draw.unit() < 0.5;
+        Notes {
+            sloppy,
+            sides: swapped,
+            directions: swapped && which,
+            instruments: Vec::new(),
+            draw: Normals::new((draw.unit() * 1e15) as u64),
         }
     }
-    let mut latents: Latents = unit_latents(&unit);
-    condition_latents(&unit, &distinct, &mut latents);
-    let u: Vec<f64> = latents.0.iter().map(|_| heavy(draw)).collect();
-    // What the model does not know.
-    let turbulent = (0.01 + 0.03 * draw.unit(), 0.02 * draw.unit());
-    let tilt: Vec<(Param, f64)> = [
-        Param::LoopOverride,
-        Param::ReliefGain,
-        Param::OperatingGain,
-        Param::LineATurbulent,
-        Param::LineBTurbulent,
-        Param::Friction,
-    ]
-    .iter()
-    .map(|p| (*p, math::exp(0.35 * draw.normal())))
-    .collect();
-    let fault_draw = draw.clone();
-    let mut readings = Vec::new();
-    let mut biases: Vec<(Port, f64)> = Vec::new();
-    let mut shown = Vec::new();
-    for (port, condition) in &list {
-        let c = distinct.iter().position(|d| d == condition)?;
-        let before = apply(&build, &base(&build), condition);
-        let mut theta = scattered(&before, &latents, c, &u);
-        for (p, k) in &tilt {
-            theta[*p as usize] *= k;
-        }
-        let size = theta[Param::PumpDisp as usize] / 75.0;
-        theta[Param::Bypass as usize] += turbulent.0 * size;
-        theta[Param::CheckLeakA as usize] += turbulent.1 * size;
-        theta[Param::CheckLeakB as usize] += turbulent.1 * size;
-        world_bend(&mut theta, fault, &mut fault_draw.clone());
-        theta[Param::ServoFull as usize] =
-            theta[Param::ServoFull as usize].max(1.2 * theta[Param::ServoStart as usize]);
-        for p in [Param::Load, Param::SignalForward, Param::SignalReverse] {
-            theta[p as usize] = theta[p as usize].max(0.0);
-        }
-        let net = Network::new(layout_for(&build, condition));
-        let solution = net.solve(&theta, None).ok()?;
-        shown.push(net.reading(*port, &solution, &theta));
+
+    /// True where anything is swapped.
+    #[allow(dead_code)] // told in printed cases only
+    pub fn swapped(&self) -> bool {
+        self.sides
     }
-    let _ = fault_draw;
-    for _ in 0..7 {
-        draw.unit();
-    }
-    let swapped = draw.unit() < sloppy.swapped;
-    for (i, (port, condition)) in list.iter().enumerate() {
-        let mut value = shown[i];
-        if swapped && matches!(port, Port::LoopA | Port::LoopB) {
-            // The other side's pressure was written down: in a held check the low side stands near charge.
-            value = shown[1].min(value);
+
+    fn instrument(&mut self, port: Port) -> (f64, Rigged) {
+        if let Some((_, bias, rigged)) = self.instruments.iter().find(|(p, _, _)| *p == port) {
+            return (*bias, *rigged);
         }
-        let bias = match biases.iter().find(|(p, _)| p == port) {
-            Some((_, b)) => *b,
-            None => {
-                let b = match span(*port, value) {
-                    Some(s) => {
-                        0.016 * s * (2.0 * draw.unit() - 1.0)
-                            + if draw.unit() < sloppy.wrong {
-                                0.3 * s * draw.normal()
-                            } else {
-                                0.0
-                            }
-                    }
-                    None => {
-                        0.008 * value * draw.normal()
-                            + if draw.unit() < sloppy.wrong {
-                                0.5 * value * draw.normal()
-                            } else {
-                                0.0
-                            }
-                    }
-                };
-                biases.push((*port, b));
-                b
-            }
+        let bias = 2.0 * self.draw.unit() - 1.0;
+        let wrong = self.draw.unit() < self.sloppy.wrong;
+        let lies = Rigged::Lies(self.draw.normal());
+        let rigged = match (wrong, mistaken(port)) {
+            (false, _) => Rigged::Right,
+            (true, Some(other)) if self.draw.unit() < 0.5 => Rigged::On(other),
+            (true, _) => lies,
         };
-        let mut v = value + bias;
-        v = match span(*port, value) {
+        self.instruments.push((port, bias, rigged));
+        (bias, rigged)
+    }
+
+    /// Takes a reading as it is written down, base unit; none where the machine has no steady state.
+    pub fn take(&mut self, machine: &Machine, port: Port, condition: &Condition) -> Option<f64> {
+        let (bias, rigged) = self.instrument(port);
+        let mut at = port;
+        if let Rigged::On(other) = rigged {
+            at = other;
+        }
+        at = match at {
+            Port::LoopA if self.sides => Port::LoopB,
+            Port::LoopB if self.sides => Port::LoopA,
+            p => p,
+        };
+        let run = if self.directions && !condition.doing.is_neutral() {
+            condition.reversed()
+        } else {
+            *condition
+        };
+        let value = machine.shows(at, &run)?;
+        let v = match span(port, value) {
             Some(s) => {
+                let lie = if let Rigged::Lies(k) = rigged {
+                    0.3 * s * k
+                } else {
+                    0.0
+                };
                 let division = s / 240.0;
-                ((v + 0.3 * division * draw.normal()) / division).round() * division
+                let needle = value + 0.016 * s * bias + lie + 0.3 * division * self.draw.normal();
+                (needle / division).round() * division
             }
-            None => v * (1.0 + 0.012 * draw.normal()),
+            None => {
+                let lie = if let Rigged::Lies(k) = rigged {
+                    math::exp(0.5 * k)
+                } else {
+                    1.0
+                };
+                let (shared, own) = share_off(port);
+                value * (1.0 + shared * bias * 3f64.sqrt()) * lie * (1.0 + own * self.draw.normal())
+            }
         };
-        if port.kind() != Kind::Pressure {
-            v = v.max(0.0);
-        }
-        readings.push(Reading {
-            id: format!("r{i}"),
-            port: *port,
+        Some(if port.kind() == Kind::Pressure { v } else { v.max(0.0) })
+    }
+
+    /// Takes a reading into a visit's list.
+    pub fn reading(
+        &mut self,
+        machine: &Machine,
+        port: Port,
+        condition: &Condition,
+        id: String,
+    ) -> Option<Reading> {
+        let v = self.take(machine, port, condition)?;
+        Some(Reading {
+            id,
+            port,
             condition: *condition,
             rigging: String::new(),
             seen: Measure::from_base(v, port.kind())
@@ -378,16 +568,50 @@ pub fn case(
                 .map(|value| Seen::Value { value }),
             typed: String::new(),
             note: String::new(),
-        });
+        })
+    }
+}
+
+/// Standard deviations of what a jug, a stopwatch or a counter is off by: shared by all its readings, and of each.
+fn share_off(port: Port) -> (f64, f64) {
+    match port {
+        Port::MotorDrain | Port::ReturnFlow => (0.02, 0.03),
+        Port::ResponseOut | Port::ResponseBack => (0.0, 0.12),
+        _ => (0.005, 0.012),
+    }
+}
+
+/// A hidden machine and what was written down.
+pub struct Case {
+    /// The machine.
+    pub machine: Machine,
+    /// What was taken.
+    pub visit: Visit,
+    /// What is really wrong.
+    pub faults: Vec<FaultId>,
+}
+
+/// Draws a case. None where the unit cannot have the faults, or the machine has no steady state in a reading.
+pub fn case(
+    draw: &mut Normals,
+    faults: &[&'static Fault],
+    set: ReadingSet,
+    sloppy: Sloppiness,
+) -> Option<Case> {
+    let machine = Machine::draw(draw, faults)?;
+    let mut notes = Notes::new(draw, sloppy);
+    let mut readings = Vec::new();
+    for (i, (port, condition)) in asked(set).iter().enumerate() {
+        readings.push(notes.reading(&machine, *port, condition, format!("r{i}"))?);
     }
     Some(Case {
-        unit,
         visit: Visit {
             id: "v".into(),
             unit: "u".into(),
             readings,
             ..Visit::default()
         },
-        fault: fault.id,
+        faults: faults.iter().map(|f| f.id).collect(),
+        machine,
     })
 }
