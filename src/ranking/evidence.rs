@@ -53,7 +53,9 @@ impl Probable {
     }
 }
 
-fn normalised(prior: &[f64], likelihood: &[f64]) -> Vec<f64> {
+/// Bayes' rule on logs: probabilities of hypotheses from log base rate and log likelihood, each up to a constant. What is not
+/// finite is impossible; all are 0 where every hypothesis is.
+pub fn normalised(prior: &[f64], likelihood: &[f64]) -> Vec<f64> {
     let joint: Vec<f64> = prior
         .iter()
         .zip(likelihood)

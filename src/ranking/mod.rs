@@ -24,6 +24,7 @@ pub use accuracy::{Accuracy, accuracy};
 pub use assess::assess;
 pub use belief::Belief;
 pub use datum::{Data, Datum, Says, gather, gather_with, instrument_of, slope, untransform};
+pub use evidence::normalised;
 pub use gauss::{Gauss, LN_TWO_PI};
 pub use hold::hold_time;
 pub use likelihood::fit;
