@@ -1,6 +1,6 @@
 //! The advice for a visit: checks, repair, stop.
 
-use super::mixture::{Outcome, outcomes, yes_or_no};
+use super::mixture::{Outcome, by_table, outcomes, yes_or_no};
 use super::probe::{Forecasts, forecast};
 use super::{Advice, Foretold, Offer, Would, gate, outcomes as parts, repair, words};
 use crate::assessment::Assessment;
@@ -262,26 +262,10 @@ fn partition(lists: &[&[FaultId]], ids: &[FaultId], prior: &[f64]) -> (Vec<Outco
             (1.0 - parts::RELIABLE) / (n - 1) as f64
         }
     };
-    let mut out = Vec::new();
-    let mut bits = 0.0;
-    for o in 0..n {
-        let joint: Vec<f64> = ids
-            .iter()
-            .zip(prior)
-            .map(|(id, p)| p * chance(id, o))
-            .collect();
-        let weight: f64 = joint.iter().sum();
-        for (id, j) in ids.iter().zip(&joint) {
-            if *j > 0.0 {
-                bits += j * math::log2(chance(id, o) / weight);
-            }
-        }
-        out.push(Outcome {
-            weight,
-            causes: joint.iter().map(|j| j / weight.max(1e-300)).collect(),
-        });
-    }
-    (out, bits.max(0.0))
+    let table: Vec<Vec<f64>> = (0..n)
+        .map(|o| ids.iter().map(|id| chance(id, o)).collect())
+        .collect();
+    by_table(&table, prior)
 }
 
 /// What a check's readings would be under the leading causes.

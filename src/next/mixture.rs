@@ -89,7 +89,8 @@ pub struct Outcome {
     pub causes: Vec<f64>,
 }
 
-fn entropy(p: &[f64]) -> f64 {
+/// Entropy of a distribution, bits.
+pub fn entropy(p: &[f64]) -> f64 {
     -p.iter()
         .filter(|v| **v > 0.0)
         .map(|v| v * math::log2(*v))
@@ -130,18 +131,27 @@ pub fn outcomes(forecasts: &[Forecast], prior: &[f64], seed: u64) -> (Vec<Outcom
 
 /// Outcomes of something that is so or not, with its probability under each cause.
 pub fn yes_or_no(probability: &[f64], prior: &[f64]) -> (Vec<Outcome>, f64) {
-    let yes: f64 = probability.iter().zip(prior).map(|(p, w)| p * w).sum();
-    let side = |sign: bool, weight: f64| Outcome {
-        weight,
-        causes: probability
-            .iter()
-            .zip(prior)
-            .map(|(p, w)| w * if sign { *p } else { 1.0 - p } / weight.max(1e-300))
-            .collect(),
-    };
-    let out = vec![side(true, yes), side(false, 1.0 - yes)];
+    let not: Vec<f64> = probability.iter().map(|p| 1.0 - p).collect();
+    by_table(&[probability.to_vec(), not], prior)
+}
+
+/// Outcomes by a table of chances, one row an outcome and one column a cause, and the information (bits) they carry on the
+/// cause: entropy before less expected entropy after.
+pub fn by_table(chances: &[Vec<f64>], prior: &[f64]) -> (Vec<Outcome>, f64) {
+    let out: Vec<Outcome> = chances
+        .iter()
+        .map(|chance| {
+            let joint: Vec<f64> = chance.iter().zip(prior).map(|(c, p)| c * p).collect();
+            let weight: f64 = joint.iter().sum();
+            Outcome {
+                weight,
+                causes: joint.iter().map(|j| j / weight.max(1e-300)).collect(),
+            }
+        })
+        .collect();
     let after: f64 = out.iter().map(|o| o.weight * entropy(&o.causes)).sum();
-    (out, (entropy(prior) - after).max(0.0))
+    let before = entropy(prior);
+    (out, (before - after).max(0.0))
 }
 
 #[cfg(test)]

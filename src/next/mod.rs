@@ -13,6 +13,8 @@ mod repair;
 mod words;
 
 pub use advise::advise;
+pub use mixture::{Forecast, Outcome, by_table, entropy, outcomes, yes_or_no};
+pub use repair::expected_minutes;
 
 use crate::faults::FaultId;
 use crate::readings::{Condition, Port};
