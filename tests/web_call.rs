@@ -6,12 +6,13 @@ use std::rc::Rc;
 use std::time::Duration;
 
 use lowside::app::call::CallScreen;
-use lowside::assessment::{Assessment, Cause, Evidence};
+use lowside::assessment::{Assessment, Cause, Evidence, Pair};
 use lowside::faults::FaultId;
+use lowside::next::{Advice, Foretold, Offer, RepairOffer, Would};
 use lowside::quantity::UnitPrefs;
 use lowside::readings::instrument::{Instrument, usual_instruments};
-use lowside::readings::{Doing, Port, Seen};
-use lowside::record::Visit;
+use lowside::readings::{Condition, Doing, Port, Seen};
+use lowside::record::{Answer, Visit};
 use lowside::unit::Unit;
 use wasm_bindgen_test::{wasm_bindgen_test, wasm_bindgen_test_configure};
 use web_sys::wasm_bindgen::JsCast;
@@ -489,5 +490,197 @@ async fn a_cause_not_listed_asks_for_gauge_port_and_condition() {
     let text = screen.text("not-listed");
     for word in ["gauge", "port", "condition"] {
         assert!(text.contains(word), "{text}");
+    }
+}
+
+#[wasm_bindgen_test]
+async fn two_causes_together_stand_as_one_row_with_what_each_explains() {
+    let mut pair = cause(FaultId::PumpWorn, "Pump and motor worn", 0.7, Some(1.4));
+    pair.ids = vec![FaultId::PumpWorn, FaultId::MotorWorn];
+    pair.shares = Vec::new();
+    pair.pair = Some(Pair {
+        titles: ["Pump worn".to_owned(), "Motor worn".to_owned()],
+        explains: [vec!["r1".to_owned()], vec!["weak-hot".to_owned()]],
+    });
+    let told = Assessment {
+        causes: vec![
+            pair,
+            cause(FaultId::OilLow, "Oil level low", 0.1, Some(-1.0)),
+        ],
+        ..Assessment::default()
+    };
+    let screen = Screen::open(Some(told)).await;
+    screen.touch("add-reading").await;
+    screen.touch("add-Charge").await;
+    let row = screen.text("cause-0");
+    for words in [
+        "Two causes together",
+        "Pump worn",
+        "Motor worn",
+        "70\u{202f}%",
+    ] {
+        assert!(row.contains(words), "{words}: {row}");
+    }
+    assert!(!row.contains("Alike in every reading"), "{row}");
+    // Each explains its own: a reading by port and condition, an observation by its words.
+    let sides = screen.text("pair");
+    assert!(sides.contains("Charge pressure"), "{sides}");
+    assert!(sides.contains("Good cold, weak hot"), "{sides}");
+    // Both are proved and put right, each by itself.
+    for id in [FaultId::PumpWorn, FaultId::MotorWorn] {
+        let fault = lowside::faults::find(id).expect("in the catalogue");
+        assert!(
+            row.contains(fault.proof) && row.contains(fault.repair),
+            "{id:?}"
+        );
+    }
+    assert_eq!(screen.text("verdict"), "so far");
+}
+
+/// An offer of charge pressure both ways, wheels clear.
+fn offer(id: &str, title: &str, hazard: u8) -> Offer {
+    let condition = Condition {
+        doing: Doing::Free,
+        ..Condition::start()
+    };
+    let would = |id: FaultId, title: &str, low: f64, high: f64| Would {
+        id,
+        title: title.to_owned(),
+        value: (low + high) / 2.0,
+        low,
+        high,
+    };
+    let foretold = |condition: Condition| Foretold {
+        port: Port::Charge,
+        condition,
+        would: vec![
+            would(FaultId::PumpWorn, "Pump worn", 14.0, 16.0),
+            would(FaultId::MotorWorn, "Motor worn", 19.0, 22.0),
+        ],
+    };
+    Offer {
+        id: id.to_owned(),
+        title: title.to_owned(),
+        bits: 0.8,
+        minutes: 4.4,
+        hazard,
+        why: "Tells worn pump from worn motor.".to_owned(),
+        foretold: vec![foretold(condition), foretold(condition.reversed())],
+    }
+}
+
+fn advised(advice: Advice) -> Assessment {
+    Assessment {
+        causes: vec![cause(FaultId::PumpWorn, "Pump worn", 0.6, Some(1.0))],
+        advice: Some(advice),
+        ..Assessment::default()
+    }
+}
+
+#[wasm_bindgen_test]
+async fn the_best_check_says_why_and_what_it_would_read_and_its_readings_are_one_touch_away() {
+    let screen = Screen::open(Some(advised(Advice {
+        checks: vec![
+            offer("charge-both-ways", "Charge both ways", 2),
+            offer("pressure-build-up", "Staged build-up", 3),
+        ],
+        held_back: vec![("Plateau".to_owned(), "Not alone on site.".to_owned())],
+        ..Advice::default()
+    })))
+    .await;
+    let best = screen.text("next-0");
+    for words in [
+        "Charge both ways",
+        "5\u{202f}min",
+        "take care",
+        "Tells worn pump from worn motor.",
+        "Pump worn",
+        "14.0 to 16.0\u{202f}bar",
+        "19.0 to 22.0\u{202f}bar",
+        "Put back",
+        "must be so first",
+    ] {
+        assert!(best.contains(words), "{words}: {best}");
+    }
+    // A hazard of two is not told in the words of three.
+    assert!(!best.contains("danger"), "{best}");
+    assert!(screen.text("next-1").contains("danger"));
+    assert!(screen.text("next-held").contains("Not alone on site."));
+    screen.touch("next-add-0").await;
+    let readings = screen.visit().readings;
+    assert_eq!(readings.len(), 2);
+    assert!(
+        readings
+            .iter()
+            .all(|r| r.port == Port::Charge && r.condition.doing == Doing::Free)
+    );
+    // Its precautions stand before the field, which is closed until they are ticked.
+    assert!(screen.there("gate-charge-both-ways"));
+    assert!(!screen.there("value-0"));
+    screen.tick_all("charge-both-ways").await;
+    assert!(screen.there("value-0"));
+    // A second touch adds nothing twice.
+    screen.touch("next-add-0").await;
+    assert_eq!(screen.visit().readings.len(), 2);
+}
+
+#[wasm_bindgen_test]
+async fn a_check_without_readings_is_answered_or_marked_on_the_spot() {
+    let bare = |id: &str, title: &str| Offer {
+        foretold: Vec::new(),
+        ..offer(id, title, 1)
+    };
+    let screen = Screen::open(Some(advised(Advice {
+        checks: vec![
+            bare("debris", "Look for debris"),
+            bare("pull-the-shuttle", "Pull the shuttle"),
+        ],
+        ..Advice::default()
+    })))
+    .await;
+    screen.touch("next-0-metal-not-seen").await;
+    assert_eq!(
+        screen.visit().observations.get("metal"),
+        Some(&Answer::NotSeen)
+    );
+    screen.touch("next-made-1").await;
+    assert_eq!(screen.visit().made, ["pull-the-shuttle"]);
+    assert!(screen.text("next-made").contains("Pull the shuttle"));
+    screen.touch("unmade-pull-the-shuttle").await;
+    assert!(screen.visit().made.is_empty());
+}
+
+#[wasm_bindgen_test]
+async fn stop_checking_and_the_repair_say_what_proves_and_what_must_come_back() {
+    let screen = Screen::open(Some(advised(Advice {
+        stop: Some("No check that is left can change the order.".to_owned()),
+        repair: Some(RepairOffer {
+            id: FaultId::PumpWorn,
+            repair: "Change the pump.".to_owned(),
+            minutes: 240.0,
+            probability: 0.62,
+            proof: "Pump alone does not build.".to_owned(),
+            now: true,
+            needs_manual: true,
+            caution: "Chocks first.".to_owned(),
+            proved_by: vec!["r1".to_owned()],
+        }),
+        ..Advice::default()
+    })))
+    .await;
+    screen.touch("add-reading").await;
+    screen.touch("add-Charge").await;
+    assert!(screen.text("next-stop").contains("No check that is left"));
+    let repair = screen.text("next-repair");
+    for words in [
+        "Change the pump.",
+        "240\u{202f}min",
+        "62\u{202f}%",
+        "Pump alone does not build.",
+        "Chocks first.",
+        "Charge pressure",
+        "manual",
+    ] {
+        assert!(repair.contains(words), "{words}: {repair}");
     }
 }

@@ -6,13 +6,16 @@
 //! | [`entry`] | what is typed in a reading's field, and what was seen |
 //! | [`group`], [`quick`] | readings by condition; the usual sets |
 //! | [`scale`], [`mark`], [`words`] | how windows, standings and chances are shown |
+//! | [`put_back`] | what has to be put back before a call is closed |
 //! | [`gate`] | precautions that open a hazardous reading |
 //! | [`map`] | the loop drawn with its ports |
 //! | [`causes`] | the ranking |
+//! | [`next`] | the check that tells most, what it would say, the repair |
 //! | [`screen`] | all of it together |
 
 mod add_panel;
 mod alerts;
+mod bands;
 mod causes;
 mod cautions;
 mod change;
@@ -25,11 +28,13 @@ mod entry_modes;
 mod gate;
 mod gate_panel;
 mod group;
+mod hazard;
 mod history;
 mod map;
 mod mark;
 mod new_gauge;
-mod next_panel;
+mod next;
+mod put_back;
 mod quick;
 mod quick_panel;
 mod reading_group;
@@ -37,6 +42,7 @@ mod reading_row;
 mod rig;
 mod scale;
 mod screen;
+mod seen_keys;
 mod seen_panel;
 mod told;
 mod window_scale;

@@ -56,6 +56,11 @@ pub struct ReadingGroupProps {
     pub on_instruments: Callback<Vec<Instrument>>,
 }
 
+/// DOM id of the precautions that stand before a reading.
+pub fn gate_id(reading: &str) -> String {
+    format!("gate-{reading}")
+}
+
 /// The group.
 #[component]
 pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
@@ -138,7 +143,7 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
             { advice(&gates) }
             <ol class="readings">
                 { for readings.iter().map(|(place, reading)| html! { <>
-                    { for gates.iter().filter(|gate| is_first(gate, reading)).map(|gate| panel(props, gate, hold)) }
+                    { for gates.iter().filter(|gate| is_first(gate, reading)).map(|gate| panel(props, gate, hold, &reading.id)) }
                     <ReadingRow
                         key={reading.id.clone()}
                         reading={(*reading).clone()}
@@ -177,9 +182,11 @@ fn new_places(props: &ReadingGroupProps) -> Vec<Stands> {
 }
 
 /// The precautions of a check stand before the first reading that it guards.
-fn panel(props: &ReadingGroupProps, gate: &Gate, hold: Option<(f64, f64)>) -> Html {
+fn panel(props: &ReadingGroupProps, gate: &Gate, hold: Option<(f64, f64)>, first: &str) -> Html {
+    // Somebody who comes for the reading is brought to what must be so before it.
+    let asks = gate.barred.is_some() || !(gate.is_ticked() && gate.fresh);
     html! {
-        <li class="gate-item" key={gate.check.id}>
+        <li class="gate-item" key={gate.check.id} id={asks.then(|| gate_id(first))} tabindex={asks.then_some("-1")}>
             <GatePanel
                 gate={gate.clone()}
                 told={props.told.contains(&gate.check.id)}

@@ -11,9 +11,9 @@ use super::entry;
 use super::entry_field::field_id;
 use super::group::groups;
 use super::map::LoopMap;
-use super::next_panel::NextPanel;
+use super::next::NextPanel;
 use super::quick_panel::QuickPanel;
-use super::reading_group::ReadingGroup;
+use super::reading_group::{ReadingGroup, gate_id};
 use super::reading_row::row_id;
 use super::seen_panel::SeenPanel;
 use super::told::told_before;
@@ -83,6 +83,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 // The row first: the field of a closed reading is not there.
                 focus::to(&row_id(&reading));
                 focus::to(&field_id(&reading));
+                focus::to(&gate_id(&reading));
             }
         });
     }
@@ -154,7 +155,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     updating={props.updating}
                     readings={visit.readings.clone()}
                     prefs={props.prefs.clone()}
-                    on_reading={on_reading}
+                    on_reading={on_reading.clone()}
                 />
             </div>
             <div class="call-map">
@@ -179,9 +180,10 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 <NextPanel
                     assessment={props.assessment.clone()}
                     updating={props.updating}
-                    readings={visit.readings.clone()}
+                    visit={visit.clone()}
                     prefs={props.prefs.clone()}
                     on_change={on_change.clone()}
+                    on_reading={on_reading.clone()}
                 />
                 <QuickPanel readings={visit.readings.clone()} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>

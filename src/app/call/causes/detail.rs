@@ -14,7 +14,10 @@ const MARKS: usize = 4;
 
 /// What serves every member of a set, and what splits them.
 pub fn set(cause: &Cause) -> Html {
-    if cause.ids.len() < 2 || (cause.action.is_empty() && cause.split.is_empty()) {
+    if cause.ids.len() < 2
+        || cause.pair.is_some()
+        || (cause.action.is_empty() && cause.split.is_empty())
+    {
         return Html::default();
     }
     html! {
