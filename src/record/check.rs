@@ -261,6 +261,7 @@ pub(super) fn unit(path: &str, unit: &mut Unit) -> Checked {
         let path = format!("{path}.ports.{}", code_of(port));
         prose(&path, "place", &mut note.place)?;
         line(&path, "adapter", &mut note.adapter)?;
+        line(&path, "access_typed", &mut note.access_typed)?;
         if let Some(minutes) = note.access_minutes {
             access(minutes).map_err(|p| content(format!("{path}.access_minutes"), p))?;
         }

@@ -223,6 +223,7 @@ impl Dice {
                     place: self.lines(20),
                     adapter: self.text(10),
                     access_minutes,
+                    access_typed: self.text(9),
                 },
             );
         }

@@ -6,6 +6,7 @@
 //! | [`entry`] | what is typed in a reading's field, and what was seen |
 //! | [`group`], [`quick`] | readings by condition; the usual sets |
 //! | [`scale`], [`mark`], [`words`] | how windows, standings and chances are shown |
+//! | [`close`] | the end of the call |
 //! | [`put_back`] | what has to be put back before a call is closed |
 //! | [`gate`] | precautions that open a hazardous reading |
 //! | [`map`] | the loop drawn with its ports |
@@ -19,6 +20,7 @@ mod bands;
 mod causes;
 mod cautions;
 mod change;
+mod close;
 mod condition_editor;
 mod condition_parts;
 mod edits;
@@ -30,6 +32,7 @@ mod gate_panel;
 mod group;
 mod hazard;
 mod history;
+mod last_time;
 mod map;
 mod mark;
 mod new_gauge;
@@ -39,6 +42,7 @@ mod quick;
 mod quick_panel;
 mod reading_group;
 mod reading_row;
+mod retake;
 mod rig;
 mod scale;
 mod screen;
@@ -48,4 +52,5 @@ mod told;
 mod window_scale;
 mod words;
 
+pub use last_time::EarlierCalls;
 pub use screen::{CallScreen, CallScreenProps};

@@ -3,9 +3,11 @@
 use super::cautions;
 use super::change::Change;
 use super::condition_editor::ConditionEditor;
+use super::condition_parts::FIELDS;
 use super::entry;
 use super::gate::{self, Gate};
 use super::gate_panel::{GatePanel, advice};
+use super::last_time::EarlierCalls;
 use super::reading_row::ReadingRow;
 use super::words;
 use crate::app::platform::clock;
@@ -46,6 +48,8 @@ pub struct ReadingGroupProps {
     pub unit: Rc<Unit>,
     /// Visit.
     pub visit: Rc<Visit>,
+    /// Earlier calls on the unit.
+    pub earlier: EarlierCalls,
     /// Instruments of the shop.
     pub instruments: Rc<Vec<Instrument>>,
     /// Units.
@@ -90,6 +94,18 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
             .on_change
             .reform(move |condition| Change::Condition(ids.clone(), condition))
     };
+    let texts = props
+        .visit
+        .headings
+        .get(&first)
+        .cloned()
+        .unwrap_or_default();
+    let on_text = {
+        let ids = ids.clone();
+        props
+            .on_change
+            .reform(move |(field, text)| Change::Heading(ids.clone(), field, text))
+    };
     let windows = props
         .assessment
         .as_deref()
@@ -120,6 +136,13 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                     <p class={if props.condition.oil.is_some() { "soft" } else { "group-missing" }}>
                         { words::oil(&props.condition, &props.prefs) }
                     </p>
+                    if !props.editing {
+                        { for FIELDS.iter().filter_map(|(field, name)| texts.get(*field).map(|text| html! {
+                            <p class="group-missing" data-testid={format!("heading-{field}")}>
+                                { format!("Not taken yet, {name}: “{text}”") }
+                            </p>
+                        })) }
+                    }
                 </div>
                 <button
                     type="button"
@@ -137,6 +160,8 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                     condition={props.condition}
                     prefs={props.prefs.clone()}
                     on_change={on_condition}
+                    texts={texts.clone()}
+                    on_text={on_text}
                 />
             }
             { cautions::all(&new_places(props)) }
@@ -150,6 +175,7 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                         number={*place}
                         window={windows.iter().find(|window| window.reading == reading.id).cloned()}
                         retake={retakes.iter().find(|(id, _)| *id == reading.id).map(|(_, why)| why.clone())}
+                        last={props.earlier.of(reading)}
                         closed={gate::closes(&gates, reading)}
                         updating={props.updating}
                         chosen={props.chosen == Some(reading.port)}

@@ -11,7 +11,7 @@ fn answers(group: Group) -> [(Answer, &'static str, &'static str); 4] {
         Group::Complaint | Group::WhenItFails => ("I saw it", "Not so"),
         Group::Look => ("Seen", "Not there"),
         Group::Listen => ("Heard", "Not heard"),
-        Group::Feel => ("Is so", "Not so"),
+        _ => ("Is so", "Not so"),
     };
     [
         (Answer::Seen, "seen", yes),

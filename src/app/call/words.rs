@@ -3,7 +3,7 @@
 use crate::assessment::{Assessment, Cause, Standing, Trust, WindowSource};
 use crate::faults::FaultId;
 use crate::quantity::{self, DecimalMark, Decimals, Kind, Measure, Unit, UnitPrefs};
-use crate::readings::{Condition, Direction, EngineSpeed, Lever, Port};
+use crate::readings::{Condition, Direction, EngineSpeed, Lever, Port, Seen};
 
 /// Narrow no-break space: before a per cent sign and between a figure and its unit.
 const NARROW: char = '\u{202F}';
@@ -185,6 +185,19 @@ pub fn value(port: Port, base: f64, prefs: &UnitPrefs) -> String {
             )
         },
     )
+}
+
+/// What was seen at a port, in words.
+pub fn seen(port: Port, seen: &Seen, prefs: &UnitPrefs) -> String {
+    let value = |measure: Measure| value(port, measure.base(), prefs);
+    match seen {
+        Seen::Value { value: read } => value(*read),
+        Seen::Swing { low, high } => format!("swings, {} to {}", value(*low), value(*high)),
+        Seen::OffScale { top } => format!("over {}", value(*top)),
+        Seen::Nothing => String::from("nothing"),
+        Seen::ShareOf { share, .. } => format!("{} of the other", percent(*share)),
+        Seen::NotPossible { .. } => String::from("not possible"),
+    }
 }
 
 /// A value with the spread around it, printed no finer than the spread allows: `about 9 ±4 bar`.

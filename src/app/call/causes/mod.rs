@@ -175,6 +175,7 @@ fn List(props: &ListProps) -> Html {
                     {place}
                     cause={cause.clone()}
                     trust={assessment.trust.clone()}
+                    advice={assessment.advice.clone()}
                     {verdict}
                     readings={props.readings.clone()}
                     prefs={props.prefs.clone()}
@@ -258,7 +259,8 @@ fn retake(props: &ListProps, id: &str, why: &str) -> Html {
             >
                 { reading.port.words() }
             </button>
-            { ", " }{ words::condition(&reading.condition, &props.prefs) }{ ": " }{ why.to_owned() }
+            // Why stands at the reading.
+            { ", " }{ words::condition(&reading.condition, &props.prefs) }
         </li>
     }
 }

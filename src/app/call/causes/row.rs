@@ -4,6 +4,7 @@ use super::{detail, pair};
 use crate::app::call::words::{self, Verdict};
 use crate::assessment::{Cause, Trust};
 use crate::faults::{self, FaultId};
+use crate::next::Advice;
 use crate::quantity::UnitPrefs;
 use crate::readings::Reading;
 use yew::{Callback, Html, Properties, component, html};
@@ -19,6 +20,8 @@ pub struct CauseRowProps {
     pub trust: Trust,
     /// How far the order can be relied on.
     pub verdict: Verdict,
+    /// What is on offer next: what its ports would show.
+    pub advice: Option<Advice>,
     /// Readings of the visit.
     pub readings: Vec<Reading>,
     /// Units.
@@ -59,8 +62,9 @@ pub fn CauseRow(props: &CauseRowProps) -> Html {
                 <div class="cause-body">
                     { pair::explained(cause, &props.on_reading, &props.readings, &props.prefs) }
                     { detail::set(cause) }
-                    { detail::evidence(cause, &props.on_reading, &props.readings) }
+                    { detail::evidence(cause, &props.on_reading, &props.readings, &props.prefs) }
                     { detail::would_read(cause, &props.readings, &props.prefs) }
+                    { detail::others(cause, props.advice.as_ref(), &props.readings, &props.prefs) }
                     { for cause.ids.iter().map(|id| detail::member(*id, cause)) }
                 </div>
             </details>
