@@ -3,25 +3,27 @@
 #![cfg(not(target_arch = "wasm32"))]
 #![allow(dead_code)] // what only the screen uses
 
-pub use lowside::{assessment, faults, quantity, readings};
+pub use lowside::{assessment, checks, faults, quantity, readings, record};
 
 #[path = "../src/app/call"]
 mod call {
     pub mod bands;
     pub mod group;
+    pub mod put_back;
     pub mod quick;
     pub mod scale;
     pub mod words;
 }
 
 use assessment::{Assessment, Cause, Evidence, Trust};
-use call::{bands, group, quick, scale, words};
+use call::{bands, group, put_back, quick, scale, words};
 use faults::FaultId;
 use proptest::prelude::*;
 use quantity::{Measure, Unit, UnitPrefs};
 use readings::{
     Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading,
 };
+use record::{Answer, Earlier, PutBack, Visit};
 
 fn reading(id: &str, port: Port, condition: Condition) -> Reading {
     Reading {
@@ -33,6 +35,12 @@ fn reading(id: &str, port: Port, condition: Condition) -> Reading {
         typed: String::new(),
         note: String::new(),
     }
+}
+
+fn there(readings: &[Reading]) -> impl Iterator<Item = (Port, &Condition)> + Clone {
+    readings
+        .iter()
+        .map(|reading| (reading.port, &reading.condition))
 }
 
 fn driven(direction: Direction) -> Condition {
@@ -139,16 +147,16 @@ fn readings_of_one_condition_stand_under_one_heading() {
 #[test]
 fn a_quick_set_adds_what_is_missing_and_nothing_twice() {
     for set in quick::SETS {
-        let all = set.missing(&[]);
+        let all = set.missing(there(&[]));
         assert!(!all.is_empty(), "{}", set.id);
         let taken: Vec<Reading> = all
             .iter()
             .enumerate()
             .map(|(place, (port, condition))| reading(&format!("r{place}"), *port, *condition))
             .collect();
-        assert!(set.missing(&taken).is_empty(), "{}", set.id);
+        assert!(set.missing(there(&taken)).is_empty(), "{}", set.id);
         let (_, rest) = taken.split_first().expect("one at least");
-        assert_eq!(set.missing(rest).len(), 1, "{}", set.id);
+        assert_eq!(set.missing(there(rest)).len(), 1, "{}", set.id);
         // A temperature and a speed read off since do not make another reading of it.
         let measured: Vec<Reading> = taken
             .iter()
@@ -160,7 +168,7 @@ fn a_quick_set_adds_what_is_missing_and_nothing_twice() {
                 reading
             })
             .collect();
-        assert!(set.missing(&measured).is_empty(), "{}", set.id);
+        assert!(set.missing(there(&measured)).is_empty(), "{}", set.id);
     }
 }
 
@@ -343,4 +351,89 @@ fn minutes_are_whole_and_never_too_few() {
             said
         );
     }
+}
+
+fn read(port: Port, condition: Condition, bar: f64) -> Reading {
+    let mut reading = reading(&format!("{port:?}"), port, condition);
+    reading.seen = Measure::from_base(bar, quantity::Kind::Pressure)
+        .ok()
+        .map(|value| readings::Seen::Value { value });
+    reading
+}
+
+#[test]
+fn what_was_opened_is_asked_once_however_many_checks_opened_it() {
+    let mut visit = Visit::default();
+    assert!(put_back::lines(&visit).is_empty());
+    // Planned is not opened.
+    visit
+        .readings
+        .push(reading("r1", Port::Charge, Condition::start()));
+    assert!(put_back::lines(&visit).is_empty());
+    // Neutral and driven are two checks on one port.
+    visit.readings = vec![
+        read(Port::Charge, Condition::start(), 24.0),
+        read(Port::Charge, driven(Direction::Forward), 22.0),
+    ];
+    let lines = put_back::lines(&visit);
+    assert_eq!(lines.len(), 1, "{lines:?}");
+    assert_eq!(lines[0].1.len(), 2, "{lines:?}");
+    assert_eq!(put_back::open(&visit), 1);
+
+    let line = lines[0].0.to_owned();
+    let struck = |why: &str| PutBack::Struck(why.to_owned());
+    for (answer, open) in [
+        (struck(" "), 1),
+        (struck("gauge stays"), 0),
+        (PutBack::Done, 0),
+    ] {
+        visit.put_back.insert(line.clone(), answer);
+        assert_eq!(put_back::open(&visit), open);
+    }
+}
+
+#[test]
+fn a_reading_taken_again_or_out_of_reach_opened_what_it_opened() {
+    let mut taken = reading("r1", Port::Charge, Condition::start());
+    taken.seen = Some(readings::Seen::NotPossible {
+        why: "no port".to_owned(),
+    });
+    let mut visit = Visit {
+        readings: vec![taken],
+        ..Visit::default()
+    };
+    assert!(
+        put_back::lines(&visit).is_empty(),
+        "nothing could be opened"
+    );
+    let before = Earlier {
+        seen: read(Port::Charge, Condition::start(), 24.0).seen,
+        ..Earlier::default()
+    };
+    visit.earlier.insert("r1".to_owned(), vec![before]);
+    assert_eq!(put_back::open(&visit), 1);
+}
+
+#[test]
+fn an_answer_tells_of_a_check_only_where_nothing_else_could_have_given_it() {
+    let with = |id: &str, answer: Answer| Visit {
+        observations: [(id.to_owned(), answer)].into(),
+        ..Visit::default()
+    };
+    assert_eq!(put_back::open(&with("metal", Answer::NotSeen)), 1);
+    assert_eq!(put_back::open(&with("metal", Answer::OperatorSays)), 0);
+    for check in checks::all().filter(|check| check.yields.is_empty()) {
+        for id in check.answers {
+            let asked_by = checks::all().filter(|other| other.answers.contains(id));
+            if asked_by.count() > 1 {
+                assert_eq!(put_back::open(&with(id, Answer::Seen)), 0, "{id}");
+            }
+        }
+    }
+    // Marked as made, it counts whatever was found.
+    let visit = Visit {
+        made: vec!["pull-the-shuttle".to_owned()],
+        ..Visit::default()
+    };
+    assert_eq!(put_back::open(&visit), 1);
 }

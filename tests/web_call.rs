@@ -524,6 +524,7 @@ async fn two_causes_together_stand_as_one_row_with_what_each_explains() {
     let screen = Screen::open(Some(told)).await;
     screen.touch("add-reading").await;
     screen.touch("add-Charge").await;
+    screen.touch("cause-open-0").await;
     let row = screen.text("cause-0");
     for words in [
         "Two causes together",
@@ -647,7 +648,7 @@ async fn a_check_without_readings_is_answered_or_marked_on_the_spot() {
     let screen = Screen::open(Some(advised(Advice {
         checks: vec![
             bare("debris", "Look for debris"),
-            bare("pull-the-shuttle", "Pull the shuttle"),
+            bare("prove-the-gauges", "Prove the gauges"),
         ],
         ..Advice::default()
     })))
@@ -657,10 +658,13 @@ async fn a_check_without_readings_is_answered_or_marked_on_the_spot() {
         screen.visit().observations.get("metal"),
         Some(&Answer::NotSeen)
     );
+    // The others are folded.
+    assert!(!screen.there("next-made-1"));
+    screen.touch("next-open-1").await;
     screen.touch("next-made-1").await;
-    assert_eq!(screen.visit().made, ["pull-the-shuttle"]);
-    assert!(screen.text("next-made").contains("Pull the shuttle"));
-    screen.touch("unmade-pull-the-shuttle").await;
+    assert_eq!(screen.visit().made, ["prove-the-gauges"]);
+    assert!(screen.text("next-made").contains("Prove the gauges"));
+    screen.touch("unmade-prove-the-gauges").await;
     assert!(screen.visit().made.is_empty());
 }
 
@@ -675,6 +679,7 @@ async fn stop_checking_and_the_repair_say_what_proves_and_what_must_come_back() 
             probability: 0.62,
             proof: "Pump alone does not build.".to_owned(),
             now: true,
+            waits: String::new(),
             needs_manual: true,
             caution: "Chocks first.".to_owned(),
             proved_by: vec!["r1".to_owned()],

@@ -10,6 +10,8 @@ use crate::rig::{PHONE, Rig};
 const THROTTLE: u32 = 4;
 /// Readings that are typed over, of a demo call with six of them.
 const FIELDS: [&str; 3] = ["value-0", "value-1", "value-3"];
+/// Sets added to it first.
+const SETS: [&str; 4] = ["charge-drive", "knee", "case", "motor-drain"];
 /// Typed key by key, as by a thumb.
 const KEYS: &str = "123.4";
 
@@ -27,8 +29,15 @@ async fn pace() {
     rig.click("load-demo").await;
     rig.by_id("unit-card").await;
     rig.go("/call/demo-v-27").await;
-    rig.wait_until("the advice is there", "document.querySelector('.next-body')")
-        .await;
+    rig.wait_until(
+        "the advice is there",
+        "document.querySelector('.next-body')",
+    )
+    .await;
+    // As many readings as a long call has.
+    for set in SETS {
+        rig.click(&format!("quick-{set}")).await;
+    }
     rig.js(WATCH, vec![]).await;
     rig.cdp(
         "Emulation.setCPUThrottlingRate",

@@ -1,12 +1,11 @@
 //! What must not be overlooked: stop work, and for a screen reader the change of the leading cause.
 
+use super::steady::Answer;
 use super::words::{self, Verdict};
 use crate::app::parts::{Caution, Grade};
-use crate::assessment::Assessment;
 use crate::caution::{self, Stands};
 use crate::faults;
-use crate::record::{Answer, Visit};
-use std::rc::Rc;
+use crate::record::{self, Visit};
 use yew::{Html, Properties, component, html};
 
 /// The observation of a machine that keeps moving with its lever in neutral.
@@ -18,23 +17,23 @@ const STOP_FROM: f64 = 0.2;
 pub fn runs_on(visit: &Visit) -> bool {
     matches!(
         visit.observations.get(RUNS_ON),
-        Some(Answer::Seen | Answer::OperatorSays)
+        Some(record::Answer::Seen | record::Answer::OperatorSays)
     )
 }
 
 /// Properties of [`StopWork`].
 #[derive(Clone, PartialEq, Properties)]
 pub struct StopWorkProps {
-    /// Visit.
-    pub visit: Rc<Visit>,
+    /// It keeps going in neutral.
+    pub runs_on: bool,
     /// Last answer of the engine.
-    pub assessment: Option<Rc<Assessment>>,
+    pub assessment: Option<Answer>,
 }
 
 /// The red panel.
 #[component]
 pub fn StopWork(props: &StopWorkProps) -> Html {
-    if runs_on(&props.visit) {
+    if props.runs_on {
         return html! {
             <Caution grade={Grade::Danger} title="stop work" role="alert" testid="stop-work">
                 { for caution::at(Stands::KeepsGoing).map(|caution| html! { <p>{ caution.text }</p> }) }
@@ -72,7 +71,7 @@ pub fn StopWork(props: &StopWorkProps) -> Html {
 #[derive(Clone, PartialEq, Properties)]
 pub struct LeadStatusProps {
     /// Last answer of the engine.
-    pub assessment: Option<Rc<Assessment>>,
+    pub assessment: Option<Answer>,
     /// A word of the screen itself.
     pub said: String,
 }

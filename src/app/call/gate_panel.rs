@@ -228,7 +228,7 @@ fn held(props: &GatePanelProps) -> Html {
     }
 }
 
-fn seconds_words(seconds: f64, prefs: &UnitPrefs) -> String {
+pub fn seconds_words(seconds: f64, prefs: &UnitPrefs) -> String {
     // Down, never up: this protects.
     let (seconds, places) = if seconds >= 10.0 {
         (seconds.floor(), 0)
@@ -248,7 +248,7 @@ fn seconds_words(seconds: f64, prefs: &UnitPrefs) -> String {
     )
 }
 
-fn rise_words(rise: f64, prefs: &UnitPrefs) -> String {
+pub fn rise_words(rise: f64, prefs: &UnitPrefs) -> String {
     Measure::from_base(rise, Kind::TemperatureDifference)
         .map_or_else(|_| String::from("?"), |rise| prefs.print(rise))
 }

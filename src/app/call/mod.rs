@@ -9,6 +9,7 @@
 //! | [`close`] | the end of the call |
 //! | [`put_back`] | what has to be put back before a call is closed |
 //! | [`gate`] | precautions that open a hazardous reading |
+//! | [`steady`] | what keeps a part from being drawn for nothing |
 //! | [`map`] | the loop drawn with its ports |
 //! | [`causes`] | the ranking |
 //! | [`next`] | the check that tells most, what it would say, the repair |
@@ -48,6 +49,8 @@ mod scale;
 mod screen;
 mod seen_keys;
 mod seen_panel;
+mod steady;
+mod taken;
 mod told;
 mod window_scale;
 mod words;

@@ -14,13 +14,15 @@ pub fn made(visit: &Visit) -> Vec<&'static Check> {
         .filter(|reading| is_taken(visit, reading))
         .filter_map(|reading| checks::for_reading(&reading.condition, reading.port));
     let found = |check: &&'static Check| {
-        // A check that yields readings is known by those; the operator's word opens nothing.
+        // A check that yields readings is known by those; the operator's word opens nothing, and what can be found in
+        // another way tells of no check.
         check.yields.is_empty()
             && check.answers.iter().any(|id| {
-                matches!(
-                    visit.observations.get(*id),
-                    Some(Answer::Seen | Answer::NotSeen)
-                )
+                is_only_found_by(check, id)
+                    && matches!(
+                        visit.observations.get(*id),
+                        Some(Answer::Seen | Answer::NotSeen)
+                    )
             })
     };
     let marked = visit.made.iter().filter_map(|id| checks::find(id));
@@ -30,6 +32,10 @@ pub fn made(visit: &Visit) -> Vec<&'static Check> {
         }
     }
     made
+}
+
+fn is_only_found_by(check: &Check, answer: &str) -> bool {
+    checks::all().all(|other| other.id == check.id || !other.answers.contains(&answer))
 }
 
 /// True where something was opened for it, whatever came of it.

@@ -2,7 +2,7 @@
 //! practice: charge first and on one gauge, loop pressure last and never beyond the stroke that tells.
 
 use super::group::same;
-use crate::readings::{Condition, Direction, Doing, EngineSpeed, Lever, Port, Reading};
+use crate::readings::{Condition, Direction, Doing, EngineSpeed, Lever, Port};
 
 /// A set of readings that belong together.
 #[derive(Clone, Copy, Debug)]
@@ -66,13 +66,16 @@ pub const SETS: [QuickSet; 7] = [
 impl QuickSet {
     /// The readings of the set that are not there yet. Engine speed and temperature typed since do not make another
     /// reading of it: what the machine does, direction, lever and the idle it was set to do.
-    pub fn missing(&self, there: &[Reading]) -> Vec<(Port, Condition)> {
+    pub fn missing<'a>(
+        &self,
+        there: impl Iterator<Item = (Port, &'a Condition)> + Clone,
+    ) -> Vec<(Port, Condition)> {
         (self.readings)()
             .into_iter()
             .filter(|(port, condition)| {
                 !there
-                    .iter()
-                    .any(|reading| reading.port == *port && alike(&reading.condition, condition))
+                    .clone()
+                    .any(|(other, at)| other == *port && alike(at, condition))
             })
             .collect()
     }

@@ -2,15 +2,15 @@
 
 use super::change::Change;
 use super::quick::SETS;
+use super::taken::Taken;
 use crate::app::parts::{Icon, Shape};
-use crate::readings::Reading;
 use yew::{Callback, Html, MouseEvent, Properties, component, html};
 
 /// Properties of [`QuickPanel`].
 #[derive(Clone, PartialEq, Properties)]
 pub struct QuickPanelProps {
     /// Readings there are.
-    pub readings: Vec<Reading>,
+    pub taken: Vec<Taken>,
     /// An edit.
     pub on_change: Callback<Change>,
 }
@@ -23,7 +23,7 @@ pub fn QuickPanel(props: &QuickPanelProps) -> Html {
             <h2 id="quick-title">{ "Usual readings, in order" }</h2>
             <ol class="quick-sets">
                 { for SETS.iter().enumerate().map(|(place, set)| {
-                    let missing = set.missing(&props.readings);
+                    let missing = set.missing(props.taken.iter().map(|taken| (taken.port, &taken.condition)));
                     let is_there = missing.is_empty();
                     let on_change = props.on_change.clone();
                     let on_click = Callback::from(move |_: MouseEvent| on_change.emit(Change::Add(missing.clone())));

@@ -9,9 +9,10 @@ use super::gate::{self, Gate};
 use super::gate_panel::{GatePanel, advice};
 use super::last_time::EarlierCalls;
 use super::reading_row::ReadingRow;
+use super::rig;
+use super::steady::Answer;
 use super::words;
 use crate::app::platform::clock;
-use crate::assessment::Assessment;
 use crate::caution::Stands;
 use crate::quantity::UnitPrefs;
 use crate::readings::instrument::Instrument;
@@ -33,7 +34,7 @@ pub struct ReadingGroupProps {
     /// Opens or closes the heading: the ids that it holds, none to close.
     pub on_edit: Callback<Vec<String>>,
     /// Last answer of the engine.
-    pub assessment: Option<Rc<Assessment>>,
+    pub assessment: Option<Answer>,
     /// True while a newer one is being worked out.
     pub updating: bool,
     /// Minutes since the screen was opened: ticks grow old.
@@ -129,7 +130,7 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
         .as_deref()
         .and_then(|assessment| assessment.hold);
     html! {
-        <section class="panel group" aria-labelledby={title_id.clone()}>
+        <section class={if props.updating { "panel group is-stale" } else { "panel group" }} aria-labelledby={title_id.clone()}>
             <div class="group-head">
                 <div class="group-words">
                     <h3 id={title_id}>{ words::condition(&props.condition, &props.prefs) }</h3>
@@ -177,10 +178,10 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                         retake={retakes.iter().find(|(id, _)| *id == reading.id).map(|(_, why)| why.clone())}
                         last={props.earlier.of(reading)}
                         closed={gate::closes(&gates, reading)}
-                        updating={props.updating}
                         chosen={props.chosen == Some(reading.port)}
                         unit={props.unit.clone()}
-                        visit={props.visit.clone()}
+                        rigged={rig::on_port(reading, &props.visit, &props.instruments)}
+                        before={props.visit.earlier.get(&reading.id).cloned().unwrap_or_default()}
                         instruments={props.instruments.clone()}
                         prefs={props.prefs.clone()}
                         on_change={props.on_change.clone()}

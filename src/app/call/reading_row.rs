@@ -7,14 +7,14 @@ use super::entry_field::EntryField;
 use super::last_time::{self, LastTime};
 use super::mark;
 use super::retake;
-use super::rig::{self, Rig};
+use super::rig::{Rig, Rigged};
 use super::window_scale::WindowScale;
 use crate::app::parts::{Confirm, TextField};
 use crate::assessment::{Standing, Window};
 use crate::quantity::UnitPrefs;
 use crate::readings::instrument::Instrument;
 use crate::readings::{Direction, Reading};
-use crate::record::Visit;
+use crate::record::Earlier;
 use crate::unit::{PortNote, Unit};
 use std::rc::Rc;
 use yew::{AttrValue, Callback, Html, MouseEvent, Properties, component, html, use_state};
@@ -34,14 +34,14 @@ pub struct ReadingRowProps {
     pub last: Option<LastTime>,
     /// Why its field stays closed; none where it is open.
     pub closed: Option<AttrValue>,
-    /// True while a newer answer is being worked out.
-    pub updating: bool,
     /// True where its port was touched on the drawing.
     pub chosen: bool,
     /// Unit.
     pub unit: Rc<Unit>,
-    /// Visit.
-    pub visit: Rc<Visit>,
+    /// Instruments on its port.
+    pub rigged: Rigged,
+    /// What it read before it was taken again.
+    pub before: Vec<Earlier>,
     /// Instruments of the shop.
     pub instruments: Rc<Vec<Instrument>>,
     /// Units.
@@ -68,15 +68,14 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
         .map_or(Standing::Open, |window| window.standing);
     let is_open = entry::is_open(reading);
     let plain = entry::mode(reading) == Mode::Value;
-    let instrument = rig::instrument_of(reading, &props.visit, &props.instruments).cloned();
+    let instrument = props.rigged.current.clone();
     let toggle = {
         let more = more.clone();
         Callback::from(move |_: MouseEvent| more.set(!*more))
     };
     // A reading that was emptied has nothing left that could not fit.
     let doubt = props.retake.as_deref().filter(|_| !is_open);
-    let earlier = props.visit.earlier.get(&reading.id);
-    let earlier = earlier.map(Vec::as_slice).unwrap_or_default();
+    let earlier = props.before.as_slice();
     let class = format!(
         "reading{}{}{}{}",
         if doubt.is_some() { " is-doubtful" } else { "" },
@@ -96,7 +95,7 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
                 if doubt.is_some() {
                     { retake::badge() }
                 } else if !is_open {
-                    <span class={if props.updating { "reading-standing is-updating" } else { "reading-standing" }}>
+                    <span class="reading-standing">
                         { mark::badge(standing) }
                     </span>
                 }
@@ -134,7 +133,7 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
                 number={props.number}
                 short={!is_open && !*more}
                 unit={props.unit.clone()}
-                visit={props.visit.clone()}
+                rigged={props.rigged.clone()}
                 instruments={props.instruments.clone()}
                 prefs={props.prefs.clone()}
                 on_change={props.on_change.clone()}
@@ -148,7 +147,6 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
                     port={reading.port}
                     window={window.clone()}
                     prefs={props.prefs.clone()}
-                    updating={props.updating}
                     full={*more}
                     number={props.number}
                 />

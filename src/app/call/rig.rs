@@ -29,8 +29,8 @@ pub struct RigProps {
     pub short: bool,
     /// Unit: what the port can see.
     pub unit: Rc<Unit>,
-    /// Visit.
-    pub visit: Rc<Visit>,
+    /// What stands on the port.
+    pub rigged: Rigged,
     /// Instruments of the shop.
     pub instruments: Rc<Vec<Instrument>>,
     /// Units.
@@ -41,8 +41,30 @@ pub struct RigProps {
     pub on_instruments: Callback<Vec<Instrument>>,
 }
 
+/// What stands on the port of a reading.
+#[derive(Clone, Debug, Default, PartialEq)]
+pub struct Rigged {
+    /// The instrument that the reading was taken with.
+    pub current: Option<Instrument>,
+    /// Id of the instrument that stands there now.
+    pub stands: Option<String>,
+    /// Other readings were taken at the port.
+    pub read_before: bool,
+}
+
+/// What stands on the port of a reading.
+pub fn on_port(reading: &Reading, visit: &Visit, instruments: &[Instrument]) -> Rigged {
+    Rigged {
+        current: instrument_of(reading, visit, instruments).cloned(),
+        stands: rigging_on(visit, reading.port).map(|rigging| rigging.instrument.clone()),
+        read_before: visit.readings.iter().any(|other| {
+            other.port == reading.port && other.id != reading.id && other.seen.is_some()
+        }),
+    }
+}
+
 /// The instrument that a reading was taken with.
-pub fn instrument_of<'a>(
+fn instrument_of<'a>(
     reading: &Reading,
     visit: &Visit,
     instruments: &'a [Instrument],
@@ -82,8 +104,8 @@ fn fits(instrument: &Instrument, port: Port) -> bool {
 pub fn Rig(props: &RigProps) -> Html {
     let swapped_to = use_state(|| None::<String>);
     let is_new = use_state(|| false);
-    let (port, visit) = (props.reading.port, &props.visit);
-    let current = instrument_of(&props.reading, visit, &props.instruments);
+    let port = props.reading.port;
+    let current = props.rigged.current.as_ref();
     let chosen = current
         .map(|instrument| instrument.id.clone())
         .unwrap_or_default();
@@ -91,14 +113,12 @@ pub fn Rig(props: &RigProps) -> Html {
         let (props, swapped_to, is_new) = (props.clone(), swapped_to.clone(), is_new.clone());
         Callback::from(move |id: String| {
             is_new.set(false);
-            let stands = rigging_on(&props.visit, props.reading.port)
-                .is_some_and(|rigging| rigging.instrument != id);
-            let read_before = props.visit.readings.iter().any(|reading| {
-                reading.port == props.reading.port
-                    && reading.id != props.reading.id
-                    && reading.seen.is_some()
-            });
-            if stands && read_before {
+            let stands = props
+                .rigged
+                .stands
+                .as_ref()
+                .is_some_and(|other| *other != id);
+            if stands && props.rigged.read_before {
                 swapped_to.set(Some(id));
             } else {
                 props.on_change.emit(Change::Rig {

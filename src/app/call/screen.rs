@@ -2,7 +2,7 @@
 //! engine stands beside what it was computed from.
 
 use super::add_panel::AddPanel;
-use super::alerts::{LeadStatus, StopWork};
+use super::alerts::{LeadStatus, StopWork, runs_on};
 use super::causes::Causes;
 use super::cautions;
 use super::change::Change;
@@ -18,6 +18,8 @@ use super::quick_panel::QuickPanel;
 use super::reading_group::{ReadingGroup, gate_id};
 use super::reading_row::row_id;
 use super::seen_panel::SeenPanel;
+use super::steady::{Answer, use_steady};
+use super::taken::Taken;
 use super::told::told_before;
 use crate::app::parts::{Icon, Shape};
 use crate::app::platform::clock;
@@ -104,6 +106,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             }
         })
     };
+    let on_change = use_steady(on_change);
     let on_undo = {
         let edits = edits.clone();
         Callback::from(move |_: MouseEvent| edits.undo())
@@ -122,6 +125,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             }
         })
     };
+    let on_port = use_steady(on_port);
     let on_reading = {
         let (edits, chosen) = (edits.clone(), chosen.clone());
         Callback::from(move |id: String| {
@@ -132,10 +136,15 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             }
         })
     };
+    let on_reading = use_steady(on_reading);
     let on_edit = {
         let editing = editing.clone();
         Callback::from(move |ids: Vec<String>| editing.set(ids))
     };
+    let on_edit = use_steady(on_edit);
+    let on_instruments = use_steady(props.on_instruments.clone());
+    let answer = props.assessment.clone().map(Answer);
+    let taken: Vec<Taken> = props.visit.readings.iter().map(Taken::of).collect();
     let undo = edits.undoable();
     let visit = &props.visit;
     let grouped = groups(&visit.readings, &editing);
@@ -153,11 +162,11 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
         <main class="page" id="main" data-testid="call-screen">
         <h1 class="hidden-text" id="title" tabindex="-1">{ format!("Call on {}", props.unit.name) }</h1>
         <div class="call" data-testid="call" onkeydown={on_key}>
-            <LeadStatus assessment={props.assessment.clone()} said={edits.said()} />
+            <LeadStatus assessment={answer.clone()} said={edits.said()} />
             <div class="call-side">
             <div class="call-causes">
                 <Causes
-                    assessment={props.assessment.clone()}
+                    assessment={answer.clone()}
                     updating={props.updating}
                     readings={visit.readings.clone()}
                     prefs={props.prefs.clone()}
@@ -167,8 +176,8 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             <div class="call-map">
                 <LoopMap
                     ticks={props.unit.ticks.clone()}
-                    readings={visit.readings.clone()}
-                    assessment={props.assessment.clone()}
+                    taken={taken.clone()}
+                    assessment={answer.clone()}
                     chosen={*chosen}
                     {on_port}
                 />
@@ -176,23 +185,32 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             </div>
             <div class="call-main">
                 { closed(visit) }
-                <StopWork visit={visit.clone()} assessment={props.assessment.clone()} />
+                <StopWork runs_on={runs_on(visit)} assessment={answer.clone()} />
                 <nav class="jump" aria-label="On this screen">
-                    { for [("seen", "Seen"), ("next", "Next"), ("quick", "Usual"), ("readings", "Readings"), ("add", "Add"), ("close", "Close")].map(|(id, words)| html! {
+                    { for [("seen", "Seen"), ("next", "Next"), ("quick", "Usual"), ("readings", "Read"), ("add", "Add"), ("close", "Close")].map(|(id, words)| html! {
                         <button key={id} type="button" class="jump-to" onclick={jump(id)}>{ words }</button>
                     }) }
                 </nav>
                 { before_all(visit) }
-                <SeenPanel visit={visit.clone()} class={props.unit.class} on_change={on_change.clone()} />
+                <SeenPanel
+                    complaint={visit.complaint.clone()}
+                    alone={visit.alone}
+                    after_repair={visit.after_repair}
+                    observations={visit.observations.clone()}
+                    class={props.unit.class}
+                    on_change={on_change.clone()}
+                />
                 <NextPanel
-                    assessment={props.assessment.clone()}
+                    assessment={answer.clone()}
                     updating={props.updating}
-                    visit={visit.clone()}
+                    taken={taken.clone()}
+                    observations={visit.observations.clone()}
+                    made={visit.made.clone()}
                     prefs={props.prefs.clone()}
                     on_change={on_change.clone()}
                     on_reading={on_reading.clone()}
                 />
-                <QuickPanel readings={visit.readings.clone()} on_change={on_change.clone()} />
+                <QuickPanel {taken} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
                 { for grouped.into_iter().zip(told).map(|(group, told)| {
                     let first = group.at.first().and_then(|place| visit.readings.get(*place));
@@ -204,7 +222,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                             at={group.at}
                             editing={editing.contains(&first)}
                             on_edit={on_edit.clone()}
-                            assessment={props.assessment.clone()}
+                            assessment={answer.clone()}
                             updating={props.updating}
                             minute={*minute}
                             told={told.checks}
@@ -216,7 +234,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                             instruments={props.instruments.clone()}
                             prefs={props.prefs.clone()}
                             on_change={on_change.clone()}
-                            on_instruments={props.on_instruments.clone()}
+                            on_instruments={on_instruments.clone()}
                         />
                     }
                 }) }
@@ -228,7 +246,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 />
                 <ClosePanel
                     visit={visit.clone()}
-                    assessment={props.assessment.clone()}
+                    assessment={answer}
                     on_change={on_change.clone()}
                 />
                 if let Some(words) = undo {

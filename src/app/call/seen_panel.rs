@@ -3,20 +3,27 @@
 use super::cautions;
 use super::change::Change;
 use super::seen_keys;
+use super::steady::Fold;
 use crate::app::parts::{Choice, Opt, TextField};
 use crate::caution::Stands;
 use crate::observations::{self, Group, Observation};
+use crate::record::Answer;
 use crate::record::limits::TEXT_CHARACTERS;
-use crate::record::{Answer, Visit};
 use crate::unit::MachineClass;
-use std::rc::Rc;
-use yew::{Callback, Html, Properties, component, html, use_state};
+use std::collections::BTreeMap;
+use yew::{Callback, Html, Properties, component, html};
 
 /// Properties of [`SeenPanel`].
 #[derive(Clone, PartialEq, Properties)]
 pub struct SeenPanelProps {
-    /// Visit.
-    pub visit: Rc<Visit>,
+    /// Complaint as typed.
+    pub complaint: String,
+    /// Alone on site.
+    pub alone: Option<bool>,
+    /// Began straight after a repair.
+    pub after_repair: Option<bool>,
+    /// Answers.
+    pub observations: BTreeMap<String, Answer>,
     /// Class of machine: two paths or one.
     pub class: MachineClass,
     /// An edit.
@@ -31,16 +38,15 @@ fn has_two_paths(class: MachineClass) -> bool {
 /// The panel.
 #[component]
 pub fn SeenPanel(props: &SeenPanelProps) -> Html {
-    let visit = &props.visit;
     let yes_no = || vec![Opt::new(true, "Yes", "yes"), Opt::new(false, "No", "no")];
-    let answered = visit.observations.len();
+    let answered = props.observations.len();
     html! {
                 <section class="panel seen" aria-labelledby="seen-title" id="seen" tabindex="-1">
                     <h2 id="seen-title">{ "What was seen" }{ count_of(answered) }</h2>
                     <TextField
                         id="complaint"
                         label="Complaint, in the operator’s words"
-                        value={visit.complaint.clone()}
+                        value={props.complaint.clone()}
                         on_input={props.on_change.reform(Change::Complaint)}
                         lines={true}
                         maxlength={u32::try_from(TEXT_CHARACTERS).unwrap_or(2000)}
@@ -52,7 +58,7 @@ pub fn SeenPanel(props: &SeenPanelProps) -> Html {
                             label="Alone on site?"
                             options={yes_no()}
                             class="is-inline"
-                            value={visit.alone}
+                            value={props.alone}
                             on_change={props.on_change.reform(|answer| Change::Alone(Some(answer)))}
                         />
                         <Choice<bool>
@@ -60,16 +66,16 @@ pub fn SeenPanel(props: &SeenPanelProps) -> Html {
                             label="Began straight after a repair?"
                             options={yes_no()}
                             class="is-inline"
-                            value={visit.after_repair}
+                            value={props.after_repair}
                             on_change={props.on_change.reform(|answer| Change::AfterRepair(Some(answer)))}
                         />
                     </div>
-                    if visit.alone == Some(true) {
+                    if props.alone == Some(true) {
                     { cautions::at(Stands::Alone) }
                 }
     <div class="seen-groups">
                     { for Group::ALL.into_iter().map(|group| html! {
-                        <SeenGroup key={format!("{group:?}")} {group} visit={visit.clone()} class={props.class} on_change={props.on_change.clone()} />
+                        <SeenGroup key={format!("{group:?}")} {group} observations={props.observations.clone()} class={props.class} on_change={props.on_change.clone()} />
                     }) }
                     </div>
                 </section>
@@ -87,7 +93,7 @@ fn count_of(answered: usize) -> Html {
 #[derive(Clone, PartialEq, Properties)]
 struct SeenGroupProps {
     group: Group,
-    visit: Rc<Visit>,
+    observations: BTreeMap<String, Answer>,
     class: MachineClass,
     on_change: Callback<Change>,
 }
@@ -101,28 +107,38 @@ fn SeenGroup(props: &SeenGroupProps) -> Html {
             // An answer that is kept is shown, even where the class was changed since.
             !observation.two_path
                 || has_two_paths(props.class)
-                || props.visit.observations.contains_key(observation.id)
+                || props.observations.contains_key(observation.id)
         })
         .collect();
     let answers = || {
         offered
             .iter()
-            .filter_map(|observation| props.visit.observations.get(observation.id))
+            .filter_map(|observation| props.observations.get(observation.id))
     };
     let yes = answers().filter(|answer| is_yes(**answer)).count();
     let no = answers().count() - yes;
-    let starts_open =
-        use_state(|| props.group == Group::Complaint && props.visit.observations.is_empty());
+    let head = html! { <>
+        <span class="seen-group-name">{ props.group.words() }</span>
+        <span class="count">{ tally(yes, no, offered.len()) }</span>
+    </> };
+    let body = {
+        let props = props.clone();
+        Callback::from(move |()| {
+            html! {
+                <ul class="seen-list">
+                    { for offered.iter().map(|observation| tick(observation, &props)) }
+                </ul>
+            }
+        })
+    };
     html! {
-        <details class="seen-group" open={*starts_open}>
-            <summary data-testid={format!("seen-{:?}", props.group)}>
-                <span class="seen-group-name">{ props.group.words() }</span>
-                <span class="count">{ tally(yes, no, offered.len()) }</span>
-            </summary>
-            <ul class="seen-list">
-                { for offered.iter().map(|observation| tick(observation, props)) }
-            </ul>
-        </details>
+        <Fold
+            {head}
+            {body}
+            is_open={props.group == Group::Complaint && props.observations.is_empty()}
+            class="seen-group"
+            testid={format!("seen-{:?}", props.group)}
+        />
     }
 }
 
@@ -140,7 +156,7 @@ fn is_yes(answer: Answer) -> bool {
 }
 
 fn tick(observation: &'static Observation, props: &SeenGroupProps) -> Html {
-    let given = props.visit.observations.get(observation.id).copied();
+    let given = props.observations.get(observation.id).copied();
     let state = match given {
         Some(answer) if is_yes(answer) => "is-yes",
         Some(_) => "is-no",

@@ -25,9 +25,6 @@ pub struct WindowScaleProps {
     pub window: Window,
     /// Units.
     pub prefs: UnitPrefs,
-    /// True while a newer answer is being worked out.
-    #[prop_or_default]
-    pub updating: bool,
     /// True where everything behind the window is to be told.
     pub full: bool,
     /// End of the test ids.
@@ -52,7 +49,7 @@ pub fn WindowScale(props: &WindowScaleProps) -> Html {
         "Healthy:"
     };
     html! {
-        <div class={if props.updating { "window is-updating" } else { "window" }}>
+        <div class="window">
             if let Some(layout) = layout {
                 { draw(&layout, window, port, prefs, (&low, &high)) }
             }
@@ -63,9 +60,8 @@ pub fn WindowScale(props: &WindowScaleProps) -> Html {
                     <span class="soft">{ "; widened most by " }{ window.widest.clone() }</span>
                 }
                 { "." }
-                if props.updating {
-                    <span class="window-updating">{ " Updating…" }</span>
-                }
+                // Seen while a newer answer is being worked out.
+                <span class="window-updating">{ " Updating…" }</span>
             </p>
             if let Some(remark) = &window.remark {
                 <p class="window-remark">{ remark.clone() }</p>

@@ -94,6 +94,7 @@ fn piece(
     };
     html! {
         <li class={format!("evidence-piece is-{way}")} key={item.of.clone()}>
+            <span class="weight-of">
             <svg class="weight" viewBox="0 0 60 14" width="60" height="14" aria-hidden="true" focusable="false">
                 { for (0..MARKS).map(|place| html! {
                     <circle
@@ -102,7 +103,9 @@ fn piece(
                     />
                 }) }
             </svg>
-            <span><span class="evidence-how">{ how }{ ": " }</span>{ text }</span>
+                <span class="evidence-how">{ how }</span>
+            </span>
+            <span>{ text }</span>
         </li>
     }
 }

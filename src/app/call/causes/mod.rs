@@ -5,6 +5,7 @@ mod detail;
 mod pair;
 mod row;
 
+use super::steady::Answer;
 use super::words::{self, Verdict};
 use crate::app::parts::{Caution, Grade};
 use crate::assessment::{Assessment, Cause};
@@ -12,7 +13,6 @@ use crate::faults::FaultId;
 use crate::quantity::UnitPrefs;
 use crate::readings::Reading;
 use row::CauseRow;
-use std::rc::Rc;
 use yew::{Callback, Html, MouseEvent, Properties, component, html, use_state};
 
 /// Causes named in the strip.
@@ -24,7 +24,7 @@ const LISTED: usize = 6;
 #[derive(Clone, PartialEq, Properties)]
 pub struct CausesProps {
     /// Last answer of the engine.
-    pub assessment: Option<Rc<Assessment>>,
+    pub assessment: Option<Answer>,
     /// True while a newer one is being worked out.
     pub updating: bool,
     /// Readings of the visit.
@@ -77,10 +77,10 @@ pub fn Causes(props: &CausesProps) -> Html {
                 </button>
             </div>
             <div class={if props.updating { "causes-list is-updating" } else { "causes-list" }} id="causes-list">
-                { match props.assessment.as_deref() {
+                { match &props.assessment {
                     Some(assessment) => html! {
                         <List
-                            assessment={Rc::new(assessment.clone())}
+                            assessment={assessment.clone()}
                             readings={props.readings.clone()}
                             prefs={props.prefs.clone()}
                             {on_reading}
@@ -129,7 +129,7 @@ fn key(cause: &Cause) -> String {
 /// Properties of [`List`].
 #[derive(Clone, PartialEq, Properties)]
 struct ListProps {
-    assessment: Rc<Assessment>,
+    assessment: Answer,
     readings: Vec<Reading>,
     prefs: UnitPrefs,
     on_reading: Callback<String>,
@@ -173,9 +173,7 @@ fn List(props: &ListProps) -> Html {
                 <CauseRow
                     key={key(cause)}
                     {place}
-                    cause={cause.clone()}
-                    trust={assessment.trust.clone()}
-                    advice={assessment.advice.clone()}
+                    assessment={assessment.clone()}
                     {verdict}
                     readings={props.readings.clone()}
                     prefs={props.prefs.clone()}

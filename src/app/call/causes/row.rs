@@ -1,10 +1,10 @@
 //! One row of the ranking.
 
 use super::{detail, pair};
+use crate::app::call::steady::{Answer, Fold};
 use crate::app::call::words::{self, Verdict};
-use crate::assessment::{Cause, Trust};
+use crate::assessment::Cause;
 use crate::faults::{self, FaultId};
-use crate::next::Advice;
 use crate::quantity::UnitPrefs;
 use crate::readings::Reading;
 use yew::{Callback, Html, Properties, component, html};
@@ -14,14 +14,10 @@ use yew::{Callback, Html, Properties, component, html};
 pub struct CauseRowProps {
     /// Place in the ranking, from 0.
     pub place: usize,
-    /// The cause, or the set.
-    pub cause: Cause,
-    /// How far the integral behind it can be trusted.
-    pub trust: Trust,
+    /// The answer that it stands in.
+    pub assessment: Answer,
     /// How far the order can be relied on.
     pub verdict: Verdict,
-    /// What is on offer next: what its ports would show.
-    pub advice: Option<Advice>,
     /// Readings of the visit.
     pub readings: Vec<Reading>,
     /// Units.
@@ -33,42 +29,62 @@ pub struct CauseRowProps {
 /// The row: title, probability, and behind it the reasons, the proof and the repair.
 #[component]
 pub fn CauseRow(props: &CauseRowProps) -> Html {
-    let cause = &props.cause;
+    let Some(cause) = props.assessment.causes.get(props.place) else {
+        return Html::default();
+    };
     let told = props.verdict != Verdict::TooLittle;
     let stop = cause
         .ids
         .iter()
         .filter_map(|id| faults::find(*id))
         .any(|fault| fault.stop_work);
+    let head = html! { <>
+        <span class="cause-title">{ title(cause) }</span>
+        if told {
+            <span class="cause-share figure">{ words::chance(cause.probability, &props.assessment.trust) }</span>
+            { bar(cause.probability) }
+        }
+        if stop {
+            <span class="cause-stop">{ "Stop work" }</span>
+        }
+        if cause.ids.len() > 1 && cause.pair.is_none() {
+            <span class="cause-members soft">{ members(&cause.ids) }</span>
+        }
+        if props.place == 0 && told {
+            { lead_proof(cause) }
+        }
+    </> };
+    let inside = {
+        let props = props.clone();
+        Callback::from(move |()| body(&props))
+    };
     html! {
         <li class="cause" data-testid={format!("cause-{}", props.place)}>
-            <details class="cause-fold">
-                <summary class="cause-head">
-                    <span class="cause-title">{ title(cause) }</span>
-                    if told {
-                        <span class="cause-share figure">{ words::chance(cause.probability, &props.trust) }</span>
-                        { bar(cause.probability) }
-                    }
-                    if stop {
-                        <span class="cause-stop">{ "Stop work" }</span>
-                    }
-                    if cause.ids.len() > 1 && cause.pair.is_none() {
-                        <span class="cause-members soft">{ members(&cause.ids) }</span>
-                    }
-                    if props.place == 0 && told {
-                        { lead_proof(cause) }
-                    }
-                </summary>
-                <div class="cause-body">
-                    { pair::explained(cause, &props.on_reading, &props.readings, &props.prefs) }
-                    { detail::set(cause) }
-                    { detail::evidence(cause, &props.on_reading, &props.readings, &props.prefs) }
-                    { detail::would_read(cause, &props.readings, &props.prefs) }
-                    { detail::others(cause, props.advice.as_ref(), &props.readings, &props.prefs) }
-                    { for cause.ids.iter().map(|id| detail::member(*id, cause)) }
-                </div>
-            </details>
+            <Fold
+                {head}
+                body={inside}
+                class="cause-fold"
+                head_class="cause-head"
+                testid={format!("cause-open-{}", props.place)}
+            />
         </li>
+    }
+}
+
+/// Reasons, what the gauges would show, the proof and the repair.
+fn body(props: &CauseRowProps) -> Html {
+    let Some(cause) = props.assessment.causes.get(props.place) else {
+        return Html::default();
+    };
+    html! {
+        <div class="cause-body">
+            { pair::explained(cause, &props.on_reading, &props.readings, &props.prefs) }
+            { detail::set(cause) }
+            { detail::evidence(cause, &props.on_reading, &props.readings, &props.prefs) }
+            { detail::would_read(cause, &props.readings, &props.prefs) }
+            { detail::others(cause, props.assessment.advice.as_ref(), &props.readings, &props.prefs) }
+            { for cause.ids.iter().map(|id| detail::member(*id, cause)) }
+        </div>
     }
 }
 

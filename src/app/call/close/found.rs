@@ -1,6 +1,6 @@
 //! What it was: one cause, two, or none; proved or not.
 
-use super::ClosePanelProps;
+use super::EntryProps;
 use crate::app::call::change::Change;
 use crate::app::parts::{Choice, Opt, Select, TextField};
 use crate::faults::{self, FaultId};
@@ -45,7 +45,7 @@ pub fn words(closing: &Closing) -> String {
 }
 
 /// Causes to choose from: those that lead now, then all others by name.
-fn options(none: &'static str, props: &ClosePanelProps, but: &str) -> Vec<Opt<String>> {
+fn options(none: &'static str, props: &EntryProps, but: &str) -> Vec<Opt<String>> {
     let mut ids: Vec<FaultId> = Vec::new();
     let leading = props
         .assessment
@@ -74,7 +74,7 @@ fn options(none: &'static str, props: &ClosePanelProps, but: &str) -> Vec<Opt<St
 }
 
 /// The questions.
-pub fn asked(closing: &Closing, props: &ClosePanelProps) -> Html {
+pub fn asked(closing: &Closing, props: &EntryProps) -> Html {
     let edit = |set: fn(&mut Closing, String)| {
         let closing = closing.clone();
         props.on_change.reform(move |text: String| {

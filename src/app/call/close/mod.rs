@@ -5,9 +5,9 @@ mod list;
 
 use super::change::Change;
 use super::put_back;
+use super::steady::Answer;
 use crate::app::parts::{Caution, Grade, TextField};
 use crate::app::platform::clock;
-use crate::assessment::Assessment;
 use crate::record::limits::TEXT_CHARACTERS;
 use crate::record::{Closing, PutBack, Visit};
 use std::rc::Rc;
@@ -19,7 +19,7 @@ pub struct ClosePanelProps {
     /// The visit.
     pub visit: Rc<Visit>,
     /// Last answer of the engine: its leading causes stand first in the list.
-    pub assessment: Option<Rc<Assessment>>,
+    pub assessment: Option<Answer>,
     /// An edit.
     pub on_change: Callback<Change>,
 }
@@ -38,16 +38,35 @@ pub fn ClosePanel(props: &ClosePanelProps) -> Html {
                 Some(closing) => closed(closing, open, props),
                 None => html! { <>
                     { list::shown(visit, &props.on_change) }
-                    { entry(open, props) }
+                    <Entry
+                        {open}
+                        closing={visit.closing.clone().unwrap_or_default()}
+                        assessment={props.assessment.clone()}
+                        on_change={props.on_change.clone()}
+                    />
                 </> },
             } }
         </section>
     }
 }
 
+/// Properties of [`Entry`].
+#[derive(Clone, PartialEq, Properties)]
+struct EntryProps {
+    /// Lines that are not answered for.
+    open: usize,
+    /// What is entered so far.
+    closing: Closing,
+    /// Last answer of the engine.
+    assessment: Option<Answer>,
+    /// An edit.
+    on_change: Callback<Change>,
+}
+
 /// What is entered, and the button.
-fn entry(open: usize, props: &ClosePanelProps) -> Html {
-    let closing = props.visit.closing.clone().unwrap_or_default();
+#[component]
+fn Entry(props: &EntryProps) -> Html {
+    let (open, closing) = (props.open, &props.closing);
     let text = |set: fn(&mut Closing, String)| {
         let closing = closing.clone();
         props.on_change.reform(move |text: String| {
@@ -63,7 +82,7 @@ fn entry(open: usize, props: &ClosePanelProps) -> Html {
     html! {
         <div class="close-part stack">
             <h3>{ "What it was" }</h3>
-            { found::asked(&closing, props) }
+            { found::asked(closing, props) }
             <TextField
                 id="close-done"
                 label="What was done"

@@ -5,13 +5,14 @@ mod plan;
 mod symbols;
 
 use super::mark;
+use super::steady::Answer;
+use super::taken::Taken;
 use super::words;
 use crate::assessment::{Assessment, Standing};
-use crate::readings::{Port, Reading};
+use crate::readings::Port;
 use crate::unit::Ticks;
 pub use plan::ports;
 use plan::{Fitted, Label, Spot};
-use std::rc::Rc;
 use yew::{Callback, Html, KeyboardEvent, MouseEvent, Properties, component, html, use_state};
 
 /// Half the width of the touch area round a port, units of the drawing: 44 px or more on a phone 360 px wide.
@@ -22,10 +23,10 @@ const HALF_TOUCH: f64 = 29.0;
 pub struct LoopMapProps {
     /// What the unit has.
     pub ticks: Ticks,
-    /// Readings taken.
-    pub readings: Vec<Reading>,
+    /// Readings there are.
+    pub taken: Vec<Taken>,
     /// Last answer of the engine.
-    pub assessment: Option<Rc<Assessment>>,
+    pub assessment: Option<Answer>,
     /// Port whose readings are open.
     pub chosen: Option<Port>,
     /// A port was touched.
@@ -42,7 +43,7 @@ pub struct PortState {
 }
 
 /// The state of a port.
-pub fn state(port: Port, readings: &[Reading], assessment: Option<&Assessment>) -> PortState {
+pub fn state(port: Port, readings: &[Taken], assessment: Option<&Assessment>) -> PortState {
     let gravity = |standing: &Standing| match standing {
         Standing::Open => 0,
         Standing::Within => 1,
@@ -120,12 +121,12 @@ pub fn LoopMap(props: &LoopMapProps) -> Html {
                 <svg class="loop-map-drawing" viewBox={view} role="group" aria-label="Closed loop with its gauge ports">
                     { circuit::draw(&props.ticks) }
                     { for spots.iter().map(|spot| {
-                        let state = state(spot.port, &props.readings, assessment);
+                        let state = state(spot.port, &props.taken, assessment);
                         port(spot, state, props.chosen == Some(spot.port), &props.on_port)
                     }) }
                 </svg>
                 <ul class="loop-map-others" aria-label="Read elsewhere">
-                    { for elsewhere.into_iter().map(|port| other(port, state(port, &props.readings, assessment), &props.on_port)) }
+                    { for elsewhere.into_iter().map(|port| other(port, state(port, &props.taken, assessment), &props.on_port)) }
                 </ul>
             </div>
         </section>

@@ -3,11 +3,12 @@
 
 use super::NextPanelProps;
 use crate::app::call::bands::{self, Axis};
+use crate::app::call::steady::Fold;
 use crate::app::call::words;
 use crate::next::{Foretold, Offer, Would};
 use crate::quantity::UnitPrefs;
 use crate::readings::Port;
-use yew::{Html, html};
+use yew::{Callback, Html, html};
 
 /// Readings drawn at once; the rest stands behind a fold.
 const DRAWN: usize = 1;
@@ -24,17 +25,23 @@ pub fn shown(offer: &Offer, props: &NextPanelProps) -> Html {
     if first.is_empty() {
         return Html::default();
     }
+    let others = {
+        let rest: Vec<Foretold> = rest.iter().map(|foretold| (*foretold).clone()).collect();
+        let prefs = props.prefs.clone();
+        Callback::from(move |()| {
+            html! { <div>{ for rest.iter().map(|foretold| drawn(foretold, &prefs)) }</div> }
+        })
+    };
     html! {
         <div class="told" data-testid={format!("told-{}", offer.id)}>
             <h4>{ "Before the gauge goes on: what it would read" }</h4>
             { for first.iter().map(|foretold| drawn(foretold, &props.prefs)) }
             if !rest.is_empty() {
-                <details class="advice">
-                    <summary>
-                        { if rest.len() == 1 { String::from("The other reading of it") } else { format!("The other {} readings of it", rest.len()) } }
-                    </summary>
-                    { for rest.iter().map(|foretold| drawn(foretold, &props.prefs)) }
-                </details>
+                <Fold
+                    head={html! { { if rest.len() == 1 { String::from("The other reading of it") } else { format!("The other {} readings of it", rest.len()) } } }}
+                    body={others}
+                    class="advice"
+                />
             }
             <p class="soft small">{ "Band: 8 times in 10, gauge included. Mark: most likely." }</p>
         </div>

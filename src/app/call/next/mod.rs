@@ -6,23 +6,28 @@ mod offer;
 mod repair;
 
 use super::change::Change;
+use super::steady::Answer;
+use super::taken::Taken;
 use crate::app::parts::{Caution, Grade};
-use crate::assessment::Assessment;
 use crate::next::{Advice, Offer};
 use crate::quantity::UnitPrefs;
-use crate::record::Visit;
-use std::rc::Rc;
+use crate::record;
+use std::collections::BTreeMap;
 use yew::{Callback, Html, Properties, component, html};
 
 /// Properties of [`NextPanel`].
 #[derive(Clone, PartialEq, Properties)]
 pub struct NextPanelProps {
     /// The assessment, with its advice once it is there.
-    pub assessment: Option<Rc<Assessment>>,
+    pub assessment: Option<Answer>,
     /// The advice belongs to readings that have changed since.
     pub updating: bool,
-    /// The visit.
-    pub visit: Rc<Visit>,
+    /// Readings there are.
+    pub taken: Vec<Taken>,
+    /// Observations answered.
+    pub observations: BTreeMap<String, record::Answer>,
+    /// Checks marked as made.
+    pub made: Vec<String>,
     /// Units.
     pub prefs: UnitPrefs,
     /// An edit.
@@ -53,7 +58,7 @@ pub fn NextPanel(props: &NextPanelProps) -> Html {
 
 fn shown(advice: &Advice, props: &NextPanelProps) -> Html {
     // What was made already has nothing more to say today.
-    let is_made = |offer: &&Offer| props.visit.made.contains(&offer.id);
+    let is_made = |offer: &&Offer| props.made.contains(&offer.id);
     let made: Vec<&Offer> = advice.checks.iter().filter(is_made).collect();
     let left: Vec<&Offer> = advice.checks.iter().filter(|o| !is_made(o)).collect();
     let (best, others) = match left.split_first() {

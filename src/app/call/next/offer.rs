@@ -4,14 +4,17 @@
 use super::{NextPanelProps, foretold};
 use crate::app::call::change::Change;
 use crate::app::call::gate::{self, GATED_FROM};
+use crate::app::call::gate_panel::{rise_words, seconds_words};
 use crate::app::call::quick::alike;
+use crate::app::call::steady::Fold;
+use crate::app::call::taken::Taken;
 use crate::app::call::{hazard, seen_keys, words};
 use crate::app::parts::{Caution, Grade, Icon, Shape};
 use crate::checks::{self, Check};
-use crate::next::Offer;
+use crate::next::{Hold, Offer};
 use crate::observations::{self, Observation};
-use crate::readings::{Condition, Doing, Port, Reading};
-use yew::{Html, MouseEvent, html};
+use crate::readings::{Condition, Doing, Port};
+use yew::{Callback, Html, MouseEvent, html};
 
 /// Observations asked in the open; more stand behind a fold.
 const ASKED: usize = 3;
@@ -33,18 +36,22 @@ pub fn best(offer: &Offer, props: &NextPanelProps) -> Html {
 
 /// Another check: its line, and the rest behind it.
 pub fn other(place: usize, offer: &Offer, props: &NextPanelProps) -> Html {
+    let head = html! { <>
+        <span class="next-head">
+            <span class="next-name">{ offer.title.clone() }</span>
+            <span class="next-minutes figure">{ words::minutes(offer.minutes) }</span>
+        </span>
+        { hazard::mark(offer.hazard) }
+    </> };
+    let inside = {
+        let (offer, props) = (offer.clone(), props.clone());
+        Callback::from(
+            move |()| html! { <div class="next-folded">{ body(place, &offer, &props) }</div> },
+        )
+    };
     html! {
         <li class="next-check" key={offer.id.clone()} data-testid={format!("next-{place}")}>
-            <details class="next-fold">
-                <summary data-testid={format!("next-open-{place}")}>
-                    <span class="next-head">
-                        <span class="next-name">{ offer.title.clone() }</span>
-                        <span class="next-minutes figure">{ words::minutes(offer.minutes) }</span>
-                    </span>
-                    { hazard::mark(offer.hazard) }
-                </summary>
-                <div class="next-folded">{ body(place, offer, props) }</div>
-            </details>
+            <Fold {head} body={inside} class="next-fold" testid={format!("next-open-{place}")} />
         </li>
     }
 }
@@ -71,6 +78,7 @@ fn body(place: usize, offer: &Offer, props: &NextPanelProps) -> Html {
         }
         { foretold::shown(offer, props) }
         { for known.map(|known| before(known, offer)) }
+        { for offer.hold.map(|hold| held(hold, props)) }
         { take(place, offer, props) }
         { for known.map(|known| answer(place, known, offer, props)) }
         { for known.map(how) }
@@ -132,15 +140,29 @@ fn before(known: &'static Check, offer: &Offer) -> Html {
     }
 }
 
+/// For a held machine: how long, and up to where.
+fn held(hold: Hold, props: &NextPanelProps) -> Html {
+    html! {
+        <p class="gate-hold">
+            { "Stop at " }
+            <strong class="figure">{ words::value(Port::LoopA, hold.stop_at, &props.prefs) }</strong>
+            { ". At full stroke " }
+            <strong class="figure">{ seconds_words(hold.seconds, &props.prefs) }</strong>
+            { " at most: the oil heats by about " }
+            <strong class="figure">{ rise_words(hold.rise, &props.prefs) }</strong>
+            { " each second." }
+        </p>
+    }
+}
+
 /// One touch puts the readings of the check below, in its conditions.
 fn take(place: usize, offer: &Offer, props: &NextPanelProps) -> Html {
     if offer.foretold.is_empty() {
         return Html::default();
     }
-    let there = |port: Port, condition: &Condition| -> Option<&Reading> {
+    let there = |port: Port, condition: &Condition| -> Option<&Taken> {
         props
-            .visit
-            .readings
+            .taken
             .iter()
             .find(|reading| reading.port == port && alike(&reading.condition, condition))
     };
@@ -156,7 +178,7 @@ fn take(place: usize, offer: &Offer, props: &NextPanelProps) -> Html {
             .foretold
             .iter()
             .filter_map(|foretold| there(foretold.port, &foretold.condition))
-            .find(|reading| reading.seen.is_none())
+            .find(|reading| !reading.is_read)
             .map(|reading| reading.id.clone());
         let Some(first) = first else {
             return Html::default();
@@ -211,25 +233,32 @@ fn answer(place: usize, known: &'static Check, offer: &Offer, props: &NextPanelP
     if asked.is_empty() {
         return made;
     }
-    let one = |observation: &&'static Observation| {
-        let given = props.visit.observations.get(observation.id).copied();
+    let on_change = props.on_change.clone();
+    let observations = props.observations.clone();
+    let one = move |observation: &&'static Observation| {
+        let given = observations.get(observation.id).copied();
         html! {
             <li class="next-ask" key={observation.id}>
-                { seen_keys::ask(observation, given, &format!("next-{place}"), &props.on_change) }
+                { seen_keys::ask(observation, given, &format!("next-{place}"), &on_change) }
             </li>
         }
     };
     let open = if known.yields.is_empty() { ASKED } else { 0 };
     let (first, rest) = asked.split_at(open.min(asked.len()));
+    let more = {
+        let (one, rest) = (one.clone(), rest.to_vec());
+        Callback::from(move |()| html! { <ul class="next-asks">{ for rest.iter().map(&one) }</ul> })
+    };
     html! { <>
         if !first.is_empty() {
-            <ul class="next-asks">{ for first.iter().map(one) }</ul>
+            <ul class="next-asks">{ for first.iter().map(&one) }</ul>
         }
         if !rest.is_empty() {
-            <details class="advice">
-                <summary>{ format!("Seen at it: {} to answer", rest.len()) }</summary>
-                <ul class="next-asks">{ for rest.iter().map(one) }</ul>
-            </details>
+            <Fold
+                head={html! { { format!("Seen at it: {} to answer", rest.len()) } }}
+                body={more}
+                class="advice"
+            />
         }
         if offer.foretold.is_empty() && !known.yields.is_empty() {
             { made }

@@ -33,6 +33,9 @@ pub fn shown(offer: &RepairOffer, props: &NextPanelProps) -> Html {
             if !offer.caution.is_empty() {
                 <Caution grade={Grade::Caution} class="small-caution"><p>{ offer.caution.clone() }</p></Caution>
             }
+            if !offer.waits.is_empty() {
+                <p class="next-waits" data-testid="next-waits">{ offer.waits.clone() }</p>
+            }
             if offer.needs_manual {
                 <p>{ "Only as the unit’s manual says." }</p>
             }
@@ -50,7 +53,7 @@ fn back(offer: &RepairOffer, props: &NextPanelProps) -> Html {
     let off: Vec<_> = offer
         .proved_by
         .iter()
-        .filter_map(|id| props.visit.readings.iter().find(|r| r.id == *id))
+        .filter_map(|id| props.taken.iter().find(|r| r.id == *id))
         .collect();
     if off.is_empty() {
         return Html::default();
