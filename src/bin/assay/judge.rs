@@ -75,6 +75,7 @@ impl Judge {
             pairs: self.pairs,
             ..Belief::default()
         };
+        if crate::world::same() { return Belief { fineness: std::env::var("FINE").ok().and_then(|s| s.parse().ok()).unwrap_or(14), rounds: std::env::var("ROUNDS").ok().and_then(|s| s.parse().ok()).unwrap_or(2),  wider:1.0, discrepancy: if self.ranker==Ranker::Best {1.0} else {0.0}, wrong: 1e-6, swapped: 0.0, ..own }; }
         match self.ranker {
             Ranker::Own => own,
             Ranker::Best => Belief {
@@ -95,7 +96,7 @@ impl Judge {
         let data = gather_with(unit, &case.visit.readings, &[], &[], self.belief());
         let mut latents = unit_latents(unit);
         condition_latents(unit, &data.conditions, &mut latents);
-        if self.ranker == Ranker::Best {
+        if self.ranker == Ranker::Best && !crate::world::same() {
             for (p, sd) in TILTED {
                 latents.one(p, sd / wider());
             }
@@ -103,13 +104,13 @@ impl Judge {
         let size = builds(unit)
             .first()
             .map_or(1.0, |b| lowside::machine::base(b)[Param::PumpDisp as usize] / 75.0);
-        if self.ranker == Ranker::Best {
+        if self.ranker == Ranker::Best && !crate::world::same() {
             for (p, least, most) in TURBULENT {
                 latents.one(p, size * (most - least) / 12f64.sqrt() / wider());
             }
         }
         let mut bench = Bench::new(builds(unit), latents, &data);
-        if self.ranker == Ranker::Best {
+        if self.ranker == Ranker::Best && !crate::world::same() {
             bench.adjust(|theta| {
                 for (p, least, most) in TURBULENT {
                     theta[p as usize] += 0.5 * (least + most) * size;

@@ -79,7 +79,7 @@ fn run(
         for (judge, score) in judges.iter().zip(&mut scores) {
             let r = judge.rank(&c);
             score.add(&c.faults, &r);
-            if score.is_miss(&c.faults, &r) && std::env::var_os("ASSAY_TELL").is_some() {
+            if r[0].0 != c.faults && r[0].1 > 0.85 && std::env::var_os("ASSAY_TELL").is_some() {
                 tell(&c, &r);
             }
         }
@@ -100,7 +100,10 @@ fn ranking() {
     for (words, sloppy) in [
         ("clean", Sloppiness::CLEAN),
         ("3 % wrong, sides 1/15", Sloppiness::USUAL),
-    ] {
+    ]
+    .into_iter()
+    .filter(|(words, _)| std::env::var("ASSAY_NOTES").is_ok_and(|n| !words.starts_with(&n)) == false)
+    {
         for set in ReadingSet::EACH
             .into_iter()
             .filter(|s| only.as_ref().is_none_or(|o| *o == format!("{s:?}")))

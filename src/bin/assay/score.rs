@@ -6,7 +6,7 @@ use lowside::math;
 use std::collections::BTreeMap;
 
 /// Equal bins of the leader's probability for the calibration table.
-const BINS: usize = 8;
+const BINS: usize = 5;
 
 /// Scores of one ranker over many cases.
 #[derive(Clone, Default)]
