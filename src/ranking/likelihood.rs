@@ -61,10 +61,7 @@ pub fn fit(data: &Data, p: &Prediction, centre: &[f64], swap_prior: f64) -> Opti
     let shares: Vec<f64> = joint.iter().map(|j| math::exp(j - log)).collect();
     let without = (0..data.data.len())
         .map(|k| {
-            let terms: Vec<f64> = all
-                .iter()
-                .map(|(prior, f)| prior + f.without[k])
-                .collect();
+            let terms: Vec<f64> = all.iter().map(|(prior, f)| prior + f.without[k]).collect();
             math::ln_sum_exp(&terms)
         })
         .collect();
@@ -151,10 +148,9 @@ fn swap_orders(data: &Data) -> Vec<Vec<Against>> {
         })
         .collect();
     // Directions can only be told where both were taken.
-    let both = directions
-        .iter()
-        .zip(&data.data)
-        .any(|(a, d)| matches!(a, Against::Other(_)) && !data.conditions[d.condition].doing.is_neutral());
+    let both = directions.iter().zip(&data.data).any(|(a, d)| {
+        matches!(a, Against::Other(_)) && !data.conditions[d.condition].doing.is_neutral()
+    });
     if both {
         vec![sides, directions]
     } else {
@@ -162,12 +158,7 @@ fn swap_orders(data: &Data) -> Vec<Vec<Against>> {
     }
 }
 
-fn branch(
-    data: &Data,
-    p: &Prediction,
-    centre: &[f64],
-    order: Option<&[Against]>,
-) -> Option<Fit> {
+fn branch(data: &Data, p: &Prediction, centre: &[f64], order: Option<&[Against]>) -> Option<Fit> {
     let Split { joint, tails } = split(data);
     let n = joint.len();
     let c = p.columns;
@@ -212,7 +203,8 @@ fn branch(
             + p.loose[*k];
         spread[*k] = variance.sqrt();
         let inside = math::ln_normal_cdf((expected(*k) - d.t) / variance.sqrt());
-        tail_logs[*k] = math::ln_sum_exp(&[math::ln(1.0 - doubted) + inside, math::ln(doubted) - 0.7]);
+        tail_logs[*k] =
+            math::ln_sum_exp(&[math::ln(1.0 - doubted) + inside, math::ln(doubted) - 0.7]);
         log += tail_logs[*k];
     }
     let groups = group_members(data, &joint);

@@ -191,7 +191,7 @@ fn brute_force(bench: &Bench, data: &Data, fault: &Fault, draw: &mut Normals) ->
             .position(|c| *c >= x)
             .unwrap_or(all.len() - 1);
         let node = Node {
-        place: None,
+            place: None,
             quantile: all[i].quantile + all[i].half * (2.0 * draw.unit() - 1.0),
             ..all[i]
         };

@@ -7,7 +7,6 @@ use super::swing::Swings;
 use crate::circuit::{Network, Param, Params, Scale, Shown, State};
 use crate::faults::Fault;
 use crate::machine::{Build, Latents, apply, base, layout_for, scattered};
-use crate::math;
 use crate::readings::Port;
 
 /// Everything that predictions need, made once for an assessment.

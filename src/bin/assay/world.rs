@@ -70,7 +70,6 @@ fn one_of<T: Copy>(draw: &mut Normals, items: &[T]) -> T {
 
 /// Chance that a profile leaves a tick open that it could have told.
 const OPEN: f64 = 0.3;
-fn open() -> f64 { if same() {0.0} else {OPEN} }
 
 /// A real unit, its figures as its plate and manual say.
 fn unit(draw: &mut Normals) -> Unit {
@@ -139,10 +138,10 @@ fn unit(draw: &mut Normals) -> Unit {
 /// The unit as its profile declares it: the builder did not always look whether it flushes or has a limiter.
 fn declared(real: &Unit, draw: &mut Normals) -> Unit {
     let mut out = real.clone();
-    if draw.unit() < open() {
+    if draw.unit() < OPEN {
         out.ticks.flushing = Tick::Unknown;
     }
-    if draw.unit() < open() {
+    if draw.unit() < OPEN {
         out.ticks.limiter = Tick::Unknown;
     }
     out
@@ -272,10 +271,8 @@ impl Hidden {
     }
 }
 
-pub fn same() -> bool { std::env::var_os("ASSAY_SAME").is_some() }
 /// Student-like scatter: a normal with now and then a wider one.
 fn heavy(draw: &mut Normals) -> f64 {
-    if same() { return draw.normal(); }
     let k = if draw.unit() < TAIL_SHARE {
         TAIL_WIDTH
     } else {
@@ -334,7 +331,7 @@ impl Machine {
         let scatter = unit_latents(&real).0.iter().map(|_| heavy(draw)).collect();
         let tilt = TILTED
             .iter()
-            .map(|(p, sd)| (*p, if same() {1.0} else {math::exp(sd * draw.normal())}))
+            .map(|(p, sd)| (*p, math::exp(sd * draw.normal())))
             .collect();
         let seats = draw.unit();
         let turbulent = TURBULENT
@@ -345,7 +342,7 @@ impl Machine {
                 } else {
                     seats
                 };
-                (*p, if same() {0.0} else {least + (most - least) * u})
+                (*p, least + (most - least) * u)
             })
             .collect();
         let unit = declared(&real, draw);
@@ -419,7 +416,11 @@ impl Machine {
         let key = if own {
             format!("{words} {condition:?}")
         } else {
-            format!("{words} {:?} {:?}", condition.doing, condition.oil.map(|o| o.place))
+            format!(
+                "{words} {:?} {:?}",
+                condition.doing,
+                condition.oil.map(|o| o.place)
+            )
         };
         let key = match words {
             "low idle" | "high idle" | "tachometer" => words.to_string(),
