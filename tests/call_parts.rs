@@ -7,6 +7,7 @@ pub use lowside::{assessment, faults, quantity, readings};
 
 #[path = "../src/app/call"]
 mod call {
+    pub mod bands;
     pub mod group;
     pub mod quick;
     pub mod scale;
@@ -14,7 +15,7 @@ mod call {
 }
 
 use assessment::{Assessment, Cause, Evidence, Trust};
-use call::{group, quick, scale, words};
+use call::{bands, group, quick, scale, words};
 use faults::FaultId;
 use proptest::prelude::*;
 use quantity::{Measure, Unit, UnitPrefs};
@@ -292,4 +293,54 @@ fn heavier_evidence_has_more_marks() {
         .to_vec();
     assert_eq!(marks, [0, 1, 2, 3, 4]);
     assert_eq!(words::weight(f64::NAN).0, 0);
+}
+
+#[test]
+fn a_scale_of_bands_begins_and_ends_on_round_figures() {
+    let axis = bands::axis(&[(14.2, 18.5), (21.0, 22.4)]).expect("finite");
+    assert_eq!(axis.ticks(), [10.0, 15.0, 20.0, 25.0]);
+    assert_eq!(axis.decimals(), 0);
+    assert!((axis.place(20.0) - 200.0 / 3.0).abs() < 1e-9);
+    let small = bands::axis(&[(0.31, 0.42), (0.4, 0.55)]).expect("finite");
+    assert_eq!(small.decimals(), 1);
+    // Nothing at all under every cause still makes a scale.
+    assert!(bands::axis(&[(0.0, 0.0)]).expect("finite").ticks().len() > 1);
+    assert!(bands::axis(&[]).is_none());
+    assert!(bands::axis(&[(f64::NAN, 1.0)]).is_none());
+}
+
+proptest! {
+    #[test]
+    fn bands_lie_on_their_scale(spans in prop::collection::vec((-800.0..800.0_f64, 0.0..400.0_f64), 1..6)) {
+        let spans: Vec<(f64, f64)> = spans.into_iter().map(|(low, width)| (low, low + width)).collect();
+        let axis = bands::axis(&spans).expect("finite");
+        let ticks = axis.ticks();
+        prop_assert!((2..=8).contains(&ticks.len()), "{ticks:?}");
+        for (low, high) in spans {
+            let (left, width) = axis.band(low, high);
+            prop_assert!(left >= 0.0 && width > 0.0 && left + width <= 100.0 + 1e-9);
+            // The band covers what it stands for.
+            prop_assert!(left <= axis.place(low) + 1e-9 && left + width >= axis.place(high) - 1e-9);
+            prop_assert!(ticks[0] <= low + 1e-9 && ticks[ticks.len() - 1] >= high - 1e-9);
+        }
+    }
+}
+
+#[test]
+fn minutes_are_whole_and_never_too_few() {
+    for (minutes, said) in [
+        (0.4, "1"),
+        (1.0, "1"),
+        (3.2, "4"),
+        (40.0, "40"),
+        (f64::NAN, "?"),
+    ] {
+        assert_eq!(
+            words::minutes(minutes)
+                .chars()
+                .take_while(|c| c.is_ascii_digit() || *c == '?')
+                .collect::<String>(),
+            said
+        );
+    }
 }

@@ -5,13 +5,14 @@ use std::cell::RefCell;
 use std::rc::Rc;
 use std::time::Duration;
 
-use lowside::app::call::CallScreen;
-use lowside::assessment::{Assessment, Cause, Evidence};
+use lowside::app::call::{CallScreen, EarlierCalls};
+use lowside::assessment::{Assessment, Cause, Evidence, Pair};
 use lowside::faults::FaultId;
-use lowside::quantity::UnitPrefs;
+use lowside::next::{Advice, Foretold, Offer, RepairOffer, Would};
+use lowside::quantity::{Kind, Measure, UnitPrefs};
 use lowside::readings::instrument::{Instrument, usual_instruments};
-use lowside::readings::{Doing, Port, Seen};
-use lowside::record::Visit;
+use lowside::readings::{Condition, Doing, EngineSpeed, Port, Reading, Seen};
+use lowside::record::{Answer, Visit};
 use lowside::unit::Unit;
 use wasm_bindgen_test::{wasm_bindgen_test, wasm_bindgen_test_configure};
 use web_sys::wasm_bindgen::JsCast;
@@ -27,6 +28,7 @@ type Last = Rc<RefCell<Visit>>;
 struct HolderProps {
     last: Kept,
     assessment: Option<Rc<Assessment>>,
+    earlier: EarlierCalls,
 }
 
 /// [`Last`], equal to itself alone.
@@ -62,6 +64,7 @@ fn Holder(props: &HolderProps) -> Html {
             instruments={(*instruments).clone()}
             prefs={UnitPrefs::metric()}
             assessment={props.assessment.clone()}
+            earlier={props.earlier.clone()}
             updating={false}
             {on_visit}
             on_unit={Callback::noop()}
@@ -78,6 +81,15 @@ struct Screen {
 
 impl Screen {
     async fn open(assessment: Option<Assessment>) -> Screen {
+        Self::open_after(assessment, Visit::default(), Vec::new()).await
+    }
+
+    /// A screen on a visit that is there already, after these earlier ones.
+    async fn open_after(
+        assessment: Option<Assessment>,
+        visit: Visit,
+        earlier: Vec<Visit>,
+    ) -> Screen {
         let document = web_sys::window()
             .and_then(|window| window.document())
             .expect("a page");
@@ -88,10 +100,11 @@ impl Screen {
         let root = document.create_element("div").expect("an element");
         root.set_class_name("call-bench");
         body.append_child(&root).expect("room");
-        let last: Last = Rc::default();
+        let last: Last = Rc::new(RefCell::new(visit));
         let props = HolderProps {
             last: Kept(last.clone()),
             assessment: assessment.map(Rc::new),
+            earlier: EarlierCalls(earlier.into_iter().map(Rc::new).collect()),
         };
         yew::Renderer::<Holder>::with_root_and_props(root.clone(), props).render();
         let screen = Screen { root, last };
@@ -490,4 +503,386 @@ async fn a_cause_not_listed_asks_for_gauge_port_and_condition() {
     for word in ["gauge", "port", "condition"] {
         assert!(text.contains(word), "{text}");
     }
+}
+
+#[wasm_bindgen_test]
+async fn two_causes_together_stand_as_one_row_with_what_each_explains() {
+    let mut pair = cause(FaultId::PumpWorn, "Pump and motor worn", 0.7, Some(1.4));
+    pair.ids = vec![FaultId::PumpWorn, FaultId::MotorWorn];
+    pair.shares = Vec::new();
+    pair.pair = Some(Pair {
+        titles: ["Pump worn".to_owned(), "Motor worn".to_owned()],
+        explains: [vec!["r1".to_owned()], vec!["weak-hot".to_owned()]],
+    });
+    let told = Assessment {
+        causes: vec![
+            pair,
+            cause(FaultId::OilLow, "Oil level low", 0.1, Some(-1.0)),
+        ],
+        ..Assessment::default()
+    };
+    let screen = Screen::open(Some(told)).await;
+    screen.touch("add-reading").await;
+    screen.touch("add-Charge").await;
+    let row = screen.text("cause-0");
+    for words in [
+        "Two causes together",
+        "Pump worn",
+        "Motor worn",
+        "70\u{202f}%",
+    ] {
+        assert!(row.contains(words), "{words}: {row}");
+    }
+    assert!(!row.contains("Alike in every reading"), "{row}");
+    // Each explains its own: a reading by port and condition, an observation by its words.
+    let sides = screen.text("pair");
+    assert!(sides.contains("Charge pressure"), "{sides}");
+    assert!(sides.contains("Good cold, weak hot"), "{sides}");
+    // Both are proved and put right, each by itself.
+    for id in [FaultId::PumpWorn, FaultId::MotorWorn] {
+        let fault = lowside::faults::find(id).expect("in the catalogue");
+        assert!(
+            row.contains(fault.proof) && row.contains(fault.repair),
+            "{id:?}"
+        );
+    }
+    assert_eq!(screen.text("verdict"), "so far");
+}
+
+/// An offer of charge pressure both ways, wheels clear.
+fn offer(id: &str, title: &str, hazard: u8) -> Offer {
+    let condition = Condition {
+        doing: Doing::Free,
+        ..Condition::start()
+    };
+    let would = |id: FaultId, title: &str, low: f64, high: f64| Would {
+        id,
+        title: title.to_owned(),
+        value: (low + high) / 2.0,
+        low,
+        high,
+    };
+    let foretold = |condition: Condition| Foretold {
+        port: Port::Charge,
+        condition,
+        would: vec![
+            would(FaultId::PumpWorn, "Pump worn", 14.0, 16.0),
+            would(FaultId::MotorWorn, "Motor worn", 19.0, 22.0),
+        ],
+    };
+    // As it comes from the worker.
+    serde_json::from_value(serde_json::json!({
+        "id": id,
+        "title": title,
+        "bits": 0.8,
+        "minutes": 4.4,
+        "hazard": hazard,
+        "why": "Tells worn pump from worn motor.",
+        "foretold": [foretold(condition), foretold(condition.reversed())],
+    }))
+    .expect("an offer")
+}
+
+fn advised(advice: Advice) -> Assessment {
+    Assessment {
+        causes: vec![cause(FaultId::PumpWorn, "Pump worn", 0.6, Some(1.0))],
+        advice: Some(advice),
+        ..Assessment::default()
+    }
+}
+
+#[wasm_bindgen_test]
+async fn the_best_check_says_why_and_what_it_would_read_and_its_readings_are_one_touch_away() {
+    let screen = Screen::open(Some(advised(Advice {
+        checks: vec![
+            offer("charge-both-ways", "Charge both ways", 2),
+            offer("pressure-build-up", "Staged build-up", 3),
+        ],
+        held_back: vec![("Plateau".to_owned(), "Not alone on site.".to_owned())],
+        ..Advice::default()
+    })))
+    .await;
+    let best = screen.text("next-0");
+    for words in [
+        "Charge both ways",
+        "5\u{202f}min",
+        "take care",
+        "Tells worn pump from worn motor.",
+        "Pump worn",
+        "14.0 to 16.0\u{202f}bar",
+        "19.0 to 22.0\u{202f}bar",
+        "Put back",
+        "must be so first",
+    ] {
+        assert!(best.contains(words), "{words}: {best}");
+    }
+    // A hazard of two is not told in the words of three.
+    assert!(!best.contains("danger"), "{best}");
+    assert!(screen.text("next-1").contains("danger"));
+    assert!(screen.text("next-held").contains("Not alone on site."));
+    screen.touch("next-add-0").await;
+    let readings = screen.visit().readings;
+    assert_eq!(readings.len(), 2);
+    assert!(
+        readings
+            .iter()
+            .all(|r| r.port == Port::Charge && r.condition.doing == Doing::Free)
+    );
+    // Its precautions stand before the field, which is closed until they are ticked.
+    assert!(screen.there("gate-charge-both-ways"));
+    assert!(!screen.there("value-0"));
+    screen.tick_all("charge-both-ways").await;
+    assert!(screen.there("value-0"));
+    // A second touch adds nothing twice.
+    screen.touch("next-add-0").await;
+    assert_eq!(screen.visit().readings.len(), 2);
+}
+
+#[wasm_bindgen_test]
+async fn a_check_without_readings_is_answered_or_marked_on_the_spot() {
+    let bare = |id: &str, title: &str| Offer {
+        foretold: Vec::new(),
+        ..offer(id, title, 1)
+    };
+    let screen = Screen::open(Some(advised(Advice {
+        checks: vec![
+            bare("debris", "Look for debris"),
+            bare("pull-the-shuttle", "Pull the shuttle"),
+        ],
+        ..Advice::default()
+    })))
+    .await;
+    screen.touch("next-0-metal-not-seen").await;
+    assert_eq!(
+        screen.visit().observations.get("metal"),
+        Some(&Answer::NotSeen)
+    );
+    screen.touch("next-made-1").await;
+    assert_eq!(screen.visit().made, ["pull-the-shuttle"]);
+    assert!(screen.text("next-made").contains("Pull the shuttle"));
+    screen.touch("unmade-pull-the-shuttle").await;
+    assert!(screen.visit().made.is_empty());
+}
+
+#[wasm_bindgen_test]
+async fn stop_checking_and_the_repair_say_what_proves_and_what_must_come_back() {
+    let screen = Screen::open(Some(advised(Advice {
+        stop: Some("No check that is left can change the order.".to_owned()),
+        repair: Some(RepairOffer {
+            id: FaultId::PumpWorn,
+            repair: "Change the pump.".to_owned(),
+            minutes: 240.0,
+            probability: 0.62,
+            proof: "Pump alone does not build.".to_owned(),
+            now: true,
+            needs_manual: true,
+            caution: "Chocks first.".to_owned(),
+            proved_by: vec!["r1".to_owned()],
+        }),
+        ..Advice::default()
+    })))
+    .await;
+    screen.touch("add-reading").await;
+    screen.touch("add-Charge").await;
+    assert!(screen.text("next-stop").contains("No check that is left"));
+    let repair = screen.text("next-repair");
+    for words in [
+        "Change the pump.",
+        "240\u{202f}min",
+        "62\u{202f}%",
+        "Pump alone does not build.",
+        "Chocks first.",
+        "Charge pressure",
+        "manual",
+    ] {
+        assert!(repair.contains(words), "{words}: {repair}");
+    }
+}
+
+#[wasm_bindgen_test]
+async fn a_reading_that_does_not_fit_says_so_and_is_taken_again_with_one_touch() {
+    let mut told = advised(Advice::default());
+    told.trust.retake = vec![("r1".to_owned(), "Far from what the others say.".to_owned())];
+    let screen = Screen::open(Some(told)).await;
+    screen.touch("add-reading").await;
+    screen.touch("add-Charge").await;
+    // Nothing read yet: nothing that could not fit.
+    assert!(!screen.there("does-not-fit"));
+    screen.type_in("value-0", "45 bar").await;
+    assert_eq!(screen.text("does-not-fit"), "does not fit");
+    assert!(
+        screen
+            .text("retake-0")
+            .contains("Far from what the others say.")
+    );
+
+    // It reads the same: the value stands, and that it was looked at again is known.
+    screen.touch("same-again-0").await;
+    assert_eq!(bar(screen.seen(0)), Some(45.0));
+    assert_eq!(screen.visit().earlier["r1"].len(), 1);
+    assert!(screen.text("retake-0").contains("second gauge"));
+
+    // Read anew: the field is empty, what it read stands beside it.
+    screen.touch("take-again-0").await;
+    assert_eq!(screen.seen(0), None);
+    assert_eq!(screen.find::<HtmlInputElement>("value-0").value(), "");
+    assert!(
+        screen.text("before-0").contains("45.0\u{202f}bar"),
+        "{}",
+        screen.text("before-0")
+    );
+    assert!(!screen.there("retake-0"));
+    screen.type_in("value-0", "24").await;
+    let earlier = &screen.visit().earlier["r1"];
+    assert_eq!(bar(earlier[1].seen.clone()), Some(45.0));
+    assert_eq!(earlier[1].typed, "45 bar");
+
+    screen.touch("undo").await;
+    screen.touch("undo").await;
+    assert_eq!(bar(screen.seen(0)), Some(45.0));
+}
+
+#[wasm_bindgen_test]
+async fn a_call_closes_only_when_everything_is_put_back_or_struck_out_with_a_reason() {
+    let screen = Screen::open(None).await;
+    assert!(!screen.there("put-back"));
+    screen.touch("quick-charge-neutral").await;
+    assert!(!screen.there("put-back"), "nothing was opened yet");
+    screen.type_in("value-0", "24").await;
+    assert!(screen.text("put-back").contains("Charge port plugged"));
+    let close = || {
+        screen
+            .find::<HtmlElement>("close-call")
+            .has_attribute("disabled")
+    };
+    assert!(close());
+    screen.touch("put-back-0").await;
+    assert!(!close());
+    // The port is opened once more: the tick lapses.
+    screen.type_in("value-1", "25").await;
+    assert!(close());
+
+    screen.touch("strike-0").await;
+    assert!(close(), "no reason yet");
+    screen
+        .type_in("strike-why-0", "gauge stays for tomorrow")
+        .await;
+    assert!(!close());
+
+    screen.pick("close-cause", "charge-pump-worn").await;
+    screen.touch("close-proved-yes").await;
+    let fill = |testid: &'static str, text: &'static str| {
+        let area: web_sys::HtmlTextAreaElement = screen.find(testid);
+        area.set_value(text);
+        area
+    };
+    screen
+        .fire(
+            &fill("close-proof", "Return flow low at both speeds"),
+            "input",
+        )
+        .await;
+    screen
+        .fire(&fill("close-done", "Charge pump changed"), "input")
+        .await;
+    screen.type_in("close-parts", "Charge pump, seals").await;
+    assert!(
+        screen.visit().closed.is_none(),
+        "what is entered is kept while it is open"
+    );
+    screen.touch("close-call").await;
+    let closed = screen.visit().closed.expect("closed");
+    assert_eq!(closed.cause, "charge-pump-worn");
+    assert!(closed.is_proved && !closed.when.is_empty());
+    assert_eq!(closed.parts, "Charge pump, seals");
+    let told = screen.text("close");
+    for words in [
+        "Charge pump worn",
+        "proved",
+        "Return flow low at both speeds",
+        "Charge pump changed",
+        "gauge stays for tomorrow",
+    ] {
+        assert!(told.contains(words), "{words}: {told}");
+    }
+    assert!(screen.there("call-closed"));
+
+    screen.touch("reopen-call").await;
+    assert!(screen.visit().closed.is_none());
+    assert_eq!(
+        screen.visit().closing.map(|closing| closing.parts),
+        Some("Charge pump, seals".to_owned())
+    );
+}
+
+#[wasm_bindgen_test]
+async fn the_same_reading_of_an_earlier_call_stands_beside_the_field() {
+    let last = Visit {
+        id: "v-before".to_owned(),
+        opened: "2025-03-03T08:00:00Z".to_owned(),
+        readings: vec![Reading {
+            id: "r1".to_owned(),
+            port: Port::Charge,
+            condition: Condition::start(),
+            rigging: String::new(),
+            seen: Measure::from_base(21.5, Kind::Pressure)
+                .ok()
+                .map(|value| Seen::Value { value }),
+            typed: "21.5".to_owned(),
+            note: String::new(),
+        }],
+        ..Visit::default()
+    };
+    let screen = Screen::open_after(None, Visit::default(), vec![last]).await;
+    screen.touch("add-reading").await;
+    screen.touch("add-Charge").await;
+    let told = screen.text("last-time-0");
+    assert!(
+        told.contains("21.5\u{202f}bar") && told.contains("3 Mar 2025"),
+        "{told}"
+    );
+    screen.type_in("value-0", "17.2").await;
+    assert!(screen.text("last-time-0").contains("80\u{202f}%"));
+    // As a share it cannot be entered, and it says why.
+    screen.touch("share-0").await;
+    assert!(screen.text("share-last-0").contains("stands in the record"));
+    // Another port has no last time.
+    screen.touch("add-reading").await;
+    screen.touch("add-PumpCase").await;
+    assert!(!screen.there("last-time-1"));
+    screen.touch("share-1").await;
+    assert!(screen.text("share-last-1").contains("no earlier call"));
+}
+
+#[wasm_bindgen_test]
+async fn text_in_a_heading_that_is_no_figure_comes_back_after_a_reload() {
+    let screen = Screen::open(None).await;
+    screen.touch("quick-charge-neutral").await;
+    screen.touch("condition-0").await;
+    screen.touch("cond-r1-engine-read").await;
+    screen.type_in("cond-r1-speed", "about 14oo").await;
+    screen.type_in("cond-r1-oil", "warm").await;
+    let kept = screen.visit();
+    assert_eq!(kept.headings["r1"]["engine"], "about 14oo");
+    assert_eq!(kept.headings["r1"]["oil"], "warm");
+
+    let screen = Screen::open_after(None, kept, Vec::new()).await;
+    assert!(screen.text("heading-engine").contains("about 14oo"));
+    screen.touch("condition-0").await;
+    assert_eq!(
+        screen.find::<HtmlInputElement>("cond-r1-speed").value(),
+        "about 14oo"
+    );
+    assert_eq!(
+        screen.find::<HtmlInputElement>("cond-r1-oil").value(),
+        "warm"
+    );
+    // Once they are figures, nothing is kept beside them.
+    screen.type_in("cond-r1-speed", "1400").await;
+    screen.type_in("cond-r1-oil", "52").await;
+    assert!(screen.visit().headings.is_empty());
+    assert!(matches!(
+        screen.visit().readings[0].condition.engine,
+        EngineSpeed::Measured(_)
+    ));
 }

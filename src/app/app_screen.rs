@@ -7,7 +7,7 @@ use wasm_bindgen::JsCast;
 use web_sys::StorageEvent;
 use yew::{Callback, Html, component, html, use_effect_with, use_memo, use_mut_ref, use_reducer};
 
-use super::call::CallScreen;
+use super::call::{CallScreen, EarlierCalls};
 use super::deed::{Deed, Snapshot};
 use super::hands::Hands;
 use super::persist::Keeper;
@@ -194,6 +194,7 @@ fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
                             key={id.clone()}
                             unit={unit.clone()}
                             visit={visit.clone()}
+                            earlier={EarlierCalls(state.visits_before(visit))}
                             instruments={state.instruments.clone()}
                             prefs={state.settings.units.clone()}
                             {assessment}

@@ -1,12 +1,18 @@
 //! A reading that a check yields: port and condition, without the temperature of the day.
 
+use crate::quantity::{Kind, Measure};
 use crate::readings::{Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Port};
+
+/// Engine speed (rpm) of held checks: 1200 to 1500 is common practice.
+const MIDDLE: f64 = 1500.0;
 
 /// Idle that a check is made at.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Idle {
     /// Low idle.
     Low,
+    /// 1500 rpm: for held checks, that want neither idle.
+    Middle,
     /// High idle.
     High,
 }
@@ -89,6 +95,8 @@ impl Yield {
             lever: self.lever,
             engine: match self.idle {
                 Idle::Low => EngineSpeed::LowIdle,
+                Idle::Middle => Measure::from_base(MIDDLE, Kind::RotationalSpeed)
+                    .map_or(EngineSpeed::LowIdle, EngineSpeed::Measured),
                 Idle::High => EngineSpeed::HighIdle,
             },
             oil,

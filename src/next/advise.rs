@@ -1,37 +1,30 @@
 //! The advice for a visit: checks, repair, stop.
 
-use super::mixture::{Outcome, by_table, outcomes, yes_or_no};
-use super::probe::{Forecasts, forecast};
-use super::{Advice, Foretold, Offer, Would, gate, outcomes as parts, repair, words};
+use super::foretell::foretold;
+use super::probe::forecast;
+use super::repair::{self, CheckFirst};
+use super::worth::{Known, USEFUL, Worth, open_the_way, share_set_ups, worth};
+use super::{Advice, Hold, Offer, gate, rig};
 use crate::assessment::Assessment;
 use crate::checks::{self, Check};
 use crate::faults::{self, FaultId};
 use crate::machine::{builds, condition_latents, unit_latents};
 use crate::math;
 use crate::observations;
-use crate::ranking::{Bench, Heavy, gather, untransform, weigh};
+use crate::ranking::{Bench, Heavy, gather, hold_time, weigh};
 use crate::readings::instrument::Instrument;
+use crate::readings::{Doing, EngineSpeed, Lever};
 use crate::record::Visit;
-use crate::unit::Unit;
+use crate::unit::{FigureId, Unit};
 
-/// Information (bits) under which a check has nothing left to say.
-const USEFUL: f64 = 0.03;
-/// Share of the sum of several answers' information that is counted: they say part of the same.
-const TOGETHER: f64 = 0.6;
+/// Probability of the leading cause from which it may be time to stop checking.
+const LEADS: f64 = 0.9;
+/// Chance of another leader after any check under which checking has come to its end.
+const HARDLY: f64 = 0.05;
 /// Checks offered.
 const OFFERED: usize = 4;
 /// Nodes that forecasts are made over.
 const NODES: usize = 90;
-/// Causes whose readings are foretold.
-const FORETOLD: usize = 4;
-
-/// What a candidate check is worth.
-struct Worth {
-    bits: f64,
-    minutes: f64,
-    after: f64,
-    why: String,
-}
 
 /// Advice for a visit whose assessment is at hand.
 pub fn advise(
@@ -56,23 +49,40 @@ pub fn advise(
     let heavy = weigh(&bench, &data, unit.sides).heavy;
     let (ids, prior) = causes(assessment);
     let (heavy, weights, of_cause) = weighted(heavy, &ids, &prior);
-    let candidates: Vec<&Check> = checks::all()
-        .filter(|c| gate::possible(unit, visit, c))
+    let candidates: Vec<&'static Check> = checks::all()
+        .filter(|c| rig::possible(unit, visit, c))
         .collect();
     let forecasts = forecast(unit, visit, instruments, &data, &heavy, &candidates);
-    let worths: Vec<Option<Worth>> = candidates
+    let jobs = repair::jobs(assessment, &ids);
+    let known = Known {
+        unit,
+        visit,
+        ids: &ids,
+        prior: &prior,
+        jobs: &jobs,
+        forecasts: &forecasts,
+        weights: &weights,
+        of_cause: &of_cause,
+    };
+    let mut worths: Vec<Option<Worth>> = candidates
         .iter()
         .enumerate()
-        .map(|(i, check)| {
-            worth(
-                unit, visit, i, check, &forecasts, &weights, &of_cause, &ids, &prior,
-            )
+        .map(|(i, check)| worth(&known, i, check))
+        .collect();
+    let waits: Vec<Option<gate::Waits>> = candidates
+        .iter()
+        .map(|c| gate::waits(visit, assessment, c))
+        .collect();
+    share_set_ups(&known, &candidates, &mut worths);
+    open_the_way(&candidates, &waits, &mut worths);
+    let mut order: Vec<usize> = (0..candidates.len())
+        .filter(|i| {
+            worths[*i]
+                .as_ref()
+                .is_some_and(|w| w.bits > USEFUL || w.opens)
         })
         .collect();
-    let mut order: Vec<usize> = (0..candidates.len())
-        .filter(|i| worths[*i].as_ref().is_some_and(|w| w.bits > USEFUL))
-        .collect();
-    let rate = |i: &usize| worths[*i].as_ref().map_or(0.0, |w| w.bits / w.minutes);
+    let rate = |i: &usize| worths[*i].as_ref().map_or(0.0, |w| w.rate);
     order.sort_by(|a, b| rate(b).total_cmp(&rate(a)).then(a.cmp(b)));
     let mut advice = Advice::default();
     let lower_left = order
@@ -80,13 +90,11 @@ pub fn advise(
         .any(|i| gate::hazard(candidates[*i]) < checks::HIGHEST_HAZARD);
     order.retain(|i| {
         let check = candidates[*i];
-        if gate::hazard(check) < checks::HIGHEST_HAZARD {
-            return true;
-        }
-        let reason = if lower_left {
+        let unsafe_yet = lower_left && gate::hazard(check) == checks::HIGHEST_HAZARD;
+        let reason = if unsafe_yet {
             Some("A safer check can still tell something: that first.".to_string())
         } else {
-            gate::held_back(visit, assessment, check)
+            waits[*i].as_ref().map(|w| w.why.clone())
         };
         match reason {
             Some(why) => {
@@ -96,12 +104,15 @@ pub fn advise(
             None => true,
         }
     });
-    let best_after = order
+    let quickest = order
         .iter()
         .filter_map(|i| worths[*i].as_ref())
-        .map(|w| w.after)
-        .min_by(f64::total_cmp);
-    advice.repair = repair::best(&ids, &prior, visit, assessment, best_after);
+        .min_by(|a, b| a.after.total_cmp(&b.after))
+        .map(|w| CheckFirst {
+            outcomes: &w.outcomes,
+            minutes: w.minutes,
+        });
+    advice.repair = repair::best(visit, assessment, &ids, &jobs, &prior, quickest.as_ref());
     for i in order.iter().take(OFFERED) {
         if let Some(w) = &worths[*i] {
             advice.checks.push(Offer {
@@ -110,15 +121,60 @@ pub fn advise(
                 bits: w.bits,
                 minutes: w.minutes,
                 hazard: gate::hazard(candidates[*i]),
-                why: w.why.clone(),
+                why: match w.serves {
+                    Some(next) => format!("{} It also opens the way to “{next}”.", w.why),
+                    None => w.why.clone(),
+                },
+                hold: hold(unit, candidates[*i]),
                 foretold: foretold(*i, &forecasts, &weights, &of_cause, &ids, &prior),
             });
         }
     }
-    if advice.checks.is_empty() {
-        advice.stop = Some(stop_words(&ids, &prior, !advice.held_back.is_empty()));
+    // What can still change the order, whatever it costs, keeps the search open.
+    let open = worths
+        .iter()
+        .flatten()
+        .map(|w| w.changes)
+        .fold(0.0, f64::max);
+    if advice.checks.is_empty() || (prior.iter().any(|p| *p >= LEADS) && open < HARDLY) {
+        advice.stop = Some(stop_words(
+            &ids,
+            &prior,
+            advice.checks.is_empty() && !advice.held_back.is_empty(),
+        ));
     }
     advice
+}
+
+/// Share of the plate setting at which the staged build-up stops first. Common practice.
+const STOP_FIRST: f64 = 0.6;
+
+/// How long, and up to what pressure, a check holds the machine; none where it holds nothing.
+fn hold(unit: &Unit, check: &Check) -> Option<Hold> {
+    let held = check.yields.iter().filter(|y| y.doing == Doing::Held);
+    let figure = |id| {
+        unit.known(id)
+            .unwrap_or_else(|| unit.class.spread(id).value)
+    };
+    let rpm = held
+        .clone()
+        .map(|y| match y.condition(None).engine {
+            EngineSpeed::LowIdle => figure(FigureId::LowIdle),
+            EngineSpeed::HighIdle => figure(FigureId::HighIdle),
+            EngineSpeed::Measured(m) => m.base(),
+        })
+        .fold(0.0, f64::max);
+    if rpm <= 0.0 {
+        return None;
+    }
+    let (seconds, rise) = hold_time(unit, rpm);
+    let full = held.clone().any(|y| y.lever == Lever::Full);
+    let setting = figure(FigureId::LoopRelief);
+    Some(Hold {
+        seconds,
+        rise,
+        stop_at: if full { setting } else { STOP_FIRST * setting },
+    })
 }
 
 fn stop_words(ids: &[FaultId], prior: &[f64], held_back: bool) -> String {
@@ -132,22 +188,39 @@ fn stop_words(ids: &[FaultId], prior: &[f64], held_back: bool) -> String {
         .and_then(|(id, _)| faults::find(*id));
     match lead {
         Some(f) if !f.proof.is_empty() => format!(
-            "No check that is left can change the order. It is proved by: {}",
+            "No check that is left is likely to change what leads. It is proved by: {}",
             f.proof
         ),
-        _ => "No check that is left can change the order.".to_string(),
+        _ => "No check that is left is likely to change what leads.".to_string(),
     }
 }
 
-/// Causes with their probabilities, members of sets apart.
+/// Causes with their probabilities, members of sets apart. Two causes at work together leave half of their joint probability
+/// with each: either of them is worth proving.
 fn causes(assessment: &Assessment) -> (Vec<FaultId>, Vec<f64>) {
-    let mut ids = Vec::new();
-    let mut prior = Vec::new();
-    for c in &assessment.causes {
-        for (id, share) in c.ids.iter().zip(&c.shares) {
-            ids.push(*id);
-            prior.push(*share);
+    let mut ids: Vec<FaultId> = Vec::new();
+    let mut prior: Vec<f64> = Vec::new();
+    let mut add = |id: FaultId, share: f64| match ids.iter().position(|i| *i == id) {
+        Some(i) => prior[i] += share,
+        None => {
+            ids.push(id);
+            prior.push(share);
         }
+    };
+    for c in &assessment.causes {
+        if c.pair.is_some() {
+            for id in &c.ids {
+                add(*id, c.probability / c.ids.len() as f64);
+            }
+        } else {
+            for (id, share) in c.ids.iter().zip(&c.shares) {
+                add(*id, *share);
+            }
+        }
+    }
+    let total: f64 = prior.iter().sum();
+    if total > 0.0 {
+        prior.iter_mut().for_each(|p| *p /= total);
     }
     (ids, prior)
 }
@@ -189,141 +262,23 @@ fn weighted(
     )
 }
 
-#[allow(clippy::too_many_arguments)] // private; the parts of one estimate
-fn worth(
-    unit: &Unit,
-    visit: &Visit,
-    index: usize,
-    check: &Check,
-    forecasts: &Forecasts,
-    weights: &[f64],
-    of_cause: &[usize],
-    ids: &[FaultId],
-    prior: &[f64],
-) -> Option<Worth> {
-    let minutes = gate::minutes(unit, visit, check);
-    let mut best: Option<(f64, Vec<Outcome>, Option<String>)> = None;
-    let mut bits = 0.0;
-    let mut take = |gain: f64, out: Vec<Outcome>, why: Option<String>, share: f64| {
-        bits += gain * share;
-        if best.as_ref().is_none_or(|(b, _, _)| gain > *b) {
-            best = Some((gain, out, why));
-        }
-    };
-    let f = forecasts.of(index, weights, of_cause);
-    if !f.is_empty() {
-        let own: Vec<f64> = (0..ids.len())
-            .map(|i| f.iter().filter(|n| n.cause == i).map(|n| n.weight).sum())
-            .collect();
-        let (out, gain) = outcomes(&f, &own, 77 + index as u64);
-        take(gain, out, words::by_readings(&f, ids, prior), 1.0);
-    }
-    for answer in check
-        .answers
-        .iter()
-        .filter(|a| !visit.observations.contains_key(**a))
-    {
-        if let Some(o) = observations::find(answer) {
-            let p: Vec<f64> = ids
-                .iter()
-                .map(|id| observations::probability(o, *id))
-                .collect();
-            let (out, gain) = yes_or_no(&p, prior);
-            take(
-                gain,
-                out,
-                Some(format!("Answers: {}.", o.words.to_lowercase())),
-                TOGETHER,
-            );
-        }
-    }
-    let lists = parts::of(check.id);
-    if !lists.is_empty() {
-        let (out, gain) = partition(lists, ids, prior);
-        take(gain, out, words::by_outcome(lists, ids, prior), TOGETHER);
-    }
-    let (_, out, why) = best?;
-    Some(Worth {
-        bits,
-        minutes,
-        after: repair::expected_after_check(ids, &out, minutes),
-        why: why.unwrap_or_else(|| check.separates.to_string()),
-    })
-}
+#[cfg(test)]
+mod tests {
+    use super::*;
 
-/// A check whose outcome is one of several lists of causes, or nothing found.
-fn partition(lists: &[&[FaultId]], ids: &[FaultId], prior: &[f64]) -> (Vec<Outcome>, f64) {
-    let n = lists.len() + 1;
-    let own = |id: &FaultId| lists.iter().position(|l| l.contains(id)).unwrap_or(n - 1);
-    let chance = |id: &FaultId, out: usize| {
-        if own(id) == out {
-            parts::RELIABLE
-        } else {
-            (1.0 - parts::RELIABLE) / (n - 1) as f64
-        }
-    };
-    let table: Vec<Vec<f64>> = (0..n)
-        .map(|o| ids.iter().map(|id| chance(id, o)).collect())
-        .collect();
-    by_table(&table, prior)
-}
-
-/// What a check's readings would be under the leading causes.
-fn foretold(
-    check: usize,
-    forecasts: &Forecasts,
-    weights: &[f64],
-    of_cause: &[usize],
-    ids: &[FaultId],
-    prior: &[f64],
-) -> Vec<Foretold> {
-    let mut order: Vec<usize> = (0..ids.len()).filter(|i| of_cause.contains(i)).collect();
-    order.sort_by(|a, b| prior[*b].total_cmp(&prior[*a]));
-    order.truncate(FORETOLD);
-    let q = forecasts.probes.len();
-    forecasts
-        .indices(check)
-        .into_iter()
-        .map(|i| {
-            let probe = &forecasts.probes[i];
-            let would = order
-                .iter()
-                .map(|cause| {
-                    let mine: Vec<usize> = (0..weights.len())
-                        .filter(|n| of_cause[*n] == *cause)
-                        .collect();
-                    let total: f64 = mine.iter().map(|n| weights[*n]).sum();
-                    let mean = mine
-                        .iter()
-                        .map(|n| weights[*n] * forecasts.means[*n][i])
-                        .sum::<f64>()
-                        / total;
-                    let square = mine
-                        .iter()
-                        .map(|n| {
-                            weights[*n]
-                                * ((forecasts.means[*n][i] - mean).powi(2)
-                                    + forecasts.covariances[*n][i * q + i])
-                        })
-                        .sum::<f64>()
-                        / total;
-                    // Normal on the transformed scale: 1.2816 standard deviations hold the central 80 %.
-                    let half = 1.2816 * square.max(0.0).sqrt();
-                    Would {
-                        id: ids[*cause],
-                        title: faults::find(ids[*cause])
-                            .map_or(String::new(), |f| f.title.to_string()),
-                        value: untransform(probe.port, mean),
-                        low: untransform(probe.port, mean - half),
-                        high: untransform(probe.port, mean + half),
-                    }
-                })
-                .collect();
-            Foretold {
-                port: probe.port,
-                condition: forecasts.data.conditions[probe.condition],
-                would,
+    #[test]
+    fn whatever_holds_the_machine_carries_seconds_and_a_pressure_to_stop_at() {
+        let unit = Unit::default();
+        let relief = unit.class.spread(FigureId::LoopRelief).value;
+        for check in checks::all() {
+            let held = check.yields.iter().any(|y| y.doing == Doing::Held);
+            let limits = hold(&unit, check);
+            assert_eq!(limits.is_some(), held, "{}", check.id);
+            if let Some(h) = limits {
+                assert!(h.seconds > 0.5 && h.seconds < 120.0, "{}: {h:?}", check.id);
+                assert!((h.seconds * h.rise - 15.0).abs() < 1e-9);
+                assert!(h.stop_at > 0.0 && h.stop_at <= relief);
             }
-        })
-        .collect()
+        }
+    }
 }

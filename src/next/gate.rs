@@ -2,9 +2,10 @@
 
 use crate::assessment::{Assessment, Standing};
 use crate::checks::{self, Check};
+use crate::faults::{self, FaultId};
+use crate::observations;
 use crate::readings::{Doing, Port};
 use crate::record::{Answer, Visit};
-use crate::unit::{Tick, Unit};
 
 /// Hazard of a check: the worst of what its readings ask the machine to do.
 pub fn hazard(check: &Check) -> u8 {
@@ -16,88 +17,159 @@ pub fn hazard(check: &Check) -> u8 {
         .unwrap_or_else(|| checks::hazard(check, Doing::Neutral))
 }
 
-/// Why a check of the highest hazard may not be offered yet; none where it may.
+/// Oil temperatures (°C) between which a machine is held or overrun: thinner or thicker oil is no test. Common practice.
+const WARM: (f64, f64) = (40.0, 80.0);
+
+/// Why a check may not be offered yet, and the check that would let it be, where there is one.
+pub struct Waits {
+    /// The reason, in words.
+    pub why: String,
+    /// Id of the check to make first.
+    pub first: Option<&'static str>,
+}
+
+/// Why a check may not be offered yet; none where it may.
 pub fn held_back(visit: &Visit, assessment: &Assessment, check: &Check) -> Option<String> {
+    waits(visit, assessment, check).map(|w| w.why)
+}
+
+/// What a check waits for. Before the engine is started it is asked whether the machine keeps going in neutral; before it moves
+/// somebody has walked round it and looked at the level (readings show that it was run, or driven, already); before it is held, bridged, overrun or taken off its brake, level,
+/// charge and temperature are good and nobody is alone.
+pub fn waits(visit: &Visit, assessment: &Assessment, check: &Check) -> Option<Waits> {
+    let wait = |why: &str, first: Option<&'static str>| {
+        Some(Waits {
+            why: why.to_string(),
+            first,
+        })
+    };
+    let answer = |id: &str| visit.observations.get(id);
+    let has_run = |moved: bool| {
+        visit
+            .readings
+            .iter()
+            .any(|r| r.seen.is_some() && !(moved && r.condition.doing.is_neutral()))
+    };
+    if runs_engine(check) && !has_run(false) && answer(observations::RUNS_ON).is_none() {
+        return wait(
+            "Ask first whether it keeps going with the lever in neutral: then nobody starts it.",
+            Some("ask-the-operator"),
+        );
+    }
+    if (moves(check) && !has_run(true) || hazard(check) == checks::HIGHEST_HAZARD)
+        && answer("level-low").is_none()
+    {
+        return wait(
+            "Walk round it first: oil level, tow valve.",
+            Some("walk-round"),
+        );
+    }
     if hazard(check) < checks::HIGHEST_HAZARD {
         return None;
     }
     match visit.alone {
         Some(false) => {}
-        Some(true) => return Some("Not alone on site.".to_string()),
-        None => return Some("Say first whether you are alone on site.".to_string()),
+        Some(true) => return wait("Not alone on site.", None),
+        None => return wait("Say first whether you are alone on site.", None),
     }
-    let answer = |id: &str| visit.observations.get(id);
+    if may_run_on(assessment) {
+        return wait(
+            "It may not come back to neutral: find that out with the engine stopped.",
+            None,
+        );
+    }
+    if on_a_slope(check) && may_roll(assessment) {
+        return wait(
+            "A drive that may not hold is not tried on a slope: bypass and charge first.",
+            None,
+        );
+    }
     if answer("level-low") != Some(&Answer::NotSeen) {
-        return Some("Oil level first: looked at, and on the mark.".to_string());
+        return wait("Oil level first: looked at, and on the mark.", None);
     }
-    let good = |port: Port| {
-        visit
-            .readings
-            .iter()
-            .zip(&assessment.windows)
-            .any(|(r, w)| {
-                r.port == port
-                    && r.condition.doing.is_neutral()
-                    && matches!(w.standing, Standing::Within | Standing::Edge)
-            })
-    };
-    if !good(Port::Charge) {
-        return Some("Charge pressure first: read in neutral, and good.".to_string());
+    // The last one counts: what was good an hour ago need not be so now.
+    let last = visit
+        .readings
+        .iter()
+        .zip(&assessment.windows)
+        .rfind(|(r, _)| {
+            r.port == Port::Charge && r.condition.doing.is_neutral() && r.seen.is_some()
+        });
+    if !last.is_some_and(|(_, w)| matches!(w.standing, Standing::Within | Standing::Edge)) {
+        return wait(
+            "Charge pressure first: read in neutral, and good.",
+            Some("charge-two-speeds").filter(|_| last.is_none()),
+        );
     }
-    let warm = super::probe::oil_now(visit).map(|t| t.value.base());
-    match warm {
-        None => Some("Oil temperature first.".to_string()),
-        Some(t) if t < 40.0 => Some(format!(
-            "Oil at {t:.0} °C is too cold for it: warm it to 40 °C."
-        )),
-        Some(t) if t > 80.0 => Some(format!(
-            "Oil at {t:.0} °C is too hot for it: let it cool to 80 °C."
-        )),
+    match super::probe::oil_now(visit).map(|t| t.value.base()) {
+        None => wait("Oil temperature first.", None),
+        Some(t) if t < WARM.0 => wait(
+            &format!(
+                "Oil at {t:.0} °C is too cold for it: warm it to {:.0} °C.",
+                WARM.0
+            ),
+            None,
+        ),
+        Some(t) if t > WARM.1 => wait(
+            &format!(
+                "Oil at {t:.0} °C is too hot for it: let it cool to {:.0} °C.",
+                WARM.1
+            ),
+            None,
+        ),
         Some(_) => None,
     }
 }
 
-/// True where a check can be made on this unit and has something left to say.
-pub fn possible(unit: &Unit, visit: &Visit, check: &Check) -> bool {
-    if check.two_path {
-        return false;
-    }
-    if check.yields.iter().any(|y| y.flushing_blocked) && unit.ticks.flushing == Tick::No {
-        return false;
-    }
-    if check.id == "pull-the-shuttle" && unit.ticks.flushing == Tick::No {
-        return false;
-    }
-    // Swapping or a part's change waits until debris has been looked for and not found.
-    if check.after.is_empty() {
-        return true;
-    }
-    checks::find(check.after).is_none_or(|first| {
-        first
-            .answers
-            .iter()
-            .all(|a| visit.observations.get(*a) == Some(&Answer::NotSeen))
+/// Checks without a reading that run the engine all the same.
+const RUN_WITHOUT_READING: [&str; 5] = [
+    "swap-plugs",
+    "stroke-arm-by-hand",
+    "work-another-function",
+    "slope-hold",
+    "isolate-the-pump",
+];
+
+/// True where the engine runs in a check.
+fn runs_engine(check: &Check) -> bool {
+    !check.yields.is_empty() || RUN_WITHOUT_READING.contains(&check.id)
+}
+
+/// True where wheels or tracks turn in a check.
+fn moves(check: &Check) -> bool {
+    check.yields.iter().any(|y| y.doing != Doing::Neutral)
+        || matches!(check.id, "swap-plugs" | "stroke-arm-by-hand")
+}
+
+/// Probability of a cause that forbids driving from which nothing is held or driven hard.
+const RUNS_ON: f64 = 0.1;
+
+/// True where a cause that forbids moving the machine is likely enough to be reckoned with.
+fn may_run_on(assessment: &Assessment) -> bool {
+    assessment.causes.iter().any(|c| {
+        c.probability >= RUNS_ON
+            && c.ids
+                .iter()
+                .any(|id| faults::find(*id).is_some_and(|f| f.stop_work))
     })
 }
 
-/// Minutes of a check on this unit now: rigging once, access once.
-pub fn minutes(unit: &Unit, visit: &Visit, check: &Check) -> f64 {
-    let ports: Vec<Port> = check.yields.iter().map(|y| y.port).collect();
-    let rigged = !ports.is_empty()
-        && ports.iter().all(|p| {
-            visit
-                .readings
-                .iter()
-                .any(|r| r.port == *p && r.seen.is_some())
-        });
-    if rigged {
-        return check.minutes_again.max(0.5);
-    }
-    let access = ports
+/// Checks that trust the drive to hold the machine on a slope.
+fn on_a_slope(check: &Check) -> bool {
+    matches!(check.id, "slope-hold" | "hold-back")
+}
+
+/// True where a drive may well not hold: bypass open, no charge, a side that lets go.
+fn may_roll(assessment: &Assessment) -> bool {
+    use FaultId::{BypassOpen, ChargeDriveFailed, DrivetrainSlipping, LoopReliefBLow};
+    let lets_go = [
+        BypassOpen,
+        ChargeDriveFailed,
+        DrivetrainSlipping,
+        LoopReliefBLow,
+    ];
+    assessment
+        .causes
         .iter()
-        .filter_map(|p| unit.ports.get(p))
-        .filter_map(|n| n.access_minutes)
-        .filter(|m| m.is_finite() && *m > 0.0)
-        .fold(0.0, f64::max);
-    (check.minutes_first + access).max(0.5)
+        .any(|c| c.probability >= RUNS_ON && c.ids.iter().any(|id| lets_go.contains(id)))
 }

@@ -97,12 +97,50 @@ pub fn entropy(p: &[f64]) -> f64 {
         .sum::<f64>()
 }
 
+/// A question that a check answers with yes or no.
+#[derive(Clone, Debug)]
+pub struct Question {
+    /// Chance of a yes under each cause.
+    pub chance: Vec<f64>,
+    /// Share of the answer's evidence that is kept: an operator's word, the second of a family.
+    pub kept: f64,
+}
+
+/// Most questions whose answers are weighed together; of more the weakest are left out.
+pub const MOST_QUESTIONS: usize = 8;
+
 /// Outcomes of a check by systematic draws over the nodes, and the information (bits) they carry on the cause.
 pub fn outcomes(forecasts: &[Forecast], prior: &[f64], seed: u64) -> (Vec<Outcome>, f64) {
+    readings_and_answers(forecasts, &[], prior, seed)
+}
+
+/// Outcomes of readings and answers together: what both say of the same is not counted twice.
+pub fn readings_and_answers(
+    forecasts: &[Forecast],
+    questions: &[Question],
+    prior: &[f64],
+    seed: u64,
+) -> (Vec<Outcome>, f64) {
     let mut normals = Normals::new(seed);
     let mut out = Vec::with_capacity(DRAWS);
     let mut sum = 0.0;
     let mut at = 0;
+    let base: Vec<f64> = forecasts
+        .iter()
+        .map(|f| math::ln(f.weight.max(1e-300)))
+        .collect();
+    let log_chance: Vec<[Vec<f64>; 2]> = questions
+        .iter()
+        .map(|q| {
+            let logs = |yes: bool| -> Vec<f64> {
+                q.chance
+                    .iter()
+                    .map(|p| q.kept * math::ln((if yes { *p } else { 1.0 - p }).max(1e-12)))
+                    .collect()
+            };
+            [logs(false), logs(true)]
+        })
+        .collect();
     for i in 0..DRAWS {
         let place = (i as f64 + 0.5) / DRAWS as f64;
         while at + 1 < forecasts.len() && sum + forecasts[at].weight < place {
@@ -111,9 +149,21 @@ pub fn outcomes(forecasts: &[Forecast], prior: &[f64], seed: u64) -> (Vec<Outcom
         }
         let Some(node) = forecasts.get(at) else { break };
         let y = node.draw(&mut normals);
+        let answers: Vec<bool> = questions
+            .iter()
+            .map(|q| normals.unit() < q.chance[node.cause])
+            .collect();
         let logs: Vec<f64> = forecasts
             .iter()
-            .map(|f| math::ln(f.weight.max(1e-300)) + f.log_density(&y))
+            .zip(&base)
+            .map(|(f, b)| {
+                let told: f64 = answers
+                    .iter()
+                    .zip(&log_chance)
+                    .map(|(yes, l)| l[usize::from(*yes)][f.cause])
+                    .sum();
+                b + f.log_density(&y) + told
+            })
             .collect();
         let total = math::ln_sum_exp(&logs);
         let mut causes = vec![0.0; prior.len()];
@@ -125,6 +175,39 @@ pub fn outcomes(forecasts: &[Forecast], prior: &[f64], seed: u64) -> (Vec<Outcom
             causes,
         });
     }
+    let after: f64 = out.iter().map(|o| o.weight * entropy(&o.causes)).sum();
+    (out, (entropy(prior) - after).max(0.0))
+}
+
+/// Outcomes of answers alone, every combination of them, and the information (bits) they carry on the cause. Answers are
+/// independent of each other under a cause; what is kept of each is what the ranking would keep.
+pub fn answers(questions: &[Question], prior: &[f64]) -> (Vec<Outcome>, f64) {
+    let questions = &questions[..questions.len().min(MOST_QUESTIONS)];
+    let out: Vec<Outcome> = (0..1usize << questions.len())
+        .map(|combination| {
+            let mut chance = vec![1.0; prior.len()];
+            let mut kept = vec![1.0; prior.len()];
+            for (k, q) in questions.iter().enumerate() {
+                let yes = combination >> k & 1 == 1;
+                for (i, p) in q.chance.iter().enumerate() {
+                    let p = if yes { *p } else { 1.0 - p };
+                    chance[i] *= p;
+                    kept[i] *= if q.kept < 1.0 {
+                        math::pow(p, q.kept)
+                    } else {
+                        p
+                    };
+                }
+            }
+            let weight = chance.iter().zip(prior).map(|(c, p)| c * p).sum();
+            let joint: Vec<f64> = kept.iter().zip(prior).map(|(c, p)| c * p).collect();
+            let total: f64 = joint.iter().sum();
+            Outcome {
+                weight,
+                causes: joint.iter().map(|j| j / total.max(1e-300)).collect(),
+            }
+        })
+        .collect();
     let after: f64 = out.iter().map(|o| o.weight * entropy(&o.causes)).sum();
     (out, (entropy(prior) - after).max(0.0))
 }

@@ -5,16 +5,20 @@
 //! end of the trouble (decision-theoretic troubleshooting: Heckerman, Breese and Rommelse, 1995).
 
 mod advise;
+mod foretell;
 mod gate;
 mod mixture;
-mod outcomes;
 mod probe;
 mod repair;
+mod rig;
 mod words;
+mod worth;
 
 pub use advise::advise;
+pub use gate::{hazard, held_back};
 pub use mixture::{Forecast, Outcome, by_table, entropy, outcomes, yes_or_no};
 pub use repair::expected_minutes;
+pub use rig::{minutes, open_answers, open_readings, possible};
 
 use crate::faults::FaultId;
 use crate::readings::{Condition, Port};
@@ -61,14 +65,28 @@ pub struct Offer {
     pub hazard: u8,
     /// One sentence: what it tells from what.
     pub why: String,
+    /// For a check that holds the machine: how long and up to where.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub hold: Option<Hold>,
     /// What its readings would say.
     pub foretold: Vec<Foretold>,
+}
+
+/// Limits of a held check, from the unit's figures.
+#[derive(Clone, Copy, Debug, PartialEq, Serialize, Deserialize)]
+pub struct Hold {
+    /// Longest time at full stroke, s.
+    pub seconds: f64,
+    /// Rise of the oil at full stroke, K/s.
+    pub rise: f64,
+    /// Pressure to stop at, bar.
+    pub stop_at: f64,
 }
 
 /// A repair that is offered.
 #[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
 pub struct RepairOffer {
-    /// Cause that it ends.
+    /// Cause that it ends; of a set that one action serves, the likeliest member.
     pub id: FaultId,
     /// The repair, in words.
     pub repair: String,
@@ -80,11 +98,14 @@ pub struct RepairOffer {
     pub proof: String,
     /// True where the expected minutes to the end are fewer by repairing now than by the best check first.
     pub now: bool,
+    /// What it waits for although it may be the right one, in words; empty where it may be made now.
+    #[serde(default, skip_serializing_if = "String::is_empty")]
+    pub waits: String,
     /// The unit's manual is needed.
     pub needs_manual: bool,
     /// Caution where the hand goes.
     pub caution: String,
-    /// Reading ids that are off now and must come back after the repair.
+    /// Ids of the readings that are off now, that this cause explains, and that must come back after the repair.
     pub proved_by: Vec<String>,
 }
 
@@ -95,7 +116,7 @@ pub struct Advice {
     pub checks: Vec<Offer>,
     /// Best repair, where one may be offered.
     pub repair: Option<RepairOffer>,
-    /// Set where no check that is left can change the order.
+    /// Set where no check that is left is likely to change what leads: time to prove it and mend it.
     pub stop: Option<String>,
     /// Held back by the gates, with the reason.
     pub held_back: Vec<(String, String)>,

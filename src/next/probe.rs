@@ -11,6 +11,7 @@ use crate::record::Visit;
 use crate::unit::Unit;
 
 use super::mixture::{Forecast, MOST_READINGS};
+use super::rig;
 
 /// A candidate reading of a check.
 #[derive(Clone, Debug)]
@@ -40,28 +41,16 @@ pub fn oil_now(visit: &Visit) -> Option<OilTemperature> {
     visit.readings.iter().rev().find_map(|r| r.condition.oil)
 }
 
-/// Candidate readings that are not taken yet.
-fn probes(checks: &[&Check], visit: &Visit, data: &mut Data) -> Vec<Probe> {
+/// Candidate readings that are not taken yet, and can be taken on this unit.
+fn probes(unit: &Unit, checks: &[&Check], visit: &Visit, data: &mut Data) -> Vec<Probe> {
     let oil = oil_now(visit);
     let mut out = Vec::new();
     for (i, check) in checks.iter().enumerate() {
-        for y in check.yields.iter().take(MOST_READINGS) {
+        for y in rig::open_readings(unit, visit, check)
+            .iter()
+            .take(MOST_READINGS)
+        {
             let condition = y.condition(oil);
-            let taken = visit.readings.iter().any(|r| {
-                let c = &r.condition;
-                r.seen.is_some()
-                    && r.port == y.port
-                    && c.doing == condition.doing
-                    && (c.doing.is_neutral()
-                        || (c.direction == condition.direction && c.lever == condition.lever))
-                    && core::mem::discriminant(&c.engine)
-                        == core::mem::discriminant(&condition.engine)
-                    && c.flushing_blocked == condition.flushing_blocked
-                    && c.consumers_capped == condition.consumers_capped
-            });
-            if taken {
-                continue;
-            }
             let at = data
                 .conditions
                 .iter()
@@ -90,7 +79,7 @@ pub fn forecast(
     checks: &[&Check],
 ) -> Forecasts {
     let mut data = taken.clone();
-    let probes = probes(checks, visit, &mut data);
+    let probes = probes(unit, checks, visit, &mut data);
     let k = taken.data.len();
     let mut merged = data.clone();
     for p in &probes {

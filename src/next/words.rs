@@ -60,25 +60,3 @@ pub fn by_readings(forecasts: &[Forecast], ids: &[FaultId], prior: &[f64]) -> Op
     }
     best.map(|(_, a, b)| format!("Tells “{}” from “{}”.", title(ids[a]), title(ids[b])))
 }
-
-/// For outcomes that are lists of causes.
-pub fn by_outcome(outcomes: &[&[FaultId]], ids: &[FaultId], prior: &[f64]) -> Option<String> {
-    let mass = |list: &[FaultId]| {
-        ids.iter()
-            .zip(prior)
-            .filter(|(i, _)| list.contains(i))
-            .map(|(_, p)| p)
-            .sum::<f64>()
-    };
-    let best = outcomes.iter().max_by(|a, b| mass(a).total_cmp(&mass(b)))?;
-    let lead = ids
-        .iter()
-        .zip(prior)
-        .filter(|(i, _)| best.contains(i))
-        .max_by(|a, b| a.1.total_cmp(b.1))?
-        .0;
-    Some(format!(
-        "Shows whether it is “{}” or something else.",
-        title(*lead)
-    ))
-}

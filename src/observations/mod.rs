@@ -4,6 +4,7 @@
 //! ranking and reports follow from it. An id stands in files that people keep: never renamed, never reused.
 
 mod complaints;
+mod found;
 mod signs;
 #[cfg(test)]
 mod tests;
@@ -13,7 +14,8 @@ mod when;
 
 use crate::faults::{self, Column, FaultId};
 
-pub use weigh::{Detail, detail, log_weights, prior_factor, stop_work};
+pub use complaints::RUNS_ON;
+pub use weigh::{Detail, OPERATOR, detail, kept, log_weights, prior_factor, stop_work};
 
 /// Number of columns of the table: one for each [`Column`], in its order.
 pub const COLUMNS: usize = Column::Healthy as usize + 1;
@@ -34,16 +36,19 @@ pub enum Group {
     Listen,
     /// To be felt or measured by a probe.
     Feel,
+    /// Found when something is opened, swapped or moved by hand.
+    Found,
 }
 
 impl Group {
     /// Every group, in the order in which screens offer them.
-    pub const ALL: [Group; 5] = [
+    pub const ALL: [Group; 6] = [
         Group::Complaint,
         Group::WhenItFails,
         Group::Look,
         Group::Listen,
         Group::Feel,
+        Group::Found,
     ];
 
     /// Heading for a screen.
@@ -55,6 +60,7 @@ impl Group {
             Group::Look => "Look",
             Group::Listen => "Listen",
             Group::Feel => "Feel, or hold a probe on it",
+            Group::Found => "Opened, swapped or moved by hand",
         }
     }
 }
@@ -119,11 +125,17 @@ const BASE: Observation = Observation {
     exceptions: &[],
 };
 
-const TABLES: [&[Observation]; 4] = [
+/// A row where all causes are alike, for finds that belong to one or two causes only.
+const fn even(chance: f64) -> [f64; COLUMNS] {
+    [chance; COLUMNS]
+}
+
+const TABLES: [&[Observation]; 5] = [
     complaints::TABLE,
     when::TABLE,
     signs::TABLE,
     walk_round::TABLE,
+    found::TABLE,
 ];
 
 /// Every observation, in the order in which screens offer them within a group.

@@ -1,12 +1,7 @@
 //! What a walk round the machine finds, engine off.
 
-use super::{BASE, COLUMNS, Family, Observation};
+use super::{BASE, Family, Observation, even};
 use crate::faults::FaultId as F;
-
-/// A row where all causes are alike, for finds that belong to one or two causes only.
-const fn even(chance: f64) -> [f64; COLUMNS] {
-    [chance; COLUMNS]
-}
 
 pub const TABLE: &[Observation] = &[
     Observation {

@@ -13,7 +13,7 @@ const NEXT_OF_FAMILY: f64 = 0.6;
 const LATER_OF_FAMILY: f64 = 0.3;
 /// Share of the evidence that is kept of an operator's report: about half of one's own look, the rest flattened to the mean
 /// of all causes. Common practice.
-const OPERATOR: f64 = 0.5;
+pub const OPERATOR: f64 = 0.5;
 
 /// What one answered observation says.
 #[derive(Clone, Debug, PartialEq)]
@@ -86,6 +86,16 @@ fn answered(observation: &Observation, answer: Answer) -> Detail {
     }
 }
 
+/// Share of the evidence that is kept of an answer of a family of which so many have been answered already.
+#[must_use]
+pub fn kept(family: Family, before: usize) -> f64 {
+    match (family, before) {
+        (Family::Alone, _) | (_, 0) => 1.0,
+        (_, 1 | 2) => NEXT_OF_FAMILY,
+        _ => LATER_OF_FAMILY,
+    }
+}
+
 /// Share kept of each answer: within a family the one that tells most comes first and counts in full.
 fn shares(found: &[(Family, Detail)]) -> Vec<f64> {
     let spreads: Vec<f64> = found.iter().map(|(_, d)| spread(&d.logs)).collect();
@@ -94,17 +104,10 @@ fn shares(found: &[(Family, Detail)]) -> Vec<f64> {
         .iter()
         .enumerate()
         .map(|(i, (family, _))| {
-            if *family == Family::Alone {
-                return 1.0;
-            }
             let before = (0..found.len())
                 .filter(|j| found[*j].0 == *family && ahead(i, *j))
                 .count();
-            match before {
-                0 => 1.0,
-                1 | 2 => NEXT_OF_FAMILY,
-                _ => LATER_OF_FAMILY,
-            }
+            kept(*family, before)
         })
         .collect()
 }

@@ -3,7 +3,7 @@
 
 use super::error::{Problem, RecordError, content};
 use super::limits::{self, ENTRIES, LINE_CHARACTERS, TEXT_CHARACTERS};
-use super::{Settings, Visit, is_id};
+use super::{Closing, PutBack, Settings, Visit, is_id};
 use crate::quantity::{Kind, Measure};
 use crate::readings::instrument::Instrument;
 use crate::readings::{Condition, EngineSpeed, Lever, Port, Reading, Rigging, Seen};
@@ -261,6 +261,7 @@ pub(super) fn unit(path: &str, unit: &mut Unit) -> Checked {
         let path = format!("{path}.ports.{}", code_of(port));
         prose(&path, "place", &mut note.place)?;
         line(&path, "adapter", &mut note.adapter)?;
+        line(&path, "access_typed", &mut note.access_typed)?;
         if let Some(minutes) = note.access_minutes {
             access(minutes).map_err(|p| content(format!("{path}.access_minutes"), p))?;
         }
@@ -303,13 +304,75 @@ pub(super) fn visit(path: &str, visit: &mut Visit) -> Checked {
     }
     riggings(path, &visit.riggings)?;
     readings(path, &mut visit.readings)?;
-    if let Some(closing) = &mut visit.closed {
-        let path = format!("{path}.closed");
-        reference(&path, "cause", &closing.cause)?;
-        prose(&path, "proof", &mut closing.proof)?;
-        line(&path, "when", &mut closing.when)?;
+    earlier(path, visit)?;
+    headings(path, visit)?;
+    count(&format!("{path}.made"), visit.made.len(), ENTRIES)?;
+    for check in &visit.made {
+        key_text(&format!("{path}.made"), check)?;
+    }
+    count(&format!("{path}.put_back"), visit.put_back.len(), ENTRIES)?;
+    for (what, answer) in &mut visit.put_back {
+        let path = format!("{path}.put_back");
+        key_text(&path, what)?;
+        if let PutBack::Struck(why) = answer {
+            prose(&path, &shortened(what), why)?;
+        }
+    }
+    for (field, closing) in [
+        ("closing", &mut visit.closing),
+        ("closed", &mut visit.closed),
+    ] {
+        if let Some(closing) = closing {
+            self::closing(&format!("{path}.{field}"), closing)?;
+        }
     }
     unknown_fields(path, &visit.extra)
+}
+
+fn closing(path: &str, closing: &mut Closing) -> Checked {
+    reference(path, "cause", &closing.cause)?;
+    reference(path, "also", &closing.also)?;
+    prose(path, "proof", &mut closing.proof)?;
+    prose(path, "done", &mut closing.done)?;
+    prose(path, "parts", &mut closing.parts)?;
+    line(path, "when", &mut closing.when)
+}
+
+fn earlier(path: &str, visit: &mut Visit) -> Checked {
+    let path = format!("{path}.earlier");
+    count(&path, visit.earlier.len(), limits::READINGS)?;
+    for (id, values) in &mut visit.earlier {
+        key_text(&path, id)?;
+        let path = format!("{path}.{}", shortened(id));
+        count(&path, values.len(), ENTRIES)?;
+        let port = visit.readings.iter().find(|reading| reading.id == *id);
+        for value in values {
+            prose(&path, "typed", &mut value.typed)?;
+            line(&path, "when", &mut value.when)?;
+            // Of a reading that is gone nobody can say what its port could show.
+            if let (Some(reading), Some(what)) = (port, &value.seen) {
+                at(&format!("{path}.seen"), seen(reading.port, what))?;
+            }
+            if let Some(Seen::NotPossible { why }) = &mut value.seen {
+                prose(&path, "why", why)?;
+            }
+        }
+    }
+    Ok(())
+}
+
+fn headings(path: &str, visit: &mut Visit) -> Checked {
+    let path = format!("{path}.headings");
+    count(&path, visit.headings.len(), limits::READINGS)?;
+    for (id, texts) in &mut visit.headings {
+        key_text(&path, id)?;
+        count(&path, texts.len(), ENTRIES)?;
+        for (field, text) in texts {
+            key_text(&path, field)?;
+            line(&path, &shortened(field), text)?;
+        }
+    }
+    Ok(())
 }
 
 fn riggings(path: &str, riggings: &[Rigging]) -> Checked {

@@ -52,6 +52,15 @@ pub(super) fn unit(unit: &Unit) -> Unit {
 pub(super) fn visit(visit: &Visit) -> Visit {
     let mut visit = visit.clone();
     visit.readings.iter_mut().for_each(reading);
+    for reading in &visit.readings {
+        let values = visit.earlier.get_mut(&reading.id).into_iter().flatten();
+        for value in values {
+            // The text says it too.
+            value
+                .seen
+                .take_if(|seen| check::seen(reading.port, seen).is_err());
+        }
+    }
     visit
 }
 

@@ -31,4 +31,4 @@ pub use migrate::{Ladder, RecordKind, SCHEMA, STEPS, Step, Subject};
 pub use plan::{Fate, ImportPlan, Planned, Taken};
 pub use settings::{FirstRun, Settings, Theme};
 pub use sum::checksum;
-pub use visit::{Answer, Closing, Visit};
+pub use visit::{Answer, Closing, Earlier, PutBack, Visit};

@@ -1,6 +1,6 @@
 //! A visit: one call to one unit, as it is kept.
 
-use crate::readings::{Reading, Rigging};
+use crate::readings::{Reading, Rigging, Seen};
 use serde::{Deserialize, Serialize};
 use std::collections::BTreeMap;
 
@@ -42,6 +42,22 @@ pub struct Visit {
     pub readings: Vec<Reading>,
     /// Precautions ticked for a hazardous check: check id to the facts ticked.
     pub precautions: BTreeMap<String, Vec<String>>,
+    /// Earlier values of readings that were taken again, by reading id, oldest first.
+    #[serde(skip_serializing_if = "BTreeMap::is_empty")]
+    pub earlier: BTreeMap<String, Vec<Earlier>>,
+    /// What is typed in the heading of a reading and cannot be read as a figure, by reading id and field. It comes back after
+    /// a reload like any other text.
+    #[serde(skip_serializing_if = "BTreeMap::is_empty")]
+    pub headings: BTreeMap<String, BTreeMap<String, String>>,
+    /// Checks that were made without leaving a reading, by check id.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub made: Vec<String>,
+    /// What had to be put back and was answered for, by the line as it was read.
+    #[serde(skip_serializing_if = "BTreeMap::is_empty")]
+    pub put_back: BTreeMap<String, PutBack>,
+    /// What is entered for the closing while the call is still open.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub closing: Option<Closing>,
     /// Closed, with the cause found (fault id) and what proved it.
     pub closed: Option<Closing>,
     /// Free note.
@@ -51,14 +67,83 @@ pub struct Visit {
     pub extra: BTreeMap<String, serde_json::Value>,
 }
 
+/// The value of a reading before it was taken again.
+#[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
+#[serde(default)]
+pub struct Earlier {
+    /// What was seen.
+    pub seen: Option<Seen>,
+    /// The text as it was typed.
+    pub typed: String,
+    /// When it was taken again (ISO 8601 text).
+    pub when: String,
+}
+
+/// Answer to a line of the put-back list.
+#[derive(Clone, Debug, PartialEq, Eq, Serialize, Deserialize)]
+#[serde(rename_all = "snake_case")]
+pub enum PutBack {
+    /// Seen to be so.
+    Done,
+    /// Does not apply, and why. It is no answer while the reason is empty.
+    Struck(String),
+}
+
+impl PutBack {
+    /// True where it answers the line.
+    #[must_use]
+    pub fn is_settled(&self) -> bool {
+        match self {
+            PutBack::Done => true,
+            PutBack::Struck(why) => !why.trim().is_empty(),
+        }
+    }
+}
+
 /// How a visit ended.
 #[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
 #[serde(default)]
 pub struct Closing {
     /// Cause, as a fault id code; empty where none was found.
     pub cause: String,
+    /// A second cause at work at the same time, as a fault id code.
+    #[serde(skip_serializing_if = "String::is_empty")]
+    pub also: String,
+    /// True where the cause was proved on the machine.
+    #[serde(skip_serializing_if = "std::ops::Not::not")]
+    pub is_proved: bool,
     /// What proved it.
     pub proof: String,
+    /// What was done.
+    #[serde(skip_serializing_if = "String::is_empty")]
+    pub done: String,
+    /// Parts used.
+    #[serde(skip_serializing_if = "String::is_empty")]
+    pub parts: String,
     /// When (ISO 8601 text).
     pub when: String,
+}
+
+impl Visit {
+    /// True where the other says the same about the machine: nothing that bears on a window or on the order of causes differs.
+    /// Texts, ticks and the closing may.
+    #[must_use]
+    pub fn says_the_same(&self, other: &Visit) -> bool {
+        let same = |one: &Reading, other: &Reading| {
+            (&one.id, one.port, &one.rigging) == (&other.id, other.port, &other.rigging)
+                && one.condition == other.condition
+                && one.seen == other.seen
+        };
+        self.id == other.id
+            && self.unit == other.unit
+            && (self.alone, self.after_repair) == (other.alone, other.after_repair)
+            && self.observations == other.observations
+            && self.riggings == other.riggings
+            && self.readings.len() == other.readings.len()
+            && self
+                .readings
+                .iter()
+                .zip(&other.readings)
+                .all(|(one, other)| same(one, other))
+    }
 }

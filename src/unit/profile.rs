@@ -16,6 +16,9 @@ pub struct PortNote {
     pub adapter: String,
     /// Minutes to get at it beyond the ordinary (belly plate off), as typed.
     pub access_minutes: Option<f64>,
+    /// The minutes as typed, while they cannot be read as a figure.
+    #[serde(skip_serializing_if = "String::is_empty")]
+    pub access_typed: String,
 }
 
 /// An expected window from the unit's own manual: used as given.

@@ -8,8 +8,10 @@
 
 mod browser;
 mod journeys_call;
+mod journeys_close;
 mod journeys_offline;
 mod journeys_start;
+mod pace;
 mod rig;
 mod shots;
 mod site;

@@ -7,7 +7,7 @@ use lowside::readings::{
     Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading, Rigging,
     Seen, SideNaming,
 };
-use lowside::record::{Answer, Book, Closing, Settings, Visit, limits};
+use lowside::record::{Answer, Book, Closing, Earlier, PutBack, Settings, Visit, limits};
 use lowside::unit::*;
 
 /// Seeded chance (SplitMix64; Steele, Lea, Flood 2014).
@@ -223,6 +223,7 @@ impl Dice {
                     place: self.lines(20),
                     adapter: self.text(10),
                     access_minutes,
+                    access_typed: self.text(9),
                 },
             );
         }
@@ -298,12 +299,44 @@ impl Dice {
                 .precautions
                 .insert("pressure-build-up".into(), vec![fact]);
         }
+        if let Some(reading) = visit.readings.first()
+            && self.one_in(3)
+        {
+            let id = reading.id.clone();
+            let earlier = Earlier {
+                seen: reading.seen.clone(),
+                typed: self.text(12),
+                when: String::from("2025-12-01T09:00:00Z"),
+            };
+            visit.earlier.insert(id.clone(), vec![earlier]);
+            let texts = [("oil".to_owned(), self.text(12))];
+            visit.headings.insert(id, texts.into());
+        }
+        if self.one_in(3) {
+            visit.made.push("pull-the-shuttle".into());
+            visit
+                .put_back
+                .insert("Charge port plugged".into(), PutBack::Done);
+            let why = self.lines(12);
+            visit
+                .put_back
+                .insert("Loop ports plugged".into(), PutBack::Struck(why));
+            visit.closing = Some(Closing {
+                cause: "charge-pump-worn".into(),
+                also: "oil-low".into(),
+                is_proved: self.one_in(2),
+                done: self.lines(30),
+                parts: self.lines(30),
+                ..Closing::default()
+            });
+        }
         if self.one_in(3) {
             let when = String::from("2025-12-01T10:00:00Z");
             visit.closed = Some(Closing {
                 cause: "charge-pump-worn".into(),
                 proof: self.lines(30),
                 when,
+                ..Closing::default()
             });
         }
         if self.one_in(4) {

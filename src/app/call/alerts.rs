@@ -61,7 +61,7 @@ pub fn StopWork(props: &StopWorkProps) -> Html {
         Some(cause) => html! {
             <Caution grade={Grade::Danger} title="stop work until it is ruled out" role="alert" testid="stop-work">
                 <p>{ format!("{} ({}). Engine off, chock both ways; do not drive or test it before this is ruled out.",
-                    cause.title, words::chance(cause.probability, &assessment.trust)) }</p>
+                    words::cause_title(cause), words::chance(cause.probability, &assessment.trust)) }</p>
             </Caution>
         },
         None => Html::default(),
@@ -87,7 +87,11 @@ pub fn LeadStatus(props: &LeadStatusProps) -> Html {
             match (words::verdict(assessment), assessment.causes.first()) {
                 // The percentage is left out: the same cause with another figure is no news.
                 (verdict @ (Verdict::SoFar | Verdict::Uncertain), Some(cause)) => {
-                    format!("Leading cause, {}: {}.", verdict.words(), cause.title)
+                    format!(
+                        "Leading cause, {}: {}.",
+                        verdict.words(),
+                        words::cause_title(cause)
+                    )
                 }
                 _ => String::from("Too little to tell."),
             }

@@ -2,8 +2,9 @@
 
 use super::gate;
 use super::group::settled;
+use super::put_back;
 use crate::readings::{Condition, Port, Reading, Rigging, Seen};
-use crate::record::{Answer, Visit};
+use crate::record::{Answer, Closing, Earlier, PutBack, Visit};
 
 /// One edit.
 #[derive(Clone, Debug, PartialEq)]
@@ -44,6 +45,27 @@ pub enum Change {
     },
     /// Precaution facts ticked for a key; none left: the entry goes.
     Precautions(String, Vec<String>),
+    /// A reading is taken again: the old value stays beside it.
+    Retake {
+        /// Reading id.
+        id: String,
+        /// This moment (ISO 8601).
+        when: String,
+        /// It was looked at again and reads the same, so the value stands.
+        same: bool,
+    },
+    /// Text in a condition heading that is no figure yet, for the readings under it: ids, field, text. Empty text goes.
+    Heading(Vec<String>, &'static str, String),
+    /// A check that leaves no reading was made, or not after all.
+    Made(String, bool),
+    /// Answer to a line of the put-back list; none takes it back.
+    PutBack(String, Option<PutBack>),
+    /// What is entered for the closing.
+    Closing(Closing),
+    /// The call is closed with what was entered; `when` in ISO 8601.
+    Close(String),
+    /// Opened again.
+    Reopen,
 }
 
 impl Change {
@@ -62,6 +84,13 @@ impl Change {
             Change::Condition(..) => String::from("condition"),
             Change::Rig { .. } => String::from("gauge"),
             Change::Precautions(..) => String::from("precaution"),
+            Change::Retake { .. } => String::from("reading taken again"),
+            Change::Heading(..) => String::from("condition"),
+            Change::Made(..) => String::from("check made"),
+            Change::PutBack(..) => String::from("put back"),
+            Change::Closing(_) => String::from("closing"),
+            Change::Close(_) => String::from("call closed"),
+            Change::Reopen => String::from("call opened again"),
         }
     }
 
@@ -84,7 +113,15 @@ impl Change {
                 id == then && typing(seen) && typing(and_then)
             }
             (Change::Note(id, _), Change::Note(then, _)) => id == then,
-            (Change::Condition(ids, _), Change::Condition(then, _)) => ids == then,
+            (
+                Change::Condition(ids, _) | Change::Heading(ids, ..),
+                Change::Condition(then, _) | Change::Heading(then, ..),
+            ) => ids == then,
+            (Change::Closing(_), Change::Closing(_)) => true,
+            (
+                Change::PutBack(line, Some(PutBack::Struck(_))),
+                Change::PutBack(then, Some(PutBack::Struck(_))),
+            ) => line == then,
             _ => false,
         }
     }
@@ -108,8 +145,13 @@ pub fn apply(visit: &Visit, change: &Change) -> Visit {
                 add(&mut next, *port, *condition);
             }
         }
-        Change::Remove(id) => next.readings.retain(|reading| reading.id != *id),
+        Change::Remove(id) => {
+            next.readings.retain(|reading| reading.id != *id);
+            next.earlier.remove(id);
+            next.headings.remove(id);
+        }
         Change::Entry { id, typed, seen } => {
+            put_back::lapse(&mut next, id, seen.as_ref());
             if let Some(reading) = find(&mut next, id) {
                 reading.typed.clone_from(typed);
                 reading.seen.clone_from(seen);
@@ -143,8 +185,67 @@ pub fn apply(visit: &Visit, change: &Change) -> Visit {
         Change::Precautions(key, facts) => {
             next.precautions.insert(key.clone(), facts.clone());
         }
+        Change::Retake { id, when, same } => retake(&mut next, id, when, *same),
+        Change::Heading(ids, field, text) => heading(&mut next, ids, field, text),
+        Change::Made(check, is_made) => {
+            next.made.retain(|other| other != check);
+            if *is_made {
+                put_back::lapse_check(&mut next, check);
+                next.made.push(check.clone());
+            }
+        }
+        Change::PutBack(line, Some(answer)) => {
+            next.put_back.insert(line.clone(), answer.clone());
+        }
+        Change::PutBack(line, None) => {
+            next.put_back.remove(line);
+        }
+        Change::Closing(closing) => next.closing = Some(closing.clone()),
+        Change::Close(when) => {
+            let closing = next.closing.take().unwrap_or_default();
+            next.closed = Some(Closing {
+                when: when.clone(),
+                ..closing
+            });
+        }
+        Change::Reopen => {
+            next.closing = next.closed.take().or(next.closing.take());
+        }
     }
     next
+}
+
+/// Keeps the value beside the reading; empties the field where it is read anew.
+fn retake(visit: &mut Visit, id: &str, when: &str, same: bool) {
+    let Some(reading) = find(visit, id) else {
+        return;
+    };
+    let earlier = Earlier {
+        seen: reading.seen.clone(),
+        typed: reading.typed.clone(),
+        when: when.to_owned(),
+    };
+    if !same {
+        reading.seen = None;
+        reading.typed.clear();
+    }
+    visit
+        .earlier
+        .entry(id.to_owned())
+        .or_default()
+        .push(earlier);
+}
+
+fn heading(visit: &mut Visit, ids: &[String], field: &str, text: &str) {
+    for id in ids {
+        let texts = visit.headings.entry(id.clone()).or_default();
+        if text.trim().is_empty() {
+            texts.remove(field);
+        } else {
+            texts.insert(field.to_owned(), text.to_owned());
+        }
+    }
+    visit.headings.retain(|_, texts| !texts.is_empty());
 }
 
 fn find<'a>(visit: &'a mut Visit, id: &str) -> Option<&'a mut Reading> {

@@ -1,9 +1,10 @@
 //! What the machine was doing: one form for all readings under a heading, or for the next one.
 
 use super::condition_parts::{Typed, engine, lever, oil};
-use crate::app::parts::{Choice, Opt, Select};
+use crate::app::parts::{Choice, Entry, Opt, Select};
 use crate::quantity::UnitPrefs;
 use crate::readings::{Condition, Direction, Doing};
+use std::collections::BTreeMap;
 use yew::{Callback, Event, Html, Properties, TargetCast, component, html, use_state};
 
 /// Properties of [`ConditionEditor`].
@@ -17,12 +18,32 @@ pub struct ConditionEditorProps {
     pub prefs: UnitPrefs,
     /// It was changed.
     pub on_change: Callback<Condition>,
+    /// Texts that are kept because they are no figure yet, by field.
+    #[prop_or_default]
+    pub texts: BTreeMap<String, String>,
+    /// Text of a field that is no figure (empty: it is one by now), to be kept.
+    #[prop_or_default]
+    pub on_text: Callback<(&'static str, String)>,
+}
+
+impl ConditionEditorProps {
+    /// Keeps what is typed as long as it is no figure; lets go of what was kept once it is one.
+    pub fn keep(&self, field: &'static str, entry: &Entry) {
+        let text = if entry.value.is_some() {
+            ""
+        } else {
+            entry.typed.trim()
+        };
+        if self.texts.get(field).map_or("", String::as_str) != text {
+            self.on_text.emit((field, text.to_owned()));
+        }
+    }
 }
 
 /// The form.
 #[component]
 pub fn ConditionEditor(props: &ConditionEditorProps) -> Html {
-    let typed = use_state(Typed::default);
+    let typed = use_state(|| Typed::kept(&props.texts));
     let now = props.condition;
     let doings = Doing::ALL
         .into_iter()

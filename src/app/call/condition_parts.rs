@@ -4,6 +4,7 @@ use super::condition_editor::ConditionEditorProps;
 use crate::app::parts::{Choice, Entry, MeasureField, Opt, Select};
 use crate::quantity::{Kind, Measure};
 use crate::readings::{Condition, EngineSpeed, Lever, OilTemperature, Place};
+use std::collections::BTreeMap;
 use yew::{Callback, Html, UseStateHandle, html};
 
 /// How the engine speed is given.
@@ -36,6 +37,31 @@ pub struct Typed {
     place: Option<Place>,
 }
 
+/// Names of the fields under which a text is kept in the record.
+pub const FIELDS: [(&str, &str); 3] = [
+    (SPEED, "engine speed"),
+    (SHARE, "lever"),
+    (OIL, "oil temperature"),
+];
+const SPEED: &str = "engine";
+const SHARE: &str = "lever";
+const OIL: &str = "oil";
+
+impl Typed {
+    /// The texts that are kept because they are no figures yet.
+    pub fn kept(texts: &BTreeMap<String, String>) -> Typed {
+        let text = |field: &str| texts.get(field).cloned();
+        Typed {
+            engine: text(SPEED),
+            share: text(SHARE),
+            oil: text(OIL),
+            asks_speed: texts.contains_key(SPEED),
+            asks_share: texts.contains_key(SHARE),
+            place: None,
+        }
+    }
+}
+
 /// Lever travel.
 pub fn lever(props: &ConditionEditorProps, typed: &UseStateHandle<Typed>) -> Html {
     let now = props.condition;
@@ -48,8 +74,13 @@ pub fn lever(props: &ConditionEditorProps, typed: &UseStateHandle<Typed>) -> Htm
     };
     let on_travel = {
         let (typed, on_change) = (typed.clone(), props.on_change.clone());
+        let own = props.clone();
         Callback::from(move |travel: Travel| {
+            if travel != Travel::Share {
+                own.keep(SHARE, &Entry::default());
+            }
             typed.set(Typed {
+                share: typed.share.clone().filter(|_| travel == Travel::Share),
                 asks_share: travel == Travel::Share,
                 ..(*typed).clone()
             });
@@ -73,7 +104,9 @@ pub fn lever(props: &ConditionEditorProps, typed: &UseStateHandle<Typed>) -> Htm
     });
     let on_share = {
         let (typed, on_change) = (typed.clone(), props.on_change.clone());
+        let own = props.clone();
         Callback::from(move |entry: Entry| {
+            own.keep(SHARE, &entry);
             typed.set(Typed {
                 share: Some(entry.typed),
                 asks_share: true,
@@ -127,8 +160,13 @@ pub fn engine(props: &ConditionEditorProps, typed: &UseStateHandle<Typed>) -> Ht
     };
     let on_speed = {
         let (typed, on_change) = (typed.clone(), props.on_change.clone());
+        let own = props.clone();
         Callback::from(move |speed: Speed| {
+            if speed != Speed::Read {
+                own.keep(SPEED, &Entry::default());
+            }
             typed.set(Typed {
+                engine: typed.engine.clone().filter(|_| speed == Speed::Read),
                 asks_speed: speed == Speed::Read,
                 ..(*typed).clone()
             });
@@ -150,7 +188,9 @@ pub fn engine(props: &ConditionEditorProps, typed: &UseStateHandle<Typed>) -> Ht
     });
     let on_entry = {
         let (typed, on_change) = (typed.clone(), props.on_change.clone());
+        let own = props.clone();
         Callback::from(move |entry: Entry| {
+            own.keep(SPEED, &entry);
             typed.set(Typed {
                 engine: Some(entry.typed),
                 asks_speed: true,
@@ -208,7 +248,9 @@ pub fn oil(props: &ConditionEditorProps, typed: &UseStateHandle<Typed>) -> Html 
     });
     let on_entry = {
         let (typed, on_change) = (typed.clone(), props.on_change.clone());
+        let own = props.clone();
         Callback::from(move |entry: Entry| {
+            own.keep(OIL, &entry);
             typed.set(Typed {
                 oil: Some(entry.typed),
                 place: Some(place),

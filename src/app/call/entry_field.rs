@@ -3,6 +3,7 @@
 use super::change::Change;
 use super::entry::{self, Mode, Said};
 use super::entry_modes as modes;
+use super::last_time::LastTime;
 use crate::app::parts::Entry;
 use crate::quantity::{Kind, UnitPrefs};
 use crate::readings::instrument::Instrument;
@@ -18,6 +19,9 @@ pub struct EntryFieldProps {
     pub number: usize,
     /// Instrument on the port, where one is said.
     pub instrument: Option<Instrument>,
+    /// The same reading on an earlier call.
+    #[prop_or_default]
+    pub last: Option<LastTime>,
     /// Units.
     pub prefs: UnitPrefs,
     /// An edit.

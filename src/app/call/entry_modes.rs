@@ -2,7 +2,7 @@
 
 use super::entry::{self, Said};
 use super::entry_field::{EntryFieldProps, field_id};
-use super::{group, words};
+use super::{group, last_time, words};
 use crate::app::parts::{Entry, MeasureField, Opt, Select, TextField};
 use crate::quantity::{Kind, Measure, parse};
 use crate::readings::Seen;
@@ -196,7 +196,7 @@ pub fn share(props: &EntryFieldProps, say: &Callback<Said>, of: &UseStateHandle<
         .iter()
         .enumerate()
         .map(|(place, (words, _))| Opt::new(place, *words, place.to_string()));
-    html! {
+    html! { <>
         <div class="entry-pair">
             <MeasureField
                 id={field_id(&props.reading.id)}
@@ -219,7 +219,8 @@ pub fn share(props: &EntryFieldProps, say: &Callback<Said>, of: &UseStateHandle<
                 testid={format!("share-of-{}", props.number)}
             />
         </div>
-    }
+        <p class="soft small" data-testid={format!("share-last-{}", props.number)}>{ last_time::why_not(props.last.as_ref()) }</p>
+    </> }
 }
 
 /// The reason.

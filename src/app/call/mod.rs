@@ -6,16 +6,21 @@
 //! | [`entry`] | what is typed in a reading's field, and what was seen |
 //! | [`group`], [`quick`] | readings by condition; the usual sets |
 //! | [`scale`], [`mark`], [`words`] | how windows, standings and chances are shown |
+//! | [`close`] | the end of the call |
+//! | [`put_back`] | what has to be put back before a call is closed |
 //! | [`gate`] | precautions that open a hazardous reading |
 //! | [`map`] | the loop drawn with its ports |
 //! | [`causes`] | the ranking |
+//! | [`next`] | the check that tells most, what it would say, the repair |
 //! | [`screen`] | all of it together |
 
 mod add_panel;
 mod alerts;
+mod bands;
 mod causes;
 mod cautions;
 mod change;
+mod close;
 mod condition_editor;
 mod condition_parts;
 mod edits;
@@ -25,21 +30,27 @@ mod entry_modes;
 mod gate;
 mod gate_panel;
 mod group;
+mod hazard;
 mod history;
+mod last_time;
 mod map;
 mod mark;
 mod new_gauge;
-mod next_panel;
+mod next;
+mod put_back;
 mod quick;
 mod quick_panel;
 mod reading_group;
 mod reading_row;
+mod retake;
 mod rig;
 mod scale;
 mod screen;
+mod seen_keys;
 mod seen_panel;
 mod told;
 mod window_scale;
 mod words;
 
+pub use last_time::EarlierCalls;
 pub use screen::{CallScreen, CallScreenProps};

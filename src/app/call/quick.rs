@@ -79,7 +79,7 @@ impl QuickSet {
 }
 
 /// True where a reading's condition is that of the set, whatever has been measured since.
-fn alike(taken: &Condition, planned: &Condition) -> bool {
+pub fn alike(taken: &Condition, planned: &Condition) -> bool {
     let mut plain = *taken;
     plain.oil = None;
     if matches!(plain.engine, EngineSpeed::Measured(_)) {

@@ -3,9 +3,11 @@
 use super::cautions;
 use super::change::Change;
 use super::condition_editor::ConditionEditor;
+use super::condition_parts::FIELDS;
 use super::entry;
 use super::gate::{self, Gate};
 use super::gate_panel::{GatePanel, advice};
+use super::last_time::EarlierCalls;
 use super::reading_row::ReadingRow;
 use super::words;
 use crate::app::platform::clock;
@@ -46,6 +48,8 @@ pub struct ReadingGroupProps {
     pub unit: Rc<Unit>,
     /// Visit.
     pub visit: Rc<Visit>,
+    /// Earlier calls on the unit.
+    pub earlier: EarlierCalls,
     /// Instruments of the shop.
     pub instruments: Rc<Vec<Instrument>>,
     /// Units.
@@ -54,6 +58,11 @@ pub struct ReadingGroupProps {
     pub on_change: Callback<Change>,
     /// The shop's list was added to.
     pub on_instruments: Callback<Vec<Instrument>>,
+}
+
+/// DOM id of the precautions that stand before a reading.
+pub fn gate_id(reading: &str) -> String {
+    format!("gate-{reading}")
 }
 
 /// The group.
@@ -85,6 +94,18 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
             .on_change
             .reform(move |condition| Change::Condition(ids.clone(), condition))
     };
+    let texts = props
+        .visit
+        .headings
+        .get(&first)
+        .cloned()
+        .unwrap_or_default();
+    let on_text = {
+        let ids = ids.clone();
+        props
+            .on_change
+            .reform(move |(field, text)| Change::Heading(ids.clone(), field, text))
+    };
     let windows = props
         .assessment
         .as_deref()
@@ -115,6 +136,13 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                     <p class={if props.condition.oil.is_some() { "soft" } else { "group-missing" }}>
                         { words::oil(&props.condition, &props.prefs) }
                     </p>
+                    if !props.editing {
+                        { for FIELDS.iter().filter_map(|(field, name)| texts.get(*field).map(|text| html! {
+                            <p class="group-missing" data-testid={format!("heading-{field}")}>
+                                { format!("Not taken yet, {name}: “{text}”") }
+                            </p>
+                        })) }
+                    }
                 </div>
                 <button
                     type="button"
@@ -132,19 +160,22 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                     condition={props.condition}
                     prefs={props.prefs.clone()}
                     on_change={on_condition}
+                    texts={texts.clone()}
+                    on_text={on_text}
                 />
             }
             { cautions::all(&new_places(props)) }
             { advice(&gates) }
             <ol class="readings">
                 { for readings.iter().map(|(place, reading)| html! { <>
-                    { for gates.iter().filter(|gate| is_first(gate, reading)).map(|gate| panel(props, gate, hold)) }
+                    { for gates.iter().filter(|gate| is_first(gate, reading)).map(|gate| panel(props, gate, hold, &reading.id)) }
                     <ReadingRow
                         key={reading.id.clone()}
                         reading={(*reading).clone()}
                         number={*place}
                         window={windows.iter().find(|window| window.reading == reading.id).cloned()}
                         retake={retakes.iter().find(|(id, _)| *id == reading.id).map(|(_, why)| why.clone())}
+                        last={props.earlier.of(reading)}
                         closed={gate::closes(&gates, reading)}
                         updating={props.updating}
                         chosen={props.chosen == Some(reading.port)}
@@ -177,9 +208,11 @@ fn new_places(props: &ReadingGroupProps) -> Vec<Stands> {
 }
 
 /// The precautions of a check stand before the first reading that it guards.
-fn panel(props: &ReadingGroupProps, gate: &Gate, hold: Option<(f64, f64)>) -> Html {
+fn panel(props: &ReadingGroupProps, gate: &Gate, hold: Option<(f64, f64)>, first: &str) -> Html {
+    // Somebody who comes for the reading is brought to what must be so before it.
+    let asks = gate.barred.is_some() || !(gate.is_ticked() && gate.fresh);
     html! {
-        <li class="gate-item" key={gate.check.id}>
+        <li class="gate-item" key={gate.check.id} id={asks.then(|| gate_id(first))} tabindex={asks.then_some("-1")}>
             <GatePanel
                 gate={gate.clone()}
                 told={props.told.contains(&gate.check.id)}

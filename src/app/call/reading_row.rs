@@ -4,10 +4,12 @@ use super::cautions;
 use super::change::Change;
 use super::entry::{self, Mode};
 use super::entry_field::EntryField;
+use super::last_time::{self, LastTime};
 use super::mark;
+use super::retake;
 use super::rig::{self, Rig};
 use super::window_scale::WindowScale;
-use crate::app::parts::{Caution, Confirm, Grade, TextField};
+use crate::app::parts::{Confirm, TextField};
 use crate::assessment::{Standing, Window};
 use crate::quantity::UnitPrefs;
 use crate::readings::instrument::Instrument;
@@ -28,6 +30,8 @@ pub struct ReadingRowProps {
     pub window: Option<Window>,
     /// Why it should be taken again.
     pub retake: Option<String>,
+    /// The same reading on an earlier call.
+    pub last: Option<LastTime>,
     /// Why its field stays closed; none where it is open.
     pub closed: Option<AttrValue>,
     /// True while a newer answer is being worked out.
@@ -69,8 +73,13 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
         let more = more.clone();
         Callback::from(move |_: MouseEvent| more.set(!*more))
     };
+    // A reading that was emptied has nothing left that could not fit.
+    let doubt = props.retake.as_deref().filter(|_| !is_open);
+    let earlier = props.visit.earlier.get(&reading.id);
+    let earlier = earlier.map(Vec::as_slice).unwrap_or_default();
     let class = format!(
-        "reading{}{}{}",
+        "reading{}{}{}{}",
+        if doubt.is_some() { " is-doubtful" } else { "" },
         if props.chosen { " is-chosen" } else { "" },
         if plain { " is-plain" } else { "" },
         // The keys give way once a value stands; "More" brings them back.
@@ -84,7 +93,9 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
         <li {class} id={row_id(&reading.id)} tabindex="-1" data-testid={format!("reading-row-{}", props.number)}>
             <div class="reading-head">
                 <h4 class="reading-name">{ reading.port.words() }</h4>
-                if !is_open {
+                if doubt.is_some() {
+                    { retake::badge() }
+                } else if !is_open {
                     <span class={if props.updating { "reading-standing is-updating" } else { "reading-standing" }}>
                         { mark::badge(standing) }
                     </span>
@@ -100,6 +111,9 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
                     { if *more { "Less" } else { "More" } }
                 </button>
             </div>
+            if let Some(why) = doubt {
+                { retake::ask(reading, props.number, why, earlier, &props.on_change) }
+            }
             if is_open || *more {
                 { props.unit.ports.get(&reading.port).map(port_note) }
             }
@@ -110,6 +124,7 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
                     reading={reading.clone()}
                     number={props.number}
                     {instrument}
+                    last={props.last.clone()}
                     prefs={props.prefs.clone()}
                     on_change={props.on_change.clone()}
                 />
@@ -125,12 +140,9 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
                 on_change={props.on_change.clone()}
                 on_instruments={props.on_instruments.clone()}
             />
+            { last_time::told(reading, props.last.as_ref(), props.number, &props.prefs) }
+            { retake::before(reading, props.number, earlier, &props.prefs) }
             { cautions::of_reading(reading) }
-            if let Some(why) = &props.retake {
-                <Caution grade={Grade::Caution} title="take this again" testid={format!("retake-{}", props.number)}>
-                    <p>{ why.clone() }</p>
-                </Caution>
-            }
             if let Some(window) = &props.window {
                 <WindowScale
                     port={reading.port}

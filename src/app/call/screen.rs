@@ -6,18 +6,21 @@ use super::alerts::{LeadStatus, StopWork};
 use super::causes::Causes;
 use super::cautions;
 use super::change::Change;
+use super::close::ClosePanel;
 use super::edits::use_edits;
 use super::entry;
 use super::entry_field::field_id;
 use super::group::groups;
+use super::last_time::EarlierCalls;
 use super::map::LoopMap;
-use super::next_panel::NextPanel;
+use super::next::NextPanel;
 use super::quick_panel::QuickPanel;
-use super::reading_group::ReadingGroup;
+use super::reading_group::{ReadingGroup, gate_id};
 use super::reading_row::row_id;
 use super::seen_panel::SeenPanel;
 use super::told::told_before;
 use crate::app::parts::{Icon, Shape};
+use crate::app::platform::clock;
 use crate::app::platform::focus;
 use crate::app::platform::timer::Timer;
 use crate::assessment::Assessment;
@@ -44,6 +47,9 @@ pub struct CallScreenProps {
     pub unit: Rc<Unit>,
     /// The visit.
     pub visit: Rc<Visit>,
+    /// Calls on the unit before this one, latest first.
+    #[prop_or_default]
+    pub earlier: EarlierCalls,
     /// Instruments of the shop.
     pub instruments: Rc<Vec<Instrument>>,
     /// Units of measure.
@@ -83,6 +89,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 // The row first: the field of a closed reading is not there.
                 focus::to(&row_id(&reading));
                 focus::to(&field_id(&reading));
+                focus::to(&gate_id(&reading));
             }
         });
     }
@@ -154,7 +161,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     updating={props.updating}
                     readings={visit.readings.clone()}
                     prefs={props.prefs.clone()}
-                    on_reading={on_reading}
+                    on_reading={on_reading.clone()}
                 />
             </div>
             <div class="call-map">
@@ -168,9 +175,10 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             </div>
             </div>
             <div class="call-main">
+                { closed(visit) }
                 <StopWork visit={visit.clone()} assessment={props.assessment.clone()} />
                 <nav class="jump" aria-label="On this screen">
-                    { for [("seen", "Seen"), ("next", "Next"), ("quick", "Usual"), ("readings", "Readings"), ("add", "Add")].map(|(id, words)| html! {
+                    { for [("seen", "Seen"), ("next", "Next"), ("quick", "Usual"), ("readings", "Readings"), ("add", "Add"), ("close", "Close")].map(|(id, words)| html! {
                         <button key={id} type="button" class="jump-to" onclick={jump(id)}>{ words }</button>
                     }) }
                 </nav>
@@ -179,9 +187,10 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 <NextPanel
                     assessment={props.assessment.clone()}
                     updating={props.updating}
-                    readings={visit.readings.clone()}
+                    visit={visit.clone()}
                     prefs={props.prefs.clone()}
                     on_change={on_change.clone()}
+                    on_reading={on_reading.clone()}
                 />
                 <QuickPanel readings={visit.readings.clone()} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
@@ -203,6 +212,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                             chosen={*chosen}
                             unit={props.unit.clone()}
                             visit={visit.clone()}
+                            earlier={props.earlier.clone()}
                             instruments={props.instruments.clone()}
                             prefs={props.prefs.clone()}
                             on_change={on_change.clone()}
@@ -214,6 +224,11 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     ticks={props.unit.ticks.clone()}
                     last={last_condition(visit)}
                     prefs={props.prefs.clone()}
+                    on_change={on_change.clone()}
+                />
+                <ClosePanel
+                    visit={visit.clone()}
+                    assessment={props.assessment.clone()}
                     on_change={on_change.clone()}
                 />
                 if let Some(words) = undo {
@@ -241,6 +256,19 @@ fn on_enter(event: &KeyboardEvent, order: &[String]) {
         event.prevent_default();
         focus::to(&row_id(next));
         focus::to(&field_id(next));
+    }
+}
+
+/// A closed call says so before anything else.
+fn closed(visit: &Visit) -> Html {
+    let Some(closing) = &visit.closed else {
+        return Html::default();
+    };
+    html! {
+        <p class="call-closed" data-testid="call-closed">
+            { format!("This call was closed, {}. ", clock::tell(&closing.when)) }
+            <button type="button" class="link" onclick={jump("close")}>{ "How it ended" }</button>
+        </p>
     }
 }
 

@@ -2,6 +2,7 @@
 
 use super::cautions;
 use super::change::Change;
+use super::seen_keys;
 use crate::app::parts::{Choice, Opt, TextField};
 use crate::caution::Stands;
 use crate::observations::{self, Group, Observation};
@@ -9,7 +10,7 @@ use crate::record::limits::TEXT_CHARACTERS;
 use crate::record::{Answer, Visit};
 use crate::unit::MachineClass;
 use std::rc::Rc;
-use yew::{Callback, Html, MouseEvent, Properties, component, html, use_state};
+use yew::{Callback, Html, Properties, component, html, use_state};
 
 /// Properties of [`SeenPanel`].
 #[derive(Clone, PartialEq, Properties)]
@@ -138,22 +139,6 @@ fn is_yes(answer: Answer) -> bool {
     matches!(answer, Answer::Seen | Answer::OperatorSays)
 }
 
-/// The four answers and their words for a group.
-fn keys(group: Group) -> [(Answer, &'static str, &'static str); 4] {
-    let (yes, no) = match group {
-        Group::Complaint | Group::WhenItFails => ("I saw it", "Not so"),
-        Group::Look => ("Seen", "Not there"),
-        Group::Listen => ("Heard", "Not heard"),
-        Group::Feel => ("Is so", "Not so"),
-    };
-    [
-        (Answer::Seen, "seen", yes),
-        (Answer::NotSeen, "not-seen", no),
-        (Answer::OperatorSays, "says", "Says so"),
-        (Answer::OperatorSaysNot, "says-not", "Says not"),
-    ]
-}
-
 fn tick(observation: &'static Observation, props: &SeenGroupProps) -> Html {
     let given = props.visit.observations.get(observation.id).copied();
     let state = match given {
@@ -163,33 +148,7 @@ fn tick(observation: &'static Observation, props: &SeenGroupProps) -> Html {
     };
     html! {
         <li class={format!("seen-tick {state}")} key={observation.id}>
-            <span class="seen-words" id={format!("seen-{}", observation.id)}>{ observation.words }</span>
-            if !observation.how.is_empty() {
-                <span class="seen-how">{ observation.how }</span>
-            }
-            <div class="keys" role="group" aria-labelledby={format!("seen-{}", observation.id)}>
-                { for keys(props.group).into_iter().map(|(answer, code, words)| {
-                    let is_on = given == Some(answer);
-                    let on_change = props.on_change.clone();
-                    let on_click = Callback::from(move |_: MouseEvent| {
-                        // A second touch takes the answer back: not looked.
-                        let next = (!is_on).then_some(answer);
-                        on_change.emit(Change::Observe(observation.id.to_owned(), next));
-                    });
-                    html! {
-                        <button
-                            key={code}
-                            type="button"
-                            class={if is_on { "key is-on" } else { "key" }}
-                            aria-pressed={if is_on { "true" } else { "false" }}
-                            data-testid={format!("seen-{}-{code}", observation.id)}
-                            onclick={on_click}
-                        >
-                            { words }
-                        </button>
-                    }
-                }) }
-            </div>
+            { seen_keys::ask(observation, given, "seen", &props.on_change) }
         </li>
     }
 }

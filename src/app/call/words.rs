@@ -1,9 +1,9 @@
 //! Words of the call screen: states, sources, conditions and probabilities in the trade's own terms.
 
-use crate::assessment::{Assessment, Standing, Trust, WindowSource};
+use crate::assessment::{Assessment, Cause, Standing, Trust, WindowSource};
 use crate::faults::FaultId;
-use crate::quantity::{self, Decimals, Kind, Measure, Unit, UnitPrefs};
-use crate::readings::{Condition, Direction, EngineSpeed, Lever, Port};
+use crate::quantity::{self, DecimalMark, Decimals, Kind, Measure, Unit, UnitPrefs};
+use crate::readings::{Condition, Direction, EngineSpeed, Lever, Port, Seen};
 
 /// Narrow no-break space: before a per cent sign and between a figure and its unit.
 const NARROW: char = '\u{202F}';
@@ -111,6 +111,14 @@ pub fn verdict(assessment: &Assessment) -> Verdict {
     }
 }
 
+/// The name of a row of causes in one line.
+pub fn cause_title(cause: &Cause) -> String {
+    match &cause.pair {
+        Some(pair) => format!("{} and {}", pair.titles[0], pair.titles[1]),
+        None => cause.title.clone(),
+    }
+}
+
 /// The chance of a cause as a per cent, told no finer than the last refinement left it.
 pub fn chance(probability: f64, trust: &Trust) -> String {
     if trust.change <= COARSE {
@@ -179,6 +187,19 @@ pub fn value(port: Port, base: f64, prefs: &UnitPrefs) -> String {
     )
 }
 
+/// What was seen at a port, in words.
+pub fn seen(port: Port, seen: &Seen, prefs: &UnitPrefs) -> String {
+    let value = |measure: Measure| value(port, measure.base(), prefs);
+    match seen {
+        Seen::Value { value: read } => value(*read),
+        Seen::Swing { low, high } => format!("swings, {} to {}", value(*low), value(*high)),
+        Seen::OffScale { top } => format!("over {}", value(*top)),
+        Seen::Nothing => String::from("nothing"),
+        Seen::ShareOf { share, .. } => format!("{} of the other", percent(*share)),
+        Seen::NotPossible { .. } => String::from("not possible"),
+    }
+}
+
 /// A value with the spread around it, printed no finer than the spread allows: `about 9 ±4 bar`.
 pub fn rough(port: Port, value: f64, spread: f64, prefs: &UnitPrefs) -> String {
     let Some(around) = as_spread(port, spread, prefs) else {
@@ -245,6 +266,33 @@ pub fn ends(port: Port, low: f64, high: f64, prefs: &UnitPrefs) -> (String, Stri
     match span.split_once(" to ") {
         Some((from, to)) => (from.to_owned(), to.to_owned()),
         None => (span.clone(), span),
+    }
+}
+
+/// A value at a port (base unit of its kind) as a figure in the unit it is shown in; none where it cannot be.
+pub fn shown(port: Port, base: f64, prefs: &UnitPrefs) -> Option<f64> {
+    let unit = unit_of(port, prefs);
+    as_measure(port, base, prefs)?.try_in_unit(unit).ok()
+}
+
+/// A round figure of a scale, with these decimals.
+pub fn tick(figure: f64, decimals: u8, mark: DecimalMark) -> String {
+    let text = format!("{figure:.*}", usize::from(decimals));
+    match mark {
+        DecimalMark::Point => text,
+        DecimalMark::Comma => text.replace('.', ","),
+    }
+    .replace('-', "\u{2212}")
+}
+
+/// Minutes for a person: whole ones, up.
+pub fn minutes(minutes: f64) -> String {
+    if !minutes.is_finite() {
+        String::from("? min")
+    } else if minutes <= 1.0 {
+        format!("1{NARROW}min")
+    } else {
+        format!("{:.0}{NARROW}min", minutes.ceil())
     }
 }
 

@@ -57,6 +57,13 @@ impl State {
         visits
     }
 
+    /// Earlier visits to the same unit, latest first.
+    pub fn visits_before(&self, visit: &Visit) -> Vec<Rc<Visit>> {
+        let mut visits = self.visits_of(&visit.unit);
+        visits.retain(|other| (&other.opened, &other.id) < (&visit.opened, &visit.id));
+        visits
+    }
+
     /// Units, the one called last first, those without a call by name behind them.
     pub fn units_by_last_call(&self) -> Vec<Rc<Unit>> {
         let last = |unit: &Rc<Unit>| {

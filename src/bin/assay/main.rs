@@ -3,11 +3,14 @@
 //! `cargo run --release --bin assay -- ranking [cases] [Charge|Held|Speeds|All]` scores the ranking for each set of readings,
 //! with clean notes and with sloppy ones, beside the best possible ranker, which knows the world's own laws and scatter.
 //! Faults are drawn equally often and the base rates are made equal too, so that the scores speak of the readings alone.
+//! `assay steps [cases] [seed]` counts the minutes to the cause (see [`steps`]).
 //! `ASSAY_TELL=1` prints the cases in which a wrong cause was all but certain; `ASSAY_SEED` changes the draw;
 //! `ASSAY_NOTES=clean` leaves the sloppy notes out.
 
 mod judge;
 mod score;
+mod steps;
+mod steps_danger;
 mod world;
 
 use judge::{Judge, Ranked, Ranker, listed};
@@ -40,7 +43,8 @@ fn seed() -> u64 {
 fn main() {
     match std::env::args().nth(1).as_deref() {
         Some("ranking") | None => ranking(),
-        Some(other) => eprintln!("assay: no such part: {other}. There is: ranking."),
+        Some("steps") => steps::steps(number(2, 60), number(3, 2026) as u64),
+        Some(other) => eprintln!("assay: no such part: {other}. There are: ranking, steps."),
     }
 }
 

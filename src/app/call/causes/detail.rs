@@ -1,20 +1,27 @@
 //! Behind a cause: what speaks for and against it, what the gauges would read under it, its proof and its repair.
 
+use crate::app::call::quick::alike;
 use crate::app::call::{cautions, words};
 use crate::app::parts::{Caution, Grade};
 use crate::assessment::{Cause, Evidence};
 use crate::caution;
 use crate::faults::{self, FaultId};
+use crate::next::{Advice, Foretold, Would};
 use crate::quantity::UnitPrefs;
 use crate::readings::{Reading, Seen};
 use yew::{Callback, Html, MouseEvent, html};
 
 /// Marks in a row of weight.
 const MARKS: usize = 4;
+/// Ports not read yet that are told.
+const OTHERS: usize = 4;
 
 /// What serves every member of a set, and what splits them.
 pub fn set(cause: &Cause) -> Html {
-    if cause.ids.len() < 2 || (cause.action.is_empty() && cause.split.is_empty()) {
+    if cause.ids.len() < 2
+        || cause.pair.is_some()
+        || (cause.action.is_empty() && cause.split.is_empty())
+    {
         return Html::default();
     }
     html! {
@@ -30,7 +37,12 @@ pub fn set(cause: &Cause) -> Html {
 }
 
 /// For and against, heaviest first.
-pub fn evidence(cause: &Cause, on_reading: &Callback<String>, readings: &[Reading]) -> Html {
+pub fn evidence(
+    cause: &Cause,
+    on_reading: &Callback<String>,
+    readings: &[Reading],
+    prefs: &UnitPrefs,
+) -> Html {
     let told = cause
         .evidence
         .iter()
@@ -48,7 +60,7 @@ pub fn evidence(cause: &Cause, on_reading: &Callback<String>, readings: &[Readin
             <div class="evidence">
                 <h3>{ title }</h3>
                 <ul class="evidence-list">
-                    { for items.into_iter().map(|item| piece(item, way, on_reading, readings)) }
+                    { for items.into_iter().map(|item| piece(item, way, on_reading, readings, prefs)) }
                 </ul>
             </div>
         }
@@ -59,18 +71,30 @@ pub fn evidence(cause: &Cause, on_reading: &Callback<String>, readings: &[Readin
     </> }
 }
 
-fn piece(item: &Evidence, way: &str, on_reading: &Callback<String>, readings: &[Reading]) -> Html {
+fn piece(
+    item: &Evidence,
+    way: &str,
+    on_reading: &Callback<String>,
+    readings: &[Reading],
+    prefs: &UnitPrefs,
+) -> Html {
     let (filled, how) = words::weight(item.weight);
-    let text = if readings.iter().any(|reading| reading.id == item.of) {
-        let (on_reading, id) = (on_reading.clone(), item.of.clone());
-        let on_click = Callback::from(move |_: MouseEvent| on_reading.emit(id.clone()));
-        html! { <button type="button" class="link" onclick={on_click}>{ item.words.clone() }</button> }
-    } else {
-        html! { { item.words.clone() } }
+    let text = match readings.iter().find(|reading| reading.id == item.of) {
+        Some(reading) => {
+            let (on_reading, id) = (on_reading.clone(), item.of.clone());
+            let on_click = Callback::from(move |_: MouseEvent| on_reading.emit(id.clone()));
+            let words = format!(
+                "{}, {}",
+                reading.port.words(),
+                words::condition(&reading.condition, prefs)
+            );
+            html! { <button type="button" class="link" onclick={on_click}>{ words }</button> }
+        }
+        None => html! { { item.words.clone() } },
     };
     html! {
         <li class={format!("evidence-piece is-{way}")} key={item.of.clone()}>
-            <svg class="weight" viewBox="0 0 60 14" width="60" height="14" role="img" aria-label={format!("{how} {way}")}>
+            <svg class="weight" viewBox="0 0 60 14" width="60" height="14" aria-hidden="true" focusable="false">
                 { for (0..MARKS).map(|place| html! {
                     <circle
                         cx={(7 + 15 * place).to_string()} cy="7" r="5.2"
@@ -78,7 +102,7 @@ fn piece(item: &Evidence, way: &str, on_reading: &Callback<String>, readings: &[
                     />
                 }) }
             </svg>
-            <span>{ text }</span>
+            <span><span class="evidence-how">{ how }{ ": " }</span>{ text }</span>
         </li>
     }
 }
@@ -117,17 +141,55 @@ pub fn would_read(cause: &Cause, readings: &[Reading], prefs: &UnitPrefs) -> Htm
 }
 
 fn read(reading: &Reading, prefs: &UnitPrefs) -> String {
-    let value =
-        |measure: crate::quantity::Measure| words::value(reading.port, measure.base(), prefs);
     match &reading.seen {
-        Some(Seen::Value { value: read }) => format!("read: {}", value(*read)),
-        Some(Seen::Swing { low, high }) => format!("swings: {} to {}", value(*low), value(*high)),
-        Some(Seen::OffScale { top }) => format!("over {}", value(*top)),
-        Some(Seen::Nothing) => String::from("read: nothing"),
-        Some(Seen::ShareOf { share, .. }) => {
-            format!("read: {} of the other", words::percent(*share))
-        }
         Some(Seen::NotPossible { .. }) | None => String::from("not taken"),
+        Some(seen) => format!("read: {}", words::seen(reading.port, seen, prefs)),
+    }
+}
+
+/// What the ports that are not read yet would show under the cause: those of the checks on offer.
+pub fn others(
+    cause: &Cause,
+    advice: Option<&Advice>,
+    readings: &[Reading],
+    prefs: &UnitPrefs,
+) -> Html {
+    let told = advice.iter().flat_map(|advice| &advice.checks);
+    let told = told.flat_map(|offer| &offer.foretold).filter(|foretold| {
+        !readings.iter().any(|reading| {
+            reading.port == foretold.port
+                && reading.seen.is_some()
+                && alike(&reading.condition, &foretold.condition)
+        })
+    });
+    let rows: Vec<(&Foretold, &Would)> = told
+        .filter_map(|foretold| {
+            let of = |would: &&Would| cause.ids.contains(&would.id);
+            Some((foretold, foretold.would.iter().find(of)?))
+        })
+        .take(OTHERS)
+        .collect();
+    if rows.is_empty() || cause.pair.is_some() {
+        return Html::default();
+    }
+    html! {
+        <div class="would">
+            <h3>{ "Not read yet: it would show" }</h3>
+            <ul class="would-list">
+                { for rows.into_iter().map(|(foretold, would)| {
+                    let (low, high) = words::ends(foretold.port, would.low, would.high, prefs);
+                    html! {
+                        <li class="would-row">
+                            <span class="would-what">
+                                { words::port_short(foretold.port) }
+                                <span class="soft">{ " · " }{ words::condition(&foretold.condition, prefs) }</span>
+                            </span>
+                            <span class="would-value figure">{ format!("{low} to {high}") }</span>
+                        </li>
+                    }
+                }) }
+            </ul>
+        </div>
     }
 }
 

@@ -2,6 +2,7 @@
 //! where there is room for it.
 
 mod detail;
+mod pair;
 mod row;
 
 use super::words::{self, Verdict};
@@ -111,13 +112,18 @@ fn lead(assessment: Option<&Assessment>, verdict: Option<Verdict>) -> Vec<Html> 
     }
     let line = |cause: &Cause| {
         html! {
-            <li class="causes-line" key={cause.title.clone()}>
-                <span class="causes-name">{ cause.title.clone() }</span>
+            <li class="causes-line" key={key(cause)}>
+                <span class="causes-name">{ words::cause_title(cause) }</span>
                 <span class="causes-share">{ words::chance(cause.probability, &assessment.trust) }</span>
             </li>
         }
     };
     assessment.causes.iter().take(IN_STRIP).map(line).collect()
+}
+
+/// What a row is known by while the order changes.
+fn key(cause: &Cause) -> String {
+    format!("{:?}", cause.ids)
 }
 
 /// Properties of [`List`].
@@ -165,10 +171,11 @@ fn List(props: &ListProps) -> Html {
         <ol class="cause-list">
             { for assessment.causes.iter().take(shown).enumerate().map(|(place, cause)| html! {
                 <CauseRow
-                    key={cause.title.clone()}
+                    key={key(cause)}
                     {place}
                     cause={cause.clone()}
                     trust={assessment.trust.clone()}
+                    advice={assessment.advice.clone()}
                     {verdict}
                     readings={props.readings.clone()}
                     prefs={props.prefs.clone()}
@@ -252,7 +259,8 @@ fn retake(props: &ListProps, id: &str, why: &str) -> Html {
             >
                 { reading.port.words() }
             </button>
-            { ", " }{ words::condition(&reading.condition, &props.prefs) }{ ": " }{ why.to_owned() }
+            // Why stands at the reading.
+            { ", " }{ words::condition(&reading.condition, &props.prefs) }
         </li>
     }
 }

@@ -1,9 +1,10 @@
 //! One row of the ranking.
 
-use super::detail;
+use super::{detail, pair};
 use crate::app::call::words::{self, Verdict};
 use crate::assessment::{Cause, Trust};
 use crate::faults::{self, FaultId};
+use crate::next::Advice;
 use crate::quantity::UnitPrefs;
 use crate::readings::Reading;
 use yew::{Callback, Html, Properties, component, html};
@@ -19,6 +20,8 @@ pub struct CauseRowProps {
     pub trust: Trust,
     /// How far the order can be relied on.
     pub verdict: Verdict,
+    /// What is on offer next: what its ports would show.
+    pub advice: Option<Advice>,
     /// Readings of the visit.
     pub readings: Vec<Reading>,
     /// Units.
@@ -41,7 +44,7 @@ pub fn CauseRow(props: &CauseRowProps) -> Html {
         <li class="cause" data-testid={format!("cause-{}", props.place)}>
             <details class="cause-fold">
                 <summary class="cause-head">
-                    <span class="cause-title">{ cause.title.clone() }</span>
+                    <span class="cause-title">{ title(cause) }</span>
                     if told {
                         <span class="cause-share figure">{ words::chance(cause.probability, &props.trust) }</span>
                         { bar(cause.probability) }
@@ -49,7 +52,7 @@ pub fn CauseRow(props: &CauseRowProps) -> Html {
                     if stop {
                         <span class="cause-stop">{ "Stop work" }</span>
                     }
-                    if cause.ids.len() > 1 {
+                    if cause.ids.len() > 1 && cause.pair.is_none() {
                         <span class="cause-members soft">{ members(&cause.ids) }</span>
                     }
                     if props.place == 0 && told {
@@ -57,9 +60,11 @@ pub fn CauseRow(props: &CauseRowProps) -> Html {
                     }
                 </summary>
                 <div class="cause-body">
+                    { pair::explained(cause, &props.on_reading, &props.readings, &props.prefs) }
                     { detail::set(cause) }
-                    { detail::evidence(cause, &props.on_reading, &props.readings) }
+                    { detail::evidence(cause, &props.on_reading, &props.readings, &props.prefs) }
                     { detail::would_read(cause, &props.readings, &props.prefs) }
+                    { detail::others(cause, props.advice.as_ref(), &props.readings, &props.prefs) }
                     { for cause.ids.iter().map(|id| detail::member(*id, cause)) }
                 </div>
             </details>
@@ -78,6 +83,14 @@ fn bar(probability: f64) -> Html {
     }
 }
 
+/// The title; two causes at work together say so first.
+fn title(cause: &Cause) -> Html {
+    match &cause.pair {
+        Some(pair) => pair::title(pair),
+        None => html! { { cause.title.clone() } },
+    }
+}
+
 /// Names the members of a set that no reading taken so far can split.
 fn members(ids: &[FaultId]) -> String {
     let titles: Vec<&str> = ids
@@ -90,6 +103,9 @@ fn members(ids: &[FaultId]) -> String {
 
 /// The lead says at once what would prove it, or for a set what splits it.
 fn lead_proof(cause: &Cause) -> Html {
+    if cause.pair.is_some() {
+        return html! { <span class="cause-proof">{ "Each is proved by itself: open this row." }</span> };
+    }
     let proof = cause
         .ids
         .first()

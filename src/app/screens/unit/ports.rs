@@ -131,12 +131,10 @@ struct OnePortProps {
 fn OnePort(props: &OnePortProps) -> Html {
     let port = props.port;
     let id = code(port);
-    // The record keeps minutes as a figure; text that cannot be read stays here and is said to be wrong.
+    // What was typed stands while the form is open; text that cannot be read stands in the record too, and is said to be wrong.
     let typed = use_state(|| {
-        props
-            .note
-            .access_minutes
-            .map_or_else(String::new, |minutes| minutes.to_string())
+        let minutes = props.note.access_minutes.map(|minutes| minutes.to_string());
+        minutes.unwrap_or_else(|| props.note.access_typed.clone())
     });
     let change = |set: fn(&mut PortNote, String)| {
         let (note, on_note) = (props.note.clone(), props.on_note.clone());
@@ -149,15 +147,15 @@ fn OnePort(props: &OnePortProps) -> Html {
     let on_minutes = {
         let (typed, note, on_note) = (typed.clone(), props.note.clone(), props.on_note.clone());
         Callback::from(move |text: String| {
-            if let Ok(access_minutes) = minutes(&text) {
-                on_note.emit((
-                    port,
-                    Some(PortNote {
-                        access_minutes,
-                        ..note.clone()
-                    }),
-                ));
-            }
+            let read = minutes(&text);
+            on_note.emit((
+                port,
+                Some(PortNote {
+                    access_typed: read.as_ref().map_or_else(|_| text.clone(), |_| String::new()),
+                    access_minutes: read.ok().flatten(),
+                    ..note.clone()
+                }),
+            ));
             typed.set(text);
         })
     };

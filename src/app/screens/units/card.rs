@@ -46,10 +46,13 @@ pub fn closing_words(closing: &Closing) -> String {
     let cause = serde_json::from_value::<FaultId>(quoted)
         .ok()
         .and_then(crate::faults::find);
+    // Closed before it was asked whether it was proved: what proved it says so.
+    let is_proved = closing.is_proved || !closing.proof.trim().is_empty();
+    let found = if is_proved { "Found" } else { "Not proved" };
     match cause {
-        Some(fault) => format!("Found: {}", fault.title),
+        Some(fault) => format!("{found}: {}", fault.title),
         None if closing.cause.is_empty() => "Closed without a cause found".to_owned(),
-        None => format!("Found: {}", closing.cause),
+        None => format!("{found}: {}", closing.cause),
     }
 }
 

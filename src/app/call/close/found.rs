@@ -1,0 +1,143 @@
+//! What it was: one cause, two, or none; proved or not.
+
+use super::ClosePanelProps;
+use crate::app::call::change::Change;
+use crate::app::parts::{Choice, Opt, Select, TextField};
+use crate::faults::{self, FaultId};
+use crate::record::Closing;
+use crate::record::limits::TEXT_CHARACTERS;
+use yew::{Html, html};
+
+/// Leading causes that stand first in the list.
+const LEADING: usize = 6;
+
+/// The code under which a cause stands in a record.
+fn code(id: FaultId) -> String {
+    serde_json::to_value(id)
+        .ok()
+        .and_then(|code| code.as_str().map(str::to_owned))
+        .unwrap_or_default()
+}
+
+/// The cause of a code; none for one that this version does not know.
+pub fn cause(code: &str) -> Option<&'static faults::Fault> {
+    let quoted = serde_json::Value::String(code.to_owned());
+    serde_json::from_value::<FaultId>(quoted)
+        .ok()
+        .and_then(faults::find)
+}
+
+/// The finding in one line.
+pub fn words(closing: &Closing) -> String {
+    let title = |code: &str| cause(code).map_or_else(|| code.to_owned(), |f| f.title.to_owned());
+    if closing.cause.is_empty() {
+        return String::from("no cause");
+    }
+    let mut words = title(&closing.cause);
+    if !closing.also.is_empty() {
+        words = format!("{words} and {}", title(&closing.also));
+    }
+    let is_proved = closing.is_proved || !closing.proof.trim().is_empty();
+    format!(
+        "{words}, {}",
+        if is_proved { "proved" } else { "not proved" }
+    )
+}
+
+/// Causes to choose from: those that lead now, then all others by name.
+fn options(none: &'static str, props: &ClosePanelProps, but: &str) -> Vec<Opt<String>> {
+    let mut ids: Vec<FaultId> = Vec::new();
+    let leading = props
+        .assessment
+        .as_deref()
+        .map(|a| a.causes.iter().take(LEADING));
+    ids.extend(
+        leading
+            .into_iter()
+            .flatten()
+            .flat_map(|cause| cause.ids.clone()),
+    );
+    let mut rest: Vec<FaultId> = FaultId::ALL.to_vec();
+    rest.sort_by_key(|id| faults::find(*id).map_or("", |fault| fault.title));
+    ids.extend(rest);
+    let mut options = vec![Opt::new(String::new(), none, "none")];
+    for id in ids {
+        let Some(fault) = faults::find(id) else {
+            continue;
+        };
+        let code = code(id);
+        if code != but && !options.iter().any(|option| option.value == code) {
+            options.push(Opt::new(code.clone(), fault.title, code));
+        }
+    }
+    options
+}
+
+/// The questions.
+pub fn asked(closing: &Closing, props: &ClosePanelProps) -> Html {
+    let edit = |set: fn(&mut Closing, String)| {
+        let closing = closing.clone();
+        props.on_change.reform(move |text: String| {
+            let mut next = closing.clone();
+            set(&mut next, text);
+            Change::Closing(next)
+        })
+    };
+    let on_proved = {
+        let closing = closing.clone();
+        props.on_change.reform(move |is_proved: bool| {
+            Change::Closing(Closing {
+                is_proved,
+                ..closing.clone()
+            })
+        })
+    };
+    let proof = cause(&closing.cause).map_or("", |fault| fault.proof);
+    html! { <>
+        <Select<String>
+            id="close-cause"
+            label="Cause found"
+            options={options("No cause found", props, "")}
+            value={Some(closing.cause.clone())}
+            on_change={edit(|closing, cause| {
+                closing.cause = cause;
+                if closing.cause.is_empty() || closing.cause == closing.also {
+                    closing.also = String::new();
+                }
+                if closing.cause.is_empty() {
+                    closing.is_proved = false;
+                }
+            })}
+            testid="close-cause"
+        />
+        if !closing.cause.is_empty() {
+            <Select<String>
+                id="close-also"
+                label="And a second one"
+                options={options("None", props, &closing.cause)}
+                value={Some(closing.also.clone())}
+                on_change={edit(|closing, also| closing.also = also)}
+                testid="close-also"
+            />
+            <Choice<bool>
+                name="close-proved"
+                label="Proved on the machine?"
+                options={vec![Opt::new(true, "Proved", "yes"), Opt::new(false, "Not proved", "no")]}
+                value={Some(closing.is_proved)}
+                on_change={on_proved}
+            />
+            if closing.is_proved {
+                <TextField
+                    id="close-proof"
+                    label="What proved it"
+                    hint={proof}
+                    value={closing.proof.clone()}
+                    on_input={edit(|closing, proof| closing.proof = proof)}
+                    lines={true}
+                    maxlength={u32::try_from(TEXT_CHARACTERS).unwrap_or(2000)}
+                    testid="close-proof"
+                />
+            }
+        }
+    </> }
+}

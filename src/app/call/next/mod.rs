@@ -1,0 +1,105 @@
+//! What to do next: the check that tells most for its minutes, what its readings would say before the hose goes on, the
+//! repair, and when to stop.
+
+mod foretold;
+mod offer;
+mod repair;
+
+use super::change::Change;
+use crate::app::parts::{Caution, Grade};
+use crate::assessment::Assessment;
+use crate::next::{Advice, Offer};
+use crate::quantity::UnitPrefs;
+use crate::record::Visit;
+use std::rc::Rc;
+use yew::{Callback, Html, Properties, component, html};
+
+/// Properties of [`NextPanel`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct NextPanelProps {
+    /// The assessment, with its advice once it is there.
+    pub assessment: Option<Rc<Assessment>>,
+    /// The advice belongs to readings that have changed since.
+    pub updating: bool,
+    /// The visit.
+    pub visit: Rc<Visit>,
+    /// Units.
+    pub prefs: UnitPrefs,
+    /// An edit.
+    pub on_change: Callback<Change>,
+    /// Opens a reading, by id.
+    pub on_reading: Callback<String>,
+}
+
+/// The panel.
+#[component]
+pub fn NextPanel(props: &NextPanelProps) -> Html {
+    let advice = props.assessment.as_ref().and_then(|a| a.advice.as_ref());
+    html! {
+        <section class="panel next" aria-labelledby="next-title" id="next" tabindex="-1" data-testid="next">
+            <h2 id="next-title">
+                { "What to do next" }
+                if props.updating && advice.is_some() {
+                    <span class="count">{ "updating…" }</span>
+                }
+            </h2>
+            { match advice {
+                Some(advice) => shown(advice, props),
+                None => html! { <p class="soft" role="status">{ "Working out which check tells most…" }</p> },
+            } }
+        </section>
+    }
+}
+
+fn shown(advice: &Advice, props: &NextPanelProps) -> Html {
+    // What was made already has nothing more to say today.
+    let is_made = |offer: &&Offer| props.visit.made.contains(&offer.id);
+    let made: Vec<&Offer> = advice.checks.iter().filter(is_made).collect();
+    let left: Vec<&Offer> = advice.checks.iter().filter(|o| !is_made(o)).collect();
+    let (best, others) = match left.split_first() {
+        Some((best, others)) => (Some(*best), others),
+        None => (None, &[][..]),
+    };
+    html! {
+        <div class={if props.updating { "next-body is-updating" } else { "next-body" }}>
+            if let Some(stop) = &advice.stop {
+                <Caution grade={Grade::Note} title="Stop checking" class="small-caution" testid="next-stop">
+                    <p>{ stop.clone() }</p>
+                </Caution>
+            }
+            { for advice.repair.iter().filter(|r| r.now).map(|r| repair::shown(r, props)) }
+            { for best.map(|best| offer::best(best, props)) }
+            if !others.is_empty() {
+                <h3 class="next-other">{ "Or" }</h3>
+                <ol class="next-list">
+                    { for others.iter().enumerate().map(|(place, other)| offer::other(place + 1, other, props)) }
+                </ol>
+            }
+            { for advice.repair.iter().filter(|r| !r.now).map(|r| repair::shown(r, props)) }
+            if !made.is_empty() {
+                <ul class="plain-list" data-testid="next-made">
+                    { for made.into_iter().map(|made| offer::made(made, props)) }
+                </ul>
+            }
+            { held_back(advice) }
+            <p class="soft small">{ crate::caution::MANUAL_FIRST }</p>
+        </div>
+    }
+}
+
+/// What may not be offered yet, and what it waits for.
+fn held_back(advice: &Advice) -> Html {
+    if advice.held_back.is_empty() {
+        return Html::default();
+    }
+    html! {
+        <details class="advice" data-testid="next-held">
+            <summary>{ format!("Held back for now: {}", advice.held_back.len()) }</summary>
+            <ul>
+                { for advice.held_back.iter().map(|(title, why)| html! {
+                    <li key={title.clone()}><strong>{ title.clone() }</strong>{ ": " }{ why.clone() }</li>
+                }) }
+            </ul>
+        </details>
+    }
+}

@@ -1,0 +1,189 @@
+//! What a check still asks of this unit on this call: readings and answers that are open, whether it can be made at all, and its
+//! minutes with what is rigged already.
+
+use crate::checks::{self, Check, Yield};
+use crate::observations;
+use crate::readings::{Condition, Port};
+use crate::record::{Answer, Visit};
+use crate::unit::{ChargeSource, Control, Tick, Unit};
+
+/// True where a unit can have a port at all.
+fn has_port(unit: &Unit, port: Port) -> bool {
+    let ticks = &unit.ticks;
+    match port {
+        Port::Servo => ticks.control != Control::DirectManual,
+        Port::Pilot => matches!(
+            ticks.control,
+            Control::HydraulicRemote
+                | Control::SpeedSensing
+                | Control::PressureNoFeedback
+                | Control::Unknown
+        ),
+        Port::CoilCurrent => matches!(
+            ticks.control,
+            Control::ElectricProportional
+                | Control::ThreePosition
+                | Control::PressureNoFeedback
+                | Control::Unknown
+        ),
+        Port::Release => ticks.brake_from_charge != Tick::No,
+        Port::Shift => ticks.two_speed != Tick::No,
+        Port::InletPull => !matches!(
+            ticks.charge_source,
+            ChargeSource::Steering | ChargeSource::Implement
+        ),
+        _ => true,
+    }
+}
+
+/// The port that a reading's instrument stands on: the knee is read on the charge gauge.
+fn stands_on(port: Port) -> Port {
+    match port {
+        Port::Knee => Port::Charge,
+        p => p,
+    }
+}
+
+/// True where an instrument stands on a port: something was read there.
+fn is_rigged(visit: &Visit, port: Port) -> bool {
+    visit
+        .readings
+        .iter()
+        .any(|r| r.seen.is_some() && stands_on(r.port) == stands_on(port))
+}
+
+/// True where a reading was taken in a condition, whatever the temperature of the day. What proved not to be possible counts too:
+/// nobody is sent there twice.
+pub fn is_taken(visit: &Visit, port: Port, condition: &Condition) -> bool {
+    visit.readings.iter().any(|r| {
+        let c = &r.condition;
+        r.seen.is_some()
+            && r.port == port
+            && c.doing == condition.doing
+            && (c.doing.is_neutral()
+                || (c.direction == condition.direction && c.lever == condition.lever))
+            && core::mem::discriminant(&c.engine) == core::mem::discriminant(&condition.engine)
+            && c.flushing_blocked == condition.flushing_blocked
+            && c.consumers_capped == condition.consumers_capped
+    })
+}
+
+/// Readings of a check that this unit can give and that were not taken yet.
+pub fn open_readings(unit: &Unit, visit: &Visit, check: &Check) -> Vec<Yield> {
+    let oil = super::probe::oil_now(visit);
+    check
+        .yields
+        .iter()
+        .filter(|y| has_port(unit, y.port))
+        // Slip is counted without opening a port; charge is read along where its gauge is on.
+        .filter(|y| {
+            !(check.id == "slip-light-to-loaded" && y.port == Port::Charge)
+                || is_rigged(visit, Port::Charge)
+        })
+        .filter(|y| !is_taken(visit, y.port, &y.condition(oil)))
+        .copied()
+        .collect()
+}
+
+/// A check whose answers come from the operator's mouth.
+pub fn is_hearsay(check: &Check) -> bool {
+    check.id == "ask-the-operator"
+}
+
+/// True where an observation is an operator's word and nobody's own look.
+pub fn is_heard(visit: &Visit, id: &str) -> bool {
+    matches!(
+        visit.observations.get(id),
+        Some(Answer::OperatorSays | Answer::OperatorSaysNot)
+    )
+}
+
+/// Observations that a check answers and that nobody has answered yet, or only the operator: one's own look counts for more.
+pub fn open_answers(visit: &Visit, check: &Check) -> Vec<&'static observations::Observation> {
+    check
+        .answers
+        .iter()
+        .filter(|id| {
+            !visit.observations.contains_key(**id) || (!is_hearsay(check) && is_heard(visit, id))
+        })
+        .filter_map(|id| observations::find(id))
+        .filter(|o| !o.two_path)
+        .collect()
+}
+
+/// True where a check can be made on this unit and has something left to say.
+pub fn possible(unit: &Unit, visit: &Visit, check: &Check) -> bool {
+    let ticks = &unit.ticks;
+    let fits = match check.id {
+        "pull-the-shuttle" => ticks.flushing != Tick::No,
+        "roll-by-hand" => ticks.bypass != Tick::No,
+        "coil-current" | "swap-plugs" => has_port(unit, Port::CoilCurrent),
+        "bridge-the-servo" => ticks.control != Control::DirectManual,
+        "stroke-arm-by-hand" => matches!(
+            ticks.control,
+            Control::DirectManual | Control::ManualFeedback | Control::Unknown
+        ),
+        _ => true,
+    };
+    if check.two_path || !fits {
+        return false;
+    }
+    if check.yields.iter().any(|y| y.flushing_blocked) && ticks.flushing == Tick::No {
+        return false;
+    }
+    // A check that was marked as made has no open question left, only readings.
+    let asks =
+        !open_answers(visit, check).is_empty() && !visit.made.iter().any(|made| made == check.id);
+    if open_readings(unit, visit, check).is_empty() && !asks {
+        return false;
+    }
+    // What must come before was made, and nothing was found: swapping waits for a clean debris check, the plateau for the steps.
+    checks::find(check.after).is_none_or(|first| {
+        let clean = |a: &&str| visit.observations.get(*a) == Some(&Answer::NotSeen);
+        let made = first.yields.is_empty()
+            || first
+                .yields
+                .iter()
+                .any(|y| is_taken(visit, y.port, &y.condition(super::probe::oil_now(visit))));
+        made && first.answers.iter().all(clean)
+    })
+}
+
+/// Minutes of a check on this unit now: rigging once, access once.
+pub fn minutes(unit: &Unit, visit: &Visit, check: &Check) -> f64 {
+    minutes_once_rigged(unit, visit, check, &[])
+}
+
+/// Ports that an instrument must be fitted to for a check.
+pub fn rigs(unit: &Unit, visit: &Visit, check: &Check) -> Vec<Port> {
+    let mut ports: Vec<Port> = open_readings(unit, visit, check)
+        .iter()
+        .map(|y| stands_on(y.port))
+        .collect();
+    if check.id == "work-another-function" {
+        ports.push(Port::Charge);
+    }
+    ports.sort_unstable();
+    ports.dedup();
+    ports
+}
+
+/// As [`minutes`], with instruments standing on further ports.
+pub fn minutes_once_rigged(unit: &Unit, visit: &Visit, check: &Check, also: &[Port]) -> f64 {
+    let ports = rigs(unit, visit, check);
+    let rigged = !ports.is_empty()
+        && ports
+            .iter()
+            .all(|p| is_rigged(visit, *p) || also.contains(p));
+    if rigged {
+        return check.minutes_again.max(0.5);
+    }
+    let access = ports
+        .iter()
+        .filter(|p| !is_rigged(visit, **p) && !also.contains(p))
+        .filter_map(|p| unit.ports.get(p))
+        .filter_map(|n| n.access_minutes)
+        .filter(|m| m.is_finite() && *m > 0.0)
+        .fold(0.0, f64::max);
+    (check.minutes_first + access).max(0.5)
+}
