@@ -22,13 +22,13 @@ impl Swings {
             return;
         }
         self.noted |= d.swung;
-        // Common practice.
-        self.log += math::ln(match (d.swung, starved) {
-            (true, true) => 0.7,
-            (true, false) => 0.1,
-            (false, true) => 0.3,
-            (false, false) => 0.9,
-        });
+        // Common practice. That a sound machine's needles stand still is no news, however often it is seen.
+        self.log += match (d.swung, starved) {
+            (true, true) => math::ln(0.7),
+            (true, false) => math::ln(0.1),
+            (false, true) => math::ln(0.3),
+            (false, false) => 0.0,
+        };
     }
 
     /// Log factor of all of them.

@@ -27,8 +27,11 @@ async fn pace() {
     rig.click("load-demo").await;
     rig.by_id("unit-card").await;
     rig.go("/call/demo-v-27").await;
-    rig.wait_until("the advice is there", "document.querySelector('.next-body')")
-        .await;
+    rig.wait_until(
+        "the advice is there",
+        "document.querySelector('.next-body')",
+    )
+    .await;
     rig.js(WATCH, vec![]).await;
     rig.cdp(
         "Emulation.setCPUThrottlingRate",
