@@ -92,16 +92,16 @@ pub fn slope(port: Port, value: f64) -> f64 {
 /// (turbulent share of leakage, curves of overrides). A stated term with a size, held in the assay against a world that differs.
 fn discrepancy(port: Port) -> f64 {
     match port {
-        Port::LoopA | Port::LoopB | Port::LoopDifference => 0.03,
+        Port::LoopA | Port::LoopB | Port::LoopDifference => 0.045,
         Port::MotorDrain
         | Port::ReturnFlow
         | Port::PumpCase
         | Port::MotorCase
-        | Port::InletPull => 0.03,
-        Port::ResponseOut | Port::ResponseBack => 0.08,
-        Port::Knee => 0.02,
-        Port::MotorShaft | Port::Wheel | Port::Ground => 0.01,
-        _ => 0.005,
+        | Port::InletPull => 0.045,
+        Port::ResponseOut | Port::ResponseBack => 0.12,
+        Port::Knee => 0.03,
+        Port::MotorShaft | Port::Wheel | Port::Ground => 0.015,
+        _ => 0.0075,
     }
 }
 

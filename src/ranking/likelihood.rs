@@ -5,7 +5,7 @@ use super::datum::{Data, Datum, Says};
 use super::gauss::{Gauss, LN_TWO_PI};
 use super::predict::Prediction;
 use crate::math;
-use crate::readings::Port;
+use crate::readings::{Doing, Port};
 
 /// Chance that a "nothing" is false: coupling not home, snubber shut, wrong port. Common practice: 0.1 to 0.15.
 const FALSE_NOTHING: f64 = 0.12;
@@ -61,10 +61,7 @@ pub fn fit(data: &Data, p: &Prediction, centre: &[f64], swap_prior: f64) -> Opti
     let shares: Vec<f64> = joint.iter().map(|j| math::exp(j - log)).collect();
     let without = (0..data.data.len())
         .map(|k| {
-            let terms: Vec<f64> = all
-                .iter()
-                .map(|(prior, f)| prior + f.without[k])
-                .collect();
+            let terms: Vec<f64> = all.iter().map(|(prior, f)| prior + f.without[k]).collect();
             math::ln_sum_exp(&terms)
         })
         .collect();
@@ -151,10 +148,9 @@ fn swap_orders(data: &Data) -> Vec<Vec<Against>> {
         })
         .collect();
     // Directions can only be told where both were taken.
-    let both = directions
-        .iter()
-        .zip(&data.data)
-        .any(|(a, d)| matches!(a, Against::Other(_)) && !data.conditions[d.condition].doing.is_neutral());
+    let both = directions.iter().zip(&data.data).any(|(a, d)| {
+        matches!(a, Against::Other(_)) && !data.conditions[d.condition].doing.is_neutral()
+    });
     if both {
         vec![sides, directions]
     } else {
@@ -162,12 +158,7 @@ fn swap_orders(data: &Data) -> Vec<Vec<Against>> {
     }
 }
 
-fn branch(
-    data: &Data,
-    p: &Prediction,
-    centre: &[f64],
-    order: Option<&[Against]>,
-) -> Option<Fit> {
+fn branch(data: &Data, p: &Prediction, centre: &[f64], order: Option<&[Against]>) -> Option<Fit> {
     let Split { joint, tails } = split(data);
     let n = joint.len();
     let c = p.columns;
@@ -212,11 +203,13 @@ fn branch(
             + p.loose[*k];
         spread[*k] = variance.sqrt();
         let inside = math::ln_normal_cdf((expected(*k) - d.t) / variance.sqrt());
-        tail_logs[*k] = math::ln_sum_exp(&[math::ln(1.0 - doubted) + inside, math::ln(doubted) - 0.7]);
+        tail_logs[*k] =
+            math::ln_sum_exp(&[math::ln(1.0 - doubted) + inside, math::ln(doubted) - 0.7]);
         log += tail_logs[*k];
     }
     let groups = group_members(data, &joint);
-    let branches = Branches::new(&g, &groups, data, &joint);
+    let doubt = doubts(data, &joint, &groups);
+    let branches = Branches::new(&g, &groups, &doubt, joint.len(), data.groups);
     log += branches.log;
     let mut without = vec![log; data.data.len()];
     for (i, k) in joint.iter().enumerate() {
@@ -253,13 +246,48 @@ fn doubt_of(says: &Says, wrong: f64) -> f64 {
     }
 }
 
-/// Positions (in the joint vector) of each group's data.
+/// Chance that the ground held a loaded wheel or let it go in a way that no load believed of it explains. Common practice.
+const GROUND: f64 = 0.12;
+
+/// A speed under load: near a stall it hangs on the ground under the wheel at that second.
+fn hangs_on_the_ground(data: &Data, d: &Datum) -> bool {
+    matches!(d.port, Port::Wheel | Port::Ground | Port::MotorShaft)
+        && matches!(
+            data.conditions[d.condition].doing,
+            Doing::Loaded | Doing::Travel | Doing::Overrun
+        )
+}
+
+/// Positions (in the joint vector) of each rigging's data, and after them each reading that hangs on the ground, alone.
 fn group_members(data: &Data, joint: &[usize]) -> Vec<Vec<usize>> {
     let mut groups = vec![Vec::new(); data.groups];
     for (i, k) in joint.iter().enumerate() {
         groups[data.data[*k].group].push(i);
     }
+    for (i, k) in joint.iter().enumerate() {
+        if hangs_on_the_ground(data, &data.data[*k]) {
+            groups.push(vec![i]);
+        }
+    }
     groups
+}
+
+/// Chance that each group says nothing.
+fn doubts(data: &Data, joint: &[usize], groups: &[Vec<usize>]) -> Vec<f64> {
+    groups
+        .iter()
+        .enumerate()
+        .map(|(g, members)| {
+            let nothing = members
+                .iter()
+                .any(|i| data.data[joint[*i]].says == Says::Nothing);
+            match (g >= data.groups, nothing) {
+                (true, _) => GROUND,
+                (false, true) => FALSE_NOTHING,
+                (false, false) => data.belief.wrong,
+            }
+        })
+        .collect()
 }
 
 /// All riggings right; one wrong; two; three, found one after the other.
@@ -269,23 +297,16 @@ struct Branches {
 }
 
 impl Branches {
-    fn new(g: &Gauss, groups: &[Vec<usize>], data: &Data, joint: &[usize]) -> Branches {
-        let doubt: Vec<f64> = groups
-            .iter()
-            .map(|m| {
-                let nothing = m
-                    .iter()
-                    .any(|i| data.data[joint[*i]].says == Says::Nothing);
-                if nothing {
-                    FALSE_NOTHING
-                } else {
-                    data.belief.wrong
-                }
-            })
-            .collect();
+    fn new(
+        g: &Gauss,
+        groups: &[Vec<usize>],
+        doubt: &[f64],
+        joint: usize,
+        riggings: usize,
+    ) -> Branches {
         let all_right: f64 = groups
             .iter()
-            .zip(&doubt)
+            .zip(doubt)
             .filter(|(m, _)| !m.is_empty())
             .map(|(_, d)| math::ln(1.0 - d))
             .sum();
@@ -301,11 +322,13 @@ impl Branches {
                 }
                 let mut set = chosen.clone();
                 set.push(i);
-                let block: Vec<usize> = set
+                let mut block: Vec<usize> = set
                     .iter()
                     .flat_map(|s| groups[*s].iter().copied())
                     .collect();
-                if block.len() >= joint.len() && joint.len() > 1 && set.len() > 1 {
+                block.sort_unstable();
+                block.dedup();
+                if block.len() >= joint && joint > 1 && set.len() > 1 {
                     continue;
                 }
                 let lost = g.conditional(&block);
@@ -332,6 +355,7 @@ impl Branches {
                 wrong[*i] += share;
             }
         }
+        wrong.truncate(riggings);
         Branches { log, wrong }
     }
 }

@@ -19,6 +19,8 @@ mod posterior;
 mod predict;
 mod rows;
 mod seen;
+mod split;
+mod swing;
 
 pub use accuracy::{Accuracy, accuracy};
 pub use assess::assess;

@@ -1,6 +1,7 @@
 //! Integration nodes of a cause: builds, ways of showing and severities, each with its weight.
 
 use super::belief::Belief;
+use super::split::Place;
 use crate::circuit::{Param, Params};
 use crate::faults::{Bend, Fault, SeverityShape};
 use crate::machine::Build;
@@ -19,6 +20,8 @@ pub struct Node {
     pub quantile: f64,
     /// Half the width of the cell.
     pub half: f64,
+    /// Its place in the sampled half of the scatter, of how many; none: all scatter is left to the closed form.
+    pub place: Option<Place>,
     /// Log of the node's share of its cause.
     pub log_weight: f64,
 }
@@ -85,6 +88,7 @@ pub fn nodes(fault: &Fault, builds: &[Build], belief: &Belief) -> (Vec<Node>, f6
         .collect();
     let total: f64 = masses.iter().sum();
     let rate = belief.rate(fault);
+    let fineness = belief.fineness;
     if total <= 0.0 || rate <= 0.0 {
         return (Vec::new(), f64::NEG_INFINITY);
     }
@@ -110,18 +114,19 @@ pub fn nodes(fault: &Fault, builds: &[Build], belief: &Belief) -> (Vec<Node>, f6
         for (build, mass) in masses.iter().enumerate().filter(|(_, m)| **m > 0.0) {
             let share = mass / total / effects / signs;
             let plain = effect.is_none() || fault.severity == SeverityShape::Total;
-            let n = if plain {
-                1
-            } else {
-                ((belief.fineness as f64 * share).round() as usize).clamp(3, belief.fineness.max(3))
-            };
+            let n = ((fineness as f64 * share).round() as usize).clamp(3, fineness.max(3));
             for i in 0..n {
                 out.push(Node {
                     build,
                     effect: *effect,
                     sign: *sign,
-                    quantile: (i as f64 + 0.5) / n as f64,
+                    quantile: if plain {
+                        0.5
+                    } else {
+                        (i as f64 + 0.5) / n as f64
+                    },
                     half: if plain { 0.0 } else { 0.5 / n as f64 },
+                    place: Some(Place { at: i, of: n }),
                     log_weight: math::ln(share / n as f64),
                 });
             }

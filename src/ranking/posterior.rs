@@ -5,7 +5,7 @@ use super::belief::Belief;
 use super::datum::Data;
 use super::likelihood::{Fit, fit, not_listed};
 use super::node::{Node, nodes};
-use super::predict::Bench;
+use super::predict::{Bench, Prediction};
 use crate::faults::{self, Fault, FaultId};
 use crate::math;
 use crate::readings::SideNaming;
@@ -94,15 +94,7 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
         priors[cause] = prior;
         for node in list {
             let p = bench.predict(fault, &node, data, &[]);
-            if let Some(f) = fit(data, &p, &[], swap) {
-                held.push(Held {
-                    cause,
-                    node,
-                    log_weight: node.log_weight,
-                    fit: f,
-                    mean: p.mean.clone(),
-                });
-            }
+            held.extend(hold(cause, node, &p, data, swap));
             if fault.id == FaultId::Healthy && healthy_prediction.is_none() {
                 healthy_prediction = Some(p);
             }
@@ -193,6 +185,16 @@ fn shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
         out[h.cause] += math::exp(l - total);
     }
     out
+}
+
+fn hold(cause: usize, node: Node, p: &Prediction, data: &Data, swap: f64) -> Option<Held> {
+    fit(data, p, &[], swap).map(|fit| Held {
+        cause,
+        node,
+        log_weight: node.log_weight,
+        fit,
+        mean: p.mean.clone(),
+    })
 }
 
 /// Linearises the nodes that carry weight again, each at its own posterior mean.

@@ -2,11 +2,11 @@
 
 use super::datum::{Data, Datum, Says, slope, transform};
 use super::node::{Node, bend, severity};
+use super::split::Split;
+use super::swing::Swings;
 use crate::circuit::{Network, Param, Params, Scale, Shown, State};
 use crate::faults::Fault;
 use crate::machine::{Build, Latents, apply, base, layout_for, scattered};
-use crate::math;
-use crate::quantity::Kind;
 use crate::readings::Port;
 
 /// Everything that predictions need, made once for an assessment.
@@ -21,6 +21,8 @@ pub struct Bench {
     pub latents: Latents,
     /// Factor on the scatter.
     wider: f64,
+    /// Which of it is sampled at the nodes.
+    split: Split,
     /// For each condition: latent, parameter, size.
     acts: Vec<Vec<(usize, Param, f64)>>,
     /// Conditions with their consumers capped.
@@ -118,6 +120,7 @@ impl Bench {
             builds,
             networks,
             bases,
+            split: Split::new(&latents),
             latents,
             wider,
             acts,
@@ -153,16 +156,15 @@ impl Bench {
         u: &[f64],
         shift: f64,
     ) -> (Params, Vec<(Param, f64)>) {
-        let mut theta = if u.is_empty() {
-            self.bases[node.build][condition]
+        let base = &self.bases[node.build][condition];
+        let mut theta = if u.is_empty() && node.place.is_none() {
+            *base
         } else {
-            let wide: Vec<f64> = u.iter().map(|v| v * self.wider).collect();
-            scattered(
-                &self.bases[node.build][condition],
-                &self.latents,
-                condition,
-                &wide,
-            )
+            let mut wide = self.split.scatter(node.place, u);
+            for w in &mut wide {
+                *w *= self.wider;
+            }
+            scattered(base, &self.latents, condition, &wide)
         };
         let mut factors = Vec::new();
         if let Some(effect) = node.effect.and_then(|e| fault.effects.get(e)) {
@@ -264,6 +266,7 @@ impl Bench {
             sign: 1.0,
             quantile: 0.5,
             half: 0.0,
+            place: None,
             log_weight: 0.0,
         };
         let (theta, factors) = self.theta(healthy, &node, condition, &[], 0.0);
@@ -311,21 +314,24 @@ impl Bench {
             loose: vec![0.0; n],
             swing: 0.0,
         };
+        let mut swings = Swings::default();
         for (k, d) in data.data.iter().enumerate() {
             let row = &mut out.rows[k * columns..(k + 1) * columns];
             match self.one(d, &shows, row, columns) {
                 Some((mean, starved)) => {
                     out.mean[k] = mean;
-                    out.swing += swing_factor(d, starved);
+                    keep_believable(row);
+                    swings.add(d, starved);
                 }
                 None => {
                     // No steady state: the needle could stand anywhere, and would hardly stand still.
                     out.mean[k] = d.t;
                     out.loose[k] = LOOSE;
-                    out.swing += swing_factor(d, true);
+                    swings.add(d, true);
                 }
             }
         }
+        out.swing = swings.log();
         out
     }
 
@@ -347,6 +353,7 @@ impl Bench {
             let net = &self.networks[node.build][c];
             shown.push(net.solve(&theta, start.as_ref()).ok().map(|s| (theta, s)));
         }
+        let mut swings = Swings::default();
         for (k, d) in data.data.iter().enumerate() {
             let value = |c: usize| {
                 shown[c]
@@ -368,8 +375,9 @@ impl Bench {
                 self.networks[node.build][d.condition].filled(s, theta) < 0.97
                     || theta[Param::Air as usize] > 0.08
             });
-            out.swing += swing_factor(d, starved);
+            swings.add(d, starved);
         }
+        out.swing = swings.log();
         out
     }
 
@@ -424,6 +432,7 @@ impl Bench {
         let columns = self.latents.0.len() + 1;
         let mut rows = vec![0.0; s.ports.len() * columns];
         for (latent, p, size) in &self.acts[condition] {
+            let size = size * self.split.left(*latent, node.place);
             let factor = factors
                 .iter()
                 .filter(|(q, _)| q == p)
@@ -454,6 +463,19 @@ impl Bench {
     }
 }
 
+/// Most that a reading may scatter on its transformed scale (a factor of e) before its slopes are no longer believed: at the edge
+/// of a stall they grow without end, and the reading would be explained by anything.
+const STEEPEST: f64 = 1.0;
+
+fn keep_believable(row: &mut [f64]) {
+    let norm = row.iter().map(|r| r * r).sum::<f64>().sqrt();
+    if norm > STEEPEST {
+        for r in row {
+            *r *= STEEPEST / norm;
+        }
+    }
+}
+
 /// Keeps settings that a machine has in order in order, whatever scatter says.
 fn keep_order(theta: &mut Params) {
     let start = theta[Param::ServoStart as usize];
@@ -476,17 +498,4 @@ fn keep_order(theta: &mut Params) {
         let v = &mut theta[p as usize];
         *v = v.max(0.0);
     }
-}
-
-/// Log odds-like factor of a needle that swung or stood still, where the low side fills or starves. Common practice.
-fn swing_factor(d: &Datum, starved: bool) -> f64 {
-    if d.port.kind() != Kind::Pressure {
-        return 0.0;
-    }
-    math::ln(match (d.swung, starved) {
-        (true, true) => 0.7,
-        (true, false) => 0.1,
-        (false, true) => 0.3,
-        (false, false) => 0.9,
-    })
 }

@@ -79,11 +79,12 @@ impl Judge {
             Ranker::Own => own,
             Ranker::Best => Belief {
                 wider: wider(),
-                discrepancy: 0.0,
+                // It knows the laws; this much is left to the integral's own error.
+                discrepancy: 0.67,
                 wrong: self.sloppy.wrong.max(1e-6),
                 swapped: self.sloppy.swapped,
-                fineness: 28,
-                rounds: 4,
+                fineness: 20,
+                rounds: 3,
                 ..own
             },
         }
@@ -100,9 +101,9 @@ impl Judge {
                 latents.one(p, sd / wider());
             }
         }
-        let size = builds(unit)
-            .first()
-            .map_or(1.0, |b| lowside::machine::base(b)[Param::PumpDisp as usize] / 75.0);
+        let size = builds(unit).first().map_or(1.0, |b| {
+            lowside::machine::base(b)[Param::PumpDisp as usize] / 75.0
+        });
         if self.ranker == Ranker::Best {
             for (p, least, most) in TURBULENT {
                 latents.one(p, size * (most - least) / 12f64.sqrt() / wider());

@@ -6,7 +6,7 @@ use lowside::math;
 use std::collections::BTreeMap;
 
 /// Equal bins of the leader's probability for the calibration table.
-const BINS: usize = 8;
+const BINS: usize = 5;
 
 /// Scores of one ranker over many cases.
 #[derive(Clone, Default)]
@@ -27,9 +27,8 @@ pub struct Score {
 impl Score {
     /// Adds a case.
     pub fn add(&mut self, truth: &[FaultId], ranked: &Ranked) {
-        let is = |ids: &[FaultId]| {
-            ids.len() == truth.len() && ids.iter().all(|i| truth.contains(i))
-        };
+        let is =
+            |ids: &[FaultId]| ids.len() == truth.len() && ids.iter().all(|i| truth.contains(i));
         let place = ranked.iter().position(|(ids, _)| is(ids));
         let p = place.map_or(0.0, |i| ranked[i].1);
         self.cases += 1;
@@ -51,13 +50,6 @@ impl Score {
             f.1 += usize::from(place == Some(0));
             f.2 += usize::from(place.is_some_and(|i| i < 3));
         }
-    }
-
-    /// True where the true cause was given less than a hundredth.
-    pub fn is_miss(&self, truth: &[FaultId], ranked: &Ranked) -> bool {
-        !ranked
-            .iter()
-            .any(|(ids, p)| *p >= 0.01 && ids.iter().all(|i| truth.contains(i)))
     }
 
     /// Adds another's cases.

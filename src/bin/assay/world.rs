@@ -365,6 +365,11 @@ impl Machine {
 
     /// What the port really shows in a condition; none where the machine has no steady state.
     pub fn shows(&self, port: Port, condition: &Condition) -> Option<f64> {
+        self.shows_and_swings(port, condition).map(|s| s.0)
+    }
+
+    /// As [`Machine::shows`], and whether the needle swings: air in the oil, or a low side that empties.
+    pub fn shows_and_swings(&self, port: Port, condition: &Condition) -> Option<(f64, bool)> {
         let before = apply(&self.build, &base(&self.build), condition);
         let mut latents: Latents = unit_latents(&self.real);
         let known = latents.0.len();
@@ -395,10 +400,11 @@ impl Machine {
             return net
                 .knee(&theta, theta[Param::Speed as usize].max(1500.0))
                 .ok()
-                .map(|k| k.value);
+                .map(|k| (k.value, false));
         }
         let solution = net.solve(&theta, None).ok()?;
-        Some(net.reading(port, &solution, &theta))
+        let starved = net.filled(&solution, &theta) < 0.97 || theta[Param::Air as usize] > 0.08;
+        Some((net.reading(port, &solution, &theta), starved))
     }
 
     /// Scatter that belongs to a condition: what is shared (idle speeds, tachometer, place of the thermometer, load of the day)
@@ -410,7 +416,11 @@ impl Machine {
         let key = if own {
             format!("{words} {condition:?}")
         } else {
-            format!("{words} {:?} {:?}", condition.doing, condition.oil.map(|o| o.place))
+            format!(
+                "{words} {:?} {:?}",
+                condition.doing,
+                condition.oil.map(|o| o.place)
+            )
         };
         let key = match words {
             "low idle" | "high idle" | "tachometer" => words.to_string(),
@@ -468,6 +478,8 @@ pub struct Notes {
     sides: bool,
     directions: bool,
     instruments: Vec<(Port, f64, Rigged)>,
+    /// Whether a swinging needle is written down as one.
+    careful: bool,
     draw: Normals,
 }
 
@@ -481,6 +493,7 @@ impl Notes {
             sides: swapped,
             directions: swapped && which,
             instruments: Vec::new(),
+            careful: draw.unit() < 0.5,
             draw: Normals::new((draw.unit() * 1e15) as u64),
         }
     }
@@ -507,8 +520,13 @@ impl Notes {
         (bias, rigged)
     }
 
-    /// Takes a reading as it is written down, base unit; none where the machine has no steady state.
-    pub fn take(&mut self, machine: &Machine, port: Port, condition: &Condition) -> Option<f64> {
+    /// Takes a reading as it is written down, base unit, and whether a swing is noted; none where the machine has no steady state.
+    pub fn take(
+        &mut self,
+        machine: &Machine,
+        port: Port,
+        condition: &Condition,
+    ) -> Option<(f64, bool)> {
         let (bias, rigged) = self.instrument(port);
         let mut at = port;
         if let Rigged::On(other) = rigged {
@@ -524,7 +542,7 @@ impl Notes {
         } else {
             *condition
         };
-        let value = machine.shows(at, &run)?;
+        let (value, swings) = machine.shows_and_swings(at, &run)?;
         let v = match span(port, value) {
             Some(s) => {
                 let lie = if let Rigged::Lies(k) = rigged {
@@ -546,7 +564,12 @@ impl Notes {
                 value * (1.0 + shared * bias * 3f64.sqrt()) * lie * (1.0 + own * self.draw.normal())
             }
         };
-        Some(if port.kind() == Kind::Pressure { v } else { v.max(0.0) })
+        let noted = self.careful && self.draw.unit() < if swings { 0.8 } else { 0.04 };
+        Some(if port.kind() == Kind::Pressure {
+            (v, noted)
+        } else {
+            (v.max(0.0), false)
+        })
     }
 
     /// Takes a reading into a visit's list.
@@ -557,15 +580,22 @@ impl Notes {
         condition: &Condition,
         id: String,
     ) -> Option<Reading> {
-        let v = self.take(machine, port, condition)?;
+        let (v, swings) = self.take(machine, port, condition)?;
+        let measure = |v: f64| Measure::from_base(v, port.kind()).ok();
+        let seen = if swings {
+            let half = (0.06 * v.abs()).max(0.1);
+            measure(v - half)
+                .zip(measure(v + half))
+                .map(|(low, high)| Seen::Swing { low, high })
+        } else {
+            measure(v).map(|value| Seen::Value { value })
+        };
         Some(Reading {
             id,
             port,
             condition: *condition,
             rigging: String::new(),
-            seen: Measure::from_base(v, port.kind())
-                .ok()
-                .map(|value| Seen::Value { value }),
+            seen,
             typed: String::new(),
             note: String::new(),
         })
@@ -577,6 +607,7 @@ fn share_off(port: Port) -> (f64, f64) {
     match port {
         Port::MotorDrain | Port::ReturnFlow => (0.02, 0.03),
         Port::ResponseOut | Port::ResponseBack => (0.0, 0.12),
+        Port::EngineSpeed | Port::PumpShaft => (0.005, 0.004),
         _ => (0.005, 0.012),
     }
 }
