@@ -134,8 +134,8 @@ fn the_unit_called_last_comes_first() {
         Action::PutUnit(unit("a", "never called")),
         Action::PutUnit(unit("b", "long ago")),
         Action::PutUnit(unit("c", "lately")),
-        Action::PutVisit(visit("v1", "b", "2024-01-01T08:00:00Z")),
-        Action::PutVisit(visit("v2", "c", "2025-01-01T08:00:00Z")),
+        Action::PutVisit(Box::new(visit("v1", "b", "2024-01-01T08:00:00Z"))),
+        Action::PutVisit(Box::new(visit("v2", "c", "2025-01-01T08:00:00Z"))),
     ]);
     let names: Vec<String> = state
         .units_by_last_call()

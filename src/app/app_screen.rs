@@ -199,7 +199,7 @@ fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
                             prefs={state.settings.units.clone()}
                             {assessment}
                             {updating}
-                            on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(visit)))}
+                            on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
                             on_unit={deed.reform(|unit| Deed::Put(Action::PutUnit(unit)))}
                             on_instruments={deed.reform(|list| Deed::Put(Action::PutInstruments(list)))}
                         />

@@ -248,7 +248,7 @@ impl Hands {
             ..Visit::default()
         };
         let route = Route::Call(visit.id.clone());
-        self.put(Action::PutVisit(visit));
+        self.put(Action::PutVisit(Box::new(visit)));
         go(&route);
     }
 
@@ -288,10 +288,10 @@ impl Hands {
                 })
             }),
             RecordKey::Visit(id) => state.visits.get(id).map(|visit| {
-                Action::PutVisit(Visit {
+                Action::PutVisit(Box::new(Visit {
                     id: ids::fresh(IdOf::Visit),
                     ..(**visit).clone()
-                })
+                }))
             }),
             RecordKey::Settings => {
                 let actions = self.keeper.borrow_mut().overwrite_settings(&state);

@@ -91,7 +91,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 // The row first: the field of a closed reading is not there.
                 focus::to(&row_id(&reading));
                 focus::to(&field_id(&reading));
-                focus::to(&gate_id(&reading));
+                focus::to_head(&gate_id(&reading));
             }
         });
     }

@@ -23,3 +23,14 @@ pub fn to(id: &str) {
         let _ = element.focus();
     }
 }
+
+/// As [`to`], with the head of the element in view: a tall one would else be shown somewhere in its middle.
+pub fn to_head(id: &str) {
+    to(id);
+    let element = web_sys::window()
+        .and_then(|window| window.document())
+        .and_then(|document| document.get_element_by_id(id));
+    if let Some(element) = element {
+        element.scroll_into_view();
+    }
+}

@@ -17,7 +17,7 @@ pub enum Action {
     /// A unit is new or was edited.
     PutUnit(Unit),
     /// A visit is new or was edited.
-    PutVisit(Visit),
+    PutVisit(Box<Visit>),
     /// The instruments were edited.
     PutInstruments(Vec<Instrument>),
     /// The settings were edited.

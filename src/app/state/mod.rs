@@ -77,7 +77,7 @@ impl State {
                 next.say(Offline::Ready.words().to_owned());
             }
             Action::PutUnit(unit) => next.put_unit(unit),
-            Action::PutVisit(visit) => next.put_visit(visit),
+            Action::PutVisit(visit) => next.put_visit(*visit),
             Action::PutInstruments(instruments) => {
                 let settings = Settings {
                     instruments,

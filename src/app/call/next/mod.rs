@@ -61,10 +61,12 @@ fn shown(advice: &Advice, props: &NextPanelProps) -> Html {
     let is_made = |offer: &&Offer| props.made.contains(&offer.id);
     let made: Vec<&Offer> = advice.checks.iter().filter(is_made).collect();
     let left: Vec<&Offer> = advice.checks.iter().filter(|o| !is_made(o)).collect();
+    // Where it is time to stop, no check is pressed on anybody.
     let (best, others) = match left.split_first() {
-        Some((best, others)) => (Some(*best), others),
-        None => (None, &[][..]),
+        Some((best, others)) if advice.stop.is_none() => (Some(*best), others),
+        _ => (None, left.as_slice()),
     };
+    let first = usize::from(best.is_some());
     html! {
         <div class={if props.updating { "next-body is-updating" } else { "next-body" }}>
             if let Some(stop) = &advice.stop {
@@ -75,9 +77,9 @@ fn shown(advice: &Advice, props: &NextPanelProps) -> Html {
             { for advice.repair.iter().filter(|r| r.now).map(|r| repair::shown(r, props)) }
             { for best.map(|best| offer::best(best, props)) }
             if !others.is_empty() {
-                <h3 class="next-other">{ "Or" }</h3>
+                <h3 class="next-other">{ if best.is_some() { "Or" } else { "If you check on all the same" } }</h3>
                 <ol class="next-list">
-                    { for others.iter().enumerate().map(|(place, other)| offer::other(place + 1, other, props)) }
+                    { for others.iter().enumerate().map(|(place, other)| offer::other(first + place, other, props)) }
                 </ol>
             }
             { for advice.repair.iter().filter(|r| !r.now).map(|r| repair::shown(r, props)) }

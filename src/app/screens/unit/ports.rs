@@ -151,7 +151,9 @@ fn OnePort(props: &OnePortProps) -> Html {
             on_note.emit((
                 port,
                 Some(PortNote {
-                    access_typed: read.as_ref().map_or_else(|_| text.clone(), |_| String::new()),
+                    access_typed: read
+                        .as_ref()
+                        .map_or_else(|_| text.clone(), |_| String::new()),
                     access_minutes: read.ok().flatten(),
                     ..note.clone()
                 }),
