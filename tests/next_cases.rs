@@ -178,7 +178,7 @@ fn nobody_starts_or_drives_it_before_it_was_asked_and_looked_at() {
     v.observations.remove("runs-on");
     let a = advice(&roller(), &v);
     assert_eq!(runs(&a), 0);
-    assert_eq!(a.checks[0].id, "ask-the-operator");
+    assert!(a.checks.iter().any(|c| c.id == "ask-the-operator"));
     v.observations
         .insert("runs-on".into(), Answer::OperatorSaysNot);
     assert!(runs(&advice(&roller(), &v)) > 0);

@@ -84,8 +84,9 @@ pub const TABLE: &[Check] = &[
             Yield::neutral(Port::Charge, Idle::Low).consumers_capped(),
             Yield::neutral(Port::Charge, Idle::High).consumers_capped(),
         ],
-        minutes_first: 10.0,
-        minutes_again: 4.0,
+        // With the charge gauge to fit; 10 to cap where it stands already.
+        minutes_first: 20.0,
+        minutes_again: 10.0,
         hazard: 2,
         precautions: &[
             "A capped brake line keeps the brake on or, on some units, lets it roll: chocks both ways in place",

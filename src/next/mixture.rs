@@ -294,4 +294,47 @@ mod tests {
         let (_, bits) = outcomes(&[f(0, 0.0), f(1, 2.0)], &[0.5, 0.5], 3);
         assert!((bits - quadrature).abs() < 0.06, "{bits} {quadrature}");
     }
+
+    fn question(yes: [f64; 2], kept: f64) -> Question {
+        Question {
+            chance: yes.to_vec(),
+            kept,
+        }
+    }
+
+    #[test]
+    fn one_question_alone_is_a_yes_or_no() {
+        let prior = [0.3, 0.7];
+        let (_, one) = answers(&[question([0.8, 0.1], 1.0)], &prior);
+        let (_, plain) = yes_or_no(&[0.8, 0.1], &prior);
+        assert!((one - plain).abs() < 1e-12);
+        // Independent answers tell more together than the best alone, and no more than their sum; half kept tells less.
+        let (out, two) = answers(
+            &[question([0.8, 0.1], 1.0), question([0.6, 0.2], 1.0)],
+            &prior,
+        );
+        let (_, other) = yes_or_no(&[0.6, 0.2], &prior);
+        assert!(two > plain && two < plain + other);
+        assert!((out.iter().map(|o| o.weight).sum::<f64>() - 1.0).abs() < 1e-12);
+        let (_, half) = answers(&[question([0.8, 0.1], 0.5)], &prior);
+        assert!(half > 0.0 && half < plain);
+    }
+
+    #[test]
+    fn a_reading_that_tells_nothing_leaves_what_the_answer_tells() {
+        let f =
+            |cause, weight| Forecast::new(weight, cause, vec![1.0], vec![0.04]).expect("positive");
+        let prior = [0.5, 0.5];
+        let asked = [question([0.9, 0.1], 1.0)];
+        let (_, with) = readings_and_answers(&[f(0, 0.5), f(1, 0.5)], &asked, &prior, 5);
+        let (_, alone) = answers(&asked, &prior);
+        assert!((with - alone).abs() < 0.08, "{with} {alone}");
+        // An answer that repeats what the reading tells adds nothing.
+        let apart = [
+            Forecast::new(0.5, 0, vec![0.0], vec![0.01]).expect("positive"),
+            Forecast::new(0.5, 1, vec![5.0], vec![0.01]).expect("positive"),
+        ];
+        let (_, both) = readings_and_answers(&apart, &asked, &prior, 5);
+        assert!((both - 1.0).abs() < 1e-6, "{both}");
+    }
 }

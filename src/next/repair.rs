@@ -79,6 +79,20 @@ pub fn jobs(assessment: &Assessment, ids: &[FaultId]) -> Vec<Job> {
     out
 }
 
+/// Probabilities with the members of each job taken together.
+pub fn joined(jobs: &[Job], causes: &[f64]) -> Vec<f64> {
+    let mut out = causes.to_vec();
+    for job in jobs.iter().filter(|j| j.members.len() > 1) {
+        let sum = job.probability(causes);
+        for (k, i) in job.members.iter().enumerate() {
+            if let Some(p) = out.get_mut(*i) {
+                *p = if k == 0 { sum } else { 0.0 };
+            }
+        }
+    }
+    out
+}
+
 impl Job {
     /// Probability that it ends the trouble.
     fn probability(&self, causes: &[f64]) -> f64 {

@@ -168,6 +168,9 @@ pub fn rigs(unit: &Unit, visit: &Visit, check: &Check) -> Vec<Port> {
     ports
 }
 
+/// Minutes to block flushing as the unit's manual says, once the drain is rigged. Common practice.
+const BLOCK_FLUSHING: f64 = 11.0;
+
 /// As [`minutes`], with instruments standing on further ports.
 pub fn minutes_once_rigged(unit: &Unit, visit: &Visit, check: &Check, also: &[Port]) -> f64 {
     let ports = rigs(unit, visit, check);
@@ -176,7 +179,10 @@ pub fn minutes_once_rigged(unit: &Unit, visit: &Visit, check: &Check, also: &[Po
             .iter()
             .all(|p| is_rigged(visit, *p) || also.contains(p));
     if rigged {
-        return check.minutes_again.max(0.5);
+        let blocks = check.yields.iter().any(|y| y.flushing_blocked)
+            && !visit.readings.iter().any(|r| r.condition.flushing_blocked);
+        let extra = if blocks { BLOCK_FLUSHING } else { 0.0 };
+        return (check.minutes_again + extra).max(0.5);
     }
     let access = ports
         .iter()

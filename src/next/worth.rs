@@ -1,7 +1,9 @@
 //! What a check is worth: information on the cause, its minutes, and what its set-up serves besides.
 
 use super::gate;
-use super::mixture::{MOST_QUESTIONS, Outcome, Question, answers, readings_and_answers, yes_or_no};
+use super::mixture::{
+    MOST_QUESTIONS, Outcome, Question, answers, entropy, readings_and_answers, yes_or_no,
+};
 use super::probe::Forecasts;
 use super::repair::{self, Job};
 use super::rig;
@@ -89,6 +91,7 @@ pub fn worth(known: &Known, index: usize, check: &Check) -> Option<Worth> {
         };
         (out, bits, why)
     };
+    let bits = information(known.jobs, &out).min(bits);
     Some(Worth {
         bits,
         minutes,
@@ -100,6 +103,22 @@ pub fn worth(known: &Known, index: usize, check: &Check) -> Option<Worth> {
         serves: None,
         opens: false,
     })
+}
+
+/// Information (bits) on which job is to be done: what tells members of a set apart that one action serves is worth nothing.
+fn information(jobs: &[Job], outcomes: &[Outcome]) -> f64 {
+    let n = outcomes.first().map_or(0, |o| o.causes.len());
+    let mut before = vec![0.0; n];
+    for o in outcomes {
+        for (b, c) in before.iter_mut().zip(&o.causes) {
+            *b += o.weight * c;
+        }
+    }
+    let after: f64 = outcomes
+        .iter()
+        .map(|o| o.weight * entropy(&repair::joined(jobs, &o.causes)))
+        .sum();
+    (entropy(&repair::joined(jobs, &before)) - after).max(0.0)
 }
 
 /// Chance that another cause leads after a check than leads now.

@@ -1,6 +1,6 @@
 //! Minutes to the cause: calls to hidden machines, worked through check by check under three policies.
 //!
-//! `assay steps [cases] [seed]`. A call begins with a complaint and a few words of the operator, no gauge. The policy picks a
+//! `assay steps [cases] [seed]`; `ASSAY_POLICY=Ours` plays one policy alone. A call begins with a complaint and a few words of the operator, no gauge. The policy picks a
 //! check, the hidden machine answers it, the product assesses anew, until the true cause (or the row that holds it) has 0.8, or no
 //! check is left, or 25 were made. Faults are met as often as the starter base rates say. Every advice on the way is judged for
 //! danger by rules written anew in [`crate::steps_danger`].
@@ -336,6 +336,7 @@ fn median(values: &mut [f64]) -> f64 {
 /// Plays the calls and prints the table.
 pub fn steps(cases: usize, seed: u64) {
     let tell = std::env::var_os("ASSAY_TELL").is_some();
+    let only = std::env::var("ASSAY_POLICY").ok();
     let mut draw = Normals::new(seed);
     let mut runs: BTreeMap<Policy, Vec<Run>> = BTreeMap::new();
     let mut stopped = 0;
@@ -361,7 +362,10 @@ pub fn steps(cases: usize, seed: u64) {
             continue;
         }
         done += 1;
-        for policy in [Policy::Ours, Policy::Fixed, Policy::Random] {
+        for policy in [Policy::Ours, Policy::Fixed, Policy::Random]
+            .into_iter()
+            .filter(|p| only.as_ref().is_none_or(|o| *o == format!("{p:?}")))
+        {
             let r = run(&call, policy);
             if tell {
                 println!(
@@ -418,7 +422,7 @@ pub fn steps(cases: usize, seed: u64) {
             spoken
         );
     }
-    for (policy, mean) in &means[1..] {
+    for (policy, mean) in means.iter().skip(1) {
         println!("minutes of ours to {policy:?}: {:.2}", means[0].1 / mean);
     }
     println!(
