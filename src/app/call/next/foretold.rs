@@ -6,7 +6,7 @@ use crate::app::call::bands::{self, Axis};
 use crate::app::call::steady::Fold;
 use crate::app::call::words;
 use crate::next::{Foretold, Offer, Would};
-use crate::quantity::UnitPrefs;
+use crate::quantity::{Kind, UnitPrefs};
 use crate::readings::Port;
 use yew::{Callback, Html, html};
 
@@ -25,6 +25,9 @@ pub fn shown(offer: &Offer, props: &NextPanelProps) -> Html {
     if first.is_empty() {
         return Html::default();
     }
+    let has_gauge = first
+        .iter()
+        .any(|foretold| matches!(foretold.port.kind(), Kind::Pressure | Kind::Flow));
     let others = {
         let rest: Vec<Foretold> = rest.iter().map(|foretold| (*foretold).clone()).collect();
         let prefs = props.prefs.clone();
@@ -34,7 +37,7 @@ pub fn shown(offer: &Offer, props: &NextPanelProps) -> Html {
     };
     html! {
         <div class="told" data-testid={format!("told-{}", offer.id)}>
-            <h4>{ "Before the gauge goes on: what it would read" }</h4>
+            <h4>{ if has_gauge { "Before the gauge goes on: what it would read" } else { "Before you measure: what it would read" } }</h4>
             { for first.iter().map(|foretold| drawn(foretold, &props.prefs)) }
             if !rest.is_empty() {
                 <Fold

@@ -255,7 +255,7 @@ fn answer(place: usize, known: &'static Check, offer: &Offer, props: &NextPanelP
         }
         if !rest.is_empty() {
             <Fold
-                head={html! { { format!("Seen at it: {} to answer", rest.len()) } }}
+                head={html! { { if open == 0 { format!("Seen at it: {} to answer", rest.len()) } else { format!("{} more to answer", rest.len()) } } }}
                 body={more}
                 class="advice"
             />
