@@ -5,7 +5,8 @@ use super::belief::Belief;
 use super::datum::Data;
 use super::likelihood::{Fit, fit, not_listed};
 use super::node::{Node, nodes};
-use super::predict::{Bench, Prediction};
+use super::pairs::{self, Alone, Candidate};
+use super::predict::{Bench, CELLS, Prediction};
 use crate::faults::{self, Fault, FaultId};
 use crate::math;
 use crate::readings::SideNaming;
@@ -24,6 +25,8 @@ const FARTHEST: f64 = 3.5;
 pub struct Weighed {
     /// Which.
     pub id: FaultId,
+    /// The second one, where two are at work together.
+    pub with: Option<FaultId>,
     /// Log of its base rate over the builds (per hundred calls).
     pub log_prior: f64,
     /// Log likelihood of all data.
@@ -47,6 +50,8 @@ struct Held {
     log_weight: f64,
     fit: Fit,
     mean: Vec<f64>,
+    /// As first predicted, in the middle of the scatter.
+    first: Vec<f64>,
 }
 
 /// A node that carries weight: what the next check is chosen over.
@@ -82,7 +87,7 @@ pub fn swap_chance(sides: SideNaming, belief: &Belief) -> f64 {
 /// Weighs every cause of the catalogue.
 pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
     let swap = swap_chance(sides, &data.belief);
-    let catalogue: Vec<&'static Fault> = faults::all()
+    let mut catalogue: Vec<&'static Fault> = faults::all()
         .iter()
         .filter(|f| f.id != FaultId::NotListed)
         .collect();
@@ -100,28 +105,34 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
             }
         }
     }
-    let mut before = shares(&held, &priors);
-    let mut change = f64::INFINITY;
-    for _ in 0..data.belief.rounds {
-        again(bench, data, &catalogue, &priors, &mut held, swap);
-        let after = shares(&held, &priors);
-        change = before
-            .iter()
-            .zip(&after)
-            .map(|(a, b)| (a - b).abs())
-            .fold(0.0, f64::max);
-        before = after;
-        if change < SETTLED {
-            break;
+    let mut change = settle(bench, data, &catalogue, &priors, &mut held, swap);
+    let singles = catalogue.len();
+    let mut second: Vec<Option<FaultId>> = vec![None; singles];
+    for pair in healthy_prediction
+        .as_ref()
+        .map_or(Vec::new(), |p| pairs_of(data, bench, p, &catalogue, &held))
+    {
+        let cause = catalogue.len();
+        catalogue.push(pair.faults[0]);
+        second.push(Some(pair.faults[1].id));
+        priors.push(pair.log_prior);
+        for node in pair.nodes {
+            let p = bench.predict(pair.faults[0], &node, data, &[]);
+            held.extend(hold(cause, node, &p, data, swap));
         }
     }
+    if catalogue.len() > singles {
+        change = settle(bench, data, &catalogue, &priors, &mut held, swap);
+    }
+    let carried = shares(&held, &priors);
     let mut out: Vec<Weighed> = catalogue
         .iter()
         .enumerate()
-        .filter(|(i, _)| priors[*i].is_finite())
+        .filter(|(i, _)| priors[*i].is_finite() && (*i < singles || carried[*i] > SHOWN))
         .map(|(i, fault)| {
             collect(
                 fault.id,
+                second[i],
                 priors[i],
                 held.iter().filter(|h| h.cause == i),
                 data,
@@ -133,6 +144,7 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
         let n = data.data.len();
         out.push(Weighed {
             id: FaultId::NotListed,
+            with: None,
             log_prior: math::ln(data.belief.rate(entry).max(1e-9)),
             log_likelihood: log,
             without: vec![log; n],
@@ -149,6 +161,8 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
     }
 }
 
+/// Share of all weight from which a pair is a row of its own.
+const SHOWN: f64 = 0.005;
 /// Share of the heaviest node of its cause from which a node counts.
 const COUNTS: f64 = 0.02;
 /// Most nodes that are handed on.
@@ -162,10 +176,26 @@ fn heaviest(catalogue: &[&'static Fault], priors: &[f64], held: &[Held]) -> Vec<
     let mut list: Vec<Heavy> = held
         .iter()
         .filter(|h| h.log_weight + h.fit.log > best[h.cause] + math::ln(COUNTS))
-        .map(|h| Heavy {
-            fault: catalogue[h.cause],
-            node: h.node,
-            log: priors[h.cause] + h.log_weight + h.fit.log,
+        .flat_map(|h| {
+            let log = priors[h.cause] + h.log_weight + h.fit.log;
+            let fault = catalogue[h.cause];
+            // Two causes at once speak for either with half their weight.
+            let (log, other) = match h.node.turned(fault) {
+                Some((second, node)) => {
+                    let log = log - core::f64::consts::LN_2;
+                    (
+                        log,
+                        Some(Heavy {
+                            fault: second,
+                            node,
+                            log,
+                        }),
+                    )
+                }
+                None => (log, None),
+            };
+            let node = h.node;
+            core::iter::once(Heavy { fault, node, log }).chain(other)
         })
         .collect();
     list.sort_by(|a, b| b.log.total_cmp(&a.log).then(a.fault.id.cmp(&b.fault.id)));
@@ -187,6 +217,51 @@ fn shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
     out
 }
 
+/// Linearises what carries weight again until the shares stand still; returns their last change.
+fn settle(
+    bench: &Bench,
+    data: &Data,
+    catalogue: &[&Fault],
+    priors: &[f64],
+    held: &mut [Held],
+    swap: f64,
+) -> f64 {
+    let mut before = shares(held, priors);
+    let mut change = f64::INFINITY;
+    for _ in 0..data.belief.rounds {
+        again(bench, data, catalogue, priors, held, swap);
+        let after = shares(held, priors);
+        change = before
+            .iter()
+            .zip(&after)
+            .map(|(a, b)| (a - b).abs())
+            .fold(0.0, f64::max);
+        before = after;
+        if change < SETTLED {
+            break;
+        }
+    }
+    change
+}
+
+fn pairs_of(
+    data: &Data,
+    bench: &Bench,
+    healthy: &Prediction,
+    catalogue: &[&'static Fault],
+    held: &[Held],
+) -> Vec<Candidate> {
+    let alone: Vec<Alone> = held
+        .iter()
+        .map(|h| Alone {
+            fault: catalogue[h.cause],
+            node: h.node,
+            mean: &h.first,
+        })
+        .collect();
+    pairs::candidates(data, &bench.builds, healthy, &alone)
+}
+
 fn hold(cause: usize, node: Node, p: &Prediction, data: &Data, swap: f64) -> Option<Held> {
     fit(data, p, &[], swap).map(|fit| Held {
         cause,
@@ -194,6 +269,7 @@ fn hold(cause: usize, node: Node, p: &Prediction, data: &Data, swap: f64) -> Opt
         log_weight: node.log_weight,
         fit,
         mean: p.mean.clone(),
+        first: p.mean.clone(),
     })
 }
 
@@ -226,9 +302,10 @@ fn again(
             .iter()
             .map(|v| v.clamp(-FARTHEST, FARTHEST))
             .collect();
-        if let Some(last) = centre.last_mut() {
-            // The place in the severity cell ends at the cell's wall.
-            *last = last.clamp(-(3f64.sqrt()), 3f64.sqrt());
+        let cells = centre.len().saturating_sub(CELLS);
+        for place in &mut centre[cells..] {
+            // The place in a severity cell ends at the cell's wall.
+            *place = place.clamp(-(3f64.sqrt()), 3f64.sqrt());
         }
         let fault = catalogue[h.cause];
         let p = bench.predict(fault, &h.node, data, &centre);
@@ -246,6 +323,7 @@ fn again(
 
 fn collect<'a>(
     id: FaultId,
+    with: Option<FaultId>,
     log_prior: f64,
     nodes: impl Iterator<Item = &'a Held>,
     data: &Data,
@@ -300,6 +378,7 @@ fn collect<'a>(
     let heaviest = weights.iter().copied().fold(0.0, f64::max);
     Weighed {
         id,
+        with,
         log_prior,
         log_likelihood,
         without,
