@@ -86,7 +86,8 @@ struct White {
     effects: Vec<Option<Vec<f64>>>,
 }
 
-fn white(data: &Data, healthy: &Prediction, alone: &[Alone]) -> Option<White> {
+fn white(data: &Data, sound: &[(Node, Prediction)], alone: &[Alone]) -> Option<White> {
+    let healthy = &sound.first()?.1;
     let used: Vec<usize> = (0..data.data.len())
         .filter(|k| data.data[*k].says != Says::AtLeast)
         .collect();
@@ -109,12 +110,12 @@ fn white(data: &Data, healthy: &Prediction, alone: &[Alone]) -> Option<White> {
     }
     let whitener = Whitener::new(covariance, n)?;
     let reference = |node: &Node| {
-        let sound = |a: &&Alone| a.fault.id == FaultId::Healthy && a.node.build == node.build;
-        alone
+        let own = |s: &&(Node, Prediction)| s.0.build == node.build;
+        sound
             .iter()
-            .filter(sound)
-            .find(|a| a.node.place == node.place)
-            .or_else(|| alone.iter().find(sound))
+            .filter(own)
+            .find(|s| s.0.place == node.place)
+            .or_else(|| sound.iter().find(own))
     };
     let pick = |f: &dyn Fn(usize) -> f64| -> Vec<f64> {
         whitener.apply(&used.iter().map(|k| f(*k)).collect::<Vec<_>>())
@@ -123,7 +124,7 @@ fn white(data: &Data, healthy: &Prediction, alone: &[Alone]) -> Option<White> {
         residual: pick(&|k| data.data[k].t - healthy.mean[k]),
         effects: alone
             .iter()
-            .map(|a| reference(&a.node).map(|r| pick(&|k| a.mean[k] - r.mean[k])))
+            .map(|a| reference(&a.node).map(|r| pick(&|k| a.mean[k] - r.1.mean[k])))
             .collect(),
     })
 }
@@ -144,13 +145,13 @@ impl White {
 pub fn candidates(
     data: &Data,
     builds: &[Build],
-    healthy: &Prediction,
+    sound: &[(Node, Prediction)],
     alone: &[Alone],
 ) -> Vec<Candidate> {
     if data.belief.pairs <= 0.0 || data.data.len() < 3 {
         return Vec::new();
     }
-    let Some(white) = white(data, healthy, alone) else {
+    let Some(white) = white(data, sound, alone) else {
         return Vec::new();
     };
     let mut causes: Vec<&'static Fault> = Vec::new();

@@ -10,6 +10,7 @@ use super::predict::{Bench, CELLS, Prediction};
 use crate::faults::{self, Fault, FaultId};
 use crate::math;
 use crate::readings::SideNaming;
+use std::collections::BTreeMap;
 
 /// Share of all weight from which a node is linearised again.
 const HEAVY: f64 = 5e-4;
@@ -93,25 +94,19 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
         .collect();
     let mut held: Vec<Held> = Vec::new();
     let mut priors = vec![f64::NEG_INFINITY; catalogue.len()];
-    let mut healthy_prediction = None;
+    let sound = sound(bench, data);
     for (cause, fault) in catalogue.iter().enumerate() {
         let (list, prior) = nodes(fault, &bench.builds, &data.belief);
         priors[cause] = prior;
         for node in list {
             let p = bench.predict(fault, &node, data, &[]);
             held.extend(hold(cause, node, &p, data, swap));
-            if fault.id == FaultId::Healthy && healthy_prediction.is_none() {
-                healthy_prediction = Some(p);
-            }
         }
     }
     let mut change = settle(bench, data, &catalogue, &priors, &mut held, swap);
     let singles = catalogue.len();
     let mut second: Vec<Option<FaultId>> = vec![None; singles];
-    for pair in healthy_prediction
-        .as_ref()
-        .map_or(Vec::new(), |p| pairs_of(data, bench, p, &catalogue, &held))
-    {
+    for pair in pairs_of(data, bench, &sound, &catalogue, &held) {
         let cause = catalogue.len();
         catalogue.push(pair.faults[0]);
         second.push(Some(pair.faults[1].id));
@@ -139,7 +134,7 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
             )
         })
         .collect();
-    if let (Some(p), Some(entry)) = (&healthy_prediction, faults::find(FaultId::NotListed)) {
+    if let (Some((_, p)), Some(entry)) = (sound.first(), faults::find(FaultId::NotListed)) {
         let log = not_listed(data, p);
         let n = data.data.len();
         out.push(Weighed {
@@ -244,10 +239,29 @@ fn settle(
     change
 }
 
+/// The sound machine at all its nodes, whatever its base rate: what effects are measured from.
+fn sound(bench: &Bench, data: &Data) -> Vec<(Node, Prediction)> {
+    let Some(fault) = faults::find(FaultId::Healthy) else {
+        return Vec::new();
+    };
+    let believed = Belief {
+        rates: BTreeMap::new(),
+        ..data.belief.clone()
+    };
+    nodes(fault, &bench.builds, &believed)
+        .0
+        .into_iter()
+        .map(|node| {
+            let p = bench.predict(fault, &node, data, &[]);
+            (node, p)
+        })
+        .collect()
+}
+
 fn pairs_of(
     data: &Data,
     bench: &Bench,
-    healthy: &Prediction,
+    sound: &[(Node, Prediction)],
     catalogue: &[&'static Fault],
     held: &[Held],
 ) -> Vec<Candidate> {
@@ -259,7 +273,7 @@ fn pairs_of(
             mean: &h.first,
         })
         .collect();
-    pairs::candidates(data, &bench.builds, healthy, &alone)
+    pairs::candidates(data, &bench.builds, sound, &alone)
 }
 
 fn hold(cause: usize, node: Node, p: &Prediction, data: &Data, swap: f64) -> Option<Held> {
