@@ -44,6 +44,16 @@ pub struct Node {
 }
 
 impl Node {
+    /// The three thirds of its severity cell.
+    pub fn thirds(&self) -> [Node; 3] {
+        [-2.0, 0.0, 2.0].map(|step| Node {
+            quantile: self.quantile + step * self.half / 3.0,
+            half: self.half / 3.0,
+            log_weight: self.log_weight - math::ln(3.0),
+            ..*self
+        })
+    }
+
     /// The same node with its two causes in the other order, and the cause that is then the first; none for a single cause.
     pub fn turned(&self, first: &'static Fault) -> Option<(&'static Fault, Node)> {
         let second = self.second?;

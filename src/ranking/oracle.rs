@@ -193,7 +193,7 @@ fn brute_force(bench: &Bench, data: &Data, fault: &Fault, draw: &mut Normals) ->
             .unwrap_or(all.len() - 1);
         let node = Node {
             second: None,
-        place: None,
+            place: None,
             quantile: all[i].quantile + all[i].half * (2.0 * draw.unit() - 1.0),
             ..all[i]
         };

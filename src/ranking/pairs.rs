@@ -45,8 +45,11 @@ const BOTH_WORN: f64 = 0.1;
 const MOST_NODES: usize = 10;
 /// Nodes of a way of showing that the first comparison looks at.
 const COARSE: usize = 6;
-/// How far behind the best single cause (natural log) the best pair may lie by superposition and still be solved.
+/// How far behind the best single cause (natural log) the best pair may lie by superposition, base rates counted, and still be
+/// solved.
 const WORTH: f64 = 3.0;
+/// How much better (natural log) a pair must explain the readings than either of its causes alone.
+const BETTER: f64 = 1.0;
 /// Square of a whitened residual beyond which it is one wrong reading and not many causes.
 const CLIP: f64 = 12.0;
 
@@ -162,7 +165,11 @@ pub fn candidates(
     }
     let nodes_of: Vec<Vec<usize>> = causes
         .iter()
-        .map(|c| (0..alone.len()).filter(|i| alone[*i].fault.id == c.id).collect())
+        .map(|c| {
+            (0..alone.len())
+                .filter(|i| alone[*i].fault.id == c.id)
+                .collect()
+        })
         .collect();
     let coarse: Vec<Vec<usize>> = nodes_of
         .iter()
@@ -172,16 +179,23 @@ pub fn candidates(
         })
         .collect();
     let weight = |i: usize| alone[i].node.log_weight;
-    let best_single = causes
+    let single: Vec<f64> = nodes_of
         .iter()
-        .zip(&nodes_of)
-        .map(|(c, list)| {
+        .map(|list| {
             let logs: Vec<f64> = list
                 .iter()
-                .filter_map(|i| white.effects[*i].as_ref().map(|e| weight(*i) + white.log(e, None)))
+                .filter_map(|i| {
+                    let effect = white.effects[*i].as_ref()?;
+                    Some(weight(*i) + white.log(effect, None))
+                })
                 .collect();
-            math::ln(data.belief.rate(c).max(1e-12)) + math::ln_sum_exp(&logs)
+            math::ln_sum_exp(&logs)
         })
+        .collect();
+    let best_single = causes
+        .iter()
+        .zip(&single)
+        .map(|(c, log)| math::ln(data.belief.rate(c).max(1e-12)) + log)
         .fold(f64::NEG_INFINITY, f64::max);
     // Of nodes on the same build; the build's share is counted once.
     let joint = |a: usize, b: usize| {
@@ -211,12 +225,14 @@ pub fn candidates(
             if logs.is_empty() {
                 continue;
             }
-            let prior = math::ln(rate(&data.belief, causes[a], causes[b]).max(1e-12));
-            let log = prior
-                + math::ln_sum_exp(&logs)
+            let log = math::ln_sum_exp(&logs)
                 + thin(&coarse[a], &nodes_of[a])
                 + thin(&coarse[b], &nodes_of[b]);
-            ranked.push((log, a, b));
+            if log < single[a].max(single[b]) + BETTER {
+                continue;
+            }
+            let prior = math::ln(rate(&data.belief, causes[a], causes[b]).max(1e-12));
+            ranked.push((prior + log, a, b));
         }
     }
     ranked.sort_by(|x, y| y.0.total_cmp(&x.0).then((x.1, x.2).cmp(&(y.1, y.2))));

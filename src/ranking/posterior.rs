@@ -21,6 +21,9 @@ const SETTLED: f64 = 0.01;
 /// Largest step (standard deviations) to which a node is linearised again.
 const FARTHEST: f64 = 3.5;
 
+/// Change of a reading (a factor of e) across half a severity cell from which the cell is cut in three.
+const STEEP: f64 = 0.5;
+
 /// A cause with what the data make of it.
 #[derive(Clone, Debug)]
 pub struct Weighed {
@@ -100,7 +103,14 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
         priors[cause] = prior;
         for node in list {
             let p = bench.predict(fault, &node, data, &[]);
-            held.extend(hold(cause, node, &p, data, swap));
+            if p.steepness() > STEEP {
+                for part in node.thirds() {
+                    let p = bench.predict(fault, &part, data, &[]);
+                    held.extend(hold(cause, part, &p, data, swap));
+                }
+            } else {
+                held.extend(hold(cause, node, &p, data, swap));
+            }
         }
     }
     let mut change = settle(bench, data, &catalogue, &priors, &mut held, swap);

@@ -64,6 +64,17 @@ const CAPPED: f64 = 1e-3;
 /// Variance (on the transformed scale) of a reading where the circuit has no steady state.
 const LOOSE: f64 = 1.0;
 
+impl Prediction {
+    /// Largest change of any datum (transformed scale) from the middle of the severity cell to its wall.
+    pub fn steepness(&self) -> f64 {
+        self.rows
+            .chunks(self.columns)
+            .filter_map(|row| row.get(self.columns - CELLS))
+            .fold(0.0, |most: f64, r| most.max(r.abs()))
+            * 3f64.sqrt()
+    }
+}
+
 impl Bench {
     /// Sets the bench up for a unit's builds and the conditions of its readings.
     pub fn new(builds: Vec<Build>, latents: Latents, data: &Data) -> Bench {
@@ -291,7 +302,16 @@ impl Bench {
             return Vec::new();
         };
         let columns = self.latents.0.len() + CELLS;
-        let rows = self.latent_rows(&s, condition, &theta, &factors, healthy, &node, &[], [0.0; CELLS]);
+        let rows = self.latent_rows(
+            &s,
+            condition,
+            &theta,
+            &factors,
+            healthy,
+            &node,
+            &[],
+            [0.0; CELLS],
+        );
         let row = &rows[at * columns..(at + 1) * columns - CELLS];
         self.latents
             .0
@@ -335,7 +355,7 @@ impl Bench {
             match self.one(d, &shows, row, columns) {
                 Some((mean, starved)) => {
                     out.mean[k] = mean;
-                    keep_believable(row);
+                    keep_believable(&mut row[..columns - CELLS]);
                     swings.add(d, starved);
                 }
                 None => {

@@ -131,9 +131,9 @@ fn row(
 
 fn lower_first(words: &str) -> String {
     let mut letters = words.chars();
-    letters.next().map_or(String::new(), |c| {
-        c.to_lowercase().chain(letters).collect()
-    })
+    letters
+        .next()
+        .map_or(String::new(), |c| c.to_lowercase().chain(letters).collect())
 }
 
 /// How much nearer (standard deviations) a cause must come to a reading than its partner to count as what explains it.
