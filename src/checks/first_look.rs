@@ -91,7 +91,12 @@ pub const TABLE: &[Check] = &[
         ],
         instruments: "contact probe, or infrared gun and black tape",
         yields: &[Yield::neutral(Port::SettledTemperature, Idle::High)],
-        answers: &["cartridge-hot", "motor-case-hot", "hub-hot"],
+        answers: &[
+            "cartridge-hot",
+            "motor-case-hot",
+            "hub-hot",
+            "cooler-stays-cool",
+        ],
         minutes_first: 4.0,
         minutes_again: 2.0,
         hazard: 2,

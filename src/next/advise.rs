@@ -4,18 +4,17 @@ use super::foretell::foretold;
 use super::probe::forecast;
 use super::repair::{self, CheckFirst};
 use super::worth::{Known, USEFUL, Worth, open_the_way, share_set_ups, worth};
-use super::{Advice, Hold, Offer, gate, rig};
+use super::{Advice, Offer, gate, limits, rig};
 use crate::assessment::Assessment;
 use crate::checks::{self, Check};
 use crate::faults::{self, FaultId};
 use crate::machine::{builds, condition_latents, unit_latents};
 use crate::math;
 use crate::observations;
-use crate::ranking::{Bench, Heavy, gather, hold_time, weigh};
+use crate::ranking::{Bench, Heavy, gather, weigh};
 use crate::readings::instrument::Instrument;
-use crate::readings::{Doing, EngineSpeed, Lever};
 use crate::record::Visit;
-use crate::unit::{FigureId, Unit};
+use crate::unit::Unit;
 
 /// Probability of the leading cause from which it may be time to stop checking.
 const LEADS: f64 = 0.9;
@@ -125,7 +124,7 @@ pub fn advise(
                     Some(next) => format!("{} It also opens the way to “{next}”.", w.why),
                     None => w.why.clone(),
                 },
-                hold: hold(unit, candidates[*i]),
+                hold: limits::hold(unit, candidates[*i]),
                 foretold: foretold(*i, &forecasts, &weights, &of_cause, &ids, &prior),
             });
         }
@@ -144,37 +143,6 @@ pub fn advise(
         ));
     }
     advice
-}
-
-/// Share of the plate setting at which the staged build-up stops first. Common practice.
-const STOP_FIRST: f64 = 0.6;
-
-/// How long, and up to what pressure, a check holds the machine; none where it holds nothing.
-fn hold(unit: &Unit, check: &Check) -> Option<Hold> {
-    let held = check.yields.iter().filter(|y| y.doing == Doing::Held);
-    let figure = |id| {
-        unit.known(id)
-            .unwrap_or_else(|| unit.class.spread(id).value)
-    };
-    let rpm = held
-        .clone()
-        .map(|y| match y.condition(None).engine {
-            EngineSpeed::LowIdle => figure(FigureId::LowIdle),
-            EngineSpeed::HighIdle => figure(FigureId::HighIdle),
-            EngineSpeed::Measured(m) => m.base(),
-        })
-        .fold(0.0, f64::max);
-    if rpm <= 0.0 {
-        return None;
-    }
-    let (seconds, rise) = hold_time(unit, rpm);
-    let full = held.clone().any(|y| y.lever == Lever::Full);
-    let setting = figure(FigureId::LoopRelief);
-    Some(Hold {
-        seconds,
-        rise,
-        stop_at: if full { setting } else { STOP_FIRST * setting },
-    })
 }
 
 fn stop_words(ids: &[FaultId], prior: &[f64], held_back: bool) -> String {
@@ -265,20 +233,36 @@ fn weighted(
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::assessment::{Cause, Pair};
 
     #[test]
-    fn whatever_holds_the_machine_carries_seconds_and_a_pressure_to_stop_at() {
-        let unit = Unit::default();
-        let relief = unit.class.spread(FigureId::LoopRelief).value;
-        for check in checks::all() {
-            let held = check.yields.iter().any(|y| y.doing == Doing::Held);
-            let limits = hold(&unit, check);
-            assert_eq!(limits.is_some(), held, "{}", check.id);
-            if let Some(h) = limits {
-                assert!(h.seconds > 0.5 && h.seconds < 120.0, "{}: {h:?}", check.id);
-                assert!((h.seconds * h.rise - 15.0).abs() < 1e-9);
-                assert!(h.stop_at > 0.0 && h.stop_at <= relief);
-            }
+    fn two_causes_together_leave_half_of_their_probability_with_each() {
+        let row = |ids: &[FaultId], probability: f64, shares: &[f64], pair: bool| Cause {
+            ids: ids.to_vec(),
+            title: String::new(),
+            probability,
+            shares: shares.to_vec(),
+            pair: pair.then(Pair::default),
+            action: String::new(),
+            split: String::new(),
+            evidence: Vec::new(),
+            would_read: Vec::new(),
+        };
+        let assessment = Assessment {
+            causes: vec![
+                row(&[FaultId::PumpWorn, FaultId::MotorWorn], 0.4, &[], true),
+                row(&[FaultId::PumpWorn], 0.3, &[0.3], false),
+                row(&[FaultId::OilLow], 0.3, &[0.3], false),
+            ],
+            ..Assessment::default()
+        };
+        let (ids, prior) = causes(&assessment);
+        assert_eq!(
+            ids,
+            [FaultId::PumpWorn, FaultId::MotorWorn, FaultId::OilLow]
+        );
+        for (p, wanted) in prior.iter().zip([0.5, 0.2, 0.3]) {
+            assert!((p - wanted).abs() < 1e-12, "{prior:?}");
         }
     }
 }

@@ -64,6 +64,9 @@ pub fn waits(visit: &Visit, assessment: &Assessment, check: &Check) -> Option<Wa
             Some("walk-round"),
         );
     }
+    if moves(check) && may_run_on(assessment, LIKELY) {
+        return wait(RUNS_ON_WORDS, None);
+    }
     if hazard(check) < checks::HIGHEST_HAZARD {
         return None;
     }
@@ -72,11 +75,8 @@ pub fn waits(visit: &Visit, assessment: &Assessment, check: &Check) -> Option<Wa
         Some(true) => return wait("Not alone on site.", None),
         None => return wait("Say first whether you are alone on site.", None),
     }
-    if may_run_on(assessment) {
-        return wait(
-            "It may not come back to neutral: find that out with the engine stopped.",
-            None,
-        );
+    if may_run_on(assessment, RUNS_ON) {
+        return wait(RUNS_ON_WORDS, None);
     }
     if on_a_slope(check) && may_roll(assessment) {
         return wait(
@@ -143,11 +143,15 @@ fn moves(check: &Check) -> bool {
 
 /// Probability of a cause that forbids driving from which nothing is held or driven hard.
 const RUNS_ON: f64 = 0.1;
+/// The same, from which it is not driven at all.
+const LIKELY: f64 = 0.25;
+const RUNS_ON_WORDS: &str =
+    "It may not come back to neutral: find that out with the engine stopped.";
 
 /// True where a cause that forbids moving the machine is likely enough to be reckoned with.
-fn may_run_on(assessment: &Assessment) -> bool {
+fn may_run_on(assessment: &Assessment, least: f64) -> bool {
     assessment.causes.iter().any(|c| {
-        c.probability >= RUNS_ON
+        c.probability >= least
             && c.ids
                 .iter()
                 .any(|id| faults::find(*id).is_some_and(|f| f.stop_work))
@@ -172,4 +176,58 @@ fn may_roll(assessment: &Assessment) -> bool {
         .causes
         .iter()
         .any(|c| c.probability >= RUNS_ON && c.ids.iter().any(|id| lets_go.contains(id)))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::assessment::Cause;
+
+    fn suspects(id: FaultId, probability: f64) -> Assessment {
+        Assessment {
+            causes: vec![Cause {
+                ids: vec![id],
+                title: String::new(),
+                probability,
+                shares: vec![probability],
+                pair: None,
+                action: String::new(),
+                split: String::new(),
+                evidence: Vec::new(),
+                would_read: Vec::new(),
+            }],
+            ..Assessment::default()
+        }
+    }
+
+    #[test]
+    fn a_stroke_that_may_not_come_back_is_not_driven() {
+        let mut visit = Visit::default();
+        for id in ["runs-on", "level-low"] {
+            visit.observations.insert(id.into(), Answer::NotSeen);
+        }
+        let wheel = checks::find("wheel-turns").expect("listed");
+        let charge = checks::find("charge-two-speeds").expect("listed");
+        for (p, driven) in [(0.05, true), (0.3, false)] {
+            let a = suspects(FaultId::StrokeStuck, p);
+            assert_eq!(held_back(&visit, &a, wheel).is_none(), driven, "{p}");
+            assert!(held_back(&visit, &a, charge).is_none(), "{p}");
+        }
+    }
+
+    #[test]
+    fn a_drive_that_may_let_go_is_not_tried_on_a_slope() {
+        let mut visit = Visit {
+            alone: Some(false),
+            ..Visit::default()
+        };
+        for id in ["runs-on", "level-low"] {
+            visit.observations.insert(id.into(), Answer::NotSeen);
+        }
+        let slope = checks::find("slope-hold").expect("listed");
+        let why = |id, p| held_back(&visit, &suspects(id, p), slope).expect("charge is not read");
+        assert!(why(FaultId::BypassOpen, 0.2).contains("slope"));
+        assert!(why(FaultId::BypassOpen, 0.05).contains("Charge pressure first"));
+        assert!(why(FaultId::PumpWorn, 0.2).contains("Charge pressure first"));
+    }
 }

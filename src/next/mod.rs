@@ -5,8 +5,10 @@
 //! end of the trouble (decision-theoretic troubleshooting: Heckerman, Breese and Rommelse, 1995).
 
 mod advise;
+mod answers;
 mod foretell;
 mod gate;
+mod limits;
 mod mixture;
 mod probe;
 mod repair;
@@ -15,8 +17,9 @@ mod words;
 mod worth;
 
 pub use advise::advise;
+pub use answers::{Outcome, by_table, entropy, yes_or_no};
 pub use gate::{hazard, held_back};
-pub use mixture::{Forecast, Outcome, by_table, entropy, outcomes, yes_or_no};
+pub use mixture::{Forecast, outcomes};
 pub use repair::expected_minutes;
 pub use rig::{minutes, open_answers, open_readings, possible};
 

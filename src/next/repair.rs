@@ -1,7 +1,7 @@
 //! Repairs: probability over minutes, weighed against the best check; what a repair waits for, and what proves it afterwards.
 
 use super::RepairOffer;
-use super::mixture::Outcome;
+use super::answers::Outcome;
 use crate::assessment::{Assessment, Cause, Standing, Window};
 use crate::faults::{self, AlikeSet, Fault, FaultId, SETS};
 use crate::record::Visit;

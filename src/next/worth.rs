@@ -1,9 +1,8 @@
 //! What a check is worth: information on the cause, its minutes, and what its set-up serves besides.
 
+use super::answers::{MOST_QUESTIONS, Outcome, Question, answers, entropy, yes_or_no};
 use super::gate;
-use super::mixture::{
-    MOST_QUESTIONS, Outcome, Question, answers, entropy, readings_and_answers, yes_or_no,
-};
+use super::mixture::readings_and_answers;
 use super::probe::Forecasts;
 use super::repair::{self, Job};
 use super::rig;

@@ -1,6 +1,6 @@
 //! What oil, ears and hands tell.
 
-use super::{BASE, Family, Group, Observation};
+use super::{BASE, Family, Group, Observation, even};
 use crate::faults::FaultId as F;
 
 const PROBE: &str =
@@ -252,6 +252,20 @@ pub const TABLE: &[Observation] = &[
             (F::InputDriveSlipping, 0.02),
             (F::NeutralReliefLow, 0.12),
             (F::ConsumerLeak, 0.15),
+        ],
+        ..BASE
+    },
+    Observation {
+        id: "cooler-stays-cool",
+        words: "Cooler cool although the oil is hot",
+        how: "Probe both hoses of the cooler: hot in and hot out is a dirty cooler or a slow fan, cool is one that is passed by.",
+        group: Group::Feel,
+        row: even(0.04),
+        exceptions: &[
+            (F::CoolerBypassing, 0.88),
+            (F::CaseReturnRestricted, 0.12),
+            (F::CaseCouplingShut, 0.12),
+            (F::CoolerDirty, 0.03),
         ],
         ..BASE
     },

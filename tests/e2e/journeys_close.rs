@@ -36,7 +36,7 @@ async fn a_call_is_closed_with_everything_put_back_and_the_next_one_knows_what_w
 
     rig.click("put-back-0").await;
     rig.choose("close-cause", "Charge pump worn").await;
-    rig.click("close-proved-yes").await;
+    rig.click_text("Proved").await;
     rig.fill("close-proof", "Return flow low at both speeds")
         .await;
     rig.fill("close-done", "Charge pump changed").await;

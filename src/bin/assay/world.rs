@@ -386,6 +386,10 @@ impl Machine {
         for f in &self.faults {
             f.bend(&mut theta);
         }
+        if condition.consumers_capped {
+            // A capped consumer neither drinks nor leaks.
+            theta[Param::ConsumerLeak as usize] = 0.0;
+        }
         theta[Param::ServoFull as usize] =
             theta[Param::ServoFull as usize].max(1.2 * theta[Param::ServoStart as usize]);
         for p in [Param::Load, Param::SignalForward, Param::SignalReverse] {
