@@ -349,13 +349,11 @@ fn checking_ends_where_nothing_left_is_likely_to_change_what_leads() {
 
 fn low_relief(with_return: bool) -> Visit {
     let full = condition(Doing::Free, Forward, Lever::Full, HighIdle);
-    let mut r = vec![
-        reading("c-low", Port::Charge, neutral(LowIdle), 16.5),
-        reading("c-high", Port::Charge, neutral(HighIdle), 17.7),
-        // Off for a reason of its own: the wheel is slow, which no charge relief explains.
-        reading("w", Port::Wheel, full, 33.0),
-    ];
+    let mut r = vec![reading("c-high", Port::Charge, neutral(HighIdle), 17.7)];
     if with_return {
+        r.insert(0, reading("c-low", Port::Charge, neutral(LowIdle), 16.5));
+        // Off for a reason of its own: the wheel is slow, which no charge relief explains.
+        r.push(reading("w", Port::Wheel, full, 33.0));
         r.push(reading("r-low", Port::ReturnFlow, neutral(LowIdle), 11.8));
         r.push(reading("r-high", Port::ReturnFlow, neutral(HighIdle), 33.9));
     }

@@ -39,7 +39,7 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
     let posterior = weigh(&bench, &data, unit.sides);
     let (mut weighed, change) = (posterior.causes, posterior.change);
     for w in &mut weighed {
-        w.log_prior += math::ln(seen::prior_factor(visit, w.id).max(1e-6));
+        w.log_prior += math::ln(seen::prior_factor(visit, w.id, w.with).max(1e-6));
     }
     let observed = seen::observed(visit);
     let words: Vec<String> = visit.readings.iter().map(words).collect();
@@ -47,8 +47,11 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
     let share = |w: &Weighed| {
         causes
             .iter()
-            .find(|c| c.ids.contains(&w.id))
-            .map_or(0.0, |c| member_share(c, w.id))
+            .find(|c| is_of(c, w))
+            .map_or(0.0, |c| match w.with {
+                Some(_) => c.probability,
+                None => member_share(c, w.id),
+            })
     };
     let mut trust = Trust {
         change,
@@ -66,7 +69,7 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
     }
     if let Some(lead) = causes
         .first()
-        .and_then(|c| weighed.iter().find(|w| c.ids.contains(&w.id)))
+        .and_then(|c| weighed.iter().find(|w| is_of(c, w)))
     {
         trust.heaviest = lead.heaviest;
     }
@@ -94,6 +97,13 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
         hold,
         advice: None,
     }
+}
+
+/// True where a row speaks of a weighed cause or pair.
+fn is_of(cause: &crate::assessment::Cause, w: &Weighed) -> bool {
+    cause.ids.contains(&w.id)
+        && cause.pair.is_some() == w.with.is_some()
+        && w.with.is_none_or(|with| cause.ids.contains(&with))
 }
 
 fn member_share(cause: &crate::assessment::Cause, id: crate::faults::FaultId) -> f64 {

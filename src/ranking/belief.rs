@@ -21,8 +21,10 @@ pub struct Belief {
     pub fineness: usize,
     /// Most rounds of linearising again.
     pub rounds: usize,
-    /// Whether two causes at once are weighed.
-    pub pairs: bool,
+    /// Factor on the base rate of two causes at once; 0: none are weighed.
+    pub pairs: f64,
+    /// Most pairs that are solved, after all were compared by superposing their effects.
+    pub pairs_solved: usize,
 }
 
 impl Default for Belief {
@@ -38,7 +40,8 @@ impl Default for Belief {
             rates: BTreeMap::new(),
             fineness: 14,
             rounds: 2,
-            pairs: true,
+            pairs: 1.0,
+            pairs_solved: 20,
         }
     }
 }

@@ -4,7 +4,6 @@ use super::datum::Data;
 use super::posterior::Weighed;
 use super::seen::Seen;
 use crate::assessment::Evidence;
-use crate::faults::FaultId;
 use crate::math;
 use crate::readings::Reading;
 
@@ -25,19 +24,9 @@ pub struct Probable {
 impl Probable {
     /// Normalises base rate × readings × observations.
     pub fn new(weighed: &[Weighed], seen: &[Seen]) -> Probable {
-        let place = |id: FaultId| FaultId::ALL.iter().position(|i| *i == id);
         let by_cause: Vec<Vec<f64>> = seen
             .iter()
-            .map(|s| {
-                weighed
-                    .iter()
-                    .map(|w| {
-                        place(w.id)
-                            .and_then(|i| s.logs.get(i).copied())
-                            .unwrap_or(0.0)
-                    })
-                    .collect()
-            })
+            .map(|s| weighed.iter().map(|w| s.log(w.id, w.with)).collect())
             .collect();
         let log_likelihood: Vec<f64> = (0..weighed.len())
             .map(|i| weighed[i].log_likelihood + by_cause.iter().map(|o| o[i]).sum::<f64>())

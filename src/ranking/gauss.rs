@@ -120,6 +120,38 @@ impl Gauss {
     }
 }
 
+/// Takes correlation out of residuals: with C = L·Lᵀ, L⁻¹·x.
+#[derive(Clone, Debug)]
+pub struct Whitener {
+    n: usize,
+    factor: Vec<f64>,
+}
+
+impl Whitener {
+    /// For a covariance; none where it is not positive.
+    pub fn new(mut covariance: Vec<f64>, n: usize) -> Option<Whitener> {
+        cholesky(&mut covariance, n)?;
+        Some(Whitener {
+            n,
+            factor: covariance,
+        })
+    }
+
+    /// L⁻¹·x.
+    pub fn apply(&self, x: &[f64]) -> Vec<f64> {
+        let n = self.n;
+        let mut out = vec![0.0; n];
+        for i in 0..n {
+            let mut s = x[i];
+            for k in 0..i {
+                s -= self.factor[i * n + k] * out[k];
+            }
+            out[i] = s / self.factor[i * n + i];
+        }
+        out
+    }
+}
+
 #[cfg(test)]
 mod tests {
     use super::*;
@@ -138,6 +170,14 @@ mod tests {
         let first = -0.5 * 0.25 / 2.0 - 0.5 * math::ln(2.0) - 0.5 * LN_TWO_PI;
         assert!((g.log_density - g.conditional(&[1]) - first).abs() < 1e-12);
         assert!((g.conditional(&[0, 1]) - g.log_density).abs() < 1e-12);
+    }
+
+    #[test]
+    fn whitened_residuals_have_the_same_square() {
+        let c = vec![2.0, 1.0, 1.0, 3.0];
+        let w = Whitener::new(c, 2).expect("positive").apply(&[0.5, -1.0]);
+        let square = (3.0 * 0.25 + 2.0 * 0.5 + 2.0 * 1.0) / 5.0;
+        assert!((w.iter().map(|x| x * x).sum::<f64>() - square).abs() < 1e-12);
     }
 
     #[test]

@@ -15,6 +15,7 @@ mod likelihood;
 mod node;
 #[cfg(all(test, not(target_arch = "wasm32")))]
 mod oracle;
+mod pairs;
 mod posterior;
 mod predict;
 mod rows;
@@ -30,6 +31,7 @@ pub use evidence::normalised;
 pub use gauss::{Gauss, LN_TWO_PI};
 pub use hold::hold_time;
 pub use likelihood::fit;
-pub use node::Node;
+pub use node::{Node, Second};
+pub use pairs::{apart, rate as pair_rate};
 pub use posterior::{Heavy, Posterior, Weighed, swap_chance, weigh};
 pub use predict::{Bench, Prediction};

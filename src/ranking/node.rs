@@ -7,6 +7,21 @@ use crate::faults::{Bend, Fault, SeverityShape};
 use crate::machine::Build;
 use crate::math;
 
+/// A second cause at work beside the first.
+#[derive(Clone, Copy, Debug)]
+pub struct Second {
+    /// Which.
+    pub fault: &'static Fault,
+    /// Index into its effects.
+    pub effect: Option<usize>,
+    /// Sign of those bends that can go either way.
+    pub sign: f64,
+    /// Place of its cell's middle in its severity distribution, 0 to 1.
+    pub quantile: f64,
+    /// Half the width of its cell.
+    pub half: f64,
+}
+
 /// One node: a cause at one severity, shown in one way, on one build.
 #[derive(Clone, Copy, Debug)]
 pub struct Node {
@@ -20,10 +35,44 @@ pub struct Node {
     pub quantile: f64,
     /// Half the width of the cell.
     pub half: f64,
+    /// Second cause, where two are at work.
+    pub second: Option<Second>,
     /// Its place in the sampled half of the scatter, of how many; none: all scatter is left to the closed form.
     pub place: Option<Place>,
     /// Log of the node's share of its cause.
     pub log_weight: f64,
+}
+
+impl Node {
+    /// The three thirds of its severity cell.
+    pub fn thirds(&self) -> [Node; 3] {
+        [-2.0, 0.0, 2.0].map(|step| Node {
+            quantile: self.quantile + step * self.half / 3.0,
+            half: self.half / 3.0,
+            log_weight: self.log_weight - math::ln(3.0),
+            ..*self
+        })
+    }
+
+    /// The same node with its two causes in the other order, and the cause that is then the first; none for a single cause.
+    pub fn turned(&self, first: &'static Fault) -> Option<(&'static Fault, Node)> {
+        let second = self.second?;
+        let node = Node {
+            effect: second.effect,
+            sign: second.sign,
+            quantile: second.quantile,
+            half: second.half,
+            second: Some(Second {
+                fault: first,
+                effect: self.effect,
+                sign: self.sign,
+                quantile: self.quantile,
+                half: self.half,
+            }),
+            ..*self
+        };
+        Some((second.fault, node))
+    }
 }
 
 /// Severity (0 to 1) at a quantile of its distribution.
@@ -126,6 +175,7 @@ pub fn nodes(fault: &Fault, builds: &[Build], belief: &Belief) -> (Vec<Node>, f6
                         (i as f64 + 0.5) / n as f64
                     },
                     half: if plain { 0.0 } else { 0.5 / n as f64 },
+                    second: None,
                     place: Some(Place { at: i, of: n }),
                     log_weight: math::ln(share / n as f64),
                 });

@@ -154,6 +154,7 @@ fn readings(unit: &Unit, fault: &Fault, take: usize, draw: &mut Normals) -> Vec<
     let bench = bench(unit, &data);
     let (all, _) = nodes(fault, &bench.builds, &coarse());
     let node = Node {
+        second: None,
         place: None,
         quantile: draw.unit(),
         ..all[(draw.unit() * all.len() as f64) as usize]
@@ -191,6 +192,7 @@ fn brute_force(bench: &Bench, data: &Data, fault: &Fault, draw: &mut Normals) ->
             .position(|c| *c >= x)
             .unwrap_or(all.len() - 1);
         let node = Node {
+            second: None,
             place: None,
             quantile: all[i].quantile + all[i].half * (2.0 * draw.unit() - 1.0),
             ..all[i]

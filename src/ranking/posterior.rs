@@ -5,10 +5,12 @@ use super::belief::Belief;
 use super::datum::Data;
 use super::likelihood::{Fit, fit, not_listed};
 use super::node::{Node, nodes};
-use super::predict::{Bench, Prediction};
+use super::pairs::{self, Alone, Candidate};
+use super::predict::{Bench, CELLS, Prediction};
 use crate::faults::{self, Fault, FaultId};
 use crate::math;
 use crate::readings::SideNaming;
+use std::collections::BTreeMap;
 
 /// Share of all weight from which a node is linearised again.
 const HEAVY: f64 = 5e-4;
@@ -19,11 +21,16 @@ const SETTLED: f64 = 0.01;
 /// Largest step (standard deviations) to which a node is linearised again.
 const FARTHEST: f64 = 3.5;
 
+/// Change of a reading (a factor of e) across half a severity cell from which the cell is cut in three.
+const STEEP: f64 = 0.5;
+
 /// A cause with what the data make of it.
 #[derive(Clone, Debug)]
 pub struct Weighed {
     /// Which.
     pub id: FaultId,
+    /// The second one, where two are at work together.
+    pub with: Option<FaultId>,
     /// Log of its base rate over the builds (per hundred calls).
     pub log_prior: f64,
     /// Log likelihood of all data.
@@ -47,6 +54,8 @@ struct Held {
     log_weight: f64,
     fit: Fit,
     mean: Vec<f64>,
+    /// As first predicted, in the middle of the scatter.
+    first: Vec<f64>,
 }
 
 /// A node that carries weight: what the next check is chosen over.
@@ -82,57 +91,65 @@ pub fn swap_chance(sides: SideNaming, belief: &Belief) -> f64 {
 /// Weighs every cause of the catalogue.
 pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
     let swap = swap_chance(sides, &data.belief);
-    let catalogue: Vec<&'static Fault> = faults::all()
+    let mut catalogue: Vec<&'static Fault> = faults::all()
         .iter()
         .filter(|f| f.id != FaultId::NotListed)
         .collect();
     let mut held: Vec<Held> = Vec::new();
     let mut priors = vec![f64::NEG_INFINITY; catalogue.len()];
-    let mut healthy_prediction = None;
+    let sound = sound(bench, data);
     for (cause, fault) in catalogue.iter().enumerate() {
         let (list, prior) = nodes(fault, &bench.builds, &data.belief);
         priors[cause] = prior;
         for node in list {
             let p = bench.predict(fault, &node, data, &[]);
-            held.extend(hold(cause, node, &p, data, swap));
-            if fault.id == FaultId::Healthy && healthy_prediction.is_none() {
-                healthy_prediction = Some(p);
+            if p.steepness() > STEEP {
+                for part in node.thirds() {
+                    let p = bench.predict(fault, &part, data, &[]);
+                    held.extend(hold(cause, part, &p, data, swap));
+                }
+            } else {
+                held.extend(hold(cause, node, &p, data, swap));
             }
         }
     }
-    let mut before = shares(&held, &priors);
-    let mut change = f64::INFINITY;
-    for _ in 0..data.belief.rounds {
-        again(bench, data, &catalogue, &priors, &mut held, swap);
-        let after = shares(&held, &priors);
-        change = before
-            .iter()
-            .zip(&after)
-            .map(|(a, b)| (a - b).abs())
-            .fold(0.0, f64::max);
-        before = after;
-        if change < SETTLED {
-            break;
+    let mut change = settle(bench, data, &catalogue, &priors, &mut held, swap);
+    let singles = catalogue.len();
+    let mut second: Vec<Option<FaultId>> = vec![None; singles];
+    for pair in pairs_of(data, bench, &sound, &catalogue, &held) {
+        let cause = catalogue.len();
+        catalogue.push(pair.faults[0]);
+        second.push(Some(pair.faults[1].id));
+        priors.push(pair.log_prior);
+        for node in pair.nodes {
+            let p = bench.predict(pair.faults[0], &node, data, &[]);
+            held.extend(hold(cause, node, &p, data, swap));
         }
     }
+    if catalogue.len() > singles {
+        change = settle(bench, data, &catalogue, &priors, &mut held, swap);
+    }
+    let carried = shares(&held, &priors);
     let mut out: Vec<Weighed> = catalogue
         .iter()
         .enumerate()
-        .filter(|(i, _)| priors[*i].is_finite())
+        .filter(|(i, _)| priors[*i].is_finite() && (*i < singles || carried[*i] > SHOWN))
         .map(|(i, fault)| {
             collect(
                 fault.id,
+                second[i],
                 priors[i],
                 held.iter().filter(|h| h.cause == i),
                 data,
             )
         })
         .collect();
-    if let (Some(p), Some(entry)) = (&healthy_prediction, faults::find(FaultId::NotListed)) {
+    if let (Some((_, p)), Some(entry)) = (sound.first(), faults::find(FaultId::NotListed)) {
         let log = not_listed(data, p);
         let n = data.data.len();
         out.push(Weighed {
             id: FaultId::NotListed,
+            with: None,
             log_prior: math::ln(data.belief.rate(entry).max(1e-9)),
             log_likelihood: log,
             without: vec![log; n],
@@ -149,6 +166,8 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
     }
 }
 
+/// Share of all weight from which a pair is a row of its own.
+const SHOWN: f64 = 0.005;
 /// Share of the heaviest node of its cause from which a node counts.
 const COUNTS: f64 = 0.02;
 /// Most nodes that are handed on.
@@ -162,10 +181,26 @@ fn heaviest(catalogue: &[&'static Fault], priors: &[f64], held: &[Held]) -> Vec<
     let mut list: Vec<Heavy> = held
         .iter()
         .filter(|h| h.log_weight + h.fit.log > best[h.cause] + math::ln(COUNTS))
-        .map(|h| Heavy {
-            fault: catalogue[h.cause],
-            node: h.node,
-            log: priors[h.cause] + h.log_weight + h.fit.log,
+        .flat_map(|h| {
+            let log = priors[h.cause] + h.log_weight + h.fit.log;
+            let fault = catalogue[h.cause];
+            // Two causes at once speak for either with half their weight.
+            let (log, other) = match h.node.turned(fault) {
+                Some((second, node)) => {
+                    let log = log - core::f64::consts::LN_2;
+                    (
+                        log,
+                        Some(Heavy {
+                            fault: second,
+                            node,
+                            log,
+                        }),
+                    )
+                }
+                None => (log, None),
+            };
+            let node = h.node;
+            core::iter::once(Heavy { fault, node, log }).chain(other)
         })
         .collect();
     list.sort_by(|a, b| b.log.total_cmp(&a.log).then(a.fault.id.cmp(&b.fault.id)));
@@ -187,6 +222,70 @@ fn shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
     out
 }
 
+/// Linearises what carries weight again until the shares stand still; returns their last change.
+fn settle(
+    bench: &Bench,
+    data: &Data,
+    catalogue: &[&Fault],
+    priors: &[f64],
+    held: &mut [Held],
+    swap: f64,
+) -> f64 {
+    let mut before = shares(held, priors);
+    let mut change = f64::INFINITY;
+    for _ in 0..data.belief.rounds {
+        again(bench, data, catalogue, priors, held, swap);
+        let after = shares(held, priors);
+        change = before
+            .iter()
+            .zip(&after)
+            .map(|(a, b)| (a - b).abs())
+            .fold(0.0, f64::max);
+        before = after;
+        if change < SETTLED {
+            break;
+        }
+    }
+    change
+}
+
+/// The sound machine at all its nodes, whatever its base rate: what effects are measured from.
+fn sound(bench: &Bench, data: &Data) -> Vec<(Node, Prediction)> {
+    let Some(fault) = faults::find(FaultId::Healthy) else {
+        return Vec::new();
+    };
+    let believed = Belief {
+        rates: BTreeMap::new(),
+        ..data.belief.clone()
+    };
+    nodes(fault, &bench.builds, &believed)
+        .0
+        .into_iter()
+        .map(|node| {
+            let p = bench.predict(fault, &node, data, &[]);
+            (node, p)
+        })
+        .collect()
+}
+
+fn pairs_of(
+    data: &Data,
+    bench: &Bench,
+    sound: &[(Node, Prediction)],
+    catalogue: &[&'static Fault],
+    held: &[Held],
+) -> Vec<Candidate> {
+    let alone: Vec<Alone> = held
+        .iter()
+        .map(|h| Alone {
+            fault: catalogue[h.cause],
+            node: h.node,
+            mean: &h.first,
+        })
+        .collect();
+    pairs::candidates(data, &bench.builds, sound, &alone)
+}
+
 fn hold(cause: usize, node: Node, p: &Prediction, data: &Data, swap: f64) -> Option<Held> {
     fit(data, p, &[], swap).map(|fit| Held {
         cause,
@@ -194,6 +293,7 @@ fn hold(cause: usize, node: Node, p: &Prediction, data: &Data, swap: f64) -> Opt
         log_weight: node.log_weight,
         fit,
         mean: p.mean.clone(),
+        first: p.mean.clone(),
     })
 }
 
@@ -226,9 +326,10 @@ fn again(
             .iter()
             .map(|v| v.clamp(-FARTHEST, FARTHEST))
             .collect();
-        if let Some(last) = centre.last_mut() {
-            // The place in the severity cell ends at the cell's wall.
-            *last = last.clamp(-(3f64.sqrt()), 3f64.sqrt());
+        let cells = centre.len().saturating_sub(CELLS);
+        for place in &mut centre[cells..] {
+            // The place in a severity cell ends at the cell's wall.
+            *place = place.clamp(-(3f64.sqrt()), 3f64.sqrt());
         }
         let fault = catalogue[h.cause];
         let p = bench.predict(fault, &h.node, data, &centre);
@@ -246,6 +347,7 @@ fn again(
 
 fn collect<'a>(
     id: FaultId,
+    with: Option<FaultId>,
     log_prior: f64,
     nodes: impl Iterator<Item = &'a Held>,
     data: &Data,
@@ -300,6 +402,7 @@ fn collect<'a>(
     let heaviest = weights.iter().copied().fold(0.0, f64::max);
     Weighed {
         id,
+        with,
         log_prior,
         log_likelihood,
         without,

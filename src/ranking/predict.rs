@@ -47,7 +47,7 @@ struct Shows {
 pub struct Prediction {
     /// Mean of every datum on its transformed scale.
     pub mean: Vec<f64>,
-    /// Datum × latent (the last column is severity): change a standard deviation, row-major.
+    /// Datum × latent (the last columns are the severities of one or two causes): change a standard deviation, row-major.
     pub rows: Vec<f64>,
     /// Columns of `rows`.
     pub columns: usize,
@@ -57,10 +57,23 @@ pub struct Prediction {
     pub swing: f64,
 }
 
+/// Severity cells of a node: of its cause and of a second one.
+pub const CELLS: usize = 2;
 /// Share of a consumer's leak that passes a cap.
 const CAPPED: f64 = 1e-3;
 /// Variance (on the transformed scale) of a reading where the circuit has no steady state.
 const LOOSE: f64 = 1.0;
+
+impl Prediction {
+    /// Largest change of any datum (transformed scale) from the middle of the severity cell to its wall.
+    pub fn steepness(&self) -> f64 {
+        self.rows
+            .chunks(self.columns)
+            .filter_map(|row| row.get(self.columns - CELLS))
+            .fold(0.0, |most: f64, r| most.max(r.abs()))
+            * 3f64.sqrt()
+    }
+}
 
 impl Bench {
     /// Sets the bench up for a unit's builds and the conditions of its readings.
@@ -147,14 +160,14 @@ impl Bench {
         }
     }
 
-    /// Parameters of a node in a condition at scatter `u` (the last entry is the place in the severity cell).
+    /// Parameters of a node in a condition at scatter `u`; `shift`: places in the severity cells of its causes, −1 to 1.
     fn theta(
         &self,
         fault: &Fault,
         node: &Node,
         condition: usize,
         u: &[f64],
-        shift: f64,
+        shift: [f64; CELLS],
     ) -> (Params, Vec<(Param, f64)>) {
         let base = &self.bases[node.build][condition];
         let mut theta = if u.is_empty() && node.place.is_none() {
@@ -168,13 +181,24 @@ impl Bench {
         };
         let mut factors = Vec::new();
         if let Some(effect) = node.effect.and_then(|e| fault.effects.get(e)) {
-            let place = node.quantile + node.half * shift;
+            let place = node.quantile + node.half * shift[0];
             factors = bend(
                 &mut theta,
                 effect.bends,
                 severity(fault.severity, place),
                 node.sign,
             );
+        }
+        if let Some(second) = &node.second
+            && let Some(effect) = second.effect.and_then(|e| second.fault.effects.get(e))
+        {
+            let place = second.quantile + second.half * shift[1];
+            factors.extend(bend(
+                &mut theta,
+                effect.bends,
+                severity(second.fault.severity, place),
+                second.sign,
+            ));
         }
         if self.capped[condition] {
             // A capped consumer neither drinks nor leaks.
@@ -223,7 +247,7 @@ impl Bench {
         condition: usize,
         u: &[f64],
     ) -> Option<Vec<(Port, f64)>> {
-        let (theta, _) = self.theta(fault, node, condition, u, 0.0);
+        let (theta, _) = self.theta(fault, node, condition, u, [0.0; CELLS]);
         let net = &self.networks[node.build][condition];
         let start = self.warm.borrow()[node.build][condition];
         self.solves.set(self.solves.get() + 1);
@@ -266,19 +290,29 @@ impl Bench {
             sign: 1.0,
             quantile: 0.5,
             half: 0.0,
+            second: None,
             place: None,
             log_weight: 0.0,
         };
-        let (theta, factors) = self.theta(healthy, &node, condition, &[], 0.0);
+        let (theta, factors) = self.theta(healthy, &node, condition, &[], [0.0; CELLS]);
         let Some(s) = self.shows(&node, condition, &theta) else {
             return Vec::new();
         };
         let Some(at) = s.ports.iter().position(|(p, _)| *p == port) else {
             return Vec::new();
         };
-        let columns = self.latents.0.len() + 1;
-        let rows = self.latent_rows(&s, condition, &theta, &factors, healthy, &node, &[], 0.0);
-        let row = &rows[at * columns..at * columns + columns - 1];
+        let columns = self.latents.0.len() + CELLS;
+        let rows = self.latent_rows(
+            &s,
+            condition,
+            &theta,
+            &factors,
+            healthy,
+            &node,
+            &[],
+            [0.0; CELLS],
+        );
+        let row = &rows[at * columns..(at + 1) * columns - CELLS];
         self.latents
             .0
             .iter()
@@ -289,11 +323,12 @@ impl Bench {
 
     /// Predicts every datum at a node, linearised round scatter `u` (empty: the middle).
     pub fn predict(&self, fault: &Fault, node: &Node, data: &Data, u: &[f64]) -> Prediction {
-        let columns = self.latents.0.len() + 1;
-        let (scatter, shift) = match u.split_last() {
-            Some((last, rest)) => (rest, (last / 3f64.sqrt()).clamp(-1.0, 1.0)),
-            None => (u, 0.0),
-        };
+        let columns = self.latents.0.len() + CELLS;
+        let (scatter, cells) = u.split_at(u.len().saturating_sub(CELLS));
+        let mut shift = [0.0; CELLS];
+        for (s, c) in shift.iter_mut().zip(cells) {
+            *s = (c / 3f64.sqrt()).clamp(-1.0, 1.0);
+        }
         let mut shows: Vec<Option<(Shows, Vec<f64>)>> = Vec::with_capacity(data.conditions.len());
         for c in 0..data.conditions.len() {
             if self.wanted[c].is_empty() {
@@ -320,7 +355,7 @@ impl Bench {
             match self.one(d, &shows, row, columns) {
                 Some((mean, starved)) => {
                     out.mean[k] = mean;
-                    keep_believable(row);
+                    keep_believable(&mut row[..columns - CELLS]);
                     swings.add(d, starved);
                 }
                 None => {
@@ -348,7 +383,7 @@ impl Bench {
         };
         let mut shown = Vec::with_capacity(data.conditions.len());
         for c in 0..data.conditions.len() {
-            let (theta, _) = self.theta(fault, node, c, u, 0.0);
+            let (theta, _) = self.theta(fault, node, c, u, [0.0; CELLS]);
             let start = self.warm.borrow()[node.build][c];
             let net = &self.networks[node.build][c];
             shown.push(net.solve(&theta, start.as_ref()).ok().map(|s| (theta, s)));
@@ -427,9 +462,9 @@ impl Bench {
         fault: &Fault,
         node: &Node,
         scatter: &[f64],
-        shift: f64,
+        shift: [f64; CELLS],
     ) -> Vec<f64> {
-        let columns = self.latents.0.len() + 1;
+        let columns = self.latents.0.len() + CELLS;
         let mut rows = vec![0.0; s.ports.len() * columns];
         for (latent, p, size) in &self.acts[condition] {
             let size = size * self.split.left(*latent, node.place);
@@ -446,15 +481,21 @@ impl Bench {
                 rows[i * columns + latent] += shown.gradient[*p as usize] * change;
             }
         }
-        if node.half > 0.0 {
-            // Across the cell: a rectangle of its width has a standard deviation of half of it over √3.
-            let (high, _) = self.theta(fault, node, condition, scatter, shift + 0.5);
-            let (low, _) = self.theta(fault, node, condition, scatter, shift - 0.5);
+        // Across a cell: a rectangle of its width has a standard deviation of half of it over √3.
+        let wide = [node.half > 0.0, node.second.is_some_and(|s| s.half > 0.0)];
+        for cell in (0..CELLS).filter(|c| wide[*c]) {
+            let moved = |by: f64| {
+                let mut at = shift;
+                at[cell] += by;
+                self.theta(fault, node, condition, scatter, at).0
+            };
+            let (high, low) = (moved(0.5), moved(-0.5));
             for p in Param::ALL {
                 let change = (high[*p as usize] - low[*p as usize]) / 3f64.sqrt();
                 if change != 0.0 {
                     for (i, (_, shown)) in s.ports.iter().enumerate() {
-                        rows[i * columns + columns - 1] += shown.gradient[*p as usize] * change;
+                        rows[i * columns + columns - CELLS + cell] +=
+                            shown.gradient[*p as usize] * change;
                     }
                 }
             }

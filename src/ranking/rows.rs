@@ -4,7 +4,7 @@ use super::datum::{Data, Says, slope, untransform};
 use super::evidence::{Probable, evidence};
 use super::posterior::Weighed;
 use super::seen::Seen;
-use crate::assessment::{Cause, WouldRead};
+use crate::assessment::{Cause, Pair, WouldRead};
 use crate::faults::{self, AlikeSet, FaultId, SETS};
 use crate::math;
 use crate::readings::Reading;
@@ -69,7 +69,7 @@ fn alike(set: &AlikeSet, weighed: &[Weighed], probable: &Probable) -> Vec<usize>
         .filter_map(|id| {
             weighed
                 .iter()
-                .position(|w| w.id == *id && w.log_prior.is_finite())
+                .position(|w| w.id == *id && w.with.is_none() && w.log_prior.is_finite())
         })
         .collect();
     found.retain(|i| probable.log_likelihood[*i].is_finite());
@@ -95,29 +95,89 @@ fn row(
     seen: &[Seen],
     words: &[String],
 ) -> Cause {
-    let ids: Vec<FaultId> = members.iter().map(|i| weighed[*i].id).collect();
-    let shares: Vec<f64> = members.iter().map(|i| probable.share[*i]).collect();
+    let mut ids: Vec<FaultId> = members.iter().map(|i| weighed[*i].id).collect();
+    let mut shares: Vec<f64> = members.iter().map(|i| probable.share[*i]).collect();
     let probability = shares.iter().sum();
     let lead = members
         .iter()
         .copied()
         .max_by(|a, b| probable.share[*a].total_cmp(&probable.share[*b]))
         .unwrap_or(members[0]);
-    let title = match set {
-        Some(s) => s.title.to_string(),
-        None => faults::find(weighed[lead].id).map_or(String::new(), |f| f.title.to_string()),
-    };
+    let own = |id| faults::find(id).map_or(String::new(), |f| f.title.to_string());
+    let mut title = set.map_or_else(|| own(weighed[lead].id), |s| s.title.to_string());
+    let mut pair = None;
+    if let Some(with) = weighed[lead].with {
+        let titles = [title, own(with)];
+        title = format!("{}, and {}", titles[0], lower_first(&titles[1]));
+        pair = Some(Pair {
+            explains: explains([weighed[lead].id, with], weighed, data, readings, seen),
+            titles,
+        });
+        ids = vec![weighed[lead].id, with];
+        shares = Vec::new();
+    }
     Cause {
         title,
         probability,
         shares,
-        pair: None,
+        pair,
         action: set.map_or(String::new(), |s| s.action.to_string()),
         split: set.map_or(String::new(), |s| s.split.to_string()),
         evidence: evidence(members, weighed, probable, data, readings, seen, words),
         would_read: would_read(&weighed[lead], data, readings),
         ids,
     }
+}
+
+fn lower_first(words: &str) -> String {
+    let mut letters = words.chars();
+    letters
+        .next()
+        .map_or(String::new(), |c| c.to_lowercase().chain(letters).collect())
+}
+
+/// How much nearer (standard deviations) a cause must come to a reading than its partner to count as what explains it.
+const NEARER: f64 = 0.8;
+/// The same for an observation, natural log.
+const LIKELIER: f64 = 0.4;
+
+/// Ids of the readings and observations that each of two causes explains and the other does not.
+fn explains(
+    ids: [FaultId; 2],
+    weighed: &[Weighed],
+    data: &Data,
+    readings: &[Reading],
+    seen: &[Seen],
+) -> [Vec<String>; 2] {
+    let mut out = [Vec::new(), Vec::new()];
+    let alone = |id| weighed.iter().find(|w| w.id == id && w.with.is_none());
+    if let (Some(a), Some(b)) = (alone(ids[0]), alone(ids[1])) {
+        for (k, d) in data.data.iter().enumerate() {
+            let off = |w: &Weighed| {
+                let (mean, spread) = w.would[k];
+                let width = (spread * spread + d.own * d.own + d.bias * d.bias).sqrt();
+                ((d.t - mean) / width.max(1e-6)).abs()
+            };
+            let (x, y) = (off(a), off(b));
+            let Some(reading) = readings.get(d.reading) else {
+                continue;
+            };
+            if x + NEARER < y {
+                out[0].push(reading.id.clone());
+            } else if y + NEARER < x {
+                out[1].push(reading.id.clone());
+            }
+        }
+    }
+    for s in seen.iter().filter(|s| s.positive) {
+        let (x, y) = (s.log(ids[0], None), s.log(ids[1], None));
+        if x > y + LIKELIER {
+            out[0].push(s.id.clone());
+        } else if y > x + LIKELIER {
+            out[1].push(s.id.clone());
+        }
+    }
+    out
 }
 
 /// What the readings taken would be under a cause, back on the port's own scale.

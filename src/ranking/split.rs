@@ -1,4 +1,4 @@
-//! Scatter split in two: half of the variance of load and lever is sampled at the nodes, the rest is integrated in closed form.
+//! Scatter split in two: half of the variance of the load is sampled at the nodes, the rest is integrated in closed form.
 //!
 //! A motor that stalls shows no slope towards turning, and one that turns freely none towards stalling: where the middle of the
 //! load's scatter lies on one side of such a kink, no derivative there knows of the other side. Nodes that start from different
@@ -16,7 +16,7 @@ use std::collections::BTreeMap;
 const SAMPLED: f64 = 0.5;
 
 /// Parameters whose scatter is sampled.
-const KINKED: &[Param] = &[Param::Load, Param::Push, Param::Lever];
+const KINKED: &[Param] = &[Param::Load, Param::Push];
 
 /// A node's place in the sampled half of the scatter.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]

@@ -83,6 +83,7 @@ fn ensemble(bench: &Bench, data: &Data, readings: &[Reading]) -> Vec<Spread> {
             sign: 1.0,
             quantile: 0.5,
             half: 0.0,
+            second: None,
             place: None,
             log_weight: 0.0,
         };

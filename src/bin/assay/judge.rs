@@ -7,6 +7,7 @@ use lowside::machine::{builds, condition_latents, unit_latents};
 use lowside::math;
 use lowside::ranking::{Belief, Bench, gather_with, weigh};
 use std::collections::BTreeMap;
+use std::iter::once;
 
 /// Faults that readings of pressure, flow and speed can tell at all.
 pub fn listed() -> Vec<&'static Fault> {
@@ -43,7 +44,7 @@ pub struct Judge {
     ranker: Ranker,
     rates: BTreeMap<FaultId, f64>,
     sloppy: Sloppiness,
-    pairs: bool,
+    pairs: f64,
 }
 
 impl Judge {
@@ -52,7 +53,7 @@ impl Judge {
         ranker: Ranker,
         possible: &BTreeMap<FaultId, f64>,
         sloppy: Sloppiness,
-        pairs: bool,
+        pairs: f64,
     ) -> Judge {
         let rates = faults::all()
             .iter()
@@ -69,7 +70,8 @@ impl Judge {
         }
     }
 
-    fn belief(&self) -> Belief {
+    /// What it takes for granted.
+    pub fn belief(&self) -> Belief {
         let own = Belief {
             rates: self.rates.clone(),
             pairs: self.pairs,
@@ -85,6 +87,7 @@ impl Judge {
                 swapped: self.sloppy.swapped,
                 fineness: 20,
                 rounds: 3,
+                pairs_solved: 120,
                 ..own
             },
         }
@@ -127,7 +130,7 @@ impl Judge {
             .iter()
             .zip(&logs)
             .filter(|(_, l)| l.is_finite())
-            .map(|(c, l)| (vec![c.id], math::exp(l - total)))
+            .map(|(c, l)| (once(c.id).chain(c.with).collect(), math::exp(l - total)))
             .collect();
         out.sort_by(|a, b| b.1.total_cmp(&a.1).then(a.0.cmp(&b.0)));
         out

@@ -3,6 +3,7 @@
 //! `cargo run --release --bin assay -- ranking [cases] [Charge|Held|Speeds|All]` scores the ranking for each set of readings,
 //! with clean notes and with sloppy ones, beside the best possible ranker, which knows the world's own laws and scatter.
 //! Faults are drawn equally often and the base rates are made equal too, so that the scores speak of the readings alone.
+//! `assay pairs [cases]` hides two faults at once.
 //! `assay steps [cases] [seed]` counts the minutes to the cause (see [`steps`]).
 //! `ASSAY_TELL=1` prints the cases in which a wrong cause was all but certain; `ASSAY_SEED` changes the draw;
 //! `ASSAY_NOTES=clean` leaves the sloppy notes out.
@@ -15,7 +16,7 @@ mod world;
 
 use judge::{Judge, Ranked, Ranker, listed};
 use lowside::faults::{Fault, FaultId};
-use lowside::ranking::assess;
+use lowside::ranking::{apart, assess, pair_rate};
 use lowside::windows::Normals;
 use score::Score;
 use std::collections::BTreeMap;
@@ -43,8 +44,9 @@ fn seed() -> u64 {
 fn main() {
     match std::env::args().nth(1).as_deref() {
         Some("ranking") | None => ranking(),
+        Some("pairs") => pairs(),
         Some("steps") => steps::steps(number(2, 60), number(3, 2026) as u64),
-        Some(other) => eprintln!("assay: no such part: {other}. There are: ranking, steps."),
+        Some(other) => eprintln!("assay: no such part: {other}. There are: ranking, pairs, steps."),
     }
 }
 
@@ -62,34 +64,92 @@ fn possible(listed: &[&'static Fault]) -> BTreeMap<FaultId, f64> {
     count
 }
 
-/// Draws single-fault cases and hands each to the judges.
+/// Draws the faults of a case.
+type Draw<'a> = dyn Fn(&mut Normals) -> Vec<&'static Fault> + Sync + 'a;
+
+/// Draws cases and hands each to the judges, on all threads.
 fn run(
     cases: usize,
     set: ReadingSet,
     sloppy: Sloppiness,
     judges: &[Judge],
-    listed: &[&'static Fault],
-    seed: u64,
+    hidden: &Draw,
 ) -> Vec<Score> {
-    let mut draw = Normals::new(seed);
-    let mut scores = vec![Score::default(); judges.len()];
-    let mut done = 0;
-    while done < cases {
-        let fault = listed[((draw.unit() * listed.len() as f64) as usize).min(listed.len() - 1)];
-        // The fault is drawn first and keeps its place: a unit that can have it is looked for.
-        let Some(c) = (0..400).find_map(|_| case(&mut draw, &[fault], set, sloppy)) else {
-            continue;
-        };
-        done += 1;
-        for (judge, score) in judges.iter().zip(&mut scores) {
-            let r = judge.rank(&c);
-            score.add(&c.faults, &r);
-            if r[0].0 != c.faults && r[0].1 > 0.85 && std::env::var_os("ASSAY_TELL").is_some() {
-                tell(&c, &r);
+    let one = |cases: usize, seed: u64| {
+        let mut draw = Normals::new(seed);
+        let mut scores = vec![Score::default(); judges.len()];
+        let mut done = 0;
+        while done < cases {
+            let faults = hidden(&mut draw);
+            // The faults are drawn first and keep their place: a unit that can have them is looked for.
+            let Some(c) = (0..400).find_map(|_| case(&mut draw, &faults, set, sloppy)) else {
+                continue;
+            };
+            done += 1;
+            for (judge, score) in judges.iter().zip(&mut scores) {
+                let r = judge.rank(&c);
+                score.add(&c.faults, &r);
+                let certain = r.first().is_some_and(|l| l.1 > 0.85 && l.0 != c.faults);
+                if certain && std::env::var_os("ASSAY_TELL").is_some() {
+                    tell(&c, &r);
+                }
             }
         }
+        scores
+    };
+    std::thread::scope(|s| {
+        let workers: Vec<_> = (0..THREADS)
+            .map(|t| {
+                let one = &one;
+                s.spawn(move || one((cases + t) / THREADS, seed() + 1000 * t as u64))
+            })
+            .collect();
+        let mut total = vec![Score::default(); judges.len()];
+        for w in workers {
+            for (a, b) in total.iter_mut().zip(w.join().unwrap_or_default()) {
+                a.merge(&b);
+            }
+        }
+        total
+    })
+}
+
+const RANKERS: [Ranker; 2] = [Ranker::Own, Ranker::Best];
+
+fn head(what: &str) {
+    println!("{what}");
+    println!(
+        "{:<8} {:<22} {:<5} {:>6} {:>6} {:>9} {:>12} {:>12}",
+        "readings", "notes", "who", "top-1", "top-3", "log score", "cal. leader", "cal. all"
+    );
+}
+
+fn print(set: ReadingSet, words: &str, scores: &[Score]) {
+    for (ranker, s) in RANKERS.iter().zip(scores) {
+        let (leader, all) = s.calibration();
+        println!(
+            "{:<8} {:<22} {:<5} {:>6.3} {:>6.3} {:>9.3} {:>12.3} {:>12.3}",
+            format!("{set:?}"),
+            words,
+            format!("{ranker:?}"),
+            s.top1(),
+            s.top3(),
+            s.log(),
+            leader,
+            all
+        );
     }
-    scores
+    println!(
+        "         of the ceiling: top-1 {:.2}, top-3 {:.2}; stated and kept (own): {}",
+        scores[0].top1() / scores[1].top1().max(1e-9),
+        scores[0].top3() / scores[1].top3().max(1e-9),
+        scores[0]
+            .table()
+            .iter()
+            .map(|(n, said, kept)| format!("{said:.2}→{kept:.2} ({n})"))
+            .collect::<Vec<_>>()
+            .join(", ")
+    );
 }
 
 fn ranking() {
@@ -97,11 +157,7 @@ fn ranking() {
     let only = std::env::args().nth(3);
     let listed = listed();
     let possible = possible(&listed);
-    println!("{} faults, {cases} cases a set", listed.len());
-    println!(
-        "{:<8} {:<22} {:<5} {:>6} {:>6} {:>9} {:>12} {:>12}",
-        "readings", "notes", "who", "top-1", "top-3", "log score", "cal. leader", "cal. all"
-    );
+    head(&format!("{} faults, {cases} cases a set", listed.len()));
     for (words, sloppy) in [
         ("clean", Sloppiness::CLEAN),
         ("3 % wrong, sides 1/15", Sloppiness::USUAL),
@@ -113,58 +169,50 @@ fn ranking() {
             .into_iter()
             .filter(|s| only.as_ref().is_none_or(|o| *o == format!("{s:?}")))
         {
-            let rankers = [Ranker::Own, Ranker::Best];
-            let judges: Vec<Judge> = rankers
-                .iter()
-                .map(|r| Judge::new(*r, &possible, sloppy, false))
-                .collect();
-            let scores = std::thread::scope(|s| {
-                let workers: Vec<_> = (0..THREADS)
-                    .map(|t| {
-                        let (judges, listed) = (&judges, &listed);
-                        let share = (cases + t) / THREADS;
-                        s.spawn(move || {
-                            run(share, set, sloppy, judges, listed, seed() + 1000 * t as u64)
-                        })
-                    })
-                    .collect();
-                let mut total = vec![Score::default(); judges.len()];
-                for w in workers {
-                    for (a, b) in total.iter_mut().zip(w.join().unwrap_or_default()) {
-                        a.merge(&b);
-                    }
-                }
-                total
-            });
-            for (ranker, s) in rankers.iter().zip(&scores) {
-                let (leader, all) = s.calibration();
-                println!(
-                    "{:<8} {:<22} {:<5} {:>6.3} {:>6.3} {:>9.3} {:>12.3} {:>12.3}",
-                    format!("{set:?}"),
-                    words,
-                    format!("{ranker:?}"),
-                    s.top1(),
-                    s.top3(),
-                    s.log(),
-                    leader,
-                    all
-                );
-            }
-            println!(
-                "         of the ceiling: top-1 {:.2}, top-3 {:.2}; stated and kept (own): {}",
-                scores[0].top1() / scores[1].top1().max(1e-9),
-                scores[0].top3() / scores[1].top3().max(1e-9),
-                scores[0]
-                    .table()
-                    .iter()
-                    .map(|(n, said, kept)| format!("{said:.2}→{kept:.2} ({n})"))
-                    .collect::<Vec<_>>()
-                    .join(", ")
-            );
+            let judges = RANKERS.map(|r| Judge::new(r, &possible, sloppy, 0.0));
+            let any = |draw: &mut Normals| {
+                let i = (draw.unit() * listed.len() as f64) as usize;
+                vec![listed[i.min(listed.len() - 1)]]
+            };
+            let scores = run(cases, set, sloppy, &judges, &any);
+            print(set, words, &scores);
             if set == ReadingSet::All {
                 by_fault(&scores);
             }
         }
+    }
+}
+
+/// Factor on the base rate of pairs with which a pair of two common faults is met as often as each alone.
+const PAIRS_AS_OFTEN: f64 = 100.0;
+
+/// Two hidden faults at once, drawn as often as the rankers are told that they are met.
+fn pairs() {
+    let cases = number(2, 150);
+    let listed = listed();
+    let possible = possible(&listed);
+    let sloppy = Sloppiness::CLEAN;
+    let judges = RANKERS.map(|r| Judge::new(r, &possible, sloppy, PAIRS_AS_OFTEN));
+    let belief = judges[0].belief();
+    let mut all: Vec<(f64, [&'static Fault; 2])> = Vec::new();
+    let mut sum = 0.0;
+    for (i, a) in listed.iter().enumerate() {
+        for b in listed.iter().skip(i + 1).filter(|b| apart(a, b)) {
+            // How often both are possible on a unit is left to the search for a unit that can have them.
+            let both = possible.get(&a.id).unwrap_or(&0.0) * possible.get(&b.id).unwrap_or(&0.0);
+            sum += pair_rate(&belief, a, b) * both;
+            all.push((sum, [a, b]));
+        }
+    }
+    head(&format!("{} pairs, {cases} cases a set", all.len()));
+    for set in [ReadingSet::Speeds, ReadingSet::All] {
+        let draw = |draw: &mut Normals| {
+            let x = draw.unit() * sum;
+            let at = all.partition_point(|(upto, _)| *upto < x);
+            all[at.min(all.len() - 1)].1.to_vec()
+        };
+        let scores = run(cases, set, sloppy, &judges, &draw);
+        print(set, "two faults", &scores);
     }
 }
 

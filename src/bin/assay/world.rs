@@ -363,12 +363,8 @@ impl Machine {
         (fault.possible)(&self.real) > 0.0
     }
 
-    /// What the port really shows in a condition; none where the machine has no steady state.
-    pub fn shows(&self, port: Port, condition: &Condition) -> Option<f64> {
-        self.shows_and_swings(port, condition).map(|s| s.0)
-    }
-
-    /// As [`Machine::shows`], and whether the needle swings: air in the oil, or a low side that empties.
+    /// What the port really shows in a condition, and whether the needle swings: air in the oil, or a low side that empties.
+    /// None where the machine has no steady state.
     pub fn shows_and_swings(&self, port: Port, condition: &Condition) -> Option<(f64, bool)> {
         let before = apply(&self.build, &base(&self.build), condition);
         let mut latents: Latents = unit_latents(&self.real);
