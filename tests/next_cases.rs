@@ -3,15 +3,16 @@
 mod support;
 
 use lowside::next::{Advice, advise};
-use lowside::ranking::assess;
+use lowside::ranking::{Session, assess};
 use lowside::readings::{Direction::*, Doing, EngineSpeed::*, Lever, Port};
 use lowside::record::{Answer, Visit};
 use lowside::unit::Unit;
 use support::*;
 
 fn advice(unit: &Unit, visit: &Visit) -> Advice {
-    let a = assess(unit, visit, &[]);
-    let advice = advise(unit, visit, &[], &a);
+    let mut session = Session::default();
+    let a = session.assess(unit, visit, &[]);
+    let advice = advise(unit, visit, &[], &a, session.heavy());
     for c in &a.causes[..3.min(a.causes.len())] {
         println!("  {:.3} {:?}", c.probability, c.ids);
     }

@@ -8,10 +8,9 @@ use super::{Advice, Offer, gate, limits, rig};
 use crate::assessment::Assessment;
 use crate::checks::{self, Check};
 use crate::faults::{self, FaultId};
-use crate::machine::{builds, condition_latents, unit_latents};
 use crate::math;
 use crate::observations;
-use crate::ranking::{Bench, Heavy, gather, weigh};
+use crate::ranking::{Heavy, gather};
 use crate::readings::instrument::Instrument;
 use crate::record::Visit;
 use crate::unit::Unit;
@@ -25,12 +24,14 @@ const OFFERED: usize = 4;
 /// Nodes that forecasts are made over.
 const NODES: usize = 90;
 
-/// Advice for a visit whose assessment is at hand.
+/// Advice for a visit whose assessment is at hand; `heavy`: the nodes that carried weight in it
+/// ([`Session::heavy`](crate::ranking::Session::heavy)).
 pub fn advise(
     unit: &Unit,
     visit: &Visit,
     instruments: &[Instrument],
     assessment: &Assessment,
+    heavy: &[Heavy],
 ) -> Advice {
     if observations::stop_work(&visit.observations) {
         return Advice {
@@ -42,12 +43,8 @@ pub fn advise(
         };
     }
     let data = gather(unit, &visit.readings, &visit.riggings, instruments);
-    let mut latents = unit_latents(unit);
-    condition_latents(unit, &data.conditions, &mut latents);
-    let bench = Bench::new(builds(unit), latents, &data);
-    let heavy = weigh(&bench, &data, unit.sides).heavy;
     let (ids, prior) = causes(assessment);
-    let (heavy, weights, of_cause) = weighted(heavy, &ids, &prior);
+    let (heavy, weights, of_cause) = weighted(heavy.to_vec(), &ids, &prior);
     let candidates: Vec<&'static Check> = checks::all()
         .filter(|c| rig::possible(unit, visit, c))
         .collect();

@@ -2,7 +2,8 @@
 
 use super::datum::{Data, gather};
 use super::hold::hold_time;
-use super::posterior::{Weighed, weigh};
+use super::memo::Memo;
+use super::posterior::{Heavy, Weighed, weigh};
 use super::predict::Bench;
 use super::rows::rows;
 use super::seen;
@@ -13,17 +14,49 @@ use crate::readings::instrument::Instrument;
 use crate::readings::{Condition, Direction, Doing, Port, Reading, Seen};
 use crate::record::Visit;
 use crate::unit::{Tick, Unit};
-use crate::windows::windows;
+use crate::windows::{Spreads, windows};
 
 /// Chance of a wrong gauge from which a reading is asked for again.
 const ASK_AGAIN: f64 = 0.5;
 
 /// Assesses a visit to a unit with the shop's instruments. Never fails: what cannot be judged is withheld with its reason.
 pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessment {
+    Session::default().assess(unit, visit, instruments)
+}
+
+/// One call after another: what was solved for the last assessment serves the next.
+#[derive(Clone, Debug, Default)]
+pub struct Session {
+    memo: Memo,
+    spreads: Spreads,
+    heavy: Vec<Heavy>,
+}
+
+impl Session {
+    /// As [`assess`], the quicker the less has changed since the last one. The answer does not hang on what came before.
+    pub fn assess(&mut self, unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessment {
+        let (assessment, heavy) = weighed(unit, visit, instruments, self.memo.clone(), &mut self.spreads);
+        self.heavy = heavy;
+        assessment
+    }
+
+    /// The nodes that carried weight in the last assessment: what the next check is chosen over.
+    pub fn heavy(&self) -> &[Heavy] {
+        &self.heavy
+    }
+}
+
+fn weighed(
+    unit: &Unit,
+    visit: &Visit,
+    instruments: &[Instrument],
+    memo: Memo,
+    spreads: &mut Spreads,
+) -> (Assessment, Vec<Heavy>) {
     let data = gather(unit, &visit.readings, &visit.riggings, instruments);
     let mut latents = unit_latents(unit);
     condition_latents(unit, &data.conditions, &mut latents);
-    let mut bench = Bench::new(builds(unit), latents, &data);
+    let mut bench = Bench::with(builds(unit), latents, &data, memo);
     // A window is wanted for every reading, also while nothing is typed yet.
     for (reading, condition) in visit.readings.iter().zip(&data.condition_of) {
         bench.want(*condition, reading.port);
@@ -35,6 +68,7 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
         instruments,
         &data,
         &bench,
+        spreads,
     );
     let posterior = weigh(&bench, &data, unit.sides);
     let (mut weighed, change) = (posterior.causes, posterior.change);
@@ -88,7 +122,7 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
         .iter()
         .position(|r| r.condition.doing == Doing::Held)
         .map(|i| hold_time(unit, bench.speed(0, data.condition_of[i])));
-    Assessment {
+    let assessment = Assessment {
         windows,
         causes,
         withheld: withheld(unit, visit, &data),
@@ -96,7 +130,8 @@ pub fn assess(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessm
         trust,
         hold,
         advice: None,
-    }
+    };
+    (assessment, posterior.heavy)
 }
 
 /// True where a row speaks of a weighed cause or pair.

@@ -12,6 +12,7 @@ mod evidence;
 mod gauss;
 mod hold;
 mod likelihood;
+mod memo;
 mod node;
 #[cfg(all(test, not(target_arch = "wasm32")))]
 mod oracle;
@@ -24,13 +25,14 @@ mod split;
 mod swing;
 
 pub use accuracy::{Accuracy, accuracy};
-pub use assess::assess;
+pub use assess::{Session, assess};
 pub use belief::Belief;
 pub use datum::{Data, Datum, Says, gather, gather_with, instrument_of, slope, untransform};
 pub use evidence::normalised;
 pub use gauss::{Gauss, LN_TWO_PI};
 pub use hold::hold_time;
 pub use likelihood::fit;
+pub use memo::Memo;
 pub use node::{Node, Second};
 pub use pairs::{apart, rate as pair_rate};
 pub use posterior::{Heavy, Posterior, Weighed, swap_chance, weigh};

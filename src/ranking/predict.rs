@@ -1,10 +1,11 @@
 //! What a node predicts for every datum, and how that scatters: one solve a condition, one adjoint a port.
 
 use super::datum::{Data, Datum, Says, slope, transform};
+use super::memo::{self, Kept, Memo};
 use super::node::{Node, bend, severity};
 use super::split::Split;
 use super::swing::Swings;
-use crate::circuit::{Network, Param, Params, Scale, Shown, State};
+use crate::circuit::{Network, Param, Params, Scale, Shown, Solution, State};
 use crate::faults::Fault;
 use crate::machine::{Build, Latents, apply, base, layout_for, scattered};
 use crate::readings::Port;
@@ -15,6 +16,10 @@ pub struct Bench {
     pub builds: Vec<Build>,
     /// One network a build and condition.
     networks: Vec<Vec<Network>>,
+    /// Its key in what is kept.
+    keys: Vec<Vec<u64>>,
+    /// What was solved before.
+    memo: Memo,
     /// Parameters a build and condition, before scatter.
     bases: Vec<Vec<Params>>,
     /// Scatter.
@@ -78,11 +83,23 @@ impl Prediction {
 impl Bench {
     /// Sets the bench up for a unit's builds and the conditions of its readings.
     pub fn new(builds: Vec<Build>, latents: Latents, data: &Data) -> Bench {
+        Bench::with(builds, latents, data, Memo::default())
+    }
+
+    /// As [`Bench::new`], with what was solved before.
+    pub fn with(builds: Vec<Build>, latents: Latents, data: &Data, memo: Memo) -> Bench {
         let conditions = &data.conditions;
         let mut networks = Vec::new();
         let mut bases = Vec::new();
+        let mut keys = Vec::new();
         for b in &builds {
             let base = base(b);
+            keys.push(
+                conditions
+                    .iter()
+                    .map(|c| memo::text_key(&format!("{:?}", layout_for(b, c))))
+                    .collect::<Vec<_>>(),
+            );
             networks.push(
                 conditions
                     .iter()
@@ -132,6 +149,8 @@ impl Bench {
         Bench {
             builds,
             networks,
+            keys,
+            memo,
             bases,
             split: Split::new(&latents),
             latents,
@@ -142,6 +161,11 @@ impl Bench {
             solves: core::cell::Cell::new(0),
             warm: core::cell::RefCell::new(warm),
         }
+    }
+
+    /// A number of its own for each latent, that stays when others are added.
+    pub fn latent_seeds(&self) -> &[u64] {
+        self.split.seeds()
     }
 
     /// Adds a port to what a condition must show.
@@ -212,31 +236,55 @@ impl Bench {
     fn shows(&self, node: &Node, condition: usize, theta: &Params) -> Option<Shows> {
         let net = &self.networks[node.build][condition];
         let wants = &self.wanted[condition];
+        let key = memo::key(self.keys[node.build][condition], theta);
+        let kept = |k: &mut Option<Kept>| {
+            let k = k.as_mut()?;
+            for p in wants {
+                if !k.ports.iter().any(|(q, _)| q == p) {
+                    k.ports.push((*p, self.shown(node, condition, theta, &k.solution, *p)?));
+                }
+            }
+            Some(Shows {
+                ports: k.ports.clone(),
+                filled: net.filled(&k.solution, theta),
+                air: theta[Param::Air as usize],
+            })
+        };
+        if let Some(known) = self.memo.get(key, kept) {
+            return known;
+        }
         let start = self.warm.borrow()[node.build][condition];
         self.solves.set(self.solves.get() + 1);
-        let solution = net.solve(theta, start.as_ref()).ok()?;
-        if start.is_none() {
+        let solved = net.solve(theta, start.as_ref()).ok();
+        if start.is_none()
+            && let Some(solution) = &solved
+        {
             self.warm.borrow_mut()[node.build][condition] = Some(solution.state);
         }
-        let mut ports = Vec::with_capacity(wants.len());
-        for p in wants {
-            let shown = if *p == Port::Knee {
-                self.solves.set(self.solves.get() + 8);
-                net.knee(
-                    theta,
-                    self.bases[node.build][condition][Param::Speed as usize].max(1500.0),
-                )
-                .ok()?
-            } else {
-                net.reading_and_gradient(*p, &solution, theta)
-            };
-            ports.push((*p, shown));
+        let mut new = solved.map(|solution| Kept {
+            solution,
+            ports: Vec::with_capacity(wants.len()),
+        });
+        let shows = kept(&mut new);
+        self.memo.put(key, new);
+        shows
+    }
+
+    fn shown(
+        &self,
+        node: &Node,
+        condition: usize,
+        theta: &Params,
+        solution: &Solution,
+        port: Port,
+    ) -> Option<Shown> {
+        let net = &self.networks[node.build][condition];
+        if port == Port::Knee {
+            self.solves.set(self.solves.get() + 8);
+            let speed = self.bases[node.build][condition][Param::Speed as usize];
+            return net.knee(theta, speed.max(1500.0)).ok();
         }
-        Some(Shows {
-            ports,
-            filled: net.filled(&solution, theta),
-            air: theta[Param::Air as usize],
-        })
+        Some(net.reading_and_gradient(port, solution, theta))
     }
 
     /// Values only, of every wanted port in a condition at scatter `u`: for ensembles.

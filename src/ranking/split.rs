@@ -6,6 +6,7 @@
 //! showed: too many readings pin them.) The places are a Latin hypercube (McKay, Beckman and Conover, 1979) of fixed seed, the same for every
 //! cause, so that its noise drops out of their comparison.
 
+use super::memo::text_key;
 use crate::circuit::Param;
 use crate::machine::{Latent, Latents};
 use crate::math;
@@ -31,6 +32,8 @@ pub struct Place {
 #[derive(Debug)]
 pub struct Split {
     sampled: Vec<bool>,
+    /// A number of its own for each latent, that stays when others are added.
+    seeds: Vec<u64>,
     places: core::cell::RefCell<BTreeMap<usize, Vec<Vec<f64>>>>,
 }
 
@@ -40,8 +43,14 @@ impl Split {
         let sampled = |l: &Latent| l.acts.iter().any(|a| KINKED.contains(&a.param));
         Split {
             sampled: latents.0.iter().map(sampled).collect(),
+            seeds: seeds(latents),
             places: core::cell::RefCell::default(),
         }
+    }
+
+    /// A number of its own for each latent.
+    pub fn seeds(&self) -> &[u64] {
+        &self.seeds
     }
 
     fn is_sampled(&self, latent: usize, place: Option<Place>) -> bool {
@@ -66,7 +75,7 @@ impl Split {
         let mut places = self.places.borrow_mut();
         let table = places
             .entry(p.of)
-            .or_insert_with(|| hypercube(p.of, &self.sampled));
+            .or_insert_with(|| hypercube(p.of, &self.sampled, &self.seeds));
         (0..self.sampled.len())
             .map(|j| {
                 let start = if self.is_sampled(j, place) {
@@ -80,16 +89,33 @@ impl Split {
     }
 }
 
+/// A number for each latent from its name, where it acts first, and how many of that name came before.
+fn seeds(latents: &Latents) -> Vec<u64> {
+    let mut names: Vec<String> = Vec::with_capacity(latents.0.len());
+    latents
+        .0
+        .iter()
+        .map(|l| {
+            let first = l.acts.first().map(|a| (a.condition, a.param));
+            let name = format!("{} {first:?}", l.words);
+            let before = names.iter().filter(|n| **n == name).count();
+            let seed = text_key(&format!("{name} {before}"));
+            names.push(name);
+            seed
+        })
+        .collect()
+}
+
 /// For each latent (empty where it is not sampled) the place of every node.
-fn hypercube(of: usize, sampled: &[bool]) -> Vec<Vec<f64>> {
+fn hypercube(of: usize, sampled: &[bool], seeds: &[u64]) -> Vec<Vec<f64>> {
     sampled
         .iter()
-        .enumerate()
-        .map(|(j, sampled)| {
+        .zip(seeds)
+        .map(|(sampled, seed)| {
             if !sampled {
                 return Vec::new();
             }
-            let mut draw = Normals::new(7_919 * (j as u64 + 1) + of as u64);
+            let mut draw = Normals::new(seed.wrapping_add(of as u64));
             let mut order: Vec<usize> = (0..of).collect();
             for i in (1..of).rev() {
                 let k = ((draw.unit() * (i + 1) as f64) as usize).min(i);

@@ -9,7 +9,7 @@ use crate::machine::describe_basis;
 use crate::quantity::Measure;
 use crate::ranking::{Bench, Data, Node, accuracy, instrument_of};
 use crate::readings::instrument::Instrument;
-use crate::readings::{Doing, Port, Reading, Rigging, Seen};
+use crate::readings::{Condition, Doing, Port, Reading, Rigging, Seen};
 use crate::unit::{FigureId, ManualWindow, Unit};
 
 /// Draws behind each window.
@@ -18,9 +18,26 @@ const DRAWS: usize = 240;
 const SEED: u64 = 0x10F5_1DE0;
 
 /// Values of one reading over the ensemble, sorted; and how many draws had no steady state.
+#[derive(Clone, Debug, Default)]
 struct Spread {
     values: Vec<f64>,
     without_state: usize,
+}
+
+/// Ensembles kept from one assessment to the next, as long as the unit stays as it is.
+#[derive(Clone, Debug, Default)]
+pub struct Spreads {
+    unit: Option<Unit>,
+    kept: Vec<(Port, Condition, Spread)>,
+}
+
+impl Spreads {
+    fn of(&self, r: &Reading) -> Option<&Spread> {
+        self.kept
+            .iter()
+            .find(|(p, c, _)| *p == r.port && *c == r.condition)
+            .map(|(_, _, s)| s)
+    }
 }
 
 /// The windows of all readings of a visit, in their order.
@@ -31,8 +48,22 @@ pub fn windows(
     instruments: &[Instrument],
     data: &Data,
     bench: &Bench,
+    spreads: &mut Spreads,
 ) -> Vec<Window> {
-    let spreads = ensemble(bench, data, readings);
+    if spreads.unit.as_ref() != Some(unit) {
+        *spreads = Spreads {
+            unit: Some(unit.clone()),
+            kept: Vec::new(),
+        };
+    }
+    let new: Vec<&Reading> = readings
+        .iter()
+        .filter(|r| spreads.of(r).is_none())
+        .collect();
+    let found = ensemble(bench, data, readings, &new);
+    for (r, s) in new.iter().zip(found) {
+        spreads.kept.push((r.port, r.condition, s));
+    }
     readings
         .iter()
         .enumerate()
@@ -46,7 +77,7 @@ pub fn windows(
                 unit,
                 r,
                 data.condition_of[i],
-                &spreads[i],
+                spreads.of(r).unwrap_or(&Spread::default()),
                 riggings,
                 instruments,
                 bench,
@@ -56,18 +87,31 @@ pub fn windows(
         .collect()
 }
 
-fn ensemble(bench: &Bench, data: &Data, readings: &[Reading]) -> Vec<Spread> {
-    let mut spreads: Vec<Spread> = readings
+/// One stream of draws a latent, named after it, so that a window stays as it is when other conditions are added.
+fn scatter(bench: &Bench) -> Vec<Vec<f64>> {
+    bench
+        .latent_seeds()
         .iter()
-        .map(|_| Spread {
-            values: Vec::with_capacity(DRAWS),
-            without_state: 0,
-        })
-        .collect();
-    let Some(healthy) = faults::find(FaultId::Healthy) else {
+        .map(|seed| Normals::new(SEED ^ seed).many(DRAWS))
+        .collect()
+}
+
+/// Spreads of the new readings.
+fn ensemble(bench: &Bench, data: &Data, readings: &[Reading], new: &[&Reading]) -> Vec<Spread> {
+    let mut spreads = vec![Spread::default(); new.len()];
+    let Some(healthy) = faults::find(FaultId::Healthy).filter(|_| !new.is_empty()) else {
         return spreads;
     };
-    let mut normals = Normals::new(SEED);
+    let condition_of: Vec<usize> = new
+        .iter()
+        .map(|n| {
+            readings
+                .iter()
+                .position(|r| r.id == n.id)
+                .map_or(0, |i| data.condition_of[i])
+        })
+        .collect();
+    let scatter = scatter(bench);
     let mut sum = 0.0;
     let mut build = 0;
     for draw in 0..DRAWS {
@@ -87,14 +131,13 @@ fn ensemble(bench: &Bench, data: &Data, readings: &[Reading]) -> Vec<Spread> {
             place: None,
             log_weight: 0.0,
         };
-        let u = normals.many(bench.latents.0.len());
+        let u: Vec<f64> = scatter.iter().map(|s| s[draw]).collect();
         for c in 0..data.conditions.len() {
+            if !condition_of.contains(&c) {
+                continue;
+            }
             let shown = bench.values(healthy, &node, c, &u);
-            for (i, r) in readings
-                .iter()
-                .enumerate()
-                .filter(|(i, _)| data.condition_of[*i] == c)
-            {
+            for (i, r) in new.iter().enumerate().filter(|(i, _)| condition_of[*i] == c) {
                 match shown
                     .as_ref()
                     .and_then(|list| list.iter().find(|(p, _)| *p == r.port))

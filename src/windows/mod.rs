@@ -6,4 +6,4 @@ mod ensemble;
 mod words;
 
 pub use draw::Normals;
-pub use ensemble::windows;
+pub use ensemble::{Spreads, windows};

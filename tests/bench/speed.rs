@@ -42,4 +42,22 @@ fn main() {
         "native: full assessment, 12 readings in 10 conditions: {:.1} ms",
         1e3 * full
     );
+    for (words, known) in [("a known condition", true), ("a new condition", false)] {
+        let more = work::one_more(known);
+        let mut best = f64::INFINITY;
+        for _ in 0..5 {
+            let mut session = work::session();
+            let t = Instant::now();
+            std::hint::black_box(work::again(&mut session, &more));
+            best = best.min(t.elapsed().as_secs_f64());
+        }
+        let fresh = time(&mut || {
+            std::hint::black_box(work::assessment(&more));
+        });
+        println!(
+            "native: one reading more at {words}: {:.1} ms, {:.2} of a full assessment",
+            1e3 * best,
+            best / fresh
+        );
+    }
 }

@@ -3,7 +3,7 @@
 use crate::support::*;
 use lowside::circuit::{Layout, Network, Param, healthy};
 use lowside::math;
-use lowside::ranking::assess;
+use lowside::ranking::{Session, assess};
 use lowside::readings::{Direction::*, Doing, EngineSpeed::*, Lever, Port};
 use lowside::record::Visit;
 use lowside::windows::Normals;
@@ -74,6 +74,31 @@ pub fn call() -> Visit {
 /// One full assessment; returns the probability of its leading cause.
 pub fn assessment(visit: &Visit) -> f64 {
     assess(&roller(), visit, &[])
+        .causes
+        .first()
+        .map_or(0.0, |c| c.probability)
+}
+
+/// The call and one reading more: in a condition that was read already, or in a new one.
+pub fn one_more(known: bool) -> Visit {
+    let mut v = call();
+    let speed = if known { HighIdle } else { LowIdle };
+    let c = condition(Doing::Free, Forward, Lever::Half, speed);
+    v.readings.push(reading("more", Port::LoopA, c, 48.0));
+    v
+}
+
+/// A session that has assessed the call.
+pub fn session() -> Session {
+    let mut s = Session::default();
+    s.assess(&roller(), &call(), &[]);
+    s
+}
+
+/// Assesses a visit in a session.
+pub fn again(session: &mut Session, visit: &Visit) -> f64 {
+    session
+        .assess(&roller(), visit, &[])
         .causes
         .first()
         .map_or(0.0, |c| c.probability)

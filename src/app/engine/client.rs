@@ -155,13 +155,15 @@ impl Engine {
     fn on_page(&self, seq: u32, question: Question) {
         let engine = self.clone();
         let timer = Timer::once(SETTLE_MS, move || {
+            let mut session = crate::ranking::Session::default();
             let mut assessment =
-                crate::ranking::assess(&question.unit, &question.visit, &question.instruments);
+                session.assess(&question.unit, &question.visit, &question.instruments);
             assessment.advice = Some(crate::next::advise(
                 &question.unit,
                 &question.visit,
                 &question.instruments,
                 &assessment,
+                session.heavy(),
             ));
             engine.take(Reply {
                 seq,

@@ -1,11 +1,14 @@
 //! The worker's side: takes a question, answers it.
 
+use core::cell::RefCell;
+
 use serde::Deserialize;
 use wasm_bindgen::closure::Closure;
 use wasm_bindgen::{JsCast, JsValue};
 use web_sys::{DedicatedWorkerGlobalScope, MessageEvent};
 
 use super::Reply;
+use crate::ranking::Session;
 use crate::readings::instrument::Instrument;
 use crate::record::Visit;
 use crate::unit::Unit;
@@ -25,9 +28,10 @@ pub fn install() {
         return;
     };
     let answering = scope.clone();
+    let session = RefCell::new(Session::default());
     let on_message = Closure::wrap(Box::new(move |event: MessageEvent| {
         let text = event.data().as_string().unwrap_or_default();
-        answer(&answering, &text);
+        answer(&answering, &mut session.borrow_mut(), &text);
     }) as Box<dyn FnMut(MessageEvent)>);
     // As a listener, because the start-up script hands over messages that came early as events.
     if let Err(error) =
@@ -49,7 +53,7 @@ fn post(scope: &DedicatedWorkerGlobalScope, reply: &Reply) {
 }
 
 /// Answers a question: the assessment at once, then with the advice.
-fn answer(scope: &DedicatedWorkerGlobalScope, text: &str) {
+fn answer(scope: &DedicatedWorkerGlobalScope, session: &mut Session, text: &str) {
     let request = match serde_json::from_str::<Request>(text) {
         Ok(request) => request,
         Err(error) => {
@@ -69,7 +73,7 @@ fn answer(scope: &DedicatedWorkerGlobalScope, text: &str) {
         visit,
         instruments,
     } = request;
-    let assessment = crate::ranking::assess(&unit, &visit, &instruments);
+    let assessment = session.assess(&unit, &visit, &instruments);
     let mut reply = Reply {
         seq,
         assessment: Some(assessment),
@@ -78,7 +82,13 @@ fn answer(scope: &DedicatedWorkerGlobalScope, text: &str) {
     };
     post(scope, &reply);
     if let Some(assessment) = &mut reply.assessment {
-        assessment.advice = Some(crate::next::advise(&unit, &visit, &instruments, assessment));
+        assessment.advice = Some(crate::next::advise(
+            &unit,
+            &visit,
+            &instruments,
+            assessment,
+            session.heavy(),
+        ));
     }
     reply.more = false;
     post(scope, &reply);

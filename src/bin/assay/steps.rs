@@ -13,7 +13,7 @@ use lowside::faults::{self, Fault, FaultId};
 use lowside::next::{self, Advice, advise};
 use lowside::observations::{self, Group};
 use lowside::quantity::{Kind, Measure};
-use lowside::ranking::assess;
+use lowside::ranking::Session;
 use lowside::readings::{OilTemperature, Place, Reading, Seen};
 use lowside::record::{Answer, Visit};
 use lowside::windows::Normals;
@@ -288,8 +288,9 @@ fn run(call: &Call, policy: Policy) -> Run {
     let mut out = Run::default();
     let mut made: BTreeSet<&'static str> = BTreeSet::new();
     let unit = &call.machine.unit;
+    let mut session = Session::default();
     loop {
-        let assessment = assess(unit, &visit, &[]);
+        let assessment = session.assess(unit, &visit, &[]);
         let lead = assessment.causes.first();
         if let Some(c) = lead.filter(|c| c.probability >= FOUND)
             && out.first_right.is_none()
@@ -310,7 +311,7 @@ fn run(call: &Call, policy: Policy) -> Run {
         if out.found || out.checks.len() >= MOST {
             break;
         }
-        let advice = advise(unit, &visit, &[], &assessment);
+        let advice = advise(unit, &visit, &[], &assessment, session.heavy());
         out.advices += 1;
         out.dangers.add(&judge(unit, &visit, &assessment, &advice));
         let Some(check) = pick(policy, call, &visit, &assessment, &advice, &made, &mut draw) else {
@@ -349,8 +350,15 @@ pub fn steps(cases: usize, seed: u64) {
         };
         if observations::stop_work(&call.start.observations) {
             // Nothing may be tested: the advice is judged, no minutes are counted.
-            let assessment = assess(&call.machine.unit, &call.start, &[]);
-            let advice = advise(&call.machine.unit, &call.start, &[], &assessment);
+            let mut session = Session::default();
+            let assessment = session.assess(&call.machine.unit, &call.start, &[]);
+            let advice = advise(
+                &call.machine.unit,
+                &call.start,
+                &[],
+                &assessment,
+                session.heavy(),
+            );
             dangers.add(&judge(
                 &call.machine.unit,
                 &call.start,
