@@ -4,7 +4,7 @@ mod support;
 
 use lowside::assessment::Assessment;
 use lowside::faults::FaultId;
-use lowside::ranking::assess;
+use lowside::ranking::{Session, assess};
 use lowside::readings::{Direction::*, Doing, EngineSpeed::*, Lever, Port};
 use support::*;
 
@@ -173,4 +173,30 @@ fn a_quick_profile_is_enough_for_a_charge_side_fault() {
     let b = assess(&unit, &call(20.0), &[]);
     print(&b);
     assert!(share(&b) < 0.2, "{}", share(&b));
+}
+
+#[test]
+fn what_came_before_in_a_session_does_not_change_the_answer() {
+    let all = [
+        reading("c-low", Port::Charge, neutral(LowIdle), 18.1),
+        reading("c-high", Port::Charge, neutral(HighIdle), 24.1),
+        reading("r-low", Port::ReturnFlow, neutral(LowIdle), 3.3),
+        reading(
+            "wf",
+            Port::Wheel,
+            condition(Doing::Loaded, Forward, Lever::Full, HighIdle),
+            30.0,
+        ),
+    ];
+    let mut session = Session::default();
+    for n in 1..=all.len() {
+        let v = visit(all[..n].to_vec());
+        let kept = session.assess(&roller(), &v, &[]);
+        let fresh = assess(&roller(), &v, &[]);
+        assert_eq!(kept.windows, fresh.windows, "{n} readings");
+        for (a, b) in kept.causes.iter().zip(&fresh.causes) {
+            assert_eq!(a.ids, b.ids, "{n} readings");
+            assert!((a.probability - b.probability).abs() < 1e-6, "{n} readings");
+        }
+    }
 }

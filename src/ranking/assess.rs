@@ -35,7 +35,13 @@ pub struct Session {
 impl Session {
     /// As [`assess`], the quicker the less has changed since the last one. The answer does not hang on what came before.
     pub fn assess(&mut self, unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessment {
-        let (assessment, heavy) = weighed(unit, visit, instruments, self.memo.clone(), &mut self.spreads);
+        let (assessment, heavy) = weighed(
+            unit,
+            visit,
+            instruments,
+            self.memo.clone(),
+            &mut self.spreads,
+        );
         self.heavy = heavy;
         assessment
     }

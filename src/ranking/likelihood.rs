@@ -89,34 +89,6 @@ pub fn fit(data: &Data, p: &Prediction, centre: &[f64], swap_prior: f64) -> Opti
     })
 }
 
-/// Most that one wrong rigging can win back (natural log): its chance, and a reading anywhere on the scale against one that fits
-/// to the needle.
-const WON_BACK: f64 = 12.0;
-
-/// How far (natural log), at the least, a node's likelihood lies under that of a node which fits every reading: single readings
-/// against their own scatter, the three worst riggings taken as wrong, loop sides and directions as perhaps swapped.
-pub fn behind(data: &Data, p: &Prediction) -> f64 {
-    let c = p.columns;
-    let mut worst = vec![0.0f64; data.groups];
-    for (k, d) in data.data.iter().enumerate() {
-        let may_be_swapped = matches!(d.port, Port::LoopA | Port::LoopB)
-            || !data.conditions[d.condition].doing.is_neutral();
-        if may_be_swapped || d.says == Says::AtLeast {
-            continue;
-        }
-        let row = &p.rows[k * c..(k + 1) * c];
-        let variance = row.iter().map(|r| r * r).sum::<f64>()
-            + d.own * d.own
-            + d.bias * d.bias
-            + p.loose[k];
-        let e = d.t - p.mean[k];
-        worst[d.group] = worst[d.group].max(0.5 * e * e / variance);
-    }
-    worst.sort_by(|a, b| b.total_cmp(a));
-    let won_back: f64 = worst.iter().take(3).map(|w| w.min(WON_BACK)).sum();
-    won_back + worst.get(3).copied().unwrap_or(0.0)
-}
-
 /// Which prediction a datum is held against where something is swapped in the notes.
 #[derive(Clone, Copy, Debug, PartialEq)]
 enum Against {

@@ -47,12 +47,14 @@ pub fn key(network: u64, theta: &Params) -> u64 {
 
 /// Key of a text.
 pub fn text_key(text: &str) -> u64 {
-    text.bytes().fold(0x9E37_79B9_7F4A_7C15, |h, b| mix(h, u64::from(b)))
+    text.bytes()
+        .fold(0x9E37_79B9_7F4A_7C15, |h, b| mix(h, u64::from(b)))
 }
 
 /// One round of a multiply-and-fold hash.
 fn mix(h: u64, v: u64) -> u64 {
-    let wide = u128::from(h ^ v.rotate_left(23)) * 0x9E37_79B9_7F4A_7C15_F39C_C060_5CED_C835_u128;
+    let wide =
+        u128::from(h ^ v.rotate_left(23)).wrapping_mul(0x9E37_79B9_7F4A_7C15_F39C_C060_5CED_C835);
     (wide as u64) ^ ((wide >> 64) as u64)
 }
 

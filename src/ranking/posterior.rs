@@ -3,7 +3,7 @@
 
 use super::belief::Belief;
 use super::datum::Data;
-use super::likelihood::{Fit, behind, fit, not_listed};
+use super::likelihood::{Fit, fit, not_listed};
 use super::node::{Node, nodes};
 use super::pairs::{self, Alone, Candidate};
 use super::predict::{Bench, CELLS, Prediction};
@@ -95,7 +95,7 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
         .iter()
         .filter(|f| f.id != FaultId::NotListed)
         .collect();
-    let mut first: Vec<First> = Vec::new();
+    let mut held: Vec<Held> = Vec::new();
     let mut priors = vec![f64::NEG_INFINITY; catalogue.len()];
     let sound = sound(bench, data);
     for (cause, fault) in catalogue.iter().enumerate() {
@@ -105,14 +105,14 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
             let p = bench.predict(fault, &node, data, &[]);
             if p.steepness() > STEEP {
                 for part in node.thirds() {
-                    first.push(First::new(cause, part, bench.predict(fault, &part, data, &[]), data));
+                    let p = bench.predict(fault, &part, data, &[]);
+                    held.extend(hold(cause, part, &p, data, swap));
                 }
             } else {
-                first.push(First::new(cause, node, p, data));
+                held.extend(hold(cause, node, &p, data, swap));
             }
         }
     }
-    let mut held = worth_a_fit(first, &priors, data, swap);
     let mut change = settle(bench, data, &catalogue, &priors, &mut held, swap);
     let singles = catalogue.len();
     let mut second: Vec<Option<FaultId>> = vec![None; singles];
@@ -220,44 +220,6 @@ fn shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
         out[h.cause] += math::exp(l - total);
     }
     out
-}
-
-/// A node as first predicted, and how far at the least it lies behind.
-struct First {
-    cause: usize,
-    node: Node,
-    prediction: Prediction,
-    behind: f64,
-}
-
-impl First {
-    fn new(cause: usize, node: Node, prediction: Prediction, data: &Data) -> First {
-        First {
-            cause,
-            node,
-            behind: behind(data, &prediction) - node.log_weight,
-            prediction,
-        }
-    }
-}
-
-/// How far (natural log) a node may lie behind the foremost and still be fitted. What lies further carries less than one part in
-/// 10¹³, whatever is wrong with the notes.
-const TOO_FAR: f64 = 30.0;
-
-/// Fits the nodes that can carry weight, and of every cause the foremost.
-fn worth_a_fit(first: Vec<First>, priors: &[f64], data: &Data, swap: f64) -> Vec<Held> {
-    let place = |f: &First| priors[f.cause] - f.behind;
-    let mut own = vec![f64::NEG_INFINITY; priors.len()];
-    for f in &first {
-        own[f.cause] = own[f.cause].max(place(f));
-    }
-    let foremost = own.iter().copied().fold(f64::NEG_INFINITY, f64::max);
-    first
-        .into_iter()
-        .filter(|f| place(f) > foremost - TOO_FAR || place(f) >= own[f.cause])
-        .filter_map(|f| hold(f.cause, f.node, &f.prediction, data, swap))
-        .collect()
 }
 
 /// Linearises what carries weight again until the shares stand still; returns their last change.

@@ -241,7 +241,8 @@ impl Bench {
             let k = k.as_mut()?;
             for p in wants {
                 if !k.ports.iter().any(|(q, _)| q == p) {
-                    k.ports.push((*p, self.shown(node, condition, theta, &k.solution, *p)?));
+                    k.ports
+                        .push((*p, self.shown(node, condition, theta, &k.solution, *p)?));
                 }
             }
             Some(Shows {

@@ -137,7 +137,11 @@ fn ensemble(bench: &Bench, data: &Data, readings: &[Reading], new: &[&Reading]) 
                 continue;
             }
             let shown = bench.values(healthy, &node, c, &u);
-            for (i, r) in new.iter().enumerate().filter(|(i, _)| condition_of[*i] == c) {
+            for (i, r) in new
+                .iter()
+                .enumerate()
+                .filter(|(i, _)| condition_of[*i] == c)
+            {
                 match shown
                     .as_ref()
                     .and_then(|list| list.iter().find(|(p, _)| *p == r.port))
