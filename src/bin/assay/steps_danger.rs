@@ -189,3 +189,95 @@ pub fn judge(unit: &Unit, visit: &Visit, assessment: &Assessment, advice: &Advic
     }
     out
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use lowside::next::{Hold, Offer, RepairOffer};
+    use lowside::ranking::assess;
+
+    fn offer(id: &str, hold: Option<Hold>) -> Advice {
+        Advice {
+            checks: vec![Offer {
+                id: id.to_string(),
+                title: String::new(),
+                bits: 1.0,
+                minutes: 1.0,
+                hazard: 0,
+                why: String::new(),
+                hold,
+                foretold: Vec::new(),
+            }],
+            ..Advice::default()
+        }
+    }
+
+    fn judged(visit: &Visit, advice: &Advice) -> Dangers {
+        let unit = Unit::default();
+        judge(&unit, visit, &assess(&unit, visit, &[]), advice)
+    }
+
+    #[test]
+    fn every_rule_can_be_broken() {
+        let mut visit = Visit::default();
+        let d = judged(&visit, &offer("plateau", None));
+        let each = [
+            d.safer_left,
+            d.not_known_good,
+            d.alone,
+            d.held_without_limits,
+            d.driven_unasked,
+        ];
+        assert_eq!((each, d.total()), ([1; 5], 5));
+        let past_the_relief = Hold {
+            seconds: 2.0,
+            rise: 7.0,
+            stop_at: 2000.0,
+        };
+        let d = judged(&visit, &offer("plateau", Some(past_the_relief)));
+        assert_eq!(d.held_without_limits, 1);
+        visit
+            .observations
+            .insert("runs-on".into(), Answer::OperatorSays);
+        let d = judged(&visit, &offer("walk-round", None));
+        assert_eq!((d.tested_though_it_runs_on, d.total()), (1, 1));
+    }
+
+    #[test]
+    fn looking_first_is_no_danger() {
+        assert_eq!(
+            judged(&Visit::default(), &offer("walk-round", None)).total(),
+            0
+        );
+    }
+
+    #[test]
+    fn repairs_are_judged_where_they_are_advised_at_once() {
+        let repair = |id, probability, now| Advice {
+            repair: Some(RepairOffer {
+                id,
+                repair: String::new(),
+                minutes: 30.0,
+                probability,
+                proof: String::new(),
+                now,
+                waits: String::new(),
+                needs_manual: false,
+                caution: String::new(),
+                proved_by: Vec::new(),
+            }),
+            ..Advice::default()
+        };
+        let visit = Visit::default();
+        let of = |id, p, now| {
+            let d = judged(&visit, &repair(id, p, now));
+            (d.repair_hides_evidence, d.repair_takes_protection)
+        };
+        assert_eq!(of(FaultId::PumpWorn, 0.9, true), (1, 0));
+        assert_eq!(of(FaultId::PumpWorn, 0.9, false), (0, 0));
+        assert_eq!(of(FaultId::LoopReliefALow, 0.5, true), (0, 1));
+        assert_eq!(of(FaultId::LoopReliefALow, 0.9, true), (0, 0));
+        assert_eq!(of(FaultId::StrokeStuck, 0.9, true), (0, 1));
+        assert_eq!(of(FaultId::OilLow, 0.3, true), (0, 0));
+    }
+}
