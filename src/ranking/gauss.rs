@@ -140,13 +140,11 @@ impl Whitener {
     /// L⁻¹·x.
     pub fn apply(&self, x: &[f64]) -> Vec<f64> {
         let n = self.n;
-        let mut out = vec![0.0; n];
-        for i in 0..n {
-            let mut s = x[i];
-            for k in 0..i {
-                s -= self.factor[i * n + k] * out[k];
-            }
-            out[i] = s / self.factor[i * n + i];
+        let mut out: Vec<f64> = Vec::with_capacity(n);
+        for (i, x) in x.iter().enumerate().take(n) {
+            let row = &self.factor[i * n..(i + 1) * n];
+            let before: f64 = row.iter().zip(&out).map(|(l, o)| l * o).sum();
+            out.push((x - before) / row[i]);
         }
         out
     }

@@ -2,7 +2,6 @@
 //! Prints and asserts nothing about time, so it only runs when asked for.
 
 use serde_json::json;
-use thirtyfour::prelude::*;
 
 use crate::rig::{PHONE, Rig};
 
