@@ -25,6 +25,9 @@ pub struct Belief {
     pub pairs: f64,
     /// Most pairs that are solved, after all were compared by superposing their effects.
     pub pairs_solved: usize,
+    /// How much better (natural log) a pair must explain the readings than either of its causes alone to be weighed at all: that
+    /// something else is broken too, and shows in nothing, is no news.
+    pub pairs_better: f64,
 }
 
 impl Default for Belief {
@@ -42,6 +45,7 @@ impl Default for Belief {
             rounds: 2,
             pairs: 1.0,
             pairs_solved: 20,
+            pairs_better: 1.0,
         }
     }
 }

@@ -48,8 +48,6 @@ const COARSE: usize = 6;
 /// How far behind the best single cause (natural log) the best pair may lie by superposition, base rates counted, and still be
 /// solved.
 const WORTH: f64 = 3.0;
-/// How much better (natural log) a pair must explain the readings than either of its causes alone.
-const BETTER: f64 = 1.0;
 /// Square of a whitened residual beyond which it is one wrong reading and not many causes.
 const CLIP: f64 = 12.0;
 
@@ -228,7 +226,7 @@ pub fn candidates(
             let log = math::ln_sum_exp(&logs)
                 + thin(&coarse[a], &nodes_of[a])
                 + thin(&coarse[b], &nodes_of[b]);
-            if log < single[a].max(single[b]) + BETTER {
+            if log < single[a].max(single[b]) + data.belief.pairs_better {
                 continue;
             }
             let prior = math::ln(rate(&data.belief, causes[a], causes[b]).max(1e-12));
