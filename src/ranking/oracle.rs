@@ -222,6 +222,14 @@ fn the_integral_agrees_with_a_large_ensemble() {
         (FaultId::NeutralReliefLow, 2),
         (FaultId::PumpWorn, 4),
         (FaultId::Healthy, 4),
+        (FaultId::MotorWorn, 8),
+        (FaultId::CheckALeaking, 8),
+        (FaultId::InletRestricted, 5),
+        (FaultId::ServoLeak, 6),
+        (FaultId::ConsumerLeak, 5),
+        (FaultId::OperatingReliefLow, 5),
+        (FaultId::LoopReliefBLow, 7),
+        (FaultId::InputDriveSlipping, 8),
     ];
     let mut distances = Vec::new();
     let mut same_leader = 0;
