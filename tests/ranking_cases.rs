@@ -200,3 +200,60 @@ fn what_came_before_in_a_session_does_not_change_the_answer() {
         }
     }
 }
+
+#[test]
+fn two_causes_are_shown_as_a_pair_with_what_each_explains() {
+    let held = |d, s| {
+        condition(
+            Doing::Held,
+            d,
+            Lever::Share(s),
+            Measured(base(1500.0, lowside::quantity::Kind::RotationalSpeed)),
+        )
+    };
+    // A charge pump that gives way at low idle, and a cartridge that leaks in one direction only: no one part does both.
+    let v = visit(vec![
+        reading("c-low", Port::Charge, neutral(LowIdle), 18.1),
+        reading("c-high", Port::Charge, neutral(HighIdle), 24.1),
+        reading("r-low", Port::ReturnFlow, neutral(LowIdle), 3.3),
+        reading("r-high", Port::ReturnFlow, neutral(HighIdle), 22.0),
+        reading("f5", Port::LoopA, held(Forward, 0.05), 42.0),
+        reading("f10", Port::LoopA, held(Forward, 0.1), 92.0),
+        reading("f20", Port::LoopA, held(Forward, 0.2), 232.0),
+        reading("r5", Port::LoopB, held(Reverse, 0.05), 166.0),
+        reading("r10", Port::LoopB, held(Reverse, 0.1), 322.0),
+    ]);
+    let a = assess(&roller(), &v, &[]);
+    print(&a);
+    let lead = &a.causes[0];
+    assert_eq!(
+        lead.ids,
+        [FaultId::ChargePumpWorn, FaultId::CheckALeaking],
+        "{:?}",
+        lead.ids
+    );
+    let pair = lead.pair.as_ref().expect("a pair");
+    assert!(pair.explains[0].contains(&"c-low".to_string()), "{pair:?}");
+    assert!(pair.explains[1].contains(&"f10".to_string()), "{pair:?}");
+    assert!(!pair.explains[0].contains(&"f10".to_string()), "{pair:?}");
+    let sum: f64 = a.causes.iter().map(|c| c.probability).sum();
+    assert!((sum - 1.0).abs() < 1e-9, "{sum}");
+}
+
+#[test]
+fn one_cause_that_explains_everything_is_not_paired() {
+    let v = visit(vec![
+        reading("c-low", Port::Charge, neutral(LowIdle), 18.1),
+        reading("c-high", Port::Charge, neutral(HighIdle), 24.1),
+        reading("r-low", Port::ReturnFlow, neutral(LowIdle), 3.3),
+        reading("r-high", Port::ReturnFlow, neutral(HighIdle), 22.0),
+    ]);
+    let a = assess(&roller(), &v, &[]);
+    let paired: f64 = a
+        .causes
+        .iter()
+        .filter(|c| c.pair.is_some())
+        .map(|c| c.probability)
+        .sum();
+    assert!(paired < 0.1, "{paired}");
+}

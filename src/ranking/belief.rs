@@ -25,8 +25,8 @@ pub struct Belief {
     pub pairs: f64,
     /// Most pairs that are solved, after all were compared by superposing their effects.
     pub pairs_solved: usize,
-    /// How much better (natural log) a pair must explain the readings than either of its causes alone to be weighed at all: that
-    /// something else is broken too, and shows in nothing, is no news.
+    /// How much better (natural log) a pair must explain the readings than either of its causes alone to be weighed at all, where
+    /// pairs are as rare as usual: that something else is broken too, and shows in nothing, is no news.
     pub pairs_better: f64,
 }
 

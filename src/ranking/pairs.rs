@@ -18,6 +18,8 @@ pub struct Alone<'a> {
     pub node: Node,
     /// Predicted data on their transformed scales.
     pub mean: &'a [f64],
+    /// Their change across its severity cell, a standard deviation.
+    pub cell: &'a [f64],
 }
 
 /// Two causes at once, with the nodes that are worth solving.
@@ -49,7 +51,7 @@ const COARSE: usize = 6;
 /// solved.
 const WORTH: f64 = 3.0;
 /// Square of a whitened residual beyond which it is one wrong reading and not many causes.
-const CLIP: f64 = 12.0;
+const CLIP: f64 = 40.0;
 
 /// Base rate of a pair per hundred calls: two independent troubles, or one dirt that wore two parts.
 pub fn rate(belief: &Belief, a: &Fault, b: &Fault) -> f64 {
@@ -83,8 +85,9 @@ pub fn apart(a: &Fault, b: &Fault) -> bool {
 /// Residuals and effects without correlation.
 struct White {
     residual: Vec<f64>,
-    /// For each node alone: its effect; none where the healthy machine of its build was not predicted.
-    effects: Vec<Option<Vec<f64>>>,
+    /// For each node alone: its effect and the change across its severity cell; none where the healthy machine of its build was
+    /// not predicted.
+    effects: Vec<Option<[Vec<f64>; 2]>>,
 }
 
 fn white(data: &Data, sound: &[(Node, Prediction)], alone: &[Alone]) -> Option<White> {
@@ -125,20 +128,36 @@ fn white(data: &Data, sound: &[(Node, Prediction)], alone: &[Alone]) -> Option<W
         residual: pick(&|k| data.data[k].t - healthy.mean[k]),
         effects: alone
             .iter()
-            .map(|a| reference(&a.node).map(|r| pick(&|k| a.mean[k] - r.1.mean[k])))
+            .map(|a| {
+                reference(&a.node)
+                    .map(|r| [pick(&|k| a.mean[k] - r.1.mean[k]), pick(&|k| a.cell[k])])
+            })
             .collect(),
     })
 }
 
 impl White {
-    /// Log density of the readings (up to a constant) with the effects of one or two nodes superposed.
-    fn log(&self, a: &[f64], b: Option<&[f64]>) -> f64 {
-        let mut square = 0.0;
-        for (i, r) in self.residual.iter().enumerate() {
-            let z = r - a[i] - b.map_or(0.0, |b| b[i]);
-            square += (z * z).min(CLIP);
+    /// Log density of the readings (up to a constant) with the effects of one or two nodes superposed, each free to move within
+    /// its severity cell.
+    fn log(&self, nodes: &[&[Vec<f64>; 2]]) -> f64 {
+        let mut z = self.residual.clone();
+        for [effect, _] in nodes {
+            for (z, e) in z.iter_mut().zip(effect) {
+                *z -= e;
+            }
         }
-        -0.5 * square
+        let mut log = 0.0;
+        for [_, cell] in nodes {
+            let own: f64 = cell.iter().map(|c| c * c).sum();
+            let along: f64 = z.iter().zip(cell).map(|(z, c)| z * c).sum();
+            // The cell ends at its walls, √3 standard deviations from its middle.
+            let shift = (along / (1.0 + own)).clamp(-(3f64.sqrt()), 3f64.sqrt());
+            for (z, c) in z.iter_mut().zip(cell) {
+                *z -= shift * c;
+            }
+            log -= 0.5 * shift * shift + 0.5 * math::ln(1.0 + own);
+        }
+        log - 0.5 * z.iter().map(|z| (z * z).min(CLIP)).sum::<f64>()
     }
 }
 
@@ -184,7 +203,7 @@ pub fn candidates(
                 .iter()
                 .filter_map(|i| {
                     let effect = white.effects[*i].as_ref()?;
-                    Some(weight(*i) + white.log(effect, None))
+                    Some(weight(*i) + white.log(&[effect]))
                 })
                 .collect();
             math::ln_sum_exp(&logs)
@@ -204,8 +223,10 @@ pub fn candidates(
         let (e, f) = (white.effects[a].as_ref()?, white.effects[b].as_ref()?);
         let share = builds.get(x.build).map_or(1.0, |b| b.share).max(1e-9);
         let log_weight = weight(a) + weight(b) - math::ln(share);
-        Some((log_weight, log_weight + white.log(e, Some(f))))
+        Some((log_weight, log_weight + white.log(&[e, f])))
     };
+    // The rarer pairs are, the better one must explain the readings.
+    let better = data.belief.pairs_better - math::ln(data.belief.pairs);
     let mut ranked: Vec<(f64, usize, usize)> = Vec::new();
     for a in 0..causes.len() {
         for b in a + 1..causes.len() {
@@ -226,7 +247,7 @@ pub fn candidates(
             let log = math::ln_sum_exp(&logs)
                 + thin(&coarse[a], &nodes_of[a])
                 + thin(&coarse[b], &nodes_of[b]);
-            if log < single[a].max(single[b]) + data.belief.pairs_better {
+            if log < single[a].max(single[b]) + better {
                 continue;
             }
             let prior = math::ln(rate(&data.belief, causes[a], causes[b]).max(1e-12));

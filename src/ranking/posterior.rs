@@ -54,8 +54,9 @@ struct Held {
     log_weight: f64,
     fit: Fit,
     mean: Vec<f64>,
-    /// As first predicted, in the middle of the scatter.
+    /// As first predicted, in the middle of the scatter, and the change across the severity cell.
     first: Vec<f64>,
+    cell: Vec<f64>,
 }
 
 /// A node that carries weight: what the next check is chosen over.
@@ -281,6 +282,7 @@ fn pairs_of(
             fault: catalogue[h.cause],
             node: h.node,
             mean: &h.first,
+            cell: &h.cell,
         })
         .collect();
     pairs::candidates(data, &bench.builds, sound, &alone)
@@ -294,6 +296,7 @@ fn hold(cause: usize, node: Node, p: &Prediction, data: &Data, swap: f64) -> Opt
         fit,
         mean: p.mean.clone(),
         first: p.mean.clone(),
+        cell: p.across_cell(),
     })
 }
 

@@ -72,11 +72,18 @@ const LOOSE: f64 = 1.0;
 impl Prediction {
     /// Largest change of any datum (transformed scale) from the middle of the severity cell to its wall.
     pub fn steepness(&self) -> f64 {
-        self.rows
-            .chunks(self.columns)
-            .filter_map(|row| row.get(self.columns - CELLS))
+        self.across_cell()
+            .iter()
             .fold(0.0, |most: f64, r| most.max(r.abs()))
             * 3f64.sqrt()
+    }
+
+    /// Change of every datum (transformed scale) across the severity cell of the first cause, a standard deviation.
+    pub fn across_cell(&self) -> Vec<f64> {
+        self.rows
+            .chunks(self.columns)
+            .filter_map(|row| row.get(self.columns - CELLS).copied())
+            .collect()
     }
 }
 

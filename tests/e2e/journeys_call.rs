@@ -80,10 +80,10 @@ async fn a_road_call_from_nothing_to_a_cause_and_on_without_a_server() {
     }
     let low_idle = low_idle.unwrap_or_else(|| panic!("no reading at low idle: {rows}"));
     // The strip at the top shows it without a scroll.
-    rig.wait_for_text("Charge oil goes astray").await;
+    rig.wait_for_text("Charge relief held off its seat").await;
     rig.wait_until(
         "with its probability",
-        r"/Charge oil goes astray[\s\S]{0,20}\d+\s?%/.test(document.body.innerText)",
+        r"/Charge relief held off its seat[\s\S]{0,20}\d+\s?%/.test(document.body.innerText)",
     )
     .await;
     // Every window says where it comes from, and the advice has come.
@@ -117,12 +117,12 @@ async fn a_road_call_from_nothing_to_a_cause_and_on_without_a_server() {
         kept.starts_with("130.5"),
         "what was typed stands as it was typed: {kept}"
     );
-    rig.wait_for_text("Charge oil goes astray").await;
+    rig.wait_for_text("Charge relief held off its seat").await;
 
     type_value(&rig, low_idle, "290 psi").await;
     rig.wait_until(
         "the ranking follows the reading",
-        "!document.body.innerText.includes('Charge oil goes astray')",
+        "!/Leading cause, [^:]*: Charge relief held off its seat/.test(document.body.innerText)",
     )
     .await;
 }
