@@ -242,7 +242,7 @@ fn the_integral_agrees_with_a_large_ensemble() {
         let weighed = weigh(&bench, &data, SideNaming::Known).causes;
         let mut listed: Vec<_> = weighed
             .iter()
-            .filter(|w| w.id != FaultId::NotListed)
+            .filter(|w| w.id != FaultId::NotListed && w.with.is_none())
             .collect();
         listed.sort_by(|a, b| {
             (b.log_prior + b.log_likelihood).total_cmp(&(a.log_prior + a.log_likelihood))
