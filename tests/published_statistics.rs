@@ -110,8 +110,8 @@ fn printed_posteriors_of_a_test() {
         (0.06, 0.90, 0.10, 0.364_86, 1e-5, "disease test"),
         // Found: medical-test article, sensitivity 0.93, specificity 0.96, printed 19 %.
         (0.01, 0.93, 0.04, 0.190_18, 1e-4, "medical test"),
-        // Inputs found in lecture notes, answer derived: sensitivity 0.99, specificity 0.85.
-        (0.03, 0.99, 0.15, 0.169_52, 1e-5, "lecture notes"),
+        // Inputs found in course notes, answer derived: sensitivity 0.99, specificity 0.85.
+        (0.03, 0.99, 0.15, 0.169_52, 1e-5, "course notes"),
     ] {
         let priors = [prior, 1.0 - prior];
         let (out, _) = next::yes_or_no(&[under, without], &priors);
