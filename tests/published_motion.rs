@@ -126,7 +126,7 @@ fn chain_of_poses() {
     }
 }
 
-/// H10: limits of H4, lecture note.
+/// H10: limits of H4, course notes.
 #[test]
 fn limits_of_the_turn() {
     let sides = |left, right| TwoSides {
