@@ -137,7 +137,6 @@ pub fn nodes(fault: &Fault, builds: &[Build], belief: &Belief) -> (Vec<Node>, f6
         .collect();
     let total: f64 = masses.iter().sum();
     let rate = belief.rate(fault);
-    let fineness = belief.fineness;
     if total <= 0.0 || rate <= 0.0 {
         return (Vec::new(), f64::NEG_INFINITY);
     }
@@ -163,7 +162,8 @@ pub fn nodes(fault: &Fault, builds: &[Build], belief: &Belief) -> (Vec<Node>, f6
         for (build, mass) in masses.iter().enumerate().filter(|(_, m)| **m > 0.0) {
             let share = mass / total / effects / signs;
             let plain = effect.is_none() || fault.severity == SeverityShape::Total;
-            let n = ((fineness as f64 * share).round() as usize).clamp(3, fineness.max(3));
+            let n = ((belief.fineness as f64 * share).round() as usize)
+                .clamp(3, belief.fineness.max(3));
             for i in 0..n {
                 out.push(Node {
                     build,

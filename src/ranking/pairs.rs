@@ -227,15 +227,16 @@ pub fn candidates(
     };
     // The rarer pairs are, the better one must explain the readings.
     let better = data.belief.pairs_better - math::ln(data.belief.pairs);
+    let thin = |list: &[usize], all: &[usize]| {
+        math::ln(all.len().max(1) as f64 / list.len().max(1) as f64)
+    };
+    let prior = |a: usize, b: usize| math::ln(rate(&data.belief, causes[a], causes[b]).max(1e-12));
     let mut ranked: Vec<(f64, usize, usize)> = Vec::new();
     for a in 0..causes.len() {
         for b in a + 1..causes.len() {
             if !apart(causes[a], causes[b]) {
                 continue;
             }
-            let thin = |list: &[usize], all: &[usize]| {
-                math::ln(all.len().max(1) as f64 / list.len().max(1) as f64)
-            };
             let logs: Vec<f64> = coarse[a]
                 .iter()
                 .flat_map(|i| coarse[b].iter().map(move |j| (*i, *j)))
@@ -250,8 +251,7 @@ pub fn candidates(
             if log < single[a].max(single[b]) + better {
                 continue;
             }
-            let prior = math::ln(rate(&data.belief, causes[a], causes[b]).max(1e-12));
-            ranked.push((prior + log, a, b));
+            ranked.push((prior(a, b) + log, a, b));
         }
     }
     ranked.sort_by(|x, y| y.0.total_cmp(&x.0).then((x.1, x.2).cmp(&(y.1, y.2))));
@@ -288,7 +288,7 @@ pub fn candidates(
                 .collect();
             Candidate {
                 faults: [causes[a], causes[b]],
-                log_prior: math::ln(rate(&data.belief, causes[a], causes[b]).max(1e-12)),
+                log_prior: prior(a, b),
                 nodes,
             }
         })

@@ -51,12 +51,18 @@ pub struct Weighed {
 struct Held {
     cause: usize,
     node: Node,
-    log_weight: f64,
     fit: Fit,
     mean: Vec<f64>,
     /// As first predicted, in the middle of the scatter, and the change across the severity cell.
     first: Vec<f64>,
     cell: Vec<f64>,
+}
+
+impl Held {
+    /// Log of its share of its cause × likelihood.
+    fn log(&self) -> f64 {
+        self.node.log_weight + self.fit.log
+    }
 }
 
 /// A node that carries weight: what the next check is chosen over.
@@ -177,13 +183,13 @@ const MOST_HANDED_ON: usize = 90;
 fn heaviest(catalogue: &[&'static Fault], priors: &[f64], held: &[Held]) -> Vec<Heavy> {
     let mut best = vec![f64::NEG_INFINITY; catalogue.len()];
     for h in held {
-        best[h.cause] = best[h.cause].max(h.log_weight + h.fit.log);
+        best[h.cause] = best[h.cause].max(h.log());
     }
     let mut list: Vec<Heavy> = held
         .iter()
-        .filter(|h| h.log_weight + h.fit.log > best[h.cause] + math::ln(COUNTS))
+        .filter(|h| h.log() > best[h.cause] + math::ln(COUNTS))
         .flat_map(|h| {
-            let log = priors[h.cause] + h.log_weight + h.fit.log;
+            let log = priors[h.cause] + h.log();
             let fault = catalogue[h.cause];
             // Two causes at once speak for either with half their weight.
             let (log, other) = match h.node.turned(fault) {
@@ -209,16 +215,21 @@ fn heaviest(catalogue: &[&'static Fault], priors: &[f64], held: &[Held]) -> Vec<
     list
 }
 
+/// Log of each node's share of all weight.
+fn node_shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
+    let mut logs: Vec<f64> = held.iter().map(|h| priors[h.cause] + h.log()).collect();
+    let total = math::ln_sum_exp(&logs);
+    for l in &mut logs {
+        *l -= total;
+    }
+    logs
+}
+
 /// Share of all weight a cause, by its nodes.
 fn shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
-    let logs: Vec<f64> = held
-        .iter()
-        .map(|h| priors[h.cause] + h.log_weight + h.fit.log)
-        .collect();
-    let total = math::ln_sum_exp(&logs);
     let mut out = vec![0.0; priors.len()];
-    for (h, l) in held.iter().zip(&logs) {
-        out[h.cause] += math::exp(l - total);
+    for (h, l) in held.iter().zip(node_shares(held, priors)) {
+        out[h.cause] += math::exp(l);
     }
     out
 }
@@ -292,7 +303,6 @@ fn hold(cause: usize, node: Node, p: &Prediction, data: &Data, swap: f64) -> Opt
     fit(data, p, &[], swap).map(|fit| Held {
         cause,
         node,
-        log_weight: node.log_weight,
         fit,
         mean: p.mean.clone(),
         first: p.mean.clone(),
@@ -309,15 +319,9 @@ fn again(
     held: &mut [Held],
     swap: f64,
 ) {
-    let logs: Vec<f64> = held
-        .iter()
-        .map(|h| priors[h.cause] + h.log_weight + h.fit.log)
-        .collect();
-    let total = math::ln_sum_exp(&logs);
-    let mut heavy: Vec<(usize, f64)> = logs
-        .iter()
+    let mut heavy: Vec<(usize, f64)> = node_shares(held, priors)
+        .into_iter()
         .enumerate()
-        .map(|(i, l)| (i, l - total))
         .filter(|(_, l)| *l > math::ln(HEAVY))
         .collect();
     heavy.sort_by(|a, b| b.1.total_cmp(&a.1).then(a.0.cmp(&b.0)));
@@ -357,7 +361,7 @@ fn collect<'a>(
 ) -> Weighed {
     let nodes: Vec<&Held> = nodes.collect();
     let n = data.data.len();
-    let logs: Vec<f64> = nodes.iter().map(|h| h.log_weight + h.fit.log).collect();
+    let logs: Vec<f64> = nodes.iter().map(|h| h.log()).collect();
     let log_likelihood = if logs.is_empty() {
         f64::NEG_INFINITY
     } else {
@@ -368,7 +372,7 @@ fn collect<'a>(
         .map(|k| {
             let terms: Vec<f64> = nodes
                 .iter()
-                .map(|h| h.log_weight + h.fit.without[k])
+                .map(|h| h.node.log_weight + h.fit.without[k])
                 .collect();
             if terms.is_empty() {
                 f64::NEG_INFINITY
