@@ -5,36 +5,7 @@ use crate::checks::{self, Check, Yield};
 use crate::observations;
 use crate::readings::{Condition, Port};
 use crate::record::{Answer, Visit};
-use crate::unit::{ChargeSource, Control, Tick, Unit};
-
-/// True where a unit can have a port at all.
-fn has_port(unit: &Unit, port: Port) -> bool {
-    let ticks = &unit.ticks;
-    match port {
-        Port::Servo => ticks.control != Control::DirectManual,
-        Port::Pilot => matches!(
-            ticks.control,
-            Control::HydraulicRemote
-                | Control::SpeedSensing
-                | Control::PressureNoFeedback
-                | Control::Unknown
-        ),
-        Port::CoilCurrent => matches!(
-            ticks.control,
-            Control::ElectricProportional
-                | Control::ThreePosition
-                | Control::PressureNoFeedback
-                | Control::Unknown
-        ),
-        Port::Release => ticks.brake_from_charge != Tick::No,
-        Port::Shift => ticks.two_speed != Tick::No,
-        Port::InletPull => !matches!(
-            ticks.charge_source,
-            ChargeSource::Steering | ChargeSource::Implement
-        ),
-        _ => true,
-    }
-}
+use crate::unit::{Control, Tick, Unit};
 
 /// The port that a reading's instrument stands on: the knee is read on the charge gauge.
 fn stands_on(port: Port) -> Port {
@@ -74,7 +45,7 @@ pub fn open_readings(unit: &Unit, visit: &Visit, check: &Check) -> Vec<Yield> {
     check
         .yields
         .iter()
-        .filter(|y| has_port(unit, y.port))
+        .filter(|y| unit.ticks.may_have(y.port))
         // Slip is counted without opening a port; charge is read along where its gauge is on.
         .filter(|y| {
             !(check.id == "slip-light-to-loaded" && y.port == Port::Charge)
@@ -117,8 +88,8 @@ pub fn possible(unit: &Unit, visit: &Visit, check: &Check) -> bool {
     let fits = match check.id {
         "pull-the-shuttle" => ticks.flushing != Tick::No,
         "roll-by-hand" => ticks.bypass != Tick::No,
-        "coil-current" | "swap-plugs" => has_port(unit, Port::CoilCurrent),
-        "bridge-the-servo" => ticks.control != Control::DirectManual,
+        "coil-current" | "swap-plugs" => ticks.may_have(Port::CoilCurrent),
+        "bridge-the-servo" => ticks.may_have(Port::Servo),
         "stroke-arm-by-hand" => matches!(
             ticks.control,
             Control::DirectManual | Control::ManualFeedback | Control::Unknown

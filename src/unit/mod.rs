@@ -2,11 +2,13 @@
 
 mod class;
 mod figure;
+mod fitted;
 mod profile;
 mod ticks;
 
 pub use class::{ClassPractice, MachineClass, Spread};
 pub use figure::{FIGURES, Figure, FigureAsk, FigureId, Source};
+pub use fitted::Fitted;
 pub use profile::{ManualWindow, PortNote, Unit};
 pub use ticks::{
     CaseLines, ChargeSource, Control, Filter, LoopReliefTo, ReliefDrain, Shuttle, Tick, Ticks,

@@ -2,7 +2,6 @@
 
 use super::change::Change;
 use super::condition_editor::ConditionEditor;
-use super::map::ports;
 use super::words;
 use crate::app::parts::{Icon, Shape};
 use crate::quantity::{Kind, UnitPrefs};
@@ -102,8 +101,8 @@ pub fn AddPanel(props: &AddPanelProps) -> Html {
 }
 
 fn port_group(title: &str, kinds: &[Kind], ticks: &Ticks, on_port: &Callback<Port>) -> Html {
-    let offered: Vec<Port> = ports(ticks)
-        .into_iter()
+    let offered: Vec<Port> = ticks
+        .ports()
         .filter(|port| kinds.contains(&port.kind()))
         .collect();
     if offered.is_empty() {

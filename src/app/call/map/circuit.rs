@@ -1,8 +1,9 @@
 //! The drawing of the loop itself: lines and symbols, from what the unit is said to have.
 
-use super::plan::{self, Fitted};
+use super::plan;
 use super::symbols::{self, at};
-use crate::unit::{CaseLines, ChargeSource, Filter, ReliefDrain, Shuttle, Tick, Ticks};
+use crate::readings::Port;
+use crate::unit::{CaseLines, ChargeSource, Filter, Fitted, ReliefDrain, Shuttle, Tick, Ticks};
 use yew::{Html, html};
 
 /// Everything but the ports. Hidden from screen readers: the ports say what matters.
@@ -32,7 +33,7 @@ fn query(fitted: Fitted, x: f64, y: f64) -> Html {
 fn part(fitted: Fitted, inside: Html) -> Html {
     match fitted {
         Fitted::No => Html::default(),
-        fitted => html! { <g class={fitted.class()}>{ inside }</g> },
+        fitted => html! { <g class={plan::class(fitted)}>{ inside }</g> },
     }
 }
 
@@ -54,7 +55,7 @@ fn loop_lines() -> Html {
 }
 
 fn pump(ticks: &Ticks) -> Html {
-    let servo = plan::servo(ticks.control);
+    let servo = ticks.port(Port::Servo);
     html! { <>
         <path d="M48 193H82M48 199H82" class="line" />
         { at(30.0, 196.0, symbols::engine()) }
@@ -129,7 +130,7 @@ fn charge(ticks: &Ticks) -> Html {
         if to_tank {
             <path d="M144 481V590" class="line" />
         } else {
-            <g class={drain_known.class()}>
+            <g class={plan::class(drain_known)}>
                 <path d="M144 481V506H46" class="line" />
                 <circle cx="46" cy="506" r="3" class="solid" />
             </g>

@@ -10,9 +10,8 @@ use super::taken::Taken;
 use super::words;
 use crate::assessment::{Assessment, Standing};
 use crate::readings::Port;
-use crate::unit::Ticks;
-pub use plan::ports;
-use plan::{Fitted, Label, Spot};
+use crate::unit::{Fitted, Ticks};
+use plan::{Label, Spot};
 use yew::{Callback, Html, KeyboardEvent, MouseEvent, Properties, component, html, use_state};
 
 /// Half the width of the touch area round a port, units of the drawing: 44 px or more on a phone 360 px wide.
@@ -238,7 +237,7 @@ fn port(spot: &Spot, state: PortState, is_chosen: bool, on_port: &Callback<Port>
     html! {
         <g
             key={format!("{port:?}")}
-            class={format!("port {}{}", spot.fitted.class(), if is_chosen { " is-chosen" } else { "" })}
+            class={format!("port {}{}", plan::class(spot.fitted), if is_chosen { " is-chosen" } else { "" })}
             transform={format!("translate({} {})", spot.x, spot.y)}
             role="button"
             tabindex="0"
