@@ -65,14 +65,6 @@ fn a_relief_held_open_keeps_the_return_normal() {
 
 #[test]
 fn a_weak_forward_direction_points_at_one_cartridge() {
-    let held = |d, s| {
-        condition(
-            Doing::Held,
-            d,
-            Lever::Share(s),
-            Measured(base(1500.0, lowside::quantity::Kind::RotationalSpeed)),
-        )
-    };
     let v = visit(vec![
         reading("c", Port::Charge, neutral(HighIdle), 24.6),
         reading("f5", Port::LoopA, held(Forward, 0.05), 42.0),
@@ -92,15 +84,6 @@ fn a_weak_forward_direction_points_at_one_cartridge() {
 
 #[test]
 fn a_healthy_machine_is_called_healthy_when_it_is() {
-    let held = |d, s| {
-        condition(
-            Doing::Held,
-            d,
-            Lever::Share(s),
-            Measured(base(1500.0, lowside::quantity::Kind::RotationalSpeed)),
-        )
-    };
-    let free = |d| condition(Doing::Free, d, Lever::Half, HighIdle);
     let v = visit(vec![
         reading("c-low", Port::Charge, neutral(LowIdle), 23.4),
         reading("c-high", Port::Charge, neutral(HighIdle), 24.9),
@@ -136,18 +119,8 @@ fn a_quick_profile_is_enough_for_a_charge_side_fault() {
             reading("pump case", Port::PumpCase, neutral(HighIdle), 0.5),
             reading("motor case", Port::MotorCase, neutral(HighIdle), 0.7),
             reading("drain", Port::MotorDrain, neutral(HighIdle), 0.6),
-            reading(
-                "f",
-                Port::Charge,
-                condition(Doing::Free, Forward, Lever::Half, HighIdle),
-                20.5,
-            ),
-            reading(
-                "r",
-                Port::Charge,
-                condition(Doing::Free, Reverse, Lever::Half, HighIdle),
-                20.5,
-            ),
+            reading("f", Port::Charge, free(Forward), 20.5),
+            reading("r", Port::Charge, free(Reverse), 20.5),
         ])
     };
     let a = assess(&unit, &call(9.0), &[]);
@@ -203,14 +176,6 @@ fn what_came_before_in_a_session_does_not_change_the_answer() {
 
 #[test]
 fn two_causes_are_shown_as_a_pair_with_what_each_explains() {
-    let held = |d, s| {
-        condition(
-            Doing::Held,
-            d,
-            Lever::Share(s),
-            Measured(base(1500.0, lowside::quantity::Kind::RotationalSpeed)),
-        )
-    };
     // A charge pump that gives way at low idle, and a cartridge that leaks in one direction only: no one part does both.
     let v = visit(vec![
         reading("c-low", Port::Charge, neutral(LowIdle), 18.1),

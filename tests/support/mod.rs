@@ -95,6 +95,17 @@ pub fn neutral(engine: EngineSpeed) -> Condition {
     condition(Doing::Neutral, Direction::Forward, Lever::Full, engine)
 }
 
+/// Wheels held, the lever at a share of its travel, 1500 rpm measured.
+pub fn held(direction: Direction, share: f64) -> Condition {
+    let engine = EngineSpeed::Measured(base(1500.0, Kind::RotationalSpeed));
+    condition(Doing::Held, direction, Lever::Share(share), engine)
+}
+
+/// Wheels free at half lever and high idle.
+pub fn free(direction: Direction) -> Condition {
+    condition(Doing::Free, direction, Lever::Half, EngineSpeed::HighIdle)
+}
+
 /// A steady reading.
 pub fn reading(id: &str, port: Port, condition: Condition, value: f64) -> Reading {
     Reading {

@@ -1,7 +1,6 @@
 //! Cases whose ranking must come out the same natively and in wasm, and the file that holds what came out.
 
 use super::*;
-use lowside::quantity::Kind;
 use lowside::ranking::assess;
 use lowside::readings::{Direction::*, EngineSpeed::*};
 use lowside::record::Answer;
@@ -18,15 +17,6 @@ pub struct Ranked {
 
 /// Sharp, vague, contradictory and nearly empty calls.
 pub fn cases() -> Vec<(&'static str, lowside::unit::Unit, Visit)> {
-    let held = |d, s| {
-        condition(
-            Doing::Held,
-            d,
-            Lever::Share(s),
-            Measured(base(1500.0, Kind::RotationalSpeed)),
-        )
-    };
-    let free = |d| condition(Doing::Free, d, Lever::Half, HighIdle);
     let worn = visit(vec![
         reading("a", Port::Charge, neutral(LowIdle), 18.1),
         reading("b", Port::Charge, neutral(HighIdle), 24.1),
