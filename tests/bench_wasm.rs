@@ -47,15 +47,21 @@ fn speed_in_wasm() {
     for (words, known) in [("a known condition", true), ("a new condition", false)] {
         let more = work::one_more(known);
         let fresh = time(&mut || lead = work::assessment(&more));
-        let mut best = f64::INFINITY;
+        let (mut first, mut best) = (f64::INFINITY, f64::INFINITY);
         for _ in 0..3 {
             let mut session = work::session();
+            let t = js_sys::Date::now();
+            let looked = work::look(&mut session, &more);
+            first = first.min(1e-3 * (js_sys::Date::now() - t));
+            assert!(looked > 0.0 && looked <= 1.0);
             let t = js_sys::Date::now();
             lead = work::again(&mut session, &more);
             best = best.min(1e-3 * (js_sys::Date::now() - t));
         }
         console_log!(
-            "wasm: one reading more at {words}: {:.1} ms, {:.2} of a full assessment",
+            "wasm: one reading more at {words}: first look {:.1} ms, 1/{:.0} of a full assessment; the full answer after it {:.1} ms, {:.2} of one",
+            1e3 * first,
+            fresh / first,
             1e3 * best,
             best / fresh
         );

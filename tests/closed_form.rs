@@ -44,6 +44,7 @@ fn line(mean: &[f64], slope: &[f64]) -> Prediction {
         rows: slope.to_vec(),
         columns: 1,
         loose: vec![0.0; mean.len()],
+        starved: vec![false; mean.len()],
         swing: 0.0,
     }
 }

@@ -134,6 +134,9 @@ pub struct Trust {
     pub solves: u64,
     /// Probability that at least one rigging (gauge or port) is wrong.
     pub wrong_reading: f64,
+    /// A first look, over what carried the last assessment: the full one follows.
+    #[serde(default)]
+    pub first_look: bool,
     /// Reading ids that do not fit and should be taken again, with the words why.
     pub retake: Vec<(String, String)>,
 }

@@ -5,9 +5,10 @@ use super::hold::hold_time;
 use super::memo::Memo;
 use super::posterior::{Heavy, Weighed, weigh};
 use super::predict::Bench;
+use super::quick::Last;
 use super::rows::rows;
 use super::seen;
-use crate::assessment::{Assessment, Trust};
+use crate::assessment::{Assessment, Cause, Trust, Window};
 use crate::machine::{Warmth, builds, condition_latents, unit_latents};
 use crate::math;
 use crate::readings::instrument::Instrument;
@@ -30,20 +31,37 @@ pub struct Session {
     memo: Memo,
     spreads: Spreads,
     heavy: Vec<Heavy>,
+    last: Option<Last>,
 }
 
 impl Session {
     /// As [`assess`], the quicker the less has changed since the last one. The answer does not hang on what came before.
     pub fn assess(&mut self, unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessment {
-        let (assessment, heavy) = weighed(
-            unit,
-            visit,
-            instruments,
-            self.memo.clone(),
-            &mut self.spreads,
-        );
-        self.heavy = heavy;
-        assessment
+        let made = Prepared::new(unit, visit, instruments, self.memo.clone());
+        let windows = made.windows(&mut self.spreads);
+        let posterior = weigh(&made.bench, &made.data, unit.sides);
+        let answer = made.answer(windows, posterior.causes, posterior.change);
+        self.heavy = posterior.heavy;
+        let Prepared { data, bench, .. } = made;
+        self.last = Some(Last::new(unit, &visit.id, data, &bench, posterior.carried));
+        answer
+    }
+
+    /// A first look where little is new since the last assessment of this visit, for the moment until the full one is there:
+    /// close to it, and many times quicker. None where it cannot be taken.
+    pub fn look(
+        &mut self,
+        unit: &Unit,
+        visit: &Visit,
+        instruments: &[Instrument],
+    ) -> Option<Assessment> {
+        let last = self.last.as_ref().filter(|l| l.is_of(unit, &visit.id))?;
+        let made = Prepared::new(unit, visit, instruments, self.memo.clone());
+        let weighed = last.weigh(&made.bench, &made.data, unit.sides)?;
+        let windows = made.windows(&mut self.spreads);
+        let mut answer = made.answer(windows, weighed, 0.0);
+        answer.trust.first_look = true;
+        Some(answer)
     }
 
     /// The nodes that carried weight in the last assessment: what the next check is chosen over.
@@ -52,38 +70,92 @@ impl Session {
     }
 }
 
-fn weighed(
-    unit: &Unit,
-    visit: &Visit,
-    instruments: &[Instrument],
-    memo: Memo,
-    spreads: &mut Spreads,
-) -> (Assessment, Vec<Heavy>) {
-    let data = gather(unit, &visit.readings, &visit.riggings, instruments);
-    let mut latents = unit_latents(unit);
-    condition_latents(unit, &data.conditions, &mut latents);
-    let mut bench = Bench::with(builds(unit), latents, &data, memo);
-    // A window is wanted for every reading, also while nothing is typed yet.
-    for (reading, condition) in visit.readings.iter().zip(&data.condition_of) {
-        bench.want(*condition, reading.port);
+/// A visit made ready to be weighed.
+struct Prepared<'a> {
+    unit: &'a Unit,
+    visit: &'a Visit,
+    instruments: &'a [Instrument],
+    data: Data,
+    bench: Bench,
+}
+
+impl<'a> Prepared<'a> {
+    fn new(
+        unit: &'a Unit,
+        visit: &'a Visit,
+        instruments: &'a [Instrument],
+        memo: Memo,
+    ) -> Prepared<'a> {
+        let data = gather(unit, &visit.readings, &visit.riggings, instruments);
+        let mut latents = unit_latents(unit);
+        condition_latents(unit, &data.conditions, &mut latents);
+        let mut bench = Bench::with(builds(unit), latents, &data, memo);
+        // A window is wanted for every reading, also while nothing is typed yet.
+        for (reading, condition) in visit.readings.iter().zip(&data.condition_of) {
+            bench.want(*condition, reading.port);
+        }
+        Prepared {
+            unit,
+            visit,
+            instruments,
+            data,
+            bench,
+        }
     }
-    let windows = windows(
-        unit,
-        &visit.readings,
-        &visit.riggings,
-        instruments,
-        &data,
-        &bench,
-        spreads,
-    );
-    let posterior = weigh(&bench, &data, unit.sides);
-    let (mut weighed, change) = (posterior.causes, posterior.change);
-    for w in &mut weighed {
-        w.log_prior += math::ln(seen::prior_factor(visit, w.id, w.with).max(1e-6));
+
+    fn windows(&self, spreads: &mut Spreads) -> Vec<Window> {
+        windows(
+            self.unit,
+            &self.visit.readings,
+            &self.visit.riggings,
+            self.instruments,
+            &self.data,
+            &self.bench,
+            spreads,
+        )
     }
-    let observed = seen::observed(visit);
-    let words: Vec<String> = visit.readings.iter().map(words).collect();
-    let causes = rows(&weighed, &data, &visit.readings, &observed, &words);
+
+    fn answer(&self, windows: Vec<Window>, mut weighed: Vec<Weighed>, change: f64) -> Assessment {
+        let Prepared {
+            unit,
+            visit,
+            data,
+            bench,
+            ..
+        } = self;
+        for w in &mut weighed {
+            w.log_prior += math::ln(seen::prior_factor(visit, w.id, w.with).max(1e-6));
+        }
+        let observed = seen::observed(visit);
+        let words: Vec<String> = visit.readings.iter().map(words).collect();
+        let causes = rows(&weighed, data, &visit.readings, &observed, &words);
+        let mut trust = trust(visit, data, &weighed, &causes);
+        trust.trust.change = change;
+        trust.trust.solves = bench.solves.get();
+        let hold = visit
+            .readings
+            .iter()
+            .position(|r| r.condition.doing == Doing::Held)
+            .map(|i| hold_time(unit, bench.speed(0, data.condition_of[i])));
+        Assessment {
+            windows,
+            causes,
+            withheld: withheld(unit, visit, data),
+            notes: notes(unit, visit, trust.swapped),
+            trust: trust.trust,
+            hold,
+            advice: None,
+        }
+    }
+}
+
+/// How far to trust the causes, and the chance that something is swapped in the notes.
+struct Trusted {
+    trust: Trust,
+    swapped: f64,
+}
+
+fn trust(visit: &Visit, data: &Data, weighed: &[Weighed], causes: &[Cause]) -> Trusted {
     let share = |w: &Weighed| {
         causes
             .iter()
@@ -93,14 +165,10 @@ fn weighed(
                 None => member_share(c, w.id),
             })
     };
-    let mut trust = Trust {
-        change,
-        solves: bench.solves.get(),
-        ..Trust::default()
-    };
+    let mut trust = Trust::default();
     let mut swapped = 0.0;
     let mut wrong = vec![0.0; data.groups];
-    for w in &weighed {
+    for w in weighed {
         let p = share(w);
         swapped += p * w.swapped;
         for (total, own) in wrong.iter_mut().zip(&w.wrong) {
@@ -123,31 +191,17 @@ fn weighed(
             }
         }
     }
-    let hold = visit
-        .readings
-        .iter()
-        .position(|r| r.condition.doing == Doing::Held)
-        .map(|i| hold_time(unit, bench.speed(0, data.condition_of[i])));
-    let assessment = Assessment {
-        windows,
-        causes,
-        withheld: withheld(unit, visit, &data),
-        notes: notes(unit, visit, swapped),
-        trust,
-        hold,
-        advice: None,
-    };
-    (assessment, posterior.heavy)
+    Trusted { trust, swapped }
 }
 
 /// True where a row speaks of a weighed cause or pair.
-fn is_of(cause: &crate::assessment::Cause, w: &Weighed) -> bool {
+fn is_of(cause: &Cause, w: &Weighed) -> bool {
     cause.ids.contains(&w.id)
         && cause.pair.is_some() == w.with.is_some()
         && w.with.is_none_or(|with| cause.ids.contains(&with))
 }
 
-fn member_share(cause: &crate::assessment::Cause, id: crate::faults::FaultId) -> f64 {
+fn member_share(cause: &Cause, id: crate::faults::FaultId) -> f64 {
     cause
         .ids
         .iter()

@@ -7,6 +7,7 @@ use super::likelihood::{Fit, fit, not_listed};
 use super::node::{Node, nodes};
 use super::pairs::{self, Alone, Candidate};
 use super::predict::{Bench, CELLS, Prediction};
+use super::quick::{Carried, CarriedCause, carry};
 use crate::faults::{self, Fault, FaultId};
 use crate::math;
 use crate::readings::SideNaming;
@@ -48,20 +49,31 @@ pub struct Weighed {
 }
 
 /// A node with what it makes of the data.
-struct Held {
-    cause: usize,
-    node: Node,
+pub(super) struct Held {
+    pub cause: usize,
+    pub node: Node,
     fit: Fit,
     mean: Vec<f64>,
     /// As first predicted, in the middle of the scatter, and the change across the severity cell.
     first: Vec<f64>,
     cell: Vec<f64>,
+    /// Where it is linearised (empty: the middle), and what it predicts there.
+    pub centre: Vec<f64>,
+    pub prediction: Prediction,
 }
 
 impl Held {
     /// Log of its share of its cause × likelihood.
     fn log(&self) -> f64 {
         self.node.log_weight + self.fit.log
+    }
+
+    fn part(&self) -> Part<'_> {
+        Part {
+            log_weight: self.node.log_weight,
+            fit: &self.fit,
+            mean: &self.mean,
+        }
     }
 }
 
@@ -84,6 +96,8 @@ pub struct Posterior {
     pub change: f64,
     /// Nodes that carry weight, heaviest first.
     pub heavy: Vec<Heavy>,
+    /// What a quick look at one reading more starts from.
+    pub carried: Carried,
 }
 
 /// Chance that sides or directions are swapped in the notes.
@@ -113,10 +127,10 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
             if p.steepness() > STEEP {
                 for part in node.thirds() {
                     let p = bench.predict(fault, &part, data, &[]);
-                    held.extend(hold(cause, part, &p, data, swap));
+                    held.extend(hold(cause, part, p, data, swap));
                 }
             } else {
-                held.extend(hold(cause, node, &p, data, swap));
+                held.extend(hold(cause, node, p, data, swap));
             }
         }
     }
@@ -130,47 +144,64 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
         priors.push(pair.log_prior);
         for node in pair.nodes {
             let p = bench.predict(pair.faults[0], &node, data, &[]);
-            held.extend(hold(cause, node, &p, data, swap));
+            held.extend(hold(cause, node, p, data, swap));
         }
     }
     if catalogue.len() > singles {
         change = settle(bench, data, &catalogue, &priors, &mut held, swap);
     }
-    let carried = shares(&held, &priors);
+    let whole = shares(&held, &priors);
     let mut out: Vec<Weighed> = catalogue
         .iter()
         .enumerate()
-        .filter(|(i, _)| priors[*i].is_finite() && (*i < singles || carried[*i] > SHOWN))
+        .filter(|(i, _)| priors[*i].is_finite() && (*i < singles || whole[*i] > SHOWN))
         .map(|(i, fault)| {
             collect(
                 fault.id,
                 second[i],
                 priors[i],
-                held.iter().filter(|h| h.cause == i),
+                held.iter().filter(|h| h.cause == i).map(Held::part),
                 data,
             )
         })
         .collect();
-    if let (Some((_, p)), Some(entry)) = (sound.first(), faults::find(FaultId::NotListed)) {
-        let log = not_listed(data, p);
-        let n = data.data.len();
-        out.push(Weighed {
-            id: FaultId::NotListed,
-            with: None,
-            log_prior: math::ln(data.belief.rate(entry).max(1e-9)),
-            log_likelihood: log,
-            without: vec![log; n],
-            wrong: vec![0.0; data.groups],
-            swapped: 0.0,
-            would: p.mean.iter().map(|m| (*m, 0.8)).collect(),
-            heaviest: 0.0,
-        });
+    if let Some((_, p)) = sound.first() {
+        out.extend(unlisted(data, p));
     }
+    let heavy = heaviest(&catalogue, &priors, &held);
+    let causes = catalogue
+        .iter()
+        .enumerate()
+        .map(|(i, fault)| CarriedCause {
+            fault,
+            with: second[i],
+            log_prior: priors[i],
+            shown: i < singles || whole[i] > SHOWN,
+        })
+        .collect();
     Posterior {
         causes: out,
         change,
-        heavy: heaviest(&catalogue, &priors, &held),
+        heavy,
+        carried: carry(causes, held, sound.into_iter().next(), &priors),
     }
+}
+
+/// "Something not listed here", weighed.
+pub(super) fn unlisted(data: &Data, sound: &Prediction) -> Option<Weighed> {
+    let entry = faults::find(FaultId::NotListed)?;
+    let log = not_listed(data, sound);
+    Some(Weighed {
+        id: FaultId::NotListed,
+        with: None,
+        log_prior: math::ln(data.belief.rate(entry).max(1e-9)),
+        log_likelihood: log,
+        without: vec![log; data.data.len()],
+        wrong: vec![0.0; data.groups],
+        swapped: 0.0,
+        would: sound.mean.iter().map(|m| (*m, 0.8)).collect(),
+        heaviest: 0.0,
+    })
 }
 
 /// Share of all weight from which a pair is a row of its own.
@@ -216,7 +247,7 @@ fn heaviest(catalogue: &[&'static Fault], priors: &[f64], held: &[Held]) -> Vec<
 }
 
 /// Log of each node's share of all weight.
-fn node_shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
+pub(super) fn node_shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
     let mut logs: Vec<f64> = held.iter().map(|h| priors[h.cause] + h.log()).collect();
     let total = math::ln_sum_exp(&logs);
     for l in &mut logs {
@@ -299,15 +330,26 @@ fn pairs_of(
     pairs::candidates(data, &bench.builds, sound, &alone)
 }
 
-fn hold(cause: usize, node: Node, p: &Prediction, data: &Data, swap: f64) -> Option<Held> {
-    fit(data, p, &[], swap).map(|fit| Held {
+fn hold(cause: usize, node: Node, p: Prediction, data: &Data, swap: f64) -> Option<Held> {
+    fit(data, &p, &[], swap).map(|fit| Held {
         cause,
         node,
         fit,
         mean: p.mean.clone(),
         first: p.mean.clone(),
         cell: p.across_cell(),
+        centre: Vec::new(),
+        prediction: p,
     })
+}
+
+/// Means at the middle of the scatter, of what was linearised elsewhere.
+pub(super) fn means_at_the_middle(p: &Prediction, centre: &[f64]) -> Vec<f64> {
+    p.rows
+        .chunks(p.columns)
+        .zip(&p.mean)
+        .map(|(row, mean)| mean - row.iter().zip(centre).map(|(r, u)| r * u).sum::<f64>())
+        .collect()
 }
 
 /// Linearises the nodes that carry weight again, each at its own posterior mean.
@@ -341,27 +383,36 @@ fn again(
         let fault = catalogue[h.cause];
         let p = bench.predict(fault, &h.node, data, &centre);
         if let Some(f) = fit(data, &p, &centre, swap) {
-            held[i].mean = (0..data.data.len())
-                .map(|k| {
-                    let row = &p.rows[k * p.columns..(k + 1) * p.columns];
-                    p.mean[k] - row.iter().zip(&centre).map(|(r, u)| r * u).sum::<f64>()
-                })
-                .collect();
-            held[i].fit = f;
+            let h = &mut held[i];
+            h.mean = means_at_the_middle(&p, &centre);
+            h.prediction = p;
+            h.centre = centre;
+            h.fit = f;
         }
     }
 }
 
-fn collect<'a>(
+/// What a node makes of the data, as its cause is summed up from.
+pub(super) struct Part<'a> {
+    /// Log of its share of its cause.
+    pub log_weight: f64,
+    /// Its fit.
+    pub fit: &'a Fit,
+    /// Means at the middle of the scatter.
+    pub mean: &'a [f64],
+}
+
+/// Sums a cause up over its nodes.
+pub(super) fn collect<'a>(
     id: FaultId,
     with: Option<FaultId>,
     log_prior: f64,
-    nodes: impl Iterator<Item = &'a Held>,
+    nodes: impl Iterator<Item = Part<'a>>,
     data: &Data,
 ) -> Weighed {
-    let nodes: Vec<&Held> = nodes.collect();
+    let nodes: Vec<Part> = nodes.collect();
     let n = data.data.len();
-    let logs: Vec<f64> = nodes.iter().map(|h| h.log()).collect();
+    let logs: Vec<f64> = nodes.iter().map(|h| h.log_weight + h.fit.log).collect();
     let log_likelihood = if logs.is_empty() {
         f64::NEG_INFINITY
     } else {
@@ -372,7 +423,7 @@ fn collect<'a>(
         .map(|k| {
             let terms: Vec<f64> = nodes
                 .iter()
-                .map(|h| h.node.log_weight + h.fit.without[k])
+                .map(|h| h.log_weight + h.fit.without[k])
                 .collect();
             if terms.is_empty() {
                 f64::NEG_INFINITY

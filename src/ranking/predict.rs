@@ -49,6 +49,7 @@ struct Shows {
 }
 
 /// Prediction of a node.
+#[derive(Clone, Debug)]
 pub struct Prediction {
     /// Mean of every datum on its transformed scale.
     pub mean: Vec<f64>,
@@ -58,8 +59,33 @@ pub struct Prediction {
     pub columns: usize,
     /// Added variance of every datum: where there is no steady state.
     pub loose: Vec<f64>,
+    /// Where the low side starves, for every datum: needles swing there.
+    pub starved: Vec<bool>,
     /// Log factor from needles that swing or stand still.
     pub swing: f64,
+}
+
+/// What is known of a datum at a node from an earlier prediction there.
+#[derive(Clone, Copy, Debug)]
+pub struct Known<'a> {
+    /// Mean on its transformed scale.
+    pub mean: f64,
+    /// Its row, over the columns of that prediction.
+    pub row: &'a [f64],
+    /// Where each of those columns stands now.
+    pub columns: &'a [usize],
+    /// Added variance.
+    pub loose: f64,
+    /// The low side starves there.
+    pub starved: bool,
+}
+
+impl Known<'_> {
+    fn fill(&self, row: &mut [f64]) {
+        for (r, at) in self.row.iter().zip(self.columns) {
+            row[*at] = *r;
+        }
+    }
 }
 
 /// Severity cells of a node: of its cause and of a second one.
@@ -379,6 +405,25 @@ impl Bench {
 
     /// Predicts every datum at a node, linearised round scatter `u` (empty: the middle).
     pub fn predict(&self, fault: &Fault, node: &Node, data: &Data, u: &[f64]) -> Prediction {
+        self.predict_with(fault, node, data, u, |_| None)
+    }
+
+    /// As [`Bench::predict`]; what `known` has of a datum (mean, row, added variance, starved) is taken as it is, and only what
+    /// the others need is solved.
+    pub fn predict_with<'a>(
+        &self,
+        fault: &Fault,
+        node: &Node,
+        data: &Data,
+        u: &[f64],
+        known: impl Fn(usize) -> Option<Known<'a>>,
+    ) -> Prediction {
+        let needed = |c: usize| {
+            data.data
+                .iter()
+                .enumerate()
+                .any(|(k, d)| (d.condition == c || d.says == Says::Share(c)) && known(k).is_none())
+        };
         let columns = self.latents.0.len() + CELLS;
         let (scatter, cells) = u.split_at(u.len().saturating_sub(CELLS));
         let mut shift = [0.0; CELLS];
@@ -387,7 +432,7 @@ impl Bench {
         }
         let mut shows: Vec<Option<(Shows, Vec<f64>)>> = Vec::with_capacity(data.conditions.len());
         for c in 0..data.conditions.len() {
-            if self.wanted[c].is_empty() {
+            if !needed(c) {
                 shows.push(None);
                 continue;
             }
@@ -403,24 +448,27 @@ impl Bench {
             rows: vec![0.0; n * columns],
             columns,
             loose: vec![0.0; n],
+            starved: vec![true; n],
             swing: 0.0,
         };
         let mut swings = Swings::default();
         for (k, d) in data.data.iter().enumerate() {
             let row = &mut out.rows[k * columns..(k + 1) * columns];
-            match self.one(d, &shows, row, columns) {
-                Some((mean, starved)) => {
-                    out.mean[k] = mean;
-                    keep_believable(&mut row[..columns - CELLS]);
-                    swings.add(d, starved);
-                }
-                None => {
-                    // No steady state: the needle could stand anywhere, and would hardly stand still.
-                    out.mean[k] = d.t;
-                    out.loose[k] = LOOSE;
-                    swings.add(d, true);
-                }
+            if let Some(known) = known(k) {
+                out.mean[k] = known.mean;
+                out.loose[k] = known.loose;
+                out.starved[k] = known.starved;
+                known.fill(row);
+            } else if let Some((mean, starved)) = self.one(d, &shows, row, columns) {
+                out.mean[k] = mean;
+                out.starved[k] = starved;
+                keep_believable(&mut row[..columns - CELLS]);
+            } else {
+                // No steady state: the needle could stand anywhere, and would hardly stand still.
+                out.mean[k] = d.t;
+                out.loose[k] = LOOSE;
             }
+            swings.add(d, out.starved[k]);
         }
         out.swing = swings.log();
         out
@@ -435,6 +483,7 @@ impl Bench {
             rows: vec![0.0; n],
             columns: 1,
             loose: vec![0.0; n],
+            starved: vec![true; n],
             swing: 0.0,
         };
         let mut shown = Vec::with_capacity(data.conditions.len());

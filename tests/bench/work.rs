@@ -95,6 +95,14 @@ pub fn session() -> Session {
     s
 }
 
+/// First look at a visit in a session; returns the probability of the leading cause.
+pub fn look(session: &mut Session, visit: &Visit) -> f64 {
+    session
+        .look(&roller(), visit, &[])
+        .and_then(|a| a.causes.first().map(|c| c.probability))
+        .unwrap_or(f64::NAN)
+}
+
 /// Assesses a visit in a session.
 pub fn again(session: &mut Session, visit: &Visit) -> f64 {
     session

@@ -87,7 +87,7 @@ impl Engine {
         })))
     }
 
-    /// Asks about the open call. An older question about it that was not begun is dropped.
+    /// Asks about the open call. An older question about it is dropped, also where it was begun.
     pub fn ask(&self, question: Question) {
         let engine = self.clone();
         let mut inner = self.0.borrow_mut();
@@ -110,10 +110,17 @@ impl Engine {
     fn next(&self) {
         let (request, seq) = {
             let mut inner = self.0.borrow_mut();
+            let open = inner.open.take();
+            if open.is_some()
+                && let Some((_, begun)) = inner.asked.take()
+                && !open.as_ref().is_some_and(|o| o.visit.id == begun.visit.id)
+            {
+                // Called off in the worker, so it has to be asked again.
+                inner.others.push_front(begun);
+            }
             if inner.asked.is_some() {
                 return;
             }
-            let open = inner.open.take();
             let Some(question) = open.or_else(|| inner.others.pop_front()) else {
                 return;
             };
@@ -216,16 +223,20 @@ impl Engine {
     fn take(&self, reply: Reply) {
         let (asked, tell) = {
             let mut inner = self.0.borrow_mut();
+            let is_of_now = inner.asked.as_ref().is_some_and(|a| a.0 == reply.seq);
             // Until the advice has come too, the question stays open.
-            let asked = if reply.more {
-                inner.asked.clone()
-            } else {
-                inner.asked.take()
+            let asked = match (is_of_now, reply.more) {
+                (false, _) => None,
+                (true, true) => inner.asked.clone(),
+                (true, false) => inner.asked.take(),
             };
+            if reply.error.is_some() {
+                inner.asked = None;
+            }
             (asked, inner.tell.clone())
         };
         match (asked, reply.assessment, reply.error) {
-            (Some((seq, question)), Some(assessment), _) if seq == reply.seq => {
+            (Some((_, question)), Some(assessment), _) => {
                 self.0.borrow_mut().restarts = 0;
                 tell(Told::Answer(Box::new(Answer {
                     asked: question,

@@ -1,7 +1,8 @@
 //! The engine in its worker, so that no calculation ever blocks a screen.
 //!
-//! The page sends JSON `{seq, unit, visit, instruments}` and gets `{seq, assessment}` or `{seq, error}` back: the assessment twice,
-//! first at once with `more` set, then with the advice on what to do next. A worker that is ready says so with `{seq: 0}`.
+//! The page sends JSON `{seq, unit, visit, instruments}` and gets `{seq, assessment}` or `{seq, error}` back: a first look where
+//! little is new, the full assessment, and the same with the advice on what to do next, all but the last with `more` set. A
+//! question that comes in between calls the rest of the older one off. A worker that is ready says so with `{seq: 0}`.
 
 pub mod client;
 pub mod worker;
@@ -20,7 +21,7 @@ struct Reply {
     /// Why there is none.
     #[serde(default)]
     error: Option<String>,
-    /// The same assessment follows once more, with the advice.
+    /// A fuller answer to the same question follows.
     #[serde(default)]
     more: bool,
 }

@@ -92,12 +92,14 @@ impl State {
         })
     }
 
-    /// The last assessment of a visit, and whether something was edited since.
+    /// The last assessment of a visit, and whether a better one is to come: something was edited since, or it is a first look.
     pub fn answer(&self, visit: &str) -> (Option<Rc<Assessment>>, bool) {
         let answer = self.answers.get(visit);
         let is_current = answer
             .zip(self.question(visit))
-            .is_some_and(|(answer, question)| answer.asked == question);
+            .is_some_and(|(answer, question)| {
+                answer.asked == question && !answer.assessment.trust.first_look
+            });
         (
             answer.map(|answer| answer.assessment.clone()),
             !is_current && self.engine_trouble.is_none(),
