@@ -5,10 +5,12 @@
 //! Faults are drawn equally often and the base rates are made equal too, so that the scores speak of the readings alone.
 //! `assay pairs [cases]` hides two faults at once.
 //! `assay steps [cases] [seed]` counts the minutes to the cause (see [`steps`]).
+//! `assay neutral [cases]` hides a swash offset (see [`neutral`]).
 //! `ASSAY_TELL=1` prints the cases in which a wrong cause was all but certain; `ASSAY_SEED` changes the draw;
 //! `ASSAY_NOTES=clean` leaves the sloppy notes out.
 
 mod judge;
+mod neutral;
 mod score;
 mod steps;
 mod steps_danger;
@@ -45,8 +47,9 @@ fn main() {
     match std::env::args().nth(1).as_deref() {
         Some("ranking") | None => ranking(),
         Some("pairs") => pairs(),
+        Some("neutral") => neutral::neutral(number(2, 400), seed()),
         Some("steps") => steps::steps(number(2, 60), number(3, 2026) as u64),
-        Some(other) => eprintln!("assay: no such part: {other}. There are: ranking, pairs, steps."),
+        Some(other) => eprintln!("assay: no such part: {other}. There are: ranking, pairs, steps, neutral."),
     }
 }
 
