@@ -161,10 +161,10 @@ pub fn fit(points: &[Point]) -> Result<Fitted, NoFit> {
     let plays = senses.iter().any(|s| *s > 0.0) && senses.iter().any(|s| *s < 0.0);
     let wide = (span.high - span.low).max(0.5);
     let mut grid = Grid {
-        null: Span::new(span.low - wide, span.high + wide, 121),
-        dead: Span::new(0.0, wide, 41),
+        null: Span::new(span.low - wide, span.high + wide, 91),
+        dead: Span::new(0.0, wide, 31),
         play: if plays {
-            Span::new(0.0, 0.75 * wide, 16)
+            Span::new(0.0, 0.75 * wide, 12)
         } else {
             Span::new(0.0, 0.0, 1)
         },

@@ -12,3 +12,4 @@ pub mod nulls;
 pub mod offset;
 pub mod response;
 mod series;
+pub mod steps;

@@ -87,27 +87,22 @@ pub struct Place {
 }
 
 /// Share of a reading that the straight law does not know of: the loop's answer is a little curved. Common practice.
-const CURVED: f64 = 0.06;
+const CURVED: f64 = 0.05;
 
-/// Share of the largest reading of a series by which the law's sharp edge of the dead band may be wrong: real edges are round.
-/// Common practice.
-const ROUND: f64 = 0.025;
 /// Play that is usual in joints, turns of the adjuster. Common practice: no more than a third of the dead band.
-const USUAL_PLAY: f64 = 0.25;
+const USUAL_PLAY: f64 = 0.2;
 
 /// Weighs every place of the grid. `slope`: size of the slope by which an uncertain place of the adjuster becomes an uncertain
 /// reading; a first guess where none is known.
 pub fn weigh(points: &[Point], grid: &Grid, slope: Option<f64>) -> Vec<Place> {
     let slope = slope.unwrap_or_else(|| steepest(points));
-    let round = ROUND * largest(points);
     let mut out = Vec::new();
     for sense in [1.0, -1.0] {
         for play in grid.play.all() {
             let at: Vec<f64> = points.iter().map(|p| followed(p, play)).collect();
             for null in grid.null.all() {
                 for dead in grid.dead.all() {
-                    let (slope, misfit, log) =
-                        explain(points, &at, (null, dead, sense), slope, round);
+                    let (slope, misfit, log) = explain(points, &at, (null, dead, sense), slope);
                     let log = log - 0.5 * (play / USUAL_PLAY) * (play / USUAL_PLAY);
                     out.push(Place {
                         null,
@@ -144,12 +139,19 @@ fn followed(point: &Point, play: f64) -> f64 {
 }
 
 /// How a place explains the points: best slope (never against the sense), sum of squares, log weight.
-fn explain(
+///
+/// Where the reading changes with the place of the adjuster, an uncertain place is an uncertain reading: the more, the
+/// steeper. So the slope is found twice, the second time with the uncertainties that belong to the first.
+fn explain(points: &[Point], at: &[f64], place: (f64, f64, f64), slope: f64) -> (f64, f64, f64) {
+    let (first, _, _) = squares(points, at, place, slope);
+    squares(points, at, place, first)
+}
+
+fn squares(
     points: &[Point],
     at: &[f64],
     (null, dead, sense): (f64, f64, f64),
     slope: f64,
-    round: f64,
 ) -> (f64, f64, f64) {
     let (mut hh, mut hy, mut yy, mut logs) = (0.0, 0.0, 0.0, 0.0);
     for (point, x) in points.iter().zip(at) {
@@ -161,12 +163,9 @@ fn explain(
                 } else {
                     0.0
                 };
-                // An uncertain place matters where the reading changes with it.
                 let moves = if past > -PLACE { slope * PLACE } else { 0.0 };
                 let own = CURVED * value;
-                let variance =
-                    (uncertainty * uncertainty + moves * moves + own * own + round * round)
-                        .max(1e-18);
+                let variance = (uncertainty * uncertainty + moves * moves + own * own).max(1e-18);
                 hh += h * h / variance;
                 hy += h * value / variance;
                 yy += value * value / variance;
@@ -183,20 +182,13 @@ fn explain(
         }
     }
     let best = if hh > 0.0 { (hy / hh).max(0.0) } else { 0.0 };
-    let misfit = (yy - best * hy).max(0.0);
+    // Sum of (y − m h)² / σ², with the starts that no slope moves.
+    let misfit = (yy - 2.0 * best * hy + best * best * hh).max(0.0);
     (best, misfit, logs - 0.5 * misfit)
 }
 
 /// Standard uncertainty of where motion just starts, turns: the place, and a wheel that sticks a little. Common practice.
 const START: f64 = 0.05;
-
-/// Largest reading, either way.
-fn largest(points: &[Point]) -> f64 {
-    points.iter().fold(0.0, |most, p| match p.seen {
-        Seen::Value { value, .. } => value.abs().max(most),
-        Seen::Starts(_) => most,
-    })
-}
 
 /// First guess of the slope: the whole change over the whole travel.
 fn steepest(points: &[Point]) -> f64 {

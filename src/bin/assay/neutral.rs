@@ -225,6 +225,14 @@ fn series(
         return None;
     }
     tally.add(null, (fitted.null.low, fitted.null.high), true);
+    if std::env::var_os("ASSAY_TELL").is_some()
+        && !(fitted.null.low..=fitted.null.high).contains(&null)
+    {
+        println!("{shows:?} null {null:.3}, gain {gain:.4}, band {band:.4}: {fitted:?}");
+        for point in &points {
+            println!("   {:.3} {:?}", point.turns, point.seen);
+        }
+    }
     // A slip here would be told by the share above; the sense is certain in any such series.
     if fitted.in_is_forward != (gain > 0.0) {
         tally.wrong_side += 1;
