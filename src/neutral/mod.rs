@@ -10,6 +10,8 @@ pub mod curve;
 pub mod electric;
 pub mod nulls;
 pub mod offset;
+pub mod report;
 pub mod response;
 mod series;
 pub mod steps;
+pub mod words;

@@ -1,7 +1,7 @@
 //! The neutral sheet of a visit, as it is kept: every text as it was typed beside the figure it was read as.
 
 use crate::neutral::adjust::Sense;
-use crate::quantity::Measure;
+use crate::quantity::{Kind, Measure, Unit};
 use crate::readings::{Direction, EngineSpeed};
 use serde::{Deserialize, Serialize};
 use std::collections::BTreeMap;
@@ -65,6 +65,77 @@ pub enum Field {
     EndReverse,
     /// Turns of the adjuster at which the servo pressures are equal.
     Balanced,
+}
+
+impl Field {
+    /// Kind of quantity. Turns are angles.
+    #[must_use]
+    pub fn kind(self) -> Kind {
+        match self {
+            Field::Oil => Kind::Temperature,
+            Field::Engine => Kind::RotationalSpeed,
+            Field::CreepTurns | Field::BridgedTurns | Field::Balanced => Kind::Angle,
+            Field::CreepTime | Field::BridgedTime => Kind::Time,
+            Field::Difference
+            | Field::ServoForward
+            | Field::ServoReverse
+            | Field::PilotForward
+            | Field::PilotReverse
+            | Field::PilotStartForward
+            | Field::PilotStartReverse => Kind::Pressure,
+            Field::ThresholdForward
+            | Field::ThresholdReverse
+            | Field::EndForward
+            | Field::EndReverse => Kind::Current,
+        }
+    }
+
+    /// Lowest and highest accepted, in [`Field::unit`].
+    #[must_use]
+    pub fn range(self) -> (f64, f64) {
+        match self {
+            Field::Oil => (-40.0, 130.0),
+            Field::Engine => (50.0, 6000.0),
+            Field::CreepTurns | Field::BridgedTurns => (0.0, 2000.0),
+            Field::CreepTime | Field::BridgedTime => (1.0, 3600.0),
+            Field::Difference => (-700.0, 700.0),
+            Field::Balanced => (-40.0, 40.0),
+            Field::ServoForward
+            | Field::ServoReverse
+            | Field::PilotForward
+            | Field::PilotReverse
+            | Field::PilotStartForward
+            | Field::PilotStartReverse => (0.0, 60.0),
+            Field::ThresholdForward
+            | Field::ThresholdReverse
+            | Field::EndForward
+            | Field::EndReverse => (1.0, 4000.0),
+        }
+    }
+
+    /// The unit of [`Field::range`]: turns for angles, else the base unit of the kind.
+    #[must_use]
+    pub fn unit(self) -> Unit {
+        match self.kind() {
+            Kind::Temperature => Unit::DegreeCelsius,
+            Kind::RotationalSpeed => Unit::RevolutionPerMinute,
+            Kind::Time => Unit::Second,
+            Kind::Pressure => Unit::Bar,
+            Kind::Current => Unit::Milliampere,
+            _ => Unit::Turn,
+        }
+    }
+}
+
+/// Turns of an adjuster from where it was found, at most.
+pub const ADJUSTER_TURNS: f64 = 40.0;
+
+impl Typed {
+    /// The value in a unit; none where it cannot be read, or is a figure of another kind.
+    #[must_use]
+    pub fn value_in(&self, unit: Unit) -> Option<f64> {
+        self.value?.try_in_unit(unit).ok()
+    }
 }
 
 /// How a loop difference was read: it decides what can be told from it.
@@ -137,10 +208,10 @@ pub struct NeutralSheet {
 }
 
 impl NeutralSheet {
-    /// The value of a figure in the base unit of its kind, where it can be read.
+    /// The value of a figure in [`Field::unit`], where it can be read.
     #[must_use]
     pub fn value(&self, field: Field) -> Option<f64> {
-        self.fields.get(&field)?.value.map(Measure::base)
+        self.fields.get(&field)?.value_in(field.unit())
     }
 
     /// Sets a figure as it was typed; an empty one is taken out.
