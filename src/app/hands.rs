@@ -144,7 +144,8 @@ impl Hands {
                 }
             }
             Route::Unit(unit) => self.ask_about_last(state, unit),
-            Route::Settings => {}
+            // The neutral is worked out on its own screen.
+            Route::Neutral(_) | Route::Settings => {}
         }
     }
 

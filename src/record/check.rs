@@ -318,8 +318,13 @@ pub(super) fn visit(path: &str, visit: &mut Visit) -> Checked {
             prose(&path, &shortened(what), why)?;
         }
     }
-    if let Some(sheet) = &mut visit.neutral {
-        neutral(&format!("{path}.neutral"), sheet)?;
+    for (field, sheet) in [
+        ("neutral", &mut visit.neutral),
+        ("neutral_right", &mut visit.neutral_right),
+    ] {
+        if let Some(sheet) = sheet {
+            neutral(&format!("{path}.{field}"), sheet)?;
+        }
     }
     for (field, closing) in [
         ("closing", &mut visit.closing),

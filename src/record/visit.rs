@@ -55,9 +55,12 @@ pub struct Visit {
     /// What had to be put back and was answered for, by the line as it was read.
     #[serde(skip_serializing_if = "BTreeMap::is_empty")]
     pub put_back: BTreeMap<String, PutBack>,
-    /// The neutral sheet, once something was entered in it.
+    /// The neutral sheet of the left or only path, once something was entered in it.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub neutral: Option<super::NeutralSheet>,
+    /// The same for the right path, where there are two.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub neutral_right: Option<super::NeutralSheet>,
     /// What is entered for the closing while the call is still open.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub closing: Option<Closing>,
