@@ -39,6 +39,8 @@ pub struct Report {
     pub nulls: Option<Nulls>,
     /// What the servo pressures ask.
     pub servo: Option<ServoPush>,
+    /// The places of the adjuster that can be read.
+    pub points: Vec<Point>,
     /// The adjuster.
     pub series: Option<Result<Fitted, NoFit>>,
     /// Halves of the dead band about the place of equal servo pressures.
@@ -108,7 +110,8 @@ pub fn report(unit: &Unit, sheet: &NeutralSheet) -> Report {
     let mut all = open.clone();
     all.extend(taken(Shows::CreepBridged, bridged));
     let found = (!open.is_empty()).then(|| offset(unit, &open)).flatten();
-    let series = (!sheet.series.is_empty()).then(|| adjust::fit(&points(sheet, &mut missing)));
+    let points = points(sheet, &mut missing);
+    let series = (!sheet.series.is_empty()).then(|| adjust::fit(&points));
     let currents = currents(sheet);
     Report {
         fits_none: !open.is_empty() && found.is_none(),
@@ -122,6 +125,7 @@ pub fn report(unit: &Unit, sheet: &NeutralSheet) -> Report {
         servo: pair(sheet, Field::ServoForward, Field::ServoReverse)
             .and_then(|(f, r)| servo_push(unit, f - r, SMALL_GAUGE)),
         halves: halves(sheet),
+        points,
         series,
         currents,
         stop: Some(brake::stop(unit)),

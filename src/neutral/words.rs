@@ -431,9 +431,9 @@ impl<'a> Writer<'a> {
         out
     }
 
-    /// Pilot pressures left and at the start.
+    /// Pilot pressures left at rest.
     #[must_use]
-    pub fn pilots(&self, sheet: &NeutralSheet) -> Vec<Line> {
+    pub fn pilot_rest(&self, sheet: &NeutralSheet) -> Vec<Line> {
         let mut out = Vec::new();
         for (name, field) in [
             ("Forward pilot line at rest", Field::PilotForward),
@@ -452,6 +452,13 @@ impl<'a> Writer<'a> {
                 ));
             }
         }
+        out
+    }
+
+    /// Pilot pressures at which it starts.
+    #[must_use]
+    pub fn pilot_start(&self, sheet: &NeutralSheet) -> Vec<Line> {
+        let mut out = Vec::new();
         if let Some((f, r)) = pair(sheet, Field::PilotStartForward, Field::PilotStartReverse) {
             let alike = (f - r).abs() <= PILOT_DIFFER;
             let usual = [f, r]

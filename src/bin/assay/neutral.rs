@@ -8,8 +8,9 @@ use lowside::neutral::offset::{Offset, Says, Taken, offset};
 use lowside::neutral::response::Shows;
 use lowside::quantity::{Kind, Measure};
 use lowside::readings::{
-    Condition, Doing, EngineSpeed, OilTemperature, Place, Port, instrument::gum,
+    Condition, Doing, EngineSpeed, OilTemperature, Path, Place, Port, instrument::gum,
 };
+use lowside::unit::Paths;
 use lowside::windows::Normals;
 
 /// Time over which turns are counted, s.
@@ -71,7 +72,7 @@ pub fn neutral(cases: usize, seed: u64) {
         (Tally::default(), Tally::default(), Tally::default());
     let mut one_side = 0;
     while creep.cases < cases {
-        let Some(mut machine) = Machine::draw(&mut draw, &[]) else {
+        let Some(mut machine) = Machine::draw(&mut draw, Paths::One, &[]) else {
             continue;
         };
         let condition = condition(&mut draw);
@@ -151,14 +152,15 @@ fn take(
     let truth = machine.null.unwrap_or_default();
     let (value, uncertainty) = match shows {
         Shows::Creep | Shows::CreepBridged => {
-            let (rpm, _) = machine.shows_and_swings(Port::Wheel, &condition)?;
+            let (rpm, _) = machine.shows_and_swings(Path::Left, Port::Wheel, &condition)?;
             let turns = rpm * COUNTED_S / 60.0 + 0.1 * draw.normal();
             let turns = ((4.0 * turns).round() / 4.0).max(0.0);
             let quarter = gum::rectangular(0.25) * 60.0 / COUNTED_S;
             (turns * 60.0 / COUNTED_S * truth.signum(), quarter)
         }
         Shows::Difference => {
-            let (bar, _) = machine.shows_and_swings(Port::LoopDifference, &condition)?;
+            let (bar, _) =
+                machine.shows_and_swings(Path::Left, Port::LoopDifference, &condition)?;
             let wide = gum::combined(&[PAIRED.0, PAIRED.1 * bar]);
             (bar + wide * draw.normal(), wide)
         }

@@ -60,7 +60,7 @@ pub(super) const EQUAL: Step = Step {
         "Two gauges differ by more than that among themselves: switch one gauge, or swap them and read again.",
     ],
     stands: &[Stands::Opening, Stands::WheelsClear],
-    enters: &[Enter::Servo, Enter::Creep],
+    enters: &[Enter::Servo],
 };
 
 pub(super) const TWO_STARTS: Step = Step {
