@@ -10,7 +10,7 @@ use crate::unit::Unit;
 use crate::windows::Normals;
 
 /// Machines in the ensemble.
-pub const DRAWS: usize = 96;
+pub const DRAWS: usize = 144;
 /// Seed of the draws: the same answer each time and on every target.
 const SEED: u64 = 0x0FF5_E700;
 /// Factor on the scatter, as in the ranking: a little wider than believed costs nothing where the model is right.
