@@ -114,8 +114,8 @@ pub fn Adjuster(props: &AdjusterProps) -> Html {
         })
     };
     let read = match props.by {
-        SeriesBy::Creep => "Creep",
-        SeriesBy::Difference => "Difference",
+        SeriesBy::Creep => "Creep, counted",
+        SeriesBy::Difference => "Difference, read",
     };
     html! {
         <div class="place" role="group" aria-label={format!("Place {}", props.number)} data-testid={at.clone()}>
@@ -156,7 +156,7 @@ pub fn Adjuster(props: &AdjusterProps) -> Html {
                 on_change={on_seen}
             />
             if row.starts.is_none() && props.by == SeriesBy::Creep {
-                <details class="fold neutral-count">
+                <details class="neutral-count">
                     <summary>{ "Count with taps" }</summary>
                     <TapCounter id={format!("{at}-taps")} label={format!("Wheel, place {}", props.number)} limit_s={COUNT_S} {on_count} />
                 </details>

@@ -97,7 +97,7 @@ pub fn Creep(props: &CreepProps) -> Html {
     let id = &props.id;
     html! {
         <div class="stack is-tight">
-            <details class="fold neutral-count">
+            <details class="neutral-count">
                 <summary data-testid={format!("{id}-count")}>{ "Count with taps" }</summary>
                 <TapCounter
                     id={format!("{id}-taps")}

@@ -9,9 +9,9 @@ use crate::quantity::UnitPrefs;
 use crate::readings::Direction;
 
 /// Width and height of the drawing.
-const SIZE: (f64, f64) = (360.0, 250.0);
+const SIZE: (f64, f64) = (360.0, 266.0);
 /// Free to the left, right, top and bottom of the plot.
-const EDGE: (f64, f64, f64, f64) = (14.0, 14.0, 26.0, 58.0);
+const EDGE: (f64, f64, f64, f64) = (14.0, 14.0, 26.0, 74.0);
 
 /// Properties of [`AdjusterPlot`].
 #[derive(Clone, PartialEq, Properties)]
@@ -112,7 +112,7 @@ pub fn AdjusterPlot(props: &AdjusterPlotProps) -> Html {
             if let Some(fitted) = fitted { { band(&frame, fitted, bottom) } }
             { for props.points.iter().map(|point| mark(&frame, point)) }
             { here(&frame, props, bottom) }
-            <text class="draw-text" x={px(EDGE.0)} y={px(SIZE.1 - 6.0)}>{ format!("{} out", writer.turns(frame.turns.0)).replace("out", if frame.turns.0 < 0.0 { "out" } else { "in" }) }</text>
+            <text class="draw-text" x={px(EDGE.0)} y={px(SIZE.1 - 6.0)}>{ format!("{} {}", writer.turns(frame.turns.0), if frame.turns.0 < 0.0 { "out" } else { "in" }) }</text>
             <text class="draw-text" x={px(SIZE.0 - EDGE.1)} y={px(SIZE.1 - 6.0)} text-anchor="end">{
                 format!("{} {}", writer.turns(frame.turns.1), if frame.turns.1 < 0.0 { "out" } else { "in" })
             }</text>

@@ -172,6 +172,7 @@ pub fn NeutralScreen(props: &NeutralScreenProps) -> Html {
                         report={(*answer).clone()}
                         prefs={props.prefs.clone()}
                         edits={edits.clone()}
+                        told={steps.iter().take(i).flat_map(|step| step.stands.iter().copied()).collect::<Vec<_>>()}
                         minute={*minute}
                     />
                 }) }

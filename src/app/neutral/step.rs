@@ -15,6 +15,7 @@ use crate::app::call::gate::Gate;
 use crate::app::call::gate_panel::GatePanel;
 use crate::app::parts::{Choice, Lay, Opt};
 use crate::app::platform::clock;
+use crate::caution::{self, Stands, Weight};
 use crate::neutral::report::{Report, condition};
 use crate::neutral::steps::{Enter, Step};
 use crate::neutral::words::{Line, Tone, Writer};
@@ -45,6 +46,8 @@ pub struct StepPartProps {
     pub prefs: UnitPrefs,
     /// Edits.
     pub edits: Edits,
+    /// Places whose cautions stand in an earlier step.
+    pub told: Vec<Stands>,
     /// Minutes since the screen was opened: ticks grow old.
     pub minute: u32,
 }
@@ -82,7 +85,7 @@ pub fn StepPart(props: &StepPartProps) -> Html {
                 }
             </summary>
             <div class="stack">
-                { cautions::all(step.stands) }
+                { warned(step, &props.told) }
                 <ol class="neutral-how">{ for step.how.iter().map(|how| html! { <li>{ *how }</li> }) }</ol>
                 if !step.good.is_empty() {
                     <div class="neutral-good">
@@ -104,6 +107,24 @@ pub fn StepPart(props: &StepPartProps) -> Html {
             </div>
         </details>
     }
+}
+
+/// Cautions of the step: those that can kill always in full, the others folded where an earlier step has them.
+fn warned(step: &Step, told: &[Stands]) -> Html {
+    let can_kill = |stands: &Stands| caution::at(*stands).any(|c| c.weight == Weight::Stop);
+    let (full, again): (Vec<Stands>, Vec<Stands>) = step
+        .stands
+        .iter()
+        .partition(|stands| can_kill(stands) || !told.contains(stands));
+    html! { <>
+        { cautions::all(&full) }
+        if !again.is_empty() {
+            <details class="advice">
+                <summary>{ "Cautions as in the steps before" }</summary>
+                { cautions::all(&again) }
+            </details>
+        }
+    </> }
 }
 
 /// What the machine does for an entry, and the port it is read at: its precautions open it.

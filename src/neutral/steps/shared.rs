@@ -7,6 +7,8 @@ pub(super) const BEFORE: Step = Step {
     id: "before",
     title: "Before anything is turned",
     how: &[
+        "It creeps as it stands? Engine off, chock both ways, then lift it: nothing is counted or turned on a machine that can \
+         roll off.",
         "Warm the oil to within 10 K of working temperature, 50 °C or more, and keep it there: the check afterwards is made at \
          the same.",
         "Charge and case pressure are known good. On low charge a null is never set.",
@@ -23,7 +25,7 @@ pub(super) const BEFORE: Step = Step {
         "It creeps one way only since a repair: look for crossed servo or pilot lines before you turn anything.",
         "The servo rests on case pressure: uneven cases make uneven stroke.",
     ],
-    stands: &[Stands::KeepsGoing, Stands::WheelsClear],
+    stands: &[Stands::WheelsClear],
     enters: &[],
 };
 
@@ -103,7 +105,7 @@ pub(super) const LOCKED: Step = Step {
         "Two 600 bar gauges cannot see it.",
         "The parking brake is let go by the first few bars of control: a locked test unlocks itself.",
     ],
-    stands: &[Stands::Held, Stands::LoopPort],
+    stands: &[Stands::LoopPort],
     enters: &[Enter::Difference],
 };
 
