@@ -7,7 +7,15 @@ use yew::{Callback, hook, use_mut_ref};
 
 use crate::app::call::change::{Change, apply};
 use crate::readings::Path;
+use crate::record::neutral::Field;
 use crate::record::{NeutralSheet, Visit};
+
+/// Figures that are read at something opened, with the check whose put-back list it joins at the end of the call.
+const OPENS: [(Field, &str); 3] = [
+    (Field::BridgedTurns, "bridge-the-servo"),
+    (Field::ServoForward, "servo-two-gauges"),
+    (Field::ServoReverse, "servo-two-gauges"),
+];
 
 /// What parts of the screen edit with. Two are equal where they edit the same sheet of the same visit.
 #[derive(Clone)]
@@ -38,6 +46,11 @@ impl Edits {
         let mut visit = (**self.newest.borrow()).clone();
         let mut sheet = sheet(&visit, self.path);
         edit(&mut sheet);
+        for (field, check) in OPENS {
+            if sheet.fields.contains_key(&field) && !visit.made.iter().any(|made| made == check) {
+                visit.made.push(check.to_owned());
+            }
+        }
         let kept = (sheet != NeutralSheet::default()).then_some(sheet);
         match self.path {
             Path::Left => visit.neutral = kept,
