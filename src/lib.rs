@@ -17,6 +17,7 @@
 //! | [`windows`] | what a healthy unit should show |
 //! | [`ranking`] | from readings to causes |
 //! | [`next`] | the next check, the next repair, when to stop |
+//! | [`tracking`] | straight tracking of a machine with two sides: which side is faster, why, what to turn |
 //! | [`assessment`] | what an assessment hands out |
 //! | [`record`] | visits and units as they are kept; import, export, migration |
 //! | [`store`] | where the record is kept |
@@ -44,5 +45,6 @@ pub mod ranking;
 pub mod readings;
 pub mod record;
 pub mod store;
+pub mod tracking;
 pub mod unit;
 pub mod windows;
