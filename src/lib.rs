@@ -9,6 +9,7 @@
 //! | [`quantity`] | units of measure: parsing what a person types, printing what they want to read |
 //! | [`fluid`] | oil: viscosity and density at temperature, grades, cleanliness |
 //! | [`unit`] | the unit profile: what is known of one machine, and where each figure comes from |
+//! | [`count`] | turns counted by tapping, and their time |
 //! | [`readings`] | conditions, ports, instruments, readings |
 //! | [`circuit`] | parameters, elements, solver: a condition in, pressures and flows out |
 //! | [`faults`] | the catalogue of causes |
@@ -31,6 +32,7 @@ pub mod bench;
 pub mod caution;
 pub mod checks;
 pub mod circuit;
+pub mod count;
 pub mod demo;
 pub mod faults;
 pub mod fluid;

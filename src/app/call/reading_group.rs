@@ -8,7 +8,7 @@ use super::entry;
 use super::gate::{self, Gate};
 use super::gate_panel::{GatePanel, advice};
 use super::last_time::EarlierCalls;
-use super::reading_row::ReadingRow;
+use super::reading_row::{ReadingRow, row_id};
 use super::rig;
 use super::steady::Answer;
 use super::words;
@@ -129,6 +129,31 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
         .assessment
         .as_deref()
         .and_then(|assessment| assessment.hold);
+    // One flat list in which every item has its key: what is there already stays as it is when a reading is added.
+    let mut rows: Vec<Html> = Vec::with_capacity(readings.len());
+    for (place, reading) in &readings {
+        let guards = gates.iter().filter(|gate| is_first(gate, reading));
+        rows.extend(guards.map(|gate| panel(props, gate, hold, &reading.id)));
+        rows.push(html! {
+            <ReadingRow
+                key={row_id(&reading.id)}
+                reading={(*reading).clone()}
+                number={*place}
+                window={windows.iter().find(|window| window.reading == reading.id).cloned()}
+                retake={retakes.iter().find(|(id, _)| *id == reading.id).map(|(_, why)| why.clone())}
+                last={props.earlier.of(reading)}
+                closed={gate::closes(&gates, reading)}
+                chosen={props.chosen == Some(reading.port)}
+                unit={props.unit.clone()}
+                rigged={rig::on_port(reading, &props.visit, &props.instruments)}
+                before={props.visit.earlier.get(&reading.id).cloned().unwrap_or_default()}
+                instruments={props.instruments.clone()}
+                prefs={props.prefs.clone()}
+                on_change={props.on_change.clone()}
+                on_instruments={props.on_instruments.clone()}
+            />
+        });
+    }
     html! {
         <section class={if props.updating { "panel group is-stale" } else { "panel group" }} aria-labelledby={title_id.clone()}>
             <div class="group-head">
@@ -138,11 +163,11 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                         { words::oil(&props.condition, &props.prefs) }
                     </p>
                     if !props.editing {
-                        { for FIELDS.iter().filter_map(|(field, name)| texts.get(*field).map(|text| html! {
+                        <>{ for FIELDS.iter().filter_map(|(field, name)| texts.get(*field).map(|text| html! {
                             <p class="group-missing" data-testid={format!("heading-{field}")}>
                                 { format!("Not taken yet, {name}: “{text}”") }
                             </p>
-                        })) }
+                        })) }</>
                     }
                 </div>
                 <button
@@ -168,26 +193,7 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
             { cautions::all(&new_places(props)) }
             { advice(&gates) }
             <ol class="readings">
-                { for readings.iter().map(|(place, reading)| html! { <>
-                    { for gates.iter().filter(|gate| is_first(gate, reading)).map(|gate| panel(props, gate, hold, &reading.id)) }
-                    <ReadingRow
-                        key={reading.id.clone()}
-                        reading={(*reading).clone()}
-                        number={*place}
-                        window={windows.iter().find(|window| window.reading == reading.id).cloned()}
-                        retake={retakes.iter().find(|(id, _)| *id == reading.id).map(|(_, why)| why.clone())}
-                        last={props.earlier.of(reading)}
-                        closed={gate::closes(&gates, reading)}
-                        chosen={props.chosen == Some(reading.port)}
-                        unit={props.unit.clone()}
-                        rigged={rig::on_port(reading, &props.visit, &props.instruments)}
-                        before={props.visit.earlier.get(&reading.id).cloned().unwrap_or_default()}
-                        instruments={props.instruments.clone()}
-                        prefs={props.prefs.clone()}
-                        on_change={props.on_change.clone()}
-                        on_instruments={props.on_instruments.clone()}
-                    />
-                </> }) }
+                { for rows }
             </ol>
         </section>
     }
@@ -213,7 +219,7 @@ fn panel(props: &ReadingGroupProps, gate: &Gate, hold: Option<(f64, f64)>, first
     // Somebody who comes for the reading is brought to what must be so before it.
     let asks = gate.barred.is_some() || !(gate.is_ticked() && gate.fresh);
     html! {
-        <li class="gate-item" key={gate.check.id} id={asks.then(|| gate_id(first))} tabindex={asks.then_some("-1")}>
+        <li class="gate-item" key={format!("check-{}", gate.check.id)} id={asks.then(|| gate_id(first))} tabindex={asks.then_some("-1")}>
             <GatePanel
                 gate={gate.clone()}
                 told={props.told.contains(&gate.check.id)}

@@ -169,11 +169,11 @@ pub fn Rig(props: &RigProps) -> Html {
             <label class="rig-label" for={id.clone()}>{ "Read with" }</label>
             <select class="rig-select" {id} onchange={on_pick} data-testid={format!("rig-{}", props.number)}>
                 <option value="" selected={chosen.is_empty()}>{ "instrument not said" }</option>
-                { for props.instruments.iter().filter(|instrument| fits(instrument, port)).map(|instrument| html! {
+                <>{ for props.instruments.iter().filter(|instrument| fits(instrument, port)).map(|instrument| html! {
                     <option key={instrument.id.clone()} value={instrument.id.clone()} selected={instrument.id == chosen}>
                         { instrument.name.clone() }
                     </option>
-                }) }
+                }) }</>
                 <option value={NEW}>{ "another one…" }</option>
             </select>
             if *is_new {

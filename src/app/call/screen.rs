@@ -212,7 +212,8 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 />
                 <QuickPanel {taken} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
-                { for grouped.into_iter().zip(told).map(|(group, told)| {
+                // In a list of its own: among its neighbours, one more group would have all above it made anew.
+                <>{ for grouped.into_iter().zip(told).map(|(group, told)| {
                     let first = group.at.first().and_then(|place| visit.readings.get(*place));
                     let first = first.map(|reading| reading.id.clone()).unwrap_or_default();
                     html! {
@@ -237,7 +238,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                             on_instruments={on_instruments.clone()}
                         />
                     }
-                }) }
+                }) }</>
                 <AddPanel
                     ticks={props.unit.ticks.clone()}
                     last={last_condition(visit)}

@@ -7,6 +7,9 @@ pub mod field;
 pub mod icon;
 pub mod section;
 pub mod select;
+pub mod sound_switch;
+pub mod stopwatch;
+pub mod tap_counter;
 pub mod text;
 
 pub use caution::{Caution, Grade};
@@ -16,4 +19,7 @@ pub use field::{Entry, MeasureField};
 pub use icon::{Icon, Shape};
 pub use section::Section;
 pub use select::Select;
+pub use sound_switch::SoundSwitch;
+pub use stopwatch::Stopwatch;
+pub use tap_counter::TapCounter;
 pub use text::TextField;

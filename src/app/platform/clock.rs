@@ -23,6 +23,13 @@ pub fn now_ms() -> f64 {
     Date::now()
 }
 
+/// Milliseconds on a clock that only runs forward, whatever is done to the device's time. For stopwatches.
+pub fn running_ms() -> f64 {
+    web_sys::window()
+        .and_then(|window| window.performance())
+        .map_or_else(Date::now, |performance| performance.now())
+}
+
 /// A kept moment in words, on the device's own clock: "just now", "today 14:05", "yesterday 09:30", "3 Dec 2025". Text that
 /// is no moment is told as it stands.
 pub fn tell(moment: &str) -> String {

@@ -77,11 +77,11 @@ fn body(place: usize, offer: &Offer, props: &NextPanelProps) -> Html {
             <p class="next-why">{ offer.why.clone() }</p>
         }
         { foretold::shown(offer, props) }
-        { for known.map(|known| before(known, offer)) }
-        { for offer.hold.map(|hold| held(hold, props)) }
+        { known.map(|known| before(known, offer)) }
+        { offer.hold.map(|hold| held(hold, props)) }
         { take(place, offer, props) }
-        { for known.map(|known| answer(place, known, offer, props)) }
-        { for known.map(how) }
+        { known.map(|known| answer(place, known, offer, props)) }
+        { known.map(how) }
     </> }
 }
 
