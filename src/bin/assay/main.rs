@@ -4,6 +4,7 @@
 //! with clean notes and with sloppy ones, beside the best possible ranker, which knows the world's own laws and scatter.
 //! Faults are drawn equally often and the base rates are made equal too, so that the scores speak of the readings alone.
 //! `assay pairs [cases]` hides two faults at once.
+//! `assay tracking [cases]` hides one mismatch between two sides (see [`tracking`]).
 //! `assay steps [cases] [seed]` counts the minutes to the cause (see [`steps`]).
 //! `ASSAY_TELL=1` prints the cases in which a wrong cause was all but certain; `ASSAY_SEED` changes the draw;
 //! `ASSAY_NOTES=clean` leaves the sloppy notes out.
@@ -12,6 +13,7 @@ mod judge;
 mod score;
 mod steps;
 mod steps_danger;
+mod tracking;
 mod world;
 
 use judge::{Judge, Ranked, Ranker, listed};
@@ -46,7 +48,8 @@ fn main() {
         Some("ranking") | None => ranking(),
         Some("pairs") => pairs(),
         Some("steps") => steps::steps(number(2, 60), number(3, 2026) as u64),
-        Some(other) => eprintln!("assay: no such part: {other}. There are: ranking, pairs, steps."),
+        Some("tracking") => tracking::tracking(number(2, 2000), seed()),
+        Some(other) => eprintln!("assay: no such part: {other}. There are: ranking, pairs, steps, tracking."),
     }
 }
 
