@@ -221,6 +221,8 @@ const AGAIN: f64 = 0.002;
 const PLAY: f64 = 0.0015;
 /// The engine does not hold its speed from run to run, share.
 const ENGINE: f64 = 0.03;
+/// A governed engine at no load from one count to the next, share. Common practice.
+const COUNTS_APART: f64 = 0.005;
 
 fn root_of_squares(terms: &[f64]) -> f64 {
     terms.iter().map(|t| t * t).sum::<f64>().sqrt()
@@ -292,8 +294,7 @@ pub(super) fn data(run: &Run, machine: &Machine) -> Vec<Datum> {
                 (turns / seconds, root_of_squares(&[count / turns, timed]))
             };
             let ((left, u_left), (right, u_right)) = (of(left), of(right));
-            // The engine is not the same at both counts; a governed one comes back to a third of what it does between runs.
-            let both = root_of_squares(&[u_left, u_right, ENGINE / 3.0]);
+            let both = root_of_squares(&[u_left, u_right, COUNTS_APART]);
             let mut all = vec![ratio(Shown::WheelRatio, left, right, both)];
             all.extend(level(30.0 * (left + right), both));
             all

@@ -2,7 +2,7 @@
 
 use super::adjust::Screws;
 use super::run::{LANE, Machine, Run, RunError, Seen, Setting, Undercarriage};
-use crate::quantity::{Measure, Unit};
+use crate::quantity::{Measure, Unit, parse};
 use serde::{Deserialize, Serialize};
 use std::collections::BTreeMap;
 use thiserror::Error;
@@ -207,6 +207,18 @@ impl Line {
         value
             .and_then(|value| value.try_in_unit(unit).ok())
             .ok_or(LineProblem::Unread)
+    }
+
+    /// Changes what is measured. Texts stay; they are read anew in the unit that is asked for now.
+    pub fn choose(&mut self, what: What) {
+        self.what = what;
+        for (field, typed) in &mut self.fields {
+            let (unit, high) = what.asks(*field);
+            let range = Measure::literal(0.0, unit)..=Measure::literal(high, unit);
+            typed.value = parse(&typed.typed, unit.kind(), unit, Some(range))
+                .ok()
+                .map(|parsed| parsed.measure);
+        }
     }
 
     fn optional(&self, field: Field) -> Result<Option<f64>, LineProblem> {
