@@ -47,8 +47,9 @@ fn wrong(path: &str, why: Problem) -> RecordError {
 
 /// Screens take the limit as it is shown, so a hair beyond it is the limit.
 fn within(value: Measure, (low, high): (Measure, Measure)) -> Result<(), Problem> {
-    let slack = 1e-5 * high.base().abs();
-    let span = (low.base() - slack, high.base() + slack);
+    let slack = |limit: f64| 1e-5 * limit.abs();
+    let (low_base, high_base) = (low.base(), high.base());
+    let span = (low_base - slack(low_base), high_base + slack(high_base));
     check::measure(value, low.kind(), span)
 }
 
