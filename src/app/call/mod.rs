@@ -9,7 +9,7 @@
 //! | [`close`] | the end of the call |
 //! | [`put_back`] | what has to be put back before a call is closed |
 //! | [`gate`] | precautions that open a hazardous reading |
-//! | [`steady`] | what keeps a part from being drawn for nothing |
+//! | [`steady`], [`slices`] | what keeps a part from being drawn for nothing, and a long list from being drawn at one go |
 //! | [`map`] | the loop drawn with its ports |
 //! | [`causes`] | the ranking |
 //! | [`next`] | the check that tells most, what it would say, the repair |
@@ -49,6 +49,7 @@ mod scale;
 mod screen;
 mod seen_keys;
 mod seen_panel;
+mod slices;
 mod steady;
 mod taken;
 mod told;

@@ -18,6 +18,7 @@ use super::quick_panel::QuickPanel;
 use super::reading_group::{ReadingGroup, gate_id};
 use super::reading_row::row_id;
 use super::seen_panel::SeenPanel;
+use super::slices::{use_apart, use_slices};
 use super::steady::{Answer, use_steady};
 use super::taken::Taken;
 use super::told::told_before;
@@ -95,7 +96,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             }
         });
     }
-    let on_change = {
+    let make = {
         let (edits, to_focus, editing) = (edits.clone(), to_focus.clone(), editing.clone());
         Callback::from(move |change: Change| {
             let made = edits.make(&change);
@@ -106,7 +107,8 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             }
         })
     };
-    let on_change = use_steady(on_change);
+    let make = use_steady(make);
+    let on_change = use_apart(make, |change| matches!(change, Change::Add(_)));
     let on_undo = {
         let edits = edits.clone();
         Callback::from(move |_: MouseEvent| edits.undo())
@@ -127,7 +129,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
     };
     let on_port = use_steady(on_port);
     let on_reading = {
-        let (edits, chosen) = (edits.clone(), chosen.clone());
+        let (edits, chosen, to_focus) = (edits.clone(), chosen.clone(), to_focus.clone());
         Callback::from(move |id: String| {
             let visit = edits.visit();
             if let Some(reading) = visit.readings.iter().find(|reading| reading.id == id) {
@@ -149,6 +151,15 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
     let visit = &props.visit;
     let grouped = groups(&visit.readings, &editing);
     let told = told_before(&grouped, visit);
+    // Somebody is brought to a reading only once it is drawn.
+    let wanted = to_focus.borrow().as_ref().and_then(|id| {
+        let at = visit
+            .readings
+            .iter()
+            .position(|reading| reading.id == *id)?;
+        grouped.iter().position(|group| group.at.contains(&at))
+    });
+    let drawn = use_slices(grouped.len(), wanted.map_or(0, |place| place + 1));
     let on_key = {
         let order: Vec<String> = grouped
             .iter()
@@ -213,7 +224,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 <QuickPanel {taken} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
                 // In a list of its own: among its neighbours, one more group would have all above it made anew.
-                <>{ for grouped.into_iter().zip(told).map(|(group, told)| {
+                <>{ for grouped.into_iter().zip(told).take(drawn).map(|(group, told)| {
                     let first = group.at.first().and_then(|place| visit.readings.get(*place));
                     let first = first.map(|reading| reading.id.clone()).unwrap_or_default();
                     html! {
