@@ -144,7 +144,7 @@ impl Hands {
                 }
             }
             Route::Unit(unit) => self.ask_about_last(state, unit),
-            Route::Settings => {}
+            Route::Tracking(_) | Route::Settings => {}
         }
     }
 

@@ -209,7 +209,7 @@ fn verdict(found: &Found) -> (&'static str, &'static str) {
 }
 
 fn table(outcome: &Outcome, prefs: &UnitPrefs) -> Html {
-    html! {
+    html! { <>
         <ul class="tracking-table">
             { for outcome.found.iter().map(|found| {
                 let (words_of, class) = verdict(found);
@@ -233,7 +233,7 @@ fn table(outcome: &Outcome, prefs: &UnitPrefs) -> Html {
             }) }
         </ul>
         <p class="soft small">{ "± is a 95 % interval: least squares on the exact arc of two sides, with usual widths for what was not measured (common practice)." }</p>
-    }
+    </> }
 }
 
 fn alone(outcome: &Outcome, prefs: &UnitPrefs) -> Html {

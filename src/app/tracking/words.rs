@@ -2,7 +2,7 @@
 
 use crate::quantity::{DecimalMark, Decimals, Measure, Unit, UnitPrefs, format_with_unit};
 use crate::tracking::{
-    Agreement, Candidate, Facing, Field, Gear, Hand, Head, Lever, Load, Seen, Setting, Travel,
+    Agreement, Candidate, Facing, Field, Gear, Head, Lever, Load, Seen, Setting, Travel,
     Undercarriage, Verdict, What,
 };
 use crate::unit::MachineClass;
@@ -156,14 +156,6 @@ pub fn usual_undercarriage(class: MachineClass) -> Undercarriage {
         MachineClass::CompactTracked | MachineClass::Crawler => Undercarriage::Tracks,
         MachineClass::CompactWheeled => Undercarriage::SkidWheels,
         _ => Undercarriage::Swivel,
-    }
-}
-
-/// Left or right.
-pub fn hand(hand: Hand) -> &'static str {
-    match hand {
-        Hand::Left => "left",
-        Hand::Right => "right",
     }
 }
 
