@@ -11,6 +11,7 @@ mod journeys_call;
 mod journeys_close;
 mod journeys_offline;
 mod journeys_start;
+mod journeys_tracking;
 mod pace;
 mod rig;
 mod shots;

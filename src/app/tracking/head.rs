@@ -70,6 +70,7 @@ pub fn HeadForm(props: &HeadFormProps) -> Html {
                 on_change={on_carries}
                 testid="tracking-undercarriage"
             />
+            <div class="tracking-head">
             { for Head::ALL.into_iter().map(|head| {
                 let (base, low, high) = head.asks();
                 let unit = if head == Head::Track { words::length(&props.prefs) } else { base };
@@ -101,6 +102,7 @@ pub fn HeadForm(props: &HeadFormProps) -> Html {
                     />
                 }
             }) }
+            </div>
         </Section>
     }
 }

@@ -190,7 +190,7 @@ fn advice(props: &ResultsProps, outcome: &Outcome) -> Html {
     html! {
         <div class="tracking-next" data-testid="next-run">
             <p><strong>{ "Next run: " }</strong>{ words::candidate(&advice.run) }</p>
-            <p class="soft small">{ format!("{why}; about {minutes} (common practice). Computed from these runs.") }</p>
+            <p class="soft small">{ format!("{why}; about {minutes} (common practice).") }</p>
             <button type="button" class="button" data-testid="add-next-run" onclick={on_add}>
                 <Icon shape={Shape::Plus} />{ "Add this run" }
             </button>
