@@ -101,6 +101,17 @@ async fn a_null_is_told_from_a_bend_once_turns_are_counted() {
     assert!(rig.has("plan-view").await);
     look(&rig, "tracking-null").await;
 
+    // Counted by thumb: both counts become a run of their own.
+    for side in ["left", "right"] {
+        for _ in 0..3 {
+            press(&rig, &format!("count-{side}-tap")).await;
+        }
+    }
+    press(&rig, "take-counts").await;
+    rig.by_id("run-5").await;
+    press(&rig, "run-5-remove").await;
+    rig.wait_for_text("5 of 5 count").await;
+
     // What cannot be read stays as it was typed, over a reload too.
     type_in(&rig, "run-4-left", "24 and a bit").await;
     rig.wait_for_text("4 of 5 count").await;

@@ -9,7 +9,7 @@ use yew::{Callback, Html, Properties, component, html, use_state};
 /// Half of the drawing's width and height, in its own units, and the room kept for words at the ends.
 const HALF_WIDTH: f64 = 160.0;
 const HALF_HEIGHT: f64 = 210.0;
-const END: f64 = 46.0;
+const END: f64 = 60.0;
 const SIDE: f64 = 24.0;
 /// Least that the half width shows, m.
 const NARROW: f64 = 0.3;
@@ -194,7 +194,7 @@ fn tell(plan: &Plan, props: &PlanViewProps) -> String {
         Travel::Forward => "Forward",
         Travel::Reverse => "Reverse",
     };
-    let distance = words::aside(plan.distance, &props.prefs);
+    let distance = words::lane(plan.distance, &props.prefs);
     let now = end(&plan.before, &props.prefs);
     if props.has_after {
         let after = end(&plan.after, &props.prefs);

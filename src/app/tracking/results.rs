@@ -72,7 +72,7 @@ fn headline(outcome: &Outcome, prefs: &UnitPrefs) -> Html {
             .map(|one| one.kind.words().to_lowercase())
             .collect();
         format!(
-            "These runs prove a difference in: {}. In this order:",
+            "These runs show a difference in: {}. In this order:",
             off.join(", ")
         )
     } else if matches!(outcome.agreement, Agreement::Disagree { .. }) {

@@ -42,6 +42,24 @@ pub fn aside(metres: f64, prefs: &UnitPrefs) -> String {
         .unwrap_or_default()
 }
 
+/// The length of a lane in the shop's unit.
+pub fn lane(metres: f64, prefs: &UnitPrefs) -> String {
+    let measure = Measure::new(metres, Unit::Metre).ok();
+    let places = measure
+        .map(|measure| measure.in_unit(length(prefs)))
+        .map_or(0, |value| u8::from((value - value.round()).abs() > 0.05));
+    measure
+        .map(|measure| {
+            format_with_unit(
+                measure,
+                length(prefs),
+                Decimals::Fixed(places),
+                prefs.mark(),
+            )
+        })
+        .unwrap_or_default()
+}
+
 /// The unit in which lanes and deviations are told.
 pub fn length(prefs: &UnitPrefs) -> Unit {
     match prefs.unit(Unit::Metre.kind()) {
