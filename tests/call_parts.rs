@@ -29,6 +29,7 @@ fn reading(id: &str, port: Port, condition: Condition) -> Reading {
     Reading {
         id: id.to_owned(),
         port,
+        path: lowside::readings::Path::Left,
         condition,
         rigging: String::new(),
         seen: None,
@@ -204,6 +205,7 @@ fn judged(probability: f64, informed: bool, trust: Trust, id: FaultId) -> words:
         causes: vec![Cause {
             pair: None,
             ids: vec![id],
+            paths: Vec::new(),
             title: "cause".to_owned(),
             probability,
             shares: vec![probability],

@@ -54,7 +54,7 @@ fn readings_change_with_parameters_as_the_derivatives_say() {
     check(Layout::default(), 0.5, 60.0);
     check(
         Layout {
-            held: true,
+            held: [true; 2],
             ..Layout::default()
         },
         0.1,
@@ -83,7 +83,7 @@ fn readings_change_with_parameters_as_the_derivatives_say() {
 #[test]
 fn the_knee_moves_with_parameters_as_the_derivatives_say() {
     let net = Network::new(Layout {
-        held: true,
+        held: [true; 2],
         ..Layout::default()
     });
     let mut theta = healthy();

@@ -2,10 +2,11 @@
 //! Prints iteration counts and the share of each outcome (`cargo test --test circuit_random -- --nocapture`).
 
 use lowside::circuit::{
-    ControlBuild, DumpBuild, FilterBuild, Layout, Network, NoState, Param, Params, Route, Scale,
-    healthy,
+    Arrangement, ControlBuild, DumpBuild, FilterBuild, Layout, Network, NoState, Param, Params,
+    Route, Scale, healthy,
 };
 use lowside::math;
+use lowside::readings::Path;
 
 /// A small seeded generator (splitmix64), so that every run sees the same machines.
 struct Seeded(u64);
@@ -52,8 +53,9 @@ fn layout(r: &mut Seeded) -> Layout {
         dump: r.of(&[DumpBuild::Gallery, DumpBuild::Across, DumpBuild::Case]),
         relief_to_tank: r.chance(0.3),
         separate_cases: r.chance(0.3),
-        held: r.chance(0.4),
-        bridged: r.chance(0.1),
+        arrangement: Arrangement::Single,
+        held: [r.chance(0.4), false],
+        bridged: [r.chance(0.1), false],
     }
 }
 
@@ -176,6 +178,54 @@ fn every_machine_ends_with_a_state_or_a_reason() {
     );
     assert!(
         (hunts as usize) < MACHINES / 500,
+        "{hunts} of {MACHINES} without a state"
+    );
+}
+
+/// A tandem: the same make left and right, each with its own condition and troubles.
+fn tandem(r: &mut Seeded) -> (Layout, Params) {
+    let layout = Layout {
+        arrangement: Arrangement::Tandem,
+        ..layout(r)
+    };
+    let layout = Layout {
+        held: [r.chance(0.4), r.chance(0.4)],
+        bridged: [r.chance(0.1), r.chance(0.1)],
+        ..layout
+    };
+    let mut theta = machine(r);
+    let other = machine(r);
+    for p in Param::ALL {
+        theta[p.on(Path::Right)] = other[*p as usize];
+    }
+    (layout, theta)
+}
+
+#[test]
+fn every_tandem_ends_with_a_state_or_a_reason() {
+    const MACHINES: usize = 10_000;
+    let mut r = Seeded(20_261_202);
+    let (mut routes, mut hunts) = ([0u32; 3], 0usize);
+    for i in 0..MACHINES {
+        let (layout, theta) = tandem(&mut r);
+        match Network::new(layout).solve(&theta, None) {
+            Ok(s) => {
+                assert!(s.state.iter().all(|v| v.is_finite()), "machine {i}");
+                let flow = theta[Param::PumpDisp as usize] * theta[Param::Speed as usize] * 2e-3;
+                assert!(
+                    s.imbalance < 1e-5 * (1.0 + flow),
+                    "machine {i}: {} L/min left over",
+                    s.imbalance
+                );
+                routes[s.route as usize] += 1;
+            }
+            Err(NoState::Hunts) => hunts += 1,
+            Err(NoState::BadFigure) => panic!("machine {i}: a valid machine was refused"),
+        }
+    }
+    println!("{MACHINES} tandems: direct, from rest, run up {routes:?}, would hunt {hunts}");
+    assert!(
+        hunts < MACHINES / 200,
         "{hunts} of {MACHINES} without a state"
     );
 }

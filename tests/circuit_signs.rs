@@ -4,7 +4,7 @@
 //! Signs and shapes from common practice and from the balance of oil; no fixed pressures are asserted.
 
 use lowside::circuit::{Layout, Network, Node, Param, Params, Solution, healthy};
-use lowside::readings::Port;
+use lowside::readings::{Path, Port};
 
 const PSI: f64 = 0.068_947_572_931_683_6;
 
@@ -44,7 +44,7 @@ fn run(state: State, speed: f64, change: &[(Param, f64)]) -> Run {
         State::Held(l) => (true, l, 0.0),
     };
     let net = Network::new(Layout {
-        held,
+        held: [held; 2],
         ..Layout::default()
     });
     let mut theta = healthy();
@@ -183,7 +183,7 @@ fn a_starved_low_side_makes_no_oil() {
         shut.read(Port::MotorShaft),
         sound.read(Port::MotorShaft)
     );
-    assert!(shut.net.filled(&shut.solution, &shut.theta) < 0.97);
+    assert!(shut.net.filled(Path::Left, &shut.solution.state, &shut.theta) < 0.97);
     assert!(shut.read(Port::ReturnFlow) < sound.read(Port::ReturnFlow) + 0.5);
     assert!(shut.at(Node::APump) > -1.0);
 }
@@ -271,13 +271,11 @@ fn pump_wear_lowers_the_motor_drain_under_load() {
 fn both_checks_pass_oil_in_neutral_and_one_is_shut_in_drive() {
     let neutral = run(State::Neutral, 2400.0, &[]);
     let flow = |r: &Run, to: Node| {
-        let check = r
-            .net
-            .elements()
-            .iter()
-            .find(|e| e.from == Node::Gallery && e.to == to)
-            .expect("a check");
-        r.net.flow(check, &r.solution.state, &r.theta)
+        r.net
+            .flows(&r.solution.state, &r.theta)
+            .find(|(e, _)| e.from == Node::Gallery && e.to == to)
+            .expect("a check")
+            .1
     };
     let leak = neutral.read(Port::MotorDrain);
     assert!(flow(&neutral, Node::APump) > 0.2 * leak && flow(&neutral, Node::BPump) > 0.2 * leak);

@@ -3,7 +3,7 @@
 #![allow(clippy::disallowed_methods)] // the platform's own functions: an outside check
 
 use lowside::ranking::{Belief, Data, Datum, Prediction, Says, fit, normalised};
-use lowside::readings::Port;
+use lowside::readings::{Path, Port};
 
 /// Chance that a rigging is wrong, in these tests.
 const WRONG: f64 = 0.03;
@@ -24,6 +24,8 @@ fn data(t: &[f64], own: &[f64], bias: &[f64], groups: &[usize], wrong: f64) -> D
                 own: own[i],
                 bias: bias[i],
                 group: groups[i],
+                gauge: groups[i],
+                path: Path::Left,
                 swung: false,
                 instrument: 0.0,
             })

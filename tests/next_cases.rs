@@ -255,7 +255,7 @@ fn the_plateau_waits_for_the_steps() {
 fn an_operators_word_leaves_room_for_ones_own_look() {
     let mut v = visit(vec![]);
     let open = |v: &Visit, id| {
-        lowside::next::open_answers(v, check(id))
+        lowside::next::open_answers(&roller(), v, check(id))
             .iter()
             .any(|o| o.id == "slow-to-answer")
     };

@@ -521,6 +521,7 @@ fn figures_that_would_be_refused_go_out_as_text() {
     let reading = |id: &str, seen| Reading {
         id: id.into(),
         port: Port::Charge,
+        path: lowside::readings::Path::Left,
         condition: Condition {
             engine,
             ..Condition::start()

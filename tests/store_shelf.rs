@@ -710,6 +710,7 @@ fn a_record_that_cannot_be_written_is_refused_with_the_reason() {
     let reading = Reading {
         id: "r1".into(),
         port: Port::Charge,
+        path: lowside::readings::Path::Left,
         condition: Condition::start(),
         rigging: String::new(),
         seen: Some(share),

@@ -3,6 +3,7 @@
 
 use crate::faults::FaultId;
 use crate::next::Advice;
+use crate::readings::Path;
 use serde::{Deserialize, Serialize};
 
 /// Where an expected window comes from.
@@ -99,6 +100,9 @@ pub struct Cause {
     /// Probabilities of the members, same order as `ids`; where the row joins twins they are no more than base rates.
     /// Empty for a pair: its two causes are at work together.
     pub shares: Vec<f64>,
+    /// On a machine with two paths the side of each member, same order as `ids`; empty where no member has a side.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub paths: Vec<Option<Path>>,
     /// Set where the row is two causes at work at the same time (`ids` holds both).
     #[serde(default, skip_serializing_if = "Option::is_none")]
     pub pair: Option<Pair>,
@@ -112,6 +116,69 @@ pub struct Cause {
     pub evidence: Vec<Evidence>,
     /// What the readings taken would be under it.
     pub would_read: Vec<WouldRead>,
+}
+
+impl Cause {
+    /// Members with their sides.
+    pub fn members(&self) -> impl Iterator<Item = At> + '_ {
+        self.ids.iter().enumerate().map(|(i, id)| At {
+            id: *id,
+            path: self.paths.get(i).copied().flatten(),
+        })
+    }
+
+    /// A name of its own among the rows of an assessment.
+    pub fn key(&self) -> String {
+        let members: Vec<String> = self.members().map(|m| m.key()).collect();
+        members.join("+")
+    }
+}
+
+/// A cause, and on a machine with two paths the side it is on.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
+pub struct At {
+    /// Cause.
+    pub id: FaultId,
+    /// Side; none where there is one path, or where the part is common to both.
+    pub path: Option<Path>,
+}
+
+impl At {
+    /// A cause on a machine with one path.
+    pub fn only(id: FaultId) -> At {
+        At { id, path: None }
+    }
+
+    /// Its title, the side first.
+    pub fn title(&self) -> String {
+        let title = crate::faults::find(self.id).map_or("", |f| f.title);
+        sided(self.path, title)
+    }
+
+    /// Its stable id, with the side.
+    pub fn key(&self) -> String {
+        match self.path {
+            Some(path) => format!("{}@{}", self.id.code(), path.words()),
+            None => self.id.code(),
+        }
+    }
+}
+
+/// A title with the side in front of it.
+pub fn sided(path: Option<Path>, title: &str) -> String {
+    match path {
+        Some(Path::Left) => format!("Left: {}", lower_first(title)),
+        Some(Path::Right) => format!("Right: {}", lower_first(title)),
+        None => title.to_string(),
+    }
+}
+
+/// A title as it stands within a sentence.
+pub fn lower_first(words: &str) -> String {
+    let mut letters = words.chars();
+    letters
+        .next()
+        .map_or(String::new(), |c| c.to_lowercase().chain(letters).collect())
 }
 
 /// Two causes at work at the same time: what each of them explains that the other does not.

@@ -87,7 +87,7 @@ pub const TABLE: &[Check] = &[
             "Steering is reversed afterwards: no travel, wheels or tracks clear only.",
         ],
         instruments: "spanners, caps",
-        answers: &["hooks"],
+        answers: &["hoses-change-sides"],
         minutes_first: 30.0,
         minutes_again: 30.0,
         hazard: 3,

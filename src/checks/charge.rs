@@ -2,7 +2,7 @@
 
 use super::{BASE, Check};
 use super::{Idle, Yield};
-use crate::readings::{Direction, Doing, Lever, Port};
+use crate::readings::{Direction, Doing, Lever, Port, Stroked};
 
 const GAUGE: &str = "0 to 60 bar, class 1.0 (0 to 25 bar on small units)";
 const PROVED: &str =
@@ -70,6 +70,33 @@ pub const TABLE: &[Check] = &[
         ],
         separates: "Flushing, one direction, a shuttle stuck to one side.",
         put_back: &["Charge port plugged"],
+        ..BASE
+    },
+    Check {
+        id: "charge-one-side-alone",
+        title: "Charge with one side driven alone",
+        how: &[
+            "Half stroke or less, light load: left alone, then right alone, then both, the same gauge not moved.",
+            "A side that takes more than the other, or a fall while one side alone is driven, points to that side's leakage.",
+        ],
+        instruments: GAUGE,
+        yields: &[
+            Yield::driven(Port::Charge, Doing::Free, Direction::Forward, Lever::Half)
+                .stroked(Stroked::Left),
+            Yield::driven(Port::Charge, Doing::Free, Direction::Forward, Lever::Half)
+                .stroked(Stroked::Right),
+        ],
+        minutes_first: 14.0,
+        minutes_again: 3.0,
+        hazard: 2,
+        precautions: &[
+            PROVED,
+            "Tracks or wheels of both sides clear of the ground: one side driven alone turns the machine on the spot",
+            "Gauge hose tied clear of wheels and tracks, read from the seat or by phone film",
+        ],
+        separates: "Which side takes the charge oil.",
+        put_back: &["Charge port plugged"],
+        two_path: true,
         ..BASE
     },
     Check {

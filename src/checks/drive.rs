@@ -30,6 +30,7 @@ pub const TABLE: &[Check] = &[
             "fast-in-low",
             "top-speed-low",
             "hooks",
+            "turns-alike-and-bends",
         ],
         minutes_first: 5.0,
         minutes_again: 2.0,

@@ -1,6 +1,7 @@
 //! Electrics and linkage before oil: no pipe opened.
 
 use super::Yield;
+use super::facts::NOT_ALONE;
 use super::{BASE, Check};
 use crate::readings::{Direction, Doing, Lever, Port};
 
@@ -79,6 +80,29 @@ pub const TABLE: &[Check] = &[
         ],
         separates: "Signal from valve and pump, without a gauge.",
         put_back: &["Control plugs back on their own coils"],
+        ..BASE
+    },
+    Check {
+        id: "swap-side-signals",
+        title: "Swap the control signals left and right",
+        how: &[
+            "Engine off: change the plugs or pilot lines of the left and the right pump over, forward with forward.",
+            "Start at low idle, a little lever: left asks right. The trouble changes sides: signal, lever or controller. It stays: pump,              motor or brake of that side.",
+        ],
+        instruments: "none; caps and rag for pilot lines",
+        answers: &["signals-change-sides"],
+        minutes_first: 5.0,
+        minutes_again: 2.0,
+        hazard: 3,
+        precautions: &[
+            "Engine off while plugs or lines are moved",
+            "Every driven wheel or track clear of the ground; no travel while steering is reversed",
+            "The person in the seat knows that left asks right",
+            NOT_ALONE,
+        ],
+        separates: "Signal of a side from its hydraulics, without a gauge.",
+        put_back: &["Control signals back on their own side, steering proved"],
+        two_path: true,
         ..BASE
     },
     Check {

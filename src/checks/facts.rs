@@ -3,6 +3,9 @@
 use super::{Check, HIGHEST_HAZARD};
 use crate::readings::Doing;
 
+/// A second person where a check is never made alone.
+pub const NOT_ALONE: &str = "Not alone on site: a second person at the stop, named";
+
 /// Facts of every check from hazard 1 up, machine standing on its wheels or tracks.
 pub const COMMON: &[&str] = &[
     "Parking brake set",

@@ -26,6 +26,8 @@ pub const TABLE: &[Check] = &[
             "fast-in-low",
             "rolls-in-neutral",
             "hooks",
+            "pulls-left",
+            "pulls-right",
             "weak-hot",
             "bad-cold",
             "worse-tilted",

@@ -1,5 +1,6 @@
 //! Held checks and pump isolation: last, or never.
 
+use super::facts::NOT_ALONE;
 use super::{BASE, Check, Idle, Yield};
 use crate::readings::{Direction, Doing, Lever, Port};
 
@@ -12,7 +13,6 @@ const KNOWN_GOOD: &str =
     "Oil level, charge pressure and oil temperature (40 to 80 °C) read and good";
 const RATED: &str =
     "Gauge, hoses and caps rated over the loop relief; connected with engine off and loop bled";
-const NOT_ALONE: &str = "Not alone on site: a second person at the stop, named";
 
 const fn held(port: Port, direction: Direction, share: f64) -> Yield {
     Yield::driven(port, Doing::Held, direction, Lever::Share(share)).at(Idle::Middle)

@@ -1,7 +1,9 @@
 //! A reading that a check yields: port and condition, without the temperature of the day.
 
 use crate::quantity::{Kind, Measure};
-use crate::readings::{Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Port};
+use crate::readings::{
+    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Port, Stroked,
+};
 
 /// Engine speed (rpm) of held checks: 1200 to 1500 is common practice.
 const MIDDLE: f64 = 1500.0;
@@ -34,6 +36,8 @@ pub struct Yield {
     pub flushing_blocked: bool,
     /// Consumers capped.
     pub consumers_capped: bool,
+    /// Path stroked, on a machine with two.
+    pub stroked: Stroked,
 }
 
 impl Yield {
@@ -47,6 +51,7 @@ impl Yield {
             idle,
             flushing_blocked: false,
             consumers_capped: false,
+            stroked: Stroked::Both,
         }
     }
 
@@ -78,6 +83,11 @@ impl Yield {
         }
     }
 
+    /// The same with one path stroked and the other at rest.
+    pub const fn stroked(self, stroked: Stroked) -> Yield {
+        Yield { stroked, ..self }
+    }
+
     /// The same with consumers capped.
     pub const fn consumers_capped(self) -> Yield {
         Yield {
@@ -102,6 +112,7 @@ impl Yield {
             oil,
             flushing_blocked: self.flushing_blocked,
             consumers_capped: self.consumers_capped,
+            stroked: self.stroked,
         }
     }
 }

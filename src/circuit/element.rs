@@ -2,10 +2,11 @@
 //! parameters it uses. To add an element: one row here (and its law in `law.rs`, if no present law fits).
 
 use super::law::{self, Servo};
-use super::layout::{ControlBuild, DumpBuild, FilterBuild, Layout};
+use super::layout::{Arrangement, ControlBuild, DumpBuild, FilterBuild, Layout};
 use super::node::Node;
 use super::param::Param;
 use super::real::{Real, limited, positive};
+use crate::readings::Path;
 
 /// What kind of element a row is.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -46,9 +47,27 @@ pub enum Law {
     Torque,
 }
 
+impl Law {
+    /// True for what a tandem has once.
+    fn feeds_both(self) -> bool {
+        matches!(
+            self,
+            Law::Suction
+                | Law::ChargePump
+                | Law::ChargeSlip
+                | Law::ChargeFilter
+                | Law::NeutralRelief
+                | Law::Consumers
+                | Law::Line(P::PumpCaseLine, _)
+        )
+    }
+}
+
 /// One row of the circuit.
 #[derive(Clone, Copy, Debug)]
 pub struct Element {
+    /// Path whose nodes and parameters are meant.
+    pub path: Path,
     /// Law.
     pub law: Law,
     /// Where the flow leaves.
@@ -68,6 +87,7 @@ use Param as P;
 
 fn two(law: Law, from: Node, to: Node, params: &'static [Param]) -> Element {
     Element {
+        path: Path::Left,
         law,
         from,
         to,
@@ -101,8 +121,25 @@ pub const STROKE: &[Param] = &[
     P::LimiterB,
 ];
 
-/// The rows of a layout.
+/// The rows of a layout: of one path, or of a tandem (of paths that are wholly apart: of the left one).
 pub fn elements(layout: &Layout) -> Vec<Element> {
+    let mut rows = path_elements(layout);
+    if layout.arrangement == Arrangement::Tandem {
+        let own: Vec<Element> = rows
+            .iter()
+            .filter(|e| !e.law.feeds_both())
+            .map(|e| Element {
+                path: Path::Right,
+                ..*e
+            })
+            .collect();
+        rows.extend(own);
+    }
+    rows
+}
+
+/// The rows of one path with all that feeds it.
+fn path_elements(layout: &Layout) -> Vec<Element> {
     let relief_to = if layout.relief_to_tank {
         Tank
     } else {
@@ -119,6 +156,7 @@ pub fn elements(layout: &Layout) -> Vec<Element> {
         PumpCase
     };
     let wide = |law, from, to, inputs, arity, params| Element {
+        path: Path::Left,
         law,
         from,
         to,
@@ -333,7 +371,13 @@ const SUCTION_FILTER_SHARE: f64 = 0.2;
 
 /// Flow (L/min) through an element, or the net torque (bar) of the shaft row.
 #[inline(always)]
-pub fn flow<S: Real>(law: Law, layout: &Layout, v: &[S; 4], g: &impl Fn(Param) -> S) -> S {
+pub fn flow<S: Real>(
+    law: Law,
+    layout: &Layout,
+    path: Path,
+    v: &[S; 4],
+    g: &impl Fn(Param) -> S,
+) -> S {
     let dp = v[0] - v[1];
     match law {
         Law::Suction => {
@@ -376,7 +420,7 @@ pub fn flow<S: Real>(law: Law, layout: &Layout, v: &[S; 4], g: &impl Fn(Param) -
             let gain = g(P::PumpDisp) * 2.4 / (g(P::LoopOverride) * g(set));
             law::relief(dp, g(set), gain)
         }
-        Law::Pump => pump(layout, v, g),
+        Law::Pump => pump(layout, path, v, g),
         Law::Leak(size) => law::laminar(dp, g(size), g(P::Viscosity)),
         Law::Line(r1, r2) => law::line(dp, g(r1) * g(P::Viscosity), g(r2)),
         Law::Motor => {
@@ -416,8 +460,8 @@ const STOPS: f64 = 1.03;
 
 /// Stroke asked by lever, signal and linkage, before the servo (signed share of full stroke).
 #[inline(always)]
-pub fn asked<S: Real>(layout: &Layout, g: &impl Fn(Param) -> S) -> S {
-    if layout.bridged {
+pub fn asked<S: Real>(layout: &Layout, path: Path, g: &impl Fn(Param) -> S) -> S {
+    if layout.bridged[path as usize] {
         return S::constant(0.0);
     }
     let lever = g(P::Lever);
@@ -453,12 +497,17 @@ fn sense_direction<S: Real>(lever: S) -> S {
 
 /// Stroke of the main pump, signed share of full stroke, from the pressures `[B, A, gallery, pump case]` at the pump.
 #[inline(always)]
-pub fn stroke<S: Real>(layout: &Layout, v: &[S; 4], g: &impl Fn(Param) -> S) -> S {
-    let asked = asked(layout, g);
+pub fn stroke<S: Real>(
+    layout: &Layout,
+    path: Path,
+    v: &[S; 4],
+    g: &impl Fn(Param) -> S,
+) -> S {
+    let asked = asked(layout, path, g);
     let offset = match layout.control {
         // Feedback takes most of a servo offset back, unless the ports are bridged.
         ControlBuild::Feedback | ControlBuild::Pilot | ControlBuild::Electric
-            if !layout.bridged =>
+            if !layout.bridged[path as usize] =>
         {
             g(P::NullServo) * 0.2
         }
@@ -496,8 +545,8 @@ pub fn stroke<S: Real>(layout: &Layout, v: &[S; 4], g: &impl Fn(Param) -> S) -> 
 }
 
 #[inline(always)]
-fn pump<S: Real>(layout: &Layout, v: &[S; 4], g: &impl Fn(Param) -> S) -> S {
-    let stroke = stroke(layout, v, g);
+fn pump<S: Real>(layout: &Layout, path: Path, v: &[S; 4], g: &impl Fn(Param) -> S) -> S {
+    let stroke = stroke(layout, path, v, g);
     let inlet = if stroke.value() >= 0.0 { v[0] } else { v[1] };
     let ideal = g(P::PumpDisp) * g(P::Speed) * g(P::InputGrip) * 1e-3;
     ideal * stroke * law::fill(inlet, g(P::Atmosphere))

@@ -42,6 +42,18 @@ pub enum DumpBuild {
     Case,
 }
 
+/// How many paths there are, and what they share.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord)]
+pub enum Arrangement {
+    /// One path.
+    #[default]
+    Single,
+    /// Left and right on one charge gallery and in one pump housing.
+    Tandem,
+    /// Left and right, each with its own charge pump: they share engine, oil and operator only.
+    Apart,
+}
+
 /// A build of the circuit, and the two facts of a condition that change its equations.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub struct Layout {
@@ -55,10 +67,12 @@ pub struct Layout {
     pub relief_to_tank: bool,
     /// Motor case drains on its own, not through the pump case.
     pub separate_cases: bool,
-    /// The motor cannot turn.
-    pub held: bool,
-    /// Servo ports bridged: the control has no say.
-    pub bridged: bool,
+    /// Paths.
+    pub arrangement: Arrangement,
+    /// The motor cannot turn, left (or the only one) and right.
+    pub held: [bool; 2],
+    /// Servo ports bridged, left (or the only ones) and right: the control has no say.
+    pub bridged: [bool; 2],
 }
 
 impl Default for Layout {
@@ -69,8 +83,9 @@ impl Default for Layout {
             dump: DumpBuild::Gallery,
             relief_to_tank: false,
             separate_cases: false,
-            held: false,
-            bridged: false,
+            arrangement: Arrangement::Single,
+            held: [false; 2],
+            bridged: [false; 2],
         }
     }
 }

@@ -1,31 +1,29 @@
-//! Dense LU with partial pivoting for the circuit's few unknowns. No allocation.
+//! Dense LU with partial pivoting for the circuit's few unknowns, of which there are `N`. No allocation.
 // Index loops are the clearest way to write elimination.
 #![allow(clippy::needless_range_loop)]
 
-use super::node::UNKNOWNS;
-
 /// Square matrix of the circuit.
-pub type Matrix = [[f64; UNKNOWNS]; UNKNOWNS];
+pub type Matrix<const N: usize> = [[f64; N]; N];
 /// Vector of the circuit.
-pub type Vector = [f64; UNKNOWNS];
+pub type Vector<const N: usize> = [f64; N];
 
 /// A factorised matrix.
 #[derive(Clone, Copy, Debug)]
-pub struct Lu {
-    a: Matrix,
-    order: [usize; UNKNOWNS],
+pub struct Lu<const N: usize> {
+    a: Matrix<N>,
+    order: [usize; N],
 }
 
-impl Lu {
+impl<const N: usize> Lu<N> {
     /// Factorises; none where the matrix is singular or not finite.
-    pub fn new(mut a: Matrix) -> Option<Lu> {
-        let mut order = [0; UNKNOWNS];
+    pub fn new(mut a: Matrix<N>) -> Option<Lu<N>> {
+        let mut order = [0; N];
         for (i, o) in order.iter_mut().enumerate() {
             *o = i;
         }
-        for k in 0..UNKNOWNS {
+        for k in 0..N {
             let mut best = k;
-            for r in k + 1..UNKNOWNS {
+            for r in k + 1..N {
                 if a[r][k].abs() > a[best][k].abs() {
                     best = r;
                 }
@@ -37,11 +35,11 @@ impl Lu {
             a.swap(k, best);
             order.swap(k, best);
             let inverse = 1.0 / a[k][k];
-            for r in k + 1..UNKNOWNS {
+            for r in k + 1..N {
                 if a[r][k] != 0.0 {
                     let factor = a[r][k] * inverse;
                     a[r][k] = factor;
-                    for c in k + 1..UNKNOWNS {
+                    for c in k + 1..N {
                         a[r][c] -= factor * a[k][c];
                     }
                 }
@@ -51,18 +49,18 @@ impl Lu {
     }
 
     /// Solves A x = b.
-    pub fn solve(&self, b: &Vector) -> Vector {
-        let mut x = [0.0; UNKNOWNS];
-        for i in 0..UNKNOWNS {
+    pub fn solve(&self, b: &Vector<N>) -> Vector<N> {
+        let mut x = [0.0; N];
+        for i in 0..N {
             let mut sum = b[self.order[i]];
             for j in 0..i {
                 sum -= self.a[i][j] * x[j];
             }
             x[i] = sum;
         }
-        for i in (0..UNKNOWNS).rev() {
+        for i in (0..N).rev() {
             let mut sum = x[i];
-            for j in i + 1..UNKNOWNS {
+            for j in i + 1..N {
                 sum -= self.a[i][j] * x[j];
             }
             x[i] = sum / self.a[i][i];
@@ -71,24 +69,24 @@ impl Lu {
     }
 
     /// Solves Aᵀ x = b.
-    pub fn solve_transposed(&self, b: &Vector) -> Vector {
+    pub fn solve_transposed(&self, b: &Vector<N>) -> Vector<N> {
         let mut y = *b;
-        for i in 0..UNKNOWNS {
+        for i in 0..N {
             let mut sum = y[i];
             for j in 0..i {
                 sum -= self.a[j][i] * y[j];
             }
             y[i] = sum / self.a[i][i];
         }
-        for i in (0..UNKNOWNS).rev() {
+        for i in (0..N).rev() {
             let mut sum = y[i];
-            for j in i + 1..UNKNOWNS {
+            for j in i + 1..N {
                 sum -= self.a[j][i] * y[j];
             }
             y[i] = sum;
         }
-        let mut x = [0.0; UNKNOWNS];
-        for i in 0..UNKNOWNS {
+        let mut x = [0.0; N];
+        for i in 0..N {
             x[self.order[i]] = y[i];
         }
         x

@@ -12,9 +12,9 @@ mod real;
 mod solve;
 
 pub use element::{Element, Law};
-pub use layout::{ControlBuild, DumpBuild, FilterBuild, Layout};
+pub use layout::{Arrangement, ControlBuild, DumpBuild, FilterBuild, Layout};
 pub use network::Network;
-pub use node::{Node, State, UNKNOWNS};
+pub use node::{Node, State};
 pub use output::Shown;
-pub use param::{Param, Params, Scale, healthy};
+pub use param::{Belongs, Param, Params, Scale, VALUES, healthy};
 pub use solve::{NoState, Route, Solution};

@@ -1,37 +1,82 @@
 //! The elements put together: balance of flow at every node, its exact derivatives, and its change with each parameter.
+//!
+//! `N` is the number of places that are solved for: one path, or a tandem (`node.rs`). Paths that are wholly apart are two
+//! circuits of one path each, side by side in one state.
 
 use super::element::{Element, Law, elements, flow};
-use super::layout::Layout;
+use super::layout::{Arrangement, Layout};
 use super::lu::{Matrix, Vector};
 use super::node::{Node, State, UNKNOWNS};
-use super::param::{Param, Params};
+use super::param::{Belongs, Param, Params, VALUES};
 use super::real::{Dual, Real};
+use crate::readings::Path;
 
 /// Most parameters that one element uses.
 const PARAM_LANES: usize = 20;
+
+/// An element with the places of its nodes in a state.
+#[derive(Clone, Debug)]
+struct Row {
+    element: Element,
+    from: usize,
+    to: usize,
+    inputs: [usize; 4],
+}
 
 /// A circuit of one build, ready to be solved for any parameters.
 #[derive(Clone, Debug)]
 pub struct Network {
     layout: Layout,
-    elements: Vec<Element>,
+    rows: Vec<Row>,
+    /// The right path, where it is a circuit of its own.
+    pub(super) apart: Option<Box<Network>>,
 }
 
 #[inline(always)]
-fn gather<S: Real>(element: &Element, x: &State, lane: impl Fn(f64, usize) -> S) -> [S; 4] {
+fn gather<S: Real>(row: &Row, x: &State, lane: impl Fn(f64, usize) -> S) -> [S; 4] {
     let mut v = [S::constant(0.0); 4];
-    for (i, slot) in v.iter_mut().enumerate().take(element.arity) {
-        *slot = lane(x[element.inputs[i].at()], i);
+    for (i, slot) in v.iter_mut().enumerate().take(row.element.arity) {
+        *slot = lane(x[row.inputs[i]], i);
     }
     v
+}
+
+/// Place of the value that a path's elements use: what is common is taken from the left path.
+#[inline(always)]
+pub(super) fn used(path: Path, p: Param) -> usize {
+    match (path, p.belongs()) {
+        (Path::Right, Belongs::Path) => p.on(Path::Right),
+        _ => p.on(Path::Left),
+    }
 }
 
 impl Network {
     /// The circuit of a layout.
     pub fn new(layout: Layout) -> Network {
+        let rows = elements(&layout)
+            .into_iter()
+            .map(|element| {
+                let at = |n: Node| n.in_tandem(element.path);
+                Row {
+                    from: at(element.from),
+                    to: at(element.to),
+                    inputs: element.inputs.map(at),
+                    element,
+                }
+            })
+            .collect();
+        let apart = (layout.arrangement == Arrangement::Apart).then(|| {
+            Box::new(Network::new(Layout {
+                arrangement: Arrangement::Single,
+                held: [layout.held[1]; 2],
+                bridged: [layout.bridged[1]; 2],
+                ..layout
+            }))
+        });
         Network {
             layout,
-            elements: elements(&layout),
+            rows,
+            apart,
         }
     }
 
@@ -40,146 +85,195 @@ impl Network {
         &self.layout
     }
 
-    /// Its rows.
-    pub fn elements(&self) -> &[Element] {
-        &self.elements
+    /// Place of a path's node in a state.
+    pub fn at(&self, path: Path, node: Node) -> usize {
+        match (path, self.layout.arrangement) {
+            (Path::Left, _) | (_, Arrangement::Single) => node.at(),
+            (Path::Right, Arrangement::Tandem) => node.in_tandem(path),
+            (Path::Right, Arrangement::Apart) => match node {
+                Node::Tank => node.at(),
+                own => UNKNOWNS + 1 + own.at(),
+            },
+        }
+    }
+
+    /// The same parameters, those of the right path in the first place.
+    pub(super) fn right_view(theta: &Params) -> Params {
+        let mut view = *theta;
+        for p in Param::ALL {
+            if p.belongs() != Belongs::Machine {
+                view[p.on(Path::Left)] = theta[p.on(Path::Right)];
+            }
+        }
+        view
+    }
+
+    /// A change with the parameters in the places of [`Network::right_view`], put back where they belong.
+    pub(super) fn from_right_view(view: &Params) -> Params {
+        let mut out = [0.0; VALUES];
+        for p in Param::ALL {
+            let home = if p.belongs() == Belongs::Machine {
+                Path::Left
+            } else {
+                Path::Right
+            };
+            out[p.on(home)] = view[p.on(Path::Left)];
+        }
+        out
     }
 
     /// Flow through one element at a state.
-    pub fn flow(&self, element: &Element, x: &State, theta: &Params) -> f64 {
-        let v = gather(element, x, |value, _| value);
-        flow(element.law, &self.layout, &v, &|p: Param| theta[p as usize])
+    fn flow_of(&self, row: &Row, x: &State, theta: &Params) -> f64 {
+        let v = gather(row, x, |value, _| value);
+        let path = row.element.path;
+        flow(row.element.law, &self.layout, path, &v, &|p: Param| {
+            theta[used(path, p)]
+        })
     }
 
-    /// Net inflow at every node (L/min; bar of torque in the shaft row).
-    pub fn balance(&self, x: &State, theta: &Params) -> Vector {
-        let mut f = [0.0; UNKNOWNS + 1];
-        for e in &self.elements {
-            let q = self.flow(e, x, theta);
-            f[e.from.at()] -= q;
-            f[e.to.at()] += q;
-        }
-        self.close(f, x)
+    /// Every element with the flow through it (L/min; bar of torque for the shaft's).
+    pub fn flows<'a>(
+        &'a self,
+        x: &'a State,
+        theta: &'a Params,
+    ) -> impl Iterator<Item = (&'a Element, f64)> {
+        self.rows
+            .iter()
+            .map(move |r| (&r.element, self.flow_of(r, x, theta)))
     }
 
-    /// Net inflow and its exact derivatives with respect to the unknowns.
-    pub fn balance_and_slope(&self, x: &State, theta: &Params) -> (Vector, Matrix) {
-        let mut f = [0.0; UNKNOWNS + 1];
-        let mut j = [[0.0; UNKNOWNS]; UNKNOWNS];
-        for e in &self.elements {
-            if e.arity == 2 {
-                self.stamp::<2>(e, x, theta, &mut f, &mut j);
+    /// Net inflow at every node and its exact derivatives with respect to the unknowns.
+    pub(super) fn balance_and_slope<const N: usize>(
+        &self,
+        x: &State,
+        theta: &Params,
+    ) -> (Vector<N>, Matrix<N>) {
+        let mut f = [0.0; N];
+        let mut j = [[0.0; N]; N];
+        for row in &self.rows {
+            if row.element.arity == 2 {
+                self.stamp::<2, N>(row, x, theta, &mut f, &mut j);
             } else {
-                self.stamp::<4>(e, x, theta, &mut f, &mut j);
+                self.stamp::<4, N>(row, x, theta, &mut f, &mut j);
             }
         }
-        if self.layout.held {
-            j[Node::Shaft.at()] = [0.0; UNKNOWNS];
-            j[Node::Shaft.at()][Node::Shaft.at()] = -1.0;
+        for (place, value) in self.fixed::<N>(x) {
+            f[place] = -value;
+            j[place] = [0.0; N];
+            j[place][place] = -1.0;
         }
-        (self.close(f, x), j)
+        (f, j)
     }
 
     #[inline(always)]
-    fn stamp<const N: usize>(
+    fn stamp<const L: usize, const N: usize>(
         &self,
-        e: &Element,
+        row: &Row,
         x: &State,
         theta: &Params,
-        f: &mut [f64; UNKNOWNS + 1],
-        j: &mut Matrix,
+        f: &mut Vector<N>,
+        j: &mut Matrix<N>,
     ) {
-        let v = gather(e, x, |value, lane| {
-            if lane < N {
-                Dual::<N>::input(value, lane)
+        let e = &row.element;
+        let v = gather(row, x, |value, lane| {
+            if lane < L {
+                Dual::<L>::input(value, lane)
             } else {
                 Dual::constant(value)
             }
         });
-        let q = flow(e.law, &self.layout, &v, &|p: Param| {
-            Dual::<N>::constant(theta[p as usize])
+        let q = flow(e.law, &self.layout, e.path, &v, &|p: Param| {
+            Dual::<L>::constant(theta[used(e.path, p)])
         });
-        let (from, to) = (e.from.at(), e.to.at());
-        f[from] -= q.v;
-        f[to] += q.v;
+        let (from, to) = (row.from, row.to);
+        if from < N {
+            f[from] -= q.v;
+        }
+        if to < N {
+            f[to] += q.v;
+        }
         for (lane, d) in q.d.iter().enumerate().take(e.arity) {
-            let column = e.inputs[lane].at();
-            if column < UNKNOWNS {
-                if from < UNKNOWNS {
+            let column = row.inputs[lane];
+            if column < N {
+                if from < N {
                     j[from][column] -= d;
                 }
-                if to < UNKNOWNS {
+                if to < N {
                     j[to][column] += d;
                 }
             }
         }
     }
 
-    fn close(&self, f: [f64; UNKNOWNS + 1], x: &State) -> Vector {
-        let mut out = [0.0; UNKNOWNS];
-        out.copy_from_slice(&f[..UNKNOWNS]);
-        if self.layout.held {
-            out[Node::Shaft.at()] = -x[Node::Shaft.at()];
-        }
-        out
+    /// Places whose value is given, with what they are off by: shafts that cannot turn, and the tank where it is among them.
+    fn fixed<const N: usize>(&self, x: &State) -> impl Iterator<Item = (usize, f64)> {
+        let tank = (N > Node::Tank.at()).then_some(Node::Tank.at());
+        let left = self.layout.held[0].then_some(Node::Shaft.at());
+        let right = (N > UNKNOWNS && self.layout.held[1])
+            .then_some(Node::Shaft.in_tandem(Path::Right));
+        let values = [tank, left, right].map(|p| p.map(|p| (p, x[p])));
+        values.into_iter().flatten()
     }
 
     /// For an output with adjoint `lambda` (from Jᵀ λ = ∂y/∂x), adds −λᵀ ∂F/∂θ to `out`: the output's total derivative
     /// with respect to every parameter, by the implicit function theorem.
-    pub fn add_adjoint(&self, x: &State, theta: &Params, lambda: &Vector, out: &mut Params) {
-        for e in &self.elements {
-            let weight = self.end(lambda, e.from) - self.end(lambda, e.to);
-            if weight == 0.0 || (self.layout.held && matches!(e.law, Law::Torque)) {
+    pub(super) fn add_adjoint<const N: usize>(
+        &self,
+        x: &State,
+        theta: &Params,
+        lambda: &Vector<N>,
+        out: &mut Params,
+    ) {
+        let end = |place: usize| lambda.get(place).copied().unwrap_or(0.0);
+        for row in &self.rows {
+            let e = &row.element;
+            let held = self.layout.held[e.path as usize];
+            let tank = Node::Tank.at();
+            let at = |place: usize| if place == tank { 0.0 } else { end(place) };
+            let weight = at(row.from) - at(row.to);
+            if weight == 0.0 || (held && matches!(e.law, Law::Torque)) {
                 continue;
             }
-            let partials = self.param_partials(e, x, theta);
+            let partials = self.param_partials(row, x, theta);
             for (p, d) in e.params.iter().zip(partials) {
-                out[*p as usize] += weight * d;
+                out[used(e.path, *p)] += weight * d;
             }
-        }
-    }
-
-    #[inline(always)]
-    fn end(&self, lambda: &Vector, node: Node) -> f64 {
-        if node.at() < UNKNOWNS {
-            lambda[node.at()]
-        } else {
-            0.0
         }
     }
 
     /// Partial derivatives of one element's flow with respect to its own parameters.
-    fn param_partials(&self, e: &Element, x: &State, theta: &Params) -> [f64; PARAM_LANES] {
-        match e.params.len() {
-            0..=4 => self.partials_in::<4>(e, x, theta),
-            5..=8 => self.partials_in::<8>(e, x, theta),
-            _ => self.partials_in::<PARAM_LANES>(e, x, theta),
+    fn param_partials(&self, row: &Row, x: &State, theta: &Params) -> [f64; PARAM_LANES] {
+        match row.element.params.len() {
+            0..=4 => self.partials_in::<4>(row, x, theta),
+            5..=8 => self.partials_in::<8>(row, x, theta),
+            _ => self.partials_in::<PARAM_LANES>(row, x, theta),
         }
     }
 
     #[inline(always)]
-    fn partials_in<const N: usize>(
+    fn partials_in<const L: usize>(
         &self,
-        e: &Element,
+        row: &Row,
         x: &State,
         theta: &Params,
     ) -> [f64; PARAM_LANES] {
-        let v = gather(e, x, |value, _| Dual::<N>::constant(value));
-        let q = flow(e.law, &self.layout, &v, &|p: Param| {
-            seeded::<N>(e.params, theta, p)
+        let e = &row.element;
+        let v = gather(row, x, |value, _| Dual::<L>::constant(value));
+        let q = flow(e.law, &self.layout, e.path, &v, &|p: Param| {
+            seeded::<L>(e.params, e.path, theta, p)
         });
         let mut out = [0.0; PARAM_LANES];
-        out[..N].copy_from_slice(&q.d);
+        out[..L].copy_from_slice(&q.d);
         out
     }
 }
 
-/// A parameter as a dual number: an input where it stands in `lanes`, a constant elsewhere.
+/// A path's parameter as a dual number: an input where it stands in `lanes`, a constant elsewhere.
 #[inline(always)]
-pub fn seeded<const N: usize>(lanes: &[Param], theta: &Params, p: Param) -> Dual<N> {
-    let value = theta[p as usize];
+pub fn seeded<const L: usize>(lanes: &[Param], path: Path, theta: &Params, p: Param) -> Dual<L> {
+    let value = theta[used(path, p)];
     match lanes.iter().position(|l| *l == p) {
-        Some(lane) if lane < N => Dual::input(value, lane),
+        Some(lane) if lane < L => Dual::input(value, lane),
         _ => Dual::constant(value),
     }
 }

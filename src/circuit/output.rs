@@ -1,13 +1,13 @@
 //! What an instrument on a port shows at a solved state, and how that changes with every parameter.
 
 use super::element::{self, Law, STROKE};
-use super::layout::{ControlBuild, FilterBuild};
-use super::network::{Network, seeded};
-use super::node::{Node, State, UNKNOWNS};
-use super::param::{Param, Params};
+use super::layout::{Arrangement, ControlBuild, FilterBuild};
+use super::network::{Network, seeded, used};
+use super::node::{Node, PLACES, State, UNKNOWNS};
+use super::param::{Param, Params, VALUES};
 use super::real::{Dual, Real, positive};
-use super::solve::{NoState, Solution};
-use crate::readings::Port;
+use super::solve::{NoState, Slope, Solution, right_state};
+use crate::readings::{Path, Port};
 
 /// Pressure over its cracking at which the neutral relief counts as open, bar (knee of the charge curve).
 const KNEE_OPEN: f64 = 0.15;
@@ -69,7 +69,13 @@ const ENGINE: &[Param] = &[P::EnginePower, P::Speed, P::Lever, P::PumpDisp];
 
 /// The reading of a port at a state, in the base unit of the port's kind. For the knee: how far the neutral relief is open
 /// (bar over its cracking, less a hair), zero at the knee itself.
-fn read<S: Real>(net: &Network, port: Port, x: &[S; UNKNOWNS + 1], g: &impl Fn(Param) -> S) -> S {
+fn read<S: Real>(
+    net: &Network,
+    path: Path,
+    port: Port,
+    x: &[S; UNKNOWNS + 1],
+    g: &impl Fn(Param) -> S,
+) -> S {
     let at = |n: Node| x[n.at()];
     let layout = net.layout();
     let case = if layout.relief_to_tank {
@@ -96,7 +102,7 @@ fn read<S: Real>(net: &Network, port: Port, x: &[S; UNKNOWNS + 1], g: &impl Fn(P
                 at(Node::Gallery),
                 at(Node::PumpCase),
             ];
-            let s = element::stroke(layout, &v, g);
+            let s = element::stroke(layout, path, &v, g);
             let size = (s * s + 1e-6).sqrt();
             let wanted = g(P::ServoStart) + (g(P::ServoFull) - g(P::ServoStart)) * size;
             // Never more than the gallery can give.
@@ -123,13 +129,14 @@ fn read<S: Real>(net: &Network, port: Port, x: &[S; UNKNOWNS + 1], g: &impl Fn(P
             } else {
                 at(Node::PumpCase)
             };
-            element::flow(Law::Drain, layout, &[at(Node::MotorCase), to, to, to], g)
+            element::flow(Law::Drain, layout, path, &[at(Node::MotorCase), to, to, to], g)
         }
         Port::ReturnFlow => {
             let zero = S::constant(0.0);
             let pump = element::flow(
                 Law::Line(P::PumpCaseLine, P::PumpCaseTurbulent),
                 layout,
+                path,
                 &[at(Node::PumpCase), zero, zero, zero],
                 g,
             );
@@ -137,6 +144,7 @@ fn read<S: Real>(net: &Network, port: Port, x: &[S; UNKNOWNS + 1], g: &impl Fn(P
                 element::flow(
                     Law::Drain,
                     layout,
+                    path,
                     &[at(Node::MotorCase), zero, zero, zero],
                     g,
                 )
@@ -147,6 +155,7 @@ fn read<S: Real>(net: &Network, port: Port, x: &[S; UNKNOWNS + 1], g: &impl Fn(P
                 element::flow(
                     Law::NeutralRelief,
                     layout,
+                    path,
                     &[at(Node::Gallery), zero, zero, zero],
                     g,
                 )
@@ -217,37 +226,128 @@ pub struct Shown {
 }
 
 impl Network {
-    /// What a port shows at a solved state.
-    pub fn reading(&self, port: Port, solution: &Solution, theta: &Params) -> f64 {
-        read(self, port, &solution.state, &|p: Param| theta[p as usize])
+    /// What a path's port shows at a solved state.
+    pub fn reading_on(&self, path: Path, port: Port, solution: &Solution, theta: &Params) -> f64 {
+        if let (Path::Right, Some(right)) = (path, &self.apart) {
+            let own = Solution {
+                state: right_state(&solution.state),
+                ..*solution
+            };
+            return right.reading(port, &own, &Network::right_view(theta));
+        }
+        let x = self.local(path, &solution.state);
+        let other = self.other_drain(path, port).map_or(0.0, |other| {
+            read(
+                self,
+                other,
+                Port::MotorDrain,
+                &self.local(other, &solution.state),
+                &|p: Param| theta[used(other, p)],
+            )
+        });
+        other + read(self, path, port, &x, &|p: Param| theta[used(path, p)])
     }
 
-    /// What a port shows, and how it changes with every parameter (direct, and through the state by one adjoint solve).
-    pub fn reading_and_gradient(&self, port: Port, solution: &Solution, theta: &Params) -> Shown {
-        let x = &solution.state;
-        let lanes = seeded_state(x);
-        let by_state = read(self, port, &lanes, &|p: Param| {
-            Dual::<UNKNOWNS>::constant(theta[p as usize])
-        });
-        let mut gradient = [0.0; Param::COUNT];
-        let params = direct(port);
-        if !params.is_empty() {
-            let fixed: [Dual<20>; UNKNOWNS + 1] = core::array::from_fn(|i| Dual::constant(x[i]));
-            let by_param = read(self, port, &fixed, &|p: Param| {
-                seeded::<20>(params, theta, p)
-            });
-            for (p, d) in params.iter().zip(by_param.d) {
-                gradient[*p as usize] += d;
+    /// As [`Network::reading_on`], on the left or only path.
+    pub fn reading(&self, port: Port, solution: &Solution, theta: &Params) -> f64 {
+        self.reading_on(Path::Left, port, solution, theta)
+    }
+
+    /// What a path's port shows, and how it changes with every parameter (direct, and through the state by one adjoint solve).
+    pub fn reading_and_gradient_on(
+        &self,
+        path: Path,
+        port: Port,
+        solution: &Solution,
+        theta: &Params,
+    ) -> Shown {
+        if let (Path::Right, Some(right), Slope::Apart([_, slope])) =
+            (path, &self.apart, solution.slope)
+        {
+            let own = Solution {
+                state: right_state(&solution.state),
+                slope: Slope::Single(slope),
+                ..*solution
+            };
+            let shown = right.reading_and_gradient(port, &own, &Network::right_view(theta));
+            return Shown {
+                value: shown.value,
+                gradient: Network::from_right_view(&shown.gradient),
+            };
+        }
+        let mut shown = Shown {
+            value: 0.0,
+            gradient: [0.0; VALUES],
+        };
+        let mut by_place = [0.0; PLACES];
+        self.add_reading(path, port, solution, theta, &mut shown, &mut by_place);
+        if let Some(other) = self.other_drain(path, port) {
+            let drain = Port::MotorDrain;
+            self.add_reading(other, drain, solution, theta, &mut shown, &mut by_place);
+        }
+        if by_place.iter().any(|d| *d != 0.0) {
+            let (x, out) = (&solution.state, &mut shown.gradient);
+            match &solution.slope {
+                Slope::Single(lu) | Slope::Apart([lu, _]) => {
+                    let lambda = lu.solve_transposed(&first(&by_place));
+                    self.add_adjoint(x, theta, &lambda, out);
+                }
+                Slope::Tandem(lu) => {
+                    let lambda = lu.solve_transposed(&first(&by_place));
+                    self.add_adjoint(x, theta, &lambda, out);
+                }
             }
         }
-        if by_state.d.iter().any(|d| *d != 0.0) {
-            let lambda = solution.slope.solve_transposed(&by_state.d);
-            self.add_adjoint(x, theta, &lambda, &mut gradient);
+        shown
+    }
+
+    /// As [`Network::reading_and_gradient_on`], on the left or only path.
+    pub fn reading_and_gradient(&self, port: Port, solution: &Solution, theta: &Params) -> Shown {
+        self.reading_and_gradient_on(Path::Left, port, solution, theta)
+    }
+
+    /// The common return of a tandem takes the other motor's drain too, where drains do not pass the pump.
+    fn other_drain(&self, path: Path, port: Port) -> Option<Path> {
+        let layout = self.layout();
+        (port == Port::ReturnFlow
+            && layout.separate_cases
+            && layout.arrangement == Arrangement::Tandem)
+            .then(|| path.other())
+    }
+
+    /// Adds a reading to `shown`, with its direct derivatives, and its derivatives by the places of the state to `by_place`.
+    fn add_reading(
+        &self,
+        path: Path,
+        port: Port,
+        solution: &Solution,
+        theta: &Params,
+        shown: &mut Shown,
+        by_place: &mut State,
+    ) {
+        let x = self.local(path, &solution.state);
+        let by_state = read(self, path, port, &seeded_state(&x), &|p: Param| {
+            Dual::<UNKNOWNS>::constant(theta[used(path, p)])
+        });
+        shown.value += by_state.v;
+        for (node, d) in Node::ALL.iter().zip(by_state.d) {
+            by_place[self.at(path, *node)] += d;
         }
-        Shown {
-            value: by_state.v,
-            gradient,
+        let params = direct(port);
+        if !params.is_empty() {
+            let fixed: [Dual<20>; UNKNOWNS + 1] = x.map(Dual::constant);
+            let by_param = read(self, path, port, &fixed, &|p: Param| {
+                seeded::<20>(params, path, theta, p)
+            });
+            for (p, d) in params.iter().zip(by_param.d) {
+                shown.gradient[used(path, *p)] += d;
+            }
         }
+    }
+
+    /// A path's nodes in the order of the left one's.
+    fn local(&self, path: Path, x: &State) -> [f64; UNKNOWNS + 1] {
+        Node::ALL.map(|n| x[self.at(path, n)])
     }
 
     /// The knee: engine speed (rpm) at which the neutral relief opens and charge stops rising, with its derivatives.
@@ -266,7 +366,7 @@ impl Network {
         let mut start = None;
         let mut last = Shown {
             value: high,
-            gradient: [0.0; Param::COUNT],
+            gradient: [0.0; VALUES],
         };
         for _ in 0..40 {
             let (solution, shown) = open(&at, start.as_ref())?;
@@ -296,7 +396,7 @@ impl Network {
         }
         let speed = at[P::Speed as usize];
         let slope = last.gradient[P::Speed as usize];
-        let mut gradient = [0.0; Param::COUNT];
+        let mut gradient = [0.0; VALUES];
         if slope > 1e-9 && speed < 1.99 * top {
             for (g, d) in gradient.iter_mut().zip(last.gradient) {
                 *g = -d / slope;
@@ -309,12 +409,11 @@ impl Network {
         })
     }
 
-    /// Share of their displacement that the pumps fill at a state: below about 0.97 a low side empties and needles swing.
-    pub fn filled(&self, solution: &Solution, theta: &Params) -> f64 {
-        let x = &solution.state;
+    /// Share of its displacement that a path's pump fills at a state: below about 0.97 its low side empties and needles swing.
+    pub fn filled(&self, path: Path, state: &State, theta: &Params) -> f64 {
         let atmosphere = theta[P::Atmosphere as usize];
-        let low_side = x[Node::APump.at()].min(x[Node::BPump.at()]);
-        super::law::fill(low_side, atmosphere)
+        let side = |n: Node| state[self.at(path, n)];
+        super::law::fill(side(Node::APump).min(side(Node::BPump)), atmosphere)
     }
 
     /// True where this control has a servo at all.
@@ -323,7 +422,7 @@ impl Network {
     }
 }
 
-fn seeded_state(x: &State) -> [Dual<UNKNOWNS>; UNKNOWNS + 1] {
+fn seeded_state(x: &[f64; UNKNOWNS + 1]) -> [Dual<UNKNOWNS>; UNKNOWNS + 1] {
     core::array::from_fn(|i| {
         if i < UNKNOWNS {
             Dual::input(x[i], i)
@@ -331,4 +430,9 @@ fn seeded_state(x: &State) -> [Dual<UNKNOWNS>; UNKNOWNS + 1] {
             Dual::constant(0.0)
         }
     })
+}
+
+/// The first `N` places.
+fn first<const N: usize>(places: &State) -> [f64; N] {
+    core::array::from_fn(|i| places[i])
 }

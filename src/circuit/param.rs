@@ -4,6 +4,8 @@
 //! solver's sensitivities are taken with respect to them. Units inside the circuit are the gauge's own: bar (gauge), L/min,
 //! rpm, cm³/rev, seconds; viscosity is relative to 27.5 mPa·s (32 mm²/s at 860 kg/m³). Conversion happens once, at the edge.
 
+use crate::readings::Path;
+
 /// How scatter and severity act on a parameter.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Scale {
@@ -206,14 +208,56 @@ params! {
     AirTemperature, Linear, 20.0, "air temperature";
 }
 
-/// The values of all parameters.
-pub type Params = [f64; Param::COUNT];
+/// What a parameter belongs to on a machine with two paths.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Belongs {
+    /// The machine: one engine, one oil, one weather.
+    Machine,
+    /// The charge side: common where one charge pump feeds both paths.
+    Charge,
+    /// Each path has its own.
+    Path,
+}
+
+impl Param {
+    /// What it belongs to.
+    #[inline(always)]
+    pub const fn belongs(self) -> Belongs {
+        use Param::*;
+        match self {
+            Speed | InputGrip | Viscosity | Atmosphere | AirTemperature | HeatRise | PilotSupply
+            | Inching => Belongs::Machine,
+            ChargeDisp | ChargeSlip | ChargeDrive | ChargeFeed | SuctionLaminar
+            | SuctionTurbulent | Air | FilterLaminar | ReliefSet | ReliefGain | ReliefHeld
+            | Consumers | ConsumerLeak | PumpCaseLine | PumpCaseTurbulent | ReleaseShare
+            | ShiftShare => Belongs::Charge,
+            _ => Belongs::Path,
+        }
+    }
+
+    /// Place of a path's own value in [`Params`], whether or not the circuit looks at it.
+    #[inline(always)]
+    pub const fn on(self, path: Path) -> usize {
+        match path {
+            Path::Left => self as usize,
+            Path::Right => Param::COUNT + self as usize,
+        }
+    }
+}
+
+/// Number of values: every parameter of the left or only path, then of the right one.
+pub const VALUES: usize = 2 * Param::COUNT;
+
+/// The values of all parameters of both paths. What two paths share is taken from the left one.
+pub type Params = [f64; VALUES];
 
 /// A table of healthy neutral values.
 pub fn healthy() -> Params {
-    let mut values = [0.0; Param::COUNT];
+    let mut values = [0.0; VALUES];
     for p in Param::ALL {
-        values[*p as usize] = p.healthy();
+        for path in Path::BOTH {
+            values[p.on(path)] = p.healthy();
+        }
     }
     values
 }

@@ -6,10 +6,12 @@
 //! steps in time with growing length (pseudo-transient continuation: Kelley and Keyes, 1998), which follows what a real loop
 //! would do and tells hunting from settling.
 
+use super::layout::Arrangement;
 use super::lu::{Lu, Matrix, Vector};
 use super::network::Network;
-use super::node::{Node, State, UNKNOWNS};
+use super::node::{Node, PLACES, RIGHT_SHAFT, State, TANDEM, UNKNOWNS};
 use super::param::{Param, Params};
+use crate::readings::Path;
 
 /// A solved state.
 #[derive(Clone, Copy, Debug)]
@@ -23,7 +25,40 @@ pub struct Solution {
     /// How it was found.
     pub route: Route,
     /// Factorised derivative at the solution, for sensitivities.
-    pub slope: Lu,
+    pub(super) slope: Slope,
+}
+
+/// Factorised derivatives of the arrangements.
+#[derive(Clone, Copy, Debug)]
+#[allow(clippy::large_enum_variant)] // copied with its solution and dropped; on the heap it would cost more
+pub(super) enum Slope {
+    /// One path.
+    Single(Lu<UNKNOWNS>),
+    /// A tandem.
+    Tandem(Lu<TANDEM>),
+    /// Two circuits.
+    Apart([Lu<UNKNOWNS>; 2]),
+}
+
+/// As [`Solution`], of a circuit with `N` places.
+struct Found<const N: usize> {
+    state: State,
+    iterations: u32,
+    imbalance: f64,
+    route: Route,
+    slope: Lu<N>,
+}
+
+impl<const N: usize> Found<N> {
+    fn with(self, slope: impl FnOnce(Lu<N>) -> Slope) -> Solution {
+        Solution {
+            state: self.state,
+            iterations: self.iterations,
+            imbalance: self.imbalance,
+            route: self.route,
+            slope: slope(self.slope),
+        }
+    }
 }
 
 /// How a solution was found.
@@ -57,10 +92,10 @@ const RUN_UP_STEPS: u32 = 600;
 
 /// Size of a correction in each unknown: a bar plus a hundredth of the pressure; ten rpm.
 #[inline(always)]
-fn weighted(dx: &Vector, x: &State) -> f64 {
+fn weighted<const N: usize>(dx: &Vector<N>, x: &State) -> f64 {
     let mut worst: f64 = 0.0;
-    for i in 0..UNKNOWNS {
-        let scale = if i == Node::Shaft.at() {
+    for i in 0..N {
+        let scale = if is_shaft(i) {
             0.05 + 0.1 * x[i].abs()
         } else {
             1.0 + 0.02 * x[i].abs()
@@ -70,19 +105,24 @@ fn weighted(dx: &Vector, x: &State) -> f64 {
     worst
 }
 
-fn moved(x: &State, dx: &Vector, share: f64) -> State {
+#[inline(always)]
+fn is_shaft(place: usize) -> bool {
+    place == Node::Shaft.at() || place == RIGHT_SHAFT
+}
+
+fn moved<const N: usize>(x: &State, dx: &Vector<N>, share: f64) -> State {
     let mut y = *x;
-    for i in 0..UNKNOWNS {
-        y[i] += share * dx[i];
+    for (y, d) in y.iter_mut().zip(dx) {
+        *y += share * d;
     }
     y
 }
 
-fn largest(f: &Vector) -> f64 {
+fn largest<const N: usize>(f: &Vector<N>) -> f64 {
     f.iter().fold(0.0, |m, v| m.max(v.abs()))
 }
 
-fn negated(v: &Vector) -> Vector {
+fn negated<const N: usize>(v: &Vector<N>) -> Vector<N> {
     let mut out = *v;
     for e in &mut out {
         *e = -*e;
@@ -93,19 +133,26 @@ fn negated(v: &Vector) -> Vector {
 impl Network {
     /// A first guess from the parameters alone: what a mechanic would expect the gauges to read.
     pub fn guess(&self, theta: &Params) -> State {
-        let g = |p: Param| theta[p as usize];
-        let delivery = g(Param::PumpDisp) * g(Param::Speed) * g(Param::InputGrip) * 1e-3;
-        let charge = g(Param::ReliefSet) + 1.0;
-        let lever = super::element::asked(self.layout(), &g);
-        let low = charge - 0.5;
-        let mut x = [0.0; UNKNOWNS + 1];
+        let mut x = [0.0; PLACES];
+        let charge = theta[Param::ReliefSet as usize] + 1.0;
         x[Node::Inlet.at()] = -0.1;
         x[Node::ChargeOut.at()] = charge + 0.3;
         x[Node::Gallery.at()] = charge;
         x[Node::PumpCase.at()] = 0.5;
-        x[Node::MotorCase.at()] = 0.8;
+        self.guess_path(Path::Left, theta, charge - 0.5, &mut x);
+        if self.layout().arrangement == Arrangement::Tandem {
+            self.guess_path(Path::Right, theta, charge - 0.5, &mut x);
+        }
+        x
+    }
+
+    fn guess_path(&self, path: Path, theta: &Params, low: f64, x: &mut State) {
+        let g = |p: Param| theta[super::network::used(path, p)];
+        let delivery = g(Param::PumpDisp) * g(Param::Speed) * g(Param::InputGrip) * 1e-3;
+        let lever = super::element::asked(self.layout(), path, &g);
         let (mut a, mut b) = (low, low);
-        if self.layout().held {
+        let mut shaft = 0.0;
+        if self.layout().held[path as usize] {
             let high = (delivery * lever.abs()
                 / (g(Param::PumpLeak)
                     + g(Param::MotorLeak)
@@ -130,18 +177,23 @@ impl Network {
                 + g(Param::Drag) * g(Param::Viscosity) * speed;
             let difference = (needed / g(Param::MotorShift))
                 .clamp(-g(Param::LoopReliefB), g(Param::LoopReliefA));
-            x[Node::Shaft.at()] = speed;
+            shaft = speed;
             if difference > 0.0 {
                 a = low + difference
             } else {
                 b = low - difference
             }
         }
-        x[Node::APump.at()] = a;
-        x[Node::AMotor.at()] = a;
-        x[Node::BPump.at()] = b;
-        x[Node::BMotor.at()] = b;
-        x
+        for (node, value) in [
+            (Node::MotorCase, 0.8),
+            (Node::Shaft, shaft),
+            (Node::APump, a),
+            (Node::AMotor, a),
+            (Node::BPump, b),
+            (Node::BMotor, b),
+        ] {
+            x[node.in_tandem(path)] = value;
+        }
     }
 
     /// Solves for the steady state, from `start` where one is given (a neighbouring solution).
@@ -152,6 +204,36 @@ impl Network {
         if theta.iter().any(|v| !v.is_finite()) {
             return Err(NoState::BadFigure);
         }
+        match (self.layout().arrangement, &self.apart) {
+            (Arrangement::Tandem, _) => Ok(self
+                .find::<TANDEM>(theta, start)?
+                .with(Slope::Tandem)),
+            (Arrangement::Apart, Some(right)) => {
+                let left = self.find::<UNKNOWNS>(theta, start)?;
+                let start = start.map(right_state);
+                let view = Network::right_view(theta);
+                let other = right.find::<UNKNOWNS>(&view, start.as_ref())?;
+                let mut state = left.state;
+                state[UNKNOWNS + 1..].copy_from_slice(&other.state[..UNKNOWNS]);
+                Ok(Solution {
+                    state,
+                    iterations: left.iterations + other.iterations,
+                    imbalance: left.imbalance.max(other.imbalance),
+                    route: left.route.max(other.route),
+                    slope: Slope::Apart([left.slope, other.slope]),
+                })
+            }
+            _ => Ok(self
+                .find::<UNKNOWNS>(theta, start)?
+                .with(Slope::Single)),
+        }
+    }
+
+    fn find<const N: usize>(
+        &self,
+        theta: &Params,
+        start: Option<&State>,
+    ) -> Result<Found<N>, NoState> {
         let first = start.copied().unwrap_or_else(|| self.guess(theta));
         if let Some(s) = self.newton(theta, first, Route::Direct) {
             return Ok(s);
@@ -161,7 +243,7 @@ impl Network {
         {
             return Ok(s);
         }
-        let mut rest = [0.0; UNKNOWNS + 1];
+        let mut rest = [0.0; PLACES];
         rest[Node::Gallery.at()] = 1.0;
         if let Some(s) = self.newton(theta, rest, Route::FromRest) {
             return Ok(s);
@@ -169,9 +251,14 @@ impl Network {
         self.run_up(theta, rest)
     }
 
-    fn newton(&self, theta: &Params, start: State, route: Route) -> Option<Solution> {
+    fn newton<const N: usize>(
+        &self,
+        theta: &Params,
+        start: State,
+        route: Route,
+    ) -> Option<Found<N>> {
         let mut x = start;
-        let (mut f, mut j) = self.balance_and_slope(&x, theta);
+        let (mut f, mut j) = self.balance_and_slope::<N>(&x, theta);
         let mut share: f64 = 1.0;
         for iteration in 1..=NEWTON_STEPS {
             let lu = Lu::new(j)?;
@@ -181,7 +268,7 @@ impl Network {
                 return None;
             }
             if size < SETTLED {
-                return Some(Solution {
+                return Some(Found {
                     state: x,
                     iterations: iteration,
                     imbalance: largest(&f),
@@ -213,10 +300,10 @@ impl Network {
     }
 
     /// Runs the machine up from rest by implicit time steps. Each node holds a little oil, the shaft a little inertia.
-    fn run_up(&self, theta: &Params, start: State) -> Result<Solution, NoState> {
+    fn run_up<const N: usize>(&self, theta: &Params, start: State) -> Result<Found<N>, NoState> {
         let mut x = start;
         let mut rate = 1e3;
-        let (mut f, mut j) = self.balance_and_slope(&x, theta);
+        let (mut f, mut j) = self.balance_and_slope::<N>(&x, theta);
         let mut lowest = f64::INFINITY;
         for iteration in 1..=RUN_UP_STEPS {
             let lu = Lu::new(with_storage(&j, rate)).ok_or(NoState::BadFigure)?;
@@ -244,14 +331,14 @@ impl Network {
                 && rate <= 1e-2
                 && let Some(s) = self.newton(theta, x, Route::RunUp)
             {
-                return Ok(Solution {
+                return Ok(Found {
                     iterations: iteration + s.iterations,
                     ..s
                 });
             }
         }
         if let Some(s) = self.newton(theta, x, Route::RunUp) {
-            return Ok(Solution {
+            return Ok(Found {
                 iterations: RUN_UP_STEPS + s.iterations,
                 ..s
             });
@@ -261,10 +348,17 @@ impl Network {
 }
 
 /// The slope of an implicit time step: J − rate × storage.
-fn with_storage(j: &Matrix, rate: f64) -> Matrix {
+fn with_storage<const N: usize>(j: &Matrix<N>, rate: f64) -> Matrix<N> {
     let mut a = *j;
     for (i, row) in a.iter_mut().enumerate() {
-        row[i] -= rate * if i == Node::Shaft.at() { 30.0 } else { 1.0 };
+        row[i] -= rate * if is_shaft(i) { 30.0 } else { 1.0 };
     }
     a
+}
+
+/// The state of the right one of two circuits, in the places of a left one.
+pub(super) fn right_state(state: &State) -> State {
+    let mut own = [0.0; PLACES];
+    own[..UNKNOWNS].copy_from_slice(&state[UNKNOWNS + 1..]);
+    own
 }

@@ -12,6 +12,14 @@ macro_rules! ids {
         impl FaultId {
             /// Every id in catalogue order.
             pub const ALL: &'static [FaultId] = &[$(FaultId::$name,)*];
+
+            /// Its stable code.
+            pub fn code(self) -> String {
+                match serde_json::to_value(self) {
+                    Ok(serde_json::Value::String(code)) => code,
+                    _ => String::new(),
+                }
+            }
         }
     };
 }
@@ -30,6 +38,7 @@ ids! {
     MotorStuckSmall, MotorStuckLarge, MotorShiftSupplyLow, BrakeDragging, BrakeNotReleased, DrivetrainSlipping,
     InputDriveSlipping, EngineLugging, CaseReturnRestricted, CaseCouplingShut, CoolerBypassing, CoolerDirty,
     OilTooThin, OilTooThick, WrongOrWetOil,
+    PathsNullMismatch, PathsStrokeMismatch, TyreOrTrackMismatch,
     AssemblyError, OperatorOrLoad,
     NotListed,
 }

@@ -1,8 +1,8 @@
 //! Builds: what "don't know" leaves possible, each with its share.
 
-use crate::circuit::{ControlBuild, DumpBuild, FilterBuild, Layout};
+use crate::circuit::{Arrangement, ControlBuild, DumpBuild, FilterBuild, Layout};
 use crate::unit::{
-    CaseLines, Control, Filter, LoopReliefTo, MachineClass, ReliefDrain, Shuttle, Tick, Unit,
+    CaseLines, Control, Filter, LoopReliefTo, MachineClass, Paths, ReliefDrain, Shuttle, Tick, Unit,
 };
 
 /// One possible build of a unit.
@@ -133,8 +133,9 @@ fn build(
         },
         relief_to_tank: t.relief_drain == ReliefDrain::Tank,
         separate_cases: t.case_lines == CaseLines::Separate,
-        held: false,
-        bridged: false,
+        arrangement: arrangement(t.paths),
+        held: [false; 2],
+        bridged: [false; 2],
     };
     let two_position = t.shuttle == Shuttle::TwoPosition;
     Build {
@@ -144,6 +145,15 @@ fn build(
         flushing,
         two_position,
         limiter,
+    }
+}
+
+/// What the paths of a machine share.
+pub fn arrangement(paths: Paths) -> Arrangement {
+    match paths {
+        Paths::One => Arrangement::Single,
+        Paths::TwoSharedCharge => Arrangement::Tandem,
+        Paths::TwoOwnCharge => Arrangement::Apart,
     }
 }
 

@@ -5,7 +5,8 @@ use super::latent::{Act, Latents};
 use crate::circuit::{Layout, Param as P, Params};
 use crate::fluid::viscosity_index::kv100_from_index;
 use crate::fluid::{ViscosityCurve, dynamic_viscosity};
-use crate::readings::{Condition, Direction, Doing, EngineSpeed, Place};
+use super::twin::on_paths;
+use crate::readings::{Condition, Direction, Doing, EngineSpeed, Path, Place};
 use crate::unit::{FigureId, Unit};
 
 /// Viscosity index taken where nothing is known. Common practice for mineral oil in mobile machines.
@@ -73,8 +74,10 @@ impl Warmth {
 /// The layout of a build in a condition.
 pub fn layout_for(build: &Build, condition: &Condition) -> Layout {
     Layout {
-        held: matches!(condition.doing, Doing::Held | Doing::Neutral),
-        bridged: condition.doing == Doing::NeutralBridged,
+        held: [matches!(condition.doing, Doing::Held | Doing::Neutral); 2],
+        bridged: Path::BOTH.map(|path| {
+            condition.doing == Doing::NeutralBridged && condition.stroked.has(path)
+        }),
         ..build.layout
     }
 }
@@ -115,20 +118,24 @@ pub fn apply(build: &Build, base: &Params, condition: &Condition) -> Params {
     t[P::Viscosity as usize] = Warmth::of(&build.unit, condition).relative();
     if !condition.doing.is_neutral() {
         let (share, _) = condition.lever.share();
-        t[P::Lever as usize] = sign(condition) * share;
         let (load, _, _) = load_share(condition.doing);
         let bar = load * t[P::LoopReliefA as usize];
-        if bar >= 0.0 {
-            t[P::Load as usize] = bar;
-        } else {
-            t[P::Push as usize] = sign(condition) * bar;
+        for path in Path::BOTH.into_iter().filter(|p| condition.stroked.has(*p)) {
+            t[P::Lever.on(path)] = sign(condition) * share;
+            if bar >= 0.0 {
+                t[P::Load.on(path)] = bar;
+            } else {
+                t[P::Push.on(path)] = sign(condition) * bar;
+            }
         }
     }
-    if condition.flushing_blocked {
-        t[P::ShuttleTravel as usize] = 0.0;
-    }
-    if condition.consumers_capped {
-        t[P::Consumers as usize] *= 1e-3;
+    for path in Path::BOTH {
+        if condition.flushing_blocked {
+            t[P::ShuttleTravel.on(path)] = 0.0;
+        }
+        if condition.consumers_capped {
+            t[P::Consumers.on(path)] *= 1e-3;
+        }
     }
     t
 }
@@ -138,12 +145,14 @@ fn load_act(i: usize, c: &Condition, size: f64) -> Act {
     if c.doing == Doing::Overrun {
         Act {
             condition: Some(i),
+            path: Path::Left,
             param: P::Push,
             size: sign(c) * size,
         }
     } else {
         Act {
             condition: Some(i),
+            path: Path::Left,
             param: P::Load,
             size,
         }
@@ -152,8 +161,17 @@ fn load_act(i: usize, c: &Condition, size: f64) -> Act {
 
 /// Scatter that belongs to conditions: speed, temperature, lever, load.
 pub fn condition_latents(unit: &Unit, conditions: &[Condition], latents: &mut Latents) {
+    let mut own = Latents::default();
+    one_path_latents(unit, conditions, &mut own);
+    latents
+        .0
+        .extend(on_paths(own, unit.ticks.paths, conditions).0);
+}
+
+fn one_path_latents(unit: &Unit, conditions: &[Condition], latents: &mut Latents) {
     let act = |i: usize, param: P, size: f64| Act {
         condition: Some(i),
+        path: Path::Left,
         param,
         size,
     };

@@ -2,9 +2,11 @@
 
 use super::builds::Build;
 use super::latent::Latents;
+use super::twin::on_paths;
+use crate::readings::Path;
 use crate::circuit::{Param as P, Params, healthy};
 use crate::fluid;
-use crate::unit::{Figure, FigureId, Source, Unit};
+use crate::unit::{Figure, FigureId, Paths, Source, Unit};
 
 /// Relative width (1 sigma, log scale) of a figure that somebody knows, by where it is from. Common practice.
 fn width_of(source: Source) -> f64 {
@@ -88,7 +90,11 @@ pub fn base(build: &Build) -> Params {
     let b = |id| believed(unit, id).value;
     let size = size(unit);
     let mut t = healthy();
-    let mut set = |p: P, v: f64| t[p as usize] = v;
+    let mut set = |p: P, v: f64| {
+        for path in Path::BOTH {
+            t[p.on(path)] = v;
+        }
+    };
     set(P::Speed, b(FigureId::HighIdle));
     set(P::PumpDisp, b(FigureId::PumpDisplacement));
     set(P::ChargeDisp, charge_displacement(unit));
@@ -125,7 +131,18 @@ pub fn base(build: &Build) -> Params {
         set(P::ServoLoad, 0.06 * charge);
     }
     for (p, power) in WITH_SIZE {
-        t[*p as usize] *= crate::math::pow(size, *power);
+        for path in Path::BOTH {
+            t[p.on(path)] *= crate::math::pow(size, *power);
+        }
+    }
+    if unit.ticks.paths == Paths::TwoSharedCharge {
+        // Lines that carry the oil of both.
+        for p in [P::SuctionLaminar, P::PumpCaseLine] {
+            t[p as usize] *= 0.5;
+        }
+        for p in [P::SuctionTurbulent, P::PumpCaseTurbulent] {
+            t[p as usize] *= 0.25;
+        }
     }
     // A slow large motor has more leakage area in proportion to torque, not to its displacement: keep it with the pump's.
     t
@@ -136,7 +153,13 @@ fn charge_displacement(unit: &Unit) -> f64 {
     if own.known {
         own.value
     } else {
-        0.18 * believed(unit, FigureId::PumpDisplacement).value
+        // One charge pump for two is chosen for both.
+        let fed = if unit.ticks.paths == Paths::TwoSharedCharge {
+            2.0
+        } else {
+            1.0
+        };
+        0.18 * fed * believed(unit, FigureId::PumpDisplacement).value
     }
 }
 
@@ -161,6 +184,10 @@ fn limiter_setting(unit: &Unit) -> f64 {
 
 /// Scatter of the unit itself, the same in every condition.
 pub fn unit_latents(unit: &Unit) -> Latents {
+    on_paths(one_path_latents(unit), unit.ticks.paths, &[])
+}
+
+fn one_path_latents(unit: &Unit) -> Latents {
     let mut l = Latents::default();
     let b = |id| believed(unit, id);
     let pump = b(FigureId::PumpDisplacement);

@@ -1,17 +1,28 @@
 //! Latents: what scatters a machine round what is believed of it.
 
-use crate::circuit::{Param, Params, Scale};
+use crate::circuit::{Param, Params, Scale, VALUES};
 use crate::math;
+use crate::readings::Path;
 
 /// How one latent acts on one parameter.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Act {
     /// Condition it acts in; none: in all.
     pub condition: Option<usize>,
+    /// Path that it acts on; left for what is common.
+    pub path: Path,
     /// Parameter.
     pub param: Param,
     /// Change per standard deviation: of the logarithm for parameters that scale, of the value for the others.
     pub size: f64,
+}
+
+impl Act {
+    /// Place of what it moves in [`Params`].
+    #[inline(always)]
+    pub fn place(&self) -> usize {
+        self.param.on(self.path)
+    }
 }
 
 /// One independent standard normal.
@@ -39,6 +50,7 @@ impl Latents {
             .iter()
             .map(|(param, size)| Act {
                 condition: None,
+                path: Path::Left,
                 param: *param,
                 size: *size,
             })
@@ -46,6 +58,20 @@ impl Latents {
         self.0.push(Latent {
             words: words.to_string(),
             acts,
+        });
+    }
+
+    /// Adds a latent that moves one parameter of both paths alike.
+    pub fn on_both(&mut self, param: Param, size: f64) {
+        let acts = Path::BOTH.map(|path| Act {
+            condition: None,
+            path,
+            param,
+            size,
+        });
+        self.0.push(Latent {
+            words: param.words().to_string(),
+            acts: acts.to_vec(),
         });
     }
 
@@ -62,16 +88,16 @@ impl Latents {
 
 /// Parameters of a condition moved by latent values `u` (one per latent; shorter means zero).
 pub fn scattered(base: &Params, latents: &Latents, condition: usize, u: &[f64]) -> Params {
-    let mut logs = [0.0; Param::COUNT];
+    let mut logs = [0.0; VALUES];
     let mut theta = *base;
-    let mut touched = [false; Param::COUNT];
+    let mut touched = [false; VALUES];
     for (latent, value) in latents.0.iter().zip(u) {
         if *value == 0.0 {
             continue;
         }
         for act in &latent.acts {
             if act.condition.is_none_or(|c| c == condition) {
-                let i = act.param as usize;
+                let i = act.place();
                 match act.param.scale() {
                     Scale::Log => {
                         logs[i] += act.size * value;
@@ -82,7 +108,7 @@ pub fn scattered(base: &Params, latents: &Latents, condition: usize, u: &[f64]) 
             }
         }
     }
-    for i in 0..Param::COUNT {
+    for i in 0..VALUES {
         if touched[i] {
             theta[i] *= math::exp(logs[i]);
         }

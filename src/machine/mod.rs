@@ -8,8 +8,9 @@ mod builds;
 mod condition;
 mod figures;
 mod latent;
+mod twin;
 
-pub use builds::{Build, builds};
+pub use builds::{Build, arrangement, builds};
 pub use condition::{Warmth, apply, condition_latents, layout_for};
 pub use figures::{base, describe_basis, unit_latents};
 pub use latent::{Act, Latent, Latents, scattered};

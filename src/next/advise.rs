@@ -5,9 +5,9 @@ use super::probe::forecast;
 use super::repair::{self, CheckFirst};
 use super::worth::{Known, USEFUL, Worth, open_the_way, share_set_ups, worth};
 use super::{Advice, Offer, gate, limits, rig};
-use crate::assessment::Assessment;
+use crate::assessment::{Assessment, At};
 use crate::checks::{self, Check};
-use crate::faults::{self, FaultId};
+use crate::faults;
 use crate::math;
 use crate::observations;
 use crate::ranking::{Heavy, gather};
@@ -142,7 +142,7 @@ pub fn advise(
     advice
 }
 
-fn stop_words(ids: &[FaultId], prior: &[f64], held_back: bool) -> String {
+fn stop_words(ids: &[At], prior: &[f64], held_back: bool) -> String {
     if held_back {
         return "No check that may be offered now can change the order. What is held back stands below, with what it waits for.".to_string();
     }
@@ -150,7 +150,7 @@ fn stop_words(ids: &[FaultId], prior: &[f64], held_back: bool) -> String {
         .iter()
         .zip(prior)
         .max_by(|a, b| a.1.total_cmp(b.1))
-        .and_then(|(id, _)| faults::find(*id));
+        .and_then(|(at, _)| faults::find(at.id));
     match lead {
         Some(f) if !f.proof.is_empty() => format!(
             "No check that is left is likely to change what leads. It is proved by: {}",
@@ -162,10 +162,10 @@ fn stop_words(ids: &[FaultId], prior: &[f64], held_back: bool) -> String {
 
 /// Causes with their probabilities, members of sets apart. Two causes at work together leave half of their joint probability
 /// with each: either of them is worth proving.
-fn causes(assessment: &Assessment) -> (Vec<FaultId>, Vec<f64>) {
-    let mut ids: Vec<FaultId> = Vec::new();
+fn causes(assessment: &Assessment) -> (Vec<At>, Vec<f64>) {
+    let mut ids: Vec<At> = Vec::new();
     let mut prior: Vec<f64> = Vec::new();
-    let mut add = |id: FaultId, share: f64| match ids.iter().position(|i| *i == id) {
+    let mut add = |id: At, share: f64| match ids.iter().position(|i| *i == id) {
         Some(i) => prior[i] += share,
         None => {
             ids.push(id);
@@ -174,12 +174,12 @@ fn causes(assessment: &Assessment) -> (Vec<FaultId>, Vec<f64>) {
     };
     for c in &assessment.causes {
         if c.pair.is_some() {
-            for id in &c.ids {
-                add(*id, c.probability / c.ids.len() as f64);
+            for at in c.members() {
+                add(at, c.probability / c.ids.len() as f64);
             }
         } else {
-            for (id, share) in c.ids.iter().zip(&c.shares) {
-                add(*id, *share);
+            for (at, share) in c.members().zip(&c.shares) {
+                add(at, *share);
             }
         }
     }
@@ -191,15 +191,17 @@ fn causes(assessment: &Assessment) -> (Vec<FaultId>, Vec<f64>) {
 }
 
 /// The nodes to forecast over, with weights that give each cause its probability; and the cause of each.
-fn weighted(
-    heavy: Vec<Heavy>,
-    ids: &[FaultId],
-    prior: &[f64],
-) -> (Vec<Heavy>, Vec<f64>, Vec<usize>) {
-    let place = |id: FaultId| ids.iter().position(|i| *i == id);
+fn weighted(heavy: Vec<Heavy>, ids: &[At], prior: &[f64]) -> (Vec<Heavy>, Vec<f64>, Vec<usize>) {
+    let place = |h: &Heavy| {
+        let at = At {
+            id: h.fault.id,
+            path: h.path,
+        };
+        ids.iter().position(|i| *i == at)
+    };
     let mut kept: Vec<(Heavy, usize)> = heavy
         .into_iter()
-        .filter_map(|h| place(h.fault.id).map(|i| (h, i)))
+        .filter_map(|h| place(&h).map(|i| (h, i)))
         .filter(|(_, i)| prior[*i] > 0.002)
         .collect();
     let mut totals = vec![f64::NEG_INFINITY; ids.len()];
@@ -231,11 +233,13 @@ fn weighted(
 mod tests {
     use super::*;
     use crate::assessment::{Cause, Pair};
+    use crate::faults::FaultId;
 
     #[test]
     fn two_causes_together_leave_half_of_their_probability_with_each() {
         let row = |ids: &[FaultId], probability: f64, shares: &[f64], pair: bool| Cause {
             ids: ids.to_vec(),
+            paths: Vec::new(),
             title: String::new(),
             probability,
             shares: shares.to_vec(),
@@ -256,7 +260,7 @@ mod tests {
         let (ids, prior) = causes(&assessment);
         assert_eq!(
             ids,
-            [FaultId::PumpWorn, FaultId::MotorWorn, FaultId::OilLow]
+            [FaultId::PumpWorn, FaultId::MotorWorn, FaultId::OilLow].map(At::only)
         );
         for (p, wanted) in prior.iter().zip([0.5, 0.2, 0.3]) {
             assert!((p - wanted).abs() < 1e-12, "{prior:?}");

@@ -2,7 +2,7 @@
 
 use super::probe::Forecasts;
 use super::{Foretold, Would};
-use crate::faults::{self, FaultId};
+use crate::assessment::At;
 use crate::ranking::untransform;
 
 /// Causes whose readings are foretold.
@@ -14,7 +14,7 @@ pub fn foretold(
     forecasts: &Forecasts,
     weights: &[f64],
     of_cause: &[usize],
-    ids: &[FaultId],
+    ids: &[At],
     prior: &[f64],
 ) -> Vec<Foretold> {
     let mut order: Vec<usize> = (0..ids.len()).filter(|i| of_cause.contains(i)).collect();
@@ -50,9 +50,8 @@ pub fn foretold(
                     // Normal on the transformed scale: 1.2816 standard deviations hold the central 80 %.
                     let half = 1.2816 * square.max(0.0).sqrt();
                     Would {
-                        id: ids[*cause],
-                        title: faults::find(ids[*cause])
-                            .map_or(String::new(), |f| f.title.to_string()),
+                        id: ids[*cause].id,
+                        title: ids[*cause].title(),
                         value: untransform(probe.port, mean),
                         low: untransform(probe.port, mean - half),
                         high: untransform(probe.port, mean + half),
@@ -60,6 +59,7 @@ pub fn foretold(
                 })
                 .collect();
             Foretold {
+                path: probe.path,
                 port: probe.port,
                 condition: forecasts.data.conditions[probe.condition],
                 would,

@@ -187,6 +187,7 @@ mod tests {
         Assessment {
             causes: vec![Cause {
                 ids: vec![id],
+                paths: Vec::new(),
                 title: String::new(),
                 probability,
                 shares: vec![probability],

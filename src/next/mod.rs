@@ -24,7 +24,7 @@ pub use repair::expected_minutes;
 pub use rig::{minutes, open_answers, open_readings, possible};
 
 use crate::faults::FaultId;
-use crate::readings::{Condition, Port};
+use crate::readings::{Condition, Path, Port};
 use serde::{Deserialize, Serialize};
 
 /// What a reading would be under a cause. Base unit of the port's kind.
@@ -45,6 +45,9 @@ pub struct Would {
 /// One reading of an offered check, with what it would say.
 #[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
 pub struct Foretold {
+    /// Path; left where there is one.
+    #[serde(default, skip_serializing_if = "Path::is_left")]
+    pub path: Path,
     /// Port.
     pub port: Port,
     /// Condition.
@@ -91,6 +94,9 @@ pub struct Hold {
 pub struct RepairOffer {
     /// Cause that it ends; of a set that one action serves, the likeliest member.
     pub id: FaultId,
+    /// The side it is on, on a machine with two paths.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub path: Option<Path>,
     /// The repair, in words.
     pub repair: String,
     /// Minutes.

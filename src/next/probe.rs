@@ -6,7 +6,7 @@ use crate::ranking::{
     Bench, Data, Datum, Gauss, Heavy, Prediction, Says, accuracy, fit, slope, swap_chance,
 };
 use crate::readings::instrument::Instrument;
-use crate::readings::{OilTemperature, Port};
+use crate::readings::{OilTemperature, Path, Port};
 use crate::record::Visit;
 use crate::unit::Unit;
 
@@ -20,6 +20,8 @@ pub struct Probe {
     pub check: usize,
     /// Index into the merged conditions.
     pub condition: usize,
+    /// Path.
+    pub path: Path,
     /// Port.
     pub port: Port,
 }
@@ -62,6 +64,7 @@ fn probes(unit: &Unit, checks: &[&Check], visit: &Visit, data: &mut Data) -> Vec
             out.push(Probe {
                 check: i,
                 condition: at,
+                path: y.path,
                 port: y.port,
             });
         }
@@ -83,11 +86,15 @@ pub fn forecast(
     let k = taken.data.len();
     let mut merged = data.clone();
     for p in &probes {
-        let group = taken
+        // The gauge that stands on the port already, or one of its own.
+        let gauge = taken
             .data
             .iter()
-            .find(|d| d.port == p.port)
-            .map_or(taken.groups + p.port as usize, |d| d.group);
+            .find(|d| (d.path, d.port) == (p.path, p.port))
+            .map_or(
+                taken.data.len() + 2 * p.port as usize + p.path as usize,
+                |d| d.gauge,
+            );
         merged.data.push(Datum {
             reading: usize::MAX,
             port: p.port,
@@ -97,7 +104,9 @@ pub fn forecast(
             value: 0.0,
             own: 0.0,
             bias: 0.0,
-            group,
+            group: usize::MAX,
+            gauge,
+            path: p.path,
             swung: false,
             instrument: 0.0,
         });
@@ -171,7 +180,7 @@ fn given(
         })
         .collect();
     let mut mean: Vec<f64> = (k..k + q).map(middle).collect();
-    let shared = |i: usize, j: usize| merged.data[i].group == merged.data[j].group;
+    let shared = |i: usize, j: usize| merged.data[i].gauge == merged.data[j].gauge;
     let mut covariance = vec![0.0; q * q];
     for i in 0..q {
         for j in 0..q {

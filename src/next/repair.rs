@@ -2,7 +2,7 @@
 
 use super::RepairOffer;
 use super::answers::Outcome;
-use crate::assessment::{Assessment, Cause, Standing, Window};
+use crate::assessment::{Assessment, At, Cause, Standing, Window, sided};
 use crate::faults::{self, AlikeSet, Fault, FaultId, SETS};
 use crate::record::Visit;
 
@@ -38,7 +38,7 @@ fn minutes(id: FaultId) -> Option<f64> {
 
 /// The repairs that the causes ask for. A row that no reading can split is one job where one action serves all its members; it
 /// takes as long as its longest member.
-pub fn jobs(assessment: &Assessment, ids: &[FaultId]) -> Vec<Job> {
+pub fn jobs(assessment: &Assessment, ids: &[At]) -> Vec<Job> {
     let one_action = |row: &Cause| {
         SETS.iter().find(|s| {
             s.one_repair
@@ -52,11 +52,11 @@ pub fn jobs(assessment: &Assessment, ids: &[FaultId]) -> Vec<Job> {
     for row in &assessment.causes {
         let Some(set) = one_action(row) else { continue };
         let members: Vec<usize> = (0..ids.len())
-            .filter(|i| row.ids.contains(&ids[*i]))
+            .filter(|i| row.members().any(|m| m == ids[*i]))
             .collect();
         let longest = members
             .iter()
-            .filter_map(|i| minutes(ids[*i]))
+            .filter_map(|i| minutes(ids[*i].id))
             .fold(0.0, f64::max);
         if longest > 0.0 {
             members.iter().for_each(|i| taken[*i] = true);
@@ -68,7 +68,7 @@ pub fn jobs(assessment: &Assessment, ids: &[FaultId]) -> Vec<Job> {
         }
     }
     for (i, id) in ids.iter().enumerate().filter(|(i, _)| !taken[*i]) {
-        if let Some(minutes) = minutes(*id) {
+        if let Some(minutes) = minutes(id.id) {
             out.push(Job {
                 members: vec![i],
                 set: None,
@@ -197,7 +197,7 @@ fn waits(faults: &[&Fault], visit: &Visit, probability: f64) -> &'static str {
 pub fn best(
     visit: &Visit,
     assessment: &Assessment,
-    ids: &[FaultId],
+    ids: &[At],
     jobs: &[Job],
     probability: &[f64],
     check: Option<&CheckFirst>,
@@ -210,13 +210,14 @@ pub fn best(
     let members: Vec<&Fault> = job
         .members
         .iter()
-        .filter_map(|i| faults::find(ids[*i]))
+        .filter_map(|i| faults::find(ids[*i].id))
         .collect();
-    let lead = job
+    let lead_at = job
         .members
         .iter()
         .max_by(|a, b| probability[**a].total_cmp(&probability[**b]))
-        .and_then(|i| faults::find(ids[*i]))?;
+        .map(|i| ids[*i])?;
+    let lead = faults::find(lead_at.id)?;
     let p = job.probability(probability);
     let waits = waits(&members, visit, p);
     let mut cautions: Vec<&str> = Vec::new();
@@ -227,7 +228,8 @@ pub fn best(
     }
     Some(RepairOffer {
         id: lead.id,
-        repair: job.set.map_or(lead.repair, |s| s.action).to_string(),
+        path: lead_at.path,
+        repair: sided(lead_at.path, job.set.map_or(lead.repair, |s| s.action)),
         minutes: job.minutes,
         probability: p,
         proof: job.set.map_or(lead.proof, |s| s.split).to_string(),
@@ -239,17 +241,17 @@ pub fn best(
         waits: waits.to_string(),
         needs_manual: members.iter().any(|f| f.needs_manual),
         caution: cautions.join(" "),
-        proved_by: proved_by(assessment, lead.id),
+        proved_by: proved_by(assessment, lead_at),
     })
 }
 
 /// Readings that are off now, that the cause explains, and that must come back once it is mended. A reading that is off for another
 /// reason proves nothing about this repair.
-fn proved_by(assessment: &Assessment, id: FaultId) -> Vec<String> {
+fn proved_by(assessment: &Assessment, at: At) -> Vec<String> {
     let Some(row) = assessment
         .causes
         .iter()
-        .find(|c| c.pair.is_none() && c.ids.contains(&id))
+        .find(|c| c.pair.is_none() && c.members().any(|m| m == at))
     else {
         return Vec::new();
     };

@@ -1,15 +1,10 @@
 //! Why a check is offered, in one sentence.
 
 use super::mixture::Forecast;
-use crate::faults;
-use crate::faults::FaultId;
+use crate::assessment::{At, lower_first};
 
-fn title(id: FaultId) -> String {
-    let t = faults::find(id).map_or("", |f| f.title);
-    let mut chars = t.chars();
-    chars
-        .next()
-        .map_or(String::new(), |c| c.to_lowercase().chain(chars).collect())
+fn title(at: At) -> String {
+    lower_first(&at.title())
 }
 
 /// Mean and spread of a cause's first reading that tells most.
@@ -35,7 +30,7 @@ fn apart(a: &[&Forecast], b: &[&Forecast]) -> f64 {
 }
 
 /// The pair of causes that matters most and that the readings of a check set apart.
-pub fn by_readings(forecasts: &[Forecast], ids: &[FaultId], prior: &[f64]) -> Option<String> {
+pub fn by_readings(forecasts: &[Forecast], ids: &[At], prior: &[f64]) -> Option<String> {
     let mut order: Vec<usize> = (0..ids.len()).filter(|i| prior[*i] > 0.01).collect();
     order.sort_by(|a, b| prior[*b].total_cmp(&prior[*a]));
     order.truncate(6);

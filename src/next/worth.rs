@@ -7,8 +7,8 @@ use super::probe::Forecasts;
 use super::repair::{self, Job};
 use super::rig;
 use super::words;
+use crate::assessment::At;
 use crate::checks::{self, Check};
-use crate::faults::FaultId;
 use crate::observations::{self, Family, Observation};
 use crate::record::Visit;
 use crate::unit::Unit;
@@ -48,7 +48,7 @@ pub struct Known<'a> {
     /// The visit.
     pub visit: &'a Visit,
     /// Causes.
-    pub ids: &'a [FaultId],
+    pub ids: &'a [At],
     /// Their probabilities.
     pub prior: &'a [f64],
     /// The repairs that they ask for.
@@ -143,13 +143,13 @@ fn questions(known: &Known, check: &Check) -> Vec<(&'static Observation, Questio
         }
     };
     let mut list: Vec<(&'static Observation, Question, f64)> =
-        rig::open_answers(known.visit, check)
+        rig::open_answers(known.unit, known.visit, check)
             .into_iter()
             .map(|o| {
                 let chance: Vec<f64> = known
                     .ids
                     .iter()
-                    .map(|id| observations::probability(o, *id))
+                    .map(|id| observations::probability(o, id.id))
                     .collect();
                 let (_, bits) = yes_or_no(&chance, known.prior);
                 (

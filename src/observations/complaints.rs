@@ -1,7 +1,8 @@
 //! Complaints.
 
-use super::{BASE, Family, Group, Observation};
+use super::{BASE, Family, Group, Observation, even};
 use crate::faults::FaultId as F;
+use crate::readings::Path;
 
 /// Id of the complaint that stops all work.
 pub const RUNS_ON: &str = "runs-on";
@@ -249,7 +250,65 @@ pub const TABLE: &[Observation] = &[
             (F::InterlockOrDerate, 0.04),
             (F::InputDriveSlipping, 0.05),
             (F::ChargeStarvedByFunction, 0.02),
+            (F::PathsNullMismatch, 0.8),
+            (F::PathsStrokeMismatch, 0.85),
+            (F::TyreOrTrackMismatch, 0.85),
         ],
+        ..BASE
+    },
+    Observation {
+        id: "pulls-left",
+        words: "Pulls to the left going forward",
+        group: Group::Complaint,
+        family: Family::Direction,
+        two_path: true,
+        pulls: Some(Path::Left),
+        row: [
+            0.04, 0.03, 0.03, 0.02, 0.03, 0.30, 0.06, 0.40, 0.70, 0.35, 0.40, 0.45, 0.45, 0.40,
+            0.02, 0.06, 0.03,
+        ],
+        exceptions: &[
+            (F::OperatorOrLoad, 0.25),
+            (F::InterlockOrDerate, 0.04),
+            (F::InputDriveSlipping, 0.05),
+            (F::ChargeStarvedByFunction, 0.02),
+            (F::PathsNullMismatch, 0.8),
+            (F::PathsStrokeMismatch, 0.85),
+            (F::TyreOrTrackMismatch, 0.85),
+        ],
+        ..BASE
+    },
+    Observation {
+        id: "pulls-right",
+        words: "Pulls to the right going forward",
+        group: Group::Complaint,
+        family: Family::Direction,
+        two_path: true,
+        pulls: Some(Path::Right),
+        row: [
+            0.04, 0.03, 0.03, 0.02, 0.03, 0.30, 0.06, 0.40, 0.70, 0.35, 0.40, 0.45, 0.45, 0.40,
+            0.02, 0.06, 0.03,
+        ],
+        exceptions: &[
+            (F::OperatorOrLoad, 0.25),
+            (F::InterlockOrDerate, 0.04),
+            (F::InputDriveSlipping, 0.05),
+            (F::ChargeStarvedByFunction, 0.02),
+            (F::PathsNullMismatch, 0.8),
+            (F::PathsStrokeMismatch, 0.85),
+            (F::TyreOrTrackMismatch, 0.85),
+        ],
+        ..BASE
+    },
+    Observation {
+        id: "turns-alike-and-bends",
+        words: "Wheel turns alike left and right, and it still bends",
+        how: "Tap the turns of each side over the same stretch, there and back. Stand off the line of the wheels.",
+        group: Group::WhenItFails,
+        family: Family::Direction,
+        two_path: true,
+        row: even(0.04),
+        exceptions: &[(F::TyreOrTrackMismatch, 0.85), (F::OperatorOrLoad, 0.15)],
         ..BASE
     },
 ];

@@ -28,6 +28,43 @@ pub const TABLE: &[Observation] = &[
         ..BASE
     },
     Observation {
+        id: "signals-change-sides",
+        words: "Trouble changes sides with the control signals",
+        how: "Engine off while plugs or pilot lines are moved; tracks or wheels clear; low idle, a little lever: left asks right.",
+        group: Group::Found,
+        two_path: true,
+        row: [
+            0.03, 0.03, 0.03, 0.03, 0.03, 0.03, 0.03, 0.03, 0.05, 0.12, 0.85, 0.03, 0.03, 0.03,
+            0.03, 0.03, 0.03,
+        ],
+        exceptions: &[
+            (F::ControlOrificeBlocked, 0.05),
+            (F::FeedbackLinkWorn, 0.04),
+            (F::ServoLeak, 0.04),
+            (F::PathsStrokeMismatch, 0.25),
+        ],
+        ..BASE
+    },
+    Observation {
+        id: "hoses-change-sides",
+        words: "Trouble changes sides with the loop hoses",
+        how: "Only after a clean debris check. Loop bled, tracks or wheels clear, no travel: the left pump drives the right motor.",
+        group: Group::Found,
+        two_path: true,
+        row: [
+            0.05, 0.05, 0.05, 0.05, 0.08, 0.90, 0.60, 0.50, 0.92, 0.92, 0.92, 0.05, 0.04, 0.04,
+            0.05, 0.05, 0.05,
+        ],
+        exceptions: &[
+            (F::PumpWorn, 0.92),
+            (F::PumpWornAcross, 0.92),
+            (F::MotorWorn, 0.05),
+            (F::MotorWornAcross, 0.05),
+            (F::TyreOrTrackMismatch, 0.03),
+        ],
+        ..BASE
+    },
+    Observation {
         id: "arm-gives-speed",
         words: "Arm moved by hand at the pump gives the speed that the lever does not",
         how: "Wheels clear, rod off at the arm, low idle, hand and spanner clear of an arm that jumps.",

@@ -13,6 +13,7 @@ mod weigh;
 mod when;
 
 use crate::faults::{self, Column, FaultId};
+use crate::readings::Path;
 
 pub use complaints::RUNS_ON;
 pub use weigh::{Detail, OPERATOR, detail, kept, log_weights, prior_factor, stop_work};
@@ -99,6 +100,8 @@ pub struct Observation {
     pub family: Family,
     /// Offered on two-path machines only.
     pub two_path: bool,
+    /// Side that it says drags behind.
+    pub pulls: Option<Path>,
     /// Chance that it is seen, by [`Column`]. Common practice.
     pub row: [f64; COLUMNS],
     /// Causes that differ from their column. Common practice.
@@ -121,6 +124,7 @@ const BASE: Observation = Observation {
     group: Group::Look,
     family: Family::Alone,
     two_path: false,
+    pulls: None,
     row: [0.0; COLUMNS],
     exceptions: &[],
 };

@@ -89,7 +89,7 @@ fn every_group_and_family_is_used() {
             "{family:?}"
         );
     }
-    assert_eq!(all().filter(|o| o.two_path).count(), 1);
+    assert_eq!(all().filter(|o| o.two_path).count(), 6);
 }
 
 #[test]

@@ -1,6 +1,6 @@
 //! The whole assessment of a visit: windows, causes, reasons, doubts.
 
-use super::datum::{Data, gather};
+use super::datum::{Data, gather, has_sides, path_of};
 use super::hold::hold_time;
 use super::memo::Memo;
 use super::posterior::{Heavy, Weighed, weigh};
@@ -8,7 +8,7 @@ use super::predict::Bench;
 use super::quick::Last;
 use super::rows::rows;
 use super::seen;
-use crate::assessment::{Assessment, Cause, Trust, Window};
+use crate::assessment::{Assessment, At, Cause, Trust, Window};
 use crate::machine::{Warmth, builds, condition_latents, unit_latents};
 use crate::math;
 use crate::readings::instrument::Instrument;
@@ -92,7 +92,7 @@ impl<'a> Prepared<'a> {
         let mut bench = Bench::with(builds(unit), latents, &data, memo);
         // A window is wanted for every reading, also while nothing is typed yet.
         for (reading, condition) in visit.readings.iter().zip(&data.condition_of) {
-            bench.want(*condition, reading.port);
+            bench.want(*condition, path_of(unit, reading), reading.port);
         }
         Prepared {
             unit,
@@ -124,12 +124,13 @@ impl<'a> Prepared<'a> {
             ..
         } = self;
         for w in &mut weighed {
-            w.log_prior += math::ln(seen::prior_factor(visit, w.id, w.with).max(1e-6));
+            w.log_prior +=
+                math::ln(seen::prior_factor(visit, w.id, w.with.map(|with| with.id)).max(1e-6));
         }
         let observed = seen::observed(visit);
-        let words: Vec<String> = visit.readings.iter().map(words).collect();
+        let words: Vec<String> = visit.readings.iter().map(|r| words(unit, r)).collect();
         let causes = rows(&weighed, data, &visit.readings, &observed, &words);
-        let mut trust = trust(visit, data, &weighed, &causes);
+        let mut trust = trust(unit, visit, data, &weighed, &causes);
         trust.trust.change = change;
         trust.trust.solves = bench.solves.get();
         let hold = visit
@@ -155,14 +156,20 @@ struct Trusted {
     swapped: f64,
 }
 
-fn trust(visit: &Visit, data: &Data, weighed: &[Weighed], causes: &[Cause]) -> Trusted {
+fn trust(
+    unit: &Unit,
+    visit: &Visit,
+    data: &Data,
+    weighed: &[Weighed],
+    causes: &[Cause],
+) -> Trusted {
     let share = |w: &Weighed| {
         causes
             .iter()
             .find(|c| is_of(c, w))
             .map_or(0.0, |c| match w.with {
                 Some(_) => c.probability,
-                None => member_share(c, w.id),
+                None => member_share(c, w.at()),
             })
     };
     let mut trust = Trust::default();
@@ -186,7 +193,7 @@ fn trust(visit: &Visit, data: &Data, weighed: &[Weighed], causes: &[Cause]) -> T
         if *chance > ASK_AGAIN {
             for d in data.data.iter().filter(|d| d.group == group) {
                 if let Some(r) = visit.readings.get(d.reading) {
-                    trust.retake.push((r.id.clone(), retake_words(r)));
+                    trust.retake.push((r.id.clone(), retake_words(unit, r)));
                 }
             }
         }
@@ -196,31 +203,39 @@ fn trust(visit: &Visit, data: &Data, weighed: &[Weighed], causes: &[Cause]) -> T
 
 /// True where a row speaks of a weighed cause or pair.
 fn is_of(cause: &Cause, w: &Weighed) -> bool {
-    cause.ids.contains(&w.id)
-        && cause.pair.is_some() == w.with.is_some()
-        && w.with.is_none_or(|with| cause.ids.contains(&with))
+    let has = |at| cause.members().any(|m| m == at);
+    has(w.at()) && cause.pair.is_some() == w.with.is_some() && w.with.is_none_or(has)
 }
 
-fn member_share(cause: &Cause, id: crate::faults::FaultId) -> f64 {
+fn member_share(cause: &Cause, at: At) -> f64 {
     cause
-        .ids
-        .iter()
-        .position(|i| *i == id)
+        .members()
+        .position(|m| m == at)
         .and_then(|i| cause.shares.get(i).copied())
         .unwrap_or(0.0)
 }
 
 /// A reading in words: port and condition.
-fn words(reading: &Reading) -> String {
+fn words(unit: &Unit, reading: &Reading) -> String {
+    let sided = has_sides(unit, reading.port);
     format!(
-        "{}, {}",
+        "{}{}, {}",
         reading.port.words(),
+        if sided {
+            format!(" {}", reading.path.words())
+        } else {
+            String::new()
+        },
         condition_words(&reading.condition)
     )
 }
 
 fn condition_words(c: &Condition) -> String {
     let mut out = c.doing.words().to_lowercase();
+    if !c.stroked.is_both() {
+        out.push_str(", ");
+        out.push_str(c.stroked.words());
+    }
     if !c.doing.is_neutral() {
         out.push_str(match c.direction {
             Direction::Forward => ", forward",
@@ -235,7 +250,7 @@ fn condition_words(c: &Condition) -> String {
     out
 }
 
-fn retake_words(reading: &Reading) -> String {
+fn retake_words(unit: &Unit, reading: &Reading) -> String {
     let proof = match (&reading.seen, reading.port) {
         (Some(Seen::Nothing), _) => {
             "Push the coupling home, open the snubber, crack the hose end at the gauge: does oil come?"
@@ -249,7 +264,7 @@ fn retake_words(reading: &Reading) -> String {
     };
     format!(
         "{} does not fit what the others say. Take it again. {proof}",
-        words(reading)
+        words(unit, reading)
     )
 }
 

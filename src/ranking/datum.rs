@@ -6,8 +6,8 @@ use super::belief::Belief;
 use crate::machine::Warmth;
 use crate::math;
 use crate::readings::instrument::Instrument;
-use crate::readings::{Condition, Doing, Port, Reading, Rigging, Seen};
-use crate::unit::{FigureId, Unit};
+use crate::readings::{Condition, Doing, Path, Port, Reading, Rigging, Seen};
+use crate::unit::{FigureId, Paths, Unit};
 
 /// What kind of statement a datum makes.
 #[derive(Clone, Debug, PartialEq)]
@@ -29,6 +29,8 @@ pub struct Datum {
     pub reading: usize,
     /// Port.
     pub port: Port,
+    /// Path it is on.
+    pub path: Path,
     /// Index into the conditions.
     pub condition: usize,
     /// What it says.
@@ -41,8 +43,10 @@ pub struct Datum {
     pub own: f64,
     /// Effect on the transformed scale of one standard deviation of its instrument's bias.
     pub bias: f64,
-    /// Group whose bias is shared: one instrument on one port.
+    /// Group that is right or wrong together: one instrument on one port.
     pub group: usize,
+    /// Instrument whose bias it has: one that is moved from port to port keeps it, so that differences on it are sharp.
+    pub gauge: usize,
     /// The needle swung.
     pub swung: bool,
     /// Standard uncertainty of the instrument alone in the base unit.
@@ -155,15 +159,15 @@ pub fn instrument_of<'a>(
     instruments.iter().find(|i| i.id == rigging.instrument)
 }
 
-/// Name of the bias group of a reading: its rigging, else its port.
+/// Name of what is wrong together with a reading: its rigging, else its port.
 fn group_key(reading: &Reading, riggings: &[Rigging]) -> String {
     let own = riggings
         .iter()
         .find(|r| r.id == reading.rigging && !r.id.is_empty());
     match own.or_else(|| riggings.iter().rev().find(|r| r.port == reading.port)) {
-        // One gauge moved between two ports keeps its bias, but a wrong port is wrong for one place only.
-        Some(r) => format!("{}/{:?}", r.instrument, reading.port),
-        None => format!("/{:?}", reading.port),
+        // A wrong port is wrong for one place only.
+        Some(r) => format!("{}/{:?}/{:?}", r.instrument, reading.port, reading.path),
+        None => format!("/{:?}/{:?}", reading.port, reading.path),
     }
 }
 
@@ -191,6 +195,27 @@ fn creep_own(unit: &Unit, d: &Datum) -> f64 {
     (d.own * d.own + spread * spread).sqrt()
 }
 
+/// True where a unit has a port on either side.
+pub fn has_sides(unit: &Unit, port: Port) -> bool {
+    match unit.ticks.paths {
+        Paths::One => false,
+        Paths::TwoSharedCharge => !port.is_common(),
+        Paths::TwoOwnCharge => !matches!(
+            port,
+            Port::EngineSpeed | Port::PumpShaft | Port::SettledTemperature
+        ),
+    }
+}
+
+/// Path whose port a reading was taken on: left where there is one only, or where both share the port.
+pub fn path_of(unit: &Unit, reading: &Reading) -> Path {
+    if has_sides(unit, reading.port) {
+        reading.path
+    } else {
+        Path::Left
+    }
+}
+
 /// Sorts out what the readings of a visit say.
 pub fn gather(
     unit: &Unit,
@@ -214,6 +239,7 @@ pub fn gather_with(
         ..Data::default()
     };
     let mut keys: Vec<String> = Vec::new();
+    let mut gauges: Vec<String> = Vec::new();
     for (index, reading) in readings.iter().enumerate() {
         let condition = condition_index(&mut out.conditions, &reading.condition);
         out.condition_of.push(condition);
@@ -236,6 +262,15 @@ pub fn gather_with(
         };
         let a = accuracy(instrument, reading.port, value);
         let key = group_key(reading, riggings);
+        let gauge = match instrument {
+            Some(i) => i.id.clone(),
+            // One gauge of each kind is moved from side to side, where nobody says otherwise.
+            None => format!("/{:?}", reading.port),
+        };
+        let gauge = gauges.iter().position(|g| *g == gauge).unwrap_or_else(|| {
+            gauges.push(gauge);
+            gauges.len() - 1
+        });
         let group = keys.iter().position(|k| *k == key).unwrap_or_else(|| {
             keys.push(key);
             out.group_ports.push(reading.port);
@@ -244,6 +279,7 @@ pub fn gather_with(
         let mut made = datum(
             index,
             reading.port,
+            path_of(unit, reading),
             condition,
             says,
             value,
@@ -255,6 +291,7 @@ pub fn gather_with(
         if reading.condition.doing == Doing::NeutralFree {
             made.own = creep_own(unit, &made);
         }
+        made.gauge = gauge;
         out.data.push(made);
     }
     out.groups = keys.len();
@@ -289,6 +326,7 @@ fn statement(seen: &Seen, conditions: &mut Vec<Condition>) -> Option<(Says, f64,
 fn datum(
     reading: usize,
     port: Port,
+    path: Path,
     condition: usize,
     says: Says,
     value: f64,
@@ -321,6 +359,7 @@ fn datum(
     Datum {
         reading,
         port,
+        path,
         condition,
         says,
         t,
@@ -328,6 +367,7 @@ fn datum(
         own: own.max(1e-4),
         bias,
         group,
+        gauge: 0,
         swung: swing.is_some(),
         instrument,
     }

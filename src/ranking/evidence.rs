@@ -26,7 +26,7 @@ impl Probable {
     pub fn new(weighed: &[Weighed], seen: &[Seen]) -> Probable {
         let by_cause: Vec<Vec<f64>> = seen
             .iter()
-            .map(|s| weighed.iter().map(|w| s.log(w.id, w.with)).collect())
+            .map(|s| weighed.iter().map(|w| s.log(w.at(), w.with)).collect())
             .collect();
         let log_likelihood: Vec<f64> = (0..weighed.len())
             .map(|i| weighed[i].log_likelihood + by_cause.iter().map(|o| o[i]).sum::<f64>())

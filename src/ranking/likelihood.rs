@@ -181,7 +181,7 @@ fn branch(data: &Data, p: &Prediction, centre: &[f64], order: Option<&[Against]>
         for (j, kj) in joint.iter().enumerate().take(i + 1) {
             let e = &data.data[*kj];
             let mut s: f64 = row(*ki).iter().zip(row(*kj)).map(|(a, b)| a * b).sum();
-            if d.group == e.group {
+            if d.gauge == e.gauge {
                 s += d.bias * e.bias;
             }
             cov[i * n + j] = s;

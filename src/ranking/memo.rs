@@ -1,22 +1,22 @@
 //! Solved states kept from one assessment to the next: the same parameters in the same network show the same, so that one more
 //! reading costs only what it brings anew.
 
-use crate::circuit::{Params, Shown, Solution};
-use crate::readings::Port;
+use crate::circuit::{Shown, State};
+use crate::readings::{Path, Port};
 use core::cell::RefCell;
 use std::collections::HashMap;
 use std::rc::Rc;
 
-/// Most states that are kept; beyond it all are forgotten. A state with one port takes about 3 kB.
+/// Most states that are kept; beyond it all are forgotten. A state with one port takes about 2 kB.
 const MOST: usize = 12_000;
 
 /// A kept state and what its ports show.
 #[derive(Clone, Debug)]
 pub struct Kept {
     /// The state.
-    pub solution: Solution,
+    pub state: State,
     /// Ports read so far, with their derivatives.
-    pub ports: Vec<(Port, Shown)>,
+    pub ports: Vec<(Path, Port, Shown)>,
 }
 
 /// States by their parameters; none where there is no steady state.
@@ -41,7 +41,7 @@ impl Memo {
 
 /// Key of parameters in a network (`network`: key of its layout). Two different sets share one with a chance of about one in
 /// 10¹⁰ for all that is ever kept at once.
-pub fn key(network: u64, theta: &Params) -> u64 {
+pub fn key(network: u64, theta: &[f64]) -> u64 {
     theta.iter().fold(network, |h, v| mix(h, v.to_bits()))
 }
 

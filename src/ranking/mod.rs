@@ -23,12 +23,15 @@ mod quick;
 mod rows;
 mod seen;
 mod split;
+mod suspect;
 mod swing;
 
 pub use accuracy::{Accuracy, accuracy};
 pub use assess::{Session, assess};
 pub use belief::Belief;
-pub use datum::{Data, Datum, Says, gather, gather_with, instrument_of, slope, untransform};
+pub use datum::{
+    Data, Datum, Says, gather, gather_with, has_sides, instrument_of, path_of, slope, untransform,
+};
 pub use evidence::normalised;
 pub use gauss::{Gauss, LN_TWO_PI};
 pub use hold::hold_time;
@@ -39,3 +42,4 @@ pub use pairs::{apart, rate as pair_rate};
 pub use posterior::{Heavy, Posterior, Weighed, swap_chance, weigh};
 pub use predict::{Bench, Known, Prediction};
 pub use quick::{Carried, CarriedCause, CarriedNode};
+pub use suspect::{Suspect, suspects};

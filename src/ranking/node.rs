@@ -2,16 +2,22 @@
 
 use super::belief::Belief;
 use super::split::Place;
+use super::suspect::Suspect;
 use crate::circuit::{Param, Params};
 use crate::faults::{Bend, Fault, SeverityShape};
 use crate::machine::Build;
 use crate::math;
+use crate::readings::Path;
 
 /// A second cause at work beside the first.
 #[derive(Clone, Copy, Debug)]
 pub struct Second {
     /// Which.
     pub fault: &'static Fault,
+    /// Path it is on; left where there is one, or where the part is common.
+    pub path: Path,
+    /// It is on that side and not common.
+    pub sided: bool,
     /// Index into its effects.
     pub effect: Option<usize>,
     /// Sign of those bends that can go either way.
@@ -27,6 +33,8 @@ pub struct Second {
 pub struct Node {
     /// Index into the builds.
     pub build: usize,
+    /// Path that the cause is on; left where there is one, or where the part is common.
+    pub path: Path,
     /// Index into the fault's effects; none: no effect on the circuit.
     pub effect: Option<usize>,
     /// Sign of those bends that can go either way.
@@ -55,15 +63,18 @@ impl Node {
     }
 
     /// The same node with its two causes in the other order, and the cause that is then the first; none for a single cause.
-    pub fn turned(&self, first: &'static Fault) -> Option<(&'static Fault, Node)> {
+    pub fn turned(&self, first: Suspect) -> Option<(Suspect, Node)> {
         let second = self.second?;
         let node = Node {
+            path: second.path,
             effect: second.effect,
             sign: second.sign,
             quantile: second.quantile,
             half: second.half,
             second: Some(Second {
-                fault: first,
+                fault: first.fault,
+                path: self.path,
+                sided: first.path.is_some(),
                 effect: self.effect,
                 sign: self.sign,
                 quantile: self.quantile,
@@ -71,7 +82,11 @@ impl Node {
             }),
             ..*self
         };
-        Some((second.fault, node))
+        let other = Suspect {
+            fault: second.fault,
+            path: second.sided.then_some(second.path),
+        };
+        Some((other, node))
     }
 }
 
@@ -87,10 +102,10 @@ pub fn severity(shape: SeverityShape, quantile: f64) -> f64 {
 }
 
 /// Size of a machine's seats over the reference of 75 and 15 cm³/rev that added leaks are written for.
-fn size_of(theta: &Params, p: Param) -> f64 {
+fn size_of(theta: &Params, path: Path, p: Param) -> f64 {
     match p {
         Param::CheckLeakA | Param::CheckLeakB | Param::Bypass => {
-            theta[Param::PumpDisp as usize] / 75.0
+            theta[Param::PumpDisp.on(path)] / 75.0
         }
         Param::ReliefHeld | Param::ConsumerLeak | Param::ServoLeak => {
             theta[Param::ChargeDisp as usize] / 15.0
@@ -99,14 +114,21 @@ fn size_of(theta: &Params, p: Param) -> f64 {
     }
 }
 
-/// Bends the parameters of a condition; returns by how much each bent parameter's scatter is scaled.
-pub fn bend(theta: &mut Params, bends: &[(Param, Bend)], s: f64, sign: f64) -> Vec<(Param, f64)> {
+/// Bends the parameters of a path in a condition; returns the place of each bent one and by how much its scatter is scaled.
+pub fn bend(
+    theta: &mut Params,
+    path: Path,
+    bends: &[(Param, Bend)],
+    s: f64,
+    sign: f64,
+) -> Vec<(usize, f64)> {
     let geometric = |from: f64, to: f64| from * math::pow(to / from, s);
     let straight = |from: f64, to: f64| from + (to - from) * s;
     let mut factors = Vec::with_capacity(bends.len());
     for (p, b) in bends {
-        let size = size_of(theta, *p);
-        let v = &mut theta[*p as usize];
+        let size = size_of(theta, path, *p);
+        let place = p.on(path);
+        let v = &mut theta[place];
         let factor = match *b {
             Bend::Times(from, to) => geometric(from, to),
             Bend::TimesLinear(from, to) => straight(from, to),
@@ -124,19 +146,20 @@ pub fn bend(theta: &mut Params, bends: &[(Param, Bend)], s: f64, sign: f64) -> V
             }
         };
         *v *= factor;
-        factors.push((*p, factor));
+        factors.push((place, factor));
     }
     factors
 }
 
 /// The nodes of a cause, and the log of its prior mass over the builds (base rate × share of builds that can have it).
-pub fn nodes(fault: &Fault, builds: &[Build], belief: &Belief) -> (Vec<Node>, f64) {
+pub fn nodes(suspect: &Suspect, builds: &[Build], belief: &Belief) -> (Vec<Node>, f64) {
+    let fault = suspect.fault;
     let masses: Vec<f64> = builds
         .iter()
         .map(|b| b.share * (fault.possible)(&b.unit).max(0.0))
         .collect();
     let total: f64 = masses.iter().sum();
-    let rate = belief.rate(fault);
+    let rate = belief.rate(fault) * suspect.share();
     if total <= 0.0 || rate <= 0.0 {
         return (Vec::new(), f64::NEG_INFINITY);
     }
@@ -167,6 +190,7 @@ pub fn nodes(fault: &Fault, builds: &[Build], belief: &Belief) -> (Vec<Node>, f6
             for i in 0..n {
                 out.push(Node {
                     build,
+                    path: suspect.path.unwrap_or_default(),
                     effect: *effect,
                     sign: *sign,
                     quantile: if plain {

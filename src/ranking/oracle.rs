@@ -7,13 +7,14 @@ use super::likelihood::fit;
 use super::node::{Node, nodes};
 use super::posterior::weigh;
 use super::predict::{Bench, Prediction};
+use super::suspect::Suspect;
 use crate::faults::{self, Fault, FaultId};
 use crate::machine::{builds, condition_latents, unit_latents};
 use crate::math;
 use crate::quantity::{Kind, Measure};
 use crate::readings::{
-    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading, Seen,
-    SideNaming,
+    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Path, Place, Port, Reading,
+    Seen, SideNaming, Stroked,
 };
 use crate::unit::{Control, Figure, FigureId, Filter, MachineClass, Source, Tick, Ticks, Unit};
 use crate::windows::Normals;
@@ -71,6 +72,7 @@ fn conditions() -> Vec<(Port, Condition)> {
             }),
         flushing_blocked: false,
         consumers_capped: false,
+        stroked: Stroked::Both,
     };
     let neutral = |e| c(Doing::Neutral, Direction::Forward, Lever::Full, e);
     vec![
@@ -132,7 +134,7 @@ fn coarse() -> Belief {
 }
 
 /// Readings of a machine with a fault, drawn from the model itself.
-fn readings(unit: &Unit, fault: &Fault, take: usize, draw: &mut Normals) -> Vec<Reading> {
+fn readings(unit: &Unit, fault: &'static Fault, take: usize, draw: &mut Normals) -> Vec<Reading> {
     let ports = conditions();
     let mut list: Vec<Reading> = ports
         .iter()
@@ -141,6 +143,7 @@ fn readings(unit: &Unit, fault: &Fault, take: usize, draw: &mut Normals) -> Vec<
         .map(|(i, (port, condition))| Reading {
             id: format!("{i}"),
             port: *port,
+            path: Path::Left,
             condition: *condition,
             rigging: String::new(),
             seen: Measure::from_base(1.0, port.kind())
@@ -152,7 +155,7 @@ fn readings(unit: &Unit, fault: &Fault, take: usize, draw: &mut Normals) -> Vec<
         .collect();
     let data = gather(unit, &list, &[], &[]);
     let bench = bench(unit, &data);
-    let (all, _) = nodes(fault, &bench.builds, &coarse());
+    let (all, _) = nodes(&Suspect { fault, path: None }, &bench.builds, &coarse());
     let node = Node {
         second: None,
         place: None,
@@ -164,7 +167,11 @@ fn readings(unit: &Unit, fault: &Fault, take: usize, draw: &mut Normals) -> Vec<
         let shown = bench
             .values(fault, &node, data.condition_of[i], &u)
             .expect("a state");
-        let value = shown.iter().find(|(p, _)| *p == r.port).expect("wanted").1;
+        let value = shown
+            .iter()
+            .find(|(_, p, _)| *p == r.port)
+            .expect("wanted")
+            .2;
         r.seen = Measure::from_base(value * (1.0 + 0.004 * draw.normal()), r.port.kind())
             .ok()
             .map(|value| Seen::Value { value });
@@ -173,8 +180,13 @@ fn readings(unit: &Unit, fault: &Fault, take: usize, draw: &mut Normals) -> Vec<
 }
 
 /// Log likelihood of each cause by plain means over draws, with the standard error of each mean (relative).
-fn brute_force(bench: &Bench, data: &Data, fault: &Fault, draw: &mut Normals) -> (f64, f64, f64) {
-    let (all, prior) = nodes(fault, &bench.builds, &coarse());
+fn brute_force(
+    bench: &Bench,
+    data: &Data,
+    fault: &'static Fault,
+    draw: &mut Normals,
+) -> (f64, f64, f64) {
+    let (all, prior) = nodes(&Suspect { fault, path: None }, &bench.builds, &coarse());
     if all.is_empty() {
         return (f64::NEG_INFINITY, f64::NEG_INFINITY, 0.0);
     }

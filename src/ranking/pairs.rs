@@ -5,7 +5,7 @@ use super::datum::{Data, Says};
 use super::gauss::Whitener;
 use super::node::{Node, Second};
 use super::predict::Prediction;
-use crate::circuit::Param;
+use super::suspect::Suspect;
 use crate::faults::{Fault, FaultId};
 use crate::machine::Build;
 use crate::math;
@@ -13,7 +13,7 @@ use crate::math;
 /// A node of a single cause, as it was predicted in the middle of the scatter.
 pub struct Alone<'a> {
     /// Its cause.
-    pub fault: &'static Fault,
+    pub suspect: Suspect,
     /// The node.
     pub node: Node,
     /// Predicted data on their transformed scales.
@@ -25,7 +25,7 @@ pub struct Alone<'a> {
 /// Two causes at once, with the nodes that are worth solving.
 pub struct Candidate {
     /// The two.
-    pub faults: [&'static Fault; 2],
+    pub suspects: [Suspect; 2],
     /// Log of the base rate.
     pub log_prior: f64,
     /// Nodes, weighted as shares of the pair.
@@ -65,21 +65,32 @@ pub fn rate(belief: &Belief, a: &Fault, b: &Fault) -> f64 {
     belief.pairs * (independent + linked)
 }
 
+/// Share of the linked rate that falls to worn parts of different paths: their loops are apart, their oil is one. Common practice.
+const ACROSS_PATHS: f64 = 0.15;
+
+/// As [`rate`], of causes at their places.
+fn rate_at(belief: &Belief, a: &Suspect, b: &Suspect) -> f64 {
+    let pair = rate(belief, a.fault, b.fault);
+    match (a.path, b.path) {
+        (None, None) => pair,
+        (Some(p), Some(q)) if p != q => {
+            let linked = DIRT.contains(&a.fault.id) && DIRT.contains(&b.fault.id);
+            pair * if linked { ACROSS_PATHS } else { 0.25 }
+        }
+        (Some(_), Some(_)) => pair * 0.5,
+        _ => pair * 0.5,
+    }
+}
+
 /// True where two causes can be told as two: each bends something that the other does not.
-pub fn apart(a: &Fault, b: &Fault) -> bool {
-    let bent = |f: &Fault| -> Vec<Param> {
-        f.effects
-            .iter()
-            .flat_map(|e| e.bends.iter().map(|(p, _)| *p))
-            .collect()
-    };
+pub fn apart(a: &Suspect, b: &Suspect) -> bool {
     let whole = |f: &Fault| {
         !f.effects.is_empty()
             && !f.stop_work
             && !matches!(f.id, FaultId::AssemblyError | FaultId::OperatorOrLoad)
     };
-    let (x, y) = (bent(a), bent(b));
-    whole(a) && whole(b) && !x.iter().any(|p| y.contains(p))
+    let other: Vec<usize> = b.bent().collect();
+    whole(a.fault) && whole(b.fault) && !a.bent().any(|p| other.contains(&p))
 }
 
 /// Residuals and effects without correlation.
@@ -102,7 +113,7 @@ fn white(data: &Data, sound: &[(Node, Prediction)], alone: &[Alone]) -> Option<W
         for (j, kj) in used.iter().enumerate().take(i + 1) {
             let (d, e) = (&data.data[*ki], &data.data[*kj]);
             let mut s: f64 = row(*ki).iter().zip(row(*kj)).map(|(a, b)| a * b).sum();
-            if d.group == e.group {
+            if d.gauge == e.gauge {
                 s += d.bias * e.bias;
             }
             if i == j {
@@ -174,17 +185,17 @@ pub fn candidates(
     let Some(white) = white(data, sound, alone) else {
         return Vec::new();
     };
-    let mut causes: Vec<&'static Fault> = Vec::new();
+    let mut causes: Vec<Suspect> = Vec::new();
     for a in alone {
-        if !causes.iter().any(|c| c.id == a.fault.id) {
-            causes.push(a.fault);
+        if !causes.iter().any(|c| c.at() == a.suspect.at()) {
+            causes.push(a.suspect);
         }
     }
     let nodes_of: Vec<Vec<usize>> = causes
         .iter()
         .map(|c| {
             (0..alone.len())
-                .filter(|i| alone[*i].fault.id == c.id)
+                .filter(|i| alone[*i].suspect.at() == c.at())
                 .collect()
         })
         .collect();
@@ -212,7 +223,7 @@ pub fn candidates(
     let best_single = causes
         .iter()
         .zip(&single)
-        .map(|(c, log)| math::ln(data.belief.rate(c).max(1e-12)) + log)
+        .map(|(c, log)| math::ln((data.belief.rate(c.fault) * c.share()).max(1e-12)) + log)
         .fold(f64::NEG_INFINITY, f64::max);
     // Of nodes on the same build; the build's share is counted once.
     let joint = |a: usize, b: usize| {
@@ -230,11 +241,12 @@ pub fn candidates(
     let thin = |list: &[usize], all: &[usize]| {
         math::ln(all.len().max(1) as f64 / list.len().max(1) as f64)
     };
-    let prior = |a: usize, b: usize| math::ln(rate(&data.belief, causes[a], causes[b]).max(1e-12));
+    let prior =
+        |a: usize, b: usize| math::ln(rate_at(&data.belief, &causes[a], &causes[b]).max(1e-12));
     let mut ranked: Vec<(f64, usize, usize)> = Vec::new();
     for a in 0..causes.len() {
         for b in a + 1..causes.len() {
-            if !apart(causes[a], causes[b]) {
+            if !apart(&causes[a], &causes[b]) {
                 continue;
             }
             let logs: Vec<f64> = coarse[a]
@@ -275,7 +287,9 @@ pub fn candidates(
                     let other = &alone[j].node;
                     Node {
                         second: Some(Second {
-                            fault: alone[j].fault,
+                            fault: alone[j].suspect.fault,
+                            path: other.path,
+                            sided: alone[j].suspect.path.is_some(),
                             effect: other.effect,
                             sign: other.sign,
                             quantile: other.quantile,
@@ -287,7 +301,7 @@ pub fn candidates(
                 })
                 .collect();
             Candidate {
-                faults: [causes[a], causes[b]],
+                suspects: [causes[a], causes[b]],
                 log_prior: prior(a, b),
                 nodes,
             }

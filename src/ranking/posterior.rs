@@ -8,8 +8,12 @@ use super::node::{Node, nodes};
 use super::pairs::{self, Alone, Candidate};
 use super::predict::{Bench, CELLS, Prediction};
 use super::quick::{Carried, CarriedCause, carry};
+use super::suspect::{Suspect, suspects};
+use crate::assessment::At;
+use crate::circuit::Arrangement;
 use crate::faults::{self, Fault, FaultId};
 use crate::math;
+use crate::readings::Path;
 use crate::readings::SideNaming;
 use std::collections::BTreeMap;
 
@@ -30,8 +34,10 @@ const STEEP: f64 = 0.5;
 pub struct Weighed {
     /// Which.
     pub id: FaultId,
+    /// The side it is on, on a machine with two paths.
+    pub path: Option<Path>,
     /// The second one, where two are at work together.
-    pub with: Option<FaultId>,
+    pub with: Option<At>,
     /// Log of its base rate over the builds (per hundred calls).
     pub log_prior: f64,
     /// Log likelihood of all data.
@@ -82,6 +88,8 @@ impl Held {
 pub struct Heavy {
     /// Its cause.
     pub fault: &'static Fault,
+    /// The side it is on.
+    pub path: Option<Path>,
     /// The node.
     pub node: Node,
     /// Log of base rate × share × likelihood of the readings, not normalised.
@@ -100,6 +108,21 @@ pub struct Posterior {
     pub carried: Carried,
 }
 
+impl Weighed {
+    /// The cause with its side.
+    pub fn at(&self) -> At {
+        At {
+            id: self.id,
+            path: self.path,
+        }
+    }
+
+    /// True for a single cause at a place.
+    pub fn is_alone(&self, at: At) -> bool {
+        self.at() == at && self.with.is_none()
+    }
+}
+
 /// Chance that sides or directions are swapped in the notes.
 pub fn swap_chance(sides: SideNaming, belief: &Belief) -> f64 {
     if sides == SideNaming::AsMarked {
@@ -112,15 +135,17 @@ pub fn swap_chance(sides: SideNaming, belief: &Belief) -> f64 {
 /// Weighs every cause of the catalogue.
 pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
     let swap = swap_chance(sides, &data.belief);
-    let mut catalogue: Vec<&'static Fault> = faults::all()
-        .iter()
-        .filter(|f| f.id != FaultId::NotListed)
-        .collect();
+    let arrangement = bench
+        .builds
+        .first()
+        .map_or(Arrangement::Single, |b| b.layout.arrangement);
+    let mut catalogue: Vec<Suspect> = suspects(arrangement);
     let mut held: Vec<Held> = Vec::new();
     let mut priors = vec![f64::NEG_INFINITY; catalogue.len()];
     let sound = sound(bench, data);
-    for (cause, fault) in catalogue.iter().enumerate() {
-        let (list, prior) = nodes(fault, &bench.builds, &data.belief);
+    for (cause, suspect) in catalogue.iter().enumerate() {
+        let fault = suspect.fault;
+        let (list, prior) = nodes(suspect, &bench.builds, &data.belief);
         priors[cause] = prior;
         for node in list {
             let p = bench.predict(fault, &node, data, &[]);
@@ -136,14 +161,14 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
     }
     let mut change = settle(bench, data, &catalogue, &priors, &mut held, swap);
     let singles = catalogue.len();
-    let mut second: Vec<Option<FaultId>> = vec![None; singles];
+    let mut second: Vec<Option<At>> = vec![None; singles];
     for pair in pairs_of(data, bench, &sound, &catalogue, &held) {
         let cause = catalogue.len();
-        catalogue.push(pair.faults[0]);
-        second.push(Some(pair.faults[1].id));
+        catalogue.push(pair.suspects[0]);
+        second.push(Some(pair.suspects[1].at()));
         priors.push(pair.log_prior);
         for node in pair.nodes {
-            let p = bench.predict(pair.faults[0], &node, data, &[]);
+            let p = bench.predict(pair.suspects[0].fault, &node, data, &[]);
             held.extend(hold(cause, node, p, data, swap));
         }
     }
@@ -155,9 +180,9 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
         .iter()
         .enumerate()
         .filter(|(i, _)| priors[*i].is_finite() && (*i < singles || whole[*i] > SHOWN))
-        .map(|(i, fault)| {
+        .map(|(i, suspect)| {
             collect(
-                fault.id,
+                suspect.at(),
                 second[i],
                 priors[i],
                 held.iter().filter(|h| h.cause == i).map(Held::part),
@@ -172,8 +197,8 @@ pub fn weigh(bench: &Bench, data: &Data, sides: SideNaming) -> Posterior {
     let causes = catalogue
         .iter()
         .enumerate()
-        .map(|(i, fault)| CarriedCause {
-            fault,
+        .map(|(i, suspect)| CarriedCause {
+            suspect: *suspect,
             with: second[i],
             log_prior: priors[i],
             shown: i < singles || whole[i] > SHOWN,
@@ -193,6 +218,7 @@ pub(super) fn unlisted(data: &Data, sound: &Prediction) -> Option<Weighed> {
     let log = not_listed(data, sound);
     Some(Weighed {
         id: FaultId::NotListed,
+        path: None,
         with: None,
         log_prior: math::ln(data.belief.rate(entry).max(1e-9)),
         log_likelihood: log,
@@ -211,7 +237,7 @@ const COUNTS: f64 = 0.02;
 /// Most nodes that are handed on.
 const MOST_HANDED_ON: usize = 90;
 
-fn heaviest(catalogue: &[&'static Fault], priors: &[f64], held: &[Held]) -> Vec<Heavy> {
+fn heaviest(catalogue: &[Suspect], priors: &[f64], held: &[Held]) -> Vec<Heavy> {
     let mut best = vec![f64::NEG_INFINITY; catalogue.len()];
     for h in held {
         best[h.cause] = best[h.cause].max(h.log());
@@ -221,15 +247,16 @@ fn heaviest(catalogue: &[&'static Fault], priors: &[f64], held: &[Held]) -> Vec<
         .filter(|h| h.log() > best[h.cause] + math::ln(COUNTS))
         .flat_map(|h| {
             let log = priors[h.cause] + h.log();
-            let fault = catalogue[h.cause];
+            let suspect = catalogue[h.cause];
             // Two causes at once speak for either with half their weight.
-            let (log, other) = match h.node.turned(fault) {
+            let (log, other) = match h.node.turned(suspect) {
                 Some((second, node)) => {
                     let log = log - core::f64::consts::LN_2;
                     (
                         log,
                         Some(Heavy {
-                            fault: second,
+                            fault: second.fault,
+                            path: second.path,
                             node,
                             log,
                         }),
@@ -237,11 +264,20 @@ fn heaviest(catalogue: &[&'static Fault], priors: &[f64], held: &[Held]) -> Vec<
                 }
                 None => (log, None),
             };
-            let node = h.node;
-            core::iter::once(Heavy { fault, node, log }).chain(other)
+            let first = Heavy {
+                fault: suspect.fault,
+                path: suspect.path,
+                node: h.node,
+                log,
+            };
+            core::iter::once(first).chain(other)
         })
         .collect();
-    list.sort_by(|a, b| b.log.total_cmp(&a.log).then(a.fault.id.cmp(&b.fault.id)));
+    list.sort_by(|a, b| {
+        b.log
+            .total_cmp(&a.log)
+            .then((a.fault.id, a.path).cmp(&(b.fault.id, b.path)))
+    });
     list.truncate(4 * MOST_HANDED_ON);
     list
 }
@@ -269,7 +305,7 @@ fn shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
 fn settle(
     bench: &Bench,
     data: &Data,
-    catalogue: &[&Fault],
+    catalogue: &[Suspect],
     priors: &[f64],
     held: &mut [Held],
     swap: f64,
@@ -301,7 +337,8 @@ fn sound(bench: &Bench, data: &Data) -> Vec<(Node, Prediction)> {
         rates: BTreeMap::new(),
         ..data.belief.clone()
     };
-    nodes(fault, &bench.builds, &believed)
+    let suspect = Suspect { fault, path: None };
+    nodes(&suspect, &bench.builds, &believed)
         .0
         .into_iter()
         .map(|node| {
@@ -315,13 +352,13 @@ fn pairs_of(
     data: &Data,
     bench: &Bench,
     sound: &[(Node, Prediction)],
-    catalogue: &[&'static Fault],
+    catalogue: &[Suspect],
     held: &[Held],
 ) -> Vec<Candidate> {
     let alone: Vec<Alone> = held
         .iter()
         .map(|h| Alone {
-            fault: catalogue[h.cause],
+            suspect: catalogue[h.cause],
             node: h.node,
             mean: &h.first,
             cell: &h.cell,
@@ -356,7 +393,7 @@ pub(super) fn means_at_the_middle(p: &Prediction, centre: &[f64]) -> Vec<f64> {
 fn again(
     bench: &Bench,
     data: &Data,
-    catalogue: &[&Fault],
+    catalogue: &[Suspect],
     priors: &[f64],
     held: &mut [Held],
     swap: f64,
@@ -380,7 +417,7 @@ fn again(
             // The place in a severity cell ends at the cell's wall.
             *place = place.clamp(-(3f64.sqrt()), 3f64.sqrt());
         }
-        let fault = catalogue[h.cause];
+        let fault = catalogue[h.cause].fault;
         let p = bench.predict(fault, &h.node, data, &centre);
         if let Some(f) = fit(data, &p, &centre, swap) {
             let h = &mut held[i];
@@ -404,8 +441,8 @@ pub(super) struct Part<'a> {
 
 /// Sums a cause up over its nodes.
 pub(super) fn collect<'a>(
-    id: FaultId,
-    with: Option<FaultId>,
+    at: At,
+    with: Option<At>,
     log_prior: f64,
     nodes: impl Iterator<Item = Part<'a>>,
     data: &Data,
@@ -459,7 +496,8 @@ pub(super) fn collect<'a>(
         .collect();
     let heaviest = weights.iter().copied().fold(0.0, f64::max);
     Weighed {
-        id,
+        id: at.id,
+        path: at.path,
         with,
         log_prior,
         log_likelihood,

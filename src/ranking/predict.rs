@@ -5,10 +5,10 @@ use super::memo::{self, Kept, Memo};
 use super::node::{Node, bend, severity};
 use super::split::Split;
 use super::swing::Swings;
-use crate::circuit::{Network, Param, Params, Scale, Shown, Solution, State};
+use crate::circuit::{Arrangement, Network, Param, Params, Scale, Shown, Solution, State, VALUES};
 use crate::faults::Fault;
 use crate::machine::{Build, Latents, apply, base, layout_for, scattered};
-use crate::readings::Port;
+use crate::readings::{Path, Port};
 
 /// Everything that predictions need, made once for an assessment.
 pub struct Bench {
@@ -28,12 +28,14 @@ pub struct Bench {
     wider: f64,
     /// Which of it is sampled at the nodes.
     split: Split,
-    /// For each condition: latent, parameter, size.
-    acts: Vec<Vec<(usize, Param, f64)>>,
+    /// For each condition: latent, parameter, path, size.
+    acts: Vec<Vec<(usize, Param, Path, f64)>>,
     /// Conditions with their consumers capped.
     capped: Vec<bool>,
     /// Ports wanted in each condition.
-    wanted: Vec<Vec<Port>>,
+    wanted: Vec<Vec<(Path, Port)>>,
+    /// Values of a parameter table that the arrangement uses.
+    values: usize,
     /// Circuit solves so far.
     pub solves: core::cell::Cell<u64>,
     /// Last state a build and condition: where the next solve starts.
@@ -43,9 +45,18 @@ pub struct Bench {
 /// What one condition shows.
 #[derive(Clone)]
 struct Shows {
-    ports: Vec<(Port, Shown)>,
-    filled: f64,
+    ports: Vec<(Path, Port, Shown)>,
+    filled: [f64; 2],
     air: f64,
+}
+
+impl Shows {
+    /// Place of the port that a datum was read on.
+    fn place(&self, d: &Datum) -> Option<usize> {
+        self.ports
+            .iter()
+            .position(|(path, port, _)| (*path, *port) == (d.path, d.port))
+    }
 }
 
 /// Prediction of a node.
@@ -153,31 +164,37 @@ impl Bench {
                 for (i, latent) in latents.0.iter().enumerate() {
                     for a in &latent.acts {
                         if a.condition.is_none_or(|x| x == c) {
-                            list.push((i, a.param, a.size * wider));
+                            list.push((i, a.param, a.path, a.size * wider));
                         }
                     }
                 }
                 list
             })
             .collect();
-        let mut wanted: Vec<Vec<Port>> = vec![Vec::new(); conditions.len()];
-        let mut want = |c: usize, p: Port| {
-            if !wanted[c].contains(&p) {
-                wanted[c].push(p);
+        let mut wanted: Vec<Vec<(Path, Port)>> = vec![Vec::new(); conditions.len()];
+        let mut want = |c: usize, path: Path, p: Port| {
+            if !wanted[c].contains(&(path, p)) {
+                wanted[c].push((path, p));
             }
         };
         for d in &data.data {
-            want(d.condition, d.port);
+            want(d.condition, d.path, d.port);
             // Swapped sides are always a possibility.
             match d.port {
-                Port::LoopA => want(d.condition, Port::LoopB),
-                Port::LoopB => want(d.condition, Port::LoopA),
+                Port::LoopA => want(d.condition, d.path, Port::LoopB),
+                Port::LoopB => want(d.condition, d.path, Port::LoopA),
                 _ => {}
             }
             if let Says::Share(other) = d.says {
-                want(other, d.port);
+                want(other, d.path, d.port);
             }
         }
+        let single = |b: &Build| b.layout.arrangement == Arrangement::Single;
+        let values = if builds.iter().all(single) {
+            Param::COUNT
+        } else {
+            VALUES
+        };
         let warm = vec![vec![None; conditions.len()]; builds.len()];
         Bench {
             builds,
@@ -191,6 +208,7 @@ impl Bench {
             acts,
             capped: conditions.iter().map(|c| c.consumers_capped).collect(),
             wanted,
+            values,
             solves: core::cell::Cell::new(0),
             warm: core::cell::RefCell::new(warm),
         }
@@ -202,11 +220,11 @@ impl Bench {
     }
 
     /// Adds a port to what a condition must show.
-    pub fn want(&mut self, condition: usize, port: Port) {
+    pub fn want(&mut self, condition: usize, path: Path, port: Port) {
         if let Some(list) = self.wanted.get_mut(condition)
-            && !list.contains(&port)
+            && !list.contains(&(path, port))
         {
-            list.push(port);
+            list.push((path, port));
         }
     }
 
@@ -225,7 +243,7 @@ impl Bench {
         condition: usize,
         u: &[f64],
         shift: [f64; CELLS],
-    ) -> (Params, Vec<(Param, f64)>) {
+    ) -> (Params, Vec<(usize, f64)>) {
         let base = &self.bases[node.build][condition];
         let mut theta = if u.is_empty() && node.place.is_none() {
             *base
@@ -241,6 +259,7 @@ impl Bench {
             let place = node.quantile + node.half * shift[0];
             factors = bend(
                 &mut theta,
+                node.path,
                 effect.bends,
                 severity(fault.severity, place),
                 node.sign,
@@ -252,6 +271,7 @@ impl Bench {
             let place = second.quantile + second.half * shift[1];
             factors.extend(bend(
                 &mut theta,
+                second.path,
                 effect.bends,
                 severity(second.fault.severity, place),
                 second.sign,
@@ -259,9 +279,14 @@ impl Bench {
         }
         if self.capped[condition] {
             // A capped consumer neither drinks nor leaks.
-            theta[Param::ConsumerLeak as usize] *= CAPPED;
+            for path in Path::BOTH {
+                theta[Param::ConsumerLeak.on(path)] *= CAPPED;
+            }
         }
-        keep_order(&mut theta);
+        keep_order(&mut theta, Path::Left);
+        if self.values > Param::COUNT {
+            keep_order(&mut theta, Path::Right);
+        }
         (theta, factors)
     }
 
@@ -269,25 +294,24 @@ impl Bench {
     fn shows(&self, node: &Node, condition: usize, theta: &Params) -> Option<Shows> {
         let net = &self.networks[node.build][condition];
         let wants = &self.wanted[condition];
-        let key = memo::key(self.keys[node.build][condition], theta);
-        let kept = |k: &mut Option<Kept>| {
-            let k = k.as_mut()?;
-            for p in wants {
-                if !k.ports.iter().any(|(q, _)| q == p) {
-                    k.ports
-                        .push((*p, self.shown(node, condition, theta, &k.solution, *p)?));
-                }
-            }
-            Some(Shows {
-                ports: k.ports.clone(),
-                filled: net.filled(&k.solution, theta),
-                air: theta[Param::Air as usize],
-            })
+        let key = memo::key(self.keys[node.build][condition], &theta[..self.values]);
+        let shows = |k: &Kept| Shows {
+            ports: k.ports.clone(),
+            filled: Path::BOTH.map(|path| net.filled(path, &k.state, theta)),
+            air: theta[Param::Air as usize],
         };
-        if let Some(known) = self.memo.get(key, kept) {
-            return known;
-        }
-        let start = self.warm.borrow()[node.build][condition];
+        let has = |k: &Kept, want: &(Path, Port)| k.ports.iter().any(|(a, p, _)| (*a, *p) == *want);
+        let known = self.memo.get(key, |k| {
+            let k = k.as_ref()?;
+            // A port that was not read before needs the derivatives at its state: it is settled there again.
+            Some((wants.iter().all(|w| has(k, w)).then(|| shows(k)), k.state))
+        });
+        let start = match known {
+            Some(None) => return None,
+            Some(Some((Some(shows), _))) => return Some(shows),
+            Some(Some((None, state))) => Some(state),
+            None => self.warm.borrow()[node.build][condition],
+        };
         self.solves.set(self.solves.get() + 1);
         let solved = net.solve(theta, start.as_ref()).ok();
         if start.is_none()
@@ -295,11 +319,20 @@ impl Bench {
         {
             self.warm.borrow_mut()[node.build][condition] = Some(solution.state);
         }
-        let mut new = solved.map(|solution| Kept {
-            solution,
-            ports: Vec::with_capacity(wants.len()),
+        let new = solved.and_then(|solution| {
+            let ports = wants
+                .iter()
+                .map(|(path, port)| {
+                    let shown = self.shown(node, condition, theta, &solution, *path, *port)?;
+                    Some((*path, *port, shown))
+                })
+                .collect::<Option<Vec<_>>>()?;
+            Some(Kept {
+                state: solution.state,
+                ports,
+            })
         });
-        let shows = kept(&mut new);
+        let shows = new.as_ref().map(shows);
         self.memo.put(key, new);
         shows
     }
@@ -310,6 +343,7 @@ impl Bench {
         condition: usize,
         theta: &Params,
         solution: &Solution,
+        path: Path,
         port: Port,
     ) -> Option<Shown> {
         let net = &self.networks[node.build][condition];
@@ -318,7 +352,7 @@ impl Bench {
             let speed = self.bases[node.build][condition][Param::Speed as usize];
             return net.knee(theta, speed.max(1500.0)).ok();
         }
-        Some(net.reading_and_gradient(port, solution, theta))
+        Some(net.reading_and_gradient_on(path, port, solution, theta))
     }
 
     /// Values only, of every wanted port in a condition at scatter `u`: for ensembles.
@@ -328,14 +362,14 @@ impl Bench {
         node: &Node,
         condition: usize,
         u: &[f64],
-    ) -> Option<Vec<(Port, f64)>> {
+    ) -> Option<Vec<(Path, Port, f64)>> {
         let (theta, _) = self.theta(fault, node, condition, u, [0.0; CELLS]);
         let net = &self.networks[node.build][condition];
         let start = self.warm.borrow()[node.build][condition];
         self.solves.set(self.solves.get() + 1);
         let solution = net.solve(&theta, start.as_ref()).ok()?;
         let mut out = Vec::with_capacity(self.wanted[condition].len());
-        for p in &self.wanted[condition] {
+        for (path, p) in &self.wanted[condition] {
             let v = if *p == Port::Knee {
                 net.knee(
                     &theta,
@@ -344,9 +378,9 @@ impl Bench {
                 .ok()?
                 .value
             } else {
-                net.reading(*p, &solution, &theta)
+                net.reading_on(*path, *p, &solution, &theta)
             };
-            out.push((*p, v));
+            out.push((*path, *p, v));
         }
         Some(out)
     }
@@ -363,11 +397,13 @@ impl Bench {
     pub fn shares_of_spread(
         &self,
         healthy: &Fault,
+        path: Path,
         port: Port,
         condition: usize,
     ) -> Vec<(String, f64)> {
         let node = Node {
             build: 0,
+            path: Path::Left,
             effect: None,
             sign: 1.0,
             quantile: 0.5,
@@ -380,7 +416,11 @@ impl Bench {
         let Some(s) = self.shows(&node, condition, &theta) else {
             return Vec::new();
         };
-        let Some(at) = s.ports.iter().position(|(p, _)| *p == port) else {
+        let Some(at) = s
+            .ports
+            .iter()
+            .position(|(a, p, _)| (*a, *p) == (path, port))
+        else {
             return Vec::new();
         };
         let columns = self.latents.0.len() + CELLS;
@@ -496,9 +536,9 @@ impl Bench {
         let mut swings = Swings::default();
         for (k, d) in data.data.iter().enumerate() {
             let value = |c: usize| {
-                shown[c]
-                    .as_ref()
-                    .map(|(theta, s)| self.networks[node.build][c].reading(d.port, s, theta))
+                shown[c].as_ref().map(|(theta, s)| {
+                    self.networks[node.build][c].reading_on(d.path, d.port, s, theta)
+                })
             };
             match (value(d.condition), &d.says) {
                 (Some(v), Says::Share(other)) => {
@@ -512,7 +552,7 @@ impl Bench {
                 }
             }
             let starved = shown[d.condition].as_ref().is_none_or(|(theta, s)| {
-                self.networks[node.build][d.condition].filled(s, theta) < 0.97
+                self.networks[node.build][d.condition].filled(d.path, &s.state, theta) < 0.97
                     || theta[Param::Air as usize] > 0.08
             });
             swings.add(d, starved);
@@ -529,14 +569,14 @@ impl Bench {
         columns: usize,
     ) -> Option<(f64, bool)> {
         let (s, rows) = shows[d.condition].as_ref()?;
-        let at = s.ports.iter().position(|(p, _)| *p == d.port)?;
-        let value = s.ports[at].1.value;
-        let starved = s.filled < 0.97 || s.air > 0.08;
+        let at = s.place(d)?;
+        let value = s.ports[at].2.value;
+        let starved = s.filled[d.path as usize] < 0.97 || s.air > 0.08;
         match d.says {
             Says::Share(other) => {
                 let (o, o_rows) = shows[other].as_ref()?;
-                let o_at = o.ports.iter().position(|(p, _)| *p == d.port)?;
-                let o_value = o.ports[o_at].1.value;
+                let o_at = o.place(d)?;
+                let o_value = o.ports[o_at].2.value;
                 let (k, ko) = (slope(d.port, value), slope(d.port, o_value));
                 for (i, r) in row.iter_mut().enumerate() {
                     *r = rows[at * columns + i] * k - o_rows[o_at * columns + i] * ko;
@@ -563,7 +603,7 @@ impl Bench {
         s: &Shows,
         condition: usize,
         theta: &Params,
-        factors: &[(Param, f64)],
+        factors: &[(usize, f64)],
         fault: &Fault,
         node: &Node,
         scatter: &[f64],
@@ -571,19 +611,20 @@ impl Bench {
     ) -> Vec<f64> {
         let columns = self.latents.0.len() + CELLS;
         let mut rows = vec![0.0; s.ports.len() * columns];
-        for (latent, p, size) in &self.acts[condition] {
+        for (latent, p, path, size) in &self.acts[condition] {
             let size = size * self.split.left(*latent, node.place);
+            let place = p.on(*path);
             let factor = factors
                 .iter()
-                .filter(|(q, _)| q == p)
+                .filter(|(q, _)| *q == place)
                 .map(|(_, f)| *f)
                 .product::<f64>();
             let change = match p.scale() {
-                Scale::Log => theta[*p as usize] * size,
+                Scale::Log => theta[place] * size,
                 Scale::Linear => size * factor,
             };
-            for (i, (_, shown)) in s.ports.iter().enumerate() {
-                rows[i * columns + latent] += shown.gradient[*p as usize] * change;
+            for (i, (_, _, shown)) in s.ports.iter().enumerate() {
+                rows[i * columns + latent] += shown.gradient[place] * change;
             }
         }
         // Across a cell: a rectangle of its width has a standard deviation of half of it over √3.
@@ -595,12 +636,12 @@ impl Bench {
                 self.theta(fault, node, condition, scatter, at).0
             };
             let (high, low) = (moved(0.5), moved(-0.5));
-            for p in Param::ALL {
-                let change = (high[*p as usize] - low[*p as usize]) / 3f64.sqrt();
+            for place in 0..self.values {
+                let change = (high[place] - low[place]) / 3f64.sqrt();
                 if change != 0.0 {
-                    for (i, (_, shown)) in s.ports.iter().enumerate() {
+                    for (i, (_, _, shown)) in s.ports.iter().enumerate() {
                         rows[i * columns + columns - CELLS + cell] +=
-                            shown.gradient[*p as usize] * change;
+                            shown.gradient[place] * change;
                     }
                 }
             }
@@ -623,14 +664,14 @@ fn keep_believable(row: &mut [f64]) {
 }
 
 /// Keeps settings that a machine has in order in order, whatever scatter says.
-fn keep_order(theta: &mut Params) {
-    let start = theta[Param::ServoStart as usize];
-    let full = &mut theta[Param::ServoFull as usize];
+fn keep_order(theta: &mut Params, path: Path) {
+    let start = theta[Param::ServoStart.on(path)];
+    let full = &mut theta[Param::ServoFull.on(path)];
     *full = full.max(1.2 * start);
-    let start = theta[Param::SenseStart as usize];
-    let full = &mut theta[Param::SenseFull as usize];
+    let start = theta[Param::SenseStart.on(path)];
+    let full = &mut theta[Param::SenseFull.on(path)];
     *full = full.max(1.1 * start);
-    let air = &mut theta[Param::Air as usize];
+    let air = &mut theta[Param::Air.on(path)];
     *air = air.clamp(0.0, 0.98);
     for p in [
         Param::Load,
@@ -641,7 +682,7 @@ fn keep_order(theta: &mut Params) {
         Param::ChargeDrive,
         Param::ChargeFeed,
     ] {
-        let v = &mut theta[p as usize];
+        let v = &mut theta[p.on(path)];
         *v = v.max(0.0);
     }
 }

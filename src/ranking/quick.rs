@@ -11,6 +11,8 @@ use super::posterior::{
     Held, Part, Weighed, collect, means_at_the_middle, node_shares, swap_chance, unlisted,
 };
 use super::predict::{Bench, CELLS, Known, Prediction};
+use super::suspect::Suspect;
+use crate::assessment::At;
 use crate::faults::{Fault, FaultId};
 use crate::math;
 use crate::readings::{Condition, SideNaming};
@@ -20,9 +22,9 @@ use crate::unit::Unit;
 #[derive(Clone, Debug)]
 pub struct CarriedCause {
     /// Which.
-    pub fault: &'static Fault,
+    pub suspect: Suspect,
     /// The second one of a pair.
-    pub with: Option<FaultId>,
+    pub with: Option<At>,
     /// Log of its base rate over the builds.
     pub log_prior: f64,
     /// A row of its own.
@@ -172,7 +174,7 @@ impl Last {
             .nodes
             .iter()
             .filter_map(|n| {
-                let fault = self.carried.causes[n.cause].fault;
+                let fault = self.carried.causes[n.cause].suspect.fault;
                 let (p, centre) = predict(fault, &n.node, &n.centre, &n.prediction);
                 Some((
                     n,
@@ -196,7 +198,7 @@ impl Last {
                         fit,
                         mean,
                     });
-                collect(c.fault.id, c.with, c.log_prior, parts, data)
+                collect(c.suspect.at(), c.with, c.log_prior, parts, data)
             })
             .collect();
         if let (Some((node, p)), Some(healthy)) =
@@ -221,9 +223,9 @@ impl Last {
 
     /// Which datum of the last assessment asked for the same prediction.
     fn place_of(&self, d: &Datum) -> Option<usize> {
-        self.data
-            .iter()
-            .position(|o| o.port == d.port && o.condition == d.condition && o.says == d.says)
+        self.data.iter().position(|o| {
+            (o.path, o.port, o.condition) == (d.path, d.port, d.condition) && o.says == d.says
+        })
     }
 }
 

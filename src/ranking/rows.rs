@@ -4,10 +4,10 @@ use super::datum::{Data, Says, slope, untransform};
 use super::evidence::{Probable, evidence};
 use super::posterior::Weighed;
 use super::seen::Seen;
-use crate::assessment::{Cause, Pair, WouldRead};
-use crate::faults::{self, AlikeSet, FaultId, SETS};
+use crate::assessment::{At, Cause, Pair, WouldRead, lower_first, sided};
+use crate::faults::{AlikeSet, FaultId, SETS};
 use crate::math;
-use crate::readings::Reading;
+use crate::readings::{Path, Reading};
 
 /// Largest difference in log likelihood at which the readings count as having nothing to say between twins.
 const ALIKE: f64 = 0.6;
@@ -23,8 +23,9 @@ pub fn rows(
     let probable = Probable::new(weighed, seen);
     let mut taken = vec![false; weighed.len()];
     let mut out = Vec::new();
-    for set in SETS {
-        let members = alike(set, weighed, &probable);
+    let sides = [None, Some(Path::Left), Some(Path::Right)];
+    for (set, side) in SETS.iter().flat_map(|s| sides.map(|side| (s, side))) {
+        let members = alike(set, side, weighed, &probable);
         if members.len() > 1 && !members.iter().any(|i| taken[*i]) {
             for i in &members {
                 taken[*i] = true;
@@ -57,19 +58,28 @@ pub fn rows(
         b.probability
             .total_cmp(&a.probability)
             .then_with(|| a.ids.cmp(&b.ids))
+            .then_with(|| a.paths.cmp(&b.paths))
     });
     out
 }
 
 /// Members of a set that the evidence weighs alike and that are not ruled out.
-fn alike(set: &AlikeSet, weighed: &[Weighed], probable: &Probable) -> Vec<usize> {
+fn alike(
+    set: &AlikeSet,
+    side: Option<Path>,
+    weighed: &[Weighed],
+    probable: &Probable,
+) -> Vec<usize> {
     let mut found: Vec<usize> = set
         .ids
         .iter()
         .filter_map(|id| {
-            weighed
-                .iter()
-                .position(|w| w.id == *id && w.with.is_none() && w.log_prior.is_finite())
+            weighed.iter().position(|w| {
+                w.is_alone(At {
+                    id: *id,
+                    path: side,
+                }) && w.log_prior.is_finite()
+            })
         })
         .collect();
     found.retain(|i| probable.log_likelihood[*i].is_finite());
@@ -103,18 +113,23 @@ fn row(
         .copied()
         .max_by(|a, b| probable.share[*a].total_cmp(&probable.share[*b]))
         .unwrap_or(members[0]);
-    let own = |id| faults::find(id).map_or(String::new(), |f| f.title.to_string());
-    let mut title = set.map_or_else(|| own(weighed[lead].id), |s| s.title.to_string());
+    let side = weighed[lead].path;
+    let mut title = set.map_or_else(|| weighed[lead].at().title(), |s| sided(side, s.title));
+    let mut paths: Vec<Option<Path>> = members.iter().map(|i| weighed[*i].path).collect();
     let mut pair = None;
     if let Some(with) = weighed[lead].with {
-        let titles = [title, own(with)];
+        let titles = [title, with.title()];
         title = format!("{}, and {}", titles[0], lower_first(&titles[1]));
         pair = Some(Pair {
-            explains: explains([weighed[lead].id, with], weighed, data, readings, seen),
+            explains: explains([weighed[lead].at(), with], weighed, data, readings, seen),
             titles,
         });
-        ids = vec![weighed[lead].id, with];
+        ids = vec![weighed[lead].id, with.id];
+        paths = vec![side, with.path];
         shares = Vec::new();
+    }
+    if paths.iter().all(Option::is_none) {
+        paths.clear();
     }
     Cause {
         title,
@@ -125,15 +140,9 @@ fn row(
         split: set.map_or(String::new(), |s| s.split.to_string()),
         evidence: evidence(members, weighed, probable, data, readings, seen, words),
         would_read: would_read(&weighed[lead], data, readings),
+        paths,
         ids,
     }
-}
-
-fn lower_first(words: &str) -> String {
-    let mut letters = words.chars();
-    letters
-        .next()
-        .map_or(String::new(), |c| c.to_lowercase().chain(letters).collect())
 }
 
 /// How much nearer (standard deviations) a cause must come to a reading than its partner to count as what explains it.
@@ -143,15 +152,15 @@ const LIKELIER: f64 = 0.4;
 
 /// Ids of the readings and observations that each of two causes explains and the other does not.
 fn explains(
-    ids: [FaultId; 2],
+    causes: [At; 2],
     weighed: &[Weighed],
     data: &Data,
     readings: &[Reading],
     seen: &[Seen],
 ) -> [Vec<String>; 2] {
     let mut out = [Vec::new(), Vec::new()];
-    let alone = |id| weighed.iter().find(|w| w.id == id && w.with.is_none());
-    if let (Some(a), Some(b)) = (alone(ids[0]), alone(ids[1])) {
+    let alone = |at| weighed.iter().find(|w| w.is_alone(at));
+    if let (Some(a), Some(b)) = (alone(causes[0]), alone(causes[1])) {
         for (k, d) in data.data.iter().enumerate() {
             let off = |w: &Weighed| {
                 let (mean, spread) = w.would[k];
@@ -170,7 +179,7 @@ fn explains(
         }
     }
     for s in seen.iter().filter(|s| s.positive) {
-        let (x, y) = (s.log(ids[0], None), s.log(ids[1], None));
+        let (x, y) = (s.log(causes[0], None), s.log(causes[1], None));
         if x > y + LIKELIER {
             out[0].push(s.id.clone());
         } else if y > x + LIKELIER {

@@ -1,9 +1,11 @@
 //! Observations without a gauge as likelihoods, and what the story of the call does to the base rates.
 
 use super::pairs::DIRT;
-use crate::faults::FaultId;
+use crate::assessment::At;
+use crate::faults::{self, Column, FaultId};
 use crate::math;
 use crate::observations;
+use crate::readings::Path;
 use crate::record::{Answer, Visit};
 
 /// One observation's log likelihood under every cause of the catalogue, in the order of [`FaultId::ALL`].
@@ -17,19 +19,21 @@ pub struct Seen {
     pub positive: bool,
     /// Log likelihood a cause.
     pub logs: Vec<f64>,
+    /// The side that it says drags behind, and how much of the evidence is kept.
+    pub pulls: Option<(Path, f64)>,
 }
+
+/// Chance that a machine pulls to the side on which a part is weak and not to the other. Common practice.
+const TO_ITS_OWN_SIDE: f64 = 0.85;
 
 impl Seen {
     /// Log likelihood under a cause, or under two at once: either may bring what was seen, both must fail to bring what was not.
-    pub fn log(&self, id: FaultId, with: Option<FaultId>) -> f64 {
-        let of = |id: FaultId| {
-            FaultId::ALL
-                .iter()
-                .position(|i| *i == id)
-                .and_then(|i| self.logs.get(i).copied())
-                .unwrap_or(0.0)
+    pub fn log(&self, at: At, with: Option<At>) -> f64 {
+        let of = |at: At| {
+            let log = self.logs.get(at.id as usize).copied().unwrap_or(0.0);
+            log + self.turn(at)
         };
-        let first = of(id);
+        let first = of(at);
         match with.map(of) {
             None => first,
             Some(second) if self.positive => {
@@ -38,6 +42,25 @@ impl Seen {
             }
             Some(second) => first + second,
         }
+    }
+}
+
+impl Seen {
+    /// What the side says that a machine pulls to. A neutral out of set pulls to one side forward and to the other in reverse, and
+    /// says nothing by itself.
+    fn turn(&self, at: At) -> f64 {
+        let (Some((to, kept)), Some(own), true) = (self.pulls, at.path, self.positive) else {
+            return 0.0;
+        };
+        if faults::find(at.id).is_none_or(|f| f.column == Column::Null) {
+            return 0.0;
+        }
+        let chance = if to == own {
+            TO_ITS_OWN_SIDE
+        } else {
+            1.0 - TO_ITS_OWN_SIDE
+        };
+        kept * math::ln(2.0 * chance)
     }
 }
 
@@ -57,8 +80,19 @@ pub fn observed(visit: &Visit) -> Vec<Seen> {
                 Some(Answer::Seen | Answer::OperatorSays)
             ),
             logs: d.logs,
+            pulls: observations::find(d.id)
+                .and_then(|o| o.pulls)
+                .map(|side| (side, trust(visit.observations.get(d.id)))),
         })
         .collect()
+}
+
+/// Share of the evidence that is kept of an answer.
+fn trust(answer: Option<&Answer>) -> f64 {
+    match answer {
+        Some(Answer::OperatorSays | Answer::OperatorSaysNot) => observations::OPERATOR,
+        _ => 1.0,
+    }
 }
 
 /// Factor on the base rate of two worn parts at once where metal was seen: dirt links them. Common practice: 0.1 of the worn

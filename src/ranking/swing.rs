@@ -59,6 +59,8 @@ mod tests {
             own: 0.1,
             bias: 0.0,
             group: 0,
+            gauge: 0,
+            path: crate::readings::Path::Left,
             swung,
             instrument: 0.1,
         }

@@ -1,5 +1,6 @@
 //! The condition: what the machine is doing while a reading is taken.
 
+use super::Path;
 use crate::quantity::Measure;
 use serde::{Deserialize, Serialize};
 
@@ -211,6 +212,60 @@ pub struct Condition {
     /// Brake, shift and pilot consumers capped off for this reading.
     #[serde(default)]
     pub consumers_capped: bool,
+    /// Which path is stroked on a machine with two.
+    #[serde(default, skip_serializing_if = "Stroked::is_both")]
+    pub stroked: Stroked,
+}
+
+/// Which path of two is stroked.
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
+#[serde(rename_all = "snake_case")]
+pub enum Stroked {
+    /// Both, or the only one.
+    #[default]
+    Both,
+    /// Left alone.
+    Left,
+    /// Right alone.
+    Right,
+}
+
+impl Stroked {
+    /// Every choice, in the order in which screens offer them.
+    pub const ALL: [Stroked; 3] = [Stroked::Both, Stroked::Left, Stroked::Right];
+
+    /// True where both are.
+    pub fn is_both(&self) -> bool {
+        *self == Stroked::Both
+    }
+
+    /// True where a path is among them.
+    pub fn has(self, path: Path) -> bool {
+        match self {
+            Stroked::Both => true,
+            Stroked::Left => path == Path::Left,
+            Stroked::Right => path == Path::Right,
+        }
+    }
+
+    /// A path alone.
+    pub fn alone(path: Path) -> Stroked {
+        match path {
+            Path::Left => Stroked::Left,
+            Path::Right => Stroked::Right,
+        }
+    }
+
+    /// Words for a screen.
+    pub fn words(self) -> &'static str {
+        match self {
+            Stroked::Both => "both sides",
+            Stroked::Left => "left side alone",
+            Stroked::Right => "right side alone",
+        }
+    }
 }
 
 impl Condition {
@@ -235,6 +290,7 @@ impl Condition {
             oil: None,
             flushing_blocked: false,
             consumers_capped: false,
+            stroked: Stroked::Both,
         }
     }
 }

@@ -83,6 +83,22 @@ impl Port {
         Port::SettledTemperature,
     ];
 
+    /// True where the two paths of a tandem share the port.
+    pub fn is_common(self) -> bool {
+        matches!(
+            self,
+            Port::Charge
+                | Port::PumpCase
+                | Port::InletPull
+                | Port::Release
+                | Port::ReturnFlow
+                | Port::EngineSpeed
+                | Port::PumpShaft
+                | Port::Knee
+                | Port::SettledTemperature
+        )
+    }
+
     /// Kind of quantity read here.
     pub fn kind(self) -> Kind {
         match self {

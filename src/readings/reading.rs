@@ -1,6 +1,6 @@
 //! One reading: port, condition, instrument, and what was seen. A reading is not a bare number.
 
-use super::{Condition, Port};
+use super::{Condition, Path, Port};
 use crate::quantity::Measure;
 use serde::{Deserialize, Serialize};
 
@@ -49,6 +49,9 @@ pub struct Reading {
     pub id: String,
     /// What was read.
     pub port: Port,
+    /// On which path; left where there is one only, or where both share the port.
+    #[serde(default, skip_serializing_if = "Path::is_left")]
+    pub path: Path,
     /// What the machine was doing.
     pub condition: Condition,
     /// Id of the rigging (which instrument was on which port) that this reading was taken with; empty: not said.

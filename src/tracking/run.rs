@@ -174,7 +174,7 @@ impl Undercarriage {
 }
 
 /// What has to be known of the machine.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, Default, PartialEq)]
 pub struct Machine {
     /// Distance between the middles of the two sides, m. None: no path run can be used.
     pub track: Option<f64>,
@@ -186,18 +186,6 @@ pub struct Machine {
     pub half: Option<f64>,
     /// Distance between the marks on the ground for one wheel turn, m, where known. For speeds in words only.
     pub rolling: Option<f64>,
-}
-
-impl Default for Machine {
-    fn default() -> Self {
-        Machine {
-            track: None,
-            undercarriage: Undercarriage::default(),
-            low: None,
-            half: None,
-            rolling: None,
-        }
-    }
 }
 
 /// Longest lane, m.

@@ -104,6 +104,40 @@ pub enum ChargeSource {
     Unknown,
 }
 
+/// Drive paths of a machine.
+#[derive(
+    Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
+)]
+#[serde(rename_all = "snake_case")]
+pub enum Paths {
+    /// One pump and its loop.
+    #[default]
+    One,
+    /// Left and right, on one charge pump.
+    TwoSharedCharge,
+    /// Left and right, each with its own charge pump.
+    TwoOwnCharge,
+}
+
+impl Paths {
+    /// Every choice, in the order in which screens offer them.
+    pub const ALL: [Paths; 3] = [Paths::One, Paths::TwoSharedCharge, Paths::TwoOwnCharge];
+
+    /// True for one path.
+    pub fn is_one(&self) -> bool {
+        *self == Paths::One
+    }
+
+    /// Words for a screen.
+    pub fn words(self) -> &'static str {
+        match self {
+            Paths::One => "One pump, one loop",
+            Paths::TwoSharedCharge => "Left and right, one charge pump",
+            Paths::TwoOwnCharge => "Left and right, each its charge pump",
+        }
+    }
+}
+
 /// Where the neutral charge relief drains.
 #[derive(
     Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize,
@@ -198,8 +232,11 @@ pub struct Ticks {
     pub case_lines: CaseLines,
     /// Pump driven by a belt, a clutch or another drive that can slip.
     pub slipping_drive: Tick,
-    /// Motors in parallel on the pump, 1 to 4.
+    /// Motors in parallel on a pump, 1 to 4.
     pub motors: u8,
+    /// Drive paths.
+    #[serde(skip_serializing_if = "Paths::is_one")]
+    pub paths: Paths,
 }
 
 impl Default for Ticks {
@@ -220,6 +257,7 @@ impl Default for Ticks {
             case_lines: CaseLines::Unknown,
             slipping_drive: Tick::Unknown,
             motors: 1,
+            paths: Paths::One,
         }
     }
 }

@@ -7,9 +7,9 @@ use crate::circuit::Param;
 use crate::faults::{self, FaultId};
 use crate::machine::describe_basis;
 use crate::quantity::Measure;
-use crate::ranking::{Bench, Data, Node, accuracy, instrument_of};
+use crate::ranking::{Bench, Data, Node, accuracy, instrument_of, path_of};
 use crate::readings::instrument::Instrument;
-use crate::readings::{Condition, Doing, Port, Reading, Rigging, Seen};
+use crate::readings::{Condition, Doing, Path, Port, Reading, Rigging, Seen};
 use crate::unit::{FigureId, ManualWindow, Unit};
 
 /// Draws behind each window.
@@ -28,15 +28,15 @@ struct Spread {
 #[derive(Clone, Debug, Default)]
 pub struct Spreads {
     unit: Option<Unit>,
-    kept: Vec<(Port, Condition, Spread)>,
+    kept: Vec<(Port, Path, Condition, Spread)>,
 }
 
 impl Spreads {
     fn of(&self, r: &Reading) -> Option<&Spread> {
         self.kept
             .iter()
-            .find(|(p, c, _)| *p == r.port && *c == r.condition)
-            .map(|(_, _, s)| s)
+            .find(|(p, path, c, _)| (*p, *path) == (r.port, r.path) && *c == r.condition)
+            .map(|(.., s)| s)
     }
 }
 
@@ -60,9 +60,9 @@ pub fn windows(
         .iter()
         .filter(|r| spreads.of(r).is_none())
         .collect();
-    let found = ensemble(bench, data, readings, &new);
+    let found = ensemble(unit, bench, data, readings, &new);
     for (r, s) in new.iter().zip(found) {
-        spreads.kept.push((r.port, r.condition, s));
+        spreads.kept.push((r.port, r.path, r.condition, s));
     }
     readings
         .iter()
@@ -97,7 +97,13 @@ fn scatter(bench: &Bench) -> Vec<Vec<f64>> {
 }
 
 /// Spreads of the new readings.
-fn ensemble(bench: &Bench, data: &Data, readings: &[Reading], new: &[&Reading]) -> Vec<Spread> {
+fn ensemble(
+    unit: &Unit,
+    bench: &Bench,
+    data: &Data,
+    readings: &[Reading],
+    new: &[&Reading],
+) -> Vec<Spread> {
     let mut spreads = vec![Spread::default(); new.len()];
     let Some(healthy) = faults::find(FaultId::Healthy).filter(|_| !new.is_empty()) else {
         return spreads;
@@ -123,6 +129,7 @@ fn ensemble(bench: &Bench, data: &Data, readings: &[Reading], new: &[&Reading]) 
         }
         let node = Node {
             build,
+            path: Path::Left,
             effect: None,
             sign: 1.0,
             quantile: 0.5,
@@ -142,11 +149,11 @@ fn ensemble(bench: &Bench, data: &Data, readings: &[Reading], new: &[&Reading]) 
                 .enumerate()
                 .filter(|(i, _)| condition_of[*i] == c)
             {
-                match shown
-                    .as_ref()
-                    .and_then(|list| list.iter().find(|(p, _)| *p == r.port))
-                {
-                    Some((_, v)) if v.is_finite() => spreads[i].values.push(*v),
+                match shown.as_ref().and_then(|list| {
+                    let wanted = (path_of(unit, r), r.port);
+                    list.iter().find(|(path, p, _)| (*path, *p) == wanted)
+                }) {
+                    Some((_, _, v)) if v.is_finite() => spreads[i].values.push(*v),
                     _ => spreads[i].without_state += 1,
                 }
             }
@@ -228,7 +235,7 @@ fn window(
     }
     let rpm = bench.speed(0, condition);
     w.basis = basis(unit, &reading.condition, rpm);
-    let (widest, practice) = widest(bench, unit, reading.port, condition);
+    let (widest, practice) = widest(bench, unit, reading, condition);
     w.widest = widest;
     if practice {
         w.source = WindowSource::Practice;
@@ -297,11 +304,11 @@ fn stand(w: &mut Window, reading: &Reading, instrument: Option<&Instrument>, sil
 }
 
 /// The input that widens a window most, and whether it is one that the profile leaves to common practice.
-fn widest(bench: &Bench, unit: &Unit, port: Port, condition: usize) -> (String, bool) {
+fn widest(bench: &Bench, unit: &Unit, reading: &Reading, condition: usize) -> (String, bool) {
     let Some(healthy) = faults::find(FaultId::Healthy) else {
         return (String::new(), true);
     };
-    let shares = bench.shares_of_spread(healthy, port, condition);
+    let shares = bench.shares_of_spread(healthy, path_of(unit, reading), reading.port, condition);
     let mut by_words: Vec<(String, f64)> = Vec::new();
     for (words, square) in shares {
         match by_words.iter_mut().find(|(w, _)| *w == words) {

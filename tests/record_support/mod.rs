@@ -4,8 +4,8 @@
 use lowside::quantity::{Kind, Measure};
 use lowside::readings::instrument::{Instrument, usual_instruments};
 use lowside::readings::{
-    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading, Rigging,
-    Seen, SideNaming,
+    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Path, Place, Port, Reading,
+    Rigging, Seen, SideNaming, Stroked,
 };
 use lowside::record::{Answer, Book, Closing, Earlier, PutBack, Settings, Visit, limits};
 use lowside::unit::*;
@@ -101,6 +101,7 @@ impl Dice {
             oil: (!self.one_in(3)).then_some(OilTemperature { value, place }),
             flushing_blocked: self.one_in(4),
             consumers_capped: self.one_in(4),
+            stroked: self.pick(&Stroked::ALL),
         }
     }
 
@@ -136,6 +137,7 @@ impl Dice {
         Reading {
             id: self.id('r'),
             port,
+            path: self.pick(&Path::BOTH),
             condition: self.condition(),
             rigging: String::new(),
             seen: self.seen(port),
@@ -147,6 +149,7 @@ impl Dice {
     fn ticks(&mut self) -> Ticks {
         const TICKS: [Tick; 3] = [Tick::Yes, Tick::No, Tick::Unknown];
         Ticks {
+            paths: self.pick(&Paths::ALL),
             flushing: self.pick(&TICKS),
             shuttle: self.pick(&[
                 Shuttle::ClosedCentre,

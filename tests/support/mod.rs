@@ -5,7 +5,8 @@ pub mod reference;
 
 use lowside::quantity::{Kind, Measure};
 use lowside::readings::{
-    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading, Seen,
+    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Path, Place, Port, Reading,
+    Seen, Stroked,
 };
 use lowside::record::Visit;
 use lowside::unit::{Control, Figure, FigureId, Filter, MachineClass, Source, Tick, Ticks, Unit};
@@ -87,6 +88,7 @@ pub fn condition(
         }),
         flushing_blocked: false,
         consumers_capped: false,
+        stroked: Stroked::Both,
     }
 }
 
@@ -118,6 +120,7 @@ pub fn reading(id: &str, port: Port, condition: Condition, value: f64) -> Readin
         }),
         typed: String::new(),
         note: String::new(),
+        path: Path::Left,
     }
 }
 

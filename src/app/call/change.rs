@@ -3,7 +3,7 @@
 use super::gate;
 use super::group::settled;
 use super::put_back;
-use crate::readings::{Condition, Port, Reading, Rigging, Seen};
+use crate::readings::{Condition, Port, Reading, Rigging, Seen, Path};
 use crate::record::{Answer, Closing, Earlier, PutBack, Visit};
 
 /// One edit.
@@ -276,6 +276,7 @@ fn add(visit: &mut Visit, port: Port, condition: Condition) {
     visit.readings.push(Reading {
         id,
         port,
+        path: Path::Left,
         condition: settled(condition),
         rigging,
         seen: None,

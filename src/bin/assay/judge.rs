@@ -1,11 +1,13 @@
 //! The rankers under test: the product's own, and the best possible one, which knows the laws and the scatter of the world.
 
 use crate::world::{Case, Sloppiness, TILTED, TURBULENT, wider};
+use lowside::assessment::At;
 use lowside::circuit::Param;
 use lowside::faults::{self, Fault, FaultId};
 use lowside::machine::{builds, condition_latents, unit_latents};
 use lowside::math;
 use lowside::ranking::{Belief, Bench, gather_with, weigh};
+use lowside::readings::Path;
 use std::collections::BTreeMap;
 use std::iter::once;
 
@@ -22,6 +24,7 @@ pub fn listed() -> Vec<&'static Fault> {
                         | FaultId::CoolerDirty
                         | FaultId::CoolerBypassing
                         | FaultId::EngineLugging
+                        | FaultId::TyreOrTrackMismatch
                 )
         })
         .collect()
@@ -37,7 +40,7 @@ pub enum Ranker {
 }
 
 /// Suspects (one cause, or two) with their probabilities, most probable first.
-pub type Ranked = Vec<(Vec<FaultId>, f64)>;
+pub type Ranked = Vec<(Vec<At>, f64)>;
 
 /// A ranker with base rates such that each listed fault is met equally often.
 pub struct Judge {
@@ -101,8 +104,9 @@ impl Judge {
         let mut latents = unit_latents(unit);
         condition_latents(unit, &data.conditions, &mut latents);
         if self.ranker == Ranker::Best {
+            // Right and left are alike in them.
             for (p, sd) in TILTED {
-                latents.one(p, sd / wider());
+                latents.on_both(p, sd / wider());
             }
         }
         let size = builds(unit).first().map_or(1.0, |b| {
@@ -110,14 +114,16 @@ impl Judge {
         });
         if self.ranker == Ranker::Best {
             for (p, least, most) in TURBULENT {
-                latents.one(p, size * (most - least) / 12f64.sqrt() / wider());
+                latents.on_both(p, size * (most - least) / 12f64.sqrt() / wider());
             }
         }
         let mut bench = Bench::new(builds(unit), latents, &data);
         if self.ranker == Ranker::Best {
             bench.adjust(|theta| {
                 for (p, least, most) in TURBULENT {
-                    theta[p as usize] += 0.5 * (least + most) * size;
+                    for path in Path::BOTH {
+                        theta[p.on(path)] += 0.5 * (least + most) * size;
+                    }
                 }
             });
         }
@@ -131,7 +137,7 @@ impl Judge {
             .iter()
             .zip(&logs)
             .filter(|(_, l)| l.is_finite())
-            .map(|(c, l)| (once(c.id).chain(c.with).collect(), math::exp(l - total)))
+            .map(|(c, l)| (once(c.at()).chain(c.with).collect(), math::exp(l - total)))
             .collect();
         out.sort_by(|a, b| b.1.total_cmp(&a.1).then(a.0.cmp(&b.0)));
         out

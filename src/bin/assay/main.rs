@@ -3,7 +3,7 @@
 //! `cargo run --release --bin assay -- ranking [cases] [Charge|Held|Speeds|All]` scores the ranking for each set of readings,
 //! with clean notes and with sloppy ones, beside the best possible ranker, which knows the world's own laws and scatter.
 //! Faults are drawn equally often and the base rates are made equal too, so that the scores speak of the readings alone.
-//! `assay pairs [cases]` hides two faults at once.
+//! `assay pairs [cases]` hides two faults at once; `assay sides [cases] [set]` one on one side of a machine with two paths.
 //! `assay tracking [cases]` hides one mismatch between two sides (see [`tracking`]).
 //! `assay steps [cases] [seed]` counts the minutes to the cause (see [`steps`]).
 //! `ASSAY_TELL=1` prints the cases in which a wrong cause was all but certain; `ASSAY_SEED` changes the draw;
@@ -18,7 +18,9 @@ mod world;
 
 use judge::{Judge, Ranked, Ranker, listed};
 use lowside::faults::{Fault, FaultId};
-use lowside::ranking::{apart, assess, pair_rate};
+use lowside::machine::arrangement;
+use lowside::ranking::{Suspect, apart, assess, pair_rate, suspects};
+use lowside::unit::Paths;
 use lowside::windows::Normals;
 use score::Score;
 use std::collections::BTreeMap;
@@ -47,18 +49,23 @@ fn main() {
     match std::env::args().nth(1).as_deref() {
         Some("ranking") | None => ranking(),
         Some("pairs") => pairs(),
+        Some("sides") => sides(),
         Some("steps") => steps::steps(number(2, 60), number(3, 2026) as u64),
         Some("tracking") => tracking::tracking(number(2, 2000), seed()),
-        Some(other) => eprintln!("assay: no such part: {other}. There are: ranking, pairs, steps, tracking."),
+        Some(other) => {
+            eprintln!(
+                "assay: no such part: {other}. There are: ranking, pairs, sides, steps, tracking."
+            )
+        }
     }
 }
 
 /// Share of drawn units that can have each listed fault.
-fn possible(listed: &[&'static Fault]) -> BTreeMap<FaultId, f64> {
+fn possible(listed: &[&'static Fault], paths: Paths) -> BTreeMap<FaultId, f64> {
     let mut draw = Normals::new(1);
     let mut count: BTreeMap<FaultId, f64> = BTreeMap::new();
     for _ in 0..UNITS {
-        if let Some(m) = Machine::draw(&mut draw, &[]) {
+        if let Some(m) = Machine::draw(&mut draw, paths, &[]) {
             for f in listed.iter().filter(|f| m.can_have(f)) {
                 *count.entry(f.id).or_default() += 1.0 / UNITS as f64;
             }
@@ -68,11 +75,12 @@ fn possible(listed: &[&'static Fault]) -> BTreeMap<FaultId, f64> {
 }
 
 /// Draws the faults of a case.
-type Draw<'a> = dyn Fn(&mut Normals) -> Vec<&'static Fault> + Sync + 'a;
+type Draw<'a> = dyn Fn(&mut Normals) -> Vec<Suspect> + Sync + 'a;
 
 /// Draws cases and hands each to the judges, on all threads.
 fn run(
     cases: usize,
+    paths: Paths,
     set: ReadingSet,
     sloppy: Sloppiness,
     judges: &[Judge],
@@ -85,7 +93,8 @@ fn run(
         while done < cases {
             let faults = hidden(&mut draw);
             // The faults are drawn first and keep their place: a unit that can have them is looked for.
-            let Some(c) = (0..400).find_map(|_| case(&mut draw, &faults, set, sloppy)) else {
+            let Some(c) = (0..400).find_map(|_| case(&mut draw, paths, &faults, set, sloppy))
+            else {
                 continue;
             };
             done += 1;
@@ -159,7 +168,7 @@ fn ranking() {
     let cases = number(2, 300);
     let only = std::env::args().nth(3);
     let listed = listed();
-    let possible = possible(&listed);
+    let possible = possible(&listed, Paths::One);
     head(&format!("{} faults, {cases} cases a set", listed.len()));
     for (words, sloppy) in [
         ("clean", Sloppiness::CLEAN),
@@ -175,10 +184,52 @@ fn ranking() {
             let judges = RANKERS.map(|r| Judge::new(r, &possible, sloppy, 0.0));
             let any = |draw: &mut Normals| {
                 let i = (draw.unit() * listed.len() as f64) as usize;
-                vec![listed[i.min(listed.len() - 1)]]
+                vec![Suspect {
+                    fault: listed[i.min(listed.len() - 1)],
+                    path: None,
+                }]
             };
-            let scores = run(cases, set, sloppy, &judges, &any);
+            let scores = run(cases, Paths::One, set, sloppy, &judges, &any);
             print(set, words, &scores);
+            if set == ReadingSet::All {
+                by_fault(&scores);
+            }
+        }
+    }
+}
+
+/// One hidden fault on one side of a machine with two paths.
+fn sides() {
+    let cases = number(2, 150);
+    let only = std::env::args().nth(3);
+    let listed = listed();
+    for paths in [Paths::TwoSharedCharge, Paths::TwoOwnCharge] {
+        let possible = possible(&listed, paths);
+        let sided: Vec<Suspect> = suspects(arrangement(paths))
+            .into_iter()
+            .filter(|s| s.path.is_some() && listed.iter().any(|f| f.id == s.fault.id))
+            .collect();
+        head(&format!(
+            "{}: {} faults at a side, {cases} cases a set",
+            paths.words(),
+            sided.len()
+        ));
+        for set in ReadingSet::EACH
+            .into_iter()
+            .filter(|s| only.as_ref().is_none_or(|o| *o == format!("{s:?}")))
+        {
+            let sloppy = Sloppiness::CLEAN;
+            let judges = RANKERS.map(|r| Judge::new(r, &possible, sloppy, 0.0));
+            let any = |draw: &mut Normals| {
+                let i = (draw.unit() * sided.len() as f64) as usize;
+                vec![sided[i.min(sided.len() - 1)]]
+            };
+            let scores = run(cases, paths, set, sloppy, &judges, &any);
+            print(set, "clean", &scores);
+            for (ranker, s) in RANKERS.iter().zip(&scores) {
+                let (n, right, stated) = s.sides();
+                println!("         side, {ranker:?}: right {right:.3} of {n}, stated {stated:.3}");
+            }
             if set == ReadingSet::All {
                 by_fault(&scores);
             }
@@ -193,17 +244,22 @@ const PAIRS_AS_OFTEN: f64 = 100.0;
 fn pairs() {
     let cases = number(2, 150);
     let listed = listed();
-    let possible = possible(&listed);
+    let possible = possible(&listed, Paths::One);
     let sloppy = Sloppiness::CLEAN;
     let judges = RANKERS.map(|r| Judge::new(r, &possible, sloppy, PAIRS_AS_OFTEN));
     let belief = judges[0].belief();
-    let mut all: Vec<(f64, [&'static Fault; 2])> = Vec::new();
+    let mut all: Vec<(f64, [Suspect; 2])> = Vec::new();
     let mut sum = 0.0;
-    for (i, a) in listed.iter().enumerate() {
-        for b in listed.iter().skip(i + 1).filter(|b| apart(a, b)) {
+    let alone: Vec<Suspect> = listed
+        .iter()
+        .map(|fault| Suspect { fault, path: None })
+        .collect();
+    for (i, a) in alone.iter().enumerate() {
+        for b in alone.iter().skip(i + 1).filter(|b| apart(a, b)) {
+            let (a, b) = (*a, *b);
             // How often both are possible on a unit is left to the search for a unit that can have them.
-            let both = possible.get(&a.id).unwrap_or(&0.0) * possible.get(&b.id).unwrap_or(&0.0);
-            sum += pair_rate(&belief, a, b) * both;
+            let share = |s: &Suspect| possible.get(&s.fault.id).unwrap_or(&0.0);
+            sum += pair_rate(&belief, a.fault, b.fault) * share(&a) * share(&b);
             all.push((sum, [a, b]));
         }
     }
@@ -214,7 +270,7 @@ fn pairs() {
             let at = all.partition_point(|(upto, _)| *upto < x);
             all[at.min(all.len() - 1)].1.to_vec()
         };
-        let scores = run(cases, set, sloppy, &judges, &draw);
+        let scores = run(cases, Paths::One, set, sloppy, &judges, &draw);
         print(set, "two faults", &scores);
     }
 }
@@ -247,10 +303,10 @@ fn tell(c: &Case, r: &Ranked) {
     let hidden = a
         .causes
         .iter()
-        .find(|x| x.ids.iter().any(|i| c.faults.contains(i)));
+        .find(|x| x.members().any(|i| c.faults.contains(&i)));
     let led = r
         .first()
-        .and_then(|(ids, _)| a.causes.iter().find(|x| x.ids.contains(&ids[0])));
+        .and_then(|(ids, _)| a.causes.iter().find(|x| x.members().any(|m| m == ids[0])));
     for (w, r) in a.windows.iter().zip(&c.visit.readings) {
         let of = |x: Option<&lowside::assessment::Cause>| {
             x.and_then(|x| x.would_read.iter().find(|y| y.reading == r.id))
@@ -259,7 +315,8 @@ fn tell(c: &Case, r: &Ranked) {
                 })
         };
         println!(
-            "  {:?} {:?} {:?}: {:.2} … {:.2}, read {:.2} | hidden {} | led {}",
+            "  {:?} {:?} {:?} {:?}: {:.2} … {:.2}, read {:.2} | hidden {} | led {}",
+            r.path,
             r.port,
             r.condition.doing,
             r.condition.direction,

@@ -1,8 +1,10 @@
 //! Scores: how often the true cause leads, stands in the first three, and whether a stated probability is kept.
 
 use crate::judge::Ranked;
+use lowside::assessment::At;
 use lowside::faults::FaultId;
 use lowside::math;
+use lowside::readings::Path;
 use std::collections::BTreeMap;
 
 /// Equal bins of the leader's probability for the calibration table.
@@ -22,13 +24,14 @@ pub struct Score {
     every: [(usize, f64, usize); BINS],
     /// Cases, top-1, top-3 of each fault.
     pub by_fault: BTreeMap<FaultId, (usize, usize, usize)>,
+    /// Cases in which a side was to be told, those in which the likelier side was right, and sums of what was stated of it.
+    sides: (usize, usize, f64),
 }
 
 impl Score {
     /// Adds a case.
-    pub fn add(&mut self, truth: &[FaultId], ranked: &Ranked) {
-        let is =
-            |ids: &[FaultId]| ids.len() == truth.len() && ids.iter().all(|i| truth.contains(i));
+    pub fn add(&mut self, truth: &[At], ranked: &Ranked) {
+        let is = |ids: &[At]| ids.len() == truth.len() && ids.iter().all(|i| truth.contains(i));
         let place = ranked.iter().position(|(ids, _)| is(ids));
         let p = place.map_or(0.0, |i| ranked[i].1);
         self.cases += 1;
@@ -44,8 +47,25 @@ impl Score {
             let b = &mut self.every[bin(*q)];
             *b = (b.0 + 1, b.1 + q, b.2 + usize::from(is(ids)));
         }
-        for id in truth {
-            let f = self.by_fault.entry(*id).or_default();
+        if let [
+            At {
+                path: Some(own), ..
+            },
+        ] = truth
+        {
+            let on = |path: Path| -> f64 {
+                let here = ranked
+                    .iter()
+                    .filter(|(ids, _)| ids.iter().all(|i| i.path == Some(path)));
+                here.map(|(_, q)| q).sum()
+            };
+            let (here, there) = (on(*own), on(own.other()));
+            self.sides.0 += 1;
+            self.sides.1 += usize::from(here > there);
+            self.sides.2 += here.max(there) / (here + there).max(1e-12);
+        }
+        for at in truth {
+            let f = self.by_fault.entry(at.id).or_default();
             f.0 += 1;
             f.1 += usize::from(place == Some(0));
             f.2 += usize::from(place.is_some_and(|i| i < 3));
@@ -66,10 +86,18 @@ impl Score {
                 *a = (a.0 + b.0, a.1 + b.1, a.2 + b.2);
             }
         }
+        let (a, b) = (&mut self.sides, other.sides);
+        *a = (a.0 + b.0, a.1 + b.1, a.2 + b.2);
         for (id, f) in &other.by_fault {
             let mine = self.by_fault.entry(*id).or_default();
             *mine = (mine.0 + f.0, mine.1 + f.1, mine.2 + f.2);
         }
+    }
+
+    /// Of the cases in which a side was to be told: how many, share in which it was right, mean of what was stated of it.
+    pub fn sides(&self) -> (usize, f64, f64) {
+        let n = self.sides.0.max(1) as f64;
+        (self.sides.0, self.sides.1 as f64 / n, self.sides.2 / n)
     }
 
     fn share(&self, k: usize) -> f64 {

@@ -14,8 +14,10 @@ use lowside::next::{self, Advice, advise};
 use lowside::observations::{self, Group};
 use lowside::quantity::{Kind, Measure};
 use lowside::ranking::Session;
+use lowside::ranking::Suspect;
 use lowside::readings::{OilTemperature, Place, Reading, Seen};
 use lowside::record::{Answer, Visit};
+use lowside::unit::Paths;
 use lowside::windows::Normals;
 use std::collections::{BTreeMap, BTreeSet};
 
@@ -116,7 +118,8 @@ fn met(draw: &mut Normals) -> &'static Fault {
 
 fn call(draw: &mut Normals) -> Option<Call> {
     let fault = met(draw);
-    let machine = (0..400).find_map(|_| Machine::draw(draw, &[fault]))?;
+    let machine =
+        (0..400).find_map(|_| Machine::draw(draw, Paths::One, &[Suspect { fault, path: None }]))?;
     let complains = |o: &observations::Observation| o.group == Group::Complaint;
     let so = (0..200).find_map(|_| {
         let so: BTreeMap<&'static str, bool> = one_path()
@@ -205,10 +208,11 @@ fn make(call: &Call, notes: &mut Notes, visit: &mut Visit, check: &Check) -> usi
         let taken = if y.flushing_blocked && !flushes {
             None
         } else {
-            notes.reading(&call.machine, y.port, &condition, id.clone())
+            notes.reading(&call.machine, y.path, y.port, &condition, id.clone())
         };
         visit.readings.push(taken.unwrap_or(Reading {
             id,
+            path: y.path,
             port: y.port,
             condition,
             rigging: String::new(),
@@ -219,7 +223,7 @@ fn make(call: &Call, notes: &mut Notes, visit: &mut Visit, check: &Check) -> usi
             note: String::new(),
         }));
     }
-    for o in next::open_answers(visit, check) {
+    for o in next::open_answers(unit, visit, check) {
         let answer = if check.id == "ask-the-operator" {
             heard(call.says[o.id])
         } else {

@@ -256,6 +256,7 @@ mod tests {
         let repair = |id, probability, now| Advice {
             repair: Some(RepairOffer {
                 id,
+                path: None,
                 repair: String::new(),
                 minutes: 30.0,
                 probability,

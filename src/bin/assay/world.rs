@@ -3,19 +3,22 @@
 //! It differs from the model on purpose: a turbulent share in the leakage, other override curves and line drops, heavier tails,
 //! gauges with a bias even over their class, needles read to a quarter division, ports and sides mixed up now and then.
 
+use lowside::assessment::At;
 use lowside::circuit::{Network, Param, Params};
-use lowside::faults::{self, Bend, Fault, FaultId};
+use lowside::faults::{self, Bend, Fault};
 use lowside::machine::{
     Build, Latents, apply, base, builds, condition_latents, layout_for, scattered, unit_latents,
 };
 use lowside::math;
 use lowside::quantity::{Kind, Measure};
+use lowside::ranking::{Suspect, has_sides};
 use lowside::readings::{
-    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading, Seen,
+    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Path, Place, Port, Reading,
+    Seen, Stroked,
 };
 use lowside::record::Visit;
 use lowside::unit::{
-    Control, FIGURES, Figure, FigureId, Filter, MachineClass, Source, Tick, Ticks, Unit,
+    Control, FIGURES, Figure, FigureId, Filter, MachineClass, Paths, Source, Tick, Ticks, Unit,
 };
 use lowside::windows::Normals;
 
@@ -162,6 +165,7 @@ pub fn asked(set: ReadingSet) -> Vec<(Port, Condition)> {
             }),
         flushing_blocked: false,
         consumers_capped: false,
+        stroked: Stroked::Both,
     };
     use Direction::{Forward, Reverse};
     let rpm = Measure::from_base(1500.0, Kind::RotationalSpeed)
@@ -224,17 +228,20 @@ pub fn asked(set: ReadingSet) -> Vec<(Port, Condition)> {
 #[derive(Clone)]
 struct Hidden {
     fault: &'static Fault,
+    path: Path,
     effect: usize,
     severity: f64,
     sign: f64,
 }
 
 impl Hidden {
-    fn draw(fault: &'static Fault, draw: &mut Normals) -> Hidden {
+    fn draw(suspect: &Suspect, draw: &mut Normals) -> Hidden {
+        let fault = suspect.fault;
         let u = draw.unit();
         let n = fault.effects.len();
         Hidden {
             fault,
+            path: suspect.path.unwrap_or_default(),
             effect: ((draw.unit() * n as f64) as usize).min(n.saturating_sub(1)),
             severity: match fault.severity {
                 faults::SeverityShape::Even => u,
@@ -251,15 +258,15 @@ impl Hidden {
             return;
         };
         let (s, sign) = (self.severity, self.sign);
-        let pump = theta[Param::PumpDisp as usize] / 75.0;
-        let charge = theta[Param::ChargeDisp as usize] / 15.0;
+        let pump = theta[Param::PumpDisp.on(self.path)] / 75.0;
+        let charge = theta[Param::ChargeDisp.on(self.path)] / 15.0;
         for (p, b) in effect.bends {
             let size = match p {
                 Param::CheckLeakA | Param::CheckLeakB | Param::Bypass => pump,
                 Param::ReliefHeld | Param::ConsumerLeak | Param::ServoLeak => charge,
                 _ => 1.0,
             };
-            let v = &mut theta[*p as usize];
+            let v = &mut theta[p.on(self.path)];
             match *b {
                 Bend::Times(a, z) => *v *= a * math::pow(z / a, s),
                 Bend::TimesLinear(a, z) => *v *= a + (z - a) * s,
@@ -306,6 +313,9 @@ pub const TURBULENT: [(Param, f64, f64); 3] = [
     (Param::CheckLeakB, 0.0, 0.02),
 ];
 
+/// How alike left and right are in laws that the model does not know, standard deviation of the log.
+const ALIKE: f64 = 0.12;
+
 /// A hidden machine that answers any reading.
 #[derive(Clone)]
 pub struct Machine {
@@ -316,25 +326,26 @@ pub struct Machine {
     faults: Vec<Hidden>,
     scatter: Vec<f64>,
     own: u64,
-    tilt: Vec<(Param, f64)>,
-    turbulent: Vec<(Param, f64)>,
+    tilt: Vec<(usize, f64)>,
+    turbulent: Vec<(usize, f64)>,
 }
 
 impl Machine {
     /// Draws a machine with these faults; none where the drawn unit cannot have one of them.
-    pub fn draw(draw: &mut Normals, faults: &[&'static Fault]) -> Option<Machine> {
-        let real = unit(draw);
-        if faults.iter().any(|f| (f.possible)(&real) <= 0.0) {
+    pub fn draw(draw: &mut Normals, paths: Paths, suspects: &[Suspect]) -> Option<Machine> {
+        let mut real = unit(draw);
+        real.ticks.paths = paths;
+        if suspects.iter().any(|s| (s.fault.possible)(&real) <= 0.0) {
             return None;
         }
         let build = builds(&real).into_iter().next()?;
         let scatter = unit_latents(&real).0.iter().map(|_| heavy(draw)).collect();
-        let tilt = TILTED
+        let mut tilt: Vec<(usize, f64)> = TILTED
             .iter()
-            .map(|(p, sd)| (*p, math::exp(sd * draw.normal())))
+            .map(|(p, sd)| (p.on(Path::Left), math::exp(sd * draw.normal())))
             .collect();
         let seats = draw.unit();
-        let turbulent = TURBULENT
+        let mut turbulent: Vec<(usize, f64)> = TURBULENT
             .iter()
             .map(|(p, least, most)| {
                 let u = if *p == Param::Bypass {
@@ -342,14 +353,30 @@ impl Machine {
                 } else {
                     seats
                 };
-                (*p, least + (most - least) * u)
+                (p.on(Path::Left), least + (most - least) * u)
             })
             .collect();
+        if !paths.is_one() {
+            // The right side is of the same make, and never quite the same.
+            let right = Param::COUNT;
+            let of_the_left = tilt.clone();
+            tilt.extend(
+                of_the_left
+                    .iter()
+                    .map(|(p, k)| (p + right, k * math::exp(ALIKE * draw.normal()))),
+            );
+            let of_the_left = turbulent.clone();
+            turbulent.extend(
+                of_the_left
+                    .iter()
+                    .map(|(p, leak)| (p + right, leak * math::exp(ALIKE * draw.normal()))),
+            );
+        }
         let unit = declared(&real, draw);
         Some(Machine {
             unit,
             build,
-            faults: faults.iter().map(|f| Hidden::draw(f, draw)).collect(),
+            faults: suspects.iter().map(|s| Hidden::draw(s, draw)).collect(),
             scatter,
             own: (draw.unit() * 1e15) as u64,
             tilt,
@@ -365,7 +392,12 @@ impl Machine {
 
     /// What the port really shows in a condition, and whether the needle swings: air in the oil, or a low side that empties.
     /// None where the machine has no steady state.
-    pub fn shows_and_swings(&self, port: Port, condition: &Condition) -> Option<(f64, bool)> {
+    pub fn shows_and_swings(
+        &self,
+        path: Path,
+        port: Port,
+        condition: &Condition,
+    ) -> Option<(f64, bool)> {
         let before = apply(&self.build, &base(&self.build), condition);
         let mut latents: Latents = unit_latents(&self.real);
         let known = latents.0.len();
@@ -376,24 +408,26 @@ impl Machine {
             u.push(self.of_condition(&latent.words, again, condition));
         }
         let mut theta = scattered(&before, &latents, 0, &u);
-        for (p, k) in &self.tilt {
-            theta[*p as usize] *= k;
+        for (place, k) in &self.tilt {
+            theta[*place] *= k;
         }
         let size = theta[Param::PumpDisp as usize] / 75.0;
-        for (p, leak) in &self.turbulent {
-            theta[*p as usize] += leak * size;
+        for (place, leak) in &self.turbulent {
+            theta[*place] += leak * size;
         }
         for f in &self.faults {
             f.bend(&mut theta);
         }
-        if condition.consumers_capped {
-            // A capped consumer neither drinks nor leaks.
-            theta[Param::ConsumerLeak as usize] = 0.0;
-        }
-        theta[Param::ServoFull as usize] =
-            theta[Param::ServoFull as usize].max(1.2 * theta[Param::ServoStart as usize]);
-        for p in [Param::Load, Param::SignalForward, Param::SignalReverse] {
-            theta[p as usize] = theta[p as usize].max(0.0);
+        for path in Path::BOTH {
+            if condition.consumers_capped {
+                // A capped consumer neither drinks nor leaks.
+                theta[Param::ConsumerLeak.on(path)] = 0.0;
+            }
+            theta[Param::ServoFull.on(path)] =
+                theta[Param::ServoFull.on(path)].max(1.2 * theta[Param::ServoStart.on(path)]);
+            for p in [Param::Load, Param::SignalForward, Param::SignalReverse] {
+                theta[p.on(path)] = theta[p.on(path)].max(0.0);
+            }
         }
         let net = Network::new(layout_for(&self.build, condition));
         if port == Port::Knee {
@@ -403,8 +437,9 @@ impl Machine {
                 .map(|k| (k.value, false));
         }
         let solution = net.solve(&theta, None).ok()?;
-        let starved = net.filled(&solution, &theta) < 0.97 || theta[Param::Air as usize] > 0.08;
-        Some((net.reading(port, &solution, &theta), starved))
+        let starved =
+            net.filled(path, &solution.state, &theta) < 0.97 || theta[Param::Air as usize] > 0.08;
+        Some((net.reading_on(path, port, &solution, &theta), starved))
     }
 
     /// Scatter that belongs to a condition: what is shared (idle speeds, tachometer, place of the thermometer, load of the day)
@@ -477,7 +512,7 @@ pub struct Notes {
     sloppy: Sloppiness,
     sides: bool,
     directions: bool,
-    instruments: Vec<(Port, f64, Rigged)>,
+    instruments: Vec<(Path, Port, f64, Rigged)>,
     /// Whether a swinging needle is written down as one.
     careful: bool,
     draw: Normals,
@@ -504,11 +539,17 @@ impl Notes {
         self.sides
     }
 
-    fn instrument(&mut self, port: Port) -> (f64, Rigged) {
-        if let Some((_, bias, rigged)) = self.instruments.iter().find(|(p, _, _)| *p == port) {
+    fn instrument(&mut self, path: Path, port: Port) -> (f64, Rigged) {
+        let here = |(a, p, _, _): &&(Path, Port, f64, Rigged)| (*a, *p) == (path, port);
+        if let Some((_, _, bias, rigged)) = self.instruments.iter().find(here) {
             return (*bias, *rigged);
         }
-        let bias = 2.0 * self.draw.unit() - 1.0;
+        // One gauge of each kind is moved from side to side.
+        let moved = self.instruments.iter().find(|(_, p, _, _)| *p == port);
+        let bias = match moved {
+            Some((_, _, bias, _)) => *bias,
+            None => 2.0 * self.draw.unit() - 1.0,
+        };
         let wrong = self.draw.unit() < self.sloppy.wrong;
         let lies = Rigged::Lies(self.draw.normal());
         let rigged = match (wrong, mistaken(port)) {
@@ -516,7 +557,7 @@ impl Notes {
             (true, Some(other)) if self.draw.unit() < 0.5 => Rigged::On(other),
             (true, _) => lies,
         };
-        self.instruments.push((port, bias, rigged));
+        self.instruments.push((path, port, bias, rigged));
         (bias, rigged)
     }
 
@@ -524,10 +565,11 @@ impl Notes {
     pub fn take(
         &mut self,
         machine: &Machine,
+        path: Path,
         port: Port,
         condition: &Condition,
     ) -> Option<(f64, bool)> {
-        let (bias, rigged) = self.instrument(port);
+        let (bias, rigged) = self.instrument(path, port);
         let mut at = port;
         if let Rigged::On(other) = rigged {
             at = other;
@@ -542,7 +584,7 @@ impl Notes {
         } else {
             *condition
         };
-        let (value, swings) = machine.shows_and_swings(at, &run)?;
+        let (value, swings) = machine.shows_and_swings(path, at, &run)?;
         let v = match span(port, value) {
             Some(s) => {
                 let lie = if let Rigged::Lies(k) = rigged {
@@ -576,11 +618,12 @@ impl Notes {
     pub fn reading(
         &mut self,
         machine: &Machine,
+        path: Path,
         port: Port,
         condition: &Condition,
         id: String,
     ) -> Option<Reading> {
-        let (v, swings) = self.take(machine, port, condition)?;
+        let (v, swings) = self.take(machine, path, port, condition)?;
         let measure = |v: f64| Measure::from_base(v, port.kind()).ok();
         let seen = if swings {
             let half = (0.06 * v.abs()).max(0.1);
@@ -593,6 +636,7 @@ impl Notes {
         Some(Reading {
             id,
             port,
+            path,
             condition: *condition,
             rigging: String::new(),
             seen,
@@ -619,21 +663,30 @@ pub struct Case {
     /// What was taken.
     pub visit: Visit,
     /// What is really wrong.
-    pub faults: Vec<FaultId>,
+    pub faults: Vec<At>,
 }
 
 /// Draws a case. None where the unit cannot have the faults, or the machine has no steady state in a reading.
 pub fn case(
     draw: &mut Normals,
-    faults: &[&'static Fault],
+    paths: Paths,
+    suspects: &[Suspect],
     set: ReadingSet,
     sloppy: Sloppiness,
 ) -> Option<Case> {
-    let machine = Machine::draw(draw, faults)?;
+    let machine = Machine::draw(draw, paths, suspects)?;
     let mut notes = Notes::new(draw, sloppy);
     let mut readings = Vec::new();
-    for (i, (port, condition)) in asked(set).iter().enumerate() {
-        readings.push(notes.reading(&machine, *port, condition, format!("r{i}"))?);
+    for (port, condition) in asked(set).iter() {
+        let sides = if has_sides(&machine.unit, *port) {
+            &Path::BOTH[..]
+        } else {
+            &Path::BOTH[..1]
+        };
+        for path in sides {
+            let id = format!("r{}", readings.len());
+            readings.push(notes.reading(&machine, *path, *port, condition, id)?);
+        }
     }
     Some(Case {
         visit: Visit {
@@ -642,7 +695,7 @@ pub fn case(
             readings,
             ..Visit::default()
         },
-        faults: faults.iter().map(|f| f.id).collect(),
+        faults: suspects.iter().map(|s| s.at()).collect(),
         machine,
     })
 }

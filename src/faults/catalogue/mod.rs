@@ -16,6 +16,7 @@ mod possible;
 mod signs;
 #[cfg(test)]
 mod tests;
+mod two_paths;
 
 use super::{Column, Fault, FaultId, SeverityShape};
 
@@ -49,7 +50,7 @@ const BASE: Fault = Fault {
 const COUNT: usize = FaultId::ALL.len();
 
 /// The groups, in any order: the table is sorted by id when it is put together.
-const GROUPS: [&[Fault]; 7] = [
+const GROUPS: [&[Fault]; 8] = [
     charge::FAULTS,
     flushing::FAULTS,
     loop_side::FAULTS,
@@ -57,6 +58,7 @@ const GROUPS: [&[Fault]; 7] = [
     drive::FAULTS,
     heat::FAULTS,
     people::FAULTS,
+    two_paths::FAULTS,
 ];
 
 /// Every entry at the place of its id. A missing or doubled entry does not compile.

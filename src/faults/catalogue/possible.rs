@@ -16,6 +16,11 @@ fn share(tick: Tick, practice: f64) -> f64 {
     }
 }
 
+/// Units with a left and a right path.
+pub fn two_paths(unit: &Unit) -> f64 {
+    if unit.ticks.paths.is_one() { 0.0 } else { 1.0 }
+}
+
 /// Units with loop flushing.
 pub fn flushing(unit: &Unit) -> f64 {
     share(unit.ticks.flushing, unit.class.practice().flushing)

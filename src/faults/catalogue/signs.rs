@@ -71,7 +71,7 @@ fn read(bends: &[(Param, Bend)], severity: f64, ask: Ask, port: Port) -> f64 {
         theta[*p as usize] = bent(*b, theta[*p as usize], severity);
     }
     let net = Network::new(Layout {
-        held: ask.held,
+        held: [ask.held; 2],
         ..Layout::default()
     });
     let solution = net.solve(&theta, None).expect("a steady state");
