@@ -20,6 +20,7 @@ use super::screens::unit::Profile;
 use super::screens::units::Units;
 use super::shell::{Bar, Notices};
 use super::state::{Action, State};
+use super::tracking::TrackingScreen;
 
 /// The state at the start: what is on the shelf, and where the address points.
 fn first_state(keeper: &RefCell<Keeper>) -> State {
@@ -104,6 +105,11 @@ fn title(state: &State) -> String {
             .get(id)
             .and_then(|visit| name(&visit.unit))
             .map(|name| format!("Neutral, {name}")),
+        Route::Tracking(id) => state
+            .visits
+            .get(id)
+            .and_then(|visit| name(&visit.unit))
+            .map(|name| format!("Tracking, {name}")),
     };
     what.map_or_else(|| "Lowside".to_owned(), |what| format!("{what}: Lowside"))
 }
@@ -220,6 +226,21 @@ fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
                 Some((visit, unit)) => html! {
                     <NeutralScreen
                         key={format!("{id}-neutral")}
+                        unit={unit.clone()}
+                        visit={visit.clone()}
+                        prefs={state.settings.units.clone()}
+                        on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
+                    />
+                },
+                None => missing("call"),
+            }
+        }
+        Route::Tracking(id) => {
+            let visit = state.visits.get(id);
+            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
+                Some((visit, unit)) => html! {
+                    <TrackingScreen
+                        key={id.clone()}
                         unit={unit.clone()}
                         visit={visit.clone()}
                         prefs={state.settings.units.clone()}

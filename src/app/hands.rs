@@ -144,8 +144,8 @@ impl Hands {
                 }
             }
             Route::Unit(unit) => self.ask_about_last(state, unit),
-            // The neutral is worked out on its own screen.
-            Route::Neutral(_) | Route::Settings => {}
+            // The neutral and the tracking are worked out on their own screens.
+            Route::Neutral(_) | Route::Tracking(_) | Route::Settings => {}
         }
     }
 

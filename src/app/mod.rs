@@ -17,6 +17,7 @@ pub mod route;
 pub mod screens;
 mod shell;
 pub mod state;
+pub mod tracking;
 
 use wasm_bindgen::{JsCast, JsValue};
 

@@ -14,6 +14,8 @@ pub enum Route {
     Call(String),
     /// The neutral of a call's unit, by the id of the visit.
     Neutral(String),
+    /// Straight tracking, within one call.
+    Tracking(String),
     /// Units of measure, instruments, data.
     Settings,
 }
@@ -28,6 +30,7 @@ impl Route {
             Some(("call", id)) if is_id(id) => Route::Call(id.to_owned()),
             Some(("call", rest)) => match rest.split_once('/') {
                 Some((id, "neutral")) if is_id(id) => Route::Neutral(id.to_owned()),
+                Some((id, "tracking")) if is_id(id) => Route::Tracking(id.to_owned()),
                 _ => Route::Units,
             },
             _ => Route::Units,
@@ -41,6 +44,7 @@ impl Route {
             Route::Unit(id) => format!("#/unit/{id}"),
             Route::Call(id) => format!("#/call/{id}"),
             Route::Neutral(id) => format!("#/call/{id}/neutral"),
+            Route::Tracking(id) => format!("#/call/{id}/tracking"),
             Route::Settings => "#/settings".to_owned(),
         }
     }

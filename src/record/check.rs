@@ -11,7 +11,7 @@ use crate::unit::{FIGURES, FigureId, ManualWindow, Unit};
 use serde_json::Value;
 use std::collections::{BTreeMap, BTreeSet};
 
-type Checked = Result<(), RecordError>;
+pub(super) type Checked = Result<(), RecordError>;
 
 /// Takes control characters out of a text of one line: line ends and tabs become spaces. Marks that turn the direction of
 /// writing go too: they can make a text read as another.
@@ -43,7 +43,7 @@ fn clean(text: &mut String, spacing: impl Fn(char) -> char) {
     }
 }
 
-fn line(path: &str, field: &str, text: &mut String) -> Checked {
+pub(super) fn line(path: &str, field: &str, text: &mut String) -> Checked {
     clean_line(text);
     fits(path, field, text, LINE_CHARACTERS)
 }
@@ -106,14 +106,14 @@ fn shortened(text: &str) -> String {
     text.chars().filter(|c| !c.is_control()).take(80).collect()
 }
 
-fn key_text(path: &str, key: &str) -> Checked {
+pub(super) fn key_text(path: &str, key: &str) -> Checked {
     if key.is_empty() || key.chars().any(char::is_control) {
         return Err(content(path, Problem::BadId(shortened(key))));
     }
     fits(path, &shortened(key), key, LINE_CHARACTERS)
 }
 
-fn unknown_fields(path: &str, extra: &BTreeMap<String, Value>) -> Checked {
+pub(super) fn unknown_fields(path: &str, extra: &BTreeMap<String, Value>) -> Checked {
     count(path, extra.len(), ENTRIES)?;
     for (key, value) in extra {
         if !is_shallow(value, limits::DEPTH) {
@@ -325,6 +325,9 @@ pub(super) fn visit(path: &str, visit: &mut Visit) -> Checked {
         if let Some(sheet) = sheet {
             neutral(&format!("{path}.{field}"), sheet)?;
         }
+    }
+    if let Some(sheet) = &mut visit.tracking {
+        super::tracking::check(&format!("{path}.tracking"), sheet)?;
     }
     for (field, closing) in [
         ("closing", &mut visit.closing),

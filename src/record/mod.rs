@@ -21,6 +21,7 @@ mod plan;
 mod rescue;
 mod settings;
 mod sum;
+mod tracking;
 mod visit;
 
 pub use book::Book;

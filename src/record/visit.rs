@@ -1,6 +1,7 @@
 //! A visit: one call to one unit, as it is kept.
 
 use crate::readings::{Reading, Rigging, Seen};
+use crate::tracking::TrackingSheet;
 use serde::{Deserialize, Serialize};
 use std::collections::BTreeMap;
 
@@ -61,6 +62,9 @@ pub struct Visit {
     /// The same for the right path, where there are two.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub neutral_right: Option<super::NeutralSheet>,
+    /// The tracking sheet of a machine with two sides; none where nobody began one.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub tracking: Option<TrackingSheet>,
     /// What is entered for the closing while the call is still open.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub closing: Option<Closing>,

@@ -12,6 +12,7 @@ mod journeys_close;
 mod journeys_neutral;
 mod journeys_offline;
 mod journeys_start;
+mod journeys_tracking;
 mod pace;
 mod rig;
 mod shots;

@@ -45,6 +45,7 @@ mod reading_group;
 mod reading_row;
 mod retake;
 mod rig;
+mod rooms;
 mod scale;
 mod screen;
 mod seen_keys;

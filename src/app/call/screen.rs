@@ -17,6 +17,7 @@ use super::next::NextPanel;
 use super::quick_panel::QuickPanel;
 use super::reading_group::{ReadingGroup, gate_id};
 use super::reading_row::row_id;
+use super::rooms;
 use super::seen_panel::SeenPanel;
 use super::slices::{use_apart, use_slices};
 use super::steady::{Answer, use_steady};
@@ -260,6 +261,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     prefs={props.prefs.clone()}
                     on_change={on_change.clone()}
                 />
+                { rooms::links(&visit.id) }
                 <ClosePanel
                     visit={visit.clone()}
                     assessment={answer}
