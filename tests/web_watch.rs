@@ -5,6 +5,8 @@ use std::cell::RefCell;
 use std::rc::Rc;
 use std::time::Duration;
 
+use lowside::app::parts::stopwatch::StopwatchProps;
+use lowside::app::parts::tap_counter::TapCounterProps;
 use lowside::app::parts::{Stopwatch, TapCounter};
 use lowside::count::Counted;
 use wasm_bindgen_test::{wasm_bindgen_test, wasm_bindgen_test_configure};
@@ -47,11 +49,12 @@ fn at(root: &Element, id: &str) -> HtmlElement {
 async fn two_taps_before_the_next_drawing_both_count() {
     let last = Rc::new(RefCell::new(None::<Counted>));
     let seen = last.clone();
-    let root = mount::<TapCounter>(yew::props!(TapCounter::Properties {
-        id: "t",
-        label: "Left wheel",
+    let root = mount::<TapCounter>(TapCounterProps {
+        id: "t".into(),
+        label: "Left wheel".into(),
+        limit_s: None,
         on_count: Callback::from(move |counted| *seen.borrow_mut() = counted),
-    }));
+    });
     drawn().await;
     let area = at(&root, "t-tap");
     for _ in 0..3 {
@@ -75,11 +78,12 @@ async fn two_taps_before_the_next_drawing_both_count() {
 async fn the_stopwatch_starts_stops_and_is_set_back() {
     let last = Rc::new(RefCell::new(None::<f64>));
     let seen = last.clone();
-    let root = mount::<Stopwatch>(yew::props!(Stopwatch::Properties {
-        id: "s",
-        label: "Held",
+    let root = mount::<Stopwatch>(StopwatchProps {
+        id: "s".into(),
+        label: "Held".into(),
+        signal_s: None,
         on_time: Callback::from(move |time| *seen.borrow_mut() = time),
-    }));
+    });
     drawn().await;
     let press = at(&root, "s-press");
     press.click();

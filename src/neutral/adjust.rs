@@ -305,7 +305,8 @@ pub const EQUAL_HALVES: f64 = 0.2;
 #[must_use]
 pub fn halves(forward: f64, reverse: f64, balanced: f64) -> Option<Halves> {
     let (f, r) = (forward - balanced, reverse - balanced);
-    if !(f * r < 0.0) {
+    let lies_between = f * r < 0.0;
+    if !lies_between {
         return None;
     }
     let (f, r) = (f.abs(), r.abs());

@@ -55,7 +55,6 @@ const RETURN_SPRING: Step = Step {
     pitfalls: &["A worn eccentric or a tired spring comes back to two places: play, not offset."],
     stands: &[Stands::WheelsClear],
     enters: &[Enter::Series],
-    ..PLAIN
 };
 
 const PILOTS_VENTED: Step = Step {
@@ -81,7 +80,6 @@ const PILOTS_BACK: Step = Step {
     ],
     stands: &[Stands::Opening],
     enters: &[Enter::PilotRest],
-    ..PLAIN
 };
 
 const PILOT_STARTS: Step = Step {
@@ -97,7 +95,6 @@ const PILOT_STARTS: Step = Step {
     ],
     stands: &[Stands::WheelsClear, Stands::Opening],
     enters: &[Enter::PilotStart],
-    ..PLAIN
 };
 
 const PILOT_FULL: Step = Step {
@@ -151,7 +148,6 @@ const CURRENTS: Step = Step {
     ],
     stands: &[Stands::WheelsClear],
     enters: &[Enter::Currents],
-    ..PLAIN
 };
 
 const LEVER_NEUTRAL: Step = Step {
