@@ -17,6 +17,7 @@
 //! | [`checks`] | the checks a mechanic can make, with minutes, hazards and precautions |
 //! | [`windows`] | what a healthy unit should show |
 //! | [`ranking`] | from readings to causes |
+//! | [`neutral`] | where the swash stands when nothing is asked, and how to set it |
 //! | [`next`] | the next check, the next repair, when to stop |
 //! | [`tracking`] | straight tracking of a machine with two sides: which side is faster, why, what to turn |
 //! | [`assessment`] | what an assessment hands out |
@@ -40,6 +41,7 @@ pub mod heat;
 pub mod kinematics;
 pub mod machine;
 pub mod math;
+pub mod neutral;
 pub mod next;
 pub mod observations;
 pub mod quantity;

@@ -10,6 +10,7 @@ use yew::{Callback, Html, component, html, use_effect_with, use_memo, use_mut_re
 use super::call::{CallScreen, EarlierCalls};
 use super::deed::{Deed, Snapshot};
 use super::hands::Hands;
+use super::neutral::NeutralScreen;
 use super::persist::Keeper;
 use super::platform::listen::Listener;
 use super::platform::{focus, offline, persistence, theme};
@@ -99,6 +100,11 @@ fn title(state: &State) -> String {
             .get(id)
             .and_then(|visit| name(&visit.unit))
             .map(|name| format!("Call, {name}")),
+        Route::Neutral(id) => state
+            .visits
+            .get(id)
+            .and_then(|visit| name(&visit.unit))
+            .map(|name| format!("Neutral, {name}")),
         Route::Tracking(id) => state
             .visits
             .get(id)
@@ -211,6 +217,21 @@ fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
                         />
                     }
                 }
+                None => missing("call"),
+            }
+        }
+        Route::Neutral(id) => {
+            let visit = state.visits.get(id);
+            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
+                Some((visit, unit)) => html! {
+                    <NeutralScreen
+                        key={format!("{id}-neutral")}
+                        unit={unit.clone()}
+                        visit={visit.clone()}
+                        prefs={state.settings.units.clone()}
+                        on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
+                    />
+                },
                 None => missing("call"),
             }
         }

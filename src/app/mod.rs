@@ -9,6 +9,7 @@ pub mod deed;
 pub mod engine;
 mod exchange;
 pub mod hands;
+pub mod neutral;
 pub mod parts;
 pub mod persist;
 pub mod platform;

@@ -3,7 +3,7 @@
 
 use super::error::{Problem, RecordError, content};
 use super::limits::{self, ENTRIES, LINE_CHARACTERS, TEXT_CHARACTERS};
-use super::{Closing, PutBack, Settings, Visit, is_id};
+use super::{Closing, NeutralSheet, PutBack, Settings, Visit, is_id};
 use crate::quantity::{Kind, Measure};
 use crate::readings::instrument::Instrument;
 use crate::readings::{Condition, EngineSpeed, Lever, Port, Reading, Rigging, Seen};
@@ -318,6 +318,14 @@ pub(super) fn visit(path: &str, visit: &mut Visit) -> Checked {
             prose(&path, &shortened(what), why)?;
         }
     }
+    for (field, sheet) in [
+        ("neutral", &mut visit.neutral),
+        ("neutral_right", &mut visit.neutral_right),
+    ] {
+        if let Some(sheet) = sheet {
+            neutral(&format!("{path}.{field}"), sheet)?;
+        }
+    }
     if let Some(sheet) = &mut visit.tracking {
         super::tracking::check(&format!("{path}.tracking"), sheet)?;
     }
@@ -330,6 +338,24 @@ pub(super) fn visit(path: &str, visit: &mut Visit) -> Checked {
         }
     }
     unknown_fields(path, &visit.extra)
+}
+
+fn neutral(path: &str, sheet: &mut NeutralSheet) -> Checked {
+    for typed in sheet.fields.values_mut() {
+        line(path, "typed", &mut typed.typed)?;
+    }
+    count(&format!("{path}.series"), sheet.series.len(), ENTRIES)?;
+    for row in &mut sheet.series {
+        line(path, "id", &mut row.id)?;
+        for typed in [&mut row.turns, &mut row.shown, &mut row.time] {
+            line(path, "typed", &mut typed.typed)?;
+        }
+    }
+    count(&format!("{path}.done"), sheet.done.len(), ENTRIES)?;
+    for step in &sheet.done {
+        key_text(&format!("{path}.done"), step)?;
+    }
+    unknown_fields(path, &sheet.extra)
 }
 
 fn closing(path: &str, closing: &mut Closing) -> Checked {
