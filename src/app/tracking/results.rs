@@ -3,10 +3,13 @@
 use super::plan_view::{PlanView, props_of};
 use super::screen::Told;
 use super::words;
+use crate::app::call::cautions;
 use crate::app::parts::{Caution, Grade, Icon, Section, Shape};
+use crate::caution::Stands;
 use crate::quantity::UnitPrefs;
 use crate::tracking::{
-    Adjustment, Agreement, Alone, Found, Kind, Outcome, Pair, Setting, TrackingSheet, Verdict, What,
+    Adjustment, Agreement, Alone, Found, Kind, Load, Outcome, Pair, Setting, TrackingSheet,
+    Verdict, What,
 };
 use yew::{Callback, Html, MouseEvent, Properties, component, html};
 
@@ -178,19 +181,28 @@ fn advice(props: &ResultsProps, outcome: &Outcome) -> Html {
         let on_add = props.on_add.clone();
         Callback::from(move |_: MouseEvent| on_add.emit((what, setting)))
     };
+    // The caution for wheels clear stands on top of the screen already.
+    let drives = what == What::Path || (what != What::RollOut && setting.load != Load::Free);
     let takes = words::percent(advice.takes, 1.0, props.prefs.mark());
     let minutes = format!("{:.0} min", advice.run.minutes);
     let why = match (props.told.1.is_empty(), advice.pair) {
         (true, _) => "First in the order of the work".to_owned(),
         (_, Some(_)) => {
-            format!("It should take away about {takes} of the variance between the two")
+            format!(
+                "Computed from these runs: it should take away about {takes} of the variance between the two"
+            )
         }
-        (_, None) => format!("It should take away about {takes} of what is open"),
+        (_, None) => {
+            format!("Computed from these runs: it should take away about {takes} of what is open")
+        }
     };
     html! {
         <div class="tracking-next" data-testid="next-run">
             <p><strong>{ "Next run: " }</strong>{ words::candidate(&advice.run) }</p>
             <p class="soft small">{ format!("{why}; about {minutes} (common practice).") }</p>
+            if drives {
+                { cautions::at(Stands::Driving) }
+            }
             <button type="button" class="button" data-testid="add-next-run" onclick={on_add}>
                 <Icon shape={Shape::Plus} />{ "Add this run" }
             </button>
