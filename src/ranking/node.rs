@@ -152,7 +152,7 @@ pub fn bend(
 }
 
 /// Share of the nodes that each side of a cause with two sides gets: steep cells are cut in three anyway.
-const SIDED: f64 = 0.6;
+const SIDED: f64 = 0.7;
 
 /// The nodes of a cause, and the log of its prior mass over the builds (base rate × share of builds that can have it).
 pub fn nodes(suspect: &Suspect, builds: &[Build], belief: &Belief) -> (Vec<Node>, f64) {
