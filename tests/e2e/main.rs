@@ -9,8 +9,10 @@
 mod browser;
 mod journeys_call;
 mod journeys_close;
+mod journeys_neutral;
 mod journeys_offline;
 mod journeys_start;
+mod journeys_tracking;
 mod pace;
 mod rig;
 mod shots;

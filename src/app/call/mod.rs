@@ -16,11 +16,11 @@
 //! | [`screen`] | all of it together |
 
 mod add_panel;
-mod alerts;
+pub(in crate::app) mod alerts;
 mod bands;
 mod causes;
-mod cautions;
-mod change;
+pub(in crate::app) mod cautions;
+pub(in crate::app) mod change;
 mod close;
 mod condition_editor;
 mod condition_parts;
@@ -28,8 +28,8 @@ mod edits;
 mod entry;
 mod entry_field;
 mod entry_modes;
-mod gate;
-mod gate_panel;
+pub(in crate::app) mod gate;
+pub(in crate::app) mod gate_panel;
 mod group;
 mod hazard;
 mod history;
@@ -45,6 +45,7 @@ mod reading_group;
 mod reading_row;
 mod retake;
 mod rig;
+mod rooms;
 mod scale;
 mod screen;
 mod seen_keys;
