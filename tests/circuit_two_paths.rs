@@ -179,6 +179,43 @@ fn readings_of_both_paths_change_as_the_derivatives_say() {
 }
 
 #[test]
+fn the_mirror_image_shows_the_mirror_image() {
+    let change = [(Right, Param::MotorLeak, 0.02), (Left, Param::Bypass, 0.2)];
+    for arrangement in [Arrangement::Tandem, Arrangement::Apart] {
+        let one = run(arrangement, [0.6, -0.3], &change);
+        let net = &one.net;
+        assert!(net.is_symmetric());
+        let theta = net.mirrored(&one.theta);
+        assert_eq!(net.mirrored(&theta), one.theta);
+        let solution = net.solve(&theta, None).expect("a state");
+        let image = net.mirrored_state(&one.solution.state);
+        for (a, b) in solution.state.iter().zip(image) {
+            assert!((a - b).abs() < 1e-6 * (1.0 + a.abs()), "{a} {b}");
+        }
+        for path in Path::BOTH {
+            let told = |p: &Port| !matches!(p, Port::Knee | Port::EngineSpeed);
+            for port in Port::ALL.into_iter().filter(told) {
+                let there = net.reading_and_gradient_on(path, port, &one.solution, &one.theta);
+                let from = if net.at_common(port) {
+                    path
+                } else {
+                    path.other()
+                };
+                let here = net.reading_and_gradient_on(from, port, &solution, &theta);
+                let back = net.mirrored_shown(&there);
+                assert!(
+                    (here.value - back.value).abs() < 1e-6 * (1.0 + here.value.abs()),
+                    "{port:?}"
+                );
+                for (a, b) in here.gradient.iter().zip(back.gradient) {
+                    assert!((a - b).abs() < 1e-4 * (1.0 + a.abs()), "{port:?} {a} {b}");
+                }
+            }
+        }
+    }
+}
+
+#[test]
 fn where_drains_do_not_pass_the_pump_the_common_return_takes_both() {
     let net = Network::new(Layout {
         arrangement: Arrangement::Tandem,

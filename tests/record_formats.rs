@@ -1,20 +1,52 @@
 //! Formats of kept records: every fixture of every format loads, steps follow each other, and nothing newer is touched.
 
+use lowside::readings::Path;
 use lowside::record::{
     Book, Envelope, Export, Ladder, RecordError, RecordKind, SCHEMA, STEPS, Settings, Stamp, Step,
     Subject, Visit, checksum,
 };
-use lowside::unit::Unit;
+use lowside::unit::{Paths, Unit};
 use serde_json::{Value, json};
 
 /// Frozen texts of each format. To add a format: a folder with the four files, written by the version that made them.
-const FIXTURES: &[(u32, &str, &str, &str, &str)] = &[(
-    1,
-    include_str!("fixtures/v1/unit.json"),
-    include_str!("fixtures/v1/visit.json"),
-    include_str!("fixtures/v1/settings.json"),
-    include_str!("fixtures/v1/export.json"),
-)];
+const FIXTURES: &[(u32, &str, &str, &str, &str)] = &[
+    (
+        1,
+        include_str!("fixtures/v1/unit.json"),
+        include_str!("fixtures/v1/visit.json"),
+        include_str!("fixtures/v1/settings.json"),
+        include_str!("fixtures/v1/export.json"),
+    ),
+    (
+        2,
+        include_str!("fixtures/v2/unit.json"),
+        include_str!("fixtures/v2/visit.json"),
+        include_str!("fixtures/v2/settings.json"),
+        include_str!("fixtures/v2/export.json"),
+    ),
+];
+
+#[test]
+fn the_first_format_has_one_path_and_the_second_tells_its_sides() {
+    for (format, unit, visit, ..) in FIXTURES {
+        let ladder = Ladder::default();
+        let open = |text: &str| Envelope::open(text.trim_end()).expect("an envelope");
+        let unit: Unit = open(unit).record(&ladder).expect("a unit");
+        let visit: Visit = open(visit).record(&ladder).expect("a visit");
+        let right = visit.readings.iter().filter(|r| r.path == Path::Right);
+        let alone = visit
+            .readings
+            .iter()
+            .filter(|r| !r.condition.stroked.is_both());
+        let told = (unit.ticks.paths, right.count(), alone.count());
+        let wanted = if *format == 1 {
+            (Paths::One, 0, 0)
+        } else {
+            (Paths::TwoSharedCharge, 11, 8)
+        };
+        assert_eq!(told, wanted);
+    }
+}
 
 #[test]
 fn steps_and_fixtures_have_no_gap() {

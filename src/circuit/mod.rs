@@ -4,6 +4,7 @@ mod element;
 mod law;
 mod layout;
 mod lu;
+mod mirror;
 mod network;
 mod node;
 mod output;

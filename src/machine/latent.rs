@@ -32,6 +32,8 @@ pub struct Latent {
     pub words: String,
     /// What it moves.
     pub acts: Vec<Act>,
+    /// What one path of two has for itself.
+    pub of_one_side: bool,
 }
 
 /// All latents of a unit and its conditions.
@@ -58,6 +60,7 @@ impl Latents {
         self.0.push(Latent {
             words: words.to_string(),
             acts,
+            of_one_side: false,
         });
     }
 
@@ -72,6 +75,7 @@ impl Latents {
         self.0.push(Latent {
             words: param.words().to_string(),
             acts: acts.to_vec(),
+            of_one_side: false,
         });
     }
 
@@ -81,6 +85,7 @@ impl Latents {
             self.0.push(Latent {
                 words: words.to_string(),
                 acts,
+                of_one_side: false,
             });
         }
     }

@@ -80,6 +80,7 @@ pub fn on_paths(latents: Latents, paths: Paths, conditions: &[Condition]) -> Lat
             out.0.push(Latent {
                 words: latent.words.clone(),
                 acts: both,
+                of_one_side: false,
             });
         }
         for path in Path::BOTH {
@@ -88,6 +89,7 @@ pub fn on_paths(latents: Latents, paths: Paths, conditions: &[Condition]) -> Lat
                 out.0.push(Latent {
                     words: format!("{}, {}", latent.words, path.words()),
                     acts,
+                    of_one_side: true,
                 });
             }
         }

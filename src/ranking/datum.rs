@@ -256,6 +256,14 @@ pub fn gather_with(
             out.silent.push((index, why));
             continue;
         }
+        if !unit.ticks.paths.is_one() && matches!(reading.port, Port::EngineSpeed | Port::Ground) {
+            let why = format!(
+                "{} is not judged on a machine with two paths: both work on it. Count the wheel turns of each side instead.",
+                reading.port.words()
+            );
+            out.silent.push((index, why));
+            continue;
+        }
         let instrument = instrument_of(reading, riggings, instruments);
         let Some((says, value, swing)) = statement(seen, &mut out.conditions) else {
             continue;

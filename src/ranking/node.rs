@@ -151,6 +151,9 @@ pub fn bend(
     factors
 }
 
+/// Share of the nodes that each side of a cause with two sides gets: steep cells are cut in three anyway.
+const SIDED: f64 = 0.7;
+
 /// The nodes of a cause, and the log of its prior mass over the builds (base rate × share of builds that can have it).
 pub fn nodes(suspect: &Suspect, builds: &[Build], belief: &Belief) -> (Vec<Node>, f64) {
     let fault = suspect.fault;
@@ -179,14 +182,15 @@ pub fn nodes(suspect: &Suspect, builds: &[Build], belief: &Belief) -> (Vec<Node>
     }
     // Each effect is equally likely; its signs share it.
     let effects = fault.effects.len().max(1) as f64;
+    // A cause that is there twice has its nodes shared out between the sides.
+    let fineness = belief.fineness as f64 * if suspect.path.is_some() { SIDED } else { 1.0 };
     let mut out = Vec::new();
     for (effect, sign) in &variants {
         let signs = variants.iter().filter(|(e, _)| e == effect).count() as f64;
         for (build, mass) in masses.iter().enumerate().filter(|(_, m)| **m > 0.0) {
             let share = mass / total / effects / signs;
             let plain = effect.is_none() || fault.severity == SeverityShape::Total;
-            let n = ((belief.fineness as f64 * share).round() as usize)
-                .clamp(3, belief.fineness.max(3));
+            let n = ((fineness * share).round() as usize).clamp(3, belief.fineness.max(3));
             for i in 0..n {
                 out.push(Node {
                     build,

@@ -310,7 +310,14 @@ impl Bench {
             Some(None) => return None,
             Some(Some((Some(shows), _))) => return Some(shows),
             Some(Some((None, state))) => Some(state),
-            None => self.warm.borrow()[node.build][condition],
+            None => {
+                if let Some(found) = self.mirrored(node, condition, theta) {
+                    let shows = found.as_ref().map(shows);
+                    self.memo.put(key, found);
+                    return shows;
+                }
+                self.warm.borrow()[node.build][condition]
+            }
         };
         self.solves.set(self.solves.get() + 1);
         let solved = net.solve(theta, start.as_ref()).ok();
@@ -335,6 +342,37 @@ impl Bench {
         let shows = new.as_ref().map(shows);
         self.memo.put(key, new);
         shows
+    }
+
+    /// What is kept of the mirror image of a node's parameters, changed over; none where nothing is, or too little.
+    fn mirrored(&self, node: &Node, condition: usize, theta: &Params) -> Option<Option<Kept>> {
+        let net = &self.networks[node.build][condition];
+        if !net.is_symmetric() {
+            return None;
+        }
+        let image = net.mirrored(theta);
+        let key = memo::key(self.keys[node.build][condition], &image[..self.values]);
+        self.memo.get(key, |kept| {
+            let Some(kept) = kept else { return Some(None) };
+            let ports = self.wanted[condition]
+                .iter()
+                .map(|(path, port)| {
+                    // A port that both share is read on the left whichever way round.
+                    let from = if net.at_common(*port) {
+                        *path
+                    } else {
+                        path.other()
+                    };
+                    let there = |(a, p, _): &&(Path, Port, Shown)| (*a, *p) == (from, *port);
+                    let (_, _, shown) = kept.ports.iter().find(there)?;
+                    Some((*path, *port, net.mirrored_shown(shown)))
+                })
+                .collect::<Option<Vec<_>>>()?;
+            Some(Some(Kept {
+                state: net.mirrored_state(&kept.state),
+                ports,
+            }))
+        })?
     }
 
     fn shown(

@@ -40,7 +40,10 @@ pub struct Split {
 impl Split {
     /// The split of a unit's latents.
     pub fn new(latents: &Latents) -> Split {
-        let sampled = |l: &Latent| l.acts.iter().any(|a| KINKED.contains(&a.param));
+        // What one side of two has for itself is left to the closed form: the more is sampled over the same few nodes, the more a
+        // node that happens to lie well outweighs the others.
+        let sampled =
+            |l: &Latent| !l.of_one_side && l.acts.iter().any(|a| KINKED.contains(&a.param));
         Split {
             sampled: latents.0.iter().map(sampled).collect(),
             seeds: seeds(latents),

@@ -42,7 +42,7 @@ pub fn suspects(arrangement: Arrangement) -> Vec<Suspect> {
         .iter()
         .filter(|f| f.id != FaultId::NotListed)
         .flat_map(|fault| {
-            let paths = if has_sides(fault, arrangement) {
+            let paths = if is_sided(fault, arrangement) {
                 vec![Some(Path::Left), Some(Path::Right)]
             } else {
                 vec![None]
@@ -53,11 +53,11 @@ pub fn suspects(arrangement: Arrangement) -> Vec<Suspect> {
 }
 
 /// True where a cause sits on one side: some part that it bends is there twice.
-pub fn has_sides(fault: &Fault, arrangement: Arrangement) -> bool {
-    let twice = |b: Belongs| match (arrangement, b) {
-        (Arrangement::Single, _) | (_, Belongs::Machine) => false,
-        (Arrangement::Tandem, Belongs::Charge) => false,
-        _ => true,
+fn is_sided(fault: &Fault, arrangement: Arrangement) -> bool {
+    let twice = |b: Belongs| match arrangement {
+        Arrangement::Single => false,
+        Arrangement::Tandem => b == Belongs::Path,
+        Arrangement::Apart => b != Belongs::Machine,
     };
     fault
         .effects

@@ -9,7 +9,7 @@ use super::RecordError;
 use serde_json::Value;
 
 /// Format number of everything that this version writes.
-pub const SCHEMA: u32 = 1;
+pub const SCHEMA: u32 = 2;
 
 /// Kinds of record.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord, Hash)]
@@ -64,7 +64,13 @@ pub struct Step {
 }
 
 /// The steps, oldest first.
-pub const STEPS: &[Step] = &[];
+pub const STEPS: &[Step] = &[Step {
+    // Machines with two paths: a unit says how many it has, a reading its side, a condition the side that is stroked. What says
+    // nothing has one path, is on the left, and strokes both, so that an old record stands as it is; an older app would take a
+    // right side for a left one.
+    from: 1,
+    apply: |_, value| Ok(value),
+}];
 
 /// The steps with the format that they lead to. [`Ladder::default`] is the app's own; tests bring others.
 #[derive(Clone, Copy)]

@@ -72,6 +72,8 @@ impl Ticks {
             Port::Release => self.brake_from_charge.into(),
             Port::Shift => self.two_speed.into(),
             Port::InletPull => own_inlet(self.charge_source),
+            // Two pumps load one engine, and one ground speed belongs to neither side: wheel turns tell more.
+            Port::EngineSpeed | Port::Ground if !self.paths.is_one() => Fitted::No,
             Port::Charge
             | Port::LoopA
             | Port::LoopB
@@ -112,6 +114,16 @@ mod tests {
             control,
             ..Ticks::default()
         }
+    }
+
+    #[test]
+    fn two_paths_are_not_read_where_they_work_on_one_thing() {
+        let ticks = Ticks {
+            paths: crate::unit::Paths::TwoSharedCharge,
+            ..Ticks::default()
+        };
+        assert!(!ticks.may_have(Port::EngineSpeed) && !ticks.may_have(Port::Ground));
+        assert!(ticks.may_have(Port::Wheel) && ticks.may_have(Port::PumpShaft));
     }
 
     #[test]

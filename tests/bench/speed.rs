@@ -42,6 +42,16 @@ fn main() {
         "native: full assessment, 12 readings in 10 conditions: {:.1} ms",
         1e3 * full
     );
+    let (unit, both) = work::two_paths();
+    let twice = time(&mut || {
+        std::hint::black_box(lowside::ranking::assess(&unit, &both, &[]));
+    });
+    println!(
+        "native: two paths, {} readings: {:.1} ms, {:.1} of one path's",
+        both.readings.len(),
+        1e3 * twice,
+        twice / full
+    );
     for (words, known) in [("a known condition", true), ("a new condition", false)] {
         let more = work::one_more(known);
         let (mut first, mut best) = (f64::INFINITY, f64::INFINITY);

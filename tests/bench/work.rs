@@ -111,3 +111,22 @@ pub fn again(session: &mut Session, visit: &Visit) -> f64 {
         .first()
         .map_or(0.0, |c| c.probability)
 }
+
+/// A call to a machine with two paths: speeds, held pressures and drains of both sides.
+pub fn two_paths() -> (lowside::unit::Unit, Visit) {
+    let mut unit = roller();
+    unit.ticks.paths = lowside::unit::Paths::TwoSharedCharge;
+    let mut v = call();
+    let right: Vec<_> = v
+        .readings
+        .iter()
+        .filter(|r| !r.port.is_common())
+        .map(|r| lowside::readings::Reading {
+            id: format!("{}-right", r.id),
+            path: lowside::readings::Path::Right,
+            ..r.clone()
+        })
+        .collect();
+    v.readings.extend(right);
+    (unit, v)
+}

@@ -113,7 +113,7 @@ impl Engine {
             let open = inner.open.take();
             if open.is_some()
                 && let Some((_, begun)) = inner.asked.take()
-                && !open.as_ref().is_some_and(|o| o.visit.id == begun.visit.id)
+                && open.as_ref().is_none_or(|o| o.visit.id != begun.visit.id)
             {
                 // Called off in the worker, so it has to be asked again.
                 inner.others.push_front(begun);

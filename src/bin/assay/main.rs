@@ -24,7 +24,7 @@ use lowside::machine::arrangement;
 use lowside::ranking::{Suspect, apart, assess, pair_rate, suspects};
 use lowside::unit::Paths;
 use lowside::windows::Normals;
-use score::Score;
+use score::{Score, sides as sides_of};
 use std::collections::BTreeMap;
 use world::{Case, Machine, ReadingSet, Sloppiness, case};
 
@@ -104,6 +104,18 @@ fn run(
             for (judge, score) in judges.iter().zip(&mut scores) {
                 let r = judge.rank(&c);
                 score.add(&c.faults, &r);
+                let wrong_side = sides_of(&c.faults, &r).is_some_and(|(here, there)| here <= there);
+                if wrong_side && std::env::var_os("ASSAY_TELL").is_some() {
+                    println!(
+                        "wrong side: hidden {:?} {}; led {:?}",
+                        c.faults[0].key(),
+                        c.machine.shows_how(),
+                        r.iter()
+                            .take(3)
+                            .map(|(a, p)| (a[0].key(), *p))
+                            .collect::<Vec<_>>()
+                    );
+                }
                 let certain = r.first().is_some_and(|l| l.1 > 0.85 && l.0 != c.faults);
                 if certain && std::env::var_os("ASSAY_TELL").is_some() {
                     tell(&c, &r);
@@ -182,6 +194,7 @@ fn ranking() {
     {
         for set in ReadingSet::EACH
             .into_iter()
+            .filter(|s| *s != ReadingSet::Sides)
             .filter(|s| only.as_ref().is_none_or(|o| *o == format!("{s:?}")))
         {
             let judges = RANKERS.map(|r| Judge::new(r, &possible, sloppy, 0.0));
@@ -233,7 +246,7 @@ fn sides() {
                 let (n, right, stated) = s.sides();
                 println!("         side, {ranker:?}: right {right:.3} of {n}, stated {stated:.3}");
             }
-            if set == ReadingSet::All {
+            if set == ReadingSet::Sides {
                 by_fault(&scores);
             }
         }

@@ -28,6 +28,21 @@ pub struct Score {
     sides: (usize, usize, f64),
 }
 
+/// Probability of the side that a single hidden fault is on, and of the other one; none where it is on no side.
+pub fn sides(truth: &[At], ranked: &Ranked) -> Option<(f64, f64)> {
+    let [at] = truth else {
+        return None;
+    };
+    let own = at.path?;
+    let on = |path: Path| -> f64 {
+        let here = ranked
+            .iter()
+            .filter(|(ids, _)| ids.iter().all(|i| i.path == Some(path)));
+        here.map(|(_, q)| q).sum()
+    };
+    Some((on(own), on(own.other())))
+}
+
 impl Score {
     /// Adds a case.
     pub fn add(&mut self, truth: &[At], ranked: &Ranked) {
@@ -47,19 +62,7 @@ impl Score {
             let b = &mut self.every[bin(*q)];
             *b = (b.0 + 1, b.1 + q, b.2 + usize::from(is(ids)));
         }
-        if let [
-            At {
-                path: Some(own), ..
-            },
-        ] = truth
-        {
-            let on = |path: Path| -> f64 {
-                let here = ranked
-                    .iter()
-                    .filter(|(ids, _)| ids.iter().all(|i| i.path == Some(path)));
-                here.map(|(_, q)| q).sum()
-            };
-            let (here, there) = (on(*own), on(own.other()));
+        if let Some((here, there)) = sides(truth, ranked) {
             self.sides.0 += 1;
             self.sides.1 += usize::from(here > there);
             self.sides.2 += here.max(there) / (here + there).max(1e-12);

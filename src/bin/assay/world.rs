@@ -33,15 +33,18 @@ pub enum ReadingSet {
     Speeds,
     /// All: drains, return, cases, inlet, knee.
     All,
+    /// With what tells a side: drain in drive, motor case, plateau, charge with one side driven alone.
+    Sides,
 }
 
 impl ReadingSet {
     /// Every set, smallest first.
-    pub const EACH: [ReadingSet; 4] = [
+    pub const EACH: [ReadingSet; 5] = [
         ReadingSet::Charge,
         ReadingSet::Held,
         ReadingSet::Speeds,
         ReadingSet::All,
+        ReadingSet::Sides,
     ];
 }
 
@@ -221,6 +224,23 @@ pub fn asked(set: ReadingSet) -> Vec<(Port, Condition)> {
         (Port::PumpShaft, neutral(EngineSpeed::HighIdle)),
         (Port::LoopA, free(Forward, Lever::Full)),
     ]);
+    if set == ReadingSet::All {
+        return out;
+    }
+    let alone = |stroked| Condition {
+        stroked,
+        ..free(Forward, Lever::Half)
+    };
+    out.extend([
+        (Port::MotorDrain, free(Forward, Lever::Half)),
+        (Port::MotorDrain, free(Reverse, Lever::Half)),
+        (Port::MotorCase, neutral(EngineSpeed::HighIdle)),
+        (Port::LoopB, free(Reverse, Lever::Full)),
+        (Port::LoopA, held(Forward, 1.0)),
+        (Port::LoopB, held(Reverse, 1.0)),
+        (Port::Charge, alone(Stroked::Left)),
+        (Port::Charge, alone(Stroked::Right)),
+    ]);
     out
 }
 
@@ -386,6 +406,15 @@ impl Machine {
             real,
             null: None,
         })
+    }
+
+    /// How its faults show, for printing: effect, severity, sign.
+    pub fn shows_how(&self) -> String {
+        let each = self
+            .faults
+            .iter()
+            .map(|f| format!("{}/{:.2}/{:+}", f.effect, f.severity, f.sign));
+        each.collect::<Vec<_>>().join(", ")
     }
 
     /// True where the real unit can have a fault.
