@@ -312,7 +312,7 @@ fn right_is_told_against_left_with_the_share_where_one_makes_sense() {
     assert_eq!(told_metric(Port::Wheel, 0.0, 2.0), "Right 2.0 rpm higher");
     assert_eq!(
         told_metric(Port::MotorCase, 1.0, 1.8),
-        "Right 0.8 bar higher"
+        "Right 0.80 bar higher"
     );
     assert_eq!(
         told(Port::LoopA, 200.0, 190.0, &UnitPrefs::us()).as_deref(),

@@ -10,6 +10,7 @@ mod browser;
 mod journeys_call;
 mod journeys_close;
 mod journeys_offline;
+mod journeys_sides;
 mod journeys_start;
 mod pace;
 mod rig;

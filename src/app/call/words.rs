@@ -232,8 +232,16 @@ pub fn spread(port: Port, base: f64, prefs: &UnitPrefs) -> String {
 
 /// A difference at a port (base unit of its kind), without its sign: `1.4 rpm`; none where it prints as nought.
 pub fn difference(port: Port, base: f64, prefs: &UnitPrefs) -> Option<String> {
-    let (measure, unit, places) = as_spread(port, base, prefs)?;
-    let decimals = Decimals::Fixed(places);
+    let (measure, unit, _) = as_spread(port, base, prefs)?;
+    let size = measure.in_unit(unit).abs();
+    // A difference is of two readings as typed: a tenth, and more where that is all there is.
+    let decimals = Decimals::Fixed(if size >= 50.0 {
+        0
+    } else if size >= 1.0 {
+        1
+    } else {
+        2
+    });
     let figure = quantity::format(measure, unit, decimals, prefs.mark());
     let is_seen = figure.chars().any(|digit| ('1'..='9').contains(&digit));
     is_seen.then(|| quantity::format_with_unit(measure, unit, decimals, prefs.mark()))
