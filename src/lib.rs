@@ -17,7 +17,9 @@
 //! | [`checks`] | the checks a mechanic can make, with minutes, hazards and precautions |
 //! | [`windows`] | what a healthy unit should show |
 //! | [`ranking`] | from readings to causes |
+//! | [`neutral`] | where the swash stands when nothing is asked, and how to set it |
 //! | [`next`] | the next check, the next repair, when to stop |
+//! | [`tracking`] | straight tracking of a machine with two sides: which side is faster, why, what to turn |
 //! | [`assessment`] | what an assessment hands out |
 //! | [`record`] | visits and units as they are kept; import, export, migration |
 //! | [`store`] | where the record is kept |
@@ -39,6 +41,7 @@ pub mod heat;
 pub mod kinematics;
 pub mod machine;
 pub mod math;
+pub mod neutral;
 pub mod next;
 pub mod observations;
 pub mod quantity;
@@ -46,5 +49,6 @@ pub mod ranking;
 pub mod readings;
 pub mod record;
 pub mod store;
+pub mod tracking;
 pub mod unit;
 pub mod windows;

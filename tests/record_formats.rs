@@ -37,10 +37,8 @@ fn every_fixture_of_every_format_loads() {
         let visit: Visit = open(visit).record(&ladder).expect("a visit");
         let settings: Settings = open(settings).record(&ladder).expect("settings");
         assert_eq!(unit.name, "T-14 \"Rüttler\"");
-        assert_eq!(
-            (unit.figures.len(), unit.extra.len()),
-            (lowside::unit::FIGURES.len(), 1)
-        );
+        // All that there were when it was frozen; figures that came later are simply not given.
+        assert_eq!((unit.figures.len(), unit.extra.len()), (17, 1));
         assert_eq!(visit.readings.len(), 23);
         assert_eq!(
             visit.closed.as_ref().map(|c| c.cause.as_str()),

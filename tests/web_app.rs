@@ -49,6 +49,7 @@ fn addresses_lead_back_to_their_screens() {
         Route::Settings,
         Route::Unit("u1".into()),
         Route::Call("demo-v.1".into()),
+        Route::Neutral("demo-v.1".into()),
     ] {
         assert_eq!(Route::read(&route.href()), route);
     }
@@ -59,6 +60,8 @@ fn addresses_lead_back_to_their_screens() {
         "#/unit/",
         "#/unit/a/b",
         "#/call/<x>",
+        "#/call/<x>/neutral",
+        "#/call/a/elsewhere",
         "#/elsewhere",
     ] {
         assert_eq!(Route::read(slip), Route::Units, "{slip}");

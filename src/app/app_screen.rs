@@ -10,6 +10,7 @@ use yew::{Callback, Html, component, html, use_effect_with, use_memo, use_mut_re
 use super::call::{CallScreen, EarlierCalls};
 use super::deed::{Deed, Snapshot};
 use super::hands::Hands;
+use super::neutral::NeutralScreen;
 use super::persist::Keeper;
 use super::platform::listen::Listener;
 use super::platform::{focus, offline, persistence, theme};
@@ -19,6 +20,7 @@ use super::screens::unit::Profile;
 use super::screens::units::Units;
 use super::shell::{Bar, Notices};
 use super::state::{Action, State};
+use super::tracking::TrackingScreen;
 
 /// The state at the start: what is on the shelf, and where the address points.
 fn first_state(keeper: &RefCell<Keeper>) -> State {
@@ -98,6 +100,16 @@ fn title(state: &State) -> String {
             .get(id)
             .and_then(|visit| name(&visit.unit))
             .map(|name| format!("Call, {name}")),
+        Route::Neutral(id) => state
+            .visits
+            .get(id)
+            .and_then(|visit| name(&visit.unit))
+            .map(|name| format!("Neutral, {name}")),
+        Route::Tracking(id) => state
+            .visits
+            .get(id)
+            .and_then(|visit| name(&visit.unit))
+            .map(|name| format!("Tracking, {name}")),
     };
     what.map_or_else(|| "Lowside".to_owned(), |what| format!("{what}: Lowside"))
 }
@@ -205,6 +217,36 @@ fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
                         />
                     }
                 }
+                None => missing("call"),
+            }
+        }
+        Route::Neutral(id) => {
+            let visit = state.visits.get(id);
+            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
+                Some((visit, unit)) => html! {
+                    <NeutralScreen
+                        key={format!("{id}-neutral")}
+                        unit={unit.clone()}
+                        visit={visit.clone()}
+                        prefs={state.settings.units.clone()}
+                        on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
+                    />
+                },
+                None => missing("call"),
+            }
+        }
+        Route::Tracking(id) => {
+            let visit = state.visits.get(id);
+            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
+                Some((visit, unit)) => html! {
+                    <TrackingScreen
+                        key={id.clone()}
+                        unit={unit.clone()}
+                        visit={visit.clone()}
+                        prefs={state.settings.units.clone()}
+                        on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
+                    />
+                },
                 None => missing("call"),
             }
         }

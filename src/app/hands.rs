@@ -145,7 +145,8 @@ impl Hands {
                 }
             }
             Route::Unit(unit) => self.ask_about_last(state, unit),
-            Route::Settings => {}
+            // The neutral and the tracking are worked out on their own screens.
+            Route::Neutral(_) | Route::Tracking(_) | Route::Settings => {}
         }
     }
 

@@ -9,6 +9,7 @@ pub mod deed;
 pub mod engine;
 mod exchange;
 pub mod hands;
+pub mod neutral;
 pub mod parts;
 pub mod persist;
 pub mod platform;
@@ -16,6 +17,7 @@ pub mod route;
 pub mod screens;
 mod shell;
 pub mod state;
+pub mod tracking;
 
 use wasm_bindgen::{JsCast, JsValue};
 

@@ -12,6 +12,10 @@ pub enum Route {
     Unit(String),
     /// One call, by the id of its visit.
     Call(String),
+    /// The neutral of a call's unit, by the id of the visit.
+    Neutral(String),
+    /// Straight tracking, within one call.
+    Tracking(String),
     /// Units of measure, instruments, data.
     Settings,
 }
@@ -24,6 +28,11 @@ impl Route {
             None if path == "settings" => Route::Settings,
             Some(("unit", id)) if is_id(id) => Route::Unit(id.to_owned()),
             Some(("call", id)) if is_id(id) => Route::Call(id.to_owned()),
+            Some(("call", rest)) => match rest.split_once('/') {
+                Some((id, "neutral")) if is_id(id) => Route::Neutral(id.to_owned()),
+                Some((id, "tracking")) if is_id(id) => Route::Tracking(id.to_owned()),
+                _ => Route::Units,
+            },
             _ => Route::Units,
         }
     }
@@ -34,6 +43,8 @@ impl Route {
             Route::Units => "#/units".to_owned(),
             Route::Unit(id) => format!("#/unit/{id}"),
             Route::Call(id) => format!("#/call/{id}"),
+            Route::Neutral(id) => format!("#/call/{id}/neutral"),
+            Route::Tracking(id) => format!("#/call/{id}/tracking"),
             Route::Settings => "#/settings".to_owned(),
         }
     }

@@ -3,7 +3,7 @@
 
 use super::error::{Problem, RecordError, content};
 use super::limits::{self, ENTRIES, LINE_CHARACTERS, TEXT_CHARACTERS};
-use super::{Closing, PutBack, Settings, Visit, is_id};
+use super::{Closing, NeutralSheet, PutBack, Settings, Visit, is_id};
 use crate::quantity::{Kind, Measure};
 use crate::readings::instrument::Instrument;
 use crate::readings::{Condition, EngineSpeed, Lever, Port, Reading, Rigging, Seen};
@@ -11,7 +11,7 @@ use crate::unit::{FIGURES, FigureId, ManualWindow, Unit};
 use serde_json::Value;
 use std::collections::{BTreeMap, BTreeSet};
 
-type Checked = Result<(), RecordError>;
+pub(super) type Checked = Result<(), RecordError>;
 
 /// Takes control characters out of a text of one line: line ends and tabs become spaces. Marks that turn the direction of
 /// writing go too: they can make a text read as another.
@@ -43,7 +43,7 @@ fn clean(text: &mut String, spacing: impl Fn(char) -> char) {
     }
 }
 
-fn line(path: &str, field: &str, text: &mut String) -> Checked {
+pub(super) fn line(path: &str, field: &str, text: &mut String) -> Checked {
     clean_line(text);
     fits(path, field, text, LINE_CHARACTERS)
 }
@@ -106,14 +106,14 @@ fn shortened(text: &str) -> String {
     text.chars().filter(|c| !c.is_control()).take(80).collect()
 }
 
-fn key_text(path: &str, key: &str) -> Checked {
+pub(super) fn key_text(path: &str, key: &str) -> Checked {
     if key.is_empty() || key.chars().any(char::is_control) {
         return Err(content(path, Problem::BadId(shortened(key))));
     }
     fits(path, &shortened(key), key, LINE_CHARACTERS)
 }
 
-fn unknown_fields(path: &str, extra: &BTreeMap<String, Value>) -> Checked {
+pub(super) fn unknown_fields(path: &str, extra: &BTreeMap<String, Value>) -> Checked {
     count(path, extra.len(), ENTRIES)?;
     for (key, value) in extra {
         if !is_shallow(value, limits::DEPTH) {
@@ -318,6 +318,17 @@ pub(super) fn visit(path: &str, visit: &mut Visit) -> Checked {
             prose(&path, &shortened(what), why)?;
         }
     }
+    for (field, sheet) in [
+        ("neutral", &mut visit.neutral),
+        ("neutral_right", &mut visit.neutral_right),
+    ] {
+        if let Some(sheet) = sheet {
+            neutral(&format!("{path}.{field}"), sheet)?;
+        }
+    }
+    if let Some(sheet) = &mut visit.tracking {
+        super::tracking::check(&format!("{path}.tracking"), sheet)?;
+    }
     for (field, closing) in [
         ("closing", &mut visit.closing),
         ("closed", &mut visit.closed),
@@ -327,6 +338,24 @@ pub(super) fn visit(path: &str, visit: &mut Visit) -> Checked {
         }
     }
     unknown_fields(path, &visit.extra)
+}
+
+fn neutral(path: &str, sheet: &mut NeutralSheet) -> Checked {
+    for typed in sheet.fields.values_mut() {
+        line(path, "typed", &mut typed.typed)?;
+    }
+    count(&format!("{path}.series"), sheet.series.len(), ENTRIES)?;
+    for row in &mut sheet.series {
+        line(path, "id", &mut row.id)?;
+        for typed in [&mut row.turns, &mut row.shown, &mut row.time] {
+            line(path, "typed", &mut typed.typed)?;
+        }
+    }
+    count(&format!("{path}.done"), sheet.done.len(), ENTRIES)?;
+    for step in &sheet.done {
+        key_text(&format!("{path}.done"), step)?;
+    }
+    unknown_fields(path, &sheet.extra)
 }
 
 fn closing(path: &str, closing: &mut Closing) -> Checked {

@@ -1,6 +1,7 @@
 //! A visit: one call to one unit, as it is kept.
 
 use crate::readings::{Reading, Rigging, Seen};
+use crate::tracking::TrackingSheet;
 use serde::{Deserialize, Serialize};
 use std::collections::BTreeMap;
 
@@ -55,6 +56,15 @@ pub struct Visit {
     /// What had to be put back and was answered for, by the line as it was read.
     #[serde(skip_serializing_if = "BTreeMap::is_empty")]
     pub put_back: BTreeMap<String, PutBack>,
+    /// The neutral sheet of the left or only path, once something was entered in it.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub neutral: Option<super::NeutralSheet>,
+    /// The same for the right path, where there are two.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub neutral_right: Option<super::NeutralSheet>,
+    /// The tracking sheet of a machine with two sides; none where nobody began one.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub tracking: Option<TrackingSheet>,
     /// What is entered for the closing while the call is still open.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub closing: Option<Closing>,

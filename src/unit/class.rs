@@ -208,6 +208,11 @@ impl MachineClass {
             FigureId::GearRatio => s(c.ratio, 0.5),
             FigureId::RollingCircumference => s(c.rolling, 0.2),
             FigureId::BrakeRelease => s((c.charge * 0.75).min(18.0), 0.15),
+            // Half to all of the motor's torque at relief.
+            FigureId::BrakeTorque => s(
+                0.7 * c.relief * c.motor / (20.0 * core::f64::consts::PI),
+                0.25,
+            ),
             FigureId::FullCurrent => s(1000.0, 0.4),
             FigureId::FullPilot => s(18.0, 0.15),
             FigureId::LoopVolume => s(4.0 * (c.pump / 75.0), 0.35),

@@ -84,6 +84,8 @@ pub enum FigureId {
     RollingCircumference,
     /// Brake release pressure, fully released.
     BrakeRelease,
+    /// Torque that the parking brake holds, at the motor shaft, all motors of the path together.
+    BrakeTorque,
     /// Coil current at full stroke.
     FullCurrent,
     /// Pilot pressure at full stroke.
@@ -216,6 +218,14 @@ pub const FIGURES: &[FigureAsk] = &[
         kind: Kind::Pressure,
         low: 3.0,
         high: 60.0,
+    },
+    FigureAsk {
+        id: FigureId::BrakeTorque,
+        words: "Parking brake torque at the motor shaft",
+        hint: "manual; all motors of the path together",
+        kind: Kind::Torque,
+        low: 5.0,
+        high: 100_000.0,
     },
     FigureAsk {
         id: FigureId::FullCurrent,

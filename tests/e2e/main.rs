@@ -9,9 +9,11 @@
 mod browser;
 mod journeys_call;
 mod journeys_close;
+mod journeys_neutral;
 mod journeys_offline;
 mod journeys_sides;
 mod journeys_start;
+mod journeys_tracking;
 mod pace;
 mod rig;
 mod shots;

@@ -7,7 +7,10 @@ use lowside::readings::{
     Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Path, Place, Port, Reading,
     Rigging, Seen, SideNaming, Stroked,
 };
-use lowside::record::{Answer, Book, Closing, Earlier, PutBack, Settings, Visit, limits};
+use lowside::record::neutral::{AdjusterRow, Field, Typed};
+use lowside::record::{
+    Answer, Book, Closing, Earlier, NeutralSheet, PutBack, Settings, Visit, limits,
+};
 use lowside::unit::*;
 
 /// Seeded chance (SplitMix64; Steele, Lea, Flood 2014).
@@ -255,6 +258,22 @@ impl Dice {
         unit
     }
 
+    fn neutral(&mut self) -> NeutralSheet {
+        let mut sheet = NeutralSheet::default();
+        // Read, and typed so that nobody can read it.
+        let value = self.measure(Kind::Time, (1.0, 600.0));
+        let typed = |typed: String, value| Typed { typed, value };
+        sheet.set(Field::CreepTime, typed(self.text(8), Some(value)));
+        sheet.set(Field::Difference, typed("2x4".into(), None));
+        sheet.done.push("before".into());
+        sheet.series.push(AdjusterRow {
+            id: "p1".into(),
+            turns: typed(self.text(8), None),
+            ..AdjusterRow::default()
+        });
+        sheet
+    }
+
     pub fn visit(&mut self, unit: &str, instruments: &[Instrument]) -> Visit {
         let mut visit = Visit {
             id: self.id('v'),
@@ -314,6 +333,9 @@ impl Dice {
             visit.earlier.insert(id.clone(), vec![earlier]);
             let texts = [("oil".to_owned(), self.text(12))];
             visit.headings.insert(id, texts.into());
+        }
+        if self.one_in(3) {
+            visit.neutral = Some(self.neutral());
         }
         if self.one_in(3) {
             visit.made.push("pull-the-shuttle".into());

@@ -17,11 +17,11 @@
 //! | [`screen`] | all of it together |
 
 mod add_panel;
-mod alerts;
+pub(in crate::app) mod alerts;
 mod bands;
 mod causes;
-mod cautions;
-mod change;
+pub(in crate::app) mod cautions;
+pub(in crate::app) mod change;
 mod close;
 mod condition_editor;
 mod condition_parts;
@@ -29,8 +29,8 @@ mod edits;
 mod entry;
 mod entry_field;
 mod entry_modes;
-mod gate;
-mod gate_panel;
+pub(in crate::app) mod gate;
+pub(in crate::app) mod gate_panel;
 mod group;
 mod hazard;
 mod history;
@@ -48,6 +48,7 @@ mod reading_row;
 mod retake;
 mod rig;
 mod rigging;
+mod rooms;
 mod scale;
 mod screen;
 mod seen_keys;

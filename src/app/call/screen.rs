@@ -17,6 +17,7 @@ use super::next::NextPanel;
 use super::quick_panel::QuickPanel;
 use super::reading_group::{ReadingGroup, gate_id};
 use super::reading_row::row_id;
+use super::rooms;
 use super::seen_panel::SeenPanel;
 use super::side::Sides;
 use super::slices::{use_apart, use_slices};
@@ -27,6 +28,7 @@ use crate::app::parts::{Icon, Shape};
 use crate::app::platform::clock;
 use crate::app::platform::focus;
 use crate::app::platform::timer::Timer;
+use crate::app::route::Route;
 use crate::assessment::Assessment;
 use crate::caution::Stands;
 use crate::quantity::UnitPrefs;
@@ -235,6 +237,9 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     on_change={on_change.clone()}
                     on_reading={on_reading.clone()}
                 />
+                <a class="button is-wide" href={Route::Neutral(visit.id.clone()).href()} data-testid="to-neutral">
+                    { "Set the neutral: creep, null, dead band" }
+                </a>
                 <QuickPanel {taken} {sides} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
                 // In a list of its own: among its neighbours, one more group would have all above it made anew.
@@ -272,6 +277,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     prefs={props.prefs.clone()}
                     on_change={on_change.clone()}
                 />
+                { rooms::links(&visit.id) }
                 <ClosePanel
                     visit={visit.clone()}
                     {sides}

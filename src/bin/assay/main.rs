@@ -4,14 +4,18 @@
 //! with clean notes and with sloppy ones, beside the best possible ranker, which knows the world's own laws and scatter.
 //! Faults are drawn equally often and the base rates are made equal too, so that the scores speak of the readings alone.
 //! `assay pairs [cases]` hides two faults at once; `assay sides [cases] [set]` one on one side of a machine with two paths.
+//! `assay tracking [cases]` hides one mismatch between two sides (see [`tracking`]).
 //! `assay steps [cases] [seed]` counts the minutes to the cause (see [`steps`]).
+//! `assay neutral [cases]` hides a swash offset (see [`neutral`]).
 //! `ASSAY_TELL=1` prints the cases in which a wrong cause was all but certain; `ASSAY_SEED` changes the draw;
 //! `ASSAY_NOTES=clean` leaves the sloppy notes out.
 
 mod judge;
+mod neutral;
 mod score;
 mod steps;
 mod steps_danger;
+mod tracking;
 mod world;
 
 use judge::{Judge, Ranked, Ranker, listed};
@@ -48,9 +52,13 @@ fn main() {
         Some("ranking") | None => ranking(),
         Some("pairs") => pairs(),
         Some("sides") => sides(),
+        Some("neutral") => neutral::neutral(number(2, 400), seed()),
         Some("steps") => steps::steps(number(2, 60), number(3, 2026) as u64),
+        Some("tracking") => tracking::tracking(number(2, 2000), seed()),
         Some(other) => {
-            eprintln!("assay: no such part: {other}. There are: ranking, pairs, sides, steps.")
+            eprintln!(
+                "assay: no such part: {other}. There are: ranking, pairs, sides, steps, tracking, neutral."
+            )
         }
     }
 }

@@ -328,6 +328,8 @@ pub struct Machine {
     own: u64,
     tilt: Vec<(usize, f64)>,
     turbulent: Vec<(usize, f64)>,
+    /// Swash offset in neutral, share of stroke: of the control, or of the servo where its ports are bridged. None: as drawn.
+    pub null: Option<f64>,
 }
 
 impl Machine {
@@ -382,6 +384,7 @@ impl Machine {
             tilt,
             turbulent,
             real,
+            null: None,
         })
     }
 
@@ -417,6 +420,11 @@ impl Machine {
         }
         for f in &self.faults {
             f.bend(&mut theta);
+        }
+        if let Some(offset) = self.null {
+            let bridged = condition.doing == Doing::NeutralBridged;
+            theta[Param::NullControl as usize] = if bridged { 0.0 } else { offset };
+            theta[Param::NullServo as usize] = if bridged { offset } else { 0.0 };
         }
         for path in Path::BOTH {
             if condition.consumers_capped {
