@@ -120,7 +120,7 @@ pub fn AddPanel(props: &AddPanelProps) -> Html {
 
 fn side_options() -> Vec<Opt<Option<Path>>> {
     vec![
-        Opt::new(None, "Left and right", "both"),
+        Opt::new(None, "Both", "both"),
         Opt::new(Some(Path::Left), "Left", "left"),
         Opt::new(Some(Path::Right), "Right", "right"),
     ]

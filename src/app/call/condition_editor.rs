@@ -102,16 +102,16 @@ fn stroked(props: &ConditionEditorProps) -> Html {
     let (now, on_change) = (props.condition, props.on_change.clone());
     let option = |stroked: Stroked| {
         let (words, code) = match stroked {
-            Stroked::Both => ("Both sides", "both"),
-            Stroked::Left => ("Left side alone", "left"),
-            Stroked::Right => ("Right side alone", "right"),
+            Stroked::Both => ("Both", "both"),
+            Stroked::Left => ("Left alone", "left"),
+            Stroked::Right => ("Right alone", "right"),
         };
         Opt::new(stroked, words, code)
     };
     html! {
         <Choice<Stroked>
             name={format!("{}-stroked", props.name)}
-            label="Driven"
+            label="Sides driven"
             options={Stroked::ALL.map(option).to_vec()}
             value={Some(now.stroked)}
             on_change={Callback::from(move |stroked| on_change.emit(Condition { stroked, ..now }))}

@@ -38,8 +38,8 @@ pub const SETS: [QuickSet; 8] = [
     },
     QuickSet {
         id: "speeds",
-        words: "Wheel speeds, left and right",
-        tells: "both ways, full lever, wheels or tracks clear",
+        words: "Speeds, both sides",
+        tells: "left and right, both ways, wheels or tracks clear",
         two_path: true,
         readings: speeds,
     },
