@@ -3,25 +3,29 @@
 #![cfg(not(target_arch = "wasm32"))]
 #![allow(dead_code)] // what only the screen uses
 
-pub use lowside::{assessment, checks, faults, quantity, readings, record};
+pub use lowside::{assessment, checks, faults, quantity, ranking, readings, record, unit};
 
 #[path = "../src/app/call"]
 mod call {
     pub mod bands;
     pub mod group;
+    pub mod pair_line;
     pub mod put_back;
     pub mod quick;
     pub mod scale;
+    pub mod side;
     pub mod words;
 }
 
 use assessment::{Assessment, Cause, Evidence, Trust};
-use call::{bands, group, put_back, quick, scale, words};
+use call::side::{Sides, Wanted};
+use call::{bands, group, pair_line, put_back, quick, scale, side, words};
 use faults::FaultId;
 use proptest::prelude::*;
 use quantity::{Measure, Unit, UnitPrefs};
 use readings::{
-    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Place, Port, Reading,
+    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Path, Place, Port, Reading,
+    Seen, Stroked,
 };
 use record::{Answer, Earlier, PutBack, Visit};
 
@@ -29,7 +33,7 @@ fn reading(id: &str, port: Port, condition: Condition) -> Reading {
     Reading {
         id: id.to_owned(),
         port,
-        path: lowside::readings::Path::Left,
+        path: Path::Left,
         condition,
         rigging: String::new(),
         seen: None,
@@ -38,10 +42,24 @@ fn reading(id: &str, port: Port, condition: Condition) -> Reading {
     }
 }
 
-fn there(readings: &[Reading]) -> impl Iterator<Item = (Port, &Condition)> + Clone {
+fn there(readings: &[Reading]) -> impl Iterator<Item = (Port, Path, &Condition)> + Clone {
     readings
         .iter()
-        .map(|reading| (reading.port, &reading.condition))
+        .map(|reading| (reading.port, reading.path, &reading.condition))
+}
+
+fn sides(paths: unit::Paths) -> Sides {
+    let mut machine = unit::Unit::default();
+    machine.ticks.paths = paths;
+    Sides::of(&machine)
+}
+
+/// A wanted reading as it stands once added.
+fn added(place: usize, wanted: &Wanted) -> Reading {
+    Reading {
+        path: wanted.path,
+        ..reading(&format!("r{place}"), wanted.port, wanted.condition)
+    }
 }
 
 fn driven(direction: Direction) -> Condition {
@@ -147,17 +165,21 @@ fn readings_of_one_condition_stand_under_one_heading() {
 
 #[test]
 fn a_quick_set_adds_what_is_missing_and_nothing_twice() {
-    for set in quick::SETS {
-        let all = set.missing(there(&[]));
+    for (set, paths) in quick::SETS
+        .iter()
+        .flat_map(|set| unit::Paths::ALL.map(|paths| (set, paths)))
+    {
+        let sides = sides(paths);
+        let all = set.missing(sides, there(&[]));
         assert!(!all.is_empty(), "{}", set.id);
         let taken: Vec<Reading> = all
             .iter()
             .enumerate()
-            .map(|(place, (port, condition))| reading(&format!("r{place}"), *port, *condition))
+            .map(|(place, wanted)| added(place, wanted))
             .collect();
-        assert!(set.missing(there(&taken)).is_empty(), "{}", set.id);
+        assert!(set.missing(sides, there(&taken)).is_empty(), "{}", set.id);
         let (_, rest) = taken.split_first().expect("one at least");
-        assert_eq!(set.missing(there(rest)).len(), 1, "{}", set.id);
+        assert_eq!(set.missing(sides, there(rest)).len(), 1, "{}", set.id);
         // A temperature and a speed read off since do not make another reading of it.
         let measured: Vec<Reading> = taken
             .iter()
@@ -169,8 +191,141 @@ fn a_quick_set_adds_what_is_missing_and_nothing_twice() {
                 reading
             })
             .collect();
-        assert!(set.missing(there(&measured)).is_empty(), "{}", set.id);
+        assert!(
+            set.missing(sides, there(&measured)).is_empty(),
+            "{}",
+            set.id
+        );
     }
+}
+
+#[test]
+fn on_two_paths_a_set_reads_left_and_right_in_turn_and_on_one_nothing_has_a_side() {
+    let case = quick::SETS
+        .iter()
+        .find(|set| set.id == "case")
+        .expect("a set");
+    let read = |paths| -> Vec<(Port, Path)> {
+        let wanted = case.missing(sides(paths), there(&[]));
+        wanted.iter().map(|w| (w.port, w.path)).collect()
+    };
+    let pump = (Port::PumpCase, Path::Left);
+    let motors = [
+        (Port::MotorCase, Path::Left),
+        (Port::MotorCase, Path::Right),
+    ];
+    assert_eq!(read(unit::Paths::One), [pump, motors[0]]);
+    // A tandem has one pump case, two pumps apart have two.
+    assert_eq!(
+        read(unit::Paths::TwoSharedCharge),
+        [pump, motors[0], motors[1]]
+    );
+    assert_eq!(read(unit::Paths::TwoOwnCharge).len(), 4);
+
+    let offered = |paths| quick::sets(sides(paths)).any(|set| set.id == "speeds");
+    assert!(offered(unit::Paths::TwoSharedCharge) && !offered(unit::Paths::One));
+    assert!(!sides(unit::Paths::One).any());
+
+    let mut right = reading("r1", Port::MotorCase, Condition::start());
+    right.path = Path::Right;
+    assert_eq!(
+        sides(unit::Paths::TwoSharedCharge).name(&right),
+        "Right motor case pressure"
+    );
+    // What was noted stays when the profile says one path, and is not named any more.
+    assert_eq!(sides(unit::Paths::One).name(&right), "Motor case pressure");
+    assert_eq!(
+        side::named(Some(Path::Left), words::port_short(Port::LoopDifference)),
+        "Left A − B"
+    );
+}
+
+#[test]
+fn a_side_that_stands_still_is_not_read() {
+    let both = sides(unit::Paths::TwoSharedCharge);
+    let alone = Condition {
+        stroked: Stroked::Right,
+        ..driven(Direction::Forward)
+    };
+    assert_eq!(both.paths(Port::Wheel, &alone), [Path::Right]);
+    assert_eq!(both.paths(Port::Charge, &alone), [Path::Left]);
+    // In neutral nothing is stroked at all.
+    let neutral = Condition {
+        doing: Doing::Neutral,
+        ..alone
+    };
+    assert_eq!(both.paths(Port::Wheel, &neutral), Path::BOTH);
+    assert!(group::same(&neutral, &Condition::start()));
+    assert!(!group::same(&alone, &driven(Direction::Forward)));
+}
+
+#[test]
+fn right_stands_under_left_and_is_paired_with_it() {
+    let right = |id: &str, port| Reading {
+        path: Path::Right,
+        ..reading(id, port, Condition::start())
+    };
+    let readings = [
+        reading("r1", Port::MotorCase, Condition::start()),
+        reading("r2", Port::MotorDrain, Condition::start()),
+        right("r3", Port::MotorDrain),
+        right("r4", Port::MotorCase),
+        right("r5", Port::MotorCase),
+        reading("r6", Port::MotorCase, Condition::start()),
+        right("r7", Port::LoopA),
+    ];
+    let groups = group::groups(&readings, &[]);
+    let [only] = groups.as_slice() else {
+        panic!("{groups:?}")
+    };
+    assert_eq!(only.at, [0, 3, 1, 2, 4, 5, 6]);
+    assert_eq!(group::pairs(&readings, &only.at), [(0, 3), (1, 2), (5, 4)]);
+}
+
+#[test]
+fn right_is_told_against_left_with_the_share_where_one_makes_sense() {
+    let at = |port: Port, value: f64| Reading {
+        seen: Measure::from_base(value, port.kind())
+            .ok()
+            .map(|value| Seen::Value { value }),
+        ..reading("r", port, driven(Direction::Forward))
+    };
+    let told = |port, left, right, prefs: &UnitPrefs| {
+        pair_line::words(&at(port, left), &at(port, right), prefs)
+            .map(|words| words.replace('\u{202f}', " "))
+    };
+    let metric = UnitPrefs::metric();
+    let told_metric = |port, left, right| told(port, left, right, &metric).unwrap_or_default();
+    assert_eq!(
+        told_metric(Port::Wheel, 43.2, 41.8),
+        "Right 1.4 rpm lower (−3.2 %)"
+    );
+    assert_eq!(
+        told_metric(Port::MotorDrain, 1.0, 2.5),
+        "Right 1.5 L/min higher (+150.0 %)"
+    );
+    assert_eq!(
+        told_metric(Port::Wheel, 43.2, 43.2),
+        "Left and right read the same"
+    );
+    // No share of nothing, none of what runs through nought.
+    assert_eq!(told_metric(Port::Wheel, 0.0, 2.0), "Right 2.0 rpm higher");
+    assert_eq!(
+        told_metric(Port::MotorCase, 1.0, 1.8),
+        "Right 0.80 bar higher"
+    );
+    assert_eq!(
+        told(Port::LoopA, 200.0, 190.0, &UnitPrefs::us()).as_deref(),
+        Some("Right 145 psi lower (−5.0 %)")
+    );
+    let nothing = Reading {
+        seen: Some(Seen::Nothing),
+        ..at(Port::Wheel, 1.0)
+    };
+    assert_eq!(
+        pair_line::words(&at(Port::Wheel, 43.0), &nothing, &metric),
+        None
+    );
 }
 
 #[test]
@@ -392,6 +547,32 @@ fn what_was_opened_is_asked_once_however_many_checks_opened_it() {
         visit.put_back.insert(line.clone(), answer);
         assert_eq!(put_back::open(&visit), open);
     }
+}
+
+#[test]
+fn a_line_to_put_back_names_the_sides_that_were_opened() {
+    let both = sides(unit::Paths::TwoSharedCharge);
+    let left = read(Port::MotorCase, Condition::start(), 1.0);
+    let right = Reading {
+        path: Path::Right,
+        id: "right".to_owned(),
+        ..left.clone()
+    };
+    let told = |readings: Vec<Reading>, sides| {
+        let visit = Visit {
+            readings,
+            ..Visit::default()
+        };
+        let lines = put_back::lines(&visit);
+        put_back::with_sides(lines[0].1[0], &visit, sides)
+    };
+    let title = checks::for_reading(&left.condition, left.port).map_or("", |check| check.title);
+    assert_eq!(told(vec![right.clone()], both), format!("{title}, right"));
+    assert_eq!(
+        told(vec![left.clone(), right], both),
+        format!("{title}, left and right")
+    );
+    assert_eq!(told(vec![left], sides(unit::Paths::One)), title);
 }
 
 #[test]

@@ -9,6 +9,8 @@ mod end;
 mod next;
 #[path = "web_call/screen.rs"]
 mod screen;
+#[path = "web_call/sides.rs"]
+mod sides;
 
 use lowside::readings::{Doing, Port, Seen};
 use screen::{Screen, bar};

@@ -11,10 +11,11 @@ use super::engine::client::{Engine, Told};
 use super::persist::Keeper;
 use super::platform::{clock, ids, offline, persistence, timer::Timer};
 use super::route::Route;
+use super::screens::unit::usual_paths;
 use super::state::{About, Action, Question, Save, State, Written};
 use crate::record::{IdOf, Visit};
 use crate::store::RecordKey;
-use crate::unit::{MachineClass, Unit};
+use crate::unit::{MachineClass, Ticks, Unit};
 
 /// From the last edit to the write.
 const SAVE_AFTER_MS: i32 = 300;
@@ -230,6 +231,10 @@ impl Hands {
             id: ids::fresh(IdOf::Unit),
             name: free_name(name, &self.state()),
             class,
+            ticks: Ticks {
+                paths: usual_paths(class),
+                ..Ticks::default()
+            },
             ..Unit::default()
         };
         let id = unit.id.clone();

@@ -3,7 +3,7 @@
 use crate::screen::{Screen, advised, bar};
 use lowside::next::Advice;
 use lowside::quantity::{Kind, Measure};
-use lowside::readings::{Condition, EngineSpeed, Port, Reading, Seen};
+use lowside::readings::{Condition, EngineSpeed, Path, Port, Reading, Seen};
 use lowside::record::Visit;
 use wasm_bindgen_test::wasm_bindgen_test;
 use web_sys::{HtmlElement, HtmlInputElement};
@@ -132,6 +132,7 @@ async fn the_same_reading_of_an_earlier_call_stands_beside_the_field() {
         readings: vec![Reading {
             id: "r1".to_owned(),
             port: Port::Charge,
+            path: Path::Left,
             condition: Condition::start(),
             rigging: String::new(),
             seen: Measure::from_base(21.5, Kind::Pressure)

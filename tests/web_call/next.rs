@@ -3,7 +3,7 @@
 use crate::screen::{Screen, advised};
 use lowside::faults::FaultId;
 use lowside::next::{Advice, Foretold, Offer, RepairOffer, Would};
-use lowside::readings::{Condition, Doing, Port};
+use lowside::readings::{Condition, Doing, Path, Port};
 use lowside::record::Answer;
 use wasm_bindgen_test::wasm_bindgen_test;
 
@@ -21,6 +21,7 @@ fn offer(id: &str, title: &str, hazard: u8) -> Offer {
         high,
     };
     let foretold = |condition: Condition| Foretold {
+        path: Path::Left,
         port: Port::Charge,
         condition,
         would: vec![
@@ -123,6 +124,7 @@ async fn stop_checking_and_the_repair_say_what_proves_and_what_must_come_back() 
         stop: Some("No check that is left can change the order.".to_owned()),
         repair: Some(RepairOffer {
             id: FaultId::PumpWorn,
+            path: None,
             repair: "Change the pump.".to_owned(),
             minutes: 240.0,
             probability: 0.62,

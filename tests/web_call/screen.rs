@@ -12,7 +12,7 @@ use lowside::quantity::UnitPrefs;
 use lowside::readings::Seen;
 use lowside::readings::instrument::{Instrument, usual_instruments};
 use lowside::record::Visit;
-use lowside::unit::Unit;
+use lowside::unit::{Paths, Unit};
 use web_sys::wasm_bindgen::JsCast;
 use web_sys::{Element, HtmlElement, HtmlInputElement, HtmlSelectElement};
 use yew::{Callback, Html, Properties, component, html, use_state};
@@ -25,6 +25,7 @@ struct HolderProps {
     last: Kept,
     assessment: Option<Rc<Assessment>>,
     earlier: EarlierCalls,
+    unit: Rc<Unit>,
 }
 
 /// [`Last`], equal to itself alone.
@@ -55,7 +56,7 @@ fn Holder(props: &HolderProps) -> Html {
     };
     html! {
         <CallScreen
-            unit={Rc::new(Unit::default())}
+            unit={props.unit.clone()}
             visit={(*visit).clone()}
             instruments={(*instruments).clone()}
             prefs={UnitPrefs::metric()}
@@ -86,6 +87,22 @@ impl Screen {
         visit: Visit,
         earlier: Vec<Visit>,
     ) -> Screen {
+        Self::open_on(Unit::default(), assessment, visit, earlier).await
+    }
+
+    /// The same on a machine with left and right on one charge pump.
+    pub async fn open_on_two_paths(assessment: Option<Assessment>, visit: Visit) -> Screen {
+        let mut unit = Unit::default();
+        unit.ticks.paths = Paths::TwoSharedCharge;
+        Self::open_on(unit, assessment, visit, Vec::new()).await
+    }
+
+    async fn open_on(
+        unit: Unit,
+        assessment: Option<Assessment>,
+        visit: Visit,
+        earlier: Vec<Visit>,
+    ) -> Screen {
         let document = web_sys::window()
             .and_then(|window| window.document())
             .expect("a page");
@@ -101,6 +118,7 @@ impl Screen {
             last: Kept(last.clone()),
             assessment: assessment.map(Rc::new),
             earlier: EarlierCalls(earlier.into_iter().map(Rc::new).collect()),
+            unit: Rc::new(unit),
         };
         yew::Renderer::<Holder>::with_root_and_props(root.clone(), props).render();
         let screen = Screen { root, last };
@@ -198,6 +216,7 @@ pub fn cause(id: FaultId, title: &str, probability: f64, weight: Option<f64>) ->
     });
     Cause {
         pair: None,
+        paths: Vec::new(),
         ids: vec![id],
         title: title.to_owned(),
         probability,

@@ -2,10 +2,11 @@
 
 use super::change::Change;
 use super::condition_editor::ConditionEditor;
+use super::side::{Sides, Wanted};
 use super::words;
-use crate::app::parts::{Icon, Shape};
+use crate::app::parts::{Choice, Icon, Opt, Shape};
 use crate::quantity::{Kind, UnitPrefs};
-use crate::readings::{Condition, Port};
+use crate::readings::{Condition, Path, Port};
 use crate::unit::Ticks;
 use yew::{Callback, Html, MouseEvent, Properties, component, html, use_state};
 
@@ -14,6 +15,8 @@ use yew::{Callback, Html, MouseEvent, Properties, component, html, use_state};
 pub struct AddPanelProps {
     /// What the unit has: which ports are offered.
     pub ticks: Ticks,
+    /// Ports that are there twice.
+    pub sides: Sides,
     /// Condition of the last reading.
     pub last: Condition,
     /// Units.
@@ -39,12 +42,14 @@ pub fn AddPanel(props: &AddPanelProps) -> Html {
     let is_open = use_state(|| false);
     let own = use_state(|| None::<Condition>);
     let edits = use_state(|| false);
+    let side = use_state(|| None::<Path>);
     let condition = own.unwrap_or(props.last);
     let toggle = |state: &yew::UseStateHandle<bool>| {
         let state = state.clone();
         Callback::from(move |_: MouseEvent| state.set(!*state))
     };
     let on_port = {
+        let (sides, side) = (props.sides, *side);
         let (is_open, own, edits, on_change) = (
             is_open.clone(),
             own.clone(),
@@ -55,12 +60,16 @@ pub fn AddPanel(props: &AddPanelProps) -> Html {
             is_open.set(false);
             own.set(None);
             edits.set(false);
-            on_change.emit(Change::Add(vec![(port, condition)]));
+            on_change.emit(Change::Add(wanted(sides, side, port, condition)));
         })
     };
     let on_condition = {
         let own = own.clone();
         Callback::from(move |condition: Condition| own.set(Some(condition)))
+    };
+    let on_side = {
+        let side = side.clone();
+        Callback::from(move |chosen: Option<Path>| side.set(chosen))
     };
     html! {
         <section class="panel add" aria-label="Add a reading" id="add" tabindex="-1">
@@ -92,11 +101,40 @@ pub fn AddPanel(props: &AddPanelProps) -> Html {
                     </button>
                 </div>
                 if *edits {
-                    <ConditionEditor name="add" {condition} prefs={props.prefs.clone()} on_change={on_condition} />
+                    <ConditionEditor name="add" {condition} sides={props.sides} prefs={props.prefs.clone()} on_change={on_condition} />
+                }
+                if props.sides.any() {
+                    <Choice<Option<Path>>
+                        name="add-side"
+                        label="Side"
+                        options={side_options()}
+                        value={Some(*side)}
+                        on_change={on_side}
+                    />
                 }
                 { for GROUPS.iter().map(|(title, kinds)| port_group(title, kinds, &props.ticks, &on_port)) }
             }
         </section>
+    }
+}
+
+fn side_options() -> Vec<Opt<Option<Path>>> {
+    vec![
+        Opt::new(None, "Both", "both"),
+        Opt::new(Some(Path::Left), "Left", "left"),
+        Opt::new(Some(Path::Right), "Right", "right"),
+    ]
+}
+
+/// The readings of a touch: both sides, or the one asked for; one where the port is there once.
+fn wanted(sides: Sides, side: Option<Path>, port: Port, condition: Condition) -> Vec<Wanted> {
+    match side.filter(|_| sides.has(port)) {
+        Some(path) => vec![Wanted {
+            path,
+            port,
+            condition,
+        }],
+        None => sides.wanted(port, condition).collect(),
     }
 }
 

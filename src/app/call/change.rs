@@ -3,7 +3,9 @@
 use super::gate;
 use super::group::settled;
 use super::put_back;
-use crate::readings::{Condition, Port, Reading, Rigging, Seen, Path};
+use super::rigging::{rig, rigging_on, swap};
+use super::side::Wanted;
+use crate::readings::{Condition, Path, Port, Reading, Seen};
 use crate::record::{Answer, Closing, Earlier, PutBack, Visit};
 
 /// One edit.
@@ -18,7 +20,7 @@ pub enum Change {
     /// An observation; none takes the answer back.
     Observe(String, Option<Answer>),
     /// Readings added, empty, in this order.
-    Add(Vec<(Port, Condition)>),
+    Add(Vec<Wanted>),
     /// A reading taken out, by id.
     Remove(String),
     /// What was seen, with the text as typed.
@@ -30,6 +32,8 @@ pub enum Change {
         /// What it means; none while it cannot be read.
         seen: Option<Seen>,
     },
+    /// On which side a reading was taken: id and path.
+    Side(String, Path),
     /// Note of a reading: id and text.
     Note(String, String),
     /// New condition for these readings.
@@ -38,6 +42,8 @@ pub enum Change {
     Rig {
         /// Port.
         port: Port,
+        /// Path whose readings it was taken with.
+        path: Path,
         /// Instrument id.
         instrument: String,
         /// First reading taken with it, where the gauge was swapped; none where it corrects the whole port.
@@ -80,6 +86,7 @@ impl Change {
             Change::Add(_) => String::from("reading added"),
             Change::Remove(_) => String::from("reading removed"),
             Change::Entry { .. } => String::from("value"),
+            Change::Side(_, path) => format!("side, now {}", path.words()),
             Change::Note(..) => String::from("note"),
             Change::Condition(..) => String::from("condition"),
             Change::Rig { .. } => String::from("gauge"),
@@ -141,8 +148,8 @@ pub fn apply(visit: &Visit, change: &Change) -> Visit {
             next.observations.remove(id);
         }
         Change::Add(added) => {
-            for (port, condition) in added {
-                add(&mut next, *port, *condition);
+            for wanted in added {
+                add(&mut next, *wanted);
             }
         }
         Change::Remove(id) => {
@@ -155,6 +162,11 @@ pub fn apply(visit: &Visit, change: &Change) -> Visit {
             if let Some(reading) = find(&mut next, id) {
                 reading.typed.clone_from(typed);
                 reading.seen.clone_from(seen);
+            }
+        }
+        Change::Side(id, path) => {
+            if let Some(reading) = find(&mut next, id) {
+                reading.path = *path;
             }
         }
         Change::Note(id, text) => {
@@ -176,9 +188,16 @@ pub fn apply(visit: &Visit, change: &Change) -> Visit {
         }
         Change::Rig {
             port,
+            path,
             instrument,
-            from,
-        } => rig(&mut next, *port, instrument, from.as_deref()),
+            from: Some(first),
+        } => swap(&mut next, *port, *path, instrument, first),
+        Change::Rig {
+            port,
+            path,
+            instrument,
+            from: None,
+        } => rig(&mut next, *port, *path, instrument),
         Change::Precautions(key, facts) if facts.is_empty() => {
             next.precautions.remove(key);
         }
@@ -253,7 +272,7 @@ fn find<'a>(visit: &'a mut Visit, id: &str) -> Option<&'a mut Reading> {
 }
 
 /// The next free id with this letter: one above the highest taken, so that an undone id is not met again in a file.
-fn next_id<'a>(letter: char, taken: impl Iterator<Item = &'a str>) -> String {
+pub fn next_id<'a>(letter: char, taken: impl Iterator<Item = &'a str>) -> String {
     let highest = taken
         .filter_map(|id| {
             id.strip_prefix(letter)
@@ -265,93 +284,22 @@ fn next_id<'a>(letter: char, taken: impl Iterator<Item = &'a str>) -> String {
 }
 
 /// Adds an empty reading, on the instrument that stands on its port already.
-fn add(visit: &mut Visit, port: Port, condition: Condition) {
+fn add(visit: &mut Visit, wanted: Wanted) {
     let id = next_id(
         'r',
         visit.readings.iter().map(|reading| reading.id.as_str()),
     );
-    let rigging = rigging_on(visit, port)
+    let rigging = rigging_on(visit, wanted.port, wanted.path)
         .map(|rigging| rigging.id.clone())
         .unwrap_or_default();
     visit.readings.push(Reading {
         id,
-        port,
-        path: Path::Left,
-        condition: settled(condition),
+        port: wanted.port,
+        path: wanted.path,
+        condition: settled(wanted.condition),
         rigging,
         seen: None,
         typed: String::new(),
         note: String::new(),
-    });
-}
-
-/// The rigging that stands on a port now: the last one put there.
-pub fn rigging_on(visit: &Visit, port: Port) -> Option<&Rigging> {
-    visit
-        .riggings
-        .iter()
-        .rev()
-        .find(|rigging| rigging.port == port)
-}
-
-/// Puts an instrument on a port: for all its readings, or from one reading on where the gauge was swapped.
-fn rig(visit: &mut Visit, port: Port, instrument: &str, from: Option<&str>) {
-    if let Some(first) = from {
-        let id = next_id(
-            'g',
-            visit.riggings.iter().map(|rigging| rigging.id.as_str()),
-        );
-        visit.riggings.push(Rigging {
-            id: id.clone(),
-            instrument: instrument.to_owned(),
-            port,
-        });
-        let later = visit
-            .readings
-            .iter_mut()
-            .skip_while(|reading| reading.id != first);
-        for reading in later.filter(|reading| reading.port == port) {
-            reading.rigging.clone_from(&id);
-        }
-    } else {
-        let id = match visit
-            .riggings
-            .iter_mut()
-            .rev()
-            .find(|rigging| rigging.port == port)
-        {
-            Some(standing) => {
-                instrument.clone_into(&mut standing.instrument);
-                standing.id.clone()
-            }
-            None => {
-                let id = next_id(
-                    'g',
-                    visit.riggings.iter().map(|rigging| rigging.id.as_str()),
-                );
-                visit.riggings.push(Rigging {
-                    id: id.clone(),
-                    instrument: instrument.to_owned(),
-                    port,
-                });
-                id
-            }
-        };
-        let unsaid = visit
-            .readings
-            .iter_mut()
-            .filter(|r| r.port == port && r.rigging.is_empty());
-        for reading in unsaid {
-            reading.rigging.clone_from(&id);
-        }
-    }
-    let used: Vec<String> = visit
-        .readings
-        .iter()
-        .map(|reading| reading.rigging.clone())
-        .collect();
-    let newest = rigging_on(visit, port).map(|rigging| rigging.id.clone());
-    visit.riggings.retain(|rigging| {
-        used.contains(&rigging.id) || rigging.port != port || Some(&rigging.id) == newest.as_ref()
     });
 }

@@ -1,9 +1,10 @@
 //! What the machine was doing: one form for all readings under a heading, or for the next one.
 
 use super::condition_parts::{Typed, engine, lever, oil};
+use super::side::Sides;
 use crate::app::parts::{Choice, Entry, Opt, Select};
 use crate::quantity::UnitPrefs;
-use crate::readings::{Condition, Direction, Doing};
+use crate::readings::{Condition, Direction, Doing, Stroked};
 use std::collections::BTreeMap;
 use yew::{Callback, Event, Html, Properties, TargetCast, component, html, use_state};
 
@@ -14,6 +15,9 @@ pub struct ConditionEditorProps {
     pub name: String,
     /// The condition.
     pub condition: Condition,
+    /// Ports that are there twice: asks which side is stroked.
+    #[prop_or_default]
+    pub sides: Sides,
     /// Units.
     pub prefs: UnitPrefs,
     /// It was changed.
@@ -70,6 +74,9 @@ pub fn ConditionEditor(props: &ConditionEditorProps) -> Html {
             if !now.doing.is_neutral() {
                 { direction(props) }
                 { lever(props, &typed) }
+                if props.sides.any() {
+                    { stroked(props) }
+                }
             }
             { engine(props, &typed) }
             { oil(props, &typed) }
@@ -87,6 +94,27 @@ fn direction(props: &ConditionEditorProps) -> Html {
             options={vec![Opt::new(Direction::Forward, "Forward", "forward"), Opt::new(Direction::Reverse, "Reverse", "reverse")]}
             value={Some(now.direction)}
             on_change={Callback::from(move |direction| on_change.emit(Condition { direction, ..now }))}
+        />
+    }
+}
+
+fn stroked(props: &ConditionEditorProps) -> Html {
+    let (now, on_change) = (props.condition, props.on_change.clone());
+    let option = |stroked: Stroked| {
+        let (words, code) = match stroked {
+            Stroked::Both => ("Both", "both"),
+            Stroked::Left => ("Left alone", "left"),
+            Stroked::Right => ("Right alone", "right"),
+        };
+        Opt::new(stroked, words, code)
+    };
+    html! {
+        <Choice<Stroked>
+            name={format!("{}-stroked", props.name)}
+            label="Sides driven"
+            options={Stroked::ALL.map(option).to_vec()}
+            value={Some(now.stroked)}
+            on_change={Callback::from(move |stroked| on_change.emit(Condition { stroked, ..now }))}
         />
     }
 }

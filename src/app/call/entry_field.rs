@@ -8,13 +8,17 @@ use crate::app::parts::Entry;
 use crate::quantity::{Kind, UnitPrefs};
 use crate::readings::instrument::Instrument;
 use crate::readings::{Port, Reading};
-use yew::{Callback, Html, MouseEvent, Properties, component, html, use_state};
+use yew::{AttrValue, Callback, Html, MouseEvent, Properties, component, html, use_state};
 
 /// Properties of [`EntryField`].
 #[derive(Clone, PartialEq, Properties)]
 pub struct EntryFieldProps {
     /// The reading.
     pub reading: Reading,
+    /// What is read, with its side.
+    pub name: AttrValue,
+    /// The same in a word or two.
+    pub short: AttrValue,
     /// Place in the list, for ids and test ids.
     pub number: usize,
     /// Instrument on the port, where one is said.
@@ -100,7 +104,7 @@ fn keys(props: &EntryFieldProps, mode: Mode, say: &Callback<Said>) -> Html {
         _ => true,
     };
     html! {
-        <div class="keys" role="group" aria-label={format!("{}: not a plain value", props.reading.port.words())}>
+        <div class="keys" role="group" aria-label={format!("{}: not a plain value", props.name)}>
             { for KEYS.iter().filter(|(key, ..)| fits(*key)).map(|(key, code, words)| {
                 let is_on = *key == mode;
                 let (say, key, prefs) = (say.clone(), *key, props.prefs.clone());

@@ -59,7 +59,7 @@ pub fn value(props: &EntryFieldProps, say: &Callback<Said>) -> Html {
         props,
         FieldOf {
             id: field_id(&props.reading.id),
-            label: String::from(port.words()),
+            label: props.name.to_string(),
             typed: props.reading.typed.clone(),
             held,
             testid: format!("value-{}", props.number),
@@ -79,7 +79,7 @@ pub fn swing(props: &EntryFieldProps, say: &Callback<Said>) -> Html {
         <div class="entry-pair">
             { field(props, FieldOf {
                 id: field_id(&props.reading.id),
-                label: format!("{}, lowest", words::port_short(port)),
+                label: format!("{}, lowest", props.short),
                 typed: low.typed,
                 held: low.value,
                 testid: format!("value-{}", props.number),
@@ -145,10 +145,7 @@ pub fn off_scale(props: &EntryFieldProps, say: &Callback<Said>) -> Html {
         props,
         FieldOf {
             id: field_id(&props.reading.id),
-            label: format!(
-                "{}: over the top of the scale, which ends at",
-                words::port_short(props.reading.port)
-            ),
+            label: format!("{}: over the top of the scale, which ends at", props.short),
             typed: entry::off_scale_typed(&props.reading).to_owned(),
             held,
             testid: format!("value-{}", props.number),
@@ -200,7 +197,7 @@ pub fn share(props: &EntryFieldProps, say: &Callback<Said>, of: &UseStateHandle<
         <div class="entry-pair">
             <MeasureField
                 id={field_id(&props.reading.id)}
-                label={format!("{}, share", words::port_short(props.reading.port))}
+                label={format!("{}, share", props.short)}
                 {unit}
                 typed={AttrValue::from(typed)}
                 value={kept.value}
@@ -232,7 +229,7 @@ pub fn not_possible(props: &EntryFieldProps, say: &Callback<Said>) -> Html {
     html! {
         <TextField
             id={field_id(&props.reading.id)}
-            label={format!("{} not possible, because", words::port_short(props.reading.port))}
+            label={format!("{} not possible, because", props.short)}
             value={why}
             on_input={say.reform(|why: String| entry::not_possible(&why))}
             maxlength={300}

@@ -1,6 +1,7 @@
 //! The same reading on the unit's earlier calls: shown beside the field, with what today's is of it.
 
 use super::quick::alike;
+use super::side::Sides;
 use super::words;
 use crate::app::platform::clock;
 use crate::quantity::{Kind, UnitPrefs};
@@ -36,11 +37,13 @@ pub struct LastTime {
 
 impl EarlierCalls {
     /// The latest earlier call on which this was read.
-    pub fn of(&self, reading: &Reading) -> Option<LastTime> {
+    pub fn of(&self, reading: &Reading, sides: Sides) -> Option<LastTime> {
+        let side = |reading: &Reading| sides.side(reading.port, reading.path);
         self.0.iter().find_map(|visit| {
             let same = visit.readings.iter().rev().find_map(|other| {
-                let is_same =
-                    other.port == reading.port && alike(&other.condition, &reading.condition);
+                let is_same = other.port == reading.port
+                    && side(other) == side(reading)
+                    && alike(&other.condition, &reading.condition);
                 let seen = other.seen.as_ref().filter(|_| is_same)?;
                 matches!(
                     seen,

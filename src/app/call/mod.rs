@@ -5,6 +5,7 @@
 //! | [`change`], [`history`] | every edit of a visit, and the way back |
 //! | [`entry`] | what is typed in a reading's field, and what was seen |
 //! | [`group`], [`quick`] | readings by condition; the usual sets |
+//! | [`side`], [`pair_line`] | left and right on a machine with two drive paths |
 //! | [`scale`], [`mark`], [`words`] | how windows, standings and chances are shown |
 //! | [`close`] | the end of the call |
 //! | [`put_back`] | what has to be put back before a call is closed |
@@ -38,6 +39,7 @@ mod map;
 mod mark;
 mod new_gauge;
 mod next;
+mod pair_line;
 mod put_back;
 mod quick;
 mod quick_panel;
@@ -45,11 +47,13 @@ mod reading_group;
 mod reading_row;
 mod retake;
 mod rig;
+mod rigging;
 mod rooms;
 mod scale;
 mod screen;
 mod seen_keys;
 mod seen_panel;
+mod side;
 mod slices;
 mod steady;
 mod taken;

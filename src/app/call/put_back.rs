@@ -1,8 +1,9 @@
 //! What was opened, bridged, capped or plugged and has to be put back before the call is closed. A line is asked as long as a
 //! check that asks for it was made; what is answered for lapses when the same thing is opened again.
 
+use super::side::Sides;
 use crate::checks::{self, Check};
-use crate::readings::{Reading, Seen};
+use crate::readings::{Path, Reading, Seen};
 use crate::record::{Answer, PutBack, Visit};
 
 /// Checks made on this visit: by a reading taken, by an answer found, or marked.
@@ -52,17 +53,35 @@ fn is_taken(visit: &Visit, reading: &Reading) -> bool {
 }
 
 /// The lines to answer for, each once, with the checks that ask for it.
-pub fn lines(visit: &Visit) -> Vec<(&'static str, Vec<&'static str>)> {
-    let mut lines: Vec<(&'static str, Vec<&'static str>)> = Vec::new();
+pub fn lines(visit: &Visit) -> Vec<(&'static str, Vec<&'static Check>)> {
+    let mut lines: Vec<(&'static str, Vec<&'static Check>)> = Vec::new();
     for check in made(visit) {
         for line in check.put_back {
             match lines.iter_mut().find(|(other, _)| other == line) {
-                Some((_, of)) => of.push(check.title),
-                None => lines.push((line, vec![check.title])),
+                Some((_, of)) => of.push(check),
+                None => lines.push((line, vec![check])),
             }
         }
     }
     lines
+}
+
+/// A check with the sides that it was made on, where its ports are there twice: what is put back on one side only is half done.
+pub fn with_sides(check: &Check, visit: &Visit, sides: Sides) -> String {
+    let on = |path: Path| {
+        let mut taken = visit.readings.iter().filter(|r| is_taken(visit, r));
+        taken.any(|r| {
+            sides.side(r.port, r.path) == Some(path)
+                && checks::for_reading(&r.condition, r.port).is_some_and(|of| of.id == check.id)
+        })
+    };
+    let side = match (on(Path::Left), on(Path::Right)) {
+        (true, true) => ", left and right",
+        (true, false) => ", left",
+        (false, true) => ", right",
+        (false, false) => "",
+    };
+    format!("{}{side}", check.title)
 }
 
 /// Lines that nobody has answered for yet.

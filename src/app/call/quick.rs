@@ -2,7 +2,8 @@
 //! practice: charge first and on one gauge, loop pressure last and never beyond the stroke that tells.
 
 use super::group::same;
-use crate::readings::{Condition, Direction, Doing, EngineSpeed, Lever, Port};
+use super::side::{Sides, Wanted};
+use crate::readings::{Condition, Direction, Doing, EngineSpeed, Lever, Path, Port};
 
 /// A set of readings that belong together.
 #[derive(Clone, Copy, Debug)]
@@ -13,71 +14,99 @@ pub struct QuickSet {
     pub words: &'static str,
     /// What it tells, in a few words.
     pub tells: &'static str,
-    /// The readings, in order.
+    /// Only for a machine with two paths.
+    pub two_path: bool,
+    /// The readings, in order; each is taken left and right where its port is there twice.
     pub readings: fn() -> Vec<(Port, Condition)>,
 }
 
 /// Every set, in the order of a road call.
-pub const SETS: [QuickSet; 7] = [
+pub const SETS: [QuickSet; 8] = [
     QuickSet {
         id: "charge-neutral",
         words: "Charge, neutral",
         tells: "low and high idle on one gauge",
+        two_path: false,
         readings: charge_neutral,
     },
     QuickSet {
         id: "charge-drive",
         words: "Charge, light drive",
         tells: "both ways, half lever, wheels clear",
+        two_path: false,
         readings: charge_drive,
+    },
+    QuickSet {
+        id: "speeds",
+        words: "Speeds, both sides",
+        tells: "left and right, both ways, wheels or tracks clear",
+        two_path: true,
+        readings: speeds,
     },
     QuickSet {
         id: "knee",
         words: "Knee",
         tells: "engine speed at which charge stops rising",
+        two_path: false,
         readings: knee,
     },
     QuickSet {
         id: "case",
         words: "Case pressures",
         tells: "pump and motor case, high idle",
+        two_path: false,
         readings: case,
     },
     QuickSet {
         id: "motor-drain",
         words: "Motor drain, neutral",
         tells: "jug and stopwatch, high idle",
+        two_path: false,
         readings: motor_drain,
     },
     QuickSet {
         id: "held-forward",
         words: "Held, forward",
         tells: "build-up on side A: 5, 10, 20, 40 % lever",
+        two_path: false,
         readings: held_forward,
     },
     QuickSet {
         id: "held-reverse",
         words: "Held, reverse",
         tells: "build-up on side B: 5, 10, 20, 40 % lever",
+        two_path: false,
         readings: held_reverse,
     },
 ];
 
+/// The sets for a machine, in order.
+pub fn sets(sides: Sides) -> impl Iterator<Item = &'static QuickSet> {
+    SETS.iter().filter(move |set| sides.any() || !set.two_path)
+}
+
 impl QuickSet {
     /// The readings of the set that are not there yet. Engine speed and temperature typed since do not make another
-    /// reading of it: what the machine does, direction, lever and the idle it was set to do.
+    /// reading of it: what the machine does, direction, lever, the idle it was set to and the side do.
     pub fn missing<'a>(
         &self,
-        there: impl Iterator<Item = (Port, &'a Condition)> + Clone,
-    ) -> Vec<(Port, Condition)> {
+        sides: Sides,
+        there: impl Iterator<Item = (Port, Path, &'a Condition)> + Clone,
+    ) -> Vec<Wanted> {
         (self.readings)()
             .into_iter()
-            .filter(|(port, condition)| {
-                !there
-                    .clone()
-                    .any(|(other, at)| other == *port && alike(at, condition))
+            .flat_map(|(port, condition)| sides.wanted(port, condition))
+            .filter(|wanted| {
+                !there.clone().any(|(port, path, at)| {
+                    (port, path) == (wanted.port, wanted.path) && alike(at, &wanted.condition)
+                })
             })
             .collect()
+    }
+
+    /// True where the set reads a port on either side.
+    pub fn has_sides(&self, sides: Sides) -> bool {
+        (self.readings)().iter().any(|(port, _)| sides.has(*port))
     }
 }
 
@@ -120,6 +149,17 @@ fn charge_drive() -> Vec<(Port, Condition)> {
             (
                 Port::Charge,
                 driven(Doing::Free, way, Lever::Half, EngineSpeed::HighIdle),
+            )
+        })
+        .to_vec()
+}
+
+fn speeds() -> Vec<(Port, Condition)> {
+    [Direction::Forward, Direction::Reverse]
+        .map(|way| {
+            (
+                Port::Wheel,
+                driven(Doing::Free, way, Lever::Full, EngineSpeed::HighIdle),
             )
         })
         .to_vec()

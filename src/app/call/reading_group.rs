@@ -7,11 +7,15 @@ use super::condition_parts::FIELDS;
 use super::entry;
 use super::gate::{self, Gate};
 use super::gate_panel::{GatePanel, advice};
+use super::group::pairs;
 use super::last_time::EarlierCalls;
+use super::pair_line;
 use super::reading_row::{ReadingRow, row_id};
 use super::rig;
+use super::side::Sides;
 use super::steady::Answer;
 use super::words;
+use crate::app::parts::{Caution, Grade};
 use crate::app::platform::clock;
 use crate::caution::Stands;
 use crate::quantity::UnitPrefs;
@@ -43,6 +47,8 @@ pub struct ReadingGroupProps {
     pub told: Vec<&'static str>,
     /// Places whose cautions stand further up.
     pub told_places: Vec<Stands>,
+    /// Ports that are there twice.
+    pub sides: Sides,
     /// Port touched on the drawing.
     pub chosen: Option<Port>,
     /// Unit.
@@ -129,6 +135,11 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
         .assessment
         .as_deref()
         .and_then(|assessment| assessment.hold);
+    let pairs: Vec<(usize, usize)> = if props.sides.any() {
+        pairs(&props.visit.readings, &props.at)
+    } else {
+        Vec::new()
+    };
     // One flat list in which every item has its key: what is there already stays as it is when a reading is added.
     let mut rows: Vec<Html> = Vec::with_capacity(readings.len());
     for (place, reading) in &readings {
@@ -139,9 +150,11 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                 key={row_id(&reading.id)}
                 reading={(*reading).clone()}
                 number={*place}
+                sides={props.sides}
+                lacks_other_side={lacks_other_side(props, *place, &pairs)}
                 window={windows.iter().find(|window| window.reading == reading.id).cloned()}
                 retake={retakes.iter().find(|(id, _)| *id == reading.id).map(|(_, why)| why.clone())}
-                last={props.earlier.of(reading)}
+                last={props.earlier.of(reading, props.sides)}
                 closed={gate::closes(&gates, reading)}
                 chosen={props.chosen == Some(reading.port)}
                 unit={props.unit.clone()}
@@ -153,6 +166,8 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                 on_instruments={props.on_instruments.clone()}
             />
         });
+        let pair = pairs.iter().find(|pair| lower(&props.at, **pair) == *place);
+        rows.extend(pair.and_then(|pair| against(props, *pair)));
     }
     html! {
         <section class={if props.updating { "panel group is-stale" } else { "panel group" }} aria-labelledby={title_id.clone()}>
@@ -184,12 +199,14 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                 <ConditionEditor
                     name={format!("cond-{first}")}
                     condition={props.condition}
+                    sides={props.sides}
                     prefs={props.prefs.clone()}
                     on_change={on_condition}
                     texts={texts.clone()}
                     on_text={on_text}
                 />
             }
+            { alone(props) }
             { cautions::all(&new_places(props)) }
             { advice(&gates) }
             <ol class="readings">
@@ -229,5 +246,46 @@ fn panel(props: &ReadingGroupProps, gate: &Gate, hold: Option<(f64, f64)>, first
                 on_change={props.on_change.clone()}
             />
         </li>
+    }
+}
+
+/// The reading of a pair that stands lower in the group.
+fn lower(at: &[usize], (left, right): (usize, usize)) -> usize {
+    let row = |place: usize| at.iter().position(|other| *other == place);
+    if row(left) > row(right) { left } else { right }
+}
+
+/// Right against left under a pair of readings.
+fn against(props: &ReadingGroupProps, (left, right): (usize, usize)) -> Option<Html> {
+    let left = props.visit.readings.get(left)?;
+    let right = props.visit.readings.get(right)?;
+    if !props.sides.has(left.port) {
+        return None;
+    }
+    let words = pair_line::words(left, right, &props.prefs)?;
+    Some(html! {
+        <li class="reading-pair" key={format!("pair-{}", right.id)} data-testid={format!("pair-{}", right.id)}>{ words }</li>
+    })
+}
+
+/// True where nothing is there yet in this group for the other side of a reading.
+fn lacks_other_side(props: &ReadingGroupProps, place: usize, pairs: &[(usize, usize)]) -> bool {
+    let is_paired = pairs
+        .iter()
+        .any(|(left, right)| *left == place || *right == place);
+    !is_paired && (props.condition.doing.is_neutral() || props.condition.stroked.is_both())
+}
+
+/// One side driven alone turns the machine, and that has to be known before anybody stands beside it.
+fn alone(props: &ReadingGroupProps) -> Html {
+    let condition = &props.condition;
+    if condition.doing.is_neutral() || condition.stroked.is_both() {
+        return Html::default();
+    }
+    html! {
+        <Caution grade={Grade::Caution} title="one side alone" class="small-caution" testid="one-side-alone">
+            <p>{ "One side driven alone turns the machine on the spot. Wheels or tracks of both sides clear of the ground, or nobody \
+                  within its swing." }</p>
+        </Caution>
     }
 }

@@ -8,12 +8,14 @@ use super::last_time::{self, LastTime};
 use super::mark;
 use super::retake;
 use super::rig::{Rig, Rigged};
+use super::side::{Sides, Wanted, named};
 use super::window_scale::WindowScale;
-use crate::app::parts::{Confirm, TextField};
+use super::words;
+use crate::app::parts::{Choice, Confirm, Opt, TextField};
 use crate::assessment::{Standing, Window};
 use crate::quantity::UnitPrefs;
 use crate::readings::instrument::Instrument;
-use crate::readings::{Direction, Reading};
+use crate::readings::{Direction, Path, Reading};
 use crate::record::Earlier;
 use crate::unit::{PortNote, Unit};
 use std::rc::Rc;
@@ -26,6 +28,10 @@ pub struct ReadingRowProps {
     pub reading: Reading,
     /// Place in the visit's list.
     pub number: usize,
+    /// Ports that are there twice.
+    pub sides: Sides,
+    /// The same is not there yet on the other side.
+    pub lacks_other_side: bool,
     /// Its window, where there is an answer.
     pub window: Option<Window>,
     /// Why it should be taken again.
@@ -62,6 +68,11 @@ pub fn row_id(reading: &str) -> String {
 pub fn ReadingRow(props: &ReadingRowProps) -> Html {
     let more = use_state(|| false);
     let reading = &props.reading;
+    let name = props.sides.name(reading);
+    let short = named(
+        props.sides.side(reading.port, reading.path),
+        words::port_short(reading.port),
+    );
     let standing = props
         .window
         .as_ref()
@@ -91,7 +102,7 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
     html! {
         <li {class} id={row_id(&reading.id)} tabindex="-1" data-testid={format!("reading-row-{}", props.number)}>
             <div class="reading-head">
-                <h4 class="reading-name">{ reading.port.words() }</h4>
+                <h4 class="reading-name">{ name.clone() }</h4>
                 if doubt.is_some() {
                     { retake::badge() }
                 } else if !is_open {
@@ -103,7 +114,7 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
                     type="button"
                     class="reading-more"
                     aria-expanded={if *more { "true" } else { "false" }}
-                    aria-label={format!("More about {}", reading.port.words())}
+                    aria-label={format!("More about {name}")}
                     data-testid={format!("more-{}", props.number)}
                     onclick={toggle}
                 >
@@ -121,6 +132,8 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
             } else {
                 <EntryField
                     reading={reading.clone()}
+                    {name}
+                    {short}
                     number={props.number}
                     {instrument}
                     last={props.last.clone()}
@@ -206,13 +219,18 @@ fn extras(props: &ReadingRowProps) -> Html {
             Direction::Forward => Direction::Reverse,
             Direction::Reverse => Direction::Forward,
         };
-        let port = reading.port;
-        props
-            .on_change
-            .reform(move |_: MouseEvent| Change::Add(vec![(port, condition)]))
+        let (port, path) = (reading.port, reading.path);
+        props.on_change.reform(move |_: MouseEvent| {
+            Change::Add(vec![Wanted {
+                path,
+                port,
+                condition,
+            }])
+        })
     });
     html! {
         <div class="reading-extras stack">
+            { side(props) }
             <TextField
                 id={format!("note-{}", reading.id)}
                 label="Note"
@@ -224,14 +242,57 @@ fn extras(props: &ReadingRowProps) -> Html {
                 if let Some(again) = again {
                     <button type="button" class="button is-quiet" onclick={again}>{ "The same, other direction" }</button>
                 }
+                { other_side(props) }
                 <Confirm
                     words="Remove"
-                    question={format!("Remove {} from this call?", reading.port.words())}
+                    question={format!("Remove {} from this call?", props.sides.name(reading))}
                     yes="Remove it"
                     on_yes={on_remove}
                     testid={format!("remove-{}", props.number)}
                 />
             </div>
         </div>
+    }
+}
+
+/// On which side it was taken, where the port is there twice: a slip of the note is put right here.
+fn side(props: &ReadingRowProps) -> Html {
+    let reading = &props.reading;
+    let Some(path) = props.sides.side(reading.port, reading.path) else {
+        return Html::default();
+    };
+    let id = reading.id.clone();
+    let on_side = props
+        .on_change
+        .reform(move |path: Path| Change::Side(id.clone(), path));
+    html! {
+        <Choice<Path>
+            name={format!("side-{}", props.number)}
+            label="Taken on which side"
+            options={vec![Opt::new(Path::Left, "Left", "left"), Opt::new(Path::Right, "Right", "right")]}
+            value={Some(path)}
+            on_change={on_side}
+        />
+    }
+}
+
+/// The same on the other side, where that is not there yet.
+fn other_side(props: &ReadingRowProps) -> Html {
+    let reading = &props.reading;
+    if !props.lacks_other_side || !props.sides.has(reading.port) {
+        return Html::default();
+    }
+    let wanted = Wanted {
+        path: reading.path.other(),
+        port: reading.port,
+        condition: reading.condition,
+    };
+    let on_add = props
+        .on_change
+        .reform(move |_: MouseEvent| Change::Add(vec![wanted]));
+    html! {
+        <button type="button" class="button is-quiet" onclick={on_add} data-testid={format!("other-side-{}", props.number)}>
+            { format!("The same, {} side", reading.path.other().words()) }
+        </button>
     }
 }

@@ -1,8 +1,9 @@
 //! Which instrument stands on a port. One gauge, one error: its bias is shared by all readings taken with it, so it is said
 //! once per port and stays until the gauge is swapped.
 
-use super::change::{Change, rigging_on};
+use super::change::Change;
 use super::new_gauge::NewGauge;
+use super::rigging::rigging_on;
 use crate::app::parts::{Caution, Grade};
 use crate::quantity::{Kind, Measure, UnitPrefs};
 use crate::readings::instrument::{Instrument, InstrumentKind};
@@ -48,7 +49,7 @@ pub struct Rigged {
     pub current: Option<Instrument>,
     /// Id of the instrument that stands there now.
     pub stands: Option<String>,
-    /// Other readings were taken at the port.
+    /// Other readings were taken at the port, on this side.
     pub read_before: bool,
 }
 
@@ -56,9 +57,12 @@ pub struct Rigged {
 pub fn on_port(reading: &Reading, visit: &Visit, instruments: &[Instrument]) -> Rigged {
     Rigged {
         current: instrument_of(reading, visit, instruments).cloned(),
-        stands: rigging_on(visit, reading.port).map(|rigging| rigging.instrument.clone()),
+        stands: rigging_on(visit, reading.port, reading.path)
+            .map(|rigging| rigging.instrument.clone()),
         read_before: visit.readings.iter().any(|other| {
-            other.port == reading.port && other.id != reading.id && other.seen.is_some()
+            (other.port, other.path) == (reading.port, reading.path)
+                && other.id != reading.id
+                && other.seen.is_some()
         }),
     }
 }
@@ -123,6 +127,7 @@ pub fn Rig(props: &RigProps) -> Html {
             } else {
                 props.on_change.emit(Change::Rig {
                     port: props.reading.port,
+                    path: props.reading.path,
                     instrument: id,
                     from: None,
                 });
@@ -194,9 +199,10 @@ pub fn Rig(props: &RigProps) -> Html {
 /// A second instrument on a port that has readings: a swap is an event, a slip of the hand is not.
 fn ask_swap(props: &RigProps, to: &str, swapped_to: &UseStateHandle<Option<String>>) -> Html {
     let answer = |from: Option<String>| {
-        let (on_change, port, instrument, swapped_to) = (
+        let (on_change, port, path, instrument, swapped_to) = (
             props.on_change.clone(),
             props.reading.port,
+            props.reading.path,
             to.to_owned(),
             swapped_to.clone(),
         );
@@ -204,6 +210,7 @@ fn ask_swap(props: &RigProps, to: &str, swapped_to: &UseStateHandle<Option<Strin
             swapped_to.set(None);
             on_change.emit(Change::Rig {
                 port,
+                path,
                 instrument: instrument.clone(),
                 from: from.clone(),
             });

@@ -19,6 +19,7 @@ use super::reading_group::{ReadingGroup, gate_id};
 use super::reading_row::row_id;
 use super::rooms;
 use super::seen_panel::SeenPanel;
+use super::side::Sides;
 use super::slices::{use_apart, use_slices};
 use super::steady::{Answer, use_steady};
 use super::taken::Taken;
@@ -74,6 +75,7 @@ pub struct CallScreenProps {
 /// The screen.
 #[component]
 pub fn CallScreen(props: &CallScreenProps) -> Html {
+    let sides = Sides::of(&props.unit);
     let edits = use_edits(&props.visit, &props.on_visit);
     let to_focus = use_mut_ref(|| None::<String>);
     let editing = use_state(Vec::<String>::new);
@@ -125,7 +127,11 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 Some(reading) => {
                     to_focus.replace(Some(reading.id.clone()));
                 }
-                None => on_change.emit(Change::Add(vec![(port, harmless(last_condition(&visit)))])),
+                None => on_change.emit(Change::Add(
+                    sides
+                        .wanted(port, harmless(last_condition(&visit)))
+                        .collect(),
+                )),
             }
         })
     };
@@ -148,7 +154,12 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
     let on_edit = use_steady(on_edit);
     let on_instruments = use_steady(props.on_instruments.clone());
     let answer = props.assessment.clone().map(Answer);
-    let taken: Vec<Taken> = props.visit.readings.iter().map(Taken::of).collect();
+    let taken: Vec<Taken> = props
+        .visit
+        .readings
+        .iter()
+        .map(|reading| Taken::of(reading, sides))
+        .collect();
     let undo = edits.undoable();
     let visit = &props.visit;
     let grouped = groups(&visit.readings, &editing);
@@ -182,6 +193,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     assessment={answer.clone()}
                     updating={props.updating}
                     readings={visit.readings.clone()}
+                    {sides}
                     prefs={props.prefs.clone()}
                     on_reading={on_reading.clone()}
                 />
@@ -190,6 +202,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 <LoopMap
                     ticks={props.unit.ticks.clone()}
                     taken={taken.clone()}
+                    {sides}
                     assessment={answer.clone()}
                     chosen={*chosen}
                     {on_port}
@@ -210,13 +223,14 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     alone={visit.alone}
                     after_repair={visit.after_repair}
                     observations={visit.observations.clone()}
-                    class={props.unit.class}
+                    paths={props.unit.ticks.paths}
                     on_change={on_change.clone()}
                 />
                 <NextPanel
                     assessment={answer.clone()}
                     updating={props.updating}
                     taken={taken.clone()}
+                    {sides}
                     observations={visit.observations.clone()}
                     made={visit.made.clone()}
                     prefs={props.prefs.clone()}
@@ -226,7 +240,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 <a class="button is-wide" href={Route::Neutral(visit.id.clone()).href()} data-testid="to-neutral">
                     { "Set the neutral: creep, null, dead band" }
                 </a>
-                <QuickPanel {taken} on_change={on_change.clone()} />
+                <QuickPanel {taken} {sides} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
                 // In a list of its own: among its neighbours, one more group would have all above it made anew.
                 <>{ for grouped.into_iter().zip(told).take(drawn).map(|(group, told)| {
@@ -244,6 +258,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                             minute={*minute}
                             told={told.checks}
                             told_places={told.places}
+                            {sides}
                             chosen={*chosen}
                             unit={props.unit.clone()}
                             visit={visit.clone()}
@@ -257,6 +272,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 }) }</>
                 <AddPanel
                     ticks={props.unit.ticks.clone()}
+                    {sides}
                     last={last_condition(visit)}
                     prefs={props.prefs.clone()}
                     on_change={on_change.clone()}
@@ -264,6 +280,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 { rooms::links(&visit.id) }
                 <ClosePanel
                     visit={visit.clone()}
+                    {sides}
                     assessment={answer}
                     on_change={on_change.clone()}
                 />

@@ -9,7 +9,7 @@ use crate::caution::Stands;
 use crate::observations::{self, Group, Observation};
 use crate::record::Answer;
 use crate::record::limits::TEXT_CHARACTERS;
-use crate::unit::MachineClass;
+use crate::unit::Paths;
 use std::collections::BTreeMap;
 use yew::{Callback, Html, Properties, component, html};
 
@@ -24,15 +24,10 @@ pub struct SeenPanelProps {
     pub after_repair: Option<bool>,
     /// Answers.
     pub observations: BTreeMap<String, Answer>,
-    /// Class of machine: two paths or one.
-    pub class: MachineClass,
+    /// Drive paths of the machine: what needs two is asked only there.
+    pub paths: Paths,
     /// An edit.
     pub on_change: Callback<Change>,
-}
-
-/// True where left and right have a pump each, so that a pull to one side can come from the drive.
-fn has_two_paths(class: MachineClass) -> bool {
-    matches!(class, MachineClass::CompactTracked | MachineClass::Crawler)
 }
 
 /// The panel.
@@ -75,7 +70,7 @@ pub fn SeenPanel(props: &SeenPanelProps) -> Html {
                 }
     <div class="seen-groups">
                     { for Group::ALL.into_iter().map(|group| html! {
-                        <SeenGroup key={format!("{group:?}")} {group} observations={props.observations.clone()} class={props.class} on_change={props.on_change.clone()} />
+                        <SeenGroup key={format!("{group:?}")} {group} observations={props.observations.clone()} paths={props.paths} on_change={props.on_change.clone()} />
                     }) }
                     </div>
                 </section>
@@ -94,7 +89,7 @@ fn count_of(answered: usize) -> Html {
 struct SeenGroupProps {
     group: Group,
     observations: BTreeMap<String, Answer>,
-    class: MachineClass,
+    paths: Paths,
     on_change: Callback<Change>,
 }
 
@@ -104,9 +99,9 @@ fn SeenGroup(props: &SeenGroupProps) -> Html {
     let offered: Vec<&'static Observation> = observations::all()
         .filter(|observation| observation.group == props.group)
         .filter(|observation| {
-            // An answer that is kept is shown, even where the class was changed since.
+            // An answer that is kept is shown, even where the paths were changed since.
             !observation.two_path
-                || has_two_paths(props.class)
+                || !props.paths.is_one()
                 || props.observations.contains_key(observation.id)
         })
         .collect();

@@ -230,6 +230,30 @@ pub fn spread(port: Port, base: f64, prefs: &UnitPrefs) -> String {
     )
 }
 
+/// A difference at a port (base unit of its kind), without its sign: `1.4 rpm`; none where it prints as nought.
+pub fn difference(port: Port, base: f64, prefs: &UnitPrefs) -> Option<String> {
+    let (measure, unit, _) = as_spread(port, base, prefs)?;
+    let size = measure.in_unit(unit).abs();
+    // A difference is of two readings as typed: a tenth, and more where that is all there is.
+    let decimals = Decimals::Fixed(if size >= 50.0 {
+        0
+    } else if size >= 1.0 {
+        1
+    } else {
+        2
+    });
+    let figure = quantity::format(measure, unit, decimals, prefs.mark());
+    let is_seen = figure.chars().any(|digit| ('1'..='9').contains(&digit));
+    is_seen.then(|| quantity::format_with_unit(measure, unit, decimals, prefs.mark()))
+}
+
+/// A share with its sign, to a tenth of a per cent: `−3.2 %`.
+pub fn signed_percent(share: f64, mark: DecimalMark) -> String {
+    let figure = tick(share * 100.0, 1, mark);
+    let sign = if share > 0.0 { "+" } else { "" };
+    format!("{sign}{figure}{NARROW}%")
+}
+
 /// A spread as a measure, its unit, and the decimals it carries. A spread has no zero point, so a temperature's is in kelvin
 /// or degrees of difference, and a vacuum's runs the same way as the pressure's.
 fn as_spread(port: Port, base: f64, prefs: &UnitPrefs) -> Option<(Measure, Unit, u8)> {
@@ -331,6 +355,9 @@ pub fn condition(condition: &Condition, prefs: &UnitPrefs) -> String {
         parts.push(lever(condition.lever));
     }
     parts.push(engine(condition.engine, prefs));
+    if !condition.doing.is_neutral() && !condition.stroked.is_both() {
+        parts.push(String::from(condition.stroked.words()));
+    }
     if condition.flushing_blocked {
         parts.push(String::from("flushing blocked"));
     }

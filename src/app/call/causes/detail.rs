@@ -1,15 +1,17 @@
 //! Behind a cause: what speaks for and against it, what the gauges would read under it, its proof and its repair.
 
+use super::row::Told;
 use crate::app::call::quick::alike;
+use crate::app::call::side::named;
 use crate::app::call::{cautions, words};
 use crate::app::parts::{Caution, Grade};
-use crate::assessment::{Cause, Evidence};
+use crate::assessment::{At, Cause, Evidence};
 use crate::caution;
-use crate::faults::{self, FaultId};
+use crate::faults;
 use crate::next::{Advice, Foretold, Would};
 use crate::quantity::UnitPrefs;
-use crate::readings::{Reading, Seen};
-use yew::{Callback, Html, MouseEvent, html};
+use crate::readings::{Path, Port, Reading, Seen};
+use yew::{Html, html};
 
 /// Marks in a row of weight.
 const MARKS: usize = 4;
@@ -37,18 +39,13 @@ pub fn set(cause: &Cause) -> Html {
 }
 
 /// For and against, heaviest first.
-pub fn evidence(
-    cause: &Cause,
-    on_reading: &Callback<String>,
-    readings: &[Reading],
-    prefs: &UnitPrefs,
-) -> Html {
-    let told = cause
+pub fn evidence(cause: &Cause, told: &Told) -> Html {
+    let weighty = cause
         .evidence
         .iter()
         .filter(|item| words::weight(item.weight).0 > 0);
     let (favour, against): (Vec<&Evidence>, Vec<&Evidence>) =
-        told.partition(|item| item.weight > 0.0);
+        weighty.partition(|item| item.weight > 0.0);
     if favour.is_empty() && against.is_empty() {
         return html! { <p class="soft">{ "Nothing taken so far speaks clearly for or against it." }</p> };
     }
@@ -60,7 +57,7 @@ pub fn evidence(
             <div class="evidence">
                 <h3>{ title }</h3>
                 <ul class="evidence-list">
-                    { for items.into_iter().map(|item| piece(item, way, on_reading, readings, prefs)) }
+                    { for items.into_iter().map(|item| piece(item, way, told)) }
                 </ul>
             </div>
         }
@@ -71,25 +68,10 @@ pub fn evidence(
     </> }
 }
 
-fn piece(
-    item: &Evidence,
-    way: &str,
-    on_reading: &Callback<String>,
-    readings: &[Reading],
-    prefs: &UnitPrefs,
-) -> Html {
+fn piece(item: &Evidence, way: &str, told: &Told) -> Html {
     let (filled, how) = words::weight(item.weight);
-    let text = match readings.iter().find(|reading| reading.id == item.of) {
-        Some(reading) => {
-            let (on_reading, id) = (on_reading.clone(), item.of.clone());
-            let on_click = Callback::from(move |_: MouseEvent| on_reading.emit(id.clone()));
-            let words = format!(
-                "{}, {}",
-                reading.port.words(),
-                words::condition(&reading.condition, prefs)
-            );
-            html! { <button type="button" class="link" onclick={on_click}>{ words }</button> }
-        }
+    let text = match told.reading(&item.of) {
+        Some(reading) => told.link(reading),
         None => html! { { item.words.clone() } },
     };
     html! {
@@ -111,13 +93,12 @@ fn piece(
 }
 
 /// What the readings would be under the cause, beside what they are.
-pub fn would_read(cause: &Cause, readings: &[Reading], prefs: &UnitPrefs) -> Html {
-    let rows = cause.would_read.iter().filter_map(|would| {
-        let reading = readings
-            .iter()
-            .find(|reading| reading.id == would.reading)?;
-        Some((would, reading))
-    });
+pub fn would_read(cause: &Cause, told: &Told) -> Html {
+    let prefs = told.prefs;
+    let rows = cause
+        .would_read
+        .iter()
+        .filter_map(|would| Some((would, told.reading(&would.reading)?)));
     let rows: Vec<_> = rows.collect();
     if rows.is_empty() {
         return Html::default();
@@ -129,7 +110,7 @@ pub fn would_read(cause: &Cause, readings: &[Reading], prefs: &UnitPrefs) -> Htm
                 { for rows.into_iter().map(|(would, reading)| html! {
                     <li class="would-row" key={would.reading.clone()}>
                         <span class="would-what">
-                            { words::port_short(reading.port) }
+                            { short(told, reading.port, reading.path) }
                             <span class="soft">{ " · " }{ words::condition(&reading.condition, prefs) }</span>
                         </span>
                         <span class="would-value figure">
@@ -143,6 +124,11 @@ pub fn would_read(cause: &Cause, readings: &[Reading], prefs: &UnitPrefs) -> Htm
     }
 }
 
+/// A port in a word or two, with its side.
+fn short(told: &Told, port: Port, path: Path) -> String {
+    named(told.sides.side(port, path), words::port_short(port))
+}
+
 fn read(reading: &Reading, prefs: &UnitPrefs) -> String {
     match &reading.seen {
         Some(Seen::NotPossible { .. }) | None => String::from("not taken"),
@@ -151,23 +137,24 @@ fn read(reading: &Reading, prefs: &UnitPrefs) -> String {
 }
 
 /// What the ports that are not read yet would show under the cause: those of the checks on offer.
-pub fn others(
-    cause: &Cause,
-    advice: Option<&Advice>,
-    readings: &[Reading],
-    prefs: &UnitPrefs,
-) -> Html {
-    let told = advice.iter().flat_map(|advice| &advice.checks);
-    let told = told.flat_map(|offer| &offer.foretold).filter(|foretold| {
-        !readings.iter().any(|reading| {
+pub fn others(cause: &Cause, advice: Option<&Advice>, told: &Told) -> Html {
+    let (prefs, sides) = (told.prefs, told.sides);
+    let offers = advice.iter().flat_map(|advice| &advice.checks);
+    let open = offers.flat_map(|offer| &offer.foretold).filter(|foretold| {
+        !told.readings.iter().any(|reading| {
             reading.port == foretold.port
+                && sides.path(reading.port, reading.path) == foretold.path
                 && reading.seen.is_some()
                 && alike(&reading.condition, &foretold.condition)
         })
     });
-    let rows: Vec<(&Foretold, &Would)> = told
+    let rows: Vec<(&Foretold, &Would)> = open
         .filter_map(|foretold| {
-            let of = |would: &&Would| cause.ids.contains(&would.id);
+            let of = |would: &&Would| {
+                let mut members = cause.members();
+                // On two paths the same cause stands there for either side, and says so in its title.
+                members.any(|m| m.id == would.id && (m.path.is_none() || m.title() == would.title))
+            };
             Some((foretold, foretold.would.iter().find(of)?))
         })
         .take(OTHERS)
@@ -184,7 +171,7 @@ pub fn others(
                     html! {
                         <li class="would-row">
                             <span class="would-what">
-                                { words::port_short(foretold.port) }
+                                { short(told, foretold.port, foretold.path) }
                                 <span class="soft">{ " · " }{ words::condition(&foretold.condition, prefs) }</span>
                             </span>
                             <span class="would-value figure">{ format!("{low} to {high}") }</span>
@@ -197,20 +184,20 @@ pub fn others(
 }
 
 /// The catalogue's word on one member of the row.
-pub fn member(id: FaultId, cause: &Cause) -> Html {
+pub fn member(member: At, cause: &Cause) -> Html {
+    let id = member.id;
     let Some(fault) = faults::find(id) else {
         return Html::default();
     };
     let share = cause
-        .ids
-        .iter()
-        .position(|member| *member == id)
+        .members()
+        .position(|other| other == member)
         .and_then(|place| cause.shares.get(place));
     html! {
-        <div class="member" key={format!("{id:?}")}>
+        <div class="member" key={member.key()}>
             if cause.ids.len() > 1 {
                 <h3>
-                    { fault.title }
+                    { member.title() }
                     { share.map(|share| html! { <span class="soft">{ format!(" ({} by itself)", words::percent(*share)) }</span> }) }
                 </h3>
             }

@@ -5,6 +5,7 @@ mod detail;
 mod pair;
 mod row;
 
+use super::side::Sides;
 use super::steady::Answer;
 use super::words::{self, Verdict};
 use crate::app::parts::{Caution, Grade};
@@ -29,6 +30,8 @@ pub struct CausesProps {
     pub updating: bool,
     /// Readings of the visit.
     pub readings: Vec<Reading>,
+    /// Ports that are there twice.
+    pub sides: Sides,
     /// Units.
     pub prefs: UnitPrefs,
     /// Opens a reading, by id.
@@ -82,6 +85,7 @@ pub fn Causes(props: &CausesProps) -> Html {
                         <List
                             assessment={assessment.clone()}
                             readings={props.readings.clone()}
+                            sides={props.sides}
                             prefs={props.prefs.clone()}
                             {on_reading}
                         />
@@ -112,7 +116,7 @@ fn lead(assessment: Option<&Assessment>, verdict: Option<Verdict>) -> Vec<Html> 
     }
     let line = |cause: &Cause| {
         html! {
-            <li class="causes-line" key={key(cause)}>
+            <li class="causes-line" key={cause.key()}>
                 <span class="causes-name">{ words::cause_title(cause) }</span>
                 <span class="causes-share">{ words::chance(cause.probability, &assessment.trust) }</span>
             </li>
@@ -121,16 +125,12 @@ fn lead(assessment: Option<&Assessment>, verdict: Option<Verdict>) -> Vec<Html> 
     assessment.causes.iter().take(IN_STRIP).map(line).collect()
 }
 
-/// What a row is known by while the order changes.
-fn key(cause: &Cause) -> String {
-    format!("{:?}", cause.ids)
-}
-
 /// Properties of [`List`].
 #[derive(Clone, PartialEq, Properties)]
 struct ListProps {
     assessment: Answer,
     readings: Vec<Reading>,
+    sides: Sides,
     prefs: UnitPrefs,
     on_reading: Callback<String>,
 }
@@ -171,11 +171,12 @@ fn List(props: &ListProps) -> Html {
         <ol class="cause-list">
             { for assessment.causes.iter().take(shown).enumerate().map(|(place, cause)| html! {
                 <CauseRow
-                    key={key(cause)}
+                    key={cause.key()}
                     {place}
                     assessment={assessment.clone()}
                     {verdict}
                     readings={props.readings.clone()}
+                    sides={props.sides}
                     prefs={props.prefs.clone()}
                     on_reading={props.on_reading.clone()}
                 />
@@ -255,7 +256,7 @@ fn retake(props: &ListProps, id: &str, why: &str) -> Html {
                 class="link"
                 onclick={Callback::from(move |_: MouseEvent| on_reading.emit(target.clone()))}
             >
-                { reading.port.words() }
+                { props.sides.name(reading) }
             </button>
             // Why stands at the reading.
             { ", " }{ words::condition(&reading.condition, &props.prefs) }

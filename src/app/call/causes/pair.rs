@@ -1,11 +1,9 @@
 //! Two causes at work at the same time: their names together, and what each explains that the other does not.
 
-use crate::app::call::words;
+use super::row::Told;
 use crate::assessment::{Cause, Pair};
 use crate::observations;
-use crate::quantity::UnitPrefs;
-use crate::readings::Reading;
-use yew::{Callback, Html, MouseEvent, html};
+use yew::{Html, html};
 
 /// Both names under one heading.
 pub fn title(pair: &Pair) -> Html {
@@ -19,12 +17,7 @@ pub fn title(pair: &Pair) -> Html {
 }
 
 /// What each of the two explains; nothing for a single cause.
-pub fn explained(
-    cause: &Cause,
-    on_reading: &Callback<String>,
-    readings: &[Reading],
-    prefs: &UnitPrefs,
-) -> Html {
+pub fn explained(cause: &Cause, told: &Told) -> Html {
     let Some(pair) = &cause.pair else {
         return Html::default();
     };
@@ -36,9 +29,7 @@ pub fn explained(
                     if !of.is_empty() {
                         <p class="soft">{ "explains" }</p>
                         <ul class="plain-list">
-                            { for of.iter().map(|id| html! {
-                                <li key={id.clone()}>{ item(id, cause, on_reading, readings, prefs) }</li>
-                            }) }
+                            { for of.iter().map(|id| html! { <li key={id.clone()}>{ item(id, cause, told) }</li> }) }
                         </ul>
                     }
                 </div>
@@ -48,25 +39,12 @@ pub fn explained(
 }
 
 /// A reading, to be touched, or what was seen.
-fn item(
-    id: &str,
-    cause: &Cause,
-    on_reading: &Callback<String>,
-    readings: &[Reading],
-    prefs: &UnitPrefs,
-) -> Html {
-    if let Some(reading) = readings.iter().find(|reading| reading.id == id) {
-        let (on_reading, id) = (on_reading.clone(), id.to_owned());
-        let words = format!(
-            "{}, {}",
-            reading.port.words(),
-            words::condition(&reading.condition, prefs)
-        );
-        let on_click = Callback::from(move |_: MouseEvent| on_reading.emit(id.clone()));
-        return html! { <button type="button" class="link" onclick={on_click}>{ words }</button> };
+fn item(id: &str, cause: &Cause, told: &Told) -> Html {
+    if let Some(reading) = told.reading(id) {
+        return told.link(reading);
     }
-    let told = cause.evidence.iter().find(|evidence| evidence.of == id);
-    let words = told.map(|evidence| evidence.words.clone());
+    let evidence = cause.evidence.iter().find(|evidence| evidence.of == id);
+    let words = evidence.map(|evidence| evidence.words.clone());
     let seen = || observations::find(id).map(|observation| observation.words.to_owned());
     html! { { words.or_else(seen).unwrap_or_else(|| id.to_owned()) } }
 }

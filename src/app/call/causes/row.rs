@@ -1,13 +1,14 @@
 //! One row of the ranking.
 
 use super::{detail, pair};
+use crate::app::call::side::Sides;
 use crate::app::call::steady::{Answer, Fold};
 use crate::app::call::words::{self, Verdict};
 use crate::assessment::Cause;
-use crate::faults::{self, FaultId};
+use crate::faults;
 use crate::quantity::UnitPrefs;
 use crate::readings::Reading;
-use yew::{Callback, Html, Properties, component, html};
+use yew::{Callback, Html, MouseEvent, Properties, component, html};
 
 /// Properties of [`CauseRow`].
 #[derive(Clone, PartialEq, Properties)]
@@ -20,10 +21,43 @@ pub struct CauseRowProps {
     pub verdict: Verdict,
     /// Readings of the visit.
     pub readings: Vec<Reading>,
+    /// Ports that are there twice.
+    pub sides: Sides,
     /// Units.
     pub prefs: UnitPrefs,
     /// Opens a reading, by id.
     pub on_reading: Callback<String>,
+}
+
+/// What a row looks its readings up in, and names them with.
+pub struct Told<'a> {
+    /// Opens a reading, by id.
+    pub on_reading: &'a Callback<String>,
+    /// Readings of the visit.
+    pub readings: &'a [Reading],
+    /// Ports that are there twice.
+    pub sides: Sides,
+    /// Units.
+    pub prefs: &'a UnitPrefs,
+}
+
+impl Told<'_> {
+    /// A reading by id.
+    pub fn reading(&self, id: &str) -> Option<&Reading> {
+        self.readings.iter().find(|reading| reading.id == id)
+    }
+
+    /// A reading in words, to be touched.
+    pub fn link(&self, reading: &Reading) -> Html {
+        let (on_reading, id) = (self.on_reading.clone(), reading.id.clone());
+        let on_click = Callback::from(move |_: MouseEvent| on_reading.emit(id.clone()));
+        let words = format!(
+            "{}, {}",
+            self.sides.name(reading),
+            words::condition(&reading.condition, self.prefs)
+        );
+        html! { <button type="button" class="link" onclick={on_click}>{ words }</button> }
+    }
 }
 
 /// The row: title, probability, and behind it the reasons, the proof and the repair.
@@ -48,7 +82,7 @@ pub fn CauseRow(props: &CauseRowProps) -> Html {
             <span class="cause-stop">{ "Stop work" }</span>
         }
         if cause.ids.len() > 1 && cause.pair.is_none() {
-            <span class="cause-members soft">{ members(&cause.ids) }</span>
+            <span class="cause-members soft">{ members(cause) }</span>
         }
         if props.place == 0 && told {
             { lead_proof(cause) }
@@ -76,14 +110,20 @@ fn body(props: &CauseRowProps) -> Html {
     let Some(cause) = props.assessment.causes.get(props.place) else {
         return Html::default();
     };
+    let told = Told {
+        on_reading: &props.on_reading,
+        readings: &props.readings,
+        sides: props.sides,
+        prefs: &props.prefs,
+    };
     html! {
         <div class="cause-body">
-            { pair::explained(cause, &props.on_reading, &props.readings, &props.prefs) }
+            { pair::explained(cause, &told) }
             { detail::set(cause) }
-            { detail::evidence(cause, &props.on_reading, &props.readings, &props.prefs) }
-            { detail::would_read(cause, &props.readings, &props.prefs) }
-            { detail::others(cause, props.assessment.advice.as_ref(), &props.readings, &props.prefs) }
-            { for cause.ids.iter().map(|id| detail::member(*id, cause)) }
+            { detail::evidence(cause, &told) }
+            { detail::would_read(cause, &told) }
+            { detail::others(cause, props.assessment.advice.as_ref(), &told) }
+            { for cause.members().map(|member| detail::member(member, cause)) }
         </div>
     }
 }
@@ -108,12 +148,8 @@ fn title(cause: &Cause) -> Html {
 }
 
 /// Names the members of a set that no reading taken so far can split.
-fn members(ids: &[FaultId]) -> String {
-    let titles: Vec<&str> = ids
-        .iter()
-        .filter_map(|id| faults::find(*id))
-        .map(|fault| fault.title)
-        .collect();
+fn members(cause: &Cause) -> String {
+    let titles: Vec<String> = cause.members().map(|member| member.title()).collect();
     format!("Alike in every reading taken: {}", titles.join("; "))
 }
 

@@ -2,12 +2,14 @@
 
 use crate::app::call::change::Change;
 use crate::app::call::put_back;
+use crate::app::call::side::Sides;
 use crate::app::parts::TextField;
+use crate::checks::Check;
 use crate::record::{PutBack, Visit};
 use yew::{Callback, Event, Html, MouseEvent, TargetCast, html};
 
 /// The list; says so where nothing was opened.
-pub fn shown(visit: &Visit, on_change: &Callback<Change>) -> Html {
+pub fn shown(visit: &Visit, sides: Sides, on_change: &Callback<Change>) -> Html {
     let lines = put_back::lines(visit);
     if lines.is_empty() {
         return html! { <p class="soft">{ "Nothing to put back: nothing was opened on this call." }</p> };
@@ -23,17 +25,26 @@ pub fn shown(visit: &Visit, on_change: &Callback<Change>) -> Html {
             </h3>
             <ul class="put-back" data-testid="put-back">
                 { for lines.into_iter().enumerate().map(|(place, (line, of))| html! {
-                    <li key={line}>{ one(place, line, &of, visit.put_back.get(line), on_change) }</li>
+                    <li key={line}>{ one(place, line, &told(&of, visit, sides), visit.put_back.get(line), on_change) }</li>
                 }) }
             </ul>
         </div>
     }
 }
 
+/// The checks that ask for a line.
+fn told(of: &[&Check], visit: &Visit, sides: Sides) -> String {
+    let told = of
+        .iter()
+        .map(|check| put_back::with_sides(check, visit, sides));
+    told.collect::<Vec<_>>()
+        .join(if sides.any() { "; " } else { ", " })
+}
+
 fn one(
     place: usize,
     line: &'static str,
-    of: &[&str],
+    of: &str,
     answer: Option<&PutBack>,
     on_change: &Callback<Change>,
 ) -> Html {
@@ -64,7 +75,7 @@ fn one(
                     onchange={on_tick}
                     data-testid={format!("put-back-{place}")}
                 />
-                <span>{ line }<span class="put-back-of">{ of.join(", ") }</span></span>
+                <span>{ line }<span class="put-back-of">{ of.to_owned() }</span></span>
             </label>
             <button
                 type="button"

@@ -5,6 +5,7 @@ mod list;
 
 use super::change::Change;
 use super::put_back;
+use super::side::Sides;
 use super::steady::Answer;
 use crate::app::parts::{Caution, Grade, TextField};
 use crate::app::platform::clock;
@@ -18,6 +19,8 @@ use yew::{Callback, Html, MouseEvent, Properties, component, html};
 pub struct ClosePanelProps {
     /// The visit.
     pub visit: Rc<Visit>,
+    /// Ports that are there twice.
+    pub sides: Sides,
     /// Last answer of the engine: its leading causes stand first in the list.
     pub assessment: Option<Answer>,
     /// An edit.
@@ -37,7 +40,7 @@ pub fn ClosePanel(props: &ClosePanelProps) -> Html {
             { match &visit.closed {
                 Some(closing) => closed(closing, open, props),
                 None => html! { <>
-                    { list::shown(visit, &props.on_change) }
+                    { list::shown(visit, props.sides, &props.on_change) }
                     <Entry
                         {open}
                         closing={visit.closing.clone().unwrap_or_default()}

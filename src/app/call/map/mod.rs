@@ -5,11 +5,12 @@ mod plan;
 mod symbols;
 
 use super::mark;
+use super::side::Sides;
 use super::steady::Answer;
 use super::taken::Taken;
 use super::words;
 use crate::assessment::{Assessment, Standing};
-use crate::readings::Port;
+use crate::readings::{Path, Port};
 use crate::unit::{Fitted, Ticks};
 use plan::{Label, Spot};
 use yew::{Callback, Html, KeyboardEvent, MouseEvent, Properties, component, html, use_state};
@@ -24,6 +25,8 @@ pub struct LoopMapProps {
     pub ticks: Ticks,
     /// Readings there are.
     pub taken: Vec<Taken>,
+    /// Ports that are there twice.
+    pub sides: Sides,
     /// Last answer of the engine.
     pub assessment: Option<Answer>,
     /// Port whose readings are open.
@@ -37,12 +40,19 @@ pub struct LoopMapProps {
 pub struct PortState {
     /// Gravest standing; none where there is no reading.
     pub standing: Option<Standing>,
+    /// Where the port is there twice and only one side is low or high: that side.
+    pub side: Option<Path>,
     /// Readings.
     pub count: usize,
 }
 
 /// The state of a port.
-pub fn state(port: Port, readings: &[Taken], assessment: Option<&Assessment>) -> PortState {
+pub fn state(
+    port: Port,
+    sides: Sides,
+    readings: &[Taken],
+    assessment: Option<&Assessment>,
+) -> PortState {
     let gravity = |standing: &Standing| match standing {
         Standing::Open => 0,
         Standing::Within => 1,
@@ -51,20 +61,42 @@ pub fn state(port: Port, readings: &[Taken], assessment: Option<&Assessment>) ->
         Standing::Low => 4,
         Standing::High => 5,
     };
+    let windows = assessment
+        .map(|assessment| assessment.windows.as_slice())
+        .unwrap_or_default();
     let here = readings.iter().filter(|reading| reading.port == port);
-    let standings = here.map(|reading| {
-        let windows = assessment
-            .map(|assessment| assessment.windows.as_slice())
-            .unwrap_or_default();
-        windows
-            .iter()
-            .find(|window| window.reading == reading.id)
-            .map_or(Standing::Open, |window| window.standing)
-    });
-    let standings: Vec<Standing> = standings.collect();
+    let standings: Vec<(Path, Standing)> = here
+        .map(|reading| {
+            let window = windows.iter().find(|window| window.reading == reading.id);
+            let standing = window.map_or(Standing::Open, |window| window.standing);
+            (reading.path, standing)
+        })
+        .collect();
+    let gravest = standings
+        .iter()
+        .map(|(_, standing)| *standing)
+        .max_by_key(gravity);
+    let is_off = |path: Path| {
+        let mut own = standings.iter().filter(|(other, _)| *other == path);
+        own.any(|(_, standing)| matches!(standing, Standing::Low | Standing::High))
+    };
+    let side = match (is_off(Path::Left), is_off(Path::Right)) {
+        (true, false) => sides.side(port, Path::Left),
+        (false, true) => sides.side(port, Path::Right),
+        _ => None,
+    };
     PortState {
-        standing: standings.iter().copied().max_by_key(gravity),
+        standing: gravest,
+        side,
         count: standings.len(),
+    }
+}
+
+/// How a port stands, in words: `right low` where only that side is off.
+fn standing_words(standing: Standing, side: Option<Path>) -> String {
+    match side {
+        Some(side) => format!("{} {}", side.words(), words::standing(standing)),
+        None => words::standing(standing).to_owned(),
     }
 }
 
@@ -76,13 +108,13 @@ fn spoken(port: Port, shown: &str, state: PortState) -> String {
         (Some(standing), 1) => {
             format!(
                 "{shown} {}: {name}, one reading. Open it.",
-                words::standing(standing)
+                standing_words(standing, state.side)
             )
         }
         (Some(standing), count) => {
             format!(
                 "{shown} {}: {name}, {count} readings. Open them.",
-                words::standing(standing)
+                standing_words(standing, state.side)
             )
         }
     }
@@ -117,15 +149,20 @@ pub fn LoopMap(props: &LoopMapProps) -> Html {
                 </button>
             </div>
             <div class="loop-map-body" id="map-body">
+                if props.sides.any() {
+                    <p class="soft small" data-testid="map-sides">
+                        { "One side is drawn: left and right are alike. Readings are marked with their side. Only one pump? Say so in the profile." }
+                    </p>
+                }
                 <svg class="loop-map-drawing" viewBox={view} role="group" aria-label="Closed loop with its gauge ports">
                     { circuit::draw(&props.ticks) }
                     { for spots.iter().map(|spot| {
-                        let state = state(spot.port, &props.taken, assessment);
+                        let state = state(spot.port, props.sides, &props.taken, assessment);
                         port(spot, state, props.chosen == Some(spot.port), &props.on_port)
                     }) }
                 </svg>
                 <ul class="loop-map-others" aria-label="Read elsewhere">
-                    { for elsewhere.into_iter().map(|port| other(port, state(port, &props.taken, assessment), &props.on_port)) }
+                    { for elsewhere.into_iter().map(|port| other(port, state(port, props.sides, &props.taken, assessment), &props.on_port)) }
                 </ul>
             </div>
         </section>
@@ -224,7 +261,7 @@ fn port(spot: &Spot, state: PortState, is_chosen: bool, on_port: &Callback<Port>
                 y={(y + 15.0).to_string()}
                 class={format!("port-word {anchor} is-{}", words::standing_class(standing))}
             >
-                { words::standing(standing) }
+                { standing_words(standing, state.side) }
             </text>
         }
     });

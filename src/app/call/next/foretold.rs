@@ -3,6 +3,7 @@
 
 use super::NextPanelProps;
 use crate::app::call::bands::{self, Axis};
+use crate::app::call::side::Sides;
 use crate::app::call::steady::Fold;
 use crate::app::call::words;
 use crate::next::{Foretold, Offer, Would};
@@ -30,15 +31,15 @@ pub fn shown(offer: &Offer, props: &NextPanelProps) -> Html {
         .any(|foretold| matches!(foretold.port.kind(), Kind::Pressure | Kind::Flow));
     let others = {
         let rest: Vec<Foretold> = rest.iter().map(|foretold| (*foretold).clone()).collect();
-        let prefs = props.prefs.clone();
+        let (sides, prefs) = (props.sides, props.prefs.clone());
         Callback::from(move |()| {
-            html! { <div>{ for rest.iter().map(|foretold| drawn(foretold, &prefs)) }</div> }
+            html! { <div>{ for rest.iter().map(|foretold| drawn(foretold, sides, &prefs)) }</div> }
         })
     };
     html! {
         <div class="told" data-testid={format!("told-{}", offer.id)}>
             <h4>{ if has_gauge { "Before the gauge goes on: what it would read" } else { "Before you measure: what it would read" } }</h4>
-            { for first.iter().map(|foretold| drawn(foretold, &props.prefs)) }
+            { for first.iter().map(|foretold| drawn(foretold, props.sides, &props.prefs)) }
             if !rest.is_empty() {
                 <Fold
                     head={html! { { if rest.len() == 1 { String::from("The other reading of it") } else { format!("The other {} readings of it", rest.len()) } } }}
@@ -80,7 +81,7 @@ fn parting(foretold: &Foretold) -> f64 {
 }
 
 /// One reading: a row a cause over one scale.
-fn drawn(foretold: &Foretold, prefs: &UnitPrefs) -> Html {
+fn drawn(foretold: &Foretold, sides: Sides, prefs: &UnitPrefs) -> Html {
     let port = foretold.port;
     let spans: Option<Vec<(f64, f64)>> = foretold
         .would
@@ -93,7 +94,7 @@ fn drawn(foretold: &Foretold, prefs: &UnitPrefs) -> Html {
     html! {
         <figure class="told-reading">
             <figcaption>
-                <strong>{ port.words() }</strong>
+                <strong>{ sides.port(port, foretold.path) }</strong>
                 <span class="soft">{ ", " }{ words::condition(&foretold.condition, prefs) }</span>
             </figcaption>
             <ul class="told-rows">

@@ -6,6 +6,7 @@ mod offer;
 mod repair;
 
 use super::change::Change;
+use super::side::Sides;
 use super::steady::Answer;
 use super::taken::Taken;
 use crate::app::parts::{Caution, Grade};
@@ -24,6 +25,8 @@ pub struct NextPanelProps {
     pub updating: bool,
     /// Readings there are.
     pub taken: Vec<Taken>,
+    /// Ports that are there twice.
+    pub sides: Sides,
     /// Observations answered.
     pub observations: BTreeMap<String, record::Answer>,
     /// Checks marked as made.

@@ -6,14 +6,15 @@ use crate::app::call::change::Change;
 use crate::app::call::gate::{self, GATED_FROM};
 use crate::app::call::gate_panel::{rise_words, seconds_words};
 use crate::app::call::quick::alike;
+use crate::app::call::side::Wanted;
 use crate::app::call::steady::Fold;
 use crate::app::call::taken::Taken;
 use crate::app::call::{hazard, seen_keys, words};
 use crate::app::parts::{Caution, Grade, Icon, Shape};
 use crate::checks::{self, Check};
-use crate::next::{Hold, Offer};
+use crate::next::{Foretold, Hold, Offer};
 use crate::observations::{self, Observation};
-use crate::readings::{Condition, Doing, Port};
+use crate::readings::{Doing, Path, Port};
 use yew::{Callback, Html, MouseEvent, html};
 
 /// Observations asked in the open; more stand behind a fold.
@@ -160,24 +161,28 @@ fn take(place: usize, offer: &Offer, props: &NextPanelProps) -> Html {
     if offer.foretold.is_empty() {
         return Html::default();
     }
-    let there = |port: Port, condition: &Condition| -> Option<&Taken> {
-        props
-            .taken
-            .iter()
-            .find(|reading| reading.port == port && alike(&reading.condition, condition))
+    let there = |foretold: &Foretold| -> Option<&Taken> {
+        props.taken.iter().find(|reading| {
+            (reading.port, reading.path) == (foretold.port, foretold.path)
+                && alike(&reading.condition, &foretold.condition)
+        })
     };
-    let missing: Vec<(Port, Condition)> = offer
+    let missing: Vec<Wanted> = offer
         .foretold
         .iter()
-        .filter(|foretold| there(foretold.port, &foretold.condition).is_none())
-        .map(|foretold| (foretold.port, foretold.condition))
+        .filter(|foretold| there(foretold).is_none())
+        .map(|foretold| Wanted {
+            path: foretold.path,
+            port: foretold.port,
+            condition: foretold.condition,
+        })
         .collect();
     let testid = format!("next-add-{place}");
     if missing.is_empty() {
         let first = offer
             .foretold
             .iter()
-            .filter_map(|foretold| there(foretold.port, &foretold.condition))
+            .filter_map(there)
             .find(|reading| !reading.is_read)
             .map(|reading| reading.id.clone());
         let Some(first) = first else {
@@ -193,6 +198,16 @@ fn take(place: usize, offer: &Offer, props: &NextPanelProps) -> Html {
     let words = match missing.len() {
         1 => String::from("Take this reading"),
         count => format!("Take these {count} readings"),
+    };
+    let on = |path: Path| {
+        let mut sided = missing.iter().filter(|wanted| props.sides.has(wanted.port));
+        sided.any(|wanted| wanted.path == path)
+    };
+    let words = match (on(Path::Left), on(Path::Right)) {
+        (true, true) => format!("{words}, left and right"),
+        (true, false) => format!("{words} on the left"),
+        (false, true) => format!("{words} on the right"),
+        (false, false) => words,
     };
     let on_add = props
         .on_change

@@ -3,12 +3,13 @@
 use super::NextPanelProps;
 use crate::app::call::words;
 use crate::app::parts::{Caution, Grade};
+use crate::assessment::sided;
 use crate::next::RepairOffer;
 use yew::{Callback, Html, MouseEvent, html};
 
 /// The repair on offer.
 pub fn shown(offer: &RepairOffer, props: &NextPanelProps) -> Html {
-    let title = crate::faults::find(offer.id).map(|fault| fault.title);
+    let title = crate::faults::find(offer.id).map(|fault| sided(offer.path, fault.title));
     html! {
         <div class={if offer.now { "next-repair is-now" } else { "next-repair" }} data-testid="next-repair">
             <p class="next-word">
@@ -68,7 +69,7 @@ fn back(offer: &RepairOffer, props: &NextPanelProps) -> Html {
                         let on_click = Callback::from(move |_: MouseEvent| on_reading.emit(id.clone()));
                         html! {
                             <li key={reading.id.clone()}>
-                                <button type="button" class="link" onclick={on_click}>{ reading.port.words() }</button>
+                                <button type="button" class="link" onclick={on_click}>{ props.sides.port(reading.port, reading.path) }</button>
                                 { ", " }{ words::condition(&reading.condition, &props.prefs) }
                             </li>
                         }

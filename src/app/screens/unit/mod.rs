@@ -16,6 +16,7 @@ use self::figures::Figures;
 use self::manual::Manual;
 use self::ports::Ports;
 use self::ticks::TicksForm;
+pub use self::ticks::usual_paths;
 use crate::app::deed::{Deed, Snapshot};
 use crate::app::parts::{Confirm, Icon, Section, Select, Shape, TextField};
 use crate::app::route::Route;

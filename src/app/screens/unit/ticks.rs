@@ -5,7 +5,8 @@ use yew::{Callback, Html, component, html};
 use super::PartProps;
 use crate::app::parts::{Choice, Lay, Opt, Section, Select, tick_options};
 use crate::unit::{
-    CaseLines, ChargeSource, Control, Filter, LoopReliefTo, ReliefDrain, Shuttle, Tick, Ticks,
+    CaseLines, ChargeSource, Control, Filter, LoopReliefTo, MachineClass, Paths, ReliefDrain,
+    Shuttle, Tick, Ticks,
 };
 
 /// Answers that are not "don't know".
@@ -43,6 +44,26 @@ fn options<T: Clone>(list: &[(T, &'static str, &'static str)]) -> Vec<Opt<T>> {
         .collect()
 }
 
+fn path_options() -> Vec<Opt<Paths>> {
+    let option = |paths: Paths| {
+        let code = match paths {
+            Paths::One => "one",
+            Paths::TwoSharedCharge => "shared",
+            Paths::TwoOwnCharge => "own",
+        };
+        Opt::new(paths, paths.words(), code)
+    };
+    Paths::ALL.map(option).to_vec()
+}
+
+/// What a new unit of a class starts with. Machines on tracks steer by two pumps, mostly on one charge pump (common practice).
+pub fn usual_paths(class: MachineClass) -> Paths {
+    match class {
+        MachineClass::CompactTracked | MachineClass::Crawler => Paths::TwoSharedCharge,
+        _ => Paths::One,
+    }
+}
+
 fn control_options() -> Vec<Opt<Control>> {
     Control::ALL
         .iter()
@@ -75,6 +96,16 @@ pub fn TicksForm(props: &PartProps) -> Html {
     html! {
         <Section id="ticks" title="What it has" state={format!("{} of {QUESTIONS} answered", answered(ticks))}>
             <p class="soft small">{ "“Don’t know” is an answer too: both builds stay possible." }</p>
+            <Choice<Paths>
+                name="paths"
+                label="Drive paths"
+                hint="Two where left and right have a pump and a loop each, as most machines on tracks have (common practice). \
+                      Readings then say their side, as seen from the seat."
+                options={path_options()}
+                value={ticks.paths}
+                on_change={props.change(|unit, paths| unit.ticks.paths = paths)}
+                lay={Lay::List}
+            />
             { yes_no(
                 "flushing",
                 "Loop flushing",
