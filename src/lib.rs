@@ -20,6 +20,7 @@
 //! | [`neutral`] | where the swash stands when nothing is asked, and how to set it |
 //! | [`next`] | the next check, the next repair, when to stop |
 //! | [`tracking`] | straight tracking of a machine with two sides: which side is faster, why, what to turn |
+//! | [`yard`] | the yard check, wear over the hours, what closed cases teach |
 //! | [`assessment`] | what an assessment hands out |
 //! | [`record`] | visits and units as they are kept; import, export, migration |
 //! | [`store`] | where the record is kept |
@@ -52,3 +53,4 @@ pub mod store;
 pub mod tracking;
 pub mod unit;
 pub mod windows;
+pub mod yard;

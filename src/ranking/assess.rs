@@ -1,6 +1,7 @@
 //! The whole assessment of a visit: windows, causes, reasons, doubts.
 
-use super::datum::{Data, gather, has_sides, path_of};
+use super::belief::Belief;
+use super::datum::{Data, gather_with, has_sides, path_of};
 use super::hold::hold_time;
 use super::memo::Memo;
 use super::posterior::{Heavy, Weighed, weigh};
@@ -15,6 +16,7 @@ use crate::readings::instrument::Instrument;
 use crate::readings::{Condition, Direction, Doing, Port, Reading, Seen};
 use crate::record::Visit;
 use crate::unit::{Tick, Unit};
+use crate::yard::learn::Rates;
 use crate::windows::{Spreads, windows};
 
 /// Chance of a wrong gauge from which a reading is asked for again.
@@ -32,12 +34,22 @@ pub struct Session {
     spreads: Spreads,
     heavy: Vec<Heavy>,
     last: Option<Last>,
+    rates: Rates,
 }
 
 impl Session {
+    /// Takes these base rates from now on, learned from the shop's own cases; none learned: the catalogue's.
+    pub fn learn(&mut self, rates: Rates) {
+        if self.rates != rates {
+            // What was carried from the last assessment was weighed with the old ones.
+            self.last = None;
+            self.rates = rates;
+        }
+    }
+
     /// As [`assess`], the quicker the less has changed since the last one. The answer does not hang on what came before.
     pub fn assess(&mut self, unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessment {
-        let made = Prepared::new(unit, visit, instruments, self.memo.clone());
+        let made = Prepared::new(unit, visit, instruments, self.memo.clone(), &self.rates);
         let windows = made.windows(&mut self.spreads);
         let posterior = weigh(&made.bench, &made.data, unit.sides);
         let answer = made.answer(windows, posterior.causes, posterior.change);
@@ -56,7 +68,7 @@ impl Session {
         instruments: &[Instrument],
     ) -> Option<Assessment> {
         let last = self.last.as_ref().filter(|l| l.is_of(unit, &visit.id))?;
-        let made = Prepared::new(unit, visit, instruments, self.memo.clone());
+        let made = Prepared::new(unit, visit, instruments, self.memo.clone(), &self.rates);
         let weighed = last.weigh(&made.bench, &made.data, unit.sides)?;
         let windows = made.windows(&mut self.spreads);
         let mut answer = made.answer(windows, weighed, 0.0);
@@ -77,6 +89,7 @@ struct Prepared<'a> {
     instruments: &'a [Instrument],
     data: Data,
     bench: Bench,
+    learned: Option<String>,
 }
 
 impl<'a> Prepared<'a> {
@@ -85,8 +98,13 @@ impl<'a> Prepared<'a> {
         visit: &'a Visit,
         instruments: &'a [Instrument],
         memo: Memo,
+        rates: &Rates,
     ) -> Prepared<'a> {
-        let data = gather(unit, &visit.readings, &visit.riggings, instruments);
+        let belief = Belief {
+            rates: rates.per_hundred.clone(),
+            ..Belief::default()
+        };
+        let data = gather_with(unit, &visit.readings, &visit.riggings, instruments, belief);
         let mut latents = unit_latents(unit);
         condition_latents(unit, &data.conditions, &mut latents);
         let mut bench = Bench::with(builds(unit), latents, &data, memo);
@@ -100,6 +118,7 @@ impl<'a> Prepared<'a> {
             instruments,
             data,
             bench,
+            learned: rates.words(),
         }
     }
 
@@ -121,6 +140,7 @@ impl<'a> Prepared<'a> {
             visit,
             data,
             bench,
+            learned,
             ..
         } = self;
         for w in &mut weighed {
@@ -142,7 +162,10 @@ impl<'a> Prepared<'a> {
             windows,
             causes,
             withheld: withheld(unit, visit, data),
-            notes: notes(unit, visit, trust.swapped),
+            notes: notes(unit, visit, trust.swapped)
+                .into_iter()
+                .chain(learned.clone())
+                .collect(),
             trust: trust.trust,
             hold,
             advice: None,

@@ -329,6 +329,10 @@ pub(super) fn visit(path: &str, visit: &mut Visit) -> Checked {
     if let Some(sheet) = &mut visit.tracking {
         super::tracking::check(&format!("{path}.tracking"), sheet)?;
     }
+    if let Some(sheet) = &mut visit.yard {
+        super::yard::check(&format!("{path}.yard"), sheet)?;
+    }
+    super::yard::hours(&format!("{path}.hours"), &mut visit.hours)?;
     for (field, closing) in [
         ("closing", &mut visit.closing),
         ("closed", &mut visit.closed),
@@ -456,6 +460,11 @@ pub(super) fn instrument(path: &str, instrument: &mut Instrument) -> Checked {
 /// Checks settings and cleans their texts. Their instruments are checked with the file's own list.
 pub(super) fn settings(path: &str, settings: &mut Settings) -> Checked {
     line(path, "last_export", &mut settings.last_export)?;
+    let left_out = format!("{path}.learning.left_out");
+    count(&left_out, settings.learning.left_out.len(), limits::VISITS)?;
+    for id in &settings.learning.left_out {
+        reference(path, "learning.left_out", id)?;
+    }
     count(
         &format!("{path}.first_run.hints_done"),
         settings.first_run.hints_done.len(),

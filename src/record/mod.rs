@@ -23,6 +23,7 @@ mod settings;
 mod sum;
 mod tracking;
 mod visit;
+mod yard;
 
 pub use book::Book;
 pub use envelope::{APP, Envelope, Stamp};

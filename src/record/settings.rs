@@ -67,6 +67,9 @@ pub struct Settings {
     pub instruments: Vec<Instrument>,
     /// First-run flags.
     pub first_run: FirstRun,
+    /// What is learned from closed cases, and what is left out.
+    #[serde(skip_serializing_if = "crate::yard::learn::Learning::is_untouched")]
+    pub learning: crate::yard::learn::Learning,
     /// When an export was last made (ISO 8601 text); empty: never.
     pub last_export: String,
     /// Fields written by a newer version: kept as they are.

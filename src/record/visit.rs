@@ -2,6 +2,7 @@
 
 use crate::readings::{Reading, Rigging, Seen};
 use crate::tracking::TrackingSheet;
+use crate::yard::YardSheet;
 use serde::{Deserialize, Serialize};
 use std::collections::BTreeMap;
 
@@ -65,6 +66,12 @@ pub struct Visit {
     /// The tracking sheet of a machine with two sides; none where nobody began one.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub tracking: Option<TrackingSheet>,
+    /// The sheet of a yard check: a visit that has one is a yard check, not a call.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub yard: Option<YardSheet>,
+    /// Hour meter at the visit.
+    #[serde(skip_serializing_if = "super::neutral::Typed::is_empty")]
+    pub hours: super::neutral::Typed,
     /// What is entered for the closing while the call is still open.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub closing: Option<Closing>,
@@ -135,6 +142,19 @@ pub struct Closing {
 }
 
 impl Visit {
+    /// Hour meter, h, where it can be read.
+    #[must_use]
+    pub fn hour_meter(&self) -> Option<f64> {
+        let value = self.hours.value?.try_in_unit(crate::quantity::Unit::Hour);
+        value.ok().filter(|h| h.is_finite() && *h >= 0.0)
+    }
+
+    /// True for a yard check.
+    #[must_use]
+    pub fn is_yard_check(&self) -> bool {
+        self.yard.is_some()
+    }
+
     /// True where the other says the same about the machine: nothing that bears on a window or on the order of causes differs.
     /// Texts, ticks and the closing may.
     #[must_use]
