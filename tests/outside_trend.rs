@@ -77,7 +77,7 @@ fn lines_weights_and_errors_are_those_of_statsmodels() {
         // Where points stand far off, least squares goes another way: the robust line is worth its name.
         if name.contains("far off") {
             let slope = n - 1;
-            assert!((fit.coefficients[slope] - series.least_squares[slope]).abs() > 0.2);
+            assert!(fit.coefficients[slope] > 0.02 && series.least_squares[slope] < 0.0);
             assert_eq!(fit.weights.iter().filter(|w| **w < 0.2).count(), 2);
         }
     }

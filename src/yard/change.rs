@@ -1,14 +1,13 @@
 //! Out and in are paired: what changed while the machine was out, with its uncertainty.
 
-use super::field::Field;
-use super::history::of_sheet;
+use super::history::{Usual, of_sheet};
 use super::report::Grade;
 use super::sheet::{Leg, YardSheet};
-use super::wear::{self, Coefficient, Wear};
+use super::wear::{Coefficient, Wear};
 use crate::quantity::{Measure, Unit as InUnit, UnitPrefs};
 use crate::readings::instrument::{Instrument, gum};
 use crate::record::Visit;
-use crate::unit::{FigureId, Unit};
+use crate::unit::Unit;
 
 /// Uncertainties from which a change is to be watched. Common practice.
 const WATCH: f64 = 2.0;
@@ -81,12 +80,13 @@ pub fn out_of(
         changes: Vec::new(),
         not_compared: Vec::new(),
     };
+    let usual = Usual::of(unit, earlier.iter().copied().chain([visit]));
     let is_two = !unit.ticks.paths.is_one();
     for of in Wear::ALL {
         if of == Wear::DrainRight && !is_two {
             continue;
         }
-        match one(of, unit, then, now, instruments, prefs) {
+        match one(of, unit, then, now, instruments, usual, prefs) {
             Ok(change) => made.changes.push(change),
             Err(why) => made.not_compared.push(format!("{}: {why}", of.words())),
         }
@@ -100,13 +100,9 @@ fn one(
     then: &YardSheet,
     now: &YardSheet,
     instruments: &[Instrument],
+    usual: Usual,
     prefs: &UnitPrefs,
 ) -> Result<Change, String> {
-    // Where charge was not read beside a drain, the same pressure stands in on both legs.
-    let usual = [then, now]
-        .iter()
-        .find_map(|s| s.value(Field::ChargeHigh))
-        .unwrap_or_else(|| wear::figure(unit, FigureId::ChargeSetting));
     let get = |sheet, leg: &str| -> Result<(Coefficient, String), String> {
         let (is, with) = of_sheet(of, unit, sheet, instruments, usual)
             .ok_or_else(|| format!("not read {leg}"))?;

@@ -2,6 +2,7 @@
 
 use super::calendar;
 use super::field::Field;
+use super::law;
 use super::sheet::YardSheet;
 use super::wear::{self, Coefficient, FullLever, Uncertain, Wear, Withheld};
 use crate::faults::FaultId;
@@ -72,7 +73,7 @@ impl History {
             .filter(|v| v.unit == unit.id)
             .collect();
         sorted.sort_by_key(|v| (v.opened.as_str(), v.id.as_str()));
-        let usual = usual_charge(unit, &sorted);
+        let usual = Usual::of(unit, sorted.iter().copied());
         let mut out = History::default();
         let (mut segment, mut repair) = (0, None);
         let mut sets: Vec<String> = Vec::new();
@@ -138,24 +139,40 @@ pub fn is_repair(visit: &Visit) -> bool {
         && (is_cause || !closed.done.trim().is_empty() || !closed.parts.trim().is_empty())
 }
 
-/// Charge over case that drains of the unit were driven by where it was not read beside them, bar: the unit's own readings at high
-/// idle, then the profile's setting, then the class.
-fn usual_charge(unit: &Unit, visits: &[&Visit]) -> f64 {
-    let read: Vec<f64> = visits
-        .iter()
-        .filter_map(|v| match &v.yard {
-            Some(sheet) => sheet.value(Field::ChargeHigh),
-            None => value(v, Port::Charge, |c| {
-                c.doing == Doing::Neutral && c.engine == EngineSpeed::HighIdle
+/// What is one figure for all checks of a unit: pressures that stand in where they were not read, and how readings go with
+/// viscosity.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub(super) struct Usual {
+    /// What drives the drain, bar: median at high idle, else the profile's setting, else the class.
+    pub charge: f64,
+    /// Cracking pressure of the charge relief, bar.
+    pub cracks: f64,
+    /// How the drain and the knee fall with viscosity.
+    pub powers: (f64, f64),
+}
+
+impl Usual {
+    pub(super) fn of<'a>(unit: &Unit, visits: impl IntoIterator<Item = &'a Visit>) -> Usual {
+        let read: Vec<f64> = visits
+            .into_iter()
+            .filter_map(|v| match &v.yard {
+                Some(sheet) => sheet.value(Field::ChargeHigh),
+                None => value(v, Port::Charge, |c| {
+                    c.doing == Doing::Neutral && c.engine == EngineSpeed::HighIdle
+                })
+                .map(|(_, value)| value),
             })
-            .map(|(_, value)| value),
-        })
-        .filter(|bar| *bar > 0.0)
-        .collect();
-    if read.is_empty() {
-        wear::figure(unit, FigureId::ChargeSetting)
-    } else {
-        super::robust::median(&read)
+            .filter(|bar| *bar > 0.0)
+            .collect();
+        Usual {
+            charge: if read.is_empty() {
+                wear::figure(unit, FigureId::ChargeSetting)
+            } else {
+                super::robust::median(&read)
+            },
+            cracks: wear::cracks(unit, &read),
+            powers: (law::power(Wear::Drain, unit), law::power(Wear::Knee, unit)),
+        }
     }
 }
 
@@ -166,7 +183,7 @@ fn of_visit(
     unit: &Unit,
     visit: &Visit,
     instruments: &[Instrument],
-    usual: f64,
+    usual: Usual,
 ) -> Option<Said> {
     match &visit.yard {
         Some(sheet) => of_sheet(of, unit, sheet, instruments, usual),
@@ -213,7 +230,7 @@ pub(super) fn of_sheet(
     unit: &Unit,
     sheet: &YardSheet,
     instruments: &[Instrument],
-    usual: f64,
+    usual: Usual,
 ) -> Option<Said> {
     let with = |parts: &[&str]| {
         let place = serde_json::to_string(&sheet.place).unwrap_or_default();
@@ -243,9 +260,9 @@ pub(super) fn of_sheet(
                 Port::MotorDrain,
                 instrument(&sheet.meter),
             );
-            let over = sheet.value(Field::ChargeHigh).unwrap_or(usual);
+            let over = sheet.value(Field::ChargeHigh).unwrap_or(usual.charge);
             Some((
-                warm.map(|w| wear::drain(flow, over, &w)),
+                warm.map(|w| wear::drain(flow, over, &w, usual.powers.0)),
                 with(&["drain", &sheet.meter]),
             ))
         }
@@ -280,13 +297,13 @@ pub(super) fn of_sheet(
             let own = Uncertain::read(speed.value, Port::Knee, None).own;
             let speed = Uncertain { own, ..speed };
             Some((
-                warm.map(|w| wear::knee(speed, idle(), &w)),
+                warm.map(|w| wear::knee(speed, idle(), &w, usual.powers.1)),
                 with(&["knee", &sheet.tachometer]),
             ))
         }
         Wear::LowIdle => {
-            let (low, high) = (charge(Field::ChargeLow)?, charge(Field::ChargeHigh)?);
-            let is = warm.map(|w| wear::low_idle(low, high, idle(), &w));
+            let low = charge(Field::ChargeLow)?;
+            let is = warm.map(|w| wear::low_idle(low, usual.cracks, idle(), &w));
             Some((transpose(is)?, with(&["charge", &sheet.gauge])))
         }
     }
@@ -316,7 +333,7 @@ fn of_readings(
     unit: &Unit,
     visit: &Visit,
     instruments: &[Instrument],
-    usual: f64,
+    usual: Usual,
 ) -> Option<Said> {
     let instrument = |reading: &Reading| {
         let rigging = visit.riggings.iter().find(|r| r.id == reading.rigging)?;
@@ -352,9 +369,10 @@ fn of_readings(
             let over = value(visit, Port::Charge, |c| {
                 neutral(c) && c.engine == reading.condition.engine
             });
-            let over = over.map_or(usual, |(_, bar)| bar);
+            let over = over.map_or(usual.charge, |(_, bar)| bar);
             let flow = Uncertain::read(flow, Port::MotorDrain, instrument(reading));
-            let is = wear::warm(unit, &reading.condition).map(|w| wear::drain(flow, over, &w));
+            let is = wear::warm(unit, &reading.condition)
+                .map(|w| wear::drain(flow, over, &w, usual.powers.0));
             Some((is, with("drain", reading)))
         }
         Wear::Slip => {
@@ -384,21 +402,22 @@ fn of_readings(
             let (reading, speed) = value(visit, Port::Knee, neutral)?;
             let speed = Uncertain::read(speed, Port::Knee, instrument(reading));
             let own = Uncertain::read(speed.value, Port::Knee, None).own;
-            let is = wear::warm(unit, &reading.condition)
-                .map(|w| wear::knee(Uncertain { own, ..speed }, wear::low_idle_of(unit), &w));
+            let is = wear::warm(unit, &reading.condition).map(|w| {
+                wear::knee(
+                    Uncertain { own, ..speed },
+                    wear::low_idle_of(unit),
+                    &w,
+                    usual.powers.1,
+                )
+            });
             Some((is, with("knee", reading)))
         }
         Wear::LowIdle => {
-            let (low, p_low) = value(visit, Port::Charge, |c| idles(c, EngineSpeed::LowIdle))?;
-            let (high, p_high) = value(visit, Port::Charge, |c| idles(c, EngineSpeed::HighIdle))?;
-            let is = wear::warm(unit, &low.condition).map(|w| {
-                wear::low_idle(
-                    Uncertain::read(p_low, Port::Charge, instrument(low)),
-                    Uncertain::read(p_high, Port::Charge, instrument(high)),
-                    wear::low_idle_of(unit),
-                    &w,
-                )
-            });
+            let (low, bar) = value(visit, Port::Charge, |c| idles(c, EngineSpeed::LowIdle))?;
+            let read = Uncertain::read(bar, Port::Charge, instrument(low));
+            let idle = wear::low_idle_of(unit);
+            let is = wear::warm(unit, &low.condition)
+                .map(|w| wear::low_idle(read, usual.cracks, idle, &w));
             Some((transpose(is)?, with("charge", low)))
         }
     }

@@ -1,19 +1,17 @@
 //! Every line of the sheet against its limit: common practice at first, the unit's own checks from the third one on.
 
 use super::baseline::Baseline;
-use super::field::Field;
-use super::history::is_repair;
+use super::history::{Usual, is_repair};
 use super::limits::{Limits, limits};
 use super::report::{Grade, Judged};
 use super::sheet::YardSheet;
 use super::steps::{Step, steps};
 use super::taken::{Key, Taken, is_warm, taken};
-use super::wear;
 use super::words::Printer;
 use crate::quantity::UnitPrefs;
 use crate::readings::instrument::Instrument;
 use crate::record::Visit;
-use crate::unit::{FigureId, Tick, Unit};
+use crate::unit::{Tick, Unit};
 
 /// Uncertainties off the unit's own checks from which it is watched, and from which it stays. Common practice.
 const OFF: (f64, f64) = (2.0, 4.0);
@@ -28,18 +26,13 @@ pub(super) fn judged(
     prefs: &UnitPrefs,
     cold: Option<&str>,
 ) -> Vec<Judged> {
-    let usual = sheet
-        .value(Field::ChargeHigh)
-        .unwrap_or_else(|| wear::figure(unit, FigureId::ChargeSetting));
+    let usual = Usual::of(unit, earlier.iter().copied().chain([visit]));
     let now = taken(unit, sheet, instruments, usual);
     let before = since_repair(visit, earlier);
     let before: Vec<Vec<Taken>> = before
         .iter()
         .filter(|sheet| is_warm(unit, sheet))
-        .map(|sheet| {
-            let usual = sheet.value(Field::ChargeHigh).unwrap_or(usual);
-            taken(unit, sheet, instruments, usual)
-        })
+        .map(|sheet| taken(unit, sheet, instruments, usual))
         .collect();
     let printer = Printer { prefs };
     let mut out = Vec::new();

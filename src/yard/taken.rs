@@ -1,7 +1,7 @@
 //! The figures that a sheet is judged by, each with what it is compared by.
 
 use super::field::Field;
-use super::history::{of_sheet, oil, speed};
+use super::history::{Usual, of_sheet, oil, speed};
 use super::sheet::YardSheet;
 use super::wear::{self, FullLever, Uncertain, Wear};
 use crate::quantity::Unit as InUnit;
@@ -99,7 +99,7 @@ pub(super) fn taken(
     unit: &Unit,
     sheet: &YardSheet,
     instruments: &[Instrument],
-    usual: f64,
+    usual: Usual,
 ) -> Vec<Taken> {
     let mut out = Vec::new();
     let instrument = |id: &str| instruments.iter().find(|i| i.id == id);

@@ -3,14 +3,18 @@
 //! Everything that leaks in a gap leaks with pressure over viscosity (laminar: Wilson; Schlösser). With μ the viscosity of the
 //! oil where it leaks, over [`REFERENCE`]:
 //!
-//! * motor drain in neutral, q at Δp over case: **q·μ·20 bar/Δp**. Charge alone drives it, engine speed does not. Never the
+//! * motor drain in neutral, q at Δp over case: **q·μ^e·20 bar/Δp**. Charge alone drives it, engine speed does not. Never the
 //!   drain in drive: that follows the flushing relief.
 //! * slip from light to loaded at the same ramp, s at pump speed n: **s·μ·n/n_high**, since the leak is the same and the
 //!   delivery grows with speed.
-//! * knee, the engine speed n at which charge stops rising: **n·μ**. There the charge pump's whole delivery, in proportion to
-//!   n, is what leaks at the relief's cracking pressure, in proportion to 1/μ.
+//! * knee, the engine speed n at which charge stops rising: **n·μ^e**. There the charge pump's whole delivery, in proportion to
+//!   n, is what leaves at the relief's cracking pressure.
 //! * charge at low idle p, once it no longer reaches the relief's cracking pressure p_c: **n_low·μ·p_c/p**, the speed that would
-//!   hold full charge; the same figure as the knee. While the relief still holds, all that can be said is "at most n_low·μ".
+//!   hold full charge; the same kind of figure as the knee. While the relief still holds, all that can be said is "at most
+//!   n_low·μ". p_c is one figure for all checks of a unit, so that an error in it moves the level and no trend.
+//!
+//! e is 1 for gaps alone. Consumers, lines and filters are no gaps, so that it is less: [`super::law`] takes it from the circuit
+//! of the unit's own profile.
 //!
 //! Uncertainty has two parts: what each reading brings anew, and what all readings with the same instruments share. A trend on
 //! unmoved instruments knows only the first.
@@ -33,12 +37,12 @@ const OWN_KELVIN: f64 = 1.5;
 const SAME_RAMP: f64 = 0.05;
 /// What an engine speed that nobody measured leaves open in a speed at full lever, relative. Common practice: droop.
 const DROOP: f64 = 0.02;
-/// Cracking pressure of the charge relief over the pressure at high idle. Common practice: 1.5 to 3 bar of override.
-pub const CRACKS: f64 = 0.9;
-/// What is left open in it, relative.
-const CRACKS_OPEN: f64 = 0.05;
-/// From this share of the pressure at high idle on, the relief still holds at low idle. Common practice.
-const HOLDS: f64 = 0.85;
+/// Override of the charge relief from cracking to high idle, bar, where its setting is not known. Common practice: 1.5 to 3 bar.
+const OVERRIDE: f64 = 2.0;
+/// From this share of the cracking pressure on, the relief may still hold.
+const HOLDS: f64 = 0.9;
+/// What a law too plain leaves open from one temperature to another, relative: part of what leaks goes through orifices.
+const LAW: f64 = 0.03;
 /// A knee this close over low idle may lie anywhere below, relative.
 const AT_IDLE: f64 = 0.02;
 
@@ -207,20 +211,21 @@ pub fn warm(unit: &Unit, condition: &Condition) -> Result<Warmth, Withheld> {
     }
 }
 
-/// Brings a figure that goes with 1/μ to the reference oil, with what the temperature leaves open.
-fn to_reference(figure: Uncertain, warmth: &Warmth) -> Uncertain {
-    let slope = warmth.per_kelvin.abs();
+/// Brings a figure that goes with 1/μ to this power to the reference oil, with what the temperature leaves open.
+fn to_reference(figure: Uncertain, warmth: &Warmth, power: f64) -> Uncertain {
+    let slope = power * warmth.per_kelvin.abs();
+    let own = gum::combined(&[OWN_KELVIN * slope, LAW]);
     figure
-        .scaled(warmth.relative())
-        .widened(OWN_KELVIN * slope, warmth.spread * slope)
+        .scaled(math::pow(warmth.relative(), power))
+        .widened(own, warmth.spread * slope)
 }
 
-/// Motor drain in neutral, L/min, at a charge pressure over case, bar.
+/// Motor drain in neutral, L/min, at a charge pressure over case, bar; it goes with 1/μ^`power` on this unit.
 #[must_use]
-pub fn drain(flow: Uncertain, over_case: f64, warmth: &Warmth) -> Coefficient {
+pub fn drain(flow: Uncertain, over_case: f64, warmth: &Warmth, power: f64) -> Coefficient {
     let at_20 = flow.scaled(DRAIN_BAR / over_case.max(1.0));
     Coefficient {
-        is: to_reference(at_20, warmth),
+        is: to_reference(at_20, warmth, power),
         at_most: false,
     }
 }
@@ -271,46 +276,49 @@ pub fn slip_coefficient(
     let engine = loaded.engine.or(light.engine).unwrap_or(high_idle);
     let at_high = slip.scaled(engine / high_idle).widened(SAME_RAMP, 0.0);
     Some(Coefficient {
-        is: to_reference(at_high, warmth),
+        is: to_reference(at_high, warmth, 1.0),
         at_most: false,
     })
 }
 
-/// Knee, rpm, beside the low idle of the engine, rpm.
+/// Knee, rpm, beside the low idle of the engine, rpm; it goes with 1/μ^`power` on this unit.
 #[must_use]
-pub fn knee(speed: Uncertain, low_idle: f64, warmth: &Warmth) -> Coefficient {
+pub fn knee(speed: Uncertain, low_idle: f64, warmth: &Warmth, power: f64) -> Coefficient {
     Coefficient {
-        is: to_reference(speed, warmth),
+        is: to_reference(speed, warmth, power),
         at_most: speed.value <= low_idle * (1.0 + AT_IDLE),
     }
 }
 
-/// Charge at low idle beside charge at high idle, both neutral and on one gauge, bar, at this low idle, rpm. None where the
-/// gauge shows nothing at either.
+/// Charge at low idle, neutral, bar, at this low idle, rpm, on a relief that cracks at `cracks`, bar. None where the gauge shows
+/// nothing.
 #[must_use]
-pub fn low_idle(
-    low: Uncertain,
-    high: Uncertain,
-    idle: f64,
-    warmth: &Warmth,
-) -> Option<Coefficient> {
-    if low.value <= 0.0 || high.value <= 0.0 {
+pub fn low_idle(low: Uncertain, cracks: f64, idle: f64, warmth: &Warmth) -> Option<Coefficient> {
+    if low.value <= 0.0 || cracks <= 0.0 {
         return None;
     }
-    let holds = low.value >= HOLDS * high.value;
-    let lacks = (CRACKS * high.value / low.value).max(1.0);
-    // One gauge: its bias acts on both, most on the smaller; what is left of it is the difference of the two shares.
-    let bias = (low.shared / low.value - high.shared / high.value).abs();
-    let own = gum::combined(&[low.own / low.value, high.own / high.value, 0.01]);
+    let lacks = (cracks / low.value).max(1.0);
     let speed = Uncertain {
         value: idle * lacks,
-        own: idle * lacks * own,
-        shared: idle * lacks * gum::combined(&[bias, CRACKS_OPEN]),
+        own: idle * lacks * gum::combined(&[low.own / low.value, 0.004]),
+        shared: idle * lacks * low.shared / low.value,
     };
     Some(Coefficient {
-        is: to_reference(speed, warmth),
-        at_most: holds,
+        is: to_reference(speed, warmth, 1.0),
+        at_most: low.value >= HOLDS * cracks,
     })
+}
+
+/// Cracking pressure of a unit's charge relief, bar at the gauge: the profile's setting, else from the highest reading at high
+/// idle, else usual for the class.
+#[must_use]
+pub fn cracks(unit: &Unit, high: &[f64]) -> f64 {
+    let highest = high.iter().copied().fold(0.0, f64::max);
+    match unit.known(FigureId::ChargeSetting) {
+        Some(setting) => setting,
+        None if highest > OVERRIDE => (highest - OVERRIDE).max(0.6 * highest),
+        None => figure(unit, FigureId::ChargeSetting),
+    }
 }
 
 /// High idle as the profile has it or the class usually, rpm.

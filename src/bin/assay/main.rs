@@ -7,6 +7,7 @@
 //! `assay tracking [cases]` hides one mismatch between two sides (see [`tracking`]).
 //! `assay steps [cases] [seed]` counts the minutes to the cause (see [`steps`]).
 //! `assay neutral [cases]` hides a swash offset (see [`neutral`]).
+//! `assay yard [cases]` wears machines down over the hours (see [`yard`]).
 //! `ASSAY_TELL=1` prints the cases in which a wrong cause was all but certain; `ASSAY_SEED` changes the draw;
 //! `ASSAY_NOTES=clean` leaves the sloppy notes out.
 
@@ -17,6 +18,7 @@ mod steps;
 mod steps_danger;
 mod tracking;
 mod world;
+mod yard;
 
 use judge::{Judge, Ranked, Ranker, listed};
 use lowside::faults::{Fault, FaultId};
@@ -54,10 +56,11 @@ fn main() {
         Some("sides") => sides(),
         Some("neutral") => neutral::neutral(number(2, 400), seed()),
         Some("steps") => steps::steps(number(2, 60), number(3, 2026) as u64),
+        Some("yard") => yard::yard(number(2, 400), seed()),
         Some("tracking") => tracking::tracking(number(2, 2000), seed()),
         Some(other) => {
             eprintln!(
-                "assay: no such part: {other}. There are: ranking, pairs, sides, steps, tracking, neutral."
+                "assay: no such part: {other}. There are: ranking, pairs, sides, steps, tracking, neutral, yard."
             )
         }
     }

@@ -350,6 +350,10 @@ pub struct Machine {
     turbulent: Vec<(usize, f64)>,
     /// Swash offset in neutral, share of stroke: of the control, or of the servo where its ports are bridged. None: as drawn.
     pub null: Option<f64>,
+    /// Wear: parameters and the factor on each.
+    pub worn: Vec<(Param, f64)>,
+    /// Load on the yard's own flat and ramp, bar, lever against its stop: the same each time. None: as drawn.
+    pub runs: Option<(f64, f64)>,
 }
 
 impl Machine {
@@ -405,6 +409,8 @@ impl Machine {
             turbulent,
             real,
             null: None,
+            worn: Vec::new(),
+            runs: None,
         })
     }
 
@@ -450,6 +456,16 @@ impl Machine {
         for f in &self.faults {
             f.bend(&mut theta);
         }
+        for (p, factor) in &self.worn {
+            theta[p.on(Path::Left)] *= factor;
+        }
+        if let Some((flat, ramp)) = self.runs {
+            match condition.doing {
+                Doing::Travel => theta[Param::Load as usize] = flat,
+                Doing::Loaded => theta[Param::Load as usize] = ramp,
+                _ => {}
+            }
+        }
         if let Some(offset) = self.null {
             let bridged = condition.doing == Doing::NeutralBridged;
             theta[Param::NullControl as usize] = if bridged { 0.0 } else { offset };
@@ -482,8 +498,10 @@ impl Machine {
     /// Scatter that belongs to a condition: what is shared (idle speeds, tachometer, place of the thermometer, load of the day)
     /// is drawn once a machine, the rest once a condition.
     fn of_condition(&self, words: &str, again: bool, condition: &Condition) -> f64 {
-        let own = again
-            || words == "lever travel"
+        // Against its stop in the yard's own runs the lever stands alike each time.
+        let lever = words == "lever travel" && self.runs.is_none();
+        let own = again && self.runs.is_none_or(|_| words != "lever travel")
+            || lever
             || (words == "oil temperature" && condition.oil.is_none());
         let key = if own {
             format!("{words} {condition:?}")
@@ -496,6 +514,7 @@ impl Machine {
         };
         let key = match words {
             "low idle" | "high idle" | "tachometer" => words.to_string(),
+            "lever travel" if self.runs.is_some() => words.to_string(),
             _ => key,
         };
         // FNV-1a: a stream of its own for each name.
