@@ -16,8 +16,8 @@ use crate::readings::instrument::Instrument;
 use crate::readings::{Condition, Direction, Doing, Port, Reading, Seen};
 use crate::record::Visit;
 use crate::unit::{Tick, Unit};
-use crate::yard::learn::Rates;
 use crate::windows::{Spreads, windows};
+use crate::yard::learn::Rates;
 
 /// Chance of a wrong gauge from which a reading is asked for again.
 const ASK_AGAIN: f64 = 0.5;

@@ -71,3 +71,50 @@ pub(super) fn mend_hours(typed: &mut Typed) {
         .value
         .take_if(|value| check::measure(*value, Kind::Time, HOURS_SPAN).is_err());
 }
+
+#[cfg(all(test, not(target_arch = "wasm32")))]
+mod tests {
+    use super::*;
+    use crate::quantity::Unit;
+
+    fn typed(value: f64, unit: Unit) -> Typed {
+        Typed {
+            typed: "as typed".to_owned(),
+            value: Some(Measure::literal(value, unit)),
+        }
+    }
+
+    fn sheet(bar: f64) -> YardSheet {
+        let mut sheet = YardSheet::default();
+        sheet.set(Field::ChargeLow, typed(bar, Unit::Bar));
+        sheet
+    }
+
+    #[test]
+    fn figures_beyond_their_fields_are_refused_with_their_path_and_go_out_as_text() {
+        assert!(check("visit.yard", &mut sheet(21.0)).is_ok());
+        let mut wrong = sheet(2100.0);
+        let why = check("visit.yard", &mut wrong).expect_err("out of range");
+        let path = "visit.yard.fields.charge_low";
+        assert!(why.to_string().contains(path), "{why}");
+        mend(&mut wrong);
+        assert!(check("visit.yard", &mut wrong).is_ok());
+        assert_eq!(wrong.fields[&Field::ChargeLow].typed, "as typed");
+        let mut meter = typed(-5.0, Unit::Hour);
+        assert!(hours("visit.hours", &mut meter).is_err());
+        mend_hours(&mut meter);
+        assert!(hours("visit.hours", &mut meter).is_ok() && meter.typed == "as typed");
+    }
+
+    #[test]
+    fn every_field_has_a_code_of_its_own_and_a_range() {
+        let mut codes: Vec<String> = Field::ALL.iter().map(|f| f.code()).collect();
+        codes.sort();
+        codes.dedup();
+        assert_eq!(codes.len(), Field::ALL.len());
+        for field in Field::ALL {
+            let (low, high) = field.range();
+            assert!(low.base() < high.base() && low.kind() == field.kind());
+        }
+    }
+}

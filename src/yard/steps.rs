@@ -272,19 +272,3 @@ pub fn steps(unit: &Unit) -> &'static [Step] {
         TWO_PATHS
     }
 }
-
-/// Looks that belong to no step, for a test.
-#[cfg(test)]
-pub(super) fn orphans() -> Vec<&'static str> {
-    let all: Vec<&str> = ONE_PATH
-        .iter()
-        .chain(TWO_PATHS)
-        .flat_map(|step| step.looks)
-        .copied()
-        .collect();
-    super::look::LOOKS
-        .iter()
-        .map(|look| look.id)
-        .filter(|id| !all.contains(id))
-        .collect()
-}
