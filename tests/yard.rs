@@ -657,8 +657,8 @@ fn closed_cases_move_base_rates_by_class_and_can_be_taken_back() {
     let total: f64 = faults::all().iter().map(|f| f.per_hundred).sum();
     let catalogue = |id| faults::find(id).map_or(0.0, |f| f.per_hundred);
     let share = |id| 100.0 * catalogue(id) / total;
-    let roller = learn::rates_for(&units[0], &units, &visits, &learning);
-    let loader = learn::rates_for(&units[1], &units, &visits, &learning);
+    let roller = learn::rates_for("new", units[0].class, &cases, &learning);
+    let loader = learn::rates_for("new", units[1].class, &cases, &learning);
     assert_eq!((roller.cases, roller.own_class), (2.5, 1.5));
     assert_eq!((loader.cases, loader.own_class), (2.5, 1.0));
     // Dirichlet by hand: 100 · share of the start, which the loader's case moves, and 1.5 of its own.
@@ -673,13 +673,17 @@ fn closed_cases_move_base_rates_by_class_and_can_be_taken_back() {
         assert!((sum / total - 1.0).abs() < 1e-9);
         assert!(rates.words().is_some_and(|w| w.contains("2.5 cases")));
     }
+    // A case is no evidence about itself.
+    let own = learn::rates_for("a", units[0].class, &cases, &learning);
+    assert_eq!((own.cases, own.own_class), (1.5, 0.5));
     learning.left_out.insert("a".into());
+    let fewer = learn::cases(&units, &visits, &learning);
     assert_eq!(
-        learn::rates_for(&units[0], &units, &visits, &learning).own_class,
+        learn::rates(&fewer, Some(units[0].class), &learning).own_class,
         0.5
     );
     learning.is_off = true;
-    let off = learn::rates_for(&units[0], &units, &visits, &learning);
+    let off = learn::rates(&fewer, Some(units[0].class), &learning);
     assert!(off.is_empty() && off.words().is_none());
     let table = learn::table(&cases, &Learning::default());
     assert_eq!(table.lines().count(), faults::all().len() + 1);
@@ -711,7 +715,9 @@ fn learned_rates_reach_the_ranking_and_are_said() {
     let cases: Vec<Visit> = (0..20)
         .map(|k| case(&format!("case-{k}"), "u", "motor-worn", true, ""))
         .collect();
-    let rates = learn::rates_for(&unit, [&unit], &cases, &Learning::default());
+    let learning = Learning::default();
+    let cases = learn::cases([&unit], &cases, &learning);
+    let rates = learn::rates_for("v", unit.class, &cases, &learning);
     let mut session = Session::default();
     session.learn(rates);
     let taught = session.assess(&unit, &visit, &[]);

@@ -21,6 +21,7 @@ use super::screens::units::Units;
 use super::shell::{Bar, Notices};
 use super::state::{Action, State};
 use super::tracking::TrackingScreen;
+use super::yard::{LearnedScreen, Others, WearScreen, YardScreen};
 
 /// The state at the start: what is on the shelf, and where the address points.
 fn first_state(keeper: &RefCell<Keeper>) -> State {
@@ -94,6 +95,13 @@ fn title(state: &State) -> String {
     let what = match &state.route {
         Route::Units => None,
         Route::Settings => Some("Settings".to_owned()),
+        Route::Learned => Some("Learned".to_owned()),
+        Route::Wear(id) => name(id).map(|name| format!("Wear, {name}")),
+        Route::Yard(id) => state
+            .visits
+            .get(id)
+            .and_then(|visit| name(&visit.unit))
+            .map(|name| format!("Yard check, {name}")),
         Route::Unit(id) => name(id),
         Route::Call(id) => state
             .visits
@@ -177,6 +185,24 @@ pub fn App() -> Html {
     }
 }
 
+fn yard(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Html> {
+    let visit = state.visits.get(id)?;
+    let unit = state.units.get(&visit.unit)?;
+    let mut others = state.visits_of(&visit.unit);
+    others.retain(|other| other.id != visit.id);
+    Some(html! {
+        <YardScreen
+            key={format!("{id}-yard")}
+            unit={unit.clone()}
+            visit={visit.clone()}
+            others={Others(others)}
+            instruments={state.instruments.clone()}
+            prefs={state.settings.units.clone()}
+            on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
+        />
+    })
+}
+
 fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
     let missing = |what: &str| {
         html! {
@@ -190,6 +216,29 @@ fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
     match &state.route {
         Route::Units => html! { <Units state={state.clone()} deed={deed.clone()} /> },
         Route::Settings => html! { <SettingsScreen state={state.clone()} deed={deed.clone()} /> },
+        Route::Learned => html! { <LearnedScreen state={state.clone()} deed={deed.clone()} /> },
+        Route::Wear(id) => match state.units.get(id) {
+            Some(unit) => html! {
+                <WearScreen
+                    key={format!("{id}-wear")}
+                    unit={unit.clone()}
+                    visits={Others(state.visits_of(id))}
+                    instruments={state.instruments.clone()}
+                    prefs={state.settings.units.clone()}
+                />
+            },
+            None => missing("unit"),
+        },
+        Route::Yard(id) => yard(state, deed, id).unwrap_or_else(|| missing("yard check")),
+        // A yard check is no call: whoever links to it as one comes to its sheet.
+        Route::Call(id)
+            if state
+                .visits
+                .get(id)
+                .is_some_and(|visit| visit.is_yard_check()) =>
+        {
+            yard(state, deed, id).unwrap_or_else(|| missing("yard check"))
+        }
         Route::Unit(id) => match state.units.get(id) {
             Some(unit) => html! {
                 <Profile key={id.clone()} unit={unit.clone()} state={state.clone()} deed={deed.clone()} />

@@ -7,6 +7,7 @@ use super::state::{Action, State};
 use crate::record::ImportPlan;
 use crate::store::{Quarantined, RecordKey as Key, Trashed};
 use crate::unit::MachineClass;
+use crate::yard::Leg;
 
 /// A wish of the person, from a screen to the app.
 #[derive(Clone, Debug)]
@@ -24,6 +25,8 @@ pub enum Deed {
     },
     /// A new call on a unit, by the id of the unit.
     StartCall(String),
+    /// A new yard check of a unit, by the id of the unit.
+    StartYardCheck(String, Leg),
     /// Takes a unit away with its calls.
     RemoveUnit(String),
     /// Takes a call away.

@@ -16,6 +16,7 @@ use super::state::{About, Action, Question, Save, State, Written};
 use crate::record::{IdOf, Visit};
 use crate::store::RecordKey;
 use crate::unit::{MachineClass, Ticks, Unit};
+use crate::yard::Leg;
 
 /// From the last edit to the write.
 const SAVE_AFTER_MS: i32 = 300;
@@ -145,8 +146,13 @@ impl Hands {
                 }
             }
             Route::Unit(unit) => self.ask_about_last(state, unit),
-            // The neutral and the tracking are worked out on their own screens.
-            Route::Neutral(_) | Route::Tracking(_) | Route::Settings => {}
+            // The neutral, the tracking and the yard check are worked out on their own screens.
+            Route::Neutral(_)
+            | Route::Tracking(_)
+            | Route::Yard(_)
+            | Route::Wear(_)
+            | Route::Learned
+            | Route::Settings => {}
         }
     }
 
@@ -182,6 +188,7 @@ impl Hands {
             Deed::Put(action) => self.put(action),
             Deed::NewUnit { name, class, start } => self.new_unit(&name, class, start),
             Deed::StartCall(unit) => self.start_call(unit),
+            Deed::StartYardCheck(unit, leg) => self.start_yard_check(unit, leg),
             Deed::RemoveUnit(id) => self.remove_unit(&id),
             Deed::RemoveVisit(id) => {
                 self.flush();
@@ -254,6 +261,16 @@ impl Hands {
             ..Visit::default()
         };
         let route = Route::Call(visit.id.clone());
+        self.put(Action::PutVisit(Box::new(visit)));
+        go(&route);
+    }
+
+    fn start_yard_check(&self, unit: String, leg: Leg) {
+        let visits = self.state().visits_of(&unit);
+        let last = visits.iter().find(|visit| visit.is_yard_check());
+        let id = ids::fresh(IdOf::Visit);
+        let visit = super::yard::start(id, unit, clock::now(), leg, last.map(|visit| &**visit));
+        let route = Route::Yard(visit.id.clone());
         self.put(Action::PutVisit(Box::new(visit)));
         go(&route);
     }

@@ -18,6 +18,7 @@ pub mod screens;
 mod shell;
 pub mod state;
 pub mod tracking;
+pub mod yard;
 
 use wasm_bindgen::{JsCast, JsValue};
 

@@ -16,6 +16,12 @@ pub enum Route {
     Neutral(String),
     /// Straight tracking, within one call.
     Tracking(String),
+    /// A yard check, by the id of its visit.
+    Yard(String),
+    /// The wear of a unit over its hours, by the id of the unit.
+    Wear(String),
+    /// What closed cases taught.
+    Learned,
     /// Units of measure, instruments, data.
     Settings,
 }
@@ -26,11 +32,17 @@ impl Route {
         let path = hash.trim_start_matches('#').trim_matches('/');
         match path.split_once('/') {
             None if path == "settings" => Route::Settings,
+            None if path == "learned" => Route::Learned,
             Some(("unit", id)) if is_id(id) => Route::Unit(id.to_owned()),
+            Some(("unit", rest)) => match rest.split_once('/') {
+                Some((id, "wear")) if is_id(id) => Route::Wear(id.to_owned()),
+                _ => Route::Units,
+            },
             Some(("call", id)) if is_id(id) => Route::Call(id.to_owned()),
             Some(("call", rest)) => match rest.split_once('/') {
                 Some((id, "neutral")) if is_id(id) => Route::Neutral(id.to_owned()),
                 Some((id, "tracking")) if is_id(id) => Route::Tracking(id.to_owned()),
+                Some((id, "yard")) if is_id(id) => Route::Yard(id.to_owned()),
                 _ => Route::Units,
             },
             _ => Route::Units,
@@ -45,6 +57,9 @@ impl Route {
             Route::Call(id) => format!("#/call/{id}"),
             Route::Neutral(id) => format!("#/call/{id}/neutral"),
             Route::Tracking(id) => format!("#/call/{id}/tracking"),
+            Route::Yard(id) => format!("#/call/{id}/yard"),
+            Route::Wear(id) => format!("#/unit/{id}/wear"),
+            Route::Learned => "#/learned".to_owned(),
             Route::Settings => "#/settings".to_owned(),
         }
     }

@@ -5,9 +5,11 @@
 //! error); 3 some visits could not be assessed (each has its line, with the reason).
 
 use lowside::assessment::Assessment;
+use lowside::ranking::Session;
 use lowside::readings::instrument::Instrument;
 use lowside::record::{Export, Visit, limits};
 use lowside::unit::Unit;
+use lowside::yard::learn::{self, Rates};
 use serde::Serialize;
 use std::collections::BTreeMap;
 use std::io::{self, ErrorKind, Read, Write};
@@ -122,11 +124,17 @@ fn assess_all(export: &Export) -> Result<u8, End> {
         .iter()
         .map(|unit| (unit.id.as_str(), unit))
         .collect();
+    // The file's own closed cases teach as they do in the app.
+    let learning = export.settings.clone().unwrap_or_default().learning;
+    let cases = learn::cases(&export.units, &export.visits, &learning);
     let mut out = io::stdout().lock();
     let mut code = 0;
     for visit in &export.visits {
         let unit = units.get(visit.unit.as_str()).copied();
-        let outcome = outcome(unit, visit, &export.instruments);
+        let rates = unit.map_or_else(Rates::default, |unit| {
+            learn::rates_for(&visit.id, unit.class, &cases, &learning)
+        });
+        let outcome = outcome(unit, visit, &export.instruments, rates);
         if let Outcome::Failed { error } = &outcome {
             code = 3;
             let _ = writeln!(io::stderr(), "assess: visit {}: {error}", visit.id);
@@ -146,7 +154,12 @@ fn assess_all(export: &Export) -> Result<u8, End> {
     Ok(code)
 }
 
-fn outcome(unit: Option<&Unit>, visit: &Visit, instruments: &[Instrument]) -> Outcome {
+fn outcome(
+    unit: Option<&Unit>,
+    visit: &Visit,
+    instruments: &[Instrument],
+    rates: Rates,
+) -> Outcome {
     let Some(unit) = unit else {
         return Outcome::Failed {
             error: format!(
@@ -155,7 +168,9 @@ fn outcome(unit: Option<&Unit>, visit: &Visit, instruments: &[Instrument]) -> Ou
             ),
         };
     };
-    let assessment = lowside::ranking::assess(unit, visit, instruments);
+    let mut session = Session::default();
+    session.learn(rates);
+    let assessment = session.assess(unit, visit, instruments);
     if is_finite(&assessment) {
         Outcome::Assessed(Box::new(assessment))
     } else {

@@ -187,17 +187,20 @@ pub fn rates(cases: &[Case], class: Option<MachineClass>, learning: &Learning) -
     }
 }
 
-/// Rates for a unit, from everything that is kept.
-pub fn rates_for<'a>(
-    unit: &Unit,
-    units: impl IntoIterator<Item = &'a Unit>,
-    visits: impl IntoIterator<Item = &'a Visit>,
-    learning: &Learning,
-) -> Rates {
-    if learning.is_off {
-        return Rates::default();
+/// Rates that hold for a visit to a machine of this class. A case is no evidence about itself: where the visit is one of the
+/// cases, the others alone count.
+#[must_use]
+pub fn rates_for(visit: &str, class: MachineClass, cases: &[Case], learning: &Learning) -> Rates {
+    if cases.iter().any(|case| case.visit == visit) {
+        let others: Vec<Case> = cases
+            .iter()
+            .filter(|case| case.visit != visit)
+            .cloned()
+            .collect();
+        rates(&others, Some(class), learning)
+    } else {
+        rates(cases, Some(class), learning)
     }
-    rates(&cases(units, visits, learning), Some(unit.class), learning)
 }
 
 /// The learned rates as a table to hand on: one line a cause, RFC 4180.

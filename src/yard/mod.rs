@@ -39,4 +39,4 @@ pub use report::{Grade, Judged, NEVER_CHECKED, Report, Verdict, report};
 pub use robust::{Robust, robust, student_quantile};
 pub use sheet::{Leg, YardSheet};
 pub use steps::{MINUTES, Step, steps};
-pub use words::{ABOUT_COUPLINGS, ABOUT_LIMITS, percent};
+pub use words::{ABOUT_COUPLINGS, ABOUT_LIMITS, number, percent};

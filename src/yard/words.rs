@@ -26,6 +26,16 @@ pub fn percent(share: f64, prefs: &UnitPrefs) -> String {
     }
 }
 
+/// A bare number with one decimal, in the shop's decimal mark.
+#[must_use]
+pub fn number(value: f64, prefs: &UnitPrefs) -> String {
+    let text = format!("{value:.1}");
+    match prefs.mark() {
+        DecimalMark::Comma => text.replace('.', ","),
+        DecimalMark::Point => text,
+    }
+}
+
 /// Prints figures of the sheet.
 pub(super) struct Printer<'a> {
     pub prefs: &'a UnitPrefs,

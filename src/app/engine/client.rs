@@ -32,6 +32,7 @@ struct Request<'a> {
     unit: &'a crate::unit::Unit,
     visit: &'a crate::record::Visit,
     instruments: &'a [crate::readings::instrument::Instrument],
+    rates: &'a crate::yard::learn::Rates,
 }
 
 enum Place {
@@ -142,6 +143,7 @@ impl Engine {
             unit: &question.unit,
             visit: &question.visit,
             instruments: &question.instruments,
+            rates: &question.rates,
         });
         let Ok(json) = json else {
             return self.give_up("The unit could not be handed to the calculation.");
@@ -163,6 +165,7 @@ impl Engine {
         let engine = self.clone();
         let timer = Timer::once(SETTLE_MS, move || {
             let mut session = crate::ranking::Session::default();
+            session.learn((*question.rates).clone());
             let mut assessment =
                 session.assess(&question.unit, &question.visit, &question.instruments);
             assessment.advice = Some(crate::next::advise(

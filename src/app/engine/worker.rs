@@ -15,6 +15,7 @@ use crate::ranking::Session;
 use crate::readings::instrument::Instrument;
 use crate::record::Visit;
 use crate::unit::Unit;
+use crate::yard::learn::Rates;
 
 /// What the page asks.
 #[derive(Deserialize)]
@@ -23,6 +24,8 @@ struct Request {
     unit: Unit,
     visit: Visit,
     instruments: Vec<Instrument>,
+    #[serde(default)]
+    rates: Rates,
 }
 
 /// What is to be done next about the question at hand.
@@ -46,6 +49,7 @@ impl Desk {
     fn work(&mut self) -> Option<Reply> {
         match self.step.take()? {
             Step::Look(r) => {
+                self.session.learn(r.rates.clone());
                 let look = self.session.look(&r.unit, &r.visit, &r.instruments);
                 let reply = look.map(|look| answer(r.seq, look, true));
                 self.step = Some(Step::Assess(r));

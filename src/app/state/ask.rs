@@ -1,5 +1,6 @@
 //! What can be asked of the state.
 
+use std::collections::{BTreeMap, BTreeSet};
 use std::rc::Rc;
 
 use super::{Question, State};
@@ -7,7 +8,8 @@ use crate::assessment::Assessment;
 use crate::demo;
 use crate::record::Visit;
 use crate::store::RecordKey as Key;
-use crate::unit::Unit;
+use crate::unit::{MachineClass, Unit};
+use crate::yard::learn::{self, Rates};
 
 impl State {
     /// Plain words for a record.
@@ -86,10 +88,40 @@ impl State {
         let visit = self.visits.get(visit)?.clone();
         let unit = self.units.get(&visit.unit)?.clone();
         Some(Question {
+            rates: self.rates_for(&visit, &unit),
             unit,
             visit,
             instruments: self.instruments.clone(),
         })
+    }
+
+    /// Base rates that hold for a visit: what the shop's other closed cases taught about machines of its class.
+    fn rates_for(&self, visit: &Visit, unit: &Unit) -> Rc<Rates> {
+        if visit.closed.is_some() {
+            let (class, learning) = (unit.class, &self.settings.learning);
+            return Rc::new(learn::rates_for(&visit.id, class, &self.cases, learning));
+        }
+        self.rates.get(&unit.class).cloned().unwrap_or_default()
+    }
+
+    /// Learns anew from what is closed.
+    pub(super) fn relearn(&mut self) {
+        let units = self.units.values().map(|unit| &**unit);
+        let visits = self.visits.values().map(|visit| &**visit);
+        let learning = &self.settings.learning;
+        let cases = learn::cases(units, visits, learning);
+        let classes: BTreeSet<MachineClass> = self.units.values().map(|unit| unit.class).collect();
+        let made: BTreeMap<MachineClass, Rc<Rates>> = classes
+            .into_iter()
+            .map(|class| {
+                let rates = Rc::new(learn::rates(&cases, Some(class), learning));
+                // The same rates stay the same object, so that nothing is calculated anew.
+                let before = self.rates.get(&class).filter(|before| **before == rates);
+                (class, before.cloned().unwrap_or(rates))
+            })
+            .collect();
+        self.rates = made;
+        self.cases = Rc::new(cases);
     }
 
     /// The last assessment of a visit, and whether a better one is to come: something was edited since, or it is a first look.

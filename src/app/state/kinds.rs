@@ -8,6 +8,7 @@ use crate::readings::instrument::Instrument;
 use crate::record::{Settings, Visit};
 use crate::store::{Quarantined, RecordKey as Key, Trashed};
 use crate::unit::Unit;
+use crate::yard::learn::Rates;
 
 /// Whether everything typed is on the shelf.
 #[derive(Clone, Debug, Default, PartialEq, Eq)]
@@ -61,6 +62,8 @@ pub struct Question {
     pub visit: Rc<Visit>,
     /// Instruments of the shop.
     pub instruments: Rc<Vec<Instrument>>,
+    /// Base rates learned from the shop's closed cases.
+    pub rates: Rc<Rates>,
 }
 
 impl PartialEq for Question {
@@ -69,6 +72,7 @@ impl PartialEq for Question {
         Rc::ptr_eq(&self.unit, &other.unit)
             && (Rc::ptr_eq(&self.visit, &other.visit) || self.visit.says_the_same(&other.visit))
             && Rc::ptr_eq(&self.instruments, &other.instruments)
+            && (Rc::ptr_eq(&self.rates, &other.rates) || self.rates == other.rates)
     }
 }
 

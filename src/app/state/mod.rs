@@ -16,7 +16,8 @@ use super::route::Route;
 use crate::readings::instrument::Instrument;
 use crate::record::{Settings, Visit};
 use crate::store::RecordKey as Key;
-use crate::unit::Unit;
+use crate::unit::{MachineClass, Unit};
+use crate::yard::learn::{Case, Rates};
 
 /// Everything the screens show.
 #[derive(Clone, Debug, Default, PartialEq)]
@@ -49,6 +50,10 @@ pub struct State {
     pub notices: Vec<Notice>,
     /// Last short message for the live region, with a number so that the same words are spoken again.
     pub said: (u32, String),
+    /// Closed cases that teach.
+    pub cases: Rc<Vec<Case>>,
+    /// What they taught, for each class of machine that there is.
+    pub rates: BTreeMap<MachineClass, Rc<Rates>>,
     /// Last assessment of each visit.
     pub answers: BTreeMap<String, Answer>,
     /// Why there is no assessment, where the engine cannot run.
@@ -128,14 +133,21 @@ impl State {
 
     fn put_unit(&mut self, unit: Unit) {
         let key = Key::Unit(unit.id.clone());
-        self.units.insert(unit.id.clone(), Rc::new(unit));
+        let before = self.units.insert(unit.id.clone(), Rc::new(unit.clone()));
         self.soil(key);
+        if before.is_none_or(|b| (b.class, &b.name) != (unit.class, &unit.name)) {
+            self.relearn();
+        }
     }
 
     fn put_visit(&mut self, visit: Visit) {
         let key = Key::Visit(visit.id.clone());
-        self.visits.insert(visit.id.clone(), Rc::new(visit));
+        let closed = visit.closed.clone();
+        let before = self.visits.insert(visit.id.clone(), Rc::new(visit));
         self.soil(key);
+        if before.as_ref().and_then(|before| before.closed.as_ref()) != closed.as_ref() {
+            self.relearn();
+        }
     }
 
     fn soil(&mut self, key: Key) {
@@ -159,6 +171,7 @@ impl State {
             self.dirty.remove(&Key::Settings);
             self.take_settings(settings);
         }
+        self.relearn();
         self.look_clean();
     }
 
@@ -167,7 +180,10 @@ impl State {
         if *self.instruments != settings.instruments {
             self.instruments = Rc::new(settings.instruments.clone());
         }
-        self.settings = Rc::new(settings);
+        let before = std::mem::replace(&mut self.settings, Rc::new(settings));
+        if before.learning != self.settings.learning {
+            self.relearn();
+        }
     }
 
     fn look_clean(&mut self) {
@@ -188,6 +204,7 @@ impl State {
             }
             Key::Settings => {}
         }
+        self.relearn();
         self.settle(key);
         self.look_clean();
     }

@@ -16,6 +16,7 @@ use self::instruments::Instruments;
 use self::measures::Measures;
 use crate::app::deed::{Deed, Snapshot};
 use crate::app::parts::{Choice, Opt, Section};
+use crate::app::route::Route;
 use crate::app::state::Action;
 use crate::record::{Settings, Theme};
 
@@ -71,6 +72,16 @@ pub fn SettingsScreen(props: &SettingsProps) -> Html {
                             value={props.state.settings.theme}
                             on_change={props.change(|settings, theme| settings.theme = theme)}
                         />
+                    </Section>
+                    <Section id="learning" title="Learned from closed calls" state={match props.state.cases.len() {
+                        0 => "nothing yet".to_owned(),
+                        1 => "1 case".to_owned(),
+                        cases => format!("{cases} cases"),
+                    }}>
+                        <p>{ "Closed calls with a cause move how often each cause is expected. See which, leave cases out, or switch it off." }</p>
+                        <div class="actions">
+                            <a class="button" href={Route::Learned.href()} data-testid="open-learned">{ "What was learned" }</a>
+                        </div>
                     </Section>
                     <Data state={props.state.clone()} deed={props.deed.clone()} />
                     <About ..props.clone() />

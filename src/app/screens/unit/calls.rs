@@ -7,7 +7,7 @@ use crate::app::deed::Deed;
 use crate::app::parts::{Confirm, Section};
 use crate::app::platform::clock;
 use crate::app::route::Route;
-use crate::app::screens::units::{closing_words, standing_words};
+use crate::app::screens::units::{closing_words, standing_words, yard_words};
 
 /// The list.
 #[component]
@@ -28,6 +28,7 @@ pub fn Calls(props: &ProfileProps) -> Html {
             <ul class="rows">
                 { for visits.iter().map(|visit| {
                     let words = match &visit.closed {
+                        _ if visit.is_yard_check() => yard_words(visit, &props.unit, &props.state),
                         Some(closing) => closing_words(closing),
                         None => {
                             let (assessment, _) = props.state.answer(&visit.id);

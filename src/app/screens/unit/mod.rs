@@ -22,6 +22,7 @@ use crate::app::parts::{Confirm, Icon, Section, Select, Shape, TextField};
 use crate::app::route::Route;
 use crate::app::screens::units::class_options;
 use crate::app::state::Action;
+use crate::app::yard::YardEntry;
 use crate::quantity::UnitPrefs;
 use crate::record::limits;
 use crate::unit::{MachineClass, Unit};
@@ -72,7 +73,7 @@ pub fn Profile(props: &ProfileProps) -> Html {
     let open = state
         .visits_of(&unit.id)
         .into_iter()
-        .find(|visit| visit.closed.is_none());
+        .find(|visit| visit.closed.is_none() && !visit.is_yard_check());
     let on_start = {
         let (deed, id) = (props.deed.clone(), unit.id.clone());
         Callback::from(move |_: MouseEvent| deed.emit(Deed::StartCall(id.clone())))
@@ -147,6 +148,7 @@ pub fn Profile(props: &ProfileProps) -> Html {
                             testid="unit-note"
                         />
                     </Section>
+                    <YardEntry unit={unit.clone()} state={state.clone()} deed={props.deed.clone()} />
                     <Calls unit={unit.clone()} state={state.clone()} deed={props.deed.clone()} />
                     <Confirm
                         words="Remove this unit"

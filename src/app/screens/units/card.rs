@@ -7,10 +7,12 @@ use crate::app::deed::{Deed, Snapshot};
 use crate::app::parts::{Icon, Shape};
 use crate::app::platform::clock;
 use crate::app::route::Route;
+use crate::app::yard::verdict_words;
 use crate::assessment::Assessment;
 use crate::faults::FaultId;
 use crate::record::{Closing, Visit};
 use crate::unit::Unit;
+use crate::yard;
 
 /// Properties of [`UnitCard`].
 #[derive(Clone, PartialEq, Properties)]
@@ -80,6 +82,21 @@ pub fn standing_words(visit: &Visit, assessment: Option<&Assessment>) -> String 
     }
 }
 
+/// A yard check in a line: which way, and its verdict.
+pub fn yard_words(visit: &Visit, unit: &Unit, state: &Snapshot) -> String {
+    let visits = state.visits_of(&unit.id);
+    let others: Vec<&Visit> = visits
+        .iter()
+        .map(|other| &**other)
+        .filter(|other| other.id != visit.id)
+        .collect();
+    let prefs = &state.settings.units;
+    let made = yard::report(unit, visit, &others, &state.instruments, prefs);
+    let leg = visit.yard.as_ref().map(|sheet| sheet.leg);
+    let leg = leg.unwrap_or_default().words().to_lowercase();
+    format!("Yard check, {leg}. {}", verdict_words(&made))
+}
+
 /// The card.
 #[component]
 pub fn UnitCard(props: &UnitCardProps) -> Html {
@@ -91,6 +108,11 @@ pub fn UnitCard(props: &UnitCardProps) -> Html {
     };
     let open = last.as_ref().filter(|visit| visit.closed.is_none());
     let line = last.as_ref().map(|visit| match &visit.closed {
+        _ if visit.is_yard_check() => (
+            yard_words(visit, unit, state),
+            "Yard check",
+            clock::tell(&visit.opened),
+        ),
         Some(closing) => (closing_words(closing), "Closed", clock::tell(&closing.when)),
         None => {
             let (assessment, _) = state.answer(&visit.id);

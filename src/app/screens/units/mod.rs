@@ -4,7 +4,7 @@ mod card;
 mod new_unit;
 mod welcome;
 
-pub use self::card::{closing_words, standing_words};
+pub use self::card::{closing_words, standing_words, yard_words};
 pub use self::new_unit::class_options;
 
 use yew::{AttrValue, Callback, Html, Properties, component, html, use_state};
