@@ -146,7 +146,7 @@ impl Hands {
             }
             Route::Unit(unit) => self.ask_about_last(state, unit),
             // The neutral and the tracking are worked out on their own screens.
-            Route::Neutral(_) | Route::Tracking(_) | Route::Settings => {}
+            Route::Neutral(_) | Route::Tracking(_) | Route::Bench(_) | Route::Settings => {}
         }
     }
 

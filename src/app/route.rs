@@ -16,6 +16,8 @@ pub enum Route {
     Neutral(String),
     /// Straight tracking, within one call.
     Tracking(String),
+    /// The bench sheet of a pump or motor, within one call.
+    Bench(String),
     /// Units of measure, instruments, data.
     Settings,
 }
@@ -30,6 +32,7 @@ impl Route {
             Some(("call", id)) if is_id(id) => Route::Call(id.to_owned()),
             Some(("call", rest)) => match rest.split_once('/') {
                 Some((id, "neutral")) if is_id(id) => Route::Neutral(id.to_owned()),
+                Some((id, "bench")) if is_id(id) => Route::Bench(id.to_owned()),
                 Some((id, "tracking")) if is_id(id) => Route::Tracking(id.to_owned()),
                 _ => Route::Units,
             },
@@ -45,6 +48,7 @@ impl Route {
             Route::Call(id) => format!("#/call/{id}"),
             Route::Neutral(id) => format!("#/call/{id}/neutral"),
             Route::Tracking(id) => format!("#/call/{id}/tracking"),
+            Route::Bench(id) => format!("#/call/{id}/bench"),
             Route::Settings => "#/settings".to_owned(),
         }
     }

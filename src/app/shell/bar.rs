@@ -18,7 +18,9 @@ pub struct BarProps {
 fn unit_at_hand(state: &State) -> Option<(String, String)> {
     let id = match &state.route {
         Route::Unit(id) => id,
-        Route::Call(id) | Route::Neutral(id) | Route::Tracking(id) => &state.visits.get(id)?.unit,
+        Route::Call(id) | Route::Neutral(id) | Route::Tracking(id) | Route::Bench(id) => {
+            &state.visits.get(id)?.unit
+        }
         Route::Units | Route::Settings => return None,
     };
     Some((id.clone(), state.units.get(id)?.name.clone()))

@@ -282,7 +282,13 @@ struct Task {
     at: Vec<usize>,
 }
 
-fn flow_task(points: &[Point], setup: &Setup, losses: &[Loss], v0: f64) -> Result<Task, NoFit> {
+fn flow_task(
+    points: &[Point],
+    setup: &Setup,
+    losses: &[Loss],
+    v0: f64,
+    gauged: &impl Fn(Channel) -> Gauged,
+) -> Result<Task, NoFit> {
     let mut observations = Vec::new();
     let mut at = Vec::new();
     for s in states(points, setup)? {
@@ -290,7 +296,7 @@ fn flow_task(points: &[Point], setup: &Setup, losses: &[Loss], v0: f64) -> Resul
         let Ok(flow) = setup.layout.high_flow(setup.subject, &point.means) else {
             continue;
         };
-        let speed = point.scatter.get(&Channel::Speed).copied().unwrap_or(0.0);
+        let speed = chance(point, Channel::Speed, gauged(Channel::Speed));
         let by_speed = v0 * LITRE * speed;
         let by_flow = flow_chance(point).unwrap_or(0.0);
         observations.push(Observation {
@@ -317,7 +323,12 @@ fn flow_task(points: &[Point], setup: &Setup, losses: &[Loss], v0: f64) -> Resul
     Ok(Task { observations, at })
 }
 
-fn torque_task(points: &[Point], setup: &Setup, volume: f64, gauge: Gauged) -> Result<Task, NoFit> {
+fn torque_task(
+    points: &[Point],
+    setup: &Setup,
+    volume: f64,
+    gauged: &impl Fn(Channel) -> Gauged,
+) -> Result<Task, NoFit> {
     const LOSSES: &[Loss] = &[Loss::Viscous, Loss::Dry, Loss::Constant];
     let mut observations = Vec::new();
     let mut at = Vec::new();
@@ -327,9 +338,10 @@ fn torque_task(points: &[Point], setup: &Setup, volume: f64, gauge: Gauged) -> R
             .layout
             .torque(setup.subject, &point.means, setup.charge_displacement);
         let Ok(torque) = torque else { continue };
-        let pressure = point.scatter.get(&Channel::High).copied().unwrap_or(0.0);
+        let pressure = chance(point, Channel::High, gauged(Channel::High));
         let by_pressure = theoretical_torque(volume, pressure);
-        let by_torque = chance(point, Channel::Torque, gauge).max(1e-3 * torque.abs().max(1.0));
+        let by_torque = chance(point, Channel::Torque, gauged(Channel::Torque))
+            .max(1e-3 * torque.abs().max(1.0));
         observations.push(Observation {
             row: torque_row(setup.subject, LOSSES, s.n, s.dp, s.mu),
             seen: torque - theoretical_torque(volume, s.dp),
@@ -456,10 +468,10 @@ pub fn losses(
         Loss::Turbulent,
     ];
     let flow_of = |losses: &[Loss]| {
-        let task = flow_task(points, setup, losses, v0)?;
+        let task = flow_task(points, setup, losses, v0, &gauged)?;
         let moved = others
             .iter()
-            .map(|(_, points, setup)| flow_task(points, setup, losses, v0));
+            .map(|(_, points, setup)| flow_task(points, setup, losses, v0, &gauged));
         fitted(losses, &task, moved)
     };
     let mut flow = flow_of(&plain);
@@ -480,14 +492,14 @@ pub fn losses(
     // The displacement of the torque fit moves with the flow meter, so it is found anew for each common cause.
     let volume_of = |points: &[Point], setup: &Setup| {
         let losses = flow.as_ref().map_or(&plain[..], |fit| &fit.losses[..]);
-        let own = flow_task(points, setup, losses, v0).ok();
+        let own = flow_task(points, setup, losses, v0, &gauged).ok();
         let own = own
             .and_then(|task| solve(&task.observations))
             .map(|e| e.x[0]);
         own.filter(|_| flow.is_ok()).or(setup.plate)
     };
     let torque_of = |points: &[Point], setup: &Setup| match volume_of(points, setup) {
-        Some(volume) => torque_task(points, setup, volume, gauged(Channel::Torque)),
+        Some(volume) => torque_task(points, setup, volume, &gauged),
         None => Err(NoFit::Alike),
     };
     let torque_losses = [Loss::Viscous, Loss::Dry, Loss::Constant];

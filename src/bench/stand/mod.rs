@@ -16,6 +16,7 @@ pub mod items;
 pub mod judge;
 pub mod layout;
 pub mod least_squares;
+pub mod paper;
 pub mod paste;
 pub mod point;
 pub mod report;
