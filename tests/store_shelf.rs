@@ -492,7 +492,7 @@ fn a_tab_of_the_older_version_stops_writing_when_a_newer_one_has_written() {
     };
     let text = Envelope {
         kind: RecordKind::Unit,
-        schema: SCHEMA + 1,
+        schema: u64::from(SCHEMA) + 1,
         stamp,
         saved_at: NOW.into(),
         body,
@@ -502,7 +502,7 @@ fn a_tab_of_the_older_version_stops_writing_when_a_newer_one_has_written() {
     store.put("lowside/v1/unit/u1", &text).expect("put");
     assert_eq!(
         refused(old.save_unit(&unit("T-15"), NOW)),
-        NotSaved::Newer(SCHEMA + 1)
+        NotSaved::Newer(u64::from(SCHEMA) + 1)
     );
     assert_eq!(store.get("lowside/v1/unit/u1"), Ok(Some(text)));
 }
@@ -567,7 +567,7 @@ fn before_an_older_format_is_replaced_its_text_is_kept_once() {
             .expect("there"),
     )
     .expect("opened");
-    assert_eq!((now.schema, now.stamp.rev), (SCHEMA + 1, 3));
+    assert_eq!((now.schema, now.stamp.rev), (u64::from(SCHEMA) + 1, 3));
 }
 
 #[test]

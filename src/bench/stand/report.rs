@@ -4,7 +4,7 @@
 use super::analysis::{Quantity, Setup, theoretical_flow};
 use super::balance::{Balance, balance};
 use super::channel::{Channel, Subject};
-use super::fit::{Loss, LossFit, REFERENCE, losses};
+use super::fit::{Loss, LossFit, losses};
 use super::items::{Entry, Item, ItemId, Practice, of};
 use super::judge::{Decision, Limits, Measurand, decide, usual};
 use super::point::{Point, points, repeated};
@@ -565,11 +565,4 @@ fn item_proposals(sheet: &BenchSheet) -> Vec<Proposal> {
         })
     })
     .collect()
-}
-
-/// Viscosity of the rated state: at the mean temperature of the run.
-#[must_use]
-pub fn run_viscosity(report: &BenchReport) -> Option<f64> {
-    let (low, high) = report.losses.covered.viscosity;
-    (low > 0.0).then(|| 0.5 * (low + high)).or(Some(REFERENCE))
 }
