@@ -510,11 +510,7 @@ fn a_loss_fit_is_refused_until_the_layout_is_stated() {
         panic!("{:?}", silent.losses.flow);
     };
     assert!(gaps.contains(&LayoutGap::Charge) && gaps.contains(&LayoutGap::Meter));
-    assert!(
-        silent.evaluated.points[0]
-            .get(&Quantity::Volumetric)
-            .is_none()
-    );
+    assert!(!silent.evaluated.points[0].contains_key(&Quantity::Volumetric));
     // A complete pump with its relief in the case: flow and torque are told, leakage is not.
     sheet.layout = Layout {
         charge: Some(Charge::Own),
