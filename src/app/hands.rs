@@ -149,6 +149,7 @@ impl Hands {
             // The neutral, the tracking and the yard check are worked out on their own screens.
             Route::Neutral(_)
             | Route::Tracking(_)
+            | Route::Bench(_)
             | Route::Yard(_)
             | Route::Wear(_)
             | Route::Learned

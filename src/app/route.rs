@@ -22,6 +22,8 @@ pub enum Route {
     Wear(String),
     /// What closed cases taught.
     Learned,
+    /// The bench sheet of a pump or motor, within one call.
+    Bench(String),
     /// Units of measure, instruments, data.
     Settings,
 }
@@ -41,6 +43,7 @@ impl Route {
             Some(("call", id)) if is_id(id) => Route::Call(id.to_owned()),
             Some(("call", rest)) => match rest.split_once('/') {
                 Some((id, "neutral")) if is_id(id) => Route::Neutral(id.to_owned()),
+                Some((id, "bench")) if is_id(id) => Route::Bench(id.to_owned()),
                 Some((id, "tracking")) if is_id(id) => Route::Tracking(id.to_owned()),
                 Some((id, "yard")) if is_id(id) => Route::Yard(id.to_owned()),
                 _ => Route::Units,
@@ -60,6 +63,7 @@ impl Route {
             Route::Yard(id) => format!("#/call/{id}/yard"),
             Route::Wear(id) => format!("#/unit/{id}/wear"),
             Route::Learned => "#/learned".to_owned(),
+            Route::Bench(id) => format!("#/call/{id}/bench"),
             Route::Settings => "#/settings".to_owned(),
         }
     }

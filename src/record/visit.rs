@@ -1,5 +1,6 @@
 //! A visit: one call to one unit, as it is kept.
 
+use crate::bench::stand::BenchSheet;
 use crate::readings::{Reading, Rigging, Seen};
 use crate::tracking::TrackingSheet;
 use crate::yard::YardSheet;
@@ -72,6 +73,9 @@ pub struct Visit {
     /// Hour meter at the visit.
     #[serde(skip_serializing_if = "super::neutral::Typed::is_empty")]
     pub hours: super::neutral::Typed,
+    /// The bench sheet of its pump or motor; none where nobody began one.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub bench: Option<BenchSheet>,
     /// What is entered for the closing while the call is still open.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub closing: Option<Closing>,

@@ -25,7 +25,13 @@ pub fn links(unit: &Unit, visit: &Visit) -> Html {
         "a machine with two sides that does not run straight",
         "to-tracking",
     );
-    let rooms = [Some(neutral), two_sides.then_some(tracking)];
+    let bench = (
+        Route::Bench(id.clone()),
+        "Bench stand",
+        "a sheet for its pump or motor",
+        "to-bench",
+    );
+    let rooms = [Some(neutral), two_sides.then_some(tracking), Some(bench)];
     html! {
         <nav class="panel stack" aria-label="Adjusting">
             { for rooms.into_iter().flatten().map(|(route, words, what, testid)| html! {

@@ -18,9 +18,11 @@ pub struct BarProps {
 fn unit_at_hand(state: &State) -> Option<(String, String)> {
     let id = match &state.route {
         Route::Unit(id) | Route::Wear(id) => id,
-        Route::Call(id) | Route::Neutral(id) | Route::Tracking(id) | Route::Yard(id) => {
-            &state.visits.get(id)?.unit
-        }
+        Route::Call(id)
+        | Route::Neutral(id)
+        | Route::Tracking(id)
+        | Route::Bench(id)
+        | Route::Yard(id) => &state.visits.get(id)?.unit,
         Route::Units | Route::Settings | Route::Learned => return None,
     };
     Some((id.clone(), state.units.get(id)?.name.clone()))
