@@ -161,6 +161,7 @@ impl ImportPlan {
         if let Some(theirs) = self.settings.as_ref().filter(|_| with_settings) {
             book.settings.units = theirs.units.clone();
             book.settings.theme = theirs.theme;
+            book.settings.learning.clone_from(&theirs.learning);
             book.settings.extra.extend(theirs.extra.clone());
             taken.settings_changed = true;
         }
@@ -284,5 +285,8 @@ fn differs(theirs: &Settings, ours: &Settings) -> bool {
         .extra
         .iter()
         .any(|(key, value)| ours.extra.get(key) != Some(value));
-    theirs.units != ours.units || theirs.theme != ours.theme || lacks
+    theirs.units != ours.units
+        || theirs.theme != ours.theme
+        || theirs.learning != ours.learning
+        || lacks
 }

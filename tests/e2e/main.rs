@@ -14,6 +14,7 @@ mod journeys_offline;
 mod journeys_sides;
 mod journeys_start;
 mod journeys_tracking;
+mod journeys_yard;
 mod pace;
 mod rig;
 mod shots;
