@@ -7,6 +7,8 @@
 //! build, which it may change, break off or stop.
 
 mod browser;
+mod hands;
+mod journeys_bench;
 mod journeys_call;
 mod journeys_close;
 mod journeys_neutral;
