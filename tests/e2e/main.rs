@@ -11,6 +11,7 @@ mod hands;
 mod journeys_bench;
 mod journeys_call;
 mod journeys_close;
+mod journeys_everyone;
 mod journeys_neutral;
 mod journeys_offline;
 mod journeys_sides;
