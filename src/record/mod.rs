@@ -6,6 +6,7 @@
 //!   [`RecordError`] that says where it is wrong. [`ImportPlan`] shows what taking it in would do before anything is changed.
 //! * [`limits`] says how much a record may hold; fields on a screen keep to them.
 
+pub mod backup;
 mod bench;
 mod book;
 mod check;
