@@ -50,6 +50,8 @@ async fn no_screen_shuts_anybody_out() {
         "/call/demo-v-14/neutral",
         "/call/demo-v-14/tracking",
         "/call/demo-v-14/bench",
+        "/unit/demo-t-14/wear",
+        "/learned",
         "/settings",
     ] {
         rig.go(route).await;

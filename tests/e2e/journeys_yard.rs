@@ -1,63 +1,13 @@
 //! Yard checks: out, back in with a change, wear over the hours from a file, and what closed calls teach.
 
-use std::path::PathBuf;
-
 use lowside::quantity::{Measure, Unit as InUnit};
 use lowside::record::neutral::Typed;
 use lowside::record::{Book, Closing, Export, Visit};
 use lowside::unit::{MachineClass, Unit};
 use lowside::yard::{Field, LOOKS, Leg, YardSheet};
 
-use crate::rig::{LAPTOP, PHONE, Rig, Scheme, TABLET};
-
-/// With `LOWSIDE_SHOTS` set, the screen as it is now, at three sizes, light and dark.
-async fn look(rig: &Rig, name: &str) {
-    let Some(folder) = std::env::var_os("LOWSIDE_SHOTS").map(PathBuf::from) else {
-        return;
-    };
-    std::fs::create_dir_all(&folder).expect("writable");
-    for size in [PHONE, TABLET, LAPTOP] {
-        for scheme in [Scheme::Light, Scheme::Dark] {
-            rig.set_size(size).await;
-            rig.set_scheme(scheme).await;
-            let height = rig
-                .js("return document.documentElement.scrollHeight;", vec![])
-                .await;
-            let height = height
-                .as_u64()
-                .and_then(|h| u32::try_from(h).ok())
-                .unwrap_or(size.height);
-            let file = format!("{name}-{}-{}", size.name, scheme.name());
-            rig.screenshot(&folder.join(format!("{file}.png"))).await;
-            rig.set_size(crate::rig::Size { height, ..size }).await;
-            rig.screenshot(&folder.join(format!("{file}-full.png")))
-                .await;
-        }
-    }
-    rig.set_size(TABLET).await;
-}
-
-async fn open(rig: &Rig, testid: &str) {
-    let script = "for (let at = document.querySelector(`[data-testid=\"${arguments[0]}\"]`); at; at = at.parentElement) {
-            if (at.tagName === 'DETAILS') { at.open = true; }
-        }
-        return true;";
-    rig.js(script, vec![testid.into()]).await;
-}
-
-async fn press(rig: &Rig, testid: &str) {
-    rig.by_id(testid).await;
-    open(rig, testid).await;
-    // The radio button itself is not drawn: its label is.
-    let script =
-        "document.querySelector(`[data-testid=\"${arguments[0]}\"]`).click(); return true;";
-    rig.js(script, vec![testid.into()]).await;
-}
-
-async fn type_in(rig: &Rig, testid: &str, text: &str) {
-    open(rig, testid).await;
-    rig.fill(testid, text).await;
-}
+use crate::hands::{look, open, press, type_in};
+use crate::rig::{PHONE, Rig, TABLET};
 
 /// Fills a sheet of a single-path machine: figures, then every look with its first answer.
 async fn fill(rig: &Rig, figures: &[(&str, &str)], leg: Leg) {
@@ -107,13 +57,13 @@ async fn out_and_in_are_checked_paired_and_kept() {
     // What no yard check covers stands there from the start.
     open(&rig, "not-checked").await;
     assert!(rig.text("not-checked").await.contains("Steering"));
-    look(&rig, "yard-empty").await;
+    look(&rig, "yard-empty", TABLET).await;
 
     fill(&rig, &FIGURES, Leg::Out).await;
     type_in(&rig, "yard-engine-loaded", "2320").await;
     type_in(&rig, "yard-course", "yard ramp").await;
     rig.wait_for_text("Nothing found in what was checked").await;
-    look(&rig, "yard-good").await;
+    look(&rig, "yard-good", TABLET).await;
 
     // A limit, with its source; a fault that stops; what cannot be read stays as typed.
     type_in(&rig, "yard-charge-low", "17.5").await;
@@ -129,7 +79,7 @@ async fn out_and_in_are_checked_paired_and_kept() {
         "document.querySelector('[data-testid=verdict]').textContent.includes('Do not send out')",
     )
     .await;
-    look(&rig, "yard-stop").await;
+    look(&rig, "yard-stop", TABLET).await;
     press(&rig, "look-tow-valve-shut").await;
     type_in(&rig, "yard-charge-low", "21,0").await;
     type_in(&rig, "yard-knee", "about 900").await;
@@ -159,7 +109,7 @@ async fn out_and_in_are_checked_paired_and_kept() {
     rig.by_id("changes").await;
     assert!(rig.text("changes").await.contains("coming in"));
     assert!(rig.text("yard-change").await.contains("92 h on the meter"));
-    look(&rig, "yard-in").await;
+    look(&rig, "yard-in", TABLET).await;
     assert!(!rig.scrolls_sideways().await, "one has to scroll sideways");
     rig.set_size(PHONE).await;
     assert!(!rig.scrolls_sideways().await, "one has to scroll sideways");
@@ -265,6 +215,7 @@ async fn wear_is_drawn_over_the_hours_and_closed_calls_teach_until_they_are_take
         .send_keys(file.display().to_string())
         .await
         .expect("the file is taken");
+    rig.by_id("import-take").await;
     press(&rig, "import-take").await;
     rig.wait_for_text("Saved").await;
 
@@ -279,7 +230,7 @@ async fn wear_is_drawn_over_the_hours_and_closed_calls_teach_until_they_are_take
             .await
             .contains("No projection")
     );
-    look(&rig, "wear").await;
+    look(&rig, "wear", TABLET).await;
     rig.set_size(PHONE).await;
     assert!(!rig.scrolls_sideways().await, "one has to scroll sideways");
     rig.set_size(TABLET).await;
@@ -291,7 +242,7 @@ async fn wear_is_drawn_over_the_hours_and_closed_calls_teach_until_they_are_take
     rig.by_id("learned-screen").await;
     rig.wait_for_text("3 of 3 count").await;
     assert!(rig.text("rates").await.contains("1.5"));
-    look(&rig, "learned").await;
+    look(&rig, "learned", TABLET).await;
     press(&rig, "leave-call-a").await;
     rig.wait_for_text("2 of 3 count").await;
     assert!(!rig.text("rates").await.contains("1.5"));
@@ -302,6 +253,7 @@ async fn wear_is_drawn_over_the_hours_and_closed_calls_teach_until_they_are_take
     rig.by_id("call-screen").await;
     rig.wait_for_text("1.5 cases of your own").await;
     rig.go("/learned").await;
+    rig.by_id("learned-screen").await;
     press(&rig, "learning-off").await;
     rig.by_id("nothing-learned").await;
     rig.wait_for_text("Saved").await;
