@@ -21,6 +21,7 @@
 //! | [`next`] | the next check, the next repair, when to stop |
 //! | [`tracking`] | straight tracking of a machine with two sides: which side is faster, why, what to turn |
 //! | [`assessment`] | what an assessment hands out |
+//! | [`call`] | what the record of one call says: words, sides, how it ended, what to put back |
 //! | [`record`] | visits and units as they are kept; import, export, migration |
 //! | [`store`] | where the record is kept |
 #![forbid(unsafe_code)]
@@ -30,6 +31,7 @@
 pub mod app;
 pub mod assessment;
 pub mod bench;
+pub mod call;
 pub mod caution;
 pub mod checks;
 pub mod circuit;
