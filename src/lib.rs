@@ -22,6 +22,7 @@
 //! | [`tracking`] | straight tracking of a machine with two sides: which side is faster, why, what to turn |
 //! | [`assessment`] | what an assessment hands out |
 //! | [`call`] | what the record of one call says: words, sides, how it ended, what to put back |
+//! | [`report`] | the hand-over report: one page, plain text, readings for a spreadsheet |
 //! | [`record`] | visits and units as they are kept; import, export, migration |
 //! | [`store`] | where the record is kept |
 #![forbid(unsafe_code)]
@@ -50,6 +51,7 @@ pub mod quantity;
 pub mod ranking;
 pub mod readings;
 pub mod record;
+pub mod report;
 pub mod store;
 pub mod tracking;
 pub mod unit;
