@@ -24,6 +24,8 @@
 //! | [`call`] | what the record of one call says: words, sides, how it ended, what to put back |
 //! | [`report`] | the hand-over report: one page, plain text, readings for a spreadsheet |
 //! | [`record`] | visits and units as they are kept; import, export, migration |
+//! | [`pack`] | records made small: a dictionary, digits, wide characters |
+//! | [`tag`] | the tag of a unit: its profile in a QR code |
 //! | [`store`] | where the record is kept |
 #![forbid(unsafe_code)]
 #![warn(missing_docs)]
@@ -47,12 +49,14 @@ pub mod math;
 pub mod neutral;
 pub mod next;
 pub mod observations;
+pub mod pack;
 pub mod quantity;
 pub mod ranking;
 pub mod readings;
 pub mod record;
 pub mod report;
 pub mod store;
+pub mod tag;
 pub mod tracking;
 pub mod unit;
 pub mod windows;
