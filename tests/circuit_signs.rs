@@ -183,7 +183,11 @@ fn a_starved_low_side_makes_no_oil() {
         shut.read(Port::MotorShaft),
         sound.read(Port::MotorShaft)
     );
-    assert!(shut.net.filled(Path::Left, &shut.solution.state, &shut.theta) < 0.97);
+    assert!(
+        shut.net
+            .filled(Path::Left, &shut.solution.state, &shut.theta)
+            < 0.97
+    );
     assert!(shut.read(Port::ReturnFlow) < sound.read(Port::ReturnFlow) + 0.5);
     assert!(shut.at(Node::APump) > -1.0);
 }

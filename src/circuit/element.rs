@@ -497,12 +497,7 @@ fn sense_direction<S: Real>(lever: S) -> S {
 
 /// Stroke of the main pump, signed share of full stroke, from the pressures `[B, A, gallery, pump case]` at the pump.
 #[inline(always)]
-pub fn stroke<S: Real>(
-    layout: &Layout,
-    path: Path,
-    v: &[S; 4],
-    g: &impl Fn(Param) -> S,
-) -> S {
+pub fn stroke<S: Real>(layout: &Layout, path: Path, v: &[S; 4], g: &impl Fn(Param) -> S) -> S {
     let asked = asked(layout, path, g);
     let offset = match layout.control {
         // Feedback takes most of a servo offset back, unless the ports are bridged.

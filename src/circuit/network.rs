@@ -209,8 +209,8 @@ impl Network {
     fn fixed<const N: usize>(&self, x: &State) -> impl Iterator<Item = (usize, f64)> {
         let tank = (N > Node::Tank.at()).then_some(Node::Tank.at());
         let left = self.layout.held[0].then_some(Node::Shaft.at());
-        let right = (N > UNKNOWNS && self.layout.held[1])
-            .then_some(Node::Shaft.in_tandem(Path::Right));
+        let right =
+            (N > UNKNOWNS && self.layout.held[1]).then_some(Node::Shaft.in_tandem(Path::Right));
         let values = [tank, left, right].map(|p| p.map(|p| (p, x[p])));
         values.into_iter().flatten()
     }

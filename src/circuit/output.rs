@@ -129,7 +129,13 @@ fn read<S: Real>(
             } else {
                 at(Node::PumpCase)
             };
-            element::flow(Law::Drain, layout, path, &[at(Node::MotorCase), to, to, to], g)
+            element::flow(
+                Law::Drain,
+                layout,
+                path,
+                &[at(Node::MotorCase), to, to, to],
+                g,
+            )
         }
         Port::ReturnFlow => {
             let zero = S::constant(0.0);

@@ -225,8 +225,8 @@ impl Param {
     pub const fn belongs(self) -> Belongs {
         use Param::*;
         match self {
-            Speed | InputGrip | Viscosity | Atmosphere | AirTemperature | HeatRise | PilotSupply
-            | Inching => Belongs::Machine,
+            Speed | InputGrip | Viscosity | Atmosphere | AirTemperature | HeatRise
+            | PilotSupply | Inching => Belongs::Machine,
             ChargeDisp | ChargeSlip | ChargeDrive | ChargeFeed | SuctionLaminar
             | SuctionTurbulent | Air | FilterLaminar | ReliefSet | ReliefGain | ReliefHeld
             | Consumers | ConsumerLeak | PumpCaseLine | PumpCaseTurbulent | ReleaseShare

@@ -205,9 +205,7 @@ impl Network {
             return Err(NoState::BadFigure);
         }
         match (self.layout().arrangement, &self.apart) {
-            (Arrangement::Tandem, _) => Ok(self
-                .find::<TANDEM>(theta, start)?
-                .with(Slope::Tandem)),
+            (Arrangement::Tandem, _) => Ok(self.find::<TANDEM>(theta, start)?.with(Slope::Tandem)),
             (Arrangement::Apart, Some(right)) => {
                 let left = self.find::<UNKNOWNS>(theta, start)?;
                 let start = start.map(right_state);
@@ -223,9 +221,7 @@ impl Network {
                     slope: Slope::Apart([left.slope, other.slope]),
                 })
             }
-            _ => Ok(self
-                .find::<UNKNOWNS>(theta, start)?
-                .with(Slope::Single)),
+            _ => Ok(self.find::<UNKNOWNS>(theta, start)?.with(Slope::Single)),
         }
     }
 

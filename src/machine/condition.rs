@@ -2,10 +2,10 @@
 
 use super::builds::Build;
 use super::latent::{Act, Latents};
+use super::twin::on_paths;
 use crate::circuit::{Layout, Param as P, Params};
 use crate::fluid::viscosity_index::kv100_from_index;
 use crate::fluid::{ViscosityCurve, dynamic_viscosity};
-use super::twin::on_paths;
 use crate::readings::{Condition, Direction, Doing, EngineSpeed, Path, Place};
 use crate::unit::{FigureId, Unit};
 
@@ -75,9 +75,8 @@ impl Warmth {
 pub fn layout_for(build: &Build, condition: &Condition) -> Layout {
     Layout {
         held: [matches!(condition.doing, Doing::Held | Doing::Neutral); 2],
-        bridged: Path::BOTH.map(|path| {
-            condition.doing == Doing::NeutralBridged && condition.stroked.has(path)
-        }),
+        bridged: Path::BOTH
+            .map(|path| condition.doing == Doing::NeutralBridged && condition.stroked.has(path)),
         ..build.layout
     }
 }

@@ -3,9 +3,9 @@
 use super::builds::Build;
 use super::latent::Latents;
 use super::twin::on_paths;
-use crate::readings::Path;
 use crate::circuit::{Param as P, Params, healthy};
 use crate::fluid;
+use crate::readings::Path;
 use crate::unit::{Figure, FigureId, Paths, Source, Unit};
 
 /// Relative width (1 sigma, log scale) of a figure that somebody knows, by where it is from. Common practice.

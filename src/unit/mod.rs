@@ -11,5 +11,6 @@ pub use figure::{FIGURES, Figure, FigureAsk, FigureId, Source};
 pub use fitted::Fitted;
 pub use profile::{ManualWindow, PortNote, Unit};
 pub use ticks::{
-    CaseLines, ChargeSource, Control, Filter, LoopReliefTo, Paths, ReliefDrain, Shuttle, Tick, Ticks,
+    CaseLines, ChargeSource, Control, Filter, LoopReliefTo, Paths, ReliefDrain, Shuttle, Tick,
+    Ticks,
 };

@@ -237,9 +237,6 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     on_change={on_change.clone()}
                     on_reading={on_reading.clone()}
                 />
-                <a class="button is-wide" href={Route::Neutral(visit.id.clone()).href()} data-testid="to-neutral">
-                    { "Set the neutral: creep, null, dead band" }
-                </a>
                 <QuickPanel {taken} {sides} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
                 // In a list of its own: among its neighbours, one more group would have all above it made anew.
@@ -277,7 +274,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     prefs={props.prefs.clone()}
                     on_change={on_change.clone()}
                 />
-                { rooms::links(&visit.id) }
+                { rooms::links(&props.unit, visit) }
                 <ClosePanel
                     visit={visit.clone()}
                     {sides}
