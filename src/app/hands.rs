@@ -132,7 +132,7 @@ impl Hands {
 
     fn ask_engine(&self, state: &State) {
         match &state.route {
-            Route::Call(id) => {
+            Route::Call(id) | Route::Report(id) => {
                 if let Some(question) = state.question(id)
                     && self.is_news(state, &question)
                 {
@@ -146,7 +146,11 @@ impl Hands {
             }
             Route::Unit(unit) => self.ask_about_last(state, unit),
             // The neutral and the tracking are worked out on their own screens.
-            Route::Neutral(_) | Route::Tracking(_) | Route::Settings => {}
+            Route::Neutral(_)
+            | Route::Tracking(_)
+            | Route::Tags(_)
+            | Route::Tag(_)
+            | Route::Settings => {}
         }
     }
 

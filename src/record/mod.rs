@@ -24,7 +24,7 @@ mod sum;
 mod tracking;
 mod visit;
 
-pub use book::Book;
+pub use book::{Book, natural};
 pub use envelope::{APP, Envelope, Stamp};
 pub use error::{Problem, RecordError};
 pub use export::Export;

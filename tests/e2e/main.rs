@@ -11,6 +11,7 @@ mod journeys_call;
 mod journeys_close;
 mod journeys_neutral;
 mod journeys_offline;
+mod journeys_papers;
 mod journeys_sides;
 mod journeys_start;
 mod journeys_tracking;

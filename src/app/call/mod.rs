@@ -38,7 +38,7 @@ mod hazard;
 mod history;
 mod last_time;
 mod map;
-mod mark;
+pub(in crate::app) mod mark;
 mod new_gauge;
 mod next;
 mod pair_line;

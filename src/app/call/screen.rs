@@ -28,7 +28,6 @@ use crate::app::parts::{Icon, Shape};
 use crate::app::platform::clock;
 use crate::app::platform::focus;
 use crate::app::platform::timer::Timer;
-use crate::app::route::Route;
 use crate::assessment::Assessment;
 use crate::caution::Stands;
 use crate::quantity::UnitPrefs;

@@ -5,7 +5,7 @@ use std::rc::Rc;
 use super::{Question, State};
 use crate::assessment::Assessment;
 use crate::demo;
-use crate::record::Visit;
+use crate::record::{Visit, natural};
 use crate::store::RecordKey as Key;
 use crate::unit::Unit;
 
@@ -78,6 +78,13 @@ impl State {
                 unit.id.clone(),
             )
         });
+        units
+    }
+
+    /// Units by name: "T-9" before "T-14".
+    pub fn units_by_name(&self) -> Vec<Rc<Unit>> {
+        let mut units: Vec<Rc<Unit>> = self.units.values().cloned().collect();
+        units.sort_by_cached_key(|unit| (natural(&unit.name), unit.id.clone()));
         units
     }
 

@@ -3,10 +3,9 @@
 use crate::quantity::{DecimalMark, Decimals, Measure, Unit, UnitPrefs, format_with_unit};
 pub use crate::tracking::usual_undercarriage;
 use crate::tracking::{
-    Agreement, Candidate, Facing, Field, Gear, Head, Lever, Load, Seen, Setting, Travel,
-    Undercarriage, Verdict, What,
+    Agreement, Candidate, Facing, Field, Gear, Head, Lever, Load, Seen, Setting, Travel, Verdict,
+    What,
 };
-use crate::unit::MachineClass;
 
 /// A share with its half-width, in per cent: "1.2 % ± 0.3 %".
 pub fn share(value: f64, half: f64, mark: DecimalMark) -> String {

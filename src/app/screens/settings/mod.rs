@@ -3,7 +3,7 @@
 mod about;
 pub mod data;
 mod draft;
-mod import;
+pub mod import;
 mod instrument_form;
 mod instruments;
 pub mod measures;

@@ -16,6 +16,7 @@ use super::settings::data::Data;
 use super::settings::measures::Presets;
 use crate::app::deed::{Deed, Snapshot};
 use crate::app::parts::{Icon, Shape, TextField};
+use crate::app::route::Route;
 
 /// From this many units on there is a field to find one.
 const SEARCH_FROM: usize = 9;
@@ -27,6 +28,12 @@ pub struct UnitsProps {
     pub state: Snapshot,
     /// Wishes.
     pub deed: Callback<Deed>,
+}
+
+fn read_a_tag() -> Html {
+    html! {
+        <a class="button is-quiet" href={Route::Tag(String::new()).href()} data-testid="to-read-tag">{ "Read a tag" }</a>
+    }
 }
 
 /// The screen.
@@ -84,6 +91,7 @@ pub fn Units(props: &UnitsProps) -> Html {
                         <section class="panel" aria-label="Units of measure">
                             <Presets state={state.clone()} deed={props.deed.clone()} />
                         </section>
+                        <div class="actions">{ read_a_tag() }</div>
                         <Data state={state.clone()} deed={props.deed.clone()} is_folded={true} />
                     </div>
                 </div>
@@ -120,6 +128,10 @@ pub fn Units(props: &UnitsProps) -> Html {
                 }
             }
             if !is_empty {
+                <div class="actions">
+                    <a class="button is-quiet" href={Route::Tags(None).href()} data-testid="to-tags">{ "Print tags" }</a>
+                    { read_a_tag() }
+                </div>
                 <Data state={state.clone()} deed={props.deed.clone()} is_folded={true} />
             }
         </main>
