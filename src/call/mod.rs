@@ -7,7 +7,9 @@
 //! | [`side`] | left and right on a machine with two drive paths |
 //! | [`put_back`] | what was opened and has to be put back before a call is closed |
 //! | [`closing`] | how a call ended |
+//! | [`attention`] | what a unit asks for, by its last call |
 
+pub mod attention;
 pub mod closing;
 pub mod put_back;
 pub mod side;

@@ -26,6 +26,33 @@ const LEVEL: i32 = 9;
 const RAW: i32 = 0;
 const DEFAULT_STRATEGY: i32 = 0;
 
+/// What stands in front of a packed text.
+const MARK: &str = "L1";
+/// Most bytes of a stored text: more than a browser can hold, packed or not.
+const MOST_STORED: usize = 64_000_000;
+
+/// A text as it is stored: packed into wide characters, or plain where that is no longer.
+#[must_use]
+pub fn stored(text: &str) -> String {
+    let packed = format!("{MARK}{}", to_wide(&pack(text.as_bytes())));
+    // A plain text that begins like a packed one would not be known from it.
+    if text.starts_with(MARK) || packed.chars().count() < text.encode_utf16().count() {
+        packed
+    } else {
+        text.to_owned()
+    }
+}
+
+/// The text of what is stored. What is no packed text, or a damaged one, is handed out as it is.
+#[must_use]
+pub fn text_of(stored: String) -> String {
+    let text = stored.strip_prefix(MARK).and_then(|wide| {
+        let bytes = unpack(&from_wide(wide)?, MOST_STORED).ok()?;
+        String::from_utf8(bytes).ok()
+    });
+    text.unwrap_or(stored)
+}
+
 /// What is wrong with packed bytes.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Error)]
 pub enum PackError {

@@ -9,6 +9,7 @@
 mod browser;
 mod journeys_call;
 mod journeys_close;
+mod journeys_many;
 mod journeys_neutral;
 mod journeys_offline;
 mod journeys_papers;

@@ -1,6 +1,7 @@
 //! Settings: units of measure, theme, the instruments of the shop, the data, and what this app is.
 
 mod about;
+mod archive;
 pub mod data;
 mod draft;
 pub mod import;
