@@ -4,7 +4,7 @@
 mod record_support;
 
 use lowside::record::{
-    Book, Export, Fate, ImportPlan, Problem, RecordError, Settings, Visit, limits,
+    Book, Export, Fate, ImportPlan, Problem, RecordError, SCHEMA, Settings, Visit, limits,
 };
 use lowside::unit::Unit;
 use proptest::prelude::*;
@@ -196,6 +196,7 @@ fn what_is_no_export_says_what_to_choose() {
             "{text}"
         );
     }
+    let newer = format!("{{\"lowside_export\":{}}}", SCHEMA + 1);
     let large = vec![b' '; limits::FILE_BYTES + 1];
     assert_eq!(
         error(&large),
@@ -205,15 +206,18 @@ fn what_is_no_export_says_what_to_choose() {
         }
     );
     assert_eq!(
-        error(b"{\"lowside_export\":2}"),
-        RecordError::Newer { found: 2, known: 1 }
+        error(newer.as_bytes()),
+        RecordError::Newer {
+            found: u64::from(SCHEMA) + 1,
+            known: SCHEMA
+        }
     );
     assert!(matches!(
         error(b"{\"lowside_export\":0}"),
         RecordError::NotOurs { .. }
     ));
     assert!(
-        error(b"{\"lowside_export\":2}")
+        error(newer.as_bytes())
             .to_string()
             .contains("Update this app")
     );

@@ -2,7 +2,9 @@
 
 mod record_support;
 
-use lowside::record::{Book, Envelope, Ladder, RecordKind, Settings, Stamp, Step, Visit, checksum};
+use lowside::record::{
+    Book, Envelope, Ladder, RecordKind, SCHEMA, Settings, Stamp, Step, Visit, checksum,
+};
 use lowside::store::{
     Fault, FaultyStore, LoadProblem, MemoryStore, NotSaved, RecordKey, SaveOutcome, SaveState,
     Shelf, Store, StoreError, Usage,
@@ -490,7 +492,7 @@ fn a_tab_of_the_older_version_stops_writing_when_a_newer_one_has_written() {
     };
     let text = Envelope {
         kind: RecordKind::Unit,
-        schema: 2,
+        schema: u64::from(SCHEMA) + 1,
         stamp,
         saved_at: NOW.into(),
         body,
@@ -500,13 +502,13 @@ fn a_tab_of_the_older_version_stops_writing_when_a_newer_one_has_written() {
     store.put("lowside/v1/unit/u1", &text).expect("put");
     assert_eq!(
         refused(old.save_unit(&unit("T-15"), NOW)),
-        NotSaved::Newer(2)
+        NotSaved::Newer(u64::from(SCHEMA) + 1)
     );
     assert_eq!(store.get("lowside/v1/unit/u1"), Ok(Some(text)));
 }
 
 const LOUDER: &[Step] = &[Step {
-    from: 1,
+    from: SCHEMA,
     apply: |_, mut value| {
         if let Some(name) = value.get_mut("name") {
             *name = name
@@ -531,7 +533,7 @@ fn before_an_older_format_is_replaced_its_text_is_kept_once() {
         store.clone(),
         "new",
         Ladder {
-            top: 2,
+            top: SCHEMA + 1,
             steps: LOUDER,
         },
     );
@@ -554,7 +556,10 @@ fn before_an_older_format_is_replaced_its_text_is_kept_once() {
         unit.note = note.into();
         saved(shelf.save_unit(&unit, NOW));
     }
-    assert_eq!(store.get("lowside/backup/v1/unit/u1"), Ok(Some(before)));
+    assert_eq!(
+        store.get(&format!("lowside/backup/v{SCHEMA}/unit/u1")),
+        Ok(Some(before))
+    );
     let now = Envelope::open(
         &store
             .get("lowside/v1/unit/u1")
@@ -562,7 +567,7 @@ fn before_an_older_format_is_replaced_its_text_is_kept_once() {
             .expect("there"),
     )
     .expect("opened");
-    assert_eq!((now.schema, now.stamp.rev), (2, 3));
+    assert_eq!((now.schema, now.stamp.rev), (u64::from(SCHEMA) + 1, 3));
 }
 
 #[test]

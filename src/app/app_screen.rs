@@ -7,6 +7,7 @@ use wasm_bindgen::JsCast;
 use web_sys::StorageEvent;
 use yew::{Callback, Html, component, html, use_effect_with, use_memo, use_mut_ref, use_reducer};
 
+use super::bench::BenchScreen;
 use super::call::{CallScreen, EarlierCalls};
 use super::deed::{Deed, Snapshot};
 use super::hands::Hands;
@@ -119,6 +120,11 @@ fn title(state: &State) -> String {
             .map(|name| format!("Report, {name}")),
         Route::Tags(_) => Some("Tags".to_owned()),
         Route::Tag(_) => Some("Read a tag".to_owned()),
+        Route::Bench(id) => state
+            .visits
+            .get(id)
+            .and_then(|visit| name(&visit.unit))
+            .map(|name| format!("Bench, {name}")),
     };
     what.map_or_else(|| "Lowside".to_owned(), |what| format!("{what}: Lowside"))
 }
@@ -268,6 +274,22 @@ fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
                         visit={visit.clone()}
                         prefs={state.settings.units.clone()}
                         on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
+                    />
+                },
+                None => missing("call"),
+            }
+        }
+        Route::Bench(id) => {
+            let visit = state.visits.get(id);
+            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
+                Some((visit, unit)) => html! {
+                    <BenchScreen
+                        key={format!("{id}-bench")}
+                        unit={unit.clone()}
+                        visit={visit.clone()}
+                        prefs={state.settings.units.clone()}
+                        on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
+                        on_unit={deed.reform(|unit| Deed::Put(Action::PutUnit(unit)))}
                     />
                 },
                 None => missing("call"),

@@ -151,6 +151,7 @@ impl Hands {
             // The neutral and the tracking are worked out on their own screens.
             Route::Neutral(_)
             | Route::Tracking(_)
+            | Route::Bench(_)
             | Route::Tags(_)
             | Route::Tag(_)
             | Route::Settings => {}

@@ -4,6 +4,7 @@
 //! it. [`persist`] writes the state to the shelf, [`engine`] calculates in a worker.
 
 mod app_screen;
+pub mod bench;
 pub mod call;
 pub mod deed;
 pub mod engine;

@@ -22,6 +22,8 @@ pub enum Route {
     Tags(Option<String>),
     /// A tag to be read: what was scanned, or nothing yet.
     Tag(String),
+    /// The bench sheet of a pump or motor, within one call.
+    Bench(String),
     /// Units of measure, instruments, data.
     Settings,
 }
@@ -44,6 +46,7 @@ impl Route {
             Some(("call", id)) if is_id(id) => Route::Call(id.to_owned()),
             Some(("call", rest)) => match rest.split_once('/') {
                 Some((id, "neutral")) if is_id(id) => Route::Neutral(id.to_owned()),
+                Some((id, "bench")) if is_id(id) => Route::Bench(id.to_owned()),
                 Some((id, "tracking")) if is_id(id) => Route::Tracking(id.to_owned()),
                 Some((id, "report")) if is_id(id) => Route::Report(id.to_owned()),
                 _ => Route::Units,
@@ -65,6 +68,7 @@ impl Route {
             Route::Tags(Some(id)) => format!("#/unit/{id}/tag"),
             Route::Tag(scanned) if scanned.is_empty() => "#/tag".to_owned(),
             Route::Tag(scanned) => format!("#/tag/{scanned}"),
+            Route::Bench(id) => format!("#/call/{id}/bench"),
             Route::Settings => "#/settings".to_owned(),
         }
     }

@@ -87,7 +87,7 @@ pub const TABLE: &[Check] = &[
         title: "Swap the control signals left and right",
         how: &[
             "Engine off: change the plugs or pilot lines of the left and the right pump over, forward with forward.",
-            "Start at low idle, a little lever: left asks right. The trouble changes sides: signal, lever or controller. It stays: pump,              motor or brake of that side.",
+            "Start at low idle, a little lever: left asks right. The trouble changes sides: signal, lever or controller. It stays: pump, motor or brake of that side.",
         ],
         instruments: "none; caps and rag for pilot lines",
         answers: &["signals-change-sides"],

@@ -48,7 +48,7 @@ pub(super) fn line(path: &str, field: &str, text: &mut String) -> Checked {
     fits(path, field, text, LINE_CHARACTERS)
 }
 
-fn prose(path: &str, field: &str, text: &mut String) -> Checked {
+pub(super) fn prose(path: &str, field: &str, text: &mut String) -> Checked {
     clean_text(text);
     fits(path, field, text, TEXT_CHARACTERS)
 }
@@ -326,6 +326,9 @@ pub(super) fn visit(path: &str, visit: &mut Visit) -> Checked {
         if let Some(sheet) = sheet {
             neutral(&format!("{path}.{field}"), sheet)?;
         }
+    }
+    if let Some(sheet) = &mut visit.bench {
+        super::bench::check(&format!("{path}.bench"), sheet)?;
     }
     if let Some(sheet) = &mut visit.tracking {
         super::tracking::check(&format!("{path}.tracking"), sheet)?;

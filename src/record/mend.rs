@@ -61,6 +61,7 @@ pub(super) fn visit(visit: &Visit) -> Visit {
                 .take_if(|seen| check::seen(reading.port, seen).is_err());
         }
     }
+    visit.bench.iter_mut().for_each(super::bench::mend);
     visit.tracking.iter_mut().for_each(super::tracking::mend);
     visit
 }

@@ -7,6 +7,7 @@
 //! * [`limits`] says how much a record may hold; fields on a screen keep to them.
 
 pub mod archive;
+mod bench;
 mod book;
 mod check;
 mod envelope;

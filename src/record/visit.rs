@@ -1,5 +1,6 @@
 //! A visit: one call to one unit, as it is kept.
 
+use crate::bench::stand::BenchSheet;
 use crate::readings::{Reading, Rigging, Seen};
 use crate::tracking::TrackingSheet;
 use serde::{Deserialize, Serialize};
@@ -65,6 +66,9 @@ pub struct Visit {
     /// The tracking sheet of a machine with two sides; none where nobody began one.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub tracking: Option<TrackingSheet>,
+    /// The bench sheet of its pump or motor; none where nobody began one.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub bench: Option<BenchSheet>,
     /// What is entered for the closing while the call is still open.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub closing: Option<Closing>,

@@ -2,6 +2,7 @@
 //! the trade: a range with its width, never a verdict.
 
 use super::FigureId;
+use crate::circuit::Param;
 use serde::{Deserialize, Serialize};
 
 /// Class of machine.
@@ -217,6 +218,14 @@ impl MachineClass {
             FigureId::FullPilot => s(18.0, 0.15),
             FigureId::LoopVolume => s(4.0 * (c.pump / 75.0), 0.35),
             FigureId::Altitude => s(150.0, 1.0),
+            // The circuit's own sound machine, which grows with the pump.
+            FigureId::PumpCaseLeakage | FigureId::MotorCaseLeakage => {
+                s(Param::PumpLeak.healthy() * 200.0 * c.pump / 75.0, 0.35)
+            }
+            FigureId::PumpSlip | FigureId::MotorSlip => {
+                let healthy = Param::PumpLeak.healthy() + Param::PumpAcross.healthy();
+                s(healthy * 200.0 * c.pump / 75.0, 0.35)
+            }
         }
     }
 }

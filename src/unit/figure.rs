@@ -94,6 +94,14 @@ pub enum FigureId {
     LoopVolume,
     /// Altitude of the site.
     Altitude,
+    /// Leakage of the pump into its case at 200 bar of a side over the case and 27.5 mPa·s, from a bench run.
+    PumpCaseLeakage,
+    /// Slip of the pump, all that its high side loses, at 200 bar and 27.5 mPa·s, from a bench run.
+    PumpSlip,
+    /// Leakage of one motor into its case at 200 bar of a side over the case and 27.5 mPa·s, from a bench run.
+    MotorCaseLeakage,
+    /// Slip of one motor at 200 bar and 27.5 mPa·s, from a bench run.
+    MotorSlip,
 }
 
 /// What a screen needs to ask for a figure.
@@ -258,5 +266,37 @@ pub const FIGURES: &[FigureAsk] = &[
         kind: Kind::Length,
         low: -400.0,
         high: 5500.0,
+    },
+    FigureAsk {
+        id: FigureId::PumpCaseLeakage,
+        words: "Pump leakage into its case",
+        hint: "from a bench run, told at 200 bar and 27.5 mPa·s",
+        kind: Kind::Flow,
+        low: 0.01,
+        high: 200.0,
+    },
+    FigureAsk {
+        id: FigureId::PumpSlip,
+        words: "Pump slip, all of it",
+        hint: "from a bench run, told at 200 bar and 27.5 mPa·s",
+        kind: Kind::Flow,
+        low: 0.01,
+        high: 200.0,
+    },
+    FigureAsk {
+        id: FigureId::MotorCaseLeakage,
+        words: "Motor leakage into its case",
+        hint: "from a bench run, told at 200 bar and 27.5 mPa·s",
+        kind: Kind::Flow,
+        low: 0.01,
+        high: 200.0,
+    },
+    FigureAsk {
+        id: FigureId::MotorSlip,
+        words: "Motor slip, all of it",
+        hint: "from a bench run, told at 200 bar and 27.5 mPa·s",
+        kind: Kind::Flow,
+        low: 0.01,
+        high: 200.0,
     },
 ];

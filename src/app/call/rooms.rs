@@ -25,13 +25,24 @@ pub fn links(unit: &Unit, visit: &Visit) -> Html {
         "a machine with two sides that does not run straight",
         "to-tracking",
     );
+    let bench = (
+        Route::Bench(id.clone()),
+        "Bench stand",
+        "a sheet for its pump or motor",
+        "to-bench",
+    );
     let report = (
         Route::Report(id.clone()),
         "Hand-over report",
         "on paper, as text, as a table",
         "to-report",
     );
-    let rooms = [Some(neutral), two_sides.then_some(tracking), Some(report)];
+    let rooms = [
+        Some(neutral),
+        two_sides.then_some(tracking),
+        Some(bench),
+        Some(report),
+    ];
     html! {
         <nav class="panel stack" aria-label="Adjusting and report">
             { for rooms.into_iter().flatten().map(|(route, words, what, testid)| html! {

@@ -18,9 +18,11 @@ pub struct BarProps {
 fn unit_at_hand(state: &State) -> Option<(String, String)> {
     let id = match &state.route {
         Route::Unit(id) | Route::Tags(Some(id)) => id,
-        Route::Call(id) | Route::Neutral(id) | Route::Tracking(id) | Route::Report(id) => {
-            &state.visits.get(id)?.unit
-        }
+        Route::Call(id)
+        | Route::Neutral(id)
+        | Route::Tracking(id)
+        | Route::Bench(id)
+        | Route::Report(id) => &state.visits.get(id)?.unit,
         Route::Units | Route::Settings | Route::Tags(None) | Route::Tag(_) => return None,
     };
     Some((id.clone(), state.units.get(id)?.name.clone()))

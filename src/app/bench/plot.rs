@@ -1,0 +1,436 @@
+//! Pictures: efficiency and flow lost over pressure with their bands, the measured points, and the map over speed and pressure. Told
+//! apart by marks and dashes, so that they can be printed and read without colour.
+
+use super::codes;
+use super::screen::Told;
+use crate::app::parts::Section;
+use crate::bench::stand::analysis::Quantity;
+use crate::bench::stand::fit::LossFit;
+use crate::bench::stand::{BenchSheet, Channel};
+use crate::quantity::{Unit, UnitPrefs};
+use std::rc::Rc;
+use yew::{Html, Properties, component, html};
+
+/// Size of a drawing, in its own units, and the room kept for words.
+const WIDE: f64 = 480.0;
+const HIGH: f64 = 300.0;
+const LEFT: f64 = 56.0;
+const BELOW: f64 = 44.0;
+const TOP: f64 = 16.0;
+const RIGHT: f64 = 16.0;
+/// Steps of a curve.
+const STEPS: usize = 32;
+/// Speeds within this share are one curve.
+const ONE_SPEED: f64 = 0.06;
+/// Most curves of a drawing: marks and dashes are that many.
+const CURVES: usize = 4;
+
+/// Properties of [`Pictures`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct PicturesProps {
+    /// What the sheet comes to.
+    pub told: Told,
+    /// The sheet.
+    pub sheet: Rc<BenchSheet>,
+    /// Units of measure.
+    pub prefs: UnitPrefs,
+}
+
+/// From figures to the drawing.
+#[derive(Clone, Copy)]
+struct Axes {
+    x: (f64, f64),
+    y: (f64, f64),
+}
+
+impl Axes {
+    fn at(&self, x: f64, y: f64) -> (f64, f64) {
+        let share = |v: f64, (low, high): (f64, f64)| (v - low) / (high - low);
+        (
+            LEFT + share(x, self.x) * (WIDE - LEFT - RIGHT),
+            HIGH - BELOW - share(y, self.y).clamp(-0.02, 1.02) * (HIGH - BELOW - TOP),
+        )
+    }
+
+    fn path(&self, points: &[(f64, f64)]) -> String {
+        let text: Vec<String> = points
+            .iter()
+            .map(|(x, y)| {
+                let (x, y) = self.at(*x, *y);
+                format!("{x:.1},{y:.1}")
+            })
+            .collect();
+        text.join(" ")
+    }
+}
+
+/// A round step so that about five marks stand on an axis.
+fn step(span: f64) -> f64 {
+    let rough = (span / 5.0).max(1e-9);
+    let decade = crate::math::exp10(crate::math::log10(rough).floor());
+    [1.0, 2.0, 5.0, 10.0]
+        .into_iter()
+        .map(|m| m * decade)
+        .find(|s| *s >= rough)
+        .unwrap_or(rough)
+}
+
+fn marks((low, high): (f64, f64)) -> Vec<f64> {
+    let step = step(high - low);
+    let first = (low / step).ceil();
+    (0..12)
+        .map(|i| (first + f64::from(i)) * step)
+        .take_while(|v| *v <= high * (1.0 + 1e-9))
+        .collect()
+}
+
+/// A measured point with the half height of its doubt.
+struct Spot {
+    x: f64,
+    y: f64,
+    half: f64,
+    curve: usize,
+}
+
+/// A curve with its band; `beyond` from this x on it is extrapolated.
+struct Curve {
+    name: String,
+    line: Vec<(f64, f64, f64)>,
+    beyond: (f64, f64),
+}
+
+fn frame(axes: Axes, x_words: &str, y_words: &str, prefs: &UnitPrefs) -> Html {
+    let text = |value: f64| {
+        let text = if value.abs() >= 10.0 || value.fract() == 0.0 {
+            format!("{value:.0}")
+        } else {
+            format!("{value:.1}")
+        };
+        match prefs.mark() {
+            crate::quantity::DecimalMark::Comma => text.replace('.', ","),
+            crate::quantity::DecimalMark::Point => text,
+        }
+    };
+    html! { <>
+        { for marks(axes.x).into_iter().map(|value| {
+            let (x, bottom) = axes.at(value, axes.y.0);
+            html! { <>
+                <line class="bench-grid" x1={format!("{x:.1}")} y1={format!("{TOP}")} x2={format!("{x:.1}")} y2={format!("{bottom:.1}")} />
+                <text class="bench-mark" x={format!("{x:.1}")} y={format!("{:.1}", bottom + 16.0)} text-anchor="middle">{ text(value) }</text>
+            </> }
+        }) }
+        { for marks(axes.y).into_iter().map(|value| {
+            let (left, y) = axes.at(axes.x.0, value);
+            html! { <>
+                <line class="bench-grid" x1={format!("{left:.1}")} y1={format!("{y:.1}")} x2={format!("{:.1}", WIDE - RIGHT)} y2={format!("{y:.1}")} />
+                <text class="bench-mark" x={format!("{:.1}", left - 6.0)} y={format!("{:.1}", y + 4.0)} text-anchor="end">{ text(value) }</text>
+            </> }
+        }) }
+        <text class="bench-axis" x={format!("{:.1}", 0.5 * (WIDE + LEFT))} y={format!("{:.1}", HIGH - 6.0)} text-anchor="middle">{ x_words }</text>
+        <text class="bench-axis" x="12" y={format!("{:.1}", 0.5 * (HIGH - BELOW))} text-anchor="middle"
+            transform={format!("rotate(-90 12 {:.1})", 0.5 * (HIGH - BELOW))}>{ y_words }</text>
+    </> }
+}
+
+/// A mark of its own for each curve: round, square, diamond, triangle.
+fn mark(curve: usize, x: f64, y: f64) -> Html {
+    let class = format!("bench-spot is-{curve}");
+    match curve {
+        0 => html! { <circle {class} cx={format!("{x:.1}")} cy={format!("{y:.1}")} r="4.5" /> },
+        1 => {
+            html! { <rect {class} x={format!("{:.1}", x - 4.5)} y={format!("{:.1}", y - 4.5)} width="9" height="9" /> }
+        }
+        2 => {
+            html! { <polygon {class} points={format!("{x:.1},{:.1} {:.1},{y:.1} {x:.1},{:.1} {:.1},{y:.1}", y - 6.0, x + 6.0, y + 6.0, x - 6.0)} /> }
+        }
+        _ => {
+            html! { <polygon {class} points={format!("{x:.1},{:.1} {:.1},{:.1} {:.1},{:.1}", y - 6.0, x + 5.5, y + 4.5, x - 5.5, y + 4.5)} /> }
+        }
+    }
+}
+
+fn drawing(
+    title: &str,
+    (x_words, y_words): (&str, &str),
+    curves: &[Curve],
+    spots: &[Spot],
+    prefs: &UnitPrefs,
+    floor: Option<(f64, f64)>,
+) -> Html {
+    let xs = spots
+        .iter()
+        .map(|spot| spot.x)
+        .chain(curves.iter().flat_map(|c| c.line.iter().map(|p| p.0)));
+    let high_x = xs.fold(1.0_f64, f64::max);
+    let ys = spots
+        .iter()
+        .flat_map(|spot| [spot.y - spot.half, spot.y + spot.half]);
+    let (mut low, mut high) = ys.fold((f64::MAX, f64::MIN), |(low, high), y| {
+        (low.min(y), high.max(y))
+    });
+    if low > high {
+        return html! {};
+    }
+    let room = 0.1 * (high - low).max(0.05 * high.abs().max(0.1));
+    low -= room;
+    high += room;
+    if let Some((least, most)) = floor {
+        low = low.max(least);
+        high = high.min(most).max(low + 0.01);
+    }
+    let axes = Axes {
+        x: (0.0, high_x * 1.05),
+        y: (low, high),
+    };
+    html! {
+        <figure class="bench-figure">
+            <figcaption>{ title }</figcaption>
+            <svg viewBox={format!("0 0 {WIDE} {HIGH}")} role="img" aria-label={title.to_owned()}>
+                { frame(axes, x_words, y_words, prefs) }
+                { for curves.iter().enumerate().map(|(at, curve)| {
+                    let upper = curve.line.iter().map(|(x, y, half)| (*x, y + half));
+                    let lower = curve.line.iter().rev().map(|(x, y, half)| (*x, y - half));
+                    let band: Vec<(f64, f64)> = upper.chain(lower).collect();
+                    let middle = |is_in: bool| -> Vec<(f64, f64)> {
+                        let (from, to) = curve.beyond;
+                        curve.line.iter().filter(|(x, ..)| (*x >= from && *x <= to) == is_in).map(|(x, y, _)| (*x, *y)).collect()
+                    };
+                    html! { <>
+                        <polygon class={format!("bench-band is-{at}")} points={axes.path(&band)} />
+                        <polyline class={format!("bench-curve is-{at}")} points={axes.path(&middle(true))} />
+                    </> }
+                }) }
+                { for spots.iter().map(|spot| {
+                    let (x, y) = axes.at(spot.x, spot.y);
+                    let (_, top) = axes.at(spot.x, spot.y + spot.half);
+                    let (_, bottom) = axes.at(spot.x, spot.y - spot.half);
+                    html! { <>
+                        <line class="bench-doubt" x1={format!("{x:.1}")} x2={format!("{x:.1}")} y1={format!("{top:.1}")} y2={format!("{bottom:.1}")} />
+                        { mark(spot.curve, x, y) }
+                    </> }
+                }) }
+            </svg>
+            <ul class="bench-key">
+                { for curves.iter().enumerate().map(|(at, curve)| html! {
+                    <li>
+                        <svg viewBox="0 0 40 14" aria-hidden="true">
+                            <line class={format!("bench-curve is-{at}")} x1="0" x2="40" y1="7" y2="7" />
+                            { mark(at, 20.0, 7.0) }
+                        </svg>
+                        { &curve.name }
+                    </li>
+                }) }
+            </ul>
+        </figure>
+    }
+}
+
+/// Speeds of the run, each once.
+fn speeds(told: &Told) -> Vec<f64> {
+    let mut speeds: Vec<f64> = Vec::new();
+    for point in &told.0.points {
+        if let Some(n) = point.means.get(Channel::Speed).filter(|n| *n > 0.0)
+            && !speeds.iter().any(|s| (s - n).abs() <= ONE_SPEED * s)
+        {
+            speeds.push(n);
+        }
+    }
+    speeds.sort_by(f64::total_cmp);
+    speeds.truncate(CURVES);
+    speeds
+}
+
+fn spots(told: &Told, speeds: &[f64], quantity: Quantity, factor: f64, bar: f64) -> Vec<Spot> {
+    let report = &*told.0;
+    report
+        .points
+        .iter()
+        .enumerate()
+        .filter_map(|(at, point)| {
+            let figure = report.evaluated.points[at].get(&quantity)?;
+            let n = point.means.get(Channel::Speed)?;
+            let curve = speeds.iter().position(|s| (s - n).abs() <= ONE_SPEED * s)?;
+            Some(Spot {
+                x: point.means.difference()? * bar,
+                y: figure.value * factor,
+                half: figure.expanded() * factor,
+                curve,
+            })
+        })
+        .collect()
+}
+
+/// Curves of the fit, one a speed, at the viscosity in the middle of the run.
+fn curves(
+    losses: &LossFit,
+    speeds: &[f64],
+    bar: f64,
+    of: impl Fn(&LossFit, f64, f64, f64) -> Option<(f64, f64)>,
+) -> Vec<Curve> {
+    let covered = losses.covered;
+    let mu = 0.5 * (covered.viscosity.0 + covered.viscosity.1);
+    speeds
+        .iter()
+        .map(|n| {
+            let (low, high) = covered.difference;
+            let (from, to) = (0.3 * low, 1.15 * high);
+            let line = (0..=STEPS)
+                .filter_map(|i| {
+                    let dp = from + (to - from) * i as f64 / STEPS as f64;
+                    let (value, u) = of(losses, *n, dp, mu)?;
+                    Some((dp * bar, value, 2.0 * u))
+                })
+                .collect();
+            Curve {
+                name: format!("{n:.0} rpm"),
+                line,
+                beyond: (low * bar * 0.97, high * bar * 1.03),
+            }
+        })
+        .collect()
+}
+
+/// The pictures.
+#[component]
+pub fn Pictures(props: &PicturesProps) -> Html {
+    let report = &*props.told.0;
+    let speeds = speeds(&props.told);
+    if report.points.len() < 2 || speeds.is_empty() {
+        return html! {};
+    }
+    let pressure = codes::shown(&props.prefs, Unit::Bar);
+    let bar = crate::quantity::Measure::literal(1.0, Unit::Bar)
+        .try_in_unit(pressure)
+        .unwrap_or(1.0);
+    let flow = codes::shown(&props.prefs, Unit::LitrePerMinute);
+    let litre = crate::quantity::Measure::literal(1.0, Unit::LitrePerMinute)
+        .try_in_unit(flow)
+        .unwrap_or(1.0);
+    let x_words = format!("Pressure difference, {}", pressure.symbol());
+    let efficiency = curves(&report.losses, &speeds, bar, |fit, n, dp, mu| {
+        fit.foretell(n, dp, mu)
+            .volumetric
+            .map(|(v, u)| (v * 100.0, u * 100.0))
+    });
+    let overall = curves(&report.losses, &speeds, bar, |fit, n, dp, mu| {
+        let told = fit.foretell(n, dp, mu);
+        let ((v, uv), (h, uh)) = (told.volumetric?, told.hydro_mechanical?);
+        Some((
+            v * h * 100.0,
+            100.0 * (h * h * uv * uv + v * v * uh * uh).sqrt(),
+        ))
+    });
+    let lost = curves(&report.losses, &speeds, bar, |fit, n, dp, mu| {
+        fit.foretell(n, dp, mu)
+            .flow_lost
+            .map(|(v, u)| (v * litre, u * litre))
+    });
+    let share = Some((0.0, 105.0));
+    html! {
+        <Section id="bench-pictures" title="Pictures" is_open=true>
+            <p class="soft">{ "Points with their doubt; curves of the loss fit with their band at the middle viscosity of the run. Where no line is drawn in a \
+                band, the fit goes beyond what was run." }</p>
+            <div class="bench-figures-grid">
+                { drawing("Volumetric efficiency", (&x_words, "%"), &efficiency, &spots(&props.told, &speeds, Quantity::Volumetric, 100.0, bar), &props.prefs, share) }
+                { drawing("Overall efficiency", (&x_words, "%"), &overall, &spots(&props.told, &speeds, Quantity::Overall, 100.0, bar), &props.prefs, share) }
+                { drawing("Flow lost", (&x_words, flow.symbol()), &lost, &spots(&props.told, &speeds, Quantity::FlowLost, litre, bar), &props.prefs, None) }
+                { residuals(&props.told, &props.prefs) }
+                { map(&report.losses, &props.prefs, bar) }
+            </div>
+        </Section>
+    }
+}
+
+/// What the fit leaves over, each over its doubt by chance: it should lie between −2 and 2 without a pattern.
+fn residuals(told: &Told, prefs: &UnitPrefs) -> Html {
+    let Ok(fit) = &told.0.losses.flow else {
+        return html! {};
+    };
+    let spots: Vec<Spot> = fit
+        .points
+        .iter()
+        .zip(&fit.sigma)
+        .map(|((at, seen, foretold), sigma)| Spot {
+            x: *at as f64 + 1.0,
+            y: (seen - foretold) / sigma,
+            half: 0.0,
+            curve: 0,
+        })
+        .collect();
+    let high = spots.iter().map(|s| s.y.abs()).fold(2.5_f64, f64::max);
+    let axes = Axes {
+        x: (0.0, spots.iter().map(|s| s.x).fold(1.0, f64::max) + 1.0),
+        y: (-high * 1.1, high * 1.1),
+    };
+    let (left, zero) = axes.at(0.0, 0.0);
+    html! {
+        <figure class="bench-figure">
+            <figcaption>{ "What the flow fit leaves over" }</figcaption>
+            <svg viewBox={format!("0 0 {WIDE} {HIGH}")} role="img" aria-label="What the flow fit leaves over, point by point">
+                { frame(axes, "Row of the run, in order", "over its doubt by chance", prefs) }
+                <line class="bench-zero" x1={format!("{left:.1}")} x2={format!("{:.1}", WIDE - RIGHT)} y1={format!("{zero:.1}")} y2={format!("{zero:.1}")} />
+                { for spots.iter().map(|spot| { let (x, y) = axes.at(spot.x, spot.y); mark(0, x, y) }) }
+            </svg>
+        </figure>
+    }
+}
+
+/// Cells of the map each way.
+const CELLS: usize = 6;
+
+/// The map: overall efficiency at a grid of speeds and pressures, as figures in fields; in brackets where it was not run.
+fn map(losses: &LossFit, prefs: &UnitPrefs, bar: f64) -> Html {
+    if losses.flow.is_err() || losses.torque.is_err() {
+        return html! {};
+    }
+    let covered = losses.covered;
+    let mu = 0.5 * (covered.viscosity.0 + covered.viscosity.1);
+    let pressure = codes::shown(prefs, Unit::Bar);
+    let grid = |(low, high): (f64, f64), share: f64| -> Vec<f64> {
+        let (from, to) = (low * (1.0 - share), high * (1.0 + share));
+        (0..CELLS)
+            .map(|i| from + (to - from) * i as f64 / (CELLS - 1) as f64)
+            .collect()
+    };
+    let speeds = grid(covered.speed, 0.15);
+    let pressures = grid(covered.difference, 0.15);
+    let cell = |n: f64, dp: f64| {
+        let told = losses.foretell(n, dp, mu);
+        let (v, _) = told.volumetric?;
+        let (h, _) = told.hydro_mechanical?;
+        let share = v * h;
+        (0.0..=1.05)
+            .contains(&share)
+            .then_some((share, told.is_beyond))
+    };
+    html! {
+        <figure class="bench-figure">
+            <figcaption>{ "Overall efficiency over speed and pressure, %" }</figcaption>
+            <div class="bench-scroll" tabindex="0" role="region" aria-label="Map of overall efficiency">
+                <table class="bench-map" data-testid="bench-map">
+                    <thead><tr>
+                        <th scope="col">{ format!("{} \\ rpm", pressure.symbol()) }</th>
+                        { for speeds.iter().map(|n| html! { <th scope="col">{ format!("{n:.0}") }</th> }) }
+                    </tr></thead>
+                    <tbody>
+                        { for pressures.iter().rev().map(|dp| html! {
+                            <tr>
+                                <th scope="row">{ format!("{:.0}", dp * bar) }</th>
+                                { for speeds.iter().map(|n| match cell(*n, *dp) {
+                                    // Depth in tenths: darker is better; the figure says it without colour.
+                                    Some((share, beyond)) => {
+                                        let depth = ((share - 0.6) * 20.0).clamp(0.0, 7.0) as usize;
+                                        let text = format!("{:.0}", share * 100.0);
+                                        html! { <td class={format!("is-depth-{depth}")}>{ if beyond { format!("({text})") } else { text } }</td> }
+                                    }
+                                    None => html! { <td>{ "–" }</td> },
+                                }) }
+                            </tr>
+                        }) }
+                    </tbody>
+                </table>
+            </div>
+            <p class="soft">{ "By the loss fit, at the middle viscosity of the run. In brackets: beyond what was run." }</p>
+        </figure>
+    }
+}

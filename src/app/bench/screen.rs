@@ -1,0 +1,111 @@
+//! The bench screen as a whole.
+
+use super::hand_over::HandOver;
+use super::head::HeadForm;
+use super::items::ItemsForm;
+use super::layout::LayoutForm;
+use super::paste::PasteBox;
+use super::plot::Pictures;
+use super::results::Results;
+use super::table::PointTable;
+use super::take_over::TakeOver;
+use crate::app::parts::{Caution, Grade, Icon, Section, Shape};
+use crate::app::route::Route;
+use crate::bench::stand::{BenchReport, BenchSheet, report};
+use crate::quantity::UnitPrefs;
+use crate::record::Visit;
+use crate::unit::Unit;
+use std::rc::Rc;
+use yew::{Callback, Html, Properties, component, html};
+use yew::{use_memo, use_mut_ref};
+
+/// Properties of [`BenchScreen`].
+#[derive(Clone, PartialEq, Properties)]
+pub struct BenchScreenProps {
+    /// The unit that the pump or motor belongs to.
+    pub unit: Rc<Unit>,
+    /// The visit.
+    pub visit: Rc<Visit>,
+    /// Units of measure.
+    pub prefs: UnitPrefs,
+    /// The visit was edited: the whole of it.
+    pub on_visit: Callback<Visit>,
+    /// The unit was edited: what the bench found goes into its profile.
+    pub on_unit: Callback<Unit>,
+}
+
+/// One edit of the sheet.
+pub type Edit = Box<dyn FnOnce(&mut BenchSheet)>;
+
+/// What the sheet comes to, equal to itself alone.
+#[derive(Clone, Debug)]
+pub struct Told(pub Rc<BenchReport>);
+
+impl PartialEq for Told {
+    fn eq(&self, other: &Self) -> bool {
+        Rc::ptr_eq(&self.0, &other.0)
+    }
+}
+
+/// The screen.
+#[component]
+pub fn BenchScreen(props: &BenchScreenProps) -> Html {
+    // Two quick edits build on one another, also between two drawings.
+    let newest = use_mut_ref(|| props.visit.clone());
+    newest.replace(props.visit.clone());
+    let on_edit = {
+        let on_visit = props.on_visit.clone();
+        Callback::from(move |edit: Edit| {
+            let mut visit = (**newest.borrow()).clone();
+            edit(visit.bench.get_or_insert_default());
+            newest.replace(Rc::new(visit.clone()));
+            on_visit.emit(visit);
+        })
+    };
+    let sheet = props.visit.bench.clone().unwrap_or_default();
+    let told = use_memo((sheet.clone(), props.unit.clone()), |(sheet, unit)| {
+        Told(Rc::new(report(sheet, Some(unit))))
+    });
+    let told = (*told).clone();
+    let points = told.0.points.len();
+    let state = match points {
+        0 => "no point yet".to_owned(),
+        1 => "1 point".to_owned(),
+        many => format!("{many} points"),
+    };
+    let sheet = Rc::new(sheet);
+    html! {
+        <main class="page bench" id="main" data-testid="bench-screen">
+            <div class="page-head">
+                <h1 id="title" tabindex="-1">{ "Bench stand" }</h1>
+                <a class="button is-quiet" href={Route::Call(props.visit.id.clone()).href()} data-testid="back-to-call">
+                    <Icon shape={Shape::Back} />{ "To the call" }
+                </a>
+            </div>
+            <p class="soft">{ "The unit’s manual and the stand’s own rules come before anything here." }</p>
+            <Caution grade={Grade::Danger} title="On the stand">
+                <p>{ "Guard over shaft and coupling before the first jog; nobody in the plane of the coupling. Never shut a case drain: the \
+                    housing bursts or the seal is thrown. Hoses under full pressure are tied down. Prove the stop before the first load. \
+                    A pinhole you cannot feel can inject oil: card or stick, never a hand." }</p>
+            </Caution>
+            <LayoutForm sheet={sheet.clone()} on_edit={on_edit.clone()} />
+            <HeadForm sheet={sheet.clone()} unit={props.unit.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
+            <Section id="bench-points" title="Points" {state} is_open=true>
+                <PasteBox subject={sheet.subject} rows={sheet.rows.len()} on_edit={on_edit.clone()} />
+                <PointTable sheet={sheet.clone()} told={told.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
+            </Section>
+            <Results sheet={sheet.clone()} told={told.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
+            <Pictures told={told.clone()} sheet={sheet.clone()} prefs={props.prefs.clone()} />
+            <ItemsForm sheet={sheet.clone()} told={told.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
+            <TakeOver
+                told={told.clone()}
+                sheet={sheet.clone()}
+                unit={props.unit.clone()}
+                prefs={props.prefs.clone()}
+                on_unit={props.on_unit.clone()}
+                {on_edit}
+            />
+            <HandOver {sheet} {told} unit={props.unit.clone()} prefs={props.prefs.clone()} />
+        </main>
+    }
+}

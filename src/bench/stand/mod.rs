@@ -1,0 +1,31 @@
+//! The bench stand: from a table of readings to efficiencies, a loss fit and a judged sheet.
+//!
+//! Units inside are the gauge's own: rpm, bar, L/min, N·m, °C, mPa·s, kW, cm³/rev.
+//!
+//! * [`sheet`] is what is kept: every text as typed. [`paste`] reads a table copied from a spreadsheet.
+//! * [`layout`] says which lines are metered and where oil goes; without it no leakage is told from charge flow.
+//! * [`point`] joins repeated readings to a point with its spread and says whether it was steady.
+//! * [`analysis`] computes all that follows from the points; [`uncertain`] repeats it with every instrument moved in turn.
+//! * [`fit`] is the loss model; [`judge`] decides with a guard band; [`report`] is the whole sheet in one call.
+
+pub mod analysis;
+pub mod balance;
+pub mod channel;
+pub mod fit;
+pub mod items;
+pub mod judge;
+pub mod layout;
+pub mod least_squares;
+pub mod paper;
+pub mod paste;
+pub mod point;
+pub mod report;
+pub mod sheet;
+pub mod uncertain;
+
+pub use analysis::{Analysis, PointResult, analyse};
+pub use channel::{Channel, MeasuringClass, Subject};
+pub use layout::{Charge, Flushing, Layout, LayoutGap, Meter, ReliefDrain, TorqueCovers};
+pub use point::{Point, Steadiness, points};
+pub use report::{BenchReport, report};
+pub use sheet::{BenchSheet, Row};

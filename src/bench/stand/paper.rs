@@ -1,0 +1,300 @@
+//! The sheet as text and as a table for a spreadsheet.
+
+use super::analysis::Quantity;
+use super::channel::Channel;
+use super::items::{Entry, of};
+use super::report::{BenchReport, Judged};
+use super::sheet::{BenchSheet, Head, TextId};
+use super::uncertain::Uncertain;
+use crate::quantity::{DecimalMark, Decimals, Measure, Unit, UnitPrefs, format_with_unit};
+use core::fmt::Write;
+
+const CAUTION: &str = "The unit’s manual, local rules and licensed practice come first. Limits marked common practice are no substitute for the maker’s.";
+
+/// A figure with its expanded uncertainty and its unit, to as many decimals as two digits of the doubt need, four at most.
+#[must_use]
+pub fn number(value: f64, expanded: f64, unit: &str, mark: DecimalMark) -> String {
+    let digits = (1.0 - crate::math::log10(expanded.max(1e-4))).ceil();
+    let places = digits.clamp(0.0, 4.0) as usize;
+    let text = format!("{value:.places$} ± {expanded:.places$} {unit}").replace('-', "−");
+    let text = text.trim_end();
+    match mark {
+        DecimalMark::Comma => text.replace('.', ","),
+        DecimalMark::Point => text.to_owned(),
+    }
+}
+
+fn with_doubt(figure: Uncertain, factor: f64, unit: &str, mark: DecimalMark) -> String {
+    number(
+        figure.value * factor,
+        figure.expanded() * factor,
+        unit,
+        mark,
+    )
+}
+
+/// The sheet in plain words, as it is printed or sent.
+#[must_use]
+pub fn text(sheet: &BenchSheet, report: &BenchReport, unit: &str, prefs: &UnitPrefs) -> String {
+    let mut out = String::new();
+    let mut line = |text: String| {
+        out.push_str(text.trim_end());
+        out.push('\n');
+    };
+    line(format!(
+        "BENCH SHEET: {}, {}",
+        unit,
+        sheet.subject.words().to_lowercase()
+    ));
+    for id in TextId::ALL {
+        if let Some(text) = sheet.texts.get(&id).filter(|text| !text.trim().is_empty()) {
+            line(format!("{}: {}", id.words(), text.trim()));
+        }
+    }
+    for head in Head::ALL {
+        if let Some(value) = sheet.head.get(&head).and_then(|typed| typed.value) {
+            let (asked, ..) = head.asks();
+            let shown = match asked {
+                Unit::Percent | Unit::Fraction => asked,
+                other => prefs.unit(other.kind()),
+            };
+            let text = format_with_unit(value, shown, Decimals::Reading, prefs.mark());
+            line(format!("{}: {text}", head.words()));
+        }
+    }
+    let gaps = sheet.layout.open(sheet.subject);
+    line(String::new());
+    line(match report.verdict() {
+        None => "VERDICT: nothing was judged".to_owned(),
+        Some(decision) => format!("VERDICT: {}", decision.words()),
+    });
+    for judged in &report.judged {
+        line(format!(
+            "- {}: {}",
+            judged_words(judged, prefs),
+            judged.decision.words()
+        ));
+    }
+    line(
+        "Decision rule: guard band of the expanded uncertainty, coverage factor 2 (JCGM 106)."
+            .to_owned(),
+    );
+    line(String::new());
+    if let Some(derived) = report.evaluated.derived {
+        line(format!(
+            "Derived displacement: {}",
+            with_doubt(derived, 1.0, "cm³/rev", prefs.mark())
+        ));
+    }
+    for (at, point) in report.points.iter().enumerate() {
+        let figures = &report.evaluated.points[at];
+        let share = |quantity: Quantity, words: &str| {
+            let figure = figures.get(&quantity)?;
+            Some(format!(
+                "{words} {}",
+                with_doubt(*figure, 100.0, "%", prefs.mark())
+            ))
+        };
+        let parts: Vec<String> = [
+            share(Quantity::Volumetric, "volumetric"),
+            share(Quantity::HydroMechanical, "hydro-mechanical"),
+            share(Quantity::Overall, "overall"),
+        ]
+        .into_iter()
+        .flatten()
+        .collect();
+        if !parts.is_empty() {
+            line(format!("Point {}: {}", point.name, parts.join(", ")));
+        }
+    }
+    if !gaps.is_empty() {
+        let words: Vec<String> = gaps.iter().map(ToString::to_string).collect();
+        line(format!("No loss fit: {}.", words.join("; ")));
+    }
+    line(String::new());
+    line("NOT TESTED".to_owned());
+    if report.not_tested.is_empty() {
+        line("- nothing was left out".to_owned());
+    }
+    for (what, why) in &report.not_tested {
+        line(match why {
+            Some(why) => format!("- {what}: {why}"),
+            None => format!("- {what}"),
+        });
+    }
+    line(String::new());
+    line(format!(
+        "Computed by Lowside {}; efficiencies by ISO 4391, uncertainty by JCGM 100, measuring class {:?} (limits after ISO 4409, from memory).",
+        env!("CARGO_PKG_VERSION"),
+        sheet.class
+    ));
+    line(CAUTION.to_owned());
+    out
+}
+
+fn judged_words(judged: &Judged, prefs: &UnitPrefs) -> String {
+    let mark = prefs.mark();
+    let base = judged.unit.kind().base_unit();
+    let factor = if judged.unit == Unit::Percent {
+        100.0
+    } else {
+        1.0
+    };
+    let symbol = if judged.unit == Unit::Percent {
+        "%"
+    } else {
+        base.symbol()
+    };
+    let figure = judged
+        .figure
+        .map(|figure| format!(" {}", with_doubt(figure, factor, symbol, mark)));
+    let one = |value: f64| format!("{:.1} {symbol}", value * factor);
+    let limits = judged.limits.as_ref().map(|limits| {
+        let span = match (limits.low, limits.high) {
+            (Some(low), Some(high)) => format!("{} to {}", one(low), one(high)),
+            (Some(low), None) => format!("{} and more", one(low)),
+            (None, Some(high)) => format!("{} and less", one(high)),
+            (None, None) => "no limit".to_owned(),
+        };
+        format!(" (allowed {span}; {})", limits.from)
+    });
+    format!(
+        "{}{}{}",
+        judged.words,
+        figure.unwrap_or_default(),
+        limits.unwrap_or_default()
+    )
+}
+
+/// A cell that a spreadsheet takes as text and never as a formula (RFC 4180; a leading sign of a formula is defused).
+fn cell(text: &str) -> String {
+    let guarded =
+        if text.starts_with(['=', '+', '-', '@', '\t', '\r']) && text.parse::<f64>().is_err() {
+            format!("'{text}")
+        } else {
+            text.to_owned()
+        };
+    if guarded.contains(['"', ',', '\n', '\r']) {
+        format!("\"{}\"", guarded.replace('"', "\"\""))
+    } else {
+        guarded
+    }
+}
+
+/// Readings and results as CSV (RFC 4180, decimal points, units in the heads); the readings can be pasted back.
+#[must_use]
+pub fn table(sheet: &BenchSheet, report: &BenchReport, prefs: &UnitPrefs) -> String {
+    let columns = sheet.table_columns();
+    let unit = |channel: Channel| {
+        let (own, ..) = channel.asks();
+        if own == Unit::RevolutionPerMinute {
+            own
+        } else {
+            prefs.unit(own.kind())
+        }
+    };
+    let mut out = String::from("Point");
+    for channel in &columns {
+        let head = format!(
+            "{} ({})",
+            channel.words(sheet.subject),
+            unit(*channel).symbol()
+        );
+        let _ = write!(out, ",{}", cell(&head));
+    }
+    out.push_str("\r\n");
+    for row in &sheet.rows {
+        out.push_str(&cell(&row.name));
+        for channel in &columns {
+            let value = row.cells.get(channel).and_then(|typed| {
+                typed
+                    .value
+                    .and_then(|m: Measure| m.try_in_unit(unit(*channel)).ok())
+            });
+            let text = row
+                .cells
+                .get(channel)
+                .map_or("", |typed| typed.typed.as_str());
+            let _ = match value {
+                Some(value) => write!(out, ",{}", rounded(value)),
+                None => write!(out, ",{}", cell(text)),
+            };
+        }
+        out.push_str("\r\n");
+    }
+    out.push_str("\r\nResult of point,Quantity,Unit,Value,Expanded uncertainty (k = 2)\r\n");
+    for (at, point) in report.points.iter().enumerate() {
+        for (quantity, figure) in &report.evaluated.points[at] {
+            let (words, symbol, factor) = quantity_words(*quantity);
+            let _ = write!(
+                out,
+                "{},{words},{symbol},{},{}\r\n",
+                cell(&point.name),
+                rounded(figure.value * factor),
+                rounded(figure.expanded() * factor)
+            );
+        }
+    }
+    out.push_str("\r\nItem,Unit,Found,Note\r\n");
+    for item in of(sheet.subject) {
+        let Some(entry) = sheet.items.get(&item.id) else {
+            continue;
+        };
+        let (symbol, found) = match item.entry {
+            Entry::Figure(unit) => (
+                unit.symbol(),
+                entry
+                    .found
+                    .value
+                    .and_then(|m| m.try_in_unit(unit).ok())
+                    .map_or(String::new(), rounded),
+            ),
+            Entry::Tick => (
+                "",
+                match (entry.is_good, &entry.skipped) {
+                    (Some(true), _) => "good".to_owned(),
+                    (Some(false), _) => "not good".to_owned(),
+                    (None, Some(why)) => format!("not tested: {why}"),
+                    (None, None) => String::new(),
+                },
+            ),
+        };
+        let _ = write!(
+            out,
+            "{},{symbol},{},{}\r\n",
+            cell(item.words),
+            cell(&found),
+            cell(&entry.note)
+        );
+    }
+    out
+}
+
+/// Six significant digits, without an exponent.
+fn rounded(value: f64) -> String {
+    if value == 0.0 {
+        return "0".to_owned();
+    }
+    let digits = 5.0 - crate::math::log10(value.abs()).floor();
+    let places = digits.clamp(0.0, 9.0) as usize;
+    let text = format!("{value:.places$}");
+    if text.contains('.') {
+        text.trim_end_matches('0').trim_end_matches('.').to_owned()
+    } else {
+        text
+    }
+}
+
+/// Words, symbol and factor of a quantity.
+const fn quantity_words(quantity: Quantity) -> (&'static str, &'static str, f64) {
+    match quantity {
+        Quantity::Volumetric => ("Volumetric efficiency", "%", 100.0),
+        Quantity::HydroMechanical => ("Hydro-mechanical efficiency", "%", 100.0),
+        Quantity::Overall => ("Overall efficiency", "%", 100.0),
+        Quantity::FlowLost => ("Flow lost", "L/min", 1.0),
+        Quantity::CaseLeakage => ("Case leakage", "L/min", 1.0),
+        Quantity::TorqueLost => ("Torque lost", "N·m", 1.0),
+        Quantity::ShaftPower => ("Shaft power", "kW", 1.0),
+        Quantity::OutPower => ("Oil or output power", "kW", 1.0),
+    }
+}
