@@ -630,3 +630,46 @@ fn every_instrument_that_read_something_is_moved_once() {
     assert_eq!(instruments, 7);
     assert_eq!(moves.len(), 8);
 }
+
+/// What goes out as a table can be pasted back and says the same, whatever the shop's units.
+#[test]
+fn the_table_that_goes_out_comes_back() {
+    use lowside::bench::stand::{paper, paste};
+    use lowside::quantity::UnitPrefs;
+    for prefs in [UnitPrefs::metric(), UnitPrefs::us()] {
+        let rows = Machine::pump().table(&Errors::none());
+        let before = sheet(Subject::Pump, rows);
+        let out = paper::table(&before, &report(&before, None), &prefs);
+        let readings = out.split("\r\n\r\n").next().expect("readings first");
+        let pasted = paste::read(readings, Subject::Pump).expect("a table");
+        let (rows, bad) = pasted.rows(|| "r".to_owned());
+        assert!(bad.is_empty(), "{bad:?}");
+        assert_eq!(rows.len(), before.rows.len());
+        for (one, other) in before.rows.iter().zip(&rows) {
+            for channel in one.cells.keys() {
+                let (a, b) = (one.value(*channel), other.value(*channel));
+                close("cell", b.expect("came back"), a.expect("went out"), 2e-5);
+            }
+        }
+    }
+}
+
+#[test]
+fn the_sheet_in_words_says_what_it_rests_on() {
+    use lowside::bench::stand::paper;
+    use lowside::quantity::UnitPrefs;
+    let rows = Machine::pump().table(&Errors::none());
+    let sheet = with_plate(sheet(Subject::Pump, rows), 75.0);
+    let text = paper::text(&sheet, &report(&sheet, None), "T-14", &UnitPrefs::metric());
+    for part in [
+        "BENCH SHEET: T-14",
+        "VERDICT:",
+        "Derived displacement: 7",
+        "NOT TESTED",
+        "JCGM 106",
+        "The unit’s manual",
+    ] {
+        assert!(text.contains(part), "{part} is missing in\n{text}");
+    }
+    assert!(!text.contains("NaN") && !text.contains("inf"), "{text}");
+}

@@ -7,6 +7,7 @@
 //! * [`limits`] says how much a record may hold; fields on a screen keep to them.
 
 pub mod archive;
+pub mod backup;
 mod bench;
 mod book;
 mod check;

@@ -1,54 +1,7 @@
 //! Straight tracking of a machine on tracks: steps, runs, what may be said and what not, and what is kept.
 
-use std::path::PathBuf;
-
-use crate::rig::{LAPTOP, PHONE, Rig, Scheme, TABLET};
-
-/// With `LOWSIDE_SHOTS` set, the screen as it is now, at three sizes, light and dark.
-async fn look(rig: &Rig, name: &str) {
-    let Some(folder) = std::env::var_os("LOWSIDE_SHOTS").map(PathBuf::from) else {
-        return;
-    };
-    std::fs::create_dir_all(&folder).expect("writable");
-    for size in [PHONE, TABLET, LAPTOP] {
-        for scheme in [Scheme::Light, Scheme::Dark] {
-            rig.set_size(size).await;
-            rig.set_scheme(scheme).await;
-            let height = rig
-                .js("return document.documentElement.scrollHeight;", vec![])
-                .await;
-            let height = height
-                .as_u64()
-                .and_then(|h| u32::try_from(h).ok())
-                .unwrap_or(size.height);
-            rig.set_size(crate::rig::Size { height, ..size }).await;
-            let file = format!("{name}-{}-{}.png", size.name, scheme.name());
-            rig.screenshot(&folder.join(file)).await;
-        }
-    }
-    rig.set_size(PHONE).await;
-}
-
-async fn open(rig: &Rig, testid: &str) {
-    let script = "for (let at = document.querySelector(`[data-testid=\"${arguments[0]}\"]`); at; at = at.parentElement) {
-            if (at.tagName === 'DETAILS') { at.open = true; }
-        }
-        return true;";
-    rig.js(script, vec![testid.into()]).await;
-}
-
-async fn press(rig: &Rig, testid: &str) {
-    open(rig, testid).await;
-    // The radio button itself is not drawn: its label is.
-    let script =
-        "document.querySelector(`[data-testid=\"${arguments[0]}\"]`).click(); return true;";
-    rig.js(script, vec![testid.into()]).await;
-}
-
-async fn type_in(rig: &Rig, testid: &str, text: &str) {
-    open(rig, testid).await;
-    rig.fill(testid, text).await;
-}
+use crate::hands::{look, open, press, type_in};
+use crate::rig::{PHONE, Rig};
 
 /// A count of both sides in this setting, as the next run.
 async fn count(rig: &Rig, at: usize, lever: &str, travel: &str, left: &str, right: &str) {
@@ -71,7 +24,7 @@ async fn a_null_is_told_from_a_bend_once_turns_are_counted() {
     rig.click("to-tracking").await;
     rig.by_id("tracking-screen").await;
     rig.wait_for_text("No run counts yet").await;
-    look(&rig, "tracking-empty").await;
+    look(&rig, "tracking-empty", PHONE).await;
 
     // A path without a width does not count, and says why; with it one bend proves nothing.
     rig.click("add-run").await;
@@ -99,7 +52,7 @@ async fn a_null_is_told_from_a_bend_once_turns_are_counted() {
     rig.by_id("do-Null").await;
     assert!(rig.text("do-Null").await.contains("right faster"));
     assert!(rig.has("plan-view").await);
-    look(&rig, "tracking-null").await;
+    look(&rig, "tracking-null", PHONE).await;
 
     // Counted by thumb: both counts become a run of their own.
     for side in ["left", "right"] {

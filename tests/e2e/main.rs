@@ -7,8 +7,11 @@
 //! build, which it may change, break off or stop.
 
 mod browser;
+mod hands;
+mod journeys_bench;
 mod journeys_call;
 mod journeys_close;
+mod journeys_everyone;
 mod journeys_many;
 mod journeys_neutral;
 mod journeys_offline;

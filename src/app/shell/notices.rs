@@ -1,10 +1,13 @@
 //! What must be told above every screen, with the buttons that answer it.
 
-use yew::{Callback, Html, MouseEvent, Properties, component, html};
+use yew::{Callback, Html, MouseEvent, Properties, component, html, use_state};
 
 use crate::app::deed::{Deed, Snapshot};
 use crate::app::parts::{Caution, Grade};
+use crate::app::platform::clock;
+use crate::app::route::Route;
 use crate::app::state::{About, Action, Notice, Save};
+use crate::record::backup::{AtRisk, at_risk};
 use crate::store::RecordKey;
 
 /// Properties of [`Notices`].
@@ -31,7 +34,17 @@ impl NoticesProps {
 pub fn Notices(props: &NoticesProps) -> Html {
     let state = &props.state;
     let export = || props.button("Save everything to a file", "export-now", Deed::Export);
-    let anything = !state.notices.is_empty()
+    let put_off = use_state(|| false);
+    // Only where nobody is in the middle of a job.
+    let risk = (!*put_off && state.route == Route::Units && !state.memory_only)
+        .then(|| {
+            let visits = state.visits.values().map(|visit| &**visit);
+            at_risk(&state.settings.last_export, visits, &clock::now())
+        })
+        .flatten();
+    let on_later = Callback::from(move |_: MouseEvent| put_off.set(true));
+    let anything = risk.is_some()
+        || !state.notices.is_empty()
         || state.memory_only
         || state.is_nearly_full
         || state.engine_trouble.is_some()
@@ -61,6 +74,15 @@ pub fn Notices(props: &NoticesProps) -> Html {
                 <Caution title="Storage is filling up" testid="nearly-full">
                     <p>{ "Put old calls into an archive file and empty the trash, both in Settings. Until then everything goes on being saved." }</p>
                     <div class="actions">{ export() }</div>
+                </Caution>
+            }
+            if let Some(risk) = risk {
+                <Caution title="Save a copy off this device" testid="backup-reminder">
+                    <p>{ at_risk_words(risk) }</p>
+                    <div class="actions">
+                        { export() }
+                        <button type="button" class="button is-quiet" onclick={on_later} data-testid="backup-later">{ "Later" }</button>
+                    </div>
                 </Caution>
             }
             if let Some(why) = &state.engine_trouble {
@@ -109,5 +131,16 @@ fn one(props: &NoticesProps, notice: &Notice) -> Html {
             <p>{ &notice.text }</p>
             <div class="actions">{ buttons }</div>
         </Caution>
+    }
+}
+
+fn at_risk_words(risk: AtRisk) -> String {
+    let calls = match risk.calls {
+        1 => "One call is on this device alone".to_owned(),
+        many => format!("{many} calls are on this device alone"),
+    };
+    match risk.days {
+        None => format!("{calls}: nothing was saved to a file yet. A lost phone takes them along."),
+        Some(days) => format!("{calls}: the last file is {days} days old."),
     }
 }

@@ -64,6 +64,8 @@ pub struct Pasted {
     pub columns: Vec<Column>,
     /// Cells, row by row.
     pub cells: Vec<Vec<String>>,
+    /// The decimal mark, where the table as a whole tells it. One cell alone may not: "81.849".
+    decimal: Option<char>,
 }
 
 /// A cell that could not be read: row and column as counted in the table, from 1, and why.
@@ -127,8 +129,37 @@ pub fn read(text: &str, subject: Subject) -> Result<Pasted, PasteError> {
         .collect();
     Ok(Pasted {
         columns,
+        decimal: decimal_mark(figures),
         cells: figures.to_vec(),
     })
+}
+
+/// Digits behind the one mark of a figure.
+fn behind(cell: &str, mark: char) -> Option<usize> {
+    let other = if mark == '.' { ',' } else { '.' };
+    let (whole, rest) = cell.split_once(mark)?;
+    let is_plain = !cell.contains(other) && rest.chars().all(|c| c.is_ascii_digit());
+    let is_whole = whole
+        .trim_start_matches(['-', '+', '−'])
+        .chars()
+        .all(|c| c.is_ascii_digit());
+    (is_plain && is_whole).then_some(rest.len())
+}
+
+/// A mark with other than three digits behind it somewhere in the table is a decimal mark everywhere in it.
+fn decimal_mark(figures: &[Vec<String>]) -> Option<char> {
+    let tells = |mark: char| {
+        let mut cells = figures
+            .iter()
+            .flatten()
+            .filter_map(|cell| behind(cell, mark));
+        cells.any(|digits| digits != 3)
+    };
+    match (tells('.'), tells(',')) {
+        (true, false) => Some('.'),
+        (false, true) => Some(','),
+        _ => None,
+    }
 }
 
 fn delimiter(lines: &[&str]) -> char {
@@ -368,6 +399,14 @@ impl Pasted {
                         Goes::Name => row.name.clone_from(cell),
                         Goes::To(_) if cell.is_empty() => {}
                         Goes::To(channel) => {
+                            // A fourth digit keeps the meaning when the cell stands alone.
+                            let is_open =
+                                self.decimal.and_then(|mark| behind(cell, mark)) == Some(3);
+                            let cell = &if is_open {
+                                format!("{cell}0")
+                            } else {
+                                cell.clone()
+                            };
                             let (typed, why) = typed(channel, column.unit, cell);
                             bad.extend(why.map(|why| BadCell {
                                 row: index + 1,
@@ -451,6 +490,15 @@ mod tests {
         assert!((torque - 271.16).abs() < 0.01);
         assert_eq!(rows[0].value(Channel::Speed), Some(1800.0));
         assert!(rows[0].cells[&Channel::High].typed.ends_with("psi"));
+    }
+
+    #[test]
+    fn the_table_tells_what_one_cell_leaves_open() {
+        let text = "Speed\tTorque\n1500\t81.849\n1500\t84.2\n";
+        let (rows, bad) = rows(text, Subject::Pump);
+        assert!(bad.is_empty(), "{bad:?}");
+        assert_eq!(rows[0].value(Channel::Torque), Some(81.849));
+        assert_eq!(rows[0].cells[&Channel::Torque].typed, "81.8490");
     }
 
     #[test]

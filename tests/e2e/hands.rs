@@ -1,0 +1,54 @@
+//! What several journeys do: look, open, press, type.
+
+use std::path::PathBuf;
+
+use crate::rig::{LAPTOP, PHONE, Rig, Scheme, Size, TABLET};
+
+/// With `LOWSIDE_SHOTS` set, the screen as it is now, at three sizes, light and dark.
+pub async fn look(rig: &Rig, name: &str, back_to: Size) {
+    let Some(folder) = std::env::var_os("LOWSIDE_SHOTS").map(PathBuf::from) else {
+        return;
+    };
+    std::fs::create_dir_all(&folder).expect("writable");
+    for size in [PHONE, TABLET, LAPTOP] {
+        for scheme in [Scheme::Light, Scheme::Dark] {
+            rig.set_size(size).await;
+            rig.set_scheme(scheme).await;
+            let height = rig
+                .js("return document.documentElement.scrollHeight;", vec![])
+                .await;
+            let height = height
+                .as_u64()
+                .and_then(|h| u32::try_from(h).ok())
+                .unwrap_or(size.height);
+            rig.set_size(Size { height, ..size }).await;
+            let file = format!("{name}-{}-{}.png", size.name, scheme.name());
+            rig.screenshot(&folder.join(file)).await;
+        }
+    }
+    rig.set_size(back_to).await;
+}
+
+/// Opens every fold round an element.
+pub async fn open(rig: &Rig, testid: &str) {
+    let script = "for (let at = document.querySelector(`[data-testid=\"${arguments[0]}\"]`); at; at = at.parentElement) {
+            if (at.tagName === 'DETAILS') { at.open = true; }
+        }
+        return true;";
+    rig.js(script, vec![testid.into()]).await;
+}
+
+/// Presses what may stand in a fold.
+pub async fn press(rig: &Rig, testid: &str) {
+    open(rig, testid).await;
+    // The radio button itself is not drawn: its label is.
+    let script =
+        "document.querySelector(`[data-testid=\"${arguments[0]}\"]`).click(); return true;";
+    rig.js(script, vec![testid.into()]).await;
+}
+
+/// Types into a field that may stand in a fold.
+pub async fn type_in(rig: &Rig, testid: &str, text: &str) {
+    open(rig, testid).await;
+    rig.fill(testid, text).await;
+}

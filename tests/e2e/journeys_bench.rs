@@ -1,0 +1,99 @@
+//! The bench on a laptop: layout, a pasted table, what it comes to, into the profile, and out as a file.
+
+use crate::hands::{look, press, type_in};
+use crate::rig::{LAPTOP, Rig};
+
+/// A pump of 75 cm³/rev at three speeds and four pressures, as a spreadsheet gives it: tabs, decimal commas, a row of units.
+fn table() -> String {
+    let mut text =
+        "Point\tSpeed\tInlet pressure\tOutlet pressure\tFlow\tCase flow\tTorque\tOil temperature\n\
+                    \trpm\tbar\tbar\tL/min\tL/min\tNm\t°C\n"
+            .to_owned();
+    let mut point = 0;
+    for n in [900.0_f64, 1500.0, 2200.0] {
+        for dp in [60.0_f64, 140.0, 220.0, 300.0] {
+            point += 1;
+            let flow = 75.0 * n * 1e-3 * (1.0 - 9e-5 * dp) - 0.011 * dp;
+            let case = 0.0068 * (dp + 40.0);
+            let torque = 75.0 * dp * 0.1 / std::f64::consts::TAU + 3.0 + 0.03 * dp + 0.004 * n;
+            let row = format!(
+                "{point}\t{n:.0}\t20,0\t{:.0}\t{flow:.2}\t{case:.2}\t{torque:.1}\t50,2\n",
+                20.0 + dp
+            );
+            text.push_str(&row.replace('.', ","));
+        }
+    }
+    text
+}
+
+#[tokio::test]
+async fn a_pasted_run_becomes_a_judged_sheet_and_goes_into_the_profile() {
+    let rig = Rig::open(LAPTOP).await;
+    rig.click("load-demo").await;
+    rig.wait_for_text("T-14").await;
+    rig.go("/call/demo-v-14").await;
+    rig.by_id("call-screen").await;
+    rig.click("to-bench").await;
+    rig.by_id("bench-screen").await;
+    rig.wait_for_text("Nothing was judged").await;
+    look(&rig, "bench-empty", LAPTOP).await;
+
+    // The table comes first: without a layout no efficiency and no fit.
+    press(&rig, "bench-paste-text").await;
+    let fill = "const box = document.querySelector('[data-testid=\"bench-paste-text\"]');
+        Object.getOwnPropertyDescriptor(HTMLTextAreaElement.prototype, 'value').set.call(box, arguments[0]);
+        box.dispatchEvent(new InputEvent('input', { bubbles: true }));
+        return true;";
+    rig.js(fill, vec![table().into()]).await;
+    rig.wait_for_text("Take 12 rows").await;
+    rig.click("bench-take").await;
+    rig.wait_for_text("12 points").await;
+    rig.wait_for_text("say in which line the flow meter stands")
+        .await;
+
+    press(&rig, "bench-charge-none").await;
+    press(&rig, "bench-meter-high").await;
+    rig.wait_for_text("Derived displacement").await;
+    let derived = rig.text("bench-derived").await;
+    assert!(
+        derived.contains("± ") && derived.contains("cm³/rev"),
+        "{derived}"
+    );
+    assert!(rig.text("bench-fit-flow").await.contains("viscosity"));
+    type_in(&rig, "bench-viscosity", "46").await;
+    type_in(&rig, "bench-displacement", "75").await;
+    rig.wait_for_text("Laminar slip").await;
+    type_in(&rig, "bench-rated-speed", "2200").await;
+    type_in(&rig, "bench-rated-pressure", "220 bar").await;
+    rig.wait_for_text("nearest to the rated one").await;
+    assert!(rig.has("bench-map").await);
+    look(&rig, "bench-run", LAPTOP).await;
+
+    // A cell that cannot be read is named, and kept over a reload.
+    type_in(&rig, "cell-0-flow", "about 60").await;
+    rig.wait_for_text("Row 1, Flow").await;
+    rig.wait_for_text("Saved").await;
+    rig.reload().await;
+    rig.by_id("bench-screen").await;
+    let kept = "return document.querySelector('[data-testid=\"cell-0-flow\"]').value;";
+    assert_eq!(rig.js(kept, vec![]).await.as_str(), Some("about 60"));
+    type_in(&rig, "cell-0-flow", "66,5").await;
+
+    // An item of the sheet, judged against the trade's limit.
+    type_in(&rig, "bench-item-responseout-found", "3,5 s").await;
+    rig.wait_for_text("Fails").await;
+    type_in(&rig, "bench-item-responseout-found", "1,2 s").await;
+    rig.wait_for_text("Passes in what was tested").await;
+    assert!(rig.text("bench-not-tested").await.contains("Loop relief A"));
+
+    press(&rig, "bench-into-profile").await;
+    rig.wait_for_text("In the profile, marked as measured")
+        .await;
+    press(&rig, "bench-csv").await;
+    let csv = rig.downloaded("bench-").await;
+    assert!(csv.contains("Outlet pressure (bar)"), "{csv}");
+    assert!(!rig.scrolls_sideways().await, "one has to scroll sideways");
+    let problems = rig.problems().await;
+    assert!(problems.is_empty(), "{problems:?}");
+    rig.close().await;
+}

@@ -1,0 +1,97 @@
+//! Every screen by axe-core, the rules of WCAG 2.2 AA with target size, at four widths and in every theme: no violation.
+
+use serde_json::Value;
+
+use crate::rig::{LAPTOP, NARROW, PHONE, Rig, Scheme, TABLET};
+
+/// The script, which `.ci/setup` brings.
+fn axe() -> String {
+    let path = std::env::var_os("LOWSIDE_AXE")
+        .expect("LOWSIDE_AXE names axe.min.js; setup_axe of .ci/setup brings it");
+    std::fs::read_to_string(path).expect("axe-core is readable")
+}
+
+/// Runs the rules on the page as it stands; gives back what is violated, a line each.
+async fn violations(rig: &Rig, script: &str) -> Vec<String> {
+    // Loaded anew after each navigation.
+    rig.js(
+        &format!("if (!window.axe) {{ {script} }} return true;"),
+        vec![],
+    )
+    .await;
+    let run = "const done = arguments[arguments.length - 1];
+        axe.run(document, {
+            runOnly: { type: 'tag', values: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'] },
+            rules: { 'target-size': { enabled: true } },
+            resultTypes: ['violations'],
+        }).then(
+            found => done(found.violations.flatMap(rule => rule.nodes.slice(0, 4).map(node =>
+                rule.id + ': ' + node.target.join(' ') + ' | ' + (node.any.concat(node.all, node.none)[0] || {}).message))),
+            why => done(['axe did not run: ' + why]));";
+    let found = rig.js_async(run, vec![]).await;
+    let lines = found.as_array().cloned().unwrap_or_default();
+    lines
+        .iter()
+        .map(|line| line.as_str().unwrap_or("not told").to_owned())
+        .collect()
+}
+
+#[tokio::test]
+async fn no_screen_shuts_anybody_out() {
+    let script = axe();
+    let rig = Rig::open(PHONE).await;
+    rig.click("load-demo").await;
+    rig.wait_for_text("T-14").await;
+    let mut all = Vec::new();
+    for route in [
+        "/units",
+        "/unit/demo-t-14",
+        "/call/demo-v-14",
+        "/call/demo-v-14/neutral",
+        "/call/demo-v-14/tracking",
+        "/call/demo-v-14/bench",
+        "/settings",
+    ] {
+        rig.go(route).await;
+        // Everything that is folded is looked at too.
+        rig.js(
+            "document.querySelectorAll('details').forEach(fold => { fold.open = true; }); return true;",
+            vec![],
+        )
+        .await;
+        for size in [NARROW, PHONE, TABLET, LAPTOP] {
+            rig.set_size(size).await;
+            for theme in ["light", "dark", "sun"] {
+                let scheme = if theme == "dark" {
+                    Scheme::Dark
+                } else {
+                    Scheme::Light
+                };
+                // Colours hang on the theme and not on the width: each theme once, each width once.
+                if size.name != PHONE.name && theme != "light" {
+                    continue;
+                }
+                rig.set_scheme(scheme).await;
+                let set = "if (arguments[0] === 'sun') { document.documentElement.setAttribute('data-theme', 'sun'); }
+                    else { document.documentElement.removeAttribute('data-theme'); }
+                    return true;";
+                rig.js(set, vec![Value::from(theme)]).await;
+                for line in violations(&rig, &script).await {
+                    all.push(format!("{route} at {} px, {theme}: {line}", size.width));
+                }
+            }
+        }
+        rig.js(
+            "document.documentElement.removeAttribute('data-theme'); return true;",
+            vec![],
+        )
+        .await;
+    }
+    assert!(
+        all.is_empty(),
+        "{} violations:\n{}",
+        all.len(),
+        all.join("\n")
+    );
+    rig.close().await;
+}
