@@ -54,7 +54,7 @@ fn a_reader_from_outside_reads_the_tag_and_the_profile_comes_back() {
         assert_eq!(link, made.link);
         assert!(link.starts_with("https://yard.example/lowside/#/tag/"));
         let export = tag::read(&link).expect("it reads");
-        assert_eq!(export.units, [unit.clone()]);
+        assert_eq!(export.units, std::slice::from_ref(&unit));
         println!(
             "{}: version {}, {} modules, {} digits",
             unit.name,
@@ -110,7 +110,10 @@ fn the_same_text_pasted_in_many_ways() {
         format!("{ADDRESS}{}{digits}", tag::MARK),
         format!("Look: {ADDRESS}{}{digits}. Bye", tag::MARK),
     ] {
-        assert_eq!(tag::read(&text).expect("it reads").units, [unit.clone()]);
+        assert_eq!(
+            tag::read(&text).expect("it reads").units,
+            std::slice::from_ref(unit)
+        );
     }
     assert!(block.lines().all(|line| line.len() <= 50), "{block}");
 }
