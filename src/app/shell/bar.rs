@@ -17,13 +17,16 @@ pub struct BarProps {
 /// Id and name of the unit that the screen is about.
 fn unit_at_hand(state: &State) -> Option<(String, String)> {
     let id = match &state.route {
-        Route::Unit(id) | Route::Wear(id) => id,
+        Route::Unit(id) | Route::Wear(id) | Route::Tags(Some(id)) => id,
         Route::Call(id)
         | Route::Neutral(id)
         | Route::Tracking(id)
         | Route::Bench(id)
+        | Route::Report(id)
         | Route::Yard(id) => &state.visits.get(id)?.unit,
-        Route::Units | Route::Settings | Route::Learned => return None,
+        Route::Units | Route::Settings | Route::Learned | Route::Tags(None) | Route::Tag(_) => {
+            return None;
+        }
     };
     Some((id.clone(), state.units.get(id)?.name.clone()))
 }
