@@ -21,7 +21,11 @@
 //! | [`next`] | the next check, the next repair, when to stop |
 //! | [`tracking`] | straight tracking of a machine with two sides: which side is faster, why, what to turn |
 //! | [`assessment`] | what an assessment hands out |
+//! | [`call`] | what the record of one call says: words, sides, how it ended, what to put back |
+//! | [`report`] | the hand-over report: one page, plain text, readings for a spreadsheet |
 //! | [`record`] | visits and units as they are kept; import, export, migration |
+//! | [`pack`] | records made small: a dictionary, digits, wide characters |
+//! | [`tag`] | the tag of a unit: its profile in a QR code |
 //! | [`store`] | where the record is kept |
 #![forbid(unsafe_code)]
 #![warn(missing_docs)]
@@ -30,6 +34,7 @@
 pub mod app;
 pub mod assessment;
 pub mod bench;
+pub mod call;
 pub mod caution;
 pub mod checks;
 pub mod circuit;
@@ -44,11 +49,14 @@ pub mod math;
 pub mod neutral;
 pub mod next;
 pub mod observations;
+pub mod pack;
 pub mod quantity;
 pub mod ranking;
 pub mod readings;
 pub mod record;
+pub mod report;
 pub mod store;
+pub mod tag;
 pub mod tracking;
 pub mod unit;
 pub mod windows;

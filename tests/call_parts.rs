@@ -10,11 +10,10 @@ mod call {
     pub mod bands;
     pub mod group;
     pub mod pair_line;
-    pub mod put_back;
     pub mod quick;
     pub mod scale;
-    pub mod side;
-    pub mod words;
+
+    pub use lowside::call::{put_back, side, words};
 }
 
 use assessment::{Assessment, Cause, Evidence, Trust};

@@ -742,19 +742,19 @@ fn usage_counts_as_browsers_do_and_warns_early() {
     assert_eq!(shelf.usage(), Ok(Usage { characters: 15 }));
     assert!(
         !Usage {
-            characters: 1_049_999
+            characters: 2_069_999
         }
         .is_high()
     );
     assert!(
         Usage {
-            characters: 1_050_000
+            characters: 2_070_000
         }
         .is_high()
     );
     assert!(
         (Usage {
-            characters: 750_000
+            characters: 1_150_000
         }
         .share()
             - 0.5)

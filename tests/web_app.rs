@@ -9,7 +9,7 @@ use lowside::app::parts::{Choice, Entry, MeasureField, tick_options};
 use lowside::app::route::Route;
 use lowside::app::state::{About, Action, Records, Save, State, Written};
 use lowside::quantity::{Measure, Unit as MeasureUnit};
-use lowside::record::{Settings, Visit};
+use lowside::record::{Settings, UnitOrder, Visit};
 use lowside::store::RecordKey;
 use lowside::unit::{Tick, Unit};
 use wasm_bindgen_test::{wasm_bindgen_test, wasm_bindgen_test_configure};
@@ -132,7 +132,13 @@ fn a_theme_does_not_make_new_instruments() {
 }
 
 #[wasm_bindgen_test]
-fn the_unit_called_last_comes_first() {
+fn units_stand_in_the_order_that_was_chosen() {
+    let order = |unit_order| {
+        Action::PutSettings(Settings {
+            unit_order,
+            ..Settings::start()
+        })
+    };
     let state = with([
         Action::PutUnit(unit("a", "never called")),
         Action::PutUnit(unit("b", "long ago")),
@@ -140,12 +146,24 @@ fn the_unit_called_last_comes_first() {
         Action::PutVisit(Box::new(visit("v1", "b", "2024-01-01T08:00:00Z"))),
         Action::PutVisit(Box::new(visit("v2", "c", "2025-01-01T08:00:00Z"))),
     ]);
-    let names: Vec<String> = state
-        .units_by_last_call()
-        .iter()
-        .map(|unit| unit.name.clone())
-        .collect();
-    assert_eq!(names, ["lately", "long ago", "never called"]);
+    let names = |state: &State| -> Vec<String> {
+        let listed = state.listed("");
+        listed.iter().map(|one| one.unit.name.clone()).collect()
+    };
+    let by_call = state.after(order(UnitOrder::LastCall));
+    assert_eq!(names(&by_call), ["lately", "long ago", "never called"]);
+    let by_name = by_call.after(order(UnitOrder::Name));
+    assert_eq!(names(&by_name), ["lately", "long ago", "never called"]);
+    // Settled calls press least, whenever they were.
+    let mut closed = visit("v2", "c", "2025-01-01T08:00:00Z");
+    closed.closed = Some(lowside::record::Closing::default());
+    let pressing = by_name
+        .after(Action::PutVisit(Box::new(closed)))
+        .after(order(UnitOrder::Attention));
+    assert_eq!(names(&pressing), ["long ago", "lately", "never called"]);
+    let found = pressing.listed("ago");
+    assert_eq!(found.len(), 1);
+    assert_eq!(found[0].last.as_ref().map(|v| v.id.as_str()), Some("v1"));
 }
 
 fn document() -> web_sys::Document {

@@ -16,7 +16,9 @@ use super::persist::Keeper;
 use super::platform::listen::Listener;
 use super::platform::{focus, offline, persistence, theme};
 use super::route::Route;
+use super::screens::report::ReportScreen;
 use super::screens::settings::SettingsScreen;
+use super::screens::tag::{TagReader, TagSheet};
 use super::screens::unit::Profile;
 use super::screens::units::Units;
 use super::shell::{Bar, Notices};
@@ -111,6 +113,13 @@ fn title(state: &State) -> String {
             .get(id)
             .and_then(|visit| name(&visit.unit))
             .map(|name| format!("Tracking, {name}")),
+        Route::Report(id) => state
+            .visits
+            .get(id)
+            .and_then(|visit| name(&visit.unit))
+            .map(|name| format!("Report, {name}")),
+        Route::Tags(_) => Some("Tags".to_owned()),
+        Route::Tag(_) => Some("Read a tag".to_owned()),
         Route::Bench(id) => state
             .visits
             .get(id)
@@ -220,6 +229,35 @@ fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
                             on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
                             on_unit={deed.reform(|unit| Deed::Put(Action::PutUnit(unit)))}
                             on_instruments={deed.reform(|list| Deed::Put(Action::PutInstruments(list)))}
+                        />
+                    }
+                }
+                None => missing("call"),
+            }
+        }
+        Route::Tags(unit) => html! {
+            <TagSheet key={unit.clone().unwrap_or_default()} unit={unit.clone()} state={state.clone()} />
+        },
+        Route::Tag(scanned) => html! {
+            <TagReader key={scanned.clone()} scanned={scanned.clone()} state={state.clone()} deed={deed.clone()} />
+        },
+        Route::Report(id) => {
+            let visit = state.visits.get(id);
+            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
+                Some((visit, unit)) => {
+                    let (assessment, updating) = state.answer(id);
+                    html! {
+                        <ReportScreen
+                            key={format!("{id}-report")}
+                            unit={unit.clone()}
+                            visit={visit.clone()}
+                            instruments={state.instruments.clone()}
+                            prefs={state.settings.units.clone()}
+                            {assessment}
+                            {updating}
+                            trouble={state.engine_trouble.clone()}
+                            on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
+                            on_say={deed.reform(|words| Deed::Put(Action::Say(words)))}
                         />
                     }
                 }

@@ -28,6 +28,10 @@ pub enum Deed {
     RemoveUnit(String),
     /// Takes a call away.
     RemoveVisit(String),
+    /// Writes the closed calls opened before this year to a file.
+    Archive(u16),
+    /// Takes calls away for good: they are in an archive.
+    RemoveArchived(Vec<String>),
     /// Settles a conflict: keep what was typed here as a copy, then show what the other window saved.
     KeepMineAsCopy(Key),
     /// Settles a conflict: drop what was typed here, show what the other window saved.

@@ -17,9 +17,36 @@ pub fn export(hands: &Rc<Hands>) {
     hands.flush();
     let state = hands.now();
     let now = clock::now();
-    let texts = match Export::of(&book_of(&state), &now).texts() {
+    let Some(count) = hand_over(hands, "lowside", &Export::of(&book_of(&state), &now)) else {
+        return;
+    };
+    let settings = Settings {
+        last_export: now,
+        ..(*state.settings).clone()
+    };
+    hands.put(Action::PutSettings(settings));
+    say_handed_over(hands, count);
+}
+
+/// Hands the closed calls opened before this year over as a file. They stay here until the person takes them away.
+pub fn archive(hands: &Rc<Hands>, before: u16) {
+    hands.flush();
+    let book = book_of(&hands.now());
+    let calls = crate::record::archive::old(&book, before);
+    let export = Export::of_visits(&book, &calls, &clock::now());
+    if let Some(count) = hand_over(hands, &format!("lowside-archive-before-{before}"), &export) {
+        say_handed_over(hands, count);
+    }
+}
+
+/// Hands an export to the browser; says how many files it takes. None, and told, where it cannot be done.
+fn hand_over(hands: &Rc<Hands>, name: &str, export: &Export) -> Option<usize> {
+    let texts = match export.texts() {
         Ok(texts) => texts,
-        Err(why) => return hands.trouble(format!("The file could not be written: {why}.")),
+        Err(why) => {
+            hands.trouble(format!("The file could not be written: {why}."));
+            return None;
+        }
     };
     let count = texts.len();
     for (at, text) in texts.iter().enumerate() {
@@ -28,18 +55,18 @@ pub fn export(hands: &Rc<Hands>) {
         } else {
             format!("-{}-of-{count}", at + 1)
         };
-        let name = format!("lowside-{}{part}.json", clock::file_day());
+        let name = format!("{name}-{}{part}.json", clock::file_day());
         if let Err(why) = files::hand_over(&name, JSON, text) {
-            return hands.trouble(format!(
+            hands.trouble(format!(
                 "The file could not be handed to the browser: {why}."
             ));
+            return None;
         }
     }
-    let settings = Settings {
-        last_export: now,
-        ..(*state.settings).clone()
-    };
-    hands.put(Action::PutSettings(settings));
+    Some(count)
+}
+
+fn say_handed_over(hands: &Rc<Hands>, count: usize) {
     hands.put(Action::Say(match count {
         1 => "The file was handed to the browser as a download.".to_owned(),
         count => {

@@ -19,6 +19,8 @@ use crate::unit::{MachineClass, Ticks, Unit};
 
 /// From the last edit to the write.
 const SAVE_AFTER_MS: i32 = 300;
+/// Units of the list about which the engine is asked unbidden.
+const ASKED_AT_ONCE: usize = 12;
 /// From a write that failed to the next.
 const RETRY_AFTER_MS: i32 = 10_000;
 
@@ -132,7 +134,7 @@ impl Hands {
 
     fn ask_engine(&self, state: &State) {
         match &state.route {
-            Route::Call(id) => {
+            Route::Call(id) | Route::Report(id) => {
                 if let Some(question) = state.question(id)
                     && self.is_news(state, &question)
                 {
@@ -140,19 +142,28 @@ impl Hands {
                 }
             }
             Route::Units => {
-                for unit in state.units.keys() {
-                    self.ask_about_last(state, unit);
+                // Only what stands at the top of the list: nobody waits for hundreds of answers.
+                for listed in state.listed("").into_iter().take(ASKED_AT_ONCE) {
+                    self.ask_about(state, listed.last);
                 }
             }
             Route::Unit(unit) => self.ask_about_last(state, unit),
             // The neutral and the tracking are worked out on their own screens.
-            Route::Neutral(_) | Route::Tracking(_) | Route::Bench(_) | Route::Settings => {}
+            Route::Neutral(_)
+            | Route::Tracking(_)
+            | Route::Bench(_)
+            | Route::Tags(_)
+            | Route::Tag(_)
+            | Route::Settings => {}
         }
     }
 
     fn ask_about_last(&self, state: &State, unit: &str) {
-        let open = state.visits_of(unit).into_iter().next();
-        let open = open.filter(|visit| visit.closed.is_none());
+        self.ask_about(state, state.visits_of(unit).into_iter().next());
+    }
+
+    fn ask_about(&self, state: &State, last: Option<Rc<Visit>>) {
+        let open = last.filter(|visit| visit.closed.is_none());
         let has_content = |visit: &Rc<Visit>| {
             !visit.observations.is_empty()
                 || visit.readings.iter().any(|reading| reading.seen.is_some())
@@ -192,6 +203,17 @@ impl Hands {
                 self.put(Action::Settled(key.clone()));
                 let action = self.keeper.borrow_mut().theirs(&key);
                 self.put(action);
+            }
+            Deed::Archive(before) => super::exchange::archive(self, before),
+            Deed::RemoveArchived(ids) => {
+                self.flush();
+                let count = super::exchange::count(ids.len(), "call");
+                let keys: Vec<RecordKey> = ids.into_iter().map(RecordKey::Visit).collect();
+                let actions = self.keeper.borrow_mut().delete(&keys);
+                self.put_all(actions);
+                self.put(Action::Say(format!(
+                    "{count} removed. The archive has them."
+                )));
             }
             Deed::Export => super::exchange::export(self),
             Deed::Import(plan, with_settings) => {

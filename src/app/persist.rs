@@ -16,7 +16,14 @@ pub struct Keeper {
     shelf: Shelf<Box<dyn Store>>,
     /// Why nothing is kept beyond this page; none where the browser stores.
     no_storage: Option<StoreError>,
+    /// Writes since the storage was last counted.
+    writes: u32,
+    /// It was close to full then.
+    is_high: bool,
 }
+
+/// Writes after which the storage is counted again: together they are far less than what is left when it is called full.
+const COUNT_AFTER: u32 = 20;
 
 /// What is in the way of a write, for the state.
 #[derive(Default)]
@@ -64,6 +71,8 @@ impl Keeper {
         Keeper {
             shelf: Shelf::new(store, tab),
             no_storage,
+            writes: 0,
+            is_high: false,
         }
     }
 
@@ -86,13 +95,26 @@ impl Keeper {
             };
             actions.push(Action::Tell(about, capital(&problem.to_string())));
         }
-        actions.push(self.fullness());
+        actions.push(self.count());
         actions.push(self.bins());
         actions
     }
 
-    fn fullness(&self) -> Action {
-        Action::NearlyFull(self.shelf.usage().is_ok_and(|usage| usage.is_high()))
+    /// Counts what is stored. With thousands of records that takes a while, so it is not done at every write.
+    fn count(&mut self) -> Action {
+        self.writes = 0;
+        let usage = self.shelf.usage();
+        self.is_high = usage.is_ok_and(|usage| usage.is_high());
+        Action::NearlyFull(self.is_high)
+    }
+
+    /// As it was at the last count; counted anew after some writes.
+    fn fullness(&mut self) -> Action {
+        self.writes += 1;
+        if self.writes >= COUNT_AFTER {
+            return self.count();
+        }
+        Action::NearlyFull(self.is_high)
     }
 
     /// Writes what is dirty and not contested.
@@ -222,19 +244,21 @@ impl Keeper {
     ) -> Vec<Action> {
         let mut gone = Vec::new();
         let mut actions = Vec::new();
-        for key in keys {
-            match act(&mut self.shelf, key) {
-                Ok(()) | Err(NotSaved::Gone) => gone.push(key.clone()),
-                Err(why) => actions.push(trouble(format!(
-                    "{}: not removed. {}",
-                    key.words(),
-                    capital(&why.to_string())
-                ))),
+        self.shelf.many(|shelf| {
+            for key in keys {
+                match act(shelf, key) {
+                    Ok(()) | Err(NotSaved::Gone) => gone.push(key.clone()),
+                    Err(why) => actions.push(trouble(format!(
+                        "{}: not removed. {}",
+                        key.words(),
+                        capital(&why.to_string())
+                    ))),
+                }
             }
-        }
+        });
         actions.push(Action::Gone(gone));
         actions.push(self.bins());
-        actions.push(self.fullness());
+        actions.push(self.count());
         actions
     }
 
@@ -272,7 +296,7 @@ impl Keeper {
     /// Empties the trash for good.
     pub fn empty_trash(&mut self) -> Vec<Action> {
         match self.shelf.empty_trash() {
-            Ok(_) => vec![self.bins(), self.fullness()],
+            Ok(_) => vec![self.bins(), self.count()],
             Err(why) => vec![trouble(capital(&why.to_string())), self.bins()],
         }
     }
@@ -282,6 +306,7 @@ impl Keeper {
     /// # Errors
     /// Which record could not be written, and why.
     pub fn add(&mut self, units: &[Unit], visits: &[Visit]) -> Result<(), String> {
+        self.writes = COUNT_AFTER;
         self.shelf
             .add(units, visits, &clock::now())
             .map_err(|(key, why)| format!("{}: {why}", key.words()))

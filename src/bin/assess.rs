@@ -5,8 +5,11 @@
 //! error); 3 some visits could not be assessed (each has its line, with the reason).
 
 use lowside::assessment::Assessment;
+use lowside::quantity::UnitPrefs;
+use lowside::ranking::Session;
 use lowside::readings::instrument::Instrument;
 use lowside::record::{Export, Visit, limits};
+use lowside::report::{Report, Sheet, Subject, csv};
 use lowside::unit::Unit;
 use serde::Serialize;
 use std::collections::BTreeMap;
@@ -17,6 +20,8 @@ const HELP: &str = "\
 assess: from readings to causes, for every visit of a Lowside export
 
 Usage: assess < export.json > assessments.jsonl
+       assess --report < export.json > report.txt
+       assess --csv < export.json > readings.csv
 
 Reads one export file on standard input and writes one line of JSON for each visit to standard output:
   visit, unit, unit_name   ids and the yard number
@@ -26,7 +31,10 @@ Reads one export file on standard input and writes one line of JSON for each vis
   error                    instead of the above, where the visit cannot be assessed
 Values are in bar, L/min, rpm, °C, s, mA and km/h.
 
-Options: --help, --version
+With --report it writes the hand-over report of each visit as plain text, the same as the app makes from that file; with
+--csv all readings with their windows as one table. Both in the units of measure of the file, metric where it names none.
+
+Options: --report, --csv, --help, --version
 
 Exit codes: 0 all visits assessed; 2 bad input or command line; 3 some visits could not be assessed.
 
@@ -72,12 +80,29 @@ fn main() -> ExitCode {
     }
 }
 
+/// What is to be written.
+#[derive(Clone, Copy, PartialEq, Eq)]
+enum Wanted {
+    Lines,
+    Reports,
+    Table,
+}
+
 fn run() -> Result<u8, End> {
     let mut arguments = std::env::args_os().skip(1);
+    let mut wanted = Wanted::Lines;
     if let Some(first) = arguments.next() {
         let text = match (first.to_str(), arguments.next()) {
-            (Some("--help"), None) => HELP.to_owned(),
-            (Some("--version"), None) => format!("assess {}\n", env!("CARGO_PKG_VERSION")),
+            (Some("--report"), None) => {
+                wanted = Wanted::Reports;
+                None
+            }
+            (Some("--csv"), None) => {
+                wanted = Wanted::Table;
+                None
+            }
+            (Some("--help"), None) => Some(HELP.to_owned()),
+            (Some("--version"), None) => Some(format!("assess {}\n", env!("CARGO_PKG_VERSION"))),
             _ => {
                 let first = first.to_string_lossy();
                 return Err(End::Bad(format!(
@@ -85,16 +110,26 @@ fn run() -> Result<u8, End> {
                 )));
             }
         };
-        return io::stdout()
-            .write_all(text.as_bytes())
-            .map(|()| 0)
-            .map_err(|error| unwritten(&error));
+        if let Some(text) = text {
+            return write(&text).map(|()| 0);
+        }
     }
     let export = Export::read(&input()?).map_err(|error| End::Bad(error.to_string()))?;
     for remark in &export.remarks {
         let _ = writeln!(io::stderr(), "assess: {remark}");
     }
-    assess_all(&export)
+    match wanted {
+        Wanted::Lines => assess_all(&export),
+        Wanted::Reports => report_all(&export),
+        Wanted::Table => table(&export),
+    }
+}
+
+fn write(text: &str) -> Result<(), End> {
+    let mut out = io::stdout().lock();
+    out.write_all(text.as_bytes())
+        .and_then(|()| out.flush())
+        .map_err(|error| unwritten(&error))
 }
 
 /// Standard input, up to just over the largest file that is read: the reader then says that it is too large.
@@ -126,7 +161,7 @@ fn assess_all(export: &Export) -> Result<u8, End> {
     let mut code = 0;
     for visit in &export.visits {
         let unit = units.get(visit.unit.as_str()).copied();
-        let outcome = outcome(unit, visit, &export.instruments);
+        let outcome = outcome(unit, visit, &export.instruments, false);
         if let Outcome::Failed { error } = &outcome {
             code = 3;
             let _ = writeln!(io::stderr(), "assess: visit {}: {error}", visit.id);
@@ -146,7 +181,74 @@ fn assess_all(export: &Export) -> Result<u8, End> {
     Ok(code)
 }
 
-fn outcome(unit: Option<&Unit>, visit: &Visit, instruments: &[Instrument]) -> Outcome {
+/// The units of measure of a file.
+fn prefs(export: &Export) -> UnitPrefs {
+    let settings = export.settings.as_ref();
+    settings.map_or_else(UnitPrefs::metric, |settings| settings.units.clone())
+}
+
+/// Each visit of the file with its unit and its assessment, advice included; what cannot be assessed is told on standard error.
+fn each<'a>(
+    export: &'a Export,
+    mut take: impl FnMut(&'a Unit, &'a Visit, Assessment) -> Result<(), End>,
+) -> Result<u8, End> {
+    let mut code = 0;
+    for visit in &export.visits {
+        let unit = export.units.iter().find(|unit| unit.id == visit.unit);
+        match (unit, outcome(unit, visit, &export.instruments, true)) {
+            (Some(unit), Outcome::Assessed(assessment)) => take(unit, visit, *assessment)?,
+            (_, Outcome::Failed { error }) => {
+                code = 3;
+                let _ = writeln!(io::stderr(), "assess: visit {}: {error}", visit.id);
+            }
+            (None, Outcome::Assessed(_)) => {}
+        }
+    }
+    Ok(code)
+}
+
+fn report_all(export: &Export) -> Result<u8, End> {
+    let prefs = prefs(export);
+    let mut is_first = true;
+    each(export, |unit, visit, assessment| {
+        let report = Report::of(&Subject {
+            unit,
+            visit,
+            instruments: &export.instruments,
+            assessment: &assessment,
+            prefs: &prefs,
+            made_at: &export.made_at,
+        });
+        let rule = if is_first { "" } else { "\n\n" };
+        is_first = false;
+        write(&format!("{rule}{}", report.text()))
+    })
+}
+
+fn table(export: &Export) -> Result<u8, End> {
+    let mut assessed = Vec::new();
+    let code = each(export, |unit, visit, assessment| {
+        assessed.push((unit, visit, assessment));
+        Ok(())
+    })?;
+    let sheets: Vec<Sheet> = assessed
+        .iter()
+        .map(|(unit, visit, assessment)| Sheet {
+            unit,
+            visit,
+            assessment,
+        })
+        .collect();
+    write(&csv(&sheets, &export.instruments, &prefs(export)))?;
+    Ok(code)
+}
+
+fn outcome(
+    unit: Option<&Unit>,
+    visit: &Visit,
+    instruments: &[Instrument],
+    with_advice: bool,
+) -> Outcome {
     let Some(unit) = unit else {
         return Outcome::Failed {
             error: format!(
@@ -155,7 +257,17 @@ fn outcome(unit: Option<&Unit>, visit: &Visit, instruments: &[Instrument]) -> Ou
             ),
         };
     };
-    let assessment = lowside::ranking::assess(unit, visit, instruments);
+    let mut session = Session::default();
+    let mut assessment = session.assess(unit, visit, instruments);
+    if with_advice {
+        assessment.advice = Some(lowside::next::advise(
+            unit,
+            visit,
+            instruments,
+            &assessment,
+            session.heavy(),
+        ));
+    }
     if is_finite(&assessment) {
         Outcome::Assessed(Box::new(assessment))
     } else {

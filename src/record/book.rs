@@ -94,7 +94,8 @@ impl Book {
 }
 
 /// Key that sorts runs of digits by their value and letters regardless of case.
-fn natural(name: &str) -> Vec<(u8, String)> {
+#[must_use]
+pub fn natural(name: &str) -> Vec<(u8, String)> {
     let mut parts: Vec<(u8, String)> = Vec::new();
     for c in name.chars() {
         let rank = u8::from(!c.is_ascii_digit());

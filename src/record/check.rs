@@ -281,6 +281,7 @@ pub(super) fn visit(path: &str, visit: &mut Visit) -> Checked {
     line(path, "opened", &mut visit.opened)?;
     prose(path, "complaint", &mut visit.complaint)?;
     prose(path, "note", &mut visit.note)?;
+    prose(path, "bring", &mut visit.bring)?;
     count(
         &format!("{path}.observations"),
         visit.observations.len(),

@@ -6,6 +6,7 @@
 //!   [`RecordError`] that says where it is wrong. [`ImportPlan`] shows what taking it in would do before anything is changed.
 //! * [`limits`] says how much a record may hold; fields on a screen keep to them.
 
+pub mod archive;
 pub mod backup;
 mod bench;
 mod book;
@@ -26,7 +27,7 @@ mod sum;
 mod tracking;
 mod visit;
 
-pub use book::Book;
+pub use book::{Book, natural};
 pub use envelope::{APP, Envelope, Stamp};
 pub use error::{Problem, RecordError};
 pub use export::Export;
@@ -34,6 +35,6 @@ pub use id::{IdOf, is_id, new_id};
 pub use migrate::{Ladder, RecordKind, SCHEMA, STEPS, Step, Subject};
 pub use neutral::NeutralSheet;
 pub use plan::{Fate, ImportPlan, Planned, Taken};
-pub use settings::{FirstRun, Settings, Theme};
+pub use settings::{FirstRun, Settings, Theme, UnitOrder};
 pub use sum::checksum;
 pub use visit::{Answer, Closing, Earlier, PutBack, Visit};

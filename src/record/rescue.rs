@@ -36,6 +36,8 @@ pub(super) fn collect(value: &Value, ladder: &Ladder) -> Export {
         let Some(text) = text.as_str().filter(|_| holds_record(key)) else {
             continue;
         };
+        let text = crate::pack::text_of(text.to_owned());
+        let text = text.as_str();
         // A slot names its record in the first line.
         let text = if key.contains("/slot/") {
             text.split_once('\n').map_or("", |(_, text)| text)

@@ -37,6 +37,41 @@ impl Theme {
     }
 }
 
+/// In which order units are listed.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Serialize, Deserialize)]
+#[serde(rename_all = "snake_case")]
+pub enum UnitOrder {
+    /// By yard number or name.
+    Name,
+    /// The one called last first.
+    LastCall,
+    /// What presses first. An order of a newer version reads as this one.
+    #[default]
+    #[serde(other)]
+    Attention,
+}
+
+impl UnitOrder {
+    /// Every order, as a screen offers them.
+    pub const ALL: [UnitOrder; 3] = [UnitOrder::Attention, UnitOrder::LastCall, UnitOrder::Name];
+
+    /// Words for a screen.
+    #[must_use]
+    pub fn words(self) -> &'static str {
+        match self {
+            UnitOrder::Attention => "What presses",
+            UnitOrder::LastCall => "Last call",
+            UnitOrder::Name => "Name",
+        }
+    }
+
+    /// True for the order of a device where nobody chose.
+    #[must_use]
+    pub fn is_usual(&self) -> bool {
+        *self == UnitOrder::default()
+    }
+}
+
 /// What a person has been shown or asked once.
 #[derive(Clone, Debug, Default, PartialEq, Eq, Serialize, Deserialize)]
 #[serde(default)]
@@ -63,6 +98,9 @@ pub struct Settings {
     pub units: UnitPrefs,
     /// Theme.
     pub theme: Theme,
+    /// Order of the list of units.
+    #[serde(skip_serializing_if = "UnitOrder::is_usual")]
+    pub unit_order: UnitOrder,
     /// Instruments of the shop.
     pub instruments: Vec<Instrument>,
     /// First-run flags.

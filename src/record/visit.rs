@@ -74,6 +74,9 @@ pub struct Visit {
     pub closing: Option<Closing>,
     /// Closed, with the cause found (fault id) and what proved it.
     pub closed: Option<Closing>,
+    /// What the next one has to bring, as typed.
+    #[serde(skip_serializing_if = "String::is_empty")]
+    pub bring: String,
     /// Free note.
     pub note: String,
     /// Fields written by a newer version: kept as they are.

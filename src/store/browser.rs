@@ -1,6 +1,6 @@
 //! The browser's own storage. The only place that touches it.
 
-use super::{MemoryStore, Store, StoreError};
+use super::{MemoryStore, PackedStore, Store, StoreError};
 use gloo_storage::{LocalStorage, Storage as _};
 use wasm_bindgen::{JsCast, JsValue};
 use web_sys::{DomException, Storage};
@@ -52,7 +52,7 @@ impl BrowserStore {
 #[must_use]
 pub fn open_browser() -> (Box<dyn Store>, Option<StoreError>) {
     match BrowserStore::open() {
-        Ok(store) => (Box::new(store), None),
+        Ok(store) => (Box::new(PackedStore::new(store)), None),
         Err(why) => (Box::new(MemoryStore::new()), Some(why)),
     }
 }

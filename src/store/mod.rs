@@ -9,6 +9,7 @@ mod browser;
 mod faulty;
 mod keys;
 mod memory;
+mod packed;
 mod shelf;
 
 #[cfg(target_arch = "wasm32")]
@@ -16,6 +17,7 @@ pub use browser::{BrowserStore, open_browser};
 pub use faulty::{Fault, FaultyStore};
 pub use keys::{PREFIX, RecordKey};
 pub use memory::MemoryStore;
+pub use packed::PackedStore;
 pub use shelf::{
     Foreign, LoadProblem, Loaded, NotSaved, Quarantined, SaveOutcome, SaveState, Shelf, Trashed,
     Usage,
@@ -65,6 +67,14 @@ pub trait Store {
     /// # Errors
     /// [`StoreError`].
     fn keys(&self, prefix: &str) -> Result<Vec<String>, StoreError>;
+
+    /// Characters (UTF-16 units, as browsers count) that the text under a key takes in the store; 0 where there is none.
+    ///
+    /// # Errors
+    /// [`StoreError`].
+    fn size(&self, key: &str) -> Result<usize, StoreError> {
+        Ok(self.get(key)?.map_or(0, |text| text.encode_utf16().count()))
+    }
 }
 
 impl<S: Store + ?Sized> Store for Box<S> {
@@ -83,6 +93,32 @@ impl<S: Store + ?Sized> Store for Box<S> {
     fn keys(&self, prefix: &str) -> Result<Vec<String>, StoreError> {
         (**self).keys(prefix)
     }
+
+    fn size(&self, key: &str) -> Result<usize, StoreError> {
+        (**self).size(key)
+    }
+}
+
+impl<S: Store + ?Sized> Store for &S {
+    fn get(&self, key: &str) -> Result<Option<String>, StoreError> {
+        (**self).get(key)
+    }
+
+    fn put(&self, key: &str, text: &str) -> Result<(), StoreError> {
+        (**self).put(key, text)
+    }
+
+    fn remove(&self, key: &str) -> Result<(), StoreError> {
+        (**self).remove(key)
+    }
+
+    fn keys(&self, prefix: &str) -> Result<Vec<String>, StoreError> {
+        (**self).keys(prefix)
+    }
+
+    fn size(&self, key: &str) -> Result<usize, StoreError> {
+        (**self).size(key)
+    }
 }
 
 impl<S: Store + ?Sized> Store for std::rc::Rc<S> {
@@ -100,5 +136,9 @@ impl<S: Store + ?Sized> Store for std::rc::Rc<S> {
 
     fn keys(&self, prefix: &str) -> Result<Vec<String>, StoreError> {
         (**self).keys(prefix)
+    }
+
+    fn size(&self, key: &str) -> Result<usize, StoreError> {
+        (**self).size(key)
     }
 }

@@ -36,6 +36,7 @@ pub use outcome::{Agreement, Found, Outcome, Verdict, find};
 pub use plan::{Plan, Point, Trace};
 pub use run::{
     Facing, Gear, LANE, Lever, Load, Machine, Run, RunError, Seen, Setting, Travel, Undercarriage,
+    usual_undercarriage,
 };
 pub use sheet::{Answer, Field, Hand, Head, LINES, Line, LineProblem, TrackingSheet, Typed, What};
 pub use work::{Step, WORK};

@@ -1,5 +1,6 @@
 //! What is measured on a machine with two sides, and in which setting.
 
+use crate::unit::MachineClass;
 use serde::{Deserialize, Serialize};
 use thiserror::Error;
 
@@ -160,6 +161,16 @@ pub enum Undercarriage {
     Tracks,
     /// Wheels that do not steer and skid sideways.
     SkidWheels,
+}
+
+/// What usually carries a machine of this class.
+#[must_use]
+pub fn usual_undercarriage(class: MachineClass) -> Undercarriage {
+    match class {
+        MachineClass::CompactTracked | MachineClass::Crawler => Undercarriage::Tracks,
+        MachineClass::CompactWheeled => Undercarriage::SkidWheels,
+        _ => Undercarriage::Swivel,
+    }
 }
 
 impl Undercarriage {

@@ -5,7 +5,7 @@
 //! | [`change`], [`history`] | every edit of a visit, and the way back |
 //! | [`entry`] | what is typed in a reading's field, and what was seen |
 //! | [`group`], [`quick`] | readings by condition; the usual sets |
-//! | [`side`], [`pair_line`] | left and right on a machine with two drive paths |
+//! | [`side`], [`pair_line`] | left and right on a machine with two drive paths; the sides are the core's |
 //! | [`scale`], [`mark`], [`words`] | how windows, standings and chances are shown |
 //! | [`close`] | the end of the call |
 //! | [`put_back`] | what has to be put back before a call is closed |
@@ -15,6 +15,8 @@
 //! | [`causes`] | the ranking |
 //! | [`next`] | the check that tells most, what it would say, the repair |
 //! | [`screen`] | all of it together |
+
+use crate::call::{put_back, side, words};
 
 mod add_panel;
 pub(in crate::app) mod alerts;
@@ -36,11 +38,10 @@ mod hazard;
 mod history;
 mod last_time;
 mod map;
-mod mark;
+pub(in crate::app) mod mark;
 mod new_gauge;
 mod next;
 mod pair_line;
-mod put_back;
 mod quick;
 mod quick_panel;
 mod reading_group;
@@ -53,13 +54,11 @@ mod scale;
 mod screen;
 mod seen_keys;
 mod seen_panel;
-mod side;
 mod slices;
 mod steady;
 mod taken;
 mod told;
 mod window_scale;
-mod words;
 
 pub use last_time::EarlierCalls;
 pub use screen::{CallScreen, CallScreenProps};

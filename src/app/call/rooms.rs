@@ -1,4 +1,4 @@
-//! Rooms of their own beside the call: work that is no hunt for a cause.
+//! Rooms of their own beside the call: work that is no hunt for a cause, and the report of it all.
 
 use crate::app::parts::{Icon, Shape};
 use crate::app::route::Route;
@@ -31,9 +31,20 @@ pub fn links(unit: &Unit, visit: &Visit) -> Html {
         "a sheet for its pump or motor",
         "to-bench",
     );
-    let rooms = [Some(neutral), two_sides.then_some(tracking), Some(bench)];
+    let report = (
+        Route::Report(id.clone()),
+        "Hand-over report",
+        "on paper, as text, as a table",
+        "to-report",
+    );
+    let rooms = [
+        Some(neutral),
+        two_sides.then_some(tracking),
+        Some(bench),
+        Some(report),
+    ];
     html! {
-        <nav class="panel stack" aria-label="Adjusting">
+        <nav class="panel stack" aria-label="Adjusting and report">
             { for rooms.into_iter().flatten().map(|(route, words, what, testid)| html! {
                 <a key={testid} class="button is-quiet" href={route.href()} data-testid={testid}>
                     <span>{ words }<span class="soft">{ format!(": {what}") }</span></span>

@@ -8,6 +8,7 @@ pub mod ids;
 pub mod listen;
 pub mod offline;
 pub mod persistence;
+pub mod share;
 pub mod sound;
 pub mod theme;
 pub mod timer;

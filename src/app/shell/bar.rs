@@ -17,11 +17,13 @@ pub struct BarProps {
 /// Id and name of the unit that the screen is about.
 fn unit_at_hand(state: &State) -> Option<(String, String)> {
     let id = match &state.route {
-        Route::Unit(id) => id,
-        Route::Call(id) | Route::Neutral(id) | Route::Tracking(id) | Route::Bench(id) => {
-            &state.visits.get(id)?.unit
-        }
-        Route::Units | Route::Settings => return None,
+        Route::Unit(id) | Route::Tags(Some(id)) => id,
+        Route::Call(id)
+        | Route::Neutral(id)
+        | Route::Tracking(id)
+        | Route::Bench(id)
+        | Route::Report(id) => &state.visits.get(id)?.unit,
+        Route::Units | Route::Settings | Route::Tags(None) | Route::Tag(_) => return None,
     };
     Some((id.clone(), state.units.get(id)?.name.clone()))
 }

@@ -72,7 +72,7 @@ pub fn Notices(props: &NoticesProps) -> Html {
                 </Caution>
             } else if state.is_nearly_full {
                 <Caution title="Storage is filling up" testid="nearly-full">
-                    <p>{ "Save everything to a file, then remove old calls and empty the trash in Settings." }</p>
+                    <p>{ "Put old calls into an archive file and empty the trash, both in Settings. Until then everything goes on being saved." }</p>
                     <div class="actions">{ export() }</div>
                 </Caution>
             }

@@ -1,13 +1,27 @@
 //! What can be asked of the state.
 
+use std::cmp::Reverse;
+use std::collections::BTreeMap;
 use std::rc::Rc;
 
 use super::{Question, State};
 use crate::assessment::Assessment;
+use crate::call::attention::Attention;
 use crate::demo;
-use crate::record::Visit;
+use crate::record::{UnitOrder, Visit, natural};
 use crate::store::RecordKey as Key;
 use crate::unit::Unit;
+
+/// A unit in a list.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Listed {
+    /// The unit.
+    pub unit: Rc<Unit>,
+    /// Its last call.
+    pub last: Option<Rc<Visit>>,
+    /// What it asks for.
+    pub attention: Attention,
+}
 
 impl State {
     /// Plain words for a record.
@@ -64,20 +78,50 @@ impl State {
         visits
     }
 
-    /// Units, the one called last first, those without a call by name behind them.
-    pub fn units_by_last_call(&self) -> Vec<Rc<Unit>> {
-        let last = |unit: &Rc<Unit>| {
-            let visits = self.visits.values().filter(|visit| visit.unit == unit.id);
-            visits.map(|visit| visit.opened.clone()).max()
+    /// Units with their last call, in the order that the person chose, those whose name or class holds `search` (small
+    /// letters). One pass over the visits: the list stays quick with thousands of them.
+    pub fn listed(&self, search: &str) -> Vec<Listed> {
+        let mut last: BTreeMap<&str, &Rc<Visit>> = BTreeMap::new();
+        for visit in self.visits.values() {
+            let newest = last.entry(visit.unit.as_str()).or_insert(visit);
+            if (&visit.opened, &visit.id) > (&newest.opened, &newest.id) {
+                *newest = visit;
+            }
+        }
+        let is_wanted = |unit: &&Rc<Unit>| {
+            search.is_empty()
+                || unit.name.to_lowercase().contains(search)
+                || unit.class.words().to_lowercase().contains(search)
         };
+        let mut listed: Vec<Listed> = self
+            .units
+            .values()
+            .filter(is_wanted)
+            .map(|unit| {
+                let last = last.get(unit.id.as_str()).map(|visit| (*visit).clone());
+                Listed {
+                    attention: Attention::of(last.as_deref()),
+                    unit: unit.clone(),
+                    last,
+                }
+            })
+            .collect();
+        let name = |listed: &Listed| (natural(&listed.unit.name), listed.unit.id.clone());
+        let opened = |listed: &Listed| Reverse(listed.last.as_ref().map(|v| v.opened.clone()));
+        match self.settings.unit_order {
+            UnitOrder::Name => listed.sort_by_cached_key(name),
+            UnitOrder::LastCall => listed.sort_by_cached_key(|one| (opened(one), name(one))),
+            UnitOrder::Attention => {
+                listed.sort_by_cached_key(|one| (one.attention, opened(one), name(one)));
+            }
+        }
+        listed
+    }
+
+    /// Units by name: "T-9" before "T-14".
+    pub fn units_by_name(&self) -> Vec<Rc<Unit>> {
         let mut units: Vec<Rc<Unit>> = self.units.values().cloned().collect();
-        units.sort_by_cached_key(|unit| {
-            (
-                std::cmp::Reverse(last(unit)),
-                unit.name.to_lowercase(),
-                unit.id.clone(),
-            )
-        });
+        units.sort_by_cached_key(|unit| (natural(&unit.name), unit.id.clone()));
         units
     }
 

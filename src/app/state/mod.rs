@@ -5,6 +5,7 @@ mod ask;
 mod kinds;
 
 pub use action::Action;
+pub use ask::Listed;
 pub use kinds::{About, Answer, Bins, Notice, Question, Records, Save, Written};
 
 use std::collections::{BTreeMap, BTreeSet};

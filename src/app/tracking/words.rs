@@ -1,11 +1,11 @@
 //! Words and figures of the tracking screen.
 
 use crate::quantity::{DecimalMark, Decimals, Measure, Unit, UnitPrefs, format_with_unit};
+pub use crate::tracking::usual_undercarriage;
 use crate::tracking::{
-    Agreement, Candidate, Facing, Field, Gear, Head, Lever, Load, Seen, Setting, Travel,
-    Undercarriage, Verdict, What,
+    Agreement, Candidate, Facing, Field, Gear, Head, Lever, Load, Seen, Setting, Travel, Verdict,
+    What,
 };
-use crate::unit::MachineClass;
 
 /// A share with its half-width, in per cent: "1.2 % ± 0.3 %".
 pub fn share(value: f64, half: f64, mark: DecimalMark) -> String {
@@ -165,15 +165,6 @@ pub fn head(head: Head) -> (&'static str, &'static str) {
             "One turn of the full-stroke stop",
             "per cent of full stroke, from the manual or your own trial; empty: no turns are told",
         ),
-    }
-}
-
-/// What usually carries a machine of this class.
-pub fn usual_undercarriage(class: MachineClass) -> Undercarriage {
-    match class {
-        MachineClass::CompactTracked | MachineClass::Crawler => Undercarriage::Tracks,
-        MachineClass::CompactWheeled => Undercarriage::SkidWheels,
-        _ => Undercarriage::Swivel,
     }
 }
 

@@ -16,6 +16,15 @@ impl<S: Store> Shelf<S> {
         visits: &[Visit],
         now: &str,
     ) -> Result<(), (RecordKey, NotSaved)> {
+        self.many(|shelf| shelf.add_all(units, visits, now))
+    }
+
+    fn add_all(
+        &mut self,
+        units: &[Unit],
+        visits: &[Visit],
+        now: &str,
+    ) -> Result<(), (RecordKey, NotSaved)> {
         let mut tried = Vec::new();
         let result = units
             .iter()

@@ -50,7 +50,9 @@ impl<S: Store> Shelf<S> {
         self.store.remove(&key.path())?;
         self.held.remove(key);
         self.tried.remove(key);
-        self.write_index();
+        if !self.is_many {
+            self.write_index();
+        }
         Ok(())
     }
 

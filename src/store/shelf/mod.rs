@@ -44,6 +44,8 @@ pub struct Shelf<S: Store> {
     recovered: BTreeSet<RecordKey>,
     read_only: BTreeMap<RecordKey, u64>,
     loaded: bool,
+    /// Many records come or go: the index is written once, after the last.
+    is_many: bool,
 }
 
 /// The state of a record that this tab last read or wrote.
@@ -108,12 +110,23 @@ impl<S: Store> Shelf<S> {
             recovered: BTreeSet::new(),
             read_only: BTreeMap::new(),
             loaded: false,
+            is_many: false,
         }
     }
 
     /// The store below.
     pub fn store(&self) -> &S {
         &self.store
+    }
+
+    /// Does something to many records; the index is written once, after the last. Where it is cut off before that, the next load
+    /// finds the records by their keys.
+    pub fn many<R>(&mut self, act: impl FnOnce(&mut Self) -> R) -> R {
+        self.is_many = true;
+        let result = act(self);
+        self.is_many = false;
+        self.write_index();
+        result
     }
 
     /// True where a newer version wrote the record, so that it is never written here.
@@ -129,8 +142,7 @@ impl<S: Store> Shelf<S> {
     pub fn usage(&self) -> Result<Usage, StoreError> {
         let mut characters = 0;
         for key in self.store.keys(PREFIX)? {
-            let text = self.store.get(&key)?.unwrap_or_default();
-            characters += key.encode_utf16().count() + text.encode_utf16().count();
+            characters += key.encode_utf16().count() + self.store.size(&key)?;
         }
         Ok(Usage { characters })
     }

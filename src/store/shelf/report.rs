@@ -272,7 +272,7 @@ pub struct Usage {
 
 impl Usage {
     /// Characters that are surely there: browsers give 2.5 to 5 million to a site; a margin is left.
-    pub const BUDGET: usize = 1_500_000;
+    pub const BUDGET: usize = 2_300_000;
 
     /// Share of the budget that is used; may pass 1.
     #[must_use]
@@ -281,9 +281,9 @@ impl Usage {
         self.characters as f64 / Self::BUDGET as f64
     }
 
-    /// True from 70 % of the budget on: time to export and delete.
+    /// True from 90 % of the budget on: time for an archive.
     #[must_use]
     pub fn is_high(self) -> bool {
-        self.characters >= Self::BUDGET / 10 * 7
+        self.characters >= Self::BUDGET / 10 * 9
     }
 }

@@ -125,7 +125,7 @@ impl<S: Store> Shelf<S> {
                 stamp,
             },
         );
-        if is_new {
+        if is_new && !self.is_many {
             self.write_index();
         }
         Ok(SaveOutcome::Saved {

@@ -3,6 +3,7 @@
 use super::EntryProps;
 use crate::app::call::change::Change;
 use crate::app::parts::{Choice, Opt, Select, TextField};
+use crate::call::closing::cause;
 use crate::faults::{self, FaultId};
 use crate::record::Closing;
 use crate::record::limits::TEXT_CHARACTERS;
@@ -19,30 +20,7 @@ fn code(id: FaultId) -> String {
         .unwrap_or_default()
 }
 
-/// The cause of a code; none for one that this version does not know.
-pub fn cause(code: &str) -> Option<&'static faults::Fault> {
-    let quoted = serde_json::Value::String(code.to_owned());
-    serde_json::from_value::<FaultId>(quoted)
-        .ok()
-        .and_then(faults::find)
-}
-
-/// The finding in one line.
-pub fn words(closing: &Closing) -> String {
-    let title = |code: &str| cause(code).map_or_else(|| code.to_owned(), |f| f.title.to_owned());
-    if closing.cause.is_empty() {
-        return String::from("no cause");
-    }
-    let mut words = title(&closing.cause);
-    if !closing.also.is_empty() {
-        words = format!("{words} and {}", title(&closing.also));
-    }
-    let is_proved = closing.is_proved || !closing.proof.trim().is_empty();
-    format!(
-        "{words}, {}",
-        if is_proved { "proved" } else { "not proved" }
-    )
-}
+pub use crate::call::closing::words;
 
 /// Causes to choose from: those that lead now, then all others by name.
 fn options(none: &'static str, props: &EntryProps, but: &str) -> Vec<Opt<String>> {

@@ -5,6 +5,7 @@ use std::rc::Rc;
 use web_sys::{Event, HtmlInputElement};
 use yew::{Callback, Html, MouseEvent, Properties, TargetCast, component, html, use_state};
 
+use super::archive::Archive;
 use super::import::{Picked, Preview};
 use crate::app::deed::{Deed, Snapshot};
 use crate::app::parts::{Caution, Confirm, Grade, Section};
@@ -65,6 +66,7 @@ pub fn Data(props: &DataProps) -> Html {
                 }
             }
             <Exchange ..props.clone() />
+            <Archive ..props.clone() />
             <PutAside ..props.clone() />
         </Section>
     }

@@ -1,9 +1,10 @@
 //! Settings: units of measure, theme, the instruments of the shop, the data, and what this app is.
 
 mod about;
+mod archive;
 pub mod data;
 mod draft;
-mod import;
+pub mod import;
 mod instrument_form;
 mod instruments;
 pub mod measures;

@@ -148,6 +148,9 @@ pub fn Profile(props: &ProfileProps) -> Html {
                         />
                     </Section>
                     <Calls unit={unit.clone()} state={state.clone()} deed={props.deed.clone()} />
+                    <a class="button" href={Route::Tags(Some(unit.id.clone())).href()} data-testid="to-tag">
+                        { "Tag: this profile as a QR code" }
+                    </a>
                     <Confirm
                         words="Remove this unit"
                         question={question}

@@ -1,22 +1,21 @@
 //! One unit in the list: what it is, how its last call stands, and the way back into it.
 
-use std::rc::Rc;
 use yew::{Callback, Html, MouseEvent, Properties, component, html};
 
 use crate::app::deed::{Deed, Snapshot};
 use crate::app::parts::{Icon, Shape};
 use crate::app::platform::clock;
 use crate::app::route::Route;
+use crate::app::state::Listed;
 use crate::assessment::Assessment;
 use crate::faults::FaultId;
 use crate::record::{Closing, Visit};
-use crate::unit::Unit;
 
 /// Properties of [`UnitCard`].
 #[derive(Clone, PartialEq, Properties)]
 pub struct UnitCardProps {
-    /// The unit.
-    pub unit: Rc<Unit>,
+    /// The unit, its last call, what it asks for.
+    pub listed: Listed,
     /// The state.
     pub state: Snapshot,
     /// Wishes.
@@ -83,8 +82,14 @@ pub fn standing_words(visit: &Visit, assessment: Option<&Assessment>) -> String 
 /// The card.
 #[component]
 pub fn UnitCard(props: &UnitCardProps) -> Html {
-    let (unit, state) = (&props.unit, &props.state);
-    let last = state.visits_of(&unit.id).into_iter().next();
+    let (
+        Listed {
+            unit,
+            last,
+            attention,
+        },
+        state,
+    ) = (&props.listed, &props.state);
     let on_start = {
         let (deed, id) = (props.deed.clone(), unit.id.clone());
         Callback::from(move |_: MouseEvent| deed.emit(Deed::StartCall(id.clone())))
@@ -112,6 +117,9 @@ pub fn UnitCard(props: &UnitCardProps) -> Html {
                 </p>
             </div>
             <div class="unit-card-call">
+                if let Some(words) = attention.words() {
+                    <p class="unit-card-presses" data-testid="unit-presses"><Icon shape={Shape::Warning} />{ words }</p>
+                }
                 if let Some((words, what, when)) = line {
                     <p class="unit-card-lead" data-testid="unit-lead">{ words }</p>
                     <p class="soft small">{ format!("{what}, {when}") }</p>

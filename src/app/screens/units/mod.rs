@@ -7,7 +7,7 @@ mod welcome;
 pub use self::card::{closing_words, standing_words};
 pub use self::new_unit::class_options;
 
-use yew::{AttrValue, Callback, Html, Properties, component, html, use_state};
+use yew::{AttrValue, Callback, Html, MouseEvent, Properties, component, html, use_state};
 
 use self::card::UnitCard;
 use self::new_unit::NewUnit;
@@ -15,8 +15,13 @@ use self::welcome::{Demo, Welcome};
 use super::settings::data::Data;
 use super::settings::measures::Presets;
 use crate::app::deed::{Deed, Snapshot};
-use crate::app::parts::{Icon, Shape, TextField};
+use crate::app::parts::{Choice, Icon, Opt, Shape, TextField};
+use crate::app::route::Route;
+use crate::app::state::Action;
+use crate::record::{Settings, UnitOrder};
 
+/// So many units are drawn at first, and with every "show more".
+const PAGE: usize = 24;
 /// From this many units on there is a field to find one.
 const SEARCH_FROM: usize = 9;
 
@@ -29,23 +34,23 @@ pub struct UnitsProps {
     pub deed: Callback<Deed>,
 }
 
+fn read_a_tag() -> Html {
+    html! {
+        <a class="button is-quiet" href={Route::Tag(String::new()).href()} data-testid="to-read-tag">{ "Read a tag" }</a>
+    }
+}
+
 /// The screen.
 #[component]
 pub fn Units(props: &UnitsProps) -> Html {
     let adding = use_state(|| false);
     let search = use_state(String::new);
+    let most = use_state(|| PAGE);
     let state = &props.state;
     let is_empty = state.units.is_empty();
-    let units = state.units_by_last_call();
     let wanted = search.trim().to_lowercase();
-    let shown: Vec<_> = units
-        .iter()
-        .filter(|unit| {
-            wanted.is_empty()
-                || unit.name.to_lowercase().contains(&wanted)
-                || unit.class.words().to_lowercase().contains(&wanted)
-        })
-        .collect();
+    let listed = state.listed(&wanted);
+    let count = state.units.len();
     let on_add = {
         let adding = adding.clone();
         Callback::from(move |_: yew::MouseEvent| adding.set(!*adding))
@@ -55,8 +60,24 @@ pub fn Units(props: &UnitsProps) -> Html {
         Callback::from(move |()| adding.set(false))
     };
     let on_search = {
-        let search = search.clone();
-        Callback::from(move |text: String| search.set(text))
+        let (search, most) = (search.clone(), most.clone());
+        Callback::from(move |text: String| {
+            most.set(PAGE);
+            search.set(text);
+        })
+    };
+    let on_more = {
+        let most = most.clone();
+        Callback::from(move |_: MouseEvent| most.set(*most + PAGE))
+    };
+    let on_order = {
+        let (settings, deed) = (state.settings.clone(), props.deed.clone());
+        Callback::from(move |unit_order: UnitOrder| {
+            deed.emit(Deed::Put(Action::PutSettings(Settings {
+                unit_order,
+                ..(*settings).clone()
+            })));
+        })
     };
     html! {
         <main class="page" id="main" data-testid="units-screen">
@@ -84,6 +105,7 @@ pub fn Units(props: &UnitsProps) -> Html {
                         <section class="panel" aria-label="Units of measure">
                             <Presets state={state.clone()} deed={props.deed.clone()} />
                         </section>
+                        <div class="actions">{ read_a_tag() }</div>
                         <Data state={state.clone()} deed={props.deed.clone()} is_folded={true} />
                     </div>
                 </div>
@@ -93,7 +115,7 @@ pub fn Units(props: &UnitsProps) -> Html {
                 }
                 <Demo state={state.clone()} deed={props.deed.clone()} />
             }
-            if units.len() >= SEARCH_FROM {
+            if count >= SEARCH_FROM {
                 <TextField
                     id="unit-search"
                     label="Find a unit"
@@ -102,24 +124,40 @@ pub fn Units(props: &UnitsProps) -> Html {
                     on_input={on_search}
                     testid="unit-search"
                 />
+                <Choice<UnitOrder>
+                    name="unit-order"
+                    label="First"
+                    options={UnitOrder::ALL.map(|order| Opt::new(order, order.words(), format!("{order:?}"))).to_vec()}
+                    value={Some(state.settings.unit_order)}
+                    on_change={on_order}
+                />
             }
             if !is_empty {
                 <ul class="tiles is-three unit-list" data-testid="unit-list">
-                    { for shown.iter().map(|unit| html! {
-                        <li key={unit.id.clone()}>
+                    { for listed.iter().take(*most).map(|one| html! {
+                        <li key={one.unit.id.clone()}>
                             <UnitCard
-                                unit={(**unit).clone()}
+                                listed={one.clone()}
                                 state={state.clone()}
                                 deed={props.deed.clone()}
                             />
                         </li>
                     }) }
                 </ul>
-                if shown.is_empty() {
+                if listed.len() > *most {
+                    <button type="button" class="button is-wide" onclick={on_more} data-testid="more-units">
+                        { format!("Show more: {} of {} shown", *most, listed.len()) }
+                    </button>
+                }
+                if listed.is_empty() {
                     <p data-testid="no-unit-found">{ format!("No unit is called “{}”.", search.trim()) }</p>
                 }
             }
             if !is_empty {
+                <div class="actions">
+                    <a class="button is-quiet" href={Route::Tags(None).href()} data-testid="to-tags">{ "Print tags" }</a>
+                    { read_a_tag() }
+                </div>
                 <Data state={state.clone()} deed={props.deed.clone()} is_folded={true} />
             }
         </main>

@@ -56,6 +56,15 @@ pub fn percent(share: f64) -> String {
     }
 }
 
+/// A reading as a share of another one, which it may pass: whole per cent.
+pub fn times(share: f64) -> String {
+    if share.is_finite() {
+        format!("{:.0}{NARROW}%", share * 100.0)
+    } else {
+        String::from("?")
+    }
+}
+
 /// How far the order of causes can be relied on at this moment.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Verdict {
@@ -195,7 +204,7 @@ pub fn seen(port: Port, seen: &Seen, prefs: &UnitPrefs) -> String {
         Seen::Swing { low, high } => format!("swings, {} to {}", value(*low), value(*high)),
         Seen::OffScale { top } => format!("over {}", value(*top)),
         Seen::Nothing => String::from("nothing"),
-        Seen::ShareOf { share, .. } => format!("{} of the other", percent(*share)),
+        Seen::ShareOf { share, .. } => format!("{} of the other", times(*share)),
         Seen::NotPossible { .. } => String::from("not possible"),
     }
 }

@@ -1,0 +1,410 @@
+//! The hand-over report: what must stand in it, that it can be made again, and that its table is read by others.
+#![cfg(not(target_arch = "wasm32"))]
+
+mod record_support;
+
+use lowside::assessment::Assessment;
+use lowside::call::put_back;
+use lowside::quantity::{DecimalMark, UnitPrefs};
+use lowside::ranking::Session;
+use lowside::readings::instrument::{Instrument, usual_instruments};
+use lowside::readings::{Reading, Seen};
+use lowside::record::{Closing, Export, PutBack, Visit};
+use lowside::report::{Report, Sheet, Subject, Sure, csv, record_sum};
+use lowside::unit::Unit;
+use proptest::prelude::*;
+use record_support::Dice;
+
+const NOW: &str = "2025-03-18T17:00:00Z";
+
+struct Case {
+    unit: Unit,
+    visit: Visit,
+    instruments: Vec<Instrument>,
+    assessment: Assessment,
+    prefs: UnitPrefs,
+}
+
+impl Case {
+    fn subject(&self) -> Subject<'_> {
+        Subject {
+            unit: &self.unit,
+            visit: &self.visit,
+            instruments: &self.instruments,
+            assessment: &self.assessment,
+            prefs: &self.prefs,
+            made_at: NOW,
+        }
+    }
+
+    fn report(&self) -> Report {
+        Report::of(&self.subject())
+    }
+}
+
+/// As the app's worker and the office command do it.
+fn assessed(unit: &Unit, visit: &Visit, instruments: &[Instrument]) -> Assessment {
+    let mut session = Session::default();
+    let mut assessment = session.assess(unit, visit, instruments);
+    let advice = lowside::next::advise(unit, visit, instruments, &assessment, session.heavy());
+    assessment.advice = Some(advice);
+    assessment
+}
+
+fn demo(place: usize) -> Case {
+    let export = Export::read(lowside::demo::TAMARISK.as_bytes()).expect("the demo");
+    let visit = export.visits[place].clone();
+    let unit = export.units.iter().find(|unit| unit.id == visit.unit);
+    let unit = unit.expect("its unit").clone();
+    let assessment = assessed(&unit, &visit, &export.instruments);
+    Case {
+        unit,
+        visit,
+        instruments: export.instruments,
+        assessment,
+        prefs: UnitPrefs::metric(),
+    }
+}
+
+/// A random record with an empty assessment: everything that can be written down must be told without one.
+fn random(seed: u64) -> Case {
+    let mut dice = Dice(seed);
+    let unit = dice.unit();
+    let instruments = usual_instruments();
+    let visit = dice.visit(&unit.id, &instruments);
+    Case {
+        unit,
+        visit,
+        instruments,
+        assessment: Assessment::default(),
+        prefs: if seed.is_multiple_of(2) {
+            UnitPrefs::metric()
+        } else {
+            UnitPrefs::us()
+        },
+    }
+}
+
+#[test]
+fn every_reading_stands_with_window_source_and_instrument() {
+    let case = demo(1);
+    let report = case.report();
+    let rows: Vec<_> = report.groups.iter().flat_map(|group| &group.rows).collect();
+    assert_eq!(rows.len(), case.visit.readings.len());
+    let text = report.text();
+    for words in [
+        "2. Charge pressure: 17.5\u{202f}bar. LOW, expected 20.9 to 24.8\u{202f}bar, computed from these inputs. Gauge 0 to 60",
+        "expected 22.0 to 26.0\u{202f}bar, from the unit's manual",
+        "- Charge pump worn: >99",
+        "The operator says: Weak or slow in both directions",
+        "Machine: T-27, Roller",
+        "The unit's own manual, local rules and licensed practice come first.",
+    ] {
+        assert!(text.contains(words), "{words:?} is not in\n{text}");
+    }
+    assert!(report.groups.iter().all(|group| !group.oil.is_empty()));
+}
+
+#[test]
+fn readings_of_one_condition_stand_together_and_keep_their_numbers() {
+    let report = demo(0).report();
+    let numbers: Vec<Vec<usize>> = report
+        .groups
+        .iter()
+        .map(|group| group.rows.iter().map(|row| row.number).collect())
+        .collect();
+    assert_eq!(
+        numbers,
+        [vec![1], vec![2], vec![3, 5], vec![4], vec![6], vec![7]]
+    );
+    // A reason names the reading by the number that it has in the table.
+    let lead = &report.causes[0];
+    assert!(
+        lead.reasons_for
+            .iter()
+            .any(|why| why.starts_with("no. 4, loop side A")),
+        "{lead:?}"
+    );
+}
+
+#[test]
+fn the_exported_call_gives_the_same_report_again() {
+    for place in 0..3 {
+        let mut case = demo(place);
+        case.prefs = UnitPrefs::us();
+        case.prefs.choose_mark(DecimalMark::Comma);
+        let file = case.subject().export().text().expect("a text");
+        let back = Export::read(file.as_bytes()).expect("it reads back");
+        let settings = back.settings.clone().expect("the units of measure");
+        let (unit, visit) = (back.units[0].clone(), back.visits[0].clone());
+        let again = Case {
+            assessment: assessed(&unit, &visit, &back.instruments),
+            unit,
+            visit,
+            instruments: back.instruments.clone(),
+            prefs: settings.units,
+        };
+        assert_eq!(back.made_at, NOW);
+        assert_eq!(again.report().text(), case.report().text());
+        assert!(case.report().text().contains(&record_sum(&again.subject())));
+    }
+}
+
+#[test]
+fn another_figure_is_another_record() {
+    let mut case = demo(0);
+    let before = record_sum(&case.subject());
+    case.visit.readings[0].note.push('x');
+    assert_ne!(record_sum(&case.subject()), before);
+    let before = record_sum(&case.subject());
+    case.prefs = UnitPrefs::us();
+    assert_ne!(record_sum(&case.subject()), before);
+}
+
+#[test]
+fn units_of_measure_are_the_persons() {
+    let mut case = demo(1);
+    case.prefs = UnitPrefs::us();
+    let text = case.report().text();
+    assert!(text.contains("psi") && text.contains("°F"), "{text}");
+    assert!(
+        !text.contains("\u{202f}bar") && !text.contains("\u{202f}L/min"),
+        "{text}"
+    );
+}
+
+#[test]
+fn the_finding_says_no_more_than_was_proved() {
+    let mut case = demo(1);
+    assert_eq!(case.report().finding.sure, Sure::Leads);
+    let mut closing = Closing {
+        cause: "charge-pump-worn".into(),
+        when: "2025-03-11T16:00:00Z".into(),
+        ..Closing::default()
+    };
+    case.visit.closed = Some(closing.clone());
+    let report = case.report();
+    assert_eq!(report.finding.sure, Sure::NotProved);
+    assert!(report.finding.words.contains("not proved"));
+    assert!(
+        report
+            .text()
+            .contains("Nothing is written down that proves it.")
+    );
+    closing.is_proved = true;
+    closing.proof = "Return flow low at both speeds, pull good".into();
+    closing.done = "Charge pump changed".into();
+    closing.parts = "Charge pump 15 cm³, joint".into();
+    case.visit.closed = Some(closing);
+    let report = case.report();
+    assert_eq!(report.finding.sure, Sure::Proved);
+    let done = &report.section("done").expect("what was done").lines;
+    assert_eq!(done.len(), 3);
+    assert!(done[1].starts_with("Proved by: Return flow"));
+    case.visit.closed = Some(Closing::default());
+    assert_eq!(case.report().finding.sure, Sure::NoCause);
+    // Closed: nothing is proposed any more.
+    assert!(case.report().section("bring").is_none());
+    case.visit.bring = "Seal kit\n\n  two filters ".into();
+    let report = case.report();
+    assert_eq!(
+        report.section("bring").expect("typed").lines,
+        ["Seal kit", "two filters"]
+    );
+}
+
+#[test]
+fn too_little_gives_no_cause() {
+    let mut case = demo(1);
+    case.visit.readings.clear();
+    case.visit.observations.clear();
+    case.assessment = assessed(&case.unit, &case.visit, &case.instruments);
+    let report = case.report();
+    assert_eq!(report.finding.sure, Sure::TooLittle);
+    assert!(report.causes.is_empty());
+    let open = report.section("not-checked").expect("it says so");
+    assert!(
+        open.lines.contains(&"No reading was taken".to_owned()),
+        "{open:?}"
+    );
+}
+
+#[test]
+fn what_was_not_taken_is_told() {
+    let mut case = demo(1);
+    case.visit.readings[0].seen = None;
+    case.visit.readings[0].typed = "24x".into();
+    case.visit.readings[1].seen = Some(Seen::NotPossible {
+        why: "port seized".into(),
+    });
+    case.visit.readings[2].condition.oil = None;
+    case.visit.riggings.clear();
+    let report = case.report();
+    let open = report
+        .section("not-checked")
+        .expect("it says so")
+        .lines
+        .join("\n");
+    for words in [
+        "No. 1, charge pressure: not readable as a figure: 24x",
+        "No. 2, charge pressure: not possible: port seized",
+        "Oil temperature: not taken with 1 of 4 readings",
+        "Instrument: not named with all 4 readings",
+    ] {
+        assert!(open.contains(words), "{words:?} is not in\n{open}");
+    }
+}
+
+#[test]
+fn an_open_put_back_list_comes_first_among_the_cautions() {
+    let mut case = demo(1);
+    let lines = put_back::lines(&case.visit).len();
+    assert!(lines >= 3);
+    let report = case.report();
+    assert_eq!(
+        report.cautions[0],
+        format!(
+            "Not to be put to work: {lines} of {lines} lines of the put-back list are not answered for."
+        )
+    );
+    let of = report.section("put-back").expect("the list");
+    assert!(
+        of.lines
+            .iter()
+            .all(|line| line.contains("NOT ANSWERED FOR"))
+    );
+    for (line, _) in put_back::lines(&case.visit) {
+        case.visit.put_back.insert(line.to_owned(), PutBack::Done);
+    }
+    case.visit.put_back.insert(
+        put_back::lines(&case.visit)[0].0.to_owned(),
+        PutBack::Struck("never opened".into()),
+    );
+    let report = case.report();
+    assert!(!report.cautions[0].starts_with("Not to be put to work"));
+    let text = report.text();
+    assert!(text.contains("seen to be so") && text.contains("does not apply, never opened"));
+    assert!(!text.contains("NOT ANSWERED FOR"));
+}
+
+#[test]
+fn a_machine_that_runs_on_says_stop() {
+    let mut case = demo(1);
+    case.visit
+        .observations
+        .insert("runs-on".into(), lowside::record::Answer::OperatorSays);
+    let text = case.report().text();
+    assert!(
+        text.contains("Keeps moving with the lever in neutral: do not test."),
+        "{text}"
+    );
+}
+
+/// A table as a reader from outside takes it.
+fn table(case: &Case) -> (Vec<String>, Vec<Vec<String>>) {
+    let sheet = Sheet {
+        unit: &case.unit,
+        visit: &case.visit,
+        assessment: &case.assessment,
+    };
+    let text = csv(&[sheet], &case.instruments, &case.prefs);
+    assert!(text.ends_with("\r\n"));
+    let mut reader = ::csv::ReaderBuilder::new()
+        .flexible(false)
+        .from_reader(text.as_bytes());
+    let header = reader.headers().expect("a header");
+    let header = header.iter().map(str::to_owned).collect();
+    let rows = reader.records().map(|row| {
+        let row = row.expect("as many cells as the header has");
+        row.iter().map(str::to_owned).collect()
+    });
+    (header, rows.collect())
+}
+
+#[test]
+fn the_table_has_the_units_in_its_header_and_the_figures_under_them() {
+    let case = demo(1);
+    let (header, rows) = table(&case);
+    let at = |name: &str| {
+        header
+            .iter()
+            .position(|h| h == name)
+            .unwrap_or_else(|| panic!("{name}"))
+    };
+    assert_eq!(rows.len(), 6);
+    assert_eq!(rows[1][at("Read (bar)")], "17.5");
+    assert_eq!(rows[1][at("Read (L/min)")], "");
+    assert_eq!(rows[3][at("Read (L/min)")], "20.2");
+    assert_eq!(rows[0][at("Expected from (bar)")], "22");
+    assert_eq!(rows[1][at("Standing")], "low");
+    assert_eq!(rows[1][at("Oil (°C)")], "62");
+    assert_eq!(rows[3][at("Typed")], "20,2 L/min");
+}
+
+#[test]
+fn a_pull_is_told_as_vacuum_where_the_unit_is_one() {
+    let mut case = demo(1);
+    case.prefs = UnitPrefs::us();
+    let (header, rows) = table(&case);
+    let at = header
+        .iter()
+        .position(|h| h == "Read (inHg vac)" || h.starts_with("Read (inHg"));
+    let at = at.unwrap_or_else(|| panic!("{header:?}"));
+    let pull: f64 = rows[5][at].parse().expect("a figure");
+    // 0.08 bar below the air; 1 inHg is 0.0338639 bar.
+    assert!((pull - 0.08 / 0.033_863_9).abs() < 0.01, "{pull}");
+}
+
+fn taken(reading: &Reading) -> bool {
+    matches!(reading.seen, Some(Seen::Value { .. } | Seen::Swing { .. }))
+}
+
+proptest! {
+    #![proptest_config(ProptestConfig::with_cases(300))]
+
+    #[test]
+    fn any_record_gives_a_report_and_a_table(seed: u64) {
+        let case = random(seed);
+        let text = case.report().text();
+        prop_assert!(!text.contains("NaN") && !text.contains("inf "), "{}", text);
+        prop_assert!(text.lines().all(|line| !line.chars().any(char::is_control)));
+        for (at, _) in case.visit.readings.iter().enumerate() {
+            let line = format!("\n{}. ", at + 1);
+            prop_assert!(text.contains(&line), "reading {} is not told", at + 1);
+        }
+        if case.visit.readings.is_empty() {
+            return Ok(());
+        }
+        let (header, rows) = table(&case);
+        prop_assert_eq!(rows.len(), case.visit.readings.len());
+        let mut once: Vec<&String> = header.iter().collect();
+        once.sort();
+        once.dedup();
+        prop_assert_eq!(once.len(), header.len(), "{:?}", header);
+        for (row, reading) in rows.iter().zip(&case.visit.readings) {
+            for (name, cell) in header.iter().zip(row) {
+                let is_number = cell.parse::<f64>().is_ok_and(f64::is_finite);
+                prop_assert!(is_number || !cell.trim_start().starts_with(['=', '+', '-', '@']), "{}: {}", name, cell);
+                if name.starts_with("Read (") && !cell.is_empty() {
+                    prop_assert!(is_number, "{}: {}", name, cell);
+                }
+            }
+            let read = header.iter().zip(row).filter(|(name, cell)| name.starts_with("Read (") && !cell.is_empty());
+            prop_assert_eq!(read.count(), usize::from(taken(reading) || matches!(reading.seen, Some(Seen::OffScale { .. } | Seen::Nothing))));
+        }
+    }
+}
+
+#[test]
+fn what_looks_like_a_formula_is_text() {
+    let mut case = demo(1);
+    case.unit.name = "=1+2".into();
+    case.visit.readings[0].note = "@SUM(A1), \"quoted\"\nsecond line".into();
+    case.visit.readings[0].typed = "  +5".into();
+    let (header, rows) = table(&case);
+    assert_eq!(rows[0][0], "'=1+2");
+    let note = header.iter().position(|h| h == "Note").expect("a note");
+    assert_eq!(rows[0][note], "'@SUM(A1), \"quoted\" / second line");
+    let typed = header.iter().position(|h| h == "Typed").expect("typed");
+    assert_eq!(rows[0][typed], "'+5");
+}
