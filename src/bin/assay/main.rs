@@ -8,9 +8,11 @@
 //! `assay steps [cases] [seed]` counts the minutes to the cause (see [`steps`]).
 //! `assay neutral [cases]` hides a swash offset (see [`neutral`]).
 //! `assay yard [cases]` wears machines down over the hours (see [`yard`]).
+//! `assay hostile [inputs]` reads broken files and tables (see [`hostile`]).
 //! `ASSAY_TELL=1` prints the cases in which a wrong cause was all but certain; `ASSAY_SEED` changes the draw;
 //! `ASSAY_NOTES=clean` leaves the sloppy notes out.
 
+mod hostile;
 mod judge;
 mod neutral;
 mod score;
@@ -58,9 +60,10 @@ fn main() {
         Some("steps") => steps::steps(number(2, 60), number(3, 2026) as u64),
         Some("yard") => yard::yard(number(2, 400), seed()),
         Some("tracking") => tracking::tracking(number(2, 2000), seed()),
+        Some("hostile") => hostile::hostile(number(2, 100_000), seed()),
         Some(other) => {
             eprintln!(
-                "assay: no such part: {other}. There are: ranking, pairs, sides, steps, tracking, neutral, yard."
+                "assay: no such part: {other}. There are: ranking, pairs, sides, steps, tracking, neutral, hostile, yard."
             )
         }
     }
