@@ -493,6 +493,15 @@ fn series(visits: &[Visit]) -> History {
 }
 
 #[test]
+fn a_share_is_told_in_per_cent_once() {
+    let prefs = UnitPrefs::metric();
+    assert_eq!(
+        lowside::yard::value_words(Wear::Slip, 0.045, &prefs),
+        "4.5 %"
+    );
+}
+
+#[test]
 fn march_and_july_lie_on_one_line() {
     let visits = worn(10, 0.0);
     let raw: Vec<f64> = visits

@@ -175,7 +175,7 @@ fn signed(value: f64, print: &impl Fn(f64) -> String) -> String {
 pub fn value_words(of: Wear, value: f64, prefs: &UnitPrefs) -> String {
     let (unit, value) = match of {
         Wear::Drain | Wear::DrainRight => (InUnit::LitrePerMinute, value),
-        Wear::Slip => (InUnit::Percent, 100.0 * value),
+        Wear::Slip => (InUnit::Percent, value),
         Wear::Knee | Wear::LowIdle => (InUnit::RevolutionPerMinute, value.round()),
     };
     if of == Wear::Slip {

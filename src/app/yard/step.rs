@@ -69,7 +69,7 @@ pub fn StepPart(props: &StepProps) -> Html {
         .cloned()
         .collect();
     html! {
-        <Section id={format!("yard-{}", step.id)} title={format!("{}. {}", props.number, step.title)} {state} is_open=true>
+        <Section id={format!("yard-step-{}", step.id)} title={format!("{}. {}", props.number, step.title)} {state} is_open=true>
             { cautions::all(&step.cautions(unit, sheet.leg)) }
             <p>{ step.how }</p>
             if !looks.is_empty() {
