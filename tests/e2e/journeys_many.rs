@@ -5,6 +5,7 @@ use std::collections::BTreeMap;
 use lowside::store::{MemoryStore, PackedStore, Shelf};
 use serde_json::{Value, json};
 
+use crate::hands::{open, type_in};
 use crate::rig::{PHONE, Rig};
 #[path = "../yard_support/mod.rs"]
 mod yard_support;
@@ -80,13 +81,14 @@ async fn five_hundred_units_are_found_edited_and_kept() {
         "called full with what it is to carry"
     );
     rig.click("unit-profile").await;
-    rig.fill("unit-note", "Found among five hundred").await;
+    type_in(&rig, "unit-note", "Found among five hundred").await;
     rig.wait_for_text("Saved").await;
     let (_, script) = started(&rig).await;
     println!("again: scripts {script:.0} ms");
     rig.fill("unit-search", "T-377").await;
     rig.wait_until("it again", &format!("{cards} === 1")).await;
     rig.click("unit-profile").await;
+    open(&rig, "unit-note").await;
     rig.by_id("unit-note").await;
     let note = rig
         .js(

@@ -21,7 +21,9 @@ pub fn Lines(props: &LinesProps) -> Html {
         return Html::default();
     }
     html! {
-        <ul class="told-lines" role="status" data-testid={props.testid}>
+        // The list keeps its own role; what is told of it is told by its frame.
+        <div role="status">
+        <ul class="told-lines" data-testid={props.testid}>
             { for props.lines.iter().map(|line| {
                 let (class, shape, word) = look(line.tone);
                 html! {
@@ -32,6 +34,7 @@ pub fn Lines(props: &LinesProps) -> Html {
                 }
             }) }
         </ul>
+        </div>
     }
 }
 

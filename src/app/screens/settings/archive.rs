@@ -45,17 +45,17 @@ pub fn Archive(props: &DataProps) -> Html {
             </p>
         };
     }
-    let options: Vec<Opt<u16>> = years
-        .iter()
-        .map(|(year, calls)| {
+    // With nothing chosen a browser shows the first option, and choosing what it shows would tell us nothing.
+    let options: Vec<Opt<Option<u16>>> = std::iter::once(Opt::new(None, "Choose the year", "none"))
+        .chain(years.iter().map(|(year, calls)| {
             let words = format!("opened before {year}: {}", count(*calls, "call"));
-            Opt::new(*year, words, year.to_string())
-        })
+            Opt::new(Some(*year), words, year.to_string())
+        }))
         .collect();
     let on_before = {
         let (before, handed) = (before.clone(), handed.clone());
-        Callback::from(move |year: u16| {
-            before.set(Some(year));
+        Callback::from(move |year: Option<u16>| {
+            before.set(year);
             handed.set(None);
         })
     };
@@ -87,11 +87,11 @@ pub fn Archive(props: &DataProps) -> Html {
                 { "Closed calls go into a file and then out of this browser. “Take a file in” brings them back. The last call of each \
                    unit stays here, and so does what is open or not put back." }
             </p>
-            <Select<u16>
+            <Select<Option<u16>>
                 id="archive-before"
                 label="Which calls"
                 options={options}
-                value={*before}
+                value={Some(*before)}
                 on_change={on_before}
                 testid="archive-before"
             />
