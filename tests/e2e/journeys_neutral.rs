@@ -1,5 +1,6 @@
 //! The neutral of a call: from the creep to the null, with nothing typed lost.
 
+use crate::hands::press;
 use crate::rig::{NARROW, PHONE, Rig};
 
 /// A call of the demonstration yard on a unit with a manual spool and feedback.
@@ -45,6 +46,7 @@ async fn creep_is_asked_after_the_precautions_and_gives_an_offset() {
     rig.fill("neutral-CreepTime", "60").await;
     rig.wait_for_text("Saved").await;
     rig.reload().await;
+    rig.by_id("neutral-screen").await;
     open_steps(&rig).await;
     let kept = rig
         .js(
@@ -54,7 +56,8 @@ async fn creep_is_asked_after_the_precautions_and_gives_an_offset() {
         .await;
     assert_eq!(kept, "3x", "what cannot be read is gone");
     rig.fill("neutral-CreepTurns", "3").await;
-    rig.click("creep-way-forward").await;
+    open_steps(&rig).await;
+    press(&rig, "creep-way-forward").await;
     rig.wait_for_text("The swash stands off by").await;
     rig.by_id("offset-scale").await;
     let problems = rig.problems().await;
@@ -70,7 +73,7 @@ async fn starts_both_ways_give_the_turns_to_the_null() {
     for (place, turns, way) in [(1, "0,5", "starts-forward"), (2, "-0,1", "starts-reverse")] {
         rig.click("add-place").await;
         rig.fill(&format!("place-{place}-turns"), turns).await;
-        rig.click(&format!("place-{place}-seen-{way}")).await;
+        press(&rig, &format!("place-{place}-seen-{way}")).await;
     }
     rig.wait_for_text("Turn 0.30 turns in from the last place")
         .await;
