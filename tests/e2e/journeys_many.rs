@@ -83,6 +83,8 @@ async fn five_hundred_units_are_found_edited_and_kept() {
     rig.click("unit-profile").await;
     type_in(&rig, "unit-note", "Found among five hundred").await;
     rig.wait_for_text("Saved").await;
+    rig.go("/units").await;
+    rig.by_id("unit-list").await;
     let (_, script) = started(&rig).await;
     println!("again: scripts {script:.0} ms");
     rig.fill("unit-search", "T-377").await;

@@ -217,7 +217,7 @@ async fn wear_is_drawn_over_the_hours_and_closed_calls_teach_until_they_are_take
     rig.js(pick, vec![text.into()]).await;
     rig.by_id("import-take").await;
     press(&rig, "import-take").await;
-    rig.wait_for_text("Saved").await;
+    rig.wait_for_text("Taken in").await;
 
     rig.go("/unit/worn/wear").await;
     rig.by_id("wear-screen").await;
