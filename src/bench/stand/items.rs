@@ -160,6 +160,17 @@ const fn figure(
     }
 }
 
+/// An item with what could hurt at it.
+const fn careful(item: Item, caution: &'static str) -> Item {
+    Item { caution, ..item }
+}
+
+/// At full pressure.
+const FULL_PRESSURE: &str = "Full pressure: hoses tied down, guard shut, nobody beside them or in the plane of the coupling. Raise the load \
+    slowly and let go within a few seconds: all of the power turns into heat.";
+/// At a shaft that is held against full torque.
+const LOCKED_SHAFT: &str = "The lock carries the whole torque: guard shut, nobody in its plane, pressure off before a hand goes to the shaft.";
+
 /// Every item, in the order of the work.
 pub const ITEMS: &[Item] = &[
     tick(
@@ -292,53 +303,71 @@ pub const ITEMS: &[Item] = &[
         Unit::CubicCentimetrePerRevolution,
         Practice::OfTheory(0.97, 1.03),
     ),
-    figure(
-        ItemId::ReliefA,
-        PUMP_AND_DRIVE,
-        "Loop relief A at its stated flow",
-        "Raise the load slowly; a few seconds, then let it cool. Good: the setting to 5 % over.",
-        Unit::Bar,
-        Practice::None,
+    careful(
+        figure(
+            ItemId::ReliefA,
+            PUMP_AND_DRIVE,
+            "Loop relief A at its stated flow",
+            "Raise the load slowly; a few seconds, then let it cool. Good: the setting to 5 % over.",
+            Unit::Bar,
+            Practice::None,
+        ),
+        FULL_PRESSURE,
     ),
-    figure(
-        ItemId::ReliefB,
-        PUMP_AND_DRIVE,
-        "Loop relief B at its stated flow",
-        "As A. The two within 3 %.",
-        Unit::Bar,
-        Practice::None,
+    careful(
+        figure(
+            ItemId::ReliefB,
+            PUMP_AND_DRIVE,
+            "Loop relief B at its stated flow",
+            "As A. The two within 3 %.",
+            Unit::Bar,
+            Practice::None,
+        ),
+        FULL_PRESSURE,
     ),
-    figure(
-        ItemId::LimiterA,
-        PUMP,
-        "Pressure limiter A",
-        "Pressure at which the stroke goes back. 10 bar and more under the relief.",
-        Unit::Bar,
-        Practice::None,
+    careful(
+        figure(
+            ItemId::LimiterA,
+            PUMP,
+            "Pressure limiter A",
+            "Pressure at which the stroke goes back. 10 bar and more under the relief.",
+            Unit::Bar,
+            Practice::None,
+        ),
+        FULL_PRESSURE,
     ),
-    figure(
-        ItemId::LimiterB,
-        PUMP,
-        "Pressure limiter B",
-        "As A.",
-        Unit::Bar,
-        Practice::None,
+    careful(
+        figure(
+            ItemId::LimiterB,
+            PUMP,
+            "Pressure limiter B",
+            "As A.",
+            Unit::Bar,
+            Practice::None,
+        ),
+        FULL_PRESSURE,
     ),
-    figure(
-        ItemId::DeadHead,
-        PUMP,
-        "Flow left at dead head on the limiter",
-        "A few seconds only.",
-        Unit::LitrePerMinute,
-        Practice::None,
+    careful(
+        figure(
+            ItemId::DeadHead,
+            PUMP,
+            "Flow left at dead head on the limiter",
+            "A few seconds only.",
+            Unit::LitrePerMinute,
+            Practice::None,
+        ),
+        FULL_PRESSURE,
     ),
-    figure(
-        ItemId::StartingTorque,
-        MOTOR_AND_DRIVE,
-        "Starting torque, worst of four shaft angles and more",
-        "Full pressure on a locked shaft, per cent of theory. Axial piston 70 to 85 %, radial piston 85 to 95 %.",
-        Unit::Percent,
-        Practice::None,
+    careful(
+        figure(
+            ItemId::StartingTorque,
+            MOTOR_AND_DRIVE,
+            "Starting torque, worst of four shaft angles and more",
+            "Full pressure on a locked shaft, per cent of theory. Axial piston 70 to 85 %, radial piston 85 to 95 %.",
+            Unit::Percent,
+            Practice::None,
+        ),
+        LOCKED_SHAFT,
     ),
     figure(
         ItemId::CreepLeakage,
@@ -443,6 +472,20 @@ mod tests {
                 item.id
             );
             assert!(!item.of.is_empty());
+            let at_full_pressure = matches!(
+                item.id,
+                ItemId::ReliefA
+                    | ItemId::ReliefB
+                    | ItemId::LimiterA
+                    | ItemId::LimiterB
+                    | ItemId::DeadHead
+                    | ItemId::StartingTorque
+            );
+            assert!(
+                !at_full_pressure || !item.caution.is_empty(),
+                "{:?}",
+                item.id
+            );
         }
     }
 }
