@@ -14,8 +14,8 @@ use lowside::bench::stand::{
     Row, Subject, TorqueCovers, points, report,
 };
 use lowside::fluid::{OilProperties, ViscosityCurve};
+use lowside::quantity::Typed;
 use lowside::quantity::{Measure, Unit};
-use lowside::tracking::Typed;
 use lowside::unit::FigureId;
 use lowside::windows::Normals;
 use serde::Deserialize;

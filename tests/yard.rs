@@ -2,10 +2,10 @@
 #![cfg(not(target_arch = "wasm32"))]
 
 use lowside::faults::{self, FaultId};
+use lowside::quantity::Typed;
 use lowside::quantity::{Measure, Unit as InUnit, UnitPrefs};
 use lowside::ranking::{Session, assess};
 use lowside::readings::Place;
-use lowside::record::neutral::Typed;
 use lowside::record::{Closing, Visit};
 use lowside::unit::{Figure, FigureId, MachineClass, Paths, Source, Tick, Unit};
 use lowside::yard::learn::{self, Learning};

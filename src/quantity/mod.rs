@@ -18,6 +18,7 @@ mod number;
 mod prefs;
 mod print;
 mod spelling;
+mod text;
 pub mod typed;
 mod unit;
 
@@ -28,6 +29,7 @@ pub use measure::{LARGEST, Measure, MeasureError};
 pub use prefs::UnitPrefs;
 pub use print::{DecimalMark, Decimals, MINUS, edit_text, format, format_span, format_with_unit};
 use print::{edited, figure_text};
+pub use text::Typed;
 pub use typed::{DisplacementPerRevolution, GaugePressure};
 pub use unit::Unit;
 

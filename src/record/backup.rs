@@ -2,6 +2,7 @@
 
 use super::Visit;
 use crate::demo;
+use crate::yard::calendar;
 
 /// Calls since the last file from which on the app reminds.
 pub const MANY: usize = 5;
@@ -17,24 +18,6 @@ pub struct AtRisk {
     pub days: Option<i64>,
 }
 
-/// Day number of a moment (ISO 8601 text); none where it is no date. Proleptic Gregorian, days since 1 March of the year 0.
-fn day_number(moment: &str) -> Option<i64> {
-    let mut parts = moment.get(..10)?.split('-');
-    let mut next = || parts.next()?.parse::<i64>().ok();
-    let (year, month, day) = (next()?, next()?, next()?);
-    if !(1..=12).contains(&month) || !(1..=31).contains(&day) {
-        return None;
-    }
-    // A year that begins in March has its leap day last.
-    let (year, month) = if month > 2 {
-        (year, month - 3)
-    } else {
-        (year - 1, month + 9)
-    };
-    let leaps = year.div_euclid(4) - year.div_euclid(100) + year.div_euclid(400);
-    Some(365 * year + leaps + (153 * month + 2) / 5 + day)
-}
-
 /// What is at risk now, where it is enough to remind of it. Demo calls do not count.
 pub fn at_risk<'a>(
     last_export: &str,
@@ -45,12 +28,12 @@ pub fn at_risk<'a>(
         .filter(|visit| !demo::is_demo(&visit.id))
         .filter(|visit| last_export.is_empty() || visit.opened.as_str() > last_export)
         .collect();
-    let today = day_number(now)?;
-    let days = day_number(last_export).map(|then| (today - then).max(0));
+    let today = calendar::day(now)?;
+    let days = calendar::day(last_export).map(|then| (today - then).max(0));
     // Where no file was ever written the first call is what ages.
     let oldest = calls
         .iter()
-        .filter_map(|visit| day_number(&visit.opened))
+        .filter_map(|visit| calendar::day(&visit.opened))
         .min();
     let age = days
         .or(oldest.map(|then| (today - then).max(0)))
@@ -76,7 +59,7 @@ mod tests {
 
     #[test]
     fn days_are_counted_over_months_and_leap_years() {
-        let between = |from, to| Some(day_number(to)? - day_number(from)?);
+        let between = |from, to| Some(calendar::day(to)? - calendar::day(from)?);
         assert_eq!(between("2024-02-28", "2024-03-01"), Some(2));
         assert_eq!(between("2025-02-28", "2025-03-01"), Some(1));
         assert_eq!(
@@ -84,8 +67,8 @@ mod tests {
             Some(1)
         );
         assert_eq!(between("2000-01-01", "2100-01-01"), Some(36_525));
-        assert_eq!(day_number("soon"), None);
-        assert_eq!(day_number("2025-13-01"), None);
+        assert_eq!(calendar::day("soon"), None);
+        assert_eq!(calendar::day("2025-13-01"), None);
     }
 
     #[test]

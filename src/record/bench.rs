@@ -1,13 +1,12 @@
 //! The bench sheet as it comes from outside and goes out.
 
 use super::check::{self, Checked};
-use super::error::{Problem, content};
 use super::limits::ENTRIES;
 use crate::bench::stand::BenchSheet;
 use crate::bench::stand::items::{Entry, item};
 use crate::bench::stand::sheet::ROWS;
+use crate::quantity::Typed;
 use crate::quantity::{Measure, Unit};
-use crate::tracking::Typed;
 use std::collections::BTreeSet;
 
 /// Largest figure of an item, in its unit.
@@ -56,14 +55,6 @@ fn figures(sheet: &mut BenchSheet) -> Vec<(String, &mut Typed, Asked)> {
     all
 }
 
-/// Screens take the limit as it is shown, so a hair beyond it is the limit.
-fn within(value: Measure, (low, high): Asked) -> Result<(), Problem> {
-    let slack = |limit: f64| 1e-5 * limit.abs();
-    let (low_base, high_base) = (low.base(), high.base());
-    let span = (low_base - slack(low_base), high_base + slack(high_base));
-    check::measure(value, low.kind(), span)
-}
-
 /// Checks a sheet and cleans its texts.
 pub(super) fn check(path: &str, sheet: &mut BenchSheet) -> Checked {
     check::count(&format!("{path}.rows"), sheet.rows.len(), ROWS)?;
@@ -98,11 +89,7 @@ pub(super) fn check(path: &str, sheet: &mut BenchSheet) -> Checked {
         check::line(path, "taken_over", when)?;
     }
     for (at, typed, asked) in figures(sheet) {
-        let path = format!("{path}.{at}");
-        check::line(&path, "typed", &mut typed.typed)?;
-        if let Some(value) = typed.value {
-            within(value, asked).map_err(|why| content(format!("{path}.value"), why))?;
-        }
+        check::typed(&format!("{path}.{at}"), typed, asked)?;
     }
     check::unknown_fields(path, &sheet.extra)
 }
@@ -110,7 +97,9 @@ pub(super) fn check(path: &str, sheet: &mut BenchSheet) -> Checked {
 /// A figure that the checks would refuse goes out as its text alone.
 pub(super) fn mend(sheet: &mut BenchSheet) {
     for (_, typed, asked) in figures(sheet) {
-        typed.value.take_if(|value| within(*value, asked).is_err());
+        typed
+            .value
+            .take_if(|value| check::within(*value, asked).is_err());
     }
 }
 

@@ -4,7 +4,7 @@
 use super::error::{Problem, RecordError, content};
 use super::limits::{self, ENTRIES, LINE_CHARACTERS, TEXT_CHARACTERS};
 use super::{Closing, NeutralSheet, PutBack, Settings, Visit, is_id};
-use crate::quantity::{Kind, Measure};
+use crate::quantity::{Kind, Measure, Typed};
 use crate::readings::instrument::Instrument;
 use crate::readings::{Condition, EngineSpeed, Lever, Port, Reading, Rigging, Seen};
 use crate::unit::{FIGURES, FigureId, ManualWindow, Unit};
@@ -164,6 +164,23 @@ pub(super) fn measure(value: Measure, kind: Kind, span: (f64, f64)) -> Result<()
 }
 
 /// A figure of a unit, as the list of figures asks for it.
+/// A figure within what its field takes. Screens take a limit as it is shown, so a hair beyond it is the limit.
+pub(super) fn within(value: Measure, (low, high): (Measure, Measure)) -> Result<(), Problem> {
+    let slack = |limit: f64| 1e-5 * limit.abs();
+    let (low_base, high_base) = (low.base(), high.base());
+    let span = (low_base - slack(low_base), high_base + slack(high_base));
+    measure(value, low.kind(), span)
+}
+
+/// A typed figure: its text is cleaned, its value lies within what its field takes.
+pub(super) fn typed(path: &str, typed: &mut Typed, asked: (Measure, Measure)) -> Checked {
+    line(path, "typed", &mut typed.typed)?;
+    match typed.value {
+        Some(value) => within(value, asked).map_err(|why| content(format!("{path}.value"), why)),
+        None => Ok(()),
+    }
+}
+
 pub(super) fn figure(id: FigureId, value: Measure) -> Result<(), Problem> {
     match FIGURES.iter().find(|ask| ask.id == id) {
         Some(ask) => measure(value, ask.kind, (ask.low, ask.high)),

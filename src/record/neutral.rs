@@ -1,29 +1,10 @@
 //! The neutral sheet of a visit, as it is kept: every text as it was typed beside the figure it was read as.
 
 use crate::neutral::adjust::Sense;
-use crate::quantity::{Kind, Measure, Unit};
+use crate::quantity::{Kind, Typed, Unit};
 use crate::readings::{Direction, EngineSpeed};
 use serde::{Deserialize, Serialize};
 use std::collections::BTreeMap;
-
-/// A figure as it was typed.
-#[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
-#[serde(default)]
-pub struct Typed {
-    /// The text.
-    pub typed: String,
-    /// What it was read as; none where it cannot be read.
-    #[serde(skip_serializing_if = "Option::is_none")]
-    pub value: Option<Measure>,
-}
-
-impl Typed {
-    /// True where there is nothing to keep.
-    #[must_use]
-    pub fn is_empty(&self) -> bool {
-        self.typed.is_empty() && self.value.is_none()
-    }
-}
 
 /// A figure of the sheet. The codes stand in files that people keep.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
@@ -129,14 +110,6 @@ impl Field {
 
 /// Turns of an adjuster from where it was found, at most.
 pub const ADJUSTER_TURNS: f64 = 40.0;
-
-impl Typed {
-    /// The value in a unit; none where it cannot be read, or is a figure of another kind.
-    #[must_use]
-    pub fn value_in(&self, unit: Unit) -> Option<f64> {
-        self.value?.try_in_unit(unit).ok()
-    }
-}
 
 /// How a loop difference was read: it decides what can be told from it.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq, Serialize, Deserialize)]

@@ -1,10 +1,10 @@
 //! The tracking sheet as it comes from outside and goes out.
 
 use super::check::{self, Checked};
-use super::error::{Problem, RecordError, content};
 use super::limits::ENTRIES;
 use crate::quantity::Measure;
-use crate::tracking::{LINES, TrackingSheet, Typed};
+use crate::quantity::Typed;
+use crate::tracking::{LINES, TrackingSheet};
 use std::collections::BTreeSet;
 
 /// Checks a sheet and cleans its texts.
@@ -12,7 +12,7 @@ pub(super) fn check(path: &str, sheet: &mut TrackingSheet) -> Checked {
     for (head, typed) in &mut sheet.head {
         let (unit, low, high) = head.asks();
         let asked = (Measure::literal(low, unit), Measure::literal(high, unit));
-        figure(&format!("{path}.head"), typed, asked)?;
+        check::typed(&format!("{path}.head"), typed, asked)?;
     }
     check::count(&format!("{path}.steps"), sheet.steps.len(), ENTRIES)?;
     for step in sheet.steps.keys() {
@@ -27,30 +27,10 @@ pub(super) fn check(path: &str, sheet: &mut TrackingSheet) -> Checked {
         for (field, typed) in &mut run.fields {
             let (unit, high) = what.asks(*field);
             let asked = (Measure::literal(0.0, unit), Measure::literal(high, unit));
-            figure(&format!("{path}.fields"), typed, asked)?;
+            check::typed(&format!("{path}.fields"), typed, asked)?;
         }
     }
     check::unknown_fields(path, &sheet.extra)
-}
-
-fn figure(path: &str, typed: &mut Typed, asked: (Measure, Measure)) -> Checked {
-    check::line(path, "typed", &mut typed.typed)?;
-    match typed.value {
-        Some(value) => within(value, asked).map_err(|why| wrong(path, why)),
-        None => Ok(()),
-    }
-}
-
-fn wrong(path: &str, why: Problem) -> RecordError {
-    content(format!("{path}.value"), why)
-}
-
-/// Screens take the limit as it is shown, so a hair beyond it is the limit.
-fn within(value: Measure, (low, high): (Measure, Measure)) -> Result<(), Problem> {
-    let slack = |limit: f64| 1e-5 * limit.abs();
-    let (low_base, high_base) = (low.base(), high.base());
-    let span = (low_base - slack(low_base), high_base + slack(high_base));
-    check::measure(value, low.kind(), span)
 }
 
 /// A figure that the checks would refuse goes out as its text alone.
@@ -71,7 +51,9 @@ pub(super) fn mend(sheet: &mut TrackingSheet) {
 }
 
 fn drop_wrong(typed: &mut Typed, asked: (Measure, Measure)) {
-    typed.value.take_if(|value| within(*value, asked).is_err());
+    typed
+        .value
+        .take_if(|value| check::within(*value, asked).is_err());
 }
 
 #[cfg(all(test, not(target_arch = "wasm32")))]

@@ -71,8 +71,8 @@ pub struct Visit {
     #[serde(skip_serializing_if = "Option::is_none")]
     pub yard: Option<YardSheet>,
     /// Hour meter at the visit.
-    #[serde(skip_serializing_if = "super::neutral::Typed::is_empty")]
-    pub hours: super::neutral::Typed,
+    #[serde(skip_serializing_if = "crate::quantity::Typed::is_empty")]
+    pub hours: crate::quantity::Typed,
     /// The bench sheet of its pump or motor; none where nobody began one.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub bench: Option<BenchSheet>,

@@ -3,9 +3,9 @@
 use super::check::{self, Checked};
 use super::error::content;
 use super::limits::ENTRIES;
-use super::neutral::Typed;
-use crate::quantity::{Kind, Measure};
-use crate::yard::{Field, YardSheet};
+use crate::quantity::Kind;
+use crate::quantity::Typed;
+use crate::yard::YardSheet;
 
 /// Highest hour meter reading, h.
 const MOST_HOURS: f64 = 200_000.0;
@@ -16,10 +16,7 @@ const HOURS_SPAN: (f64, f64) = (0.0, MOST_HOURS * 3_600.0 * 1.000_01);
 pub(super) fn check(path: &str, sheet: &mut YardSheet) -> Checked {
     for (field, typed) in &mut sheet.fields {
         let path = format!("{path}.fields.{}", field.code());
-        check::line(&path, "typed", &mut typed.typed)?;
-        if let Some(value) = typed.value {
-            within(*field, value).map_err(|why| content(format!("{path}.value"), why))?;
-        }
+        check::typed(&path, typed, field.range())?;
     }
     check::count(&format!("{path}.looks"), sheet.looks.len(), ENTRIES)?;
     for (look, answer) in &mut sheet.looks {
@@ -47,21 +44,12 @@ pub(super) fn hours(path: &str, typed: &mut Typed) -> Checked {
     }
 }
 
-/// Screens take a limit as it is shown, so a hair beyond it is the limit.
-fn within(field: Field, value: Measure) -> Result<(), super::error::Problem> {
-    let (low, high) = field.range();
-    let slack = |limit: f64| 1e-5 * limit.abs();
-    let span = (
-        low.base() - slack(low.base()),
-        high.base() + slack(high.base()),
-    );
-    check::measure(value, field.kind(), span)
-}
-
 /// A figure that the checks would refuse goes out as its text alone.
 pub(super) fn mend(sheet: &mut YardSheet) {
     for (field, typed) in &mut sheet.fields {
-        typed.value.take_if(|value| within(*field, *value).is_err());
+        typed
+            .value
+            .take_if(|value| check::within(*value, field.range()).is_err());
     }
 }
 
@@ -75,7 +63,8 @@ pub(super) fn mend_hours(typed: &mut Typed) {
 #[cfg(all(test, not(target_arch = "wasm32")))]
 mod tests {
     use super::*;
-    use crate::quantity::Unit;
+    use crate::quantity::{Measure, Unit};
+    use crate::yard::Field;
 
     fn typed(value: f64, unit: Unit) -> Typed {
         Typed {

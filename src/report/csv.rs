@@ -226,7 +226,7 @@ fn rounded(value: f64) -> String {
 }
 
 /// A text cell that no spreadsheet takes for a formula: what begins as one gets an apostrophe in front.
-fn text(words: &str) -> String {
+pub(crate) fn text(words: &str) -> String {
     let first = words.trim_start().chars().next();
     let is_formula = matches!(
         first,
@@ -239,19 +239,18 @@ fn text(words: &str) -> String {
     }
 }
 
-/// One line, quoted where RFC 4180 asks for it.
+/// A cell, quoted where RFC 4180 asks for it.
+pub(crate) fn quoted(cell: String) -> String {
+    if cell.contains(['"', ',', '\r', '\n']) || cell.starts_with(' ') || cell.ends_with(' ') {
+        format!("\"{}\"", cell.replace('"', "\"\""))
+    } else {
+        cell
+    }
+}
+
+/// One line.
 fn row(cells: Vec<String>) -> String {
-    let quoted: Vec<String> = cells
-        .into_iter()
-        .map(|cell| {
-            if cell.contains(['"', ',', '\r', '\n']) || cell.starts_with(' ') || cell.ends_with(' ')
-            {
-                format!("\"{}\"", cell.replace('"', "\"\""))
-            } else {
-                cell
-            }
-        })
-        .collect();
+    let quoted: Vec<String> = cells.into_iter().map(quoted).collect();
     let mut line = quoted.join(",");
     line.push_str("\r\n");
     line

@@ -16,7 +16,7 @@
 
 mod basis;
 mod causes;
-mod csv;
+pub(crate) mod csv;
 mod groups;
 mod moment;
 mod open;

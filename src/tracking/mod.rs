@@ -38,5 +38,5 @@ pub use run::{
     Facing, Gear, LANE, Lever, Load, Machine, Run, RunError, Seen, Setting, Travel, Undercarriage,
     usual_undercarriage,
 };
-pub use sheet::{Answer, Field, Hand, Head, LINES, Line, LineProblem, TrackingSheet, Typed, What};
+pub use sheet::{Answer, Field, Hand, Head, LINES, Line, LineProblem, TrackingSheet, What};
 pub use work::{Step, WORK};

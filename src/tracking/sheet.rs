@@ -2,31 +2,13 @@
 
 use super::adjust::Screws;
 use super::run::{LANE, Machine, Run, RunError, Seen, Setting, Undercarriage};
-use crate::quantity::{Measure, Unit, parse};
+use crate::quantity::{Measure, Typed, Unit, parse};
 use serde::{Deserialize, Serialize};
 use std::collections::BTreeMap;
 use thiserror::Error;
 
 /// Most runs on one sheet.
 pub const LINES: usize = 200;
-
-/// A figure as typed.
-#[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
-#[serde(default)]
-pub struct Typed {
-    /// The text.
-    pub typed: String,
-    /// What it was read as; none while it is empty or cannot be read.
-    pub value: Option<Measure>,
-}
-
-impl Typed {
-    /// True where nothing stands in the field.
-    #[must_use]
-    pub fn is_empty(&self) -> bool {
-        self.typed.trim().is_empty() && self.value.is_none()
-    }
-}
 
 /// What is measured in a run.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq, PartialOrd, Ord, Serialize, Deserialize)]
@@ -197,7 +179,7 @@ pub enum LineProblem {
 impl Line {
     /// The figure of a field in the base unit that [`Run`] takes (m, s, rpm, m/s, turns).
     fn figure(&self, field: Field) -> Result<f64, LineProblem> {
-        let typed = self.fields.get(&field).filter(|t| !t.is_empty());
+        let typed = self.fields.get(&field).filter(|t| !t.is_blank());
         let value = typed.ok_or(LineProblem::Missing)?.value;
         let (unit, _) = self.what.asks(field);
         let unit = match unit {

@@ -1,9 +1,9 @@
 //! The sheet as it is kept.
 
 use super::field::Field;
+use crate::quantity::Typed;
 use crate::quantity::Unit;
 use crate::readings::Place;
-use crate::record::neutral::Typed;
 use serde::{Deserialize, Serialize};
 use std::collections::BTreeMap;
 

@@ -52,3 +52,20 @@ pub async fn type_in(rig: &Rig, testid: &str, text: &str) {
     open(rig, testid).await;
     rig.fill(testid, text).await;
 }
+
+/// Ticks every fact that a gate asks for, as a person would: one after the other.
+pub async fn tick_all(rig: &Rig) {
+    loop {
+        let script = "const open = [...document.querySelectorAll('[data-testid^=\"precaution-\"]')].find((box) => !box.checked);
+            if (!open) { return false; }
+            open.click();
+            return open.dataset.testid;";
+        let ticked = rig.js(script, vec![]).await;
+        let Some(id) = ticked.as_str() else { return };
+        rig.wait_until(
+            &format!("{id} is ticked"),
+            &format!("(document.querySelector('[data-testid=\"{id}\"]')?.checked ?? true)"),
+        )
+        .await;
+    }
+}

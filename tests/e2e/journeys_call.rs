@@ -1,23 +1,7 @@
 //! The road call on a phone: a quick profile, seven readings, the cause; then the server is gone.
 
+use crate::hands::tick_all;
 use crate::rig::{PHONE, Rig};
-
-/// Ticks every fact that a gate asks for, as a person would: one after the other.
-async fn tick_all(rig: &Rig) {
-    loop {
-        let script = "const open = [...document.querySelectorAll('[data-testid^=\"precaution-\"]')].find((box) => !box.checked);
-            if (!open) { return false; }
-            open.click();
-            return open.dataset.testid;";
-        let ticked = rig.js(script, vec![]).await;
-        let Some(id) = ticked.as_str() else { return };
-        rig.wait_until(
-            &format!("{id} is ticked"),
-            &format!("(document.querySelector('[data-testid=\"{id}\"]')?.checked ?? true)"),
-        )
-        .await;
-    }
-}
 
 async fn type_value(rig: &Rig, number: usize, text: &str) {
     rig.fill(&format!("value-{number}"), text).await;

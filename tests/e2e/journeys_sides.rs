@@ -1,5 +1,6 @@
 //! A machine with two drive paths: its profile says so, left and right are read in turn, and the slow side leads the causes.
 
+use crate::hands::{open, tick_all};
 use crate::rig::{PHONE, Rig};
 
 /// The form for a new unit of a class, filled in as far as its profile.
@@ -15,30 +16,11 @@ async fn to_the_profile(rig: &Rig, name: &str, class: &str) {
     rig.click("open-profile").await;
     rig.by_id("unit-screen").await;
     // The questions may be folded.
-    let open =
-        "const section = document.querySelector('[data-testid=\"paths\"]')?.closest('details');
-        if (section) { section.open = true; }";
-    rig.js(open, vec![]).await;
+    open(rig, "paths").await;
 }
 
 fn chosen(paths: &str) -> String {
     format!("document.querySelector('[data-testid=\"paths-{paths}\"]')?.checked === true")
-}
-
-async fn tick_all(rig: &Rig) {
-    loop {
-        let script = "const open = [...document.querySelectorAll('[data-testid^=\"precaution-\"]')].find((box) => !box.checked);
-            if (!open) { return false; }
-            open.click();
-            return open.dataset.testid;";
-        let ticked = rig.js(script, vec![]).await;
-        let Some(id) = ticked.as_str() else { return };
-        rig.wait_until(
-            &format!("{id} is ticked"),
-            &format!("(document.querySelector('[data-testid=\"{id}\"]')?.checked ?? true)"),
-        )
-        .await;
-    }
 }
 
 #[tokio::test]

@@ -1,7 +1,7 @@
 //! Yard checks: out, back in with a change, wear over the hours from a file, and what closed calls teach.
 
+use lowside::quantity::Typed;
 use lowside::quantity::{Measure, Unit as InUnit};
-use lowside::record::neutral::Typed;
 use lowside::record::{Book, Closing, Export, Visit};
 use lowside::unit::{MachineClass, Unit};
 use lowside::yard::{Field, LOOKS, Leg, YardSheet};

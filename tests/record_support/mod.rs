@@ -1,13 +1,14 @@
 //! Random records from a seed: every variant of everything that a record can hold, inside what is accepted.
 #![allow(dead_code)] // each test takes what it needs
 
+use lowside::quantity::Typed;
 use lowside::quantity::{Kind, Measure};
 use lowside::readings::instrument::{Instrument, usual_instruments};
 use lowside::readings::{
     Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Path, Place, Port, Reading,
     Rigging, Seen, SideNaming, Stroked,
 };
-use lowside::record::neutral::{AdjusterRow, Field, Typed};
+use lowside::record::neutral::{AdjusterRow, Field};
 use lowside::record::{
     Answer, Book, Closing, Earlier, NeutralSheet, PutBack, Settings, Visit, limits,
 };

@@ -6,9 +6,9 @@ use crate::app::parts::{Choice, Entry, MeasureField, Opt, Section, Select, TextF
 use crate::bench::stand::channel::MeasuringClass;
 use crate::bench::stand::sheet::{Head, Meter, Of, TextId};
 use crate::bench::stand::{BenchSheet, Channel, Subject};
+use crate::quantity::Typed;
 use crate::quantity::{Decimals, Measure, Unit, UnitPrefs, format_with_unit};
 use crate::readings::Path;
-use crate::tracking::Typed;
 use crate::unit::{FigureId, Unit as Machine};
 use std::rc::Rc;
 use yew::{Callback, Html, Properties, component, html};
@@ -27,12 +27,8 @@ pub struct HeadFormProps {
 }
 
 /// Keeps what was typed, or nothing where the field is empty.
-pub fn keep<K: Ord>(map: &mut std::collections::BTreeMap<K, Typed>, key: K, entry: Entry) {
-    let typed = Typed {
-        typed: entry.typed,
-        value: entry.value,
-    };
-    if typed.is_empty() {
+pub fn keep<K: Ord>(map: &mut std::collections::BTreeMap<K, Typed>, key: K, typed: Entry) {
+    if typed.is_blank() {
         map.remove(&key);
     } else {
         map.insert(key, typed);
@@ -234,7 +230,7 @@ fn instrument(props: &HeadFormProps, channel: Channel) -> Html {
                         value={meter.limit.value}
                         range={Some(percent.into_inner())}
                         mark={props.prefs.mark()}
-                        on_entry={edit(|meter, entry| meter.limit = Typed { typed: entry.typed, value: entry.value })}
+                        on_entry={edit(|meter, entry| meter.limit = entry)}
                     />
                 }
                 if meter.of == Of::Span {
@@ -246,7 +242,7 @@ fn instrument(props: &HeadFormProps, channel: Channel) -> Html {
                         value={meter.span.value}
                         range={Some((Measure::literal(0.001, unit), Measure::literal(10.0 * high, unit)))}
                         mark={props.prefs.mark()}
-                        on_entry={edit(|meter, entry| meter.span = Typed { typed: entry.typed, value: entry.value })}
+                        on_entry={edit(|meter, entry| meter.span = entry)}
                     />
                 }
                 <TextField id={format!("bench-meter-{code}-mark")} label="Mark or number" value={meter.mark.clone()} on_input={text(|meter, text| meter.mark = text)} />

@@ -6,8 +6,8 @@ use crate::app::parts::{Caution, Choice, Entry, Grade, MeasureField, Opt, Sectio
 use crate::bench::stand::BenchSheet;
 use crate::bench::stand::items::{Entry as Asked, Item, ItemId, of};
 use crate::bench::stand::sheet::ItemEntry;
+use crate::quantity::Typed;
 use crate::quantity::{Measure, Unit, UnitPrefs};
-use crate::tracking::Typed;
 use std::rc::Rc;
 use yew::{Callback, Html, Properties, component, html};
 
@@ -59,10 +59,7 @@ fn measure(
         let props = props.clone();
         Callback::from(move |entry: Entry| {
             change(&props, item.id, move |item| {
-                *of(item) = Typed {
-                    typed: entry.typed,
-                    value: entry.value,
-                };
+                *of(item) = entry;
             });
         })
     };

@@ -10,7 +10,6 @@ use crate::bench::stand::judge::{Decision, Measurand, TypedLimit};
 use crate::bench::stand::report::Judged;
 use crate::bench::stand::{BenchReport, BenchSheet, LayoutGap, Subject, paper};
 use crate::quantity::{DecimalMark, Measure, Unit, UnitPrefs};
-use crate::tracking::Typed;
 use std::collections::BTreeSet;
 use std::rc::Rc;
 use yew::{Callback, Html, Properties, component, html};
@@ -144,13 +143,9 @@ fn limits(props: &ResultsProps) -> Html {
             "low" => (limit.low, "Lowest allowed"),
             _ => (limit.high, "Highest allowed"),
         };
-        let on_entry = props.on_edit.reform(move |entry: Entry| -> Edit {
+        let on_entry = props.on_edit.reform(move |typed: Entry| -> Edit {
             Box::new(move |sheet| {
                 let limit = sheet.limits.entry(what).or_default();
-                let typed = Typed {
-                    typed: entry.typed,
-                    value: entry.value,
-                };
                 if side == "low" {
                     limit.low = typed;
                 } else {

@@ -7,9 +7,9 @@ use crate::app::platform::ids;
 use crate::bench::stand::point::Steadiness;
 use crate::bench::stand::sheet::ROWS;
 use crate::bench::stand::{BenchSheet, Channel, Row};
+use crate::quantity::Typed;
 use crate::quantity::{Measure, Unit, UnitPrefs, parse};
 use crate::record::IdOf;
-use crate::tracking::Typed;
 use std::rc::Rc;
 use yew::{AttrValue, Callback, Html, InputEvent, MouseEvent, Properties, TargetCast};
 use yew::{component, html};
@@ -51,7 +51,7 @@ struct CellProps {
 #[component]
 fn Cell(props: &CellProps) -> Html {
     let (channel, unit) = (props.channel, props.unit);
-    let wrong = !props.typed.is_empty() && props.typed.value.is_none();
+    let wrong = !props.typed.is_blank() && props.typed.value.is_none();
     let on_input = {
         let (row, on_edit) = (props.row.to_string(), props.on_edit.clone());
         Callback::from(move |event: InputEvent| {
@@ -132,7 +132,7 @@ pub fn PointTable(props: &PointTableProps) -> Html {
         .flat_map(|(at, row)| {
             let unit = &unit;
             row.cells.iter().filter_map(move |(channel, typed)| {
-                if typed.is_empty() || typed.value.is_some() {
+                if typed.is_blank() || typed.value.is_some() {
                     return None;
                 }
                 let why = read(*channel, unit(*channel), &typed.typed).err()?;

@@ -4,13 +4,14 @@ use yew::{AttrValue, Callback, Html, MouseEvent, Properties, component, html};
 
 use super::creep::{COUNT_S, tapped, ways};
 use super::edit::Edits;
-use super::figures::{span, typed};
+use super::figures::span;
 use crate::app::parts::{Choice, Entry, Lay, MeasureField, Opt, TapCounter};
 use crate::count::Counted;
 use crate::neutral::adjust::Sense;
+use crate::quantity::Typed;
 use crate::quantity::{Measure, Unit, UnitPrefs, edit_text};
 use crate::readings::Direction;
-use crate::record::neutral::{ADJUSTER_TURNS, AdjusterRow, SeriesBy, Typed};
+use crate::record::neutral::{ADJUSTER_TURNS, AdjusterRow, SeriesBy};
 
 /// Steps of an adjuster, turns: lettering on the keys, size.
 const STEPS: [(&str, f64); 4] = [
@@ -56,15 +57,15 @@ pub fn Adjuster(props: &AdjusterProps) -> Html {
     let text = |kept: &Typed| AttrValue::from(kept.typed.clone());
     let on_turns = {
         let props = props.clone();
-        Callback::from(move |entry: Entry| props.edit(|row| row.turns = typed(entry.clone())))
+        Callback::from(move |entry: Entry| props.edit(|row| row.turns = entry.clone()))
     };
     let on_shown = {
         let props = props.clone();
-        Callback::from(move |entry: Entry| props.edit(|row| row.shown = typed(entry.clone())))
+        Callback::from(move |entry: Entry| props.edit(|row| row.shown = entry.clone()))
     };
     let on_time = {
         let props = props.clone();
-        Callback::from(move |entry: Entry| props.edit(|row| row.time = typed(entry.clone())))
+        Callback::from(move |entry: Entry| props.edit(|row| row.time = entry.clone()))
     };
     let on_step = |step: f64| {
         let props = props.clone();

@@ -8,10 +8,11 @@ use super::edit::Edits;
 use super::figures::SheetField;
 use crate::app::parts::{Choice, Opt, TapCounter};
 use crate::count::Counted;
+use crate::quantity::Typed;
 use crate::quantity::{Measure, Unit, UnitPrefs, edit_text};
 use crate::readings::Direction;
 use crate::record::NeutralSheet;
-use crate::record::neutral::{Field, Typed};
+use crate::record::neutral::Field;
 
 /// Time over which creep is counted, s. Common practice.
 pub const COUNT_S: f64 = 60.0;

@@ -8,7 +8,7 @@ use super::edit::Edits;
 use crate::app::parts::{Entry, MeasureField};
 use crate::quantity::{Measure, Unit, UnitPrefs};
 use crate::record::NeutralSheet;
-use crate::record::neutral::{Field, Typed};
+use crate::record::neutral::Field;
 
 /// Properties of [`SheetField`].
 #[derive(Clone, PartialEq, Properties)]
@@ -46,14 +46,6 @@ pub fn span((low, high): (f64, f64), unit: Unit) -> Option<(Measure, Measure)> {
         .zip(Measure::new(high, unit).ok())
 }
 
-/// An entry as it is kept.
-pub fn typed(entry: Entry) -> Typed {
-    Typed {
-        typed: entry.typed,
-        value: entry.value,
-    }
-}
-
 /// The field.
 #[component]
 pub fn SheetField(props: &SheetFieldProps) -> Html {
@@ -63,7 +55,7 @@ pub fn SheetField(props: &SheetFieldProps) -> Html {
     let on_entry = {
         let edits = props.edits.clone();
         Callback::from(move |entry: Entry| {
-            edits.make(|sheet| sheet.set(field, typed(entry.clone())));
+            edits.make(|sheet| sheet.set(field, entry.clone()));
         })
     };
     html! {

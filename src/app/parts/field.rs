@@ -2,7 +2,6 @@
 //!
 //! What is typed is never reformatted while it is typed and never lost: the caller keeps [`Entry::typed`] beside the value.
 
-use serde::{Deserialize, Serialize};
 use yew::{AttrValue, Callback, Classes, Event, FocusEvent, Html, InputEvent, Properties};
 use yew::{TargetCast, classes, component, html, use_state};
 
@@ -11,14 +10,7 @@ use crate::quantity::{
 };
 
 /// What stands in the field.
-#[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
-#[serde(default)]
-pub struct Entry {
-    /// The text as typed, with the unit behind it where another one was picked than the field's own.
-    pub typed: String,
-    /// The value; none while the text is empty or cannot be taken.
-    pub value: Option<Measure>,
-}
+pub use crate::quantity::Typed as Entry;
 
 /// Properties of [`MeasureField`].
 #[derive(Clone, PartialEq, Properties)]

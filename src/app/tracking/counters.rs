@@ -9,9 +9,10 @@ use crate::app::parts::{Choice, Icon, Opt, Section, Shape};
 use crate::app::platform::ids;
 use crate::caution::Stands;
 use crate::count::Counted;
-use crate::quantity::{Measure, Unit};
+use crate::quantity::Typed;
+use crate::quantity::Unit;
 use crate::record::IdOf;
-use crate::tracking::{Field, LINES, Lever, Line, Load, Setting, Travel, Typed, What};
+use crate::tracking::{Field, LINES, Lever, Line, Load, Setting, Travel, What};
 use std::collections::BTreeMap;
 use yew::{Callback, Html, MouseEvent, Properties, component, html, use_state};
 
@@ -25,25 +26,22 @@ pub struct CountersProps {
     pub on_edit: Callback<Edit>,
 }
 
-fn typed(value: f64, unit: Unit, places: usize) -> Typed {
-    // The text is what was shown, so the value is read from it.
-    let text = format!("{value:.places$}");
-    Typed {
-        value: text
-            .parse()
-            .ok()
-            .and_then(|value: f64| Measure::new(value, unit).ok()),
-        typed: text,
-    }
-}
-
 /// The fields of a run from two counts.
 fn fields(left: Counted, right: Counted) -> BTreeMap<Field, Typed> {
     [
-        (Field::Left, typed(f64::from(left.turns), Unit::Turn, 0)),
-        (Field::Seconds, typed(left.seconds, Unit::Second, 1)),
-        (Field::Right, typed(f64::from(right.turns), Unit::Turn, 0)),
-        (Field::SecondsRight, typed(right.seconds, Unit::Second, 1)),
+        (
+            Field::Left,
+            Typed::shown(f64::from(left.turns), Unit::Turn, 0),
+        ),
+        (Field::Seconds, Typed::shown(left.seconds, Unit::Second, 1)),
+        (
+            Field::Right,
+            Typed::shown(f64::from(right.turns), Unit::Turn, 0),
+        ),
+        (
+            Field::SecondsRight,
+            Typed::shown(right.seconds, Unit::Second, 1),
+        ),
     ]
     .into()
 }

@@ -4,7 +4,7 @@ use super::screen::Edit;
 use super::words;
 use crate::app::parts::{Entry, MeasureField, Opt, Section, Select};
 use crate::quantity::{Measure, UnitPrefs};
-use crate::tracking::{Head, TrackingSheet, Typed, Undercarriage};
+use crate::tracking::{Head, TrackingSheet, Undercarriage};
 use yew::{Callback, Html, Properties, component, html};
 
 /// Properties of [`HeadForm`].
@@ -76,10 +76,9 @@ pub fn HeadForm(props: &HeadFormProps) -> Html {
                 let unit = if head == Head::Track { words::length(&props.prefs) } else { base };
                 let (label, hint) = words::head(head);
                 let typed = sheet.head.get(&head).cloned().unwrap_or_default();
-                let on_entry = props.on_edit.reform(move |entry: Entry| -> Edit {
+                let on_entry = props.on_edit.reform(move |typed: Entry| -> Edit {
                     Box::new(move |sheet| {
-                        let typed = Typed { typed: entry.typed, value: entry.value };
-                        if typed.is_empty() {
+                        if typed.is_blank() {
                             sheet.head.remove(&head);
                         } else {
                             sheet.head.insert(head, typed);

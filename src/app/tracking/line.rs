@@ -5,8 +5,7 @@ use super::words;
 use crate::app::parts::{Choice, Entry, MeasureField, Opt, Select};
 use crate::quantity::{Measure, Unit, UnitPrefs};
 use crate::tracking::{
-    Facing, Field, Gear, Hand, Lever, Line, LineProblem, Load, Setting, TrackingSheet, Travel,
-    Typed, What,
+    Facing, Field, Gear, Hand, Lever, Line, LineProblem, Load, Setting, TrackingSheet, Travel, What,
 };
 use yew::{Callback, Html, MouseEvent, Properties, component, html};
 
@@ -140,12 +139,8 @@ fn field(props: &LineCardProps, field: Field) -> Html {
         other => props.prefs.unit(other.kind()),
     };
     let typed = line.fields.get(&field).cloned().unwrap_or_default();
-    let on_entry = edit(props, move |line, entry: Entry| {
-        let typed = Typed {
-            typed: entry.typed,
-            value: entry.value,
-        };
-        if typed.is_empty() {
+    let on_entry = edit(props, move |line, typed: Entry| {
+        if typed.is_blank() {
             line.fields.remove(&field);
         } else {
             line.fields.insert(field, typed);

@@ -5,8 +5,8 @@ use yew::{Callback, Html, MouseEvent, Properties, component, html, use_state};
 use super::screen::Edit;
 use crate::app::parts::{Choice, Icon, Opt, Section, Shape, SoundSwitch, TapCounter};
 use crate::count::Counted;
-use crate::quantity::{Measure, Unit};
-use crate::record::neutral::Typed;
+use crate::quantity::Typed;
+use crate::quantity::Unit;
 use crate::yard::Field;
 
 /// Seconds of a count that ends by itself.
@@ -19,18 +19,6 @@ pub struct CountersProps {
     pub two: bool,
     /// Edits.
     pub on_edit: Callback<Edit>,
-}
-
-fn typed(value: f64, unit: Unit, places: usize) -> Typed {
-    // The text is what was shown, so the value is read from it.
-    let text = format!("{value:.places$}");
-    Typed {
-        value: text
-            .parse()
-            .ok()
-            .and_then(|value: f64| Measure::new(value, unit).ok()),
-        typed: text,
-    }
 }
 
 /// The counter.
@@ -77,8 +65,8 @@ pub fn Counters(props: &CountersProps) -> Html {
             };
             on_edit.emit(Box::new(move |visit| {
                 let sheet = visit.yard.get_or_insert_default();
-                sheet.set(turns, typed(f64::from(made.turns), Unit::Turn, 0));
-                sheet.set(time, typed(made.seconds, Unit::Second, 1));
+                sheet.set(turns, Typed::shown(f64::from(made.turns), Unit::Turn, 0));
+                sheet.set(time, Typed::shown(made.seconds, Unit::Second, 1));
             }));
             count.set(None);
             round.set(round.wrapping_add(1));

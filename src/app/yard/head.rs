@@ -9,7 +9,6 @@ use crate::quantity::{Measure, Unit, UnitPrefs};
 use crate::readings::Place;
 use crate::readings::instrument::{Instrument, InstrumentKind};
 use crate::record::Visit;
-use crate::record::neutral::Typed;
 use crate::yard::{ABOUT_COUPLINGS, ABOUT_LIMITS, Leg, YardSheet};
 
 /// Highest hour meter reading taken, h.
@@ -38,10 +37,7 @@ pub fn Head(props: &HeadProps) -> Html {
     });
     let on_hours = props.on_edit.reform(|entry: Entry| -> Edit {
         Box::new(move |visit| {
-            visit.hours = Typed {
-                typed: entry.typed,
-                value: entry.value,
-            };
+            visit.hours = entry;
         })
     });
     let on_place = props.on_edit.reform(|place: Place| -> Edit {

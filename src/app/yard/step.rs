@@ -9,7 +9,6 @@ use super::words;
 use crate::app::call::cautions;
 use crate::app::parts::{Choice, Entry, Lay, MeasureField, Opt, Section};
 use crate::quantity::UnitPrefs;
-use crate::record::neutral::Typed;
 use crate::unit::Unit;
 use crate::yard::{Field, Judged, Look, Step, YardSheet};
 
@@ -118,11 +117,7 @@ fn field(field: Field, props: &StepProps) -> Html {
     let typed = props.sheet.fields.get(&field).cloned().unwrap_or_default();
     let on_entry = props.on_edit.reform(move |entry: Entry| -> Edit {
         Box::new(move |visit| {
-            let typed = Typed {
-                typed: entry.typed,
-                value: entry.value,
-            };
-            visit.yard.get_or_insert_default().set(field, typed);
+            visit.yard.get_or_insert_default().set(field, entry);
         })
     });
     let code = field.code().replace('_', "-");

@@ -5,7 +5,7 @@
 //! and a wrong fail have a chance of at most 2.5 %.
 
 use super::uncertain::Uncertain;
-use crate::tracking::Typed;
+use crate::quantity::Typed;
 use serde::{Deserialize, Serialize};
 
 /// What a run is judged by.

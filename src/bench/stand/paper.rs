@@ -7,6 +7,7 @@ use super::report::{BenchReport, Judged};
 use super::sheet::{BenchSheet, Head, TextId};
 use super::uncertain::Uncertain;
 use crate::quantity::{DecimalMark, Decimals, Measure, Unit, UnitPrefs, format_with_unit};
+use crate::report::csv;
 use core::fmt::Write;
 
 const CAUTION: &str = "The unit’s manual, local rules and licensed practice come first. Limits marked common practice are no substitute for the maker’s.";
@@ -166,18 +167,12 @@ fn judged_words(judged: &Judged, prefs: &UnitPrefs) -> String {
     )
 }
 
-/// A cell that a spreadsheet takes as text and never as a formula (RFC 4180; a leading sign of a formula is defused).
+/// A cell that a spreadsheet takes as a figure or as text, and never as a formula.
 fn cell(text: &str) -> String {
-    let guarded =
-        if text.starts_with(['=', '+', '-', '@', '\t', '\r']) && text.parse::<f64>().is_err() {
-            format!("'{text}")
-        } else {
-            text.to_owned()
-        };
-    if guarded.contains(['"', ',', '\n', '\r']) {
-        format!("\"{}\"", guarded.replace('"', "\"\""))
+    if text.parse::<f64>().is_ok() {
+        csv::quoted(text.to_owned())
     } else {
-        guarded
+        csv::quoted(csv::text(text))
     }
 }
 

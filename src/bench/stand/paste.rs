@@ -3,8 +3,8 @@
 
 use super::channel::{Channel, Subject};
 use super::sheet::{ROWS, Row};
+use crate::quantity::Typed;
 use crate::quantity::{Measure, Unit, parse};
-use crate::tracking::Typed;
 use thiserror::Error;
 
 /// Largest text that is looked at, in bytes.

@@ -4,9 +4,9 @@ use super::channel::{Channel, Gauged, MeasuringClass, Subject};
 use super::items::ItemId;
 use super::layout::Layout;
 use crate::fluid::{IsoGrade, Oil, OilProperties, OilViscosity, USUAL_INDEX};
+use crate::quantity::Typed;
 use crate::quantity::{Measure, Unit};
 use crate::readings::Path;
-use crate::tracking::Typed;
 use serde::{Deserialize, Serialize};
 use std::collections::BTreeMap;
 
@@ -332,7 +332,7 @@ impl BenchSheet {
         let holds = |channel: &Channel| {
             self.rows
                 .iter()
-                .any(|row| row.cells.get(channel).is_some_and(|cell| !cell.is_empty()))
+                .any(|row| row.cells.get(channel).is_some_and(|cell| !cell.is_blank()))
         };
         Channel::ALL
             .into_iter()

@@ -5,12 +5,12 @@
 use super::world::{Machine, Notes, Sloppiness};
 use lowside::circuit::Param;
 use lowside::math;
+use lowside::quantity::Typed;
 use lowside::quantity::{Kind, Measure, Unit as InUnit};
 use lowside::readings::{
     Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Path, Place, Port,
 };
 use lowside::record::Visit;
-use lowside::record::neutral::Typed;
 use lowside::unit::{FigureId, Paths};
 use lowside::windows::Normals;
 use lowside::yard::trend::{INTERVAL_HOURS, trend};
