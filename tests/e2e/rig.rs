@@ -397,8 +397,14 @@ impl Rig {
                 let name = path.file_name().unwrap_or_default().to_string_lossy();
                 name.starts_with(prefix) && !name.ends_with(".crdownload")
             };
-            if let Some(path) = paths.find(complete) {
-                return fs::read_to_string(path).expect("readable text");
+            // The browser first puts an empty file under the final name, and moves the content over it when it is all there.
+            let content = |path: PathBuf| fs::read_to_string(path).expect("readable text");
+            if let Some(text) = paths
+                .find(complete)
+                .map(content)
+                .filter(|text| !text.is_empty())
+            {
+                return text;
             }
             if deadline.passed() {
                 self.give_up(&format!("a downloaded file {prefix}…")).await;
