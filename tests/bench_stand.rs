@@ -673,3 +673,233 @@ fn the_sheet_in_words_says_what_it_rests_on() {
     }
     assert!(!text.contains("NaN") && !text.contains("inf"), "{text}");
 }
+
+/// A run in which a point is worth `names` readings of that name.
+fn repeated_rows(rows: &[Row], names: &[&str]) -> Vec<Row> {
+    let mut all = Vec::new();
+    for (row, name) in rows.iter().zip(names) {
+        for _ in 0..3 {
+            all.push(Row {
+                name: (*name).to_owned(),
+                ..row.clone()
+            });
+        }
+    }
+    all
+}
+
+fn set(row: &mut Row, channel: Channel, value: f64) {
+    let (unit, ..) = channel.asks();
+    row.cells.insert(channel, typed(value, unit));
+}
+
+fn rated(mut sheet: BenchSheet) -> BenchSheet {
+    let speed = typed(2200.0, Unit::RevolutionPerMinute);
+    sheet.head.insert(Head::RatedSpeed, speed);
+    let pressure = typed(220.0, Unit::Bar);
+    sheet.head.insert(Head::RatedPressure, pressure);
+    with_plate(sheet, 75.0)
+}
+
+const NAMES: [&str; 12] = [
+    "1", "2", "3", "4", "5", "6", "7", "8", "9", "10", "11", "12",
+];
+
+/// A point that moved carries no verdict, no displacement and no fit: what stands is what the others say.
+#[test]
+fn a_point_that_moved_is_left_out_of_everything_and_told() {
+    let rows = Machine::pump().table(&Errors::none());
+    let still = report(
+        &rated(sheet(Subject::Pump, repeated_rows(&rows, &NAMES))),
+        None,
+    );
+    assert!(still.left_out.is_empty());
+    let judged = |report: &lowside::bench::stand::BenchReport, words: &str| {
+        let found = report.judged.iter().find(|j| j.words.contains(words));
+        found.cloned().expect("judged")
+    };
+    let before = judged(&still, "Volumetric efficiency");
+    assert_eq!(before.decision, Decision::Pass);
+
+    // The rated point's flow swings by 4 %, and one reading is far off.
+    let mut moving = rated(sheet(Subject::Pump, repeated_rows(&rows, &NAMES)));
+    for (row, share) in moving.rows.iter_mut().skip(30).zip([1.0, 1.04, 0.8]) {
+        let flow = row.value(Channel::Flow).expect("given") * share;
+        set(row, Channel::Flow, flow);
+    }
+    let moved = report(&moving, None);
+    assert_eq!(moved.left_out.len(), 1);
+    let verdict = judged(&moved, "Volumetric efficiency");
+    assert_eq!(verdict.decision, Decision::CannotTell);
+    assert!(
+        verdict.figure.is_none() && verdict.why.contains("point 11 was not steady (flow)"),
+        "{verdict:?}"
+    );
+    assert_ne!(moved.verdict(), Some(Decision::Pass));
+    // Neither displacement nor fit has taken notice of it: as if its rows were left out.
+    let mut without = moving.clone();
+    for row in without.rows.iter_mut().skip(30).take(3) {
+        row.is_left_out = true;
+    }
+    let without = report(&without, None);
+    assert_eq!(moved.evaluated.derived, without.evaluated.derived);
+    let values = |report: &lowside::bench::stand::BenchReport| {
+        let flow = report.losses.flow.as_ref().expect("fitted");
+        let torque = report.losses.torque.as_ref().expect("fitted");
+        (flow.x.clone(), torque.x.clone(), flow.points.len())
+    };
+    assert_eq!(values(&moved), values(&without));
+    assert_eq!(values(&moved).2, 11);
+    let prefs = lowside::quantity::UnitPrefs::metric();
+    let text = lowside::bench::stand::paper::text(&moving, &moved, "T-14", &prefs);
+    for part in [
+        "Point 11 was not steady (flow): left out of verdict, displacement and fit",
+        "Point 11 (left out):",
+        "cannot tell",
+    ] {
+        assert!(text.contains(part), "{part:?} is not in\n{text}");
+    }
+}
+
+/// More out than in: the torque meter lies. Flow is judged as before, what rests on torque is not, and nobody is told a best point.
+#[test]
+fn an_impossible_point_stops_the_verdict_on_what_its_instrument_read() {
+    let rows = Machine::pump().table(&Errors::none());
+    let mut lying = rated(sheet(Subject::Pump, rows.clone()));
+    let torque = lying.rows[6].value(Channel::Torque).expect("given");
+    set(&mut lying.rows[6], Channel::Torque, 0.8 * torque);
+    let found = report(&lying, None);
+    assert!(found.is_impossible());
+    assert!(found.left_out.iter().all(|one| one.at == 6));
+    let judged = |words: &str| {
+        let judged = found.judged.iter().find(|j| j.words.contains(words));
+        judged.expect("judged").clone()
+    };
+    let overall = judged("Best overall efficiency");
+    assert_eq!(overall.decision, Decision::CannotTell);
+    assert!(overall.why.contains("point 7 is impossible"), "{overall:?}");
+    assert!(overall.figure.is_none());
+    assert_eq!(judged("Volumetric").decision, Decision::Pass);
+    // The flow of that point still counts; its torque does not.
+    let fitted = |fit: &Result<lowside::bench::stand::fit::Fit, NoFit>| {
+        fit.as_ref().expect("fitted").points.len()
+    };
+    assert_eq!(fitted(&found.losses.flow), 12);
+    assert_eq!(fitted(&found.losses.torque), 11);
+    // With its row left out the rest is judged.
+    lying.rows[6].is_left_out = true;
+    let mended = report(&lying, None);
+    assert!(!mended.is_impossible());
+    assert!(mended.judged.iter().all(|j| j.why.is_empty()));
+    assert_eq!(mended.verdict(), Some(Decision::Pass));
+}
+
+/// One flow far too high: that point is named and no other, though it drags the derived displacement along.
+#[test]
+fn a_flow_over_what_the_machine_displaces_is_named_alone_and_feeds_no_profile() {
+    let rows = Machine::pump().table(&Errors::none());
+    for at in [0, 5, 11] {
+        let mut lying = rated(sheet(Subject::Pump, rows.clone()));
+        let flow = lying.rows[at].value(Channel::Flow).expect("given");
+        set(&mut lying.rows[at], Channel::Flow, 1.3 * flow);
+        let found = report(&lying, None);
+        let named: Vec<usize> = found.left_out.iter().map(|one| one.at).collect();
+        assert_eq!(named, [at], "{:?}", found.left_out);
+        let derived = found.evaluated.derived.expect("the others carry it");
+        close("displacement", derived.value, 75.0, 0.005);
+        let proposed: Vec<FigureId> = found.proposals.iter().map(|p| p.id).collect();
+        assert!(
+            !proposed.contains(&FigureId::PumpDisplacement),
+            "{proposed:?}"
+        );
+        assert!(!proposed.contains(&FigureId::PumpSlip), "{proposed:?}");
+        assert!(
+            proposed.contains(&FigureId::PumpCaseLeakage),
+            "{proposed:?}"
+        );
+    }
+}
+
+/// Lines taken for each other, and more charge into the loop than came in: both are told as what they are.
+#[test]
+fn reversed_lines_and_a_leakage_below_zero_are_told() {
+    let rows = Machine::pump().table(&Errors::none());
+    let mut swapped = sheet(Subject::Pump, rows.clone());
+    set(&mut swapped.rows[3], Channel::High, 20.0);
+    set(&mut swapped.rows[3], Channel::Low, 320.0);
+    let found = report(&swapped, None);
+    let line = &lowside::bench::stand::flaw::told(&found.left_out, Subject::Pump)[0];
+    assert!(line.contains("less pressure in the high line"), "{line}");
+    let mut fed = sheet(Subject::Pump, rows);
+    fed.layout.charge = Some(Charge::Outside);
+    fed.layout.relief = Some(ReliefDrain::Case);
+    for (at, row) in fed.rows.iter_mut().enumerate() {
+        let case = row.value(Channel::Case).expect("given");
+        // Metered right everywhere but at the last point.
+        set(row, Channel::ChargeFlow, if at == 11 { 30.0 } else { 15.0 });
+        set(row, Channel::MakeUp, 10.0);
+        set(row, Channel::Case, case + 5.0);
+    }
+    let found = report(&fed, None);
+    assert_eq!(found.left_out.len(), 1);
+    let line = &lowside::bench::stand::flaw::told(&found.left_out, Subject::Pump)[0];
+    assert!(
+        line.contains("case leakage after correction below zero"),
+        "{line}"
+    );
+    let proposed: Vec<FigureId> = found.proposals.iter().map(|p| p.id).collect();
+    assert!(
+        !proposed.contains(&FigureId::PumpCaseLeakage),
+        "{proposed:?}"
+    );
+}
+
+/// Random tables: whatever is typed, the sheet is computed, no figure is NaN, and a pass never rests on a point that is left out.
+mod random_tables {
+    use super::*;
+    use proptest::prelude::*;
+
+    proptest! {
+        #![proptest_config(ProptestConfig::with_cases(48))]
+        #[test]
+        fn are_computed_and_never_pass_on_what_is_left_out(
+            cells in proptest::collection::vec(
+                (0.0..4000.0_f64, -1.0..50.0_f64, -1.0..500.0_f64, 0.0..400.0_f64, 0.0..50.0_f64, 0.0..900.0_f64),
+                1..9,
+            ),
+            motor in any::<bool>(),
+            low_line in any::<bool>(),
+        ) {
+            let rows: Vec<Row> = cells
+                .iter()
+                .map(|(n, low, high, flow, case, torque)| Row::of("", &[
+                    (Channel::Speed, *n),
+                    (Channel::Low, *low),
+                    (Channel::High, *high),
+                    (Channel::Flow, *flow),
+                    (Channel::Case, *case),
+                    (Channel::Torque, *torque),
+                    (Channel::Inlet, 50.0),
+                ]))
+                .collect();
+            let subject = if motor { Subject::Motor } else { Subject::Pump };
+            let mut sheet = rated(sheet(subject, rows));
+            if low_line {
+                sheet.layout.meter = Some(Meter::Low);
+            }
+            let found = report(&sheet, None);
+            prop_assert_eq!(found.evaluated.points.len(), found.points.len());
+            for judged in &found.judged {
+                if let Some(figure) = judged.figure {
+                    prop_assert!(figure.value.is_finite() && figure.standard.is_finite());
+                    prop_assert!(judged.why.is_empty());
+                } else {
+                    prop_assert_eq!(judged.decision, Decision::CannotTell);
+                    prop_assert!(!judged.why.is_empty());
+                }
+            }
+            let text = lowside::bench::stand::paper::text(&sheet, &found, "T-1", &lowside::quantity::UnitPrefs::us());
+            prop_assert!(!text.contains("NaN") && !text.contains("inf "), "{}", text);
+        }
+    }
+}

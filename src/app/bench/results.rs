@@ -6,6 +6,7 @@ use crate::app::parts::{Caution, Entry, Grade, MeasureField, Section, TextField}
 use crate::bench::stand::analysis::Quantity;
 use crate::bench::stand::balance::OPEN;
 use crate::bench::stand::fit::{Fit, LossFit, NoFit, TurbulentShare};
+use crate::bench::stand::flaw::told;
 use crate::bench::stand::judge::{Decision, Measurand, TypedLimit};
 use crate::bench::stand::report::Judged;
 use crate::bench::stand::{BenchReport, BenchSheet, LayoutGap, Subject, paper};
@@ -56,6 +57,9 @@ fn judged(props: &ResultsProps, verdict: Option<Decision>) -> Html {
     let words = match verdict {
         None => "Nothing was judged: no figure with a limit is on the sheet yet.",
         Some(Decision::Fail) => "Fails: a figure lies outside its limit by more than its doubt.",
+        Some(Decision::CannotTell) if report.judged.iter().any(|judged| !judged.why.is_empty()) => {
+            "Cannot tell: something on the sheet decides nothing; the reason stands beside it."
+        }
         Some(Decision::CannotTell) => {
             "Cannot tell: the doubt of a figure reaches over its limit. Better instruments or more readings decide it."
         }
@@ -68,6 +72,12 @@ fn judged(props: &ResultsProps, verdict: Option<Decision>) -> Html {
                 { for report.judged.iter().map(|judged| judged_row(judged, &props.prefs)) }
             </ul>
             <p class="soft">{ "Guard band: the expanded uncertainty, coverage factor 2 (JCGM 106). Wrong passes and wrong fails have a chance of 2.5 % at most." }</p>
+        }
+        if !report.left_out.is_empty() {
+            <h3>{ "Points left out" }</h3>
+            <ul class="bench-missing" data-testid="bench-left-out">
+                { for told(&report.left_out, props.sheet.subject).into_iter().map(|line| html! { <li>{ line }</li> }) }
+            </ul>
         }
         <h3>{ "Not tested" }</h3>
         if report.not_tested.is_empty() {
@@ -118,6 +128,7 @@ fn judged_row(judged: &Judged, prefs: &UnitPrefs) -> Html {
             <strong class="bench-decision">{ judged.decision.words() }</strong>
             <span>{ &judged.words }{ value.map(|value| format!(": {value}")) }</span>
             if let Some(limits) = limits { <span class="soft">{ limits }</span> }
+            if !judged.why.is_empty() { <span>{ format!("Because {}.", judged.why) }</span> }
         </li>
     }
 }
@@ -282,7 +293,10 @@ fn table(props: &ResultsProps) -> Html {
                 <tbody>
                     { for report.points.iter().enumerate().map(|(at, point)| html! {
                         <tr key={at}>
-                            <th scope="row">{ &point.name }</th>
+                            <th scope="row">
+                                { &point.name }
+                                if !point.left_out.is_empty() { <span class="soft">{ " left out" }</span> }
+                            </th>
                             { for columns.iter().map(|(quantity, _, unit)| {
                                 let figure = report.evaluated.points[at].get(quantity);
                                 let text = figure.map(|figure| match unit {
@@ -331,7 +345,6 @@ fn balance(report: &BenchReport, at: usize, mark: DecimalMark) -> String {
 
 fn remarks(props: &ResultsProps) -> Html {
     let report = &*props.told.0;
-    let impossible = report.impossible();
     let open = report
         .balances
         .iter()
@@ -360,7 +373,7 @@ fn remarks(props: &ResultsProps) -> Html {
         parts.join(", ")
     });
     html! { <>
-        if !impossible.is_empty() || open {
+        if report.is_impossible() || open {
             <Caution grade={Grade::Caution} title="An instrument may lie">
                 <p>{ "More comes out than goes in, or heat and power do not balance within 10 % (common practice). Look at the torque zero, the flow \
                     meter’s viscosity, the line that is metered, and the thermometers." }</p>

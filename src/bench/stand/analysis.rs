@@ -2,6 +2,7 @@
 //! [`super::uncertain`] can run it again with each instrument moved.
 
 use super::channel::{Channel, Subject};
+use super::flaw::Part;
 use super::layout::{Layout, LayoutGap};
 use super::least_squares::{Observation, solve};
 use super::point::{Means, Point};
@@ -297,6 +298,7 @@ fn derive(points: &[Point], setup: &Setup) -> Option<Derived> {
     }
     let mut seen: Vec<(f64, f64, f64, f64)> = points
         .iter()
+        .filter(|point| point.counts_for(&[Part::Flow]))
         .filter_map(|point| {
             let (speed, difference) = state(&point.means).ok()?;
             let flow = setup.layout.high_flow(setup.subject, &point.means).ok()?;

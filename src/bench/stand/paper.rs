@@ -2,6 +2,7 @@
 
 use super::analysis::Quantity;
 use super::channel::Channel;
+use super::flaw::told;
 use super::items::{Entry, of};
 use super::report::{BenchReport, Judged};
 use super::sheet::{BenchSheet, Head, TextId};
@@ -76,6 +77,9 @@ pub fn text(sheet: &BenchSheet, report: &BenchReport, unit: &str, prefs: &UnitPr
             judged.decision.words()
         ));
     }
+    for words in told(&report.left_out, sheet.subject) {
+        line(format!("- {words}"));
+    }
     line(
         "Decision rule: guard band of the expanded uncertainty, coverage factor 2 (JCGM 106)."
             .to_owned(),
@@ -105,7 +109,12 @@ pub fn text(sheet: &BenchSheet, report: &BenchReport, unit: &str, prefs: &UnitPr
         .flatten()
         .collect();
         if !parts.is_empty() {
-            line(format!("Point {}: {}", point.name, parts.join(", ")));
+            let out = if point.left_out.is_empty() {
+                ""
+            } else {
+                " (left out)"
+            };
+            line(format!("Point {}{out}: {}", point.name, parts.join(", ")));
         }
     }
     if !gaps.is_empty() {
@@ -159,8 +168,13 @@ fn judged_words(judged: &Judged, prefs: &UnitPrefs) -> String {
         };
         format!(" (allowed {span}; {})", limits.from)
     });
+    let why = if judged.why.is_empty() {
+        String::new()
+    } else {
+        format!(" [{}]", judged.why)
+    };
     format!(
-        "{}{}{}",
+        "{}{}{}{why}",
         judged.words,
         figure.unwrap_or_default(),
         limits.unwrap_or_default()

@@ -5,6 +5,7 @@ use super::analysis::{Quantity, Setup, theoretical_flow};
 use super::balance::{Balance, balance};
 use super::channel::{Channel, Subject};
 use super::fit::{Loss, LossFit, losses};
+use super::flaw::{LeftOut, Part, lies, sorted};
 use super::items::{Entry, Item, ItemId, Practice, of};
 use super::judge::{Decision, Limits, Measurand, decide, usual};
 use super::point::{Point, points, repeated};
@@ -34,6 +35,22 @@ pub struct Judged {
     pub limits: Option<Limits>,
     /// Decision.
     pub decision: Decision,
+    /// Why it cannot be told, where no doubt about a figure says so; empty otherwise.
+    pub why: String,
+}
+
+impl Judged {
+    /// Something that nothing on the sheet can decide, and why.
+    fn open(words: String, unit: Unit, limits: Limits, why: String) -> Judged {
+        Judged {
+            words,
+            unit,
+            figure: None,
+            limits: Some(limits),
+            decision: Decision::CannotTell,
+            why,
+        }
+    }
 }
 
 /// What a sheet says.
@@ -41,6 +58,8 @@ pub struct Judged {
 pub struct BenchReport {
     /// Points.
     pub points: Vec<Point>,
+    /// What of them is left out of displacement, fits and verdict.
+    pub left_out: Vec<LeftOut>,
     /// Everything computed of them.
     pub evaluated: Evaluated,
     /// The loss fit.
@@ -102,9 +121,15 @@ pub fn setup(sheet: &BenchSheet, machine: Option<&Machine>) -> (Setup, f64) {
 #[must_use]
 pub fn report(sheet: &BenchSheet, machine: Option<&Machine>) -> BenchReport {
     let (setup, viscosity) = setup(sheet, machine);
-    let points = points(&sheet.rows);
+    let mut points = points(&sheet.rows);
     let gauged = |channel| sheet.gauged(channel);
-    let evaluated = evaluated(&points, &setup, gauged, viscosity);
+    let (evaluated, left_out) = sorted(
+        &mut points,
+        setup.subject,
+        &setup.layout,
+        |point| doubt_of_difference(sheet, point),
+        |points| evaluated(points, &setup, gauged, viscosity),
+    );
     let losses = losses(
         &points,
         &setup,
@@ -118,7 +143,13 @@ pub fn report(sheet: &BenchSheet, machine: Option<&Machine>) -> BenchReport {
         .zip(&evaluated.analysis.points)
         .map(|(point, result)| balance(&point.means, result, &setup, lost))
         .collect();
-    let mut judged = run_judged(sheet, &setup, &points, &evaluated);
+    let mut judged = run_judged(&Run {
+        sheet,
+        setup: &setup,
+        points: &points,
+        evaluated: &evaluated,
+        left_out: &left_out,
+    });
     let mut not_tested = Vec::new();
     for item in of(sheet.subject) {
         match item_judged(sheet, machine, &setup, item) {
@@ -139,8 +170,9 @@ pub fn report(sheet: &BenchSheet, machine: Option<&Machine>) -> BenchReport {
     }
     BenchReport {
         repeated: repeated(&points),
-        proposals: proposals(sheet, &evaluated, &losses),
+        proposals: proposals(sheet, &evaluated, &losses, &left_out),
         points,
+        left_out,
         evaluated,
         losses,
         balances,
@@ -164,27 +196,27 @@ impl BenchReport {
         }
     }
 
-    /// Efficiencies over one at points: an instrument lies.
+    /// True where a point shows what no machine can do: an instrument lies.
     #[must_use]
-    pub fn impossible(&self) -> Vec<(usize, Quantity)> {
-        let ratios = [
-            Quantity::Volumetric,
-            Quantity::HydroMechanical,
-            Quantity::Overall,
-        ];
-        let over = |figure: &Uncertain| figure.value - figure.expanded() > 1.0;
-        self.evaluated
-            .points
-            .iter()
-            .enumerate()
-            .flat_map(|(at, figures)| {
-                ratios
-                    .iter()
-                    .filter(move |q| figures.get(q).is_some_and(over))
-                    .map(move |q| (at, *q))
-            })
-            .collect()
+    pub fn is_impossible(&self) -> bool {
+        self.left_out.iter().any(|one| one.flaw.is_impossible())
     }
+
+    /// Points of which something counts.
+    #[must_use]
+    pub fn counted(&self) -> usize {
+        let counts = |point: &&Point| point.left_out.len() < Part::ALL.len();
+        self.points.iter().filter(counts).count()
+    }
+}
+
+/// Expanded uncertainty of a point's pressure difference, bar.
+fn doubt_of_difference(sheet: &BenchSheet, point: &Point) -> f64 {
+    let of = |channel: Channel| {
+        let value = point.means.get(channel).unwrap_or(0.0);
+        sheet.gauged(channel).standard(channel, value)
+    };
+    gum::expanded(gum::combined(&[of(Channel::High), of(Channel::Low)]), 2.0)
 }
 
 /// Limits of the run: those typed, else those of common practice.
@@ -208,46 +240,116 @@ fn limits(sheet: &BenchSheet, what: Measurand) -> Limits {
     }
 }
 
-fn run_judged(
-    sheet: &BenchSheet,
-    setup: &Setup,
-    points: &[Point],
-    evaluated: &Evaluated,
-) -> Vec<Judged> {
+/// What a run is judged by.
+struct Run<'a> {
+    sheet: &'a BenchSheet,
+    setup: &'a Setup,
+    points: &'a [Point],
+    evaluated: &'a Evaluated,
+    left_out: &'a [LeftOut],
+}
+
+/// What came of a figure that is judged: the figure, or why there is none to judge.
+type Found = Result<Uncertain, String>;
+
+impl Run<'_> {
+    /// A figure of a point, where its part counts and no instrument of its kind lies. None where the sheet does not carry it.
+    fn figure(&self, at: usize, quantity: Quantity) -> Option<Found> {
+        let figure = self.evaluated.points.get(at)?.get(&quantity).copied();
+        let parts = Part::of(quantity);
+        if let Some(liar) = lies(self.left_out, parts) {
+            // Also where the figure itself looks right: the same instrument read it.
+            return figure.map(|_| Err(self.lie(liar)));
+        }
+        let own = self
+            .left_out
+            .iter()
+            .find(|one| one.at == at && parts.iter().any(|part| one.parts.contains(part)));
+        match own {
+            Some(one) => figure.map(|_| Err(one.words(self.setup.subject))),
+            None => figure.map(Ok),
+        }
+    }
+
+    fn lie(&self, liar: &LeftOut) -> String {
+        format!(
+            "{}; the same instruments read the other points, so correct its row or leave it out",
+            liar.words(self.setup.subject)
+        )
+    }
+
+    /// The best point by overall efficiency, with its name, of those that count.
+    fn best(&self) -> Option<(String, Found)> {
+        let found = (0..self.points.len())
+            .filter_map(|at| Some((at, self.figure(at, Quantity::Overall)?)))
+            .max_by(|a, b| {
+                let rank = |found: &Found| found.as_ref().map_or(f64::MIN, |f| f.value);
+                rank(&a.1).total_cmp(&rank(&b.1))
+            })?;
+        let name = match &found.1 {
+            Ok(_) => format!(", at point {}", self.points[found.0].name),
+            Err(_) => String::new(),
+        };
+        Some((name, found.1))
+    }
+
+    /// Derived displacement over that of the plate.
+    fn displacement(&self) -> Option<Found> {
+        let plate = self.setup.plate?;
+        let flow = &[Part::Flow];
+        let out = |one: &&LeftOut| one.parts.contains(&Part::Flow);
+        if let Some(derived) = self.evaluated.derived {
+            return Some(match lies(self.left_out, flow) {
+                Some(liar) => Err(self.lie(liar)),
+                None => Ok(Uncertain {
+                    value: derived.value / plate,
+                    standard: derived.standard / plate,
+                }),
+            });
+        }
+        // Only where leaving points out is why there is none.
+        let one = self.left_out.iter().find(out)?;
+        (self.setup.subject != Subject::Transmission).then(|| Err(one.words(self.setup.subject)))
+    }
+}
+
+fn run_judged(run: &Run) -> Vec<Judged> {
+    let Run {
+        sheet,
+        points,
+        evaluated,
+        ..
+    } = run;
     let mut judged = Vec::new();
-    let mut judge = |what: Measurand, words: String, figure: Option<Uncertain>| {
+    let mut judge = |what: Measurand, words: String, found: Option<Found>| {
         let limits = limits(sheet, what);
-        let decision = figure.and_then(|figure| decide(figure, &limits));
-        judged.extend(decision.map(|decision| Judged {
-            words,
-            unit: Unit::Percent,
-            figure,
-            limits: Some(limits),
-            decision,
-        }));
+        let unit = Unit::Percent;
+        judged.extend(match found {
+            None => None,
+            Some(Err(why)) => Some(Judged::open(words, unit, limits, why)),
+            Some(Ok(figure)) => decide(figure, &limits).map(|decision| Judged {
+                words,
+                unit,
+                figure: Some(figure),
+                limits: Some(limits),
+                decision,
+                why: String::new(),
+            }),
+        });
     };
     let rated = rated_point(sheet, points);
-    let at_rated = |quantity| {
-        let at = rated?;
-        evaluated.points.get(at)?.get(&quantity).copied()
-    };
+    let at_rated = |quantity| run.figure(rated?, quantity);
     let name = rated.map_or(String::new(), |at| points[at].name.clone());
     judge(
         Measurand::Volumetric,
         format!("Volumetric efficiency at point {name}, nearest to the rated one"),
         at_rated(Quantity::Volumetric),
     );
-    let best = evaluated
-        .points
-        .iter()
-        .enumerate()
-        .filter_map(|(at, figures)| Some((at, *figures.get(&Quantity::Overall)?)))
-        .max_by(|a, b| a.1.value.total_cmp(&b.1.value));
-    let best_name = best.map_or(String::new(), |(at, _)| points[at].name.clone());
+    let (best_name, best) = run.best().unzip();
     judge(
         Measurand::Overall,
-        format!("Best overall efficiency, at point {best_name}"),
-        best.map(|(_, figure)| figure),
+        format!("Best overall efficiency{}", best_name.unwrap_or_default()),
+        best,
     );
     let flow = sheet
         .head(Head::RatedSpeed)
@@ -255,31 +357,26 @@ fn run_judged(
         .map(|(speed, volume)| theoretical_flow(volume, speed));
     let leakage = at_rated(Quantity::CaseLeakage)
         .zip(flow)
-        .map(|(leakage, flow)| Uncertain {
-            value: leakage.value / flow,
-            standard: leakage.standard / flow,
+        .map(|(leakage, flow)| {
+            leakage.map(|leakage| Uncertain {
+                value: leakage.value / flow,
+                standard: leakage.standard / flow,
+            })
         });
     judge(
         Measurand::CaseLeakage,
         format!("Case leakage at point {name}, of the rated flow"),
         leakage,
     );
-    let displacement = evaluated
-        .derived
-        .zip(setup.plate)
-        .map(|(derived, plate)| Uncertain {
-            value: derived.value / plate,
-            standard: derived.standard / plate,
-        });
     judge(
         Measurand::Displacement,
         "Derived displacement over that of the plate".to_owned(),
-        displacement,
+        run.displacement(),
     );
     judged
 }
 
-/// The point that stands for the rated one.
+/// The point that stands for the rated one; one that counts before one that is left out.
 fn rated_point(sheet: &BenchSheet, points: &[Point]) -> Option<usize> {
     let speed = sheet.head(Head::RatedSpeed)?;
     let pressure = sheet.head(Head::RatedPressure)?;
@@ -289,7 +386,8 @@ fn rated_point(sheet: &BenchSheet, points: &[Point]) -> Option<usize> {
         .filter_map(|(at, point)| {
             let n = (point.means.get(Channel::Speed)? / speed - 1.0).abs();
             let dp = (point.means.difference()? / pressure - 1.0).abs();
-            (n <= NEAR_RATED && dp <= NEAR_RATED).then_some((at, n + dp))
+            let out = if point.left_out.is_empty() { 0.0 } else { 1.0 };
+            (n <= NEAR_RATED && dp <= NEAR_RATED).then_some((at, n + dp + out))
         })
         .min_by(|a, b| a.1.total_cmp(&b.1))
         .map(|(at, _)| at)
@@ -334,6 +432,7 @@ fn item_judged(
             } else {
                 Decision::Fail
             },
+            why: String::new(),
         }),
         Entry::Figure(unit) => {
             let value = entry.found.value?.base_of(unit.kind())?;
@@ -358,6 +457,7 @@ fn item_judged(
                 figure: Some(figure),
                 decision: decide(figure, &limits)?,
                 limits: Some(limits),
+                why: String::new(),
             })
         }
     }
@@ -422,6 +522,7 @@ fn relations(sheet: &BenchSheet) -> Vec<Judged> {
             figure: Some(figure),
             limits: Some(limits),
             decision,
+            why: String::new(),
         }));
     };
     // Two readings of one gauge: its own error falls out of their difference, the needle's stays. A quarter of the doubt of one.
@@ -468,7 +569,14 @@ fn relations(sheet: &BenchSheet) -> Vec<Judged> {
     judged
 }
 
-fn proposals(sheet: &BenchSheet, evaluated: &Evaluated, losses: &LossFit) -> Vec<Proposal> {
+/// What the profile may take over; nothing that rests on an instrument that lies.
+fn proposals(
+    sheet: &BenchSheet,
+    evaluated: &Evaluated,
+    losses: &LossFit,
+    left_out: &[LeftOut],
+) -> Vec<Proposal> {
+    let is_sound = |part: Part| lies(left_out, &[part]).is_none();
     let mut found = Vec::new();
     let mut propose = |id, value: f64, unit, standard: f64| {
         if value > 0.0
@@ -495,7 +603,7 @@ fn proposals(sheet: &BenchSheet, evaluated: &Evaluated, losses: &LossFit) -> Vec
     let stroke = sheet
         .head(Head::Stroke)
         .map_or(1.0, |percent| percent / 100.0);
-    if let Some(derived) = evaluated.derived {
+    if let Some(derived) = evaluated.derived.filter(|_| is_sound(Part::Flow)) {
         let (value, u) = (derived.value / stroke, derived.standard / stroke);
         propose(volume, value, Unit::CubicCentimetrePerRevolution, u);
     }
@@ -503,6 +611,7 @@ fn proposals(sheet: &BenchSheet, evaluated: &Evaluated, losses: &LossFit) -> Vec
         .case
         .as_ref()
         .ok()
+        .filter(|_| is_sound(Part::Case))
         .and_then(|fit| fit.get(Loss::Case))
     {
         propose(
@@ -516,6 +625,7 @@ fn proposals(sheet: &BenchSheet, evaluated: &Evaluated, losses: &LossFit) -> Vec
         .flow
         .as_ref()
         .ok()
+        .filter(|_| is_sound(Part::Flow))
         .and_then(|fit| fit.get(Loss::Laminar))
     {
         // What a turbulent share adds at the pressure where it is told.
