@@ -5,6 +5,7 @@
 //! | --- | --- |
 //! | [`mod@self`] | what a report is made from, and what it is |
 //! | `groups` | readings by condition, with windows and instruments |
+//! | `check` | the paper of a yard check |
 //! | `causes` | the finding, and the causes with their reasons |
 //! | `seen` | what was seen without a gauge, the neutral and the tracking |
 //! | `open` | what was not checked, what to bring |
@@ -16,6 +17,7 @@
 
 mod basis;
 mod causes;
+mod check;
 pub(crate) mod csv;
 mod groups;
 mod moment;
@@ -26,6 +28,7 @@ mod text;
 
 pub use basis::record_sum;
 pub use causes::{Finding, Sure};
+pub use check::Check;
 pub use csv::{Sheet, csv};
 pub use groups::{Group, Row};
 pub use moment::moment;
