@@ -155,6 +155,7 @@ pub fn apply(visit: &Visit, change: &Change) -> Visit {
         Change::Remove(id) => {
             next.readings.retain(|reading| reading.id != *id);
             next.earlier.remove(id);
+            next.caught.remove(id);
             next.headings.remove(id);
         }
         Change::Entry { id, typed, seen } => {
