@@ -133,6 +133,8 @@ pub struct Data {
     pub groups: usize,
     /// Port and readings of each group.
     pub group_ports: Vec<Port>,
+    /// Readings by index that a jug gave, with how sure its litres and seconds make them.
+    pub caught: BTreeMap<usize, Accuracy>,
     /// What the ranking takes for granted.
     pub belief: Belief,
 }
@@ -288,13 +290,17 @@ pub fn gather_caught(
         let Some((says, value, swing)) = statement(seen, &mut out.conditions) else {
             continue;
         };
-        let a = match caught.get(&reading.id).and_then(|jug| jug.behind(reading)) {
+        let made = caught.get(&reading.id).and_then(|jug| jug.behind(reading));
+        let a = match made {
             Some(made) => Accuracy {
                 bias: made.bias,
                 own: made.reading.max(1e-6),
             },
             None => accuracy(instrument, reading.port, value),
         };
+        if made.is_some() {
+            out.caught.insert(index, a);
+        }
         let key = group_key(reading, riggings);
         let gauge = match instrument {
             Some(i) => i.id.clone(),
