@@ -207,7 +207,7 @@ pub fn place(check: &Check, doing: Doing, direction: Direction) -> (&'static str
 }
 
 /// Code of what the machine does, as it stands in a stamp. What holds a machine that pushes forward does not hold it in reverse.
-fn code(doing: Doing, direction: Direction) -> String {
+pub fn code(doing: Doing, direction: Direction) -> String {
     match (doing, direction) {
         (Doing::Held, Direction::Reverse) => String::from("HeldReverse"),
         _ => format!("{doing:?}"),

@@ -189,7 +189,6 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                         })) }</>
                     }
                 </div>
-                { watch(props, &readings, &gates) }
                 <button
                     type="button"
                     class="button is-quiet"
@@ -214,6 +213,7 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
             { alone(props) }
             { cautions::all(&new_places(props)) }
             { advice(&gates) }
+            { watch(props, &readings, &gates) }
             <ol class="readings">
                 { for rows }
             </ol>
@@ -232,11 +232,11 @@ fn watch(props: &ReadingGroupProps, readings: &[(usize, &Reading)], gates: &[Gat
     html! {
         <button
             type="button"
-            class="button"
+            class="button is-wide group-watch"
             data-testid={format!("watch-{}", props.at.first().copied().unwrap_or_default())}
             onclick={on_click}
         >
-            { "Watch" }
+            { "Watch while it runs" }
         </button>
     }
 }

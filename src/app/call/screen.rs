@@ -26,7 +26,7 @@ use super::steady::{Answer, use_steady};
 use super::taken::Taken;
 use super::told::told_before;
 use super::watch::{Kept, WatchView};
-use super::watching::watched;
+use super::watching::{watched, with_following};
 use crate::app::parts::{Icon, Shape};
 use crate::app::platform::clock;
 use crate::app::platform::focus;
@@ -162,8 +162,8 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
     };
     let on_edit = use_steady(on_edit);
     let on_watch = {
-        let watching = watching.clone();
-        Callback::from(move |ids: Vec<String>| watching.set(ids))
+        let (watching, edits) = (watching.clone(), edits.clone());
+        Callback::from(move |ids: Vec<String>| watching.set(with_following(ids, &edits.visit())))
     };
     let on_watch = use_steady(on_watch);
     let on_write = {

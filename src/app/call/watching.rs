@@ -1,32 +1,25 @@
 //! Which readings the watch view shows, and with what.
 
 use super::gate::{self, Gate};
+use super::group::groups;
 use super::rig;
 use super::watch::Watched;
 use crate::app::platform::clock;
 use crate::assessment::Assessment;
+use crate::readings::Reading;
 use crate::readings::instrument::Instrument;
-use crate::readings::{Port, Reading};
 use crate::record::Visit;
 
-/// The readings of these ids, in their order. All are of one condition.
+/// The readings of these ids, in their order.
 pub fn watched(
     ids: &[String],
     visit: &Visit,
     instruments: &[Instrument],
     assessment: Option<&Assessment>,
 ) -> Vec<Watched> {
-    let readings: Vec<&Reading> = ids
-        .iter()
+    let now = clock::now_ms();
+    ids.iter()
         .filter_map(|id| visit.readings.iter().find(|reading| reading.id == *id))
-        .collect();
-    let Some(first) = readings.first() else {
-        return Vec::new();
-    };
-    let ports: Vec<Port> = readings.iter().map(|reading| reading.port).collect();
-    let gates = Gate::of(&first.condition, &ports, visit, clock::now_ms());
-    readings
-        .into_iter()
         .map(|reading| Watched {
             reading: reading.clone(),
             window: assessment.and_then(|assessment| {
@@ -34,9 +27,49 @@ pub fn watched(
                 windows.find(|window| window.reading == reading.id).cloned()
             }),
             instrument: rig::on_port(reading, visit, instruments).current,
-            closed: gate::closes_now(&gates, reading),
+            closed: gate::closes_now(&gates(reading, visit, now), reading),
         })
         .collect()
+}
+
+fn gates(reading: &Reading, visit: &Visit, now: f64) -> Vec<Gate> {
+    Gate::of(&reading.condition, &[reading.port], visit, now)
+}
+
+/// These readings, and those of the groups after theirs while the machine does the same: a build-up goes on from step to step and low
+/// idle to high idle without a look at the list.
+pub fn with_following(ids: Vec<String>, visit: &Visit) -> Vec<String> {
+    let of = |place: &usize| visit.readings.get(*place);
+    let Some(first) = visit
+        .readings
+        .iter()
+        .find(|reading| ids.first() == Some(&reading.id))
+    else {
+        return ids;
+    };
+    let now = clock::now_ms();
+    let round = |reading: &Reading| {
+        let condition = &reading.condition;
+        gate::code(condition.doing, condition.direction)
+    };
+    let groups = groups(&visit.readings, &[]);
+    let after = groups
+        .iter()
+        .skip_while(|group| {
+            !group
+                .at
+                .iter()
+                .filter_map(of)
+                .any(|reading| reading.id == first.id)
+        })
+        .skip(1)
+        .flat_map(|group| group.at.iter().filter_map(of));
+    let more: Vec<String> = after
+        .filter(|reading| round(reading) == round(first) && super::entry::is_open(reading))
+        .filter(|reading| gate::closes_now(&gates(reading, visit, now), reading).is_none())
+        .map(|reading| reading.id.clone())
+        .collect();
+    ids.into_iter().chain(more).collect()
 }
 
 /// The readings of a group that may be watched now: those without an answer, or all where each has one.

@@ -94,12 +94,18 @@ pub fn WatchView(props: &WatchViewProps) -> Html {
         })
     };
     let (reading, condition) = (&now.reading, &now.reading.condition);
+    let before = place
+        .checked_sub(1)
+        .and_then(|before| props.watched.get(before));
+    let is_new = before.is_some_and(|before| before.reading.condition != *condition);
     html! {
         <dialog ref={dialog} class="watch" aria-labelledby="watch-title" oncancel={on_cancel} data-testid="watch">
             <header class="watch-head">
                 <div>
                     <h2 id="watch-title" tabindex="-1">{ props.sides.name(reading) }</h2>
-                    <p class="watch-condition" data-testid="watch-condition">{ words::condition(condition, &props.prefs) }</p>
+                    <p class={if is_new { "watch-condition is-new" } else { "watch-condition" }} data-testid="watch-condition">
+                        { if is_new { "Change to: " } else { "" } }{ words::condition(condition, &props.prefs) }
+                    </p>
                 </div>
                 <button type="button" class="button is-quiet watch-close" onclick={on_close} data-testid="watch-close">
                     <Icon shape={Shape::Cross} /><span>{ "Close" }</span>
