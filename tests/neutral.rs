@@ -8,9 +8,12 @@ use lowside::neutral::adjust::{NoFit, Point, Reach, Seen, Sense, fit, halves};
 use lowside::neutral::brake;
 use lowside::neutral::nulls::{Sits, nulls, servo_push};
 use lowside::neutral::offset::{Says, Taken, offset, would_show};
+use lowside::neutral::report::{Report, report};
 use lowside::neutral::response::{Machine, Shows, machines};
-use lowside::quantity::{Kind, Measure};
+use lowside::quantity::{Kind, Measure, Typed, Unit as InUnit};
 use lowside::readings::{Condition, Direction, EngineSpeed, OilTemperature, Place, Port};
+use lowside::record::NeutralSheet;
+use lowside::record::neutral::{AdjusterRow, Field};
 use lowside::unit::{Control, FIGURES, Figure, FigureId, Source, Tick, Ticks, Unit};
 use proptest::prelude::*;
 use serde::Deserialize;
@@ -437,4 +440,62 @@ proptest! {
             }
         }
     }
+}
+
+/// The report crosses from the worker to the page as JSON, which has no infinities and no "not a number".
+#[test]
+fn a_report_survives_the_way_from_the_worker_to_the_page() {
+    let typed = |value: f64, unit: InUnit| Typed {
+        typed: format!("{value}"),
+        value: Some(Measure::literal(value, unit)),
+    };
+    let mut sheet = NeutralSheet::default();
+    let unit = unit(Control::ElectricProportional);
+    let there_and_back = |sheet: &NeutralSheet| {
+        let told = report(&unit, sheet);
+        let json = serde_json::to_string(&told).expect("writes");
+        let back: Report = serde_json::from_str(&json).expect("reads");
+        assert_eq!(back, told);
+        told
+    };
+    let empty = there_and_back(&sheet);
+    assert!(empty.offset.is_none() && !empty.fits_none);
+    // Turns without their time are told as missing.
+    sheet.set(Field::CreepTurns, typed(3.0, InUnit::Turn));
+    assert_eq!(there_and_back(&sheet).missing.len(), 1);
+    sheet.set(Field::CreepTime, typed(60.0, InUnit::Second));
+    sheet.set(Field::BridgedTurns, typed(1.0, InUnit::Turn));
+    sheet.set(Field::BridgedTime, typed(60.0, InUnit::Second));
+    (sheet.creeps, sheet.creeps_bridged) = (Some(Direction::Forward), Some(Direction::Forward));
+    for (field, value) in [
+        (Field::ServoForward, 2.5),
+        (Field::ServoReverse, 2.0),
+        (Field::Difference, 40.0),
+    ] {
+        sheet.set(field, typed(value, InUnit::Bar));
+    }
+    for (field, value) in [
+        (Field::ThresholdForward, 300.0),
+        (Field::ThresholdReverse, 320.0),
+        (Field::EndForward, 900.0),
+        (Field::EndReverse, 910.0),
+    ] {
+        sheet.set(field, typed(value, InUnit::Milliampere));
+    }
+    for (turns, shown) in [(0.0, 3.0), (0.25, 1.0), (-0.25, 5.0)] {
+        sheet.series.push(AdjusterRow {
+            turns: typed(turns, InUnit::Turn),
+            shown: typed(shown, InUnit::Turn),
+            time: typed(60.0, InUnit::Second),
+            going: Some(Direction::Forward),
+            ..AdjusterRow::default()
+        });
+    }
+    let full = there_and_back(&sheet);
+    assert!(full.offset.is_some() && full.nulls.is_some() && full.servo.is_some());
+    assert!(full.currents.is_some() && full.risk.is_some() && full.missing.is_empty());
+    assert!(matches!(full.series, Some(Ok(_))), "{:?}", full.series);
+    // A series without an answer crosses too.
+    sheet.series.truncate(1);
+    assert!(matches!(there_and_back(&sheet).series, Some(Err(_))));
 }

@@ -5,11 +5,15 @@ use std::rc::Rc;
 
 use wasm_bindgen::JsCast;
 use web_sys::StorageEvent;
-use yew::{Callback, Html, component, html, use_effect_with, use_memo, use_mut_ref, use_reducer};
+use yew::{
+    Callback, ContextProvider, Html, component, html, use_effect_with, use_memo, use_mut_ref,
+    use_reducer,
+};
 
 use super::bench::BenchScreen;
 use super::call::{CallScreen, EarlierCalls};
 use super::deed::{Deed, Snapshot};
+use super::engine::client::Engine;
 use super::hands::Hands;
 use super::neutral::NeutralScreen;
 use super::persist::Keeper;
@@ -179,6 +183,7 @@ pub fn App() -> Html {
             document.set_title(title);
         }
     });
+    let engine = hands.engine();
     let deed = use_memo((), move |()| {
         Callback::from(move |deed: Deed| hands.act(deed))
     });
@@ -195,7 +200,9 @@ pub fn App() -> Html {
             <p class="hidden-text" role="status" aria-live="polite" data-testid="said">
                 <span key={state.said.0}>{ &state.said.1 }</span>
             </p>
-            { screen(&snapshot, &deed) }
+            <ContextProvider<Engine> context={engine}>
+                { screen(&snapshot, &deed) }
+            </ContextProvider<Engine>>
         </>
     }
 }

@@ -65,6 +65,11 @@ impl Hands {
         self.keeper.clone()
     }
 
+    /// The engine, for sheets that a screen wants worked out.
+    pub fn engine(&self) -> Engine {
+        self.engine.clone()
+    }
+
     /// Sends an action to the state.
     pub fn put(&self, action: Action) {
         self.dispatcher.dispatch(action);

@@ -39,7 +39,7 @@ impl Sense {
 }
 
 /// What was seen with the adjuster at one place.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub enum Seen {
     /// A creep speed or a loop difference, forward positive, with its standard uncertainty; one kind in a series.
     Value {
@@ -53,7 +53,7 @@ pub enum Seen {
 }
 
 /// One place of the adjuster.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Point {
     /// Turns in (positive) or out from where it was found.
     pub turns: f64,
@@ -64,7 +64,7 @@ pub struct Point {
 }
 
 /// A figure with its 95 % interval, turns.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Turns {
     /// Mean.
     pub mean: f64,
@@ -91,7 +91,7 @@ impl Turns {
 }
 
 /// What a series comes to.
-#[derive(Clone, Debug, PartialEq)]
+#[derive(Clone, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Fitted {
     /// Where the null is: the middle of the dead band, turns from where the adjuster was found.
     pub null: Turns,
@@ -112,7 +112,7 @@ pub struct Fitted {
 }
 
 /// How far a statement on a null goes.
-#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+#[derive(Clone, Copy, Debug, PartialEq, Eq, serde::Serialize, serde::Deserialize)]
 pub enum Reach {
     /// Both sides of the dead band were seen.
     BothSides,
@@ -123,7 +123,9 @@ pub enum Reach {
 }
 
 /// Why a series has no answer.
-#[derive(Clone, Copy, Debug, PartialEq, Eq, thiserror::Error)]
+#[derive(
+    Clone, Copy, Debug, PartialEq, Eq, thiserror::Error, serde::Serialize, serde::Deserialize,
+)]
 pub enum NoFit {
     /// Fewer than two places.
     #[error("two places of the adjuster are needed at least; there is {0}")]
@@ -285,7 +287,7 @@ impl Fitted {
 }
 
 /// Halves of a dead band about the place where the servo pressures are equal.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Halves {
     /// From the balanced place to the start of motion forward, turns.
     pub forward: f64,

@@ -11,7 +11,7 @@ const FINE: f64 = 0.002;
 const USUAL: f64 = 0.015;
 
 /// Weights on offsets; they sum to 1.
-#[derive(Clone, Debug, PartialEq)]
+#[derive(Clone, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Belief {
     at: Vec<f64>,
     weight: Vec<f64>,

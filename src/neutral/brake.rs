@@ -16,7 +16,7 @@ pub const SHARE: f64 = 0.6;
 pub const LEAST: f64 = 0.5;
 
 /// Where a locked check stops.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Stop {
     /// Loop difference not to be passed, bar.
     pub bar: f64,
@@ -52,7 +52,7 @@ pub fn stop(unit: &Unit) -> Stop {
 }
 
 /// The difference that is about to be built, against what the brake may hold.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Risk {
     /// Difference that the offset would build.
     pub builds: Foretold,
@@ -63,7 +63,9 @@ pub struct Risk {
 }
 
 /// How the difference stands against the stop.
-#[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
+#[derive(
+    Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord, serde::Serialize, serde::Deserialize,
+)]
 pub enum Says {
     /// All of the interval stays under the stop.
     Under,

@@ -14,7 +14,7 @@ pub struct Currents {
 }
 
 /// How a figure stands against common practice.
-#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+#[derive(Clone, Copy, Debug, PartialEq, Eq, serde::Serialize, serde::Deserialize)]
 pub enum Stands {
     /// As is common.
     Usual,
@@ -25,7 +25,7 @@ pub enum Stands {
 }
 
 /// One figure drawn from the currents.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Figure {
     /// Value.
     pub value: f64,
@@ -36,7 +36,7 @@ pub struct Figure {
 }
 
 /// What the currents come to.
-#[derive(Clone, Copy, Debug, Default, PartialEq)]
+#[derive(Clone, Copy, Debug, Default, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Judged {
     /// Difference of the thresholds over their mean.
     pub thresholds_differ: Option<Figure>,

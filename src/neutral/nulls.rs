@@ -9,7 +9,7 @@ use crate::readings::Condition;
 use crate::unit::Unit;
 
 /// Both nulls, as swash offsets: share of full stroke, forward positive.
-#[derive(Clone, Debug, PartialEq)]
+#[derive(Clone, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Nulls {
     /// What the control asks in neutral.
     pub control: Part,
@@ -20,7 +20,7 @@ pub struct Nulls {
 }
 
 /// One of the two.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Part {
     /// Mean.
     pub mean: f64,
@@ -47,7 +47,7 @@ impl Part {
 }
 
 /// Where the offset sits.
-#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+#[derive(Clone, Copy, Debug, PartialEq, Eq, serde::Serialize, serde::Deserialize)]
 pub enum Sits {
     /// In the control.
     Control,
@@ -138,7 +138,7 @@ fn decile(belief: &Belief) -> Vec<(f64, f64)> {
 /// What a difference of servo pressures (forward port over reverse port, bar, with its standard uncertainty) asks of the swash.
 ///
 /// Between the springs' preloads the piston does not move: then the control pushes, and nothing comes of it.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct ServoPush {
     /// Stroke that the control's push makes, share of full, forward positive.
     pub stroke: Part,

@@ -24,7 +24,7 @@ pub struct Taken {
 }
 
 /// What an offset comes to.
-#[derive(Clone, Debug, PartialEq)]
+#[derive(Clone, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Offset {
     /// Mean, share of full stroke, forward positive.
     pub mean: f64,
@@ -39,7 +39,7 @@ pub struct Offset {
 }
 
 /// How far a statement about an offset goes.
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub enum Says {
     /// Off by the interval given, on a known side.
     Off,
@@ -188,7 +188,7 @@ pub fn would_show(
 }
 
 /// A reading foretold, in its own unit (rpm or bar).
-#[derive(Clone, Copy, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Foretold {
     /// Low end of 95 %.
     pub low: f64,

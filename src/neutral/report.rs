@@ -1,5 +1,7 @@
 //! From the sheet as it was filled in to what can be said: pure, so that the screen only draws.
 
+use std::borrow::Cow;
+
 use super::adjust::{self, Fitted, Halves, NoFit, Point, Seen};
 use super::brake::{self, Risk, Stop};
 use super::electric::{self, Currents, Judged};
@@ -27,7 +29,7 @@ pub const PILOT_DIFFER: f64 = 0.5;
 pub const SERVO_EQUAL: f64 = 0.5;
 
 /// Everything that the sheet lets one say.
-#[derive(Clone, Debug, Default, PartialEq)]
+#[derive(Clone, Debug, Default, PartialEq, serde::Serialize, serde::Deserialize)]
 pub struct Report {
     /// Creep in neutral, rpm of the wheel, forward positive, with its standard uncertainty.
     pub creep: Option<(f64, f64)>,
@@ -52,7 +54,7 @@ pub struct Report {
     /// What the offset would build with the motor held.
     pub risk: Option<Risk>,
     /// What is missing before a reading counts, in words.
-    pub missing: Vec<&'static str>,
+    pub missing: Vec<Cow<'static, str>>,
     /// True where the readings fit no machine of this profile.
     pub fits_none: bool,
 }
@@ -145,11 +147,11 @@ fn counted(
     turns: Option<f64>,
     seconds: Option<f64>,
     going: Option<Direction>,
-    missing: &mut Vec<&'static str>,
+    missing: &mut Vec<Cow<'static, str>>,
 ) -> Option<(f64, f64)> {
     let turns = turns?;
     let Some(seconds) = seconds.filter(|s| *s > 0.0) else {
-        missing.push("Time over which the turns were counted.");
+        missing.push("Time over which the turns were counted.".into());
         return None;
     };
     if turns == 0.0 {
@@ -157,7 +159,7 @@ fn counted(
         return Some((0.0, gum::rectangular(timed::TURN_LIMIT) * 60.0 / seconds));
     }
     let Some(going) = going else {
-        missing.push("Which way it creeps: forward or reverse.");
+        missing.push("Which way it creeps: forward or reverse.".into());
         return None;
     };
     let time = Measure::new(seconds, InUnit::Second).ok()?;
@@ -189,7 +191,7 @@ pub fn difference_uncertainty(gauging: Gauging, bar: f64) -> f64 {
 }
 
 /// The places of the series that can be read.
-fn points(sheet: &NeutralSheet, missing: &mut Vec<&'static str>) -> Vec<Point> {
+fn points(sheet: &NeutralSheet, missing: &mut Vec<Cow<'static, str>>) -> Vec<Point> {
     let mut out = Vec::new();
     for row in &sheet.series {
         if let Some(point) = point(row, sheet.by, sheet.gauging, missing) {
@@ -204,7 +206,7 @@ fn point(
     row: &AdjusterRow,
     by: SeriesBy,
     gauging: Gauging,
-    missing: &mut Vec<&'static str>,
+    missing: &mut Vec<Cow<'static, str>>,
 ) -> Option<Point> {
     let turns = row.turns.value_in(InUnit::Turn)?;
     let seen = match (row.starts, by) {

@@ -1,15 +1,17 @@
 //! What the run comes to: verdict, displacement, efficiencies with their doubt, losses, balances.
 
 use super::codes;
+use super::limits::LimitsForm;
 use super::screen::{Edit, Told};
-use crate::app::parts::{Caution, Entry, Grade, MeasureField, Section, TextField};
+use crate::app::parts::{Caution, Grade, Section};
 use crate::bench::stand::analysis::Quantity;
 use crate::bench::stand::balance::OPEN;
 use crate::bench::stand::fit::{Fit, LossFit, NoFit, TurbulentShare};
-use crate::bench::stand::judge::{Decision, Measurand, TypedLimit};
+use crate::bench::stand::flaw::told;
+use crate::bench::stand::judge::Decision;
 use crate::bench::stand::report::Judged;
 use crate::bench::stand::{BenchReport, BenchSheet, LayoutGap, Subject, paper};
-use crate::quantity::{DecimalMark, Measure, Unit, UnitPrefs};
+use crate::quantity::{DecimalMark, Unit, UnitPrefs};
 use std::collections::BTreeSet;
 use std::rc::Rc;
 use yew::{Callback, Html, Properties, component, html};
@@ -36,7 +38,7 @@ pub fn Results(props: &ResultsProps) -> Html {
     html! { <>
         <Section id="bench-verdict" title="Verdict" {state} is_open=true>
             { judged(props, verdict) }
-            { limits(props) }
+            <LimitsForm sheet={props.sheet.clone()} told={props.told.clone()} prefs={props.prefs.clone()} on_edit={props.on_edit.clone()} />
         </Section>
         if !report.points.is_empty() {
             <Section id="bench-results" title="Efficiencies" is_open=true>
@@ -56,6 +58,9 @@ fn judged(props: &ResultsProps, verdict: Option<Decision>) -> Html {
     let words = match verdict {
         None => "Nothing was judged: no figure with a limit is on the sheet yet.",
         Some(Decision::Fail) => "Fails: a figure lies outside its limit by more than its doubt.",
+        Some(Decision::CannotTell) if report.judged.iter().any(|judged| !judged.why.is_empty()) => {
+            "Cannot tell: something on the sheet decides nothing; the reason stands beside it."
+        }
         Some(Decision::CannotTell) => {
             "Cannot tell: the doubt of a figure reaches over its limit. Better instruments or more readings decide it."
         }
@@ -67,7 +72,13 @@ fn judged(props: &ResultsProps, verdict: Option<Decision>) -> Html {
             <ul class="bench-judged">
                 { for report.judged.iter().map(|judged| judged_row(judged, &props.prefs)) }
             </ul>
-            <p class="soft">{ "Guard band: the expanded uncertainty, coverage factor 2 (JCGM 106). Wrong passes and wrong fails have a chance of 2.5 % at most." }</p>
+            <p class="soft">{ "Guard band: the expanded uncertainty, coverage factor 2 (JCGM 106). Of each figure, a wrong pass or a wrong fail has a chance of 2.5 % at most." }</p>
+        }
+        if !report.left_out.is_empty() {
+            <h3>{ "Points left out" }</h3>
+            <ul class="bench-missing" data-testid="bench-left-out">
+                { for told(&report.left_out, props.sheet.subject).into_iter().map(|line| html! { <li>{ line }</li> }) }
+            </ul>
         }
         <h3>{ "Not tested" }</h3>
         if report.not_tested.is_empty() {
@@ -83,31 +94,7 @@ fn judged(props: &ResultsProps, verdict: Option<Decision>) -> Html {
 }
 
 fn judged_row(judged: &Judged, prefs: &UnitPrefs) -> Html {
-    let base = judged.unit.kind().base_unit();
-    let is_share = judged.unit == Unit::Percent;
-    let value = judged.figure.map(|figure| {
-        if is_share {
-            codes::share(figure, prefs.mark())
-        } else {
-            codes::in_unit(figure.value, figure.expanded(), base, prefs)
-        }
-    });
-    let one = |value: f64| {
-        if is_share {
-            codes::plain(value * 100.0, Unit::Percent, prefs)
-        } else {
-            codes::plain(value, base, prefs)
-        }
-    };
-    let limits = judged.limits.as_ref().map(|limits| {
-        let span = match (limits.low, limits.high) {
-            (Some(low), Some(high)) => format!("{} to {}", one(low), one(high)),
-            (Some(low), None) => format!("{} and more", one(low)),
-            (None, Some(high)) => format!("{} and less", one(high)),
-            (None, None) => "none".to_owned(),
-        };
-        format!("allowed {span} ({})", limits.from)
-    });
+    let value = paper::figure_words(judged, prefs);
     let class = match judged.decision {
         Decision::Pass => "is-pass",
         Decision::Fail => "is-fail",
@@ -116,82 +103,10 @@ fn judged_row(judged: &Judged, prefs: &UnitPrefs) -> Html {
     html! {
         <li class={class}>
             <strong class="bench-decision">{ judged.decision.words() }</strong>
-            <span>{ &judged.words }{ value.map(|value| format!(": {value}")) }</span>
-            if let Some(limits) = limits { <span class="soft">{ limits }</span> }
+            <span>{ paper::what_words(judged, prefs) }{ value.map(|value| format!(": {value}")) }</span>
+            if let Some(limits) = paper::limits_words(judged, prefs) { <span class="soft">{ limits }</span> }
+            if !judged.why.is_empty() { <span>{ format!("Because {}.", judged.why) }</span> }
         </li>
-    }
-}
-
-fn limits(props: &ResultsProps) -> Html {
-    let rows: [(Measurand, &str, &str); 4] = [
-        (
-            Measurand::Volumetric,
-            "Volumetric efficiency, rated",
-            "volumetric",
-        ),
-        (Measurand::Overall, "Best overall efficiency", "overall"),
-        (Measurand::CaseLeakage, "Case leakage of rated flow", "case"),
-        (
-            Measurand::Displacement,
-            "Displacement of the plate’s",
-            "displacement",
-        ),
-    ];
-    let field = |what: Measurand, code: &'static str, side: &'static str| {
-        let limit = props.sheet.limits.get(&what).cloned().unwrap_or_default();
-        let (typed, label) = match side {
-            "low" => (limit.low, "Lowest allowed"),
-            _ => (limit.high, "Highest allowed"),
-        };
-        let on_entry = props.on_edit.reform(move |typed: Entry| -> Edit {
-            Box::new(move |sheet| {
-                let limit = sheet.limits.entry(what).or_default();
-                if side == "low" {
-                    limit.low = typed;
-                } else {
-                    limit.high = typed;
-                }
-                if *limit == TypedLimit::default() {
-                    sheet.limits.remove(&what);
-                }
-            })
-        });
-        html! {
-            <MeasureField
-                id={format!("bench-limit-{code}-{side}")}
-                {label}
-                unit={Unit::Percent}
-                typed={typed.typed}
-                value={typed.value}
-                range={Some((Measure::literal(0.0, Unit::Percent), Measure::literal(200.0, Unit::Percent)))}
-                mark={props.prefs.mark()}
-                {on_entry}
-                testid={format!("bench-limit-{code}-{side}")}
-            />
-        }
-    };
-    html! {
-        <details class="advice" data-testid="bench-limits">
-            <summary>{ "Limits of the run: the unit’s manual or the customer; common practice where empty" }</summary>
-            <div class="stack">
-                { for rows.into_iter().map(|(what, words, code)| {
-                    let from = props.sheet.limits.get(&what).map(|limit| limit.from.clone()).unwrap_or_default();
-                    let on_from = props.on_edit.reform(move |text: String| -> Edit {
-                        Box::new(move |sheet| sheet.limits.entry(what).or_default().from = text)
-                    });
-                    html! {
-                        <fieldset class="bench-meter" key={code}>
-                            <legend>{ words }</legend>
-                            <div class="bench-fields">
-                                { field(what, code, "low") }
-                                { field(what, code, "high") }
-                                <TextField id={format!("bench-limit-{code}-from")} label="From" value={from} on_input={on_from} />
-                            </div>
-                        </fieldset>
-                    }
-                }) }
-            </div>
-        </details>
     }
 }
 
@@ -282,7 +197,10 @@ fn table(props: &ResultsProps) -> Html {
                 <tbody>
                     { for report.points.iter().enumerate().map(|(at, point)| html! {
                         <tr key={at}>
-                            <th scope="row">{ &point.name }</th>
+                            <th scope="row">
+                                { &point.name }
+                                if !point.left_out.is_empty() { <span class="soft">{ " left out" }</span> }
+                            </th>
                             { for columns.iter().map(|(quantity, _, unit)| {
                                 let figure = report.evaluated.points[at].get(quantity);
                                 let text = figure.map(|figure| match unit {
@@ -331,7 +249,6 @@ fn balance(report: &BenchReport, at: usize, mark: DecimalMark) -> String {
 
 fn remarks(props: &ResultsProps) -> Html {
     let report = &*props.told.0;
-    let impossible = report.impossible();
     let open = report
         .balances
         .iter()
@@ -360,7 +277,7 @@ fn remarks(props: &ResultsProps) -> Html {
         parts.join(", ")
     });
     html! { <>
-        if !impossible.is_empty() || open {
+        if report.is_impossible() || open {
             <Caution grade={Grade::Caution} title="An instrument may lie">
                 <p>{ "More comes out than goes in, or heat and power do not balance within 10 % (common practice). Look at the torque zero, the flow \
                     meter’s viscosity, the line that is metered, and the thermometers." }</p>

@@ -1,17 +1,20 @@
 //! The page's side: one worker, the latest question about the open call first, the others after it one by one.
 
 use std::cell::RefCell;
-use std::collections::VecDeque;
+use std::collections::{BTreeMap, VecDeque};
 use std::rc::Rc;
 
 use serde::Serialize;
 use wasm_bindgen::JsValue;
 use web_sys::{MessageEvent, Worker, WorkerOptions, WorkerType};
 
-use super::Reply;
+use super::{Asked, Reply};
 use crate::app::platform::listen::Listener;
 use crate::app::platform::timer::Timer;
 use crate::app::state::{Answer, Question};
+use crate::neutral::report::{Report, report};
+use crate::record::NeutralSheet;
+use crate::unit::Unit;
 
 /// A worker that dies is started again so many times.
 const RESTARTS: u32 = 1;
@@ -33,6 +36,27 @@ struct Request<'a> {
     visit: &'a crate::record::Visit,
     instruments: &'a [crate::readings::instrument::Instrument],
     rates: &'a crate::yard::learn::Rates,
+}
+
+#[derive(Serialize)]
+struct SheetRequest<'a> {
+    seq: u32,
+    unit: &'a Unit,
+    sheet: &'a NeutralSheet,
+}
+
+/// A neutral sheet that is being worked out.
+struct Sheet {
+    unit: Rc<Unit>,
+    sheet: Rc<NeutralSheet>,
+    tell: Box<dyn FnOnce(Report)>,
+}
+
+impl Sheet {
+    /// Works it out on the page, where there is no worker.
+    fn on_page(self) {
+        (self.tell)(report(&self.unit, &self.sheet));
+    }
 }
 
 enum Place {
@@ -64,6 +88,7 @@ struct Inner {
     asked: Option<(u32, Question)>,
     open: Option<Question>,
     others: VecDeque<Question>,
+    sheets: BTreeMap<u32, Sheet>,
     settle: Option<Timer>,
     tell: Rc<dyn Fn(Told)>,
 }
@@ -71,6 +96,12 @@ struct Inner {
 /// Asks the engine. Cloning it gives another handle on the same worker.
 #[derive(Clone)]
 pub struct Engine(Rc<RefCell<Inner>>);
+
+impl PartialEq for Engine {
+    fn eq(&self, other: &Self) -> bool {
+        Rc::ptr_eq(&self.0, &other.0)
+    }
+}
 
 impl Engine {
     /// An engine that tells its answers to `tell`. The worker starts with the first question.
@@ -83,6 +114,7 @@ impl Engine {
             asked: None,
             open: None,
             others: VecDeque::new(),
+            sheets: BTreeMap::new(),
             settle: None,
             tell: Rc::new(tell),
         })))
@@ -107,9 +139,41 @@ impl Engine {
         self.next();
     }
 
+    /// Works a neutral sheet out and tells what it says. Sheets and calls do not wait for one another's turn on the page.
+    pub fn neutral(
+        &self,
+        unit: Rc<Unit>,
+        sheet: Rc<NeutralSheet>,
+        tell: impl FnOnce(Report) + 'static,
+    ) {
+        let seq = self.number();
+        let json = serde_json::to_string(&Asked::<(), _>::Neutral(SheetRequest {
+            seq,
+            unit: &unit,
+            sheet: &sheet,
+        }));
+        let asked = Sheet {
+            unit,
+            sheet,
+            tell: Box::new(tell),
+        };
+        if json.is_ok_and(|json| self.post(&json)) {
+            self.0.borrow_mut().sheets.insert(seq, asked);
+        } else {
+            asked.on_page();
+        }
+    }
+
+    fn number(&self) -> u32 {
+        let mut inner = self.0.borrow_mut();
+        // 0 is the worker's own sign that it is there.
+        inner.seq = inner.seq.wrapping_add(1).max(1);
+        inner.seq
+    }
+
     /// Begins the next question if none is being worked on.
     fn next(&self) {
-        let (request, seq) = {
+        let request = {
             let mut inner = self.0.borrow_mut();
             let open = inner.open.take();
             if open.is_some()
@@ -125,38 +189,41 @@ impl Engine {
             let Some(question) = open.or_else(|| inner.others.pop_front()) else {
                 return;
             };
-            inner.seq = inner.seq.wrapping_add(1);
-            let seq = inner.seq;
-            inner.asked = Some((seq, question.clone()));
-            (question, seq)
+            question
         };
+        let seq = self.number();
+        self.0.borrow_mut().asked = Some((seq, request.clone()));
         self.send(seq, &request);
     }
 
     fn send(&self, seq: u32, question: &Question) {
-        if matches!(self.0.borrow().place, Place::Idle) {
-            let place = self.start().map_or(Place::Page, Place::Worker);
-            self.0.borrow_mut().place = place;
-        }
-        let json = serde_json::to_string(&Request {
+        let json = serde_json::to_string(&Asked::<_, ()>::Call(Request {
             seq,
             unit: &question.unit,
             visit: &question.visit,
             instruments: &question.instruments,
             rates: &question.rates,
-        });
+        }));
         let Ok(json) = json else {
             return self.give_up("The unit could not be handed to the calculation.");
         };
-        let posted = match &self.0.borrow().place {
+        if !self.post(&json) {
+            self.on_page(seq, question.clone());
+        }
+    }
+
+    /// Hands a message to the worker, which is started first where there is none; false where there can be none.
+    fn post(&self, json: &str) -> bool {
+        if matches!(self.0.borrow().place, Place::Idle) {
+            let place = self.start().map_or(Place::Page, Place::Worker);
+            self.0.borrow_mut().place = place;
+        }
+        match &self.0.borrow().place {
             Place::Worker(running) => running
                 .worker
-                .post_message(&JsValue::from_str(&json))
+                .post_message(&JsValue::from_str(json))
                 .is_ok(),
             _ => false,
-        };
-        if !posted {
-            self.on_page(seq, question.clone());
         }
     }
 
@@ -178,8 +245,7 @@ impl Engine {
             engine.take(Reply {
                 seq,
                 assessment: Some(assessment),
-                error: None,
-                more: false,
+                ..Reply::READY
             });
         });
         self.0.borrow_mut().settle = timer;
@@ -218,8 +284,18 @@ impl Engine {
         let text = event.data().as_string().unwrap_or_default();
         match serde_json::from_str::<Reply>(&text) {
             Ok(reply) if reply.is_ready() => self.0.borrow_mut().ready = true,
-            Ok(reply) => self.take(reply),
+            Ok(mut reply) => match reply.neutral.take() {
+                Some(found) => self.worked_out(reply.seq, *found),
+                None => self.take(reply),
+            },
             Err(_) => self.give_up("The answer of the calculation could not be read."),
+        }
+    }
+
+    fn worked_out(&self, seq: u32, found: Report) {
+        let asked = self.0.borrow_mut().sheets.remove(&seq);
+        if let Some(asked) = asked {
+            (asked.tell)(found);
         }
     }
 
@@ -257,6 +333,11 @@ impl Engine {
     /// The worker stopped: it is started once more and asked the same again. One that cannot even be loaded is replaced by
     /// the page.
     fn revive(&self) {
+        // Whatever it died of, a sheet is worked out: here.
+        let sheets = std::mem::take(&mut self.0.borrow_mut().sheets);
+        for sheet in sheets.into_values() {
+            sheet.on_page();
+        }
         let (again, was_ready) = {
             let mut inner = self.0.borrow_mut();
             inner.restarts += 1;

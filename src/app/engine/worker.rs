@@ -9,15 +9,16 @@ use wasm_bindgen::closure::Closure;
 use wasm_bindgen::{JsCast, JsValue};
 use web_sys::{DedicatedWorkerGlobalScope, MessageEvent};
 
-use super::Reply;
+use super::{Asked, Reply};
 use crate::assessment::Assessment;
+use crate::neutral::report::report;
 use crate::ranking::Session;
 use crate::readings::instrument::Instrument;
-use crate::record::Visit;
+use crate::record::{NeutralSheet, Visit};
 use crate::unit::Unit;
 use crate::yard::learn::Rates;
 
-/// What the page asks.
+/// What the page asks of a call.
 #[derive(Deserialize)]
 struct Request {
     seq: u32,
@@ -26,6 +27,14 @@ struct Request {
     instruments: Vec<Instrument>,
     #[serde(default)]
     rates: Rates,
+}
+
+/// A neutral sheet that the page wants worked out.
+#[derive(Deserialize)]
+struct Sheet {
+    seq: u32,
+    unit: Unit,
+    sheet: NeutralSheet,
 }
 
 /// What is to be done next about the question at hand.
@@ -79,8 +88,16 @@ fn answer(seq: u32, assessment: Assessment, more: bool) -> Reply {
     Reply {
         seq,
         assessment: Some(assessment),
-        error: None,
         more,
+        ..Reply::READY
+    }
+}
+
+fn work_out(asked: &Sheet) -> Reply {
+    Reply {
+        seq: asked.seq,
+        neutral: Some(Box::new(report(&asked.unit, &asked.sheet))),
+        ..Reply::READY
     }
 }
 
@@ -94,8 +111,9 @@ pub fn install() {
     let hearing = scope.clone();
     let on_message = Closure::wrap(Box::new(move |event: MessageEvent| {
         let text = event.data().as_string().unwrap_or_default();
-        match serde_json::from_str::<Request>(&text) {
-            Ok(request) => {
+        match serde_json::from_str::<Asked<Request, Sheet>>(&text) {
+            Ok(Asked::Neutral(sheet)) => post(&hearing, &work_out(&sheet)),
+            Ok(Asked::Call(request)) => {
                 let step = desk.borrow_mut().step.replace(Step::Look(request));
                 // One turn is on its way already where a step lay on the desk.
                 if step.is_none() {

@@ -1,9 +1,11 @@
 //! The screen: oil and engine once, then the steps of this control kind in order.
 
+use std::cell::Cell;
 use std::rc::Rc;
 
 use yew::{
-    Callback, Html, Properties, component, html, use_effect_with, use_memo, use_mut_ref, use_state,
+    Callback, Html, Properties, component, html, use_context, use_effect_with, use_memo,
+    use_mut_ref, use_state,
 };
 
 use super::edit::{sheet, use_edits};
@@ -11,6 +13,7 @@ use super::figures::SheetField;
 use super::step::StepPart;
 use crate::app::call::alerts::runs_on;
 use crate::app::call::cautions;
+use crate::app::engine::client::Engine;
 use crate::app::parts::{Caution, Choice, Grade, Icon, Opt, Shape, SoundSwitch};
 use crate::app::platform::timer::Timer;
 use crate::app::route::Route;
@@ -59,10 +62,11 @@ pub fn NeutralScreen(props: &NeutralScreenProps) -> Html {
             move || drop(timer)
         });
     }
-    // Worked out after a quiet moment; the last answer stays until then.
+    // Worked out after a quiet moment, in the worker; the last answer stays until then.
     let answer = use_state(|| Rc::new(Report::default()));
     let is_stale = use_state(|| true);
     let is_first = use_mut_ref(|| true);
+    let engine = use_context::<Engine>();
     {
         let (answer, is_stale) = (answer.clone(), is_stale.clone());
         use_effect_with((props.unit.clone(), kept.clone()), move |(unit, kept)| {
@@ -73,11 +77,25 @@ pub fn NeutralScreen(props: &NeutralScreenProps) -> Html {
             } else {
                 QUIET_MS
             };
+            // An answer to a sheet that has changed since, or is gone, is not shown.
+            let is_wanted = Rc::new(Cell::new(true));
+            let still = is_wanted.clone();
             let timer = Timer::once(quiet, move || {
-                answer.set(Rc::new(report(&unit, &kept)));
-                is_stale.set(false);
+                let tell = move |found: Report| {
+                    if still.get() {
+                        answer.set(Rc::new(found));
+                        is_stale.set(false);
+                    }
+                };
+                match engine {
+                    Some(engine) => engine.neutral(unit, kept, tell),
+                    None => tell(report(&unit, &kept)),
+                }
             });
-            move || drop(timer)
+            move || {
+                is_wanted.set(false);
+                drop(timer);
+            }
         });
     }
     let on_engine = {

@@ -2,6 +2,7 @@
 //! [`super::uncertain`] can run it again with each instrument moved.
 
 use super::channel::{Channel, Subject};
+use super::flaw::Part;
 use super::layout::{Layout, LayoutGap};
 use super::least_squares::{Observation, solve};
 use super::point::{Means, Point};
@@ -56,11 +57,13 @@ pub enum Quantity {
     ShaftPower,
     /// Hydraulic power of the high port over the low one; output shaft power of a whole drive, kW.
     OutPower,
+    /// Flow at the high port, L/min.
+    Flow,
 }
 
 impl Quantity {
     /// Every quantity.
-    pub const ALL: [Quantity; 8] = [
+    pub const ALL: [Quantity; 9] = [
         Quantity::Volumetric,
         Quantity::HydroMechanical,
         Quantity::Overall,
@@ -69,6 +72,7 @@ impl Quantity {
         Quantity::TorqueLost,
         Quantity::ShaftPower,
         Quantity::OutPower,
+        Quantity::Flow,
     ];
 }
 
@@ -253,6 +257,7 @@ fn machine(
         (Quantity::TorqueLost, torque_lost),
         (Quantity::ShaftPower, shaft),
         (Quantity::OutPower, hydraulic),
+        (Quantity::Flow, flow),
     ]
     .into_iter()
     .collect()
@@ -297,6 +302,7 @@ fn derive(points: &[Point], setup: &Setup) -> Option<Derived> {
     }
     let mut seen: Vec<(f64, f64, f64, f64)> = points
         .iter()
+        .filter(|point| point.counts_for(&[Part::Flow]))
         .filter_map(|point| {
             let (speed, difference) = state(&point.means).ok()?;
             let flow = setup.layout.high_flow(setup.subject, &point.means).ok()?;

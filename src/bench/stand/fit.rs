@@ -13,8 +13,9 @@
 //! Estimates are weighted by what comes by chance; what an instrument is off by is added to the covariance by fitting again with
 //! each instrument moved. Chance beyond what was stated widens the covariance (Birge ratio).
 
-use super::analysis::{Setup, flow_chance, theoretical_torque};
+use super::analysis::{Quantity, Setup, flow_chance, theoretical_torque};
 use super::channel::{Channel, Gauged, Subject};
+use super::flaw::Part;
 use super::layout::LayoutGap;
 use super::least_squares::{Estimate, Observation, solve};
 use super::point::Point;
@@ -257,8 +258,8 @@ struct Seen {
     mu: f64,
 }
 
-/// States of the points that carry one.
-fn states(points: &[Point], setup: &Setup) -> Result<Vec<Seen>, NoFit> {
+/// States of the points that carry one and count for this part.
+fn states(points: &[Point], setup: &Setup, part: Part) -> Result<Vec<Seen>, NoFit> {
     let oil = setup.oil.as_ref().ok_or(NoFit::Oil)?;
     let has_temperature = points.iter().any(|p| p.means.leak_temperature().is_some());
     if !has_temperature {
@@ -267,6 +268,7 @@ fn states(points: &[Point], setup: &Setup) -> Result<Vec<Seen>, NoFit> {
     Ok(points
         .iter()
         .enumerate()
+        .filter(|(_, point)| point.counts_for(&[part]))
         .filter_map(|(at, point)| {
             let n = point.means.get(Channel::Speed).filter(|n| *n > 0.0)?;
             let dp = point.means.difference()?;
@@ -291,7 +293,7 @@ fn flow_task(
 ) -> Result<Task, NoFit> {
     let mut observations = Vec::new();
     let mut at = Vec::new();
-    for s in states(points, setup)? {
+    for s in states(points, setup, Part::Flow)? {
         let point = &points[s.at];
         let Ok(flow) = setup.layout.high_flow(setup.subject, &point.means) else {
             continue;
@@ -332,7 +334,7 @@ fn torque_task(
     const LOSSES: &[Loss] = &[Loss::Viscous, Loss::Dry, Loss::Constant];
     let mut observations = Vec::new();
     let mut at = Vec::new();
-    for s in states(points, setup)? {
+    for s in states(points, setup, Part::Torque)? {
         let point = &points[s.at];
         let torque = setup
             .layout
@@ -359,7 +361,7 @@ fn torque_task(
 fn case_task(points: &[Point], setup: &Setup, gauge: Gauged) -> Result<Task, NoFit> {
     let mut observations = Vec::new();
     let mut at = Vec::new();
-    for s in states(points, setup)? {
+    for s in states(points, setup, Part::Case)? {
         let point = &points[s.at];
         let Ok(case) = setup.layout.case_leakage(setup.subject, &point.means) else {
             continue;
@@ -453,9 +455,14 @@ pub fn losses(
     if !open.is_empty() {
         return refuse(NoFit::Layout(open));
     }
-    let seen = match states(points, setup) {
-        Ok(seen) => seen,
-        Err(why) => return refuse(why),
+    let of_part = |part| states(points, setup, part);
+    let (seen, others_seen) = match (
+        of_part(Part::Flow),
+        of_part(Part::Case),
+        of_part(Part::Torque),
+    ) {
+        (Ok(flow), Ok(case), Ok(torque)) => (flow, [case, torque]),
+        (Err(why), ..) | (_, Err(why), _) | (.., Err(why)) => return refuse(why),
     };
     let others = moved(points, setup, &gauged, viscosity);
     let v0 = displacement.or(setup.plate).unwrap_or(0.0);
@@ -522,6 +529,11 @@ pub fn losses(
             .map(|(_, points, setup)| case_of(points, setup));
         fitted(&[Loss::Case], &task, moved)
     });
+    // Where no flow counts, the other fits still cover something.
+    let seen = std::iter::once(seen)
+        .chain(others_seen)
+        .find(|seen| !seen.is_empty())
+        .unwrap_or_default();
     let range = |of: fn(&Seen) -> f64| {
         let low = seen.iter().map(of).fold(f64::MAX, f64::min);
         (low, seen.iter().map(of).fold(f64::MIN, f64::max))
@@ -542,6 +554,60 @@ pub fn losses(
         torque,
         case,
         covered,
+    }
+}
+
+impl LossFit {
+    /// An efficiency in a state: speed (rpm), pressure difference (bar), viscosity (mPa·s).
+    ///
+    /// # Errors
+    /// Why there is none, in words.
+    pub fn efficiency(
+        &self,
+        quantity: Quantity,
+        n: f64,
+        dp: f64,
+        mu: f64,
+    ) -> Result<(f64, f64), String> {
+        let told = self.foretell(n, dp, mu);
+        let found = match quantity {
+            Quantity::Volumetric => told.volumetric,
+            Quantity::HydroMechanical => told.hydro_mechanical,
+            _ => told.overall(),
+        };
+        found.ok_or_else(|| {
+            let flow = self.flow.as_ref().err();
+            let why = flow.or(self.torque.as_ref().err());
+            why.map_or_else(|| NoFit::Alike.to_string(), ToString::to_string)
+        })
+    }
+
+    /// Flow at the high port in a state, L/min, with its standard uncertainty.
+    ///
+    /// # Errors
+    /// Why there is none, in words.
+    pub fn high_flow(&self, n: f64, dp: f64, mu: f64) -> Result<(f64, f64), String> {
+        let fit = self.flow.as_ref().map_err(ToString::to_string)?;
+        let volume = fit.x[0];
+        Ok(fit.foretold(&flow_row(self.subject, &fit.losses, volume, n, dp, mu)))
+    }
+
+    /// Leakage out of the case in a state, L/min, with its standard uncertainty; `over_case` is the low line over the case, bar.
+    ///
+    /// # Errors
+    /// Why there is none, in words.
+    pub fn case_leakage(&self, dp: f64, over_case: f64, mu: f64) -> Result<(f64, f64), String> {
+        let fit = self.case.as_ref().map_err(ToString::to_string)?;
+        Ok(fit.foretold(&[(dp + 2.0 * over_case) * REFERENCE / mu]))
+    }
+}
+
+impl Foretold {
+    /// Overall efficiency, the product of the other two, with its standard uncertainty.
+    #[must_use]
+    pub fn overall(&self) -> Option<(f64, f64)> {
+        let ((v, uv), (h, uh)) = (self.volumetric?, self.hydro_mechanical?);
+        Some((v * h, (h * h * uv * uv + v * v * uh * uh).sqrt()))
     }
 }
 

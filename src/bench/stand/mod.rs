@@ -4,14 +4,19 @@
 //!
 //! * [`sheet`] is what is kept: every text as typed. [`paste`] reads a table copied from a spreadsheet.
 //! * [`layout`] says which lines are metered and where oil goes; without it no leakage is told from charge flow.
-//! * [`point`] joins repeated readings to a point with its spread and says whether it was steady.
+//! * [`point`] joins repeated readings to a point with its spread and says whether it was steady; [`flaw`] says which points say
+//!   nothing, and why.
 //! * [`analysis`] computes all that follows from the points; [`uncertain`] repeats it with every instrument moved in turn.
+//! * [`acceptance`] is the limits of the manual at points and along curves; [`accepted`] judges them.
 //! * [`fit`] is the loss model; [`judge`] decides with a guard band; [`report`] is the whole sheet in one call.
 
+pub mod acceptance;
+pub mod accepted;
 pub mod analysis;
 pub mod balance;
 pub mod channel;
 pub mod fit;
+pub mod flaw;
 pub mod items;
 pub mod judge;
 pub mod layout;

@@ -1,9 +1,10 @@
 //! A point: readings repeated in one setting, their mean, their spread, and whether the machine stood steady meanwhile.
 
 use super::channel::{Allowed, Channel};
+use super::flaw::Part;
 use super::sheet::Row;
 use crate::readings::instrument::gum;
-use std::collections::BTreeMap;
+use std::collections::{BTreeMap, BTreeSet};
 
 /// Fewest readings that show a steady point (common practice).
 pub const READINGS: usize = 3;
@@ -84,6 +85,16 @@ pub struct Point {
     pub scatter: BTreeMap<Channel, f64>,
     /// Whether it was steady.
     pub steadiness: Steadiness,
+    /// What of it is left out of displacement, fits and verdict; [`super::flaw`] says why.
+    pub left_out: BTreeSet<Part>,
+}
+
+impl Point {
+    /// True where none of these parts is left out.
+    #[must_use]
+    pub fn counts_for(&self, parts: &[Part]) -> bool {
+        parts.iter().all(|part| !self.left_out.contains(part))
+    }
 }
 
 /// Joins rows of one name to points, in the order of their first row. Rows without a name are points of their own.
@@ -163,15 +174,16 @@ fn point(name: String, rows: &[Row], at: Vec<usize>) -> Point {
         means: Means(means),
         scatter,
         steadiness,
+        left_out: BTreeSet::new(),
     }
 }
 
 /// How the first point came out when it was taken again at the end: flow and case flow, last over first less 1, where both
-/// points stand at the same speed and pressure within 3 %.
+/// points stand at the same speed and pressure within 3 %, and neither is left out.
 #[must_use]
 pub fn repeated(points: &[Point]) -> Option<(Option<f64>, Option<f64>)> {
     let (first, last) = (points.first()?, points.last()?);
-    if points.len() < 3 {
+    if points.len() < 3 || !(first.left_out.is_empty() && last.left_out.is_empty()) {
         return None;
     }
     let near = |one: Option<f64>, other: Option<f64>| {

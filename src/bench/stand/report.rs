@@ -1,10 +1,13 @@
 //! The whole sheet in one pure call: points, efficiencies, losses, balances, what is judged and how, what was not tested, and what
 //! the unit's profile may take over.
 
+use super::acceptance::Limited;
+use super::accepted::{Accepted, accepted};
 use super::analysis::{Quantity, Setup, theoretical_flow};
 use super::balance::{Balance, balance};
 use super::channel::{Channel, Subject};
 use super::fit::{Loss, LossFit, losses};
+use super::flaw::{LeftOut, Part, lies, sorted};
 use super::items::{Entry, Item, ItemId, Practice, of};
 use super::judge::{Decision, Limits, Measurand, decide, usual};
 use super::point::{Point, points, repeated};
@@ -21,6 +24,19 @@ const NEAR_RATED: f64 = 0.10;
 /// Standard uncertainty of a figure that no instrument of the stand covers (a time, a signal), as a share. Common practice.
 const OTHER_FIGURES: f64 = 0.01;
 
+/// Where on a run something was judged: a curve over pressure.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Span {
+    /// Speed, rpm; none where any will do.
+    pub speed: Option<f64>,
+    /// Lower pressure difference, bar.
+    pub from: f64,
+    /// Higher pressure difference, bar.
+    pub to: f64,
+    /// Where the figure stands that decides, bar.
+    pub at: Option<f64>,
+}
+
 /// Something judged.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Judged {
@@ -34,6 +50,35 @@ pub struct Judged {
     pub limits: Option<Limits>,
     /// Decision.
     pub decision: Decision,
+    /// Why it cannot be told, where no doubt about a figure says so; empty otherwise.
+    pub why: String,
+    /// Of a curve, where it was judged.
+    pub span: Option<Span>,
+}
+
+impl Judged {
+    /// Symbol of its unit as printed, and the factor from the base unit to it.
+    #[must_use]
+    pub fn printed(&self) -> (&'static str, f64) {
+        if self.unit == Unit::Percent {
+            ("%", 100.0)
+        } else {
+            (self.unit.kind().base_unit().symbol(), 1.0)
+        }
+    }
+
+    /// Something that nothing on the sheet can decide, and why.
+    pub(super) fn open(words: String, unit: Unit, limits: Limits, why: String) -> Judged {
+        Judged {
+            words,
+            unit,
+            figure: None,
+            limits: Some(limits),
+            decision: Decision::CannotTell,
+            why,
+            span: None,
+        }
+    }
 }
 
 /// What a sheet says.
@@ -41,6 +86,8 @@ pub struct Judged {
 pub struct BenchReport {
     /// Points.
     pub points: Vec<Point>,
+    /// What of them is left out of displacement, fits and verdict.
+    pub left_out: Vec<LeftOut>,
     /// Everything computed of them.
     pub evaluated: Evaluated,
     /// The loss fit.
@@ -49,8 +96,10 @@ pub struct BenchReport {
     pub balances: Vec<Option<Balance>>,
     /// Change of flow and case flow from the first point to the same one at the end.
     pub repeated: Option<(Option<f64>, Option<f64>)>,
-    /// What was judged.
+    /// What was judged: limits of the manual first.
     pub judged: Vec<Judged>,
+    /// What came of each limit at points and along curves.
+    pub accepted: Vec<Accepted>,
     /// What was left out, with the reason where one was given.
     pub not_tested: Vec<(&'static str, Option<String>)>,
     /// What the profile may take over.
@@ -102,9 +151,15 @@ pub fn setup(sheet: &BenchSheet, machine: Option<&Machine>) -> (Setup, f64) {
 #[must_use]
 pub fn report(sheet: &BenchSheet, machine: Option<&Machine>) -> BenchReport {
     let (setup, viscosity) = setup(sheet, machine);
-    let points = points(&sheet.rows);
+    let mut points = points(&sheet.rows);
     let gauged = |channel| sheet.gauged(channel);
-    let evaluated = evaluated(&points, &setup, gauged, viscosity);
+    let (evaluated, left_out) = sorted(
+        &mut points,
+        setup.subject,
+        &setup.layout,
+        |point| doubt_of_difference(sheet, point),
+        |points| evaluated(points, &setup, gauged, viscosity),
+    );
     let losses = losses(
         &points,
         &setup,
@@ -118,7 +173,19 @@ pub fn report(sheet: &BenchSheet, machine: Option<&Machine>) -> BenchReport {
         .zip(&evaluated.analysis.points)
         .map(|(point, result)| balance(&point.means, result, &setup, lost))
         .collect();
-    let mut judged = run_judged(sheet, &setup, &points, &evaluated);
+    let run = Run {
+        sheet,
+        setup: &setup,
+        points: &points,
+        evaluated: &evaluated,
+        left_out: &left_out,
+    };
+    let accepted = accepted(&run, &losses);
+    let mut judged: Vec<Judged> = accepted
+        .iter()
+        .filter_map(|one| one.judged.clone().ok())
+        .collect();
+    judged.extend(run_judged(&run, &accepted));
     let mut not_tested = Vec::new();
     for item in of(sheet.subject) {
         match item_judged(sheet, machine, &setup, item) {
@@ -137,14 +204,21 @@ pub fn report(sheet: &BenchSheet, machine: Option<&Machine>) -> BenchReport {
     if points.is_empty() {
         not_tested.push(("Efficiency run", None));
     }
+    for limit in &accepted {
+        if let Err(why) = limit.judged {
+            not_tested.push(("A limit of the run", Some(why.to_owned())));
+        }
+    }
     BenchReport {
         repeated: repeated(&points),
-        proposals: proposals(sheet, &evaluated, &losses),
+        proposals: proposals(sheet, &evaluated, &losses, &left_out),
         points,
+        left_out,
         evaluated,
         losses,
         balances,
         judged,
+        accepted,
         not_tested,
     }
 }
@@ -164,40 +238,40 @@ impl BenchReport {
         }
     }
 
-    /// Efficiencies over one at points: an instrument lies.
+    /// True where a point shows what no machine can do: an instrument lies.
     #[must_use]
-    pub fn impossible(&self) -> Vec<(usize, Quantity)> {
-        let ratios = [
-            Quantity::Volumetric,
-            Quantity::HydroMechanical,
-            Quantity::Overall,
-        ];
-        let over = |figure: &Uncertain| figure.value - figure.expanded() > 1.0;
-        self.evaluated
-            .points
-            .iter()
-            .enumerate()
-            .flat_map(|(at, figures)| {
-                ratios
-                    .iter()
-                    .filter(move |q| figures.get(q).is_some_and(over))
-                    .map(move |q| (at, *q))
-            })
-            .collect()
+    pub fn is_impossible(&self) -> bool {
+        self.left_out.iter().any(|one| one.flaw.is_impossible())
+    }
+
+    /// Points of which something counts.
+    #[must_use]
+    pub fn counted(&self) -> usize {
+        let counts = |point: &&Point| point.left_out.len() < Part::ALL.len();
+        self.points.iter().filter(counts).count()
     }
 }
 
-/// Limits of the run: those typed, else those of common practice.
-fn limits(sheet: &BenchSheet, what: Measurand) -> Limits {
+/// Expanded uncertainty of a point's pressure difference, bar.
+fn doubt_of_difference(sheet: &BenchSheet, point: &Point) -> f64 {
+    let of = |channel: Channel| {
+        let value = point.means.get(channel).unwrap_or(0.0);
+        sheet.gauged(channel).standard(channel, value)
+    };
+    gum::expanded(gum::combined(&[of(Channel::High), of(Channel::Low)]), 2.0)
+}
+
+/// Limits of the run: those typed, else those of common practice, unless the manual limits the same figure elsewhere.
+fn limits(sheet: &BenchSheet, what: Measurand, has_own: bool) -> Option<Limits> {
     let typed = sheet.limits.get(&what);
     let share = |measure: Option<Measure>| measure.and_then(|m| m.try_in_unit(Unit::Fraction).ok());
     let low = typed.and_then(|t| share(t.low.value));
     let high = typed.and_then(|t| share(t.high.value));
     if low.is_none() && high.is_none() {
-        return usual(what);
+        return (!has_own).then(|| usual(what));
     }
     let from = typed.map_or("", |t| t.from.trim());
-    Limits {
+    Some(Limits {
         low,
         high,
         from: if from.is_empty() {
@@ -205,49 +279,135 @@ fn limits(sheet: &BenchSheet, what: Measurand) -> Limits {
         } else {
             from.to_owned()
         },
+    })
+}
+
+/// What a run is judged by.
+pub(super) struct Run<'a> {
+    pub(super) sheet: &'a BenchSheet,
+    pub(super) setup: &'a Setup,
+    pub(super) points: &'a [Point],
+    pub(super) evaluated: &'a Evaluated,
+    left_out: &'a [LeftOut],
+}
+
+/// What came of a figure that is judged: the figure, or why there is none to judge.
+pub(super) type Found = Result<Uncertain, String>;
+
+impl Run<'_> {
+    /// A figure of a point, where its part counts and no instrument of its kind lies. None where the sheet does not carry it.
+    pub(super) fn figure(&self, at: usize, quantity: Quantity) -> Option<Found> {
+        let figure = self.evaluated.points.get(at)?.get(&quantity).copied();
+        let parts = Part::of(quantity);
+        if let Some(why) = self.lie(parts) {
+            // Also where the figure itself looks right: the same instrument read it.
+            return figure.map(|_| Err(why));
+        }
+        let own = self
+            .left_out
+            .iter()
+            .find(|one| one.at == at && parts.iter().any(|part| one.parts.contains(part)));
+        match own {
+            Some(one) => figure.map(|_| Err(one.words(self.setup.subject))),
+            None => figure.map(Ok),
+        }
+    }
+
+    /// Why nothing that rests on these parts is judged, where an instrument lies.
+    pub(super) fn lie(&self, parts: &[Part]) -> Option<String> {
+        let liar = lies(self.left_out, parts)?;
+        Some(format!(
+            "{}; the same instruments read the other points, so correct its row or leave it out",
+            liar.words(self.setup.subject)
+        ))
+    }
+
+    /// The best point by overall efficiency, with its name, of those that count.
+    fn best(&self) -> Option<(String, Found)> {
+        let found = (0..self.points.len())
+            .filter_map(|at| Some((at, self.figure(at, Quantity::Overall)?)))
+            .max_by(|a, b| {
+                let rank = |found: &Found| found.as_ref().map_or(f64::MIN, |f| f.value);
+                rank(&a.1).total_cmp(&rank(&b.1))
+            })?;
+        let name = match &found.1 {
+            Ok(_) => format!(", at point {}", self.points[found.0].name),
+            Err(_) => String::new(),
+        };
+        Some((name, found.1))
+    }
+
+    /// Derived displacement over that of the plate.
+    fn displacement(&self) -> Option<Found> {
+        let plate = self.setup.plate?;
+        let out = |one: &&LeftOut| one.parts.contains(&Part::Flow);
+        if let Some(derived) = self.evaluated.derived {
+            return Some(match self.lie(&[Part::Flow]) {
+                Some(why) => Err(why),
+                None => Ok(Uncertain {
+                    value: derived.value / plate,
+                    standard: derived.standard / plate,
+                }),
+            });
+        }
+        // Only where leaving points out is why there is none.
+        let one = self.left_out.iter().find(out)?;
+        (self.setup.subject != Subject::Transmission).then(|| Err(one.words(self.setup.subject)))
     }
 }
 
-fn run_judged(
-    sheet: &BenchSheet,
-    setup: &Setup,
-    points: &[Point],
-    evaluated: &Evaluated,
-) -> Vec<Judged> {
+/// The limits of the run as a whole. Where the manual limits a figure at points or along a curve, its common practice is silent.
+fn run_judged(run: &Run, accepted: &[Accepted]) -> Vec<Judged> {
+    let Run {
+        sheet,
+        points,
+        evaluated,
+        ..
+    } = run;
     let mut judged = Vec::new();
-    let mut judge = |what: Measurand, words: String, figure: Option<Uncertain>| {
-        let limits = limits(sheet, what);
-        let decision = figure.and_then(|figure| decide(figure, &limits));
-        judged.extend(decision.map(|decision| Judged {
-            words,
-            unit: Unit::Percent,
-            figure,
-            limits: Some(limits),
-            decision,
-        }));
+    let mut judge = |what: Measurand, words: String, found: Option<Found>| {
+        let limited = match what {
+            Measurand::Volumetric => Some(Limited::Volumetric),
+            Measurand::Overall => Some(Limited::Overall),
+            Measurand::CaseLeakage => Some(Limited::CaseLeakage),
+            Measurand::Displacement => None,
+        };
+        let has_own = sheet
+            .acceptance
+            .iter()
+            .zip(accepted)
+            .any(|(limit, found)| Some(limit.of) == limited && found.judged.is_ok());
+        let Some(limits) = limits(sheet, what, has_own) else {
+            return;
+        };
+        let unit = Unit::Percent;
+        judged.extend(match found {
+            None => None,
+            Some(Err(why)) => Some(Judged::open(words, unit, limits, why)),
+            Some(Ok(figure)) => decide(figure, &limits).map(|decision| Judged {
+                words,
+                unit,
+                figure: Some(figure),
+                limits: Some(limits),
+                decision,
+                why: String::new(),
+                span: None,
+            }),
+        });
     };
     let rated = rated_point(sheet, points);
-    let at_rated = |quantity| {
-        let at = rated?;
-        evaluated.points.get(at)?.get(&quantity).copied()
-    };
+    let at_rated = |quantity| run.figure(rated?, quantity);
     let name = rated.map_or(String::new(), |at| points[at].name.clone());
     judge(
         Measurand::Volumetric,
         format!("Volumetric efficiency at point {name}, nearest to the rated one"),
         at_rated(Quantity::Volumetric),
     );
-    let best = evaluated
-        .points
-        .iter()
-        .enumerate()
-        .filter_map(|(at, figures)| Some((at, *figures.get(&Quantity::Overall)?)))
-        .max_by(|a, b| a.1.value.total_cmp(&b.1.value));
-    let best_name = best.map_or(String::new(), |(at, _)| points[at].name.clone());
+    let (best_name, best) = run.best().unzip();
     judge(
         Measurand::Overall,
-        format!("Best overall efficiency, at point {best_name}"),
-        best.map(|(_, figure)| figure),
+        format!("Best overall efficiency{}", best_name.unwrap_or_default()),
+        best,
     );
     let flow = sheet
         .head(Head::RatedSpeed)
@@ -255,31 +415,26 @@ fn run_judged(
         .map(|(speed, volume)| theoretical_flow(volume, speed));
     let leakage = at_rated(Quantity::CaseLeakage)
         .zip(flow)
-        .map(|(leakage, flow)| Uncertain {
-            value: leakage.value / flow,
-            standard: leakage.standard / flow,
+        .map(|(leakage, flow)| {
+            leakage.map(|leakage| Uncertain {
+                value: leakage.value / flow,
+                standard: leakage.standard / flow,
+            })
         });
     judge(
         Measurand::CaseLeakage,
         format!("Case leakage at point {name}, of the rated flow"),
         leakage,
     );
-    let displacement = evaluated
-        .derived
-        .zip(setup.plate)
-        .map(|(derived, plate)| Uncertain {
-            value: derived.value / plate,
-            standard: derived.standard / plate,
-        });
     judge(
         Measurand::Displacement,
         "Derived displacement over that of the plate".to_owned(),
-        displacement,
+        run.displacement(),
     );
     judged
 }
 
-/// The point that stands for the rated one.
+/// The point that stands for the rated one; one that counts before one that is left out.
 fn rated_point(sheet: &BenchSheet, points: &[Point]) -> Option<usize> {
     let speed = sheet.head(Head::RatedSpeed)?;
     let pressure = sheet.head(Head::RatedPressure)?;
@@ -289,7 +444,8 @@ fn rated_point(sheet: &BenchSheet, points: &[Point]) -> Option<usize> {
         .filter_map(|(at, point)| {
             let n = (point.means.get(Channel::Speed)? / speed - 1.0).abs();
             let dp = (point.means.difference()? / pressure - 1.0).abs();
-            (n <= NEAR_RATED && dp <= NEAR_RATED).then_some((at, n + dp))
+            let out = if point.left_out.is_empty() { 0.0 } else { 1.0 };
+            (n <= NEAR_RATED && dp <= NEAR_RATED).then_some((at, n + dp + out))
         })
         .min_by(|a, b| a.1.total_cmp(&b.1))
         .map(|(at, _)| at)
@@ -334,6 +490,8 @@ fn item_judged(
             } else {
                 Decision::Fail
             },
+            why: String::new(),
+            span: None,
         }),
         Entry::Figure(unit) => {
             let value = entry.found.value?.base_of(unit.kind())?;
@@ -358,6 +516,8 @@ fn item_judged(
                 figure: Some(figure),
                 decision: decide(figure, &limits)?,
                 limits: Some(limits),
+                why: String::new(),
+                span: None,
             })
         }
     }
@@ -422,6 +582,8 @@ fn relations(sheet: &BenchSheet) -> Vec<Judged> {
             figure: Some(figure),
             limits: Some(limits),
             decision,
+            why: String::new(),
+            span: None,
         }));
     };
     // Two readings of one gauge: its own error falls out of their difference, the needle's stays. A quarter of the doubt of one.
@@ -468,7 +630,14 @@ fn relations(sheet: &BenchSheet) -> Vec<Judged> {
     judged
 }
 
-fn proposals(sheet: &BenchSheet, evaluated: &Evaluated, losses: &LossFit) -> Vec<Proposal> {
+/// What the profile may take over; nothing that rests on an instrument that lies.
+fn proposals(
+    sheet: &BenchSheet,
+    evaluated: &Evaluated,
+    losses: &LossFit,
+    left_out: &[LeftOut],
+) -> Vec<Proposal> {
+    let is_sound = |part: Part| lies(left_out, &[part]).is_none();
     let mut found = Vec::new();
     let mut propose = |id, value: f64, unit, standard: f64| {
         if value > 0.0
@@ -495,7 +664,7 @@ fn proposals(sheet: &BenchSheet, evaluated: &Evaluated, losses: &LossFit) -> Vec
     let stroke = sheet
         .head(Head::Stroke)
         .map_or(1.0, |percent| percent / 100.0);
-    if let Some(derived) = evaluated.derived {
+    if let Some(derived) = evaluated.derived.filter(|_| is_sound(Part::Flow)) {
         let (value, u) = (derived.value / stroke, derived.standard / stroke);
         propose(volume, value, Unit::CubicCentimetrePerRevolution, u);
     }
@@ -503,6 +672,7 @@ fn proposals(sheet: &BenchSheet, evaluated: &Evaluated, losses: &LossFit) -> Vec
         .case
         .as_ref()
         .ok()
+        .filter(|_| is_sound(Part::Case))
         .and_then(|fit| fit.get(Loss::Case))
     {
         propose(
@@ -516,6 +686,7 @@ fn proposals(sheet: &BenchSheet, evaluated: &Evaluated, losses: &LossFit) -> Vec
         .flow
         .as_ref()
         .ok()
+        .filter(|_| is_sound(Part::Flow))
         .and_then(|fit| fit.get(Loss::Laminar))
     {
         // What a turbulent share adds at the pressure where it is told.
