@@ -5,10 +5,10 @@ mod record_support;
 
 use lowside::assessment::Assessment;
 use lowside::call::put_back;
-use lowside::quantity::{DecimalMark, UnitPrefs};
+use lowside::quantity::{DecimalMark, Measure, Typed, Unit as QuantityUnit, UnitPrefs};
 use lowside::ranking::Session;
 use lowside::readings::instrument::{Instrument, usual_instruments};
-use lowside::readings::{Reading, Seen};
+use lowside::readings::{JugCatch, Port, Reading, Seen};
 use lowside::record::{Closing, Export, PutBack, Visit};
 use lowside::report::{Report, Sheet, Subject, Sure, csv, record_sum};
 use lowside::unit::Unit;
@@ -103,6 +103,35 @@ fn every_reading_stands_with_window_source_and_instrument() {
         assert!(text.contains(words), "{words:?} is not in\n{text}");
     }
     assert!(report.groups.iter().all(|group| !group.oil.is_empty()));
+}
+
+#[test]
+fn a_jug_is_told_with_its_litres_and_seconds_as_long_as_its_figure_stands() {
+    let mut case = demo(1);
+    let reading = &mut case.visit.readings[0];
+    reading.port = Port::MotorDrain;
+    let jug = JugCatch {
+        volume: Typed::shown(2.0, QuantityUnit::Litre, 1),
+        time: Typed::shown(31.0, QuantityUnit::Second, 0),
+    };
+    let flow = jug.flow().expect("a flow").value;
+    reading.seen = Some(Seen::Value { value: flow });
+    case.visit.caught.insert(reading.id.clone(), jug);
+    case.assessment = assessed(&case.unit, &case.visit, &case.instruments);
+    let row = |case: &Case| case.report().groups[0].rows[0].clone();
+    let told = row(&case).instrument;
+    assert!(
+        told.starts_with("jug and watch: 2") && told.contains("in 31"),
+        "{told}"
+    );
+    // The spread that the ranking takes is that of this jug: marks, level and watch of 2 L in 31 s, 3.2 % of 3.87 L/min.
+    let spread = case.assessment.windows[0].instrument;
+    assert!((spread - 0.1221).abs() < 0.0005, "{spread}");
+
+    let other = Measure::new(5.0, QuantityUnit::LitrePerMinute).expect("a flow");
+    case.visit.readings[0].seen = Some(Seen::Value { value: other });
+    let told = row(&case).instrument;
+    assert!(!told.contains("jug and watch"), "{told}");
 }
 
 #[test]
