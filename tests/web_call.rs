@@ -11,6 +11,8 @@ mod next;
 mod screen;
 #[path = "web_call/sides.rs"]
 mod sides;
+#[path = "web_call/watch.rs"]
+mod watch;
 
 use lowside::readings::{Doing, Port, Seen};
 use screen::{Screen, bar};

@@ -13,6 +13,7 @@ mod electrics;
 mod facts;
 mod first_look;
 mod held;
+mod help;
 mod lines;
 mod lookup;
 #[cfg(test)]
@@ -20,6 +21,7 @@ mod tests;
 mod yields;
 
 pub use facts::{COMMON, facts, hazard};
+pub use help::{CheckHelp, help};
 pub use lookup::{for_condition, for_reading};
 pub use yields::{Idle, Yield};
 

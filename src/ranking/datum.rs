@@ -6,8 +6,9 @@ use super::belief::Belief;
 use crate::machine::Warmth;
 use crate::math;
 use crate::readings::instrument::Instrument;
-use crate::readings::{Condition, Doing, Path, Port, Reading, Rigging, Seen};
+use crate::readings::{Condition, Doing, JugCatch, Path, Port, Reading, Rigging, Seen};
 use crate::unit::{FigureId, Paths, Unit};
+use std::collections::BTreeMap;
 
 /// What kind of statement a datum makes.
 #[derive(Clone, Debug, PartialEq)]
@@ -132,6 +133,8 @@ pub struct Data {
     pub groups: usize,
     /// Port and readings of each group.
     pub group_ports: Vec<Port>,
+    /// Readings by index that a jug gave, with how sure its litres and seconds make them.
+    pub caught: BTreeMap<usize, Accuracy>,
     /// What the ranking takes for granted.
     pub belief: Belief,
 }
@@ -234,6 +237,25 @@ pub fn gather_with(
     instruments: &[Instrument],
     belief: Belief,
 ) -> Data {
+    gather_caught(
+        unit,
+        readings,
+        riggings,
+        instruments,
+        &BTreeMap::new(),
+        belief,
+    )
+}
+
+/// As [`gather_with`], with what was caught in a jug for a flow, by reading id: such a reading is as sure as its litres and seconds.
+pub fn gather_caught(
+    unit: &Unit,
+    readings: &[Reading],
+    riggings: &[Rigging],
+    instruments: &[Instrument],
+    caught: &BTreeMap<String, JugCatch>,
+    belief: Belief,
+) -> Data {
     let mut out = Data {
         belief,
         ..Data::default()
@@ -268,7 +290,17 @@ pub fn gather_with(
         let Some((says, value, swing)) = statement(seen, &mut out.conditions) else {
             continue;
         };
-        let a = accuracy(instrument, reading.port, value);
+        let made = caught.get(&reading.id).and_then(|jug| jug.behind(reading));
+        let a = match made {
+            Some(made) => Accuracy {
+                bias: made.bias,
+                own: made.reading.max(1e-6),
+            },
+            None => accuracy(instrument, reading.port, value),
+        };
+        if made.is_some() {
+            out.caught.insert(index, a);
+        }
         let key = group_key(reading, riggings);
         let gauge = match instrument {
             Some(i) => i.id.clone(),

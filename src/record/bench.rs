@@ -3,6 +3,7 @@
 use super::check::{self, Checked};
 use super::limits::ENTRIES;
 use crate::bench::stand::BenchSheet;
+use crate::bench::stand::acceptance::{LIMITS, Part};
 use crate::bench::stand::items::{Entry, item};
 use crate::bench::stand::sheet::ROWS;
 use crate::quantity::Typed;
@@ -52,6 +53,21 @@ fn figures(sheet: &mut BenchSheet) -> Vec<(String, &mut Typed, Asked)> {
             all.push(("limits".to_owned(), typed, asked(Unit::Percent, 0.0, 200.0)));
         }
     }
+    for (at, limit) in sheet.acceptance.iter_mut().enumerate() {
+        let of = limit.of;
+        // One field at a time can be lent out to be written.
+        let fields = [
+            (Part::Speed, &mut limit.speed),
+            (Part::From, &mut limit.from),
+            (Part::To, &mut limit.to),
+            (Part::Limit, &mut limit.limit),
+            (Part::LimitTo, &mut limit.limit_to),
+        ];
+        for (part, typed) in fields {
+            let (unit, low, high) = part.asks(of);
+            all.push((format!("acceptance[{at}]"), typed, asked(unit, low, high)));
+        }
+    }
     all
 }
 
@@ -85,6 +101,18 @@ pub(super) fn check(path: &str, sheet: &mut BenchSheet) -> Checked {
     for limit in sheet.limits.values_mut() {
         check::line(&format!("{path}.limits"), "from", &mut limit.from)?;
     }
+    check::count(
+        &format!("{path}.acceptance"),
+        sheet.acceptance.len(),
+        LIMITS,
+    )?;
+    let mut limits = BTreeSet::new();
+    for (index, limit) in sheet.acceptance.iter_mut().enumerate() {
+        let path = format!("{path}.acceptance[{index}]");
+        check::id_once(&path, &limit.id, &mut limits)?;
+        check::line(&path, "point", &mut limit.point)?;
+        check::line(&path, "source", &mut limit.source)?;
+    }
     if let Some(when) = &mut sheet.taken_over {
         check::line(path, "taken_over", when)?;
     }
@@ -106,6 +134,7 @@ pub(super) fn mend(sheet: &mut BenchSheet) {
 #[cfg(all(test, not(target_arch = "wasm32")))]
 mod tests {
     use super::*;
+    use crate::bench::stand::acceptance::{Acceptance, Limited};
     use crate::bench::stand::{Channel, Row};
 
     fn sheet(speed: f64) -> BenchSheet {
@@ -129,6 +158,40 @@ mod tests {
         mend(&mut wrong);
         assert!(check("visit.bench", &mut wrong).is_ok());
         assert_eq!(wrong.rows[0].cells[&Channel::Speed].typed, "1000000");
+    }
+
+    #[test]
+    fn limits_along_curves_are_kept_and_held_to_their_ranges() {
+        let typed = |value: f64, unit: Unit| Typed {
+            typed: format!("{value}"),
+            value: Some(Measure::literal(value, unit)),
+        };
+        let mut kept = sheet(1500.0);
+        kept.acceptance.push(Acceptance {
+            id: "limit-1".to_owned(),
+            of: Limited::CaseLeakage,
+            limit: typed(6.0, Unit::LitrePerMinute),
+            ..Acceptance::default()
+        });
+        let text = serde_json::to_string(&kept).expect("written");
+        let back: BenchSheet = serde_json::from_str(&text).expect("read");
+        assert_eq!(back, kept);
+        assert!(check("visit.bench", &mut kept).is_ok());
+        // A limit of leakage under an efficiency, as no screen writes it.
+        kept.acceptance[0].of = Limited::Overall;
+        let why = check("visit.bench", &mut kept).expect_err("another kind");
+        assert!(
+            why.to_string().contains("visit.bench.acceptance[0]"),
+            "{why}"
+        );
+        mend(&mut kept);
+        assert!(check("visit.bench", &mut kept).is_ok());
+        assert_eq!(kept.acceptance[0].limit.typed, "6");
+        kept.acceptance.push(kept.acceptance[0].clone());
+        assert!(check("visit.bench", &mut kept).is_err(), "one id twice");
+        // Sheets of before have none.
+        let old: BenchSheet = serde_json::from_str("{}").expect("read");
+        assert!(old.acceptance.is_empty());
     }
 
     #[test]

@@ -323,6 +323,7 @@ pub(super) fn visit(path: &str, visit: &mut Visit) -> Checked {
     riggings(path, &visit.riggings)?;
     readings(path, &mut visit.readings)?;
     earlier(path, visit)?;
+    super::jug::check(path, visit)?;
     headings(path, visit)?;
     count(&format!("{path}.made"), visit.made.len(), ENTRIES)?;
     for check in &visit.made {

@@ -65,6 +65,7 @@ pub(super) fn visit(visit: &Visit) -> Visit {
     visit.tracking.iter_mut().for_each(super::tracking::mend);
     visit.yard.iter_mut().for_each(super::yard::mend);
     super::yard::mend_hours(&mut visit.hours);
+    super::jug::mend(&mut visit);
     visit
 }
 

@@ -16,6 +16,7 @@ mod error;
 mod export;
 mod id;
 mod import;
+mod jug;
 pub mod limits;
 mod mend;
 pub mod migrate;

@@ -101,6 +101,9 @@ pub struct Settings {
     /// Order of the list of units.
     #[serde(skip_serializing_if = "UnitOrder::is_usual")]
     pub unit_order: UnitOrder,
+    /// Large keys of the app's own under the screen while a figure is entered.
+    #[serde(skip_serializing_if = "std::ops::Not::not")]
+    pub own_keys: bool,
     /// Instruments of the shop.
     pub instruments: Vec<Instrument>,
     /// First-run flags.

@@ -1,7 +1,7 @@
 //! A visit: one call to one unit, as it is kept.
 
 use crate::bench::stand::BenchSheet;
-use crate::readings::{Reading, Rigging, Seen};
+use crate::readings::{JugCatch, Reading, Rigging, Seen};
 use crate::tracking::TrackingSheet;
 use crate::yard::YardSheet;
 use serde::{Deserialize, Serialize};
@@ -48,6 +48,9 @@ pub struct Visit {
     /// Earlier values of readings that were taken again, by reading id, oldest first.
     #[serde(skip_serializing_if = "BTreeMap::is_empty")]
     pub earlier: BTreeMap<String, Vec<Earlier>>,
+    /// What was caught in a jug for a flow, by reading id.
+    #[serde(skip_serializing_if = "BTreeMap::is_empty")]
+    pub caught: BTreeMap<String, JugCatch>,
     /// What is typed in the heading of a reading and cannot be read as a figure, by reading id and field. It comes back after
     /// a reload like any other text.
     #[serde(skip_serializing_if = "BTreeMap::is_empty")]
@@ -149,6 +152,13 @@ pub struct Closing {
 }
 
 impl Visit {
+    /// What was caught for a reading, where its figure is still the one that the jug gave.
+    #[must_use]
+    pub fn caught_for(&self, reading: &Reading) -> Option<&JugCatch> {
+        let caught = self.caught.get(&reading.id)?;
+        caught.behind(reading).map(|_| caught)
+    }
+
     /// Hour meter, h, where it can be read.
     #[must_use]
     pub fn hour_meter(&self) -> Option<f64> {
@@ -176,6 +186,7 @@ impl Visit {
             && (self.alone, self.after_repair) == (other.alone, other.after_repair)
             && self.observations == other.observations
             && self.riggings == other.riggings
+            && self.caught == other.caught
             && self.readings.len() == other.readings.len()
             && self
                 .readings

@@ -3,7 +3,8 @@
 use super::{Subject, one_line};
 use crate::assessment::{Standing, Window, WindowSource};
 use crate::call::words;
-use crate::readings::{Condition, Reading, Seen};
+use crate::quantity::Typed;
+use crate::readings::{Condition, JugCatch, Reading, Seen};
 
 /// Readings of one condition.
 #[derive(Clone, Debug, PartialEq)]
@@ -68,6 +69,9 @@ pub(super) fn window<'a>(subject: &Subject<'a>, reading: &Reading) -> Option<&'a
 
 /// The instrument that a reading was taken with, as the shop calls it.
 pub(super) fn instrument(subject: &Subject, reading: &Reading) -> Option<String> {
+    if let Some(caught) = subject.visit.caught_for(reading) {
+        return Some(jug(caught, subject));
+    }
     let rigging = subject
         .visit
         .riggings
@@ -78,6 +82,15 @@ pub(super) fn instrument(subject: &Subject, reading: &Reading) -> Option<String>
         .iter()
         .find(|instrument| instrument.id == rigging.instrument)?;
     Some(one_line(&instrument.name))
+}
+
+/// A jug, with what was caught and how long it took.
+fn jug(caught: &JugCatch, subject: &Subject) -> String {
+    let told = |typed: &Typed| typed.value.map(|value| subject.prefs.print(value));
+    match (told(&caught.volume), told(&caught.time)) {
+        (Some(volume), Some(time)) => format!("jug and watch: {volume} in {time}"),
+        _ => String::from("jug and watch"),
+    }
 }
 
 /// What was seen, in words; the text as typed where it is no reading.

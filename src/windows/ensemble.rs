@@ -7,7 +7,7 @@ use crate::circuit::Param;
 use crate::faults::{self, FaultId};
 use crate::machine::describe_basis;
 use crate::quantity::Measure;
-use crate::ranking::{Bench, Data, Node, accuracy, instrument_of, path_of};
+use crate::ranking::{Accuracy, Bench, Data, Node, accuracy, instrument_of, path_of};
 use crate::readings::instrument::Instrument;
 use crate::readings::{Condition, Doing, Path, Port, Reading, Rigging, Seen};
 use crate::unit::{FigureId, ManualWindow, Unit};
@@ -77,6 +77,7 @@ pub fn windows(
                 unit,
                 r,
                 data.condition_of[i],
+                data.caught.get(&i).copied(),
                 spreads.of(r).unwrap_or(&Spread::default()),
                 riggings,
                 instruments,
@@ -192,13 +193,14 @@ fn window(
     unit: &Unit,
     reading: &Reading,
     condition: usize,
+    caught: Option<Accuracy>,
     spread: &Spread,
     riggings: &[Rigging],
     instruments: &[Instrument],
     bench: &Bench,
     silent: Option<String>,
 ) -> Window {
-    let instrument = instrument_of(reading, riggings, instruments);
+    let instrument = instrument_of(reading, riggings, instruments).filter(|_| caught.is_none());
     let read = match &reading.seen {
         Some(Seen::Value { value }) => Some(value.base()),
         Some(Seen::Swing { low, high }) => Some(0.5 * (low.base() + high.base())),
@@ -211,7 +213,7 @@ fn window(
         quantile(&spread.values, 0.5),
         quantile(&spread.values, 0.975),
     );
-    let a = accuracy(instrument, reading.port, read.unwrap_or(middle));
+    let a = caught.unwrap_or_else(|| accuracy(instrument, reading.port, read.unwrap_or(middle)));
     let u = (a.bias * a.bias + a.own * a.own).sqrt();
     // Central 95 % of the machines, widened by the instrument in quadrature.
     let mut w = Window {

@@ -370,7 +370,17 @@ fn of_readings(
                 neutral(c) && c.engine == reading.condition.engine
             });
             let over = over.map_or(usual.charge, |(_, bar)| bar);
-            let flow = Uncertain::read(flow, Port::MotorDrain, instrument(reading));
+            let caught = visit
+                .caught_for(reading)
+                .and_then(|jug| jug.behind(reading));
+            let flow = match caught {
+                Some(made) => Uncertain {
+                    value: flow,
+                    own: made.reading,
+                    shared: made.bias,
+                },
+                None => Uncertain::read(flow, Port::MotorDrain, instrument(reading)),
+            };
             let is = wear::warm(unit, &reading.condition)
                 .map(|w| wear::drain(flow, over, &w, usual.powers.0));
             Some((is, with("drain", reading)))

@@ -5,8 +5,8 @@ use lowside::quantity::Typed;
 use lowside::quantity::{Kind, Measure};
 use lowside::readings::instrument::{Instrument, usual_instruments};
 use lowside::readings::{
-    Condition, Direction, Doing, EngineSpeed, Lever, OilTemperature, Path, Place, Port, Reading,
-    Rigging, Seen, SideNaming, Stroked,
+    Condition, Direction, Doing, EngineSpeed, JugCatch, Lever, OilTemperature, Path, Place, Port,
+    Reading, Rigging, Seen, SideNaming, Stroked,
 };
 use lowside::record::neutral::{AdjusterRow, Field};
 use lowside::record::{
@@ -334,6 +334,18 @@ impl Dice {
             visit.earlier.insert(id.clone(), vec![earlier]);
             let texts = [("oil".to_owned(), self.text(12))];
             visit.headings.insert(id, texts.into());
+        }
+        if let Some(reading) = visit.readings.last()
+            && self.one_in(3)
+        {
+            let jug = JugCatch {
+                volume: Typed::shown(2.0, lowside::quantity::Unit::Litre, 1),
+                time: Typed {
+                    typed: self.text(12),
+                    value: None,
+                },
+            };
+            visit.caught.insert(reading.id.clone(), jug);
         }
         if self.one_in(3) {
             visit.neutral = Some(self.neutral());

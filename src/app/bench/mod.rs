@@ -7,6 +7,7 @@ mod hand_over;
 mod head;
 mod items;
 mod layout;
+mod limits;
 mod paste;
 mod plot;
 mod results;

@@ -313,12 +313,8 @@ pub fn Pictures(props: &PicturesProps) -> Html {
             .map(|(v, u)| (v * 100.0, u * 100.0))
     });
     let overall = curves(&report.losses, &speeds, bar, |fit, n, dp, mu| {
-        let told = fit.foretell(n, dp, mu);
-        let ((v, uv), (h, uh)) = (told.volumetric?, told.hydro_mechanical?);
-        Some((
-            v * h * 100.0,
-            100.0 * (h * h * uv * uv + v * v * uh * uh).sqrt(),
-        ))
+        let (share, u) = fit.foretell(n, dp, mu).overall()?;
+        Some((share * 100.0, u * 100.0))
     });
     let lost = curves(&report.losses, &speeds, bar, |fit, n, dp, mu| {
         fit.foretell(n, dp, mu)
@@ -396,9 +392,7 @@ fn map(losses: &LossFit, prefs: &UnitPrefs, bar: f64) -> Html {
     let pressures = grid(covered.difference, 0.15);
     let cell = |n: f64, dp: f64| {
         let told = losses.foretell(n, dp, mu);
-        let (v, _) = told.volumetric?;
-        let (h, _) = told.hydro_mechanical?;
-        let share = v * h;
+        let (share, _) = told.overall()?;
         (0.0..=1.05)
             .contains(&share)
             .then_some((share, told.is_beyond))

@@ -1,16 +1,17 @@
 //! What the run comes to: verdict, displacement, efficiencies with their doubt, losses, balances.
 
 use super::codes;
+use super::limits::LimitsForm;
 use super::screen::{Edit, Told};
-use crate::app::parts::{Caution, Entry, Grade, MeasureField, Section, TextField};
+use crate::app::parts::{Caution, Grade, Section};
 use crate::bench::stand::analysis::Quantity;
 use crate::bench::stand::balance::OPEN;
 use crate::bench::stand::fit::{Fit, LossFit, NoFit, TurbulentShare};
 use crate::bench::stand::flaw::told;
-use crate::bench::stand::judge::{Decision, Measurand, TypedLimit};
+use crate::bench::stand::judge::Decision;
 use crate::bench::stand::report::Judged;
 use crate::bench::stand::{BenchReport, BenchSheet, LayoutGap, Subject, paper};
-use crate::quantity::{DecimalMark, Measure, Unit, UnitPrefs};
+use crate::quantity::{DecimalMark, Unit, UnitPrefs};
 use std::collections::BTreeSet;
 use std::rc::Rc;
 use yew::{Callback, Html, Properties, component, html};
@@ -37,7 +38,7 @@ pub fn Results(props: &ResultsProps) -> Html {
     html! { <>
         <Section id="bench-verdict" title="Verdict" {state} is_open=true>
             { judged(props, verdict) }
-            { limits(props) }
+            <LimitsForm sheet={props.sheet.clone()} told={props.told.clone()} prefs={props.prefs.clone()} on_edit={props.on_edit.clone()} />
         </Section>
         if !report.points.is_empty() {
             <Section id="bench-results" title="Efficiencies" is_open=true>
@@ -71,7 +72,7 @@ fn judged(props: &ResultsProps, verdict: Option<Decision>) -> Html {
             <ul class="bench-judged">
                 { for report.judged.iter().map(|judged| judged_row(judged, &props.prefs)) }
             </ul>
-            <p class="soft">{ "Guard band: the expanded uncertainty, coverage factor 2 (JCGM 106). Wrong passes and wrong fails have a chance of 2.5 % at most." }</p>
+            <p class="soft">{ "Guard band: the expanded uncertainty, coverage factor 2 (JCGM 106). Of each figure, a wrong pass or a wrong fail has a chance of 2.5 % at most." }</p>
         }
         if !report.left_out.is_empty() {
             <h3>{ "Points left out" }</h3>
@@ -93,31 +94,7 @@ fn judged(props: &ResultsProps, verdict: Option<Decision>) -> Html {
 }
 
 fn judged_row(judged: &Judged, prefs: &UnitPrefs) -> Html {
-    let base = judged.unit.kind().base_unit();
-    let is_share = judged.unit == Unit::Percent;
-    let value = judged.figure.map(|figure| {
-        if is_share {
-            codes::share(figure, prefs.mark())
-        } else {
-            codes::in_unit(figure.value, figure.expanded(), base, prefs)
-        }
-    });
-    let one = |value: f64| {
-        if is_share {
-            codes::plain(value * 100.0, Unit::Percent, prefs)
-        } else {
-            codes::plain(value, base, prefs)
-        }
-    };
-    let limits = judged.limits.as_ref().map(|limits| {
-        let span = match (limits.low, limits.high) {
-            (Some(low), Some(high)) => format!("{} to {}", one(low), one(high)),
-            (Some(low), None) => format!("{} and more", one(low)),
-            (None, Some(high)) => format!("{} and less", one(high)),
-            (None, None) => "none".to_owned(),
-        };
-        format!("allowed {span} ({})", limits.from)
-    });
+    let value = paper::figure_words(judged, prefs);
     let class = match judged.decision {
         Decision::Pass => "is-pass",
         Decision::Fail => "is-fail",
@@ -126,83 +103,10 @@ fn judged_row(judged: &Judged, prefs: &UnitPrefs) -> Html {
     html! {
         <li class={class}>
             <strong class="bench-decision">{ judged.decision.words() }</strong>
-            <span>{ &judged.words }{ value.map(|value| format!(": {value}")) }</span>
-            if let Some(limits) = limits { <span class="soft">{ limits }</span> }
+            <span>{ paper::what_words(judged, prefs) }{ value.map(|value| format!(": {value}")) }</span>
+            if let Some(limits) = paper::limits_words(judged, prefs) { <span class="soft">{ limits }</span> }
             if !judged.why.is_empty() { <span>{ format!("Because {}.", judged.why) }</span> }
         </li>
-    }
-}
-
-fn limits(props: &ResultsProps) -> Html {
-    let rows: [(Measurand, &str, &str); 4] = [
-        (
-            Measurand::Volumetric,
-            "Volumetric efficiency, rated",
-            "volumetric",
-        ),
-        (Measurand::Overall, "Best overall efficiency", "overall"),
-        (Measurand::CaseLeakage, "Case leakage of rated flow", "case"),
-        (
-            Measurand::Displacement,
-            "Displacement of the plate’s",
-            "displacement",
-        ),
-    ];
-    let field = |what: Measurand, code: &'static str, side: &'static str| {
-        let limit = props.sheet.limits.get(&what).cloned().unwrap_or_default();
-        let (typed, label) = match side {
-            "low" => (limit.low, "Lowest allowed"),
-            _ => (limit.high, "Highest allowed"),
-        };
-        let on_entry = props.on_edit.reform(move |typed: Entry| -> Edit {
-            Box::new(move |sheet| {
-                let limit = sheet.limits.entry(what).or_default();
-                if side == "low" {
-                    limit.low = typed;
-                } else {
-                    limit.high = typed;
-                }
-                if *limit == TypedLimit::default() {
-                    sheet.limits.remove(&what);
-                }
-            })
-        });
-        html! {
-            <MeasureField
-                id={format!("bench-limit-{code}-{side}")}
-                {label}
-                unit={Unit::Percent}
-                typed={typed.typed}
-                value={typed.value}
-                range={Some((Measure::literal(0.0, Unit::Percent), Measure::literal(200.0, Unit::Percent)))}
-                mark={props.prefs.mark()}
-                {on_entry}
-                testid={format!("bench-limit-{code}-{side}")}
-            />
-        }
-    };
-    html! {
-        <details class="advice" data-testid="bench-limits">
-            <summary>{ "Limits of the run: the unit’s manual or the customer; common practice where empty" }</summary>
-            <div class="stack">
-                { for rows.into_iter().map(|(what, words, code)| {
-                    let from = props.sheet.limits.get(&what).map(|limit| limit.from.clone()).unwrap_or_default();
-                    let on_from = props.on_edit.reform(move |text: String| -> Edit {
-                        Box::new(move |sheet| sheet.limits.entry(what).or_default().from = text)
-                    });
-                    html! {
-                        <fieldset class="bench-meter" key={code}>
-                            <legend>{ words }</legend>
-                            <div class="bench-fields">
-                                { field(what, code, "low") }
-                                { field(what, code, "high") }
-                                <TextField id={format!("bench-limit-{code}-from")} label="From" value={from} on_input={on_from} />
-                            </div>
-                        </fieldset>
-                    }
-                }) }
-            </div>
-        </details>
     }
 }
 
@@ -410,7 +314,7 @@ fn fit(what: &'static str, fit: &Result<Fit, NoFit>, mark: DecimalMark) -> Html 
         Ok(fit) => {
             let rows = fit.losses.iter().filter_map(|loss| {
                 let (value, u) = fit.get(*loss)?;
-                let text = scientific(value, 2.0 * u, loss.unit(), mark);
+                let text = paper::coefficient(value, 2.0 * u, loss.unit(), mark);
                 Some(html! { <li><span>{ loss.words() }</span><strong>{ text }</strong></li> })
             });
             let freedom = fit.by_chance.freedom;
@@ -429,19 +333,6 @@ fn fit(what: &'static str, fit: &Result<Fit, NoFit>, mark: DecimalMark) -> Html 
         }
     };
     html! { <div data-testid={format!("bench-fit-{}", what.to_lowercase().replace(' ', "-"))}><h3>{ what }</h3>{ body }</div> }
-}
-
-/// A coefficient with its doubt, with as many decimals as two digits of the doubt need.
-fn scientific(value: f64, expanded: f64, unit: &str, mark: DecimalMark) -> String {
-    let (factor, prefix) = if value.abs() >= 0.1 || unit.starts_with("cm³") {
-        (1.0, "")
-    } else if value.abs() >= 1e-4 {
-        (1e3, "thousandths of ")
-    } else {
-        (1e6, "millionths of ")
-    };
-    let unit = format!("{prefix}{unit}");
-    paper::number(value * factor, expanded * factor, &unit, mark)
 }
 
 /// What a grown loss points to.

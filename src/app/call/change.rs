@@ -5,7 +5,7 @@ use super::group::settled;
 use super::put_back;
 use super::rigging::{rig, rigging_on, swap};
 use super::side::Wanted;
-use crate::readings::{Condition, Path, Port, Reading, Seen};
+use crate::readings::{Condition, JugCatch, Path, Port, Reading, Seen};
 use crate::record::{Answer, Closing, Earlier, PutBack, Visit};
 
 /// One edit.
@@ -51,6 +51,17 @@ pub enum Change {
     },
     /// Precaution facts ticked for a key; none left: the entry goes.
     Precautions(String, Vec<String>),
+    /// The engine was stopped and started again: every tick lapses.
+    Restarted,
+    /// What was caught in a jug for a reading, with the text and the answer that it makes.
+    Caught {
+        /// Reading id.
+        id: String,
+        /// Litres and seconds.
+        jug: JugCatch,
+        /// Text and answer; none where the catch makes no flow yet, and the reading stays as it is.
+        said: Option<(String, Option<Seen>)>,
+    },
     /// A reading is taken again: the old value stays beside it.
     Retake {
         /// Reading id.
@@ -91,6 +102,8 @@ impl Change {
             Change::Condition(..) => String::from("condition"),
             Change::Rig { .. } => String::from("gauge"),
             Change::Precautions(..) => String::from("precaution"),
+            Change::Restarted => String::from("engine started again"),
+            Change::Caught { .. } => String::from("jug"),
             Change::Retake { .. } => String::from("reading taken again"),
             Change::Heading(..) => String::from("condition"),
             Change::Made(..) => String::from("check made"),
@@ -120,6 +133,7 @@ impl Change {
                 id == then && typing(seen) && typing(and_then)
             }
             (Change::Note(id, _), Change::Note(then, _)) => id == then,
+            (Change::Caught { id, .. }, Change::Caught { id: then, .. }) => id == then,
             (
                 Change::Condition(ids, _) | Change::Heading(ids, ..),
                 Change::Condition(then, _) | Change::Heading(then, ..),
@@ -155,6 +169,7 @@ pub fn apply(visit: &Visit, change: &Change) -> Visit {
         Change::Remove(id) => {
             next.readings.retain(|reading| reading.id != *id);
             next.earlier.remove(id);
+            next.caught.remove(id);
             next.headings.remove(id);
         }
         Change::Entry { id, typed, seen } => {
@@ -204,6 +219,8 @@ pub fn apply(visit: &Visit, change: &Change) -> Visit {
         Change::Precautions(key, facts) => {
             next.precautions.insert(key.clone(), facts.clone());
         }
+        Change::Restarted => next.precautions.clear(),
+        Change::Caught { id, jug, said } => caught(&mut next, id, jug, said.as_ref()),
         Change::Retake { id, when, same } => retake(&mut next, id, when, *same),
         Change::Heading(ids, field, text) => heading(&mut next, ids, field, text),
         Change::Made(check, is_made) => {
@@ -232,6 +249,22 @@ pub fn apply(visit: &Visit, change: &Change) -> Visit {
         }
     }
     next
+}
+
+/// Keeps the litres and seconds, and the flow that they make.
+fn caught(visit: &mut Visit, id: &str, jug: &JugCatch, said: Option<&(String, Option<Seen>)>) {
+    if let Some((typed, seen)) = said {
+        put_back::lapse(visit, id, seen.as_ref());
+        if let Some(reading) = find(visit, id) {
+            reading.typed.clone_from(typed);
+            reading.seen.clone_from(seen);
+        }
+    }
+    if jug.is_empty() {
+        visit.caught.remove(id);
+    } else {
+        visit.caught.insert(id.to_owned(), jug.clone());
+    }
 }
 
 /// Keeps the value beside the reading; empties the field where it is read anew.

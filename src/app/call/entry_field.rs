@@ -3,11 +3,12 @@
 use super::change::Change;
 use super::entry::{self, Mode, Said};
 use super::entry_modes as modes;
+use super::jug::JugPanel;
 use super::last_time::LastTime;
 use crate::app::parts::Entry;
 use crate::quantity::{Kind, UnitPrefs};
 use crate::readings::instrument::Instrument;
-use crate::readings::{Port, Reading};
+use crate::readings::{JugCatch, Port, Reading, jug};
 use yew::{AttrValue, Callback, Html, MouseEvent, Properties, component, html, use_state};
 
 /// Properties of [`EntryField`].
@@ -23,6 +24,9 @@ pub struct EntryFieldProps {
     pub number: usize,
     /// Instrument on the port, where one is said.
     pub instrument: Option<Instrument>,
+    /// What was caught in a jug for it.
+    #[prop_or_default]
+    pub caught: JugCatch,
     /// The same reading on an earlier call.
     #[prop_or_default]
     pub last: Option<LastTime>,
@@ -75,6 +79,16 @@ pub fn EntryField(props: &EntryFieldProps) -> Html {
                 },
             } }
             { keys(props, mode, &say) }
+            if mode == Mode::Value && jug::reads(props.reading.port) {
+                <JugPanel
+                    reading={props.reading.clone()}
+                    short={props.short.clone()}
+                    number={props.number}
+                    caught={props.caught.clone()}
+                    prefs={props.prefs.clone()}
+                    on_change={props.on_change.clone()}
+                />
+            }
         </div>
     }
 }

@@ -1,11 +1,11 @@
 //! What must be so before a value can be typed: precautions of hazardous checks, tick by tick. A tick names a fact; it lapses
-//! with the condition, and after a quarter of an hour. Hazard 3 stays closed for somebody alone, and a machine that keeps
+//! with the condition, with a restart of the engine, and after a quarter of an hour. Hazard 3 stays closed for somebody alone, and a machine that keeps
 //! going in neutral is not tested at all.
 
 use super::alerts::runs_on;
 use super::entry;
 use crate::checks::{self, Check};
-use crate::readings::{Condition, Doing, Port, Reading};
+use crate::readings::{Condition, Direction, Doing, Port, Reading};
 use crate::record::Visit;
 use yew::AttrValue;
 
@@ -36,6 +36,8 @@ pub struct Gate {
     pub check: &'static Check,
     /// What the machine does.
     pub doing: Doing,
+    /// Which way it pushes.
+    pub direction: Direction,
     /// Ports of the group that the check guards.
     pub ports: Vec<Port>,
     /// Facts to tick.
@@ -51,7 +53,8 @@ pub struct Gate {
 impl PartialEq for Gate {
     fn eq(&self, other: &Self) -> bool {
         self.check.id == other.check.id
-            && (self.doing, self.fresh, self.barred) == (other.doing, other.fresh, other.barred)
+            && self.place() == other.place()
+            && (self.fresh, self.barred) == (other.fresh, other.barred)
             && (&self.ports, &self.ticked) == (&other.ports, &other.ticked)
     }
 }
@@ -87,7 +90,7 @@ impl Gate {
             .get(check.id)
             .map(Vec::as_slice)
             .unwrap_or_default();
-        let at = stamped(kept, condition.doing);
+        let at = stamped(kept, condition.doing, condition.direction);
         let ticked = match at {
             Some(_) => kept
                 .iter()
@@ -99,12 +102,18 @@ impl Gate {
         Gate {
             check,
             doing: condition.doing,
+            direction: condition.direction,
             ports: vec![port],
             facts,
             ticked,
             fresh: at.is_some_and(|at| (0.0..HOLDS_MS).contains(&(now - at))),
             barred: barred(check, condition.doing, visit),
         }
+    }
+
+    /// Which round of ticks it is: another place has another one.
+    pub fn place(&self) -> (&'static str, String) {
+        place(self.check, self.doing, self.direction)
     }
 
     /// True where it is guarded by ticks and not only by advice.
@@ -132,15 +141,14 @@ impl Gate {
             ticked.push(fact.to_owned());
         }
         if !ticked.is_empty() {
-            ticked.insert(0, stamp(moment, self.doing));
+            ticked.insert(0, stamp(moment, self.doing, self.direction));
         }
         ticked
     }
 
     /// Why a reading at one of its ports is closed now; none where it is open. What was taken already stays open while its
     /// ticks stand, however old they are.
-    fn closes(&self, reading: &Reading) -> Option<&'static str> {
-        let is_empty = entry::is_open(reading);
+    fn closes(&self, is_empty: bool) -> Option<&'static str> {
         if is_empty && let Some(barred) = self.barred {
             return Some(match barred {
                 Barred::RunsOn => "Closed: it keeps going in neutral. Stop work.",
@@ -164,7 +172,16 @@ pub fn closes(gates: &[Gate], reading: &Reading) -> Option<AttrValue> {
     gates
         .iter()
         .filter(|gate| gate.ports.contains(&reading.port))
-        .find_map(|gate| gate.closes(reading))
+        .find_map(|gate| gate.closes(entry::is_open(reading)))
+        .map(AttrValue::from)
+}
+
+/// Why a reading cannot be taken now, whatever was written down of it before; none where it can.
+pub fn closes_now(gates: &[Gate], reading: &Reading) -> Option<AttrValue> {
+    gates
+        .iter()
+        .filter(|gate| gate.ports.contains(&reading.port))
+        .find_map(|gate| gate.closes(true))
         .map(AttrValue::from)
 }
 
@@ -184,21 +201,29 @@ fn barred(check: &Check, doing: Doing, visit: &Visit) -> Option<Barred> {
     }
 }
 
-/// Code of what the machine does, as it stands in a stamp.
-fn code(doing: Doing) -> String {
-    format!("{doing:?}")
+/// The round of ticks of a check in a condition.
+pub fn place(check: &Check, doing: Doing, direction: Direction) -> (&'static str, String) {
+    (check.id, code(doing, direction))
 }
 
-fn stamp(moment: &str, doing: Doing) -> String {
-    format!("{STAMP}{moment} for {}", code(doing))
+/// Code of what the machine does, as it stands in a stamp. What holds a machine that pushes forward does not hold it in reverse.
+pub fn code(doing: Doing, direction: Direction) -> String {
+    match (doing, direction) {
+        (Doing::Held, Direction::Reverse) => String::from("HeldReverse"),
+        _ => format!("{doing:?}"),
+    }
+}
+
+fn stamp(moment: &str, doing: Doing, direction: Direction) -> String {
+    format!("{STAMP}{moment} for {}", code(doing, direction))
 }
 
 /// When ticks were begun for this doing, ms since 1970; none where they are of another condition or bear no stamp.
-fn stamped(kept: &[String], doing: Doing) -> Option<f64> {
+fn stamped(kept: &[String], doing: Doing, direction: Direction) -> Option<f64> {
     let stamp = kept.iter().find_map(|fact| fact.strip_prefix(STAMP))?;
     let (moment, of) = stamp.split_once(" for ")?;
     let at = js_sys::Date::parse(moment);
-    (of == code(doing) && at.is_finite()).then_some(at)
+    (of == code(doing, direction) && at.is_finite()).then_some(at)
 }
 
 /// The ticks that lapse when readings move from one condition to another: those of the checks that guarded them, unless only

@@ -194,15 +194,16 @@ fn facts(props: &GatePanelProps) -> Html {
 /// A restart makes every tick void: the machine may stand differently now.
 fn restarted(props: &GatePanelProps) -> Html {
     let id = props.gate.check.id;
-    let on_click = props
-        .on_change
-        .reform(move |_: MouseEvent| Change::Precautions(id.to_owned(), Vec::new()));
+    let on_click = props.on_change.reform(|_: MouseEvent| Change::Restarted);
     html! {
         <button type="button" class="button is-quiet" onclick={on_click} data-testid={format!("untick-{id}")}>
-            { "Engine was started again: tick anew" }
+            { RESTARTED }
         </button>
     }
 }
+
+/// What the button says that takes every tick back.
+pub const RESTARTED: &str = "Engine was stopped and started again";
 
 /// For a held machine: seconds, heat, the pressure to stop at, and what is no stop.
 fn held(props: &GatePanelProps) -> Html {
@@ -254,7 +255,7 @@ pub fn rise_words(rise: f64, prefs: &UnitPrefs) -> String {
 }
 
 /// The pressure to stop at first: a share of the lowest setting that is known.
-fn stop_at(unit: &Unit, prefs: &UnitPrefs) -> String {
+pub fn stop_at(unit: &Unit, prefs: &UnitPrefs) -> String {
     let known = [
         (FigureId::LoopRelief, "loop relief"),
         (FigureId::Limiter, "pressure limiter"),

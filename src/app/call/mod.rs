@@ -10,6 +10,8 @@
 //! | [`close`] | the end of the call |
 //! | [`put_back`] | what has to be put back before a call is closed |
 //! | [`gate`] | precautions that open a hazardous reading |
+//! | [`watch`] | one needle at a time while the engine runs |
+//! | [`jug`], [`help`] | litres and seconds to a flow; how a reading is taken |
 //! | [`steady`], [`slices`] | what keeps a part from being drawn for nothing, and a long list from being drawn at one go |
 //! | [`map`] | the loop drawn with its ports |
 //! | [`causes`] | the ranking |
@@ -35,7 +37,9 @@ pub(in crate::app) mod gate;
 pub(in crate::app) mod gate_panel;
 mod group;
 mod hazard;
+mod help;
 mod history;
+mod jug;
 mod last_time;
 mod map;
 pub(in crate::app) mod mark;
@@ -58,6 +62,8 @@ mod slices;
 mod steady;
 mod taken;
 mod told;
+mod watch;
+mod watching;
 mod window_scale;
 
 pub use last_time::EarlierCalls;

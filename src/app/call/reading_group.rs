@@ -14,6 +14,7 @@ use super::reading_row::{ReadingRow, row_id};
 use super::rig;
 use super::side::Sides;
 use super::steady::Answer;
+use super::watching::watchable;
 use super::words;
 use crate::app::parts::{Caution, Grade};
 use crate::app::platform::clock;
@@ -37,6 +38,8 @@ pub struct ReadingGroupProps {
     pub editing: bool,
     /// Opens or closes the heading: the ids that it holds, none to close.
     pub on_edit: Callback<Vec<String>>,
+    /// Opens the watch view of these readings.
+    pub on_watch: Callback<Vec<String>>,
     /// Last answer of the engine.
     pub assessment: Option<Answer>,
     /// True while a newer one is being worked out.
@@ -44,7 +47,7 @@ pub struct ReadingGroupProps {
     /// Minutes since the screen was opened: ticks grow old.
     pub minute: u32,
     /// Checks whose precautions stand in full further up.
-    pub told: Vec<&'static str>,
+    pub told: Vec<(&'static str, String)>,
     /// Places whose cautions stand further up.
     pub told_places: Vec<Stands>,
     /// Ports that are there twice.
@@ -159,6 +162,7 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
                 chosen={props.chosen == Some(reading.port)}
                 unit={props.unit.clone()}
                 rigged={rig::on_port(reading, &props.visit, &props.instruments)}
+                caught={props.visit.caught.get(&reading.id).cloned().unwrap_or_default()}
                 before={props.visit.earlier.get(&reading.id).cloned().unwrap_or_default()}
                 instruments={props.instruments.clone()}
                 prefs={props.prefs.clone()}
@@ -209,10 +213,31 @@ pub fn ReadingGroup(props: &ReadingGroupProps) -> Html {
             { alone(props) }
             { cautions::all(&new_places(props)) }
             { advice(&gates) }
+            { watch(props, &readings, &gates) }
             <ol class="readings">
                 { for rows }
             </ol>
         </section>
+    }
+}
+
+/// To the watch view, once what must be so before it is ticked.
+fn watch(props: &ReadingGroupProps, readings: &[(usize, &Reading)], gates: &[Gate]) -> Html {
+    let readings: Vec<&Reading> = readings.iter().map(|(_, reading)| *reading).collect();
+    let ids = watchable(&readings, gates);
+    if ids.is_empty() || props.editing {
+        return Html::default();
+    }
+    let on_click = props.on_watch.reform(move |_: MouseEvent| ids.clone());
+    html! {
+        <button
+            type="button"
+            class="button is-wide group-watch"
+            data-testid={format!("watch-{}", props.at.first().copied().unwrap_or_default())}
+            onclick={on_click}
+        >
+            { "Watch while it runs" }
+        </button>
     }
 }
 
@@ -239,7 +264,7 @@ fn panel(props: &ReadingGroupProps, gate: &Gate, hold: Option<(f64, f64)>, first
         <li class="gate-item" key={format!("check-{}", gate.check.id)} id={asks.then(|| gate_id(first))} tabindex={asks.then_some("-1")}>
             <GatePanel
                 gate={gate.clone()}
-                told={props.told.contains(&gate.check.id)}
+                told={props.told.contains(&gate.place())}
                 unit={props.unit.clone()}
                 prefs={props.prefs.clone()}
                 {hold}

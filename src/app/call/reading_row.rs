@@ -4,6 +4,7 @@ use super::cautions;
 use super::change::Change;
 use super::entry::{self, Mode};
 use super::entry_field::EntryField;
+use super::help;
 use super::last_time::{self, LastTime};
 use super::mark;
 use super::retake;
@@ -15,7 +16,7 @@ use crate::app::parts::{Choice, Confirm, Opt, TextField};
 use crate::assessment::{Standing, Window};
 use crate::quantity::UnitPrefs;
 use crate::readings::instrument::Instrument;
-use crate::readings::{Direction, Path, Reading};
+use crate::readings::{Direction, JugCatch, Path, Reading};
 use crate::record::Earlier;
 use crate::unit::{PortNote, Unit};
 use std::rc::Rc;
@@ -46,6 +47,9 @@ pub struct ReadingRowProps {
     pub unit: Rc<Unit>,
     /// Instruments on its port.
     pub rigged: Rigged,
+    /// What was caught in a jug for it.
+    #[prop_or_default]
+    pub caught: JugCatch,
     /// What it read before it was taken again.
     pub before: Vec<Earlier>,
     /// Instruments of the shop.
@@ -127,6 +131,9 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
             if is_open || *more {
                 { props.unit.ports.get(&reading.port).map(port_note) }
             }
+            if is_open || *more {
+                { help::fold(&reading.condition, reading.port, props.unit.ports.get(&reading.port), props.number) }
+            }
             if let Some(why) = &props.closed {
                 { closed(reading, why) }
             } else {
@@ -136,6 +143,7 @@ pub fn ReadingRow(props: &ReadingRowProps) -> Html {
                     {short}
                     number={props.number}
                     {instrument}
+                    caught={props.caught.clone()}
                     last={props.last.clone()}
                     prefs={props.prefs.clone()}
                     on_change={props.on_change.clone()}

@@ -10,6 +10,7 @@ use super::close::ClosePanel;
 use super::edits::use_edits;
 use super::entry;
 use super::entry_field::field_id;
+use super::gate_panel::RESTARTED;
 use super::group::groups;
 use super::last_time::EarlierCalls;
 use super::map::LoopMap;
@@ -24,6 +25,8 @@ use super::slices::{use_apart, use_slices};
 use super::steady::{Answer, use_steady};
 use super::taken::Taken;
 use super::told::told_before;
+use super::watch::{Kept, WatchView};
+use super::watching::{watched, with_following};
 use crate::app::parts::{Icon, Shape};
 use crate::app::platform::clock;
 use crate::app::platform::focus;
@@ -40,7 +43,7 @@ use web_sys::HtmlInputElement;
 use yew::{
     Callback, Html, KeyboardEvent, MouseEvent, Properties, TargetCast, component, html, use_effect,
 };
-use yew::{use_effect_with, use_mut_ref, use_state};
+use yew::{use_effect_with, use_memo, use_mut_ref, use_state};
 
 /// A minute, ms.
 const MINUTE_MS: i32 = 60_000;
@@ -80,6 +83,10 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
     let editing = use_state(Vec::<String>::new);
     let chosen = use_state(|| None::<Port>);
     let minute = use_state(|| 0_u32);
+    // What is watched now, by reading; and the clock of the holds, which outlives the view: the rest goes on behind it.
+    let watching = use_state(Vec::<String>::new);
+    let holds = use_memo((), |()| Kept::default());
+    let to_row = use_mut_ref(|| None::<String>);
     {
         let minute = minute.clone();
         use_effect_with(*minute, move |now| {
@@ -89,8 +96,11 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
         });
     }
     {
-        let to_focus = to_focus.clone();
+        let (to_focus, to_row) = (to_focus.clone(), to_row.clone());
         use_effect(move || {
+            if let Some(reading) = to_row.take() {
+                focus::to(&row_id(&reading));
+            }
             if let Some(reading) = to_focus.take() {
                 // The row first: the field of a closed reading is not there.
                 focus::to(&row_id(&reading));
@@ -151,6 +161,26 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
         Callback::from(move |ids: Vec<String>| editing.set(ids))
     };
     let on_edit = use_steady(on_edit);
+    let on_watch = {
+        let (watching, edits) = (watching.clone(), edits.clone());
+        Callback::from(move |ids: Vec<String>| watching.set(with_following(ids, &edits.visit())))
+    };
+    let on_watch = use_steady(on_watch);
+    let on_write = {
+        let (watching, to_focus, edits) = (watching.clone(), to_focus.clone(), edits.clone());
+        Callback::from(move |()| {
+            to_focus.replace(first_to_write(&edits.visit(), &watching));
+            watching.set(Vec::new());
+        })
+    };
+    let on_unwatch = {
+        let watching = watching.clone();
+        Callback::from(move |reading: String| {
+            to_row.replace(Some(reading));
+            watching.set(Vec::new());
+        })
+    };
+    let on_restarted = on_change.reform(|()| Change::Restarted);
     let on_instruments = use_steady(props.on_instruments.clone());
     let answer = props.assessment.clone().map(Answer);
     let taken: Vec<Taken> = props
@@ -236,6 +266,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     on_change={on_change.clone()}
                     on_reading={on_reading.clone()}
                 />
+                { restarted(visit, &on_change) }
                 <QuickPanel {taken} {sides} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
                 // In a list of its own: among its neighbours, one more group would have all above it made anew.
@@ -249,6 +280,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                             at={group.at}
                             editing={editing.contains(&first)}
                             on_edit={on_edit.clone()}
+                            on_watch={on_watch.clone()}
                             assessment={answer.clone()}
                             updating={props.updating}
                             minute={*minute}
@@ -287,7 +319,43 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 }
             </div>
         </div>
+        if !watching.is_empty() {
+            <WatchView
+                watched={watched(&watching, visit, &props.instruments, props.assessment.as_deref())}
+                {sides}
+                unit={props.unit.clone()}
+                clock={(*holds).clone()}
+                prefs={props.prefs.clone()}
+                {on_write}
+                on_close={on_unwatch}
+                {on_restarted}
+            />
+        }
         </main>
+    }
+}
+
+/// The reading whose field comes first once the needles are written down: the first without an answer.
+fn first_to_write(visit: &Visit, ids: &[String]) -> Option<String> {
+    let open = ids.iter().find(|id| {
+        let reading = visit.readings.iter().find(|reading| reading.id == **id);
+        reading.is_some_and(entry::is_open)
+    });
+    open.or_else(|| ids.first()).cloned()
+}
+
+/// One touch makes every tick void, once there are any.
+fn restarted(visit: &Visit, on_change: &Callback<Change>) -> Html {
+    if visit.precautions.is_empty() {
+        return Html::default();
+    }
+    html! {
+        <div class="restarted">
+            <button type="button" class="button is-quiet" onclick={on_change.reform(|_: MouseEvent| Change::Restarted)} data-testid="engine-restarted">
+                <Icon shape={Shape::Warning} />{ RESTARTED }
+            </button>
+            <span class="soft small">{ "Takes every tick back: it may stand differently now." }</span>
+        </div>
     }
 }
 

@@ -2,6 +2,7 @@
 
 use super::cautions;
 use super::entry;
+use super::gate::place;
 use super::group::Group;
 use crate::caution::Stands;
 use crate::checks;
@@ -11,8 +12,8 @@ use crate::record::Visit;
 /// Checks whose precautions are told in full, and places whose cautions are.
 #[derive(Clone, Debug, Default)]
 pub struct Told {
-    /// Checks, by id.
-    pub checks: Vec<&'static str>,
+    /// Rounds of ticks.
+    pub checks: Vec<(&'static str, String)>,
     /// Places of cautions.
     pub places: Vec<Stands>,
 }
@@ -30,7 +31,9 @@ pub fn told_before(groups: &[Group], visit: &Visit) -> Vec<Told> {
         let checks = readings
             .iter()
             .filter_map(|reading| checks::for_reading(&group.condition, reading.port));
-        told.checks.extend(checks.map(|check| check.id));
+        let condition = &group.condition;
+        told.checks
+            .extend(checks.map(|check| place(check, condition.doing, condition.direction)));
         let open: Vec<Port> = readings
             .iter()
             .filter(|r| entry::is_open(r))

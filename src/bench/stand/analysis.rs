@@ -57,11 +57,13 @@ pub enum Quantity {
     ShaftPower,
     /// Hydraulic power of the high port over the low one; output shaft power of a whole drive, kW.
     OutPower,
+    /// Flow at the high port, L/min.
+    Flow,
 }
 
 impl Quantity {
     /// Every quantity.
-    pub const ALL: [Quantity; 8] = [
+    pub const ALL: [Quantity; 9] = [
         Quantity::Volumetric,
         Quantity::HydroMechanical,
         Quantity::Overall,
@@ -70,6 +72,7 @@ impl Quantity {
         Quantity::TorqueLost,
         Quantity::ShaftPower,
         Quantity::OutPower,
+        Quantity::Flow,
     ];
 }
 
@@ -254,6 +257,7 @@ fn machine(
         (Quantity::TorqueLost, torque_lost),
         (Quantity::ShaftPower, shaft),
         (Quantity::OutPower, hydraulic),
+        (Quantity::Flow, flow),
     ]
     .into_iter()
     .collect()

@@ -13,7 +13,7 @@
 //! Estimates are weighted by what comes by chance; what an instrument is off by is added to the covariance by fitting again with
 //! each instrument moved. Chance beyond what was stated widens the covariance (Birge ratio).
 
-use super::analysis::{Setup, flow_chance, theoretical_torque};
+use super::analysis::{Quantity, Setup, flow_chance, theoretical_torque};
 use super::channel::{Channel, Gauged, Subject};
 use super::flaw::Part;
 use super::layout::LayoutGap;
@@ -554,6 +554,60 @@ pub fn losses(
         torque,
         case,
         covered,
+    }
+}
+
+impl LossFit {
+    /// An efficiency in a state: speed (rpm), pressure difference (bar), viscosity (mPa·s).
+    ///
+    /// # Errors
+    /// Why there is none, in words.
+    pub fn efficiency(
+        &self,
+        quantity: Quantity,
+        n: f64,
+        dp: f64,
+        mu: f64,
+    ) -> Result<(f64, f64), String> {
+        let told = self.foretell(n, dp, mu);
+        let found = match quantity {
+            Quantity::Volumetric => told.volumetric,
+            Quantity::HydroMechanical => told.hydro_mechanical,
+            _ => told.overall(),
+        };
+        found.ok_or_else(|| {
+            let flow = self.flow.as_ref().err();
+            let why = flow.or(self.torque.as_ref().err());
+            why.map_or_else(|| NoFit::Alike.to_string(), ToString::to_string)
+        })
+    }
+
+    /// Flow at the high port in a state, L/min, with its standard uncertainty.
+    ///
+    /// # Errors
+    /// Why there is none, in words.
+    pub fn high_flow(&self, n: f64, dp: f64, mu: f64) -> Result<(f64, f64), String> {
+        let fit = self.flow.as_ref().map_err(ToString::to_string)?;
+        let volume = fit.x[0];
+        Ok(fit.foretold(&flow_row(self.subject, &fit.losses, volume, n, dp, mu)))
+    }
+
+    /// Leakage out of the case in a state, L/min, with its standard uncertainty; `over_case` is the low line over the case, bar.
+    ///
+    /// # Errors
+    /// Why there is none, in words.
+    pub fn case_leakage(&self, dp: f64, over_case: f64, mu: f64) -> Result<(f64, f64), String> {
+        let fit = self.case.as_ref().map_err(ToString::to_string)?;
+        Ok(fit.foretold(&[(dp + 2.0 * over_case) * REFERENCE / mu]))
+    }
+}
+
+impl Foretold {
+    /// Overall efficiency, the product of the other two, with its standard uncertainty.
+    #[must_use]
+    pub fn overall(&self) -> Option<(f64, f64)> {
+        let ((v, uv), (h, uh)) = (self.volumetric?, self.hydro_mechanical?);
+        Some((v * h, (h * h * uv * uv + v * v * uh * uh).sqrt()))
     }
 }
 

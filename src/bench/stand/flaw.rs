@@ -43,7 +43,7 @@ impl Part {
     #[must_use]
     pub const fn of(quantity: Quantity) -> &'static [Part] {
         match quantity {
-            Quantity::Volumetric | Quantity::FlowLost => &[Part::Flow],
+            Quantity::Volumetric | Quantity::FlowLost | Quantity::Flow => &[Part::Flow],
             Quantity::HydroMechanical | Quantity::TorqueLost | Quantity::ShaftPower => {
                 &[Part::Torque]
             }

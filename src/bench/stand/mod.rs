@@ -7,8 +7,11 @@
 //! * [`point`] joins repeated readings to a point with its spread and says whether it was steady; [`flaw`] says which points say
 //!   nothing, and why.
 //! * [`analysis`] computes all that follows from the points; [`uncertain`] repeats it with every instrument moved in turn.
+//! * [`acceptance`] is the limits of the manual at points and along curves; [`accepted`] judges them.
 //! * [`fit`] is the loss model; [`judge`] decides with a guard band; [`report`] is the whole sheet in one call.
 
+pub mod acceptance;
+pub mod accepted;
 pub mod analysis;
 pub mod balance;
 pub mod channel;

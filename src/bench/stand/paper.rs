@@ -4,7 +4,7 @@ use super::analysis::Quantity;
 use super::channel::Channel;
 use super::flaw::told;
 use super::items::{Entry, of};
-use super::report::{BenchReport, Judged};
+use super::report::{BenchReport, Judged, Span};
 use super::sheet::{BenchSheet, Head, TextId};
 use super::uncertain::Uncertain;
 use crate::quantity::{DecimalMark, Decimals, Measure, Unit, UnitPrefs, format_with_unit};
@@ -24,6 +24,42 @@ pub fn number(value: f64, expanded: f64, unit: &str, mark: DecimalMark) -> Strin
         DecimalMark::Comma => text.replace('.', ","),
         DecimalMark::Point => text.to_owned(),
     }
+}
+
+/// The unit in which the shop wants a figure.
+#[must_use]
+pub fn shown(prefs: &UnitPrefs, unit: Unit) -> Unit {
+    match unit {
+        // A count of seconds, a share and a shaft's rpm read alike everywhere.
+        Unit::Percent | Unit::Second | Unit::Fraction | Unit::RevolutionPerMinute => unit,
+        other => prefs.unit(other.kind()),
+    }
+}
+
+/// A figure in a base unit, with its expanded uncertainty, in the unit the shop wants.
+#[must_use]
+pub fn in_unit(value: f64, expanded: f64, base: Unit, prefs: &UnitPrefs) -> String {
+    let unit = shown(prefs, base);
+    let of = |value: f64| {
+        Measure::new(value, base)
+            .ok()
+            .and_then(|m| m.try_in_unit(unit).ok())
+    };
+    match (of(value), of(value + expanded)) {
+        (Some(here), Some(there)) => {
+            number(here, (there - here).abs(), unit.symbol(), prefs.mark())
+        }
+        _ => "not to be told".to_owned(),
+    }
+}
+
+/// A figure alone in the unit the shop wants.
+#[must_use]
+pub fn plain(value: f64, base: Unit, prefs: &UnitPrefs) -> String {
+    Measure::new(value, base).map_or_else(
+        |_| "not to be told".to_owned(),
+        |m| format_with_unit(m, shown(prefs, base), Decimals::Reading, prefs.mark()),
+    )
 }
 
 fn with_doubt(figure: Uncertain, factor: f64, unit: &str, mark: DecimalMark) -> String {
@@ -73,8 +109,8 @@ pub fn text(sheet: &BenchSheet, report: &BenchReport, unit: &str, prefs: &UnitPr
     for judged in &report.judged {
         line(format!(
             "- {}: {}",
-            judged_words(judged, prefs),
-            judged.decision.words()
+            judged.decision.words().to_uppercase(),
+            judged_words(judged, prefs)
         ));
     }
     for words in told(&report.left_out, sheet.subject) {
@@ -142,43 +178,70 @@ pub fn text(sheet: &BenchSheet, report: &BenchReport, unit: &str, prefs: &UnitPr
     out
 }
 
-fn judged_words(judged: &Judged, prefs: &UnitPrefs) -> String {
-    let mark = prefs.mark();
-    let base = judged.unit.kind().base_unit();
-    let factor = if judged.unit == Unit::Percent {
-        100.0
+/// Where on a curve something was judged: "100 to 300 bar at 2000 rpm, decided at 250 bar".
+#[must_use]
+pub fn span_words(span: &Span, prefs: &UnitPrefs) -> String {
+    let bar = |value: f64| plain(value, Unit::Bar, prefs);
+    let speed = span
+        .speed
+        .map_or_else(|| "at any speed".to_owned(), |n| format!("at {n:.0} rpm"));
+    let at = span
+        .at
+        .map_or_else(String::new, |at| format!(", decided at {}", bar(at)));
+    format!("{} to {} {speed}{at}", bar(span.from), bar(span.to))
+}
+
+/// The figure of what was judged, with its doubt.
+#[must_use]
+pub fn figure_words(judged: &Judged, prefs: &UnitPrefs) -> Option<String> {
+    let figure = judged.figure?;
+    Some(if judged.unit == Unit::Percent {
+        with_doubt(figure, 100.0, "%", prefs.mark())
     } else {
-        1.0
+        let base = judged.unit.kind().base_unit();
+        in_unit(figure.value, figure.expanded(), base, prefs)
+    })
+}
+
+/// What is allowed and who says so: "allowed 84 % and more (common practice)".
+#[must_use]
+pub fn limits_words(judged: &Judged, prefs: &UnitPrefs) -> Option<String> {
+    let limits = judged.limits.as_ref()?;
+    let one = |value: f64| {
+        if judged.unit == Unit::Percent {
+            plain(value * 100.0, Unit::Percent, prefs)
+        } else {
+            plain(value, judged.unit.kind().base_unit(), prefs)
+        }
     };
-    let symbol = if judged.unit == Unit::Percent {
-        "%"
-    } else {
-        base.symbol()
+    let span = match (limits.low, limits.high) {
+        (Some(low), Some(high)) => format!("{} to {}", one(low), one(high)),
+        (Some(low), None) => format!("{} and more", one(low)),
+        (None, Some(high)) => format!("{} and less", one(high)),
+        (None, None) => return None,
     };
-    let figure = judged
-        .figure
-        .map(|figure| format!(" {}", with_doubt(figure, factor, symbol, mark)));
-    let one = |value: f64| format!("{:.1} {symbol}", value * factor);
-    let limits = judged.limits.as_ref().map(|limits| {
-        let span = match (limits.low, limits.high) {
-            (Some(low), Some(high)) => format!("{} to {}", one(low), one(high)),
-            (Some(low), None) => format!("{} and more", one(low)),
-            (None, Some(high)) => format!("{} and less", one(high)),
-            (None, None) => "no limit".to_owned(),
-        };
-        format!(" (allowed {span}; {})", limits.from)
-    });
-    let why = if judged.why.is_empty() {
-        String::new()
-    } else {
-        format!(" [{}]", judged.why)
-    };
-    format!(
-        "{}{}{}{why}",
-        judged.words,
-        figure.unwrap_or_default(),
-        limits.unwrap_or_default()
-    )
+    Some(format!("allowed {span} ({})", limits.from))
+}
+
+/// What was judged, with the place on its curve.
+#[must_use]
+pub fn what_words(judged: &Judged, prefs: &UnitPrefs) -> String {
+    match &judged.span {
+        Some(span) => format!("{}, {}", judged.words, span_words(span, prefs)),
+        None => judged.words.clone(),
+    }
+}
+
+/// What was judged in one line, without the decision.
+#[must_use]
+pub fn judged_words(judged: &Judged, prefs: &UnitPrefs) -> String {
+    let figure = figure_words(judged, prefs).map(|figure| format!(": {figure}"));
+    let limits = limits_words(judged, prefs).map(|limits| format!(", {limits}"));
+    let why = (!judged.why.is_empty()).then(|| format!(" [{}]", judged.why));
+    [Some(what_words(judged, prefs)), figure, limits, why]
+        .into_iter()
+        .flatten()
+        .collect()
 }
 
 /// A cell that a spreadsheet takes as a figure or as text, and never as a formula.
@@ -225,7 +288,7 @@ pub fn table(sheet: &BenchSheet, report: &BenchReport, prefs: &UnitPrefs) -> Str
                 .get(channel)
                 .map_or("", |typed| typed.typed.as_str());
             let _ = match value {
-                Some(value) => write!(out, ",{}", rounded(value)),
+                Some(value) => write!(out, ",{}", significant(value)),
                 None => write!(out, ",{}", cell(text)),
             };
         }
@@ -234,15 +297,43 @@ pub fn table(sheet: &BenchSheet, report: &BenchReport, prefs: &UnitPrefs) -> Str
     out.push_str("\r\nResult of point,Quantity,Unit,Value,Expanded uncertainty (k = 2)\r\n");
     for (at, point) in report.points.iter().enumerate() {
         for (quantity, figure) in &report.evaluated.points[at] {
-            let (words, symbol, factor) = quantity_words(*quantity);
+            let (words, unit, factor) = quantity_words(*quantity);
+            let symbol = unit.symbol();
             let _ = write!(
                 out,
                 "{},{words},{symbol},{},{}\r\n",
                 cell(&point.name),
-                rounded(figure.value * factor),
-                rounded(figure.expanded() * factor)
+                significant(figure.value * factor),
+                significant(figure.expanded() * factor)
             );
         }
+    }
+    out.push_str(
+        "\r\nJudged,Where,Unit,Found,Expanded uncertainty (k = 2),Lowest allowed,Highest allowed,Limits from,Decision,Why\r\n",
+    );
+    for judged in &report.judged {
+        let (symbol, factor) = judged.printed();
+        let figure =
+            |value: Option<f64>| value.map_or_else(String::new, |v| significant(v * factor));
+        let limits = judged.limits.as_ref();
+        let cells = [
+            cell(&judged.words),
+            cell(
+                &judged
+                    .span
+                    .map_or_else(String::new, |span| span_words(&span, prefs)),
+            ),
+            symbol.to_owned(),
+            figure(judged.figure.map(|f| f.value)),
+            figure(judged.figure.map(|f| f.expanded())),
+            figure(limits.and_then(|l| l.low)),
+            figure(limits.and_then(|l| l.high)),
+            cell(limits.map_or("", |l| l.from.as_str())),
+            judged.decision.words().to_owned(),
+            cell(&judged.why),
+        ];
+        out.push_str(&cells.join(","));
+        out.push_str("\r\n");
     }
     out.push_str("\r\nItem,Unit,Found,Note\r\n");
     for item in of(sheet.subject) {
@@ -256,7 +347,7 @@ pub fn table(sheet: &BenchSheet, report: &BenchReport, prefs: &UnitPrefs) -> Str
                     .found
                     .value
                     .and_then(|m| m.try_in_unit(unit).ok())
-                    .map_or(String::new(), rounded),
+                    .map_or(String::new(), significant),
             ),
             Entry::Tick => (
                 "",
@@ -279,8 +370,9 @@ pub fn table(sheet: &BenchSheet, report: &BenchReport, prefs: &UnitPrefs) -> Str
     out
 }
 
-/// Six significant digits, without an exponent.
-fn rounded(value: f64) -> String {
+/// Six significant digits with a decimal point, without an exponent and without empty zeros.
+#[must_use]
+pub fn significant(value: f64) -> String {
     if value == 0.0 {
         return "0".to_owned();
     }
@@ -294,16 +386,44 @@ fn rounded(value: f64) -> String {
     }
 }
 
-/// Words, symbol and factor of a quantity.
-const fn quantity_words(quantity: Quantity) -> (&'static str, &'static str, f64) {
+/// Words, base unit and factor of a quantity.
+#[must_use]
+pub const fn quantity_words(quantity: Quantity) -> (&'static str, Unit, f64) {
     match quantity {
-        Quantity::Volumetric => ("Volumetric efficiency", "%", 100.0),
-        Quantity::HydroMechanical => ("Hydro-mechanical efficiency", "%", 100.0),
-        Quantity::Overall => ("Overall efficiency", "%", 100.0),
-        Quantity::FlowLost => ("Flow lost", "L/min", 1.0),
-        Quantity::CaseLeakage => ("Case leakage", "L/min", 1.0),
-        Quantity::TorqueLost => ("Torque lost", "N·m", 1.0),
-        Quantity::ShaftPower => ("Shaft power", "kW", 1.0),
-        Quantity::OutPower => ("Oil or output power", "kW", 1.0),
+        Quantity::Volumetric => ("Volumetric efficiency", Unit::Percent, 100.0),
+        Quantity::HydroMechanical => ("Hydro-mechanical efficiency", Unit::Percent, 100.0),
+        Quantity::Overall => ("Overall efficiency", Unit::Percent, 100.0),
+        Quantity::FlowLost => ("Flow lost", Unit::LitrePerMinute, 1.0),
+        Quantity::CaseLeakage => ("Case leakage", Unit::LitrePerMinute, 1.0),
+        Quantity::TorqueLost => ("Torque lost", Unit::NewtonMetre, 1.0),
+        Quantity::ShaftPower => ("Shaft power", Unit::Kilowatt, 1.0),
+        Quantity::OutPower => ("Oil or output power", Unit::Kilowatt, 1.0),
+        Quantity::Flow => ("Flow at the high port", Unit::LitrePerMinute, 1.0),
     }
+}
+
+/// A figure of a point with its expanded uncertainty, in the unit the shop wants.
+#[must_use]
+pub fn quantity_text(quantity: Quantity, figure: Uncertain, prefs: &UnitPrefs) -> String {
+    let (_, unit, factor) = quantity_words(quantity);
+    in_unit(
+        figure.value * factor,
+        figure.expanded() * factor,
+        unit,
+        prefs,
+    )
+}
+
+/// A coefficient of the loss fit with its expanded uncertainty, with as many decimals as two digits of the doubt need.
+#[must_use]
+pub fn coefficient(value: f64, expanded: f64, unit: &str, mark: DecimalMark) -> String {
+    let (factor, prefix) = if value.abs() >= 0.1 || unit.starts_with("cm³") {
+        (1.0, "")
+    } else if value.abs() >= 1e-4 {
+        (1e3, "thousandths of ")
+    } else {
+        (1e6, "millionths of ")
+    };
+    let unit = format!("{prefix}{unit}");
+    number(value * factor, expanded * factor, &unit, mark)
 }

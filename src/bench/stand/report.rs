@@ -1,6 +1,8 @@
 //! The whole sheet in one pure call: points, efficiencies, losses, balances, what is judged and how, what was not tested, and what
 //! the unit's profile may take over.
 
+use super::acceptance::Limited;
+use super::accepted::{Accepted, accepted};
 use super::analysis::{Quantity, Setup, theoretical_flow};
 use super::balance::{Balance, balance};
 use super::channel::{Channel, Subject};
@@ -22,6 +24,19 @@ const NEAR_RATED: f64 = 0.10;
 /// Standard uncertainty of a figure that no instrument of the stand covers (a time, a signal), as a share. Common practice.
 const OTHER_FIGURES: f64 = 0.01;
 
+/// Where on a run something was judged: a curve over pressure.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Span {
+    /// Speed, rpm; none where any will do.
+    pub speed: Option<f64>,
+    /// Lower pressure difference, bar.
+    pub from: f64,
+    /// Higher pressure difference, bar.
+    pub to: f64,
+    /// Where the figure stands that decides, bar.
+    pub at: Option<f64>,
+}
+
 /// Something judged.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Judged {
@@ -37,11 +52,23 @@ pub struct Judged {
     pub decision: Decision,
     /// Why it cannot be told, where no doubt about a figure says so; empty otherwise.
     pub why: String,
+    /// Of a curve, where it was judged.
+    pub span: Option<Span>,
 }
 
 impl Judged {
+    /// Symbol of its unit as printed, and the factor from the base unit to it.
+    #[must_use]
+    pub fn printed(&self) -> (&'static str, f64) {
+        if self.unit == Unit::Percent {
+            ("%", 100.0)
+        } else {
+            (self.unit.kind().base_unit().symbol(), 1.0)
+        }
+    }
+
     /// Something that nothing on the sheet can decide, and why.
-    fn open(words: String, unit: Unit, limits: Limits, why: String) -> Judged {
+    pub(super) fn open(words: String, unit: Unit, limits: Limits, why: String) -> Judged {
         Judged {
             words,
             unit,
@@ -49,6 +76,7 @@ impl Judged {
             limits: Some(limits),
             decision: Decision::CannotTell,
             why,
+            span: None,
         }
     }
 }
@@ -68,8 +96,10 @@ pub struct BenchReport {
     pub balances: Vec<Option<Balance>>,
     /// Change of flow and case flow from the first point to the same one at the end.
     pub repeated: Option<(Option<f64>, Option<f64>)>,
-    /// What was judged.
+    /// What was judged: limits of the manual first.
     pub judged: Vec<Judged>,
+    /// What came of each limit at points and along curves.
+    pub accepted: Vec<Accepted>,
     /// What was left out, with the reason where one was given.
     pub not_tested: Vec<(&'static str, Option<String>)>,
     /// What the profile may take over.
@@ -143,13 +173,19 @@ pub fn report(sheet: &BenchSheet, machine: Option<&Machine>) -> BenchReport {
         .zip(&evaluated.analysis.points)
         .map(|(point, result)| balance(&point.means, result, &setup, lost))
         .collect();
-    let mut judged = run_judged(&Run {
+    let run = Run {
         sheet,
         setup: &setup,
         points: &points,
         evaluated: &evaluated,
         left_out: &left_out,
-    });
+    };
+    let accepted = accepted(&run, &losses);
+    let mut judged: Vec<Judged> = accepted
+        .iter()
+        .filter_map(|one| one.judged.clone().ok())
+        .collect();
+    judged.extend(run_judged(&run, &accepted));
     let mut not_tested = Vec::new();
     for item in of(sheet.subject) {
         match item_judged(sheet, machine, &setup, item) {
@@ -168,6 +204,11 @@ pub fn report(sheet: &BenchSheet, machine: Option<&Machine>) -> BenchReport {
     if points.is_empty() {
         not_tested.push(("Efficiency run", None));
     }
+    for limit in &accepted {
+        if let Err(why) = limit.judged {
+            not_tested.push(("A limit of the run", Some(why.to_owned())));
+        }
+    }
     BenchReport {
         repeated: repeated(&points),
         proposals: proposals(sheet, &evaluated, &losses, &left_out),
@@ -177,6 +218,7 @@ pub fn report(sheet: &BenchSheet, machine: Option<&Machine>) -> BenchReport {
         losses,
         balances,
         judged,
+        accepted,
         not_tested,
     }
 }
@@ -219,17 +261,17 @@ fn doubt_of_difference(sheet: &BenchSheet, point: &Point) -> f64 {
     gum::expanded(gum::combined(&[of(Channel::High), of(Channel::Low)]), 2.0)
 }
 
-/// Limits of the run: those typed, else those of common practice.
-fn limits(sheet: &BenchSheet, what: Measurand) -> Limits {
+/// Limits of the run: those typed, else those of common practice, unless the manual limits the same figure elsewhere.
+fn limits(sheet: &BenchSheet, what: Measurand, has_own: bool) -> Option<Limits> {
     let typed = sheet.limits.get(&what);
     let share = |measure: Option<Measure>| measure.and_then(|m| m.try_in_unit(Unit::Fraction).ok());
     let low = typed.and_then(|t| share(t.low.value));
     let high = typed.and_then(|t| share(t.high.value));
     if low.is_none() && high.is_none() {
-        return usual(what);
+        return (!has_own).then(|| usual(what));
     }
     let from = typed.map_or("", |t| t.from.trim());
-    Limits {
+    Some(Limits {
         low,
         high,
         from: if from.is_empty() {
@@ -237,29 +279,29 @@ fn limits(sheet: &BenchSheet, what: Measurand) -> Limits {
         } else {
             from.to_owned()
         },
-    }
+    })
 }
 
 /// What a run is judged by.
-struct Run<'a> {
-    sheet: &'a BenchSheet,
-    setup: &'a Setup,
-    points: &'a [Point],
-    evaluated: &'a Evaluated,
+pub(super) struct Run<'a> {
+    pub(super) sheet: &'a BenchSheet,
+    pub(super) setup: &'a Setup,
+    pub(super) points: &'a [Point],
+    pub(super) evaluated: &'a Evaluated,
     left_out: &'a [LeftOut],
 }
 
 /// What came of a figure that is judged: the figure, or why there is none to judge.
-type Found = Result<Uncertain, String>;
+pub(super) type Found = Result<Uncertain, String>;
 
 impl Run<'_> {
     /// A figure of a point, where its part counts and no instrument of its kind lies. None where the sheet does not carry it.
-    fn figure(&self, at: usize, quantity: Quantity) -> Option<Found> {
+    pub(super) fn figure(&self, at: usize, quantity: Quantity) -> Option<Found> {
         let figure = self.evaluated.points.get(at)?.get(&quantity).copied();
         let parts = Part::of(quantity);
-        if let Some(liar) = lies(self.left_out, parts) {
+        if let Some(why) = self.lie(parts) {
             // Also where the figure itself looks right: the same instrument read it.
-            return figure.map(|_| Err(self.lie(liar)));
+            return figure.map(|_| Err(why));
         }
         let own = self
             .left_out
@@ -271,11 +313,13 @@ impl Run<'_> {
         }
     }
 
-    fn lie(&self, liar: &LeftOut) -> String {
-        format!(
+    /// Why nothing that rests on these parts is judged, where an instrument lies.
+    pub(super) fn lie(&self, parts: &[Part]) -> Option<String> {
+        let liar = lies(self.left_out, parts)?;
+        Some(format!(
             "{}; the same instruments read the other points, so correct its row or leave it out",
             liar.words(self.setup.subject)
-        )
+        ))
     }
 
     /// The best point by overall efficiency, with its name, of those that count.
@@ -296,11 +340,10 @@ impl Run<'_> {
     /// Derived displacement over that of the plate.
     fn displacement(&self) -> Option<Found> {
         let plate = self.setup.plate?;
-        let flow = &[Part::Flow];
         let out = |one: &&LeftOut| one.parts.contains(&Part::Flow);
         if let Some(derived) = self.evaluated.derived {
-            return Some(match lies(self.left_out, flow) {
-                Some(liar) => Err(self.lie(liar)),
+            return Some(match self.lie(&[Part::Flow]) {
+                Some(why) => Err(why),
                 None => Ok(Uncertain {
                     value: derived.value / plate,
                     standard: derived.standard / plate,
@@ -313,7 +356,8 @@ impl Run<'_> {
     }
 }
 
-fn run_judged(run: &Run) -> Vec<Judged> {
+/// The limits of the run as a whole. Where the manual limits a figure at points or along a curve, its common practice is silent.
+fn run_judged(run: &Run, accepted: &[Accepted]) -> Vec<Judged> {
     let Run {
         sheet,
         points,
@@ -322,7 +366,20 @@ fn run_judged(run: &Run) -> Vec<Judged> {
     } = run;
     let mut judged = Vec::new();
     let mut judge = |what: Measurand, words: String, found: Option<Found>| {
-        let limits = limits(sheet, what);
+        let limited = match what {
+            Measurand::Volumetric => Some(Limited::Volumetric),
+            Measurand::Overall => Some(Limited::Overall),
+            Measurand::CaseLeakage => Some(Limited::CaseLeakage),
+            Measurand::Displacement => None,
+        };
+        let has_own = sheet
+            .acceptance
+            .iter()
+            .zip(accepted)
+            .any(|(limit, found)| Some(limit.of) == limited && found.judged.is_ok());
+        let Some(limits) = limits(sheet, what, has_own) else {
+            return;
+        };
         let unit = Unit::Percent;
         judged.extend(match found {
             None => None,
@@ -334,6 +391,7 @@ fn run_judged(run: &Run) -> Vec<Judged> {
                 limits: Some(limits),
                 decision,
                 why: String::new(),
+                span: None,
             }),
         });
     };
@@ -433,6 +491,7 @@ fn item_judged(
                 Decision::Fail
             },
             why: String::new(),
+            span: None,
         }),
         Entry::Figure(unit) => {
             let value = entry.found.value?.base_of(unit.kind())?;
@@ -458,6 +517,7 @@ fn item_judged(
                 decision: decide(figure, &limits)?,
                 limits: Some(limits),
                 why: String::new(),
+                span: None,
             })
         }
     }
@@ -523,6 +583,7 @@ fn relations(sheet: &BenchSheet) -> Vec<Judged> {
             limits: Some(limits),
             decision,
             why: String::new(),
+            span: None,
         }));
     };
     // Two readings of one gauge: its own error falls out of their difference, the needle's stays. A quarter of the doubt of one.

@@ -265,6 +265,9 @@ pub struct BenchSheet {
     pub items: BTreeMap<ItemId, ItemEntry>,
     /// Limits that were typed for the run as a whole, per item of [`super::judge::Measurand`].
     pub limits: BTreeMap<super::judge::Measurand, super::judge::TypedLimit>,
+    /// Limits at points and along curves.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    pub acceptance: Vec<super::acceptance::Acceptance>,
     /// When what it found was taken into the profile (ISO 8601 text).
     pub taken_over: Option<String>,
     /// Fields written by a newer version: kept as they are.

@@ -5,6 +5,7 @@ use super::{NextPanelProps, foretold};
 use crate::app::call::change::Change;
 use crate::app::call::gate::{self, GATED_FROM};
 use crate::app::call::gate_panel::{rise_words, seconds_words};
+use crate::app::call::help;
 use crate::app::call::quick::alike;
 use crate::app::call::side::Wanted;
 use crate::app::call::steady::Fold;
@@ -288,6 +289,7 @@ fn how(known: &'static Check) -> Html {
             <details class="advice" data-testid={format!("how-{}", known.id)}>
                 <summary>{ "How it is done" }</summary>
                 <ol class="next-how">{ for known.how.iter().map(|step| html! { <li>{ *step }</li> }) }</ol>
+                { help::of_check(known.id) }
             </details>
         }
         <dl class="next-facts">
