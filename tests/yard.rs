@@ -6,7 +6,7 @@ use lowside::quantity::Typed;
 use lowside::quantity::{Measure, Unit as InUnit, UnitPrefs};
 use lowside::ranking::{Session, assess};
 use lowside::readings::Place;
-use lowside::record::{Closing, Export, Visit};
+use lowside::record::{Afterwards, Closing, Export, Visit};
 use lowside::report::{Check, Report as Paper};
 use lowside::unit::{Figure, FigureId, MachineClass, Paths, Source, Tick, Unit};
 use lowside::yard::learn::{self, Learning};
@@ -641,6 +641,11 @@ fn case(id: &str, unit: &str, cause: &str, proved: bool, done: &str) -> Visit {
             cause: cause.into(),
             is_proved: proved,
             done: done.into(),
+            afterwards: if done.contains("went away") {
+                Afterwards::Gone
+            } else {
+                Afterwards::NotSaid
+            },
             ..Closing::default()
         }),
         ..Visit::default()
@@ -653,6 +658,11 @@ fn closed_cases_move_base_rates_by_class_and_can_be_taken_back() {
     other.id = "w".into();
     other.class = MachineClass::Loader;
     let units = [unit(), other.clone()];
+    // Taken for proved, and wrong: the trouble stayed.
+    let mut still_there = case("ggggggg", "u", "motor-worn", true, "motor changed");
+    if let Some(closed) = &mut still_there.closed {
+        closed.afterwards = Afterwards::StillThere;
+    }
     let visits = [
         case("a", "u", "pump-worn", true, ""),
         case("bb", "u", "pump-worn", false, "changed it and it went away"),
@@ -660,6 +670,9 @@ fn closed_cases_move_base_rates_by_class_and_can_be_taken_back() {
         case("dddd", "u", "", true, "nothing found"),
         case("eeeee", "u", "motor-worn", false, ""),
         case("demo-x", "u", "motor-worn", true, ""),
+        // Changed, and nobody said that it was gone.
+        case("ffffff", "u", "motor-worn", false, "motor changed"),
+        still_there,
     ];
     let mut learning = Learning::default();
     let cases = learn::cases(&units, &visits, &learning);

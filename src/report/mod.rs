@@ -229,6 +229,10 @@ fn closing(subject: &Subject) -> Option<Section> {
             lines.push(format!("{name}: {words}"));
         }
     }
+    if !closing.afterwards.is_not_said() {
+        let words = crate::assessment::lower_first(closing.afterwards.words());
+        lines.push(format!("The trouble afterwards: {words}"));
+    }
     if visit.closed.is_some() && !closing.cause.is_empty() && closing.proof.trim().is_empty() {
         lines.push(String::from(if closing.is_proved {
             "Proved on the machine; how was not written down."

@@ -2,7 +2,7 @@
 
 use lowside::quantity::Typed;
 use lowside::quantity::{Measure, Unit as InUnit};
-use lowside::record::{Book, Closing, Export, Visit};
+use lowside::record::{Afterwards, Book, Closing, Export, Visit};
 use lowside::unit::{MachineClass, Unit};
 use lowside::yard::{Field, LOOKS, Leg, YardSheet};
 
@@ -208,6 +208,7 @@ fn yard() -> Book {
                 cause: cause.into(),
                 is_proved,
                 done: done.into(),
+                afterwards: Afterwards::Gone,
                 when: "2025-11-01T12:00:00Z".into(),
                 ..Closing::default()
             }),
