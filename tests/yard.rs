@@ -6,7 +6,8 @@ use lowside::quantity::Typed;
 use lowside::quantity::{Measure, Unit as InUnit, UnitPrefs};
 use lowside::ranking::{Session, assess};
 use lowside::readings::Place;
-use lowside::record::{Closing, Visit};
+use lowside::record::{Afterwards, Closing, Export, Visit};
+use lowside::report::{Check, Report as Paper};
 use lowside::unit::{Figure, FigureId, MachineClass, Paths, Source, Tick, Unit};
 use lowside::yard::learn::{self, Learning};
 use lowside::yard::trend::{Axis, NoProjection, NoTrend, next_check, projection, reach, trend};
@@ -640,6 +641,11 @@ fn case(id: &str, unit: &str, cause: &str, proved: bool, done: &str) -> Visit {
             cause: cause.into(),
             is_proved: proved,
             done: done.into(),
+            afterwards: if done.contains("went away") {
+                Afterwards::Gone
+            } else {
+                Afterwards::NotSaid
+            },
             ..Closing::default()
         }),
         ..Visit::default()
@@ -652,6 +658,11 @@ fn closed_cases_move_base_rates_by_class_and_can_be_taken_back() {
     other.id = "w".into();
     other.class = MachineClass::Loader;
     let units = [unit(), other.clone()];
+    // Taken for proved, and wrong: the trouble stayed.
+    let mut still_there = case("ggggggg", "u", "motor-worn", true, "motor changed");
+    if let Some(closed) = &mut still_there.closed {
+        closed.afterwards = Afterwards::StillThere;
+    }
     let visits = [
         case("a", "u", "pump-worn", true, ""),
         case("bb", "u", "pump-worn", false, "changed it and it went away"),
@@ -659,6 +670,9 @@ fn closed_cases_move_base_rates_by_class_and_can_be_taken_back() {
         case("dddd", "u", "", true, "nothing found"),
         case("eeeee", "u", "motor-worn", false, ""),
         case("demo-x", "u", "motor-worn", true, ""),
+        // Changed, and nobody said that it was gone.
+        case("ffffff", "u", "motor-worn", false, "motor changed"),
+        still_there,
     ];
     let mut learning = Learning::default();
     let cases = learn::cases(&units, &visits, &learning);
@@ -745,4 +759,86 @@ fn learned_rates_reach_the_ranking_and_are_said() {
     session.learn(learn::Rates::default());
     let again = session.assess(&unit, &visit, &[]);
     assert_eq!(again.causes, plain.causes);
+}
+
+/// The paper says the verdict, every reason, everything checked and not checked, and can be made again from its own file.
+#[test]
+fn the_paper_of_a_check_says_it_all_and_is_made_again_from_its_file() {
+    let unit = unit();
+    let out = visit("out", "2026-03-01T08:00:00Z", 1210.0, good(&unit, Leg::Out));
+    let mut sheet = good(&unit, Leg::In);
+    set(&mut sheet, Field::LoadedTurns, 50.0);
+    sheet.set(
+        Field::Knee,
+        Typed {
+            typed: "about 900".into(),
+            value: None,
+        },
+    );
+    let mut back = visit("in", "2026-03-09T16:00:00Z", 1302.0, sheet);
+    back.note = "muddy\n\"left\" hub, 2 bolts".into();
+    let later = visit(
+        "later",
+        "2026-04-01T08:00:00Z",
+        1400.0,
+        good(&unit, Leg::Out),
+    );
+    let others = [&out, &later];
+    let prefs = UnitPrefs::metric();
+    let check = Check {
+        unit: &unit,
+        visit: &back,
+        others: &others,
+        instruments: &[],
+        prefs: &prefs,
+        made_at: "2026-03-09T17:00:00Z",
+    };
+    let told = judge(&unit, &back, &others);
+    assert!(told.verdict > Verdict::NothingFound, "{told:?}");
+    let paper = Paper::of_check(&check);
+    let text = paper.text();
+    assert!(text.contains(told.verdict.words()), "{text}");
+    for (_, why) in &told.reasons {
+        assert!(text.contains(why.as_str()), "{why}");
+    }
+    for what in &told.not_checked {
+        assert!(text.contains(what.as_str()), "{what}");
+    }
+    for judged in told.judged.iter().filter(|judged| judged.grade.is_some()) {
+        assert!(text.contains(&judged.what), "{}", judged.what);
+    }
+    assert!(text.contains("92 h on the meter"), "{text}");
+    assert!(text.contains("does not say that the machine is fit"));
+    assert!(!text.contains("NaN"));
+
+    // Its file holds what it is compared with, nothing later, and gives the same paper.
+    let file = check.export().text().expect("writes");
+    let read = Export::read(file.as_bytes()).expect("reads");
+    let mut ids: Vec<&str> = read.visits.iter().map(|v| v.id.as_str()).collect();
+    ids.sort_unstable();
+    assert_eq!(ids, ["in", "out"]);
+    let others: Vec<&Visit> = read.visits.iter().filter(|v| v.id != "in").collect();
+    let again = Paper::of_check(&Check {
+        unit: &read.units[0],
+        visit: read.visits.iter().find(|v| v.id == "in").expect("there"),
+        others: &others,
+        prefs: &read.settings.clone().expect("units of measure").units,
+        made_at: &read.made_at,
+        ..check
+    });
+    assert_eq!(again.text(), text);
+
+    // A reader from outside sees one line, the unit of each figure in its header, and what was typed where it is no figure.
+    let table = check.csv();
+    let mut reader = csv::Reader::from_reader(table.as_bytes());
+    let header = reader.headers().expect("a header").clone();
+    let rows: Vec<csv::StringRecord> = reader.records().map(|row| row.expect("a row")).collect();
+    assert_eq!(rows.len(), 1);
+    let cell = |name: &str| {
+        let at = header.iter().position(|cell| cell == name);
+        rows[0][at.unwrap_or_else(|| panic!("{name}: {header:?}"))].to_owned()
+    };
+    assert_eq!(cell("Charge, low idle (bar)"), "21");
+    assert_eq!(cell("Engine speed at the knee (rpm)"), "about 900");
+    assert_eq!(cell("Note"), "muddy / \"left\" hub, 2 bolts");
 }

@@ -20,7 +20,7 @@ use super::persist::Keeper;
 use super::platform::listen::Listener;
 use super::platform::{focus, offline, persistence, theme};
 use super::route::Route;
-use super::screens::report::ReportScreen;
+use super::screens::report::{CheckReportScreen, ReportScreen};
 use super::screens::settings::SettingsScreen;
 use super::screens::tag::{TagReader, TagSheet};
 use super::screens::unit::Profile;
@@ -225,6 +225,24 @@ fn yard(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Html> {
     })
 }
 
+fn check_report(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Html> {
+    let visit = state.visits.get(id)?;
+    let unit = state.units.get(&visit.unit)?;
+    let mut others = state.visits_of(&visit.unit);
+    others.retain(|other| other.id != visit.id);
+    Some(html! {
+        <CheckReportScreen
+            key={format!("{id}-report")}
+            unit={unit.clone()}
+            visit={visit.clone()}
+            others={Others(others)}
+            instruments={state.instruments.clone()}
+            prefs={state.settings.units.clone()}
+            on_say={deed.reform(|words| Deed::Put(Action::Say(words)))}
+        />
+    })
+}
+
 fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
     let missing = |what: &str| {
         html! {
@@ -297,6 +315,14 @@ fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
         Route::Tag(scanned) => html! {
             <TagReader key={scanned.clone()} scanned={scanned.clone()} state={state.clone()} deed={deed.clone()} />
         },
+        Route::Report(id)
+            if state
+                .visits
+                .get(id)
+                .is_some_and(|visit| visit.is_yard_check()) =>
+        {
+            check_report(state, deed, id).unwrap_or_else(|| missing("yard check"))
+        }
         Route::Report(id) => {
             let visit = state.visits.get(id);
             match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {

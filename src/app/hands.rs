@@ -141,7 +141,8 @@ impl Hands {
     fn ask_engine(&self, state: &State) {
         match &state.route {
             Route::Call(id) | Route::Report(id) => {
-                if let Some(question) = state.question(id)
+                let is_call = |question: &Question| !question.visit.is_yard_check();
+                if let Some(question) = state.question(id).filter(is_call)
                     && self.is_news(state, &question)
                 {
                     self.engine.ask(question);

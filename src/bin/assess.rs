@@ -9,7 +9,7 @@ use lowside::quantity::UnitPrefs;
 use lowside::ranking::Session;
 use lowside::readings::instrument::Instrument;
 use lowside::record::{Export, Visit, limits};
-use lowside::report::{Report, Sheet, Subject, csv};
+use lowside::report::{Check, Report, Sheet, Subject, csv};
 use lowside::unit::Unit;
 use lowside::yard::learn::{self, Case, Learning, Rates};
 use serde::Serialize;
@@ -32,7 +32,8 @@ Reads one export file on standard input and writes one line of JSON for each vis
   error                    instead of the above, where the visit cannot be assessed
 Values are in bar, L/min, rpm, °C, s, mA and km/h.
 
-With --report it writes the hand-over report of each visit as plain text, the same as the app makes from that file; with
+With --report it writes the hand-over report of each visit as plain text (of a yard check: its paper), the same as the app
+makes from that file; with
 --csv all readings with their windows as one table. Both in the units of measure of the file, metric where it names none.
 
 Options: --report, --csv, --help, --version
@@ -225,14 +226,32 @@ fn report_all(export: &Export) -> Result<u8, End> {
     let prefs = prefs(export);
     let mut is_first = true;
     each(export, |unit, visit, assessment| {
-        let report = Report::of(&Subject {
-            unit,
-            visit,
-            instruments: &export.instruments,
-            assessment: &assessment,
-            prefs: &prefs,
-            made_at: &export.made_at,
-        });
+        let instruments = &export.instruments;
+        let made_at = &export.made_at;
+        let report = if visit.is_yard_check() {
+            let others: Vec<&Visit> = export
+                .visits
+                .iter()
+                .filter(|other| other.unit == visit.unit && other.id != visit.id)
+                .collect();
+            Report::of_check(&Check {
+                unit,
+                visit,
+                others: &others,
+                instruments,
+                prefs: &prefs,
+                made_at,
+            })
+        } else {
+            Report::of(&Subject {
+                unit,
+                visit,
+                instruments,
+                assessment: &assessment,
+                prefs: &prefs,
+                made_at,
+            })
+        };
         let rule = if is_first { "" } else { "\n\n" };
         is_first = false;
         write(&format!("{rule}{}", report.text()))

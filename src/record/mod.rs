@@ -39,4 +39,4 @@ pub use neutral::NeutralSheet;
 pub use plan::{Fate, ImportPlan, Planned, Taken};
 pub use settings::{FirstRun, Settings, Theme, UnitOrder};
 pub use sum::checksum;
-pub use visit::{Answer, Closing, Earlier, PutBack, Visit};
+pub use visit::{Afterwards, Answer, Closing, Earlier, PutBack, Visit};

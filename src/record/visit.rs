@@ -127,6 +127,58 @@ impl PutBack {
     }
 }
 
+/// Whether the trouble was gone after what was done.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, Serialize, Deserialize)]
+#[serde(rename_all = "snake_case")]
+pub enum Afterwards {
+    /// Nobody said.
+    #[default]
+    NotSaid,
+    /// Tried out, and gone.
+    Gone,
+    /// Tried out, and still there.
+    StillThere,
+    /// Not tried out.
+    NotTried,
+}
+
+impl Afterwards {
+    /// What can be said.
+    pub const ALL: [Afterwards; 3] = [
+        Afterwards::Gone,
+        Afterwards::StillThere,
+        Afterwards::NotTried,
+    ];
+
+    /// True where nobody said.
+    #[must_use]
+    pub fn is_not_said(&self) -> bool {
+        *self == Afterwards::NotSaid
+    }
+
+    /// Words for a screen.
+    #[must_use]
+    pub fn words(self) -> &'static str {
+        match self {
+            Afterwards::NotSaid => "Not said",
+            Afterwards::Gone => "Gone",
+            Afterwards::StillThere => "Still there",
+            Afterwards::NotTried => "Not tried out",
+        }
+    }
+
+    /// Stable code for test ids.
+    #[must_use]
+    pub fn code(self) -> &'static str {
+        match self {
+            Afterwards::NotSaid => "not-said",
+            Afterwards::Gone => "gone",
+            Afterwards::StillThere => "still",
+            Afterwards::NotTried => "not-tried",
+        }
+    }
+}
+
 /// How a visit ended.
 #[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
 #[serde(default)]
@@ -144,6 +196,9 @@ pub struct Closing {
     /// What was done.
     #[serde(skip_serializing_if = "String::is_empty")]
     pub done: String,
+    /// Whether the trouble was gone afterwards.
+    #[serde(skip_serializing_if = "Afterwards::is_not_said")]
+    pub afterwards: Afterwards,
     /// Parts used.
     #[serde(skip_serializing_if = "String::is_empty")]
     pub parts: String,

@@ -5,6 +5,7 @@
 //! | --- | --- |
 //! | [`mod@self`] | what a report is made from, and what it is |
 //! | `groups` | readings by condition, with windows and instruments |
+//! | `check` | the paper of a yard check |
 //! | `causes` | the finding, and the causes with their reasons |
 //! | `seen` | what was seen without a gauge, the neutral and the tracking |
 //! | `bench` | the bench sheet |
@@ -18,6 +19,7 @@
 mod basis;
 mod bench;
 mod causes;
+mod check;
 pub(crate) mod csv;
 mod groups;
 mod moment;
@@ -28,6 +30,7 @@ mod text;
 
 pub use basis::record_sum;
 pub use causes::{Finding, Sure};
+pub use check::Check;
 pub use csv::{Sheet, csv};
 pub use groups::{Group, Row};
 pub use moment::moment;
@@ -225,6 +228,10 @@ fn closing(subject: &Subject) -> Option<Section> {
         if !words.is_empty() {
             lines.push(format!("{name}: {words}"));
         }
+    }
+    if !closing.afterwards.is_not_said() {
+        let words = crate::assessment::lower_first(closing.afterwards.words());
+        lines.push(format!("The trouble afterwards: {words}"));
     }
     if visit.closed.is_some() && !closing.cause.is_empty() && closing.proof.trim().is_empty() {
         lines.push(String::from(if closing.is_proved {

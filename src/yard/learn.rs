@@ -7,7 +7,7 @@
 
 use crate::demo;
 use crate::faults::{self, FaultId};
-use crate::record::{Closing, Visit};
+use crate::record::{Afterwards, Closing, Visit};
 use crate::unit::{MachineClass, Unit};
 use serde::{Deserialize, Serialize};
 use std::collections::{BTreeMap, BTreeSet};
@@ -77,7 +77,7 @@ fn is_proved(closing: &Closing) -> bool {
 }
 
 /// Closed visits that can teach, newest first. The demo yard teaches nothing; neither does a case closed without a cause, nor one
-/// without proof in which nothing was changed.
+/// without proof unless something was changed and the trouble was gone, nor any after which it was still there.
 pub fn cases<'a>(
     units: impl IntoIterator<Item = &'a Unit>,
     visits: impl IntoIterator<Item = &'a Visit>,
@@ -93,7 +93,10 @@ pub fn cases<'a>(
             let mut causes = vec![cause(&closed.cause)?];
             causes.extend(cause(&closed.also).filter(|also| *also != causes[0]));
             let proved = is_proved(closed);
-            (proved || !closed.done.trim().is_empty()).then(|| Case {
+            let changed_and_gone =
+                closed.afterwards == Afterwards::Gone && !closed.done.trim().is_empty();
+            let still_there = closed.afterwards == Afterwards::StillThere;
+            (changed_and_gone || proved && !still_there).then(|| Case {
                 visit: visit.id.clone(),
                 unit: unit.name.clone(),
                 class: unit.class,
@@ -143,8 +146,8 @@ impl Rates {
             "cases"
         };
         Some(format!(
-            "How often each cause is met comes from the catalogue and {} {cases} of your own, {} on this class of machine (without \
-             proof a case counts half). Settings show it, case by case, and take it back.",
+            "How often each cause is met comes from the catalogue and {} {cases} of your own, {} on this class of machine (changed and \
+             gone, without proof, counts half). Settings show it, case by case, and take it back.",
             count(self.cases),
             count(self.own_class),
         ))

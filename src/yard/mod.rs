@@ -15,6 +15,7 @@ mod change;
 mod field;
 mod history;
 mod judge;
+pub mod labels;
 pub mod law;
 pub mod learn;
 mod limits;

@@ -4,7 +4,7 @@ use crate::hands::{look, press, type_in};
 use crate::rig::{LAPTOP, Rig};
 
 /// A pump of 75 cm³/rev at three speeds and four pressures, as a spreadsheet gives it: tabs, decimal commas, a row of units.
-fn table() -> String {
+pub fn table() -> String {
     let mut text =
         "Point\tSpeed\tInlet pressure\tOutlet pressure\tFlow\tCase flow\tTorque\tOil temperature\n\
                     \trpm\tbar\tbar\tL/min\tL/min\tNm\t°C\n"

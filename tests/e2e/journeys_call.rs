@@ -109,4 +109,22 @@ async fn a_road_call_from_nothing_to_a_cause_and_on_without_a_server() {
         "!/Leading cause, [^:]*: Charge relief held off its seat/.test(document.body.innerText)",
     )
     .await;
+    type_value(&rig, low_idle, "130.5 psi").await;
+    rig.wait_for_text("Charge relief held off its seat").await;
+
+    // What is handed over, still without a server: the report with the reading as it was typed, and the table.
+    rig.click("to-report").await;
+    rig.by_id("report").await;
+    let paper = rig.text("report").await;
+    for words in [
+        "T-41",
+        "Charge relief held off its seat",
+        "Not checked",
+        "practice",
+    ] {
+        assert!(paper.contains(words), "{words}: {paper}");
+    }
+    rig.click("report-csv").await;
+    let table = rig.downloaded("lowside-T-41").await;
+    assert!(table.contains("130.5 psi"), "{table}");
 }

@@ -2,7 +2,7 @@
 
 use lowside::quantity::Typed;
 use lowside::quantity::{Measure, Unit as InUnit};
-use lowside::record::{Book, Closing, Export, Visit};
+use lowside::record::{Afterwards, Book, Closing, Export, Visit};
 use lowside::unit::{MachineClass, Unit};
 use lowside::yard::{Field, LOOKS, Leg, YardSheet};
 
@@ -46,7 +46,8 @@ const FIGURES: [(&str, &str); 16] = [
 
 #[tokio::test]
 async fn out_and_in_are_checked_paired_and_kept() {
-    let rig = Rig::open(TABLET).await;
+    let mut rig = Rig::open(TABLET).await;
+    rig.wait_for_offline_copy().await;
     rig.click("load-demo").await;
     rig.wait_for_text("T-27").await;
     rig.go("/unit/demo-t-27").await;
@@ -84,6 +85,8 @@ async fn out_and_in_are_checked_paired_and_kept() {
     type_in(&rig, "yard-charge-low", "21,0").await;
     type_in(&rig, "yard-knee", "about 900").await;
     rig.wait_for_text("Saved").await;
+    // From here on there is no network.
+    rig.site.stop();
     rig.reload().await;
     rig.by_id("yard-screen").await;
     let kept = rig
@@ -113,6 +116,22 @@ async fn out_and_in_are_checked_paired_and_kept() {
     assert!(!rig.scrolls_sideways().await, "one has to scroll sideways");
     rig.set_size(PHONE).await;
     assert!(!rig.scrolls_sideways().await, "one has to scroll sideways");
+    rig.set_size(TABLET).await;
+
+    // What is handed over: the paper, its text, its table.
+    rig.click("to-report").await;
+    rig.by_id("check-report-screen").await;
+    let paper = rig.text("report").await;
+    assert!(paper.contains("coming in"), "{paper}");
+    assert!(paper.contains("92 h on the meter"), "{paper}");
+    assert!(paper.contains("Steering"), "{paper}");
+    look(&rig, "yard-paper", TABLET).await;
+    rig.click("report-csv").await;
+    let table = rig.downloaded("lowside-T-27").await;
+    assert!(table.contains("Charge, low idle (bar)"), "{table}");
+    assert!(!rig.scrolls_sideways().await, "one has to scroll sideways");
+    rig.click("back-to-check").await;
+    rig.by_id("yard-screen").await;
     rig.click("to-wear").await;
     rig.by_id("wear-screen").await;
     rig.wait_for_text("no line yet").await;
@@ -189,6 +208,7 @@ fn yard() -> Book {
                 cause: cause.into(),
                 is_proved,
                 done: done.into(),
+                afterwards: Afterwards::Gone,
                 when: "2025-11-01T12:00:00Z".into(),
                 ..Closing::default()
             }),

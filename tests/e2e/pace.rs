@@ -4,6 +4,8 @@
 
 use serde_json::json;
 
+use crate::hands::{press, tick_all, type_in};
+use crate::journeys_bench::table;
 use crate::rig::{PHONE, Rig};
 
 /// A slow phone beside this machine.
@@ -28,6 +30,17 @@ const SEEN: &str = "requestAnimationFrame(() => requestAnimationFrame(() => argu
 /// Every row stands as the engine answered.
 const ANSWERED: &str = "!document.querySelector('.is-stale')";
 
+/// No sheet waits to be worked out.
+const WORKED_OUT: &str = "!document.querySelector('[aria-busy=\"true\"]')";
+
+/// Runs of a tracking sheet: lever and way.
+const RUNS: [(&str, &str); 4] = [
+    ("half", "forward"),
+    ("half", "reverse"),
+    ("full", "forward"),
+    ("full", "reverse"),
+];
+
 /// Brings a control to the middle and tells where to touch it.
 const AIM: &str = "const target = document.querySelector(`[data-testid=\"${arguments[0]}\"]`);
     target.scrollIntoView({ block: 'center', behavior: 'instant' });
@@ -50,11 +63,7 @@ async fn pace() {
     rig.js(WATCH, vec![]).await;
     rig.cdp("Performance.enable", json!({ "timeDomain": "threadTicks" }))
         .await;
-    rig.cdp(
-        "Emulation.setCPUThrottlingRate",
-        json!({ "rate": THROTTLE }),
-    )
-    .await;
+    throttle(&rig, THROTTLE).await;
     // As many readings as a long call has.
     let before = work(&rig).await;
     for set in SETS {
@@ -71,23 +80,84 @@ async fn pace() {
     let per_set = (work(&rig).await - before) / SETS.len() as f64;
     tell(&rig, "sets of readings added", "a set", per_set).await;
 
-    let before = work(&rig).await;
-    for field in FIELDS {
-        touch(&rig, field).await;
+    type_over(&rig, "readings typed", &FIELDS, ANSWERED).await;
+
+    throttle(&rig, 1).await;
+    rig.go("/call/demo-v-27/neutral").await;
+    rig.by_id("neutral-screen").await;
+    tick_all(&rig).await;
+    for (field, text) in [("neutral-CreepTurns", "3"), ("neutral-CreepTime", "60")] {
+        type_in(&rig, field, text).await;
+    }
+    press(&rig, "creep-way-forward").await;
+    throttle(&rig, THROTTLE).await;
+    let fields = ["neutral-CreepTurns", "neutral-Oil"];
+    type_over(&rig, "a neutral sheet filled in", &fields, WORKED_OUT).await;
+
+    throttle(&rig, 1).await;
+    rig.go("/call/demo-v-14/tracking").await;
+    rig.by_id("tracking-screen").await;
+    for (at, (lever, travel)) in RUNS.into_iter().enumerate() {
+        rig.click("add-run").await;
+        rig.by_id(&format!("run-{at}")).await;
+        press(&rig, &format!("run-{at}-lever-{lever}")).await;
+        press(&rig, &format!("run-{at}-travel-{travel}")).await;
+        press(&rig, &format!("run-{at}-load-nothing:-wheels-clear")).await;
+        type_in(&rig, &format!("run-{at}-left"), "49,25").await;
+        type_in(&rig, &format!("run-{at}-right"), "50,75").await;
+    }
+    throttle(&rig, THROTTLE).await;
+    let fields = ["run-0-left", "run-1-right"];
+    type_over(&rig, "tracking runs filled in", &fields, WORKED_OUT).await;
+
+    throttle(&rig, 1).await;
+    rig.go("/call/demo-v-14/bench").await;
+    rig.by_id("bench-screen").await;
+    press(&rig, "bench-paste-text").await;
+    paste(&rig, "bench-paste-text", table()).await;
+    rig.wait_for_text("Take 12 rows").await;
+    rig.click("bench-take").await;
+    press(&rig, "bench-charge-none").await;
+    press(&rig, "bench-meter-high").await;
+    type_in(&rig, "bench-viscosity", "46").await;
+    rig.wait_for_text("Derived displacement").await;
+    throttle(&rig, THROTTLE).await;
+    let fields = ["cell-0-flow", "cell-3-flow"];
+    type_over(&rig, "a bench table filled in", &fields, WORKED_OUT).await;
+    throttle(&rig, 1).await;
+}
+
+/// Types over fields key by key and tells how long the page was held.
+async fn type_over(rig: &Rig, what: &str, fields: &[&str], settled: &str) {
+    let before = work(rig).await;
+    for field in fields {
+        touch(rig, field).await;
         for key in KEYS.chars() {
-            press(&rig, key).await;
+            press_key(rig, key).await;
             // The next key comes when this one is seen: no thumb is faster.
             rig.js_async(SEEN, vec![]).await;
         }
-        // The answer of the worker is drawn too.
-        rig.wait_until("the answer is there", ANSWERED).await;
+        // What was worked out is drawn too.
+        rig.wait_until("the answer is there", settled).await;
         rig.js_async(SEEN, vec![]).await;
     }
-    let keys = (FIELDS.len() * KEYS.len()) as f64;
-    let per_key = (work(&rig).await - before) / keys;
-    tell(&rig, "readings typed", "a key", per_key).await;
-    rig.cdp("Emulation.setCPUThrottlingRate", json!({ "rate": 1 }))
-        .await;
+    let keys = (fields.len() * KEYS.len()) as f64;
+    let per_key = (work(rig).await - before) / keys;
+    tell(rig, what, "a key", per_key).await;
+}
+
+/// Puts a text into a text area as the clipboard does.
+async fn paste(rig: &Rig, testid: &str, text: String) {
+    let fill = "const box = document.querySelector(`[data-testid=\"${arguments[0]}\"]`);
+        Object.getOwnPropertyDescriptor(HTMLTextAreaElement.prototype, 'value').set.call(box, arguments[1]);
+        box.dispatchEvent(new InputEvent('input', { bubbles: true }));
+        return true;";
+    rig.js(fill, vec![testid.into(), text.into()]).await;
+}
+
+async fn throttle(rig: &Rig, rate: u32) {
+    let rate = json!({ "rate": rate });
+    rig.cdp("Emulation.setCPUThrottlingRate", rate).await;
 }
 
 /// Touches a control as a finger does. Not the driver's own click: what that looks for in the page takes longer than the page.
@@ -104,7 +174,7 @@ async fn touch(rig: &Rig, testid: &str) {
 }
 
 /// Presses a key of the keyboard where the focus is.
-async fn press(rig: &Rig, key: char) {
+async fn press_key(rig: &Rig, key: char) {
     let text = key.to_string();
     for event in [
         json!({ "type": "keyDown", "key": text, "text": text }),

@@ -10,15 +10,18 @@ use crate::app::call::cautions;
 use crate::app::parts::{Icon, Section, Shape};
 use crate::app::platform::focus;
 use crate::app::platform::ids;
+use crate::app::platform::timer::Timer;
 use crate::app::route::Route;
 use crate::caution::Stands;
 use crate::quantity::UnitPrefs;
 use crate::record::{IdOf, Visit};
-use crate::tracking::{LINES, Line, Outcome, Run, Setting, TrackingSheet, What, find};
+use crate::tracking::{
+    LINES, Line, Outcome, Run, Setting, TrackingSheet, Undercarriage, What, find,
+};
 use crate::unit::Unit;
 use std::rc::Rc;
 use yew::{Callback, Html, MouseEvent, Properties, component, html};
-use yew::{use_effect, use_memo, use_mut_ref};
+use yew::{use_effect, use_effect_with, use_mut_ref, use_state};
 
 /// Properties of [`TrackingScreen`].
 #[derive(Clone, PartialEq, Properties)]
@@ -36,9 +39,28 @@ pub struct TrackingScreenProps {
 /// One edit of the sheet.
 pub type Edit = Box<dyn FnOnce(&mut TrackingSheet)>;
 
+/// Quiet time after which a changed sheet is worked out, ms.
+const QUIET_MS: i32 = 150;
+
 /// What the runs come to, equal to itself alone.
 #[derive(Clone, Debug)]
 pub struct Told(pub Rc<Outcome>, pub Rc<Vec<usize>>);
+
+impl Told {
+    fn of(sheet: &TrackingSheet, usual: Undercarriage) -> Told {
+        let machine = sheet.machine(usual);
+        let (places, runs): (Vec<usize>, Vec<Run>) = sheet
+            .runs(&machine)
+            .into_iter()
+            .enumerate()
+            .filter_map(|(at, run)| run.ok().map(|run| (at, run)))
+            .unzip();
+        Told(
+            Rc::new(find(&machine, &runs, &sheet.screws())),
+            Rc::new(places),
+        )
+    }
+}
 
 impl PartialEq for Told {
     fn eq(&self, other: &Self) -> bool {
@@ -96,21 +118,24 @@ pub fn TrackingScreen(props: &TrackingScreenProps) -> Html {
     let usual = words::usual_undercarriage(props.unit.class);
     let machine = sheet.machine(usual);
     let read = sheet.runs(&machine);
-    let told = use_memo((sheet.clone(), usual), |(sheet, usual)| {
-        let machine = sheet.machine(*usual);
-        let (places, runs): (Vec<usize>, Vec<Run>) = sheet
-            .runs(&machine)
-            .into_iter()
-            .enumerate()
-            .filter_map(|(at, run)| run.ok().map(|run| (at, run)))
-            .unzip();
-        Told(
-            Rc::new(find(&machine, &runs, &sheet.screws())),
-            Rc::new(places),
-        )
-    });
-    let told = (*told).clone();
-    let used = told.1.len();
+    // Worked out after a quiet moment; the last answer stays until then, with the sheet that it is about.
+    let answer = use_state(|| ((sheet.clone(), usual), Told::of(&sheet, usual)));
+    let is_stale = answer.0 != (sheet.clone(), usual);
+    {
+        let answer = answer.clone();
+        use_effect_with((sheet.clone(), usual), move |about| {
+            let about = about.clone();
+            let timer = (answer.0 != about).then(|| {
+                Timer::once(QUIET_MS, move || {
+                    let told = Told::of(&about.0, about.1);
+                    answer.set((about, told));
+                })
+            });
+            move || drop(timer)
+        });
+    }
+    let ((known, _), told) = (*answer).clone();
+    let used = read.iter().filter(|run| run.is_ok()).count();
     let state = match sheet.runs.len() {
         0 => "none yet".to_owned(),
         all => format!("{used} of {all} count"),
@@ -121,7 +146,7 @@ pub fn TrackingScreen(props: &TrackingScreenProps) -> Html {
         Callback::from(move |_: MouseEvent| on_add.emit(last.unwrap_or_default()))
     };
     html! {
-        <main class="page tracking" id="main" data-testid="tracking-screen">
+        <main class="page tracking" id="main" data-testid="tracking-screen" aria-busy={is_stale.then_some("true")}>
             <div class="page-head">
                 <h1 id="title" tabindex="-1">{ "Straight tracking" }</h1>
                 <a class="button is-quiet" href={Route::Call(props.visit.id.clone()).href()} data-testid="back-to-call">
@@ -130,7 +155,7 @@ pub fn TrackingScreen(props: &TrackingScreenProps) -> Html {
             </div>
             <p class="soft">{ "Left and right are always by the seat. The unit’s manual comes before anything here." }</p>
             { cautions::at(Stands::WheelsClear) }
-            <Results told={told} sheet={sheet.clone()} prefs={props.prefs.clone()} on_add={on_add.clone()} />
+            <Results told={told} sheet={known} prefs={props.prefs.clone()} on_add={on_add.clone()} />
             <Steps sheet={sheet.clone()} visit={props.visit.id.clone()} on_edit={on_edit.clone()} on_add={on_add.clone()} />
             <Section id="tracking-runs" title="Runs" state={state} is_open=true>
                 { for sheet.runs.iter().zip(read).enumerate().map(|(at, (line, run))| html! {

@@ -58,8 +58,8 @@ pub fn LearnedScreen(props: &SettingsProps) -> Html {
             </div>
             <p>
                 { format!("How often a cause is met, before anything is read, starts from the catalogue (common practice), which counts as \
-                           {STRENGTH:.0} calls. Each closed call with a proved cause adds one; one closed without proof, in which something \
-                           was changed, counts half. A machine’s own class counts most. Every ranking that uses it says so.") }
+                           {STRENGTH:.0} calls. Each closed call with a proved cause adds one; one without proof, in which something was \
+                           changed and the trouble was gone, counts half; one after which it was still there counts nothing. A machine’s own class counts most. Every ranking that uses it says so.") }
             </p>
             <section class="panel stack" aria-label="Learning on or off">
                 <Choice<bool>

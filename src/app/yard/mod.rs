@@ -12,7 +12,6 @@ mod screen;
 mod step;
 mod verdict;
 mod wear;
-mod words;
 
 pub use entry::{YardEntry, start};
 pub use learned::LearnedScreen;

@@ -105,6 +105,9 @@ pub fn YardScreen(props: &YardScreenProps) -> Html {
                     <a class="button is-quiet" href={Route::Wear(props.unit.id.clone()).href()} data-testid="to-wear">
                         { "Wear over the hours" }
                     </a>
+                    <a class="button is-quiet" href={Route::Report(props.visit.id.clone()).href()} data-testid="to-report">
+                        { "Hand over" }
+                    </a>
                 </div>
             </div>
             <p class="soft">

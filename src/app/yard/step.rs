@@ -5,11 +5,11 @@ use yew::{Callback, Html, Properties, component, html};
 
 use super::checked::Checked;
 use super::screen::Edit;
-use super::words;
 use crate::app::call::cautions;
 use crate::app::parts::{Choice, Entry, Lay, MeasureField, Opt, Section};
 use crate::quantity::UnitPrefs;
 use crate::unit::Unit;
+use crate::yard::labels;
 use crate::yard::{Field, Judged, Look, Step, YardSheet};
 
 /// Properties of [`StepPart`].
@@ -113,7 +113,7 @@ fn look(look: &'static Look, props: &StepProps) -> Html {
 }
 
 fn field(field: Field, props: &StepProps) -> Html {
-    let (label, hint) = words::field(field, &props.unit);
+    let (label, hint) = labels::field(field, &props.unit);
     let typed = props.sheet.fields.get(&field).cloned().unwrap_or_default();
     let on_entry = props.on_edit.reform(move |entry: Entry| -> Edit {
         Box::new(move |visit| {
@@ -127,7 +127,7 @@ fn field(field: Field, props: &StepProps) -> Html {
             id={format!("yard-field-{code}")}
             {label}
             {hint}
-            unit={words::unit(field, &props.prefs)}
+            unit={labels::unit(field, &props.prefs)}
             typed={typed.typed}
             value={typed.value}
             range={Some(field.range())}

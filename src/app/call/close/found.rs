@@ -5,8 +5,8 @@ use crate::app::call::change::Change;
 use crate::app::parts::{Choice, Opt, Select, TextField};
 use crate::call::closing::cause;
 use crate::faults::{self, FaultId};
-use crate::record::Closing;
 use crate::record::limits::TEXT_CHARACTERS;
+use crate::record::{Afterwards, Closing};
 use yew::{Html, html};
 
 /// Leading causes that stand first in the list.
@@ -71,6 +71,15 @@ pub fn asked(closing: &Closing, props: &EntryProps) -> Html {
         })
     };
     let proof = cause(&closing.cause).map_or("", |fault| fault.proof);
+    let on_afterwards = {
+        let closing = closing.clone();
+        props.on_change.reform(move |afterwards: Afterwards| {
+            Change::Closing(Closing {
+                afterwards,
+                ..closing.clone()
+            })
+        })
+    };
     html! { <>
         <Select<String>
             id="close-cause"
@@ -117,5 +126,12 @@ pub fn asked(closing: &Closing, props: &EntryProps) -> Html {
                 />
             }
         }
+        <Choice<Afterwards>
+            name="close-afterwards"
+            label="The trouble, after what was done"
+            options={Afterwards::ALL.map(|after| Opt::new(after, after.words(), after.code())).to_vec()}
+            value={(!closing.afterwards.is_not_said()).then_some(closing.afterwards)}
+            on_change={on_afterwards}
+        />
     </> }
 }

@@ -147,6 +147,9 @@ fn closed(closing: &Closing, open: usize, props: &ClosePanelProps) -> Html {
             </div>
             { fact("Proved by", &closing.proof) }
             { fact("Done", &closing.done) }
+            if !closing.afterwards.is_not_said() {
+                { fact("The trouble afterwards", closing.afterwards.words()) }
+            }
             { fact("Parts", &closing.parts) }
             { fact("Closed", &clock::tell(&closing.when)) }
         </dl>

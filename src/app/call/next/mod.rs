@@ -14,7 +14,7 @@ use crate::next::{Advice, Offer};
 use crate::quantity::UnitPrefs;
 use crate::record;
 use std::collections::BTreeMap;
-use yew::{Callback, Html, Properties, component, html};
+use yew::{Callback, Html, Properties, component, html, use_mut_ref};
 
 /// Properties of [`NextPanel`].
 #[derive(Clone, PartialEq, Properties)]
@@ -42,24 +42,42 @@ pub struct NextPanelProps {
 /// The panel.
 #[component]
 pub fn NextPanel(props: &NextPanelProps) -> Html {
-    let advice = props.assessment.as_ref().and_then(|a| a.advice.as_ref());
+    // A newer ranking comes before its advice. Until that is there the last one stays, marked as such: a panel that vanished at
+    // every key could not be read. What is seen can bar checks, so no advice outlives a change there.
+    let last = use_mut_ref(|| None::<(Answer, BTreeMap<String, record::Answer>)>);
+    let kept = {
+        let mut last = last.borrow_mut();
+        match &props.assessment {
+            Some(answer) if answer.advice.is_some() => {
+                *last = Some((answer.clone(), props.observations.clone()));
+            }
+            Some(_)
+                if last
+                    .as_ref()
+                    .is_some_and(|kept| kept.1 == props.observations) => {}
+            _ => *last = None,
+        }
+        last.as_ref().map(|kept| kept.0.clone())
+    };
+    let advice = kept.as_ref().and_then(|a| a.advice.as_ref());
+    let is_old = props.updating || kept != props.assessment;
     html! {
         <section class="panel next" aria-labelledby="next-title" id="next" tabindex="-1" data-testid="next">
             <h2 id="next-title">
                 { "What to do next" }
-                if props.updating && advice.is_some() {
+                if is_old && advice.is_some() {
                     <span class="count">{ "updating…" }</span>
                 }
             </h2>
             { match advice {
-                Some(advice) => shown(advice, props),
+                Some(advice) => shown(advice, is_old, props),
                 None => html! { <p class="soft" role="status">{ "Working out which check tells most…" }</p> },
             } }
         </section>
     }
 }
 
-fn shown(advice: &Advice, props: &NextPanelProps) -> Html {
+fn shown(advice: &Advice, is_old: bool, props: &NextPanelProps) -> Html {
     // What was made already has nothing more to say today.
     let is_made = |offer: &&Offer| props.made.contains(&offer.id);
     let made: Vec<&Offer> = advice.checks.iter().filter(is_made).collect();
@@ -71,7 +89,7 @@ fn shown(advice: &Advice, props: &NextPanelProps) -> Html {
     };
     let first = usize::from(best.is_some());
     html! {
-        <div class={if props.updating { "next-body is-updating" } else { "next-body" }}>
+        <div class={if is_old { "next-body is-updating" } else { "next-body" }}>
             if let Some(stop) = &advice.stop {
                 <Caution grade={Grade::Note} title="Stop checking" class="small-caution" testid="next-stop">
                     <p>{ stop.clone() }</p>

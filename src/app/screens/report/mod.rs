@@ -1,8 +1,10 @@
 //! The hand-over report of a call: on the screen as it comes out of the printer, and the ways to hand it over.
 
+mod check;
 mod send;
 mod sheet;
 
+pub use self::check::CheckReportScreen;
 use self::send::Send;
 use self::sheet::sheet;
 use crate::app::parts::{Caution, Grade, Icon, Shape, TextField};
@@ -109,6 +111,7 @@ pub fn ReportScreen(props: &ReportScreenProps) -> Html {
                             text={report.text()}
                             table={table(subject)}
                             file={subject.export().text().unwrap_or_default()}
+                            what="call"
                             on_say={props.on_say.clone()}
                         />
                         { sheet(&report) }

@@ -14,8 +14,10 @@ pub struct SendProps {
     pub text: String,
     /// The readings as a table.
     pub table: String,
-    /// The call as a file.
+    /// The call or the check as a file.
     pub file: String,
+    /// What is in that file: "call" or "check".
+    pub what: AttrValue,
     /// Something to say in the live region.
     pub on_say: Callback<String>,
 }
@@ -82,7 +84,7 @@ pub fn Send(props: &SendProps) -> Html {
                     { "Readings as CSV" }
                 </button>
                 <button type="button" class="button" onclick={hand_over("json", "application/json", &props.file)} data-testid="report-file">
-                    { "This call as a file" }
+                    { format!("This {} as a file", props.what) }
                 </button>
             </div>
             <details class="fold">

@@ -1,10 +1,11 @@
-//! Labels of the sheet.
+//! Labels of the sheet's figures, on the screen and on paper.
 
+use super::Field;
 use crate::quantity::{Unit, UnitPrefs};
 use crate::unit::Unit as Machine;
-use crate::yard::Field;
 
 /// Label of a field and where to find the figure.
+#[must_use]
 pub fn field(field: Field, machine: &Machine) -> (&'static str, &'static str) {
     let one = machine.ticks.paths.is_one();
     match field {
@@ -60,6 +61,7 @@ pub fn field(field: Field, machine: &Machine) -> (&'static str, &'static str) {
 }
 
 /// The unit that a field is asked in: the shop's, but turns in turns, times in seconds, lengths in metres or feet.
+#[must_use]
 pub fn unit(field: Field, prefs: &UnitPrefs) -> Unit {
     let (usual, _, _) = field.asks();
     match usual {
