@@ -1107,6 +1107,70 @@ fn a_machine_on_its_limit_passes_no_oftener_than_the_guard_band_says() {
     assert!(failed as f64 <= 0.065 * RUNS as f64, "{failed}");
 }
 
+/// Two temperatures run, two told by the fit: each curve holds the truth, what was not run is marked, and its band is wider.
+#[test]
+fn leakage_is_told_over_temperatures_with_what_was_not_run_marked() {
+    use lowside::bench::stand::leakage::{Leak, over_temperatures};
+    let machine = Machine::pump();
+    let mut rows = Vec::new();
+    for (celsius, speed) in [
+        (42.0, 1500.0),
+        (66.0, 1500.0),
+        (42.0, 2200.0),
+        (66.0, 2200.0),
+    ] {
+        for dp in [60.0, 140.0, 220.0, 300.0] {
+            let mu = machine.oil.dynamic_at(celsius);
+            let theory = machine.volume * speed * 1e-3;
+            let lost = machine.laminar * dp * REFERENCE / mu + machine.compression * theory * dp;
+            rows.push(Row::of(
+                "",
+                &[
+                    (Channel::Speed, speed),
+                    (Channel::Low, 20.0),
+                    (Channel::High, 20.0 + dp),
+                    (Channel::Flow, theory - lost),
+                    (Channel::Case, machine.case * (dp + 40.0) * REFERENCE / mu),
+                    (Channel::Inlet, celsius),
+                ],
+            ));
+        }
+    }
+    let run = sheet(Subject::Pump, rows);
+    let found = report(&run, None);
+    let (leak, curves) = over_temperatures(&found, Some(&machine.oil)).expect("fitted");
+    assert_eq!(leak, Leak::Case);
+    let told: Vec<(f64, bool)> = curves
+        .iter()
+        .map(|curve| (curve.celsius, curve.is_extrapolated()))
+        .collect();
+    assert_eq!(told, [(42.0, false), (66.0, false), (80.0, true)]);
+    let share = |curve: &lowside::bench::stand::leakage::AtTemperature| {
+        let (dp, value, u) = curve.line[20];
+        let truth = machine.case * (dp + 40.0) * REFERENCE / machine.oil.dynamic_at(curve.celsius);
+        assert!(
+            (value - truth).abs() < 2.0 * u,
+            "{value} is not {truth} ± {u}"
+        );
+        u / value
+    };
+    let doubts: Vec<f64> = curves.iter().map(share).collect();
+    assert!(doubts[2] > 1.02 * doubts[1], "{doubts:?}");
+    // Points that are left out carry no curve; without case flow all that is lost is told.
+    let mut lost = run.clone();
+    for row in &mut lost.rows {
+        row.cells.remove(&Channel::Case);
+    }
+    let found = report(&lost, None);
+    let (leak, curves) = over_temperatures(&found, Some(&machine.oil)).expect("fitted");
+    assert_eq!(leak, Leak::Flow);
+    assert!(
+        curves.iter().any(|curve| curve.points.len() == 8),
+        "{curves:?}"
+    );
+    assert_eq!(over_temperatures(&found, None), None);
+}
+
 /// Random tables: whatever is typed, the sheet is computed, no figure is NaN, and a pass never rests on a point that is left out.
 mod random_tables {
     use super::*;

@@ -63,6 +63,31 @@ pub struct Window {
     pub remark: Option<String>,
     /// True where the healthy machine's needle would swing or there is no steady state.
     pub swings: bool,
+    /// Of a case flow: what it says against the bench.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub since_bench: Option<SinceBench>,
+}
+
+/// A case flow taken on the machine, held against what the bench measured of the same part.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+#[serde(rename_all = "snake_case")]
+pub enum SinceBench {
+    /// So many times the bench's leakage, at the same oil and pressure.
+    Times {
+        /// How many times.
+        ratio: f64,
+        /// Lower end of about 95 %.
+        low: f64,
+        /// Upper end.
+        high: f64,
+        /// When the bench measured it (ISO 8601); empty where nobody noted it.
+        on: String,
+    },
+    /// Not comparable.
+    Cannot {
+        /// Why, in words.
+        why: String,
+    },
 }
 
 /// A reading or observation that speaks for or against a cause.

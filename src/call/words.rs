@@ -1,6 +1,6 @@
 //! Words of the call screen: states, sources, conditions and probabilities in the trade's own terms.
 
-use crate::assessment::{Assessment, Cause, Standing, Trust, WindowSource};
+use crate::assessment::{Assessment, Cause, SinceBench, Standing, Trust, WindowSource};
 use crate::faults::FaultId;
 use crate::quantity::{self, DecimalMark, Decimals, Kind, Measure, Unit, UnitPrefs};
 use crate::readings::{Condition, Direction, EngineSpeed, Lever, Port, Seen};
@@ -62,6 +62,40 @@ pub fn times(share: f64) -> String {
         format!("{:.0}{NARROW}%", share * 100.0)
     } else {
         String::from("?")
+    }
+}
+
+/// What a case flow says against the bench: "1.6 (1.3 to 2.0) times what the bench measured on 4 Mar 2025, at the same oil and
+/// pressure".
+pub fn since_bench(since: &SinceBench, prefs: &UnitPrefs) -> String {
+    let number = |value: f64| {
+        let text = match value {
+            v if v < 0.1 => format!("{v:.2}"),
+            v if v < 10.0 => format!("{v:.1}"),
+            v => format!("{v:.0}"),
+        };
+        match prefs.mark() {
+            DecimalMark::Comma => text.replace('.', ","),
+            DecimalMark::Point => text,
+        }
+    };
+    match since {
+        SinceBench::Cannot { why } => why.clone(),
+        SinceBench::Times {
+            ratio,
+            low,
+            high,
+            on,
+        } => {
+            let day = crate::yard::calendar::day(on).map(crate::yard::calendar::words);
+            let when = day.map_or_else(String::new, |day| format!(" on {day}"));
+            format!(
+                "{} ({} to {}) times what the bench measured{when}, at the same oil and pressure",
+                number(*ratio),
+                number(*low),
+                number(*high)
+            )
+        }
     }
 }
 

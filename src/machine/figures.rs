@@ -156,7 +156,7 @@ pub fn base(build: &Build) -> Params {
 /// Pressure difference at which a bench run tells leakages, bar.
 const LEAKAGE_AT: f64 = 200.0;
 /// Width of a leakage measured on the bench: the fit's own doubt, and what fitting and running since may have changed. Practice.
-const MEASURED_LEAKAGE: f64 = 0.15;
+pub const MEASURED_LEAKAGE: f64 = 0.15;
 
 /// Leakages that a bench run found, as parameters: L/min per bar at viscosity 1. What slips and does not reach the case goes
 /// across.

@@ -12,5 +12,5 @@ mod twin;
 
 pub use builds::{Build, arrangement, builds};
 pub use condition::{Warmth, apply, condition_latents, layout_for};
-pub use figures::{base, describe_basis, unit_latents};
+pub use figures::{MEASURED_LEAKAGE, base, describe_basis, unit_latents};
 pub use latent::{Act, Latent, Latents, scattered};

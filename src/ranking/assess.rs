@@ -9,7 +9,8 @@ use super::predict::Bench;
 use super::quick::Last;
 use super::rows::rows;
 use super::seen;
-use crate::assessment::{Assessment, At, Cause, Trust, Window};
+use crate::assessment::{Assessment, At, Cause, SinceBench, Trust, Window};
+use crate::bench::since::since;
 use crate::machine::{Warmth, builds, condition_latents, unit_latents};
 use crate::math;
 use crate::readings::instrument::Instrument;
@@ -130,7 +131,7 @@ impl<'a> Prepared<'a> {
     }
 
     fn windows(&self, spreads: &mut Spreads) -> Vec<Window> {
-        windows(
+        let mut windows = windows(
             self.unit,
             &self.visit.readings,
             &self.visit.riggings,
@@ -138,7 +139,14 @@ impl<'a> Prepared<'a> {
             &self.data,
             &self.bench,
             spreads,
-        )
+        );
+        for window in &mut windows {
+            let mut readings = self.visit.readings.iter();
+            let reading = readings.find(|reading| reading.id == window.reading);
+            window.since_bench =
+                reading.and_then(|reading| since(self.unit, self.visit, reading, self.instruments));
+        }
+        windows
     }
 
     fn answer(&self, windows: Vec<Window>, mut weighed: Vec<Weighed>, change: f64) -> Assessment {
@@ -165,12 +173,14 @@ impl<'a> Prepared<'a> {
             .iter()
             .position(|r| r.condition.doing == Doing::Held)
             .map(|i| hold_time(unit, bench.speed(0, data.condition_of[i])));
+        let grown = since_bench(&windows);
         Assessment {
             windows,
             causes,
             withheld: withheld(unit, visit, data),
             notes: notes(unit, visit, trust.swapped)
                 .into_iter()
+                .chain(grown)
                 .chain(learned.clone())
                 .collect(),
             trust: trust.trust,
@@ -312,6 +322,19 @@ fn withheld(unit: &Unit, visit: &Visit, data: &Data) -> Vec<String> {
         out.push("Leakage is judged at oil temperature, and none was taken with these readings: the windows are wide until it is.".to_string());
     }
     out
+}
+
+/// What case flows say against the bench, where it is sure either way. The figures stand beside the readings.
+fn since_bench(windows: &[Window]) -> Option<String> {
+    windows.iter().find_map(|window| match window.since_bench {
+        Some(SinceBench::Times { low, .. }) if low > 1.0 => Some(
+            "The motor leaks more into its case than the bench measured of it, at the same oil and pressure. How many times stands beside the reading.".to_string(),
+        ),
+        Some(SinceBench::Times { high, .. }) if high < 1.0 => Some(
+            "The motor seems to leak less into its case than the bench measured of it. Motors do not heal: look at the oil's temperature, at the jug, and whether it is the same motor.".to_string(),
+        ),
+        _ => None,
+    })
 }
 
 fn notes(unit: &Unit, visit: &Visit, swapped: f64) -> Vec<String> {

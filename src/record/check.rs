@@ -7,7 +7,7 @@ use super::{Closing, NeutralSheet, PutBack, Settings, Visit, is_id};
 use crate::quantity::{Kind, Measure, Typed};
 use crate::readings::instrument::Instrument;
 use crate::readings::{Condition, EngineSpeed, Lever, Port, Reading, Rigging, Seen};
-use crate::unit::{FIGURES, FigureId, ManualWindow, Unit};
+use crate::unit::{FIGURES, FigureId, ManualWindow, OnBench, Unit};
 use serde_json::Value;
 use std::collections::{BTreeMap, BTreeSet};
 
@@ -188,6 +188,12 @@ pub(super) fn figure(id: FigureId, value: Measure) -> Result<(), Problem> {
     }
 }
 
+/// What a bench found of a figure.
+pub(super) fn on_bench(id: FigureId, found: &OnBench) -> Result<(), (&'static str, Problem)> {
+    figure(id, found.value).map_err(|p| (".value", p))?;
+    figure_within(found.share, (0.0, 1.0), "").map_err(|p| (".share", p))
+}
+
 fn at_port(port: Port, value: Measure) -> Result<(), Problem> {
     measure(value, port.kind(), limits::reading_span(port))
 }
@@ -273,6 +279,11 @@ pub(super) fn unit(path: &str, unit: &mut Unit) -> Checked {
         if let Some(value) = given.value {
             figure(*id, value).map_err(|p| content(format!("{path}.value"), p))?;
         }
+    }
+    for (id, found) in &mut unit.bench {
+        let path = format!("{path}.bench.{}", code_of(id));
+        line(&path, "on", &mut found.on)?;
+        at(&path, on_bench(*id, found))?;
     }
     for (port, note) in &mut unit.ports {
         let path = format!("{path}.ports.{}", code_of(port));

@@ -18,6 +18,8 @@ pub(super) fn unit(unit: &Unit) -> Unit {
             figure.value = None;
         }
     }
+    unit.bench
+        .retain(|id, found| check::on_bench(*id, found).is_ok());
     let mut aside = Vec::new();
     for note in unit.ports.values_mut() {
         if let Some(minutes) = note

@@ -123,6 +123,12 @@ fn row(subject: &Subject, number: usize, reading: &Reading) -> Row {
     let mut remarks = Vec::new();
     if let Some(window) = window {
         remarks.extend(window.remark.iter().map(|remark| one_line(remark)));
+        remarks.extend(
+            window
+                .since_bench
+                .as_ref()
+                .map(|since| one_line(&words::since_bench(since, prefs))),
+        );
         if window.swings {
             remarks.push(String::from("a healthy machine's needle swings here too"));
         }

@@ -1,6 +1,7 @@
 //! The figures of a unit: each with its source, its unit as typed, and its width.
 
 use crate::quantity::{Kind, Measure};
+use crate::readings::Path;
 use serde::{Deserialize, Serialize};
 
 /// Where a figure comes from. It decides how wide the figure is taken.
@@ -52,6 +53,22 @@ pub struct Figure {
     /// Source.
     #[serde(default)]
     pub source: Source,
+}
+
+/// What a bench found, beside the figure that holds it: a figure typed over since is no longer the bench's.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+pub struct OnBench {
+    /// When it stood there (ISO 8601).
+    #[serde(default)]
+    pub on: String,
+    /// What was found.
+    pub value: Measure,
+    /// Standard uncertainty, as a share of it.
+    #[serde(default)]
+    pub share: f64,
+    /// Of which side it was, where that is said.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub path: Option<Path>,
 }
 
 /// Which figure. The first five are the ones that sharpen a quick profile most.

@@ -7,7 +7,7 @@ mod profile;
 mod ticks;
 
 pub use class::{ClassPractice, MachineClass, Spread};
-pub use figure::{FIGURES, Figure, FigureAsk, FigureId, Source};
+pub use figure::{FIGURES, Figure, FigureAsk, FigureId, OnBench, Source};
 pub use fitted::Fitted;
 pub use profile::{ManualWindow, PortNote, Unit};
 pub use ticks::{

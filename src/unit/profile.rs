@@ -1,6 +1,6 @@
 //! One machine as it is kept.
 
-use super::{Figure, FigureId, MachineClass, Ticks};
+use super::{Figure, FigureId, MachineClass, OnBench, Ticks};
 use crate::quantity::Measure;
 use crate::readings::{Condition, Port, SideNaming};
 use serde::{Deserialize, Serialize};
@@ -51,6 +51,9 @@ pub struct Unit {
     pub ticks: Ticks,
     /// Figures, those that are known.
     pub figures: BTreeMap<FigureId, Figure>,
+    /// Leakages that a bench found, with their day: later case flows are held against them.
+    #[serde(skip_serializing_if = "BTreeMap::is_empty")]
+    pub bench: BTreeMap<FigureId, OnBench>,
     /// Ports on this machine.
     pub ports: BTreeMap<Port, PortNote>,
     /// Windows from the unit's manual.

@@ -229,6 +229,7 @@ fn window(
         standing: Standing::Open,
         remark: silent.clone(),
         swings: spread.without_state * 10 > spread.values.len() + spread.without_state,
+        since_bench: None,
     };
     if cannot_be_negative(reading.port) {
         w.low = w.low.max(0.0);

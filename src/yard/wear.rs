@@ -42,7 +42,7 @@ const OVERRIDE: f64 = 2.0;
 /// From this share of the cracking pressure on, the relief may still hold.
 const HOLDS: f64 = 0.9;
 /// What a law too plain leaves open from one temperature to another, relative: part of what leaks goes through orifices.
-const LAW: f64 = 0.04;
+pub const LAW: f64 = 0.04;
 /// A knee this close over low idle may lie anywhere below, relative.
 const AT_IDLE: f64 = 0.02;
 

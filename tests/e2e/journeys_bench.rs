@@ -69,6 +69,39 @@ async fn a_pasted_run_becomes_a_judged_sheet_and_goes_into_the_profile() {
     assert!(rig.has("bench-map").await);
     look(&rig, "bench-run", LAPTOP).await;
 
+    // A limit of the manual along a curve: it fails, and with the figures read right it passes.
+    rig.click("bench-accept-add").await;
+    rig.wait_for_text("Not judged yet: choose the point").await;
+    rig.choose("bench-accept-0-of", "Case leakage").await;
+    press(&rig, "bench-accept-0-scope-curve").await;
+    type_in(&rig, "bench-accept-0-from", "60").await;
+    type_in(&rig, "bench-accept-0-to", "30").await;
+    type_in(&rig, "bench-accept-0-limit", "0,5").await;
+    rig.wait_for_text("the higher pressure has to lie over the lower one")
+        .await;
+    type_in(&rig, "bench-accept-0-to", "300 bar").await;
+    type_in(&rig, "bench-accept-0-limit-to", "1,5 L/min").await;
+    type_in(&rig, "bench-accept-0-source", "manual, page 31").await;
+    rig.wait_for_text("Fails: a figure lies outside its limit")
+        .await;
+    let came = rig.text("bench-accept-0-came").await;
+    assert!(came.starts_with("fail") && came.contains("300"), "{came}");
+    type_in(&rig, "bench-accept-0-limit", "1").await;
+    type_in(&rig, "bench-accept-0-limit-to", "2,8").await;
+    rig.wait_for_text("Passes in what was tested").await;
+    let came = rig.text("bench-accept-0-came").await;
+    assert!(came.starts_with("pass"), "{came}");
+    look(&rig, "bench-limits", LAPTOP).await;
+
+    // A torque that no pump can have: that point is named, and what rests on torque is not judged.
+    type_in(&rig, "cell-6-torque", "20").await;
+    rig.wait_for_text("Cannot tell: something on the sheet decides nothing")
+        .await;
+    let out = rig.text("bench-left-out").await;
+    assert!(out.contains("Point 7") && out.contains("torque"), "{out}");
+    press(&rig, "row-6-out").await;
+    rig.wait_for_text("Passes in what was tested").await;
+
     // A cell that cannot be read is named, and kept over a reload.
     type_in(&rig, "cell-0-flow", "about 60").await;
     rig.wait_for_text("Row 1, Flow").await;
@@ -92,6 +125,24 @@ async fn a_pasted_run_becomes_a_judged_sheet_and_goes_into_the_profile() {
     press(&rig, "bench-csv").await;
     let csv = rig.downloaded("bench-").await;
     assert!(csv.contains("Outlet pressure (bar)"), "{csv}");
+    assert!(!rig.scrolls_sideways().await, "one has to scroll sideways");
+
+    // The hand-over report carries the sheet.
+    rig.wait_for_text("Saved").await;
+    rig.go("/call/demo-v-14/report").await;
+    rig.by_id("report-bench").await;
+    let section = rig.text("report-bench").await;
+    for words in [
+        "Verdict: passes in what was tested",
+        "Case leakage",
+        "manual, page 31",
+        "Derived displacement",
+        "Not tested",
+        "Taken into the unit",
+    ] {
+        assert!(section.contains(words), "{words:?} is not in {section}");
+    }
+    look(&rig, "bench-report", LAPTOP).await;
     assert!(!rig.scrolls_sideways().await, "one has to scroll sideways");
     let problems = rig.problems().await;
     assert!(problems.is_empty(), "{problems:?}");

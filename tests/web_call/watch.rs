@@ -49,6 +49,7 @@ fn window(reading: &str, low: f64, high: f64) -> Window {
         standing: Standing::Open,
         remark: None,
         swings: false,
+        since_bench: None,
     }
 }
 

@@ -37,12 +37,18 @@ pub fn HandOver(props: &HandOverProps) -> Html {
                     "text/plain",
                 ),
                 _ => (
-                    paper::table(&props.sheet, &props.told.0, &props.prefs),
+                    // The mark that tells a spreadsheet the encoding.
+                    format!(
+                        "\u{feff}{}",
+                        paper::table(&props.sheet, &props.told.0, &props.prefs)
+                    ),
                     "csv",
                     "text/csv",
                 ),
             };
-            let name = format!("bench-{}.{ending}", file_name(&props.unit.name));
+            let part = files::name_part(&props.unit.name);
+            let part = if part.is_empty() { "sheet" } else { &part };
+            let name = format!("bench-{part}.{ending}");
             trouble.set(match files::hand_over(&name, media, &text) {
                 Ok(()) => String::new(),
                 Err(why) => format!("The file could not be handed to the browser: {why}."),
@@ -68,19 +74,5 @@ pub fn HandOver(props: &HandOverProps) -> Html {
             </div>
             <p class="field-error" role="status">{ (*trouble).clone() }</p>
         </Section>
-    }
-}
-
-/// A unit's name as part of a file's: letters, digits, dashes.
-fn file_name(name: &str) -> String {
-    let name: String = name
-        .chars()
-        .map(|c| if c.is_ascii_alphanumeric() { c } else { '-' })
-        .take(40)
-        .collect();
-    if name.is_empty() {
-        "sheet".to_owned()
-    } else {
-        name
     }
 }

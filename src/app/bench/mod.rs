@@ -14,5 +14,6 @@ mod results;
 mod screen;
 mod table;
 mod take_over;
+mod warm_plot;
 
 pub use screen::{BenchScreen, BenchScreenProps};

@@ -3,9 +3,12 @@
 
 use super::codes;
 use super::screen::Told;
+use super::warm_plot;
+use crate::app::call::bands::round_step;
 use crate::app::parts::Section;
 use crate::bench::stand::analysis::Quantity;
 use crate::bench::stand::fit::LossFit;
+use crate::bench::stand::flaw::Part;
 use crate::bench::stand::{BenchSheet, Channel};
 use crate::quantity::{Unit, UnitPrefs};
 use std::rc::Rc;
@@ -64,19 +67,9 @@ impl Axes {
     }
 }
 
-/// A round step so that about five marks stand on an axis.
-fn step(span: f64) -> f64 {
-    let rough = (span / 5.0).max(1e-9);
-    let decade = crate::math::exp10(crate::math::log10(rough).floor());
-    [1.0, 2.0, 5.0, 10.0]
-        .into_iter()
-        .map(|m| m * decade)
-        .find(|s| *s >= rough)
-        .unwrap_or(rough)
-}
-
+/// Figures along an axis: about five.
 fn marks((low, high): (f64, f64)) -> Vec<f64> {
-    let step = step(high - low);
+    let step = round_step((high - low) / 5.0);
     let first = (low / step).ceil();
     (0..12)
         .map(|i| (first + f64::from(i)) * step)
@@ -85,18 +78,34 @@ fn marks((low, high): (f64, f64)) -> Vec<f64> {
 }
 
 /// A measured point with the half height of its doubt.
-struct Spot {
-    x: f64,
-    y: f64,
-    half: f64,
-    curve: usize,
+pub(super) struct Spot {
+    pub(super) x: f64,
+    pub(super) y: f64,
+    pub(super) half: f64,
+    pub(super) curve: usize,
+    /// Left out of fit and verdict: drawn as a cross.
+    pub(super) is_out: bool,
 }
 
-/// A curve with its band; `beyond` from this x on it is extrapolated.
-struct Curve {
-    name: String,
-    line: Vec<(f64, f64, f64)>,
-    beyond: (f64, f64),
+/// A curve with its band; the line is drawn from one x to another, beyond it the band alone stands.
+pub(super) struct Curve {
+    pub(super) name: String,
+    /// x, y, half height of the band.
+    pub(super) line: Vec<(f64, f64, f64)>,
+    pub(super) drawn: (f64, f64),
+    /// Class of the line, which gives the dashes.
+    pub(super) style: String,
+    /// True where points carry it, so that it has a mark.
+    pub(super) has_mark: bool,
+}
+
+/// What the frame holds.
+#[derive(Clone, Copy, Default)]
+pub(super) struct Room {
+    /// Lowest and highest that can be.
+    pub(super) ends: Option<(f64, f64)>,
+    /// True where curves without points are to be seen whole, with their names at their ends.
+    pub(super) is_for_curves: bool,
 }
 
 fn frame(axes: Axes, x_words: &str, y_words: &str, prefs: &UnitPrefs) -> Html {
@@ -149,13 +158,22 @@ fn mark(curve: usize, x: f64, y: f64) -> Html {
     }
 }
 
-fn drawing(
+/// A cross where a point was left out.
+fn cross(x: f64, y: f64) -> Html {
+    let (left, right, top, bottom) = (x - 5.0, x + 5.0, y - 5.0, y + 5.0);
+    let d = format!(
+        "M{left:.1} {top:.1}L{right:.1} {bottom:.1}M{left:.1} {bottom:.1}L{right:.1} {top:.1}"
+    );
+    html! { <path class="bench-doubt" {d} /> }
+}
+
+pub(super) fn drawing(
     title: &str,
     (x_words, y_words): (&str, &str),
     curves: &[Curve],
     spots: &[Spot],
     prefs: &UnitPrefs,
-    floor: Option<(f64, f64)>,
+    room: Room,
 ) -> Html {
     let xs = spots
         .iter()
@@ -164,17 +182,28 @@ fn drawing(
     let high_x = xs.fold(1.0_f64, f64::max);
     let ys = spots
         .iter()
-        .flat_map(|spot| [spot.y - spot.half, spot.y + spot.half]);
+        .flat_map(|spot| [spot.y - spot.half, spot.y + spot.half])
+        .chain(
+            curves
+                .iter()
+                .filter(|_| room.is_for_curves)
+                .flat_map(|curve| {
+                    curve
+                        .line
+                        .iter()
+                        .flat_map(|(_, y, half)| [y - half, y + half])
+                }),
+        );
     let (mut low, mut high) = ys.fold((f64::MAX, f64::MIN), |(low, high), y| {
         (low.min(y), high.max(y))
     });
     if low > high {
         return html! {};
     }
-    let room = 0.1 * (high - low).max(0.05 * high.abs().max(0.1));
-    low -= room;
-    high += room;
-    if let Some((least, most)) = floor {
+    let margin = 0.1 * (high - low).max(0.05 * high.abs().max(0.1));
+    low -= margin;
+    high += margin;
+    if let Some((least, most)) = room.ends {
         low = low.max(least);
         high = high.min(most).max(low + 0.01);
     }
@@ -192,12 +221,13 @@ fn drawing(
                     let lower = curve.line.iter().rev().map(|(x, y, half)| (*x, y - half));
                     let band: Vec<(f64, f64)> = upper.chain(lower).collect();
                     let middle = |is_in: bool| -> Vec<(f64, f64)> {
-                        let (from, to) = curve.beyond;
+                        let (from, to) = curve.drawn;
                         curve.line.iter().filter(|(x, ..)| (*x >= from && *x <= to) == is_in).map(|(x, y, _)| (*x, *y)).collect()
                     };
                     html! { <>
                         <polygon class={format!("bench-band is-{at}")} points={axes.path(&band)} />
-                        <polyline class={format!("bench-curve is-{at}")} points={axes.path(&middle(true))} />
+                        <polyline class={format!("bench-curve {}", curve.style)} points={axes.path(&middle(true))} />
+                        if room.is_for_curves { { end_name(axes, curve) } }
                     </> }
                 }) }
                 { for spots.iter().map(|spot| {
@@ -206,7 +236,7 @@ fn drawing(
                     let (_, bottom) = axes.at(spot.x, spot.y - spot.half);
                     html! { <>
                         <line class="bench-doubt" x1={format!("{x:.1}")} x2={format!("{x:.1}")} y1={format!("{top:.1}")} y2={format!("{bottom:.1}")} />
-                        { mark(spot.curve, x, y) }
+                        if spot.is_out { { cross(x, y) } } else { { mark(spot.curve, x, y) } }
                     </> }
                 }) }
             </svg>
@@ -214,14 +244,25 @@ fn drawing(
                 { for curves.iter().enumerate().map(|(at, curve)| html! {
                     <li>
                         <svg viewBox="0 0 40 14" aria-hidden="true">
-                            <line class={format!("bench-curve is-{at}")} x1="0" x2="40" y1="7" y2="7" />
-                            { mark(at, 20.0, 7.0) }
+                            <line class={format!("bench-curve {}", curve.style)} x1="0" x2="40" y1="7" y2="7" />
+                            if curve.has_mark { { mark(at, 20.0, 7.0) } }
                         </svg>
                         { &curve.name }
                     </li>
                 }) }
             </ul>
         </figure>
+    }
+}
+
+/// A curve's name over its upper end.
+fn end_name(axes: Axes, curve: &Curve) -> Html {
+    let Some((x, y, _)) = curve.line.last() else {
+        return html! {};
+    };
+    let (x, y) = axes.at(*x, *y);
+    html! {
+        <text class="bench-mark bench-name-of" x={format!("{x:.1}")} y={format!("{:.1}", (y - 6.0).max(TOP))} text-anchor="end">{ &curve.name }</text>
     }
 }
 
@@ -255,6 +296,7 @@ fn spots(told: &Told, speeds: &[f64], quantity: Quantity, factor: f64, bar: f64)
                 y: figure.value * factor,
                 half: figure.expanded() * factor,
                 curve,
+                is_out: !point.counts_for(Part::of(quantity)),
             })
         })
         .collect()
@@ -271,7 +313,8 @@ fn curves(
     let mu = 0.5 * (covered.viscosity.0 + covered.viscosity.1);
     speeds
         .iter()
-        .map(|n| {
+        .enumerate()
+        .map(|(at, n)| {
             let (low, high) = covered.difference;
             let (from, to) = (0.3 * low, 1.15 * high);
             let line = (0..=STEPS)
@@ -284,7 +327,9 @@ fn curves(
             Curve {
                 name: format!("{n:.0} rpm"),
                 line,
-                beyond: (low * bar * 0.97, high * bar * 1.03),
+                drawn: (low * bar * 0.97, high * bar * 1.03),
+                style: format!("is-{at}"),
+                has_mark: true,
             }
         })
         .collect()
@@ -321,15 +366,19 @@ pub fn Pictures(props: &PicturesProps) -> Html {
             .flow_lost
             .map(|(v, u)| (v * litre, u * litre))
     });
-    let share = Some((0.0, 105.0));
+    let share = Room {
+        ends: Some((0.0, 105.0)),
+        ..Room::default()
+    };
     html! {
         <Section id="bench-pictures" title="Pictures" is_open=true>
             <p class="soft">{ "Points with their doubt; curves of the loss fit with their band at the middle viscosity of the run. Where no line is drawn in a \
-                band, the fit goes beyond what was run." }</p>
+                band, the fit goes beyond what was run. A cross is a point that is left out." }</p>
             <div class="bench-figures-grid">
                 { drawing("Volumetric efficiency", (&x_words, "%"), &efficiency, &spots(&props.told, &speeds, Quantity::Volumetric, 100.0, bar), &props.prefs, share) }
                 { drawing("Overall efficiency", (&x_words, "%"), &overall, &spots(&props.told, &speeds, Quantity::Overall, 100.0, bar), &props.prefs, share) }
-                { drawing("Flow lost", (&x_words, flow.symbol()), &lost, &spots(&props.told, &speeds, Quantity::FlowLost, litre, bar), &props.prefs, None) }
+                { drawing("Flow lost", (&x_words, flow.symbol()), &lost, &spots(&props.told, &speeds, Quantity::FlowLost, litre, bar), &props.prefs, Room::default()) }
+                { warm_plot::figure(&props.told, &props.sheet, &props.prefs) }
                 { residuals(&props.told, &props.prefs) }
                 { map(&report.losses, &props.prefs, bar) }
             </div>
@@ -351,6 +400,7 @@ fn residuals(told: &Told, prefs: &UnitPrefs) -> Html {
             y: (seen - foretold) / sigma,
             half: 0.0,
             curve: 0,
+            is_out: false,
         })
         .collect();
     let high = spots.iter().map(|s| s.y.abs()).fold(2.5_f64, f64::max);

@@ -101,6 +101,7 @@ pub fn BenchScreen(props: &BenchScreenProps) -> Html {
                 told={told.clone()}
                 sheet={sheet.clone()}
                 unit={props.unit.clone()}
+                opened={props.visit.opened.clone()}
                 prefs={props.prefs.clone()}
                 on_unit={props.on_unit.clone()}
                 {on_edit}

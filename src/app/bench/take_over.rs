@@ -7,10 +7,13 @@ use crate::app::platform::clock;
 use crate::bench::stand::BenchSheet;
 use crate::bench::stand::report::Proposal;
 use crate::quantity::{Decimals, UnitPrefs, edit_text, format_with_unit};
-use crate::unit::{FIGURES, Figure, FigureId, Source, Unit};
+use crate::unit::{FIGURES, Figure, FigureId, OnBench, Source, Unit};
 use std::collections::BTreeSet;
 use std::rc::Rc;
-use yew::{Callback, Event, Html, MouseEvent, Properties, TargetCast, component, html, use_state};
+use yew::{
+    AttrValue, Callback, Event, Html, MouseEvent, Properties, TargetCast, component, html,
+    use_state,
+};
 
 /// Properties of [`TakeOver`].
 #[derive(Clone, PartialEq, Properties)]
@@ -21,12 +24,25 @@ pub struct TakeOverProps {
     pub sheet: Rc<BenchSheet>,
     /// The unit.
     pub unit: Rc<Unit>,
+    /// When the call was opened (ISO 8601): the day of the run.
+    pub opened: AttrValue,
     /// Units of measure.
     pub prefs: UnitPrefs,
     /// The unit was edited.
     pub on_unit: Callback<Unit>,
     /// Edits of the sheet.
     pub on_edit: Callback<Edit>,
+}
+
+/// What later case flows are held against.
+const fn is_leakage(id: FigureId) -> bool {
+    matches!(
+        id,
+        FigureId::PumpCaseLeakage
+            | FigureId::PumpSlip
+            | FigureId::MotorCaseLeakage
+            | FigureId::MotorSlip
+    )
 }
 
 fn words(id: FigureId) -> &'static str {
@@ -58,6 +74,7 @@ pub fn TakeOver(props: &TakeOverProps) -> Html {
             props.on_edit.clone(),
         );
         let (prefs, chosen) = (props.prefs.clone(), chosen.clone());
+        let (opened, path) = (props.opened.to_string(), props.sheet.path);
         Callback::from(move |_: MouseEvent| {
             let mut unit = (*unit).clone();
             for proposal in &chosen {
@@ -68,6 +85,15 @@ pub fn TakeOver(props: &TakeOverProps) -> Html {
                     source: Source::Measured,
                 };
                 unit.figures.insert(proposal.id, figure);
+                if is_leakage(proposal.id) {
+                    let found = OnBench {
+                        on: opened.clone(),
+                        value: proposal.value,
+                        share: proposal.share.min(1.0),
+                        path,
+                    };
+                    unit.bench.insert(proposal.id, found);
+                }
             }
             on_unit.emit(unit);
             let now = clock::now();
@@ -79,7 +105,8 @@ pub fn TakeOver(props: &TakeOverProps) -> Html {
             if proposals.is_empty() {
                 <p class="soft">{ "Nothing to take over yet: displacement, leakage and settings stand here once the sheet carries them." }</p>
             } else {
-                <p>{ "These replace what the profile says, with the source “measured”. Windows and ranking on the machine then rest on them." }</p>
+                <p>{ "These replace what the profile says, with the source “measured”. Windows and ranking on the machine then rest on them, and a motor’s drain \
+                    taken on a later call is held against its leakage here." }</p>
                 <ul class="bench-take">
                     { for proposals.iter().map(|proposal| row(props, proposal, &left_out)) }
                 </ul>

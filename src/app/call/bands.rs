@@ -29,8 +29,9 @@ pub fn axis(spans: &[(f64, f64)]) -> Option<Axis> {
     Some(Axis { from, to, step })
 }
 
-/// The next of 1, 2, 5 times a power of ten.
-fn round_step(least: f64) -> f64 {
+/// The next of 1, 2, 5 times a power of ten; of nothing, a step that is as good as nothing.
+pub fn round_step(least: f64) -> f64 {
+    let least = least.max(1e-9);
     let mut power = 1.0_f64;
     while power * 10.0 <= least {
         power *= 10.0;

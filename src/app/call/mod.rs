@@ -22,7 +22,7 @@ use crate::call::{put_back, side, words};
 
 mod add_panel;
 pub(in crate::app) mod alerts;
-mod bands;
+pub mod bands;
 mod causes;
 pub(in crate::app) mod cautions;
 pub(in crate::app) mod change;

@@ -91,11 +91,28 @@ pub fn WindowScale(props: &WindowScaleProps) -> Html {
             if let Some(remark) = &window.remark {
                 <p class="window-remark">{ remark.clone() }</p>
             }
+            if let Some(since) = &window.since_bench {
+                <p class="window-remark" data-testid={format!("since-bench-{}", props.number)}>
+                    { sentence(&words::since_bench(since, prefs)) }
+                </p>
+            }
             if props.full {
                 { basis(window, port, prefs) }
             }
         </div>
     }
+}
+
+/// Words as a sentence of their own.
+fn sentence(words: &str) -> String {
+    let mut letters = words.chars();
+    let first = letters.next().map(char::to_uppercase);
+    first
+        .into_iter()
+        .flatten()
+        .chain(letters)
+        .chain(['.'])
+        .collect()
 }
 
 /// What the window was computed for, its middle, and what the instrument leaves open.

@@ -10,6 +10,17 @@ use super::timer::Timer;
 /// The browser reads a blob after the click that starts the download returns.
 const KEEP_URL_MS: i32 = 60_000;
 
+/// A unit's name as part of the name of a file: letters and digits of any script, dashes for the rest, forty at most.
+pub fn name_part(name: &str) -> String {
+    let plain: String = name
+        .trim()
+        .chars()
+        .map(|c| if c.is_alphanumeric() { c } else { '-' })
+        .take(40)
+        .collect();
+    plain.trim_matches('-').to_owned()
+}
+
 /// Hands `text` to the browser as a download of this name.
 ///
 /// # Errors

@@ -8,6 +8,7 @@
 //!   nothing, and why.
 //! * [`analysis`] computes all that follows from the points; [`uncertain`] repeats it with every instrument moved in turn.
 //! * [`acceptance`] is the limits of the manual at points and along curves; [`accepted`] judges them.
+//! * [`leakage`] tells leakage over pressure at temperatures run and not run.
 //! * [`fit`] is the loss model; [`judge`] decides with a guard band; [`report`] is the whole sheet in one call.
 
 pub mod acceptance;
@@ -20,6 +21,7 @@ pub mod flaw;
 pub mod items;
 pub mod judge;
 pub mod layout;
+pub mod leakage;
 pub mod least_squares;
 pub mod paper;
 pub mod paste;

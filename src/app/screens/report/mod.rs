@@ -8,7 +8,7 @@ pub use self::check::CheckReportScreen;
 use self::send::Send;
 use self::sheet::sheet;
 use crate::app::parts::{Caution, Grade, Icon, Shape, TextField};
-use crate::app::platform::clock;
+use crate::app::platform::{clock, files};
 use crate::app::route::Route;
 use crate::assessment::Assessment;
 use crate::quantity::UnitPrefs;
@@ -140,11 +140,5 @@ fn table(subject: &Subject) -> String {
 
 /// The unit's name as part of the name of a file.
 fn file_name(name: &str) -> String {
-    let plain: String = name
-        .trim()
-        .chars()
-        .map(|c| if c.is_alphanumeric() { c } else { '-' })
-        .take(40)
-        .collect();
-    format!("lowside-{}-{}", plain.trim_matches('-'), clock::file_day())
+    format!("lowside-{}-{}", files::name_part(name), clock::file_day())
 }
