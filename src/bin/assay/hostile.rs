@@ -9,6 +9,7 @@ use lowside::report::{Report, Subject};
 use lowside::unit::Unit;
 use lowside::windows::Normals;
 use lowside::{pack, tag, tracking};
+use serde_json::Value;
 
 /// What comes in from outside and is read.
 const SEEDS: [&str; 3] = [
@@ -103,7 +104,7 @@ struct Counts {
 }
 
 /// One call in so many of those taken is worked out whole: that takes a thousand times as long as reading it.
-const WORKED_OUT: usize = 400;
+const WORKED_OUT: usize = 500;
 
 /// Reads `count` broken files, tables, stored texts, tags and typed figures, and tells how many were taken and how many refused.
 pub fn hostile(count: usize, seed: u64) {
@@ -113,13 +114,24 @@ pub fn hostile(count: usize, seed: u64) {
     let tags: Vec<String> = whole.units.iter().map(tag::digits).collect();
     let full = full(&whole);
     let seeds = [SEEDS[0], SEEDS[1], SEEDS[2], &full];
+    let trees: Vec<Value> = [SEEDS[1], SEEDS[2], &full]
+        .into_iter()
+        .map(|seed| serde_json::from_str(seed).expect("a seed is JSON"))
+        .collect();
     for at in 0..count {
         match at % 8 {
             2 => table(&mut draw, &mut counts),
             4 => stored(&mut draw, &mut counts),
             6 => damaged_tag(&mut draw, &tags, &mut counts),
             7 => figure(&mut draw, &mut counts),
-            _ => file(&mut draw, seeds[at / 2 % seeds.len()], &mut counts),
+            1 | 5 => {
+                let text = twisted(&mut draw, &trees[at / 4 % trees.len()]);
+                file(&text, &mut counts);
+            }
+            _ => {
+                let text = broken(&mut draw, seeds[at / 2 % seeds.len()].as_bytes());
+                file(&text, &mut counts);
+            }
         }
     }
     println!(
@@ -133,6 +145,61 @@ pub fn hostile(count: usize, seed: u64) {
         counts.figures,
         counts.worked_out
     );
+}
+
+/// A file that is whole as JSON, with one to four of its values exchanged for ones that nobody meant.
+fn twisted(draw: &mut Normals, seed: &Value) -> Vec<u8> {
+    let mut tree = seed.clone();
+    for _ in 0..=below(draw, 4) {
+        twist(draw, &mut tree);
+    }
+    tree.to_string().into_bytes()
+}
+
+fn twist(draw: &mut Normals, node: &mut Value) {
+    match node {
+        Value::Object(map) if !map.is_empty() && draw.unit() < 0.97 => {
+            let at = below(draw, map.len());
+            if let Some((_, inside)) = map.iter_mut().nth(at) {
+                twist(draw, inside);
+            }
+        }
+        Value::Array(list) if !list.is_empty() && draw.unit() < 0.95 => {
+            let at = below(draw, list.len());
+            if draw.unit() < 0.1 {
+                let again = list[at].clone();
+                list.push(again);
+            } else {
+                twist(draw, &mut list[at]);
+            }
+        }
+        // A figure that could be meant: ten times too large or too small.
+        Value::Number(figure) if draw.unit() < 0.6 => {
+            let size = figure.as_f64().unwrap_or(1.0);
+            *node = (size * (4.6 * (draw.unit() - 0.5)).exp()).into();
+        }
+        _ => *node = foreign(draw),
+    }
+}
+
+fn foreign(draw: &mut Normals) -> Value {
+    let all = [
+        Value::Null,
+        true.into(),
+        0.into(),
+        (-1).into(),
+        1e308.into(),
+        5e-324.into(),
+        (-0.0).into(),
+        u64::MAX.into(),
+        "".into(),
+        "<script>\u{202e}\u{0}".into(),
+        "x".repeat(70_000).into(),
+        Value::Array(vec![Value::Null; 3]),
+        serde_json::json!({ "value": 1e12, "unit": "bar" }),
+    ];
+    let at = below(draw, all.len());
+    all.into_iter().nth(at).unwrap_or_default()
 }
 
 /// A call in which every sheet has something.
@@ -163,9 +230,8 @@ fn full(whole: &Export) -> String {
 }
 
 /// What is taken goes out again and is read back: no half-checked record stays behind.
-fn file(draw: &mut Normals, seed: &str, counts: &mut Counts) {
-    let text = broken(draw, seed.as_bytes());
-    let Ok(export) = Export::read(&text) else {
+fn file(text: &[u8], counts: &mut Counts) {
+    let Ok(export) = Export::read(text) else {
         counts.refused += 1;
         return;
     };
