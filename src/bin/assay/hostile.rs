@@ -176,7 +176,7 @@ fn twist(draw: &mut Normals, node: &mut Value) {
         // A figure that could be meant: ten times too large or too small.
         Value::Number(figure) if draw.unit() < 0.6 => {
             let size = figure.as_f64().unwrap_or(1.0);
-            *node = (size * (4.6 * (draw.unit() - 0.5)).exp()).into();
+            *node = (size * lowside::math::exp(4.6 * (draw.unit() - 0.5))).into();
         }
         _ => *node = foreign(draw),
     }
