@@ -10,6 +10,7 @@
 //   lowside-offline-ready   the first offline copy is complete (once in the life of an installation)
 //   lowside-offline-failed  detail: why there is no offline copy
 //   lowside-update-ready    data-update has been set
+// In the browser's timeline: the mark "drawn", when the first screen is there.
 // Event the app sends to window:
 //   lowside-apply-update    let the waiting version take over, then reload this page. Never done unasked.
 
@@ -105,6 +106,7 @@ async function start() {
     clearInterval(stalled);
   }
   await drawn();
+  performance.mark("drawn");
   document.getElementById("shell")?.remove();
   window.lowsideStarted = true;
 }

@@ -61,7 +61,19 @@ fn the_demo_yard_gives_its_three_causes() {
     let output = assess(lowside::demo::TAMARISK.as_bytes());
     assert_eq!(output.status.code(), Some(0), "{}", words(&output));
     let lines = lines(&output);
-    let told: Vec<(&str, &str, &str)> = lines
+    // Calls have causes, yard checks a verdict.
+    let (calls, checks): (Vec<_>, Vec<_>) =
+        lines.iter().partition(|line| line.get("causes").is_some());
+    assert_eq!(checks.len(), 8);
+    for check in checks {
+        let verdict = check["verdict"].as_str().expect("a verdict");
+        assert!(
+            ["Nothing found in what was checked", "Watch"].contains(&verdict),
+            "{check}"
+        );
+        assert!(!check["not_checked"].as_array().expect("a list").is_empty());
+    }
+    let told: Vec<(&str, &str, &str)> = calls
         .iter()
         .map(|line| {
             let text = |pointer: &str| {
@@ -87,6 +99,10 @@ fn each_line_holds_windows_causes_reasons_and_remarks() {
     let output = assess(lowside::demo::TAMARISK.as_bytes());
     let yard = Export::read(lowside::demo::TAMARISK.as_bytes()).expect("the demo");
     for (line, visit) in lines(&output).iter().zip(&yard.visits) {
+        if visit.is_yard_check() {
+            assert!(line["causes"].is_null() && line["reasons"].is_array());
+            continue;
+        }
         let windows = line["windows"].as_array().expect("windows");
         let ids: Vec<&str> = windows
             .iter()

@@ -29,6 +29,7 @@ use super::shell::{Bar, Notices};
 use super::state::{Action, State};
 use super::tracking::TrackingScreen;
 use super::yard::{LearnedScreen, Others, WearScreen, YardScreen};
+use crate::quantity::UnitPrefs;
 
 /// The state at the start: what is on the shelf, and where the address points.
 fn first_state(keeper: &RefCell<Keeper>) -> State {
@@ -201,7 +202,9 @@ pub fn App() -> Html {
                 <span key={state.said.0}>{ &state.said.1 }</span>
             </p>
             <ContextProvider<Engine> context={engine}>
-                { screen(&snapshot, &deed) }
+                <ContextProvider<UnitPrefs> context={snapshot.settings.units.clone()}>
+                    { screen(&snapshot, &deed) }
+                </ContextProvider<UnitPrefs>>
             </ContextProvider<Engine>>
         </>
     }

@@ -29,7 +29,9 @@ Reads one export file on standard input and writes one line of JSON for each vis
   windows                  what a healthy unit would show at each reading, and where the reading stands
   causes                   ids, title, probability (0 to 1), evidence for and against
   notes, withheld, trust   what to know before acting on it
-  error                    instead of the above, where the visit cannot be assessed
+  verdict, reasons,        instead of the above, where the visit is a yard check
+  not_checked
+  error                    instead of all of it, where the visit cannot be assessed
 Values are in bar, L/min, rpm, °C, s, mA and km/h.
 
 With --report it writes the hand-over report of each visit as plain text (of a yard check: its paper), the same as the app
@@ -67,7 +69,15 @@ struct Line<'a> {
 #[serde(untagged)]
 enum Outcome {
     Assessed(Box<Assessment>),
-    Failed { error: String },
+    /// A yard check has a verdict and no causes.
+    Checked {
+        verdict: &'static str,
+        reasons: Vec<String>,
+        not_checked: Vec<String>,
+    },
+    Failed {
+        error: String,
+    },
 }
 
 fn main() -> ExitCode {
@@ -166,7 +176,10 @@ fn assess_all(export: &Export) -> Result<u8, End> {
     for visit in &export.visits {
         let unit = units.get(visit.unit.as_str()).copied();
         let rates = rates(unit, visit, &cases, &learning);
-        let outcome = outcome(unit, visit, &export.instruments, rates, false);
+        let outcome = match unit {
+            Some(unit) if visit.is_yard_check() => checked(export, unit, visit),
+            unit => outcome(unit, visit, &export.instruments, rates, false),
+        };
         if let Outcome::Failed { error } = &outcome {
             code = 3;
             let _ = writeln!(io::stderr(), "assess: visit {}: {error}", visit.id);
@@ -216,7 +229,7 @@ fn each<'a>(
                 code = 3;
                 let _ = writeln!(io::stderr(), "assess: visit {}: {error}", visit.id);
             }
-            (None, Outcome::Assessed(_)) => {}
+            (None, Outcome::Assessed(_)) | (_, Outcome::Checked { .. }) => {}
         }
     }
     Ok(code)
@@ -229,11 +242,7 @@ fn report_all(export: &Export) -> Result<u8, End> {
         let instruments = &export.instruments;
         let made_at = &export.made_at;
         let report = if visit.is_yard_check() {
-            let others: Vec<&Visit> = export
-                .visits
-                .iter()
-                .filter(|other| other.unit == visit.unit && other.id != visit.id)
-                .collect();
+            let others = others(export, visit);
             Report::of_check(&Check {
                 unit,
                 visit,
@@ -274,6 +283,25 @@ fn table(export: &Export) -> Result<u8, End> {
         .collect();
     write(&csv(&sheets, &export.instruments, &prefs(export)))?;
     Ok(code)
+}
+
+/// The other visits to the unit of a visit.
+fn others<'a>(export: &'a Export, visit: &Visit) -> Vec<&'a Visit> {
+    export
+        .visits
+        .iter()
+        .filter(|other| other.unit == visit.unit && other.id != visit.id)
+        .collect()
+}
+
+fn checked(export: &Export, unit: &Unit, visit: &Visit) -> Outcome {
+    let others = others(export, visit);
+    let found = lowside::yard::report(unit, visit, &others, &export.instruments, &prefs(export));
+    Outcome::Checked {
+        verdict: found.verdict.words(),
+        reasons: found.reasons.into_iter().map(|(_, why)| why).collect(),
+        not_checked: found.not_checked,
+    }
 }
 
 fn outcome(

@@ -113,7 +113,7 @@ mod tests {
                 taken.visits.len(),
                 taken.settings_changed
             ),
-            (3, 3, false)
+            (4, 11, false)
         );
         assert!(
             book.units
@@ -133,7 +133,7 @@ mod tests {
                 removed.visits.len(),
                 removed.kept.len()
             ),
-            (3, 3, 0)
+            (4, 11, 0)
         );
         assert_eq!(book, empty);
     }

@@ -53,6 +53,7 @@ async fn pace() {
     let rig = Rig::open(PHONE).await;
     rig.click("load-demo").await;
     rig.by_id("unit-card").await;
+    starts(&rig).await;
     rig.go("/call/demo-v-27").await;
     rig.wait_until(
         "the advice is there",
@@ -125,6 +126,26 @@ async fn pace() {
     let fields = ["cell-0-flow", "cell-3-flow"];
     type_over(&rig, "a bench table filled in", &fields, WORKED_OUT).await;
     throttle(&rig, 1).await;
+}
+
+/// Loads the page anew and tells when its parts were there. Milliseconds of the clock: to be compared on a quiet machine only.
+async fn starts(rig: &Rig) {
+    throttle(rig, THROTTLE).await;
+    rig.reload().await;
+    rig.by_id("unit-card").await;
+    let told = rig
+        .js(
+            "const paint = performance.getEntriesByName('first-contentful-paint')[0];
+             const drawn = performance.getEntriesByName('drawn')[0];
+             return [Math.round(paint ? paint.startTime : 0), Math.round(drawn ? drawn.startTime : 0)];",
+            vec![],
+        )
+        .await;
+    println!(
+        "page: start at {THROTTLE} times slower: shell after {} ms, first screen after {} ms",
+        told[0], told[1]
+    );
+    throttle(rig, 1).await;
 }
 
 /// Types over fields key by key and tells how long the page was held.

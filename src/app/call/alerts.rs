@@ -2,7 +2,7 @@
 
 use super::steady::Answer;
 use super::words::{self, Verdict};
-use crate::app::parts::{Caution, Grade};
+use crate::app::parts::{Caution, Grade, Retold};
 use crate::caution::{self, Stands};
 use crate::faults;
 use crate::record::{self, Visit};
@@ -36,7 +36,7 @@ pub fn StopWork(props: &StopWorkProps) -> Html {
     if props.runs_on {
         return html! {
             <Caution grade={Grade::Danger} title="stop work" role="alert" testid="stop-work">
-                { for caution::at(Stands::KeepsGoing).map(|caution| html! { <p>{ caution.text }</p> }) }
+                { for caution::at(Stands::KeepsGoing).map(|caution| html! { <p><Retold text={caution.text} /></p> }) }
                 <p>{ "Nobody in front of it or behind it. Readings on its wheels or tracks stay closed." }</p>
             </Caution>
         };

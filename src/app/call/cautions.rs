@@ -19,7 +19,7 @@ pub fn grade(weight: Weight) -> Grade {
 fn one(caution: &'static Caution) -> Html {
     html! {
         <parts::Caution key={caution.id} grade={grade(caution.weight)} class="small-caution" testid={format!("caution-{}", caution.id)}>
-            <p>{ caution.text }</p>
+            <p><parts::Retold text={caution.text} /></p>
         </parts::Caution>
     }
 }

@@ -31,6 +31,31 @@ pub struct WindowScaleProps {
     pub number: usize,
 }
 
+/// Width of a figure's character, and of the narrowest row, px.
+const CHARACTER: f64 = 8.2;
+const NARROW_ROW: f64 = 260.0;
+
+/// The figure at the high end of the window: under its edge where there is room, else against the end of the row, else without
+/// its unit, which stands in the sentence below.
+fn high_end(layout: &Scale, text: &str, y: &str) -> Html {
+    let room = |text: &str| text.chars().count() as f64 * CHARACTER / NARROW_ROW * 100.0;
+    if layout.high + room(text) > 100.0 && layout.low + 2.0 < 100.0 - room(text) {
+        return html! { <text x="100%" y={y.to_owned()} class="scale-figure is-last">{ text.to_owned() }</text> };
+    }
+    let text = if layout.high + room(text) > 100.0 {
+        text.split(['\u{a0}', '\u{202f}', ' '])
+            .next()
+            .unwrap_or(text)
+    } else {
+        text
+    };
+    html! {
+        <svg x={format!("{:.2}%", layout.high)} y={y.to_owned()} class="scale-at">
+            <text x="-4" class="scale-figure is-high">{ text.to_owned() }</text>
+        </svg>
+    }
+}
+
 /// The drawing and its words.
 #[component]
 pub fn WindowScale(props: &WindowScaleProps) -> Html {
@@ -156,9 +181,7 @@ fn draw(
             <svg x={at(layout.low)} y={y(27.0)} class="scale-at">
                 <text x="4" class="scale-figure is-low">{ ends.0.to_owned() }</text>
             </svg>
-            <svg x={at(layout.high)} y={y(27.0)} class="scale-at">
-                <text x="-4" class="scale-figure is-high">{ ends.1.to_owned() }</text>
-            </svg>
+            { high_end(layout, ends.1, &y(27.0)) }
             if let Some((from, to)) = layout.whisker {
                 <line x1={at(from)} x2={at(to)} y1={y(0.0)} y2={y(0.0)} class="scale-whisker" />
                 <line x1={at(from)} x2={at(from)} y1={y(-6.0)} y2={y(6.0)} class="scale-whisker" />

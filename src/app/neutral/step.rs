@@ -13,7 +13,7 @@ use super::series::Series;
 use crate::app::call::cautions;
 use crate::app::call::gate::Gate;
 use crate::app::call::gate_panel::GatePanel;
-use crate::app::parts::{Choice, Lay, Opt};
+use crate::app::parts::{Choice, Lay, Opt, Retold};
 use crate::app::platform::clock;
 use crate::caution::{self, Stands, Weight};
 use crate::neutral::report::{Report, condition};
@@ -86,17 +86,17 @@ pub fn StepPart(props: &StepPartProps) -> Html {
             </summary>
             <div class="stack">
                 { warned(step, &props.told) }
-                <ol class="neutral-how">{ for step.how.iter().map(|how| html! { <li>{ *how }</li> }) }</ol>
+                <ol class="neutral-how">{ for step.how.iter().map(|how| html! { <li><Retold text={*how} /></li> }) }</ol>
                 if !step.good.is_empty() {
                     <div class="neutral-good">
                         <strong>{ "Good, common practice" }</strong>
-                        <ul>{ for step.good.iter().map(|good| html! { <li>{ *good }</li> }) }</ul>
+                        <ul>{ for step.good.iter().map(|good| html! { <li><Retold text={*good} /></li> }) }</ul>
                     </div>
                 }
                 if !step.pitfalls.is_empty() {
                     <div class="neutral-fools">
                         <strong>{ "What fools here" }</strong>
-                        <ul>{ for step.pitfalls.iter().map(|fools| html! { <li>{ *fools }</li> }) }</ul>
+                        <ul>{ for step.pitfalls.iter().map(|fools| html! { <li><Retold text={*fools} /></li> }) }</ul>
                     </div>
                 }
                 { for step.enters.iter().map(|enter| entry(props, step, *enter)) }

@@ -3,7 +3,7 @@
 use super::screen::Edit;
 use super::words;
 use crate::app::call::cautions;
-use crate::app::parts::{Choice, Icon, Opt, Section, Shape};
+use crate::app::parts::{Choice, Icon, Opt, Retold, Section, Shape};
 use crate::tracking::{Answer, Setting, Step, TrackingSheet, WORK, What};
 use yew::{AttrValue, Callback, Html, MouseEvent, Properties, component, html};
 
@@ -90,8 +90,8 @@ fn one(props: &StepsProps, step: &'static Step, at: usize, is_next: bool) -> Htm
             </summary>
             <div class="stack">
                 { cautions::all(step.stands) }
-                <p>{ step.how }</p>
-                <p><strong>{ "Good: " }</strong>{ step.good }</p>
+                <p><Retold text={step.how} /></p>
+                <p><strong>{ "Good: " }</strong><Retold text={step.good} /></p>
                 if !step.fools.is_empty() {
                     <p><strong>{ "What fools: " }</strong>{ step.fools }</p>
                 }

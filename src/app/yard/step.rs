@@ -6,7 +6,7 @@ use yew::{Callback, Html, Properties, component, html};
 use super::checked::Checked;
 use super::screen::Edit;
 use crate::app::call::cautions;
-use crate::app::parts::{Choice, Entry, Lay, MeasureField, Opt, Section};
+use crate::app::parts::{Choice, Entry, Lay, MeasureField, Opt, Retold, Section};
 use crate::quantity::UnitPrefs;
 use crate::unit::Unit;
 use crate::yard::labels;
@@ -70,7 +70,7 @@ pub fn StepPart(props: &StepProps) -> Html {
     html! {
         <Section id={format!("yard-step-{}", step.id)} title={format!("{}. {}", props.number, step.title)} {state} is_open=true>
             { cautions::all(&step.cautions(unit, sheet.leg)) }
-            <p>{ step.how }</p>
+            <p><Retold text={step.how} /></p>
             if !looks.is_empty() {
                 <div class="yard-looks">{ for looks.iter().map(|asked| look(asked, props)) }</div>
             }
