@@ -1171,6 +1171,79 @@ fn leakage_is_told_over_temperatures_with_what_was_not_run_marked() {
     assert_eq!(over_temperatures(&found, None), None);
 }
 
+/// Leakage that is three times the profile's is told as grown, and what it points to; the profile's own is not, and what this run
+/// put into the profile is no witness.
+#[test]
+fn a_loss_that_has_grown_is_told_against_the_profile() {
+    use lowside::bench::stand::grown::{beside, points_to};
+    use lowside::unit::{Figure, Source, Unit as Machinery};
+    let figure = |value: f64, source| Figure {
+        value: Some(Measure::literal(value, Unit::LitrePerMinute)),
+        typed: String::new(),
+        source,
+    };
+    let with = |case: f64, slip: f64, source| {
+        let mut unit = Machinery::default();
+        let ids = [
+            (FigureId::PumpCaseLeakage, case),
+            (FigureId::PumpSlip, slip),
+        ];
+        for (id, value) in ids {
+            unit.figures.insert(id, figure(value, source));
+        }
+        unit
+    };
+    // 1.4 and 2.4 L/min at 200 bar.
+    let run = sheet(Subject::Pump, Machine::pump().table(&Errors::none()));
+    let found = report(&run, None);
+    let sound = beside(&found, Some(&with(1.45, 2.5, Source::Manual)));
+    assert_eq!(sound.len(), 2);
+    assert!(
+        sound
+            .iter()
+            .all(|one| !one.is_grown() && one.from == "profile, manual")
+    );
+    assert_eq!(points_to(&sound, Subject::Pump), None);
+    let worn = beside(&found, Some(&with(0.45, 2.5, Source::Measured)));
+    assert!(worn[0].is_grown() && !worn[1].is_grown(), "{worn:?}");
+    close("times", worn[0].times.1, 1.4 / 0.45, 0.02);
+    let words = points_to(&worn, Subject::Pump).expect("grown");
+    assert!(words.contains("into the case has grown"), "{words}");
+    let across = beside(&found, Some(&with(1.45, 0.8, Source::Measured)));
+    let words = points_to(&across, Subject::Pump).expect("grown");
+    assert!(words.contains("port plate, kidney to kidney"), "{words}");
+    let prefs = lowside::quantity::UnitPrefs::metric();
+    let line = lowside::bench::stand::paper::beside_words(&worn[0], &prefs);
+    assert!(
+        line.contains("times") && line.contains("profile, measured"),
+        "{line}"
+    );
+    // A guess of the class is no profile; what came from this run is not held against itself.
+    let guessed = beside(&found, Some(&with(0.1, 0.1, Source::Practice)));
+    assert!(
+        guessed
+            .iter()
+            .all(|one| one.from.starts_with("common practice"))
+    );
+    let mut own = Machinery::default();
+    for proposal in &found.proposals {
+        let figure = Figure {
+            value: Some(proposal.value),
+            typed: String::new(),
+            source: Source::Measured,
+        };
+        own.figures.insert(proposal.id, figure);
+    }
+    let again = beside(&found, Some(&own));
+    assert!(
+        again
+            .iter()
+            .all(|one| one.from.starts_with("common practice")),
+        "{again:?}"
+    );
+    assert!(beside(&found, None).is_empty());
+}
+
 /// Random tables: whatever is typed, the sheet is computed, no figure is NaN, and a pass never rests on a point that is left out.
 mod random_tables {
     use super::*;

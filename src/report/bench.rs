@@ -7,7 +7,7 @@ use crate::bench::stand::fit::{Fit, NoFit};
 use crate::bench::stand::judge::Decision;
 use crate::bench::stand::report::Judged;
 use crate::bench::stand::sheet::{Meter, Of, TextId};
-use crate::bench::stand::{BenchReport, BenchSheet, Channel, flaw, paper, report};
+use crate::bench::stand::{BenchReport, BenchSheet, Channel, flaw, grown, paper, report};
 use crate::quantity::{Measure, Unit};
 use std::collections::BTreeSet;
 
@@ -34,7 +34,8 @@ pub(super) fn told(subject: &Subject) -> Option<Section> {
     let report = report(sheet, Some(subject.unit));
     let mut lines = vec![identity(sheet), verdict(&report)];
     lines.extend(judged(&report, subject));
-    lines.extend(flaw::told(&report.left_out, sheet.subject));
+    let left_out = flaw::told(&report.left_out, sheet.subject);
+    lines.extend(left_out.iter().map(|words| one_line(words)));
     lines.extend(figures(&report, subject));
     lines.extend(losses(&report, subject));
     lines.extend(not_tested(&report));
@@ -205,6 +206,10 @@ fn losses(report: &BenchReport, subject: &Subject) -> Vec<String> {
         one("Losses of torque", &report.losses.torque),
         one("Case flow", &report.losses.case),
     ];
+    let beside = grown::beside(report, Some(subject.unit));
+    let told = beside
+        .iter()
+        .map(|one| paper::beside_words(one, subject.prefs));
     // One reason for all three is told once.
     if let (Err(flow), Err(torque), Err(case)) = (
         &report.losses.flow,
@@ -215,6 +220,9 @@ fn losses(report: &BenchReport, subject: &Subject) -> Vec<String> {
     {
         lines = vec![format!("No loss fit: {flow}")];
     }
+    lines.extend(told);
+    let points_to = grown::points_to(&beside, report.losses.subject);
+    lines.extend(points_to.map(|words| format!("{words} (common practice)")));
     lines
 }
 

@@ -167,7 +167,7 @@ pub enum Shortened {
     Whole,
     /// Fields of a newer version and the note are left out.
     WithoutNote,
-    /// Also places, adapters and what was typed beside the figures.
+    /// Also places, adapters and when a bench measured a leakage.
     WithoutPlaces,
     /// Also the manual's windows.
     WithoutManual,
@@ -189,10 +189,10 @@ impl Shortened {
             Shortened::Whole => "",
             Shortened::WithoutNote => "The note is too long for a tag and left out.",
             Shortened::WithoutPlaces => {
-                "Note, places and adapters are too long for a tag and left out."
+                "Note, places, adapters and the days of the bench are too long for a tag and left out."
             }
             Shortened::WithoutManual => {
-                "Note, places, adapters and the manual's windows are too long for a tag and left out."
+                "Note, places, adapters, the days of the bench and the manual's windows are too long for a tag and left out."
             }
         }
     }
@@ -207,6 +207,7 @@ impl Shortened {
         }
         if matches!(self, Shortened::WithoutPlaces | Shortened::WithoutManual) {
             unit.ports.clear();
+            unit.bench.clear();
         }
         if self == Shortened::WithoutManual {
             unit.manual.clear();

@@ -1,6 +1,13 @@
 //! Random records from a seed: every variant of everything that a record can hold, inside what is accepted.
 #![allow(dead_code)] // each test takes what it needs
 
+use lowside::bench::stand::acceptance::{Acceptance, Limited, Part, Scope};
+use lowside::bench::stand::items;
+use lowside::bench::stand::sheet::{Head, ItemEntry, Of, TextId};
+use lowside::bench::stand::{
+    BenchSheet, Channel, Charge, Flushing, Layout, Meter, ReliefDrain as BenchDrain, Row, Subject,
+    TorqueCovers,
+};
 use lowside::quantity::Typed;
 use lowside::quantity::{Kind, Measure};
 use lowside::readings::instrument::{Instrument, usual_instruments};
@@ -251,6 +258,16 @@ impl Dice {
             });
         }
         if self.one_in(3) {
+            let id = self.pick(&[FigureId::MotorCaseLeakage, FigureId::PumpSlip]);
+            let found = OnBench {
+                on: "2025-03-04T07:40:00Z".into(),
+                value: self.measure(Kind::Flow, (0.01, 200.0)),
+                share: self.between(0.0, 1.0),
+                path: self.pick(&[None, Some(Path::Left), Some(Path::Right)]),
+            };
+            unit.bench.insert(id, found);
+        }
+        if self.one_in(3) {
             unit.extra.insert(
                 "from_later".into(),
                 serde_json::json!({ "a": [1, 2.5, null, "x"] }),
@@ -272,6 +289,115 @@ impl Dice {
             turns: typed(self.text(8), None),
             ..AdjusterRow::default()
         });
+        sheet
+    }
+
+    /// A figure of a bench sheet, or a text that is none.
+    fn typed(&mut self, (unit, low, high): (lowside::quantity::Unit, f64, f64)) -> Typed {
+        let value = self.between(low, high);
+        Typed {
+            typed: self.text(8),
+            value: (!self.one_in(8)).then(|| Measure::literal(value, unit)),
+        }
+    }
+
+    fn bench(&mut self) -> BenchSheet {
+        let subject = self.pick(&Subject::ALL);
+        let mut sheet = BenchSheet {
+            subject,
+            path: self.pick(&[None, Some(Path::Left), Some(Path::Right)]),
+            layout: Layout {
+                charge: self.pick(&[
+                    None,
+                    Some(Charge::Own),
+                    Some(Charge::Outside),
+                    Some(Charge::None),
+                ]),
+                relief: self.pick(&[None, Some(BenchDrain::Case), Some(BenchDrain::Elsewhere)]),
+                meter: self.pick(&[None, Some(Meter::High), Some(Meter::Low)]),
+                flushing: self.pick(&[None, Some(Flushing::Plugged), Some(Flushing::Open)]),
+                torque: self.pick(&[
+                    None,
+                    Some(TorqueCovers::MachineOnly),
+                    Some(TorqueCovers::WithCharge),
+                ]),
+            },
+            ..BenchSheet::default()
+        };
+        for head in Head::ALL {
+            if self.one_in(2) {
+                let typed = self.typed(head.asks());
+                sheet.head.insert(head, typed);
+            }
+        }
+        for id in TextId::ALL {
+            if self.one_in(4) {
+                let text = self.text(20);
+                sheet.texts.insert(id, text);
+            }
+        }
+        let names = ["", "1", "2", "rated"];
+        for _ in 0..self.below(14) {
+            let mut row = Row {
+                id: self.id('r'),
+                name: self.pick(&names).to_owned(),
+                is_left_out: self.one_in(8),
+                ..Row::default()
+            };
+            for channel in Channel::ALL {
+                if channel.belongs(subject) && !self.one_in(5) {
+                    let typed = self.typed(channel.asks());
+                    row.cells.insert(channel, typed);
+                }
+            }
+            sheet.rows.push(row);
+        }
+        for channel in Channel::ALL {
+            if self.one_in(6) {
+                let (unit, _, high) = channel.asks();
+                let meter = lowside::bench::stand::sheet::Meter {
+                    of: self.pick(&[Of::Class, Of::Reading, Of::Span]),
+                    limit: self.typed((lowside::quantity::Unit::Percent, 0.0, 20.0)),
+                    span: self.typed((unit, 0.0, high)),
+                    mark: self.text(8),
+                    calibrated: self.text(8),
+                };
+                sheet.meters.insert(channel, meter);
+            }
+        }
+        for item in items::of(subject) {
+            if self.one_in(3) {
+                let mut entry = ItemEntry {
+                    is_good: self.pick(&[None, Some(true), Some(false)]),
+                    skipped: self.pick(&[None, Some("no time".to_owned())]),
+                    note: self.text(12),
+                    ..ItemEntry::default()
+                };
+                if let items::Entry::Figure(unit) = item.entry {
+                    for typed in [&mut entry.found, &mut entry.low, &mut entry.high] {
+                        *typed = self.typed((unit, 0.0, 1e4));
+                    }
+                }
+                sheet.items.insert(item.id, entry);
+            }
+        }
+        for _ in 0..self.below(4) {
+            let of = self.pick(&Limited::ALL);
+            let mut limit = Acceptance {
+                id: self.id('l'),
+                of,
+                scope: self.pick(&[Scope::Point, Scope::Curve]),
+                point: self.pick(&names).to_owned(),
+                source: self.text(12),
+                ..Acceptance::default()
+            };
+            for part in Part::ALL {
+                if !self.one_in(5) {
+                    *limit.typed_mut(part) = self.typed(part.asks(of));
+                }
+            }
+            sheet.acceptance.push(limit);
+        }
         sheet
     }
 
@@ -376,6 +502,9 @@ impl Dice {
                 when,
                 ..Closing::default()
             });
+        }
+        if self.one_in(4) {
+            visit.bench = Some(self.bench());
         }
         if self.one_in(4) {
             visit

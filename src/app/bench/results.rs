@@ -10,8 +10,9 @@ use crate::bench::stand::fit::{Fit, LossFit, NoFit, TurbulentShare};
 use crate::bench::stand::flaw::told;
 use crate::bench::stand::judge::Decision;
 use crate::bench::stand::report::Judged;
-use crate::bench::stand::{BenchReport, BenchSheet, LayoutGap, Subject, paper};
+use crate::bench::stand::{BenchReport, BenchSheet, LayoutGap, Subject, grown, paper};
 use crate::quantity::{DecimalMark, Unit, UnitPrefs};
+use crate::unit::Unit as Machine;
 use std::collections::BTreeSet;
 use std::rc::Rc;
 use yew::{Callback, Html, Properties, component, html};
@@ -23,6 +24,8 @@ pub struct ResultsProps {
     pub sheet: Rc<BenchSheet>,
     /// What it comes to.
     pub told: Told,
+    /// The unit that it belongs to.
+    pub unit: Rc<Machine>,
     /// Units of measure.
     pub prefs: UnitPrefs,
     /// Edits.
@@ -47,7 +50,11 @@ pub fn Results(props: &ResultsProps) -> Html {
                 { remarks(props) }
             </Section>
             if props.sheet.subject != Subject::Transmission {
-                <Section id="bench-losses" title="Losses" is_open=true>{ losses(&report.losses, props.prefs.mark()) }</Section>
+                <Section id="bench-losses" title="Losses" is_open=true>
+                    { losses(&report.losses, props.prefs.mark()) }
+                    { grown_losses(props) }
+                    { points_to(&report.losses) }
+                </Section>
             }
         }
     </> }
@@ -304,7 +311,6 @@ fn losses(losses: &LossFit, mark: DecimalMark) -> Html {
         if flow_fitted { <p data-testid="bench-turbulent">{ turbulent }</p> }
         { fit("Torque", &losses.torque, mark) }
         { fit("Case flow", &losses.case, mark) }
-        { points_to(losses) }
     </> }
 }
 
@@ -333,6 +339,26 @@ fn fit(what: &'static str, fit: &Result<Fit, NoFit>, mark: DecimalMark) -> Html 
         }
     };
     html! { <div data-testid={format!("bench-fit-{}", what.to_lowercase().replace(' ', "-"))}><h3>{ what }</h3>{ body }</div> }
+}
+
+/// Leakage and slip beside the profile's or what is usual, and what has grown.
+fn grown_losses(props: &ResultsProps) -> Html {
+    let beside = grown::beside(&props.told.0, Some(&props.unit));
+    if beside.is_empty() {
+        return html! {};
+    }
+    let points_to = grown::points_to(&beside, props.sheet.subject)
+        .unwrap_or("Not shown to have grown: the interval reaches down to once, or lies below it");
+    html! {
+        <div data-testid="bench-grown">
+            <h3>{ "Has a loss grown?" }</h3>
+            <ul class="bench-missing">
+                { for beside.iter().map(|one| html! { <li>{ paper::beside_words(one, &props.prefs) }</li> }) }
+            </ul>
+            <p>{ format!("{points_to} (common practice).") }</p>
+            <p class="soft">{ "In brackets what both doubts leave open, 95 in 100. Of drag and friction nothing is known well enough to hold them against." }</p>
+        </div>
+    }
 }
 
 /// What a grown loss points to.

@@ -94,7 +94,7 @@ pub fn BenchScreen(props: &BenchScreenProps) -> Html {
                 <PasteBox subject={sheet.subject} rows={sheet.rows.len()} on_edit={on_edit.clone()} />
                 <PointTable sheet={sheet.clone()} told={told.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
             </Section>
-            <Results sheet={sheet.clone()} told={told.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
+            <Results sheet={sheet.clone()} told={told.clone()} unit={props.unit.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
             <Pictures told={told.clone()} sheet={sheet.clone()} prefs={props.prefs.clone()} />
             <ItemsForm sheet={sheet.clone()} told={told.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
             <TakeOver

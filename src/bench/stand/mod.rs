@@ -9,6 +9,7 @@
 //! * [`analysis`] computes all that follows from the points; [`uncertain`] repeats it with every instrument moved in turn.
 //! * [`acceptance`] is the limits of the manual at points and along curves; [`accepted`] judges them.
 //! * [`leakage`] tells leakage over pressure at temperatures run and not run.
+//! * [`grown`] holds leakage and slip against the profile and says what a grown one points to.
 //! * [`fit`] is the loss model; [`judge`] decides with a guard band; [`report`] is the whole sheet in one call.
 
 pub mod acceptance;
@@ -18,6 +19,7 @@ pub mod balance;
 pub mod channel;
 pub mod fit;
 pub mod flaw;
+pub mod grown;
 pub mod items;
 pub mod judge;
 pub mod layout;

@@ -2,9 +2,11 @@
 
 use super::analysis::Quantity;
 use super::channel::Channel;
+use super::fit::Loss;
 use super::flaw::told;
+use super::grown::Beside;
 use super::items::{Entry, of};
-use super::report::{BenchReport, Judged, Span};
+use super::report::{BenchReport, Judged, LEAKAGE_AT, Span};
 use super::sheet::{BenchSheet, Head, TextId};
 use super::uncertain::Uncertain;
 use crate::quantity::{DecimalMark, Decimals, Measure, Unit, UnitPrefs, format_with_unit};
@@ -411,6 +413,33 @@ pub fn quantity_text(quantity: Quantity, figure: Uncertain, prefs: &UnitPrefs) -
         figure.expanded() * factor,
         unit,
         prefs,
+    )
+}
+
+/// A loss beside what is known of it: "2.4 ± 0.2 L/min at 200 bar and 27.5 mPa·s, 1.7 (1.2 to 2.4) times 1.4 L/min (profile, manual)".
+#[must_use]
+pub fn beside_words(beside: &Beside, prefs: &UnitPrefs) -> String {
+    let now = in_unit(
+        beside.now.value,
+        beside.now.expanded(),
+        Unit::LitrePerMinute,
+        prefs,
+    );
+    let bar = plain(LEAKAGE_AT, Unit::Bar, prefs);
+    let known = plain(beside.known, Unit::LitrePerMinute, prefs);
+    let (low, ratio, high) = beside.times;
+    let times = format!("{ratio:.1} ({low:.1} to {high:.1})");
+    let times = match prefs.mark() {
+        DecimalMark::Comma => times.replace('.', ","),
+        DecimalMark::Point => times,
+    };
+    let name = match beside.loss {
+        Loss::Case => "Leakage into the case",
+        _ => "All slip",
+    };
+    format!(
+        "{name}: {now} at {bar} and 27.5 mPa·s, {times} times {known} ({})",
+        beside.from
     )
 }
 
