@@ -18,6 +18,7 @@ mod number;
 mod prefs;
 mod print;
 mod spelling;
+pub mod strokes;
 mod text;
 pub mod typed;
 mod unit;
