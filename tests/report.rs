@@ -437,3 +437,224 @@ fn what_looks_like_a_formula_is_text() {
     let typed = header.iter().position(|h| h == "Typed").expect("typed");
     assert_eq!(rows[0][typed], "'+5");
 }
+
+mod bench {
+    use super::*;
+    use lowside::bench::stand::acceptance::{Acceptance, Limited};
+    use lowside::bench::stand::items::ItemId;
+    use lowside::bench::stand::sheet::{Head, ItemEntry, Meter as Instrument, Of, TextId};
+    use lowside::bench::stand::{BenchSheet, Channel, Charge, Layout, Meter, Row, report};
+    use lowside::quantity::{Measure, Typed, Unit as In};
+
+    fn typed(value: f64, unit: In) -> Typed {
+        Typed {
+            typed: format!("{value}"),
+            value: Some(Measure::literal(value, unit)),
+        }
+    }
+
+    /// A pump of 75 cm³/rev at three speeds and four pressures; a leak of 0.0068 L/min per bar of each side.
+    fn sheet() -> BenchSheet {
+        let mut rows = Vec::new();
+        for n in [900.0_f64, 1500.0, 2200.0] {
+            for dp in [60.0_f64, 140.0, 220.0, 300.0] {
+                let at = rows.len() + 1;
+                let flow = 0.075 * n * (1.0 - 9e-5 * dp) - 0.011 * dp;
+                let torque = 7.5 * dp / std::f64::consts::TAU + 3.0 + 0.03 * dp + 0.004 * n;
+                let id = format!("row-{at}");
+                let row = Row::of(
+                    &at.to_string(),
+                    &[
+                        (Channel::Speed, n),
+                        (Channel::Low, 20.0),
+                        (Channel::High, 20.0 + dp),
+                        (Channel::Flow, flow),
+                        (Channel::Case, 0.0068 * (dp + 40.0)),
+                        (Channel::Torque, torque),
+                        (Channel::Inlet, 50.0),
+                    ],
+                );
+                rows.push(Row { id, ..row });
+            }
+        }
+        let head = [
+            (Head::Displacement, 75.0, In::CubicCentimetrePerRevolution),
+            (Head::Viscosity, 46.0, In::SquareMillimetrePerSecond),
+            (Head::RatedSpeed, 2200.0, In::RevolutionPerMinute),
+            (Head::RatedPressure, 220.0, In::Bar),
+        ];
+        let leak = |id: &str, point: &str, limit: f64| Acceptance {
+            id: id.to_owned(),
+            of: Limited::CaseLeakage,
+            point: point.to_owned(),
+            limit: typed(limit, In::LitrePerMinute),
+            source: "manual, page 31".to_owned(),
+            ..Acceptance::default()
+        };
+        BenchSheet {
+            layout: Layout {
+                charge: Some(Charge::None),
+                meter: Some(Meter::High),
+                ..Layout::default()
+            },
+            head: head
+                .into_iter()
+                .map(|(head, value, unit)| (head, typed(value, unit)))
+                .collect(),
+            rows,
+            texts: [(TextId::Serial, "A 7731\t0".to_owned())].into(),
+            meters: [(
+                Channel::Flow,
+                Instrument {
+                    of: Of::Reading,
+                    limit: typed(0.5, In::Percent),
+                    mark: "FM-3".to_owned(),
+                    calibrated: "2025-02-11".to_owned(),
+                    ..Instrument::default()
+                },
+            )]
+            .into(),
+            items: [
+                (
+                    ItemId::ResponseOut,
+                    ItemEntry {
+                        found: typed(3.5, In::Second),
+                        ..ItemEntry::default()
+                    },
+                ),
+                (
+                    ItemId::Debris,
+                    ItemEntry {
+                        skipped: Some("no patch at hand".to_owned()),
+                        ..ItemEntry::default()
+                    },
+                ),
+            ]
+            .into(),
+            acceptance: vec![leak("l-1", "11", 3.0), leak("l-2", "12", 1.5)],
+            ..BenchSheet::default()
+        }
+    }
+
+    fn case() -> Case {
+        let mut case = random(4);
+        case.visit = Visit {
+            bench: Some(sheet()),
+            readings: case.visit.readings.clone(),
+            id: case.visit.id.clone(),
+            unit: case.unit.id.clone(),
+            opened: NOW.to_owned(),
+            ..Visit::default()
+        };
+        case
+    }
+
+    #[test]
+    fn a_bench_sheet_has_its_section_with_verdict_figures_and_what_was_not_tested() {
+        let case = case();
+        let report = case.report();
+        let section = report.section("bench").expect("a bench sheet");
+        let all = section.lines.join("\n");
+        for words in [
+            "Pump; serial number: A 7731 0",
+            "Verdict: fails. Guard band of the expanded uncertainty",
+            "Fails: Case leakage at point 12: 2.31",
+            "allowed 1.5",
+            "(manual, page 31)",
+            "Fails: Time to full stroke",
+            "Pass: Case leakage at point 11: 1.768",
+            "common practice, rebuilt unit",
+            "Derived displacement (after ISO 8426): 7",
+            "Point 11, 2200 rpm, 220",
+            "Losses of flow, at 27.5 mPa·s: displacement",
+            "laminar slip",
+            "Not tested: ",
+            "(no patch at hand)",
+            "Instrument, flow: ± 0.5 % of the reading, FM-3, calibrated 2025-02-11",
+            "No calibration date is noted for: speed, ",
+            "Stand: measuring class B",
+        ] {
+            assert!(all.contains(words), "{words:?} is not in\n{all}");
+        }
+        let text = report.text();
+        assert!(text.contains("BENCH SHEET\n") && text.contains(&section.lines[1]));
+        assert!(!text.contains("NaN"), "{text}");
+        let mut once = section.lines.clone();
+        once.sort();
+        once.dedup();
+        assert_eq!(once.len(), section.lines.len());
+        // Made again from the call's own export: the same words.
+        let export = case.subject().export();
+        let again = Export::read(export.text().expect("written").as_bytes()).expect("read");
+        let again = Subject {
+            unit: &again.units[0],
+            visit: &again.visits[0],
+            instruments: &again.instruments,
+            assessment: &case.assessment,
+            prefs: &case.prefs,
+            made_at: NOW,
+        };
+        assert_eq!(Report::of(&again).section("bench"), Some(section));
+    }
+
+    #[test]
+    fn a_call_without_a_sheet_has_no_section_and_many_points_are_told_by_their_ends() {
+        let mut case = case();
+        let bench = case.visit.bench.take();
+        assert!(case.report().section("bench").is_none());
+        case.visit.bench = Some(BenchSheet::default());
+        assert!(case.report().section("bench").is_none());
+        let mut many = bench.expect("given");
+        let (rows, again) = (many.rows.clone(), many.rows.clone());
+        many.rows.extend(again.into_iter().map(|row| Row {
+            name: format!("again {}", row.name),
+            ..row
+        }));
+        case.visit.bench = Some(many);
+        let section = case.report().section("bench").cloned().expect("a sheet");
+        let all = section.lines.join("\n");
+        assert!(
+            all.contains(&format!("over {} points", 2 * rows.len())),
+            "{all}"
+        );
+        assert!(
+            !section.lines.iter().any(|line| line.starts_with("Point ")),
+            "{all}"
+        );
+    }
+
+    #[test]
+    fn the_table_holds_what_was_read_and_computed_at_the_points() {
+        let case = case();
+        let bench = sheet();
+        let found = report(&bench, Some(&case.unit));
+        let (header, rows) = table(&case);
+        let at = |name: &str| header.iter().position(|h| h == name).expect("a column");
+        let of_bench = |row: &&Vec<String>| row[at("Doing")] == "on the bench stand";
+        let computed: usize = found.evaluated.points.iter().map(|p| p.len()).sum();
+        let points: Vec<&Vec<String>> = rows.iter().filter(of_bench).collect();
+        assert_eq!(points.len(), 12 * 7 + computed);
+        assert_eq!(rows.len(), points.len() + case.visit.readings.len());
+        let row = |name: &str| {
+            let row = points.iter().find(|row| row[at("Reading")] == name);
+            *row.unwrap_or_else(|| panic!("{name}"))
+        };
+        let flow = row("Bench, point 1: flow");
+        assert_eq!(flow[at("Read (L/min)")], "66.4755");
+        assert_eq!(
+            flow[at("Instrument")],
+            "± 0.5 % of the reading, FM-3, calibrated 2025-02-11"
+        );
+        assert_eq!(flow[at("Seen as")], "read once");
+        let leak = row("Bench, point 12: case leakage");
+        assert_eq!(leak[at("Read (L/min)")], "2.312");
+        assert_eq!(leak[at("Expected to (L/min)")], "1.5");
+        assert_eq!(leak[at("Expected from (L/min)")], "");
+        assert_eq!(leak[at("Standing")], "fail");
+        assert_eq!(leak[at("Window from")], "manual, page 31");
+        assert!(leak[at("Note")].contains("± 0.0"), "{leak:?}");
+        let share = row("Bench, point 1: overall efficiency");
+        let percent: f64 = share[at("Read (%)")].parse().expect("a figure");
+        assert!((50.0..100.0).contains(&percent), "{percent}");
+    }
+}

@@ -3,9 +3,11 @@
 //!
 //! Each unit has four columns of its own (read, swings to, expected from, expected to), so that no column mixes units.
 
+use super::bench;
 use super::groups::{instrument, read, window};
 use super::{Subject, one_line};
 use crate::assessment::{Assessment, Standing, WindowSource};
+use crate::bench::stand::paper::significant;
 use crate::call::words;
 use crate::quantity::{Kind, Measure, Unit, UnitPrefs};
 use crate::readings::instrument::Instrument;
@@ -45,18 +47,29 @@ const HEAD: [&str; 16] = [
 /// Columns after the figures.
 const TAIL: [&str; 5] = ["Standing", "Window from", "Instrument", "Typed", "Note"];
 
-/// Every reading of these calls. Lines end in CRLF, the header comes first.
+/// Every reading of these calls, and under a call's readings the points of its bench sheet. Lines end in CRLF, the header comes
+/// first.
 #[must_use]
 pub fn csv(sheets: &[Sheet], instruments: &[Instrument], prefs: &UnitPrefs) -> String {
+    let subjects: Vec<Subject> = sheets
+        .iter()
+        .map(|sheet| Subject {
+            unit: sheet.unit,
+            visit: sheet.visit,
+            instruments,
+            assessment: sheet.assessment,
+            prefs,
+            made_at: "",
+        })
+        .collect();
+    let on_bench: Vec<Vec<bench::Cell>> = subjects.iter().map(bench::cells).collect();
     let readings = || sheets.iter().flat_map(|sheet| &sheet.visit.readings);
-    let mut units: Vec<Unit> = Vec::new();
-    for reading in readings() {
-        let unit = words::unit_of(reading.port, prefs);
-        if !units.contains(&unit) {
-            units.push(unit);
-        }
-    }
+    let read = readings().map(|reading| words::unit_of(reading.port, prefs));
+    let mut units: Vec<Unit> = read
+        .chain(on_bench.iter().flatten().map(|cell| cell.unit))
+        .collect();
     units.sort_by_key(|unit| (unit.kind(), unit.code()));
+    units.dedup();
     let mut header: Vec<String> = HEAD.iter().map(|name| (*name).to_owned()).collect();
     for unit in &units {
         for what in ["Read", "Swings to", "Expected from", "Expected to"] {
@@ -65,20 +78,54 @@ pub fn csv(sheets: &[Sheet], instruments: &[Instrument], prefs: &UnitPrefs) -> S
     }
     header.extend(TAIL.iter().map(|name| (*name).to_owned()));
     let mut out = row(header);
-    for sheet in sheets {
-        let subject = Subject {
-            unit: sheet.unit,
-            visit: sheet.visit,
-            instruments,
-            assessment: sheet.assessment,
-            prefs,
-            made_at: "",
-        };
-        for (at, reading) in sheet.visit.readings.iter().enumerate() {
-            out.push_str(&row(cells(&subject, at, reading, &units)));
+    for (subject, points) in subjects.iter().zip(&on_bench) {
+        for (at, reading) in subject.visit.readings.iter().enumerate() {
+            out.push_str(&row(cells(subject, at, reading, &units)));
+        }
+        for point in points {
+            out.push_str(&row(bench_cells(subject, point, &units)));
         }
     }
     out
+}
+
+/// A figure of the bench, under the same heads. What the machine did does not hang on it.
+fn bench_cells(subject: &Subject, point: &bench::Cell, units: &[Unit]) -> Vec<String> {
+    let mut cells = vec![String::new(); HEAD.len()];
+    let named = [
+        ("Unit", text(&one_line(&subject.unit.name))),
+        ("Call opened (UTC)", text(&subject.visit.opened)),
+        ("Reading", text(&point.name)),
+        ("Side", text(point.side)),
+        ("Doing", text("on the bench stand")),
+        ("Oil (°C)", point.oil.map(rounded).unwrap_or_default()),
+        ("Oil taken at", text(point.oil.map_or("", |_| "inlet"))),
+        ("Seen as", text(&point.seen)),
+    ];
+    for (name, words) in named {
+        if let Some(cell) = HEAD
+            .iter()
+            .position(|head| *head == name)
+            .and_then(|at| cells.get_mut(at))
+        {
+            *cell = words;
+        }
+    }
+    for unit in units {
+        let is_own = *unit == point.unit;
+        cells.extend(point.figures.iter().map(|value| {
+            let own = value.filter(|_| is_own);
+            own.map(significant).unwrap_or_default()
+        }));
+    }
+    cells.extend([
+        text(&point.standing),
+        text(&point.from),
+        text(&point.instrument),
+        String::new(),
+        text(&point.note),
+    ]);
+    cells
 }
 
 /// A unit as a header names it: a vacuum says that it runs the other way.

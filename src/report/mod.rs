@@ -7,6 +7,7 @@
 //! | `groups` | readings by condition, with windows and instruments |
 //! | `causes` | the finding, and the causes with their reasons |
 //! | `seen` | what was seen without a gauge, the neutral and the tracking |
+//! | `bench` | the bench sheet |
 //! | `open` | what was not checked, what to bring |
 //! | `safety` | cautions, and what was put back |
 //! | `basis` | versions and assumptions, so that the report can be made again |
@@ -15,6 +16,7 @@
 //! | `moment` | moments in words that hang on no clock and no place |
 
 mod basis;
+mod bench;
 mod causes;
 pub(crate) mod csv;
 mod groups;
@@ -130,6 +132,7 @@ impl Report {
         let sections = [
             seen::section(subject),
             seen::adjusting(subject),
+            bench::told(subject),
             closing(subject),
             open::not_checked(subject),
             open::to_bring(subject),

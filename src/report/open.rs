@@ -64,7 +64,11 @@ fn conditions(subject: &Subject) -> Vec<String> {
     let count = taken().count();
     let mut lines = Vec::new();
     if count == 0 {
-        lines.push(String::from("No reading was taken"));
+        lines.push(String::from(if super::bench::is_there(subject) {
+            "No reading was taken on the machine, beside the bench sheet"
+        } else {
+            "No reading was taken"
+        }));
         return lines;
     }
     let cold = taken().filter(|r| r.condition.oil.is_none()).count();

@@ -314,7 +314,7 @@ fn fit(what: &'static str, fit: &Result<Fit, NoFit>, mark: DecimalMark) -> Html 
         Ok(fit) => {
             let rows = fit.losses.iter().filter_map(|loss| {
                 let (value, u) = fit.get(*loss)?;
-                let text = scientific(value, 2.0 * u, loss.unit(), mark);
+                let text = paper::coefficient(value, 2.0 * u, loss.unit(), mark);
                 Some(html! { <li><span>{ loss.words() }</span><strong>{ text }</strong></li> })
             });
             let freedom = fit.by_chance.freedom;
@@ -333,19 +333,6 @@ fn fit(what: &'static str, fit: &Result<Fit, NoFit>, mark: DecimalMark) -> Html 
         }
     };
     html! { <div data-testid={format!("bench-fit-{}", what.to_lowercase().replace(' ', "-"))}><h3>{ what }</h3>{ body }</div> }
-}
-
-/// A coefficient with its doubt, with as many decimals as two digits of the doubt need.
-fn scientific(value: f64, expanded: f64, unit: &str, mark: DecimalMark) -> String {
-    let (factor, prefix) = if value.abs() >= 0.1 || unit.starts_with("cm³") {
-        (1.0, "")
-    } else if value.abs() >= 1e-4 {
-        (1e3, "thousandths of ")
-    } else {
-        (1e6, "millionths of ")
-    };
-    let unit = format!("{prefix}{unit}");
-    paper::number(value * factor, expanded * factor, &unit, mark)
 }
 
 /// What a grown loss points to.

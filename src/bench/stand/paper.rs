@@ -288,7 +288,7 @@ pub fn table(sheet: &BenchSheet, report: &BenchReport, prefs: &UnitPrefs) -> Str
                 .get(channel)
                 .map_or("", |typed| typed.typed.as_str());
             let _ = match value {
-                Some(value) => write!(out, ",{}", rounded(value)),
+                Some(value) => write!(out, ",{}", significant(value)),
                 None => write!(out, ",{}", cell(text)),
             };
         }
@@ -297,13 +297,14 @@ pub fn table(sheet: &BenchSheet, report: &BenchReport, prefs: &UnitPrefs) -> Str
     out.push_str("\r\nResult of point,Quantity,Unit,Value,Expanded uncertainty (k = 2)\r\n");
     for (at, point) in report.points.iter().enumerate() {
         for (quantity, figure) in &report.evaluated.points[at] {
-            let (words, symbol, factor) = quantity_words(*quantity);
+            let (words, unit, factor) = quantity_words(*quantity);
+            let symbol = unit.symbol();
             let _ = write!(
                 out,
                 "{},{words},{symbol},{},{}\r\n",
                 cell(&point.name),
-                rounded(figure.value * factor),
-                rounded(figure.expanded() * factor)
+                significant(figure.value * factor),
+                significant(figure.expanded() * factor)
             );
         }
     }
@@ -312,7 +313,8 @@ pub fn table(sheet: &BenchSheet, report: &BenchReport, prefs: &UnitPrefs) -> Str
     );
     for judged in &report.judged {
         let (symbol, factor) = judged.printed();
-        let figure = |value: Option<f64>| value.map_or_else(String::new, |v| rounded(v * factor));
+        let figure =
+            |value: Option<f64>| value.map_or_else(String::new, |v| significant(v * factor));
         let limits = judged.limits.as_ref();
         let cells = [
             cell(&judged.words),
@@ -345,7 +347,7 @@ pub fn table(sheet: &BenchSheet, report: &BenchReport, prefs: &UnitPrefs) -> Str
                     .found
                     .value
                     .and_then(|m| m.try_in_unit(unit).ok())
-                    .map_or(String::new(), rounded),
+                    .map_or(String::new(), significant),
             ),
             Entry::Tick => (
                 "",
@@ -368,8 +370,9 @@ pub fn table(sheet: &BenchSheet, report: &BenchReport, prefs: &UnitPrefs) -> Str
     out
 }
 
-/// Six significant digits, without an exponent.
-fn rounded(value: f64) -> String {
+/// Six significant digits with a decimal point, without an exponent and without empty zeros.
+#[must_use]
+pub fn significant(value: f64) -> String {
     if value == 0.0 {
         return "0".to_owned();
     }
@@ -383,17 +386,44 @@ fn rounded(value: f64) -> String {
     }
 }
 
-/// Words, symbol and factor of a quantity.
-const fn quantity_words(quantity: Quantity) -> (&'static str, &'static str, f64) {
+/// Words, base unit and factor of a quantity.
+#[must_use]
+pub const fn quantity_words(quantity: Quantity) -> (&'static str, Unit, f64) {
     match quantity {
-        Quantity::Volumetric => ("Volumetric efficiency", "%", 100.0),
-        Quantity::HydroMechanical => ("Hydro-mechanical efficiency", "%", 100.0),
-        Quantity::Overall => ("Overall efficiency", "%", 100.0),
-        Quantity::FlowLost => ("Flow lost", "L/min", 1.0),
-        Quantity::CaseLeakage => ("Case leakage", "L/min", 1.0),
-        Quantity::TorqueLost => ("Torque lost", "N·m", 1.0),
-        Quantity::ShaftPower => ("Shaft power", "kW", 1.0),
-        Quantity::OutPower => ("Oil or output power", "kW", 1.0),
-        Quantity::Flow => ("Flow at the high port", "L/min", 1.0),
+        Quantity::Volumetric => ("Volumetric efficiency", Unit::Percent, 100.0),
+        Quantity::HydroMechanical => ("Hydro-mechanical efficiency", Unit::Percent, 100.0),
+        Quantity::Overall => ("Overall efficiency", Unit::Percent, 100.0),
+        Quantity::FlowLost => ("Flow lost", Unit::LitrePerMinute, 1.0),
+        Quantity::CaseLeakage => ("Case leakage", Unit::LitrePerMinute, 1.0),
+        Quantity::TorqueLost => ("Torque lost", Unit::NewtonMetre, 1.0),
+        Quantity::ShaftPower => ("Shaft power", Unit::Kilowatt, 1.0),
+        Quantity::OutPower => ("Oil or output power", Unit::Kilowatt, 1.0),
+        Quantity::Flow => ("Flow at the high port", Unit::LitrePerMinute, 1.0),
     }
+}
+
+/// A figure of a point with its expanded uncertainty, in the unit the shop wants.
+#[must_use]
+pub fn quantity_text(quantity: Quantity, figure: Uncertain, prefs: &UnitPrefs) -> String {
+    let (_, unit, factor) = quantity_words(quantity);
+    in_unit(
+        figure.value * factor,
+        figure.expanded() * factor,
+        unit,
+        prefs,
+    )
+}
+
+/// A coefficient of the loss fit with its expanded uncertainty, with as many decimals as two digits of the doubt need.
+#[must_use]
+pub fn coefficient(value: f64, expanded: f64, unit: &str, mark: DecimalMark) -> String {
+    let (factor, prefix) = if value.abs() >= 0.1 || unit.starts_with("cm³") {
+        (1.0, "")
+    } else if value.abs() >= 1e-4 {
+        (1e3, "thousandths of ")
+    } else {
+        (1e6, "millionths of ")
+    };
+    let unit = format!("{prefix}{unit}");
+    number(value * factor, expanded * factor, &unit, mark)
 }
