@@ -12,6 +12,7 @@ use lowside::app::route::Route;
 use lowside::app::state::{Action, State};
 use lowside::app::undo::Undo;
 use lowside::quantity::{DecimalMark, Measure, Typed, Unit as MeasureUnit};
+use lowside::readings::instrument::usual_instruments;
 use lowside::record::{Settings, Theme, Visit};
 use lowside::unit::Unit;
 use lowside::yard::YardSheet;
@@ -221,8 +222,10 @@ async fn the_sign_and_the_keys_stand_beside_the_field() {
     assert!(!page.there("sign-bench-1"));
 
     page.touch(&["keys-bench-0"]).await;
-    page.enter("bench-0").await;
-    assert!(page.there("keypad"));
+    assert!(
+        page.there("keypad"),
+        "at once, on the field that has the keyboard"
+    );
     page.touch(&["keys-bench-0"]).await;
     assert!(!page.there("keypad"));
 }
@@ -311,7 +314,17 @@ fn units_and_settings_are_taken_back_on_their_own_screens_and_a_call_has_its_own
         Action::PutSettings(Settings::default()),
         None,
     );
-    // An instrument taken off the list is an edit of the settings too.
+    // A list of instruments is an edit of the settings too.
+    state = edit(
+        &mut undo,
+        state,
+        Action::PutInstruments(usual_instruments()),
+        None,
+    );
+    assert!(!state.settings.instruments.is_empty());
+    let (action, _) = undo.back(&state).expect("a step");
+    state = state.after(action);
+    assert!(state.settings.instruments.is_empty());
     let (action, _) = undo.back(&state).expect("a step");
     state = state.after(action);
     assert_eq!(state.settings.theme, Theme::Sun);

@@ -16,6 +16,12 @@ pub fn figure(element: &Element) -> Option<HtmlInputElement> {
         .cloned()
 }
 
+/// The field of a figure that has the keyboard now.
+pub fn focused() -> Option<HtmlInputElement> {
+    let document = web_sys::window()?.document()?;
+    figure(&document.active_element()?)
+}
+
 /// True where a minus makes sense.
 pub fn is_signed(field: &HtmlInputElement) -> bool {
     field.has_attribute("data-signed")

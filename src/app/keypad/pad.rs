@@ -43,7 +43,9 @@ pub fn Keypad(props: &KeypadProps) -> Html {
     {
         let (target, picks_unit, pad) = (target.clone(), picks_unit.clone(), pad.clone());
         use_effect_with(props.on, move |on| {
-            target.set(None);
+            // Switched on from beside a field, they work on that field at once.
+            let at = around::focused().filter(|_| *on);
+            target.set(at.map(|field| Target { field, strokes: 0 }));
             let listener = on.then(|| {
                 Listener::at_document("focusin", move |event| {
                     let Some(at) = event.target().and_then(|at| at.dyn_into::<Element>().ok())
