@@ -108,7 +108,7 @@ pub fn WatchView(props: &WatchViewProps) -> Html {
                     </p>
                 </div>
                 <button type="button" class="button is-quiet watch-close" onclick={on_close} data-testid="watch-close">
-                    <Icon shape={Shape::Cross} /><span>{ "Close" }</span>
+                    <Icon shape={Shape::Cross} /><span class="watch-close-word">{ "Close" }</span>
                 </button>
             </header>
             <p class="watch-safety" data-testid="watch-safety"><Icon shape={Shape::Warning} /><span>{ watch::safety(condition) }</span></p>
