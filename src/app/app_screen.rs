@@ -15,7 +15,9 @@ use super::call::{CallScreen, EarlierCalls};
 use super::deed::{Deed, Snapshot};
 use super::engine::client::Engine;
 use super::hands::Hands;
+use super::keypad::Keypad;
 use super::neutral::NeutralScreen;
+use super::parts::{Icon, OwnKeys, Shape};
 use super::persist::Keeper;
 use super::platform::listen::Listener;
 use super::platform::{focus, offline, persistence, theme};
@@ -185,12 +187,21 @@ pub fn App() -> Html {
         }
     });
     let engine = hands.engine();
+    let undo = hands.undoable(&state.route);
     let deed = use_memo((), move |()| {
         Callback::from(move |deed: Deed| hands.act(deed))
     });
     let snapshot = (*state).clone();
+    // The same at every drawing: all fields hang on it.
+    let keys = {
+        let deed = (*deed).clone();
+        use_memo(state.settings.own_keys, move |on| OwnKeys {
+            on: *on,
+            on_change: deed.reform(Deed::OwnKeys),
+        })
+    };
     html! {
-        <>
+        <ContextProvider<OwnKeys> context={(*keys).clone()}>
             <a class="skip" href="#main" onclick={Callback::from(|event: yew::MouseEvent| {
                 // The address is taken by the route.
                 event.prevent_default();
@@ -206,7 +217,18 @@ pub fn App() -> Html {
                     { screen(&snapshot, &deed) }
                 </ContextProvider<UnitPrefs>>
             </ContextProvider<Engine>>
-        </>
+            if let Some(words) = undo {
+                <button
+                    type="button"
+                    class="button is-quiet app-undo"
+                    data-testid="undo-here"
+                    onclick={deed.reform(|_: yew::MouseEvent| Deed::Undo)}
+                >
+                    <Icon shape={Shape::Back} />{ "Undo: " }{ words }
+                </button>
+            }
+            <Keypad on={state.settings.own_keys} mark={state.settings.units.mark()} />
+        </ContextProvider<OwnKeys>>
     }
 }
 

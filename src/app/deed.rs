@@ -14,6 +14,10 @@ use crate::yard::Leg;
 pub enum Deed {
     /// An edit or a message: goes to the state as it is.
     Put(Action),
+    /// Takes the last edit of this screen back.
+    Undo,
+    /// Figures are entered with the app's own large keys from now on, or no more.
+    OwnKeys(bool),
     /// A new unit; a call on it is begun at once, or its profile is opened.
     NewUnit {
         /// Yard number or name; a blank one gets a name.

@@ -9,11 +9,12 @@ use yew::UseReducerDispatcher;
 use super::deed::{Deed, Snapshot};
 use super::engine::client::{Engine, Told};
 use super::persist::Keeper;
-use super::platform::{clock, ids, offline, persistence, timer::Timer};
+use super::platform::{clock, focus, ids, offline, persistence, timer::Timer};
 use super::route::Route;
 use super::screens::unit::usual_paths;
 use super::state::{About, Action, Question, Save, State, Written};
-use crate::record::{IdOf, Visit};
+use super::undo::Undo;
+use crate::record::{IdOf, Settings, Visit};
 use crate::store::RecordKey;
 use crate::unit::{MachineClass, Ticks, Unit};
 use crate::yard::Leg;
@@ -34,6 +35,7 @@ pub struct Hands {
     /// The write to come, and whether it is the quick one.
     save: RefCell<Option<(Option<Timer>, bool)>>,
     asked: RefCell<BTreeMap<String, Question>>,
+    undo: RefCell<Undo>,
 }
 
 impl Hands {
@@ -57,6 +59,7 @@ impl Hands {
             latest: RefCell::new(state),
             save: RefCell::new(None),
             asked: RefCell::new(BTreeMap::new()),
+            undo: RefCell::default(),
         })
     }
 
@@ -68,6 +71,11 @@ impl Hands {
     /// The engine, for sheets that a screen wants worked out.
     pub fn engine(&self) -> Engine {
         self.engine.clone()
+    }
+
+    /// What the next step back would take back on this screen.
+    pub fn undoable(&self, route: &Route) -> Option<String> {
+        self.undo.borrow().next(route)
     }
 
     /// Sends an action to the state.
@@ -200,7 +208,26 @@ impl Hands {
     /// Does a deed.
     pub fn act(self: &Rc<Self>, deed: Deed) {
         match deed {
-            Deed::Put(action) => self.put(action),
+            Deed::Put(action) => {
+                self.undo
+                    .borrow_mut()
+                    .remember(&self.state(), &action, focus::named());
+                self.put(action);
+            }
+            Deed::OwnKeys(on) => {
+                let settings = (*self.state().settings).clone();
+                self.put(Action::PutSettings(Settings {
+                    own_keys: on,
+                    ..settings
+                }));
+            }
+            Deed::Undo => {
+                let step = self.undo.borrow_mut().back(&self.state());
+                if let Some((action, words)) = step {
+                    self.put(action);
+                    self.put(Action::Say(format!("Undone: {words}.")));
+                }
+            }
             Deed::NewUnit { name, class, start } => self.new_unit(&name, class, start),
             Deed::StartCall(unit) => self.start_call(unit),
             Deed::StartYardCheck(unit, leg) => self.start_yard_check(unit, leg),

@@ -10,6 +10,7 @@ pub mod deed;
 pub mod engine;
 mod exchange;
 pub mod hands;
+pub mod keypad;
 pub mod neutral;
 pub mod parts;
 pub mod persist;
@@ -19,6 +20,7 @@ pub mod screens;
 mod shell;
 pub mod state;
 pub mod tracking;
+pub mod undo;
 pub mod yard;
 
 use wasm_bindgen::{JsCast, JsValue};

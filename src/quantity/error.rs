@@ -163,7 +163,7 @@ impl EntryError {
                     (low, high)
                 };
                 format!(
-                    "{}{} is outside what is accepted here: {} to {}{}.",
+                    "{}{} is outside what is accepted here: {} to {}{}. Look at the figure and its unit again.",
                     edit_text(*value, *unit, mark),
                     spaced(*unit),
                     limit(from),
@@ -172,11 +172,11 @@ impl EntryError {
                 )
             }
             EntryError::TooLarge { text } => {
-                format!("“{text}” is larger than anything a machine shows.")
+                format!("“{text}” is larger than anything a machine shows. Type it again.")
             }
             EntryError::FieldOfOtherKind { kind, unit } => {
                 format!(
-                    "This field is set up wrongly: it asks for {kind} in {unit}. Nothing was changed."
+                    "This field is set up wrongly: it asks for {kind} in {unit}. Nothing was changed: leave it empty."
                 )
             }
         }

@@ -19,6 +19,7 @@ mod prefs;
 mod print;
 mod retold;
 mod spelling;
+pub mod strokes;
 mod text;
 pub mod typed;
 mod unit;

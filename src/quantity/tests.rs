@@ -212,6 +212,33 @@ fn thousands_or_decimals_by_range() {
 }
 
 #[test]
+fn every_refusal_says_what_to_do() {
+    let range = || Some(measure(0.0, Unit::Bar)..=measure(60.0, Unit::Bar));
+    for text in [
+        "",
+        "much",
+        "1.2.3,4",
+        "20 30",
+        "20 furlongs",
+        "20 rpm",
+        "20 bara",
+        "400",
+        &"9".repeat(40),
+        &"9".repeat(400),
+    ] {
+        let why = parse(text, Kind::Pressure, Unit::Bar, range()).expect_err(text);
+        let words = why.to_string();
+        let says = ["Type ", "Use ", "Look ", "at most"]
+            .iter()
+            .any(|verb| words.contains(verb));
+        assert!(says, "{text:?}: {words}");
+    }
+    // A separator that can be read either way needs a field without limits.
+    let why = parse("2,400", Kind::Pressure, Unit::Bar, None).expect_err("either way");
+    assert!(why.to_string().contains("Type "), "{why}");
+}
+
+#[test]
 fn refusals_say_what_is_wrong_and_what_is_accepted() {
     let range = measure(0.0, Unit::Bar)..=measure(60.0, Unit::Bar);
     let charge = |text: &str| {
@@ -221,11 +248,11 @@ fn refusals_say_what_is_wrong_and_what_is_accepted() {
     };
     assert_eq!(
         charge("400"),
-        Err("400 bar is outside what is accepted here: 0 to 60 bar.".into())
+        Err("400 bar is outside what is accepted here: 0 to 60 bar. Look at the figure and its unit again.".into())
     );
     assert_eq!(
         charge("900 psi"),
-        Err("900 psi is outside what is accepted here: 0 to 870.226426 psi.".into())
+        Err("900 psi is outside what is accepted here: 0 to 870.226426 psi. Look at the figure and its unit again.".into())
     );
     assert_eq!(charge("20 rpm"), Err("rpm measures rotational speed; this field asks for pressure. Type it in bar, psi, kPa or MPa.".into()));
     assert_eq!(

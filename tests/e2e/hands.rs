@@ -15,7 +15,11 @@ pub async fn look(rig: &Rig, name: &str, back_to: Size) {
             rig.set_size(size).await;
             rig.set_scheme(scheme).await;
             let height = rig
-                .js("return document.documentElement.scrollHeight;", vec![])
+                .js(
+                    // What lies over the whole screen is as high as the screen.
+                    "return document.querySelector('dialog[open]') ? window.innerHeight : document.documentElement.scrollHeight;",
+                    vec![],
+                )
                 .await;
             let height = height
                 .as_u64()

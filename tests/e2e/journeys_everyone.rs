@@ -2,6 +2,7 @@
 
 use serde_json::Value;
 
+use crate::hands::press;
 use crate::rig::{LAPTOP, NARROW, PHONE, Rig, Scheme, TABLET};
 
 /// The script, which `.ci/setup` brings.
@@ -36,6 +37,92 @@ async fn violations(rig: &Rig, script: &str) -> Vec<String> {
         .collect()
 }
 
+/// The page as it stands, at every width and in every theme.
+async fn seen_by_everyone(rig: &Rig, script: &str, what: &str) -> Vec<String> {
+    let mut all = Vec::new();
+    for size in [NARROW, PHONE, TABLET, LAPTOP] {
+        rig.set_size(size).await;
+        for theme in ["light", "dark", "sun"] {
+            let scheme = if theme == "dark" {
+                Scheme::Dark
+            } else {
+                Scheme::Light
+            };
+            // Colours hang on the theme and not on the width: each theme once, each width once.
+            if size.name != PHONE.name && theme != "light" {
+                continue;
+            }
+            rig.set_scheme(scheme).await;
+            let set = "if (arguments[0] === 'sun') { document.documentElement.setAttribute('data-theme', 'sun'); }
+                else { document.documentElement.removeAttribute('data-theme'); }
+                return true;";
+            rig.js(set, vec![Value::from(theme)]).await;
+            for line in violations(rig, script).await {
+                all.push(format!("{what} at {} px, {theme}: {line}", size.width));
+            }
+        }
+    }
+    rig.js(
+        "document.documentElement.removeAttribute('data-theme'); return true;",
+        vec![],
+    )
+    .await;
+    all
+}
+
+#[tokio::test]
+async fn the_watch_view_and_the_large_keys_shut_nobody_out() {
+    let script = axe();
+    let rig = Rig::open(PHONE).await;
+    rig.click("load-demo").await;
+    rig.wait_for_text("T-14").await;
+    rig.go("/call/demo-v-14").await;
+    rig.by_id("call-screen").await;
+    press(&rig, "quick-held-forward").await;
+    rig.wait_until(
+        "the precautions are there",
+        "!!document.querySelector('[data-testid^=\"precaution-\"]')",
+    )
+    .await;
+    // Forward and reverse stand on the page, each with its own round of ticks: those of the first.
+    rig.wait_until(
+        "the ticks of one round are set",
+        "(() => {
+            const first = document.querySelector('[data-testid^=\"precaution-pressure-build-up\"]').closest('.gate-item');
+            const open = [...first.querySelectorAll('[data-testid^=\"precaution-\"]')].find(box => !box.checked);
+            open?.click();
+            return !open;
+        })()",
+    )
+    .await;
+    let watch = "[...document.querySelectorAll('.group-watch')].at(-1).click(); return true;";
+    rig.js(watch, vec![]).await;
+    rig.by_id("hold-start").await;
+    let mut all = seen_by_everyone(&rig, &script, "the watch view").await;
+    rig.click("hold-start").await;
+    rig.by_id("hold-left").await;
+    all.extend(seen_by_everyone(&rig, &script, "the watch view, held").await);
+    rig.set_size(PHONE).await;
+    rig.click("watch-close").await;
+
+    rig.go("/settings").await;
+    press(&rig, "own-keys-here").await;
+    rig.go("/call/demo-v-14").await;
+    let field = "[...document.querySelectorAll('[data-figure]')].find(field => field.offsetParent).focus(); return true;";
+    rig.js(field, vec![]).await;
+    rig.by_id("keypad").await;
+    all.extend(seen_by_everyone(&rig, &script, "the large keys").await);
+    rig.click("pad-unit").await;
+    all.extend(seen_by_everyone(&rig, &script, "the large keys, units").await);
+    assert!(
+        all.is_empty(),
+        "{} violations:\n{}",
+        all.len(),
+        all.join("\n")
+    );
+    rig.close().await;
+}
+
 #[tokio::test]
 async fn no_screen_shuts_anybody_out() {
     let script = axe();
@@ -61,33 +148,7 @@ async fn no_screen_shuts_anybody_out() {
             vec![],
         )
         .await;
-        for size in [NARROW, PHONE, TABLET, LAPTOP] {
-            rig.set_size(size).await;
-            for theme in ["light", "dark", "sun"] {
-                let scheme = if theme == "dark" {
-                    Scheme::Dark
-                } else {
-                    Scheme::Light
-                };
-                // Colours hang on the theme and not on the width: each theme once, each width once.
-                if size.name != PHONE.name && theme != "light" {
-                    continue;
-                }
-                rig.set_scheme(scheme).await;
-                let set = "if (arguments[0] === 'sun') { document.documentElement.setAttribute('data-theme', 'sun'); }
-                    else { document.documentElement.removeAttribute('data-theme'); }
-                    return true;";
-                rig.js(set, vec![Value::from(theme)]).await;
-                for line in violations(&rig, &script).await {
-                    all.push(format!("{route} at {} px, {theme}: {line}", size.width));
-                }
-            }
-        }
-        rig.js(
-            "document.documentElement.removeAttribute('data-theme'); return true;",
-            vec![],
-        )
-        .await;
+        all.extend(seen_by_everyone(&rig, &script, route).await);
     }
     assert!(
         all.is_empty(),

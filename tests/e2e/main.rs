@@ -19,6 +19,7 @@ mod journeys_papers;
 mod journeys_sides;
 mod journeys_start;
 mod journeys_tracking;
+mod journeys_watch;
 mod journeys_yard;
 mod pace;
 mod rig;

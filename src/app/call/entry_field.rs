@@ -138,6 +138,7 @@ fn keys(props: &EntryFieldProps, mode: Mode, say: &Callback<Said>) -> Html {
                         type="button"
                         class={if is_on { "key is-on" } else { "key" }}
                         aria-pressed={if is_on { "true" } else { "false" }}
+                        data-answer={*code}
                         data-testid={format!("{code}-{}", props.number)}
                         onclick={on_click}
                     >

@@ -7,6 +7,7 @@ use super::gate::{Barred, Gate, NEVER_ALONE};
 use super::words;
 use crate::app::parts::{Caution, Choice, Grade, Opt};
 use crate::app::platform::clock;
+use crate::call::hold::PLATEAU_S;
 use crate::caution::Stands;
 use crate::quantity::{self, Decimals, Kind, Measure, UnitPrefs};
 use crate::readings::{Doing, Port};
@@ -215,7 +216,7 @@ fn held(props: &GatePanelProps) -> Html {
             if let Some((seconds, rise)) = props.hold {
                 <p class="gate-hold" data-testid="hold">
                     { "Full stroke: hold " }
-                    <strong class="figure">{ seconds_words(seconds, &props.prefs) }</strong>
+                    <strong class="figure">{ full_stroke(seconds, &props.prefs) }</strong>
                     { " at most, then rest 60 s. The oil heats by about " }
                     <strong class="figure">{ rise_words(rise, &props.prefs) }</strong>
                     { " each second." }
@@ -227,6 +228,11 @@ fn held(props: &GatePanelProps) -> Html {
             { cautions::at(Stands::Held) }
         </div>
     }
+}
+
+/// Seconds of a hold at full stroke: never more than common practice, whatever the oil would bear.
+pub fn full_stroke(computed: f64, prefs: &UnitPrefs) -> String {
+    seconds_words(computed.min(PLATEAU_S), prefs)
 }
 
 pub fn seconds_words(seconds: f64, prefs: &UnitPrefs) -> String {
@@ -254,16 +260,25 @@ pub fn rise_words(rise: f64, prefs: &UnitPrefs) -> String {
         .map_or_else(|_| String::from("?"), |rise| prefs.print(rise))
 }
 
-/// The pressure to stop at first: a share of the lowest setting that is known.
-pub fn stop_at(unit: &Unit, prefs: &UnitPrefs) -> String {
-    let known = [
+/// The lowest setting that is known, bar, and its name.
+fn lowest_setting(unit: &Unit) -> Option<(f64, &'static str)> {
+    [
         (FigureId::LoopRelief, "loop relief"),
         (FigureId::Limiter, "pressure limiter"),
     ]
     .into_iter()
     .filter_map(|(id, name)| unit.known(id).map(|bar| (bar, name)))
-    .min_by(|one, other| one.0.total_cmp(&other.0));
-    match known {
+    .min_by(|one, other| one.0.total_cmp(&other.0))
+}
+
+/// The pressure to stop at first, bar; none where no setting is known.
+pub fn first_stop(unit: &Unit) -> Option<f64> {
+    lowest_setting(unit).map(|(bar, _)| FIRST_STOP * bar)
+}
+
+/// The pressure to stop at first: a share of the lowest setting that is known.
+pub fn stop_at(unit: &Unit, prefs: &UnitPrefs) -> String {
+    match lowest_setting(unit) {
         Some((bar, name)) => format!(
             "Stop first at {} (60 % of the {name} setting), then look before going on. Never over {}.",
             words::value(Port::LoopA, FIRST_STOP * bar, prefs),

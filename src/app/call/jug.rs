@@ -92,7 +92,7 @@ pub fn JugPanel(props: &JugPanelProps) -> Html {
                 mark={props.prefs.mark()}
                 on_entry={set(part).reform(|entry: Entry| entry)}
                 testid={format!("jug-{code}-{}", props.number)}
-                class="entry-value"
+                class="jug-value"
             />
         }
     };

@@ -3,8 +3,10 @@
 //! What is typed is never reformatted while it is typed and never lost: the caller keeps [`Entry::typed`] beside the value.
 
 use yew::{AttrValue, Callback, Classes, Event, FocusEvent, Html, InputEvent, Properties};
-use yew::{TargetCast, classes, component, html, use_state};
+use yew::{MouseEvent, TargetCast, classes, component, html, use_context, use_state};
 
+use super::OwnKeys;
+use crate::quantity::strokes::{Stroke, press};
 use crate::quantity::{
     DecimalMark, Decimals, Measure, Parsed, Unit, edit_text, format_with_unit, parse,
 };
@@ -140,6 +142,7 @@ fn remark(
 /// The field.
 #[component]
 pub fn MeasureField(props: &MeasureFieldProps) -> Html {
+    let keys = use_context::<OwnKeys>();
     let own = use_state(Own::default);
     let focused = use_state(|| false);
     let complained = use_state(|| true);
@@ -213,7 +216,7 @@ pub fn MeasureField(props: &MeasureFieldProps) -> Html {
         })
     };
     let on_unit = {
-        let (text, field_unit) = (text.clone(), props.unit);
+        let (emit, text, field_unit) = (emit.clone(), text.clone(), props.unit);
         Callback::from(move |event: Event| {
             let select: web_sys::HtmlSelectElement = event.target_unchecked_into();
             let Some(unit) = Unit::from_code(&select.value()) else {
@@ -225,6 +228,13 @@ pub fn MeasureField(props: &MeasureFieldProps) -> Html {
                 .trim_end_matches(['²', '³']);
             let figure = if figure.is_empty() { &text } else { figure };
             emit(figure.to_owned(), (unit != field_unit).then_some(unit));
+        })
+    };
+    let on_sign = {
+        let (emit, text) = (emit.clone(), text.clone());
+        Callback::from(move |_: MouseEvent| {
+            let end = text.chars().count();
+            emit(press(&text, end, end, Stroke::Sign).0, picked);
         })
     };
     let on_focus = {
@@ -252,7 +262,13 @@ pub fn MeasureField(props: &MeasureFieldProps) -> Html {
         .collect::<Vec<_>>()
         .join(" ");
     let symbol = props.unit.symbol();
-    let is_signed = props.range.is_none_or(|(low, _)| low.base() < 0.0);
+    let is_signed = props.range.is_some_and(|(low, _)| low.base() < 0.0);
+    let inputmode = match &keys {
+        Some(keys) if keys.on => "none",
+        // The number pads of some phones have no minus: the key beside the field is it.
+        _ if is_signed || props.range.is_some() => "decimal",
+        _ => "text",
+    };
     let label = if shown_unit.symbol().is_empty() {
         props.label.clone()
     } else {
@@ -275,7 +291,9 @@ pub fn MeasureField(props: &MeasureFieldProps) -> Html {
                     class="field-input"
                     id={props.id.clone()}
                     type="text"
-                    inputmode={if is_signed { "text" } else { "decimal" }}
+                    {inputmode}
+                    data-figure="true"
+                    data-signed={is_signed.then_some("true")}
                     enterkeyhint="next"
                     autocomplete="off"
                     spellcheck="false"
@@ -288,6 +306,22 @@ pub fn MeasureField(props: &MeasureFieldProps) -> Html {
                     onfocus={on_focus}
                     onblur={on_blur}
                 />
+                if is_signed {
+                    <button
+                        type="button"
+                        class="field-sign"
+                        aria-label={format!("Plus or minus, {}", props.label)}
+                        data-testid={format!("sign-{}", props.testid)}
+                        onmousedown={Callback::from(|event: MouseEvent| {
+                            // The field keeps the focus.
+                            event.prevent_default();
+                        })}
+                        onclick={on_sign}
+                    >{ "±" }</button>
+                }
+                if let Some(keys) = &keys {
+                    { keys.toggle(&props.label, &props.testid) }
+                }
                 if units.len() > 1 {
                     <select
                         class="field-unit"

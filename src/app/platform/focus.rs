@@ -34,3 +34,60 @@ pub fn to_head(id: &str) {
         element.scroll_into_view();
     }
 }
+
+/// What has the keyboard.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct Named {
+    /// DOM id, or where there is none the test id.
+    pub id: String,
+    /// What it is called.
+    pub name: String,
+    /// True where letters go into it.
+    pub is_typing: bool,
+}
+
+/// Longest name that is told, in characters.
+const LONGEST: usize = 40;
+
+/// What has the keyboard now; none where nothing has, as after a touch in some browsers.
+pub fn named() -> Option<Named> {
+    let document = web_sys::window()?.document()?;
+    let element = document.active_element()?;
+    let tag = element.tag_name().to_ascii_lowercase();
+    if tag == "body" {
+        return None;
+    }
+    let id = Some(element.id()).filter(|id| !id.is_empty());
+    let id = id
+        .or_else(|| element.get_attribute("data-testid"))
+        .unwrap_or_default();
+    let label = || {
+        let label = document
+            .query_selector(&format!("label[for=\"{id}\"]"))
+            .ok()
+            .flatten();
+        label.or_else(|| element.closest("label").ok().flatten())
+    };
+    let name = element
+        .get_attribute("aria-label")
+        .or_else(|| label().and_then(|label| label.text_content()))
+        .or_else(|| element.text_content())
+        .unwrap_or_default();
+    let kind = element.get_attribute("type").unwrap_or_default();
+    let is_typing = tag == "textarea"
+        || tag == "input" && !matches!(kind.as_str(), "checkbox" | "radio" | "button" | "file");
+    let name: Vec<&str> = name.split_whitespace().collect();
+    Some(Named {
+        is_typing: is_typing && !id.is_empty(),
+        id,
+        name: shortened(&name.join(" ")),
+    })
+}
+
+fn shortened(name: &str) -> String {
+    if name.chars().count() <= LONGEST {
+        return name.to_owned();
+    }
+    let head: String = name.chars().take(LONGEST - 1).collect();
+    format!("{}…", head.trim_end())
+}

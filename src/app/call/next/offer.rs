@@ -4,7 +4,7 @@
 use super::{NextPanelProps, foretold};
 use crate::app::call::change::Change;
 use crate::app::call::gate::{self, GATED_FROM};
-use crate::app::call::gate_panel::{rise_words, seconds_words};
+use crate::app::call::gate_panel::{full_stroke, rise_words};
 use crate::app::call::help;
 use crate::app::call::quick::alike;
 use crate::app::call::side::Wanted;
@@ -149,7 +149,7 @@ fn held(hold: Hold, props: &NextPanelProps) -> Html {
             { "Stop at " }
             <strong class="figure">{ words::value(Port::LoopA, hold.stop_at, &props.prefs) }</strong>
             { ". At full stroke " }
-            <strong class="figure">{ seconds_words(hold.seconds, &props.prefs) }</strong>
+            <strong class="figure">{ full_stroke(hold.seconds, &props.prefs) }</strong>
             { " at most: the oil heats by about " }
             <strong class="figure">{ rise_words(hold.rise, &props.prefs) }</strong>
             { " each second." }

@@ -54,11 +54,12 @@ fn decimals(step: f64) -> u8 {
     }
 }
 
-/// The drawing; none where nothing is expected that could be drawn.
+/// The drawing, with the pressure (base unit) to stop at; none where nothing is expected that could be drawn.
 pub fn draw(
     window: &Window,
     port: Port,
     instrument: Option<&Instrument>,
+    stop: Option<f64>,
     prefs: &UnitPrefs,
 ) -> Option<Html> {
     let shown = |base: f64| words::shown(port, base, prefs);
@@ -80,6 +81,10 @@ pub fn draw(
     }
     let (low, high) = words::ends(port, window.low, window.high, prefs);
     let places = decimals(dial.step);
+    let stop = stop
+        .and_then(shown)
+        .map(|stop| dial.place(stop))
+        .filter(|place| *place < 1.0);
     let read = window.read.and_then(shown).map(|read| dial.place(read));
     Some(html! {
         <svg
@@ -90,6 +95,9 @@ pub fn draw(
             data-testid="watch-dial"
         >
             <path d={arc(0.0, 1.0, SCALE)} class="dial-track" />
+            if let Some(stop) = stop {
+                <path d={arc(stop, 1.0, SCALE + 16.0)} class="dial-stop" data-testid="watch-stop-mark" />
+            }
             <path d={sector(from, to)} class="dial-band" data-testid="watch-band" />
             { for dial.figures().into_iter().map(|figure| {
                 let place = dial.place(figure);

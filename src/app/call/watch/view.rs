@@ -2,7 +2,7 @@
 
 use super::dial;
 use super::hold_timer::{HoldTimer, Kept};
-use crate::app::call::gate_panel::{RESTARTED, stop_at};
+use crate::app::call::gate_panel::{RESTARTED, first_stop, stop_at};
 use crate::app::call::side::Sides;
 use crate::app::parts::{Icon, Shape};
 use crate::app::platform::awake::Awake;
@@ -99,7 +99,7 @@ pub fn WatchView(props: &WatchViewProps) -> Html {
         .and_then(|before| props.watched.get(before));
     let is_new = before.is_some_and(|before| before.reading.condition != *condition);
     html! {
-        <dialog ref={dialog} class="watch" aria-labelledby="watch-title" oncancel={on_cancel} data-testid="watch">
+        <dialog ref={dialog} class={if condition.doing == Doing::Held { "watch is-held" } else { "watch" }} aria-labelledby="watch-title" oncancel={on_cancel} data-testid="watch">
             <header class="watch-head">
                 <div>
                     <h2 id="watch-title" tabindex="-1">{ props.sides.name(reading) }</h2>
@@ -108,7 +108,7 @@ pub fn WatchView(props: &WatchViewProps) -> Html {
                     </p>
                 </div>
                 <button type="button" class="button is-quiet watch-close" onclick={on_close} data-testid="watch-close">
-                    <Icon shape={Shape::Cross} /><span>{ "Close" }</span>
+                    <Icon shape={Shape::Cross} /><span class="watch-close-word">{ "Close" }</span>
                 </button>
             </header>
             <p class="watch-safety" data-testid="watch-safety"><Icon shape={Shape::Warning} /><span>{ watch::safety(condition) }</span></p>
@@ -116,26 +116,26 @@ pub fn WatchView(props: &WatchViewProps) -> Html {
                 if let Some(why) = &now.closed {
                     <p class="watch-refused" role="alert" data-testid="watch-closed"><Icon shape={Shape::Danger} /><span>{ why.clone() }</span></p>
                 } else {
-                    { target(props, now) }
                     { held(props, now) }
+                    { target(props, now) }
                 }
+                <button type="button" class="button is-quiet" onclick={props.on_restarted.reform(|_: MouseEvent| ())} data-testid="watch-restarted">
+                    { RESTARTED }
+                </button>
             </div>
             <footer class="watch-foot">
-                <p class="watch-count" role="status" data-testid="watch-count">{ format!("{} of {}", place + 1, last + 1) }</p>
                 <div class="watch-keys">
                     <button type="button" class="button watch-key" disabled={place == 0} onclick={go(place.saturating_sub(1))} data-testid="watch-back">
-                        <Icon shape={Shape::Back} />{ "Previous" }
+                        <Icon shape={Shape::Back} />{ "Back" }
                     </button>
+                    <p class="watch-count" role="status" data-testid="watch-count">{ format!("{} of {}", place + 1, last + 1) }</p>
                     <button type="button" class="button watch-key" disabled={place == last} onclick={go((place + 1).min(last))} data-testid="watch-next">
                         { "Next" }<Icon shape={Shape::Forward} />
                     </button>
-                    <button type="button" class="button is-main watch-key is-write" onclick={props.on_write.reform(|_: MouseEvent| ())} data-testid="watch-write">
-                        { "Write them down" }
-                    </button>
-                    <button type="button" class="button is-quiet watch-restarted" onclick={props.on_restarted.reform(|_: MouseEvent| ())} data-testid="watch-restarted">
-                        { RESTARTED }
-                    </button>
                 </div>
+                <button type="button" class="button is-main is-wide watch-write" onclick={props.on_write.reform(|_: MouseEvent| ())} data-testid="watch-write">
+                    { "Write them down" }
+                </button>
             </footer>
         </dialog>
     }
@@ -145,6 +145,8 @@ pub fn WatchView(props: &WatchViewProps) -> Html {
 fn target(props: &WatchViewProps, now: &Watched) -> Html {
     let port = now.reading.port;
     let on = watch::instrument(port, now.instrument.as_ref());
+    let is_held = now.reading.condition.doing == Doing::Held;
+    let stop = first_stop(&props.unit).filter(|_| is_held);
     let Some(window) = now
         .window
         .as_ref()
@@ -152,12 +154,15 @@ fn target(props: &WatchViewProps, now: &Watched) -> Html {
     else {
         return html! { <>
             <p class="watch-band" data-testid="watch-words">{ "Nothing foretold here: read what stands." }</p>
+            if is_held {
+                <p class="watch-stop" data-testid="watch-stop">{ stop_at(&props.unit, &props.prefs) }</p>
+            }
             <p class="watch-instrument">{ on }</p>
         </> };
     };
     let (low, high) = words::ends(port, window.low, window.high, &props.prefs);
     html! { <>
-        { dial::draw(window, port, now.instrument.as_ref(), &props.prefs).unwrap_or_default() }
+        { dial::draw(window, port, now.instrument.as_ref(), stop, &props.prefs).unwrap_or_default() }
         <p class="watch-band" data-testid="watch-words">
             <strong class="figure">{ format!("{low} to {high}") }</strong>
             <span>
@@ -165,11 +170,14 @@ fn target(props: &WatchViewProps, now: &Watched) -> Html {
                 { words::source(window.source) }
             </span>
         </p>
+        if is_held {
+            <p class="watch-stop" data-testid="watch-stop">{ stop_at(&props.unit, &props.prefs) }</p>
+        }
         <p class="watch-instrument" data-testid="watch-instrument">{ on }</p>
     </> }
 }
 
-/// For a held machine: the pressure to stop at and the timer. With flushing blocked the timer alone.
+/// The timer, for a held machine and with flushing blocked.
 fn held(props: &WatchViewProps, now: &Watched) -> Html {
     let condition = &now.reading.condition;
     let plan = match hold::plan(&props.unit, condition) {
@@ -177,10 +185,7 @@ fn held(props: &WatchViewProps, now: &Watched) -> Html {
         Ok(Some(plan)) => Ok(plan),
         Err(why) => Err(why),
     };
-    html! { <>
-        if condition.doing == Doing::Held {
-            <p class="watch-stop" data-testid="watch-stop">{ stop_at(&props.unit, &props.prefs) }</p>
-        }
+    html! {
         <HoldTimer
             key={now.reading.id.clone()}
             name={format!("{:?}/{:?}", now.reading.port, condition.direction)}
@@ -188,5 +193,5 @@ fn held(props: &WatchViewProps, now: &Watched) -> Html {
             clock={props.clock.clone()}
             prefs={props.prefs.clone()}
         />
-    </> }
+    }
 }

@@ -73,6 +73,17 @@ pub fn SettingsScreen(props: &SettingsProps) -> Html {
                             value={props.state.settings.theme}
                             on_change={props.change(|settings, theme| settings.theme = theme)}
                         />
+                        <Choice<bool>
+                            name="own-keys"
+                            label="Keys for figures"
+                            hint="Large keys here: for gloves, and where the device’s own keypad has no minus or no comma."
+                            options={vec![
+                                Opt::new(false, "The device’s own", "device"),
+                                Opt::new(true, "Large keys here", "here"),
+                            ]}
+                            value={Some(props.state.settings.own_keys)}
+                            on_change={props.change(|settings, on| settings.own_keys = on)}
+                        />
                     </Section>
                     <Section id="learning" title="Learned from closed calls" state={match props.state.cases.len() {
                         0 => "nothing yet".to_owned(),
