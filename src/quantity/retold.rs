@@ -41,8 +41,7 @@ pub fn retold<'a>(text: &'a str, prefs: &UnitPrefs) -> Cow<'a, str> {
 
 /// The first unit after a figure: what stands before it, the unit, what comes after.
 fn next(text: &str) -> Option<(&str, Unit, &str)> {
-    let found = text
-        .char_indices()
+    text.char_indices()
         .filter(|(_, c)| *c == ' ')
         .find_map(|(at, _)| {
             let (before, from) = text.split_at(at);
@@ -53,8 +52,7 @@ fn next(text: &str) -> Option<(&str, Unit, &str)> {
             })?;
             number(before)?;
             Some((before, *unit, from.strip_prefix(word)?))
-        });
-    found
+        })
 }
 
 /// The figure at the end of a text, and what stands before it.

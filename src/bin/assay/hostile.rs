@@ -249,7 +249,7 @@ fn file(text: &[u8], counts: &mut Counts) {
             assert_eq!(back.units.first(), Some(unit), "changed by its tag");
         }
     }
-    if counts.taken % WORKED_OUT == 0 {
+    if counts.taken.is_multiple_of(WORKED_OUT) {
         counts.worked_out += export
             .visits
             .iter()
