@@ -3,7 +3,20 @@
 use serde_json::Value;
 
 use crate::hands::press;
-use crate::rig::{LAPTOP, NARROW, PHONE, Rig, Scheme, TABLET};
+use crate::rig::{LAPTOP, NARROW, PHONE, Rig, Scheme, Size, TABLET};
+
+/// A phone held across.
+const ON_ITS_SIDE: Size = Size {
+    name: "a phone on its side",
+    width: 740,
+    height: 360,
+};
+/// A laptop whose browser shows everything twice as large (WCAG 2.2, 1.4.4): half the room.
+const ENLARGED: Size = Size {
+    name: "a laptop at 200 %",
+    width: 683,
+    height: 384,
+};
 
 /// The script, which `.ci/setup` brings.
 fn axe() -> String {
@@ -140,6 +153,12 @@ async fn no_screen_shuts_anybody_out() {
         "/unit/demo-t-14/wear",
         "/learned",
         "/settings",
+        "/call/demo-v-27/report",
+        "/call/demo-y-52-8",
+        "/call/demo-y-52-8/report",
+        "/unit/demo-t-52/wear",
+        "/unit/demo-t-27/tag",
+        "/tag",
     ] {
         rig.go(route).await;
         // Everything that is folded is looked at too.
@@ -149,6 +168,14 @@ async fn no_screen_shuts_anybody_out() {
         )
         .await;
         all.extend(seen_by_everyone(&rig, &script, route).await);
+        // Everything is reached without scrolling sideways: on the narrowest phone, on its side, and on a laptop at 200 %.
+        for size in [NARROW, ON_ITS_SIDE, ENLARGED] {
+            rig.set_size(size).await;
+            if rig.scrolls_sideways().await {
+                all.push(format!("{route} scrolls sideways, {}", size.name));
+            }
+        }
+        rig.set_size(PHONE).await;
     }
     assert!(
         all.is_empty(),

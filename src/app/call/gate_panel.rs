@@ -5,7 +5,7 @@ use super::cautions;
 use super::change::Change;
 use super::gate::{Barred, Gate, NEVER_ALONE};
 use super::words;
-use crate::app::parts::{Caution, Choice, Grade, Opt};
+use crate::app::parts::{Caution, Choice, Grade, Opt, Retold};
 use crate::app::platform::clock;
 use crate::call::hold::PLATEAU_S;
 use crate::caution::Stands;
@@ -131,7 +131,7 @@ fn how(gate: &Gate) -> Html {
 }
 
 fn steps(gate: &Gate) -> Html {
-    html! { <ol class="gate-how">{ for gate.check.how.iter().map(|step| html! { <li>{ *step }</li> }) }</ol> }
+    html! { <ol class="gate-how">{ for gate.check.how.iter().map(|step| html! { <li><Retold text={*step} /></li> }) }</ol> }
 }
 
 /// What holds for the ordinary checks of a group: told once, nothing to tick.
@@ -152,7 +152,7 @@ pub fn advice(gates: &[Gate]) -> Html {
     html! {
         <details class="advice">
             <summary>{ "Before you start" }</summary>
-            <ul>{ for facts.into_iter().map(|fact| html! { <li>{ fact }</li> }) }</ul>
+            <ul>{ for facts.into_iter().map(|fact| html! { <li><Retold text={fact} /></li> }) }</ul>
             { for ordinary.into_iter().filter(|gate| !gate.check.how.is_empty()).map(|gate| html! {
                 <div class="advice-how">
                     <strong>{ gate.check.title }</strong>
@@ -184,7 +184,7 @@ fn facts(props: &GatePanelProps) -> Html {
                             onchange={on_tick}
                             data-testid={format!("precaution-{}-{place}", props.gate.check.id)}
                         />
-                        <span>{ fact }</span>
+                        <span><Retold text={fact} /></span>
                     </label>
                 }
             }) }

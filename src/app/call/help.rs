@@ -1,6 +1,7 @@
 //! How a reading is taken, one touch away at the reading itself: where the port is, how, what to watch for.
 
 use super::steady::Fold;
+use crate::app::parts::Retold;
 use crate::checks::{self, Check};
 use crate::readings::{Condition, Port};
 use crate::unit::PortNote;
@@ -34,14 +35,14 @@ fn inside(port: Port, check: Option<&'static Check>, place: Option<&str>) -> Htm
                     <dd>{ place.to_owned() }</dd>
                 }
                 <dt>{ "Usually" }</dt>
-                <dd>{ help.place }</dd>
+                <dd><Retold text={help.place} /></dd>
                 <dt>{ "How" }</dt>
-                <dd>{ help.how }</dd>
+                <dd><Retold text={help.how} /></dd>
                 <dt>{ "Watch for" }</dt>
-                <dd>{ help.watch }</dd>
+                <dd><Retold text={help.watch} /></dd>
                 if let (Some(check), Some(around)) = (check, around) {
                     <dt>{ check.title }</dt>
-                    <dd>{ around.place }{ " " }{ around.watch }</dd>
+                    <dd><Retold text={around.place} />{ " " }<Retold text={around.watch} /></dd>
                 }
             </dl>
             <p class="soft small">{ "Common practice; the unit’s manual comes first." }</p>
@@ -55,9 +56,9 @@ pub fn of_check(id: &str) -> Html {
         Some(help) => html! {
             <dl class="help">
                 <dt>{ "Usually" }</dt>
-                <dd>{ help.place }</dd>
+                <dd><Retold text={help.place} /></dd>
                 <dt>{ "Watch for" }</dt>
-                <dd>{ help.watch }</dd>
+                <dd><Retold text={help.watch} /></dd>
             </dl>
         },
         None => Html::default(),

@@ -11,7 +11,7 @@ use crate::app::call::side::Wanted;
 use crate::app::call::steady::Fold;
 use crate::app::call::taken::Taken;
 use crate::app::call::{hazard, seen_keys, words};
-use crate::app::parts::{Caution, Grade, Icon, Shape};
+use crate::app::parts::{Caution, Grade, Icon, Retold, Shape};
 use crate::checks::{self, Check};
 use crate::next::{Foretold, Hold, Offer};
 use crate::observations::{self, Observation};
@@ -109,7 +109,7 @@ fn before(known: &'static Check, offer: &Offer) -> Html {
     if facts.is_empty() {
         return Html::default();
     }
-    let list = html! { <ul class="plain-list">{ for facts.iter().map(|fact| html! { <li>{ *fact }</li> }) }</ul> };
+    let list = html! { <ul class="plain-list">{ for facts.iter().map(|fact| html! { <li><Retold text={*fact} /></li> }) }</ul> };
     // Where readings follow, each is ticked there before its field opens.
     let is_asked_again = !offer.foretold.is_empty() && offer.hazard < gate::NEVER_ALONE;
     if offer.hazard < GATED_FROM || is_asked_again {
@@ -288,13 +288,13 @@ fn how(known: &'static Check) -> Html {
         if !known.how.is_empty() {
             <details class="advice" data-testid={format!("how-{}", known.id)}>
                 <summary>{ "How it is done" }</summary>
-                <ol class="next-how">{ for known.how.iter().map(|step| html! { <li>{ *step }</li> }) }</ol>
+                <ol class="next-how">{ for known.how.iter().map(|step| html! { <li><Retold text={*step} /></li> }) }</ol>
                 { help::of_check(known.id) }
             </details>
         }
         <dl class="next-facts">
             if known.instruments != "none" {
-                <div><dt>{ "Needs" }</dt><dd>{ known.instruments }</dd></div>
+                <div><dt>{ "Needs" }</dt><dd><Retold text={known.instruments} /></dd></div>
             }
             if !known.put_back.is_empty() {
                 <div><dt>{ "Put back" }</dt><dd>{ known.put_back.join("; ") }</dd></div>
