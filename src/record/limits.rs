@@ -59,3 +59,6 @@ pub fn kind_span(kind: Kind) -> (f64, f64) {
         _ => (-1e6, 1e6),
     }
 }
+
+/// Largest hour meter, h.
+pub const MOST_HOURS: f64 = 200_000.0;

@@ -7,10 +7,8 @@ use crate::quantity::Kind;
 use crate::quantity::Typed;
 use crate::yard::YardSheet;
 
-/// Highest hour meter reading, h.
-const MOST_HOURS: f64 = 200_000.0;
 /// The same, s.
-const HOURS_SPAN: (f64, f64) = (0.0, MOST_HOURS * 3_600.0 * 1.000_01);
+const HOURS_SPAN: (f64, f64) = (0.0, super::limits::MOST_HOURS * 3_600.0 * 1.000_01);
 
 /// Checks a sheet and cleans its texts.
 pub(super) fn check(path: &str, sheet: &mut YardSheet) -> Checked {

@@ -78,6 +78,7 @@ async fn a_road_call_from_nothing_to_a_cause_and_on_without_a_server() {
     )
     .await;
     rig.by_id("next-0").await;
+    rig.fill("hours", "1250").await;
     rig.wait_until(
         "it is saved",
         "document.querySelector('[data-testid=\"save-state\"]').innerText.includes('Saved')",
@@ -101,6 +102,8 @@ async fn a_road_call_from_nothing_to_a_cause_and_on_without_a_server() {
         kept.starts_with("130.5"),
         "what was typed stands as it was typed: {kept}"
     );
+    let hours = "return document.querySelector('[data-testid=\"hours\"]').value;";
+    assert_eq!(rig.js(hours, vec![]).await.as_str(), Some("1250"));
     rig.wait_for_text("Charge relief held off its seat").await;
 
     type_value(&rig, low_idle, "290 psi").await;

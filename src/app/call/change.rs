@@ -5,6 +5,7 @@ use super::group::settled;
 use super::put_back;
 use super::rigging::{rig, rigging_on, swap};
 use super::side::Wanted;
+use crate::quantity::Typed;
 use crate::readings::{Condition, JugCatch, Path, Port, Reading, Seen};
 use crate::record::{Answer, Closing, Earlier, PutBack, Visit};
 
@@ -13,6 +14,8 @@ use crate::record::{Answer, Closing, Earlier, PutBack, Visit};
 pub enum Change {
     /// Complaint text.
     Complaint(String),
+    /// Hour meter as typed.
+    Hours(Typed),
     /// Alone on site.
     Alone(Option<bool>),
     /// Began straight after a repair.
@@ -90,6 +93,7 @@ impl Change {
     pub fn words(&self) -> String {
         match self {
             Change::Complaint(_) => String::from("complaint"),
+            Change::Hours(_) => String::from("hour meter"),
             Change::Alone(_) => String::from("alone on site"),
             Change::AfterRepair(_) => String::from("after a repair"),
             Change::Observe(..) => String::from("what was seen"),
@@ -117,7 +121,9 @@ impl Change {
     /// True where `next` goes on with what this change began: typing in the same field.
     pub fn goes_on(&self, next: &Change) -> bool {
         match (self, next) {
-            (Change::Complaint(_), Change::Complaint(_)) => true,
+            (Change::Complaint(_), Change::Complaint(_)) | (Change::Hours(_), Change::Hours(_)) => {
+                true
+            }
             (
                 Change::Entry { id, seen, .. },
                 Change::Entry {
@@ -153,6 +159,7 @@ pub fn apply(visit: &Visit, change: &Change) -> Visit {
     let mut next = visit.clone();
     match change {
         Change::Complaint(text) => next.complaint.clone_from(text),
+        Change::Hours(hours) => next.hours.clone_from(hours),
         Change::Alone(answer) => next.alone = *answer,
         Change::AfterRepair(answer) => next.after_repair = *answer,
         Change::Observe(id, Some(answer)) => {

@@ -249,6 +249,8 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 { before_all(visit) }
                 <SeenPanel
                     complaint={visit.complaint.clone()}
+                    hours={visit.hours.clone()}
+                    mark={props.prefs.mark()}
                     alone={visit.alone}
                     after_repair={visit.after_repair}
                     observations={visit.observations.clone()}

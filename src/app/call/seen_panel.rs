@@ -4,11 +4,12 @@ use super::cautions;
 use super::change::Change;
 use super::seen_keys;
 use super::steady::Fold;
-use crate::app::parts::{Choice, Opt, TextField};
+use crate::app::parts::{Choice, MeasureField, Opt, TextField};
 use crate::caution::Stands;
 use crate::observations::{self, Group, Observation};
+use crate::quantity::{DecimalMark, Measure, Typed, Unit};
 use crate::record::Answer;
-use crate::record::limits::TEXT_CHARACTERS;
+use crate::record::limits::{MOST_HOURS, TEXT_CHARACTERS};
 use crate::unit::Paths;
 use std::collections::BTreeMap;
 use yew::{Callback, Html, Properties, component, html};
@@ -18,6 +19,10 @@ use yew::{Callback, Html, Properties, component, html};
 pub struct SeenPanelProps {
     /// Complaint as typed.
     pub complaint: String,
+    /// Hour meter as typed.
+    pub hours: Typed,
+    /// Decimal mark.
+    pub mark: DecimalMark,
     /// Alone on site.
     pub alone: Option<bool>,
     /// Began straight after a repair.
@@ -68,6 +73,20 @@ pub fn SeenPanel(props: &SeenPanelProps) -> Html {
                     if props.alone == Some(true) {
                     { cautions::at(Stands::Alone) }
                 }
+    <div class="seen-hours">
+                        <MeasureField
+                            id="hours"
+                            label="Hour meter"
+                            hint="wear is drawn over the hours"
+                            unit={Unit::Hour}
+                            typed={props.hours.typed.clone()}
+                            value={props.hours.value}
+                            range={Some((Measure::literal(0.0, Unit::Hour), Measure::literal(MOST_HOURS, Unit::Hour)))}
+                            mark={props.mark}
+                            on_entry={props.on_change.reform(Change::Hours)}
+                            testid="hours"
+                        />
+                    </div>
     <div class="seen-groups">
                     { for Group::ALL.into_iter().map(|group| html! {
                         <SeenGroup key={format!("{group:?}")} {group} observations={props.observations.clone()} paths={props.paths} on_change={props.on_change.clone()} />

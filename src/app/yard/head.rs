@@ -8,11 +8,8 @@ use crate::app::parts::{Choice, Entry, MeasureField, Opt, Section, Select};
 use crate::quantity::{Measure, Unit, UnitPrefs};
 use crate::readings::Place;
 use crate::readings::instrument::{Instrument, InstrumentKind};
-use crate::record::Visit;
+use crate::record::{Visit, limits};
 use crate::yard::{ABOUT_COUPLINGS, ABOUT_LIMITS, Leg, YardSheet};
-
-/// Highest hour meter reading taken, h.
-const MOST_HOURS: f64 = 200_000.0;
 
 /// Properties of [`Head`].
 #[derive(Clone, PartialEq, Properties)]
@@ -53,7 +50,7 @@ pub fn Head(props: &HeadProps) -> Html {
         .collect::<Vec<_>>();
     let hours = (
         Measure::literal(0.0, Unit::Hour),
-        Measure::literal(MOST_HOURS, Unit::Hour),
+        Measure::literal(limits::MOST_HOURS, Unit::Hour),
     );
     let gauges = |kinds: &[InstrumentKind]| -> Vec<Opt<String>> {
         let mut options = vec![Opt::new(String::new(), "Not said", "none")];
