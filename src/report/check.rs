@@ -208,7 +208,7 @@ fn facts(check: &Check, sheet: &YardSheet, found: &yard::Report) -> Vec<Fact> {
     if let Some(oil) = sheet.fields.get(&Field::Oil).and_then(|typed| typed.value) {
         say(
             "Oil",
-            format!("{} {}", check.prefs.print(oil), sheet.place.words()),
+            format!("{} at {}", check.prefs.print(oil), sheet.place.words()),
         );
     }
     if let Some(cold) = &found.cold {
@@ -267,7 +267,7 @@ fn checked(found: &yard::Report) -> Vec<String> {
         let figure = if judged.found.is_empty() {
             String::new()
         } else {
-            format!(" {}", judged.found)
+            format!(" {},", judged.found)
         };
         let why = if judged.why.is_empty() {
             String::new()
