@@ -4,7 +4,7 @@ use super::causes::{Finding, Sure};
 use super::text::capital;
 use super::{Fact, Report, Section, csv, moment, name, one_line, section, typed};
 use crate::caution::{self, Stands};
-use crate::quantity::UnitPrefs;
+use crate::quantity::{UnitPrefs, retold};
 use crate::readings::instrument::Instrument;
 use crate::record::{Book, Export, SCHEMA, Settings, Visit, checksum};
 use crate::unit::Unit;
@@ -151,7 +151,7 @@ impl Report {
             groups: Vec::new(),
             causes: Vec::new(),
             sections: sections.into_iter().flatten().collect::<Vec<Section>>(),
-            cautions: cautions(&found),
+            cautions: cautions(check, &found),
             basis: basis(check),
         }
     }
@@ -279,14 +279,16 @@ fn checked(found: &yard::Report) -> Vec<String> {
     judged.collect()
 }
 
-fn cautions(found: &yard::Report) -> Vec<String> {
+fn cautions(check: &Check, found: &yard::Report) -> Vec<String> {
     let mut out = Vec::new();
     if found.verdict == Verdict::DoNotSendOut {
         out.push(String::from(
             "Not to be sent out before what is found has been put right and checked again.",
         ));
     }
-    out.extend(caution::at(Stands::Call).map(|caution| caution.text.to_owned()));
+    out.extend(
+        caution::at(Stands::Call).map(|caution| retold(caution.text, check.prefs).into_owned()),
+    );
     out
 }
 

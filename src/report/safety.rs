@@ -7,6 +7,7 @@ use crate::call::words::{self, Verdict};
 use crate::caution::{self, Stands};
 use crate::faults::{self, Fault};
 use crate::observations::RUNS_ON;
+use crate::quantity::retold;
 use crate::record::{Answer, PutBack};
 
 /// Chance from which a cause that forbids moving the machine is told.
@@ -56,7 +57,8 @@ pub(super) fn cautions(subject: &Subject) -> Vec<String> {
             out.push(words);
         }
     };
-    let stands = |place: Stands| caution::at(place).map(|c| c.text.to_owned());
+    let stands =
+        |place: Stands| caution::at(place).map(|c| retold(c.text, subject.prefs).into_owned());
     let open = put_back::open(visit);
     if open > 0 {
         say(format!(
