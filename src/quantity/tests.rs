@@ -228,7 +228,7 @@ fn every_refusal_says_what_to_do() {
     ] {
         let why = parse(text, Kind::Pressure, Unit::Bar, range()).expect_err(text);
         let words = why.to_string();
-        let says = ["Type ", "Use ", "Look ", "at most"]
+        let says = ["Type ", " type ", "Use ", "Look ", "at most"]
             .iter()
             .any(|verb| words.contains(verb));
         assert!(says, "{text:?}: {words}");
