@@ -50,6 +50,6 @@ impl Reply {
     };
 
     fn is_ready(&self) -> bool {
-        self.seq == 0
+        self.seq == 0 && self.error.is_none()
     }
 }
