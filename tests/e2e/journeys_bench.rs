@@ -1,7 +1,7 @@
 //! The bench on a laptop: layout, a pasted table, what it comes to, into the profile, and out as a file.
 
-use crate::hands::{look, press, type_in};
-use crate::rig::{LAPTOP, Rig};
+use crate::hands::{look, paste, press, type_in};
+use crate::rig::{LAPTOP, PHONE, Rig};
 
 /// A pump of 75 cm³/rev at three speeds and four pressures, as a spreadsheet gives it: tabs, decimal commas, a row of units.
 pub fn table() -> String {
@@ -40,11 +40,7 @@ async fn a_pasted_run_becomes_a_judged_sheet_and_goes_into_the_profile() {
 
     // The table comes first: without a layout no efficiency and no fit.
     press(&rig, "bench-paste-text").await;
-    let fill = "const box = document.querySelector('[data-testid=\"bench-paste-text\"]');
-        Object.getOwnPropertyDescriptor(HTMLTextAreaElement.prototype, 'value').set.call(box, arguments[0]);
-        box.dispatchEvent(new InputEvent('input', { bubbles: true }));
-        return true;";
-    rig.js(fill, vec![table().into()]).await;
+    paste(&rig, "bench-paste-text", table()).await;
     rig.wait_for_text("Take 12 rows").await;
     rig.click("bench-take").await;
     rig.wait_for_text("12 points").await;
@@ -125,6 +121,9 @@ async fn a_pasted_run_becomes_a_judged_sheet_and_goes_into_the_profile() {
     press(&rig, "bench-csv").await;
     let csv = rig.downloaded("bench-").await;
     assert!(csv.contains("Outlet pressure (bar)"), "{csv}");
+    assert!(!rig.scrolls_sideways().await, "one has to scroll sideways");
+    // With the whole table, a phone does not either.
+    rig.set_size(PHONE).await;
     assert!(!rig.scrolls_sideways().await, "one has to scroll sideways");
 
     // The hand-over report carries the sheet.
