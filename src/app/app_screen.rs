@@ -32,6 +32,8 @@ use super::state::{Action, State};
 use super::tracking::TrackingScreen;
 use super::yard::{LearnedScreen, Others, WearScreen, YardScreen};
 use crate::quantity::UnitPrefs;
+use crate::record::Visit;
+use crate::unit::Unit;
 
 /// The state at the start: what is on the shelf, and where the address points.
 fn first_state(keeper: &RefCell<Keeper>) -> State {
@@ -232,17 +234,23 @@ pub fn App() -> Html {
     }
 }
 
-fn yard(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Html> {
+/// A visit, its unit, and the other visits to that.
+fn with_others(state: &Snapshot, id: &str) -> Option<(Rc<Unit>, Rc<Visit>, Others)> {
     let visit = state.visits.get(id)?;
     let unit = state.units.get(&visit.unit)?;
     let mut others = state.visits_of(&visit.unit);
     others.retain(|other| other.id != visit.id);
+    Some((unit.clone(), visit.clone(), Others(others)))
+}
+
+fn yard(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Html> {
+    let (unit, visit, others) = with_others(state, id)?;
     Some(html! {
         <YardScreen
             key={format!("{id}-yard")}
-            unit={unit.clone()}
-            visit={visit.clone()}
-            others={Others(others)}
+            {unit}
+            {visit}
+            {others}
             instruments={state.instruments.clone()}
             prefs={state.settings.units.clone()}
             on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
@@ -251,16 +259,13 @@ fn yard(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Html> {
 }
 
 fn check_report(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Html> {
-    let visit = state.visits.get(id)?;
-    let unit = state.units.get(&visit.unit)?;
-    let mut others = state.visits_of(&visit.unit);
-    others.retain(|other| other.id != visit.id);
+    let (unit, visit, others) = with_others(state, id)?;
     Some(html! {
         <CheckReportScreen
             key={format!("{id}-report")}
-            unit={unit.clone()}
-            visit={visit.clone()}
-            others={Others(others)}
+            {unit}
+            {visit}
+            {others}
             instruments={state.instruments.clone()}
             prefs={state.settings.units.clone()}
             on_say={deed.reform(|words| Deed::Put(Action::Say(words)))}

@@ -4,6 +4,7 @@ use std::rc::Rc;
 
 use super::platform::clock;
 use super::state::{About, Action, Bins, Records, State, Written};
+use crate::assessment::upper_first;
 use crate::record::{Book, IdOf, Visit};
 use crate::store::{
     Foreign, LoadProblem, NotSaved, Quarantined, RecordKey, SaveOutcome, Shelf, Store, StoreError,
@@ -93,7 +94,7 @@ impl Keeper {
                 LoadProblem::Newer { .. } => About::Note,
                 _ => About::Trouble,
             };
-            actions.push(Action::Tell(about, capital(&problem.to_string())));
+            actions.push(Action::Tell(about, upper_first(&problem.to_string())));
         }
         actions.push(self.count());
         actions.push(self.bins());
@@ -188,21 +189,21 @@ impl Keeper {
                     records.units.extend(unit);
                     !records.units.is_empty()
                 }
-                Err(problem) => return trouble(capital(&problem.to_string())),
+                Err(problem) => return trouble(upper_first(&problem.to_string())),
             },
             RecordKey::Visit(id) => match self.shelf.reload_visit(id) {
                 Ok(visit) => {
                     records.visits.extend(visit);
                     !records.visits.is_empty()
                 }
-                Err(problem) => return trouble(capital(&problem.to_string())),
+                Err(problem) => return trouble(upper_first(&problem.to_string())),
             },
             RecordKey::Settings => match self.shelf.reload_settings() {
                 Ok(settings) => {
                     records.settings = settings;
                     records.settings.is_some()
                 }
-                Err(problem) => return trouble(capital(&problem.to_string())),
+                Err(problem) => return trouble(upper_first(&problem.to_string())),
             },
         };
         if found {
@@ -251,7 +252,7 @@ impl Keeper {
                     Err(why) => actions.push(trouble(format!(
                         "{}: not removed. {}",
                         key.words(),
-                        capital(&why.to_string())
+                        upper_first(&why.to_string())
                     ))),
                 }
             }
@@ -285,7 +286,7 @@ impl Keeper {
                 Err(why) => trouble(format!(
                     "{}: not brought back. {}",
                     one.name,
-                    capital(&why.to_string())
+                    upper_first(&why.to_string())
                 )),
             });
         }
@@ -297,7 +298,7 @@ impl Keeper {
     pub fn empty_trash(&mut self) -> Vec<Action> {
         match self.shelf.empty_trash() {
             Ok(_) => vec![self.bins(), self.count()],
-            Err(why) => vec![trouble(capital(&why.to_string())), self.bins()],
+            Err(why) => vec![trouble(upper_first(&why.to_string())), self.bins()],
         }
     }
 
@@ -347,11 +348,4 @@ fn records_of(book: Book) -> Records {
         visits: book.visits.into_values().collect(),
         settings: Some(book.settings),
     }
-}
-
-fn capital(text: &str) -> String {
-    let mut letters = text.chars();
-    letters.next().map_or_else(String::new, |first| {
-        first.to_uppercase().chain(letters).collect()
-    })
 }

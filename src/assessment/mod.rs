@@ -206,6 +206,14 @@ pub fn lower_first(words: &str) -> String {
         .map_or(String::new(), |c| c.to_lowercase().chain(letters).collect())
 }
 
+/// Words as they stand at the head of a sentence.
+pub fn upper_first(words: &str) -> String {
+    let mut letters = words.chars();
+    letters
+        .next()
+        .map_or(String::new(), |c| c.to_uppercase().chain(letters).collect())
+}
+
 /// Two causes at work at the same time: what each of them explains that the other does not.
 #[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
 pub struct Pair {

@@ -222,6 +222,11 @@ fn each<'a>(
     let mut code = 0;
     for visit in &export.visits {
         let unit = export.units.iter().find(|unit| unit.id == visit.unit);
+        // A check without readings has nothing to be ranked.
+        if let Some(unit) = unit.filter(|_| visit.is_yard_check() && visit.readings.is_empty()) {
+            take(unit, visit, Assessment::default())?;
+            continue;
+        }
         let rates = rates(unit, visit, &cases, &learning);
         match (unit, outcome(unit, visit, &export.instruments, rates, true)) {
             (Some(unit), Outcome::Assessed(assessment)) => take(unit, visit, *assessment)?,

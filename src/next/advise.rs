@@ -10,7 +10,7 @@ use crate::checks::{self, Check};
 use crate::faults;
 use crate::math;
 use crate::observations;
-use crate::ranking::{Belief, Heavy, gather_caught};
+use crate::ranking::{Belief, Heavy, gather_visit};
 use crate::readings::instrument::Instrument;
 use crate::record::Visit;
 use crate::unit::Unit;
@@ -42,14 +42,7 @@ pub fn advise(
             ..Advice::default()
         };
     }
-    let data = gather_caught(
-        unit,
-        &visit.readings,
-        &visit.riggings,
-        instruments,
-        &visit.caught,
-        Belief::default(),
-    );
+    let data = gather_visit(unit, visit, instruments, Belief::default());
     let (ids, prior) = causes(assessment);
     let (heavy, weights, of_cause) = weighted(heavy.to_vec(), &ids, &prior);
     let candidates: Vec<&'static Check> = checks::all()

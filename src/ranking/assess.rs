@@ -1,7 +1,7 @@
 //! The whole assessment of a visit: windows, causes, reasons, doubts.
 
 use super::belief::Belief;
-use super::datum::{Data, gather_caught, has_sides, path_of};
+use super::datum::{Data, gather_visit, has_sides, path_of};
 use super::hold::hold_time;
 use super::memo::Memo;
 use super::posterior::{Heavy, Weighed, weigh};
@@ -105,14 +105,7 @@ impl<'a> Prepared<'a> {
             rates: rates.per_hundred.clone(),
             ..Belief::default()
         };
-        let data = gather_caught(
-            unit,
-            &visit.readings,
-            &visit.riggings,
-            instruments,
-            &visit.caught,
-            belief,
-        );
+        let data = gather_visit(unit, visit, instruments, belief);
         let mut latents = unit_latents(unit);
         condition_latents(unit, &data.conditions, &mut latents);
         let mut bench = Bench::with(builds(unit), latents, &data, memo);

@@ -7,6 +7,7 @@ use crate::machine::Warmth;
 use crate::math;
 use crate::readings::instrument::Instrument;
 use crate::readings::{Condition, Doing, JugCatch, Path, Port, Reading, Rigging, Seen};
+use crate::record::Visit;
 use crate::unit::{FigureId, Paths, Unit};
 use std::collections::BTreeMap;
 
@@ -247,8 +248,25 @@ pub fn gather_with(
     )
 }
 
-/// As [`gather_with`], with what was caught in a jug for a flow, by reading id: such a reading is as sure as its litres and seconds.
-pub fn gather_caught(
+/// As [`gather_with`], with all that a visit keeps of its readings: what was caught in a jug for a flow is as sure as its litres and
+/// seconds.
+pub fn gather_visit(
+    unit: &Unit,
+    visit: &Visit,
+    instruments: &[Instrument],
+    belief: Belief,
+) -> Data {
+    gather_caught(
+        unit,
+        &visit.readings,
+        &visit.riggings,
+        instruments,
+        &visit.caught,
+        belief,
+    )
+}
+
+fn gather_caught(
     unit: &Unit,
     readings: &[Reading],
     riggings: &[Rigging],

@@ -30,8 +30,8 @@ pub use accuracy::{Accuracy, accuracy};
 pub use assess::{Session, assess};
 pub use belief::Belief;
 pub use datum::{
-    Data, Datum, Says, gather, gather_caught, gather_with, has_sides, instrument_of, path_of,
-    slope, untransform,
+    Data, Datum, Says, gather, gather_visit, gather_with, has_sides, instrument_of, path_of, slope,
+    untransform,
 };
 pub use evidence::normalised;
 pub use gauss::{Gauss, LN_TWO_PI};

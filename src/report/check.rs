@@ -1,8 +1,8 @@
 //! The paper of a yard check: the verdict with its reasons, everything that was checked, and, as loud, what was not.
 
 use super::causes::{Finding, Sure};
-use super::text::capital;
 use super::{Fact, Report, Section, csv, moment, name, one_line, section, typed};
+use crate::assessment::{lower_first, upper_first};
 use crate::caution::{self, Stands};
 use crate::quantity::{UnitPrefs, retold};
 use crate::readings::instrument::Instrument;
@@ -144,7 +144,7 @@ impl Report {
             title: format!(
                 "Yard check: unit {}, {}",
                 name(check.unit),
-                lower(sheet.leg.words())
+                lower_first(sheet.leg.words())
             ),
             facts: facts(check, &sheet, &found),
             finding: finding(&found),
@@ -155,10 +155,6 @@ impl Report {
             basis: basis(check),
         }
     }
-}
-
-fn lower(words: &str) -> String {
-    crate::assessment::lower_first(words)
 }
 
 fn finding(found: &yard::Report) -> Finding {
@@ -237,7 +233,7 @@ fn instruments(check: &Check, sheet: &YardSheet) -> Vec<String> {
 }
 
 fn reasons(found: &yard::Report) -> Vec<String> {
-    let line = |(grade, why): &(Grade, String)| format!("{}: {why}", capital(grade.words()));
+    let line = |(grade, why): &(Grade, String)| format!("{}: {why}", upper_first(grade.words()));
     found.reasons.iter().map(line).collect()
 }
 

@@ -1,7 +1,7 @@
 //! The report as plain text: short lines that read well in a message, headings in capitals, nothing that needs a fixed pitch.
 
 use super::{Group, Report, Row};
-use crate::assessment::Standing;
+use crate::assessment::{Standing, upper_first};
 use crate::call::words as told;
 use std::fmt::Write as _;
 
@@ -68,7 +68,7 @@ fn readings(out: &mut String, group: &Group) {
     out.push('\n');
     line(out, &format!("READINGS: {}", group.condition));
     // Figures and units stay as they are written.
-    line(out, &capital(&group.oil));
+    line(out, &upper_first(&group.oil));
     for row in &group.rows {
         reading(out, row);
     }
@@ -88,12 +88,12 @@ fn reading(out: &mut String, row: &Row) {
         }
         _ => words.push_str(". No window: nothing can be expected here"),
     }
-    let _ = write!(words, ". {}", capital(&row.instrument));
+    let _ = write!(words, ". {}", upper_first(&row.instrument));
     if !row.before.is_empty() {
         let _ = write!(words, ". Read before: {}", row.before.join(", "));
     }
     for remark in &row.remarks {
-        let _ = write!(words, ". {}", capital(remark));
+        let _ = write!(words, ". {}", upper_first(remark));
     }
     line(out, words.trim_end_matches('.'));
 }
@@ -108,11 +108,4 @@ fn standing(standing: Standing) -> &'static str {
         Standing::CannotTell => "Cannot be judged, ",
         Standing::Open => "Open, ",
     }
-}
-
-pub(super) fn capital(words: &str) -> String {
-    let mut letters = words.chars();
-    letters.next().map_or_else(String::new, |first| {
-        first.to_uppercase().chain(letters).collect()
-    })
 }

@@ -73,3 +73,26 @@ pub async fn tick_all(rig: &Rig) {
         .await;
     }
 }
+
+/// Puts a text into a text area as the clipboard does.
+pub async fn paste(rig: &Rig, testid: &str, text: String) {
+    let fill = "const box = document.querySelector(`[data-testid=\"${arguments[0]}\"]`);
+        Object.getOwnPropertyDescriptor(HTMLTextAreaElement.prototype, 'value').set.call(box, arguments[1]);
+        box.dispatchEvent(new InputEvent('input', { bubbles: true }));
+        return true;";
+    rig.js(fill, vec![testid.into(), text.into()]).await;
+}
+
+/// A call on a new unit.
+pub async fn new_call(rig: &Rig, name: &str) {
+    if rig.has("cautions-read").await {
+        rig.click("cautions-read").await;
+    }
+    if rig.has("new-unit").await {
+        rig.click("new-unit").await;
+    }
+    rig.fill("new-unit-name", name).await;
+    rig.click_text("Roller").await;
+    rig.click("start-call").await;
+    rig.by_id("call-screen").await;
+}

@@ -125,6 +125,7 @@ async fn a_pasted_run_becomes_a_judged_sheet_and_goes_into_the_profile() {
     // With the whole table, a phone does not either.
     rig.set_size(PHONE).await;
     assert!(!rig.scrolls_sideways().await, "one has to scroll sideways");
+    rig.set_size(LAPTOP).await;
 
     // The hand-over report carries the sheet.
     rig.wait_for_text("Saved").await;

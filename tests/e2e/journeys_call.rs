@@ -1,6 +1,6 @@
 //! The road call on a phone: a quick profile, seven readings, the cause; then the server is gone.
 
-use crate::hands::tick_all;
+use crate::hands::{new_call, tick_all};
 use crate::rig::{PHONE, Rig};
 
 async fn type_value(rig: &Rig, number: usize, text: &str) {
@@ -11,16 +11,7 @@ async fn type_value(rig: &Rig, number: usize, text: &str) {
 async fn a_road_call_from_nothing_to_a_cause_and_on_without_a_server() {
     let mut rig = Rig::open(PHONE).await;
     rig.wait_for_offline_copy().await;
-    if rig.has("cautions-read").await {
-        rig.click("cautions-read").await;
-    }
-    if rig.has("new-unit").await {
-        rig.click("new-unit").await;
-    }
-    rig.fill("new-unit-name", "T-41").await;
-    rig.click_text("Roller").await;
-    rig.click("start-call").await;
-    rig.by_id("call-screen").await;
+    new_call(&rig, "T-41").await;
 
     for set in ["charge-neutral", "case", "motor-drain", "charge-drive"] {
         rig.click(&format!("quick-{set}")).await;

@@ -1,19 +1,11 @@
 //! The end of a call: nothing is left open on the machine, what was found is kept, and the next call shows what was read.
 
+use crate::hands::new_call;
 use crate::rig::{PHONE, Rig};
 
 /// A unit and its call, with one charge pressure typed in.
 async fn a_call_with_one_reading(rig: &Rig) {
-    if rig.has("cautions-read").await {
-        rig.click("cautions-read").await;
-    }
-    if rig.has("new-unit").await {
-        rig.click("new-unit").await;
-    }
-    rig.fill("new-unit-name", "T-52").await;
-    rig.click_text("Roller").await;
-    rig.click("start-call").await;
-    rig.by_id("call-screen").await;
+    new_call(rig, "T-52").await;
     rig.click("quick-charge-neutral").await;
     rig.fill("value-0", "21.5").await;
 }

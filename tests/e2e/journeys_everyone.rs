@@ -50,6 +50,15 @@ async fn violations(rig: &Rig, script: &str) -> Vec<String> {
         .collect()
 }
 
+fn none(violations: &[String]) {
+    assert!(
+        violations.is_empty(),
+        "{} violations:\n{}",
+        violations.len(),
+        violations.join("\n")
+    );
+}
+
 /// The page as it stands, at every width and in every theme.
 async fn seen_by_everyone(rig: &Rig, script: &str, what: &str) -> Vec<String> {
     let mut all = Vec::new();
@@ -127,12 +136,7 @@ async fn the_watch_view_and_the_large_keys_shut_nobody_out() {
     all.extend(seen_by_everyone(&rig, &script, "the large keys").await);
     rig.click("pad-unit").await;
     all.extend(seen_by_everyone(&rig, &script, "the large keys, units").await);
-    assert!(
-        all.is_empty(),
-        "{} violations:\n{}",
-        all.len(),
-        all.join("\n")
-    );
+    none(&all);
     rig.close().await;
 }
 
@@ -177,11 +181,6 @@ async fn no_screen_shuts_anybody_out() {
         }
         rig.set_size(PHONE).await;
     }
-    assert!(
-        all.is_empty(),
-        "{} violations:\n{}",
-        all.len(),
-        all.join("\n")
-    );
+    none(&all);
     rig.close().await;
 }

@@ -3,22 +3,8 @@
 
 use serde_json::Value;
 
-use crate::hands::{look, open, press, tick_all};
+use crate::hands::{look, new_call, open, press, tick_all};
 use crate::rig::{PHONE, Rig};
-
-/// A call on a new unit.
-async fn new_call(rig: &Rig) {
-    if rig.has("cautions-read").await {
-        rig.click("cautions-read").await;
-    }
-    if rig.has("new-unit").await {
-        rig.click("new-unit").await;
-    }
-    rig.fill("new-unit-name", "T-41").await;
-    rig.click_text("Roller").await;
-    rig.click("start-call").await;
-    rig.by_id("call-screen").await;
-}
 
 /// Lets the page's clock, on which stopwatches and holds run, jump ahead. Nothing waits.
 async fn skip(rig: &Rig, seconds: u32) {
@@ -38,7 +24,7 @@ async fn focused(rig: &Rig) -> String {
 #[tokio::test]
 async fn a_needle_is_watched_and_written_down_afterwards() {
     let rig = Rig::open(PHONE).await;
-    new_call(&rig).await;
+    new_call(&rig, "T-41").await;
     rig.click("quick-charge-drive").await;
     rig.by_id("reading-row-1").await;
     assert!(!rig.has("watch-0").await, "nothing is ticked yet");
@@ -103,7 +89,7 @@ async fn a_needle_is_watched_and_written_down_afterwards() {
 #[tokio::test]
 async fn a_held_step_ends_by_itself_and_rests_before_the_next() {
     let rig = Rig::open(PHONE).await;
-    new_call(&rig).await;
+    new_call(&rig, "T-41").await;
     rig.click("quick-held-forward").await;
     rig.by_id("reading-row-3").await;
     press(&rig, "alone-pressure-build-up-no").await;
@@ -145,7 +131,7 @@ async fn a_held_step_ends_by_itself_and_rests_before_the_next() {
 #[tokio::test]
 async fn a_jug_gives_a_flow_that_the_report_tells_with_litres_and_seconds() {
     let rig = Rig::open(PHONE).await;
-    new_call(&rig).await;
+    new_call(&rig, "T-41").await;
     rig.click("quick-motor-drain").await;
     rig.by_id("reading-row-0").await;
     tick_all(&rig).await;
@@ -194,7 +180,7 @@ async fn a_jug_gives_a_flow_that_the_report_tells_with_litres_and_seconds() {
 #[tokio::test]
 async fn figures_go_in_with_large_keys_and_every_screen_has_its_way_back() {
     let rig = Rig::open(PHONE).await;
-    new_call(&rig).await;
+    new_call(&rig, "T-41").await;
     rig.click("quick-charge-neutral").await;
     rig.by_id("reading-row-1").await;
     let call = rig.js("return location.hash;", vec![]).await;

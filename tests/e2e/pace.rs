@@ -4,7 +4,7 @@
 
 use serde_json::json;
 
-use crate::hands::{press, tick_all, type_in};
+use crate::hands::{paste, press, tick_all, type_in};
 use crate::journeys_bench::table;
 use crate::rig::{PHONE, Rig};
 
@@ -165,15 +165,6 @@ async fn type_over(rig: &Rig, what: &str, fields: &[&str], settled: &str) {
     let keys = (fields.len() * KEYS.len()) as f64;
     let per_key = (work(rig).await - before) / keys;
     tell(rig, what, "a key", per_key).await;
-}
-
-/// Puts a text into a text area as the clipboard does.
-async fn paste(rig: &Rig, testid: &str, text: String) {
-    let fill = "const box = document.querySelector(`[data-testid=\"${arguments[0]}\"]`);
-        Object.getOwnPropertyDescriptor(HTMLTextAreaElement.prototype, 'value').set.call(box, arguments[1]);
-        box.dispatchEvent(new InputEvent('input', { bubbles: true }));
-        return true;";
-    rig.js(fill, vec![testid.into(), text.into()]).await;
 }
 
 async fn throttle(rig: &Rig, rate: u32) {

@@ -4,6 +4,7 @@ use super::change::Change;
 use super::entry;
 use super::words;
 use crate::app::parts::{Entry, MeasureField, Stopwatch};
+use crate::assessment::upper_first;
 use crate::quantity::{self, Kind, Measure, Typed, Unit, UnitPrefs};
 use crate::readings::jug::{CatchError, LONG_ENOUGH_S, MOST, TIME, VOLUME, rounded};
 use crate::readings::{JugCatch, Reading, Seen};
@@ -159,7 +160,7 @@ fn result(props: &JugPanelProps) -> Html {
         Err(why) => {
             let too_much = matches!(why, CatchError::TooMuch { .. });
             html! { <>
-                <p class="field-error" data-testid={format!("jug-error-{}", props.number)}>{ sentence(&why.to_string()) }</p>
+                <p class="field-error" data-testid={format!("jug-error-{}", props.number)}>{ upper_first(&why.to_string()) }{ "." }</p>
                 if too_much { { over(props) } }
             </> }
         }
@@ -186,13 +187,4 @@ fn over(props: &JugPanelProps) -> Html {
             { format!("Take it as over {}", props.prefs.print(top)) }
         </button>
     }
-}
-
-/// Begins like a sentence and ends like one.
-fn sentence(text: &str) -> String {
-    let mut letters = text.chars();
-    let first = letters
-        .next()
-        .map_or_else(String::new, |first| first.to_uppercase().collect());
-    format!("{first}{}.", letters.as_str())
 }

@@ -3,6 +3,7 @@
 use yew::{Html, Properties, component, html};
 
 use crate::app::parts::{Icon, Shape};
+use crate::assessment::upper_first;
 use crate::yard::{Grade, Report, Verdict};
 
 /// Properties of [`VerdictPanel`].
@@ -61,7 +62,7 @@ pub fn VerdictPanel(props: &VerdictProps) -> Html {
                     { for report.reasons.iter().map(|(grade, why)| html! {
                         <li class={yew::classes!("yard-reason", self::class(*grade))}>
                             <Icon shape={self::shape(*grade)} />
-                            <span><strong>{ format!("{}: ", capital(grade.words())) }</strong>{ why }</span>
+                            <span><strong>{ format!("{}: ", upper_first(grade.words())) }</strong>{ why }</span>
                         </li>
                     }) }
                 </ul>
@@ -80,12 +81,4 @@ pub fn VerdictPanel(props: &VerdictProps) -> Html {
             </details>
         </section>
     }
-}
-
-/// With a capital in front.
-pub fn capital(words: &str) -> String {
-    let mut letters = words.chars();
-    letters
-        .next()
-        .map_or(String::new(), |c| c.to_uppercase().chain(letters).collect())
 }

@@ -95,13 +95,8 @@ fn decided(
     let (unit, ..) = limit.of.asks();
     let decision = decide(figure, &limits).unwrap_or(Decision::CannotTell);
     Judged {
-        words,
-        unit,
-        figure: Some(figure),
-        limits: Some(limits),
-        decision,
-        why: String::new(),
         span,
+        ..Judged::of(words, unit, figure, limits, decision)
     }
 }
 

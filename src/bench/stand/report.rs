@@ -67,6 +67,25 @@ impl Judged {
         }
     }
 
+    /// A figure held against its limits.
+    pub(super) fn of(
+        words: String,
+        unit: Unit,
+        figure: Uncertain,
+        limits: Limits,
+        decision: Decision,
+    ) -> Judged {
+        Judged {
+            words,
+            unit,
+            figure: Some(figure),
+            limits: Some(limits),
+            decision,
+            why: String::new(),
+            span: None,
+        }
+    }
+
     /// Something that nothing on the sheet can decide, and why.
     pub(super) fn open(words: String, unit: Unit, limits: Limits, why: String) -> Judged {
         Judged {
@@ -384,15 +403,8 @@ fn run_judged(run: &Run, accepted: &[Accepted]) -> Vec<Judged> {
         judged.extend(match found {
             None => None,
             Some(Err(why)) => Some(Judged::open(words, unit, limits, why)),
-            Some(Ok(figure)) => decide(figure, &limits).map(|decision| Judged {
-                words,
-                unit,
-                figure: Some(figure),
-                limits: Some(limits),
-                decision,
-                why: String::new(),
-                span: None,
-            }),
+            Some(Ok(figure)) => decide(figure, &limits)
+                .map(|decision| Judged::of(words, unit, figure, limits, decision)),
         });
     };
     let rated = rated_point(sheet, points);
@@ -576,15 +588,10 @@ fn relations(sheet: &BenchSheet) -> Vec<Judged> {
             high: Some(high),
             from: "common practice".to_owned(),
         };
-        judged.extend(decide(figure, &limits).map(|decision| Judged {
-            words: words.to_owned(),
-            unit,
-            figure: Some(figure),
-            limits: Some(limits),
-            decision,
-            why: String::new(),
-            span: None,
-        }));
+        judged.extend(
+            decide(figure, &limits)
+                .map(|decision| Judged::of(words.to_owned(), unit, figure, limits, decision)),
+        );
     };
     // Two readings of one gauge: its own error falls out of their difference, the needle's stays. A quarter of the doubt of one.
     let shared = 0.25;

@@ -4,6 +4,7 @@ use yew::{Html, component, html};
 
 use super::SettingsProps;
 use crate::app::parts::{Choice, Opt, Section, Select};
+use crate::assessment::upper_first;
 use crate::quantity::{DecimalMark, Kind, Unit, UnitPrefs};
 
 /// Kinds that a screen shows.
@@ -51,13 +52,6 @@ fn unit_options(kind: Kind) -> Vec<Opt<Unit>> {
     kind.units()
         .map(|unit| Opt::new(unit, unit.symbol(), unit.code()))
         .collect()
-}
-
-fn capital(text: &str) -> String {
-    let mut letters = text.chars();
-    letters.next().map_or_else(String::new, |first| {
-        first.to_uppercase().chain(letters).collect()
-    })
 }
 
 /// The ready-made choices.
@@ -110,7 +104,7 @@ pub fn Measures(props: &SettingsProps) -> Html {
                             <Select<Unit>
                                 key={kind.name()}
                                 id={format!("unit-of-{}", kind.name().replace(' ', "-"))}
-                                label={capital(kind.name())}
+                                label={upper_first(kind.name())}
                                 options={unit_options(kind)}
                                 value={prefs.unit(kind)}
                                 on_change={props.change(|settings, unit: Unit| choose(&mut settings.units, unit))}
