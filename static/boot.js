@@ -4,6 +4,8 @@
 //   data-js, data-wasm  full addresses of the glue script and the wasm, for starting a worker on the same files:
 //                       new Worker("worker.js?js=<data-js>&wasm=<data-wasm>", { type: "module" })
 //   data-worker         "yes" | "no"   whether this browser has module workers
+//   data-fetching       "yes"   nothing can be drawn before the rest of the app has come
+//   data-whole          "yes"   the whole app is there, not only its first screen
 //   data-offline        "ready" | "failed" | "unsupported"   absent while the offline copy is still being made
 //   data-update         "ready"   a newer version waits | "reload"   it took over from another tab
 // Events on window:
@@ -20,6 +22,7 @@ const glueUrl = new URL(script.dataset.js, document.baseURI).href;
 const wasmUrl = new URL(script.dataset.wasm, document.baseURI).href;
 const STALLED_AFTER_MS = 20_000;
 const DRAWN_WITHIN_MS = 15_000;
+const WHOLE_WITHIN_MS = 60_000;
 const UPDATE_CHECK_EVERY_MS = 3_600_000;
 
 root.dataset.js = glueUrl;
@@ -76,7 +79,12 @@ function drawn() {
       resolve();
     });
     watcher.observe(app, { childList: true });
-    setTimeout(() => reject(new Error("the app was loaded but drew no screen")), DRAWN_WITHIN_MS);
+    const late = () => {
+      // A slow download is no failure: how that ends is told by whoever fetches.
+      if (root.dataset.fetching) setTimeout(late, DRAWN_WITHIN_MS);
+      else reject(new Error("the app was loaded but drew no screen"));
+    };
+    setTimeout(late, DRAWN_WITHIN_MS);
   });
 }
 
@@ -185,7 +193,21 @@ function checkForUpdates(registration) {
   });
 }
 
+/** Resolves when the whole app is there: until then the offline copy would only compete with it for the connection. */
+function whole() {
+  if (root.dataset.whole) return Promise.resolve();
+  return new Promise((resolve) => {
+    const watcher = new MutationObserver(() => {
+      watcher.disconnect();
+      resolve();
+    });
+    watcher.observe(root, { attributeFilter: ["data-whole"] });
+    setTimeout(resolve, WHOLE_WITHIN_MS);
+  });
+}
+
 start()
+  .then(whole)
   .catch((error) => window.lowsideFailed(inWords(error)))
   // After a failed start too: a newer version may be the cure.
   .finally(keepOfflineCopy);

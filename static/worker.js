@@ -1,5 +1,6 @@
 // Runs the app's wasm a second time, in a worker, for the long calculations. Rust's main() sees that there is no window
-// and installs its own message handler. Messages that arrive before that are kept and handed over in order.
+// and fetches the module that answers; that one calls lowsideListens. Messages that arrive before that are kept and handed over
+// in order.
 
 const pending = [];
 const keep = (event) => {
@@ -7,6 +8,18 @@ const keep = (event) => {
   pending.push(event);
 };
 self.addEventListener("message", keep);
+
+self.lowsideListens = () => {
+  self.removeEventListener("message", keep);
+  for (const event of pending.splice(0)) {
+    self.dispatchEvent(new MessageEvent("message", { data: event.data, ports: [...event.ports] }));
+  }
+};
+
+// Thrown outside any promise, so that the page's `onerror` on this worker hears of it.
+self.lowsideFailed = (why) => {
+  setTimeout(() => { throw why instanceof Error ? why : new Error(why); });
+};
 
 async function start() {
   const query = new URL(self.location.href).searchParams;
@@ -18,13 +31,6 @@ async function start() {
   const wasm = own("wasm");
   const glue = await import(own("js"));
   await glue.default({ module_or_path: fetch(wasm, { credentials: "same-origin" }) });
-  self.removeEventListener("message", keep);
-  for (const event of pending.splice(0)) {
-    self.dispatchEvent(new MessageEvent("message", { data: event.data, ports: [...event.ports] }));
-  }
 }
 
-start().catch((error) => {
-  // Thrown outside the promise, so that the page's `onerror` on this worker hears of it.
-  setTimeout(() => { throw error; });
-});
+start().catch(self.lowsideFailed);

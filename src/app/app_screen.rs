@@ -6,8 +6,8 @@ use std::rc::Rc;
 use wasm_bindgen::JsCast;
 use web_sys::StorageEvent;
 use yew::{
-    Callback, ContextProvider, Html, component, html, use_effect_with, use_memo, use_mut_ref,
-    use_reducer,
+    Callback, ContextProvider, Html, Properties, component, html, use_effect_with, use_memo,
+    use_mut_ref, use_reducer,
 };
 
 use super::bench::BenchScreen;
@@ -146,9 +146,31 @@ fn title(state: &State) -> String {
     what.map_or_else(|| "Lowside".to_owned(), |what| format!("{what}: Lowside"))
 }
 
+/// What was asked before the app was there. Taken once.
+#[derive(Clone)]
+struct First(Rc<RefCell<Option<Deed>>>);
+
+impl PartialEq for First {
+    fn eq(&self, other: &Self) -> bool {
+        Rc::ptr_eq(&self.0, &other.0)
+    }
+}
+
+/// Properties of [`App`].
+#[derive(Clone, PartialEq, Properties)]
+struct AppProps {
+    first: First,
+}
+
+/// Draws the app into an element of the page and does what was asked of it first.
+pub fn move_in(root: web_sys::Element, first: Option<Deed>) {
+    let first = First(Rc::new(RefCell::new(first)));
+    yew::Renderer::<App>::with_root_and_props(root, AppProps { first }).render();
+}
+
 /// The app.
 #[component]
-pub fn App() -> Html {
+fn App(props: &AppProps) -> Html {
     let keeper = use_memo((), |()| RefCell::new(Keeper::open()));
     let state = {
         let keeper = keeper.clone();
@@ -160,9 +182,13 @@ pub fn App() -> Html {
     };
     let hands: Rc<Hands> = (*hands).clone();
     {
-        let hands = hands.clone();
+        let (hands, first) = (hands.clone(), props.first.clone());
         use_effect_with((), move |()| {
             let listeners = listen(&hands);
+            let asked = first.0.borrow_mut().take();
+            if let Some(deed) = asked {
+                hands.act(deed);
+            }
             let telling = hands.clone();
             persistence::look(move |keeping| telling.put(Action::Keeping(keeping)));
             if offline::update_waits() {

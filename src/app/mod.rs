@@ -9,8 +9,10 @@ pub mod call;
 pub mod deed;
 pub mod engine;
 mod exchange;
+mod front;
 pub mod hands;
 pub mod keypad;
+mod later;
 pub mod neutral;
 pub mod parts;
 pub mod persist;
@@ -28,7 +30,13 @@ use wasm_bindgen::{JsCast, JsValue};
 /// Starts the app on the page. In a worker, where there is no page, starts answering calculations.
 pub fn start() {
     let Some(window) = web_sys::window() else {
-        engine::worker::install();
+        yew::platform::spawn_local(async {
+            match later::engine().await {
+                Ok(answer) => answer(),
+                // The page hears of it and calculates by itself.
+                Err(why) => fail(&format!("The engine could not be fetched: {why}")),
+            }
+        });
         return;
     };
     let root = window
@@ -37,20 +45,29 @@ pub fn start() {
     match root {
         Some(root) => {
             yew::set_custom_panic_hook(Box::new(|info| fail(&info.to_string())));
-            yew::Renderer::<app_screen::App>::with_root(root).render();
+            if front::is_first_visit(&window) {
+                front::show(root);
+            } else {
+                front::straight_in(root);
+            }
         }
         None => fail("The page has no place for the app."),
     }
 }
 
-/// Shows the failure screen, which works without any of this.
+/// Shows the failure screen, which works without any of this; in a worker, ends it with this error.
 fn fail(message: &str) {
     web_sys::console::error_1(&JsValue::from_str(message));
-    let shown = js_sys::Reflect::get(&js_sys::global(), &JsValue::from_str("lowsideFailed"))
+    call_script("lowsideFailed", message);
+}
+
+/// Calls a function of the start-up scripts, where there is one.
+fn call_script(name: &str, word: &str) {
+    let found = js_sys::Reflect::get(&js_sys::global(), &JsValue::from_str(name))
         .ok()
-        .and_then(|shown| shown.dyn_into::<js_sys::Function>().ok());
-    if let Some(show) = shown
-        && let Err(error) = show.call1(&JsValue::NULL, &JsValue::from_str(message))
+        .and_then(|found| found.dyn_into::<js_sys::Function>().ok());
+    if let Some(function) = found
+        && let Err(error) = function.call1(&JsValue::NULL, &JsValue::from_str(word))
     {
         web_sys::console::error_1(&error);
     }

@@ -40,11 +40,18 @@ mod precache {
     /// File contents by address relative to the app's folder, sorted, so that equal builds give equal service workers.
     type Files = BTreeMap<String, Vec<u8>>;
 
-    /// Puts the version into the page, writes the service worker, and says in one line what was done.
+    /// How the script that fetches the app's modules names the app's own, before Trunk gave that its name.
+    const GLUE_UNNAMED: &str = "\"./lowside.js\"";
+    /// Where that script lies: in a folder of its own below this.
+    const PARTS: &str = "snippets/later-";
+    const LINK: &str = "/link.js";
+
+    /// Joins the modules, puts the version into the page, writes the service worker, and says in one line what was done.
     pub fn run(dir: &Path) -> Result<String, Box<dyn Error>> {
         let mut files = Files::new();
         collect(dir, "", &mut files)?;
         files.remove(SERVICE_WORKER);
+        join(dir, &mut files)?;
 
         let version = version_of(&files);
         let page = files
@@ -60,6 +67,34 @@ mod precache {
             "{SERVICE_WORKER}: version {version}, {} files",
             files.len()
         ))
+    }
+
+    /// Lets the script that fetches the modules find the app's own under the name that Trunk gave it: both must mean the same
+    /// running module. A build in one module has no such script.
+    fn join(dir: &Path, files: &mut Files) -> Result<(), Box<dyn Error>> {
+        let is_glue = |name: &&String| name.starts_with("lowside-") && name.ends_with(".js");
+        let glue: Vec<String> = files.keys().filter(is_glue).cloned().collect();
+        for (address, content) in files.iter_mut() {
+            if !address.starts_with(PARTS) || !address.ends_with(LINK) {
+                continue;
+            }
+            let [glue] = glue.as_slice() else {
+                return Err(format!(
+                    "{address} needs one lowside-….js beside it, not {}",
+                    glue.len()
+                )
+                .into());
+            };
+            let text = String::from_utf8(std::mem::take(content))?;
+            if !text.contains(GLUE_UNNAMED) {
+                return Err(format!("{address} does not import {GLUE_UNNAMED}").into());
+            }
+            *content = text
+                .replace(GLUE_UNNAMED, &format!("\"../../{glue}\""))
+                .into_bytes();
+            fs::write(dir.join(address.as_str()), content)?;
+        }
+        Ok(())
     }
 
     fn collect(dir: &Path, prefix: &str, files: &mut Files) -> Result<(), Box<dyn Error>> {

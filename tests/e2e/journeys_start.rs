@@ -4,6 +4,7 @@ use std::fs;
 
 use serde_json::{Value, json};
 
+use crate::hands::look;
 use crate::rig::{NARROW, PHONE, Rig};
 
 #[tokio::test]
@@ -102,6 +103,48 @@ async fn a_stopped_app_keeps_what_was_typed() {
     rig.close().await;
 }
 
+/// On a first visit the first screen stands before the rest of the app has come. Where that breaks off, what was typed stays, and
+/// pressing again goes on.
+#[tokio::test]
+async fn a_first_screen_waits_for_the_rest_of_the_app() {
+    let rig = Rig::new(PHONE).await;
+    let house = rig.site.file_below("snippets", "split_house.wasm");
+    rig.site.break_off(&house);
+    rig.load().await;
+    rig.by_id("front-screen").await;
+    rig.fill("new-unit-name", "T-99").await;
+    rig.click_text("Roller").await;
+    rig.click("start-call").await;
+    rig.by_id("front-trouble").await;
+    let name = "return document.querySelector('[data-testid=\"new-unit-name\"]').value;";
+    assert_eq!(rig.js(name, vec![]).await, "T-99");
+    look(&rig, "front-trouble", PHONE).await;
+
+    rig.site.mend();
+    rig.click("start-call").await;
+    rig.by_id("call-screen").await;
+    assert!(rig.page_text().await.contains("T-99"));
+    rig.wait_for_app().await;
+}
+
+/// Nothing but the first screen's own files is needed for it.
+#[tokio::test]
+async fn what_is_typed_on_the_first_screen_goes_along_into_the_app() {
+    let rig = Rig::new(PHONE).await;
+    let house = rig.site.file_below("snippets", "split_house.wasm");
+    rig.site.break_off(&house);
+    rig.load().await;
+    rig.fill("new-unit-name", "T-98").await;
+    rig.site.mend();
+    // Another screen is asked for by its address; coming back, the name still stands.
+    rig.go("/settings").await;
+    rig.by_id("settings-screen").await;
+    rig.go("/units").await;
+    rig.by_id("units-screen").await;
+    let name = "return document.querySelector('[data-testid=\"new-unit-name\"]').value;";
+    assert_eq!(rig.js(name, vec![]).await, "T-98");
+}
+
 /// Messages sent before the worker is up are neither lost nor put out of order.
 #[tokio::test]
 async fn the_worker_keeps_early_messages() {
@@ -109,6 +152,7 @@ async fn the_worker_keeps_early_messages() {
     let glue = "export default async function () {
         await (await fetch(self.location.href)).text();
         self.onmessage = (event) => self.postMessage(event.data * 10);
+        self.lowsideListens();
     }";
     fs::write(rig.site.dir().join("try.js"), glue).expect("writable");
     let answers = rig

@@ -142,7 +142,7 @@ impl Rig {
     pub async fn wait_for_app(&self) {
         self.wait_until(
             "the app is there",
-            "window.lowsideStarted === true && !document.getElementById('shell')",
+            "window.lowsideStarted === true && !document.getElementById('shell') && document.documentElement.dataset.whole === 'yes'",
         )
         .await;
     }

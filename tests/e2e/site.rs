@@ -108,6 +108,17 @@ impl Site {
         names.filter(|name| name.ends_with(end)).collect()
     }
 
+    /// Address of the one file of this name somewhere below a folder of the build.
+    pub fn file_below(&self, folder: &str, name: &str) -> String {
+        let folders = fs::read_dir(self.dir.join(folder)).expect("readable");
+        let found = folders
+            .map(|entry| entry.expect("readable").path().join(name))
+            .find(|file| file.is_file())
+            .unwrap_or_else(|| panic!("no {name} below {folder}"));
+        let address = found.strip_prefix(&self.dir).expect("is below");
+        address.to_string_lossy().into_owned()
+    }
+
     /// Puts the next version on the server: another description of the page, everything else as it was.
     pub fn publish_new_version(&self) {
         let page = self.dir.join("index.html");

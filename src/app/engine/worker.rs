@@ -140,6 +140,7 @@ pub fn install() {
     }
     // It listens as long as the worker lives.
     on_message.forget();
+    crate::app::call_script("lowsideListens", "");
     post(&scope, &Reply::READY);
 }
 

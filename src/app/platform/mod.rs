@@ -6,6 +6,7 @@ pub mod files;
 pub mod focus;
 pub mod ids;
 pub mod listen;
+pub mod media;
 pub mod offline;
 pub mod persistence;
 pub mod share;

@@ -9,6 +9,7 @@ use super::side::Sides;
 use super::steady::Answer;
 use super::words::{self, Verdict};
 use crate::app::parts::{Caution, Grade};
+use crate::app::platform::media::use_media;
 use crate::assessment::{Assessment, Cause};
 use crate::faults::FaultId;
 use crate::quantity::UnitPrefs;
@@ -16,6 +17,8 @@ use crate::readings::Reading;
 use row::CauseRow;
 use yew::{Callback, Html, MouseEvent, Properties, component, html, use_state};
 
+/// From this width on the list stands beside the readings (`call.css`).
+const BESIDE: &str = "(min-width: 47.5rem)";
 /// Causes named in the strip.
 const IN_STRIP: usize = 3;
 /// Causes listed before "show all".
@@ -42,6 +45,8 @@ pub struct CausesProps {
 #[component]
 pub fn Causes(props: &CausesProps) -> Html {
     let open = use_state(|| false);
+    // On a phone the list lies behind the strip: it is made when it is opened, not at every answer.
+    let is_beside = use_media(BESIDE);
     let on_toggle = {
         let open = open.clone();
         Callback::from(move |_: MouseEvent| open.set(!*open))
@@ -81,6 +86,7 @@ pub fn Causes(props: &CausesProps) -> Html {
             </div>
             <div class={if props.updating { "causes-list is-updating" } else { "causes-list" }} id="causes-list">
                 { match &props.assessment {
+                    _ if !*open && !is_beside => Html::default(),
                     Some(assessment) => html! {
                         <List
                             assessment={assessment.clone()}

@@ -3,6 +3,7 @@
 use super::EntryProps;
 use crate::app::call::change::Change;
 use crate::app::parts::{Choice, Opt, Select, TextField};
+use crate::assessment::Assessment;
 use crate::call::closing::cause;
 use crate::faults::{self, FaultId};
 use crate::record::limits::TEXT_CHARACTERS;
@@ -22,24 +23,30 @@ fn code(id: FaultId) -> String {
 
 pub use crate::call::closing::words;
 
-/// Causes to choose from: those that lead now, then all others by name.
+/// The causes that lead now, by name: while the same ones lead, whatever their order, the list to choose from stays as it is and is
+/// not drawn anew at every answer.
+pub fn leading(assessment: Option<&Assessment>) -> Vec<FaultId> {
+    let causes = assessment.map(|assessment| assessment.causes.iter().take(LEADING));
+    let mut ids: Vec<FaultId> = causes
+        .into_iter()
+        .flatten()
+        .flat_map(|cause| cause.ids.clone())
+        .collect();
+    sort_by_title(&mut ids);
+    ids.dedup();
+    ids
+}
+
+fn sort_by_title(ids: &mut [FaultId]) {
+    ids.sort_by_key(|id| faults::find(*id).map_or("", |fault| fault.title));
+}
+
+/// Causes to choose from: those that lead now, then all others, both by name.
 fn options(none: &'static str, props: &EntryProps, but: &str) -> Vec<Opt<String>> {
-    let mut ids: Vec<FaultId> = Vec::new();
-    let leading = props
-        .assessment
-        .as_deref()
-        .map(|a| a.causes.iter().take(LEADING));
-    ids.extend(
-        leading
-            .into_iter()
-            .flatten()
-            .flat_map(|cause| cause.ids.clone()),
-    );
     let mut rest: Vec<FaultId> = FaultId::ALL.to_vec();
-    rest.sort_by_key(|id| faults::find(*id).map_or("", |fault| fault.title));
-    ids.extend(rest);
+    sort_by_title(&mut rest);
     let mut options = vec![Opt::new(String::new(), none, "none")];
-    for id in ids {
+    for id in props.leading.iter().copied().chain(rest) {
         let Some(fault) = faults::find(id) else {
             continue;
         };

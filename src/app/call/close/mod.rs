@@ -9,6 +9,7 @@ use super::side::Sides;
 use super::steady::Answer;
 use crate::app::parts::{Caution, Grade, TextField};
 use crate::app::platform::clock;
+use crate::faults::FaultId;
 use crate::record::limits::TEXT_CHARACTERS;
 use crate::record::{Closing, PutBack, Visit};
 use std::rc::Rc;
@@ -44,7 +45,7 @@ pub fn ClosePanel(props: &ClosePanelProps) -> Html {
                     <Entry
                         {open}
                         closing={visit.closing.clone().unwrap_or_default()}
-                        assessment={props.assessment.clone()}
+                        leading={found::leading(props.assessment.as_deref())}
                         on_change={props.on_change.clone()}
                     />
                 </> },
@@ -60,8 +61,8 @@ struct EntryProps {
     open: usize,
     /// What is entered so far.
     closing: Closing,
-    /// Last answer of the engine.
-    assessment: Option<Answer>,
+    /// The causes that lead now.
+    leading: Vec<FaultId>,
     /// An edit.
     on_change: Callback<Change>,
 }

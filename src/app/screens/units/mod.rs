@@ -1,19 +1,21 @@
 //! The first screen: the units of the yard, and the way to a call.
 
 mod card;
+mod first_steps;
 mod new_unit;
 mod welcome;
 
 pub use self::card::{closing_words, standing_words, yard_words};
+pub use self::first_steps::FirstSteps;
 pub use self::new_unit::class_options;
 
 use yew::{AttrValue, Callback, Html, MouseEvent, Properties, component, html, use_state};
 
 use self::card::UnitCard;
+use self::first_steps::read_a_tag;
 use self::new_unit::NewUnit;
 use self::welcome::{Demo, Welcome};
 use super::settings::data::Data;
-use super::settings::measures::Presets;
 use crate::app::deed::{Deed, Snapshot};
 use crate::app::parts::{Choice, Icon, Opt, Shape, TextField};
 use crate::app::route::Route;
@@ -32,12 +34,6 @@ pub struct UnitsProps {
     pub state: Snapshot,
     /// Wishes.
     pub deed: Callback<Deed>,
-}
-
-fn read_a_tag() -> Html {
-    html! {
-        <a class="button is-quiet" href={Route::Tag(String::new()).href()} data-testid="to-read-tag">{ "Read a tag" }</a>
-    }
 }
 
 /// The screen.
@@ -96,20 +92,12 @@ pub fn Units(props: &UnitsProps) -> Html {
                     </button>
                 }
             </div>
-            <Welcome state={state.clone()} deed={props.deed.clone()} />
             if is_empty {
-                <div class="columns is-side">
-                    <NewUnit is_first={true} deed={props.deed.clone()} on_close={None::<Callback<()>>} />
-                    <div class="stack">
-                        <Demo state={state.clone()} deed={props.deed.clone()} />
-                        <section class="panel" aria-label="Units of measure">
-                            <Presets state={state.clone()} deed={props.deed.clone()} />
-                        </section>
-                        <div class="actions">{ read_a_tag() }</div>
-                        <Data state={state.clone()} deed={props.deed.clone()} is_folded={true} />
-                    </div>
-                </div>
+                <FirstSteps state={state.clone()} deed={props.deed.clone()}>
+                    <Data state={state.clone()} deed={props.deed.clone()} is_folded={true} />
+                </FirstSteps>
             } else {
+                <Welcome state={state.clone()} deed={props.deed.clone()} />
                 if *adding {
                     <NewUnit is_first={false} deed={props.deed.clone()} on_close={Some(on_close)} />
                 }

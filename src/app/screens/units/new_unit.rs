@@ -1,5 +1,7 @@
 //! A new unit: a name and a class, and the call can begin.
 
+use std::cell::RefCell;
+
 use yew::{AttrValue, Callback, Html, MouseEvent, Properties, SubmitEvent};
 use yew::{component, html, use_state};
 
@@ -27,11 +29,16 @@ pub fn class_options() -> Vec<Opt<MachineClass>> {
         .collect()
 }
 
+thread_local! {
+    /// What was typed and chosen, until it is a unit or put away: the form may go from the screen in between.
+    static DRAFT: RefCell<(String, Option<MachineClass>)> = const { RefCell::new((String::new(), None)) };
+}
+
 /// The form.
 #[component]
 pub fn NewUnit(props: &NewUnitProps) -> Html {
-    let name = use_state(String::new);
-    let class = use_state(|| None::<MachineClass>);
+    let name = use_state(|| DRAFT.with_borrow(|draft| draft.0.clone()));
+    let class = use_state(|| DRAFT.with_borrow(|draft| draft.1));
     let asked_too_soon = use_state(|| false);
 
     let make = {
@@ -42,6 +49,7 @@ pub fn NewUnit(props: &NewUnitProps) -> Html {
                 asked_too_soon.set(true);
                 return;
             };
+            DRAFT.take();
             deed.emit(Deed::NewUnit {
                 name: (*name).clone(),
                 class,
@@ -62,16 +70,22 @@ pub fn NewUnit(props: &NewUnitProps) -> Html {
     let on_profile = Callback::from(move |_: MouseEvent| make(false));
     let on_name = {
         let name = name.clone();
-        Callback::from(move |text: String| name.set(text))
+        Callback::from(move |text: String| {
+            DRAFT.with_borrow_mut(|draft| draft.0.clone_from(&text));
+            name.set(text);
+        })
     };
     let on_class = {
         let class = class.clone();
-        Callback::from(move |chosen: MachineClass| class.set(Some(chosen)))
+        Callback::from(move |chosen: MachineClass| {
+            DRAFT.with_borrow_mut(|draft| draft.1 = Some(chosen));
+            class.set(Some(chosen));
+        })
     };
     let close = props
         .on_close
         .clone()
-        .map(|on_close| on_close.reform(|_: MouseEvent| ()));
+        .map(|on_close| on_close.reform(|_: MouseEvent| drop(DRAFT.take())));
     html! {
         <form class="panel new-unit" onsubmit={on_submit} aria-labelledby="new-unit-title" data-testid="new-unit-form">
             <div class="stack is-tight">

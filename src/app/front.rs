@@ -1,0 +1,190 @@
+//! The first screen of a first visit, drawn from what little has come by then, while the house is still on its way. It does nothing
+//! by itself: what is asked of it is handed to the house, and what was typed stays for it.
+//!
+//! Whoever has been here before comes straight into the house: their device has all of it.
+
+use std::cell::{Cell, RefCell};
+use std::rc::Rc;
+
+use web_sys::{Element, Window};
+use yew::{AppHandle, Callback, Html, Properties, component, html, use_effect_with, use_state};
+
+use super::deed::{Deed, Snapshot};
+use super::later;
+use super::parts::{Caution, Grade};
+use super::platform::listen::Listener;
+use super::route::Route;
+use super::screens::units::FirstSteps;
+use super::shell::Bar;
+use super::state::State;
+use crate::store::PREFIX;
+
+/// Set on the page while nothing can be drawn before the house has come.
+const FETCHING: &str = "data-fetching";
+/// Set on the page when the house stands: from then on nothing is fetched for it any more.
+const WHOLE: &str = "data-whole";
+
+fn page() -> Option<Element> {
+    web_sys::window()?.document()?.document_element()
+}
+
+fn mark(name: &str) {
+    if let Some(page) = page()
+        && let Err(error) = page.set_attribute(name, "yes")
+    {
+        web_sys::console::warn_1(&error);
+    }
+}
+
+/// True where nothing of ours is stored and the address asks for no other screen. A storage that cannot be read is the house's to tell.
+pub fn is_first_visit(window: &Window) -> bool {
+    let hash = window.location().hash().unwrap_or_default();
+    let Ok(Some(storage)) = window.local_storage() else {
+        return false;
+    };
+    let count = storage.length().unwrap_or(0);
+    let mut keys = (0..count).filter_map(|index| storage.key(index).ok().flatten());
+    Route::read(&hash) == Route::Units && !keys.any(|key| key.starts_with(PREFIX))
+}
+
+/// Fetches the house and moves in.
+pub fn straight_in(root: Element) {
+    mark(FETCHING);
+    yew::platform::spawn_local(async move {
+        match later::house().await {
+            Ok(move_in) => enter(move_in, root, None),
+            Err(why) => super::fail(&format!("A part of the app could not be fetched: {why}")),
+        }
+    });
+}
+
+fn enter(move_in: later::MoveIn, root: Element, deed: Option<Deed>) {
+    move_in(root, deed);
+    if let Some(page) = page()
+        && let Err(error) = page.remove_attribute(FETCHING)
+    {
+        web_sys::console::warn_1(&error);
+    }
+    mark(WHOLE);
+}
+
+/// The front, and what is needed to leave it.
+struct Standing {
+    root: Element,
+    handle: RefCell<Option<AppHandle<Front>>>,
+    /// Somebody has touched or typed something: from then on it goes only when it is asked for something.
+    is_touched: Cell<bool>,
+    listeners: RefCell<Vec<Option<Listener>>>,
+}
+
+impl Standing {
+    /// Leaves the front for the house; a front that is gone already stays gone.
+    fn leave(&self, move_in: later::MoveIn, deed: Option<Deed>) {
+        let Some(handle) = self.handle.borrow_mut().take() else {
+            return;
+        };
+        drop(self.listeners.take());
+        handle.destroy();
+        enter(move_in, self.root.clone(), deed);
+    }
+}
+
+/// A handle on the front as a property.
+#[derive(Clone)]
+struct Door(Rc<Standing>);
+
+impl PartialEq for Door {
+    fn eq(&self, other: &Self) -> bool {
+        Rc::ptr_eq(&self.0, &other.0)
+    }
+}
+
+/// Shows the front, fetches the house, and moves in when nobody is disturbed by it.
+pub fn show(root: Element) {
+    let standing = Rc::new(Standing {
+        root: root.clone(),
+        handle: RefCell::default(),
+        is_touched: Cell::new(false),
+        listeners: RefCell::default(),
+    });
+    let door = Door(standing.clone());
+    let handle = yew::Renderer::<Front>::with_root_and_props(root, FrontProps { door }).render();
+    *standing.handle.borrow_mut() = Some(handle);
+    let touched = |name| {
+        let standing = standing.clone();
+        Listener::at_document(name, move |_| standing.is_touched.set(true))
+    };
+    let asked = standing.clone();
+    let elsewhere = Listener::at_window("hashchange", move |_| ask(&asked, None, |_| ()));
+    *standing.listeners.borrow_mut() = vec![touched("pointerdown"), touched("keydown"), elsewhere];
+    yew::platform::spawn_local(async move {
+        // Where it cannot be fetched now, it is tried again when something is asked.
+        if let Ok(move_in) = later::house().await
+            && !standing.is_touched.get()
+        {
+            standing.leave(move_in, None);
+        }
+    });
+}
+
+/// Goes in with what was asked; tells where that cannot be.
+fn ask(standing: &Rc<Standing>, deed: Option<Deed>, tell: impl FnOnce(String) + 'static) {
+    let standing = standing.clone();
+    yew::platform::spawn_local(async move {
+        match later::house().await {
+            Ok(move_in) => standing.leave(move_in, deed),
+            Err(why) => tell(why.to_string()),
+        }
+    });
+}
+
+/// Properties of [`Front`].
+#[derive(Clone, PartialEq, Properties)]
+struct FrontProps {
+    door: Door,
+}
+
+/// The first screen, of an empty yard.
+#[component]
+fn Front(props: &FrontProps) -> Html {
+    let trouble = use_state(|| None::<String>);
+    let waits = use_state(|| false);
+    let state = use_state(|| Snapshot(Rc::new(State::default())));
+    let deed = {
+        let (door, trouble, waits) = (props.door.clone(), trouble.clone(), waits.clone());
+        Callback::from(move |deed: Deed| {
+            let (failed, done) = (trouble.clone(), waits.clone());
+            waits.set(true);
+            ask(&door.0, Some(deed), move |why| {
+                done.set(false);
+                failed.set(Some(why));
+            });
+        })
+    };
+    use_effect_with((), |()| super::platform::theme::show(Default::default()));
+    html! {
+        <>
+            <Bar state={(*state).clone()} />
+            if let Some(why) = &*trouble {
+                <div class="notices">
+                    <Caution grade={Grade::Caution} title="not all of the app is here yet" role="alert" testid="front-trouble">
+                        <p>{ "The rest of the app could not be fetched. What you typed is kept: find a connection and press again." }</p>
+                        <p class="small">{ why }</p>
+                    </Caution>
+                </div>
+            }
+            <p class="hidden-text" role="status" aria-live="polite">
+                { if *waits { "Fetching the rest of the app…" } else { "" } }
+            </p>
+            <main class="page" id="main" data-testid="front-screen" aria-busy={waits.to_string()}>
+                <div class="page-head"><h1 id="title" tabindex="-1">{ "Units" }</h1></div>
+                <FirstSteps state={(*state).clone()} {deed}>
+                    <details class="fold panel">
+                        <summary>{ "Your data, as a file" }</summary>
+                        <p>{ "The rest of the app is still being fetched." }</p>
+                    </details>
+                </FirstSteps>
+            </main>
+        </>
+    }
+}

@@ -1,0 +1,69 @@
+//! What is fetched after the first screen stands: the house with everything that reads, writes and draws, and the engine for the
+//! worker. The build cuts the app at these functions (feature `split`) and puts what only they reach into modules of their own;
+//! without the feature everything is one module and they answer at once.
+
+use super::deed::Deed;
+use web_sys::Element;
+
+/// Moves the whole app into an element of the page, with the first thing that is asked of it.
+pub type MoveIn = fn(Element, Option<Deed>);
+
+/// Answers calculations from now on, in a worker.
+pub type Answering = fn();
+
+#[cfg(feature = "split")]
+pub use wasm_split_helpers::SplitLoaderError as Unreachable;
+
+/// Why a module is not there: cannot happen where all is one.
+#[cfg(not(feature = "split"))]
+#[derive(Debug)]
+pub enum Unreachable {}
+
+#[cfg(not(feature = "split"))]
+impl core::fmt::Display for Unreachable {
+    fn fmt(&self, _: &mut core::fmt::Formatter<'_>) -> core::fmt::Result {
+        match *self {}
+    }
+}
+
+/// A function that is known by its address once its module is there.
+macro_rules! fetched {
+    ($(#[$doc:meta])* $module:ident, $of:ty, $what:expr) => {
+        $(#[$doc])*
+        #[cfg(feature = "split")]
+        #[wasm_split_helpers::wasm_split($module, fallible)]
+        pub fn $module() -> Result<$of, Unreachable> {
+            Ok($what)
+        }
+
+        $(#[$doc])*
+        #[cfg(not(feature = "split"))]
+        pub async fn $module() -> Result<$of, Unreachable> {
+            Ok($what)
+        }
+    };
+}
+
+// What the cut leaves in the source are imports and exports, and declaring those counts as unsafe.
+#[allow(unsafe_code)]
+mod cut {
+    use super::{Answering, MoveIn, Unreachable};
+
+    fetched! {
+        /// The whole app.
+        ///
+        /// # Errors
+        /// The module could not be fetched. It is tried again at the next call.
+        house, MoveIn, crate::app::app_screen::move_in
+    }
+
+    fetched! {
+        /// The engine's side in a worker.
+        ///
+        /// # Errors
+        /// As [`house`].
+        engine, Answering, crate::app::engine::worker::install
+    }
+}
+
+pub use cut::{engine, house};
