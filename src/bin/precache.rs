@@ -85,13 +85,12 @@ mod precache {
                 )
                 .into());
             };
-            let text = String::from_utf8(std::mem::take(content))?;
-            if !text.contains(GLUE_UNNAMED) {
-                return Err(format!("{address} does not import {GLUE_UNNAMED}").into());
+            let named = format!("\"../../{glue}\"");
+            let text = String::from_utf8(std::mem::take(content))?.replace(GLUE_UNNAMED, &named);
+            if !text.contains(&named) {
+                return Err(format!("{address} imports neither {GLUE_UNNAMED} nor {named}").into());
             }
-            *content = text
-                .replace(GLUE_UNNAMED, &format!("\"../../{glue}\""))
-                .into_bytes();
+            *content = text.into_bytes();
             fs::write(dir.join(address.as_str()), content)?;
         }
         Ok(())
@@ -222,6 +221,44 @@ mod precache {
             assert_eq!(one, same);
             assert_ne!(one, content);
             assert_ne!(one, name);
+        }
+
+        const LINK_FILE: &str = "snippets/later-1/link.js";
+
+        #[test]
+        fn the_modules_find_the_glue_under_its_new_name_also_the_second_time() {
+            let unnamed = "import { initSync } from \"./lowside.js\";";
+            let dir = build(
+                "join",
+                &[
+                    (PAGE, PAGE_TEXT),
+                    ("lowside-2f.js", "x"),
+                    (LINK_FILE, unnamed),
+                ],
+            );
+            let first = written(&dir);
+            let link = fs::read_to_string(dir.0.join(LINK_FILE)).expect("is there");
+            assert_eq!(link, "import { initSync } from \"../../lowside-2f.js\";");
+            assert!(
+                first.contains(&hex(&Sha256::digest(&link))),
+                "listed as it is served"
+            );
+            fs::write(dir.0.join(PAGE), PAGE_TEXT).expect("writable");
+            assert_eq!(written(&dir), first);
+        }
+
+        #[test]
+        fn modules_without_their_glue_are_refused() {
+            let foreign = "import { initSync } from \"./other.js\";";
+            let none = run(&build("lost", &[(PAGE, PAGE_TEXT), (LINK_FILE, foreign)]).0);
+            assert!(none.expect_err("no glue").to_string().contains(LINK_FILE));
+            let files = [
+                (PAGE, PAGE_TEXT),
+                ("lowside-2f.js", "x"),
+                (LINK_FILE, foreign),
+            ];
+            let other = run(&build("foreign", &files).0).expect_err("imports something else");
+            assert!(other.to_string().contains("lowside-2f.js"));
         }
 
         #[test]
