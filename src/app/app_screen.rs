@@ -10,30 +10,22 @@ use yew::{
     use_mut_ref, use_reducer,
 };
 
-use super::bench::BenchScreen;
 use super::call::{CallScreen, EarlierCalls};
 use super::deed::{Deed, Snapshot};
 use super::engine::client::Engine;
 use super::hands::Hands;
 use super::keypad::Keypad;
-use super::neutral::NeutralScreen;
 use super::parts::{Icon, OwnKeys, Shape};
 use super::persist::Keeper;
 use super::platform::listen::Listener;
 use super::platform::{focus, offline, persistence, theme};
+use super::room::Room;
 use super::route::Route;
-use super::screens::report::{CheckReportScreen, ReportScreen};
-use super::screens::settings::SettingsScreen;
-use super::screens::tag::{TagReader, TagSheet};
 use super::screens::unit::Profile;
 use super::screens::units::Units;
 use super::shell::{Bar, Notices};
 use super::state::{Action, State};
-use super::tracking::TrackingScreen;
-use super::yard::{LearnedScreen, Others, WearScreen, YardScreen};
 use crate::quantity::UnitPrefs;
-use crate::record::Visit;
-use crate::unit::Unit;
 
 /// The state at the start: what is on the shelf, and where the address points.
 fn first_state(keeper: &RefCell<Keeper>) -> State {
@@ -260,88 +252,33 @@ fn App(props: &AppProps) -> Html {
     }
 }
 
-/// A visit, its unit, and the other visits to that.
-fn with_others(state: &Snapshot, id: &str) -> Option<(Rc<Unit>, Rc<Visit>, Others)> {
-    let visit = state.visits.get(id)?;
-    let unit = state.units.get(&visit.unit)?;
-    let mut others = state.visits_of(&visit.unit);
-    others.retain(|other| other.id != visit.id);
-    Some((unit.clone(), visit.clone(), Others(others)))
-}
-
-fn yard(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Html> {
-    let (unit, visit, others) = with_others(state, id)?;
-    Some(html! {
-        <YardScreen
-            key={format!("{id}-yard")}
-            {unit}
-            {visit}
-            {others}
-            instruments={state.instruments.clone()}
-            prefs={state.settings.units.clone()}
-            on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
-        />
-    })
-}
-
-fn check_report(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Html> {
-    let (unit, visit, others) = with_others(state, id)?;
-    Some(html! {
-        <CheckReportScreen
-            key={format!("{id}-report")}
-            {unit}
-            {visit}
-            {others}
-            instruments={state.instruments.clone()}
-            prefs={state.settings.units.clone()}
-            on_say={deed.reform(|words| Deed::Put(Action::Say(words)))}
-        />
-    })
+/// Where a record that the address names should be.
+pub fn missing(what: &str) -> Html {
+    html! {
+        <main class="page" id="main" data-testid="missing-screen">
+            <h1 id="title" tabindex="-1">{ format!("This {what} is not here") }</h1>
+            <p>{ "It was removed, or it was made on another device." }</p>
+            <div class="actions"><a class="button is-main" href={Route::Units.href()}>{ "To the units" }</a></div>
+        </main>
+    }
 }
 
 fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
-    let missing = |what: &str| {
-        html! {
-            <main class="page" id="main" data-testid="missing-screen">
-                <h1 id="title" tabindex="-1">{ format!("This {what} is not here") }</h1>
-                <p>{ "It was removed, or it was made on another device." }</p>
-                <div class="actions"><a class="button is-main" href={Route::Units.href()}>{ "To the units" }</a></div>
-            </main>
-        }
+    let is_check = |id: &str| {
+        state
+            .visits
+            .get(id)
+            .is_some_and(|visit| visit.is_yard_check())
     };
     match &state.route {
         Route::Units => html! { <Units state={state.clone()} deed={deed.clone()} /> },
-        Route::Settings => html! { <SettingsScreen state={state.clone()} deed={deed.clone()} /> },
-        Route::Learned => html! { <LearnedScreen state={state.clone()} deed={deed.clone()} /> },
-        Route::Wear(id) => match state.units.get(id) {
-            Some(unit) => html! {
-                <WearScreen
-                    key={format!("{id}-wear")}
-                    unit={unit.clone()}
-                    visits={Others(state.visits_of(id))}
-                    instruments={state.instruments.clone()}
-                    prefs={state.settings.units.clone()}
-                />
-            },
-            None => missing("unit"),
-        },
-        Route::Yard(id) => yard(state, deed, id).unwrap_or_else(|| missing("yard check")),
-        // A yard check is no call: whoever links to it as one comes to its sheet.
-        Route::Call(id)
-            if state
-                .visits
-                .get(id)
-                .is_some_and(|visit| visit.is_yard_check()) =>
-        {
-            yard(state, deed, id).unwrap_or_else(|| missing("yard check"))
-        }
         Route::Unit(id) => match state.units.get(id) {
             Some(unit) => html! {
                 <Profile key={id.clone()} unit={unit.clone()} state={state.clone()} deed={deed.clone()} />
             },
             None => missing("unit"),
         },
-        Route::Call(id) => {
+        Route::Call(id) if !is_check(id) => {
             let visit = state.visits.get(id);
             match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
                 Some((visit, unit)) => {
@@ -365,88 +302,6 @@ fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
                 None => missing("call"),
             }
         }
-        Route::Tags(unit) => html! {
-            <TagSheet key={unit.clone().unwrap_or_default()} unit={unit.clone()} state={state.clone()} />
-        },
-        Route::Tag(scanned) => html! {
-            <TagReader key={scanned.clone()} scanned={scanned.clone()} state={state.clone()} deed={deed.clone()} />
-        },
-        Route::Report(id)
-            if state
-                .visits
-                .get(id)
-                .is_some_and(|visit| visit.is_yard_check()) =>
-        {
-            check_report(state, deed, id).unwrap_or_else(|| missing("yard check"))
-        }
-        Route::Report(id) => {
-            let visit = state.visits.get(id);
-            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
-                Some((visit, unit)) => {
-                    let (assessment, updating) = state.answer(id);
-                    html! {
-                        <ReportScreen
-                            key={format!("{id}-report")}
-                            unit={unit.clone()}
-                            visit={visit.clone()}
-                            instruments={state.instruments.clone()}
-                            prefs={state.settings.units.clone()}
-                            {assessment}
-                            {updating}
-                            trouble={state.engine_trouble.clone()}
-                            on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
-                            on_say={deed.reform(|words| Deed::Put(Action::Say(words)))}
-                        />
-                    }
-                }
-                None => missing("call"),
-            }
-        }
-        Route::Neutral(id) => {
-            let visit = state.visits.get(id);
-            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
-                Some((visit, unit)) => html! {
-                    <NeutralScreen
-                        key={format!("{id}-neutral")}
-                        unit={unit.clone()}
-                        visit={visit.clone()}
-                        prefs={state.settings.units.clone()}
-                        on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
-                    />
-                },
-                None => missing("call"),
-            }
-        }
-        Route::Bench(id) => {
-            let visit = state.visits.get(id);
-            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
-                Some((visit, unit)) => html! {
-                    <BenchScreen
-                        key={format!("{id}-bench")}
-                        unit={unit.clone()}
-                        visit={visit.clone()}
-                        prefs={state.settings.units.clone()}
-                        on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
-                        on_unit={deed.reform(|unit| Deed::Put(Action::PutUnit(unit)))}
-                    />
-                },
-                None => missing("call"),
-            }
-        }
-        Route::Tracking(id) => {
-            let visit = state.visits.get(id);
-            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
-                Some((visit, unit)) => html! {
-                    <TrackingScreen
-                        key={id.clone()}
-                        unit={unit.clone()}
-                        visit={visit.clone()}
-                        prefs={state.settings.units.clone()}
-                        on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
-                    />
-                },
-                None => missing("call"),
-            }
-        }
+        _ => html! { <Room state={state.clone()} deed={deed.clone()} /> },
     }
 }

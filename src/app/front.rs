@@ -21,7 +21,7 @@ use crate::store::PREFIX;
 
 /// Set on the page while nothing can be drawn before the house has come.
 const FETCHING: &str = "data-fetching";
-/// Set on the page when the house stands: from then on nothing is fetched for it any more.
+/// Set on the page when the house stands and its rooms have come: from then on nothing is fetched for it any more.
 const WHOLE: &str = "data-whole";
 
 fn page() -> Option<Element> {
@@ -65,7 +65,13 @@ fn enter(move_in: later::MoveIn, root: Element, deed: Option<Deed>) {
     {
         web_sys::console::warn_1(&error);
     }
-    mark(WHOLE);
+    yew::platform::spawn_local(async {
+        // Where they cannot be fetched now, whoever opens one of them is told.
+        if let Err(why) = super::room::fetch().await {
+            web_sys::console::warn_1(&why.into());
+        }
+        mark(WHOLE);
+    });
 }
 
 /// The front, and what is needed to leave it.

@@ -1,12 +1,16 @@
-//! What is fetched after the first screen stands: the house with everything that reads, writes and draws, and the engine for the
-//! worker. The build cuts the app at these functions (feature `split`) and puts what only they reach into modules of their own;
+//! What is fetched after the first screen stands: the house with what reads, writes and draws units and calls, the rooms beside them,
+//! and the engine for the worker. The build cuts the app at these functions (feature `split`) and puts what only they reach into modules of their own;
 //! without the feature everything is one module and they answer at once.
 
-use super::deed::Deed;
+use super::deed::{Deed, Snapshot};
 use web_sys::Element;
+use yew::{Callback, Html};
 
 /// Moves the whole app into an element of the page, with the first thing that is asked of it.
 pub type MoveIn = fn(Element, Option<Deed>);
+
+/// Draws the screen of the address.
+pub type Draw = fn(&Snapshot, &Callback<Deed>) -> Html;
 
 /// Answers calculations from now on, in a worker.
 pub type Answering = fn();
@@ -47,14 +51,22 @@ macro_rules! fetched {
 // What the cut leaves in the source are imports and exports, and declaring those counts as unsafe.
 #[allow(unsafe_code)]
 mod cut {
-    use super::{Answering, MoveIn, Unreachable};
+    use super::{Answering, Draw, MoveIn, Unreachable};
 
     fetched! {
-        /// The whole app.
+        /// The app.
         ///
         /// # Errors
         /// The module could not be fetched. It is tried again at the next call.
         house, MoveIn, crate::app::app_screen::move_in
+    }
+
+    fetched! {
+        /// The screens beside units, profile and call.
+        ///
+        /// # Errors
+        /// As [`house`].
+        rooms, Draw, crate::app::rooms::draw
     }
 
     fetched! {
@@ -66,4 +78,4 @@ mod cut {
     }
 }
 
-pub use cut::{engine, house};
+pub use cut::{engine, house, rooms};

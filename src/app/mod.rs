@@ -17,6 +17,8 @@ pub mod neutral;
 pub mod parts;
 pub mod persist;
 pub mod platform;
+mod room;
+mod rooms;
 pub mod route;
 pub mod screens;
 mod shell;

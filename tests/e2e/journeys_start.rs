@@ -4,7 +4,7 @@ use std::fs;
 
 use serde_json::{Value, json};
 
-use crate::hands::look;
+use crate::hands::{look, new_call};
 use crate::rig::{NARROW, PHONE, Rig};
 
 #[tokio::test]
@@ -143,6 +143,23 @@ async fn what_is_typed_on_the_first_screen_goes_along_into_the_app() {
     rig.by_id("units-screen").await;
     let name = "return document.querySelector('[data-testid=\"new-unit-name\"]').value;";
     assert_eq!(rig.js(name, vec![]).await, "T-98");
+}
+
+/// The road call works while the rest of the first download has broken off; a screen that has not come says so and how to go on.
+#[tokio::test]
+async fn a_screen_that_did_not_come_is_fetched_when_it_is_asked_for_again() {
+    let rig = Rig::new(PHONE).await;
+    let rooms = rig.site.file_below("snippets", "split_rooms.wasm");
+    rig.site.break_off(&rooms);
+    rig.load().await;
+    rig.wait_for_app().await;
+    new_call(&rig, "T-97").await;
+    rig.click("settings-link").await;
+    rig.by_id("room-trouble").await;
+    look(&rig, "room-trouble", PHONE).await;
+    rig.site.mend();
+    rig.click("room-again").await;
+    rig.by_id("settings-screen").await;
 }
 
 /// Messages sent before the worker is up are neither lost nor put out of order.
