@@ -3,20 +3,21 @@
 
 use super::add_panel::AddPanel;
 use super::alerts::{LeadStatus, StopWork, runs_on};
-use super::causes::Causes;
+use super::causes::{Causes, CausesProps};
 use super::cautions;
 use super::change::Change;
-use super::close::ClosePanel;
+use super::close::{ClosePanel, ClosePanelProps};
 use super::edits::use_edits;
 use super::entry;
 use super::entry_field::field_id;
 use super::gate_panel::RESTARTED;
 use super::group::groups;
 use super::last_time::EarlierCalls;
-use super::map::LoopMap;
-use super::next::NextPanel;
+use super::late::Late;
+use super::map::{LoopMap, LoopMapProps};
+use super::next::{NextPanel, NextPanelProps};
 use super::quick_panel::QuickPanel;
-use super::reading_group::{ReadingGroup, gate_id};
+use super::reading_group::{ReadingGroup, ReadingGroupProps, gate_id};
 use super::reading_row::row_id;
 use super::rooms;
 use super::seen_panel::SeenPanel;
@@ -201,6 +202,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             .position(|reading| reading.id == *id)?;
         grouped.iter().position(|group| group.at.contains(&at))
     });
+    let at_hand = focus::within();
     let drawn = use_slices(grouped.len(), wanted.map_or(0, |place| place + 1));
     let on_key = {
         let order: Vec<String> = grouped
@@ -218,24 +220,10 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             <LeadStatus assessment={answer.clone()} said={edits.said()} />
             <div class="call-side">
             <div class="call-causes">
-                <Causes
-                    assessment={answer.clone()}
-                    updating={props.updating}
-                    readings={visit.readings.clone()}
-                    {sides}
-                    prefs={props.prefs.clone()}
-                    on_reading={on_reading.clone()}
-                />
+                <Late<Causes> of={CausesProps { assessment: answer.clone(), updating: props.updating, readings: visit.readings.clone(), sides, prefs: props.prefs.clone(), on_reading: on_reading.clone() }} />
             </div>
             <div class="call-map">
-                <LoopMap
-                    ticks={props.unit.ticks.clone()}
-                    taken={taken.clone()}
-                    {sides}
-                    assessment={answer.clone()}
-                    chosen={*chosen}
-                    {on_port}
-                />
+                <Late<LoopMap> of={LoopMapProps { ticks: props.unit.ticks.clone(), taken: taken.clone(), sides, assessment: answer.clone(), chosen: *chosen, on_port }} />
             </div>
             </div>
             <div class="call-main">
@@ -257,17 +245,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     paths={props.unit.ticks.paths}
                     on_change={on_change.clone()}
                 />
-                <NextPanel
-                    assessment={answer.clone()}
-                    updating={props.updating}
-                    taken={taken.clone()}
-                    {sides}
-                    observations={visit.observations.clone()}
-                    made={visit.made.clone()}
-                    prefs={props.prefs.clone()}
-                    on_change={on_change.clone()}
-                    on_reading={on_reading.clone()}
-                />
+                <Late<NextPanel> of={NextPanelProps { assessment: answer.clone(), updating: props.updating, taken: taken.clone(), sides, observations: visit.observations.clone(), made: visit.made.clone(), prefs: props.prefs.clone(), on_change: on_change.clone(), on_reading: on_reading.clone() }} />
                 { restarted(visit, &on_change) }
                 <QuickPanel {taken} {sides} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
@@ -275,29 +253,12 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 <>{ for grouped.into_iter().zip(told).take(drawn).map(|(group, told)| {
                     let first = group.at.first().and_then(|place| visit.readings.get(*place));
                     let first = first.map(|reading| reading.id.clone()).unwrap_or_default();
+                    let mut ids = group.at.iter().filter_map(|place| visit.readings.get(*place)).map(|reading| &reading.id);
+                    let is_now = editing.contains(&first)
+                        || to_focus.borrow().is_some()
+                        || ids.any(|id| at_hand.contains(&row_id(id)) || at_hand.contains(&gate_id(id)));
                     html! {
-                        <ReadingGroup
-                            key={first.clone()}
-                            condition={group.condition}
-                            at={group.at}
-                            editing={editing.contains(&first)}
-                            on_edit={on_edit.clone()}
-                            on_watch={on_watch.clone()}
-                            assessment={answer.clone()}
-                            updating={props.updating}
-                            minute={*minute}
-                            told={told.checks}
-                            told_places={told.places}
-                            {sides}
-                            chosen={*chosen}
-                            unit={props.unit.clone()}
-                            visit={visit.clone()}
-                            earlier={props.earlier.clone()}
-                            instruments={props.instruments.clone()}
-                            prefs={props.prefs.clone()}
-                            on_change={on_change.clone()}
-                            on_instruments={on_instruments.clone()}
-                        />
+                        <Late<ReadingGroup> key={first.clone()} now={is_now} of={ReadingGroupProps { condition: group.condition, at: group.at, editing: editing.contains(&first), on_edit: on_edit.clone(), on_watch: on_watch.clone(), assessment: answer.clone(), updating: props.updating, minute: *minute, told: told.checks, told_places: told.places, sides, chosen: *chosen, unit: props.unit.clone(), visit: visit.clone(), earlier: props.earlier.clone(), instruments: props.instruments.clone(), prefs: props.prefs.clone(), on_change: on_change.clone(), on_instruments: on_instruments.clone() }} />
                     }
                 }) }</>
                 <AddPanel
@@ -308,12 +269,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     on_change={on_change.clone()}
                 />
                 { rooms::links(&props.unit, visit) }
-                <ClosePanel
-                    visit={visit.clone()}
-                    {sides}
-                    assessment={answer}
-                    on_change={on_change.clone()}
-                />
+                <Late<ClosePanel> of={ClosePanelProps { visit: visit.clone(), sides, assessment: answer, on_change: on_change.clone() }} />
                 if let Some(words) = undo {
                     <button type="button" class="button is-quiet call-undo" data-testid="undo" onclick={on_undo}>
                         <Icon shape={Shape::Back} />{ "Undo: " }{ words }

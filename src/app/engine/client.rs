@@ -90,6 +90,9 @@ struct Inner {
     others: VecDeque<Question>,
     sheets: BTreeMap<u32, Sheet>,
     settle: Option<Timer>,
+    /// Answers that were read and not yet handed on, and the turn for the first of them.
+    read: VecDeque<Reply>,
+    turn: Option<Timer>,
     tell: Rc<dyn Fn(Told)>,
 }
 
@@ -116,6 +119,8 @@ impl Engine {
             others: VecDeque::new(),
             sheets: BTreeMap::new(),
             settle: None,
+            read: VecDeque::new(),
+            turn: None,
             tell: Rc::new(tell),
         })))
     }
@@ -284,12 +289,38 @@ impl Engine {
         let text = event.data().as_string().unwrap_or_default();
         match serde_json::from_str::<Reply>(&text) {
             Ok(reply) if reply.is_ready() => self.0.borrow_mut().ready = true,
-            Ok(mut reply) => match reply.neutral.take() {
-                Some(found) => self.worked_out(reply.seq, *found),
-                None => self.take(reply),
-            },
+            Ok(reply) => self.read(reply),
             Err(_) => self.give_up("The answer of the calculation could not be read."),
         }
+    }
+
+    /// Lays an answer on the pile. Reading a long one takes as long as drawing it: a turn for each, with keys heard in between.
+    fn read(&self, reply: Reply) {
+        self.0.borrow_mut().read.push_back(reply);
+        self.next_turn();
+    }
+
+    fn next_turn(&self) {
+        let engine = self.clone();
+        let mut inner = self.0.borrow_mut();
+        if inner.turn.is_none() && !inner.read.is_empty() {
+            inner.turn = Timer::once(0, move || engine.take_turn());
+        }
+    }
+
+    fn take_turn(&self) {
+        let reply = {
+            let mut inner = self.0.borrow_mut();
+            inner.turn = None;
+            inner.read.pop_front()
+        };
+        if let Some(mut reply) = reply {
+            match reply.neutral.take() {
+                Some(found) => self.worked_out(reply.seq, *found),
+                None => self.take(reply),
+            }
+        }
+        self.next_turn();
     }
 
     fn worked_out(&self, seq: u32, found: Report) {

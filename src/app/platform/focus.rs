@@ -35,6 +35,17 @@ pub fn to_head(id: &str) {
     }
 }
 
+/// DOM ids of what has the keyboard and of all that it lies in.
+pub fn within() -> Vec<String> {
+    let active = web_sys::window()
+        .and_then(|window| window.document())
+        .and_then(|document| document.active_element());
+    std::iter::successors(active, |element| element.parent_element())
+        .map(|element| element.id())
+        .filter(|id| !id.is_empty())
+        .collect()
+}
+
 /// What has the keyboard.
 #[derive(Clone, Debug, PartialEq, Eq)]
 pub struct Named {
