@@ -220,10 +220,24 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
             <LeadStatus assessment={answer.clone()} said={edits.said()} />
             <div class="call-side">
             <div class="call-causes">
-                <Late<Causes> of={CausesProps { assessment: answer.clone(), updating: props.updating, readings: visit.readings.clone(), sides, prefs: props.prefs.clone(), on_reading: on_reading.clone() }} />
+                <Late<Causes> of={CausesProps {
+                    assessment: answer.clone(),
+                    updating: props.updating,
+                    readings: visit.readings.clone(),
+                    sides,
+                    prefs: props.prefs.clone(),
+                    on_reading: on_reading.clone(),
+                }} />
             </div>
             <div class="call-map">
-                <Late<LoopMap> of={LoopMapProps { ticks: props.unit.ticks.clone(), taken: taken.clone(), sides, assessment: answer.clone(), chosen: *chosen, on_port }} />
+                <Late<LoopMap> of={LoopMapProps {
+                    ticks: props.unit.ticks.clone(),
+                    taken: taken.clone(),
+                    sides,
+                    assessment: answer.clone(),
+                    chosen: *chosen,
+                    on_port,
+                }} />
             </div>
             </div>
             <div class="call-main">
@@ -245,7 +259,17 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     paths={props.unit.ticks.paths}
                     on_change={on_change.clone()}
                 />
-                <Late<NextPanel> of={NextPanelProps { assessment: answer.clone(), updating: props.updating, taken: taken.clone(), sides, observations: visit.observations.clone(), made: visit.made.clone(), prefs: props.prefs.clone(), on_change: on_change.clone(), on_reading: on_reading.clone() }} />
+                <Late<NextPanel> of={NextPanelProps {
+                    assessment: answer.clone(),
+                    updating: props.updating,
+                    taken: taken.clone(),
+                    sides,
+                    observations: visit.observations.clone(),
+                    made: visit.made.clone(),
+                    prefs: props.prefs.clone(),
+                    on_change: on_change.clone(),
+                    on_reading: on_reading.clone(),
+                }} />
                 { restarted(visit, &on_change) }
                 <QuickPanel {taken} {sides} on_change={on_change.clone()} />
                 <h2 id="readings" tabindex="-1" class="hidden-text">{ "Readings" }</h2>
@@ -253,12 +277,34 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 <>{ for grouped.into_iter().zip(told).take(drawn).map(|(group, told)| {
                     let first = group.at.first().and_then(|place| visit.readings.get(*place));
                     let first = first.map(|reading| reading.id.clone()).unwrap_or_default();
-                    let mut ids = group.at.iter().filter_map(|place| visit.readings.get(*place)).map(|reading| &reading.id);
-                    let is_now = editing.contains(&first)
+                    let is_at_hand = |reading: &Reading| {
+                        at_hand.contains(&row_id(&reading.id)) || at_hand.contains(&gate_id(&reading.id))
+                    };
+                    let now = editing.contains(&first)
                         || to_focus.borrow().is_some()
-                        || ids.any(|id| at_hand.contains(&row_id(id)) || at_hand.contains(&gate_id(id)));
+                        || group.at.iter().filter_map(|place| visit.readings.get(*place)).any(is_at_hand);
                     html! {
-                        <Late<ReadingGroup> key={first.clone()} now={is_now} of={ReadingGroupProps { condition: group.condition, at: group.at, editing: editing.contains(&first), on_edit: on_edit.clone(), on_watch: on_watch.clone(), assessment: answer.clone(), updating: props.updating, minute: *minute, told: told.checks, told_places: told.places, sides, chosen: *chosen, unit: props.unit.clone(), visit: visit.clone(), earlier: props.earlier.clone(), instruments: props.instruments.clone(), prefs: props.prefs.clone(), on_change: on_change.clone(), on_instruments: on_instruments.clone() }} />
+                        <Late<ReadingGroup> key={first.clone()} {now} of={ReadingGroupProps {
+                            condition: group.condition,
+                            at: group.at,
+                            editing: editing.contains(&first),
+                            on_edit: on_edit.clone(),
+                            on_watch: on_watch.clone(),
+                            assessment: answer.clone(),
+                            updating: props.updating,
+                            minute: *minute,
+                            told: told.checks,
+                            told_places: told.places,
+                            sides,
+                            chosen: *chosen,
+                            unit: props.unit.clone(),
+                            visit: visit.clone(),
+                            earlier: props.earlier.clone(),
+                            instruments: props.instruments.clone(),
+                            prefs: props.prefs.clone(),
+                            on_change: on_change.clone(),
+                            on_instruments: on_instruments.clone(),
+                        }} />
                     }
                 }) }</>
                 <AddPanel
@@ -269,7 +315,12 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     on_change={on_change.clone()}
                 />
                 { rooms::links(&props.unit, visit) }
-                <Late<ClosePanel> of={ClosePanelProps { visit: visit.clone(), sides, assessment: answer, on_change: on_change.clone() }} />
+                <Late<ClosePanel> of={ClosePanelProps {
+                    visit: visit.clone(),
+                    sides,
+                    assessment: answer,
+                    on_change: on_change.clone(),
+                }} />
                 if let Some(words) = undo {
                     <button type="button" class="button is-quiet call-undo" data-testid="undo" onclick={on_undo}>
                         <Icon shape={Shape::Back} />{ "Undo: " }{ words }
