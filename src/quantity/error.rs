@@ -2,7 +2,7 @@
 
 use std::fmt;
 
-use super::{DecimalMark, Kind, Measure, Unit, edit_text, edited, figure_text};
+use super::{DecimalMark, Kind, Measure, Unit, edit_text, edited, figure_text, limit_text};
 
 /// Why an entry was not taken. `Display` is the sentence to show under the field (decimal point);
 /// [`EntryError::message`] prints its figures with either decimal mark.
@@ -155,7 +155,6 @@ impl EntryError {
                 low,
                 high,
             } => {
-                let limit = |measure: &Measure| edit_text(*measure, *unit, mark);
                 // A vacuum unit runs the other way: its larger figure is the lower pressure.
                 let (from, to) = if unit.reads_vacuum() {
                     (high, low)
@@ -166,8 +165,8 @@ impl EntryError {
                     "{}{} is outside what is accepted here: {} to {}{}. Look at the figure and its unit again.",
                     edit_text(*value, *unit, mark),
                     spaced(*unit),
-                    limit(from),
-                    limit(to),
+                    limit_text(*from, *unit, mark, false),
+                    limit_text(*to, *unit, mark, true),
                     spaced(*unit)
                 )
             }

@@ -30,7 +30,7 @@ pub use kind::Kind;
 pub use measure::{LARGEST, Measure, MeasureError};
 pub use prefs::UnitPrefs;
 pub use print::{DecimalMark, Decimals, MINUS, edit_text, format, format_span, format_with_unit};
-use print::{edited, figure_text};
+use print::{edited, figure_text, limit_text};
 pub use retold::retold;
 pub use text::Typed;
 pub use typed::{DisplacementPerRevolution, GaugePressure};

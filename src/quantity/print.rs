@@ -177,6 +177,36 @@ pub(super) fn edited(value: f64, mark: DecimalMark) -> String {
     }
 }
 
+/// A limit as a refusal tells it: a converted one to four digits, rounded to the side that is accepted, so that whoever types the
+/// figure told is not refused again.
+pub(super) fn limit_text(
+    measure: Measure,
+    unit: Unit,
+    mark: DecimalMark,
+    is_upper: bool,
+) -> String {
+    let (value, _) = measure.in_fitting_unit(unit);
+    edited(inside(value, is_upper), mark)
+}
+
+/// `value` to four significant digits, not beyond itself in the direction given.
+fn inside(value: f64, is_upper: bool) -> f64 {
+    let text = format!("{value:.3e}");
+    let rounded = text.parse().unwrap_or(value);
+    let is_beyond = if is_upper {
+        rounded > value
+    } else {
+        rounded < value
+    };
+    let exponent = text.split_once('e').map_or("0", |(_, exponent)| exponent);
+    let step: f64 = format!("1e{exponent}").parse::<f64>().unwrap_or(0.0) / 1000.0;
+    match (is_beyond, is_upper) {
+        (false, _) => rounded,
+        (true, true) => rounded - step,
+        (true, false) => rounded + step,
+    }
+}
+
 /// Sign, parted whole digits, mark, decimals.
 fn assemble(value: f64, places: usize, mark: DecimalMark, part: bool) -> String {
     let text = format!("{:.places$}", value.abs());

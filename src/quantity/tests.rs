@@ -252,8 +252,17 @@ fn refusals_say_what_is_wrong_and_what_is_accepted() {
     );
     assert_eq!(
         charge("900 psi"),
-        Err("900 psi is outside what is accepted here: 0 to 870.226426 psi. Look at the figure and its unit again.".into())
+        Err("900 psi is outside what is accepted here: 0 to 870.2 psi. Look at the figure and its unit again.".into())
     );
+    // What is told is accepted, also where it was rounded.
+    assert_eq!(charge("870.2 psi"), Ok(()));
+    let rated = measure(50.0, Unit::Psi)..=measure(700.0, Unit::Psi);
+    let told = parse("1", Kind::Pressure, Unit::Bar, Some(rated.clone()));
+    let told = told.expect_err("too low").to_string();
+    assert!(told.contains("3.4480 to 48.26 bar"), "{told}");
+    for limit in ["3.4480", "48.26"] {
+        assert!(parse(limit, Kind::Pressure, Unit::Bar, Some(rated.clone())).is_ok());
+    }
     assert_eq!(charge("20 rpm"), Err("rpm measures rotational speed; this field asks for pressure. Type it in bar, psi, kPa or MPa.".into()));
     assert_eq!(
         charge("20 furlongs"),
