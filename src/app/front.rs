@@ -161,6 +161,7 @@ fn Front(props: &FrontProps) -> Html {
         Callback::from(move |deed: Deed| {
             let (failed, done) = (trouble.clone(), waits.clone());
             waits.set(true);
+            trouble.set(None);
             ask(&door.0, Some(deed), move |why| {
                 done.set(false);
                 failed.set(Some(why));
@@ -179,9 +180,15 @@ fn Front(props: &FrontProps) -> Html {
                     </Caution>
                 </div>
             }
-            <p class="hidden-text" role="status" aria-live="polite">
-                { if *waits { "Fetching the rest of the app…" } else { "" } }
-            </p>
+            <div role="status" aria-live="polite">
+                if *waits {
+                    <div class="notices">
+                        <Caution title="One moment" testid="front-waits">
+                            <p>{ "The rest of the app is being fetched. It goes on by itself." }</p>
+                        </Caution>
+                    </div>
+                }
+            </div>
             <main class="page" id="main" data-testid="front-screen" aria-busy={waits.to_string()}>
                 <div class="page-head"><h1 id="title" tabindex="-1">{ "Units" }</h1></div>
                 <FirstSteps state={(*state).clone()} {deed}>

@@ -140,6 +140,34 @@ async fn the_watch_view_and_the_large_keys_shut_nobody_out() {
     rig.close().await;
 }
 
+/// What one sees while the rest of the app is on its way, or does not come.
+#[tokio::test]
+async fn waiting_for_the_rest_of_the_app_shuts_nobody_out() {
+    let script = axe();
+    let rig = Rig::new(PHONE).await;
+    let parts =
+        ["split_house.wasm", "split_rooms.wasm"].map(|part| rig.site.file_below("snippets", part));
+    for part in &parts {
+        rig.site.break_off(part);
+    }
+    rig.load().await;
+    rig.by_id("front-screen").await;
+    let mut all = seen_by_everyone(&rig, &script, "the first screen alone").await;
+    rig.set_size(PHONE).await;
+    rig.click("load-demo").await;
+    rig.by_id("front-trouble").await;
+    all.extend(seen_by_everyone(&rig, &script, "the first screen, no connection").await);
+    rig.set_size(PHONE).await;
+    rig.site.mend();
+    rig.site.break_off(&parts[1]);
+    rig.click("load-demo").await;
+    rig.by_id("unit-card").await;
+    rig.go("/settings").await;
+    rig.by_id("room-trouble").await;
+    all.extend(seen_by_everyone(&rig, &script, "a screen that did not come").await);
+    none(&all);
+}
+
 #[tokio::test]
 async fn no_screen_shuts_anybody_out() {
     let script = axe();
