@@ -1,15 +1,16 @@
 //! The bench screen as a whole.
 
-use super::hand_over::HandOver;
+use super::hand_over::{HandOver, HandOverProps};
 use super::head::HeadForm;
 use super::items::ItemsForm;
 use super::layout::LayoutForm;
 use super::paste::PasteBox;
-use super::plot::Pictures;
+use super::plot::{Pictures, PicturesProps};
 use super::results::Results;
 use super::table::PointTable;
-use super::take_over::TakeOver;
-use crate::app::parts::{Caution, Grade, Icon, Section, Shape};
+use super::take_over::{TakeOver, TakeOverProps};
+use crate::app::parts::{Caution, Grade, Icon, Late, Section, Shape};
+use crate::app::platform::timer::Timer;
 use crate::app::route::Route;
 use crate::bench::stand::{BenchReport, BenchSheet, report};
 use crate::quantity::UnitPrefs;
@@ -17,7 +18,7 @@ use crate::record::Visit;
 use crate::unit::Unit;
 use std::rc::Rc;
 use yew::{Callback, Html, Properties, component, html};
-use yew::{use_memo, use_mut_ref};
+use yew::{use_effect_with, use_memo, use_mut_ref, use_state};
 
 /// Properties of [`BenchScreen`].
 #[derive(Clone, PartialEq, Properties)]
@@ -47,6 +48,19 @@ impl PartialEq for Told {
     }
 }
 
+/// From the last key in a cell to what the sheet comes to.
+const QUIET_MS: i32 = 150;
+
+/// True where two sheets have the same rows and differ in nothing but what stands in their cells.
+fn differ_in_cells_alone(one: &BenchSheet, other: &BenchSheet) -> bool {
+    let bare = |sheet: &BenchSheet| {
+        let mut sheet = sheet.clone();
+        sheet.rows.iter_mut().for_each(|row| row.cells.clear());
+        sheet
+    };
+    bare(one) == bare(other)
+}
+
 /// The screen.
 #[component]
 pub fn BenchScreen(props: &BenchScreenProps) -> Html {
@@ -63,7 +77,25 @@ pub fn BenchScreen(props: &BenchScreenProps) -> Html {
         })
     };
     let sheet = props.visit.bench.clone().unwrap_or_default();
-    let told = use_memo((sheet.clone(), props.unit.clone()), |(sheet, unit)| {
+    // While cells are typed it is worked out after a quiet moment; the last answer stays until then. Whatever else is changed is
+    // answered at once: what is told of a row must not be told beside another.
+    let settled = use_state(|| sheet.clone());
+    let waits = *settled != sheet && differ_in_cells_alone(&settled, &sheet);
+    {
+        let settled = settled.clone();
+        use_effect_with(sheet.clone(), move |sheet| {
+            let sheet = sheet.clone();
+            let timer =
+                (*settled != sheet).then(|| Timer::once(QUIET_MS, move || settled.set(sheet)));
+            move || drop(timer)
+        });
+    }
+    let about = if waits {
+        (*settled).clone()
+    } else {
+        sheet.clone()
+    };
+    let told = use_memo((about, props.unit.clone()), |(sheet, unit)| {
         Told(Rc::new(report(sheet, Some(unit))))
     });
     let told = (*told).clone();
@@ -75,7 +107,7 @@ pub fn BenchScreen(props: &BenchScreenProps) -> Html {
     };
     let sheet = Rc::new(sheet);
     html! {
-        <main class="page bench" id="main" data-testid="bench-screen">
+        <main class="page bench" id="main" data-testid="bench-screen" aria-busy={waits.then_some("true")}>
             <div class="page-head">
                 <h1 id="title" tabindex="-1">{ "Bench stand" }</h1>
                 <a class="button is-quiet" href={Route::Call(props.visit.id.clone()).href()} data-testid="back-to-call">
@@ -95,18 +127,18 @@ pub fn BenchScreen(props: &BenchScreenProps) -> Html {
                 <PointTable sheet={sheet.clone()} told={told.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
             </Section>
             <Results sheet={sheet.clone()} told={told.clone()} unit={props.unit.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
-            <Pictures told={told.clone()} sheet={sheet.clone()} prefs={props.prefs.clone()} />
+            <Late<Pictures> of={PicturesProps { told: told.clone(), sheet: sheet.clone(), prefs: props.prefs.clone() }} />
             <ItemsForm sheet={sheet.clone()} told={told.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
-            <TakeOver
-                told={told.clone()}
-                sheet={sheet.clone()}
-                unit={props.unit.clone()}
-                opened={props.visit.opened.clone()}
-                prefs={props.prefs.clone()}
-                on_unit={props.on_unit.clone()}
-                {on_edit}
-            />
-            <HandOver {sheet} {told} unit={props.unit.clone()} prefs={props.prefs.clone()} />
+            <Late<TakeOver> of={TakeOverProps {
+                told: told.clone(),
+                sheet: sheet.clone(),
+                unit: props.unit.clone(),
+                opened: props.visit.opened.clone().into(),
+                prefs: props.prefs.clone(),
+                on_unit: props.on_unit.clone(),
+                on_edit,
+            }} />
+            <Late<HandOver> of={HandOverProps { sheet, told, unit: props.unit.clone(), prefs: props.prefs.clone() }} />
         </main>
     }
 }

@@ -41,7 +41,6 @@ mod help;
 mod history;
 mod jug;
 mod last_time;
-mod late;
 mod map;
 pub(in crate::app) mod mark;
 mod new_gauge;

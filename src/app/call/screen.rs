@@ -13,7 +13,6 @@ use super::entry_field::field_id;
 use super::gate_panel::RESTARTED;
 use super::group::groups;
 use super::last_time::EarlierCalls;
-use super::late::Late;
 use super::map::{LoopMap, LoopMapProps};
 use super::next::{NextPanel, NextPanelProps};
 use super::quick_panel::QuickPanel;
@@ -28,7 +27,7 @@ use super::taken::Taken;
 use super::told::told_before;
 use super::watch::{Kept, WatchView};
 use super::watching::{watched, with_following};
-use crate::app::parts::{Icon, Shape};
+use crate::app::parts::{Icon, Late, Shape};
 use crate::app::platform::clock;
 use crate::app::platform::focus;
 use crate::app::platform::timer::Timer;
@@ -46,6 +45,8 @@ use yew::{
 };
 use yew::{use_effect_with, use_memo, use_mut_ref, use_state};
 
+/// DOM id of the panel that closes the call.
+const CLOSE: &str = "close";
 /// A minute, ms.
 const MINUTE_MS: i32 = 60_000;
 
@@ -315,7 +316,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     on_change={on_change.clone()}
                 />
                 { rooms::links(&props.unit, visit) }
-                <Late<ClosePanel> of={ClosePanelProps {
+                <Late<ClosePanel> now={at_hand.iter().any(|id| id == CLOSE)} of={ClosePanelProps {
                     visit: visit.clone(),
                     sides,
                     assessment: answer,

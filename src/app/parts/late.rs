@@ -1,6 +1,6 @@
-//! Parts of the screen that may be drawn a moment later than the rest. An edit or an answer changes nearly all of a long call, and drawn
+//! Parts of a screen that may be drawn a moment later than the rest. An edit or an answer changes nearly all of a long call, and drawn
 //! in one piece that would hold the next key up. What is at hand is drawn at once; every other part follows in a turn of its own, in
-//! between the browser takes keys and shows what is there.
+//! between the browser takes keys and shows what is there. A part with fields to type into must be drawn at once while somebody types.
 
 use crate::app::platform::timer::Timer;
 use yew::{
