@@ -9,7 +9,7 @@ use super::change::Change;
 use super::side::Sides;
 use super::steady::Answer;
 use super::taken::Taken;
-use crate::app::parts::{Caution, Grade};
+use crate::app::parts::{Caution, Grade, Late};
 use crate::next::{Advice, Offer};
 use crate::quantity::UnitPrefs;
 use crate::record;
@@ -59,37 +59,61 @@ pub fn NextPanel(props: &NextPanelProps) -> Html {
         }
         last.as_ref().map(|kept| kept.0.clone())
     };
-    let advice = kept.as_ref().and_then(|a| a.advice.as_ref());
     let is_old = props.updating || kept != props.assessment;
     html! {
         <section class="panel next" aria-labelledby="next-title" id="next" tabindex="-1" data-testid="next">
             <h2 id="next-title">
                 { "What to do next" }
-                if is_old && advice.is_some() {
+                if is_old && kept.is_some() {
                     <span class="count">{ "updating…" }</span>
                 }
             </h2>
-            { match advice {
-                Some(advice) => shown(advice, is_old, props),
+            { match kept {
+                Some(kept) => html! {
+                    // The inside is drawn anew when the advice is, not at every key on the way to it.
+                    <div class={if is_old { "next-body is-updating" } else { "next-body" }}>
+                        <Late<Inside> of={NextPanelProps { assessment: Some(kept), updating: false, ..props.clone() }} />
+                    </div>
+                },
                 None => html! { <p class="soft" role="status">{ "Working out which check tells most…" }</p> },
             } }
         </section>
     }
 }
 
-fn shown(advice: &Advice, is_old: bool, props: &NextPanelProps) -> Html {
-    // What was made already has nothing more to say today.
-    let is_made = |offer: &&Offer| props.made.contains(&offer.id);
-    let made: Vec<&Offer> = advice.checks.iter().filter(is_made).collect();
-    let left: Vec<&Offer> = advice.checks.iter().filter(|o| !is_made(o)).collect();
-    // Where it is time to stop, no check is pressed on anybody.
-    let (best, others) = match left.split_first() {
-        Some((best, others)) if advice.stop.is_none() => (Some(*best), others),
-        _ => (None, left.as_slice()),
+/// What is still to be checked: the check that is pressed, where one is, and the others. What was made already has nothing more to say
+/// today; where it is time to stop, no check is pressed on anybody.
+fn open<'a>(advice: &'a Advice, made: &[String]) -> (Option<&'a Offer>, Vec<&'a Offer>) {
+    let mut left = advice
+        .checks
+        .iter()
+        .filter(|offer| !made.contains(&offer.id));
+    let best = if advice.stop.is_none() {
+        left.next()
+    } else {
+        None
     };
-    let first = usize::from(best.is_some());
+    (best, left.collect())
+}
+
+/// The inside of the panel.
+#[component]
+fn Inside(props: &NextPanelProps) -> Html {
+    let Some(advice) = props
+        .assessment
+        .as_deref()
+        .and_then(|answer| answer.advice.as_ref())
+    else {
+        return Html::default();
+    };
+    let made = advice
+        .checks
+        .iter()
+        .filter(|offer| props.made.contains(&offer.id));
+    let made: Vec<&Offer> = made.collect();
+    let (best, _) = open(advice, &props.made);
     html! {
-        <div class={if is_old { "next-body is-updating" } else { "next-body" }}>
+        <>
             if let Some(stop) = &advice.stop {
                 <Caution grade={Grade::Note} title="Stop checking" class="small-caution" testid="next-stop">
                     <p>{ stop.clone() }</p>
@@ -97,12 +121,7 @@ fn shown(advice: &Advice, is_old: bool, props: &NextPanelProps) -> Html {
             }
             { for advice.repair.iter().filter(|r| r.now).map(|r| repair::shown(r, props)) }
             { for best.map(|best| offer::best(best, props)) }
-            if !others.is_empty() {
-                <h3 class="next-other">{ if best.is_some() { "Or" } else { "If you check on all the same" } }</h3>
-                <ol class="next-list">
-                    { for others.iter().enumerate().map(|(place, other)| offer::other(first + place, other, props)) }
-                </ol>
-            }
+            <Late<Others> of={props.clone()} />
             { for advice.repair.iter().filter(|r| !r.now).map(|r| repair::shown(r, props)) }
             if !made.is_empty() {
                 <ul class="plain-list" data-testid="next-made">
@@ -111,8 +130,31 @@ fn shown(advice: &Advice, is_old: bool, props: &NextPanelProps) -> Html {
             }
             { held_back(advice) }
             <p class="soft small">{ crate::caution::MANUAL_FIRST }</p>
-        </div>
+        </>
     }
+}
+
+/// The checks that come after the best one.
+#[component]
+fn Others(props: &NextPanelProps) -> Html {
+    let Some(advice) = props
+        .assessment
+        .as_deref()
+        .and_then(|answer| answer.advice.as_ref())
+    else {
+        return Html::default();
+    };
+    let (best, others) = open(advice, &props.made);
+    let first = usize::from(best.is_some());
+    if others.is_empty() {
+        return Html::default();
+    }
+    html! { <>
+        <h3 class="next-other">{ if best.is_some() { "Or" } else { "If you check on all the same" } }</h3>
+        <ol class="next-list">
+            { for others.iter().enumerate().map(|(place, other)| offer::other(first + place, other, props)) }
+        </ol>
+    </> }
 }
 
 /// What may not be offered yet, and what it waits for.
