@@ -140,7 +140,7 @@ fn title(state: &State) -> String {
 
 /// What was asked before the app was there. Taken once.
 #[derive(Clone)]
-struct First(Rc<RefCell<Option<Deed>>>);
+struct First(Rc<RefCell<Vec<Deed>>>);
 
 impl PartialEq for First {
     fn eq(&self, other: &Self) -> bool {
@@ -155,7 +155,7 @@ struct AppProps {
 }
 
 /// Draws the app into an element of the page and does what was asked of it first.
-pub fn move_in(root: web_sys::Element, first: Option<Deed>) {
+pub fn move_in(root: web_sys::Element, first: Vec<Deed>) {
     let first = First(Rc::new(RefCell::new(first)));
     yew::Renderer::<App>::with_root_and_props(root, AppProps { first }).render();
 }
@@ -177,8 +177,8 @@ fn App(props: &AppProps) -> Html {
         let (hands, first) = (hands.clone(), props.first.clone());
         use_effect_with((), move |()| {
             let listeners = listen(&hands);
-            let asked = first.0.borrow_mut().take();
-            if let Some(deed) = asked {
+            let asked = first.0.take();
+            for deed in asked {
                 hands.act(deed);
             }
             let telling = hands.clone();

@@ -52,14 +52,16 @@ pub fn straight_in(root: Element) {
     mark(FETCHING);
     yew::platform::spawn_local(async move {
         match later::house().await {
-            Ok(move_in) => enter(move_in, root, None),
-            Err(why) => super::fail(&format!("A part of the app could not be fetched: {why}")),
+            Ok(move_in) => enter(move_in, root, Vec::new()),
+            Err(_) => super::fail(
+                "A part of the app could not be fetched. Check the connection, then try again.",
+            ),
         }
     });
 }
 
-fn enter(move_in: later::MoveIn, root: Element, deed: Option<Deed>) {
-    move_in(root, deed);
+fn enter(move_in: later::MoveIn, root: Element, asked: Vec<Deed>) {
+    move_in(root, asked);
     if let Some(page) = page()
         && let Err(error) = page.remove_attribute(FETCHING)
     {
@@ -67,9 +69,7 @@ fn enter(move_in: later::MoveIn, root: Element, deed: Option<Deed>) {
     }
     yew::platform::spawn_local(async {
         // Where they cannot be fetched now, whoever opens one of them is told.
-        if let Err(why) = super::room::fetch().await {
-            web_sys::console::warn_1(&why.into());
-        }
+        let _ = super::room::fetch().await;
         mark(WHOLE);
     });
 }
@@ -81,17 +81,28 @@ struct Standing {
     /// Somebody has touched or typed something: from then on it goes only when it is asked for something.
     is_touched: Cell<bool>,
     listeners: RefCell<Vec<Option<Listener>>>,
+    /// What was asked and not done yet.
+    asked: RefCell<Vec<Deed>>,
 }
 
 impl Standing {
-    /// Leaves the front for the house; a front that is gone already stays gone.
-    fn leave(&self, move_in: later::MoveIn, deed: Option<Deed>) {
+    /// Takes note of what is asked. Pressed twice in impatience, one unit is wanted and not two.
+    fn note(&self, deed: Deed) {
+        let mut asked = self.asked.borrow_mut();
+        if matches!(deed, Deed::NewUnit { .. }) {
+            asked.retain(|before| !matches!(before, Deed::NewUnit { .. }));
+        }
+        asked.push(deed);
+    }
+
+    /// Leaves the front for the house, with all that was asked; a front that is gone already stays gone.
+    fn leave(&self, move_in: later::MoveIn) {
         let Some(handle) = self.handle.borrow_mut().take() else {
             return;
         };
         drop(self.listeners.take());
         handle.destroy();
-        enter(move_in, self.root.clone(), deed);
+        enter(move_in, self.root.clone(), self.asked.take());
     }
 }
 
@@ -112,6 +123,7 @@ pub fn show(root: Element) {
         handle: RefCell::default(),
         is_touched: Cell::new(false),
         listeners: RefCell::default(),
+        asked: RefCell::default(),
     });
     let door = Door(standing.clone());
     let handle = yew::Renderer::<Front>::with_root_and_props(root, FrontProps { door }).render();
@@ -120,26 +132,31 @@ pub fn show(root: Element) {
         let standing = standing.clone();
         Listener::at_document(name, move |_| standing.is_touched.set(true))
     };
-    let asked = standing.clone();
-    let elsewhere = Listener::at_window("hashchange", move |_| ask(&asked, None, |_| ()));
-    *standing.listeners.borrow_mut() = vec![touched("pointerdown"), touched("keydown"), elsewhere];
+    *standing.listeners.borrow_mut() = vec![touched("pointerdown"), touched("keydown")];
     yew::platform::spawn_local(async move {
         // Where it cannot be fetched now, it is tried again when something is asked.
         if let Ok(move_in) = later::house().await
             && !standing.is_touched.get()
         {
-            standing.leave(move_in, None);
+            standing.leave(move_in);
         }
     });
 }
 
-/// Goes in with what was asked; tells where that cannot be.
-fn ask(standing: &Rc<Standing>, deed: Option<Deed>, tell: impl FnOnce(String) + 'static) {
+/// Goes in with what is asked; tells where that cannot be. Then it is to be asked again.
+fn ask(standing: &Rc<Standing>, deed: Option<Deed>, tell: impl FnOnce() + 'static) {
     let standing = standing.clone();
+    if let Some(deed) = deed {
+        standing.note(deed);
+    }
     yew::platform::spawn_local(async move {
         match later::house().await {
-            Ok(move_in) => standing.leave(move_in, deed),
-            Err(why) => tell(why.to_string()),
+            Ok(move_in) => standing.leave(move_in),
+            // Why stands in the browser's console.
+            Err(_) => {
+                standing.asked.take();
+                tell();
+            }
         }
     });
 }
@@ -153,30 +170,35 @@ struct FrontProps {
 /// The first screen, of an empty yard.
 #[component]
 fn Front(props: &FrontProps) -> Html {
-    let trouble = use_state(|| None::<String>);
+    let has_failed = use_state(|| false);
     let waits = use_state(|| false);
     let state = use_state(|| Snapshot(Rc::new(State::default())));
-    let deed = {
-        let (door, trouble, waits) = (props.door.clone(), trouble.clone(), waits.clone());
-        Callback::from(move |deed: Deed| {
-            let (failed, done) = (trouble.clone(), waits.clone());
+    let go_in = {
+        let (door, has_failed, waits) = (props.door.clone(), has_failed.clone(), waits.clone());
+        Callback::from(move |deed: Option<Deed>| {
+            let (failed, done) = (has_failed.clone(), waits.clone());
             waits.set(true);
-            trouble.set(None);
-            ask(&door.0, Some(deed), move |why| {
+            has_failed.set(false);
+            ask(&door.0, deed, move || {
                 done.set(false);
-                failed.set(Some(why));
+                failed.set(true);
             });
         })
     };
+    let deed = go_in.reform(Some);
+    use_effect_with((), move |()| {
+        // Another screen is asked for by its address.
+        let elsewhere = Listener::at_window("hashchange", move |_| go_in.emit(None));
+        move || drop(elsewhere)
+    });
     use_effect_with((), |()| super::platform::theme::show(Default::default()));
     html! {
         <>
             <Bar state={(*state).clone()} />
-            if let Some(why) = &*trouble {
+            if *has_failed {
                 <div class="notices">
                     <Caution grade={Grade::Caution} title="not all of the app is here yet" role="alert" testid="front-trouble">
                         <p>{ "The rest of the app could not be fetched. What you typed is kept: find a connection and press again." }</p>
-                        <p class="small">{ why }</p>
                     </Caution>
                 </div>
             }

@@ -6,8 +6,8 @@ use super::deed::{Deed, Snapshot};
 use web_sys::Element;
 use yew::{Callback, Html};
 
-/// Moves the whole app into an element of the page, with the first thing that is asked of it.
-pub type MoveIn = fn(Element, Option<Deed>);
+/// Moves the whole app into an element of the page, with what was asked of it before it was there.
+pub type MoveIn = fn(Element, Vec<Deed>);
 
 /// Draws the screen of the address.
 pub type Draw = fn(&Snapshot, &Callback<Deed>) -> Html;
@@ -22,13 +22,6 @@ pub use wasm_split_helpers::SplitLoaderError as Unreachable;
 #[cfg(not(feature = "split"))]
 #[derive(Debug)]
 pub enum Unreachable {}
-
-#[cfg(not(feature = "split"))]
-impl core::fmt::Display for Unreachable {
-    fn fmt(&self, _: &mut core::fmt::Formatter<'_>) -> core::fmt::Result {
-        match *self {}
-    }
-}
 
 /// A function that is known by its address once its module is there.
 macro_rules! fetched {

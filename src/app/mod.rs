@@ -36,7 +36,7 @@ pub fn start() {
             match later::engine().await {
                 Ok(answer) => answer(),
                 // The page hears of it and calculates by itself.
-                Err(why) => fail(&format!("The engine could not be fetched: {why}")),
+                Err(_) => fail("The engine could not be fetched."),
             }
         });
         return;

@@ -6,7 +6,7 @@ use std::cell::Cell;
 use yew::{Callback, Html, MouseEvent, Properties, component, html, use_effect_with, use_state};
 
 use super::deed::{Deed, Snapshot};
-use super::later::{self, Draw};
+use super::later::{self, Draw, Unreachable};
 use super::parts::{Caution, Grade};
 use super::platform::focus;
 use super::route::Route;
@@ -18,11 +18,10 @@ thread_local! {
 /// Fetches the rooms, unless they are there.
 ///
 /// # Errors
-/// In words, where they cannot be fetched. It is tried again at the next call.
-pub async fn fetch() -> Result<(), String> {
+/// They cannot be fetched; why stands in the browser's console. It is tried again at the next call.
+pub async fn fetch() -> Result<(), Unreachable> {
     if DRAW.get().is_none() {
-        let draw = later::rooms().await.map_err(|why| why.to_string())?;
-        DRAW.set(Some(draw));
+        DRAW.set(Some(later::rooms().await?));
     }
     Ok(())
 }
@@ -41,7 +40,7 @@ pub struct RoomProps {
 pub fn Room(props: &RoomProps) -> Html {
     // Counts the attempts; what came of the last one.
     let attempt = use_state(|| 0_u32);
-    let outcome = use_state(|| None::<Result<(), String>>);
+    let outcome = use_state(|| None::<Result<(), Unreachable>>);
     {
         let outcome = outcome.clone();
         use_effect_with(*attempt, move |_| {
@@ -68,10 +67,9 @@ pub fn Room(props: &RoomProps) -> Html {
     html! {
         <main class="page" id="main" data-testid="room-waiting" aria-busy={outcome.is_none().to_string()}>
             <h1 id="title" tabindex="-1">{ if outcome.is_none() { "Fetching this screen…" } else { "This screen is not here yet" } }</h1>
-            if let Some(Err(why)) = &*outcome {
+            if matches!(&*outcome, Some(Err(_))) {
                 <Caution grade={Grade::Caution} title="could not be fetched" role="alert" testid="room-trouble">
                     <p>{ "This part of the app is not on the device yet. What you typed is kept. Find a connection, then try again." }</p>
-                    <p class="small">{ why.clone() }</p>
                     <div class="actions">
                         <button type="button" class="button is-main" onclick={on_again} data-testid="room-again">{ "Try again" }</button>
                         <a class="button" href={Route::Units.href()}>{ "To the units" }</a>

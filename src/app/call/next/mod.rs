@@ -39,6 +39,12 @@ pub struct NextPanelProps {
     pub on_reading: Callback<String>,
 }
 
+impl NextPanelProps {
+    fn advice(&self) -> Option<&Advice> {
+        self.assessment.as_deref()?.advice.as_ref()
+    }
+}
+
 /// The panel.
 #[component]
 pub fn NextPanel(props: &NextPanelProps) -> Html {
@@ -99,11 +105,7 @@ fn open<'a>(advice: &'a Advice, made: &[String]) -> (Option<&'a Offer>, Vec<&'a 
 /// The inside of the panel.
 #[component]
 fn Inside(props: &NextPanelProps) -> Html {
-    let Some(advice) = props
-        .assessment
-        .as_deref()
-        .and_then(|answer| answer.advice.as_ref())
-    else {
+    let Some(advice) = props.advice() else {
         return Html::default();
     };
     let made = advice
@@ -137,11 +139,7 @@ fn Inside(props: &NextPanelProps) -> Html {
 /// The checks that come after the best one.
 #[component]
 fn Others(props: &NextPanelProps) -> Html {
-    let Some(advice) = props
-        .assessment
-        .as_deref()
-        .and_then(|answer| answer.advice.as_ref())
-    else {
+    let Some(advice) = props.advice() else {
         return Html::default();
     };
     let (best, others) = open(advice, &props.made);
