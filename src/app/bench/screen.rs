@@ -2,15 +2,15 @@
 
 use super::hand_over::{HandOver, HandOverProps};
 use super::head::HeadForm;
-use super::items::ItemsForm;
+use super::items::{ItemsForm, ItemsFormProps};
 use super::layout::LayoutForm;
 use super::paste::PasteBox;
 use super::plot::{Pictures, PicturesProps};
-use super::results::Results;
+use super::results::{Results, ResultsProps};
 use super::table::PointTable;
 use super::take_over::{TakeOver, TakeOverProps};
 use crate::app::parts::{Caution, Grade, Icon, Late, Section, Shape};
-use crate::app::platform::timer::Timer;
+use crate::app::platform::{focus, timer::Timer};
 use crate::app::route::Route;
 use crate::bench::stand::{BenchReport, BenchSheet, report};
 use crate::quantity::UnitPrefs;
@@ -48,6 +48,9 @@ impl PartialEq for Told {
     }
 }
 
+/// Sections of the results and of the items: while somebody types in them, they are drawn at once.
+const RESULTS: [&str; 3] = ["bench-verdict", "bench-results", "bench-losses"];
+const ITEMS: [&str; 1] = ["bench-items"];
 /// From the last key in a cell to what the sheet comes to.
 const QUIET_MS: i32 = 150;
 
@@ -67,15 +70,19 @@ pub fn BenchScreen(props: &BenchScreenProps) -> Html {
     // Two quick edits build on one another, also between two drawings.
     let newest = use_mut_ref(|| props.visit.clone());
     newest.replace(props.visit.clone());
-    let on_edit = {
-        let on_visit = props.on_visit.clone();
+    let on_visit = use_mut_ref(|| props.on_visit.clone());
+    on_visit.replace(props.on_visit.clone());
+    // The same at every drawing: what nothing has changed for is not drawn anew.
+    let on_edit = use_memo((), move |()| {
         Callback::from(move |edit: Edit| {
             let mut visit = (**newest.borrow()).clone();
             edit(visit.bench.get_or_insert_default());
             newest.replace(Rc::new(visit.clone()));
+            let on_visit = on_visit.borrow().clone();
             on_visit.emit(visit);
         })
-    };
+    });
+    let on_edit = (*on_edit).clone();
     let sheet = props.visit.bench.clone().unwrap_or_default();
     // While cells are typed it is worked out after a quiet moment; the last answer stays until then. Whatever else is changed is
     // answered at once: what is told of a row must not be told beside another.
@@ -106,6 +113,8 @@ pub fn BenchScreen(props: &BenchScreenProps) -> Html {
         many => format!("{many} points"),
     };
     let sheet = Rc::new(sheet);
+    let within = focus::within();
+    let at_hand = |sections: &[&str]| within.iter().any(|id| sections.contains(&id.as_str()));
     html! {
         <main class="page bench" id="main" data-testid="bench-screen" aria-busy={waits.then_some("true")}>
             <div class="page-head">
@@ -126,9 +135,20 @@ pub fn BenchScreen(props: &BenchScreenProps) -> Html {
                 <PasteBox subject={sheet.subject} rows={sheet.rows.len()} on_edit={on_edit.clone()} />
                 <PointTable sheet={sheet.clone()} told={told.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
             </Section>
-            <Results sheet={sheet.clone()} told={told.clone()} unit={props.unit.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
+            <Late<Results> now={at_hand(&RESULTS)} of={ResultsProps {
+                sheet: sheet.clone(),
+                told: told.clone(),
+                unit: props.unit.clone(),
+                prefs: props.prefs.clone(),
+                on_edit: on_edit.clone(),
+            }} />
             <Late<Pictures> of={PicturesProps { told: told.clone(), sheet: sheet.clone(), prefs: props.prefs.clone() }} />
-            <ItemsForm sheet={sheet.clone()} told={told.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
+            <Late<ItemsForm> now={at_hand(&ITEMS)} of={ItemsFormProps {
+                sheet: sheet.clone(),
+                told: told.clone(),
+                prefs: props.prefs.clone(),
+                on_edit: on_edit.clone(),
+            }} />
             <Late<TakeOver> of={TakeOverProps {
                 told: told.clone(),
                 sheet: sheet.clone(),
