@@ -24,6 +24,8 @@ const WATCH: &str = "window.paceTasks = []; window.paceEvents = [];
     new PerformanceObserver((list) => { for (const e of list.getEntries()) {
         window.paceEvents.push(e.processingEnd - e.processingStart); } })
         .observe({ type: 'event', durationThreshold: 16 });";
+/// Puts the long tasks so far aside, as those of coming to a field.
+const COME: &str = "(window.paceComing ??= []).push(...window.paceTasks.splice(0)); return true;";
 /// What was typed has been drawn.
 const SEEN: &str = "requestAnimationFrame(() => requestAnimationFrame(() => arguments[0](true)));";
 
@@ -153,6 +155,9 @@ async fn type_over(rig: &Rig, what: &str, fields: &[&str], settled: &str) {
     let before = work(rig).await;
     for field in fields {
         touch(rig, field).await;
+        rig.js_async(SEEN, vec![]).await;
+        // Scrolling to a field of a long page and touching it is not typing: told apart.
+        rig.js(COME, vec![]).await;
         for key in KEYS.chars() {
             press_key(rig, key).await;
             // The next key comes when this one is seen: no thumb is faster.
@@ -202,7 +207,8 @@ async fn tell(rig: &Rig, what: &str, step: &str, per_step: f64) {
         .js(
             "const most = (list) => Math.round(Math.max(0, ...list));
              const tasks = window.paceTasks.splice(0), events = window.paceEvents.splice(0);
-             return [tasks.length, most(tasks), most(events)];",
+             const coming = (window.paceComing ?? []).splice(0);
+             return [tasks.length, most(tasks), most(events), coming.length, most(coming)];",
             vec![],
         )
         .await;
@@ -210,10 +216,12 @@ async fn tell(rig: &Rig, what: &str, step: &str, per_step: f64) {
     // Tasks are told by the clock, and other programs on the machine lengthen them; processor time is the page's own.
     println!(
         "page: {what} at {THROTTLE} times slower: {} tasks over 50 ms, the longest {} ms; longest event {} ms; {step} takes \
-         {per_step:.1} ms of processor time",
+         {per_step:.1} ms of processor time; coming to the fields: {}, the longest {} ms",
         number(0),
         number(1),
-        number(2)
+        number(2),
+        number(3),
+        number(4)
     );
 }
 
