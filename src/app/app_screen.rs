@@ -15,7 +15,7 @@ use super::deed::{Deed, Snapshot};
 use super::engine::client::Engine;
 use super::hands::Hands;
 use super::keypad::Keypad;
-use super::parts::{Icon, OwnKeys, Shape};
+use super::parts::{Icon, OwnKeys, Same, Shape};
 use super::persist::Keeper;
 use super::platform::listen::Listener;
 use super::platform::{focus, offline, persistence, theme};
@@ -26,6 +26,8 @@ use super::screens::units::Units;
 use super::shell::{Bar, Notices};
 use super::state::{Action, State};
 use crate::quantity::UnitPrefs;
+use crate::record::Visit;
+use crate::unit::Unit;
 
 /// The state at the start: what is on the shelf, and where the address points.
 fn first_state(keeper: &RefCell<Keeper>) -> State {
@@ -95,68 +97,43 @@ fn listen(hands: &Rc<Hands>) -> Vec<Option<Listener>> {
 }
 
 fn title(state: &State) -> String {
-    let name = |id: &str| state.units.get(id).map(|unit| unit.name.clone());
+    let unit = |id: &str, what: &str| {
+        let unit = state.units.get(id)?;
+        Some(if what.is_empty() {
+            unit.name.clone()
+        } else {
+            format!("{what}, {}", unit.name)
+        })
+    };
+    let visit = |id: &str, what: &str| Some(format!("{what}, {}", state.visit(id)?.1.name));
     let what = match &state.route {
         Route::Units => None,
         Route::Settings => Some("Settings".to_owned()),
         Route::Learned => Some("Learned".to_owned()),
-        Route::Wear(id) => name(id).map(|name| format!("Wear, {name}")),
-        Route::Yard(id) => state
-            .visits
-            .get(id)
-            .and_then(|visit| name(&visit.unit))
-            .map(|name| format!("Yard check, {name}")),
-        Route::Unit(id) => name(id),
-        Route::Call(id) => state
-            .visits
-            .get(id)
-            .and_then(|visit| name(&visit.unit))
-            .map(|name| format!("Call, {name}")),
-        Route::Neutral(id) => state
-            .visits
-            .get(id)
-            .and_then(|visit| name(&visit.unit))
-            .map(|name| format!("Neutral, {name}")),
-        Route::Tracking(id) => state
-            .visits
-            .get(id)
-            .and_then(|visit| name(&visit.unit))
-            .map(|name| format!("Tracking, {name}")),
-        Route::Report(id) => state
-            .visits
-            .get(id)
-            .and_then(|visit| name(&visit.unit))
-            .map(|name| format!("Report, {name}")),
         Route::Tags(_) => Some("Tags".to_owned()),
         Route::Tag(_) => Some("Read a tag".to_owned()),
-        Route::Bench(id) => state
-            .visits
-            .get(id)
-            .and_then(|visit| name(&visit.unit))
-            .map(|name| format!("Bench, {name}")),
+        Route::Unit(id) => unit(id, ""),
+        Route::Wear(id) => unit(id, "Wear"),
+        Route::Yard(id) => visit(id, "Yard check"),
+        Route::Call(id) => visit(id, "Call"),
+        Route::Neutral(id) => visit(id, "Neutral"),
+        Route::Tracking(id) => visit(id, "Tracking"),
+        Route::Report(id) => visit(id, "Report"),
+        Route::Bench(id) => visit(id, "Bench"),
     };
     what.map_or_else(|| "Lowside".to_owned(), |what| format!("{what}: Lowside"))
-}
-
-/// What was asked before the app was there. Taken once.
-#[derive(Clone)]
-struct First(Rc<RefCell<Vec<Deed>>>);
-
-impl PartialEq for First {
-    fn eq(&self, other: &Self) -> bool {
-        Rc::ptr_eq(&self.0, &other.0)
-    }
 }
 
 /// Properties of [`App`].
 #[derive(Clone, PartialEq, Properties)]
 struct AppProps {
-    first: First,
+    /// What was asked before the app was there. Taken once.
+    first: Same<RefCell<Vec<Deed>>>,
 }
 
 /// Draws the app into an element of the page and does what was asked of it first.
 pub fn move_in(root: web_sys::Element, first: Vec<Deed>) {
-    let first = First(Rc::new(RefCell::new(first)));
+    let first = Same(Rc::new(RefCell::new(first)));
     yew::Renderer::<App>::with_root_and_props(root, AppProps { first }).render();
 }
 
@@ -264,12 +241,6 @@ pub fn missing(what: &str) -> Html {
 }
 
 fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
-    let is_check = |id: &str| {
-        state
-            .visits
-            .get(id)
-            .is_some_and(|visit| visit.is_yard_check())
-    };
     match &state.route {
         Route::Units => html! { <Units state={state.clone()} deed={deed.clone()} /> },
         Route::Unit(id) => match state.units.get(id) {
@@ -278,30 +249,37 @@ fn screen(state: &Snapshot, deed: &Callback<Deed>) -> Html {
             },
             None => missing("unit"),
         },
-        Route::Call(id) if !is_check(id) => {
-            let visit = state.visits.get(id);
-            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
-                Some((visit, unit)) => {
-                    let (assessment, updating) = state.answer(id);
-                    html! {
-                        <CallScreen
-                            key={id.clone()}
-                            unit={unit.clone()}
-                            visit={visit.clone()}
-                            earlier={EarlierCalls(state.visits_before(visit))}
-                            instruments={state.instruments.clone()}
-                            prefs={state.settings.units.clone()}
-                            {assessment}
-                            {updating}
-                            on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
-                            on_unit={deed.reform(|unit| Deed::Put(Action::PutUnit(unit)))}
-                            on_instruments={deed.reform(|list| Deed::Put(Action::PutInstruments(list)))}
-                        />
-                    }
+        Route::Call(id) if !state.is_yard_check(id) => match state.visit(id) {
+            Some((visit, unit)) => {
+                let (assessment, updating) = state.answer(id);
+                html! {
+                    <CallScreen
+                        key={id.clone()}
+                        unit={unit.clone()}
+                        visit={visit.clone()}
+                        earlier={EarlierCalls(state.visits_before(visit))}
+                        instruments={state.instruments.clone()}
+                        prefs={state.settings.units.clone()}
+                        {assessment}
+                        {updating}
+                        on_visit={put_visit(deed)}
+                        on_unit={put_unit(deed)}
+                        on_instruments={deed.reform(|list| Deed::Put(Action::PutInstruments(list)))}
+                    />
                 }
-                None => missing("call"),
             }
-        }
+            None => missing("call"),
+        },
         _ => html! { <Room state={state.clone()} deed={deed.clone()} /> },
     }
+}
+
+/// An edited visit goes to the state.
+pub fn put_visit(deed: &Callback<Deed>) -> Callback<Visit> {
+    deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))
+}
+
+/// An edited unit goes to the state.
+pub fn put_unit(deed: &Callback<Deed>) -> Callback<Unit> {
+    deed.reform(|unit| Deed::Put(Action::PutUnit(unit)))
 }

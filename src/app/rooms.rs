@@ -5,7 +5,7 @@ use std::rc::Rc;
 
 use yew::{Callback, Html, html};
 
-use super::app_screen::missing;
+use super::app_screen::{missing, put_unit, put_visit};
 use super::bench::BenchScreen;
 use super::deed::{Deed, Snapshot};
 use super::neutral::NeutralScreen;
@@ -21,8 +21,7 @@ use crate::unit::Unit;
 
 /// A visit, its unit, and the other visits to that.
 fn with_others(state: &Snapshot, id: &str) -> Option<(Rc<Unit>, Rc<Visit>, Others)> {
-    let visit = state.visits.get(id)?;
-    let unit = state.units.get(&visit.unit)?;
+    let (visit, unit) = state.visit(id)?;
     let mut others = state.visits_of(&visit.unit);
     others.retain(|other| other.id != visit.id);
     Some((unit.clone(), visit.clone(), Others(others)))
@@ -38,7 +37,7 @@ fn yard(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Html> {
             {others}
             instruments={state.instruments.clone()}
             prefs={state.settings.units.clone()}
-            on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
+            on_visit={put_visit(deed)}
         />
     })
 }
@@ -53,115 +52,89 @@ fn check_report(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Htm
             {others}
             instruments={state.instruments.clone()}
             prefs={state.settings.units.clone()}
-            on_say={deed.reform(|words| Deed::Put(Action::Say(words)))}
+            on_say={say(deed)}
         />
     })
 }
 
+fn wear(state: &Snapshot, id: &str) -> Option<Html> {
+    let unit = state.units.get(id)?;
+    Some(html! {
+        <WearScreen
+            key={format!("{id}-wear")}
+            unit={unit.clone()}
+            visits={Others(state.visits_of(id))}
+            instruments={state.instruments.clone()}
+            prefs={state.settings.units.clone()}
+        />
+    })
+}
+
+fn report(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Html> {
+    let (visit, unit) = state.visit(id)?;
+    let (assessment, updating) = state.answer(id);
+    Some(html! {
+        <ReportScreen
+            key={format!("{id}-report")}
+            unit={unit.clone()}
+            visit={visit.clone()}
+            instruments={state.instruments.clone()}
+            prefs={state.settings.units.clone()}
+            {assessment}
+            {updating}
+            trouble={state.engine_trouble.clone()}
+            on_visit={put_visit(deed)}
+            on_say={say(deed)}
+        />
+    })
+}
+
+/// The sheets of a call: neutral, tracking, bench.
+fn sheet(state: &Snapshot, deed: &Callback<Deed>, id: &str) -> Option<Html> {
+    let (visit, unit) = state.visit(id)?;
+    let (unit, visit, prefs) = (unit.clone(), visit.clone(), state.settings.units.clone());
+    let on_visit = put_visit(deed);
+    Some(match &state.route {
+        Route::Neutral(_) => {
+            html! { <NeutralScreen key={format!("{id}-neutral")} {unit} {visit} {prefs} {on_visit} /> }
+        }
+        Route::Tracking(_) => {
+            html! { <TrackingScreen key={id.to_owned()} {unit} {visit} {prefs} {on_visit} /> }
+        }
+        _ => {
+            let on_unit = put_unit(deed);
+            html! { <BenchScreen key={format!("{id}-bench")} {unit} {visit} {prefs} {on_visit} {on_unit} /> }
+        }
+    })
+}
+
+fn say(deed: &Callback<Deed>) -> Callback<String> {
+    deed.reform(|words| Deed::Put(Action::Say(words)))
+}
+
 /// The screen of the address, where it is one of these.
 pub fn draw(state: &Snapshot, deed: &Callback<Deed>) -> Html {
+    let or_missing = |screen: Option<Html>, what: &str| screen.unwrap_or_else(|| missing(what));
     match &state.route {
         // Drawn by the house itself.
         Route::Units | Route::Unit(_) => Html::default(),
         Route::Settings => html! { <SettingsScreen state={state.clone()} deed={deed.clone()} /> },
         Route::Learned => html! { <LearnedScreen state={state.clone()} deed={deed.clone()} /> },
-        Route::Wear(id) => match state.units.get(id) {
-            Some(unit) => html! {
-                <WearScreen
-                    key={format!("{id}-wear")}
-                    unit={unit.clone()}
-                    visits={Others(state.visits_of(id))}
-                    instruments={state.instruments.clone()}
-                    prefs={state.settings.units.clone()}
-                />
-            },
-            None => missing("unit"),
-        },
-        Route::Yard(id) => yard(state, deed, id).unwrap_or_else(|| missing("yard check")),
+        Route::Wear(id) => or_missing(wear(state, id), "unit"),
         // A yard check is no call: whoever links to it as one comes to its sheet.
-        Route::Call(id) => yard(state, deed, id).unwrap_or_else(|| missing("yard check")),
+        Route::Yard(id) | Route::Call(id) => or_missing(yard(state, deed, id), "yard check"),
         Route::Tags(unit) => html! {
             <TagSheet key={unit.clone().unwrap_or_default()} unit={unit.clone()} state={state.clone()} />
         },
         Route::Tag(scanned) => html! {
             <TagReader key={scanned.clone()} scanned={scanned.clone()} state={state.clone()} deed={deed.clone()} />
         },
-        Route::Report(id)
-            if state
-                .visits
-                .get(id)
-                .is_some_and(|visit| visit.is_yard_check()) =>
-        {
-            check_report(state, deed, id).unwrap_or_else(|| missing("yard check"))
+        Route::Report(id) if state.is_yard_check(id) => {
+            or_missing(check_report(state, deed, id), "yard check")
         }
-        Route::Report(id) => {
-            let visit = state.visits.get(id);
-            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
-                Some((visit, unit)) => {
-                    let (assessment, updating) = state.answer(id);
-                    html! {
-                        <ReportScreen
-                            key={format!("{id}-report")}
-                            unit={unit.clone()}
-                            visit={visit.clone()}
-                            instruments={state.instruments.clone()}
-                            prefs={state.settings.units.clone()}
-                            {assessment}
-                            {updating}
-                            trouble={state.engine_trouble.clone()}
-                            on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
-                            on_say={deed.reform(|words| Deed::Put(Action::Say(words)))}
-                        />
-                    }
-                }
-                None => missing("call"),
-            }
-        }
-        Route::Neutral(id) => {
-            let visit = state.visits.get(id);
-            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
-                Some((visit, unit)) => html! {
-                    <NeutralScreen
-                        key={format!("{id}-neutral")}
-                        unit={unit.clone()}
-                        visit={visit.clone()}
-                        prefs={state.settings.units.clone()}
-                        on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
-                    />
-                },
-                None => missing("call"),
-            }
-        }
-        Route::Bench(id) => {
-            let visit = state.visits.get(id);
-            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
-                Some((visit, unit)) => html! {
-                    <BenchScreen
-                        key={format!("{id}-bench")}
-                        unit={unit.clone()}
-                        visit={visit.clone()}
-                        prefs={state.settings.units.clone()}
-                        on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
-                        on_unit={deed.reform(|unit| Deed::Put(Action::PutUnit(unit)))}
-                    />
-                },
-                None => missing("call"),
-            }
-        }
-        Route::Tracking(id) => {
-            let visit = state.visits.get(id);
-            match visit.and_then(|visit| Some((visit, state.units.get(&visit.unit)?))) {
-                Some((visit, unit)) => html! {
-                    <TrackingScreen
-                        key={id.clone()}
-                        unit={unit.clone()}
-                        visit={visit.clone()}
-                        prefs={state.settings.units.clone()}
-                        on_visit={deed.reform(|visit| Deed::Put(Action::PutVisit(Box::new(visit))))}
-                    />
-                },
-                None => missing("call"),
-            }
+        Route::Report(id) => or_missing(report(state, deed, id), "call"),
+        Route::Neutral(id) | Route::Tracking(id) | Route::Bench(id) => {
+            or_missing(sheet(state, deed, id), "call")
         }
     }
 }

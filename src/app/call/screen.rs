@@ -6,7 +6,7 @@ use super::alerts::{LeadStatus, StopWork, runs_on};
 use super::causes::{Causes, CausesProps};
 use super::cautions;
 use super::change::Change;
-use super::close::{ClosePanel, ClosePanelProps};
+use super::close::{self, ClosePanel, ClosePanelProps};
 use super::edits::use_edits;
 use super::entry;
 use super::entry_field::field_id;
@@ -45,8 +45,6 @@ use yew::{
 };
 use yew::{use_effect_with, use_memo, use_mut_ref, use_state};
 
-/// DOM id of the panel that closes the call.
-const CLOSE: &str = "close";
 /// A minute, ms.
 const MINUTE_MS: i32 = 60_000;
 
@@ -245,7 +243,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                 { closed(visit) }
                 <StopWork runs_on={runs_on(visit)} assessment={answer.clone()} />
                 <nav class="jump" aria-label="On this screen">
-                    { for [("seen", "Seen"), ("next", "Next"), ("quick", "Usual"), ("readings", "Read"), ("add", "Add"), ("close", "Close")].map(|(id, words)| html! {
+                    { for [("seen", "Seen"), ("next", "Next"), ("quick", "Usual"), ("readings", "Read"), ("add", "Add"), (close::ID, "Close")].map(|(id, words)| html! {
                         <button key={id} type="button" class="jump-to" onclick={jump(id)}>{ words }</button>
                     }) }
                 </nav>
@@ -316,7 +314,7 @@ pub fn CallScreen(props: &CallScreenProps) -> Html {
                     on_change={on_change.clone()}
                 />
                 { rooms::links(&props.unit, visit) }
-                <Late<ClosePanel> now={at_hand.iter().any(|id| id == CLOSE)} of={ClosePanelProps {
+                <Late<ClosePanel> now={at_hand.iter().any(|id| id == close::ID)} of={ClosePanelProps {
                     visit: visit.clone(),
                     sides,
                     assessment: answer,

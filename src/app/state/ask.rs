@@ -60,6 +60,19 @@ impl State {
                 .any(|id| demo::is_demo(id) && !is_own_call_on(id))
     }
 
+    /// A visit with its unit, where both are here.
+    pub fn visit(&self, id: &str) -> Option<(&Rc<Visit>, &Rc<Unit>)> {
+        let visit = self.visits.get(id)?;
+        Some((visit, self.units.get(&visit.unit)?))
+    }
+
+    /// True where the visit of this id is a yard check.
+    pub fn is_yard_check(&self, id: &str) -> bool {
+        self.visits
+            .get(id)
+            .is_some_and(|visit| visit.is_yard_check())
+    }
+
     /// Visits of a unit, latest first.
     pub fn visits_of(&self, unit: &str) -> Vec<Rc<Visit>> {
         let mut visits: Vec<_> = self

@@ -15,6 +15,9 @@ use crate::record::{Closing, PutBack, Visit};
 use std::rc::Rc;
 use yew::{Callback, Html, MouseEvent, Properties, component, html};
 
+/// DOM id of the panel.
+pub const ID: &str = "close";
+
 /// Properties of [`ClosePanel`].
 #[derive(Clone, PartialEq, Properties)]
 pub struct ClosePanelProps {
@@ -34,7 +37,7 @@ pub fn ClosePanel(props: &ClosePanelProps) -> Html {
     let visit = &props.visit;
     let open = put_back::open(visit);
     html! {
-        <section class="panel close-call" aria-labelledby="close-title" id="close" tabindex="-1" data-testid="close">
+        <section class="panel close-call" aria-labelledby="close-title" id={ID} tabindex="-1" data-testid="close">
             <h2 id="close-title">
                 { if visit.closed.is_some() { "This call is closed" } else { "Close the call" } }
             </h2>
