@@ -4,19 +4,22 @@
 //! Whoever has been here before comes straight into the house: their device has all of it.
 
 use std::cell::{Cell, RefCell};
+use std::mem::discriminant;
 use std::rc::Rc;
 
 use web_sys::{Element, Window};
-use yew::{AppHandle, Callback, Html, Properties, component, html, use_effect_with, use_state};
+use yew::{
+    AppHandle, Callback, Event, Html, Properties, component, html, use_effect_with, use_state,
+};
 
 use super::deed::{Deed, Snapshot};
 use super::later;
-use super::parts::{Caution, Grade};
+use super::parts::{Caution, Grade, Same};
 use super::platform::listen::Listener;
 use super::route::Route;
 use super::screens::units::FirstSteps;
 use super::shell::Bar;
-use super::state::State;
+use super::state::{Action, State};
 use crate::store::PREFIX;
 
 /// Set on the page while nothing can be drawn before the house has come.
@@ -86,13 +89,17 @@ struct Standing {
 }
 
 impl Standing {
-    /// Takes note of what is asked. Pressed twice in impatience, one unit is wanted and not two.
+    /// Takes note of what is asked: the latest of each kind. Pressed twice in impatience, one unit is wanted and not two.
     fn note(&self, deed: Deed) {
         let mut asked = self.asked.borrow_mut();
-        if matches!(deed, Deed::NewUnit { .. }) {
-            asked.retain(|before| !matches!(before, Deed::NewUnit { .. }));
-        }
+        asked.retain(|before| discriminant(before) != discriminant(&deed));
         asked.push(deed);
+    }
+
+    /// It could not be done. What is to be pressed again is forgotten; settings stand on the screen as they were chosen.
+    fn put_off(&self) {
+        let mut asked = self.asked.borrow_mut();
+        asked.retain(|deed| matches!(deed, Deed::Put(_)));
     }
 
     /// Leaves the front for the house, with all that was asked; a front that is gone already stays gone.
@@ -106,16 +113,6 @@ impl Standing {
     }
 }
 
-/// A handle on the front as a property.
-#[derive(Clone)]
-struct Door(Rc<Standing>);
-
-impl PartialEq for Door {
-    fn eq(&self, other: &Self) -> bool {
-        Rc::ptr_eq(&self.0, &other.0)
-    }
-}
-
 /// Shows the front, fetches the house, and moves in when nobody is disturbed by it.
 pub fn show(root: Element) {
     let standing = Rc::new(Standing {
@@ -125,7 +122,7 @@ pub fn show(root: Element) {
         listeners: RefCell::default(),
         asked: RefCell::default(),
     });
-    let door = Door(standing.clone());
+    let door = Same(standing.clone());
     let handle = yew::Renderer::<Front>::with_root_and_props(root, FrontProps { door }).render();
     *standing.handle.borrow_mut() = Some(handle);
     let touched = |name| {
@@ -154,7 +151,7 @@ fn ask(standing: &Rc<Standing>, deed: Option<Deed>, tell: impl FnOnce() + 'stati
             Ok(move_in) => standing.leave(move_in),
             // Why stands in the browser's console.
             Err(_) => {
-                standing.asked.take();
+                standing.put_off();
                 tell();
             }
         }
@@ -164,7 +161,7 @@ fn ask(standing: &Rc<Standing>, deed: Option<Deed>, tell: impl FnOnce() + 'stati
 /// Properties of [`Front`].
 #[derive(Clone, PartialEq, Properties)]
 struct FrontProps {
-    door: Door,
+    door: Same<Standing>,
 }
 
 /// The first screen, of an empty yard.
@@ -185,7 +182,20 @@ fn Front(props: &FrontProps) -> Html {
             });
         })
     };
-    let deed = go_in.reform(Some);
+    let deed = {
+        let (go_in, state) = (go_in.clone(), state.clone());
+        Callback::from(move |deed: Deed| {
+            // Shown at once, and what is chosen next builds on it.
+            if let Deed::Put(Action::PutSettings(settings)) = &deed {
+                state.set(Snapshot(Rc::new(State {
+                    settings: Rc::new(settings.clone()),
+                    ..State::default()
+                })));
+            }
+            go_in.emit(Some(deed));
+        })
+    };
+    let on_data = go_in.reform(|_: Event| None);
     use_effect_with((), move |()| {
         // Another screen is asked for by its address.
         let elsewhere = Listener::at_window("hashchange", move |_| go_in.emit(None));
@@ -214,7 +224,8 @@ fn Front(props: &FrontProps) -> Html {
             <main class="page" id="main" data-testid="front-screen" aria-busy={waits.to_string()}>
                 <div class="page-head"><h1 id="title" tabindex="-1">{ "Units" }</h1></div>
                 <FirstSteps state={(*state).clone()} {deed}>
-                    <details class="fold panel">
+                    // Whoever opens it wants in: the house has what belongs here.
+                    <details class="fold panel" ontoggle={on_data}>
                         <summary>{ "Your data, as a file" }</summary>
                         <p>{ "The rest of the app is still being fetched." }</p>
                     </details>

@@ -12,6 +12,7 @@ use super::persist::Keeper;
 use super::platform::{clock, focus, ids, offline, persistence, timer::Timer};
 use super::route::Route;
 use super::screens::unit::usual_paths;
+use super::screens::units::forget_draft;
 use super::state::{About, Action, Question, Save, State, Written};
 use super::undo::Undo;
 use crate::record::{IdOf, Settings, Visit};
@@ -299,6 +300,7 @@ impl Hands {
         };
         let id = unit.id.clone();
         self.put(Action::PutUnit(unit));
+        forget_draft();
         if start {
             self.start_call(id);
         } else {

@@ -103,21 +103,29 @@ async fn a_stopped_app_keeps_what_was_typed() {
     rig.close().await;
 }
 
-/// On a first visit the first screen stands before the rest of the app has come. Where that breaks off, what was typed stays, and
-/// pressing again goes on.
-#[tokio::test]
-async fn a_first_screen_waits_for_the_rest_of_the_app() {
+/// What stands in the field for the name.
+const NAME: &str = "return document.querySelector('[data-testid=\"new-unit-name\"]').value;";
+
+/// A first visit on which nothing comes after the first screen, until the site is mended.
+async fn first_screen_alone() -> Rig {
     let rig = Rig::new(PHONE).await;
     let house = rig.site.file_below("snippets", "split_house.wasm");
     rig.site.break_off(&house);
     rig.load().await;
     rig.by_id("front-screen").await;
+    rig
+}
+
+/// On a first visit the first screen stands before the rest of the app has come. Where that breaks off, what was typed stays, and
+/// pressing again goes on.
+#[tokio::test]
+async fn a_first_screen_waits_for_the_rest_of_the_app() {
+    let rig = first_screen_alone().await;
     rig.fill("new-unit-name", "T-99").await;
     rig.click_text("Roller").await;
     rig.click("start-call").await;
     rig.by_id("front-trouble").await;
-    let name = "return document.querySelector('[data-testid=\"new-unit-name\"]').value;";
-    assert_eq!(rig.js(name, vec![]).await, "T-99");
+    assert_eq!(rig.js(NAME, vec![]).await, "T-99");
     look(&rig, "front-trouble", PHONE).await;
 
     rig.site.mend();
@@ -130,10 +138,7 @@ async fn a_first_screen_waits_for_the_rest_of_the_app() {
 /// Nothing but the first screen's own files is needed for it.
 #[tokio::test]
 async fn what_is_typed_on_the_first_screen_goes_along_into_the_app() {
-    let rig = Rig::new(PHONE).await;
-    let house = rig.site.file_below("snippets", "split_house.wasm");
-    rig.site.break_off(&house);
-    rig.load().await;
+    let rig = first_screen_alone().await;
     rig.fill("new-unit-name", "T-98").await;
     rig.site.mend();
     // Another screen is asked for by its address; coming back, the name still stands.
@@ -141,8 +146,7 @@ async fn what_is_typed_on_the_first_screen_goes_along_into_the_app() {
     rig.by_id("settings-screen").await;
     rig.go("/units").await;
     rig.by_id("units-screen").await;
-    let name = "return document.querySelector('[data-testid=\"new-unit-name\"]').value;";
-    assert_eq!(rig.js(name, vec![]).await, "T-98");
+    assert_eq!(rig.js(NAME, vec![]).await, "T-98");
 }
 
 /// The road call works while the rest of the first download has broken off; a screen that has not come says so and how to go on.
@@ -160,6 +164,24 @@ async fn a_screen_that_did_not_come_is_fetched_when_it_is_asked_for_again() {
     rig.site.mend();
     rig.click("room-again").await;
     rig.by_id("settings-screen").await;
+}
+
+/// What is chosen on the first screen is shown at once and goes along, also what was chosen before the connection was back; and
+/// whoever opens the fold for files comes to where they are taken in.
+#[tokio::test]
+async fn what_is_chosen_on_the_first_screen_goes_along_into_the_app() {
+    let rig = first_screen_alone().await;
+    rig.fill("new-unit-name", "T-96").await;
+    rig.click("cautions-read").await;
+    rig.by_id("front-trouble").await;
+    assert!(!rig.has("general-caution").await, "it was read");
+    rig.site.mend();
+    let open = "document.querySelector('details.fold').open = true; return true;";
+    rig.js(open, vec![]).await;
+    rig.by_id("units-screen").await;
+    assert!(!rig.has("general-caution").await, "it was read before");
+    assert_eq!(rig.js(NAME, vec![]).await, "T-96");
+    assert!(rig.has("data-fold").await);
 }
 
 /// Messages sent before the worker is up are neither lost nor put out of order.

@@ -7,7 +7,7 @@ mod welcome;
 
 pub use self::card::{closing_words, standing_words, yard_words};
 pub use self::first_steps::FirstSteps;
-pub use self::new_unit::class_options;
+pub use self::new_unit::{class_options, forget_draft};
 
 use yew::{AttrValue, Callback, Html, MouseEvent, Properties, component, html, use_state};
 

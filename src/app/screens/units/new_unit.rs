@@ -34,6 +34,11 @@ thread_local! {
     static DRAFT: RefCell<(String, Option<MachineClass>)> = const { RefCell::new((String::new(), None)) };
 }
 
+/// The draft has become a unit, or is not wanted.
+pub fn forget_draft() {
+    DRAFT.take();
+}
+
 /// The form.
 #[component]
 pub fn NewUnit(props: &NewUnitProps) -> Html {
@@ -49,7 +54,6 @@ pub fn NewUnit(props: &NewUnitProps) -> Html {
                 asked_too_soon.set(true);
                 return;
             };
-            DRAFT.take();
             deed.emit(Deed::NewUnit {
                 name: (*name).clone(),
                 class,
@@ -85,7 +89,7 @@ pub fn NewUnit(props: &NewUnitProps) -> Html {
     let close = props
         .on_close
         .clone()
-        .map(|on_close| on_close.reform(|_: MouseEvent| drop(DRAFT.take())));
+        .map(|on_close| on_close.reform(|_: MouseEvent| forget_draft()));
     html! {
         <form class="panel new-unit" onsubmit={on_submit} aria-labelledby="new-unit-title" data-testid="new-unit-form">
             <div class="stack is-tight">
