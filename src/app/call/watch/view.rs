@@ -108,7 +108,7 @@ pub fn WatchView(props: &WatchViewProps) -> Html {
                     </p>
                 </div>
                 <button type="button" class="button is-quiet watch-close" onclick={on_close} data-testid="watch-close">
-                    <Icon shape={Shape::Cross} /><span class="watch-close-word">{ "Close" }</span>
+                    <Icon shape={Shape::Cross} /><span class="watch-word">{ "Close" }</span>
                 </button>
             </header>
             <p class="watch-safety" data-testid="watch-safety"><Icon shape={Shape::Warning} /><span>{ watch::safety(condition) }</span></p>
@@ -124,15 +124,17 @@ pub fn WatchView(props: &WatchViewProps) -> Html {
                 </button>
             </div>
             <footer class="watch-foot">
-                <div class="watch-keys">
-                    <button type="button" class="button watch-key" disabled={place == 0} onclick={go(place.saturating_sub(1))} data-testid="watch-back">
-                        <Icon shape={Shape::Back} />{ "Back" }
-                    </button>
-                    <p class="watch-count" role="status" data-testid="watch-count">{ format!("{} of {}", place + 1, last + 1) }</p>
-                    <button type="button" class="button watch-key" disabled={place == last} onclick={go((place + 1).min(last))} data-testid="watch-next">
-                        { "Next" }<Icon shape={Shape::Forward} />
-                    </button>
-                </div>
+                if last > 0 {
+                    <div class="watch-keys">
+                        <button type="button" class="button watch-key" disabled={place == 0} onclick={go(place.saturating_sub(1))} data-testid="watch-back">
+                            <Icon shape={Shape::Back} /><span class="watch-word">{ "Back" }</span>
+                        </button>
+                        <p class="watch-count" role="status" data-testid="watch-count">{ format!("{} of {}", place + 1, last + 1) }</p>
+                        <button type="button" class="button watch-key" disabled={place == last} onclick={go((place + 1).min(last))} data-testid="watch-next">
+                            <span class="watch-word">{ "Next" }</span><Icon shape={Shape::Forward} />
+                        </button>
+                    </div>
+                }
                 <button type="button" class="button is-main is-wide watch-write" onclick={props.on_write.reform(|_: MouseEvent| ())} data-testid="watch-write">
                     { "Write them down" }
                 </button>
@@ -153,10 +155,10 @@ fn target(props: &WatchViewProps, now: &Watched) -> Html {
         .filter(|window| window.low.is_finite() && window.high.is_finite())
     else {
         return html! { <>
-            <p class="watch-band" data-testid="watch-words">{ "Nothing foretold here: read what stands." }</p>
             if is_held {
                 <p class="watch-stop" data-testid="watch-stop">{ stop_at(&props.unit, &props.prefs) }</p>
             }
+            <p class="watch-band" data-testid="watch-words">{ "Nothing foretold here: read what stands." }</p>
             <p class="watch-instrument">{ on }</p>
         </> };
     };
