@@ -7,6 +7,7 @@ use std::cell::{Cell, RefCell};
 use std::mem::discriminant;
 use std::rc::Rc;
 
+use wasm_bindgen::JsCast;
 use web_sys::{Element, Window};
 use yew::{
     AppHandle, Callback, Event, Html, Properties, component, html, use_effect_with, use_state,
@@ -113,6 +114,17 @@ impl Standing {
     }
 }
 
+/// True where a link was pressed that leads to another screen whose address stands there already: no change of address will follow.
+fn is_asked_again(event: &Event) -> bool {
+    let here = web_sys::window().and_then(|window| window.location().hash().ok());
+    let link = event
+        .target()
+        .and_then(|target| target.dyn_into::<Element>().ok())
+        .and_then(|element| element.closest("a[href]").ok().flatten())
+        .and_then(|link| link.get_attribute("href"));
+    here.is_some_and(|here| link.as_deref() == Some(&here) && Route::read(&here) != Route::Units)
+}
+
 /// Shows the front, fetches the house, and moves in when nobody is disturbed by it.
 pub fn show(root: Element) {
     let standing = Rc::new(Standing {
@@ -198,8 +210,16 @@ fn Front(props: &FrontProps) -> Html {
     let on_data = go_in.reform(|_: Event| None);
     use_effect_with((), move |()| {
         // Another screen is asked for by its address.
-        let elsewhere = Listener::at_window("hashchange", move |_| go_in.emit(None));
-        move || drop(elsewhere)
+        let elsewhere = {
+            let go_in = go_in.clone();
+            Listener::at_window("hashchange", move |_| go_in.emit(None))
+        };
+        let again = Listener::at_document("click", move |event| {
+            if is_asked_again(&event) {
+                go_in.emit(None);
+            }
+        });
+        move || drop((elsewhere, again))
     });
     use_effect_with((), |()| super::platform::theme::show(Default::default()));
     html! {

@@ -149,6 +149,17 @@ async fn what_is_typed_on_the_first_screen_goes_along_into_the_app() {
     assert_eq!(rig.js(NAME, vec![]).await, "T-98");
 }
 
+/// A link whose screen did not come is pressed again: the address stands there already, and it is followed all the same.
+#[tokio::test]
+async fn a_link_pressed_again_on_the_first_screen_is_followed() {
+    let rig = first_screen_alone().await;
+    rig.click("settings-link").await;
+    rig.by_id("front-trouble").await;
+    rig.site.mend();
+    rig.click("settings-link").await;
+    rig.by_id("settings-screen").await;
+}
+
 /// The road call works while the rest of the first download has broken off; a screen that has not come says so and how to go on.
 #[tokio::test]
 async fn a_screen_that_did_not_come_is_fetched_when_it_is_asked_for_again() {
