@@ -11,6 +11,9 @@ use crate::quantity::{Measure, Unit, UnitPrefs};
 use std::rc::Rc;
 use yew::{Callback, Html, Properties, component, html};
 
+/// Id of the section.
+pub const SECTION: &str = "bench-items";
+
 /// Properties of [`ItemsForm`].
 #[derive(Clone, PartialEq, Properties)]
 pub struct ItemsFormProps {
@@ -165,7 +168,7 @@ pub fn ItemsForm(props: &ItemsFormProps) -> Html {
         })
         .count();
     html! {
-        <Section id="bench-items" title="The rest of the sheet" state={format!("{done} of {} answered", items.len())}>
+        <Section id={SECTION} title="The rest of the sheet" state={format!("{done} of {} answered", items.len())}>
             <ul class="bench-items">{ for items.into_iter().map(|item| item_row(props, item)) }</ul>
         </Section>
     }

@@ -17,6 +17,12 @@ use std::collections::BTreeSet;
 use std::rc::Rc;
 use yew::{Callback, Html, Properties, component, html};
 
+const VERDICT: &str = "bench-verdict";
+const EFFICIENCIES: &str = "bench-results";
+const LOSSES: &str = "bench-losses";
+/// Ids of the sections that stand here.
+pub const SECTIONS: [&str; 3] = [VERDICT, EFFICIENCIES, LOSSES];
+
 /// Properties of [`Results`].
 #[derive(Clone, PartialEq, Properties)]
 pub struct ResultsProps {
@@ -39,18 +45,18 @@ pub fn Results(props: &ResultsProps) -> Html {
     let verdict = report.verdict();
     let state = verdict.map_or("nothing judged yet", Decision::words);
     html! { <>
-        <Section id="bench-verdict" title="Verdict" {state} is_open=true>
+        <Section id={VERDICT} title="Verdict" {state} is_open=true>
             { judged(props, verdict) }
             <LimitsForm sheet={props.sheet.clone()} told={props.told.clone()} prefs={props.prefs.clone()} on_edit={props.on_edit.clone()} />
         </Section>
         if !report.points.is_empty() {
-            <Section id="bench-results" title="Efficiencies" is_open=true>
+            <Section id={EFFICIENCIES} title="Efficiencies" is_open=true>
                 { displacement(props) }
                 { table(props) }
                 { remarks(props) }
             </Section>
             if props.sheet.subject != Subject::Transmission {
-                <Section id="bench-losses" title="Losses" is_open=true>
+                <Section id={LOSSES} title="Losses" is_open=true>
                     { losses(&report.losses, props.prefs.mark()) }
                     { grown_losses(props) }
                     { points_to(&report.losses) }

@@ -2,11 +2,11 @@
 
 use super::hand_over::{HandOver, HandOverProps};
 use super::head::HeadForm;
-use super::items::{ItemsForm, ItemsFormProps};
+use super::items::{self, ItemsForm, ItemsFormProps};
 use super::layout::LayoutForm;
 use super::paste::PasteBox;
 use super::plot::{Pictures, PicturesProps};
-use super::results::{Results, ResultsProps};
+use super::results::{self, Results, ResultsProps};
 use super::table::PointTable;
 use super::take_over::{TakeOver, TakeOverProps};
 use crate::app::parts::{Caution, Grade, Icon, Late, Section, Shape};
@@ -48,9 +48,6 @@ impl PartialEq for Told {
     }
 }
 
-/// Sections of the results and of the items: while somebody types in them, they are drawn at once.
-const RESULTS: [&str; 3] = ["bench-verdict", "bench-results", "bench-losses"];
-const ITEMS: [&str; 1] = ["bench-items"];
 /// From the last key in a cell to what the sheet comes to.
 const QUIET_MS: i32 = 150;
 
@@ -114,6 +111,7 @@ pub fn BenchScreen(props: &BenchScreenProps) -> Html {
     };
     let sheet = Rc::new(sheet);
     let within = focus::within();
+    // Where somebody types, the part is drawn at once.
     let at_hand = |sections: &[&str]| within.iter().any(|id| sections.contains(&id.as_str()));
     html! {
         <main class="page bench" id="main" data-testid="bench-screen" aria-busy={waits.then_some("true")}>
@@ -135,7 +133,7 @@ pub fn BenchScreen(props: &BenchScreenProps) -> Html {
                 <PasteBox subject={sheet.subject} rows={sheet.rows.len()} on_edit={on_edit.clone()} />
                 <PointTable sheet={sheet.clone()} told={told.clone()} prefs={props.prefs.clone()} on_edit={on_edit.clone()} />
             </Section>
-            <Late<Results> now={at_hand(&RESULTS)} of={ResultsProps {
+            <Late<Results> now={at_hand(&results::SECTIONS)} of={ResultsProps {
                 sheet: sheet.clone(),
                 told: told.clone(),
                 unit: props.unit.clone(),
@@ -143,7 +141,7 @@ pub fn BenchScreen(props: &BenchScreenProps) -> Html {
                 on_edit: on_edit.clone(),
             }} />
             <Late<Pictures> of={PicturesProps { told: told.clone(), sheet: sheet.clone(), prefs: props.prefs.clone() }} />
-            <Late<ItemsForm> now={at_hand(&ITEMS)} of={ItemsFormProps {
+            <Late<ItemsForm> now={at_hand(&[items::SECTION])} of={ItemsFormProps {
                 sheet: sheet.clone(),
                 told: told.clone(),
                 prefs: props.prefs.clone(),
