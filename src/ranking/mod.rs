@@ -2,7 +2,8 @@
 //!
 //! p(cause | readings) = base rate × ∫∫ likelihood d(severity) d(scatter), normalised. Severity is summed over nodes; the scatter
 //! that all causes share (settings, leakages, oil, instrument biases) is integrated in closed form at each node through the
-//! circuit's own derivatives; nodes that carry weight are linearised again at their own posterior mean.
+//! circuit's own derivatives; nodes that carry weight, and the best of every other cause, are linearised again at their own
+//! posterior mean.
 
 mod accuracy;
 mod assess;

@@ -1,5 +1,5 @@
 //! From data to the posterior over the catalogue: nodes over severity and builds, scatter integrated in closed form at each
-//! node, and the nodes that carry weight linearised again at their own posterior mean.
+//! node, and the nodes that carry weight, with the best of every other cause, linearised again at their own posterior mean.
 
 use super::belief::Belief;
 use super::datum::Data;
@@ -21,6 +21,12 @@ use std::collections::BTreeMap;
 const HEAVY: f64 = 5e-4;
 /// Most nodes that are linearised again.
 const MOST_AGAIN: usize = 400;
+/// How little the best node of a cause may weigh (natural log of its share of all weight) and still be linearised again. In the assay
+/// more nodes of a cause, or lighter ones, are no better.
+const IN_REACH: f64 = 40.0;
+/// Steps that such a node may take, and the move of its posterior mean (standard deviations) below which it is at rest.
+const STEPS: usize = 2;
+const AT_REST: f64 = 0.5;
 /// Largest change of any probability in a round that counts as settled.
 const SETTLED: f64 = 0.01;
 /// Largest step (standard deviations) to which a node is linearised again.
@@ -63,6 +69,8 @@ pub(super) struct Held {
     /// As first predicted, in the middle of the scatter, and the change across the severity cell.
     first: Vec<f64>,
     cell: Vec<f64>,
+    /// It had its turn as the best of its cause.
+    was_tried: bool,
     /// Where it is linearised (empty: the middle), and what it predicts there.
     pub centre: Vec<f64>,
     pub prediction: Prediction,
@@ -301,7 +309,7 @@ fn shares(held: &[Held], priors: &[f64]) -> Vec<f64> {
     out
 }
 
-/// Linearises what carries weight again until the shares stand still; returns their last change.
+/// Linearises again until the shares stand still; returns their last change.
 fn settle(
     bench: &Bench,
     data: &Data,
@@ -375,6 +383,7 @@ fn hold(cause: usize, node: Node, p: Prediction, data: &Data, swap: f64) -> Opti
         mean: p.mean.clone(),
         first: p.mean.clone(),
         cell: p.across_cell(),
+        was_tried: false,
         centre: Vec::new(),
         prediction: p,
     })
@@ -389,7 +398,41 @@ pub(super) fn means_at_the_middle(p: &Prediction, centre: &[f64]) -> Vec<f64> {
         .collect()
 }
 
-/// Linearises the nodes that carry weight again, each at its own posterior mean.
+/// The nodes that are linearised again, heaviest first, and whether they carry weight: those that do, and the best one of every cause in
+/// reach. Far from where the readings put it a cause fits worse than it is, and by its weight alone it would never get its turn.
+fn in_turn(held: &[Held], priors: &[f64]) -> Vec<(usize, bool)> {
+    let shares = node_shares(held, priors);
+    let mut order: Vec<usize> = (0..held.len()).collect();
+    order.sort_by(|a, b| shares[*b].total_cmp(&shares[*a]).then(a.cmp(b)));
+    let mut had_one = vec![false; priors.len()];
+    let mut turns = Vec::new();
+    for i in order {
+        let is_best = !core::mem::replace(&mut had_one[held[i].cause], true);
+        let is_heavy = shares[i] > math::ln(HEAVY) && turns.len() < MOST_AGAIN;
+        if is_heavy || is_best && shares[i] > -IN_REACH {
+            turns.push((i, is_heavy));
+        }
+    }
+    turns
+}
+
+/// Where a node is linearised again: at its posterior mean, as far as a step reaches.
+fn centre_of(fit: &Fit) -> Vec<f64> {
+    let mut centre: Vec<f64> = fit
+        .at
+        .iter()
+        .map(|v| v.clamp(-FARTHEST, FARTHEST))
+        .collect();
+    let cells = centre.len().saturating_sub(CELLS);
+    for place in &mut centre[cells..] {
+        // The place in a severity cell ends at the cell's wall.
+        *place = place.clamp(-(3f64.sqrt()), 3f64.sqrt());
+    }
+    centre
+}
+
+/// Linearises nodes again, each at its own posterior mean. One that carries no weight yet takes a second step where the
+/// first did not bring it to rest, and of what the two promise the less counts: halfway there a straight line promises more than the circuit keeps.
 fn again(
     bench: &Bench,
     data: &Data,
@@ -398,35 +441,44 @@ fn again(
     held: &mut [Held],
     swap: f64,
 ) {
-    let mut heavy: Vec<(usize, f64)> = node_shares(held, priors)
-        .into_iter()
-        .enumerate()
-        .filter(|(_, l)| *l > math::ln(HEAVY))
-        .collect();
-    heavy.sort_by(|a, b| b.1.total_cmp(&a.1).then(a.0.cmp(&b.0)));
-    for (i, _) in heavy.into_iter().take(MOST_AGAIN) {
-        let h = &held[i];
-        let mut centre: Vec<f64> = h
-            .fit
-            .at
-            .iter()
-            .map(|v| v.clamp(-FARTHEST, FARTHEST))
-            .collect();
-        let cells = centre.len().saturating_sub(CELLS);
-        for place in &mut centre[cells..] {
-            // The place in a severity cell ends at the cell's wall.
-            *place = place.clamp(-(3f64.sqrt()), 3f64.sqrt());
+    for (i, is_heavy) in in_turn(held, priors) {
+        let h = &mut held[i];
+        if !is_heavy && h.was_tried {
+            continue;
         }
+        h.was_tried = true;
         let fault = catalogue[h.cause].fault;
-        let p = bench.predict(fault, &h.node, data, &centre);
-        if let Some(f) = fit(data, &p, &centre, swap) {
-            let h = &mut held[i];
+        let mut centre = centre_of(&h.fit);
+        let mut least: Option<(Vec<f64>, Prediction, Fit)> = None;
+        for _ in 0..if is_heavy { 1 } else { STEPS } {
+            let p = bench.predict(fault, &h.node, data, &centre);
+            let Some(f) = fit(data, &p, &centre, swap) else {
+                break;
+            };
+            let next = centre_of(&f);
+            let is_at_rest = is_near(&next, &centre);
+            if is_at_rest || least.as_ref().is_none_or(|(_, _, l)| f.log < l.log) {
+                least = Some((centre, p, f));
+            }
+            if is_at_rest {
+                break;
+            }
+            centre = next;
+        }
+        if let Some((centre, p, f)) = least {
             h.mean = means_at_the_middle(&p, &centre);
             h.prediction = p;
             h.centre = centre;
             h.fit = f;
         }
     }
+}
+
+/// True where a posterior mean stands where its node was linearised.
+fn is_near(mean: &[f64], centre: &[f64]) -> bool {
+    mean.iter()
+        .zip(centre)
+        .all(|(there, here)| (there - here).abs() < AT_REST)
 }
 
 /// What a node makes of the data, as its cause is summed up from.

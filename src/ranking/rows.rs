@@ -54,9 +54,11 @@ pub fn rows(
             words,
         ));
     }
+    // What differs by rounding alone, as mirror images do, is in the order of the catalogue, whatever was worked out before.
+    let place = |cause: &Cause| (cause.probability * 1e9).round();
     out.sort_by(|a, b| {
-        b.probability
-            .total_cmp(&a.probability)
+        place(b)
+            .total_cmp(&place(a))
             .then_with(|| a.ids.cmp(&b.ids))
             .then_with(|| a.paths.cmp(&b.paths))
     });
